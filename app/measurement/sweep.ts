@@ -1,0 +1,115 @@
+/**
+ * The shapes that flow through Swale: a sweep, a dip, an analysis.
+ *
+ * SI units inside: hertz, ohm, metre. A sweep is always ascending in frequency with no repeated
+ * frequency; NaN marks a gap and never takes part in a dip.
+ */
+
+/** What the numbers of a file stand for, as other programs see it. */
+export type Quantity = "s11-db" | "return-loss" | "swr" | "level" | "gamma" | "impedance";
+
+export type FrequencyUnit = "Hz" | "kHz" | "MHz" | "GHz";
+
+/** Where the reflection coefficient is referred to. */
+export type Plane = "instrument" | "port" | "antenna";
+
+export interface Sweep {
+  /** Hz, strictly ascending, length n. */
+  frequencyHz: Float64Array;
+  /** abs Γ, length n; NaN is a gap; values over 1 are kept as they are. */
+  magnitude: Float64Array;
+  /** Real part of Γ, length n; present together with `gammaIm` in complex sweeps only. */
+  gammaRe?: Float64Array;
+  /** Imaginary part of Γ, length n. */
+  gammaIm?: Float64Array;
+  /** Ω, real and positive. */
+  referenceOhm: number;
+  plane: Plane;
+  /** What a picture's pixels allow: half-widths per point. Absent for files of numbers. */
+  pictureLimits?: PictureLimits;
+}
+
+export interface PictureLimits {
+  /** Hz, half a pixel column, length n. */
+  frequencyHz: Float64Array;
+  /** abs Γ at the lower and upper end of the trace's uncertainty, length n each. */
+  magnitudeLow: Float64Array;
+  magnitudeHigh: Float64Array;
+}
+
+export interface AnalysisSettings {
+  /** SWR limit of the bandwidth, over 1. */
+  swrLimit: number;
+  /** Smallest prominence in return loss that makes a dip, dB. */
+  minimumProminenceDb: number;
+}
+
+export const DEFAULT_SETTINGS: AnalysisSettings = { swrLimit: 2, minimumProminenceDb: 3 };
+
+export type DipMethod = "fit" | "parabola" | "sample";
+
+export interface Dip {
+  frequencyHz: number;
+  /** Half-width of the 95 % interval, Hz; null where it is not known. */
+  frequencyUncertaintyHz: number | null;
+  /** Lowest SWR; Infinity where abs Γ reaches 1. */
+  minimumSwr: number;
+  /** Limits that include the bench's directivity; null while the bench is unknown. */
+  minimumSwrLow: number | null;
+  minimumSwrHigh: number | null;
+  /** 95 % interval from noise, fit and frequency step alone; null where it is not known. */
+  minimumSwrNoiseLow: number | null;
+  minimumSwrNoiseHigh: number | null;
+  returnLossDb: number;
+  /** Depth below the lower of the two neighbouring crests, dB of return loss. */
+  prominenceDb: number;
+  bandwidth: Bandwidth | null;
+  /** Loaded quality factor; null where it can't be had. `qLow`..`qHigh` is its range. */
+  q: number | null;
+  qLow: number | null;
+  qHigh: number | null;
+  method: DipMethod;
+  /** True when the lowest point is the first or the last of the sweep. */
+  edge: boolean;
+  /** Index of the lowest sample in the sweep. */
+  sampleIndex: number;
+  advice: SweepAgain | null;
+}
+
+export interface Bandwidth {
+  limitSwr: number;
+  /** Hz; null where the sweep ends inside. */
+  lowHz: number | null;
+  highHz: number | null;
+  /** Hz; "at least" when `open`. */
+  widthHz: number;
+  /** Half-width of the width's 95 % interval, Hz; null where it is not known. */
+  widthUncertaintyHz: number | null;
+  open: boolean;
+  /** Another dip lies in the same stretch. */
+  shared: boolean;
+  /** Width over the geometric mean of the edges; null when open. */
+  fractional: number | null;
+}
+
+/** "Too few points: sweep again over …" */
+export interface SweepAgain {
+  startHz: number;
+  stopHz: number;
+  points: number;
+}
+
+export interface Warning {
+  code: string;
+  message: string;
+}
+
+export interface Analysis {
+  /** Version of the method, raised whenever a number can come out differently. */
+  version: string;
+  settings: AnalysisSettings;
+  /** Standard deviation of the sweep's noise, dB of return loss. */
+  noiseDb: number;
+  dips: Dip[];
+  warnings: Warning[];
+}
