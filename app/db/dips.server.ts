@@ -1,0 +1,141 @@
+import { and, asc, count, desc, eq, isNull, sql } from "drizzle-orm";
+import type { Dip } from "~/measurement/sweep";
+import { db, type Queryable } from "./client.server.ts";
+import { newPublicId } from "./ids.server.ts";
+import { dips, notes, sweeps, users } from "./schema/index.ts";
+
+export type DipRow = typeof dips.$inferSelect;
+
+/** A sweep's dips with their notes counted and the latest note's text, lowest frequency first. */
+export async function findAllBySweep(sweepId: number, tx: Queryable = db) {
+  const rows = await tx
+    .select({
+      dip: dips,
+      noteCount:
+        sql<number>`(select count(*) from ${notes} n where n.dip_id = ${dips.id} and n.removed_at is null)`.mapWith(
+          Number,
+        ),
+      latestNote: sql<
+        string | null
+      >`(select left(n.body, 200) from ${notes} n where n.dip_id = ${dips.id} and n.removed_at is null order by n.id desc limit 1)`,
+    })
+    .from(dips)
+    .where(eq(dips.sweepId, sweepId))
+    .orderBy(asc(dips.frequencyHz))
+    .limit(1000);
+  return rows.map((row) => ({ ...row, dip: revive(row.dip) }));
+}
+export type ListedDip = Awaited<ReturnType<typeof findAllBySweep>>[number];
+
+export async function findByPublicId(publicId: string, tx: Queryable = db) {
+  const rows = await tx
+    .select({
+      dip: dips,
+      sweep: { id: sweeps.id, publicId: sweeps.publicId, title: sweeps.title, takenAt: sweeps.takenAt },
+      verdictBy: users.name,
+    })
+    .from(dips)
+    .innerJoin(sweeps, eq(sweeps.id, dips.sweepId))
+    .leftJoin(users, eq(users.id, dips.verdictBy))
+    .where(eq(dips.publicId, publicId))
+    .limit(1);
+  return rows[0] && { ...rows[0], dip: revive(rows[0].dip) };
+}
+
+/** Dips of the project that nobody has settled, those with the lowest SWR first. */
+export async function findOpenByProject(projectId: number, limit = 20, tx: Queryable = db) {
+  return tx
+    .select({
+      publicId: dips.publicId,
+      frequencyHz: dips.frequencyHz,
+      numbers: dips.numbers,
+      minimumSwr: dips.minimumSwr,
+      verdict: dips.verdict,
+      verdictText: dips.verdictText,
+      sweepTitle: sweeps.title,
+      sweepPublicId: sweeps.publicId,
+      noteCount:
+        sql<number>`(select count(*) from ${notes} n where n.dip_id = ${dips.id} and n.removed_at is null)`.mapWith(
+          Number,
+        ),
+    })
+    .from(dips)
+    .innerJoin(sweeps, eq(sweeps.id, dips.sweepId))
+    .where(and(eq(dips.projectId, projectId), eq(dips.present, true), sql`${dips.verdict} <> 'settled'`))
+    .orderBy(desc(sweeps.createdAt), asc(dips.minimumSwr))
+    .limit(limit);
+}
+
+export async function countOpenByProject(projectId: number, tx: Queryable = db): Promise<number> {
+  const rows = await tx
+    .select({ n: count() })
+    .from(dips)
+    .where(and(eq(dips.projectId, projectId), eq(dips.present, true), sql`${dips.verdict} <> 'settled'`));
+  return rows[0].n;
+}
+
+export async function insert(
+  values: { projectId: number; sweepId: number; numbers: Dip },
+  tx: Queryable,
+): Promise<{ id: number; publicId: string }> {
+  const publicId = newPublicId();
+  const [row] = await tx
+    .insert(dips)
+    .values({
+      projectId: values.projectId,
+      sweepId: values.sweepId,
+      publicId,
+      createdAt: new Date(),
+      ...columnsOf(values.numbers),
+    })
+    .$returningId();
+  return { id: row.id, publicId };
+}
+
+export async function updateNumbers(id: number, numbers: Dip, tx: Queryable) {
+  await tx.update(dips).set(columnsOf(numbers)).where(eq(dips.id, id));
+}
+
+export async function setAbsent(id: number, tx: Queryable) {
+  await tx.update(dips).set({ present: false }).where(eq(dips.id, id));
+}
+
+export async function updateVerdict(
+  id: number,
+  values: Pick<DipRow, "verdict" | "verdictText" | "verdictBy" | "verdictAt">,
+  tx: Queryable = db,
+) {
+  await tx.update(dips).set(values).where(eq(dips.id, id));
+}
+
+/** A dip that is no longer found and on which nobody said or settled anything. */
+export async function deleteIfBare(id: number, tx: Queryable): Promise<boolean> {
+  const rows = await tx
+    .select({ id: dips.id })
+    .from(dips)
+    .leftJoin(notes, eq(notes.dipId, dips.id))
+    .where(and(eq(dips.id, id), eq(dips.verdict, "open"), eq(dips.verdictText, ""), isNull(notes.id)))
+    .limit(1);
+  if (rows.length === 0) return false;
+  await tx.delete(dips).where(eq(dips.id, id));
+  return true;
+}
+
+function columnsOf(numbers: Dip) {
+  return {
+    present: true,
+    frequencyHz: numbers.frequencyHz,
+    minimumSwr: Number.isFinite(numbers.minimumSwr) ? numbers.minimumSwr : null,
+    returnLossDb: numbers.returnLossDb,
+    prominenceDb: numbers.prominenceDb,
+    numbers,
+  };
+}
+
+/** JSON has no Infinity: an SWR without a number comes back as null and means infinite. */
+function revive(row: DipRow): DipRow {
+  return {
+    ...row,
+    numbers: { ...row.numbers, minimumSwr: row.numbers.minimumSwr ?? Number.POSITIVE_INFINITY },
+  };
+}

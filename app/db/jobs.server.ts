@@ -1,0 +1,52 @@
+import { and, asc, count, eq, isNull, lt, lte, or } from "drizzle-orm";
+import { db, inTransaction, type Queryable } from "./client.server.ts";
+import { facts, jobs } from "./schema/index.ts";
+
+export type JobRow = typeof jobs.$inferSelect;
+
+export async function insert(kind: string, payload: unknown, runAt: Date = new Date(), tx: Queryable = db) {
+  const [row] = await tx.insert(jobs).values({ kind, payload, runAt, createdAt: new Date() }).$returningId();
+  return row.id;
+}
+
+/** Claims due work for `leaseMs`; other processes skip what is locked and see it again when the lease runs out. */
+export async function claim(limit: number, leaseMs: number): Promise<JobRow[]> {
+  return inTransaction(async (tx) => {
+    const now = new Date();
+    const rows = await tx
+      .select()
+      .from(jobs)
+      .where(and(lte(jobs.runAt, now), or(isNull(jobs.lockedUntil), lt(jobs.lockedUntil, now))))
+      .orderBy(asc(jobs.runAt))
+      .limit(limit)
+      .for("update", { skipLocked: true });
+    for (const row of rows) {
+      await tx
+        .update(jobs)
+        .set({ lockedUntil: new Date(now.getTime() + leaseMs), attempts: row.attempts + 1 })
+        .where(eq(jobs.id, row.id));
+    }
+    return rows;
+  });
+}
+
+export async function deleteById(id: number, tx: Queryable = db) {
+  await tx.delete(jobs).where(eq(jobs.id, id));
+}
+
+export async function putOff(id: number, runAt: Date, lastError: string, tx: Queryable = db) {
+  await tx.update(jobs).set({ runAt, lockedUntil: null, lastError }).where(eq(jobs.id, id));
+}
+
+export async function countAll(tx: Queryable = db): Promise<number> {
+  return (await tx.select({ n: count() }).from(jobs))[0].n;
+}
+
+export async function findFact(name: string, tx: Queryable = db): Promise<unknown> {
+  return (await tx.select().from(facts).where(eq(facts.name, name)).limit(1))[0]?.value;
+}
+
+export async function setFact(name: string, value: unknown, tx: Queryable = db) {
+  const at = new Date();
+  await tx.insert(facts).values({ name, value, at }).onDuplicateKeyUpdate({ set: { value, at } });
+}

@@ -1,0 +1,114 @@
+import { and, asc, desc, eq, isNull } from "drizzle-orm";
+import { db, type Queryable } from "./client.server.ts";
+import { newPublicId } from "./ids.server.ts";
+import { dips, notes, sweeps, users } from "./schema/index.ts";
+
+export type NoteRow = typeof notes.$inferSelect;
+
+/** What a note stands on: a dip (with its sweep), a sweep, or the project itself. */
+export interface NotePlace {
+  projectId: number;
+  sweepId: number | null;
+  dipId: number | null;
+}
+
+const columns = {
+  note: notes,
+  author: { id: users.id, name: users.name, userName: users.userName },
+};
+
+/** Every note of one place, oldest first; replies are put under their parents by whoever draws them. */
+export async function findAllByPlace(place: NotePlace, tx: Queryable = db) {
+  return tx
+    .select(columns)
+    .from(notes)
+    .leftJoin(users, eq(users.id, notes.authorId))
+    .where(
+      and(
+        eq(notes.projectId, place.projectId),
+        place.dipId === null ? isNull(notes.dipId) : eq(notes.dipId, place.dipId),
+        place.dipId !== null
+          ? undefined
+          : place.sweepId === null
+            ? isNull(notes.sweepId)
+            : eq(notes.sweepId, place.sweepId),
+      ),
+    )
+    .orderBy(asc(notes.id))
+    .limit(1000);
+}
+export type ListedNote = Awaited<ReturnType<typeof findAllByPlace>>[number];
+
+export async function findByPublicId(publicId: string, tx: Queryable = db) {
+  const rows = await tx
+    .select({
+      ...columns,
+      sweepPublicId: sweeps.publicId,
+      dipPublicId: dips.publicId,
+    })
+    .from(notes)
+    .leftJoin(users, eq(users.id, notes.authorId))
+    .leftJoin(sweeps, eq(sweeps.id, notes.sweepId))
+    .leftJoin(dips, eq(dips.id, notes.dipId))
+    .where(eq(notes.publicId, publicId))
+    .limit(1);
+  return rows[0];
+}
+
+export async function findByClientKey(clientKey: string, tx: Queryable = db) {
+  return (await tx.select().from(notes).where(eq(notes.clientKey, clientKey)).limit(1))[0];
+}
+
+/** The newest notes anywhere in the project, with where they stand. */
+export async function findLatestByProject(projectId: number, limit = 10, tx: Queryable = db) {
+  return tx
+    .select({
+      ...columns,
+      sweepTitle: sweeps.title,
+      sweepPublicId: sweeps.publicId,
+      dipPublicId: dips.publicId,
+      dipFrequencyHz: dips.frequencyHz,
+    })
+    .from(notes)
+    .leftJoin(users, eq(users.id, notes.authorId))
+    .leftJoin(sweeps, eq(sweeps.id, notes.sweepId))
+    .leftJoin(dips, eq(dips.id, notes.dipId))
+    .where(and(eq(notes.projectId, projectId), isNull(notes.removedAt)))
+    .orderBy(desc(notes.id))
+    .limit(limit);
+}
+
+export async function insert(
+  values: NotePlace & {
+    parentId: number | null;
+    authorId: number;
+    body: string;
+    clientKey: string | null;
+    createdAt?: Date;
+  },
+  tx: Queryable = db,
+) {
+  const publicId = newPublicId();
+  const [row] = await tx
+    .insert(notes)
+    .values({ createdAt: new Date(), ...values, publicId })
+    .$returningId();
+  return { id: row.id, publicId };
+}
+
+export async function updateBody(id: number, body: string, tx: Queryable = db) {
+  await tx.update(notes).set({ body, editedAt: new Date() }).where(eq(notes.id, id));
+}
+
+export async function hasReplies(id: number, tx: Queryable = db): Promise<boolean> {
+  return (await tx.select({ id: notes.id }).from(notes).where(eq(notes.parentId, id)).limit(1)).length > 0;
+}
+
+/** Leaves a stub in its place: the text goes, who and when stay. */
+export async function setRemoved(id: number, removedBy: number, tx: Queryable = db) {
+  await tx.update(notes).set({ body: "", removedAt: new Date(), removedBy }).where(eq(notes.id, id));
+}
+
+export async function deleteById(id: number, tx: Queryable = db) {
+  await tx.delete(notes).where(eq(notes.id, id));
+}

@@ -1,0 +1,149 @@
+import { and, asc, count, desc, eq, max, sql } from "drizzle-orm";
+import type { ProjectRole, Visibility } from "~/auth/permissions";
+import { db, type Queryable } from "./client.server.ts";
+import { newPublicId } from "./ids.server.ts";
+import { designBands, memberships, projects, sweeps, users } from "./schema/index.ts";
+
+export type Project = typeof projects.$inferSelect;
+export type DesignBand = typeof designBands.$inferSelect;
+
+/** The project and what this person is in it, in one query. */
+export async function findWithRole(publicId: string, userId: number | null, tx: Queryable = db) {
+  const rows = await tx
+    .select({ project: projects, role: memberships.role })
+    .from(projects)
+    .leftJoin(memberships, and(eq(memberships.projectId, projects.id), eq(memberships.userId, userId ?? 0)))
+    .where(eq(projects.publicId, publicId))
+    .limit(1);
+  return rows[0];
+}
+
+const listColumns = {
+  id: projects.id,
+  publicId: projects.publicId,
+  title: projects.title,
+  summary: projects.summary,
+  visibility: projects.visibility,
+  demo: projects.demo,
+  updatedAt: projects.updatedAt,
+};
+
+export async function findAllByUser(userId: number, tx: Queryable = db) {
+  return tx
+    .select({
+      ...listColumns,
+      role: memberships.role,
+      sweepCount: count(sweeps.id),
+      lastSweepAt: max(sweeps.createdAt),
+    })
+    .from(memberships)
+    .innerJoin(projects, eq(projects.id, memberships.projectId))
+    .leftJoin(sweeps, eq(sweeps.projectId, projects.id))
+    .where(eq(memberships.userId, userId))
+    .groupBy(projects.id, memberships.role)
+    .orderBy(desc(projects.updatedAt))
+    .limit(100);
+}
+
+export async function findAllPublic(limit = 20, tx: Queryable = db) {
+  return tx
+    .select({ ...listColumns, sweepCount: count(sweeps.id) })
+    .from(projects)
+    .leftJoin(sweeps, eq(sweeps.projectId, projects.id))
+    .where(eq(projects.visibility, "public"))
+    .groupBy(projects.id)
+    .orderBy(desc(projects.updatedAt))
+    .limit(limit);
+}
+
+export interface NewProject {
+  title: string;
+  summary: string;
+  visibility: Visibility;
+  ituRegion: number | null;
+  demo?: number;
+}
+
+export async function insert(project: NewProject, tx: Queryable = db) {
+  const publicId = newPublicId();
+  const now = new Date();
+  const [row] = await tx
+    .insert(projects)
+    .values({ ...project, publicId, createdAt: now, updatedAt: now })
+    .$returningId();
+  return { id: row.id, publicId };
+}
+
+export async function update(id: number, values: Partial<typeof projects.$inferInsert>, tx: Queryable = db) {
+  await tx
+    .update(projects)
+    .set({ ...values, updatedAt: new Date() })
+    .where(eq(projects.id, id));
+}
+
+export async function deleteById(id: number, tx: Queryable = db) {
+  await tx.delete(projects).where(eq(projects.id, id));
+}
+
+export async function findMembers(projectId: number, tx: Queryable = db) {
+  return tx
+    .select({
+      userId: users.id,
+      userName: users.userName,
+      name: users.name,
+      role: memberships.role,
+      since: memberships.createdAt,
+      lastSeenAt: users.lastSeenAt,
+    })
+    .from(memberships)
+    .innerJoin(users, eq(users.id, memberships.userId))
+    .where(eq(memberships.projectId, projectId))
+    .orderBy(sql`field(${memberships.role}, 'owner', 'experimenter', 'commenter', 'reader')`, asc(users.name))
+    .limit(100);
+}
+
+/** Locks the owners' rows, so that two owners who leave at once can't both go. */
+export async function lockOwners(projectId: number, tx: Queryable) {
+  return tx
+    .select({ userId: memberships.userId })
+    .from(memberships)
+    .where(and(eq(memberships.projectId, projectId), eq(memberships.role, "owner")))
+    .limit(100)
+    .for("update");
+}
+
+export async function insertMember(projectId: number, userId: number, role: ProjectRole, tx: Queryable = db) {
+  await tx.insert(memberships).values({ projectId, userId, role, createdAt: new Date() });
+}
+
+export async function updateMember(projectId: number, userId: number, role: ProjectRole, tx: Queryable = db) {
+  await tx
+    .update(memberships)
+    .set({ role })
+    .where(and(eq(memberships.projectId, projectId), eq(memberships.userId, userId)));
+}
+
+export async function deleteMember(projectId: number, userId: number, tx: Queryable = db) {
+  await tx
+    .delete(memberships)
+    .where(and(eq(memberships.projectId, projectId), eq(memberships.userId, userId)));
+}
+
+export async function findDesignBands(projectId: number, tx: Queryable = db): Promise<DesignBand[]> {
+  return tx
+    .select()
+    .from(designBands)
+    .where(eq(designBands.projectId, projectId))
+    .orderBy(asc(designBands.lowHz))
+    .limit(100);
+}
+
+export async function replaceDesignBands(
+  projectId: number,
+  bands: { name: string; lowHz: number; highHz: number; swrLimit: number }[],
+  tx: Queryable,
+) {
+  await tx.delete(designBands).where(eq(designBands.projectId, projectId));
+  if (bands.length === 0) return;
+  await tx.insert(designBands).values(bands.map((band) => ({ ...band, projectId, publicId: newPublicId() })));
+}
