@@ -1,0 +1,63 @@
+import { Form, Link, NavLink } from "react-router";
+import { ThemeSwitch } from "./ThemeSwitch";
+import type { ThemeChoice } from "./theme";
+import { LinkButton } from "./ui/Button";
+import { Menu } from "./ui/Menu";
+import { Wordmark } from "./Wordmark";
+
+export interface SignedInPerson {
+  /** As shown to others. */
+  name: string;
+  userName: string;
+  administrator?: boolean;
+}
+
+export interface HeaderProps {
+  person: SignedInPerson | null;
+  theme: ThemeChoice;
+}
+
+export function Header({ person, theme }: HeaderProps) {
+  return (
+    <header className="shell-header no-print">
+      <div className="shell-width shell-bar">
+        <Link to="/" className="shell-home" aria-label="Swale, front page">
+          <Wordmark />
+        </Link>
+        <nav aria-label="Main" className="shell-nav">
+          <NavLink to="/projects">Projects</NavLink>
+        </nav>
+        <div className="shell-person">
+          {person ? <PersonMenu person={person} theme={theme} /> : <VisitorBar theme={theme} />}
+        </div>
+      </div>
+    </header>
+  );
+}
+
+function VisitorBar({ theme }: { theme: ThemeChoice }) {
+  return (
+    <>
+      <Menu label="Colours" icon="theme" align="end">
+        <ThemeSwitch choice={theme} />
+      </Menu>
+      <LinkButton to="/sign-in" size="small">
+        Sign in
+      </LinkButton>
+    </>
+  );
+}
+
+function PersonMenu({ person, theme }: { person: SignedInPerson; theme: ThemeChoice }) {
+  return (
+    <Menu label={person.name} icon="person" align="end">
+      <Link to="/settings">Settings</Link>
+      <Link to="/settings/tokens">Tokens for scripts</Link>
+      {person.administrator && <Link to="/admin">Administration</Link>}
+      <ThemeSwitch choice={theme} />
+      <Form method="post" action="/sign-out">
+        <button type="submit">Sign out</button>
+      </Form>
+    </Menu>
+  );
+}
