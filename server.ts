@@ -1,0 +1,140 @@
+import { realpathSync } from "node:fs";
+import type { Server } from "node:http";
+import path from "node:path";
+import { fileURLToPath } from "node:url";
+import { createRequestHandler } from "@react-router/express";
+import compression from "compression";
+import express, { type Express, type NextFunction, type Request, type Response } from "express";
+import { RouterContextProvider } from "react-router";
+import { nonceContext, requestIdContext } from "~/context";
+import { pool } from "~/db/client.server";
+import { env } from "~/env.server";
+import { accessLog } from "~/services/access-log.server";
+import { bodyLimits } from "~/services/body-limits.server";
+import { readiness } from "~/services/health.server";
+import { log } from "~/services/log.server";
+import { metricsText } from "~/services/metrics.server";
+import { securityHeaders } from "~/services/security-headers.server";
+import { onShutdown, runShutdown } from "~/services/shutdown.server";
+
+const PATIENCE_MS = 10_000;
+const YEAR = "365d";
+
+/** Everything one process answers. Static files are left to Vite in development. */
+export function createApp(development = false): Express {
+  const app = express();
+  app.disable("x-powered-by");
+  app.set("trust proxy", env.TRUST_PROXY);
+  app.use(accessLog);
+  app.get("/healthz", (_request, response) => void response.type("text/plain").send("alive\n"));
+  app.get("/readyz", async (_request, response) => {
+    const state = await readiness();
+    response.status(state.ready ? 200 : 503).json(state);
+  });
+  app.get("/metrics", async (_request, response) => {
+    response.set("Content-Type", "text/plain; version=0.0.4; charset=utf-8").send(await metricsText());
+  });
+  app.use(securityHeaders(development));
+  app.use(bodyLimits);
+  app.use(compression({ filter: isWorthCompressing }));
+  if (!development) serveStaticFiles(app);
+  app.use(
+    createRequestHandler({
+      build: () => import("virtual:react-router/server-build"),
+      mode: env.NODE_ENV,
+      getLoadContext(_request, response) {
+        const context = new RouterContextProvider();
+        context.set(nonceContext, response.locals.nonce);
+        context.set(requestIdContext, response.locals.requestId);
+        return context;
+      },
+    }),
+  );
+  app.use(answerError);
+  return app;
+}
+
+function serveStaticFiles(app: Express): void {
+  const client = path.join(path.dirname(fileURLToPath(import.meta.url)), "..", "client");
+  // A name under /assets holds the hash of its content, so it may be kept for good, and a missing one is missing.
+  app.use(
+    "/assets",
+    express.static(path.join(client, "assets"), { immutable: true, maxAge: YEAR, fallthrough: false }),
+  );
+  app.use(express.static(client, { maxAge: "1h", redirect: false }));
+}
+
+/** A stream of events must leave at once, so it is not compressed. */
+function isWorthCompressing(request: Request, response: Response): boolean {
+  if (isEventStream(response)) return false;
+  return compression.filter(request, response);
+}
+
+function isEventStream(response: Response): boolean {
+  return String(response.getHeader("Content-Type")).startsWith("text/event-stream");
+}
+
+/** What the router could not answer itself: a malformed address, a missing asset, a fault of ours. */
+function answerError(
+  error: Error & { status?: number },
+  _request: Request,
+  response: Response,
+  next: NextFunction,
+) {
+  const status = error.status ?? 500;
+  if (status >= 500) log.error({ id: response.locals.requestId, err: error }, "request failed");
+  if (response.headersSent) return next(error);
+  const words = status >= 500 ? "Something failed here; nothing was changed." : "There is nothing here.";
+  response.status(status).type("text/plain").send(`${words} (Request ${response.locals.requestId})\n`);
+}
+
+function listen(): void {
+  const app = createApp();
+  const streams = new Set<Response>();
+  const outer = express();
+  outer.disable("x-powered-by");
+  outer.use((_request, response, next) => {
+    streams.add(response);
+    response.once("close", () => streams.delete(response));
+    next();
+  });
+  outer.use(app);
+  onShutdown(() => pool.end());
+  const server = outer.listen(env.PORT, env.HOST, (error?: Error) => {
+    if (error) {
+      log.fatal({ err: error }, `cannot listen on ${env.HOST}:${env.PORT}`);
+      process.exit(1);
+    }
+    log.info({ host: env.HOST, port: env.PORT }, "listening");
+  });
+  server.keepAliveTimeout = 65_000;
+  onShutdown(() => closeServer(server, streams));
+  const stop = () => {
+    const hardStop = setTimeout(() => process.exit(1), PATIENCE_MS + 3_000);
+    runShutdown().then(
+      () => process.exit(0),
+      (error) => {
+        log.error({ err: error }, "stopping failed");
+        clearTimeout(hardStop);
+        process.exit(1);
+      },
+    );
+  };
+  process.once("SIGTERM", stop);
+  process.once("SIGINT", stop);
+}
+
+/** No new requests; those under way have some seconds; streams of events, which never end, are ended now. */
+function closeServer(server: Server, responses: Set<Response>): Promise<void> {
+  return new Promise((resolve) => {
+    const hurry = setTimeout(() => server.closeAllConnections(), PATIENCE_MS);
+    server.close(() => {
+      clearTimeout(hurry);
+      resolve();
+    });
+    for (const response of responses) if (isEventStream(response)) response.destroy();
+  });
+}
+
+const entry = process.argv[1] ? realpathSync(process.argv[1]) : "";
+if (entry === fileURLToPath(import.meta.url)) listen();
