@@ -1,7 +1,6 @@
 import { and, asc, count, desc, eq, isNull, sql } from "drizzle-orm";
 import type { Dip } from "~/measurement/sweep";
 import { db, type Queryable } from "./client.server.ts";
-import { newPublicId } from "./ids.server.ts";
 import { dips, notes, sweeps, users } from "./schema/index.ts";
 
 export type DipRow = typeof dips.$inferSelect;
@@ -74,22 +73,15 @@ export async function countOpenByProject(projectId: number, tx: Queryable = db):
   return rows[0].n;
 }
 
-export async function insert(
-  values: { projectId: number; sweepId: number; numbers: Dip },
+export async function insertAll(
+  values: { projectId: number; sweepId: number; publicId: string; numbers: Dip }[],
   tx: Queryable,
-): Promise<{ id: number; publicId: string }> {
-  const publicId = newPublicId();
-  const [row] = await tx
+): Promise<void> {
+  if (values.length === 0) return;
+  const createdAt = new Date();
+  await tx
     .insert(dips)
-    .values({
-      projectId: values.projectId,
-      sweepId: values.sweepId,
-      publicId,
-      createdAt: new Date(),
-      ...columnsOf(values.numbers),
-    })
-    .$returningId();
-  return { id: row.id, publicId };
+    .values(values.map(({ numbers, ...value }) => ({ ...value, createdAt, ...columnsOf(numbers) })));
 }
 
 export async function updateNumbers(id: number, numbers: Dip, tx: Queryable) {

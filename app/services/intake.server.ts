@@ -1,0 +1,180 @@
+import { inTransaction, isDuplicate } from "~/db/client.server";
+import { newPublicId } from "~/db/ids.server";
+import * as jobs from "~/db/jobs.server";
+import * as projects from "~/db/projects.server";
+import * as sweeps from "~/db/sweeps.server";
+import { DEFAULT_SETTINGS } from "~/measurement/sweep";
+import { type Given, MAX_FILE_BYTES, type ReadProblem } from "~/readers/reading";
+import { storeAnalysis } from "./analyses.server.ts";
+import type { ReadOutcome } from "./read-and-analyse.server.ts";
+import { readFile } from "./reading.server.ts";
+import { deleteObject, putObject, sha256Of } from "./storage.server.ts";
+
+export interface TakeIn {
+  project: { id: number; publicId: string };
+  by: { id: number };
+  file: { name: string; bytes: Uint8Array };
+  title?: string;
+  takenAt?: Date | null;
+  given?: Given;
+  /** Keep a file that can't be read, so that a person can say how to read it; else it is refused whole. */
+  keepUnread: boolean;
+}
+
+export type Taken =
+  | { kind: "read"; sweepPublicId: string; title: string; dipCount: number; questions: number }
+  | { kind: "unread"; sweepPublicId: string; title: string; problem: ReadProblem }
+  | { kind: "twice"; sweepPublicId: string; title: string }
+  | { kind: "refused"; problem: ReadProblem };
+
+/**
+ * Takes one file in: reads it, stores the original, then writes the sweep with its reading, points, analysis and
+ * dips in one transaction. A removal of the object is noted before it is stored and taken back in that
+ * transaction: whatever dies half-way leaves neither an object nobody knows nor half a sweep.
+ */
+export async function takeIn(input: TakeIn): Promise<Taken> {
+  const { project, file } = input;
+  if (file.bytes.length > MAX_FILE_BYTES) return { kind: "refused", problem: tooLarge(file.bytes.length) };
+  if (file.bytes.length === 0) return { kind: "refused", problem: EMPTY };
+  const sha256 = sha256Of(file.bytes);
+  const twin = await sweeps.findFileBySha256(project.id, sha256);
+  if (twin) return twiceOf(twin);
+
+  const { outcome, given } = await readAsBefore(input);
+  if (!outcome.ok && !input.keepUnread) return { kind: "refused", problem: outcome.problem };
+
+  const storageKey = `originals/${project.publicId}/${newPublicId()}${newPublicId()}`;
+  const undo = await jobs.insert("delete-object", { key: storageKey }, new Date(Date.now() + UNDO_AFTER_MS));
+  await putObject(storageKey, file.bytes);
+  try {
+    return await inTransaction(async (tx) => {
+      const fileId = await sweeps.insertFile(
+        {
+          projectId: project.id,
+          name: cleanName(file.name),
+          sizeBytes: file.bytes.length,
+          sha256,
+          storageKey,
+          uploadedBy: input.by.id,
+        },
+        tx,
+      );
+      const title = (input.title?.trim() || titleOf(file.name)).slice(0, 160);
+      const sweep = await sweeps.insert(
+        { projectId: project.id, fileId, title, takenAt: input.takenAt ?? null, createdBy: input.by.id },
+        tx,
+      );
+      await storeOutcome({ projectId: project.id, sweepId: sweep.id, given, outcome, by: input.by.id }, tx);
+      await jobs.deleteById(undo, tx);
+      await projects.update(project.id, {}, tx);
+      return outcome.ok
+        ? {
+            kind: "read" as const,
+            sweepPublicId: sweep.publicId,
+            title,
+            dipCount: outcome.analysis.dips.length,
+            questions: outcome.reading.questions.length,
+          }
+        : { kind: "unread" as const, sweepPublicId: sweep.publicId, title, problem: outcome.problem };
+    });
+  } catch (error) {
+    await deleteObject(storageKey).catch(() => undefined);
+    if (!isDuplicate(error)) throw error;
+    const first = await sweeps.findFileBySha256(project.id, sha256);
+    if (!first) throw error;
+    return twiceOf(first);
+  }
+}
+
+export interface StoreOutcome {
+  projectId: number;
+  sweepId: number;
+  given: Given;
+  outcome: ReadOutcome;
+  by: number;
+}
+
+/** Writes a reading and, where it gave a sweep, its points and analysis, and makes them the sweep's current ones. */
+export async function storeOutcome(
+  input: StoreOutcome,
+  tx: Parameters<Parameters<typeof inTransaction>[0]>[0],
+): Promise<void> {
+  const { outcome, sweepId, given, by } = input;
+  const parts = outcome.ok ? outcome.parts.map((part) => Buffer.from(part)) : [];
+  const readingId = await sweeps.insertReading(
+    { sweepId, given, reading: outcome.reading, createdBy: by },
+    parts,
+    tx,
+  );
+  if (!outcome.ok) {
+    await sweeps.update(sweepId, { readingId, problem: outcome.problem }, tx);
+    return;
+  }
+  const analysisId = await storeAnalysis(
+    { projectId: input.projectId, sweepId, readingId, analysis: outcome.analysis, by },
+    tx,
+  );
+  const { pointCount, startHz, stopHz, referenceOhm, complex } = outcome;
+  await sweeps.update(
+    sweepId,
+    {
+      readingId,
+      analysisId,
+      problem: null,
+      pointCount,
+      startHz,
+      stopHz,
+      referenceOhm,
+      complex,
+      preview: Buffer.from(outcome.preview),
+    },
+    tx,
+  );
+}
+
+/** Reads the file, with what a person chose for the last file of the same shape in this project where it has one. */
+async function readAsBefore(input: TakeIn): Promise<{ outcome: ReadOutcome; given: Given }> {
+  const task = { ...input.file, settings: DEFAULT_SETTINGS };
+  const given = input.given ?? {};
+  const outcome = await readFile({ ...task, given });
+  if (input.given || !outcome.reading) return { outcome, given };
+  const before = await sweeps.findGivenByShape(input.project.id, outcome.reading.shape);
+  if (!before || Object.keys(before).length === 0) return { outcome, given };
+  const again = await readFile({ ...task, given: before });
+  if (!again.ok) return { outcome, given };
+  again.reading.assumed.unshift("Read as the last file of this shape in the project was read.");
+  return { outcome: again, given: before };
+}
+
+function twiceOf(first: { sweep: { publicId: string; title: string } }): Taken {
+  return { kind: "twice", sweepPublicId: first.sweep.publicId, title: first.sweep.title };
+}
+
+function cleanName(name: string): string {
+  const last = name.split(/[\\/]/).pop() ?? "";
+  // biome-ignore lint/suspicious/noControlCharactersInRegex: control characters are what must go
+  return last.replace(/[\u0000-\u001f\u007f]/g, "").slice(0, 255) || "unnamed";
+}
+
+function titleOf(name: string): string {
+  const bare = cleanName(name)
+    .replace(/\.[A-Za-z0-9]{1,5}$/, "")
+    .replace(/[_]+/g, " ")
+    .trim();
+  return bare || "Unnamed sweep";
+}
+
+function tooLarge(bytes: number): ReadProblem {
+  return {
+    code: "too-large",
+    message: `The file has ${Math.ceil(bytes / 1024 / 1024)} MB; the most that is taken is 64 MB. Nothing was stored: sweep with fewer points or split the file.`,
+  };
+}
+
+const EMPTY: ReadProblem = {
+  code: "empty",
+  message:
+    "The file is empty: it has no bytes. Nothing was stored: export it again and look at its size first.",
+};
+/** Longer than any upload takes; after that an object without a sweep is removed. */
+const UNDO_AFTER_MS = 60 * 60 * 1000;

@@ -1,0 +1,66 @@
+import * as jobs from "~/db/jobs.server";
+import * as sessions from "~/db/sessions.server";
+import { isStorageKeyUsed } from "~/db/sweeps.server";
+import { log } from "./log.server.ts";
+import { deleteObject } from "./storage.server.ts";
+
+/** Background work. Every kind must be harmless to run twice. */
+
+const KINDS: Record<string, (payload: never) => Promise<void>> = {
+  /** Removes a stored object unless a file's row says that it is in use. */
+  "delete-object": async ({ key }: { key: string }) => {
+    if (!(await isStorageKeyUsed(key))) await deleteObject(key);
+  },
+};
+
+/** Begins looking for due work; the answer stops it and waits for what is under way. */
+export function startJobs(everyMs = 2000): () => Promise<void> {
+  let stopped = false;
+  let running: Promise<unknown> = Promise.resolve();
+  let lastSweepMs = 0;
+  const tick = () => {
+    running = runDueJobs()
+      .then(async () => {
+        if (Date.now() - lastSweepMs < SWEEP_EVERY_MS) return;
+        lastSweepMs = Date.now();
+        await sessions.deleteExpired();
+      })
+      .catch((error) =>
+        log.warn({ err: error }, "background work could not be looked for; it is tried again"),
+      )
+      .finally(() => {
+        if (!stopped) timer = setTimeout(tick, everyMs);
+      });
+  };
+  let timer = setTimeout(tick, everyMs);
+  return async () => {
+    stopped = true;
+    clearTimeout(timer);
+    await running;
+  };
+}
+
+/** Runs what is due now; answers how many were done. */
+export async function runDueJobs(): Promise<number> {
+  const due = await jobs.claim(BATCH, LEASE_MS);
+  let done = 0;
+  for (const job of due) {
+    try {
+      const work = KINDS[job.kind];
+      if (!work) throw new Error(`Nobody knows how to do "${job.kind}".`);
+      await work(job.payload as never);
+      await jobs.deleteById(job.id);
+      done++;
+    } catch (error) {
+      const waitMs = Math.min(1000 * 2 ** job.attempts, LONGEST_WAIT_MS);
+      log.warn({ err: error, job: job.id, kind: job.kind }, "background work failed; it is tried again");
+      await jobs.putOff(job.id, new Date(Date.now() + waitMs), String(error).slice(0, 2000));
+    }
+  }
+  return done;
+}
+
+const BATCH = 20;
+const LEASE_MS = 60_000;
+const LONGEST_WAIT_MS = 60 * 60 * 1000;
+const SWEEP_EVERY_MS = 10 * 60 * 1000;

@@ -1,0 +1,2 @@
+/** What a worker thread runs; see `reading.server.ts`. */
+export { default } from "./read-and-analyse.server.ts";

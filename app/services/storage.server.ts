@@ -1,0 +1,68 @@
+import { createHash } from "node:crypto";
+import type { Readable } from "node:stream";
+import {
+  DeleteObjectCommand,
+  GetObjectCommand,
+  HeadBucketCommand,
+  PutObjectCommand,
+  S3Client,
+} from "@aws-sdk/client-s3";
+import { env } from "~/env.server";
+
+/** Originals and rendered files in an S3 bucket. What is stored is read back and compared once. */
+
+const client = new S3Client({
+  region: env.S3_REGION,
+  endpoint: env.S3_ENDPOINT,
+  forcePathStyle: env.S3_FORCE_PATH_STYLE,
+  credentials: { accessKeyId: env.S3_ACCESS_KEY_ID, secretAccessKey: env.S3_SECRET_ACCESS_KEY },
+  requestChecksumCalculation: "WHEN_REQUIRED",
+  responseChecksumValidation: "WHEN_REQUIRED",
+});
+
+export function sha256Of(bytes: Uint8Array): string {
+  return createHash("sha256").update(bytes).digest("hex");
+}
+
+/** Stores the bytes and reads them back; throws, with the object removed, when they differ. */
+export async function putObject(key: string, bytes: Uint8Array, contentType = "application/octet-stream") {
+  await client.send(
+    new PutObjectCommand({
+      Bucket: env.S3_BUCKET,
+      Key: key,
+      Body: bytes,
+      ContentType: contentType,
+      ContentLength: bytes.length,
+    }),
+  );
+  const back = await getObject(key);
+  if (sha256Of(back) !== sha256Of(bytes)) {
+    await deleteObject(key);
+    throw new Error(`The store gave back other bytes than it was given for ${key}.`);
+  }
+}
+
+export async function getObject(key: string): Promise<Uint8Array> {
+  const answer = await client.send(new GetObjectCommand({ Bucket: env.S3_BUCKET, Key: key }));
+  if (!answer.Body) throw new Error(`The store has no body for ${key}.`);
+  return answer.Body.transformToByteArray();
+}
+
+export async function getObjectStream(key: string): Promise<Readable> {
+  const answer = await client.send(new GetObjectCommand({ Bucket: env.S3_BUCKET, Key: key }));
+  return answer.Body as Readable;
+}
+
+/** Deleting what is not there is no error. */
+export async function deleteObject(key: string): Promise<void> {
+  await client.send(new DeleteObjectCommand({ Bucket: env.S3_BUCKET, Key: key }));
+}
+
+export async function storageAnswers(): Promise<boolean> {
+  try {
+    await client.send(new HeadBucketCommand({ Bucket: env.S3_BUCKET }));
+    return true;
+  } catch {
+    return false;
+  }
+}
