@@ -4,9 +4,21 @@ import { facts, jobs } from "./schema/index.ts";
 
 export type JobRow = typeof jobs.$inferSelect;
 
+/** Rows in one statement. */
+const BATCH = 500;
+
 export async function insert(kind: string, payload: unknown, runAt: Date = new Date(), tx: Queryable = db) {
   const [row] = await tx.insert(jobs).values({ kind, payload, runAt, createdAt: new Date() }).$returningId();
   return row.id;
+}
+
+/** Many of one kind, due now. */
+export async function insertAll(kind: string, payloads: unknown[], tx: Queryable = db) {
+  const now = new Date();
+  for (let i = 0; i < payloads.length; i += BATCH) {
+    const batch = payloads.slice(i, i + BATCH);
+    await tx.insert(jobs).values(batch.map((payload) => ({ kind, payload, runAt: now, createdAt: now })));
+  }
 }
 
 /** Claims due work for `leaseMs`; other processes skip what is locked and see it again when the lease runs out. */

@@ -9,6 +9,10 @@ export async function findById(id: number, tx: Queryable = db): Promise<User | u
   return (await tx.select().from(users).where(eq(users.id, id)).limit(1))[0];
 }
 
+export async function findByPublicId(publicId: string, tx: Queryable = db): Promise<User | undefined> {
+  return (await tx.select().from(users).where(eq(users.publicId, publicId)).limit(1))[0];
+}
+
 export async function findByUserName(userName: string, tx: Queryable = db): Promise<User | undefined> {
   return (await tx.select().from(users).where(eq(users.userName, userName)).limit(1))[0];
 }
@@ -83,11 +87,12 @@ export async function freeUserName(wish: string, tx: Queryable = db): Promise<st
   return `${base.slice(0, 28)}-${newPublicId()}`;
 }
 
-export async function countAdministrators(tx: Queryable = db): Promise<number> {
-  const rows = await tx
+/** Locks the rows of the administrators who can sign in, so that the last two can't both go at once. */
+export async function lockAdministrators(tx: Queryable) {
+  return tx
     .select({ id: users.id })
     .from(users)
     .where(and(eq(users.administrator, true), isNull(users.suspendedAt)))
-    .limit(100);
-  return rows.length;
+    .limit(100)
+    .for("update");
 }

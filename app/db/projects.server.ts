@@ -81,6 +81,11 @@ export async function update(id: number, values: Partial<typeof projects.$inferI
     .where(eq(projects.id, id));
 }
 
+/** Locks the project's row: nothing can be put into the project until the transaction ends. */
+export async function lock(id: number, tx: Queryable) {
+  return (await tx.select().from(projects).where(eq(projects.id, id)).limit(1).for("update"))[0];
+}
+
 export async function deleteById(id: number, tx: Queryable = db) {
   await tx.delete(projects).where(eq(projects.id, id));
 }
@@ -110,6 +115,17 @@ export async function lockOwners(projectId: number, tx: Queryable) {
     .where(and(eq(memberships.projectId, projectId), eq(memberships.role, "owner")))
     .limit(100)
     .for("update");
+}
+
+/** What the person is in the project, locked until the transaction ends. */
+export async function lockMember(projectId: number, userId: number, tx: Queryable) {
+  const rows = await tx
+    .select({ role: memberships.role })
+    .from(memberships)
+    .where(and(eq(memberships.projectId, projectId), eq(memberships.userId, userId)))
+    .limit(1)
+    .for("update");
+  return rows[0]?.role;
 }
 
 export async function insertMember(projectId: number, userId: number, role: ProjectRole, tx: Queryable = db) {

@@ -42,6 +42,10 @@ export async function deleteOthers(userId: number, keepId: string, tx: Queryable
   await tx.delete(sessions).where(and(eq(sessions.userId, userId), ne(sessions.id, keepId)));
 }
 
+export async function deleteAllByUser(userId: number, tx: Queryable = db) {
+  await tx.delete(sessions).where(eq(sessions.userId, userId));
+}
+
 export async function deleteExpired(tx: Queryable = db) {
   await tx.delete(sessions).where(lt(sessions.expiresAt, new Date()));
 }

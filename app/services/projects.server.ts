@@ -1,0 +1,91 @@
+import type { ProjectRole } from "~/auth/permissions";
+import { inTransaction, isDuplicate, type Transaction } from "~/db/client.server";
+import * as jobs from "~/db/jobs.server";
+import * as people from "~/db/people.server";
+import * as projects from "~/db/projects.server";
+import * as sweeps from "~/db/sweeps.server";
+
+/** Makes a project with its first owner. */
+export function createProject(project: projects.NewProject, ownerId: number) {
+  return inTransaction(async (tx) => {
+    const made = await projects.insert(project, tx);
+    await projects.insertMember(made.id, ownerId, "owner", tx);
+    return made;
+  });
+}
+
+/** Removes the project with all that hangs on it; its stored originals go in the background, in the same write. */
+export function deleteProject(id: number): Promise<void> {
+  return inTransaction(async (tx) => {
+    // Locked before the keys are read: an upload under way is either seen here or finds no project.
+    await projects.lock(id, tx);
+    const keys = await sweeps.findStorageKeys(id, tx);
+    await jobs.insertAll(
+      "delete-object",
+      keys.map((key) => ({ key })),
+      tx,
+    );
+    await projects.deleteById(id, tx);
+  });
+}
+
+export type BandValues = Parameters<typeof projects.replaceDesignBands>[1][number];
+
+export async function changeBands(projectId: number, bands: BandValues[]): Promise<void> {
+  await inTransaction(async (tx) => {
+    await projects.replaceDesignBands(projectId, bands, tx);
+    await projects.update(projectId, {}, tx);
+  });
+}
+
+export type AddedMember = "added" | "already" | "unknown";
+
+/** Adds a member by user name. Adding someone who is there already changes nothing, not even the role. */
+export async function addMember(
+  projectId: number,
+  userName: string,
+  role: ProjectRole,
+): Promise<AddedMember> {
+  const user = await people.findByUserName(userName);
+  if (!user || user.suspendedAt) return "unknown";
+  try {
+    await projects.insertMember(projectId, user.id, role);
+    return "added";
+  } catch (error) {
+    if (isDuplicate(error)) return "already";
+    throw error;
+  }
+}
+
+export type MemberChange = "done" | "last-owner" | "not-a-member";
+
+/** Gives a member another role; the last owner stays one. */
+export function changeRole(projectId: number, userName: string, role: ProjectRole): Promise<MemberChange> {
+  return changeMember(projectId, userName, role !== "owner", (userId, tx) =>
+    projects.updateMember(projectId, userId, role, tx),
+  );
+}
+
+/** Removes a member, or lets one leave; the last owner can't go. */
+export function removeMember(projectId: number, userName: string): Promise<MemberChange> {
+  return changeMember(projectId, userName, true, (userId, tx) =>
+    projects.deleteMember(projectId, userId, tx),
+  );
+}
+
+function changeMember(
+  projectId: number,
+  userName: string,
+  takesOwnership: boolean,
+  change: (userId: number, tx: Transaction) => Promise<void>,
+): Promise<MemberChange> {
+  return inTransaction(async (tx) => {
+    const owners = await projects.lockOwners(projectId, tx);
+    const user = await people.findByUserName(userName, tx);
+    const role = user && (await projects.lockMember(projectId, user.id, tx));
+    if (!user || !role) return "not-a-member";
+    if (takesOwnership && role === "owner" && owners.length === 1) return "last-owner";
+    await change(user.id, tx);
+    return "done";
+  });
+}

@@ -1,0 +1,41 @@
+import { RateLimiterMemory, RateLimiterMySQL, RateLimiterRes } from "rate-limiter-flexible";
+import { pool } from "~/db/client.server";
+import { env } from "~/env.server";
+
+/** How often, counted in the database: all processes share one count. */
+
+export type Bucket = keyof typeof LIMITS;
+
+const LIMITS = {
+  "api-read": { points: 600, duration: 60 },
+  "api-write": { points: 120, duration: 60 },
+};
+
+/** Counts one use; the answer is null while there is room, else the seconds until there is. */
+export async function takeOne(bucket: Bucket, key: string): Promise<number | null> {
+  try {
+    await limiters[bucket].consume(key);
+    return null;
+  } catch (rejected) {
+    if (!(rejected instanceof RateLimiterRes)) throw rejected;
+    return Math.max(1, Math.ceil(rejected.msBeforeNext / 1000));
+  }
+}
+
+const limiters = Object.fromEntries(
+  Object.entries(LIMITS).map(([bucket, limit]) => [
+    bucket,
+    new RateLimiterMySQL({
+      ...limit,
+      keyPrefix: bucket,
+      // The limiter speaks to the driver's own pool, under the one that answers with promises.
+      storeClient: pool.pool,
+      storeType: "pool",
+      dbName: new URL(env.DATABASE_URL).pathname.slice(1),
+      tableName: "rate_limits",
+      tableCreated: true,
+      // A database that can't count for a moment must not stop the work: this process counts by itself.
+      insuranceLimiter: new RateLimiterMemory({ ...limit, keyPrefix: bucket }),
+    }),
+  ]),
+) as Record<Bucket, RateLimiterMySQL>;
