@@ -29,6 +29,10 @@ interface Span {
 const END_TOLERANCE = 3;
 /** Ticks let a grid line stick out of the plot by up to this many pixels. */
 const TICK_LENGTH = 12;
+/** Half the width over which one outline may be found as several lines. */
+const THICK_OUTLINE = 4.2;
+/** A tick's label can seem to continue the line further. */
+const LABEL_REACH = 24;
 /** Smallest share of the picture's sides that a plot has. */
 const SMALLEST_SIDE = 0.25;
 
@@ -46,7 +50,11 @@ export function findFrame(picture: Picture, given?: { left: number; top: number;
   const verticals = findLines(turned, height, width);
   const best = given ? { ...given, score: 0, sides: 4, inside: 0 } : bestRectangle(horizontals, verticals, width, height);
   if (!best) return null;
-  const { left, top, right, bottom } = best;
+  const settle = (lines: Line[], at: number, from: number, to: number) => (given ? at : centreOfStroke(lines, at, from, to));
+  const left = settle(verticals, best.left, best.top, best.bottom);
+  const right = settle(verticals, best.right, best.top, best.bottom);
+  const top = settle(horizontals, best.top, best.left, best.right);
+  const bottom = settle(horizontals, best.bottom, best.left, best.right);
   const horizontal = horizontals.filter((l) => between(l.position, top, bottom) && covers(l, left, right));
   const vertical = verticals.filter((l) => between(l.position, left, right) && covers(l, top, bottom));
   const rows = countDivisions(grey, width, { left, right, top, bottom }, horizontal);
@@ -100,7 +108,7 @@ function spans(lines: Line[], crossing: Line[], shortest: number): Span[] {
   }
   for (const a of crossing) {
     for (const b of crossing) {
-      if (Math.abs(a.from - b.from) <= END_TOLERANCE && Math.abs(a.to - b.to) <= END_TOLERANCE) add(a.position, b.position, 0.5);
+      if (Math.abs(a.from - b.from) <= LABEL_REACH && Math.abs(a.to - b.to) <= LABEL_REACH) add(a.position, b.position, 0.5);
     }
   }
   return found.sort((a, b) => b.votes - a.votes).slice(0, 60);
@@ -126,8 +134,8 @@ function judge(x: Span, y: Span, horizontals: Line[], verticals: Line[], width: 
   const v = support(verticals, y, x);
   const sides = h.sides + v.sides;
   const inside = h.inside + v.inside;
-  if (sides < 2 && inside < 4) return null;
-  if (h.sides + h.inside < 2 || v.sides + v.inside < 2) return null;
+  if (sides < 1.2 && inside < 3) return null;
+  if (h.sides + h.inside < 1.1 || v.sides + v.inside < 1.1) return null;
   const area = ((x.to - x.from) * (y.to - y.from)) / (width * height);
   const margins = [x.from / width, y.from / height, 1 - x.to / width, 1 - y.to / height];
   const bezel = margins.filter((m) => m < 0.015).length >= 3 ? 0.3 : 1;
@@ -144,7 +152,8 @@ function support(lines: Line[], along: Span, across: Span): { sides: number; ins
   for (const line of lines) {
     const before = along.from - line.from;
     const after = line.to - along.to;
-    if (Math.max(Math.abs(before), Math.abs(after)) > TICK_LENGTH) continue;
+    const shortest = -Math.max(TICK_LENGTH, 0.05 * (along.to - along.from));
+    if (Math.max(before, after) > LABEL_REACH || Math.min(before, after) < shortest) continue;
     const ends = fit(before) + fit(after);
     exact += ends;
     if (Math.abs(line.position - across.from) <= 1) first = Math.max(first, ends);
@@ -157,7 +166,7 @@ function support(lines: Line[], along: Span, across: Span): { sides: number; ins
 /** Half a vote for an end that fits; a tick may stick out, a trace may cover the last stretch. */
 function fit(overshoot: number): number {
   if (Math.abs(overshoot) <= END_TOLERANCE) return 0.5;
-  return overshoot > 0 ? 0.4 : 0.25;
+  return overshoot < 0 ? 0.25 : overshoot <= TICK_LENGTH ? 0.4 : 0.3;
 }
 
 /** A window's border around the plot scores by its size alone: the gridded rectangle inside it is meant. */
@@ -170,6 +179,14 @@ function preferInner(best: Rectangle, all: Rectangle[]): Rectangle {
     .filter((r) => within(r) && area(r) > 0.35 * area(best) && (r.sides === 4 || r.inside > 6))
     .sort((a, b) => b.score - a.score)[0];
   return inner ?? best;
+}
+
+/** A thick or sharpened outline is found as several lines side by side: their middle by contrast is meant. */
+function centreOfStroke(lines: Line[], at: number, from: number, to: number): number {
+  const near = lines.filter((l) => Math.abs(l.position - at) <= THICK_OUTLINE && covers(l, from, to));
+  const weight = near.reduce((sum, l) => sum + l.contrast * (l.kind === "stroke" ? 2 : 1), 0);
+  if (weight === 0) return at;
+  return near.reduce((sum, l) => sum + l.position * l.contrast * (l.kind === "stroke" ? 2 : 1), 0) / weight;
 }
 
 function between(position: number, from: number, to: number): boolean {

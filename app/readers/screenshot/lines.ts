@@ -11,6 +11,9 @@ const SHORTEST_SHARE = 0.08;
 /** Pixels in which a line's end must show it as regularly as its middle, for solid and for dotted lines. */
 const END_WINDOW_SOLID = 24;
 const END_WINDOW_DOTTED = 32;
+/** Pixels without the step that count as a long hole, and the share of them that a line may have. */
+const LONG_HOLE = 9;
+const MOST_HOLES = 0.35;
 /** Rows that one stroke's edges may lie apart: strokes are up to 4 pixels thick. */
 const THICKEST = 4;
 
@@ -46,8 +49,8 @@ function chainsOfRow(grey: Float32Array, width: number, row: number, chains: Cha
   const close = () => {
     if (first >= 0 && hits >= 3 && hits >= 0.6 * (last - first + 1)) {
       const chain = { row, from: first * BLOCK, to: last * BLOCK + BLOCK - 1, step: sum / hits };
-      refineEnds(chain, grey, width);
-      if (chain.to - chain.from >= SHORTEST_SHARE * width * 0.8) chains.push(chain);
+      const share = refineEnds(chain, grey, width);
+      if (share < MOST_HOLES && chain.to - chain.from >= SHORTEST_SHARE * width * 0.8) chains.push(chain);
     }
     first = -1;
   };
@@ -75,8 +78,11 @@ function chainsOfRow(grey: Float32Array, width: number, row: number, chains: Cha
   close();
 }
 
-/** Moves both ends to where the step is as regularly present as in the middle; text beside a line is not. */
-function refineEnds(chain: Chain, grey: Float32Array, width: number): void {
+/**
+ * Moves both ends to where the step is as regularly present as in the middle; text beside a line is not.
+ * Returns the share of long holes: a column of printed labels has many, a dotted line none.
+ */
+function refineEnds(chain: Chain, grey: Float32Array, width: number): number {
   const upper = chain.row * width;
   const lower = upper + width;
   const sign = Math.sign(chain.step);
@@ -100,21 +106,38 @@ function refineEnds(chain: Chain, grey: Float32Array, width: number): void {
   while (to - window > first && !(at(to) >= enough && regular(to + 1 - near, to + 1) && regular(to + 1 - window, to + 1))) to--;
   chain.from = from;
   chain.to = to;
+  let holes = 0;
+  let absent = 0;
+  for (let x = from; x <= to; x++) {
+    absent = at(x) >= enough ? 0 : absent + 1;
+    if (absent === LONG_HOLE) holes += LONG_HOLE;
+    else if (absent > LONG_HOLE) holes++;
+  }
+  return holes / (to - from + 1);
 }
 
-/** Chains of neighbouring rows that cover the same stretch, or continue each other, belong to one line. */
+/** The strongest chains take their weaker neighbours: other side of the stroke, ringing, a continuation. */
 function groupChains(chains: Chain[], width: number): Chain[][] {
-  const open: Chain[][] = [];
-  const done: Chain[][] = [];
-  for (const chain of chains) {
-    for (let i = open.length - 1; i >= 0; i--) {
-      if (chain.row - open[i][0].row > THICKEST) done.push(...open.splice(i, 1));
+  const order = [...chains].sort((a, b) => Math.abs(b.step) - Math.abs(a.step));
+  const byRow = new Map<number, Chain[]>();
+  for (const chain of chains) byRow.set(chain.row, [...(byRow.get(chain.row) ?? []), chain]);
+  const taken = new Set<Chain>();
+  const groups: Chain[][] = [];
+  for (const head of order) {
+    if (taken.has(head)) continue;
+    const group = [head];
+    taken.add(head);
+    for (let row = head.row - THICKEST; row <= head.row + THICKEST; row++) {
+      for (const chain of byRow.get(row) ?? []) {
+        if (taken.has(chain) || (Math.abs(row - head.row) > 2 && chain.step * head.step > 0)) continue;
+        if (!sameLine(head, chain, width)) continue;
+        taken.add(chain);
+        group.push(chain);
+      }
     }
-    const home = open.find((group) => group.some((c) => sameLine(c, chain, width)));
-    if (home) home.push(chain);
-    else open.push([chain]);
+    groups.push(group);
   }
-  return [...done, ...open];
+  return groups;
 }
 
 function sameLine(a: Chain, b: Chain, width: number): boolean {
@@ -127,7 +150,9 @@ function sameLine(a: Chain, b: Chain, width: number): boolean {
 
 function measureLine(group: Chain[], grey: Float32Array, width: number, height: number): Line {
   const strongest = group.reduce((a, b) => (Math.abs(b.step) > Math.abs(a.step) ? b : a));
-  const opposite = group.find((c) => c.step * strongest.step < 0 && Math.abs(c.step) > 0.3 * Math.abs(strongest.step));
+  const opposite = group
+    .filter((c) => c.step * strongest.step < 0 && Math.abs(c.step) > 0.3 * Math.abs(strongest.step))
+    .sort((a, b) => Math.abs(b.step) - Math.abs(a.step))[0];
   const partner = opposite ?? strongest;
   const first = Math.min(strongest.row, partner.row) - 2;
   const last = Math.max(strongest.row, partner.row) + 3;
