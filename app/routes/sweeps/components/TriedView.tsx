@@ -1,0 +1,59 @@
+import { Profile } from "~/charts/Profile";
+import type { TriedReading } from "~/services/reading-preview.server";
+
+/** What the reading gives: the curve, its dips, what was assumed; or what stands in its way. */
+export function TriedView({ tried, busy }: { tried: TriedReading; busy: boolean }) {
+  return (
+    <section
+      aria-label="What the reading gives"
+      aria-busy={busy}
+      className={`grid gap-4 ${busy ? "waiting relative" : ""}`}
+    >
+      {tried.problem && (
+        <div role="alert" className="panel border-l-4 border-l-alarm grid gap-1">
+          <p className="font-semibold text-alarm">{tried.problem.message}</p>
+          {tried.problem.line && (
+            <p className="text-small">
+              Line {tried.problem.line}
+              {tried.problem.column ? `, column ${tried.problem.column}` : ""}
+            </p>
+          )}
+        </div>
+      )}
+      {tried.profile && (
+        <>
+          <Profile profile={tried.profile} width="100%" height={200} scale="linear" />
+          <p className="text-small">
+            <span className="font-mono">{tried.points?.toLocaleString("en")}</span> points,{" "}
+            <span className="font-mono">{tried.span}</span>.{" "}
+            {tried.dips.length === 0 ? (
+              "No dips."
+            ) : (
+              <>
+                Dips:{" "}
+                <span className="font-mono">
+                  {tried.dips.map((dip) => `${dip.frequency} (SWR ${dip.swr})`).join(", ")}
+                </span>
+              </>
+            )}
+          </p>
+        </>
+      )}
+      {tried.reading && tried.reading.assumed.length > 0 && (
+        <div>
+          <h3>What the file did not say</h3>
+          <ul className="list-disc pl-5 text-small">
+            {tried.reading.assumed.map((sentence) => (
+              <li key={sentence}>{sentence}</li>
+            ))}
+          </ul>
+        </div>
+      )}
+      {tried.warnings.map((warning) => (
+        <p key={warning} className="text-small text-clay">
+          {warning}
+        </p>
+      ))}
+    </section>
+  );
+}

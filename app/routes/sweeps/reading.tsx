@@ -1,0 +1,137 @@
+import { data, Link } from "react-router";
+import { requireProject } from "~/auth/require.server";
+import { Breadcrumbs } from "~/components/ui/Breadcrumbs";
+import { LinkButton } from "~/components/ui/Button";
+import { refused } from "~/errors";
+import { DEFAULT_SETTINGS } from "~/measurement/sweep";
+import { redirectWithMessage } from "~/services/flash.server";
+import { tryReading } from "~/services/reading-preview.server";
+import { getObject } from "~/services/storage.server";
+import { readAnew } from "~/services/sweep-edits.server";
+import type { Route } from "./+types/reading";
+import { ReadingForm } from "./components/ReadingForm";
+import { ReadingRows } from "./components/ReadingRows";
+import { TriedView } from "./components/TriedView";
+import { useTriedReading } from "./components/use-tried-reading";
+import { givenFromForm } from "./reading.schema";
+import { requireSweep } from "./require-sweep.server";
+
+export const meta: Route.MetaFunction = ({ data }) => [
+  { title: `Reading of ${data?.title ?? "a sweep"} · Swale` },
+];
+
+export async function loader(args: Route.LoaderArgs) {
+  const access = await requireProject(args, "project.read");
+  const found = await requireSweep(access, args.params.sweep);
+  const { sweep, file, reading, analysis } = found;
+  const bytes = await getObject(file.storageKey);
+  const stored = await tryReading(
+    { name: file.name, bytes },
+    reading?.given ?? {},
+    analysis?.settings ?? DEFAULT_SETTINGS,
+  );
+  return {
+    projectId: access.project.publicId,
+    sweepId: sweep.publicId,
+    title: sweep.title,
+    unread: sweep.problem !== null,
+    fileName: file.name,
+    sha256: file.sha256,
+    number: reading?.number ?? null,
+    fixed: Object.keys(reading?.given.text ?? reading?.given.touchstone ?? {}),
+    mayEdit: access.may("sweep.edit"),
+    stored,
+  };
+}
+
+export async function action(args: Route.ActionArgs) {
+  const access = await requireProject(args, "sweep.edit");
+  if (!access.person) throw refused("Sign in first. Nothing was changed.");
+  const found = await requireSweep(access, args.params.sweep);
+  const form = await args.request.formData();
+  const current = found.reading?.reading;
+  if (!current) return data({ errors: { form: NOTHING_TO_CHOOSE } }, 400);
+  const again = form.get("intent") === "afresh";
+  const result = again ? { given: {} } : givenFromForm(form, found.reading?.given ?? {}, current);
+  if ("errors" in result) return data({ errors: result.errors }, 400);
+  const settings = found.analysis?.settings ?? DEFAULT_SETTINGS;
+  const problem = await readAnew(found, result.given, settings, access.person.id);
+  if (problem) {
+    const place = problem.line
+      ? ` (line ${problem.line}${problem.column ? `, column ${problem.column}` : ""})`
+      : "";
+    return data({ errors: { form: `${problem.message}${place} The reading was left as it was.` } }, 400);
+  }
+  return redirectWithMessage(
+    `/projects/${access.project.publicId}/sweeps/${found.sweep.publicId}`,
+    "Read anew. Notes and verdicts stayed with their dips.",
+  );
+}
+
+export default function ReadingPage({ loaderData, actionData }: Route.ComponentProps) {
+  const { projectId, sweepId, title, stored, mayEdit, unread } = loaderData;
+  const base = `/projects/${projectId}/sweeps/${sweepId}`;
+  const { tried, errors, busy, onChange } = useTriedReading(`${base}/reading/try`);
+  const shown = tried ?? stored;
+  const faults = { ...errors, ...actionData?.errors };
+  return (
+    <div className="grid gap-6">
+      <div className="grid gap-1">
+        <Breadcrumbs
+          items={[
+            { label: "Sweeps", to: `/projects/${projectId}/sweeps` },
+            ...(unread ? [] : [{ label: title, to: base }]),
+          ]}
+        />
+        <h2>How “{title}” was read</h2>
+        <Source data={loaderData} base={base} />
+      </div>
+      <div className="reading-page">
+        <div className="grid gap-6 content-start min-w-0">
+          <TriedView tried={shown} busy={busy} />
+          {shown.reading?.preview && <ReadingRows reading={shown.reading} />}
+        </div>
+        <div className="grid gap-4 content-start min-w-0">
+          {faults.form && (
+            <p role="alert" className="text-alarm">
+              {faults.form}
+            </p>
+          )}
+          {stored.reading ? (
+            <ReadingForm
+              reading={stored.reading}
+              problem={shown.problem}
+              errors={faults}
+              mayEdit={mayEdit}
+              onChange={onChange}
+            />
+          ) : (
+            <div className="panel grid gap-3 justify-items-start">
+              <p>{NOTHING_TO_CHOOSE} The original is kept and can be downloaded.</p>
+              {mayEdit && (
+                <LinkButton to={`/projects/${projectId}/sweeps/new`} icon="upload">
+                  Add another file
+                </LinkButton>
+              )}
+            </div>
+          )}
+        </div>
+      </div>
+    </div>
+  );
+}
+
+function Source({ data, base }: { data: Route.ComponentProps["loaderData"]; base: string }) {
+  return (
+    <p className="text-small soft break-words">
+      <Link to={`${base}/original`} reloadDocument>
+        {data.fileName}
+      </Link>
+      , SHA-256 <span className="font-mono">{data.sha256.slice(0, 12)}…</span>
+      {data.number !== null && ` · reading ${data.number}`}
+      {data.fixed.length > 0 && ` · chosen by hand: ${data.fixed.join(", ")}`}
+    </p>
+  );
+}
+
+const NOTHING_TO_CHOOSE = "Nothing of this file was understood, so there is nothing to choose.";

@@ -1,0 +1,107 @@
+import type { ProjectAccess } from "~/auth/require.server";
+import type { ChartPoints } from "~/charts/decimate";
+import * as dips from "~/db/dips.server";
+import * as people from "~/db/people.server";
+import * as projects from "~/db/projects.server";
+import type { FoundSweep } from "~/db/sweeps.server";
+import { analyse } from "~/measurement/analyse";
+import { bandsOverlapping, type ItuRegion } from "~/measurement/bands";
+import { decimate } from "~/measurement/decimate";
+import type { AnalysisSettings, Sweep } from "~/measurement/sweep";
+import { listThread } from "~/services/notes.server";
+import { decodePoints, pickPoints } from "~/services/points.server";
+import { storedDips, triedDips } from "~/services/shown-dips.server";
+import { loadPoints } from "~/services/sweep-points.server";
+import type { SweepView } from "./sweeps.schema";
+
+/** All that the sweep page shows besides the sweep's own row: one round of queries, all at once. */
+export async function loadSweepPage(
+  access: ProjectAccess,
+  found: FoundSweep,
+  view: SweepView,
+  settings: AnalysisSettings,
+) {
+  const { project, person } = access;
+  const { sweep, reading } = found;
+  const chosen = view.dip ? dips.findByPublicId(view.dip) : undefined;
+  const [known, designBands, dismissed, dip] = await Promise.all([
+    dips.findAllBySweep(sweep.id),
+    projects.findDesignBands(project.id),
+    person ? people.findDismissals(person.id) : [],
+    chosen,
+  ]);
+  const tried = triedSettings(view, settings);
+  const zoomed = view.fromHz !== null || view.toHz !== null;
+  const full = (tried || zoomed) && reading ? await loadPoints(reading.id) : null;
+  const analysis = tried && full ? analyse(full, tried) : null;
+  const range = rangeOf(view, found);
+  return {
+    dips: analysis ? triedDips(analysis.dips, known, designBands) : storedDips(known, designBands),
+    lostDips: known.filter((listed) => !listed.dip.present).map(lostDip),
+    warnings: analysis?.warnings ?? found.analysis?.warnings ?? [],
+    noiseDb: analysis?.noiseDb ?? found.analysis?.noiseDb ?? null,
+    tried: tried !== null,
+    range,
+    points: chartPoints(full ? zoomPoints(full, range) : previewOf(found)),
+    designBands: designBands.map(({ name, lowHz, highHz }) => ({ name, lowHz, highHz })),
+    bands: bandsOverlapping((project.ituRegion as ItuRegion | null) ?? null, range.fromHz, range.toHz),
+    dismissed,
+    thread:
+      dip && dip.dip.sweepId === sweep.id
+        ? {
+            publicId: dip.dip.publicId,
+            verdict: dip.dip.verdict,
+            verdictText: dip.dip.verdictText,
+            verdictBy: dip.verdictBy,
+            notes: await listThread({ projectId: project.id, sweepId: sweep.id, dipId: dip.dip.id }, access),
+          }
+        : null,
+    sweepThread: await listThread({ projectId: project.id, sweepId: sweep.id, dipId: null }, access),
+  };
+}
+
+/** The settings of the address where they differ from the stored ones. */
+function triedSettings(view: SweepView, stored: AnalysisSettings): AnalysisSettings | null {
+  const swrLimit = view.swrLimit ?? stored.swrLimit;
+  const minimumProminenceDb = view.minimumProminenceDb ?? stored.minimumProminenceDb;
+  const same = swrLimit === stored.swrLimit && minimumProminenceDb === stored.minimumProminenceDb;
+  return same ? null : { swrLimit, minimumProminenceDb };
+}
+
+/** The stretch that is drawn: the asked one inside the sweep, or all of it when nothing of it would be left. */
+function rangeOf(view: SweepView, { sweep }: FoundSweep): { fromHz: number; toHz: number } {
+  const startHz = sweep.startHz ?? 0;
+  const stopHz = sweep.stopHz ?? 0;
+  const fromHz = Math.max(startHz, view.fromHz ?? startHz);
+  const toHz = Math.min(stopHz, view.toHz ?? stopHz);
+  return fromHz < toHz ? { fromHz, toHz } : { fromHz: startHz, toHz: stopHz };
+}
+
+function previewOf({ sweep }: FoundSweep): Sweep | null {
+  return sweep.preview ? decodePoints([sweep.preview]) : null;
+}
+
+function zoomPoints(full: Sweep, range: { fromHz: number; toHz: number }): Sweep {
+  return pickPoints(full, decimate(full, CHART_POINTS, range));
+}
+
+/** Rounded to what a chart can show; JSON has no NaN, so a gap is null. */
+function chartPoints(sweep: Sweep | null): { frequencyHz: number[]; magnitude: (number | null)[] } {
+  if (!sweep) return { frequencyHz: [], magnitude: [] };
+  return {
+    frequencyHz: Array.from(sweep.frequencyHz, (hz) => Number(hz.toPrecision(8))),
+    magnitude: Array.from(sweep.magnitude, (value) =>
+      Number.isNaN(value) ? null : Number(value.toPrecision(5)),
+    ),
+  };
+}
+
+/** Points as the drawing takes them. */
+export type SentPoints = ReturnType<typeof chartPoints>;
+export type { ChartPoints };
+
+function lostDip({ dip, noteCount }: dips.ListedDip) {
+  return { publicId: dip.publicId, frequencyHz: dip.frequencyHz, noteCount, verdict: dip.verdict };
+}
+
+const CHART_POINTS = 1600;

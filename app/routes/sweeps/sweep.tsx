@@ -1,0 +1,138 @@
+import { data, redirect } from "react-router";
+import { requireProject } from "~/auth/require.server";
+import * as sweeps from "~/db/sweeps.server";
+import { refused } from "~/errors";
+import { DEFAULT_SETTINGS } from "~/measurement/sweep";
+import { redirectWithMessage } from "~/services/flash.server";
+import { deleteSweep, keepSettings } from "~/services/sweep-edits.server";
+import type { Route } from "./+types/sweep";
+import { Advice } from "./components/Advice";
+import { OutsideBandsCaution } from "./components/cautions";
+import { DipsTable } from "./components/DipsTable";
+import { Downloads } from "./components/Downloads";
+import { LostDips } from "./components/LostDips";
+import { SettingsForm } from "./components/SettingsForm";
+import { SweepHead } from "./components/SweepHead";
+import { SweepThreads } from "./components/SweepThreads";
+import { SweepView } from "./components/SweepView";
+import { ViewBar } from "./components/ViewBar";
+import { requireSweep } from "./require-sweep.server";
+import { loadSweepPage } from "./sweep-page.server";
+import { editSweepSchema, parseView, settingsSchema } from "./sweeps.schema";
+
+export const meta: Route.MetaFunction = ({ data }) => [{ title: `${data?.sweep.title ?? "Sweep"} · Swale` }];
+
+export async function loader(args: Route.LoaderArgs) {
+  const access = await requireProject(args, "project.read");
+  const found = await requireSweep(access, args.params.sweep);
+  const { sweep, file, reading, analysis } = found;
+  if (sweep.problem || !analysis) {
+    throw redirect(`/projects/${access.project.publicId}/sweeps/${sweep.publicId}/reading`);
+  }
+  const view = parseView(new URL(args.request.url).searchParams);
+  return {
+    project: { publicId: access.project.publicId, title: access.project.title },
+    may: {
+      edit: access.may("sweep.edit"),
+      delete: access.may("sweep.delete"),
+      write: access.may("note.write"),
+    },
+    mayVerdict: { propose: access.may("verdict.propose"), settle: access.may("verdict.settle") },
+    sweep: {
+      publicId: sweep.publicId,
+      title: sweep.title,
+      takenAt: sweep.takenAt,
+      createdAt: sweep.createdAt,
+      by: found.by,
+      pointCount: sweep.pointCount,
+      startHz: sweep.startHz,
+      stopHz: sweep.stopHz,
+      referenceOhm: sweep.referenceOhm,
+      complex: sweep.complex ?? false,
+      fileName: file.name,
+      sha256: file.sha256,
+      format: reading?.reading?.format ?? null,
+      quantity: reading?.reading?.quantity ?? null,
+      assumed: reading?.reading?.assumed ?? [],
+      questions: reading?.reading?.questions.length ?? 0,
+    },
+    analysis: { settings: analysis.settings, version: analysis.version, number: analysis.number },
+    view,
+    ...(await loadSweepPage(access, found, view, analysis.settings)),
+  };
+}
+
+export async function action(args: Route.ActionArgs) {
+  const form = await args.request.formData();
+  const intent = String(form.get("intent"));
+  const access = await requireProject(args, intent === "delete" ? "sweep.delete" : "sweep.edit");
+  if (!access.person) throw refused("Sign in first. Nothing was changed.");
+  const found = await requireSweep(access, args.params.sweep);
+  const here = `/projects/${access.project.publicId}/sweeps/${found.sweep.publicId}`;
+  switch (intent) {
+    case "edit": {
+      const parsed = editSweepSchema.safeParse({
+        title: form.get("title") ?? undefined,
+        takenAt: form.get("takenAt") || undefined,
+      });
+      if (!parsed.success) return data({ errors: parsed.error.issues.map((issue) => issue.message) }, 400);
+      await sweeps.update(found.sweep.id, { title: parsed.data.title, takenAt: parsed.data.takenAt ?? null });
+      return redirectWithMessage(here, "Title and date kept.");
+    }
+    case "settings": {
+      const parsed = settingsSchema.safeParse(Object.fromEntries(form));
+      if (!parsed.success) return data({ errors: parsed.error.issues.map((issue) => issue.message) }, 400);
+      await keepSettings(found, { ...DEFAULT_SETTINGS, ...parsed.data }, access.person.id);
+      const search = new URL(args.request.url).searchParams;
+      search.delete("limit");
+      search.delete("prominence");
+      return redirectWithMessage(
+        `${here}?${search}`,
+        "Analysed anew; these settings are kept with the sweep.",
+      );
+    }
+    case "delete": {
+      await deleteSweep(found);
+      return redirectWithMessage(
+        `/projects/${access.project.publicId}/sweeps`,
+        `“${found.sweep.title}” was deleted with its original.`,
+      );
+    }
+    default:
+      return data(
+        { errors: ["The form asked for something this page does not do. Nothing was changed."] },
+        400,
+      );
+  }
+}
+
+export default function SweepPage({ loaderData, actionData }: Route.ComponentProps) {
+  const { view, dips, analysis, thread } = loaderData;
+  const outside = dips.some((dip) => dip.inDesignBand === false && !dip.edge);
+  const swrLimit = view.swrLimit ?? analysis.settings.swrLimit;
+  return (
+    <article className="grid gap-6">
+      <SweepHead data={loaderData} errors={actionData?.errors ?? []} />
+      {outside && <OutsideBandsCaution dismissed={loaderData.dismissed} />}
+      <div className={thread ? "workspace workspace-open" : "workspace"}>
+        <div className="grid gap-4 min-w-0 content-start">
+          <div className="flex flex-wrap items-end justify-between gap-4">
+            <ViewBar view={view} />
+            <SettingsForm view={view} stored={analysis.settings} mayKeep={loaderData.may.edit} />
+          </div>
+          <SweepView data={loaderData} />
+          <Advice data={loaderData} />
+          <section aria-labelledby="dips" className="grid gap-3">
+            <h2 id="dips">Dips as numbers</h2>
+            <DipsTable dips={dips} view={view} swrLimit={swrLimit} />
+            <LostDips data={loaderData} />
+          </section>
+          <Downloads data={loaderData} />
+        </div>
+        <SweepThreads data={loaderData} />
+      </div>
+    </article>
+  );
+}
+
+export type SweepPageData = Route.ComponentProps["loaderData"];

@@ -1,0 +1,102 @@
+import type { ProjectAccess } from "~/auth/require.server";
+import { refused } from "~/errors";
+import { type Taken, takeIn } from "~/services/intake.server";
+import { log } from "~/services/log.server";
+
+/** What became of one file, ready to be shown. */
+export interface UploadResult {
+  name: string;
+  kind: Taken["kind"] | "failed";
+  title: string;
+  message: string;
+  /** Where to go on; null where nothing was stored. */
+  href: string | null;
+}
+
+/** Takes the files of a form in, one after another; one that fails does not stop the others. */
+export async function takeUploads(access: ProjectAccess, form: FormData): Promise<UploadResult[]> {
+  const { project, person } = access;
+  if (!person) throw refused("Sign in first. Nothing was stored.");
+  const files = form
+    .getAll("files")
+    .filter((entry): entry is File => entry instanceof File && entry.name !== "");
+  const results: UploadResult[] = [];
+  for (const file of files.slice(0, MOST_FILES)) {
+    try {
+      const bytes = new Uint8Array(await file.arrayBuffer());
+      const taken = await takeIn({
+        project,
+        by: person,
+        file: { name: file.name, bytes },
+        keepUnread: true,
+      });
+      results.push(describe(file.name, project.publicId, taken));
+    } catch (error) {
+      log.error({ err: error, name: file.name }, "a file could not be taken in");
+      results.push({
+        name: file.name,
+        kind: "failed",
+        title: file.name,
+        message: "Something failed here while the file was taken in. Nothing of it was kept; send it again.",
+        href: null,
+      });
+    }
+  }
+  for (const file of files.slice(MOST_FILES)) {
+    results.push({
+      name: file.name,
+      kind: "failed",
+      title: file.name,
+      message: `At most ${MOST_FILES} files go at once. This one was not stored; send it in the next go.`,
+      href: null,
+    });
+  }
+  return results;
+}
+
+function describe(name: string, project: string, taken: Taken): UploadResult {
+  switch (taken.kind) {
+    case "read": {
+      const dips = taken.dipCount === 1 ? "1 dip" : `${taken.dipCount || "no"} dips`;
+      const ask = taken.questions > 0 ? " The file leaves something open; look at its reading." : "";
+      return {
+        name,
+        kind: "read",
+        title: taken.title,
+        message: `Read, ${dips} found.${ask}`,
+        href: `/projects/${project}/sweeps/${taken.sweepPublicId}`,
+      };
+    }
+    case "unread":
+      return {
+        name,
+        kind: "unread",
+        title: taken.title,
+        message: `${taken.problem.message}${placeOf(taken.problem)} The file is kept; say how to read it.`,
+        href: `/projects/${project}/sweeps/${taken.sweepPublicId}/reading`,
+      };
+    case "twice":
+      return {
+        name,
+        kind: "twice",
+        title: taken.title,
+        message: `This file is already here as “${taken.title}”. It was not stored again.`,
+        href: `/projects/${project}/sweeps/${taken.sweepPublicId}`,
+      };
+    case "refused":
+      return {
+        name,
+        kind: "refused",
+        title: name,
+        message: `${taken.problem.message}${placeOf(taken.problem)}`,
+        href: null,
+      };
+  }
+}
+
+function placeOf(problem: { line?: number; column?: number }): string {
+  if (!problem.line) return "";
+  return problem.column ? ` (line ${problem.line}, column ${problem.column})` : ` (line ${problem.line})`;
+}
+
+const MOST_FILES = 100;

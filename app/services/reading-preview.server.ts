@@ -1,0 +1,61 @@
+import { decimate } from "~/measurement/decimate";
+import type { AnalysisSettings } from "~/measurement/sweep";
+import { formatFrequency, formatSwr } from "~/measurement/units";
+import type { Given, Reading, ReadProblem } from "~/readers/reading";
+import { decodePoints, pickPoints } from "./points.server.ts";
+import { readFile } from "./reading.server.ts";
+import type { SmallProfile } from "./sweep-summaries.server.ts";
+
+/** What a reading would give, without keeping it: the curve, the dips, what was assumed, or why not. */
+export interface TriedReading {
+  reading: Reading | null;
+  problem: ReadProblem | null;
+  points: number | null;
+  span: string | null;
+  profile: SmallProfile | null;
+  dips: { frequency: string; swr: string }[];
+  warnings: string[];
+}
+
+export async function tryReading(
+  file: { name: string; bytes: Uint8Array },
+  given: Given,
+  settings: AnalysisSettings,
+): Promise<TriedReading> {
+  const outcome = await readFile({ ...file, given, settings });
+  if (!outcome.ok) {
+    return {
+      reading: outcome.reading,
+      problem: outcome.problem,
+      points: null,
+      span: null,
+      profile: null,
+      dips: [],
+      warnings: [],
+    };
+  }
+  const { analysis } = outcome;
+  const preview = decodePoints([Buffer.from(outcome.preview)]);
+  const small = pickPoints(preview, decimate(preview, PROFILE_POINTS));
+  return {
+    reading: outcome.reading,
+    problem: null,
+    points: outcome.pointCount,
+    span: `${formatFrequency(outcome.startHz, null)} – ${formatFrequency(outcome.stopHz, null)}`,
+    profile: {
+      frequencyHz: Array.from(small.frequencyHz),
+      returnLossDb: Array.from(small.magnitude, (value) =>
+        Number.isNaN(value) ? null : Math.min(60, -20 * Math.log10(value)),
+      ),
+      dips: analysis.dips.map(({ frequencyHz, returnLossDb }) => ({ frequencyHz, returnLossDb })),
+    },
+    dips: analysis.dips.slice(0, MOST_DIPS).map((dip) => ({
+      frequency: formatFrequency(dip.frequencyHz, dip.frequencyUncertaintyHz),
+      swr: formatSwr(dip.minimumSwr, null, null),
+    })),
+    warnings: analysis.warnings.map((warning) => warning.message),
+  };
+}
+
+const PROFILE_POINTS = 600;
+const MOST_DIPS = 12;
