@@ -1,6 +1,7 @@
-import { and, asc, count, desc, eq, max, sql } from "drizzle-orm";
+import { and, asc, count, desc, eq, lt, max, or, sql } from "drizzle-orm";
 import type { ProjectRole, Visibility } from "~/auth/permissions";
 import { db, type Queryable } from "./client.server.ts";
+import { decodeCursor, encodeCursor } from "./cursor.server.ts";
 import { newPublicId } from "./ids.server.ts";
 import { designBands, memberships, projects, sweeps, users } from "./schema/index.ts";
 
@@ -24,12 +25,20 @@ const listColumns = {
   title: projects.title,
   summary: projects.summary,
   visibility: projects.visibility,
+  ituRegion: projects.ituRegion,
   demo: projects.demo,
   updatedAt: projects.updatedAt,
 };
 
-export async function findAllByUser(userId: number, tx: Queryable = db) {
-  return tx
+/** The projects that a person is a member of, last changed first, a page at a time. */
+export async function findPageByUser(
+  userId: number,
+  page: { limit?: number; cursor?: string } = {},
+  tx: Queryable = db,
+) {
+  const limit = Math.min(page.limit ?? 100, 100);
+  const before = page.cursor ? decodeCursor(page.cursor) : undefined;
+  const rows = await tx
     .select({
       ...listColumns,
       role: memberships.role,
@@ -39,10 +48,24 @@ export async function findAllByUser(userId: number, tx: Queryable = db) {
     .from(memberships)
     .innerJoin(projects, eq(projects.id, memberships.projectId))
     .leftJoin(sweeps, eq(sweeps.projectId, projects.id))
-    .where(eq(memberships.userId, userId))
+    .where(
+      and(
+        eq(memberships.userId, userId),
+        before &&
+          or(
+            lt(projects.updatedAt, before.at),
+            and(eq(projects.updatedAt, before.at), lt(projects.id, before.id)),
+          ),
+      ),
+    )
     .groupBy(projects.id, memberships.role)
-    .orderBy(desc(projects.updatedAt))
-    .limit(100);
+    .orderBy(desc(projects.updatedAt), desc(projects.id))
+    .limit(limit + 1);
+  const last = rows.length > limit ? rows[limit - 1] : undefined;
+  return {
+    rows: rows.slice(0, limit),
+    nextCursor: last ? encodeCursor({ at: last.updatedAt, id: last.id }) : null,
+  };
 }
 
 export async function findAllPublic(limit = 20, tx: Queryable = db) {

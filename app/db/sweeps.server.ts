@@ -2,6 +2,7 @@ import { and, asc, count, desc, eq, inArray, lt, or, sql } from "drizzle-orm";
 import type { AnalysisSettings, Dip, Warning } from "~/measurement/sweep";
 import type { Given, Reading } from "~/readers/reading";
 import { db, type Queryable } from "./client.server.ts";
+import { decodeCursor, encodeCursor } from "./cursor.server.ts";
 import { newPublicId } from "./ids.server.ts";
 import { analyses, dips, files, notes, readings, sweepPoints, sweeps, users } from "./schema/index.ts";
 
@@ -242,15 +243,3 @@ async function nextNumber(table: typeof readings | typeof analyses, sweepId: num
 
 /** Newest first by when it was taken, or where that is unknown by when it came in. */
 const orderTime = sql<Date>`coalesce(${sweeps.takenAt}, ${sweeps.createdAt})`;
-
-function encodeCursor(cursor: { at: Date; id: number }): string {
-  return Buffer.from(`${cursor.at.toISOString()}|${cursor.id}`).toString("base64url");
-}
-
-function decodeCursor(text: string): { at: Date; id: number } | undefined {
-  const [at, id] = Buffer.from(text, "base64url").toString().split("|");
-  const date = new Date(at);
-  return Number.isNaN(date.getTime()) || !Number.isInteger(Number(id))
-    ? undefined
-    : { at: date, id: Number(id) };
-}

@@ -1,0 +1,76 @@
+import { parseWithZod } from "@conform-to/zod/v4";
+import { data, Link, useRouteLoaderData } from "react-router";
+import { requirePerson } from "~/auth/require.server";
+import { ThemeSwitch } from "~/components/ThemeSwitch";
+import * as sessions from "~/db/sessions.server";
+import type { loader as rootLoader } from "~/root";
+import { redirectWithMessage } from "~/services/flash.server";
+import { renameMember } from "~/services/people.server";
+import type { Route } from "./+types/settings";
+import { settingsSchema } from "./account.schema.ts";
+import { ProfileForm } from "./components/ProfileForm.tsx";
+import { SessionList } from "./components/SessionList.tsx";
+
+export const meta: Route.MetaFunction = () => [{ title: "Settings · Swale" }];
+
+export async function loader(args: Route.LoaderArgs) {
+  const person = await requirePerson(args);
+  const rows = await sessions.findAllByUser(person.id);
+  return {
+    person: { name: person.name, userName: person.userName, email: person.email },
+    sessions: rows.map((row) => ({
+      id: row.id,
+      userAgent: row.userAgent,
+      createdAt: row.createdAt.toISOString(),
+      lastSeenAt: row.lastSeenAt.toISOString(),
+      current: row.id === person.sessionId,
+    })),
+  };
+}
+
+export async function action(args: Route.ActionArgs) {
+  const person = await requirePerson(args);
+  const submission = parseWithZod(await args.request.formData(), { schema: settingsSchema });
+  if (submission.status !== "success") return data({ lastResult: submission.reply() }, { status: 400 });
+  const value = submission.value;
+  switch (value.intent) {
+    case "profile":
+      if (!(await renameMember(person.id, value.userName, value.name))) {
+        const fieldErrors = { userName: ["Somebody has this user name. Choose another; yours is unchanged."] };
+        return data({ lastResult: submission.reply({ fieldErrors }) }, { status: 409 });
+      }
+      return redirectWithMessage("/settings", "Your names were changed.");
+    case "revoke-session":
+      await sessions.deleteByUser(person.id, value.session);
+      return redirectWithMessage("/settings", "That session was ended.");
+    case "revoke-others":
+      await sessions.deleteOthers(person.id, person.sessionId);
+      return redirectWithMessage("/settings", "All other sessions were ended.");
+    default:
+      return value satisfies never;
+  }
+}
+
+export default function Settings({ loaderData, actionData }: Route.ComponentProps) {
+  const root = useRouteLoaderData<typeof rootLoader>("root");
+  return (
+    <div className="max-w-[48rem] space-y-10">
+      <h1>Settings</h1>
+      <ProfileForm person={loaderData.person} lastResult={actionData?.lastResult} />
+      <section className="space-y-3">
+        <h2>Colours</h2>
+        <div className="max-w-[24rem]">
+          <ThemeSwitch choice={root?.theme ?? "system"} />
+        </div>
+      </section>
+      <section className="space-y-3">
+        <h2>Scripts</h2>
+        <p>
+          <Link to="/settings/tokens">Tokens for scripts</Link>{" "}
+          <span className="soft">let a program read, or take sweeps in, in your name.</span>
+        </p>
+      </section>
+      <SessionList sessions={loaderData.sessions} />
+    </div>
+  );
+}

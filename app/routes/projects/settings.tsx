@@ -1,0 +1,93 @@
+import { parseWithZod } from "@conform-to/zod/v4";
+import { data } from "react-router";
+import { requireProject } from "~/auth/require.server";
+import * as projects from "~/db/projects.server";
+import { refused } from "~/errors";
+import { redirectWithMessage } from "~/services/flash.server";
+import { changeBands, deleteProject } from "~/services/projects.server";
+import type { Route } from "./+types/settings";
+import { AboutForm } from "./components/AboutForm.tsx";
+import { BandsForm } from "./components/BandsForm.tsx";
+import { DeleteForm } from "./components/DeleteForm.tsx";
+import { projectSettingsSchema } from "./project.schema.ts";
+
+export const meta: Route.MetaFunction = () => [{ title: "Project settings · Swale" }];
+
+export async function loader(args: Route.LoaderArgs) {
+  const { project } = await requireProject(args, "project.edit");
+  const bands = await projects.findDesignBands(project.id);
+  return {
+    about: {
+      title: project.title,
+      summary: project.summary,
+      visibility: project.visibility,
+      ituRegion: project.ituRegion === null ? "" : String(project.ituRegion),
+    },
+    bands: bands.map((band) => ({
+      name: band.name,
+      lowMhz: inMegahertz(band.lowHz),
+      highMhz: inMegahertz(band.highHz),
+      swrLimit: String(band.swrLimit),
+    })),
+  };
+}
+
+export async function action(args: Route.ActionArgs) {
+  const { project, may } = await requireProject(args, "project.edit");
+  const submission = parseWithZod(await args.request.formData(), { schema: projectSettingsSchema });
+  if (submission.status !== "success") return data({ lastResult: submission.reply() }, { status: 400 });
+  const value = submission.value;
+  const here = `/projects/${project.publicId}/settings`;
+  switch (value.intent) {
+    case "about": {
+      const { intent: _, ...about } = value;
+      await projects.update(project.id, about);
+      return redirectWithMessage(here, "The project was changed.");
+    }
+    case "bands":
+      await changeBands(project.id, value.bands.map(inHertz));
+      return redirectWithMessage(here, "The design bands were changed.");
+    case "delete": {
+      if (!may("project.delete")) throw refused("Only owners delete a project. Nothing was changed.");
+      if (value.title !== project.title) {
+        const fieldErrors = { title: ["That is not the title. Nothing was deleted."] };
+        return data({ lastResult: submission.reply({ fieldErrors }) }, { status: 400 });
+      }
+      await deleteProject(project.id);
+      return redirectWithMessage("/projects", "The project and its files were deleted.");
+    }
+    default:
+      return value satisfies never;
+  }
+}
+
+/** Without the last digits of a binary fraction: 7.1 MHz is stored as 7100000. */
+function inMegahertz(hz: number): string {
+  return String(Number((hz / 1e6).toPrecision(12)));
+}
+
+function inHertz(band: { name: string; lowMhz: number; highMhz: number; swrLimit: number }) {
+  return {
+    name: band.name,
+    lowHz: Number((band.lowMhz * 1e6).toPrecision(12)),
+    highHz: Number((band.highMhz * 1e6).toPrecision(12)),
+    swrLimit: band.swrLimit,
+  };
+}
+
+export default function ProjectSettings({ loaderData, actionData }: Route.ComponentProps) {
+  const last = actionData?.lastResult;
+  const lastOf = (intent: string) => (last?.initialValue?.intent === intent ? last : undefined);
+  return (
+    <div className="max-w-[52rem] space-y-12">
+      <h1>Project settings</h1>
+      <AboutForm about={loaderData.about} lastResult={lastOf("about")} />
+      <BandsForm
+        key={JSON.stringify(loaderData.bands)}
+        bands={loaderData.bands}
+        lastResult={lastOf("bands")}
+      />
+      <DeleteForm title={loaderData.about.title} lastResult={lastOf("delete")} />
+    </div>
+  );
+}
