@@ -1,12 +1,14 @@
 import type { ReactNode } from "react";
-import { Links, Meta, Outlet, Scripts, ScrollRestoration, useRouteLoaderData } from "react-router";
+import { data, Links, Meta, Outlet, Scripts, ScrollRestoration, useRouteLoaderData } from "react-router";
 import type { Route } from "./+types/root";
 import "./app.css";
+import { findPerson } from "~/auth/require.server";
 import { ErrorPage } from "~/components/ErrorPage";
 import { Footer } from "~/components/Footer";
 import { Header, type SignedInPerson } from "~/components/Header";
 import { type ThemeChoice, themeFromCookie } from "~/components/theme";
 import { type FlashMessage, ToastProvider } from "~/components/ui/Toast";
+import { takeMessage } from "~/services/flash.server";
 
 export interface RootData {
   theme: ThemeChoice;
@@ -28,14 +30,25 @@ export const meta: Route.MetaFunction = () => [
   },
 ];
 
-export async function loader({ request }: Route.LoaderArgs): Promise<RootData> {
-  return { theme: themeFromCookie(request.headers.get("cookie")), person: null, flash: null };
+export async function loader(args: Route.LoaderArgs) {
+  const { request } = args;
+  const [person, { message, forget }] = await Promise.all([findPerson(args), takeMessage(request)]);
+  const root: RootData = {
+    theme: themeFromCookie(request.headers.get("cookie")),
+    person: person && {
+      name: person.name,
+      userName: person.userName,
+      administrator: person.administrator,
+    },
+    flash: message ? { id: crypto.randomUUID(), text: message } : null,
+  };
+  return data(root, forget ? { headers: { "Set-Cookie": forget } } : undefined);
 }
 
 export function Layout({ children }: { children: ReactNode }) {
-  const data = useRouteLoaderData<typeof loader>("root");
+  const root = useRouteLoaderData<typeof loader>("root");
   return (
-    <html lang="en" data-theme={data?.theme ?? "system"}>
+    <html lang="en" data-theme={root?.theme ?? "system"}>
       <head>
         <meta charSet="utf-8" />
         <meta name="viewport" content="width=device-width, initial-scale=1" />
@@ -46,8 +59,8 @@ export function Layout({ children }: { children: ReactNode }) {
         <a href="#main" className="skip-link">
           Skip to the content
         </a>
-        <ToastProvider flash={data?.flash ?? null}>
-          <Header person={data?.person ?? null} theme={data?.theme ?? "system"} />
+        <ToastProvider flash={root?.flash ?? null}>
+          <Header person={root?.person ?? null} theme={root?.theme ?? "system"} />
           <main id="main" tabIndex={-1} className="shell-main">
             {children}
           </main>
