@@ -12,6 +12,7 @@ import { env } from "~/env.server";
 import { accessLog } from "~/services/access-log.server";
 import { bodyLimits } from "~/services/body-limits.server";
 import { readiness } from "~/services/health.server";
+import { startJobs } from "~/services/jobs.server";
 import { log } from "~/services/log.server";
 import { metricsText } from "~/services/metrics.server";
 import { securityHeaders } from "~/services/security-headers.server";
@@ -52,6 +53,12 @@ export function createApp(development = false): Express {
   );
   app.use(answerError);
   return app;
+}
+
+/** What runs beside the answering, once a process. */
+export function startBackground(): void {
+  onShutdown(() => pool.end());
+  onShutdown(startJobs());
 }
 
 function serveStaticFiles(app: Express): void {
@@ -99,7 +106,7 @@ function listen(): void {
     next();
   });
   outer.use(app);
-  onShutdown(() => pool.end());
+  startBackground();
   const server = outer.listen(env.PORT, env.HOST, (error?: Error) => {
     if (error) {
       log.fatal({ err: error }, `cannot listen on ${env.HOST}:${env.PORT}`);

@@ -17,6 +17,7 @@ app.use(async (request, response, next) => {
   }
 });
 http.on("request", app);
+(await vite.ssrLoadModule("./server.ts")).startBackground();
 http.listen(Number(process.env.PORT), process.env.HOST);
 
 for (const signal of ["SIGTERM", "SIGINT"] as const) {

@@ -17,6 +17,20 @@ export function startTicksOf(pid) {
   }
 }
 
+/** Whoever runs this command and would pass a signal on: npm, and the shell that npm puts between. */
+export function commandParents() {
+  if (!process.env.npm_lifecycle_event) return [];
+  const parents = [process.ppid];
+  const [program = "", option] = argumentsOf(process.ppid);
+  if (/sh$/.test(program) && option === "-c") parents.push(parentOf(process.ppid));
+  return parents.map((pid) => ({ pid, ticks: startTicksOf(pid) }));
+}
+
+/** Whether each of these processes is still the one it was. */
+export function areThere(processes) {
+  return processes.every(({ pid, ticks }) => startTicksOf(pid) === ticks);
+}
+
 /** The running processes that were started with exactly this argument. */
 export function processesWith(argument) {
   return readdirSync("/proc")
@@ -48,6 +62,15 @@ function argumentsOf(pid) {
     return readFileSync(`/proc/${pid}/cmdline`, "utf8").split("\0");
   } catch {
     return [];
+  }
+}
+
+function parentOf(pid) {
+  try {
+    const stat = readFileSync(`/proc/${pid}/stat`, "utf8");
+    return Number(stat.slice(stat.lastIndexOf(")") + 2).split(" ")[1]);
+  } catch {
+    return 0;
   }
 }
 

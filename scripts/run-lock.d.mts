@@ -7,5 +7,5 @@ export interface RunLock {
   tell(more: Record<string, unknown>): void;
   release(): void;
 }
-export function takeLock(folder: string): RunLock;
+export function takeLock(folder: string): Promise<RunLock>;
 export function readLock(folder: string): RunState | undefined;

@@ -1,28 +1,27 @@
 import { linkSync, mkdirSync, readFileSync, renameSync, rmSync, writeFileSync } from "node:fs";
 import path from "node:path";
-import { startTicksOf } from "./processes.mjs";
+import { setTimeout as pause } from "node:timers/promises";
+import { areThere, commandParents, startTicksOf } from "./processes.mjs";
 import { PlainFailure } from "./steps.mjs";
 
 /** One run a folder. The lock names its process, so one left behind by a killed run is seen for what it is. */
 
-/** Takes the lock of `folder` or throws with who holds it. */
-export function takeLock(folder) {
+const PATIENCE_MS = 90_000;
+
+/** Takes the lock of `folder` or throws with who holds it. A run that is on its way out is waited for. */
+export async function takeLock(folder) {
   mkdirSync(folder, { recursive: true });
   const file = path.join(folder, "run.json");
   const mine = path.join(folder, `run.${process.pid}.json`);
-  let state = { pid: process.pid, ticks: startTicksOf(process.pid) };
+  let state = { pid: process.pid, ticks: startTicksOf(process.pid), parents: commandParents() };
+  const deadline = Date.now() + PATIENCE_MS;
   writeFileSync(mine, JSON.stringify(state));
   try {
-    for (let attempt = 0; ; attempt++) {
-      try {
-        linkSync(mine, file);
-        break;
-      } catch (error) {
-        if (error.code !== "EEXIST" || attempt > 3) throw error;
-        const holder = readLock(folder);
-        if (holder) throw new PlainFailure(refusal(holder));
-        setAside(file);
-      }
+    while (!tryLink(mine, file)) {
+      const holder = readLock(folder);
+      if (!holder) setAside(file);
+      else if ((holder.leaving || !areThere(holder.parents)) && Date.now() < deadline) await pause(100);
+      else throw new PlainFailure(refusal(holder));
     }
   } finally {
     rmSync(mine, { force: true });
@@ -47,6 +46,16 @@ export function readLock(folder) {
     return holder.ticks !== undefined && startTicksOf(holder.pid) === holder.ticks ? holder : undefined;
   } catch {
     return undefined;
+  }
+}
+
+function tryLink(from, to) {
+  try {
+    linkSync(from, to);
+    return true;
+  } catch (error) {
+    if (error.code === "EEXIST") return false;
+    throw error;
   }
 }
 

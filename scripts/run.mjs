@@ -9,6 +9,8 @@ import { reportFailure } from "./steps.mjs";
 const [script, ...rest] = process.argv.slice(2);
 try {
   checkNode();
+  // Its notice about Node's age would stand among the answers.
+  process.env.AWS_SDK_JS_NODE_VERSION_SUPPORT_WARNING_DISABLED ??= "true";
   await installLibraries({ quiet: true });
   const loader = pathToFileURL(path.join(ROOT, "node_modules", "tsx", "dist", "loader.mjs")).href;
   const child = spawn(process.execPath, ["--import", loader, path.join(ROOT, "scripts", script), ...rest], {

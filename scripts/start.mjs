@@ -7,8 +7,10 @@ import { reportFailure } from "./steps.mjs";
 let lock;
 try {
   checkNode();
+  // Its notice about Node's age would stand among the answers.
+  process.env.AWS_SDK_JS_NODE_VERSION_SUPPORT_WARNING_DISABLED ??= "true";
   process.chdir(ROOT);
-  lock = takeLock(path.join(ROOT, ".data"));
+  lock = await takeLock(path.join(ROOT, ".data"));
   await installPrograms({ database: !process.env.DATABASE_URL, browser: false });
   await installLibraries();
   const { register } = await import("tsx/esm/api");

@@ -1,7 +1,6 @@
-import { readFileSync } from "node:fs";
 import path from "node:path";
 import { ROOT } from "../install.mjs";
-import { startTicksOf } from "../processes.mjs";
+import { areThere, commandParents } from "../processes.mjs";
 import type { RunLock } from "../run-lock.mjs";
 import { PlainFailure } from "../steps.mjs";
 import { stopEveryPart } from "./child.ts";
@@ -18,6 +17,7 @@ export async function start({ development, lock }: { development: boolean; lock:
   const leave = async (code: number, message?: string) => {
     if (leaving) return;
     leaving = true;
+    lock.tell({ leaving: true });
     if (message) console.error(`\n${message}`);
     await stopEveryPart();
     lock.release();
@@ -57,32 +57,11 @@ function readPort(text: string | undefined): number {
 
 /** A killed `npm` tells nobody: when the npm or the shell between is gone, there is nobody left to stop this. */
 function watchParents(onGone: () => void): void {
-  if (!process.env.npm_lifecycle_event) return;
-  const parents = [process.ppid];
-  if (isShellOfNpm(process.ppid)) parents.push(parentOf(process.ppid));
-  const since = parents.map(startTicksOf);
+  const parents = commandParents();
   const timer = setInterval(() => {
-    if (parents.every((pid, i) => startTicksOf(pid) === since[i])) return;
+    if (areThere(parents)) return;
     clearInterval(timer);
     onGone();
-  }, 500);
+  }, 200);
   timer.unref();
-}
-
-function isShellOfNpm(pid: number): boolean {
-  const [program = "", option] = readProc(pid, "cmdline").split("\0");
-  return path.basename(program).endsWith("sh") && option === "-c";
-}
-
-function parentOf(pid: number): number {
-  const stat = readProc(pid, "stat");
-  return Number(stat.slice(stat.lastIndexOf(")") + 2).split(" ")[1]);
-}
-
-function readProc(pid: number, name: string): string {
-  try {
-    return readFileSync(`/proc/${pid}/${name}`, "utf8");
-  } catch {
-    return "";
-  }
 }
