@@ -1,10 +1,9 @@
-import { decimate } from "~/measurement/decimate";
 import type { AnalysisSettings } from "~/measurement/sweep";
 import { formatFrequency, formatSwr } from "~/measurement/units";
 import type { Given, Reading, ReadProblem } from "~/readers/reading";
-import { decodePoints, pickPoints } from "./points.server.ts";
+import { decodePoints } from "./points.server.ts";
 import { readFile } from "./reading.server.ts";
-import type { SmallProfile } from "./sweep-summaries.server.ts";
+import { type SmallProfile, smallProfile } from "./sweep-summaries.server.ts";
 
 /** What a reading would give, without keeping it: the curve, the dips, what was assumed, or why not. */
 export interface TriedReading {
@@ -35,20 +34,12 @@ export async function tryReading(
     };
   }
   const { analysis } = outcome;
-  const preview = decodePoints([Buffer.from(outcome.preview)]);
-  const small = pickPoints(preview, decimate(preview, PROFILE_POINTS));
   return {
     reading: outcome.reading,
     problem: null,
     points: outcome.pointCount,
     span: `${formatFrequency(outcome.startHz, null)} – ${formatFrequency(outcome.stopHz, null)}`,
-    profile: {
-      frequencyHz: Array.from(small.frequencyHz),
-      returnLossDb: Array.from(small.magnitude, (value) =>
-        Number.isNaN(value) ? null : Math.min(60, -20 * Math.log10(value)),
-      ),
-      dips: analysis.dips.map(({ frequencyHz, returnLossDb }) => ({ frequencyHz, returnLossDb })),
-    },
+    profile: smallProfile(decodePoints([Buffer.from(outcome.preview)]), analysis.dips, PROFILE_POINTS),
     dips: analysis.dips.slice(0, MOST_DIPS).map((dip) => ({
       frequency: formatFrequency(dip.frequencyHz, dip.frequencyUncertaintyHz),
       swr: formatSwr(dip.minimumSwr, null, null),

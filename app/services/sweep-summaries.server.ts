@@ -1,6 +1,8 @@
 import * as sweeps from "~/db/sweeps.server";
+import { decimate } from "~/measurement/decimate";
+import type { Sweep } from "~/measurement/sweep";
 import type { FileFormat } from "~/readers/reading";
-import { decodePoints } from "./points.server.ts";
+import { decodePoints, pickPoints } from "./points.server.ts";
 
 /** A sweep in a list: what it is, its dips, and its profile small enough to be sent with the page. */
 export interface SweepSummary {
@@ -21,10 +23,9 @@ export interface SweepSummary {
   profile: SmallProfile | null;
 }
 
-/** Points of a small drawing: hertz and dB of return loss, dips kept, rounded to what can be seen. */
+/** What a small drawing needs: hertz and abs Γ, dips kept, rounded to what can be seen; NaN is a gap. */
 export interface SmallProfile {
-  frequencyHz: number[];
-  returnLossDb: (number | null)[];
+  points: { frequencyHz: number[]; magnitude: number[] };
   dips: { frequencyHz: number; returnLossDb: number }[];
 }
 
@@ -53,32 +54,24 @@ export async function listSweeps(projectId: number, page: { limit?: number; curs
         minimumSwr,
         verdict,
       })),
-      profile: row.preview ? smallProfile(row.preview, own) : null,
+      profile: row.preview ? smallProfile(decodePoints([row.preview]), own) : null,
     };
   });
   return { rows, nextCursor: found.nextCursor };
 }
 
-/** At most `MOST_POINTS` points: in each stretch the highest and the lowest, so that no dip is lost. */
-function smallProfile(preview: Buffer, dips: { frequencyHz: number; returnLossDb: number }[]): SmallProfile {
-  const { frequencyHz, magnitude } = decodePoints([preview]);
-  const step = Math.max(1, Math.ceil((2 * frequencyHz.length) / MOST_POINTS));
-  const kept: number[] = [];
-  for (let start = 0; start < frequencyHz.length; start += step) {
-    let low = start;
-    let high = start;
-    for (let i = start; i < Math.min(start + step, frequencyHz.length); i++) {
-      if (magnitude[i] < magnitude[low] || Number.isNaN(magnitude[low])) low = i;
-      if (magnitude[i] > magnitude[high] || Number.isNaN(magnitude[high])) high = i;
-    }
-    if (low === high) kept.push(low);
-    else kept.push(Math.min(low, high), Math.max(low, high));
-  }
+/** At most `MOST_POINTS` points, dips kept. */
+export function smallProfile(
+  sweep: Sweep,
+  dips: { frequencyHz: number; returnLossDb: number }[],
+  mostPoints = MOST_POINTS,
+): SmallProfile {
+  const { frequencyHz, magnitude } = pickPoints(sweep, decimate(sweep, mostPoints));
   return {
-    frequencyHz: kept.map((i) => Number(frequencyHz[i].toPrecision(6))),
-    returnLossDb: kept.map((i) =>
-      Number.isNaN(magnitude[i]) ? null : Number(Math.min(60, -20 * Math.log10(magnitude[i])).toFixed(2)),
-    ),
+    points: {
+      frequencyHz: Array.from(frequencyHz, (hz) => Number(hz.toPrecision(6))),
+      magnitude: Array.from(magnitude, (value) => Number(value.toPrecision(4))),
+    },
     dips: dips.map((dip) => ({ frequencyHz: dip.frequencyHz, returnLossDb: dip.returnLossDb })),
   };
 }

@@ -129,14 +129,7 @@ function Strips({ data }: { data: Data }) {
             </div>
             <div className="strip-land">
               {sweep.profile ? (
-                <Profile
-                  profile={sweep.profile}
-                  width="100%"
-                  height={72}
-                  fromHz={axis.fromHz}
-                  toHz={axis.toHz}
-                  scale="log"
-                />
+                <Profile {...sweep.profile} heightPx={72} fromHz={axis.fromHz} toHz={axis.toHz} scale="log" />
               ) : (
                 <Tag tone="clay">to be read</Tag>
               )}

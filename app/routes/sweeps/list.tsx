@@ -115,7 +115,7 @@ function columnsFor(base: string): Column<SweepSummary>[] {
       label: "Profile",
       cell: (row) =>
         row.profile ? (
-          <Profile profile={row.profile} width={180} height={44} />
+          <Profile {...row.profile} widthPx={180} heightPx={44} />
         ) : (
           <Tag tone="clay">to be read</Tag>
         ),

@@ -1,5 +1,4 @@
 import type { ProjectAccess } from "~/auth/require.server";
-import type { ChartPoints } from "~/charts/decimate";
 import * as dips from "~/db/dips.server";
 import * as people from "~/db/people.server";
 import * as projects from "~/db/projects.server";
@@ -85,20 +84,14 @@ function zoomPoints(full: Sweep, range: { fromHz: number; toHz: number }): Sweep
   return pickPoints(full, decimate(full, CHART_POINTS, range));
 }
 
-/** Rounded to what a chart can show; JSON has no NaN, so a gap is null. */
-function chartPoints(sweep: Sweep | null): { frequencyHz: number[]; magnitude: (number | null)[] } {
+/** Rounded to what a chart can show; NaN is a gap. */
+function chartPoints(sweep: Sweep | null): { frequencyHz: number[]; magnitude: number[] } {
   if (!sweep) return { frequencyHz: [], magnitude: [] };
   return {
     frequencyHz: Array.from(sweep.frequencyHz, (hz) => Number(hz.toPrecision(8))),
-    magnitude: Array.from(sweep.magnitude, (value) =>
-      Number.isNaN(value) ? null : Number(value.toPrecision(5)),
-    ),
+    magnitude: Array.from(sweep.magnitude, (value) => Number(value.toPrecision(5))),
   };
 }
-
-/** Points as the drawing takes them. */
-export type SentPoints = ReturnType<typeof chartPoints>;
-export type { ChartPoints };
 
 function lostDip({ dip, noteCount }: dips.ListedDip) {
   return { publicId: dip.publicId, frequencyHz: dip.frequencyHz, noteCount, verdict: dip.verdict };

@@ -22,7 +22,7 @@ export function TriedView({ tried, busy }: { tried: TriedReading; busy: boolean 
       )}
       {tried.profile && (
         <>
-          <Profile profile={tried.profile} width="100%" height={200} scale="linear" />
+          <Profile {...tried.profile} heightPx={200} />
           <p className="text-small">
             <span className="font-mono">{tried.points?.toLocaleString("en")}</span> points,{" "}
             <span className="font-mono">{tried.span}</span>.{" "}
