@@ -1,5 +1,7 @@
-import { and, asc, desc, eq, isNull } from "drizzle-orm";
+import { and, asc, desc, eq, gt, isNull } from "drizzle-orm";
+import { alias } from "drizzle-orm/mysql-core";
 import { db, type Queryable } from "./client.server.ts";
+import { decodeCursor, encodeCursor } from "./cursor.server.ts";
 import { newPublicId } from "./ids.server.ts";
 import { dips, notes, sweeps, users } from "./schema/index.ts";
 
@@ -11,6 +13,8 @@ export interface NotePlace {
   sweepId: number | null;
   dipId: number | null;
 }
+
+const parents = alias(notes, "parents");
 
 const columns = {
   note: notes,
@@ -55,6 +59,42 @@ export async function findByPublicId(publicId: string, tx: Queryable = db) {
   return rows[0];
 }
 
+const withParent = { ...columns, parent: parents.publicId };
+
+/** The notes on a dip, oldest first, a page at a time, each with the note that it answers. */
+export async function findPageByDip(
+  dipId: number,
+  page: { limit?: number; cursor?: string } = {},
+  tx: Queryable = db,
+) {
+  const limit = Math.min(page.limit ?? 100, 100);
+  const after = page.cursor ? decodeCursor(page.cursor) : undefined;
+  const rows = await tx
+    .select(withParent)
+    .from(notes)
+    .leftJoin(users, eq(users.id, notes.authorId))
+    .leftJoin(parents, eq(parents.id, notes.parentId))
+    .where(and(eq(notes.dipId, dipId), after && gt(notes.id, after.id)))
+    .orderBy(asc(notes.id))
+    .limit(limit + 1);
+  const last = rows.length > limit ? rows[limit - 1].note : undefined;
+  return {
+    rows: rows.slice(0, limit),
+    nextCursor: last ? encodeCursor({ at: last.createdAt, id: last.id }) : null,
+  };
+}
+
+export async function findWithParent(publicId: string, tx: Queryable = db) {
+  const rows = await tx
+    .select(withParent)
+    .from(notes)
+    .leftJoin(users, eq(users.id, notes.authorId))
+    .leftJoin(parents, eq(parents.id, notes.parentId))
+    .where(eq(notes.publicId, publicId))
+    .limit(1);
+  return rows[0];
+}
+
 export async function findByClientKey(clientKey: string, tx: Queryable = db) {
   return (await tx.select().from(notes).where(eq(notes.clientKey, clientKey)).limit(1))[0];
 }
@@ -94,6 +134,11 @@ export async function insert(
     .values({ createdAt: new Date(), ...values, publicId })
     .$returningId();
   return { id: row.id, publicId };
+}
+
+/** Locks the note's row: nobody can answer it until the transaction ends. */
+export async function lock(id: number, tx: Queryable): Promise<NoteRow | undefined> {
+  return (await tx.select().from(notes).where(eq(notes.id, id)).limit(1).for("update"))[0];
 }
 
 export async function updateBody(id: number, body: string, tx: Queryable = db) {

@@ -1,4 +1,4 @@
-import { and, eq, isNull } from "drizzle-orm";
+import { and, count, eq, isNull } from "drizzle-orm";
 import { db, type Queryable } from "./client.server.ts";
 import { newPublicId } from "./ids.server.ts";
 import { dismissals, identities, users } from "./schema/index.ts";
@@ -56,6 +56,10 @@ export async function update(id: number, values: Partial<typeof users.$inferInse
 
 export async function findAll(limit = 100, offset = 0, tx: Queryable = db): Promise<User[]> {
   return tx.select().from(users).orderBy(users.id).limit(limit).offset(offset);
+}
+
+export async function countAll(tx: Queryable = db): Promise<number> {
+  return (await tx.select({ n: count() }).from(users))[0].n;
 }
 
 export async function findDismissals(userId: number, tx: Queryable = db): Promise<string[]> {

@@ -1,4 +1,4 @@
-import { and, asc, count, desc, eq, lt, max, or, sql } from "drizzle-orm";
+import { and, asc, count, desc, eq, lt, max, or, type SQL, sql } from "drizzle-orm";
 import type { ProjectRole, Visibility } from "~/auth/permissions";
 import { db, type Queryable } from "./client.server.ts";
 import { decodeCursor, encodeCursor } from "./cursor.server.ts";
@@ -10,11 +10,19 @@ export type DesignBand = typeof designBands.$inferSelect;
 
 /** The project and what this person is in it, in one query. */
 export async function findWithRole(publicId: string, userId: number | null, tx: Queryable = db) {
+  return findOneWithRole(eq(projects.publicId, publicId), userId, tx);
+}
+
+export async function findWithRoleById(id: number, userId: number | null, tx: Queryable = db) {
+  return findOneWithRole(eq(projects.id, id), userId, tx);
+}
+
+async function findOneWithRole(which: SQL, userId: number | null, tx: Queryable) {
   const rows = await tx
     .select({ project: projects, role: memberships.role })
     .from(projects)
     .leftJoin(memberships, and(eq(memberships.projectId, projects.id), eq(memberships.userId, userId ?? 0)))
-    .where(eq(projects.publicId, publicId))
+    .where(which)
     .limit(1);
   return rows[0];
 }
@@ -77,6 +85,14 @@ export async function findAllPublic(limit = 20, tx: Queryable = db) {
     .groupBy(projects.id)
     .orderBy(desc(projects.updatedAt))
     .limit(limit);
+}
+
+export async function countByVisibility(tx: Queryable = db) {
+  return tx
+    .select({ visibility: projects.visibility, n: count() })
+    .from(projects)
+    .groupBy(projects.visibility)
+    .limit(10);
 }
 
 export interface NewProject {

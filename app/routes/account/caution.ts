@@ -3,8 +3,8 @@ import { data, redirect } from "react-router";
 import { safePath } from "~/auth/next";
 import { requirePerson } from "~/auth/require.server";
 import { insertDismissal } from "~/db/people.server";
-import { cautionSchema } from "./account.schema.ts";
 import type { Route } from "./+types/caution";
+import { cautionSchema } from "./account.schema.ts";
 
 /** Puts a caution away for this person, for good. */
 export async function action(args: Route.ActionArgs) {

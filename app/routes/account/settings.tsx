@@ -36,7 +36,9 @@ export async function action(args: Route.ActionArgs) {
   switch (value.intent) {
     case "profile":
       if (!(await renameMember(person.id, value.userName, value.name))) {
-        const fieldErrors = { userName: ["Somebody has this user name. Choose another; yours is unchanged."] };
+        const fieldErrors = {
+          userName: ["Somebody has this user name. Choose another; yours is unchanged."],
+        };
         return data({ lastResult: submission.reply({ fieldErrors }) }, { status: 409 });
       }
       return redirectWithMessage("/settings", "Your names were changed.");

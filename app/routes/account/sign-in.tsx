@@ -32,8 +32,8 @@ export default function SignIn({ loaderData }: Route.ComponentProps) {
         </section>
       )}
       <p className="soft">
-        Reading public projects needs no account. Sign in to take sweeps in, to write notes, and to read what was
-        shared with you.
+        Reading public projects needs no account. Sign in to take sweeps in, to write notes, and to read what
+        was shared with you.
       </p>
       <form method="get" action="/auth/github">
         <input type="hidden" name="next" value={next} />
@@ -41,9 +41,9 @@ export default function SignIn({ loaderData }: Route.ComponentProps) {
       </form>
       {standIn && (
         <p className="soft text-small">
-          This installation has no connection to GitHub. The button leads to a stand-in on this machine, where you
-          choose one of a few invented people. No password is asked for, and anyone who can reach this machine can
-          do the same.
+          This installation has no connection to GitHub. The button leads to a stand-in on this machine, where
+          you choose one of a few invented people. No password is asked for, and anyone who can reach this
+          machine can do the same.
         </p>
       )}
     </div>

@@ -63,8 +63,8 @@ export default function Tokens({ loaderData, actionData }: Route.ComponentProps)
         <Breadcrumbs items={[{ label: "Settings", to: "/settings" }]} />
         <h1>Tokens for scripts</h1>
         <p className="soft">
-          A program sends a token as <code>Authorization: Bearer …</code> and then acts in your name, with your
-          roles. What it can ask is written in{" "}
+          A program sends a token as <code>Authorization: Bearer …</code> and then acts in your name, with
+          your roles. What it can ask is written in{" "}
           <a href="/api/v1/openapi.json">{loaderData.origin}/api/v1/openapi.json</a>.
         </p>
       </div>

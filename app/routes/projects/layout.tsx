@@ -27,7 +27,7 @@ export default function ProjectLayout({ loaderData }: Route.ComponentProps) {
       <header className="space-y-2">
         {membership && <Breadcrumbs items={[{ label: "Projects", to: "/projects" }]} />}
         <div className="flex flex-wrap items-center gap-x-3 gap-y-1">
-          <p className="font-display text-large font-semibold break-words">{project.title}</p>
+          <h1 className="text-title">{project.title}</h1>
           <Tag tone={project.visibility === "private" ? "plain" : "fen"}>{project.visibility}</Tag>
           {membership && <Tag>you: {membership}</Tag>}
           {project.demo && <Tag tone="clay">invented data</Tag>}
@@ -37,7 +37,10 @@ export default function ProjectLayout({ loaderData }: Route.ComponentProps) {
             A demonstration: the people, places, call signs and numbers of this project are invented.
           </p>
         )}
-        <nav aria-label="Project" className="project-tabs no-print flex flex-wrap gap-x-5 border-b border-rule">
+        <nav
+          aria-label="Project"
+          className="project-tabs no-print flex flex-wrap gap-x-5 border-b border-rule"
+        >
           <Tab to={base} end label="Story" />
           <Tab to={`${base}/sweeps`} label="Sweeps" />
           <Tab to={`${base}/members`} label="Members" />

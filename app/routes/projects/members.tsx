@@ -35,7 +35,8 @@ export async function action(args: Route.ActionArgs) {
   const submission = parseWithZod(await args.request.formData(), { schema: membersSchema });
   // Leaving is everybody's own; all else is for owners, whatever the form holds.
   if (submission.payload.intent !== "leave" && !may("members.manage")) throw refused(OWNERS_ONLY);
-  if (submission.status !== "success") return data({ lastResult: submission.reply(), problem: null }, { status: 400 });
+  if (submission.status !== "success")
+    return data({ lastResult: submission.reply(), problem: null }, { status: 400 });
   const value = submission.value;
   const here = `/projects/${project.publicId}/members`;
   switch (value.intent) {
@@ -57,7 +58,11 @@ export async function action(args: Route.ActionArgs) {
     case "leave": {
       if (!person || !membership) throw refused("You are not a member of this project. Nothing was changed.");
       const done = await removeMember(project.id, person.userName);
-      return answer(done, done === "done" ? "/projects" : here, "You left the project. What you wrote stays.");
+      return answer(
+        done,
+        done === "done" ? "/projects" : here,
+        "You left the project. What you wrote stays.",
+      );
     }
     default:
       return value satisfies never;
@@ -67,7 +72,10 @@ export async function action(args: Route.ActionArgs) {
 /** Asked twice, a change is already as it was wished: only the last owner's going is refused. */
 function answer(done: MemberChange, to: string, message: string) {
   if (done === "last-owner") return data({ lastResult: null, problem: LAST_OWNER }, { status: 409 });
-  return redirectWithMessage(to, done === "done" ? message : "That person is not a member. Nothing was changed.");
+  return redirectWithMessage(
+    to,
+    done === "done" ? message : "That person is not a member. Nothing was changed.",
+  );
 }
 
 const OWNERS_ONLY = "Only owners add members, remove them or change their roles. Nothing was changed.";
@@ -77,7 +85,7 @@ const LAST_OWNER =
 export default function Members({ loaderData, actionData }: Route.ComponentProps) {
   return (
     <div className="max-w-[60rem] space-y-8">
-      <h1>Members</h1>
+      <h2>Members</h2>
       {actionData?.problem && (
         <p role="alert" className="field-error">
           {actionData.problem}

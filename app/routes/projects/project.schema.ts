@@ -18,7 +18,11 @@ export const VISIBILITIES = [
 
 export const ROLES = [
   { value: "owner", label: "Owner", may: "everything, members and deletion included" },
-  { value: "experimenter", label: "Experimenter", may: "take sweeps in, change readings, settle dips, write" },
+  {
+    value: "experimenter",
+    label: "Experimenter",
+    may: "take sweeps in, change readings, settle dips, write",
+  },
   { value: "commenter", label: "Commenter", may: "write notes and propose causes" },
   { value: "reader", label: "Reader", may: "read" },
 ] as const;

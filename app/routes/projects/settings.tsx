@@ -80,7 +80,6 @@ export default function ProjectSettings({ loaderData, actionData }: Route.Compon
   const lastOf = (intent: string) => (last?.initialValue?.intent === intent ? last : undefined);
   return (
     <div className="max-w-[52rem] space-y-12">
-      <h1>Project settings</h1>
       <AboutForm about={loaderData.about} lastResult={lastOf("about")} />
       <BandsForm
         key={JSON.stringify(loaderData.bands)}

@@ -1,4 +1,10 @@
-import { getFormProps, getInputProps, getSelectProps, type SubmissionResult, useForm } from "@conform-to/react";
+import {
+  getFormProps,
+  getInputProps,
+  getSelectProps,
+  type SubmissionResult,
+  useForm,
+} from "@conform-to/react";
 import { getZodConstraint, parseWithZod } from "@conform-to/zod/v4";
 import { Form, useNavigation } from "react-router";
 import { Button } from "~/components/ui/Button";

@@ -36,8 +36,8 @@ export function BandsForm({ bands, lastResult }: BandsFormProps) {
     <section className="space-y-3">
       <h2>Design bands</h2>
       <p className="soft max-w-[72ch]">
-        Where the antenna is meant to work. They are drawn behind every sweep, and a dip outside all of them is
-        marked. Empty a row to remove it.
+        Where the antenna is meant to work. They are drawn behind every sweep, and a dip outside all of them
+        is marked. Empty a row to remove it.
       </p>
       <Form method="post" {...getFormProps(form)} className="space-y-4">
         <div className="grid gap-3">

@@ -1,0 +1,6 @@
+import { z } from "zod";
+
+export const accountSchema = z.object({
+  intent: z.enum(["suspend", "restore", "promote", "demote"]),
+  user: z.string().min(1).max(16),
+});

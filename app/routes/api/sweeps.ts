@@ -1,0 +1,83 @@
+import * as dips from "~/db/dips.server";
+import * as sweeps from "~/db/sweeps.server";
+import type { ReadProblem } from "~/readers/reading";
+import { takeIn } from "~/services/intake.server";
+import { requireApiProject } from "./access.server.ts";
+import { type Call, endpoint } from "./endpoint.server.ts";
+import { invalid } from "./invalid.ts";
+import { readMultipart } from "./multipart.server.ts";
+import { problem } from "./problem.ts";
+import { shapeSweep, shapeSweepSummary } from "./shapes.server.ts";
+import { uploadFieldsSchema } from "./upload.schema.ts";
+
+const handle = endpoint({ GET: list, POST: takeOne });
+
+export const loader = handle;
+export const action = handle;
+
+async function list(call: Call): Promise<Response> {
+  const { project } = await requireApiProject(call, "project.read");
+  const page = await sweeps.findAllByProject(project.id, { cursor: call.query.get("cursor") ?? undefined });
+  const found = await sweeps.findDipsOf(page.rows.map((row) => row.id));
+  return Response.json({
+    items: page.rows.map((row) =>
+      shapeSweepSummary(
+        row,
+        found.filter((dip) => dip.sweepId === row.id),
+        project.publicId,
+      ),
+    ),
+    nextCursor: page.nextCursor,
+  });
+}
+
+async function takeOne(call: Call): Promise<Response> {
+  const { project } = await requireApiProject(call, "sweep.add");
+  const form = await readMultipart(call.request);
+  const { file, ...fields } = Object.fromEntries(form);
+  if (!(file instanceof File)) {
+    throw invalid([{ field: "file", message: "Send the file in the field `file`." }]);
+  }
+  const parsed = uploadFieldsSchema.safeParse(fields);
+  if (!parsed.success) throw invalid(parsed.error);
+  const { title, takenAt, reading } = parsed.data;
+  const taken = await takeIn({
+    project,
+    by: call.user,
+    file: { name: file.name, bytes: new Uint8Array(await file.arrayBuffer()) },
+    title,
+    takenAt: takenAt ? new Date(takenAt) : null,
+    given: reading,
+    keepUnread: false,
+  });
+  switch (taken.kind) {
+    case "refused":
+    case "unread":
+      throw unreadable(taken.problem);
+    case "twice": {
+      const sweep = `/api/v1/sweeps/${taken.sweepPublicId}`;
+      const detail = `This file is already in the project as “${taken.title}”. It was not stored again.`;
+      throw problem({ status: 409, code: "twice", detail, sweep }, { Link: `<${sweep}>; rel="related"` });
+    }
+    case "read":
+      return created(taken.sweepPublicId, project.publicId);
+    default:
+      return taken satisfies never;
+  }
+}
+
+async function created(sweepPublicId: string, projectPublicId: string): Promise<Response> {
+  const found = await sweeps.findByPublicId(sweepPublicId);
+  if (!found) throw new Error("The sweep that was just taken in is not there.");
+  const its = await dips.findAllBySweep(found.sweep.id);
+  const headers = { Location: `/api/v1/sweeps/${sweepPublicId}` };
+  return Response.json(shapeSweep(found, its, projectPublicId), { status: 201, headers });
+}
+
+/** 413 too large, 415 no format that is read, 422 a format that is read with something wrong in it. */
+function unreadable({ code, message, line, column }: ReadProblem): Response {
+  const status = code === "too-large" || code === "too-many-points" ? 413 : NO_FORMAT.has(code) ? 415 : 422;
+  return problem({ status, code, detail: `${message} Nothing was stored.`, line, column });
+}
+
+const NO_FORMAT = new Set(["not-a-sweep", "binary", "unknown-format", "unsupported"]);

@@ -1,0 +1,81 @@
+import { z } from "zod";
+import type { Given } from "~/readers/reading";
+
+/** What comes with a file. */
+
+const text = z
+  .strictObject({
+    encoding: z.enum(["utf-8", "utf-16le", "utf-16be", "latin1"]),
+    delimiter: z.enum([",", ";", "\t", " "]),
+    decimal: z.enum([".", ","]),
+    thousands: z.enum(["", ".", ",", " ", "'"]),
+    headerLine: z.number().int().min(0),
+    firstDataLine: z.number().int().min(1),
+    frequencyColumn: z.number().int().min(0),
+    frequencyUnit: z.enum(["Hz", "kHz", "MHz", "GHz"]),
+    valueColumn: z.number().int().min(0),
+    secondColumn: z.number().int().min(0).nullable(),
+    quantity: z.enum([
+      "s11-db",
+      "return-loss",
+      "swr",
+      "level",
+      "magnitude",
+      "magnitude-angle",
+      "db-angle",
+      "real-imaginary",
+      "resistance-reactance",
+      "impedance-angle",
+    ]),
+    angleUnit: z.enum(["deg", "rad"]),
+    referenceOhm: z.number().positive(),
+    zeroDb: z.number().nullable(),
+  })
+  .partial();
+
+const screenshot = z
+  .strictObject({
+    frame: z.strictObject({ left: z.number(), top: z.number(), right: z.number(), bottom: z.number() }),
+    startHz: z.number(),
+    stopHz: z.number(),
+    scale: z.enum(["linear", "log"]),
+    top: z.number(),
+    bottom: z.number(),
+    quantity: z.enum(["s11-db", "return-loss", "swr", "level"]),
+    zeroDb: z.number(),
+    traceColor: z.string().regex(/^#[0-9a-f]{6}$/i),
+    referenceOhm: z.number().positive(),
+  })
+  .partial();
+
+export const givenSchema = z
+  .strictObject({
+    text,
+    touchstone: z.strictObject({ port: z.union([z.literal(1), z.literal(2)]) }).partial(),
+    screenshot,
+  })
+  .partial() satisfies z.ZodType<Given>;
+
+export const uploadFieldsSchema = z.strictObject({
+  title: z.string().trim().max(160, "At most 160 characters.").optional(),
+  takenAt: z
+    .union([z.iso.datetime({ offset: true }), z.iso.date()], {
+      error: "A time as in 2026-09-14T17:20:00Z, or a date.",
+    })
+    .optional()
+    .describe("When it was swept"),
+  bench: z.string().max(0, "This project has no bench of that name yet. Leave it out.").optional(),
+  step: z.string().max(0, "This project has no step of that name yet. Leave it out.").optional(),
+  reading: z
+    .string()
+    .transform((json, context) => {
+      try {
+        return JSON.parse(json) as unknown;
+      } catch {
+        context.addIssue({ code: "custom", message: "This is not JSON." });
+        return z.NEVER;
+      }
+    })
+    .pipe(givenSchema)
+    .optional(),
+});
