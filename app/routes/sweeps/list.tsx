@@ -123,7 +123,7 @@ function columnsFor(base: string): Column<SweepSummary>[] {
     {
       key: "taken",
       label: "Taken",
-      sortBy: (row) => row.takenAt ?? row.createdAt,
+      sortBy: (row) => (row.takenAt ?? row.createdAt).getTime(),
       cell: (row) =>
         row.takenAt ? (
           <DateTime at={row.takenAt} dateOnly />
