@@ -22,6 +22,8 @@ const RETRIES = 5;
 /** Deadlock, lock wait timeout, certification failure of a cluster. Tested by errno: names differ. */
 const RETRY_ERRNOS = new Set([1205, 1213, 1047, 1020]);
 const DUPLICATE_ERRNO = 1062;
+/** What a new row points at is not there. */
+const BROKEN_REFERENCE_ERRNO = 1452;
 
 /** Runs `work` in one transaction and again when the database asks for it: `work` must be repeatable. */
 export async function inTransaction<T>(work: (tx: Transaction) => Promise<T>): Promise<T> {
@@ -37,6 +39,10 @@ export async function inTransaction<T>(work: (tx: Transaction) => Promise<T>): P
 
 export function isDuplicate(error: unknown): boolean {
   return errnoOf(error) === DUPLICATE_ERRNO;
+}
+
+export function isReferenceBroken(error: unknown): boolean {
+  return errnoOf(error) === BROKEN_REFERENCE_ERRNO;
 }
 
 /** The database's error number, however deep the driver wrapped it. */

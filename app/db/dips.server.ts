@@ -92,6 +92,11 @@ export async function setAbsent(id: number, tx: Queryable) {
   await tx.update(dips).set({ present: false }).where(eq(dips.id, id));
 }
 
+/** Locks the dip's row: verdicts on it come one after another. */
+export async function lock(id: number, tx: Queryable): Promise<DipRow | undefined> {
+  return (await tx.select().from(dips).where(eq(dips.id, id)).limit(1).for("update"))[0];
+}
+
 export async function updateVerdict(
   id: number,
   values: Pick<DipRow, "verdict" | "verdictText" | "verdictBy" | "verdictAt">,

@@ -1,0 +1,124 @@
+import { beforeEach, describe, expect, it } from "vitest";
+import { mayInProject } from "~/auth/permissions";
+import { inTransaction } from "~/db/client.server";
+import * as dips from "~/db/dips.server";
+import { newPublicId } from "~/db/ids.server";
+import * as people from "~/db/people.server";
+import * as sweeps from "~/db/sweeps.server";
+import type { Dip } from "~/measurement/sweep";
+import { listThread } from "~/services/notes.server";
+import { createProject } from "~/services/projects.server";
+import { changeVerdict, type VerdictIntent } from "~/services/verdicts.server";
+
+let ada: { id: number };
+let dipPublicId: string;
+
+/** Invented numbers: what they are does not matter here. */
+const NUMBERS: Dip = {
+  frequencyHz: 52e6,
+  frequencyUncertaintyHz: null,
+  minimumSwr: 1.2,
+  minimumSwrLow: null,
+  minimumSwrHigh: null,
+  minimumSwrNoiseLow: null,
+  minimumSwrNoiseHigh: null,
+  returnLossDb: 20.8,
+  prominenceDb: 15,
+  bandwidth: null,
+  q: null,
+  qLow: null,
+  qHigh: null,
+  method: "sample",
+  edge: false,
+  sampleIndex: 3,
+  advice: null,
+};
+
+beforeEach(async () => {
+  ada = { id: await people.insert({ userName: `ada-${newPublicId()}`, name: "Ada", email: null }) };
+  const project = await createProject(
+    { title: "Reeds", summary: "", visibility: "private", ituRegion: null },
+    ada.id,
+  );
+  dipPublicId = newPublicId();
+  await inTransaction(async (tx) => {
+    const fileId = await sweeps.insertFile(
+      {
+        projectId: project.id,
+        name: "a.csv",
+        sizeBytes: 1,
+        sha256: "0".repeat(64),
+        storageKey: "none",
+        uploadedBy: ada.id,
+      },
+      tx,
+    );
+    const sweep = await sweeps.insert(
+      { projectId: project.id, fileId, title: "a", takenAt: null, createdBy: ada.id },
+      tx,
+    );
+    await dips.insertAll(
+      [{ projectId: project.id, sweepId: sweep.id, publicId: dipPublicId, numbers: NUMBERS }],
+      tx,
+    );
+  });
+});
+
+async function found() {
+  const row = await dips.findByPublicId(dipPublicId);
+  if (!row) throw new Error("The dip is not there.");
+  return row.dip;
+}
+
+async function change(intent: VerdictIntent, text: string, was?: dips.DipRow["verdict"]) {
+  const dip = await found();
+  return changeVerdict({ dip, by: ada, intent, text, was: was ?? dip.verdict });
+}
+
+async function threadOf(dip: dips.DipRow) {
+  const place = { projectId: dip.projectId, sweepId: dip.sweepId, dipId: dip.id };
+  return listThread(place, { person: ada, may: (action) => mayInProject("owner", action) });
+}
+
+describe("changeVerdict", () => {
+  it("goes from open over proposed to settled and back, and the thread tells it", async () => {
+    expect(await change("propose", "  the feedline's braid ")).toBe("done");
+    expect(await found()).toMatchObject({ verdict: "proposed", verdictText: "the feedline's braid" });
+    expect(await change("settle", "the braid, as the choke showed")).toBe("done");
+    expect(await found()).toMatchObject({ verdict: "settled", verdictBy: ada.id });
+    expect(await change("reopen", "it came back")).toBe("done");
+    expect(await found()).toMatchObject({ verdict: "open", verdictText: "it came back" });
+    expect((await threadOf(await found())).map((note) => note.body)).toEqual([
+      "**Verdict proposed:** the feedline's braid",
+      "**Verdict settled:** the braid, as the choke showed",
+      "**Verdict reopened:** it came back",
+    ]);
+  });
+
+  it.each([
+    ["reopen", []],
+    ["propose", ["settle"]],
+    ["settle", ["settle"]],
+  ] as const)("does not %s where that makes no sense", async (intent, before) => {
+    for (const step of before) await change(step, "so");
+    const dip = await found();
+    expect(await change(intent, "no")).toBe("not-now");
+    expect(await found()).toEqual(dip);
+    expect(await threadOf(dip)).toHaveLength(before.length);
+  });
+
+  it("changes nothing when it was changed meanwhile", async () => {
+    const [first, second] = await Promise.all([
+      change("settle", "this", "open"),
+      change("settle", "that", "open"),
+    ]);
+    expect([first, second].sort()).toEqual(["changed-since", "done"]);
+    expect(await threadOf(await found())).toHaveLength(1);
+  });
+
+  it("says that a dip is gone", async () => {
+    expect(await changeVerdict({ dip: { id: 0 }, by: ada, intent: "settle", text: "x", was: "open" })).toBe(
+      "missing",
+    );
+  });
+});
