@@ -14,7 +14,8 @@ export interface BandRibbonProps {
 }
 
 export const RIBBON_BAR_PX = 8;
-export const RIBBON_HEIGHT_PX = 28;
+/** From the ribbon to the weight, past the row of names. */
+const HANG_PX = 24;
 
 /** The ribbon of bands under a frequency axis; what lies outside the bands hangs off it. */
 export function BandRibbon({ bands, dips, y, plotWidthPx, palette }: BandRibbonProps) {
@@ -22,7 +23,7 @@ export function BandRibbon({ bands, dips, y, plotWidthPx, palette }: BandRibbonP
     <g>
       <line x1="0" x2={across(1, plotWidthPx)} y1={y + 4} y2={y + 4} stroke={palette.rule} />
       {bands.map((band) => (
-        <Band key={`${band.name} ${band.design} ${band.fraction}`} {...{ band, y, plotWidthPx, palette }} />
+        <BandBar key={keyOf(band)} {...{ band, y, plotWidthPx, palette }} />
       ))}
       {dips.map(({ id, fraction, hang }) =>
         hang ? (
@@ -31,6 +32,9 @@ export function BandRibbon({ bands, dips, y, plotWidthPx, palette }: BandRibbonP
           </At>
         ) : null,
       )}
+      {bands.map((band) => (
+        <BandName key={keyOf(band)} {...{ band, y, plotWidthPx, palette }} />
+      ))}
     </g>
   );
 }
@@ -42,43 +46,48 @@ interface BandProps {
   palette: Palette;
 }
 
-function Band({ band, y, plotWidthPx, palette }: BandProps) {
+function BandBar({ band, y, plotWidthPx, palette }: BandProps) {
   const colour = band.design ? palette.fen : palette.allocation;
   const inset = band.design ? 0 : 2;
   return (
-    <g>
+    <rect
+      x={across(band.fraction, plotWidthPx)}
+      y={y + inset}
+      width={across(band.widthFraction, plotWidthPx)}
+      height={RIBBON_BAR_PX - 2 * inset}
+      fill={colour}
+      stroke={colour}
+      strokeWidth="1"
+    >
       <title>{`${band.name}${band.design ? ", design band" : ""}`}</title>
-      <rect
-        x={across(band.fraction, plotWidthPx)}
-        y={y + inset}
-        width={across(band.widthFraction, plotWidthPx)}
-        height={RIBBON_BAR_PX - 2 * inset}
-        fill={colour}
-        stroke={colour}
-        strokeWidth="1"
-      />
-      {band.tier !== null && (
-        <Label
-          fraction={band.fraction + band.widthFraction / 2}
-          y={y + RIBBON_BAR_PX + 14}
-          tier={band.tier}
-          text={band.name}
-          colour={band.design ? palette.fen : palette.soft}
-          {...{ plotWidthPx, palette }}
-        />
-      )}
-    </g>
+    </rect>
   );
 }
 
-/** A weight on a line: long and full outside every band, short and open outside the design bands only. */
-function HangingMark({ hang, palette }: { hang: Hang; palette: Palette }) {
-  const far = hang === "outside-all";
-  const length = far ? 13 : 9;
+function BandName({ band, y, plotWidthPx, palette }: BandProps) {
+  if (band.tier === null) return null;
   return (
-    <g stroke={palette.clay} strokeWidth="1.5" fill={far ? palette.clay : palette.paper}>
-      <path d={`M0 0V${length}`} fill="none" />
-      <path d={`M0 ${length - 1}l4 5-4 5-4-5z`} />
+    <Label
+      fraction={band.fraction + band.widthFraction / 2}
+      y={y + RIBBON_BAR_PX + 13}
+      tier={band.tier}
+      text={band.name}
+      colour={band.design ? palette.fen : palette.soft}
+      {...{ plotWidthPx, palette }}
+    />
+  );
+}
+
+function keyOf(band: RibbonBand): string {
+  return `${band.name} ${band.design} ${band.fraction}`;
+}
+
+/** A weight on a line below the names: full outside every band, open outside the design bands only. */
+function HangingMark({ hang, palette }: { hang: Hang; palette: Palette }) {
+  return (
+    <g stroke={palette.clay} strokeWidth="1.5" fill={hang === "outside-all" ? palette.clay : palette.paper}>
+      <path d={`M0 0V${HANG_PX}`} fill="none" />
+      <path d={`M0 ${HANG_PX}l4 5-4 5-4-5z`} />
     </g>
   );
 }

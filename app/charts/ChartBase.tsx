@@ -8,7 +8,7 @@ import type { Scene } from "./scene";
 /** Room over the plot, and under it for the axis and the ribbon. */
 export const CHART_TOP_PX = 10;
 export const AXIS_HEIGHT_PX = 24;
-export const CHART_FOOT_PX = 58;
+export const CHART_FOOT_PX = 64;
 
 export interface ChartBaseProps {
   scene: Scene;
@@ -102,7 +102,7 @@ function FrequencyAxisMarks({ scene, palette }: { scene: Scene; palette: Palette
         </g>
       ))}
       <text
-        x="-8"
+        x="-16"
         y={height + 17}
         textAnchor="end"
         fontFamily={palette.monoFont}

@@ -23,13 +23,17 @@ export function LandLayer({ scene, palette, id, curveHidden }: LandLayerProps) {
           <path d={scene.land || "M0 0"} />
         </clipPath>
         {!curveHidden && <path d={scene.land} fill={palette.land} />}
+      </Stretched>
+      <Washes scene={scene} palette={palette} opacity={0.35} />
+      <Stretched width={pathWidth} height={height} plotWidthPx={plotWidthPx}>
         <g clipPath={`url(#${clipId})`}>
           {scene.valueTicks.slice(1).map((tick) => (
             <path
               key={tick.label}
               d={`M0 ${tick.y}H${pathWidth}`}
-              stroke={palette.rule}
-              strokeDasharray="1 5"
+              stroke={palette.edge}
+              strokeDasharray="1 4"
+              opacity="0.7"
               vectorEffect="non-scaling-stroke"
             />
           ))}
@@ -40,7 +44,6 @@ export function LandLayer({ scene, palette, id, curveHidden }: LandLayerProps) {
         ))}
         {!curveHidden && <PenLines scene={scene} palette={palette} />}
       </Stretched>
-      <Washes scene={scene} palette={palette} opacity={0.35} />
       {scene.waters.map((water) => (
         <WaterLevel key={water.key} water={water} plotWidthPx={plotWidthPx} palette={palette} />
       ))}
@@ -63,6 +66,9 @@ export function LandLayer({ scene, palette, id, curveHidden }: LandLayerProps) {
           fontFamily={palette.sansFont}
           fontSize="12"
           fill={palette.clay}
+          stroke={palette.land}
+          strokeWidth="4"
+          paintOrder="stroke"
         >
           {remark}
         </text>

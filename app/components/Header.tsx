@@ -38,7 +38,7 @@ export function Header({ person, theme }: HeaderProps) {
 function VisitorBar({ theme }: { theme: ThemeChoice }) {
   return (
     <>
-      <Menu label="Colours" icon="theme" align="end">
+      <Menu label="Colours" icon="theme" terse align="end">
         <ThemeSwitch choice={theme} />
       </Menu>
       <LinkButton to="/sign-in" size="small">

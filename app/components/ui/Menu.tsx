@@ -5,6 +5,8 @@ import { Icon, type IconName } from "./Icon";
 export interface MenuProps {
   label: string;
   icon?: IconName;
+  /** On a phone the icon alone is shown. */
+  terse?: boolean;
   /** Which edge of the label the list hangs from. */
   align?: "start" | "end";
   /** Links, and forms with one button each. */
@@ -14,7 +16,7 @@ export interface MenuProps {
 const FOCUSABLE = "a[href], button:not([disabled])";
 
 /** A list that unfolds under its label; opens without JavaScript. Arrow keys walk it, Escape closes it. */
-export function Menu({ label, icon, align = "start", children }: MenuProps) {
+export function Menu({ label, icon, terse = false, align = "start", children }: MenuProps) {
   const details = useRef<HTMLDetailsElement>(null);
   const location = useLocation();
   // biome-ignore lint/correctness/useExhaustiveDependencies: going somewhere closes the menu
@@ -31,7 +33,7 @@ export function Menu({ label, icon, align = "start", children }: MenuProps) {
     };
   }, []);
   return (
-    <details ref={details} className="menu" onKeyDown={walk}>
+    <details ref={details} className={terse ? "menu menu-terse" : "menu"} onKeyDown={walk}>
       <summary className="menu-label">
         {icon && <Icon name={icon} />}
         <span className="menu-words">{label}</span>

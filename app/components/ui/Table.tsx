@@ -51,7 +51,7 @@ export function Table<Row>(props: TableProps<Row>) {
                   className={column.numeric ? "numeric" : undefined}
                   data-label={column.label}
                 >
-                  {column.cell(row)}
+                  <div className="cell">{column.cell(row)}</div>
                 </td>
               ))}
             </tr>
