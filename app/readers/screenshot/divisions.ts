@@ -15,14 +15,21 @@ const SEEN_SHARE = 0.8;
 export function countDivisions(grey: Float32Array, width: number, box: Box, lines: Line[]): number | null {
   const height = box.bottom - box.top;
   const inner = lines.filter((l) => l.position > box.top + 3 && l.position < box.bottom - 3);
-  const byLines = largestComb((y) => Math.min(...inner.map((l) => Math.abs(l.position - y))) <= 1.6, box.top, height);
+  const byLines = largestComb(
+    (y) => Math.min(...inner.map((l) => Math.abs(l.position - y))) <= 1.6,
+    box.top,
+    height,
+  );
   if (byLines && fitsLines(inner, box.top, height, byLines)) return byLines;
   const profile = ridgeProfile(grey, width, box);
   const noise = medianOf(profile.map(Math.abs)) + 0.02;
   for (const sign of [1, -1]) {
     const hit = (y: number) => {
       const i = Math.round(y - box.top);
-      return Math.max(sign * (profile[i] ?? 0), sign * (profile[i - 1] ?? 0), sign * (profile[i + 1] ?? 0)) > 4 * noise;
+      return (
+        Math.max(sign * (profile[i] ?? 0), sign * (profile[i - 1] ?? 0), sign * (profile[i + 1] ?? 0)) >
+        4 * noise
+      );
     };
     const found = largestComb(hit, box.top, height);
     if (found && found >= 4 && isSparse(profile, sign, 4 * noise, found)) return found;

@@ -1,6 +1,6 @@
+import { countDivisions } from "./divisions.ts";
 import { findLines } from "./lines.ts";
 import { brightness, type Line, type Picture, type Stage, transpose } from "./picture.ts";
-import { countDivisions } from "./divisions.ts";
 
 /** The plot's outer lines and its divisions. */
 export interface Frame {
@@ -42,15 +42,21 @@ const SMALLEST_SIDE = 0.25;
  * Returns null where no rectangle of lines is large enough. `given` replaces the search; divisions
  * are then counted inside it.
  */
-export function findFrame(picture: Picture, given?: { left: number; top: number; right: number; bottom: number }): FoundFrame | null {
+export function findFrame(
+  picture: Picture,
+  given?: { left: number; top: number; right: number; bottom: number },
+): FoundFrame | null {
   const { width, height } = picture;
   const grey = brightness(picture);
   const turned = transpose(grey, width, height);
   const horizontals = findLines(grey, width, height);
   const verticals = findLines(turned, height, width);
-  const best = given ? { ...given, score: 0, sides: 4, inside: 0 } : bestRectangle(horizontals, verticals, width, height);
+  const best = given
+    ? { ...given, score: 0, sides: 4, inside: 0 }
+    : bestRectangle(horizontals, verticals, width, height);
   if (!best) return null;
-  const settle = (lines: Line[], at: number, from: number, to: number) => (given ? at : centreOfStroke(lines, at, from, to));
+  const settle = (lines: Line[], at: number, from: number, to: number) =>
+    given ? at : centreOfStroke(lines, at, from, to);
   const left = settle(verticals, best.left, best.top, best.bottom);
   const right = settle(verticals, best.right, best.top, best.bottom);
   const top = settle(horizontals, best.top, best.left, best.right);
@@ -58,7 +64,12 @@ export function findFrame(picture: Picture, given?: { left: number; top: number;
   const horizontal = horizontals.filter((l) => between(l.position, top, bottom) && covers(l, left, right));
   const vertical = verticals.filter((l) => between(l.position, left, right) && covers(l, top, bottom));
   const rows = countDivisions(grey, width, { left, right, top, bottom }, horizontal);
-  const columns = countDivisions(turned, height, { left: top, right: bottom, top: left, bottom: right }, vertical);
+  const columns = countDivisions(
+    turned,
+    height,
+    { left: top, right: bottom, top: left, bottom: right },
+    vertical,
+  );
   const confidence = given ? 1 : Math.min(1, 0.3 + 0.12 * best.sides + 0.04 * Math.min(8, best.inside));
   const saw = given
     ? "The frame was given."
@@ -76,7 +87,12 @@ interface Rectangle {
   inside: number;
 }
 
-function bestRectangle(horizontals: Line[], verticals: Line[], width: number, height: number): Rectangle | null {
+function bestRectangle(
+  horizontals: Line[],
+  verticals: Line[],
+  width: number,
+  height: number,
+): Rectangle | null {
   const across = spans(horizontals, verticals, SMALLEST_SIDE * width);
   const down = spans(verticals, horizontals, SMALLEST_SIDE * height);
   let best: Rectangle | null = null;
@@ -108,7 +124,8 @@ function spans(lines: Line[], crossing: Line[], shortest: number): Span[] {
   }
   for (const a of crossing) {
     for (const b of crossing) {
-      if (Math.abs(a.from - b.from) <= LABEL_REACH && Math.abs(a.to - b.to) <= LABEL_REACH) add(a.position, b.position, 0.5);
+      if (Math.abs(a.from - b.from) <= LABEL_REACH && Math.abs(a.to - b.to) <= LABEL_REACH)
+        add(a.position, b.position, 0.5);
     }
   }
   return found.sort((a, b) => b.votes - a.votes).slice(0, 60);
@@ -129,7 +146,14 @@ function snap(end: number, crossing: Line[], position: number, reach: number): n
   return best;
 }
 
-function judge(x: Span, y: Span, horizontals: Line[], verticals: Line[], width: number, height: number): Rectangle | null {
+function judge(
+  x: Span,
+  y: Span,
+  horizontals: Line[],
+  verticals: Line[],
+  width: number,
+  height: number,
+): Rectangle | null {
   const h = support(horizontals, x, y);
   const v = support(verticals, y, x);
   const sides = h.sides + v.sides;
@@ -140,7 +164,10 @@ function judge(x: Span, y: Span, horizontals: Line[], verticals: Line[], width: 
   const margins = [x.from / width, y.from / height, 1 - x.to / width, 1 - y.to / height];
   const bezel = margins.filter((m) => m < 0.015).length >= 3 ? 0.3 : 1;
   const exact = h.exact + v.exact;
-  const score = (Math.min(6, h.inside) + Math.min(6, v.inside) + 4 * sides + 0.25 * Math.min(8, exact)) * Math.sqrt(area) * bezel;
+  const score =
+    (Math.min(6, h.inside) + Math.min(6, v.inside) + 4 * sides + 0.25 * Math.min(8, exact)) *
+    Math.sqrt(area) *
+    bezel;
   return { left: x.from, right: x.to, top: y.from, bottom: y.to, score, sides, inside };
 }
 
@@ -154,7 +181,7 @@ function support(lines: Line[], along: Span, across: Span): { sides: number; ins
     const after = line.to - along.to;
     const shortest = -Math.max(TICK_LENGTH, 0.05 * (along.to - along.from));
     if (Math.max(before, after) > LABEL_REACH || Math.min(before, after) < shortest) continue;
-    const ends = fit(before) + fit(after);
+    const ends = endVote(before) + endVote(after);
     exact += ends;
     if (Math.abs(line.position - across.from) <= 1) first = Math.max(first, ends);
     else if (Math.abs(line.position - across.to) <= 1) last = Math.max(last, ends);
@@ -164,7 +191,7 @@ function support(lines: Line[], along: Span, across: Span): { sides: number; ins
 }
 
 /** Half a vote for an end that fits; a tick may stick out, a trace may cover the last stretch. */
-function fit(overshoot: number): number {
+function endVote(overshoot: number): number {
   if (Math.abs(overshoot) <= END_TOLERANCE) return 0.5;
   return overshoot < 0 ? 0.25 : overshoot <= TICK_LENGTH ? 0.4 : 0.3;
 }

@@ -59,7 +59,8 @@ function chainsOfRow(grey: Float32Array, width: number, row: number, chains: Cha
     for (let x = b * BLOCK; x < b * BLOCK + BLOCK; x++) mean += grey[lower + x] - grey[upper + x];
     mean /= BLOCK;
     const strong = Math.abs(mean) >= SMALLEST_STEP;
-    const fits = strong && first >= 0 && Math.sign(mean) === sign && Math.abs(mean) > 0.25 * Math.abs(sum / hits);
+    const fits =
+      strong && first >= 0 && Math.sign(mean) === sign && Math.abs(mean) > 0.25 * Math.abs(sum / hits);
     if (fits && b - last <= BLOCK_GAP + 1) {
       last = b;
       sum += mean;
@@ -101,9 +102,17 @@ function refineEnds(chain: Chain, grey: Float32Array, width: number): number {
   const near = Math.round(window / 4);
   const regular = (a: number, b: number) => share(a, b) >= 0.7 * usual;
   let from = first;
-  while (from + window < last && !(at(from) >= enough && regular(from, from + near) && regular(from, from + window))) from++;
+  while (
+    from + window < last &&
+    !(at(from) >= enough && regular(from, from + near) && regular(from, from + window))
+  )
+    from++;
   let to = last;
-  while (to - window > first && !(at(to) >= enough && regular(to + 1 - near, to + 1) && regular(to + 1 - window, to + 1))) to--;
+  while (
+    to - window > first &&
+    !(at(to) >= enough && regular(to + 1 - near, to + 1) && regular(to + 1 - window, to + 1))
+  )
+    to--;
   chain.from = from;
   chain.to = to;
   let holes = 0;
@@ -144,7 +153,8 @@ function sameLine(a: Chain, b: Chain, width: number): boolean {
   const both = Math.min(a.to, b.to) - Math.max(a.from, b.from);
   const shorter = Math.min(a.to - a.from, b.to - b.from);
   if (both > 0.6 * shorter) return true;
-  const alike = Math.abs(a.row - b.row) <= 1 && a.step * b.step > 0 && a.step / b.step > 0.5 && a.step / b.step < 2;
+  const alike =
+    Math.abs(a.row - b.row) <= 1 && a.step * b.step > 0 && a.step / b.step > 0.5 && a.step / b.step < 2;
   return alike && both > -0.4 * width;
 }
 
@@ -160,11 +170,18 @@ function measureLine(group: Chain[], grey: Float32Array, width: number, height: 
   const from = Math.min(...alike.map((c) => c.from));
   const to = Math.max(...alike.map((c) => c.to));
   const profile: number[] = [];
-  for (let y = first; y <= last; y++) profile.push(rowLevel(grey, width, Math.min(Math.max(y, 0), height - 1), from, to));
+  for (let y = first; y <= last; y++)
+    profile.push(rowLevel(grey, width, Math.min(Math.max(y, 0), height - 1), from, to));
   const above = profile[0];
   const below = profile[profile.length - 1];
   const kind = opposite ? "stroke" : "edge";
-  return { position: first + (opposite ? strokeCentre(profile) : edgeCentre(profile)), from, to, kind, contrast: contrastOf(profile, above, below) };
+  return {
+    position: first + (opposite ? strokeCentre(profile) : edgeCentre(profile)),
+    from,
+    to,
+    kind,
+    contrast: contrastOf(profile, above, below),
+  };
 }
 
 function rowLevel(grey: Float32Array, width: number, y: number, from: number, to: number): number {
@@ -201,6 +218,7 @@ function edgeCentre(profile: number[]): number {
 
 function contrastOf(profile: number[], above: number, below: number): number {
   let most = Math.abs(above - below);
-  for (const level of profile) most = Math.max(most, Math.min(Math.abs(level - above), Math.abs(level - below)));
+  for (const level of profile)
+    most = Math.max(most, Math.min(Math.abs(level - above), Math.abs(level - below)));
   return most;
 }

@@ -1,0 +1,125 @@
+import { createRequire } from "node:module";
+import { dirname, join } from "node:path";
+import sharp from "sharp";
+import { createWorker, PSM, type Worker } from "tesseract.js";
+import type { Ocr, Picture, TextKind, Word } from "../readers/screenshot/picture.ts";
+
+/** Decoding and text recognition for `readers/screenshot` on the server and on the command line. */
+
+export const MAX_PICTURE_PIXELS = 40_000_000;
+
+/** A picture that is not decoded, with a sentence for the person who gave it. */
+export class PictureRefused extends Error {
+  readonly code: string;
+  constructor(code: string, message: string) {
+    super(message);
+    this.code = code;
+  }
+}
+
+const FORMATS = new Set(["png", "jpeg", "webp"]);
+
+/**
+ * Decodes PNG, JPEG or WebP to raw pixels, turned upright as its EXIF orientation says.
+ *
+ * Transparent pixels are laid on white. Throws `PictureRefused` for anything else: other formats, several
+ * frames, more than 40 megapixels, damaged data. The size is checked before any pixel is decoded.
+ */
+export async function decodePicture(bytes: Uint8Array): Promise<Picture> {
+  const options = { limitInputPixels: MAX_PICTURE_PIXELS, failOn: "error" as const };
+  const header = await sharp(bytes, { ...options, animated: true, limitInputPixels: false })
+    .metadata()
+    .catch(() => {
+      throw new PictureRefused(
+        "not-a-picture",
+        "This is not a picture that can be read. Give a PNG, JPEG or WebP.",
+      );
+    });
+  if (!FORMATS.has(header.format ?? "")) {
+    throw new PictureRefused(
+      "picture-format",
+      "Pictures are read from PNG, JPEG and WebP only. Save it as one of them.",
+    );
+  }
+  if ((header.pages ?? 1) > 1) {
+    throw new PictureRefused(
+      "animated",
+      "This picture is animated. Give a still picture of the moment to be read.",
+    );
+  }
+  if (header.width * header.height > MAX_PICTURE_PIXELS) {
+    throw new PictureRefused("too-large", "This picture has more than 40 megapixels. Give a smaller copy.");
+  }
+  try {
+    const { data, info } = await sharp(bytes, options)
+      .autoOrient()
+      .flatten({ background: "#ffffff" })
+      .toColourspace("srgb")
+      .ensureAlpha()
+      .raw({ depth: "uchar" })
+      .toBuffer({ resolveWithObject: true });
+    return { width: info.width, height: info.height, data };
+  } catch {
+    throw new PictureRefused("damaged", "This picture is damaged or cut short. Save or send it again.");
+  }
+}
+
+const MODES: Record<TextKind, PSM> = {
+  scattered: PSM.SPARSE_TEXT,
+  line: PSM.SINGLE_LINE,
+  number: PSM.SINGLE_WORD,
+};
+
+export interface TextRecognition {
+  ocr: Ocr;
+  close: () => Promise<void>;
+}
+
+/** Starts text recognition; offline, with the language data of the package. One region at a time. */
+export async function openTextRecognition(): Promise<TextRecognition> {
+  const require = createRequire(import.meta.url);
+  const langPath = join(dirname(require.resolve("@tesseract.js-data/eng/package.json")), "4.0.0_best_int");
+  const worker = await createWorker("eng", 1, { langPath, gzip: true, cacheMethod: "none" });
+  let last: Promise<unknown> = Promise.resolve();
+  const ocr: Ocr = (region, kind) => {
+    const next = last.then(() => recognise(worker, region, kind));
+    last = next.catch(() => undefined);
+    return next;
+  };
+  return { ocr, close: async () => void (await worker.terminate()) };
+}
+
+async function recognise(
+  worker: Worker,
+  region: { width: number; height: number; data: Uint8Array },
+  kind: TextKind,
+): Promise<Word[]> {
+  const { width, height, data } = region;
+  const png = await sharp(data, { raw: { width, height, channels: 1 } })
+    .png({ compressionLevel: 1 })
+    .toBuffer();
+  await worker.setParameters({
+    tessedit_pageseg_mode: MODES[kind],
+    tessedit_char_whitelist: kind === "number" ? "0123456789.-" : "",
+    user_defined_dpi: "150",
+  });
+  const result = await worker.recognize(png, {}, { blocks: true, text: false });
+  const words: Word[] = [];
+  for (const block of result.data.blocks ?? []) {
+    for (const paragraph of block.paragraphs) {
+      for (const line of paragraph.lines) {
+        for (const { text, confidence, bbox } of line.words) {
+          words.push({
+            text,
+            confidence: confidence / 100,
+            left: bbox.x0,
+            top: bbox.y0,
+            right: bbox.x1,
+            bottom: bbox.y1,
+          });
+        }
+      }
+    }
+  }
+  return words;
+}
