@@ -40,8 +40,8 @@ export interface TextSpec {
 
 /** The choices of a Touchstone reading that are not in the file itself. */
 export interface TouchstoneSpec {
-  /** Which reflection of a two-port file: 1 for S11, 2 for S22. */
-  port: 1 | 2;
+  /** Which reflection of a file with several ports: 1 for S11, 2 for S22, … */
+  port: number;
 }
 
 /** The choices of a picture's reading; filled by `readers/screenshot`. */
