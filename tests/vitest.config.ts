@@ -1,14 +1,30 @@
 import { defineConfig } from "vitest/config";
 
-/** Unit and reference tests: pure code, no server. `scripts/test.mjs` runs these and the other suites. */
+/** Unit and reference tests: no database, no server. `scripts/test.mjs` runs these and the other suites. */
 export default defineConfig({
   resolve: { tsconfigPaths: true },
   test: {
     root: new URL("..", import.meta.url).pathname,
-    include: ["tests/{measurement,readers,charts,auth,services,scripts}/**/*.test.{ts,tsx}"],
-    exclude: ["**/*.db.test.ts"],
+    include: ["tests/**/*.test.{ts,tsx}"],
+    exclude: ["**/*.db.test.ts", "tests/web/**", "tests/browser/**"],
+    setupFiles: ["tests/quiet-console.ts"],
     testTimeout: 20_000,
     pool: "threads",
     maxWorkers: 2,
+    // What app/env.server.ts asks for; nothing answers at these addresses.
+    env: {
+      BASE_URL: "http://localhost:3000",
+      DATABASE_URL: "mysql://nobody@127.0.0.1:9/nowhere",
+      S3_ENDPOINT: "http://127.0.0.1:9",
+      S3_BUCKET: "nowhere",
+      S3_ACCESS_KEY_ID: "nobody",
+      S3_SECRET_ACCESS_KEY: "nothing",
+      SMTP_URL: "smtp://127.0.0.1:9",
+      GITHUB_CLIENT_ID: "nobody",
+      GITHUB_CLIENT_SECRET: "nothing",
+      SESSION_SECRET: "for unit tests only, and for nothing else",
+      LOG_LEVEL: "silent",
+      AWS_SDK_JS_NODE_VERSION_SUPPORT_WARNING_DISABLED: "true",
+    },
   },
 });

@@ -18,6 +18,8 @@ export interface StackOptions {
   environment: Environment;
   demo: boolean;
   development?: boolean;
+  /** False for the parts alone, without the app. */
+  server?: boolean;
   /** Called once when a part ends that should run. */
   onLoss: (message: string) => void;
 }
@@ -47,7 +49,7 @@ export async function bringUp(options: StackOptions): Promise<Stack> {
     await endProcesses(processesWith(markOf(folder)));
     const settings = await settingsFor(folder, options.environment, port);
     const { environment, local } = settings;
-    await refuseTakenPort(port, environment.HOST ?? LOOPBACK);
+    if (options.server !== false) await refuseTakenPort(port, environment.HOST ?? LOOPBACK);
     if (local.database) {
       await step("MariaDB", async () =>
         watch(await startDatabase(folder, settings.ports.database, settings.secrets)),
@@ -63,6 +65,7 @@ export async function bringUp(options: StackOptions): Promise<Stack> {
       await step(title, async () => watch(await startStandIns(folder, settings)));
     }
     await step("Bucket", () => ensureBucket(environment));
+    if (options.server === false) return { settings, address: "", stop };
     if (!options.development) await step("Build", () => buildWhereNeeded(folder));
     if (options.demo && existsSync(DEMO)) await step("Demo", () => buildDemo(folder, environment));
     await step("Server", async () => watch(await startServer(options, environment)));

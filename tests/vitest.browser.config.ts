@@ -1,0 +1,18 @@
+import { defineConfig } from "vitest/config";
+
+/** Journeys in a real browser against the built server: at SWALE_URL, or started for this run. */
+export default defineConfig({
+  resolve: { tsconfigPaths: true },
+  test: {
+    root: new URL("..", import.meta.url).pathname,
+    include: ["tests/browser/**/*.test.ts"],
+    globalSetup: ["scripts/suites/server-setup.ts"],
+    setupFiles: ["tests/quiet-console.ts"],
+    testTimeout: 120_000,
+    hookTimeout: 120_000,
+    pool: "forks",
+    maxWorkers: 1,
+    fileParallelism: false,
+    env: { AWS_SDK_JS_NODE_VERSION_SUPPORT_WARNING_DISABLED: "true" },
+  },
+});

@@ -1,0 +1,16 @@
+import { defineConfig } from "vitest/config";
+
+/** Tests on a real MariaDB and the local store, both started for this run alone. */
+export default defineConfig({
+  resolve: { tsconfigPaths: true },
+  test: {
+    root: new URL("..", import.meta.url).pathname,
+    include: ["tests/**/*.db.test.ts"],
+    globalSetup: ["scripts/suites/parts-setup.ts"],
+    setupFiles: ["tests/worker-schema.ts", "tests/quiet-console.ts"],
+    testTimeout: 30_000,
+    pool: "forks",
+    maxWorkers: 2,
+    env: { LOG_LEVEL: "silent", AWS_SDK_JS_NODE_VERSION_SUPPORT_WARNING_DISABLED: "true" },
+  },
+});

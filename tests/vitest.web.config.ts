@@ -1,0 +1,17 @@
+import { defineConfig } from "vitest/config";
+
+/** Tests over HTTP against the built server: at SWALE_URL, or started for this run. */
+export default defineConfig({
+  resolve: { tsconfigPaths: true },
+  test: {
+    root: new URL("..", import.meta.url).pathname,
+    include: ["tests/web/**/*.test.ts"],
+    globalSetup: ["scripts/suites/server-setup.ts"],
+    setupFiles: ["tests/quiet-console.ts"],
+    testTimeout: 60_000,
+    hookTimeout: 60_000,
+    pool: "forks",
+    maxWorkers: 2,
+    env: { AWS_SDK_JS_NODE_VERSION_SUPPORT_WARNING_DISABLED: "true" },
+  },
+});
