@@ -15,19 +15,19 @@ export interface ChartBaseProps {
   palette: Palette;
   /** Makes the ids inside unique on a page. */
   id: string;
-  /** Leave the land and its line to another layer on top. */
-  curveHidden?: boolean;
+  /** Leave the line to another layer on top. */
+  lineHidden?: boolean;
   /** Draw the leaders down from the cairns. */
   leaders?: ReadonlySet<string>;
 }
 
 /** Everything of a chart but its dips: land, strata, water, axes, ribbon. Its origin is the plot's top left. */
-export function ChartBase({ scene, palette, id, curveHidden = false, leaders }: ChartBaseProps) {
+export function ChartBase({ scene, palette, id, lineHidden = false, leaders }: ChartBaseProps) {
   const { plotHeightPx: height, plotWidthPx } = scene;
   const right = across(1, plotWidthPx);
   return (
     <g>
-      <LandLayer {...{ scene, palette, id, curveHidden }} />
+      <LandLayer {...{ scene, palette, id, lineHidden }} />
       <line x1="0" x2={right} y1={height} y2={height} stroke={palette.ink} strokeWidth="1.25" />
       <ValueLabels scene={scene} palette={palette} />
       <g className="leaders">

@@ -1,11 +1,12 @@
 import type { CSSProperties } from "react";
+import { formatFrequency, formatSwr, formatWidth } from "~/measurement/units";
 import { cardVerdict, type WidthBar, widthBar } from "./card-words";
 import type { ChartBand, ChartDip } from "./chart-types";
 import { pick } from "./DipMarks";
 import { type CardPlace, chooseTelling, placeCards } from "./hollow-layout";
-import { formatFrequency, formatNoteCount, formatSwr, formatWidth } from "./numbers";
 import { across, Stretched } from "./place";
 import type { Scene } from "./scene";
+import { formatNoteCount } from "./words";
 
 export interface HollowCardsProps {
   scene: Scene;
@@ -31,47 +32,49 @@ export function HollowCards({ scene, designBands, dipHref, chosenDipId, onPick }
   const places = placeCards(told.map((dip) => dip.fraction));
   const links = { dipHref, chosenDipId, onPick };
   return (
-    <section className="hollows" aria-label="Dips">
-      <svg className="hollow-leaders" height={LEADER_HEIGHT_PX} aria-hidden="true">
-        <Stretched width={1000} height={LEADER_HEIGHT_PX} plotWidthPx={null}>
-          {told.map((dip, index) => (
-            <path
-              key={dip.id}
-              d={leaderPath(dip.fraction, places[index].anchor)}
-              className="hollow-leader"
-              vectorEffect="non-scaling-stroke"
+    <section className="chart-frame" aria-label="Dips">
+      <div className="hollows">
+        <svg className="hollow-leaders" height={LEADER_HEIGHT_PX} aria-hidden="true">
+          <Stretched width={1000} height={LEADER_HEIGHT_PX} plotWidthPx={null}>
+            {told.map((dip, index) => (
+              <path
+                key={dip.id}
+                d={leaderPath(dip.fraction, places[index].anchor)}
+                className="hollow-leader"
+                vectorEffect="non-scaling-stroke"
+              />
+            ))}
+          </Stretched>
+        </svg>
+        <ul className="hollow-row">
+          {told.map(({ id, dip }, index) => (
+            <HollowCard
+              key={id}
+              dip={dip}
+              style={placeStyle(places, index)}
+              {...links}
+              designBands={designBands}
             />
           ))}
-        </Stretched>
-      </svg>
-      <ul className="hollow-row">
-        {told.map(({ id, dip }, index) => (
-          <HollowCard
-            key={id}
-            dip={dip}
-            style={placeStyle(places, index)}
-            {...links}
-            designBands={designBands}
-          />
-        ))}
-      </ul>
-      {rest.length > 0 && (
-        <p className="hollow-rest">
-          <span className="soft">{told.length > 0 ? "Also" : "Dips"}</span>
-          {rest.map(({ id, dip, spoken }) => (
-            <a
-              key={id}
-              href={dipHref(dip)}
-              aria-label={spoken}
-              aria-current={id === chosenDipId || undefined}
-              onClick={onPick && ((event) => pick(event, id, onPick))}
-            >
-              <span className="number">{formatFrequency(dip.frequencyHz, dip.frequencyUncertaintyHz)}</span>
-              <span className="soft">SWR {formatSwr(dip.minimumSwr)}</span>
-            </a>
-          ))}
-        </p>
-      )}
+        </ul>
+        {rest.length > 0 && (
+          <p className="hollow-rest">
+            <span className="soft">{told.length > 0 ? "Also" : "Dips"}</span>
+            {rest.map(({ id, dip, spoken }) => (
+              <a
+                key={id}
+                href={dipHref(dip)}
+                aria-label={spoken}
+                aria-current={id === chosenDipId || undefined}
+                onClick={onPick && ((event) => pick(event, id, onPick))}
+              >
+                <span className="number">{formatFrequency(dip.frequencyHz, dip.frequencyUncertaintyHz)}</span>
+                <span className="soft">SWR {formatSwr(dip.minimumSwr)}</span>
+              </a>
+            ))}
+          </p>
+        )}
+      </div>
     </section>
   );
 }
@@ -100,7 +103,7 @@ function HollowCard({ dip, style, designBands, dipHref, chosenDipId, onPick }: H
       <Bar bar={widthBar(dip, designBands)} />
       <p className="number soft">
         {bandwidth
-          ? `${limit} over ${bandwidth.open ? "at least " : ""}${formatWidth(bandwidth.widthHz)}`
+          ? `${limit} over ${bandwidth.open ? "at least " : ""}${formatWidth(bandwidth.widthHz, bandwidth.widthUncertaintyHz)}`
           : "never under the limit"}
         {bandwidth?.shared && ", shared"}
       </p>

@@ -6,11 +6,11 @@ export interface LandLayerProps {
   scene: Scene;
   palette: Palette;
   id: string;
-  curveHidden: boolean;
+  lineHidden: boolean;
 }
 
 /** The land with its strata, the design bands' washes, the water in the hollows and the pen line on top. */
-export function LandLayer({ scene, palette, id, curveHidden }: LandLayerProps) {
+export function LandLayer({ scene, palette, id, lineHidden }: LandLayerProps) {
   const { plotHeightPx: height, plotWidthPx, pathWidth } = scene;
   const clipId = `${id}-land`;
   const top = scene.valueTicks[0]?.y ?? 0;
@@ -22,7 +22,7 @@ export function LandLayer({ scene, palette, id, curveHidden }: LandLayerProps) {
         <clipPath id={clipId}>
           <path d={scene.land || "M0 0"} />
         </clipPath>
-        {!curveHidden && <path d={scene.land} fill={palette.land} />}
+        <path d={scene.land} fill={palette.land} />
       </Stretched>
       <Washes scene={scene} palette={palette} opacity={0.35} />
       <Stretched width={pathWidth} height={height} plotWidthPx={plotWidthPx}>
@@ -42,7 +42,7 @@ export function LandLayer({ scene, palette, id, curveHidden }: LandLayerProps) {
         {scene.waters.map((water) => (
           <path key={water.key} d={water.path} fill={palette.water} />
         ))}
-        {!curveHidden && <PenLines scene={scene} palette={palette} />}
+        <PenLines {...{ scene, palette, lineHidden }} />
       </Stretched>
       {scene.waters.map((water) => (
         <WaterLevel key={water.key} water={water} plotWidthPx={plotWidthPx} palette={palette} />
@@ -77,7 +77,7 @@ export function LandLayer({ scene, palette, id, curveHidden }: LandLayerProps) {
   );
 }
 
-function PenLines({ scene, palette }: { scene: Scene; palette: Palette }) {
+function PenLines({ scene, palette, lineHidden }: Omit<LandLayerProps, "id">) {
   const pen = {
     fill: "none",
     strokeWidth: 1.6,
@@ -87,7 +87,7 @@ function PenLines({ scene, palette }: { scene: Scene; palette: Palette }) {
   } as const;
   return (
     <>
-      <path d={scene.line} stroke={palette.ink} {...pen} />
+      {!lineHidden && <path d={scene.line} stroke={palette.ink} {...pen} />}
       {scene.offScale && <path d={scene.offScale} stroke={palette.clay} strokeDasharray="3 4" {...pen} />}
     </>
   );

@@ -10,35 +10,38 @@ export interface SweepChartProps extends Pick<DipMarksProps, "dipHref" | "chosen
   label: string;
   /** Dips whose leaders run on to cards below. */
   leaders?: ReadonlySet<string>;
-  curveHidden?: boolean;
+  /** The overlay draws the line. */
+  lineHidden?: boolean;
   /** A layer between the land and the dips, over the plot exactly. */
   children?: ReactNode;
 }
 
 /** A sweep on a page: complete without scripts, at any width. */
-export function SweepChart({ scene, label, leaders, curveHidden, children, ...marks }: SweepChartProps) {
+export function SweepChart({ scene, label, leaders, lineHidden, children, ...marks }: SweepChartProps) {
   const id = useId();
   const heightPx = CHART_TOP_PX + scene.plotHeightPx + CHART_FOOT_PX;
   return (
     // biome-ignore lint/a11y/useSemanticElements: a chart is not a set of form fields
-    <div role="group" aria-label={label} className="chart">
-      <div className="chart-plot" style={{ height: heightPx }}>
-        <svg className="chart-layer" height={heightPx} aria-hidden="true">
-          <g transform={`translate(0 ${CHART_TOP_PX})`}>
-            <ChartBase scene={scene} palette={PAGE_PALETTE} id={id} {...{ curveHidden, leaders }} />
-          </g>
-        </svg>
-        {children && (
-          <div className="chart-overlay" style={{ top: CHART_TOP_PX, height: scene.plotHeightPx }}>
-            {children}
-          </div>
-        )}
-        {/* biome-ignore lint/a11y/noSvgWithoutTitle: its links carry their own names */}
-        <svg className="chart-layer chart-marks" height={heightPx}>
-          <g transform={`translate(0 ${CHART_TOP_PX})`}>
-            <DipMarks scene={scene} palette={PAGE_PALETTE} {...marks} />
-          </g>
-        </svg>
+    <div role="group" aria-label={label} className="chart-frame">
+      <div className="chart">
+        <div className="chart-plot" style={{ height: heightPx }}>
+          <svg className="chart-layer" height={heightPx} aria-hidden="true">
+            <g transform={`translate(0 ${CHART_TOP_PX})`}>
+              <ChartBase scene={scene} palette={PAGE_PALETTE} id={id} {...{ lineHidden, leaders }} />
+            </g>
+          </svg>
+          {children && (
+            <div className="chart-overlay" style={{ top: CHART_TOP_PX, height: scene.plotHeightPx }}>
+              {children}
+            </div>
+          )}
+          {/* biome-ignore lint/a11y/noSvgWithoutTitle: its links carry their own names */}
+          <svg className="chart-layer chart-marks" height={heightPx}>
+            <g transform={`translate(0 ${CHART_TOP_PX})`}>
+              <DipMarks scene={scene} palette={PAGE_PALETTE} {...marks} />
+            </g>
+          </svg>
+        </div>
       </div>
     </div>
   );

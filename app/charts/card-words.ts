@@ -1,6 +1,7 @@
 /** What a hollow card says besides its numbers. */
+
+import { formatWidth } from "../measurement/units.ts";
 import type { ChartBand, ChartDip } from "./chart-types.ts";
-import { formatWidth } from "./numbers.ts";
 
 export type CardTone = "moss" | "heather" | "clay" | "plain";
 

@@ -1,9 +1,11 @@
 /** The dips of a scene: where each stands, its cairn, how it hangs off the ribbon, and its spoken words. */
+
+import { formatSwr, formatWidth } from "../measurement/units.ts";
 import type { FrequencyScale } from "./axis.ts";
 import type { ChartBand, ChartDip } from "./chart-types.ts";
-import { formatNoteCount, formatSwr, formatWidth, speakFrequency } from "./numbers.ts";
 import { type Hang, hangOf } from "./ribbon.ts";
 import type { ValueAxis } from "./value-axis.ts";
+import { formatNoteCount, speakFrequency } from "./words.ts";
 
 export interface SceneDip {
   id: string;

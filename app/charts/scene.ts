@@ -28,6 +28,8 @@ export interface SceneInput {
 export interface Scene {
   view: ChartView;
   scale: FrequencyScale;
+  /** px from the plot's top for an abs Γ, not kept inside the plot. */
+  yOfMagnitude: (magnitude: number) => number;
   plotHeightPx: number;
   /** Null when the drawing fits any width. */
   plotWidthPx: number | null;
@@ -69,7 +71,7 @@ export function buildSweepScene(input: SceneInput): Scene {
   const columns = plotWidthPx ? Math.max(50, Math.round(plotWidthPx / 2)) : COLUMNS;
   const runs = decimate(points, scale, columns);
   const dips = input.dips.filter(({ frequencyHz: hz }) => hz >= scale.fromHz && hz <= scale.toHz);
-  const axis = valueAxis(view.quantity, plotHeightPx, rangeOf(runs, dips));
+  const axis = valueAxis(view.quantity, plotHeightPx, rangeOf(runs, input.dips));
   const pathWidth = plotWidthPx ?? FLUID_PATH_WIDTH;
   const box: ProfileBox = { width: pathWidth, heightPx: plotHeightPx, yOfMagnitude: axis.yOfMagnitude };
   const paths = profilePaths(runs, box);
@@ -79,6 +81,7 @@ export function buildSweepScene(input: SceneInput): Scene {
   return {
     view,
     scale,
+    yOfMagnitude: axis.yOfMagnitude,
     plotHeightPx,
     plotWidthPx: plotWidthPx ?? null,
     pathWidth,
@@ -108,10 +111,10 @@ function rangeOf(runs: readonly Run[], dips: readonly ChartDip[]) {
       if (!(magnitude <= highestMagnitude)) highestMagnitude = magnitude;
     }
   }
-  // A fitted dip can lie a little deeper than its lowest sample.
+  // Dips outside the view count, so that the axis stays as it is when the view moves.
   for (const dip of dips) {
     const magnitude = 10 ** (-dip.returnLossDb / 20);
-    if (magnitude < lowestMagnitude) lowestMagnitude = magnitude;
+    if (!(magnitude >= lowestMagnitude)) lowestMagnitude = magnitude;
   }
   return { lowestMagnitude, highestMagnitude };
 }
