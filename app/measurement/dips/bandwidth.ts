@@ -1,0 +1,130 @@
+import { swrToGamma } from "../reflection.ts";
+import type { Bandwidth, Sweep } from "../sweep.ts";
+import { combine, NORMAL_95 } from "../uncertainty.ts";
+import { crossingHz } from "./crossing.ts";
+import type { Fit } from "./fit.ts";
+import { edgeAt } from "./resonator.ts";
+
+/** The contiguous samples around a dip with SWR at or under the limit: `from`..`to`, both included. */
+export interface Stretch {
+  from: number;
+  to: number;
+}
+
+/** Null where the dip's own sample is above the limit. Ends at gaps. `level` is abs Γ of the limit. */
+export function stretchAround(magnitude: Float64Array, index: number, level: number): Stretch | null {
+  if (!(magnitude[index] <= level)) return null;
+  let from = index;
+  let to = index;
+  while (from > 0 && magnitude[from - 1] <= level) from--;
+  while (to < magnitude.length - 1 && magnitude[to + 1] <= level) to++;
+  return { from, to };
+}
+
+export interface BandwidthInput {
+  sweep: Sweep;
+  index: number;
+  /** Lowest abs Γ as it is told of this dip. */
+  lowest: number;
+  swrLimit: number;
+  stretch: Stretch | null;
+  /** Another dip lies in the stretch. */
+  shared: boolean;
+  fit: Fit | null;
+  /** σ of the sweep, dB of return loss. */
+  noise: number;
+}
+
+/**
+ * The bandwidth at an SWR limit over 1. Null, never 0, where the dip's lowest SWR is above the limit.
+ *
+ * Where a whole resonator fits and the dip does not share its stretch, the edges are the fit's closed form f0·e^±asinh(w/2κ), which
+ * averages the noise of all samples and is exact for a resonator; else they are interpolated between the two samples on each side of the limit
+ * (`crossingHz`). An edge beyond the sweep or in a gap is open: null, and the width "at least" up to the last sample.
+ * The fractional bandwidth is the width over the geometric mean of the edges.
+ */
+export function bandwidthOf(input: BandwidthInput): Bandwidth | null {
+  const level = swrToGamma(input.swrLimit);
+  if (!(input.lowest <= level)) return null;
+  const edges = fromFit(input, level) ?? fromSamples(input, level);
+  if (!edges) return null;
+  const { lowHz, highHz, ends, halfHz } = edges;
+  const open = lowHz === null || highHz === null;
+  const widthHz = (highHz ?? ends.highHz) - (lowHz ?? ends.lowHz);
+  return {
+    limitSwr: input.swrLimit,
+    lowHz,
+    highHz,
+    widthHz,
+    widthUncertaintyHz: halfHz,
+    open,
+    shared: input.shared,
+    fractional: lowHz === null || highHz === null ? null : widthHz / Math.sqrt(lowHz * highHz),
+  };
+}
+
+interface Edges {
+  lowHz: number | null;
+  highHz: number | null;
+  /** The last samples, for an open edge. */
+  ends: { lowHz: number; highHz: number };
+  halfHz: number | null;
+}
+
+function fromFit({ sweep, index, fit, shared, stretch }: BandwidthInput, level: number): Edges | null {
+  if (!fit?.whole || shared) return null;
+  const { frequencyHz, magnitude } = sweep;
+  const w = edgeAt(fit.resonator, level * level);
+  if (w === null) return null;
+  const up = Math.exp(Math.asinh(w / (2 * fit.resonator.kappa)));
+  const [low, high] = [fit.resonator.f0Hz / up, fit.resonator.f0Hz * up];
+  const first = Math.max(0, Math.min(fit.window.from, stretch?.from ?? index) - 1);
+  const last = Math.min(frequencyHz.length - 1, Math.max(fit.window.to, stretch?.to ?? index) + 1);
+  const lowEnds = edgeLies(magnitude, fit.window.from, -1);
+  const highEnds = edgeLies(magnitude, fit.window.to, 1);
+  if ((low < frequencyHz[first] && !lowEnds) || (high > frequencyHz[last] && !highEnds)) return null;
+  const ends = { lowHz: frequencyHz[fit.window.from], highHz: frequencyHz[fit.window.to] };
+  const openLow = low < ends.lowHz && lowEnds;
+  const openHigh = high > ends.highHz && highEnds;
+  return {
+    lowHz: openLow ? null : low,
+    highHz: openHigh ? null : high,
+    ends,
+    halfHz: openLow || openHigh ? null : fit.widthHalfHz(level * level),
+  };
+}
+
+/** True when the samples end next to `i`: the sweep's border or a gap. */
+function edgeLies(magnitude: Float64Array, i: number, step: 1 | -1): boolean {
+  const next = magnitude[i + step];
+  return next === undefined || Number.isNaN(next);
+}
+
+function fromSamples({ sweep, stretch, noise }: BandwidthInput, level: number): Edges | null {
+  if (!stretch) return null;
+  const { frequencyHz } = sweep;
+  const low = sampleEdge(sweep, stretch.from - 1, level, noise);
+  const high = sampleEdge(sweep, stretch.to, level, noise);
+  return {
+    lowHz: low?.hz ?? null,
+    highHz: high?.hz ?? null,
+    ends: { lowHz: frequencyHz[stretch.from], highHz: frequencyHz[stretch.to] },
+    halfHz: combine(low?.halfHz ?? null, high?.halfHz ?? null),
+  };
+}
+
+/** The edge between samples i and i+1; null where one of them is missing or a gap. */
+function sampleEdge(sweep: Sweep, i: number, level: number, noise: number) {
+  const { frequencyHz, magnitude } = sweep;
+  const [a, b] = [magnitude[i], magnitude[i + 1]];
+  if (a === undefined || b === undefined || Number.isNaN(a) || Number.isNaN(b)) return null;
+  const hz = crossingHz(sweep, i, level, noise < SMOOTH_DB);
+  const straight = crossingHz(sweep, i, level, false);
+  const stepHz = frequencyHz[i + 1] - frequencyHz[i];
+  const slope = Math.abs(b - a) / stepHz;
+  const scatter = (NORMAL_95 * level * noise * Math.LN10) / 20 / slope;
+  return { hz, halfHz: combine(scatter, noise < SMOOTH_DB ? hz - straight : stepHz / 4) };
+}
+
+/** Over this σ the cubic would follow the scatter of its outer samples. */
+const SMOOTH_DB = 0.05;

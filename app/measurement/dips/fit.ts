@@ -1,0 +1,179 @@
+import { student95 } from "../uncertainty.ts";
+import { leastSquares, type Solution } from "./least-squares.ts";
+import { type Residuals, residualsOf, whiteEnough } from "./residuals.ts";
+import {
+  DEPTH,
+  edgeAt,
+  FAR_POWER,
+  LOG_F0,
+  LOG_KAPPA,
+  lowestPower,
+  type Resonator,
+  resonatorPower,
+} from "./resonator.ts";
+import type { Window } from "./window.ts";
+
+/** A resonator that the samples of a window support, with 95 % half-widths from its covariance. */
+export interface Fit {
+  resonator: Resonator;
+  window: Window;
+  /** Lowest abs Γ², 0 or more. */
+  power: number;
+  frequencyHalfHz: number;
+  powerHalf: number;
+  /** True when the far power was fitted too: then the closed form holds at the edges and for Q. */
+  whole: boolean;
+  /** Half-width of the distance f0·w/κ between the edges at abs Γ² = `power`, Hz; null where there are none. */
+  widthHalfHz(power: number): number | null;
+}
+
+/**
+ * Fits the resonator to abs Γ² over the window, and when the shape leaves more than noise there, over its inner halves with
+ * the far power held, down to FEWEST_POINTS. Null when no window will do: the caller then takes a parabola.
+ *
+ * `frequencyHz` ascending Hz, `magnitude` abs Γ without NaN inside the window, `index` the lowest sample, `noise` the
+ * sweep's σ in dB of return loss. Whether the scatter is even in abs Γ (a receiver's) or in decibels (a detector's) is decided by the
+ * likelihood of the residuals; the bias of abs Γ² that goes with it is taken off (Rice, Bell Syst. Tech. J. 24, 1945,
+ * and the mean of a log-normal; both from memory, not seen). A million points are fitted on a selection first.
+ */
+export function fitDip(
+  frequencyHz: Float64Array,
+  magnitude: Float64Array,
+  index: number,
+  window: Window,
+  noise: number,
+): Fit | null {
+  let { from, to } = window;
+  const farPower = Math.min(1, Math.max(magnitude[from], magnitude[to]) ** 2);
+  for (let whole = true; to - from + 1 >= FEWEST_POINTS; whole = false) {
+    const fit = fitInside(frequencyHz, magnitude, index, { from, to }, noise, whole ? null : farPower);
+    if (fit) return fit;
+    from = Math.ceil((from + index) / 2);
+    to = Math.floor((to + index) / 2);
+    if (to - from + 1 < FEWEST_HELD) break;
+  }
+  return null;
+}
+
+function fitInside(
+  frequencyHz: Float64Array,
+  magnitude: Float64Array,
+  index: number,
+  window: Window,
+  noise: number,
+  heldPower: number | null,
+): Fit | null {
+  const referenceHz = frequencyHz[index];
+  const count = window.to - window.from + 1;
+  const stride = Math.ceil(count / SELECTION);
+  const some = pick(frequencyHz, magnitude, window, stride, referenceHz);
+  const start = firstGuess(frequencyHz, magnitude, index, window, heldPower);
+  const free = heldPower === null ? 4 : 3;
+  const problem = { model: resonatorPower, ...some, start, free };
+  let solution = leastSquares(problem);
+  let residuals: Residuals | null = null;
+  for (let round = 0; round < ROUNDS; round++) {
+    const last = round === ROUNDS - 1;
+    const data = last && stride > 1 ? pick(frequencyHz, magnitude, window, 1, referenceHz) : some;
+    residuals = residualsOf(data.x, data.y, solution.p, free);
+    if (!residuals) return null;
+    const y = data.y.map(residuals.unbiased);
+    solution = leastSquares({ ...problem, ...data, y, weight: residuals.weight, start: solution.p });
+    if (last) residuals = residualsOf(data.x, data.y, solution.p, free, residuals.even);
+  }
+  if (!residuals || !usable(solution, count, free)) return null;
+  if (!whiteEnough(residuals, noise, free)) return null;
+  return describe(solution, window, referenceHz, frequencyHz, count - free, free);
+}
+
+function describe(
+  { p, cost, inverse }: Solution,
+  window: Window,
+  referenceHz: number,
+  frequencyHz: Float64Array,
+  freedom: number,
+  free: number,
+): Fit | null {
+  if (!inverse) return null;
+  const f0Hz = referenceHz * Math.exp(p[LOG_F0]);
+  if (!(f0Hz >= frequencyHz[window.from] && f0Hz <= frequencyHz[window.to])) return null;
+  const resonator = { f0Hz, farPower: p[FAR_POWER], depth: p[DEPTH], kappa: Math.exp(p[LOG_KAPPA]) };
+  const scale = student95(freedom) * Math.sqrt(cost / freedom);
+  const half = (gradient: number[]) => {
+    let sum = 0;
+    for (let i = 0; i < free; i++)
+      for (let j = 0; j < free; j++) sum += gradient[i] * gradient[j] * inverse[i * free + j];
+    return scale * Math.sqrt(Math.max(0, sum));
+  };
+  const frequencyHalfHz = half([0, f0Hz, 0, 0]);
+  if (frequencyHalfHz > (frequencyHz[window.to] - frequencyHz[window.from]) / 2) return null;
+  return {
+    resonator,
+    window,
+    power: lowestPower(resonator),
+    frequencyHalfHz,
+    powerHalf: half([-1, 0, 0, 1]),
+    whole: free === 4,
+    widthHalfHz(power) {
+      const w = edgeAt(resonator, power);
+      if (w === null || w === 0) return null;
+      const width = (f0Hz * w) / resonator.kappa;
+      const over = resonator.farPower - power;
+      const perW = width / w;
+      return half([perW / (2 * w * over), width, -width, (-perW * resonator.depth) / (2 * w * over * over)]);
+    },
+  };
+}
+
+function usable({ p, converged, inverse }: Solution, count: number, free: number): boolean {
+  return converged && inverse !== null && count > free && p[DEPTH] > 0 && p[FAR_POWER] > 0;
+}
+
+interface Points {
+  x: Float64Array;
+  y: Float64Array;
+  weight: Float64Array;
+}
+
+/** Every `stride`-th sample of the window: x = ln(f/reference), y = abs Γ², even weights. */
+function pick(
+  f: Float64Array,
+  g: Float64Array,
+  { from, to }: Window,
+  stride: number,
+  referenceHz: number,
+): Points {
+  const n = Math.floor((to - from) / stride) + 1;
+  const x = new Float64Array(n);
+  const y = new Float64Array(n);
+  for (let k = 0; k < n; k++) {
+    x[k] = Math.log(f[from + k * stride] / referenceHz);
+    y[k] = g[from + k * stride] ** 2;
+  }
+  return { x, y, weight: new Float64Array(n).fill(1) };
+}
+
+function firstGuess(
+  f: Float64Array,
+  g: Float64Array,
+  index: number,
+  { from, to }: Window,
+  heldPower: number | null,
+) {
+  const lowest = g[index] ** 2;
+  const border = g[from] > g[to] ? from : to;
+  const borderPower = g[border] ** 2;
+  const farPower = heldPower ?? Math.max(1, borderPower * 1.02);
+  const depth = Math.max(farPower - lowest, 1e-9);
+  const w = Math.sqrt(Math.max(1e-3, depth / Math.max(1e-6, farPower - borderPower) - 1));
+  const reach = Math.abs(f[border] / f[index] - f[index] / f[border]) || 1e-9;
+  return Float64Array.of(depth, 0, Math.log(w / reach), farPower);
+}
+
+/** Five points leave one degree of freedom for four parameters. */
+const FEWEST_POINTS = 5;
+/** An inner window needs enough points to tell shape from scatter. */
+const FEWEST_HELD = 9;
+/** Enough for the parameters to within their last uncertainty; all points come in the last round. */
+const SELECTION = 400;
+const ROUNDS = 3;

@@ -1,0 +1,41 @@
+/** The samples around a dip that a fit may use: indices `from`..`to`, both included. */
+export interface Window {
+  from: number;
+  to: number;
+}
+
+/**
+ * From the dip outwards to about SWR 5, or the larger part of the way to the lower crest where the dip is shallower
+ * than that, or the crest towards a neighbour (the index of the next dip, or of the end of the stretch). `index` is the dip's lowest sample, `prominenceDb` its
+ * depth. Stops before gaps.
+ */
+export function fitWindow(
+  magnitude: Float64Array,
+  index: number,
+  prominenceDb: number,
+  before: number,
+  after: number,
+): Window {
+  const lowest = magnitude[index] ** 2;
+  const crest = Math.min(1, lowest * 10 ** (prominenceDb / 10) || 1);
+  const level = Math.sqrt(Math.max(WINDOW_GAMMA ** 2, lowest + CREST_SHARE * (crest - lowest)));
+  return { from: reach(magnitude, index, -1, before, level), to: reach(magnitude, index, 1, after, level) };
+}
+
+function reach(magnitude: Float64Array, index: number, step: 1 | -1, stop: number, level: number): number {
+  let i = index;
+  let crest = index;
+  while (i !== stop) {
+    const value = magnitude[i + step];
+    if (Number.isNaN(value)) break;
+    i += step;
+    if (value > magnitude[crest]) crest = i;
+    if (value > level) return i;
+  }
+  return crest;
+}
+
+/** abs Γ of SWR 5. */
+const WINDOW_GAMMA = 2 / 3;
+/** Of the power between dip and crest: a resonator's flank is still steep there. */
+const CREST_SHARE = 0.75;
