@@ -1,5 +1,5 @@
 import { BandRibbon } from "./BandRibbon";
-import { Label } from "./Label";
+import { FrequencyAxisMarks } from "./FrequencyAxisMarks";
 import { LandLayer } from "./LandLayer";
 import type { Palette } from "./palette";
 import { across } from "./place";
@@ -44,7 +44,7 @@ export function ChartBase({ scene, palette, id, lineHidden = false, leaders }: C
             />
           ))}
       </g>
-      <FrequencyAxisMarks scene={scene} palette={palette} />
+      <FrequencyAxisMarks frequency={scene.frequency} y={height} {...{ plotWidthPx, palette }} />
       <BandRibbon
         bands={scene.ribbon}
         dips={scene.dips}
@@ -72,45 +72,6 @@ function ValueLabels({ scene, palette }: { scene: Scene; palette: Palette }) {
           {limit.label}
         </text>
       )}
-    </g>
-  );
-}
-
-function FrequencyAxisMarks({ scene, palette }: { scene: Scene; palette: Palette }) {
-  const { plotHeightPx: height, plotWidthPx, frequency } = scene;
-  return (
-    <g>
-      {frequency.ticks.map((tick) => (
-        <g key={tick.hz}>
-          <line
-            x1={across(tick.fraction, plotWidthPx)}
-            x2={across(tick.fraction, plotWidthPx)}
-            y1={height}
-            y2={height + (tick.label === null ? 3 : 5)}
-            stroke={palette.soft}
-          />
-          {tick.label !== null && (
-            <Label
-              fraction={tick.fraction}
-              y={height + 17}
-              tier={tick.tier}
-              text={tick.label}
-              colour={palette.soft}
-              {...{ plotWidthPx, palette }}
-            />
-          )}
-        </g>
-      ))}
-      <text
-        x="-16"
-        y={height + 17}
-        textAnchor="end"
-        fontFamily={palette.monoFont}
-        fontSize="11.5"
-        fill={palette.soft}
-      >
-        {frequency.caption}
-      </text>
     </g>
   );
 }

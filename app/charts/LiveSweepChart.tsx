@@ -10,7 +10,9 @@ import { SweepChart } from "./SweepChart";
 import { buildSweepScene, type SceneInput } from "./scene";
 
 // Megabytes: fetched when somebody first turns to the chart, never with the page.
-const PlotlyChart = lazy(() => import("./PlotlyChart.client"));
+const PlotlyChart = lazy(() =>
+  import("./PlotlyChart.client").then(({ PlotlyChart }) => ({ default: PlotlyChart })),
+);
 
 export interface LiveSweepChartProps extends Omit<SceneInput, "plotWidthPx" | "limits"> {
   /** The sweep's own ends. */

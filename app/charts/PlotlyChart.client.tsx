@@ -27,7 +27,7 @@ export interface PlotlyChartProps {
 const PICK_PX = 14;
 
 /** The line of a sweep with zoom, pan, read-out and picking, laid over the drawing's plot. */
-export default function PlotlyChart(props: PlotlyChartProps) {
+export function PlotlyChart(props: PlotlyChartProps) {
   const { scene, points, whole, drag, onDrag, onRange, onPick, onReady } = props;
   const { view, plotHeightPx, yOfMagnitude } = scene;
   const palette = usePageColours();
@@ -53,7 +53,8 @@ export default function PlotlyChart(props: PlotlyChartProps) {
       onInitialized={() => onReady(true)}
       onPurge={() => onReady(false)}
       className="plotly-layer"
-      onRelayouting={(event) => withRange(event, view.scale, onDrag)}
+      // A box being drawn changes nothing until it is let go.
+      onRelayouting={(event) => drag === "pan" && withRange(event, view.scale, onDrag)}
       onRelayout={(event) => withRange(event, view.scale, onRange)}
       onDoubleClick={() => onRange(whole)}
       onClick={(event) => {
