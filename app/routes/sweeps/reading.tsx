@@ -4,6 +4,8 @@ import { Breadcrumbs } from "~/components/ui/Breadcrumbs";
 import { LinkButton } from "~/components/ui/Button";
 import { refused } from "~/errors";
 import { DEFAULT_SETTINGS } from "~/measurement/sweep";
+import { answer } from "~/readers/read";
+import type { Given, Reading } from "~/readers/reading";
 import { redirectWithMessage } from "~/services/flash.server";
 import { tryReading } from "~/services/reading-preview.server";
 import { getObject } from "~/services/storage.server";
@@ -13,7 +15,7 @@ import { ReadingForm } from "./components/ReadingForm";
 import { ReadingRows } from "./components/ReadingRows";
 import { TriedView } from "./components/TriedView";
 import { useTriedReading } from "./components/use-tried-reading";
-import { givenFromForm } from "./reading.schema";
+import { givenFromForm, type ReadingFormErrors } from "./reading.schema";
 import { requireSweep } from "./require-sweep.server";
 
 export const meta: Route.MetaFunction = ({ data }) => [
@@ -51,8 +53,7 @@ export async function action(args: Route.ActionArgs) {
   const form = await args.request.formData();
   const current = found.reading?.reading;
   if (!current) return data({ errors: { form: NOTHING_TO_CHOOSE } }, 400);
-  const again = form.get("intent") === "afresh";
-  const result = again ? { given: {} } : givenFromForm(form, found.reading?.given ?? {}, current);
+  const result = givenOf(form, found.reading?.given ?? {}, current);
   if ("errors" in result) return data({ errors: result.errors }, 400);
   const settings = found.analysis?.settings ?? DEFAULT_SETTINGS;
   const problem = await readAnew(found, result.given, settings, access.person.id);
@@ -68,12 +69,22 @@ export async function action(args: Route.ActionArgs) {
   );
 }
 
+/** What the pressed button asks for: an answer to one question, nothing fixed at all, or the form as it stands. */
+function givenOf(form: FormData, before: Given, current: Reading) {
+  const answered = form.get("answer");
+  if (typeof answered === "string") {
+    const [question, ...value] = answered.split("=");
+    return { given: answer(current, question, value.join("=")) };
+  }
+  return form.get("intent") === "afresh" ? { given: {} } : givenFromForm(form, before, current);
+}
+
 export default function ReadingPage({ loaderData, actionData }: Route.ComponentProps) {
   const { projectId, sweepId, title, stored, mayEdit, unread } = loaderData;
   const base = `/projects/${projectId}/sweeps/${sweepId}`;
   const { tried, errors, busy, onChange } = useTriedReading(`${base}/reading/try`);
   const shown = tried ?? stored;
-  const faults = { ...errors, ...actionData?.errors };
+  const faults: ReadingFormErrors = { ...errors, ...actionData?.errors };
   return (
     <div className="grid gap-6">
       <div className="grid gap-1">

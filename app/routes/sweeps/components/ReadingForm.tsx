@@ -23,7 +23,7 @@ export function ReadingForm({ reading, problem, errors, mayEdit, onChange }: Rea
       aria-label="How the file is read"
       onChange={(event) => onChange(event.currentTarget)}
     >
-      <Questions reading={reading} />
+      <Questions reading={reading} mayEdit={mayEdit} />
       <fieldset disabled={!mayEdit} className="grid gap-4 min-w-0">
         {reading.format === "text" && reading.spec.text && (
           <TextFields
@@ -61,28 +61,32 @@ export function ReadingForm({ reading, problem, errors, mayEdit, onChange }: Rea
   );
 }
 
-function Questions({ reading }: { reading: Reading }) {
-  if (reading.questions.length === 0) return null;
-  return (
-    <div className="grid gap-2">
-      <h3>Left open by the file</h3>
-      <ul className="list-disc pl-5 text-small">
-        {reading.questions.map((question) => (
-          <li key={question.id}>
-            {question.text}{" "}
-            {question.choices.length > 0 && (
-              <span className="soft">
-                ({question.choices.map((choice) => choice.label).join(", ")}
-                {question.proposed &&
-                  `; taken: ${question.choices.find((choice) => choice.value === question.proposed)?.label ?? question.proposed}`}
-                )
-              </span>
-            )}
-          </li>
-        ))}
-      </ul>
-    </div>
-  );
+/** What the file leaves open: each choice is one press, and the file is read anew with it. */
+function Questions({ reading, mayEdit }: { reading: Reading; mayEdit: boolean }) {
+  return reading.questions.map((question) => (
+    <fieldset key={question.id} disabled={!mayEdit} className="field-group min-w-0">
+      <legend>{question.text}</legend>
+      <div className="flex flex-wrap gap-2 pt-1">
+        {question.choices.map((choice) => {
+          const taken = choice.value === question.proposed;
+          return (
+            <Button
+              key={choice.value}
+              variant="quiet"
+              size="small"
+              icon={taken ? "check" : undefined}
+              name="answer"
+              value={`${question.id}=${choice.value}`}
+              aria-pressed={taken}
+              formNoValidate
+            >
+              {choice.label}
+            </Button>
+          );
+        })}
+      </div>
+    </fieldset>
+  ));
 }
 
 interface TextFieldsProps {

@@ -1,9 +1,8 @@
 import { useMemo } from "react";
 import { useNavigate } from "react-router";
 import type { ChartDip } from "~/charts/chart-types";
-import { dipsWithCards, HollowCards } from "~/charts/HollowCards";
-import { SweepChart } from "~/charts/SweepChart";
-import { buildSweepScene } from "~/charts/scene";
+import { LiveSweepChart } from "~/charts/LiveSweepChart";
+import type { FrequencyRange } from "~/charts/ranges";
 import type { SweepPageData } from "../sweep";
 import { searchWith } from "../sweeps.schema";
 
@@ -12,27 +11,32 @@ export function SweepView({ data }: { data: SweepPageData }) {
   const { view, points, range, bands, designBands, analysis, sweep } = data;
   const navigate = useNavigate();
   const dips = useMemo(() => data.dips.map(chartDip), [data.dips]);
-  const swrLimit = view.swrLimit ?? analysis.settings.swrLimit;
-  const scene = useMemo(
-    () =>
-      buildSweepScene({
-        points,
-        dips,
-        bands,
-        designBands,
-        view: { quantity: view.quantity, scale: view.scale, ...range },
-        swrLimit,
-      }),
-    [points, dips, bands, designBands, view.quantity, view.scale, range, swrLimit],
-  );
-  const dipHref = (dip: ChartDip) => searchWith(view, { dip: dip.id });
-  const onPick = (id: string) => navigate(searchWith(view, { dip: id }), { preventScrollReset: true });
-  const links = { dipHref, chosenDipId: view.dip, onPick };
+  const { quantity, scale } = view;
+  const chartView = useMemo(() => ({ quantity, scale, ...range }), [quantity, scale, range]);
+  const whole = { fromHz: sweep.startHz ?? range.fromHz, toHz: sweep.stopHz ?? range.toHz };
+  const searchFor = ({ fromHz, toHz }: FrequencyRange) =>
+    searchWith(view, {
+      fromHz: fromHz > whole.fromHz ? fromHz : null,
+      toHz: toHz < whole.toHz ? toHz : null,
+    }) || "?";
   return (
-    <div className="grid min-w-0">
-      <SweepChart scene={scene} label={`Chart of ${sweep.title}`} leaders={dipsWithCards(scene)} {...links} />
-      <HollowCards scene={scene} designBands={designBands} {...links} />
-    </div>
+    <LiveSweepChart
+      points={points}
+      dips={dips}
+      bands={bands}
+      designBands={designBands}
+      swrLimit={view.swrLimit ?? analysis.settings.swrLimit}
+      view={chartView}
+      whole={whole}
+      label={`Chart of ${sweep.title}`}
+      dipHref={(dip) => (dip.id.startsWith("tried-") ? "#dips" : searchWith(view, { dip: dip.id }))}
+      chosenDipId={view.dip}
+      onPick={(id) => {
+        if (!id.startsWith("tried-")) navigate(searchWith(view, { dip: id }), { preventScrollReset: true });
+      }}
+      rangeHref={searchFor}
+      onRange={(to) => navigate(searchFor(to), { replace: true, preventScrollReset: true })}
+    />
   );
 }
 
