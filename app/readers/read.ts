@@ -32,8 +32,9 @@ export function read(file: SweepFile, given: Given = {}): ReadResult {
       fail("not-a-format", `This is ${what}: expected text, Touchstone or a picture. ${advice}`, 1, 1);
     if (kind === "picture")
       fail("picture", `This is ${what}: pictures are read by the screenshot reader.`, 1, 1);
-    if (kind === "touchstone" && !given.text) return readTouchstone(file, given.touchstone);
-    return readText(file.bytes, given.text);
+    if (kind === "touchstone" && given.text?.valueColumn === undefined)
+      return readTouchstone(file, given.touchstone);
+    return readText(file.bytes, given.text, given.quantity);
   } catch (error) {
     if (error instanceof ReadFailure) return { ok: false, problem: error.problem };
     throw error;
@@ -62,7 +63,8 @@ export function answer(reading: Reading, questionId: string, value: string): Giv
       text: { ...(questionId === "trace" ? other : kept), ...textAnswer(questionId, value) },
     };
   }
-  if (spec.touchstone && questionId === "port") return { ...spec, touchstone: { port: Number(value) } };
+  if (spec.touchstone && questionId === "port")
+    return { ...spec, touchstone: { ...spec.touchstone, port: Number(value) } };
   return spec;
 }
 

@@ -42,6 +42,8 @@ export interface TextSpec {
 export interface TouchstoneSpec {
   /** Which reflection of a file with several ports: 1 for S11, 2 for S22, … */
   port: number;
+  /** Ω, in place of the reference that the file states; null to keep the file's. */
+  referenceOhm: number | null;
 }
 
 /** The choices of a picture's reading; filled by `readers/screenshot`. */
@@ -60,6 +62,8 @@ export interface ScreenshotSpec {
 
 /** What a person or a script has fixed; all else is found in the file. */
 export interface Given {
+  /** Of a text file, when no finer `text.quantity` is given: the best reading of this quantity. */
+  quantity?: Quantity;
   text?: Partial<TextSpec>;
   touchstone?: Partial<TouchstoneSpec>;
   screenshot?: ScreenshotSpec;

@@ -1,7 +1,22 @@
+import type { Quantity } from "../../measurement/sweep.ts";
 import { fail } from "../problem.ts";
 import type { TextQuantity, TextSpec } from "../reading.ts";
 import type { Candidate } from "./candidates.ts";
 import type { Column } from "./columns.ts";
+
+/** What a text file's quantity is called outside the reader. */
+export const COARSE: Record<TextQuantity, Quantity> = {
+  "s11-db": "s11-db",
+  "return-loss": "return-loss",
+  swr: "swr",
+  level: "level",
+  magnitude: "gamma",
+  "magnitude-angle": "gamma",
+  "db-angle": "gamma",
+  "real-imaginary": "gamma",
+  "resistance-reactance": "impedance",
+  "impedance-angle": "impedance",
+};
 
 /** Quantities that take two columns. */
 export const TWO_COLUMNS: ReadonlySet<TextQuantity> = new Set([
@@ -20,8 +35,10 @@ export function choose(
   candidates: Candidate[],
   columns: Column[],
   frequency: number,
-  given: Partial<TextSpec>,
+  asked: Partial<TextSpec>,
+  wanted?: Quantity,
 ): Candidate {
+  const given = { ...asked };
   for (const index of [given.valueColumn, given.secondColumn, given.frequencyColumn])
     if (typeof index === "number" && !(index >= 0 && index < columns.length))
       fail("no-such-column", `The table has ${columns.length} columns; column ${index + 1} was asked for.`);
@@ -29,14 +46,23 @@ export function choose(
     (c) =>
       (given.valueColumn === undefined || c.valueColumn === given.valueColumn) &&
       (given.secondColumn === undefined || c.secondColumn === given.secondColumn) &&
-      (given.quantity === undefined || c.quantity === given.quantity),
+      (given.quantity === undefined || c.quantity === given.quantity) &&
+      (given.quantity !== undefined || wanted === undefined || COARSE[c.quantity] === wanted),
   );
+  if (agreeing.length === 0 && wanted !== undefined) given.quantity ??= plainest(wanted, columns.length);
   const chosen = agreeing[0] ?? built(candidates, columns, frequency, given);
   return {
     ...chosen,
     frequencyColumn: given.frequencyColumn ?? chosen.frequencyColumn,
     angleUnit: given.angleUnit ?? chosen.angleUnit,
   };
+}
+
+/** The reading of a quantity that is tried where no column offers it. */
+function plainest(wanted: Quantity, columns: number): TextQuantity {
+  if (wanted === "impedance") return "resistance-reactance";
+  if (wanted === "gamma") return columns > 2 ? "real-imaginary" : "magnitude";
+  return wanted;
 }
 
 function built(

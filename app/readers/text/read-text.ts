@@ -3,11 +3,11 @@ import { assemble } from "../assemble.ts";
 import { plainText } from "../decode.ts";
 import { indexLines, type Lines } from "../lines.ts";
 import { fail } from "../problem.ts";
-import type { Reading, ReadResult, TextQuantity, TextSpec } from "../reading.ts";
+import type { Reading, ReadResult, TextSpec } from "../reading.ts";
 import { UNIT_HZ } from "../units.ts";
 import { counted, pointWarnings } from "../warnings.ts";
 import { splitCells } from "./cells.ts";
-import { choose } from "./choose.ts";
+import { COARSE, choose } from "./choose.ts";
 import { frequencyUnit } from "./frequency.ts";
 import { textQuestions } from "./questions.ts";
 import { referenceOhmIn } from "./reference.ts";
@@ -19,28 +19,16 @@ import { findTable, type Table } from "./table.ts";
 
 const PREVIEW_ROWS = 12;
 const DEFAULT_OHM = 50;
-const QUANTITY: Record<TextQuantity, Quantity> = {
-  "s11-db": "s11-db",
-  "return-loss": "return-loss",
-  swr: "swr",
-  level: "level",
-  magnitude: "gamma",
-  "magnitude-angle": "gamma",
-  "db-angle": "gamma",
-  "real-imaginary": "gamma",
-  "resistance-reactance": "impedance",
-  "impedance-angle": "impedance",
-};
 
 /**
  * Reads delimited text of any dialect into a sweep: Hz ascending, abs Γ or Γ, gaps NaN. What is `given` overrules what
  * is found, field by field; what had to be assumed comes back as sentences. Throws `ReadFailure` (located).
  */
-export function readText(bytes: Uint8Array, given: Partial<TextSpec> = {}): ReadResult {
+export function readText(bytes: Uint8Array, given: Partial<TextSpec> = {}, wanted?: Quantity): ReadResult {
   const plain = plainText(bytes, given.encoding);
   const lines = indexLines(plain);
   const table = findTable(lines, given);
-  const chosen = choose(table.candidates, table.columns, table.frequencies[0].index, given);
+  const chosen = choose(table.candidates, table.columns, table.frequencies[0].index, given, wanted);
   const column = table.columns[chosen.frequencyColumn];
   const unit = given.frequencyUnit
     ? { unit: given.frequencyUnit, assumed: null, confidence: 1 }
@@ -74,7 +62,7 @@ export function readText(bytes: Uint8Array, given: Partial<TextSpec> = {}): Read
     assumed.push(`The file names no reference impedance: ${DEFAULT_OHM} Ω.`);
   const reading: Reading = {
     format: "text",
-    quantity: QUANTITY[spec.quantity],
+    quantity: COARSE[spec.quantity],
     frequencyUnit: spec.frequencyUnit,
     assumed,
     confidence: round(chosen.confidence * unit.confidence),

@@ -33,7 +33,12 @@ export function readTouchstone(
       "no-such-port",
       `The file has ${counted(ports, "port")}; the reflection at port ${port} was asked for.`,
     );
-  const references = referencesOf(header, ports);
+  const references = given.referenceOhm ? Array(ports).fill(given.referenceOhm) : referencesOf(header, ports);
+  if (!references.every((ohm) => ohm > 0 && ohm < Infinity))
+    fail(
+      "bad-given",
+      `A reference impedance of ${given.referenceOhm} Ω was given: expected a positive number.`,
+    );
   const points = readPoints(lines, header, ports, port - 1, references);
   if (points.end.sets === 0)
     fail(
@@ -56,7 +61,7 @@ export function readTouchstone(
     ],
     confidence: 1,
     questions: ports > 1 ? [portQuestion(ports, port)] : [],
-    spec: { touchstone: { port } },
+    spec: { touchstone: { port, referenceOhm: given.referenceOhm ?? null } },
     shape: `touchstone-${ports}-${options.parameter}-${options.format}-${options.unit}`.toLowerCase(),
     preview: preview(lines, header, options),
   };

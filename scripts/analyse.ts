@@ -1,0 +1,81 @@
+import { createHash } from "node:crypto";
+import { readFile, stat } from "node:fs/promises";
+import { basename } from "node:path";
+import { analyse } from "../app/measurement/analyse.ts";
+import type { Warning } from "../app/measurement/sweep.ts";
+import { readAny } from "../app/readers/read.ts";
+import { MAX_FILE_BYTES } from "../app/readers/reading.ts";
+import { type Options, parseOptions, USAGE, UsageError } from "./analyse/options.ts";
+import { type AnalysedFile, type FailedFile, jsonRow } from "./analyse/rows.ts";
+import { table } from "./analyse/table.ts";
+
+/** `npm run analyse -- FILE… [options]`: reads and analyses files with no server or database. */
+process.exitCode = await main(process.argv.slice(2));
+
+/** Exit code: 0 all read, 1 at least one could not be, 2 usage. */
+async function main(args: string[]): Promise<number> {
+  if (args.includes("--help")) {
+    process.stdout.write(`${USAGE}\n`);
+    return 0;
+  }
+  let options: Options;
+  try {
+    options = parseOptions(args);
+  } catch (error) {
+    if (!(error instanceof UsageError)) throw error;
+    process.stderr.write(`${error.message}\n${USAGE}\n`);
+    return 2;
+  }
+  let code = 0;
+  for (const path of options.files) {
+    const answer = await analyseFile(path, options);
+    if ("error" in answer) code = 1;
+    process.stdout.write(`${options.json ? json(answer, options) : plain(answer)}\n`);
+  }
+  return code;
+}
+
+async function analyseFile(path: string, { given, settings }: Options): Promise<AnalysedFile | FailedFile> {
+  const file = basename(path);
+  const bytes = await bytesOf(path);
+  if (typeof bytes === "string") return { file, error: { code: "no-file", message: bytes } };
+  if (bytes === null)
+    return {
+      file,
+      error: { code: "too-large", message: `The file is larger than ${MAX_FILE_BYTES / 2 ** 20} MB.` },
+    };
+  const sha256 = createHash("sha256").update(bytes).digest("hex");
+  const result = await readAny({ name: file, bytes }, given);
+  if (!result.ok) return { file, sha256, error: result.problem };
+  const analysis = analyse(result.sweep, settings);
+  const warnings = distinct([...result.warnings, ...analysis.warnings]);
+  return { file, sha256, reading: result.reading, sweep: result.sweep, analysis, warnings };
+}
+
+/** The file's bytes, null where there are too many, or a sentence where it can't be opened. */
+async function bytesOf(path: string): Promise<Uint8Array | string | null> {
+  try {
+    const { size } = await stat(path);
+    return size > MAX_FILE_BYTES ? null : await readFile(path);
+  } catch (error) {
+    return `${path} could not be opened: ${(error as NodeJS.ErrnoException).code ?? (error as Error).message}.`;
+  }
+}
+
+function distinct(warnings: Warning[]): Warning[] {
+  return warnings.filter(
+    (w, i) => warnings.findIndex((other) => other.code === w.code && other.message === w.message) === i,
+  );
+}
+
+function json(answer: AnalysedFile | FailedFile, { points }: Options): string {
+  return JSON.stringify("error" in answer ? answer : jsonRow(answer, points));
+}
+
+function plain(answer: AnalysedFile | FailedFile): string {
+  if (!("error" in answer)) return table(answer);
+  const { message, line, column } = answer.error;
+  const where =
+    line === undefined ? "" : ` (line ${line}${column === undefined ? "" : `, column ${column}`})`;
+  return `${answer.file}\n  not read: ${message}${where}`;
+}
