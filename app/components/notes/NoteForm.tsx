@@ -1,0 +1,121 @@
+import { getFormProps, type SubmissionResult, useForm } from "@conform-to/react";
+import { parseWithZod } from "@conform-to/zod/v4";
+import { useEffect, useId, useRef } from "react";
+import { useFetcher } from "react-router";
+import { Button } from "~/components/ui/Button";
+import { TextareaField } from "~/components/ui/Field";
+import { useHydrated } from "~/components/ui/hydrated";
+import { useToast } from "~/components/ui/Toast";
+import { MAX_NOTE_CHARACTERS } from "~/services/note-limits";
+import { type NoteTarget, NoteTargetFields } from "./BareNoteForm.tsx";
+import { useClientKey, useDraft } from "./draft.ts";
+import { editNoteSchema, writeNoteSchema } from "./notes.schema.ts";
+import { Preview } from "./Preview.tsx";
+import { notesPath, placeKey, type ThreadWhere } from "./place.ts";
+
+export interface NoteFormProps {
+  where: ThreadWhere;
+  target?: NoteTarget;
+  label: string;
+  /** Called when the note is stored. */
+  onDone?: () => void;
+  /** Offers to leave without storing. */
+  onCancel?: () => void;
+  autoFocus?: boolean;
+}
+
+interface Answer {
+  publicId?: string;
+  done?: "edit";
+  lastResult?: SubmissionResult<string[]>;
+}
+
+/** Writes, answers or changes a note. Begun text stays on the device until it is stored. */
+export function NoteForm({ where, target = {}, label, onDone, onCancel, autoFocus }: NoteFormProps) {
+  const fetcher = useFetcher<Answer>();
+  const { show } = useToast();
+  const { edited } = target;
+  const draft = useDraft(`${placeKey(where)}:${edited?.publicId ?? target.parent ?? ""}`, edited?.body ?? "");
+  const [clientKey, renewKey] = useClientKey();
+  const schema = edited ? editNoteSchema : writeNoteSchema;
+  const [form, fields] = useForm<{ body: string }>({
+    id: useId(),
+    lastResult: fetcher.state === "idle" ? fetcher.data?.lastResult : null,
+    shouldRevalidate: "onInput",
+    onValidate: ({ formData }) => parseWithZod(formData, { schema }) as never,
+  });
+  const answered = useRef<unknown>(null);
+  useEffect(() => {
+    const { data } = fetcher;
+    if (!data || answered.current === data) return;
+    answered.current = data;
+    if (!data.publicId && !data.done) return;
+    draft.forget("");
+    renewKey();
+    show({ id: `note-${Date.now()}`, text: data.done ? "The note is changed." : "The note is stored." });
+    onDone?.();
+  });
+  const busy = fetcher.state !== "idle";
+  return (
+    <fetcher.Form
+      method="post"
+      action={notesPath(where, edited?.publicId)}
+      {...getFormProps(form)}
+      className="grid gap-2"
+    >
+      <NoteTargetFields where={where} target={target} />
+      {!edited && <input type="hidden" name="clientKey" value={clientKey} />}
+      <TextareaField
+        id={fields.body.id}
+        name={fields.body.name}
+        label={label}
+        required
+        rows={autoFocus ? 3 : 4}
+        autoFocus={autoFocus}
+        value={draft.text}
+        onChange={(event) => draft.change(event.currentTarget.value)}
+        onKeyDown={(event) => {
+          if (event.key === "Enter" && (event.ctrlKey || event.metaKey))
+            event.currentTarget.form?.requestSubmit();
+        }}
+        errors={fields.body.errors ?? form.errors}
+        hint={<Hint restored={draft.restored} left={MAX_NOTE_CHARACTERS - draft.text.length} />}
+      />
+      <Preview text={draft.text} />
+      <div className="flex flex-wrap items-center gap-2">
+        <Button size="small" busy={busy}>
+          {edited ? "Keep the change" : "Store the note"}
+        </Button>
+        {onCancel && (
+          <Button
+            type="button"
+            variant="quiet"
+            size="small"
+            onClick={() => {
+              draft.forget(edited?.body ?? "");
+              onCancel();
+            }}
+          >
+            Leave it
+          </Button>
+        )}
+      </div>
+    </fetcher.Form>
+  );
+}
+
+/** Says how to write while there is room, and how much is left where it gets tight. */
+function Hint({ restored, left }: { restored: boolean; left: number }) {
+  const hydrated = useHydrated();
+  if (left < NEAR_LIMIT) {
+    return (
+      <span role="status" className={left < 0 ? "text-alarm" : undefined}>
+        {left < 0 ? `${-left} characters too many` : `${left} characters left`}
+      </span>
+    );
+  }
+  if (restored) return "You began this earlier on this device; it was not stored yet.";
+  return hydrated ? "Markdown. Kept on this device until it is stored." : "Markdown.";
+}
+
+const NEAR_LIMIT = 1000;

@@ -1,0 +1,131 @@
+import type { ProjectAccess } from "~/auth/require.server";
+import * as dips from "~/db/dips.server";
+import * as people from "~/db/people.server";
+import * as projects from "~/db/projects.server";
+import * as sweeps from "~/db/sweeps.server";
+import { notFound } from "~/errors";
+import { bandAt, bandSources, bandsOverlapping, type ItuRegion } from "~/measurement/bands";
+import { decimate } from "~/measurement/decimate";
+import type { Dip, Sweep } from "~/measurement/sweep";
+import { listThread } from "~/services/notes.server";
+import { pickPoints } from "~/services/points.server";
+import { storedDips } from "~/services/shown-dips.server";
+import { loadPoints } from "~/services/sweep-points.server";
+
+/** Everything about one dip of this project, or 404. */
+export async function loadDipPage(access: ProjectAccess, publicId: string) {
+  const { project, person } = access;
+  const found = await dips.findByPublicId(publicId);
+  if (!found || found.dip.projectId !== project.id) throw notFound("dip");
+  const { dip } = found;
+  const [from, known, designBands, dismissed, thread] = await Promise.all([
+    sweeps.findByPublicId(found.sweep.publicId),
+    dips.findAllBySweep(dip.sweepId),
+    projects.findDesignBands(project.id),
+    person ? people.findDismissals(person.id) : ([] as string[]),
+    listThread({ projectId: project.id, sweepId: dip.sweepId, dipId: dip.id }, access),
+  ]);
+  if (!from) throw notFound("sweep");
+  const points = from.reading && !from.sweep.problem ? await loadPoints(from.reading.id) : null;
+  const range = closeUpRange(dip.numbers, points);
+  const region = (project.ituRegion as ItuRegion | null) ?? null;
+  return {
+    dip: {
+      publicId: dip.publicId,
+      present: dip.present,
+      numbers: dip.numbers,
+      verdict: dip.verdict,
+      verdictText: dip.verdictText,
+      verdictBy: found.verdictBy,
+      verdictAt: dip.verdictAt,
+    },
+    sweep: { publicId: from.sweep.publicId, title: from.sweep.title, takenAt: from.sweep.takenAt },
+    provenance: provenanceOf(from),
+    closeUp: { range, points: closeUpPoints(points, range), stepHz: stepAround(dip.numbers, points) },
+    shown: storedDips(known, designBands),
+    neighbours: neighboursOf(dip, known),
+    designBands: designBands.map(({ name, lowHz, highHz, swrLimit }) => ({ name, lowHz, highHz, swrLimit })),
+    bands: bandsOverlapping(region, range.fromHz, range.toHz),
+    allocation: bandAt(region, dip.frequencyHz),
+    region,
+    bandSources: bandSources(region),
+    dismissed,
+    thread,
+  };
+}
+
+function provenanceOf({ file, reading, analysis, sweep, by }: sweeps.FoundSweep) {
+  return {
+    fileName: file.name,
+    sha256: file.sha256,
+    by,
+    format: reading?.reading?.format ?? null,
+    quantity: reading?.reading?.quantity ?? null,
+    readingNumber: reading?.number ?? null,
+    assumed: reading?.reading?.assumed ?? [],
+    analysisNumber: analysis?.number ?? null,
+    analysisVersion: analysis?.version ?? null,
+    analysedAt: analysis?.createdAt ?? null,
+    settings: analysis?.settings ?? null,
+    noiseDb: analysis?.noiseDb ?? null,
+    pointCount: sweep.pointCount,
+    startHz: sweep.startHz,
+    stopHz: sweep.stopHz,
+    referenceOhm: sweep.referenceOhm,
+    complex: sweep.complex ?? false,
+  };
+}
+
+/** The dips left and right of this one in the same sweep, by frequency. */
+function neighboursOf(dip: dips.DipRow, known: dips.ListedDip[]) {
+  const others = known.map((listed) => listed.dip).filter((other) => other.present && other.id !== dip.id);
+  const below = others.filter((other) => other.frequencyHz < dip.frequencyHz).at(-1);
+  const above = others.find((other) => other.frequencyHz >= dip.frequencyHz);
+  const brief = (other: dips.DipRow | undefined) =>
+    other ? { publicId: other.publicId, frequencyHz: other.frequencyHz } : null;
+  return { previous: brief(below), next: brief(above) };
+}
+
+/** Some widths of the dip to each side, as far as the sweep goes. */
+function closeUpRange({ frequencyHz, bandwidth }: Dip, points: Sweep | null) {
+  const reachHz = Math.max(
+    (bandwidth?.widthHz ?? 0) * CLOSE_UP_WIDTHS,
+    frequencyHz * CLOSE_UP_SHARE,
+    stepOf(points) * CLOSE_UP_STEPS,
+  );
+  const hz = points?.frequencyHz;
+  const first = hz?.length ? hz[0] : frequencyHz - reachHz;
+  const last = hz?.length ? hz[hz.length - 1] : frequencyHz + reachHz;
+  return {
+    fromHz: Math.max(first, frequencyHz - reachHz),
+    toHz: Math.min(last, frequencyHz + reachHz),
+  };
+}
+
+/** Rounded to what a drawing can show; NaN is a gap. */
+function closeUpPoints(points: Sweep | null, range: { fromHz: number; toHz: number }) {
+  if (!points || !(range.fromHz < range.toHz)) return { frequencyHz: [], magnitude: [] };
+  const near = pickPoints(points, decimate(points, CLOSE_UP_POINTS, range));
+  return {
+    frequencyHz: Array.from(near.frequencyHz, (hz) => Number(hz.toPrecision(9))),
+    magnitude: Array.from(near.magnitude, (value) => Number(value.toPrecision(5))),
+  };
+}
+
+/** The frequency step at the dip; null where there is none. */
+function stepAround({ sampleIndex: i }: Dip, points: Sweep | null): number | null {
+  const hz = points?.frequencyHz;
+  if (!hz || hz.length < 2 || i >= hz.length) return null;
+  return i > 0 ? hz[i] - hz[i - 1] : hz[1] - hz[0];
+}
+
+function stepOf(points: Sweep | null): number {
+  const n = points?.frequencyHz.length ?? 0;
+  return points && n > 1 ? (points.frequencyHz[n - 1] - points.frequencyHz[0]) / (n - 1) : 0;
+}
+
+const CLOSE_UP_WIDTHS = 2.5;
+/** For a dip without a bandwidth: a twentieth of its frequency to each side. */
+const CLOSE_UP_SHARE = 0.05;
+const CLOSE_UP_STEPS = 12;
+const CLOSE_UP_POINTS = 800;

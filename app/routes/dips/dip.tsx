@@ -1,0 +1,132 @@
+import { Link } from "react-router";
+import { requireProject } from "~/auth/require.server";
+import { Thread } from "~/components/notes/Thread";
+import { VerdictForm } from "~/components/notes/VerdictForm";
+import { Breadcrumbs } from "~/components/ui/Breadcrumbs";
+import { Caution } from "~/components/ui/Caution";
+import { DateTime } from "~/components/ui/DateTime";
+import { VerdictTag } from "~/components/ui/Tag";
+import { formatFrequency } from "~/measurement/units";
+import type { Route } from "./+types/dip";
+import { CloseUp } from "./components/CloseUp.tsx";
+import { DipNumbers } from "./components/DipNumbers.tsx";
+import { Provenance } from "./components/Provenance.tsx";
+import { Whereabouts } from "./components/Whereabouts.tsx";
+import { loadDipPage } from "./dip-page.server.ts";
+
+export async function loader(args: Route.LoaderArgs) {
+  const access = await requireProject(args, "project.read");
+  return {
+    projectId: access.project.publicId,
+    mayWrite: access.may("note.write"),
+    mayVerdict: { propose: access.may("verdict.propose"), settle: access.may("verdict.settle") },
+    signedIn: access.person !== null,
+    ...(await loadDipPage(access, args.params.dip)),
+  };
+}
+
+export const meta: Route.MetaFunction = ({ data }) => [
+  { title: data ? `Dip at ${frequencyOf(data)}, ${data.sweep.title} · Swale` : "Dip · Swale" },
+];
+
+export default function DipPage({ loaderData }: Route.ComponentProps) {
+  const { projectId, dip, sweep, designBands, dismissed, thread } = loaderData;
+  const sweepPath = `/projects/${projectId}/sweeps/${sweep.publicId}`;
+  const outside = designBands.length > 0 && !designBands.some((band) => holds(band, dip.numbers.frequencyHz));
+  return (
+    <article className="grid gap-6">
+      <header className="grid gap-2">
+        <Breadcrumbs items={[{ label: sweep.title, to: `${sweepPath}?dip=${dip.publicId}` }]} />
+        <div className="flex flex-wrap items-center gap-x-4 gap-y-2">
+          <h1>
+            Dip at <span className="font-mono tracking-tight">{frequencyOf(loaderData)}</span>
+          </h1>
+          <VerdictTag verdict={dip.verdict} />
+        </div>
+        <p className="soft">
+          in <Link to={sweepPath}>{sweep.title}</Link>,{" "}
+          {sweep.takenAt ? (
+            <>
+              taken <DateTime at={sweep.takenAt} />
+            </>
+          ) : (
+            "date not said"
+          )}
+        </p>
+        <Neighbours data={loaderData} />
+      </header>
+      {!dip.present && (
+        <p className="panel border-l-3 border-l-clay">
+          The sweep's current analysis does not find this dip any more: its reading or its settings were
+          changed. The numbers below are the last ones it had; the thread and the verdict are kept.
+        </p>
+      )}
+      {outside && !dismissed.includes("outside-bands") && (
+        <Caution id="outside-bands" dismissible={loaderData.signedIn}>
+          This dip lies outside the design bands: a finding, not a permission. Transmit only where your
+          licence and local rules allow.
+        </Caution>
+      )}
+      <div className="grid gap-8 lg:grid-cols-[minmax(0,3fr)_minmax(20rem,2fr)]">
+        <div className="grid gap-8 content-start min-w-0">
+          <CloseUp data={loaderData} />
+          <DipNumbers data={loaderData} />
+          <Whereabouts data={loaderData} />
+          <Provenance data={loaderData} />
+        </div>
+        <div className="grid gap-8 content-start min-w-0">
+          <section aria-labelledby="verdict" className="grid gap-3">
+            <h2 id="verdict">Verdict</h2>
+            <VerdictForm
+              projectId={projectId}
+              dipId={dip.publicId}
+              verdict={dip.verdict}
+              verdictText={dip.verdictText}
+              verdictBy={dip.verdictBy}
+              may={loaderData.mayVerdict}
+            />
+          </section>
+          <section aria-labelledby="thread" className="grid gap-4">
+            <h2 id="thread">What is said about it</h2>
+            <Thread
+              projectId={projectId}
+              place={{ dip: dip.publicId }}
+              thread={thread}
+              mayWrite={loaderData.mayWrite}
+            />
+          </section>
+        </div>
+      </div>
+    </article>
+  );
+}
+
+export type DipPageData = Route.ComponentProps["loaderData"];
+
+function Neighbours({ data: { neighbours, projectId } }: { data: DipPageData }) {
+  const { previous, next } = neighbours;
+  if (!previous && !next) return <p className="soft text-small">The only dip found in this sweep.</p>;
+  const path = (publicId: string) => `/projects/${projectId}/dips/${publicId}`;
+  return (
+    <nav aria-label="Dips of this sweep" className="flex flex-wrap gap-x-6 gap-y-1 text-small no-print">
+      {previous && (
+        <Link to={path(previous.publicId)} rel="prev">
+          Lower: <span className="font-mono">{formatFrequency(previous.frequencyHz)}</span>
+        </Link>
+      )}
+      {next && (
+        <Link to={path(next.publicId)} rel="next">
+          Higher: <span className="font-mono">{formatFrequency(next.frequencyHz)}</span>
+        </Link>
+      )}
+    </nav>
+  );
+}
+
+function frequencyOf({ dip: { numbers } }: Pick<DipPageData, "dip">): string {
+  return formatFrequency(numbers.frequencyHz, numbers.frequencyUncertaintyHz);
+}
+
+function holds(band: { lowHz: number; highHz: number }, hz: number): boolean {
+  return band.lowHz <= hz && hz <= band.highHz;
+}

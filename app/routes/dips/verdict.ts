@@ -1,0 +1,52 @@
+import { parseWithZod } from "@conform-to/zod/v4";
+import { data, redirect } from "react-router";
+import { safePath } from "~/auth/next";
+import { requireProject } from "~/auth/require.server";
+import { verdictSchema } from "~/components/notes/verdict.schema";
+import * as dips from "~/db/dips.server";
+import { notFound, refused } from "~/errors";
+import { redirectWithMessage } from "~/services/flash.server";
+import { changeVerdict, type VerdictChange, type VerdictIntent } from "~/services/verdicts.server";
+import type { Route } from "./+types/verdict";
+
+/** Propose (commenters), settle or reopen (experimenters) the explanation of a dip. */
+export async function action(args: Route.ActionArgs) {
+  const { project, person, may } = await requireProject(args, "verdict.propose");
+  if (!person) throw refused("Sign in first. Nothing was changed.");
+  const found = await dips.findByPublicId(args.params.dip);
+  if (!found || found.dip.projectId !== project.id) throw notFound("dip");
+  const submission = parseWithZod(await args.request.formData(), { schema: verdictSchema });
+  if (submission.payload.intent !== "propose" && !may("verdict.settle")) {
+    throw refused("Settling and reopening is for experimenters and owners. Nothing was changed.");
+  }
+  const page = `/projects/${project.publicId}/dips/${found.dip.publicId}`;
+  const to = safePath(submission.payload.returnTo, page);
+  const stays = new URL(args.request.url).pathname.endsWith(".data");
+  if (submission.status !== "success") {
+    if (stays) return data({ lastResult: submission.reply() }, { status: 400 });
+    return redirectWithMessage(to, "The verdict needs a few words. Nothing was changed.");
+  }
+  const { intent, text, was } = submission.value;
+  const change = await changeVerdict({ dip: found.dip, by: person, intent, text, was });
+  if (change === "missing") throw notFound("dip");
+  if (change === "done") return stays ? { done: intent } : redirectWithMessage(to, DONE[intent]);
+  if (!stays) return redirectWithMessage(to, PROBLEMS[change]);
+  return data({ lastResult: submission.reply({ formErrors: [PROBLEMS[change]] }) }, { status: 409 });
+}
+
+export async function loader(args: Route.LoaderArgs) {
+  await requireProject(args, "project.read");
+  return redirect(`/projects/${args.params.project}/dips/${args.params.dip}`);
+}
+
+const DONE: Record<VerdictIntent, string> = {
+  propose: "The explanation is proposed.",
+  settle: "The dip is settled.",
+  reopen: "The dip is open again.",
+};
+
+const PROBLEMS: Record<Exclude<VerdictChange, "done" | "missing">, string> = {
+  "changed-since":
+    "Somebody changed the verdict while you wrote. Nothing was changed by you; read what it is now and decide again.",
+  "not-now": "That can't be done with the verdict as it is now. Nothing was changed.",
+};

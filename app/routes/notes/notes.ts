@@ -1,0 +1,53 @@
+import { parseWithZod } from "@conform-to/zod/v4";
+import { data } from "react-router";
+import { requireProject } from "~/auth/require.server";
+import { writeNoteSchema } from "~/components/notes/notes.schema";
+import { refused } from "~/errors";
+import { redirectWithMessage } from "~/services/flash.server";
+import { listThread, NoteProblem, writeNote } from "~/services/notes.server";
+import type { Route } from "./+types/notes";
+import { backTo, isFromScript, pathOf, requirePlace } from "./place.server.ts";
+
+/** The thread of a dip (`?dip=`), of a sweep (`?sweep=`) or of the project. */
+export async function loader(args: Route.LoaderArgs) {
+  const access = await requireProject(args, "project.read");
+  const query = new URL(args.request.url).searchParams;
+  const place = await requirePlace(access, { dip: query.get("dip"), sweep: query.get("sweep") });
+  return { thread: await listThread(place, access), mayWrite: access.may("note.write") };
+}
+
+export async function action(args: Route.ActionArgs) {
+  const access = await requireProject(args, "note.write");
+  const { project, person } = access;
+  if (!person) throw refused("Sign in first. Nothing was stored.");
+  const submission = parseWithZod(await args.request.formData(), { schema: writeNoteSchema });
+  const stays = isFromScript(args.request);
+  if (submission.status !== "success") {
+    if (stays) return data({ lastResult: submission.reply() }, { status: 400 });
+    const { body, returnTo } = submission.payload;
+    const what = body ? "The note could not be taken as it is" : "The note was empty";
+    return redirectWithMessage(
+      backTo(String(returnTo ?? ""), pathOf(project, {})),
+      `${what}. Nothing was stored.`,
+    );
+  }
+  const { dip, sweep, parent, body, clientKey, returnTo } = submission.value;
+  const place = await requirePlace(access, { dip, sweep });
+  const page = pathOf(project, { dip, sweep });
+  try {
+    const written = await writeNote({
+      project,
+      author: person,
+      place,
+      parentPublicId: parent,
+      body,
+      clientKey,
+    });
+    if (stays) return { publicId: written.publicId };
+    return redirectWithMessage(backTo(returnTo, page, written.publicId), "The note is stored.");
+  } catch (error) {
+    if (!(error instanceof NoteProblem)) throw error;
+    if (!stays) return redirectWithMessage(backTo(returnTo, page), error.message);
+    return data({ lastResult: submission.reply({ formErrors: [error.message] }) }, { status: 409 });
+  }
+}
