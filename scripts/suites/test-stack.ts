@@ -24,6 +24,7 @@ export async function startTestStack({
   demo = true,
   keep = false,
 }: TestStackOptions): Promise<Stack> {
+  process.env.AWS_SDK_JS_NODE_VERSION_SUPPORT_WARNING_DISABLED ??= "true";
   removeOldFolders();
   const folder = path.join(TEST_FOLDER, `${process.pid}-${startTicksOf(process.pid) ?? 0}-${Date.now()}`);
   mkdirSync(folder, { recursive: true });

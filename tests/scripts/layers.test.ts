@@ -1,0 +1,64 @@
+import { spawnSync } from "node:child_process";
+import { mkdirSync, mkdtempSync, rmSync, writeFileSync } from "node:fs";
+import { tmpdir } from "node:os";
+import path from "node:path";
+import { expect, test } from "vitest";
+
+function layers(files: Record<string, string>): { code: number | null; faults: string[] } {
+  const folder = mkdtempSync(path.join(tmpdir(), "swale-layers-"));
+  for (const [name, source] of Object.entries(files)) {
+    const file = path.join(folder, "app", name);
+    mkdirSync(path.dirname(file), { recursive: true });
+    writeFileSync(file, source);
+  }
+  const result = spawnSync(process.execPath, ["scripts/layers.mjs", folder], { encoding: "utf8" });
+  rmSync(folder, { recursive: true });
+  return { code: result.status, faults: result.stderr.trimEnd().split("\n").slice(0, -1) };
+}
+
+test("imports that point down pass", () => {
+  const result = layers({
+    "measurement/sweep.ts": "export const a = 1;",
+    "measurement/fit.ts":
+      'import { levenbergMarquardt } from "ml-levenberg-marquardt"; // not process.env\nexport {};',
+    "readers/read.ts": 'import { a } from "../measurement/sweep.ts";',
+    "db/sweeps.server.ts": 'import { a } from "~/measurement/sweep";\nimport mysql from "mysql2";',
+    "services/intake.server.ts": 'import { b } from "~/db/sweeps.server";',
+    "routes/page.tsx": 'import { b } from "~/services/intake.server";',
+    "components/Thread.tsx":
+      'import type { Row } from "~/db/sweeps.server";\nimport { useState } from "react";',
+  });
+  expect(result).toEqual({ code: 0, faults: [] });
+});
+
+test.each([
+  ["measurement/a.ts", 'import { b } from "../readers/b.ts";', "imports ../readers/b.ts, which is above it"],
+  ["measurement/a.ts", 'export { b } from "~/db/b.server";', "imports ~/db/b.server, which is above it"],
+  ["measurement/a.ts", 'import fs from "node:fs";', "is pure code, and imports node:fs"],
+  ["readers/screenshot/a.ts", 'import sharp from "sharp";', "is pure code, and imports sharp"],
+  ["readers/a.ts", 'const b = await import("react");', "is pure code, and imports react"],
+  ["readers/a.ts", "export const now = () => Date.now();", "is pure code, and uses Date.now"],
+  ["measurement/a.ts", 'import { b } from "./b";', "imports ./b without its .ts"],
+  [
+    "db/a.server.ts",
+    'import { b } from "~/services/b.server";',
+    "imports ~/services/b.server, which is above it",
+  ],
+  ["services/a.server.ts", 'import {\n  b,\n} from "~/routes/b";', "imports ~/routes/b, which is above it"],
+  ["charts/A.tsx", 'import type { B } from "~/db/b.server";', "imports ~/db/b.server, which is above it"],
+  [
+    "components/A.tsx",
+    'import { b } from "~/services/b.server";',
+    "runs in the browser, and imports ~/services/b.server",
+  ],
+  [
+    "routes/x/components/A.tsx",
+    'import { b } from "~/db/b.server";',
+    "runs in the browser, and imports ~/db/b.server",
+  ],
+  ["routes/long.ts", "\n".repeat(500), "has 501 lines, and 500 are the most"],
+])("%s with %j is a fault", (file, source, fault) => {
+  const result = layers({ [file]: source });
+  expect(result.code).toBe(1);
+  expect(result.faults).toContain(`app/${file} ${fault}`);
+});
