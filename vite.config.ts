@@ -1,9 +1,9 @@
 import { reactRouter } from "@react-router/dev/vite";
 import tailwindcss from "@tailwindcss/vite";
-import { defineConfig } from "vite";
+import { defineConfig, type Plugin } from "vite";
 
 export default defineConfig({
-  plugins: [tailwindcss(), reactRouter()],
+  plugins: [tailwindcss(), reactRouter(), serverEntriesByName()],
   resolve: { tsconfigPaths: true },
   environments: {
     ssr: {
@@ -18,3 +18,13 @@ export default defineConfig({
     },
   },
 });
+
+/** The router names every server entry `index.js`; the worker must be found under its own name. */
+function serverEntriesByName(): Plugin {
+  return {
+    name: "server-entries-by-name",
+    enforce: "post",
+    applyToEnvironment: (environment) => environment.name === "ssr",
+    outputOptions: (options) => ({ ...options, entryFileNames: "[name].js" }),
+  };
+}
