@@ -80,4 +80,4 @@ function unreadable({ code, message, line, column }: ReadProblem): Response {
   return problem({ status, code, detail: `${message} Nothing was stored.`, line, column });
 }
 
-const NO_FORMAT = new Set(["not-a-sweep", "binary", "unknown-format", "unsupported"]);
+const NO_FORMAT = new Set(["not-a-format", "not-a-sweep", "picture"]);

@@ -1,0 +1,358 @@
+import { afterAll, beforeAll, describe, expect, it } from "vitest";
+import * as tokens from "~/db/tokens.server";
+import * as shapes from "~/routes/api/schemas";
+import { hashOfToken } from "~/services/tokens.server";
+import { askApi, SERVER } from "./browser.ts";
+import { flattenSiteMap } from "./site-map.ts";
+import {
+  addBareSweeps,
+  type Crew,
+  closeWorld,
+  makeCrew,
+  makePerson,
+  makePlace,
+  type Place,
+  sendSweep,
+  signIn,
+  tokenOf,
+  touchstone,
+} from "./world.ts";
+
+/** The API as CONTRACT and its own OpenAPI document say. */
+
+let crew: Crew;
+let place: Place;
+let token: string;
+
+beforeAll(async () => {
+  crew = await makeCrew();
+  place = await makePlace(crew, "private");
+  token = await tokenOf(crew.owner);
+});
+afterAll(closeWorld);
+
+/** The answer, checked to be a problem document of this status. */
+async function problemOf(response: Response, status: number) {
+  expect(response.status).toBe(status);
+  expect(response.headers.get("Content-Type")).toBe("application/problem+json");
+  const body = shapes.problemShape.parse(await response.json());
+  expect(body.status).toBe(status);
+  expect(body.type).toBe("about:blank");
+  return body;
+}
+
+describe("reading", () => {
+  it("lists projects, and one with its bands", async () => {
+    const list = shapes.projectListShape.parse(await (await askApi("/projects", token)).json());
+    expect(list.items.map((item) => item.id)).toContain(place.project);
+    const one = await askApi(`/projects/${place.project}`, token);
+    const project = shapes.projectWithBandsShape.parse(await one.json());
+    expect(project).toMatchObject({ title: place.title, role: "owner", sweepCount: 1 });
+  });
+
+  it("gives a sweep with its analysis in the words of the command line", async () => {
+    const sweep = shapes.sweepShape.parse(await (await askApi(`/sweeps/${place.sweep}`, token)).json());
+    expect(sweep.format).toBe("touchstone");
+    expect(sweep.sweep).toEqual({
+      points: 201,
+      startHz: 6e6,
+      stopHz: expect.closeTo(8.2e6, 3),
+      referenceOhm: 50,
+      complex: true,
+    });
+    expect(sweep.reading?.quantity).toBe("gamma");
+    expect(sweep.dips[0].frequencyHz).toBeCloseTo(7.1e6, -4);
+    expect(sweep.analysis?.settings).toEqual({ swrLimit: 2, minimumProminenceDb: 3 });
+  });
+
+  it("gives points, all or a stretch, never more than asked, the dip kept", async () => {
+    const all = await points("");
+    expect(all.total).toBe(201);
+    expect(all.points.frequencyHz).toHaveLength(201);
+    expect(all.points.gammaRe).toHaveLength(201);
+    const few = await points("?max=20&fromHz=6500000&toHz=7500000");
+    expect(few.points.frequencyHz.length).toBeLessThanOrEqual(20);
+    expect(Math.min(...few.points.frequencyHz)).toBeGreaterThanOrEqual(6.4e6);
+    const deepest = Math.min(...(few.points.magnitude as number[]));
+    expect(deepest).toBeCloseTo(Math.min(...(all.points.magnitude as number[])), 12);
+    await problemOf(await askApi(`/sweeps/${place.sweep}/points?max=1`, token), 422);
+    await problemOf(await askApi(`/sweeps/${place.sweep}/points?fromHz=8e6&toHz=7e6`, token), 422);
+    await problemOf(await askApi(`/sweeps/${place.sweep}/points?fromHz=x`, token), 422);
+
+    async function points(query: string) {
+      const answer = await askApi(`/sweeps/${place.sweep}/points${query}`, token);
+      return shapes.pointsShape.parse(await answer.json());
+    }
+  });
+
+  it("pages through sweeps with a cursor, each once", async () => {
+    const own = await makePlace(crew, "linked");
+    await addBareSweeps(own.projectId, 101);
+    const seen: string[] = [];
+    let cursor: string | null = "";
+    let pages = 0;
+    while (cursor !== null) {
+      const answer = await askApi(`/projects/${own.project}/sweeps?cursor=${cursor}`, token);
+      const list = shapes.sweepListShape.parse(await answer.json());
+      expect(list.items.length).toBeLessThanOrEqual(100);
+      seen.push(...list.items.map((item) => item.id));
+      cursor = list.nextCursor;
+      pages += 1;
+    }
+    expect(pages).toBe(2);
+    expect(seen).toHaveLength(102);
+    expect(new Set(seen).size).toBe(102);
+  });
+});
+
+describe("taking a sweep in", () => {
+  it("answers 201 with the sweep, its title and time as given", async () => {
+    const answer = await sendSweep(place.project, token, touchstone(), {
+      title: "Radials trimmed",
+      takenAt: "2026-09-14T17:20:00+02:00",
+    });
+    expect(answer.status).toBe(201);
+    const sweep = shapes.sweepShape.parse(await answer.json());
+    expect(sweep).toMatchObject({ title: "Radials trimmed", takenAt: "2026-09-14T15:20:00.000Z" });
+    expect(answer.headers.get("Location")).toBe(sweep.links.self);
+    expect((await askApi(sweep.links.self.replace("/api/v1", ""), token)).status).toBe(200);
+  });
+
+  it("takes a reading as JSON", async () => {
+    const rows = Array.from(
+      { length: 30 },
+      (_, i) => `${7 + i / 100};${3 - 2 * Math.exp(-((i - 15) ** 2) / 40)}`,
+    );
+    const reading = JSON.stringify({ text: { quantity: "swr", frequencyUnit: "MHz" } });
+    const answer = await sendSweep(place.project, token, `${rows.join("\n")}\n`, { reading }, "plain.csv");
+    expect(answer.status).toBe(201);
+    const sweep = shapes.sweepShape.parse(await answer.json());
+    expect(sweep.reading?.quantity).toBe("swr");
+    expect(sweep.sweep?.startHz).toBe(7e6);
+  });
+
+  it("answers 409 for the same file, with the first sweep", async () => {
+    const text = touchstone();
+    const first = await (await sendSweep(place.project, token, text)).json();
+    const problem = await problemOf(await sendSweep(place.project, token, text, {}, "other.s1p"), 409);
+    expect(problem).toMatchObject({ code: "twice", sweep: `/api/v1/sweeps/${first.id}` });
+  });
+
+  it("answers 409 to one of two who send it at the same moment", async () => {
+    const text = touchstone();
+    const answers = await Promise.all([1, 2].map(() => sendSweep(place.project, token, text)));
+    expect(answers.map((answer) => answer.status).sort()).toEqual([201, 409]);
+  });
+
+  it("answers 422 with line and column for a file with something wrong in it", async () => {
+    const broken = touchstone().replace(/^7\.0010.*$/m, "7.0010 zero 0.5");
+    const problem = await problemOf(await sendSweep(place.project, token, broken), 422);
+    expect(problem.line).toBeGreaterThan(2);
+    expect(problem.column).toBeGreaterThan(0);
+    expect(problem.detail).toContain("Nothing was stored");
+  });
+
+  it("answers 415 for what no reader reads", async () => {
+    const pages = "%PDF-1.4\n1 0 obj\n<< /Type /Catalog >>\nendobj\n";
+    const answer = await sendSweep(place.project, token, pages, {}, "sweep.pdf");
+    await problemOf(answer, 415);
+  });
+
+  it("answers 413 above the limit, whether its length is told or not", async () => {
+    const form = new FormData();
+    form.set("file", new File([new Uint8Array(66 * 1024 * 1024)], "big.csv"));
+    const answer = await askApi(`/projects/${place.project}/sweeps`, token, { method: "POST", body: form });
+    await problemOf(answer, 413);
+  });
+
+  it.each([
+    [{ takenAt: "yesterday" }, "takenAt"],
+    [{ reading: "{" }, "reading"],
+    [{ reading: '{"text":{"quantity":"volts"}}' }, "reading.text.quantity"],
+    [{ reading: '{"colour":1}' }, "reading"],
+    [{ bench: "abc" }, "bench"],
+    [{ title: "x".repeat(161) }, "title"],
+    [{ surprise: "1" }, "body"],
+  ])("answers 422 and the field for %j", async (fields, field) => {
+    const answer = await sendSweep(place.project, token, touchstone(), fields as Record<string, string>);
+    const problem = await problemOf(answer, 422);
+    expect(problem.errors?.[0].field).toBe(field);
+  });
+
+  it("answers 415 or 400 for a body that is no form, 422 for one without a file", async () => {
+    const path = `/projects/${place.project}/sweeps`;
+    const json = { method: "POST", body: "{}", headers: { "Content-Type": "application/json" } };
+    await problemOf(await askApi(path, token, json), 415);
+    const torn = {
+      method: "POST",
+      body: "--x\r\n",
+      headers: { "Content-Type": "multipart/form-data; boundary=x" },
+    };
+    await problemOf(await askApi(path, token, torn), 400);
+    const form = new FormData();
+    form.set("title", "nothing");
+    await problemOf(await askApi(path, token, { method: "POST", body: form }), 422);
+  });
+});
+
+describe("notes", () => {
+  const send = (body: unknown, as = token) =>
+    askApi(`/dips/${place.dip}/notes`, as, {
+      method: "POST",
+      body: typeof body === "string" ? body : JSON.stringify(body),
+      headers: { "Content-Type": "application/json" },
+    });
+
+  it("are written, answered and listed oldest first", async () => {
+    const first = shapes.noteShape.parse(await (await send({ body: "One." })).json());
+    const answer = await send({ body: "Two.", parent: first.id });
+    expect(answer.status).toBe(201);
+    const second = shapes.noteShape.parse(await answer.json());
+    expect(second.parent).toBe(first.id);
+    const listed = await askApi(`/dips/${place.dip}/notes`, token);
+    const { items } = shapes.noteListShape.parse(await listed.json());
+    expect(items.map((note) => note.id).slice(-2)).toEqual([first.id, second.id]);
+    expect(items.at(-1)?.author?.userName).toBe(crew.owner.userName);
+  });
+
+  it("sent again with one key are written once", async () => {
+    const note = { body: "Once.", clientKey: "a-key-of-this-test" };
+    const ids = [await (await send(note)).json(), await (await send(note)).json()].map(({ id }) => id);
+    expect(ids[0]).toBe(ids[1]);
+  });
+
+  it("that are wrong are refused with the reason", async () => {
+    await problemOf(await send("{"), 400);
+    await problemOf(await send({ body: " " }), 422);
+    await problemOf(await send({ body: "x".repeat(20_001) }), 422);
+    await problemOf(await send({ body: "x", parent: "nothing" }), 422);
+    await problemOf(await send({ body: "x", loud: true }), 422);
+    const plain = { method: "POST", body: "x", headers: { "Content-Type": "text/plain" } };
+    await problemOf(await askApi(`/dips/${place.dip}/notes`, token, plain), 415);
+  });
+});
+
+describe("tokens", () => {
+  it("are asked for, and a wrong one is told from none", async () => {
+    const none = await askApi("/projects", null);
+    expect(none.headers.get("WWW-Authenticate")).toMatch(/^Bearer realm=/);
+    await problemOf(none, 401);
+    const wrong = await askApi("/projects", "swale_nothing");
+    expect(wrong.headers.get("WWW-Authenticate")).toContain('error="invalid_token"');
+    await problemOf(wrong, 401);
+    const basic = { headers: { Authorization: "Basic eDp5" } };
+    await problemOf(await fetch(`${SERVER}/api/v1/projects`, basic), 401);
+  });
+
+  it("take no cookie for a token", async () => {
+    const browser = await signIn(crew.owner);
+    await problemOf(await browser.get("/api/v1/projects"), 401);
+  });
+
+  it("of scope read write nothing", async () => {
+    const reader = await tokenOf(crew.owner, "read");
+    expect((await askApi("/projects", reader)).status).toBe(200);
+    const answer = await sendSweep(place.project, reader, touchstone());
+    expect(answer.headers.get("WWW-Authenticate")).toContain('error="insufficient_scope"');
+    expect((await problemOf(answer, 403)).code).toBe("scope");
+  });
+
+  it("are made on the settings page, shown once, kept as a hash, and revoked", async () => {
+    const person = await makePerson("scripter");
+    const browser = await signIn(person);
+    const made = await browser.post("/settings/tokens", { intent: "make", label: "shed", scope: "read" });
+    expect(made.headers.get("Cache-Control")).toBe("no-store");
+    const [text] = /swale_[\w-]{43}/.exec(await made.text()) ?? [];
+    expect(text).toBeDefined();
+    expect((await askApi("/projects", text ?? "")).status).toBe(200);
+    expect(await (await browser.get("/settings/tokens")).text()).not.toContain(text);
+    const [row] = await tokens.findAllByUser(person.id);
+    expect(row).toMatchObject({ label: "shed", scope: "read" });
+    expect(row.lastUsedAt).not.toBeNull();
+    expect((await tokens.findByHash(hashOfToken(text ?? "")))?.token.tokenHash).not.toContain(text);
+    await browser.post("/settings/tokens", { intent: "revoke", token: row.publicId });
+    await problemOf(await askApi("/projects", text ?? ""), 401);
+  });
+
+  it("of a suspended account open nothing", async () => {
+    const person = await makePerson("closed");
+    const its = await tokenOf(person);
+    const admin = await signIn(await makePerson("admin", { administrator: true }));
+    await admin.post("/admin", { intent: "suspend", user: person.publicId });
+    await problemOf(await askApi("/projects", its), 401);
+  });
+
+  it("that ask too often are told to wait, and others are not", async () => {
+    const eager = await tokenOf(crew.owner);
+    const path = `/dips/${place.dip}/notes`;
+    let last = new Response();
+    for (let i = 0; i < 121; i++) last = await askApi(path, eager, { method: "POST" });
+    const waitS = Number(last.headers.get("Retry-After"));
+    expect(waitS).toBeGreaterThan(0);
+    expect(waitS).toBeLessThanOrEqual(60);
+    await problemOf(last, 429);
+    await problemOf(await askApi(path, token, { method: "POST" }), 415);
+    expect((await askApi(path, eager)).status).toBe(200);
+  });
+});
+
+describe("wrong methods and addresses", () => {
+  it.each(["PUT", "PATCH", "DELETE", "OPTIONS"])(
+    "%s is answered with 405 and what is allowed",
+    async (method) => {
+      for (const [path, allow] of [
+        ["/projects", "GET"],
+        [`/projects/${place.project}/sweeps`, "GET, POST"],
+        ["/openapi.json", "GET"],
+      ]) {
+        const answer = await askApi(path, token, { method });
+        expect(answer.headers.get("Allow")).toBe(allow);
+        await problemOf(answer, 405);
+      }
+    },
+  );
+
+  it("unknown ones are 404, also without a token", async () => {
+    await problemOf(await askApi("/no/such/thing", null), 404);
+    await problemOf(await askApi("/sweeps/nothing", token), 404);
+    await problemOf(await askApi("/dips/nothing/notes", token), 404);
+    await problemOf(await askApi("/projects/nothing", token), 404);
+  });
+
+  it("HEAD is answered as GET without a body", async () => {
+    const answer = await askApi(`/projects/${place.project}`, token, { method: "HEAD" });
+    expect(answer.status).toBe(200);
+    expect(await answer.text()).toBe("");
+  });
+});
+
+describe("the OpenAPI document", () => {
+  it("lists each route of the API with each method it answers, and no other", async () => {
+    const document = await (await askApi("/openapi.json", null)).json();
+    expect(document.openapi).toBe("3.1.0");
+    const listed = Object.entries(document.paths as Record<string, object>).flatMap(([path, item]) =>
+      Object.keys(item).map((method) => `${method.toUpperCase()} ${path}`),
+    );
+    const answered: string[] = [];
+    for (const { path } of flattenSiteMap().filter((route) => route.path.startsWith("/api/v1/"))) {
+      if (path.endsWith("*")) continue;
+      const short = path.replace("/api/v1", "");
+      const refused = await askApi(short.replace(/:\w+/g, "x"), token, { method: "PUT" });
+      for (const method of (refused.headers.get("Allow") ?? "").split(", ")) {
+        answered.push(`${method} ${short.replace(/:(\w+)/g, "{$1}")}`);
+      }
+    }
+    expect(listed.sort()).toEqual(answered.sort());
+  });
+
+  it("refers only to what it holds", async () => {
+    const text = await (await askApi("/openapi.json", null)).text();
+    const document = JSON.parse(text);
+    const references = [...text.matchAll(/"\$ref":"#\/([^"]+)"/g)].map((match) => match[1]);
+    expect(references.length).toBeGreaterThan(20);
+    for (const reference of references) {
+      const found = reference.split("/").reduce((at, key) => at?.[key], document);
+      expect([reference, typeof found]).toEqual([reference, "object"]);
+    }
+  });
+});

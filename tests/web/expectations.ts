@@ -1,0 +1,241 @@
+import type { ProjectAction, SiteAction } from "~/auth/permissions";
+import { type Crew, type Place, type Someone, touchstone, unique } from "./world.ts";
+
+/** What each route asks for, and the smallest form that it takes. One line a case; the walk does the rest. */
+
+export type Ask =
+  | { site: SiteAction }
+  | { project: ProjectAction }
+  /** The API: the same table, asked by token. */
+  | { api: ProjectAction | "any-member" }
+  /** Members only, whatever their role: leaving. */
+  | { membership: true }
+  /** The commenter who wrote the note, and who else may do it. */
+  | { authorOr: ProjectAction | null }
+  /** The same answer for everybody. */
+  | { status: number };
+
+/** Whom and what a form may name. */
+export interface About {
+  place: Place;
+  crew: Crew;
+  /** Who sends it; null for a visitor. */
+  self: Someone | null;
+  /** Takes no other part in the walk. */
+  bystander: Someone;
+}
+
+export interface Case {
+  ask: Ask;
+  /** Distinguishes the forms of one page. */
+  name?: string;
+  form?: (about: About) => Record<string, string | Blob>;
+  json?: () => unknown;
+  /** The case destroys what it is asked of: it gets a project of its own for each role, empty or with a sweep. */
+  destroys?: "project" | "sweep";
+}
+
+interface Expectation {
+  GET?: Case[];
+  POST?: Case[];
+}
+
+const read: Case[] = [{ ask: { project: "project.read" } }];
+const anybody: Case[] = [{ ask: { site: "site.read" } }];
+const apiRead: Case[] = [{ ask: { api: "project.read" } }];
+const notHere: Case[] = [{ ask: { status: 405 } }];
+const sweepFile = () => new File([touchstone()], "walk.s1p");
+
+export const EXPECTATIONS: Record<string, Expectation> = {
+  "routes/home/home.tsx": { GET: anybody },
+  "routes/home/missing.tsx": { GET: [{ ask: { status: 404 } }], POST: [{ ask: { status: 404 } }] },
+
+  "routes/account/sign-in.tsx": { GET: anybody },
+  "routes/account/github.ts": { GET: anybody },
+  "routes/account/github-callback.ts": { GET: anybody },
+  "routes/account/sign-out.ts": { GET: anybody, POST: anybody },
+  "routes/account/settings.tsx": {
+    GET: [{ ask: { site: "account.own" } }],
+    POST: [
+      {
+        name: "profile",
+        ask: { site: "account.own" },
+        form: ({ self }) => ({ intent: "profile", name: "New name", userName: self?.userName ?? "nobody" }),
+      },
+      {
+        name: "revoke-session",
+        ask: { site: "account.own" },
+        form: () => ({ intent: "revoke-session", session: "0".repeat(64) }),
+      },
+      { name: "revoke-others", ask: { site: "account.own" }, form: () => ({ intent: "revoke-others" }) },
+    ],
+  },
+  "routes/account/tokens.tsx": {
+    GET: [{ ask: { site: "account.own" } }],
+    POST: [
+      {
+        name: "make",
+        ask: { site: "account.own" },
+        form: () => ({ intent: "make", label: "walk", scope: "read" }),
+      },
+      { name: "revoke", ask: { site: "account.own" }, form: () => ({ intent: "revoke", token: "nothing" }) },
+    ],
+  },
+  "routes/account/theme.ts": {
+    GET: anybody,
+    POST: [{ ask: { site: "site.read" }, form: () => ({ theme: "dark", returnTo: "/" }) }],
+  },
+  "routes/account/caution.ts": {
+    GET: anybody,
+    POST: [{ ask: { site: "account.own" }, form: () => ({ caution: "first-sweep", returnTo: "/" }) }],
+  },
+
+  "routes/projects/list.tsx": { GET: [{ ask: { site: "account.own" } }] },
+  "routes/projects/new.tsx": {
+    GET: [{ ask: { site: "project.create" } }],
+    POST: [
+      { ask: { site: "project.create" }, form: () => ({ title: unique("Walked"), visibility: "private" }) },
+    ],
+  },
+  "routes/projects/project.tsx": { GET: read },
+  "routes/projects/members.tsx": {
+    GET: read,
+    POST: [
+      {
+        name: "add",
+        ask: { project: "members.manage" },
+        form: ({ crew }) => ({ intent: "add", userName: crew.reader.userName, role: "reader" }),
+      },
+      {
+        name: "change",
+        ask: { project: "members.manage" },
+        form: ({ crew }) => ({ intent: "change", userName: crew.reader.userName, role: "reader" }),
+      },
+      {
+        name: "remove",
+        ask: { project: "members.manage" },
+        form: ({ crew }) => ({ intent: "remove", userName: crew.reader.userName }),
+        destroys: "project",
+      },
+      { name: "leave", ask: { membership: true }, form: () => ({ intent: "leave" }), destroys: "project" },
+    ],
+  },
+  "routes/projects/settings.tsx": {
+    GET: [{ ask: { project: "project.edit" } }],
+    POST: [
+      {
+        name: "about",
+        ask: { project: "project.edit" },
+        form: ({ place }) => ({ intent: "about", title: place.title, visibility: place.visibility }),
+      },
+      {
+        name: "bands",
+        ask: { project: "project.edit" },
+        form: () => ({
+          intent: "bands",
+          "bands[0].name": "40 m",
+          "bands[0].lowMhz": "7",
+          "bands[0].highMhz": "7,2",
+          "bands[0].swrLimit": "2",
+        }),
+      },
+      {
+        name: "delete",
+        ask: { project: "project.delete" },
+        form: ({ place }) => ({ intent: "delete", title: place.title }),
+        destroys: "project",
+      },
+    ],
+  },
+
+  "routes/sweeps/list.tsx": { GET: read },
+  "routes/sweeps/new.tsx": {
+    GET: [{ ask: { project: "sweep.add" } }],
+    POST: [{ ask: { project: "sweep.add" }, form: () => ({ files: sweepFile() }) }],
+  },
+  "routes/sweeps/upload.ts": {
+    POST: [{ ask: { project: "sweep.add" }, form: () => ({ files: sweepFile() }) }],
+  },
+  "routes/sweeps/sweep.tsx": {
+    GET: read,
+    POST: [
+      { name: "edit", ask: { project: "sweep.edit" }, form: () => ({ intent: "edit", title: "Another" }) },
+      {
+        name: "settings",
+        ask: { project: "sweep.edit" },
+        form: () => ({ intent: "settings", swrLimit: "2", minimumProminenceDb: "3" }),
+      },
+      {
+        name: "delete",
+        ask: { project: "sweep.delete" },
+        form: () => ({ intent: "delete" }),
+        destroys: "sweep",
+      },
+    ],
+  },
+  "routes/sweeps/reading.tsx": {
+    GET: read,
+    POST: [{ ask: { project: "sweep.edit" }, form: () => ({ intent: "afresh" }) }],
+  },
+  "routes/sweeps/reading-try.ts": {
+    POST: [{ ask: { project: "sweep.edit" }, form: () => ({ port: "1" }) }],
+  },
+  "routes/sweeps/original.ts": { GET: read },
+  "routes/sweeps/points.ts": { GET: read },
+  "routes/sweeps/csv.ts": { GET: read },
+  "routes/sweeps/touchstone.ts": { GET: read },
+
+  "routes/dips/dip.tsx": { GET: read },
+  "routes/dips/verdict.ts": {
+    GET: read,
+    POST: (["propose", "settle", "reopen"] as const).map((intent) => ({
+      name: intent,
+      ask: { project: intent === "propose" ? ("verdict.propose" as const) : ("verdict.settle" as const) },
+      form: () => ({ intent, was: "open", text: "The second element." }),
+    })),
+  },
+  "routes/notes/notes.ts": {
+    GET: read,
+    POST: [{ ask: { project: "note.write" }, form: ({ place }) => ({ body: "A note.", dip: place.dip }) }],
+  },
+  "routes/notes/note.tsx": {
+    GET: read,
+    POST: [
+      { name: "edit", ask: { authorOr: null }, form: () => ({ intent: "edit", body: "A second thought." }) },
+      {
+        name: "remove",
+        ask: { authorOr: "note.moderate" },
+        form: () => ({ intent: "remove" }),
+        destroys: "sweep",
+      },
+    ],
+  },
+  "routes/notes/preview.ts": {
+    GET: anybody,
+    POST: [{ ask: { site: "account.own" }, form: () => ({ body: "*so*" }) }],
+  },
+
+  "routes/admin/admin.tsx": {
+    GET: [{ ask: { site: "site.administer" } }],
+    POST: (["suspend", "restore", "promote", "demote"] as const).map((intent) => ({
+      name: intent,
+      ask: { site: "site.administer" as const },
+      form: ({ bystander }: About) => ({ intent, user: bystander.publicId }),
+    })),
+  },
+
+  "routes/api/openapi.ts": { GET: anybody, POST: notHere },
+  "routes/api/projects.ts": { GET: [{ ask: { api: "any-member" } }], POST: notHere },
+  "routes/api/project.ts": { GET: apiRead, POST: notHere },
+  "routes/api/sweeps.ts": {
+    GET: apiRead,
+    POST: [{ ask: { api: "sweep.add" }, form: () => ({ file: sweepFile() }) }],
+  },
+  "routes/api/sweep.ts": { GET: apiRead, POST: notHere },
+  "routes/api/points.ts": { GET: apiRead, POST: notHere },
+  "routes/api/notes.ts": {
+    GET: apiRead,
+    POST: [{ ask: { api: "note.write" }, json: () => ({ body: "From a script." }) }],
+  },
+  "routes/api/missing.ts": { GET: [{ ask: { status: 404 } }], POST: [{ ask: { status: 404 } }] },
+};

@@ -1,0 +1,214 @@
+import { afterAll, beforeAll, describe, expect, it } from "vitest";
+import {
+  effectiveRole,
+  mayInProject,
+  mayOnSite,
+  type ProjectAction,
+  type ProjectRole,
+  type SiteRole,
+  type Visibility,
+} from "~/auth/permissions";
+import { askApi, Browser } from "./browser.ts";
+import { type Ask, type Case, EXPECTATIONS } from "./expectations.ts";
+import { flattenSiteMap, layoutFiles, type SiteRoute } from "./site-map.ts";
+import {
+  type Crew,
+  closeWorld,
+  makeCrew,
+  makePerson,
+  makePlace,
+  type Place,
+  type Someone,
+  signIn,
+  tokenOf,
+} from "./world.ts";
+
+/** Every route of the site map × every role, over HTTP, against the one table of permissions. */
+
+const ACTORS = [
+  "visitor",
+  "stranger",
+  "reader",
+  "commenter",
+  "experimenter",
+  "owner",
+  "administrator",
+] as const;
+type Actor = (typeof ACTORS)[number];
+const VISIBILITIES: Visibility[] = ["private", "linked", "public"];
+
+/** What a person meets: `sign-in` is being sent to sign in first, `no-token` the API's word for it. */
+type Answer = "allowed" | "refused" | "hidden" | "sign-in" | "no-token" | `status ${number}`;
+
+const routes = flattenSiteMap();
+let crew: Crew;
+let others: { stranger: Someone; administrator: Someone };
+let bystander: Someone;
+let places: Record<Visibility, Place>;
+const tokens = new Map<Actor, string>();
+
+beforeAll(async () => {
+  crew = await makeCrew();
+  others = {
+    stranger: await makePerson("stranger"),
+    administrator: await makePerson("administrator", { administrator: true }),
+  };
+  bystander = await makePerson("bystander");
+  places = {
+    private: await makePlace(crew, "private"),
+    linked: await makePlace(crew, "linked"),
+    public: await makePlace(crew, "public"),
+  };
+  for (const actor of ACTORS) {
+    const person = personOf(actor);
+    if (person) tokens.set(actor, await tokenOf(person));
+  }
+});
+afterAll(closeWorld);
+
+describe("the table of expectations", () => {
+  it("names every route of the site map and no other", () => {
+    expect(Object.keys(EXPECTATIONS).sort()).toEqual(routes.map((route) => route.file).sort());
+  });
+
+  it("names every method that a route answers", () => {
+    const answered = routes.map((route) => [route.file, ...route.methods]);
+    const expected = routes.map((route) => {
+      const { GET, POST } = EXPECTATIONS[route.file] ?? {};
+      return [route.file, ...(GET ? ["GET"] : []), ...(POST ? ["POST"] : [])];
+    });
+    expect(expected).toEqual(answered);
+  });
+});
+
+describe.each(routes)("$path ($file)", (route) => {
+  for (const method of route.methods) {
+    for (const one of EXPECTATIONS[route.file]?.[method] ?? []) {
+      it(`${method} ${one.name ?? ""}`.trim(), async () => {
+        const seen: string[] = [];
+        const wanted: string[] = [];
+        for (const visibility of route.path.includes(":") ? VISIBILITIES : VISIBILITIES.slice(0, 1)) {
+          for (const actor of ACTORS) {
+            const place = one.destroys
+              ? await makePlace(crew, visibility, one.destroys === "project")
+              : places[visibility];
+            const response = await send(route, method, one, actor, place);
+            const answer = answerOf(response);
+            seen.push(`${actor}, ${visibility}: ${answer}`);
+            wanted.push(`${actor}, ${visibility}: ${expected(one.ask, method, actor, visibility)}`);
+            const text = await response.text();
+            if (answer === "hidden") expect(text).not.toContain(place.title);
+          }
+        }
+        expect(seen).toEqual(wanted);
+      });
+    }
+  }
+});
+
+describe("a page's data asked for without its layouts", () => {
+  const pages = routes.filter((route) => /^\/projects\/:project(\/|$)/.test(route.path));
+  it.each([...pages.map(({ file, path }) => ({ file, path })), ...layouts()])(
+    "tells nobody of a private project: $file",
+    async ({ file, path }) => {
+      const id = file.replace(/\.tsx?$/, "");
+      for (const actor of ["visitor", "stranger", "administrator"] as const) {
+        const browser = await browserOf(actor);
+        const response = await browser.get(`${fill(path, places.private)}.data?_routes=${id}`);
+        expect(await response.text()).not.toContain(places.private.title);
+      }
+    },
+  );
+
+  function layouts() {
+    return layoutFiles().map((file) => ({ file, path: "/projects/:project" }));
+  }
+});
+
+async function send(
+  route: SiteRoute,
+  method: "GET" | "POST",
+  one: Case,
+  actor: Actor,
+  place: Place,
+): Promise<Response> {
+  const path = fill(route.path, place);
+  const form = one.form?.({ place, crew, self: personOf(actor), bystander }) ?? {};
+  if (!("api" in one.ask)) {
+    const browser = await browserOf(actor);
+    return method === "GET" ? browser.get(path) : browser.post(path, form);
+  }
+  const init: RequestInit = { method };
+  if (one.json) {
+    init.body = JSON.stringify(one.json());
+    init.headers = { "Content-Type": "application/json" };
+  } else if (method === "POST") {
+    const body = new FormData();
+    for (const [name, value] of Object.entries(form)) body.set(name, value);
+    init.body = body;
+  }
+  return askApi(path.replace("/api/v1", ""), tokens.get(actor) ?? null, init);
+}
+
+function answerOf(response: Response): Answer {
+  const { status } = response;
+  const to = response.headers.get("Location") ?? "";
+  if (status === 302 && to.startsWith("/sign-in?next=")) return "sign-in";
+  if (status >= 200 && status < 400) return "allowed";
+  if (status === 401) return "no-token";
+  if (status === 403) return "refused";
+  return status === 404 ? "hidden" : `status ${status}`;
+}
+
+/** What the table of permissions says. */
+function expected(ask: Ask, method: string, actor: Actor, visibility: Visibility): Answer {
+  if ("status" in ask) return ask.status === 404 ? "hidden" : `status ${ask.status}`;
+  const withoutSession = method === "GET" ? "sign-in" : "refused";
+  if ("site" in ask) {
+    const role: SiteRole = actor === "visitor" || actor === "administrator" ? actor : "member";
+    if (mayOnSite(role, ask.site)) return "allowed";
+    return role === "visitor" ? withoutSession : "refused";
+  }
+  const membership = actor in crew ? (actor as ProjectRole) : null;
+  const role = effectiveRole(membership, visibility);
+  if ("api" in ask) {
+    if (actor === "visitor") return "no-token";
+    if (ask.api === "any-member") return "allowed";
+    if (!role) return "hidden";
+    return mayInProject(role, ask.api) ? "allowed" : "refused";
+  }
+  if (!role) return "hidden";
+  if (allows(ask, actor, membership, role)) return "allowed";
+  return actor === "visitor" ? withoutSession : "refused";
+}
+
+function allows(
+  ask: { project: ProjectAction } | { membership: true } | { authorOr: ProjectAction | null },
+  actor: Actor,
+  membership: ProjectRole | null,
+  role: ProjectRole,
+): boolean {
+  if ("project" in ask) return mayInProject(role, ask.project);
+  if ("membership" in ask) return membership !== null;
+  if (actor === "commenter") return mayInProject(role, "note.write");
+  return ask.authorOr !== null && mayInProject(role, ask.authorOr);
+}
+
+function fill(path: string, place: Place): string {
+  return path
+    .replace(":project", place.project)
+    .replace(":sweep", place.sweep)
+    .replace(":dip", place.dip)
+    .replace(":note", place.note)
+    .replace("*", "no/such/thing");
+}
+
+function personOf(actor: Actor): Someone | null {
+  if (actor === "visitor") return null;
+  return actor in crew ? crew[actor as ProjectRole] : others[actor as keyof typeof others];
+}
+
+async function browserOf(actor: Actor): Promise<Browser> {
+  const person = personOf(actor);
+  return person ? signIn(person) : new Browser();
+}

@@ -1,0 +1,143 @@
+import { createHash } from "node:crypto";
+import type { ProjectRole, Visibility } from "~/auth/permissions";
+import { startSession } from "~/auth/session.server";
+import { inTransaction, pool } from "~/db/client.server";
+
+import * as people from "~/db/people.server";
+import * as projects from "~/db/projects.server";
+import * as sweeps from "~/db/sweeps.server";
+import { createProject } from "~/services/projects.server";
+import { makeToken } from "~/services/tokens.server";
+import { askApi, Browser, SERVER } from "./browser.ts";
+
+/** People, sessions, tokens and projects for the tests, made in the server's own database by its own code. */
+
+export interface Someone {
+  id: number;
+  publicId: string;
+  userName: string;
+}
+
+let count = 0;
+const run = Math.random().toString(36).slice(2, 8);
+
+/** A text that is in no other test. */
+export function unique(word: string): string {
+  count += 1;
+  return `${word}-${run}-${process.env.VITEST_POOL_ID ?? 0}-${count}`;
+}
+
+export async function makePerson(word = "someone", more: { administrator?: boolean } = {}): Promise<Someone> {
+  const userName = unique(word);
+  const id = await people.insert({ userName, name: userName, email: `${userName}@example.com`, ...more });
+  const user = await people.findById(id);
+  if (!user) throw new Error("The person is not there.");
+  return { id, publicId: user.publicId, userName };
+}
+
+export async function signIn(person: Someone): Promise<Browser> {
+  return new Browser(await startSession(new Request(SERVER), person.id));
+}
+
+export function tokenOf(person: Someone, scope: "read" | "write" = "write"): Promise<string> {
+  return makeToken(person.id, "for a test", scope);
+}
+
+export interface Place {
+  title: string;
+  visibility: Visibility;
+  project: string;
+  projectId: number;
+  sweep: string;
+  dip: string;
+  /** Written by the commenter. */
+  note: string;
+}
+
+export type Crew = Record<ProjectRole, Someone>;
+
+/** A project with a member of each role and a second owner; unless empty, one sweep, and a note on its dip. */
+export async function makePlace(crew: Crew, visibility: Visibility, empty = false): Promise<Place> {
+  const title = unique("A secret title");
+  const project = await createProject({ title, summary: "", visibility, ituRegion: null }, crew.owner.id);
+  for (const role of ["experimenter", "commenter", "reader"] as const) {
+    await projects.insertMember(project.id, crew[role].id, role);
+  }
+  const second = await makePerson("second");
+  await projects.insertMember(project.id, second.id, "owner");
+  const place = { title, visibility, project: project.publicId, projectId: project.id };
+  if (empty) return { ...place, sweep: "", dip: "", note: "" };
+  const token = await tokenOf(crew.owner);
+  const answer = await sendSweep(project.publicId, token, touchstone());
+  if (answer.status !== 201) throw new Error(`No sweep: ${answer.status} ${await answer.text()}`);
+  const sweep = await answer.json();
+  const dip = sweep.dips[0].id;
+  const written = await askApi(`/dips/${dip}/notes`, await tokenOf(crew.commenter), {
+    method: "POST",
+    headers: { "Content-Type": "application/json" },
+    body: JSON.stringify({ body: "A first thought." }),
+  });
+  const note = (await written.json()).id;
+  return { ...place, sweep: sweep.id, dip, note };
+}
+
+export async function makeCrew(): Promise<Crew> {
+  return {
+    owner: await makePerson("owner"),
+    experimenter: await makePerson("experimenter"),
+    commenter: await makePerson("commenter"),
+    reader: await makePerson("reader"),
+  };
+}
+
+export function sendSweep(
+  project: string,
+  token: string | null,
+  text: string,
+  fields: Record<string, string> = {},
+  name = "sweep.s1p",
+): Promise<Response> {
+  const form = new FormData();
+  form.set("file", new File([text], name));
+  for (const [key, value] of Object.entries(fields)) form.set(key, value);
+  return askApi(`/projects/${project}/sweeps`, token, { method: "POST", body: form });
+}
+
+/** Sweeps that were never read, many of them of one moment: for lists. */
+export function addBareSweeps(projectId: number, howMany: number): Promise<void> {
+  const moment = new Date("2026-09-14T17:20:00Z");
+  return inTransaction(async (tx) => {
+    for (let i = 0; i < howMany; i++) {
+      const name = unique("bare");
+      const sha256 = createHash("sha256").update(name).digest("hex");
+      const fileId = await sweeps.insertFile(
+        { projectId, name, sizeBytes: 1, sha256, storageKey: `none/${name}`, uploadedBy: null },
+        tx,
+      );
+      await sweeps.insert({ projectId, fileId, title: name, takenAt: moment, createdBy: null }, tx);
+    }
+  });
+}
+
+/** A series resonator at 7.1 MHz seen through 50 Ω, 201 points, as a Touchstone file; no two alike. */
+export function touchstone(): string {
+  count += 1;
+  const lines = [`! ${run} ${process.env.VITEST_POOL_ID ?? 0} ${count}, invented`, "# MHz S RI R 50"];
+  for (let i = 0; i <= 200; i++) {
+    const mhz = 6 + (2.2 * i) / 200;
+    const x = 50 * 20 * (mhz / 7.1 - 7.1 / mhz);
+    const [re, im] = divide([10, x], [110, x]);
+    lines.push(`${mhz.toFixed(4)} ${re.toFixed(8)} ${im.toFixed(8)}`);
+  }
+  return `${lines.join("\n")}\n`;
+}
+
+/** Γ of R + jX: (Z − Z0) / (Z + Z0). */
+function divide([a, b]: [number, number], [c, d]: [number, number]): [number, number] {
+  const n = c * c + d * d;
+  return [(a * c + b * d) / n, (b * c - a * d) / n];
+}
+
+export async function closeWorld(): Promise<void> {
+  await pool.end();
+}
