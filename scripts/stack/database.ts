@@ -14,8 +14,16 @@ import type { Secrets } from "./secrets.ts";
 export const DATABASE_NAME = "swale";
 const COLLATION = "utf8mb4_unicode_520_ci";
 
+export interface DatabaseOptions {
+  folder: string;
+  port: number;
+  secrets: Secrets;
+  /** For data that is thrown away: nothing waits for the disk. */
+  throwaway?: boolean;
+}
+
 /** A MariaDB of our own on loopback. What a killed run left of it is stopped first. */
-export async function startDatabase(folder: string, port: number, secrets: Secrets): Promise<Part> {
+export async function startDatabase({ folder, port, secrets, throwaway }: DatabaseOptions): Promise<Part> {
   const dataFolder = path.join(folder, "mariadb");
   await stopDatabaseOf(folder);
   if (!existsSync(dataFolder)) installData(dataFolder);
@@ -38,6 +46,7 @@ export async function startDatabase(folder: string, port: number, secrets: Secre
       `--collation-server=${COLLATION}`,
       "--default-time-zone=+00:00",
       "--max-allowed-packet=64M",
+      ...(throwaway ? ["--innodb-flush-method=nosync", "--debug-no-sync"] : []),
     ],
   });
   await waitUntilReady(part, () => answers(databaseUrl(port, secrets)));

@@ -20,6 +20,8 @@ export interface StackOptions {
   development?: boolean;
   /** False for the parts alone, without the app. */
   server?: boolean;
+  /** For data that is thrown away afterwards. */
+  throwaway?: boolean;
   /** Called once when a part ends that should run. */
   onLoss: (message: string) => void;
 }
@@ -48,11 +50,11 @@ export async function bringUp(options: StackOptions): Promise<Stack> {
   try {
     await endProcesses(processesWith(markOf(folder)));
     const settings = await settingsFor(folder, options.environment, port);
-    const { environment, local } = settings;
+    const { environment, local, ports, secrets } = settings;
     if (options.server !== false) await refuseTakenPort(port, environment.HOST ?? LOOPBACK);
     if (local.database) {
       await step("MariaDB", async () =>
-        watch(await startDatabase(folder, settings.ports.database, settings.secrets)),
+        watch(await startDatabase({ folder, port: ports.database, secrets, throwaway: options.throwaway })),
       );
     }
     await step("Database schema", async () => {

@@ -34,6 +34,7 @@ export async function startTestStack({
     environment: { LOG_LEVEL: "warn", BASE_URL: undefined },
     demo,
     server,
+    throwaway: true,
     onLoss: (message) => console.error(message),
   });
   Object.assign(process.env, stack.settings.environment, {
