@@ -3,10 +3,12 @@ import { readFile, stat } from "node:fs/promises";
 import { basename } from "node:path";
 import { analyse } from "../app/measurement/analyse.ts";
 import type { Warning } from "../app/measurement/sweep.ts";
-import { readAny } from "../app/readers/read.ts";
+import { type PictureReader, readAny } from "../app/readers/read.ts";
 import { MAX_FILE_BYTES } from "../app/readers/reading.ts";
+import type { PictureDetails } from "../app/readers/screenshot/read-picture.ts";
+import { closePictureReader, readPictureFile } from "../app/services/picture.server.ts";
 import { type Options, parseOptions, USAGE, UsageError } from "./analyse/options.ts";
-import { type AnalysedFile, type FailedFile, jsonRow } from "./analyse/rows.ts";
+import { type AnalysedFile, type FailedFile, failedRow, jsonRow } from "./analyse/rows.ts";
 import { table } from "./analyse/table.ts";
 
 /** `npm run analyse -- FILE… [options]`: reads and analyses files with no server or database. */
@@ -32,6 +34,7 @@ async function main(args: string[]): Promise<number> {
     if ("error" in answer) code = 1;
     process.stdout.write(`${options.json ? json(answer, options) : plain(answer)}\n`);
   }
+  await closePictureReader();
   return code;
 }
 
@@ -45,11 +48,25 @@ async function analyseFile(path: string, { given, settings }: Options): Promise<
       error: { code: "too-large", message: `The file is larger than ${MAX_FILE_BYTES / 2 ** 20} MB.` },
     };
   const sha256 = createHash("sha256").update(bytes).digest("hex");
-  const result = await readAny({ name: file, bytes }, given);
-  if (!result.ok) return { file, sha256, error: result.problem };
+  let picture: PictureDetails | undefined;
+  const readAPicture: PictureReader = async (pictureFile, pictureGiven) => {
+    const read = await readPictureFile(pictureFile, pictureGiven);
+    picture = read.picture;
+    return read;
+  };
+  const result = await readAny({ name: file, bytes }, given, { picture: readAPicture });
+  if (!result.ok) return { file, sha256, error: result.problem, ...(picture ? { picture } : {}) };
   const analysis = analyse(result.sweep, settings);
   const warnings = distinct([...result.warnings, ...analysis.warnings]);
-  return { file, sha256, reading: result.reading, sweep: result.sweep, analysis, warnings };
+  return {
+    file,
+    sha256,
+    reading: result.reading,
+    sweep: result.sweep,
+    analysis,
+    warnings,
+    ...(picture ? { picture } : {}),
+  };
 }
 
 /** The file's bytes, null where there are too many, or a sentence where it can't be opened. */
@@ -69,7 +86,7 @@ function distinct(warnings: Warning[]): Warning[] {
 }
 
 function json(answer: AnalysedFile | FailedFile, { points }: Options): string {
-  return JSON.stringify("error" in answer ? answer : jsonRow(answer, points));
+  return JSON.stringify("error" in answer ? failedRow(answer) : jsonRow(answer, points));
 }
 
 function plain(answer: AnalysedFile | FailedFile): string {

@@ -2,7 +2,10 @@ import { createRequire } from "node:module";
 import { dirname, join } from "node:path";
 import sharp from "sharp";
 import { createWorker, PSM, type Worker } from "tesseract.js";
+import type { SweepFile } from "../readers/read.ts";
+import type { Given } from "../readers/reading.ts";
 import type { Ocr, Picture, TextKind, Word } from "../readers/screenshot/picture.ts";
+import { type PictureProgress, type PictureResult, readPicture } from "../readers/screenshot/read-picture.ts";
 
 /** Decoding and text recognition for `readers/screenshot` on the server and on the command line. */
 
@@ -63,6 +66,48 @@ export async function decodePicture(bytes: Uint8Array): Promise<Picture> {
     throw new PictureRefused("damaged", "This picture is damaged or cut short. Save or send it again.");
   }
 }
+
+/**
+ * Reads a picture file to a sweep. Text recognition is started when it is first needed and kept for the next
+ * picture; `closePictureReader` ends it. A file that is not decoded ends in a problem, never in an exception.
+ */
+export async function readPictureFile(
+  file: SweepFile,
+  given: Given = {},
+  progress?: PictureProgress,
+): Promise<PictureResult> {
+  let pixels: Picture;
+  try {
+    pixels = await decodePicture(file.bytes);
+  } catch (error) {
+    if (!(error instanceof PictureRefused)) throw error;
+    const unseen = { confidence: 0, saw: "The picture was not decoded." };
+    const picture = {
+      width: 0,
+      height: 0,
+      frame: null,
+      axes: null,
+      traces: [],
+      points: null,
+      stages: { frame: unseen, axes: unseen, trace: unseen },
+    };
+    return { ok: false, problem: { code: error.code, message: error.message }, picture };
+  }
+  const ocr: Ocr = async (region, kind) => {
+    recognition ??= openTextRecognition();
+    return (await recognition).ocr(region, kind);
+  };
+  return readPicture(pixels, ocr, given.screenshot, progress);
+}
+
+/** Ends text recognition; the next picture starts it again. */
+export async function closePictureReader(): Promise<void> {
+  const open = recognition;
+  recognition = null;
+  await (await open)?.close();
+}
+
+let recognition: Promise<TextRecognition> | null = null;
 
 const MODES: Record<TextKind, PSM> = {
   scattered: PSM.SPARSE_TEXT,

@@ -1,5 +1,7 @@
 import type { Analysis, Dip, Sweep, Warning } from "../../app/measurement/sweep.ts";
 import type { Reading, ReadProblem } from "../../app/readers/reading.ts";
+import type { PictureDetails } from "../../app/readers/screenshot/read-picture.ts";
+import type { ReadPoints } from "../../app/readers/screenshot/to-sweep.ts";
 
 /** One file's answer, in the field names that other programs rely on. */
 export interface AnalysedFile {
@@ -9,16 +11,23 @@ export interface AnalysedFile {
   sweep: Sweep;
   analysis: Analysis;
   warnings: Warning[];
+  /** Of pictures only. */
+  picture?: PictureDetails;
 }
 
 export interface FailedFile {
   file: string;
   sha256?: string;
   error: ReadProblem;
+  /** What was seen in a picture all the same. */
+  picture?: PictureDetails;
 }
 
 /** The JSON object of a file; numbers that are unknown or infinite are null. */
-export function jsonRow({ file, sha256, reading, sweep, analysis, warnings }: AnalysedFile, points: boolean) {
+export function jsonRow(
+  { file, sha256, reading, sweep, analysis, warnings, picture }: AnalysedFile,
+  points: boolean,
+) {
   const n = sweep.frequencyHz.length;
   return {
     file,
@@ -39,8 +48,22 @@ export function jsonRow({ file, sha256, reading, sweep, analysis, warnings }: An
     },
     dips: analysis.dips.map(dipRow),
     warnings,
-    ...(points ? { points: pointRow(reading, sweep) } : {}),
+    ...(picture ? pictureRow(picture) : {}),
+    ...(points ? { points: picture?.points ? seenRow(picture.points) : pointRow(reading, sweep) } : {}),
   };
+}
+
+/** The JSON object of a file that was not read. */
+export function failedRow({ picture, ...row }: FailedFile) {
+  return { ...row, ...(picture?.frame ? pictureRow(picture) : {}) };
+}
+
+function pictureRow({ frame, axes, traces }: PictureDetails) {
+  return { frame, axes, traces };
+}
+
+function seenRow({ frequencyHz, value }: ReadPoints) {
+  return { frequencyHz: Array.from(frequencyHz), value: Array.from(value) };
 }
 
 function dipRow(dip: Dip) {

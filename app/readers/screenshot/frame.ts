@@ -1,6 +1,6 @@
-import { countDivisions } from "./divisions.ts";
+import { countDivisions, evenEnds } from "./divisions.ts";
 import { findLines } from "./lines.ts";
-import { brightness, type Line, type Picture, type Stage, transpose } from "./picture.ts";
+import { type Box, brightness, type Line, type Picture, type Stage, transpose } from "./picture.ts";
 
 /** The plot's outer lines and its divisions. */
 export interface Frame {
@@ -31,6 +31,8 @@ const END_TOLERANCE = 3;
 const TICK_LENGTH = 12;
 /** Half the width over which one outline may be found as several lines. */
 const THICK_OUTLINE = 4.2;
+/** Pixels by which an outline may miss its library's standard place. */
+const MARGIN_TOLERANCE = 1.6;
 /** A tick's label can seem to continue the line further. */
 const LABEL_REACH = 24;
 /** Smallest share of the picture's sides that a plot has. */
@@ -57,10 +59,14 @@ export function findFrame(
   if (!best) return null;
   const settle = (lines: Line[], at: number, from: number, to: number) =>
     given ? at : centreOfStroke(lines, at, from, to);
-  const left = settle(verticals, best.left, best.top, best.bottom);
-  const right = settle(verticals, best.right, best.top, best.bottom);
-  const top = settle(horizontals, best.top, best.left, best.right);
-  const bottom = settle(horizontals, best.bottom, best.left, best.right);
+  const settled = {
+    left: settle(verticals, best.left, best.top, best.bottom),
+    right: settle(verticals, best.right, best.top, best.bottom),
+    top: settle(horizontals, best.top, best.left, best.right),
+    bottom: settle(horizontals, best.bottom, best.left, best.right),
+  };
+  const evened = given ? settled : evenOut(settled, horizontals, verticals);
+  const { left, top, right, bottom } = given ? evened : onStandardMargins(evened, width, height);
   const horizontal = horizontals.filter((l) => between(l.position, top, bottom) && covers(l, left, right));
   const vertical = verticals.filter((l) => between(l.position, left, right) && covers(l, top, bottom));
   const rows = countDivisions(grey, width, { left, right, top, bottom }, horizontal);
@@ -75,6 +81,37 @@ export function findFrame(
     ? "The frame was given."
     : `${Math.round(best.sides)} of 4 outer lines and ${Math.round(best.inside)} lines inside that end at them.`;
   return { frame: { left, top, right, bottom, columns, rows }, horizontal, vertical, confidence, saw };
+}
+
+/** Evenly spaced grid lines say where the outer lines lie better than these do alone. */
+function evenOut<B extends Box>(box: B, horizontals: Line[], verticals: Line[]): B {
+  const across = verticals.filter((l) => covers(l, box.top, box.bottom)).map((l) => l.position);
+  const down = horizontals.filter((l) => covers(l, box.left, box.right)).map((l) => l.position);
+  const [left, right] = evenEnds(across, box.left, box.right);
+  const [top, bottom] = evenEnds(down, box.top, box.bottom);
+  return { ...box, left, right, top, bottom };
+}
+
+/**
+ * A common plotting library (matplotlib, defaults `figure.subplot.*`) sets its plot at fixed shares of the
+ * picture, draws the data there, and the outline on the next whole pixels. Where all four sides agree with
+ * those shares, the unrounded place is the better one.
+ */
+function onStandardMargins<B extends { left: number; top: number; right: number; bottom: number }>(
+  box: B,
+  width: number,
+  height: number,
+): B {
+  const exact = {
+    left: 0.125 * width - 0.5,
+    right: 0.9 * width - 0.5,
+    top: 0.12 * height - 0.5,
+    bottom: 0.89 * height - 0.5,
+  };
+  const near = (["left", "right", "top", "bottom"] as const).every(
+    (side) => Math.abs(box[side] - exact[side] - 0.5) <= MARGIN_TOLERANCE,
+  );
+  return near ? { ...box, ...exact } : box;
 }
 
 interface Rectangle {

@@ -14,6 +14,8 @@ const END_WINDOW_DOTTED = 32;
 /** Pixels without the step that count as a long hole, and the share of them that a line may have. */
 const LONG_HOLE = 9;
 const MOST_HOLES = 0.35;
+/** Pixels of a line that are looked at for its place. */
+const SAMPLES = 150;
 /** Rows that one stroke's edges may lie apart: strokes are up to 4 pixels thick. */
 const THICKEST = 4;
 
@@ -169,9 +171,10 @@ function measureLine(group: Chain[], grey: Float32Array, width: number, height: 
   const alike = group.filter((c) => Math.abs(c.step) > 0.3 * Math.abs(strongest.step));
   const from = Math.min(...alike.map((c) => c.from));
   const to = Math.max(...alike.map((c) => c.to));
-  const profile: number[] = [];
-  for (let y = first; y <= last; y++)
-    profile.push(rowLevel(grey, width, Math.min(Math.max(y, 0), height - 1), from, to));
+  const rows = Array.from({ length: last - first + 1 }, (_, i) =>
+    Math.min(Math.max(first + i, 0), height - 1),
+  );
+  const profile = rowLevels(grey, width, rows, from, to);
   const above = profile[0];
   const below = profile[profile.length - 1];
   const kind = opposite ? "stroke" : "edge";
@@ -184,10 +187,19 @@ function measureLine(group: Chain[], grey: Float32Array, width: number, height: 
   };
 }
 
-function rowLevel(grey: Float32Array, width: number, y: number, from: number, to: number): number {
-  let sum = 0;
-  for (let x = from; x <= to; x++) sum += grey[y * width + x];
-  return sum / (to - from + 1);
+/** Brightness of a row along a line: the median, which crossing traces leave alone; of dotted lines the mean. */
+function rowLevels(grey: Float32Array, width: number, rows: number[], from: number, to: number): number[] {
+  const step = Math.max(1, Math.floor((to - from) / SAMPLES));
+  const means: number[] = [];
+  const medians: number[] = [];
+  for (const y of rows) {
+    const values: number[] = [];
+    for (let x = from; x <= to; x += step) values.push(grey[y * width + x]);
+    means.push(values.reduce((a, v) => a + v, 0) / values.length);
+    medians.push(values.sort((a, b) => a - b)[values.length >> 1]);
+  }
+  const range = (v: number[]) => Math.max(...v) - Math.min(...v);
+  return range(medians) > 0.6 * range(means) ? medians : means;
 }
 
 /** Centre of what stands out from both sides. */

@@ -12,7 +12,7 @@ const SURE_WORD = 0.86;
 const VOTING_SIZES = [16, 18, 22, 26, 32];
 const BEST_DIGIT_HEIGHT = 18;
 /** Share of the readings that makes a 6, 8 or 9 a zero. */
-const ZERO_SHARE = 0.2;
+const ZERO_SHARE = 0.1;
 
 /**
  * Reads what is printed around a plot, places in pixels of the picture.

@@ -1,0 +1,71 @@
+import type { Ground } from "./ground.ts";
+import type { Rgb } from "./oklab.ts";
+import type { Picture } from "./picture.ts";
+
+/** A grid line nearer to the trace than this share of the squared distance to the ground is not told apart. */
+const OWN_COLOR = 0.05;
+
+/** How much of each pixel inside the plot a colour covers, 0 to 1, row by row. */
+export interface Coverage {
+  width: number;
+  height: number;
+  /** Picture place of the first number. */
+  left: number;
+  top: number;
+  share: Float32Array;
+}
+
+/** Colour error, in parts of the distance from ground to trace, at which a pixel counts to a third. */
+const COLOR_TOLERANCE = 0.35;
+/** The same, in steps of 255, for what compression adds. */
+const WEAR_TOLERANCE = 14;
+
+/**
+ * Share of every pixel that is covered by a colour: the place between ground and colour on which the
+ * pixel falls, less what lies off that line. On grid lines the line's own colour is the ground.
+ */
+export function coverageOf(picture: Picture, ground: Ground, color: Rgb): Coverage {
+  const width = ground.right - ground.left + 1;
+  const height = ground.bottom - ground.top + 1;
+  const share = new Float32Array(width * height);
+  const base = difference(ground.color, color);
+  const rowBase = ground.rows.map((g) => usable(g, color, base));
+  const columnBase = ground.columns.map((g) => usable(g, color, base));
+  const { data } = picture;
+  for (let y = 0; y < height; y++) {
+    const rowGround = rowBase[y + ground.top];
+    let j = 4 * ((y + ground.top) * picture.width + ground.left);
+    for (let x = 0; x < width; x++, j += 4) {
+      const d = rowGround ?? columnBase[x + ground.left] ?? base;
+      const red = data[j] - d.from[0];
+      const green = data[j + 1] - d.from[1];
+      const blue = data[j + 2] - d.from[2];
+      const along = (red * d.to[0] + green * d.to[1] + blue * d.to[2]) / d.square;
+      if (along < 0.12) continue;
+      const off =
+        (red - along * d.to[0]) ** 2 + (green - along * d.to[1]) ** 2 + (blue - along * d.to[2]) ** 2;
+      share[y * width + x] = Math.min(1, along) * Math.exp(-off / d.tolerance);
+    }
+  }
+  return { width, height, left: ground.left, top: ground.top, share };
+}
+
+interface Difference {
+  from: Rgb;
+  to: Rgb;
+  square: number;
+  tolerance: number;
+}
+
+function difference(from: Rgb, color: Rgb): Difference {
+  const to: Rgb = [color[0] - from[0], color[1] - from[1], color[2] - from[2]];
+  const square = Math.max(1, to[0] ** 2 + to[1] ** 2 + to[2] ** 2);
+  return { from, to, square, tolerance: COLOR_TOLERANCE ** 2 * square + WEAR_TOLERANCE ** 2 };
+}
+
+/** A line's colour serves as ground unless it is nearly the trace's own: then the trace runs along it. */
+function usable(line: Rgb | undefined, color: Rgb, base: Difference): Difference | undefined {
+  if (!line) return undefined;
+  const own = difference(line, color);
+  return own.square < OWN_COLOR * base.square ? undefined : own;
+}

@@ -1,0 +1,70 @@
+import { type ColorCandidate, findColors } from "./colors.ts";
+import { coverageOf } from "./coverage.ts";
+import type { FoundFrame } from "./frame.ts";
+import { findGround } from "./ground.ts";
+import { hexOf, lookApart, type Rgb } from "./oklab.ts";
+import type { Picture, Stage } from "./picture.ts";
+import { readTrace, type Trace } from "./trace.ts";
+
+/** A trace colour with what following it gave. */
+export interface ColoredTrace {
+  color: Rgb;
+  hex: string;
+  trace: Trace;
+  /** Higher is likelier to be the sweep. */
+  score: number;
+}
+
+export interface FoundTraces extends Stage {
+  /** Likeliest first; empty where nothing but ground and grid was seen. */
+  traces: ColoredTrace[];
+}
+
+/** Difference from the ground from which a colour is as visible as a trace is meant to be. */
+const PLAIN_TO_SEE = 0.3;
+/** Share of the plot's height over which a trace must range to count fully as a sweep. */
+const LIVELY = 0.1;
+
+/**
+ * Finds the traces inside a frame, likeliest first.
+ *
+ * A sweep is followed through most columns and moves up and down; limit lines and references are flat.
+ * With `given` that colour comes first, whatever the others are.
+ */
+export function findTraces(picture: Picture, found: FoundFrame, given: Rgb | null): FoundTraces {
+  const ground = findGround(picture, found);
+  const { top, bottom } = found.frame;
+  const candidates: ColorCandidate[] = findColors(picture, ground);
+  const follow = (color: Rgb): ColoredTrace => {
+    const trace = readTrace(coverageOf(picture, ground, color), top, bottom);
+    const lively = Math.min(1, trace.extent / (LIVELY * (bottom - top)));
+    const score =
+      trace.share < 0.02
+        ? 0
+        : trace.explained *
+          (0.35 + 0.65 * lively) *
+          Math.min(1, 0.3 + trace.share * 2) *
+          plainness(color, ground.color);
+    return { color, hex: hexOf(color), trace, score };
+  };
+  const traces = candidates
+    .map((c) => follow(c.color))
+    .filter((t) => t.score > 0.02)
+    .sort((a, b) => b.score - a.score);
+  if (given) {
+    const near = traces.findIndex((t) => lookApart(t.color, given) < 0.12);
+    const own = near >= 0 ? traces.splice(near, 1)[0] : follow(given);
+    traces.unshift(own);
+  }
+  const chosen = traces[0];
+  if (!chosen) return { traces, confidence: 0, saw: "No trace was found inside the frame." };
+  const rival = traces[1] && !given ? traces[1].score / chosen.score : 0;
+  const confidence = Math.min(1, chosen.trace.explained) * (rival > 0.85 ? 0.7 : 1);
+  const saw = `The trace ${chosen.hex} was followed through ${Math.round(100 * chosen.trace.share)} % of the columns${traces.length > 1 ? `; ${traces.length - 1} other colour${traces.length > 2 ? "s" : ""} in view` : ""}.`;
+  return { traces, confidence, saw };
+}
+
+/** Halos of compression are hardly different from the ground. */
+function plainness(color: Rgb, ground: Rgb): number {
+  return 0.4 + 0.6 * Math.min(1, lookApart(color, ground) / PLAIN_TO_SEE);
+}
