@@ -2,6 +2,7 @@ import type { ReactNode } from "react";
 import { data, Links, Meta, Outlet, Scripts, ScrollRestoration, useRouteLoaderData } from "react-router";
 import type { Route } from "./+types/root";
 import "./app.css";
+import { refuseForeignOrigin } from "~/auth/origin.server";
 import { findPerson } from "~/auth/require.server";
 import { ErrorPage } from "~/components/ErrorPage";
 import { Footer } from "~/components/Footer";
@@ -17,6 +18,8 @@ export interface RootData {
   /** A message kept across a redirect, shown once. */
   flash: FlashMessage | null;
 }
+
+export const middleware: Route.MiddlewareFunction[] = [refuseForeignOrigin];
 
 export const links: Route.LinksFunction = () => [
   { rel: "icon", href: "/favicon.svg", type: "image/svg+xml" },

@@ -1,4 +1,5 @@
-import { isRouteErrorResponse } from "react-router";
+import { isRouteErrorResponse, useLocation } from "react-router";
+import type { PlainError } from "~/errors";
 import { LinkButton } from "./ui/Button";
 import { LostDrawing } from "./ui/drawings";
 
@@ -50,21 +51,32 @@ const WORDS: Record<number, Words> = {
 
 /** What a person reads when a page cannot be shown: what happened, what is safe, what to do. */
 export function ErrorPage({ error }: { error: unknown }) {
+  const { pathname, search } = useLocation();
   const status = isRouteErrorResponse(error) ? error.status : 500;
   const words = WORDS[status] ?? (status < 500 ? WORDS[400] : WORDS[500]);
-  const said =
-    isRouteErrorResponse(error) && status < 500 && typeof error.data === "string" ? error.data : "";
+  const said = isRouteErrorResponse(error) && status < 500 ? saidBy(error.data) : {};
+  const title = said.title ?? words.title;
+  const action = said.signIn
+    ? { to: `/sign-in?next=${encodeURIComponent(pathname + search)}`, label: "Sign in" }
+    : words.action;
   return (
     <section className="error-page">
-      <title>{`${words.title} · Swale`}</title>
+      <title>{`${title} · Swale`}</title>
       <LostDrawing />
       <p className="number soft">{status}</p>
-      <h1>{words.title}</h1>
-      {said && <p>{said}</p>}
-      <p>{words.text}</p>
+      <h1>{title}</h1>
+      {said.message && <p>{said.message}</p>}
+      {!said.title && <p>{words.text}</p>}
       <p>
-        <LinkButton to={words.action.to}>{words.action.label}</LinkButton>
+        <LinkButton to={action.to}>{action.label}</LinkButton>
       </p>
     </section>
   );
+}
+
+/** A route's own words, where it gave some. */
+function saidBy(data: unknown): Partial<PlainError> {
+  if (typeof data === "string") return { message: data };
+  const { title, message, signIn } = (data ?? {}) as Partial<PlainError>;
+  return typeof title === "string" && typeof message === "string" ? { title, message, signIn } : {};
 }
