@@ -2,7 +2,8 @@ import { createHash } from "node:crypto";
 import { readFile, stat } from "node:fs/promises";
 import { basename } from "node:path";
 import { analyse } from "../app/measurement/analyse.ts";
-import type { Warning } from "../app/measurement/sweep.ts";
+import { renormalise } from "../app/measurement/renormalise.ts";
+import type { Sweep, Warning } from "../app/measurement/sweep.ts";
 import { type PictureReader, readAny } from "../app/readers/read.ts";
 import { MAX_FILE_BYTES } from "../app/readers/reading.ts";
 import type { PictureDetails } from "../app/readers/screenshot/read-picture.ts";
@@ -38,7 +39,10 @@ async function main(args: string[]): Promise<number> {
   return code;
 }
 
-async function analyseFile(path: string, { given, settings }: Options): Promise<AnalysedFile | FailedFile> {
+async function analyseFile(
+  path: string,
+  { given, settings, systemOhm }: Options,
+): Promise<AnalysedFile | FailedFile> {
   const file = basename(path);
   const bytes = await bytesOf(path);
   if (typeof bytes === "string") return { file, error: { code: "no-file", message: bytes } };
@@ -56,8 +60,13 @@ async function analyseFile(path: string, { given, settings }: Options): Promise<
   };
   const result = await readAny({ name: file, bytes }, given, { picture: readAPicture });
   if (!result.ok) return { file, sha256, error: result.problem, ...(picture ? { picture } : {}) };
-  const analysis = analyse(result.sweep, settings);
-  const warnings = distinct([...result.warnings, ...analysis.warnings]);
+  const judged = renormalise(result.sweep, systemOhm);
+  const analysis = analyse(judged, settings);
+  const warnings = distinct([
+    ...result.warnings,
+    ...referenceWarning(result.sweep.referenceOhm, systemOhm, judged),
+    ...analysis.warnings,
+  ]);
   return {
     file,
     sha256,
@@ -77,6 +86,16 @@ async function bytesOf(path: string): Promise<Uint8Array | string | null> {
   } catch (error) {
     return `${path} could not be opened: ${(error as NodeJS.ErrnoException).code ?? (error as Error).message}.`;
   }
+}
+
+/** Findings hold for the reference that was asked for, 50 Ω unless told; without phase they can't be brought there. */
+function referenceWarning(fileOhm: number, systemOhm: number, judged: Sweep): Warning[] {
+  if (fileOhm === systemOhm) return [];
+  const message =
+    judged.referenceOhm === systemOhm
+      ? `The file is referred to ${fileOhm} Ω. The dips are those seen from ${systemOhm} Ω, converted through the impedance; --reference-ohm ${fileOhm} gives them for ${fileOhm} Ω.`
+      : `The file is referred to ${fileOhm} Ω and has no phase: the dips are those seen from ${fileOhm} Ω.`;
+  return [{ code: "other-reference", message }];
 }
 
 function distinct(warnings: Warning[]): Warning[] {

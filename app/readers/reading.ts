@@ -42,7 +42,7 @@ export interface TextSpec {
 export interface TouchstoneSpec {
   /** Which reflection of a file with several ports: 1 for S11, 2 for S22, … */
   port: number;
-  /** Ω, in place of the reference that the file states; null to keep the file's. */
+  /** Ω to which Γ is converted, through the impedance; null to keep the file's own reference. */
   referenceOhm: number | null;
 }
 

@@ -1,5 +1,6 @@
 import type { TextQuantity } from "../reading.ts";
 import type { Column } from "./columns.ts";
+import { isCounter } from "./frequency.ts";
 import { type Held, type Hints, kindOf } from "./kinds.ts";
 
 /** One way to read a reflection from the table's columns. */
@@ -38,7 +39,9 @@ const TRANSMISSION_COST = 60;
  * each value belongs to the nearest of them on its left.
  */
 export function findCandidates(columns: Column[], frequencies: number[], hints: Hints): Candidate[] {
-  const held = columns.filter((c) => !frequencies.includes(c.index)).map((c) => kindOf(c, hints));
+  const held = columns
+    .filter((c) => !frequencies.includes(c.index) && !(c.heading.role === "unknown" && isCounter(c)))
+    .map((c) => kindOf(c, hints));
   const pairs = [...headedPairs(held), ...unheadedPairs(held)];
   const singles: Pair[] = [];
   for (const h of held)

@@ -34,9 +34,10 @@ export function frequencyUnit(column: Column, preamble: string[]): UnitFound {
 }
 
 /** The counting column of a table: whole numbers in steps of one from 0 or 1. */
-function isCounter(column: Column): boolean {
+export function isCounter(column: Column): boolean {
   return (
     column.integers &&
+    column.direction === 1 &&
     column.minimum <= 1 &&
     column.values.slice(0, 5).every((v, i, all) => i === 0 || v - all[i - 1] === 1)
   );

@@ -5,7 +5,7 @@ import { indexLines, type Lines } from "../lines.ts";
 import { fail } from "../problem.ts";
 import type { Reading, ReadResult, TextSpec } from "../reading.ts";
 import { UNIT_HZ } from "../units.ts";
-import { counted, pointWarnings } from "../warnings.ts";
+import { counted } from "../wording.ts";
 import { splitCells } from "./cells.ts";
 import { COARSE, choose } from "./choose.ts";
 import { frequencyUnit } from "./frequency.ts";
@@ -118,7 +118,7 @@ function finish(reading: Reading, spec: TextSpec, table: Table, rows: Rows): Rea
     ok: true,
     reading,
     sweep,
-    warnings: [...pointWarnings(sweep.magnitude), ...impossibleWarning(reflection.impossible)],
+    warnings: impossibleWarning(reflection.impossible),
   };
 }
 

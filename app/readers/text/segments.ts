@@ -9,7 +9,8 @@ export interface Segment {
   rows: number;
 }
 
-export type LineKind = "row" | "blank" | "comment" | "broken" | "text";
+/** "short": a lone number, which is a row only inside a table. */
+export type LineKind = "row" | "short" | "blank" | "comment" | "broken" | "text";
 
 const COMMENT = /^\s*(?:[#!%*]|\/\/|;)/;
 /** Bytes that a plain row may hold: digits, signs, marks, delimiters, exponents, times of day. */
@@ -27,6 +28,9 @@ export function findSegments(lines: Lines, dialect: Dialect, fromLine = 1): Segm
         open = { firstLine: n, lastLine: n, rows: 0 };
         segments.push(open);
       }
+      open.lastLine = n;
+      open.rows++;
+    } else if (kind === "short" && open !== null && !isCutOff(lines, n, dialect)) {
       open.lastLine = n;
       open.rows++;
     } else if (kind === "text") open = null;
@@ -49,7 +53,7 @@ export function lineKind(line: string, dialect: Dialect): LineKind {
   }
   const texts = cells.length - numbers - gaps;
   if (numbers >= 1 && numbers + gaps >= 2 && texts <= Math.max(dialect.columns - 2, 0)) return "row";
-  if (cells.length === 1 && numbers === 1) return "row";
+  if (cells.length === 1 && numbers === 1) return "short";
   const startsAsNumber = /^\s*["+-]?\s*[\d.]/.test(line);
   return startsAsNumber && cells.length >= dialect.columns - 1 ? "broken" : "text";
 }
@@ -57,6 +61,15 @@ export function lineKind(line: string, dialect: Dialect): LineKind {
 /** Comment mark and the blanks around it taken off the front of a line. */
 export function withoutCommentMark(line: string): string {
   return line.replace(/^\s*(?:[#!%*]+|\/\/+|;)\s?/, "");
+}
+
+/** The file ends inside this line: a lone number with neither delimiter nor line end behind it. */
+function isCutOff(lines: Lines, line: number, { delimiter }: Dialect): boolean {
+  return (
+    line === lines.count &&
+    lines.end(line) === lines.bytes.length &&
+    !lines.text(line).trim().includes(delimiter)
+  );
 }
 
 function isPlainRow(lines: Lines, line: number, dialect: Dialect): boolean {

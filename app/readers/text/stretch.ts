@@ -2,7 +2,7 @@ import type { Lines } from "../lines.ts";
 import { fail } from "../problem.ts";
 import type { TextSpec } from "../reading.ts";
 import { type Rows, readRows } from "./rows.ts";
-import type { Segment } from "./segments.ts";
+import { lineKind, type Segment } from "./segments.ts";
 import type { Table } from "./table.ts";
 
 export interface Stretch {
@@ -56,6 +56,9 @@ export function joinAndCut(lines: Lines, table: Table, spec: TextSpec): Stretch 
         .slice(0, 5)
         .join(", ")}.`,
     );
+  const below = textBelow(lines, table, rows);
+  if (below !== null && later.length === 0)
+    assumed.push(`The text from line ${below} on, under the table, was passed over.`);
   if (rows.count < 2)
     fail(
       "not-a-sweep",
@@ -63,6 +66,15 @@ export function joinAndCut(lines: Lines, table: Table, spec: TextSpec): Stretch 
       block.firstLine,
     );
   return { rows, blocks, assumed };
+}
+
+/** First line under the table that is neither blank nor comment; null where there is none. */
+function textBelow(lines: Lines, { dialect }: Table, rows: Rows): number | null {
+  for (let n = (rows.line[rows.count - 1] ?? lines.count) + 1; n <= lines.count; n++) {
+    const kind = lineKind(lines.text(n), dialect);
+    if (kind !== "blank" && kind !== "comment") return n;
+  }
+  return null;
 }
 
 function continues(rows: Rows, more: Rows): boolean {

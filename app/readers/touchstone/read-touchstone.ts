@@ -1,3 +1,5 @@
+import { renormalise } from "../../measurement/renormalise.ts";
+import type { Warning } from "../../measurement/sweep.ts";
 import { assemble } from "../assemble.ts";
 import { plainText } from "../decode.ts";
 import { portsFromName } from "../detect.ts";
@@ -5,7 +7,7 @@ import { indexLines, type Lines } from "../lines.ts";
 import { fail } from "../problem.ts";
 import type { Reading, ReadResult, TouchstoneSpec } from "../reading.ts";
 import { UNIT_HZ } from "../units.ts";
-import { counted, pointWarnings } from "../warnings.ts";
+import { counted } from "../wording.ts";
 import { type DataEnd, fillMatrix, firstSetPairs, readData } from "./data.ts";
 import { contentOf, type Header, readHeader } from "./header.ts";
 import { reflectionAt } from "./network.ts";
@@ -33,12 +35,10 @@ export function readTouchstone(
       "no-such-port",
       `The file has ${counted(ports, "port")}; the reflection at port ${port} was asked for.`,
     );
-  const references = given.referenceOhm ? Array(ports).fill(given.referenceOhm) : referencesOf(header, ports);
-  if (!references.every((ohm) => ohm > 0 && ohm < Infinity))
-    fail(
-      "bad-given",
-      `A reference impedance of ${given.referenceOhm} Ω was given: expected a positive number.`,
-    );
+  const { referenceOhm } = given;
+  if (typeof referenceOhm === "number" && !(referenceOhm > 0 && referenceOhm < Infinity))
+    fail("bad-given", `A reference impedance of ${referenceOhm} Ω was given: expected a positive number.`);
+  const references = referencesOf(header, ports);
   const points = readPoints(lines, header, ports, port - 1, references);
   if (points.end.sets === 0)
     fail(
@@ -47,6 +47,7 @@ export function readTouchstone(
       Math.min(header.firstLine, lines.count),
     );
   const { sweep, assumed } = assemble(points, references[port - 1]);
+  const own = sweep.referenceOhm;
   const impedance = options.parameter !== "S";
   const reading: Reading = {
     format: "touchstone",
@@ -61,13 +62,13 @@ export function readTouchstone(
     ],
     confidence: 1,
     questions: ports > 1 ? [portQuestion(ports, port)] : [],
-    spec: { touchstone: { port, referenceOhm: given.referenceOhm ?? null } },
+    spec: { touchstone: { port, referenceOhm: referenceOhm ?? null } },
     shape: `touchstone-${ports}-${options.parameter}-${options.format}-${options.unit}`.toLowerCase(),
     preview: preview(lines, header, options),
   };
   if (ports > 1 && given.port === undefined)
     reading.assumed.push(`The file has ${ports} ports: S11 was taken.`);
-  const warnings = pointWarnings(sweep.magnitude);
+  const warnings: Warning[] = [];
   if (points.end.unfinished > 0)
     warnings.push({
       code: "cut-off",
@@ -78,7 +79,11 @@ export function readTouchstone(
       code: "frequency-count",
       message: `The file says ${header.frequencies} frequencies and holds ${points.end.sets}: those it holds were read.`,
     });
-  return { ok: true, reading, sweep, warnings };
+  if (referenceOhm && referenceOhm !== own)
+    reading.assumed.push(
+      `The file is referred to ${own} Ω; Γ was converted to ${referenceOhm} Ω through the impedance.`,
+    );
+  return { ok: true, reading, sweep: referenceOhm ? renormalise(sweep, referenceOhm) : sweep, warnings };
 }
 
 /** The count of ports, from [Number of Ports], else from the first frequency's numbers, else from the name. */
