@@ -1,6 +1,7 @@
 import { PAGE_PALETTE } from "./palette";
 import { At, across, Stretched } from "./place";
-import type { PlacedTrail, StripScene } from "./strip-scene";
+import type { StripScene } from "./strip-scene";
+import type { PlacedTrail } from "./trail-names";
 
 export interface StripTrailProps {
   placed: PlacedTrail;
@@ -12,7 +13,7 @@ const palette = PAGE_PALETTE;
 
 /** One dip followed from strip to strip: a line with a dot at each stop and its name at the newest. */
 export function StripTrail({ placed, scene, href }: StripTrailProps) {
-  const { trail, stops, turned, tier } = placed;
+  const { trail, stops, name } = placed;
   const newest = stops[0];
   if (!newest) return null;
   const colour = palette[trail.tone];
@@ -43,12 +44,12 @@ export function StripTrail({ placed, scene, href }: StripTrailProps) {
           <title>{stop.words}</title>
         </circle>
       ))}
-      {tier !== null && (
-        <At fraction={newest.fraction} y={newest.y} plotWidthPx={null} className={`tier-${tier}`}>
+      {name && (
+        <At fraction={newest.fraction} y={newest.y} plotWidthPx={null} className={`tier-${name.tier}`}>
           <text
-            x={turned ? -10 : 10}
-            y="4"
-            textAnchor={turned ? "end" : "start"}
+            x={name.side === "left" ? -10 : 10}
+            y={name.shiftY + 4}
+            textAnchor={name.side === "left" ? "end" : "start"}
             fontFamily={palette.monoFont}
             fontSize="11.5"
             fill={colour}

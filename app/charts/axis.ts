@@ -28,7 +28,7 @@ export interface FrequencyAxis {
 
 const LABEL_CHARACTER_PX = 7.2;
 const LABEL_GAP_PX = 14;
-const MOST_LINEAR_TICKS = 12;
+const MOST_LINEAR_TICKS = 16;
 /** Below this ratio of its ends a logarithmic axis is nearly linear and gets round steps. */
 const NEARLY_LINEAR_RATIO = 2.5;
 

@@ -52,9 +52,10 @@ export function widthBar(dip: ChartDip, designBands: readonly ChartBand[]): Widt
   };
   const lows = [hz, band?.lowHz, edges?.lowHz].filter((value) => value !== undefined && value !== null);
   const highs = [hz, band?.highHz, edges?.highHz].filter((value) => value !== undefined && value !== null);
-  const span = Math.max(Math.max(...highs) - Math.min(...lows), hz * 1e-4);
+  const [low, high] = [Math.min(...lows), Math.max(...highs)];
+  const span = Math.max(high - low, hz * 1e-4);
   const pad = band ? span * 0.15 : span * 0.5;
-  const from = Math.min(...lows) - pad;
+  const from = (low + high - span) / 2 - pad;
   const share = (value: number) => (value - from) / (span + 2 * pad);
   const stretch = (range: { lowHz: number; highHz: number } | null) =>
     range && { from: share(range.lowHz), width: share(range.highHz) - share(range.lowHz) };

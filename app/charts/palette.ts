@@ -67,7 +67,7 @@ export const PAPER_PALETTE: Palette = {
   heather: "#7b4b86",
   clay: "#994a25",
   moss: "#4f6827",
-  wash: "#cfdfd6",
+  wash: "#d6e6dd",
   water: "#c9dbe0",
   allocation: "#8d846c",
   ...PLAIN_FONTS,

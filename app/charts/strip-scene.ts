@@ -13,7 +13,7 @@ import type { ChartBand } from "./chart-types.ts";
 import { type ChartPoints, decimate } from "./decimate.ts";
 import { profilePaths } from "./paths.ts";
 import { type RibbonBand, ribbonBands } from "./ribbon.ts";
-import { TIER_PLOT_WIDTHS_PX } from "./tiers.ts";
+import { type PlacedTrail, placeTrails } from "./trail-names.ts";
 import { valueAxis } from "./value-axis.ts";
 
 export interface Strip {
@@ -57,16 +57,6 @@ export interface PlacedStrip {
   /** Top of the line with the step that led here; null without one. */
   stepY: number | null;
   dips: { id: string; fraction: number; y: number }[];
-}
-
-export interface PlacedTrail {
-  trail: Trail;
-  path: string;
-  stops: { dipId: string; fraction: number; y: number; words: string }[];
-  /** The name stands left of its dot. */
-  turned: boolean;
-  /** Narrowest tier at which the name is shown; null where it fits at none. */
-  tier: number | null;
 }
 
 export interface StripScene {
@@ -122,54 +112,8 @@ export function buildStripScene(input: StripSceneInput): StripScene {
     frequency: frequencyAxis(scale),
     ribbon: ribbonBands(scale, input.bands, input.designBands),
     strips,
-    trails: withNames((input.trails ?? []).map((trail) => placeTrail(trail, strips))),
+    trails: placeTrails(input.trails ?? [], strips, PATH_WIDTH),
     heightPx: y,
     pathWidth: PATH_WIDTH,
   };
-}
-
-function placeTrail(trail: Trail, strips: readonly PlacedStrip[]): PlacedTrail {
-  const stops = strips.flatMap((placed) => {
-    const stop = trail.stops.find(({ stripId }) => stripId === placed.strip.id);
-    const dip = stop && placed.dips.find(({ id }) => id === stop.dipId);
-    return stop && dip ? [{ dipId: dip.id, fraction: dip.fraction, y: dip.y, words: stop.words }] : [];
-  });
-  const path = stops.map(({ fraction, y }) => `${round(fraction * PATH_WIDTH)} ${round(y)}`).join("L");
-  const turned = (stops[0]?.fraction ?? 0) > NAME_TURNS_AT;
-  return { trail, path: path && `M${path}`, stops, turned, tier: null };
-}
-
-/** Gives each name the narrowest tier at which it runs into no other and stays in the plot. */
-function withNames(trails: PlacedTrail[]): PlacedTrail[] {
-  for (const [tier, plotWidthPx] of TIER_PLOT_WIDTHS_PX.entries()) {
-    for (const trail of trails) {
-      if (trail.tier !== null || !trail.stops[0]) continue;
-      const [from, to] = nameExtent(trail, plotWidthPx);
-      const clear = trails.every((other) => {
-        if (other === trail || other.tier === null || !other.stops[0]) return true;
-        const [otherFrom, otherTo] = nameExtent(other, plotWidthPx);
-        return (
-          Math.abs(other.stops[0].y - trail.stops[0].y) > NAME_HEIGHT_PX || from > otherTo || to < otherFrom
-        );
-      });
-      if (clear && from >= 0 && to <= plotWidthPx) trail.tier = tier;
-    }
-  }
-  return trails;
-}
-
-function nameExtent({ stops, turned, trail }: PlacedTrail, plotWidthPx: number): [number, number] {
-  const at = stops[0].fraction * plotWidthPx;
-  const length = NAME_OFFSET_PX + trail.label.length * NAME_CHARACTER_PX;
-  return turned ? [at - length, at] : [at, at + length];
-}
-
-const NAME_CHARACTER_PX = 7;
-const NAME_OFFSET_PX = 14;
-const NAME_HEIGHT_PX = 15;
-/** Beyond this share of the width a name stands on the left of its dot. */
-const NAME_TURNS_AT = 0.6;
-
-function round(value: number): number {
-  return Math.round(value * 100) / 100;
 }

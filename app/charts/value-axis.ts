@@ -1,4 +1,4 @@
-/** The value axis: return loss (0 dB at the top, going down) or SWR (1 at the bottom, logarithmic). */
+/** The value axis: return loss (0 dB at the top, going down) or SWR (1 lowest, logarithmic). */
 
 export type ChartQuantity = "rl" | "swr";
 
@@ -20,6 +20,8 @@ export interface ValueAxis {
 
 /** SWR beyond this is drawn at the edge and said to be off the scale: at 10 two thirds of the power come back. */
 const SWR_TOP = 10;
+/** Land under SWR 1, so that a cairn has ground to lie on. */
+const SWR_GROUND_PX = 44;
 const SWR_TICKS = [1, 1.5, 2, 3, 5, 10];
 /** Return loss deeper than this is below what an amateur's bench can tell apart (common practice, no source). */
 const DEEPEST_DB = 60;
@@ -63,7 +65,8 @@ function returnLossAxis(
 }
 
 function swrAxis(heightPx: number): ValueAxis {
-  const yOfSwr = (swr: number) => heightPx * (1 - Math.log(swr) / Math.log(SWR_TOP));
+  const matchedY = heightPx - Math.min(SWR_GROUND_PX, heightPx * 0.15);
+  const yOfSwr = (swr: number) => matchedY * (1 - Math.log(swr) / Math.log(SWR_TOP));
   return {
     quantity: "swr",
     heightPx,
