@@ -90,6 +90,15 @@ export async function findAllByProject(
 
 /** The newest sweep that anybody may look at, demonstrations before all others. */
 export async function findPublicExample(tx: Queryable = db) {
+  // Chosen by its id first: sorting must not carry the drawings along.
+  const newest = tx
+    .select({ id: sweeps.id })
+    .from(sweeps)
+    .innerJoin(projects, eq(projects.id, sweeps.projectId))
+    .where(and(eq(projects.visibility, "public"), isNotNull(sweeps.analysisId), isNotNull(sweeps.preview)))
+    .orderBy(desc(projects.demo), desc(sweeps.createdAt))
+    .limit(1)
+    .as("newest");
   const rows = await tx
     .select({
       sweep: {
@@ -110,10 +119,9 @@ export async function findPublicExample(tx: Queryable = db) {
       settings: analyses.settings,
     })
     .from(sweeps)
+    .innerJoin(newest, eq(newest.id, sweeps.id))
     .innerJoin(projects, eq(projects.id, sweeps.projectId))
     .innerJoin(analyses, eq(analyses.id, sweeps.analysisId))
-    .where(and(eq(projects.visibility, "public"), isNotNull(sweeps.preview)))
-    .orderBy(desc(projects.demo), desc(sweeps.createdAt))
     .limit(1);
   return rows[0];
 }
