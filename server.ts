@@ -15,6 +15,7 @@ import { readiness } from "~/services/health.server";
 import { startJobs } from "~/services/jobs.server";
 import { log } from "~/services/log.server";
 import { metricsText } from "~/services/metrics.server";
+import { closeReaders } from "~/services/reading.server";
 import { securityHeaders } from "~/services/security-headers.server";
 import { onShutdown, runShutdown } from "~/services/shutdown.server";
 
@@ -58,6 +59,7 @@ export function createApp(development = false): Express {
 /** What runs beside the answering, once a process. */
 export function startBackground(): void {
   onShutdown(() => pool.end());
+  onShutdown(closeReaders);
   onShutdown(startJobs());
 }
 
