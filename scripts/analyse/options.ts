@@ -8,13 +8,15 @@ export interface Options {
   points: boolean;
   given: Given;
   settings: AnalysisSettings;
+  /** Ω for which findings are given. */
+  systemOhm: number;
 }
 
 export const USAGE = `Usage: npm run analyse -- FILE… [options]
   --json                  one JSON object a line, a file each
   --points                with the points: frequency and value in the quantity read (abs Γ, re and im for complex ones)
   --swr-limit S           limit of the bandwidth (2)
-  --reference-ohm R       reference impedance, in place of the file's or 50
+  --reference-ohm R       reference impedance of the findings (50), and of files that name none
   --zero-db DB            level that counts as full reflection
   --quantity Q            s11-db, return-loss, swr, level, gamma or impedance
 Pictures:
@@ -34,6 +36,7 @@ export function parseOptions(args: string[]): Options {
     points: false,
     given: {},
     settings: { ...DEFAULT_SETTINGS },
+    systemOhm: 50,
   };
   const picture: ScreenshotSpec = {};
   const rest = [...args];
@@ -63,8 +66,10 @@ const VALUED: Record<string, Apply> = {
     options.settings.swrLimit = number(value, name);
     if (!(options.settings.swrLimit > 1)) throw new UsageError(`${name}: expected a number over 1.`);
   },
-  "--reference-ohm": (value, { given }, picture, name) => {
+  "--reference-ohm": (value, options, picture, name) => {
+    const { given } = options;
     const referenceOhm = positive(value, name);
+    options.systemOhm = referenceOhm;
     given.text = { ...given.text, referenceOhm };
     given.touchstone = { ...given.touchstone, referenceOhm };
     picture.referenceOhm = referenceOhm;
