@@ -35,12 +35,17 @@ export async function putObject(key: string, bytes: Uint8Array, contentType = "a
       ContentLength: bytes.length,
     }),
   );
-  const back = await getObject(key);
-  if (sha256Of(back) !== sha256Of(bytes)) {
-    await deleteObject(key);
-    throw new Error(`The store gave back other bytes than it was given for ${key}.`);
+  const sha256 = sha256Of(bytes);
+  for (const waitMs of READ_BACK_WAITS_MS) {
+    await new Promise((resolve) => setTimeout(resolve, waitMs));
+    if (sha256Of(await getObject(key)) === sha256) return;
   }
+  await deleteObject(key);
+  throw new Error(`The store gave back other bytes than it was given for ${key}.`);
 }
+
+/** The local store answers a put a moment before its file is whole: seen once in 300 puts on a busy machine. */
+const READ_BACK_WAITS_MS = [0, 20, 100, 500, 1500];
 
 export async function getObject(key: string): Promise<Uint8Array> {
   const answer = await client.send(new GetObjectCommand({ Bucket: env.S3_BUCKET, Key: key }));
