@@ -7,7 +7,7 @@ export default defineConfig({
     root: new URL("..", import.meta.url).pathname,
     include: ["tests/browser/**/*.test.ts"],
     globalSetup: ["scripts/suites/server-setup.ts"],
-    setupFiles: ["tests/quiet-console.ts"],
+    setupFiles: ["tests/base-url.ts", "tests/quiet-console.ts"],
     testTimeout: 120_000,
     hookTimeout: 120_000,
     pool: "forks",

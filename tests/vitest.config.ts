@@ -7,13 +7,12 @@ export default defineConfig({
     root: new URL("..", import.meta.url).pathname,
     include: ["tests/**/*.test.{ts,tsx}"],
     exclude: ["**/*.db.test.ts", "tests/web/**", "tests/browser/**"],
-    setupFiles: ["tests/quiet-console.ts"],
+    setupFiles: ["tests/base-url.ts", "tests/quiet-console.ts"],
     testTimeout: 20_000,
     pool: "threads",
     maxWorkers: 2,
     // What app/env.server.ts asks for; nothing answers at these addresses.
     env: {
-      BASE_URL: "http://localhost:3000",
       DATABASE_URL: "mysql://nobody@127.0.0.1:9/nowhere",
       S3_ENDPOINT: "http://127.0.0.1:9",
       S3_BUCKET: "nowhere",

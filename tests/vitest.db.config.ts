@@ -7,7 +7,7 @@ export default defineConfig({
     root: new URL("..", import.meta.url).pathname,
     include: ["tests/**/*.db.test.ts"],
     globalSetup: ["scripts/suites/parts-setup.ts"],
-    setupFiles: ["tests/worker-schema.ts", "tests/quiet-console.ts"],
+    setupFiles: ["tests/base-url.ts", "tests/worker-schema.ts", "tests/quiet-console.ts"],
     testTimeout: 30_000,
     pool: "forks",
     maxWorkers: 2,

@@ -7,7 +7,7 @@ export default defineConfig({
     root: new URL("..", import.meta.url).pathname,
     include: ["tests/web/**/*.test.ts"],
     globalSetup: ["scripts/suites/server-setup.ts"],
-    setupFiles: ["tests/web/environment.ts", "tests/quiet-console.ts"],
+    setupFiles: ["tests/base-url.ts", "tests/quiet-console.ts"],
     testTimeout: 60_000,
     hookTimeout: 60_000,
     pool: "forks",
