@@ -62,6 +62,10 @@ const RAISED: Record<string, number[]> = {
 const DIGIT_WIDTH = 0.8;
 const POINT_WIDTH = 0.4;
 
+/** Pixels within which an axis ends at a label, or at a rounder number. */
+const LABEL_PIXELS = 1.6;
+const ROUND_PIXELS = 0.8;
+
 /** Dashes of all kinds become a minus sign, tick marks behind the figure go. */
 export function cleanFigure(text: string): string {
   return text
@@ -139,7 +143,7 @@ function powerOfTen(word: Word): Candidate[] {
 }
 
 /** The number with the fewest digits within `tolerance` of a value. */
-export function roundest(value: number, tolerance: number): number {
+function roundest(value: number, tolerance: number): number {
   if (!(tolerance > 0)) return value;
   const start = Math.ceil(Math.log10(Math.max(Math.abs(value), tolerance, 1e-12))) + 1;
   for (let power = start; power > start - 14; power--) {
@@ -150,4 +154,11 @@ export function roundest(value: number, tolerance: number): number {
     }
   }
   return value;
+}
+
+/** The value at the end of an axis: a label's multiple if it is near, else the number with the fewest digits. */
+export function endValue(value: number, step: number, pixel: number): number {
+  const multiple = Math.round(value / step) * step;
+  if (Math.abs(multiple - value) <= LABEL_PIXELS * pixel) return Number(multiple.toPrecision(12));
+  return roundest(value, ROUND_PIXELS * pixel);
 }

@@ -1,9 +1,9 @@
 import { alignToLines } from "./align.ts";
-import { type Candidate, cleanFigure, repairedNumber, roundest, tickCandidates } from "./figures.ts";
+import { type Candidate, cleanFigure, endValue, repairedNumber, tickCandidates } from "./figures.ts";
 import type { Frame } from "./frame.ts";
 import type { Line, Word } from "./picture.ts";
 import { lettersApart, type Row, rowsOf } from "./rows.ts";
-import { fitTicks, refine, type TickFit } from "./tick-fit.ts";
+import { fitTicks, labelStep, refine, type TickFit } from "./tick-fit.ts";
 
 export interface FrequencyAxis {
   startHz: number;
@@ -150,11 +150,14 @@ function settle(fit: TickFit, row: Row, words: Word[], frame: Frame, lines: Line
     },
     along,
   );
+  const pixel = Math.abs(aligned.slope);
   const at = (x: number) => {
     const value = aligned.intercept + aligned.slope * x;
-    if (fit.scale === "linear") return roundest(value, 0.8 * Math.abs(aligned.slope));
+    if (fit.scale === "linear") return endValue(value, labelStep(fit), pixel);
+    const decade = Math.round(value);
+    if (Math.abs(decade - value) < 1.6 * pixel) return 10 ** decade;
     const plain = 10 ** value;
-    return roundest(plain, plain * Math.LN10 * 0.8 * Math.abs(aligned.slope));
+    return endValue(plain, Number.POSITIVE_INFINITY, plain * Math.LN10 * pixel);
   };
   const named = rowsOf(words)
     .filter((r) => (r.top > frame.bottom || r.bottom < frame.top) && !SETTINGS.test(r.text))

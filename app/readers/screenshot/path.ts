@@ -6,6 +6,9 @@ const LONGEST_BRIDGE = 24;
 const BRIDGE_PRICE = 0.12;
 const JUMP_PRICE = 0.14;
 const DEAREST_JUMP = 6;
+/** Price of a pixel between the middles of two runs, up to so many: small, for steep stretches are no fault. */
+const WANDER_PRICE = 0.02;
+const MOST_WANDER = 15;
 /** Price of beginning anew elsewhere, in columns; cheap where the trace left the plot through an edge. */
 const RESTART_PRICE = 25;
 const EDGE_RESTART_PRICE = 2;
@@ -40,7 +43,7 @@ export function followTrace(columns: Run[][], top: number, bottom: number): (Run
             DEAREST_JUMP,
             JUMP_PRICE * Math.max(0, gapBetween(before.run, run) - 1.5 * (back - 1)),
           );
-          offer(node, before, before.score - BRIDGE_PRICE * (back - 1) - jump);
+          offer(node, before, before.score - BRIDGE_PRICE * (back - 1) - jump - wander(before.run, run));
         }
       }
       if (best) offer(node, best, best.score - RESTART_PRICE);
@@ -57,13 +60,8 @@ export function followTrace(columns: Run[][], top: number, bottom: number): (Run
   const path: (Run | undefined)[] = new Array(columns.length).fill(undefined);
   const offset = columns.find((runs) => runs.length > 0)?.[0].column ?? 0;
   const firstColumn = offset - columns.findIndex((runs) => runs.length > 0);
-  for (let node: Node | null = lastOf(best); node; node = node.from)
-    path[node.run.column - firstColumn] = node.run;
+  for (let node = best as Node | null; node; node = node.from) path[node.run.column - firstColumn] = node.run;
   return path;
-}
-
-function lastOf(node: Node | null): Node | null {
-  return node;
 }
 
 function offer(node: Node, from: Node, score: number): void {
@@ -71,6 +69,11 @@ function offer(node: Node, from: Node, score: number): void {
     node.score = score;
     node.from = from;
   }
+}
+
+/** Of two runs that both touch the last one, the one that goes on as before. */
+function wander(a: Run, b: Run): number {
+  return WANDER_PRICE * Math.min(MOST_WANDER, Math.abs(a.middle - b.middle));
 }
 
 function worth(run: Run): number {

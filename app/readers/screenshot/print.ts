@@ -9,10 +9,10 @@ const LARGEST_SCALE = 4;
 /** Confidence above which a figure is not read again. */
 const SURE_WORD = 0.86;
 /** Heights of digits, in pixels, at which a doubtful figure is read. */
-const VOTING_SIZES = [16, 18, 22, 26, 32];
+const VOTING_SIZES = [14, 16, 18, 22, 26, 32];
 const BEST_DIGIT_HEIGHT = 18;
-/** Share of the readings that makes a 6, 8 or 9 a zero. */
-const ZERO_SHARE = 0.1;
+/** Weight of the readings that differ from which a 6, 8 or 9 is a zero. */
+const WAVERING_SHARE = 0.1;
 
 /**
  * Reads what is printed around a plot, places in pixels of the picture.
@@ -144,7 +144,10 @@ function isNear(a: Word, b: Word, reach: number): boolean {
   return a.left < b.right + reach && a.right > b.left - reach;
 }
 
-/** The digit with most weight; a zero with a stroke inside is read as 6 or 8 now and then, these never as 0. */
+/**
+ * The digit with most weight. A zero with a stroke inside is read as 6, 8 or 9, now one, now another; a true
+ * 6, 8 or 9 is read the same way each time: readings that waver among these are a zero.
+ */
 function electDigit(reads: { digit: string; weight: number }[]): { digit: string; share: number } {
   const votes = new Map<string, number>();
   let total = 0;
@@ -153,10 +156,9 @@ function electDigit(reads: { digit: string; weight: number }[]): { digit: string
     total += weight;
   }
   const [first] = [...votes].sort((a, b) => b[1] - a[1]);
-  const zero = votes.get("0") ?? 0;
-  if (/[689]/.test(first[0]) && zero > ZERO_SHARE * total)
-    return { digit: "0", share: (zero + first[1]) / total };
-  return { digit: first[0], share: first[1] / total };
+  const round = ["0", "6", "8", "9"].reduce((sum, digit) => sum + (votes.get(digit) ?? 0), 0);
+  const wavers = /[0689]/.test(first[0]) && round - first[1] > WAVERING_SHARE * total;
+  return wavers ? { digit: "0", share: round / total } : { digit: first[0], share: first[1] / total };
 }
 
 /** Digits before and behind the point. */

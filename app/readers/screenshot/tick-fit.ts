@@ -70,14 +70,24 @@ export function fitTicks(
   return best && refine(best, along);
 }
 
-/** Labels are mostly whole multiples of their distance. */
-function evenness(fit: TickFit): number {
-  if (fit.scale === "log" || fit.used.length < 3) return 0;
-  const values = fit.used.map((u) => u.value).sort((a, b) => a - b);
+/** Least distance of two labels that agree, in the axis' unit (decades of a logarithmic one). */
+export function labelStep(fit: TickFit): number {
+  const values = fit.used
+    .map((u) => (fit.scale === "log" ? Math.log10(u.value) : u.value))
+    .sort((a, b) => a - b);
   let step = Infinity;
   for (let i = 1; i < values.length; i++)
     if (values[i] > values[i - 1]) step = Math.min(step, values[i] - values[i - 1]);
-  return values.every((v) => Math.abs(v / step - Math.round(v / step)) < 0.02) ? EVEN_LABELS : 0;
+  return step;
+}
+
+/** Labels are mostly whole multiples of their distance. */
+function evenness(fit: TickFit): number {
+  if (fit.scale === "log" || fit.used.length < 3) return 0;
+  const step = labelStep(fit);
+  return fit.used.every((u) => Math.abs(u.value / step - Math.round(u.value / step)) < 0.02)
+    ? EVEN_LABELS
+    : 0;
 }
 
 function better(a: TickFit, b: TickFit): boolean {

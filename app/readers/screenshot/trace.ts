@@ -1,3 +1,4 @@
+import { findBlobs } from "./blobs.ts";
 import type { Coverage } from "./coverage.ts";
 import { followTrace } from "./path.ts";
 import { type Run, runsByColumn } from "./strokes.ts";
@@ -33,7 +34,15 @@ const EDGE_REACH = 5;
  * Short hidden stretches (markers) are bridged with the slopes at both sides and carry more uncertainty.
  */
 export function readTrace(coverage: Coverage, top: number, bottom: number): Trace {
-  const path = followTrace(runsByColumn(coverage), top, bottom);
+  const columns = runsByColumn(coverage);
+  let path = followTrace(columns, top, bottom);
+  const blobs = findBlobs(coverage, thicknessOf(path));
+  if (blobs)
+    path = followTrace(
+      columns.map((runs) => runs.filter((r) => !touches(r, blobs, coverage))),
+      top,
+      bottom,
+    );
   const width = path.length;
   const row = new Float64Array(width).fill(Number.NaN);
   const uncertainty = new Float64Array(width).fill(Number.NaN);
@@ -59,6 +68,15 @@ export function readTrace(coverage: Coverage, top: number, bottom: number): Trac
     explained: accounted / width,
     extent,
   };
+}
+
+/** A run that a filled area has merged with says nothing about the trace. */
+function touches(run: Run, blobs: Uint8Array, coverage: Coverage): boolean {
+  const { width, left, top } = coverage;
+  for (let y = Math.ceil(run.upper); y <= Math.floor(run.lower); y++) {
+    if (blobs[(y - top) * width + run.column - left]) return true;
+  }
+  return false;
 }
 
 /** Ink across the stroke: a steep stroke leaves more in a column by the slope. */

@@ -1,9 +1,9 @@
 import { alignToLines } from "./align.ts";
-import { cleanFigure, repairedNumber, roundest, tickCandidates } from "./figures.ts";
+import { cleanFigure, endValue, repairedNumber, tickCandidates } from "./figures.ts";
 import type { Frame } from "./frame.ts";
 import type { Line, Word } from "./picture.ts";
 import { lettersApart, rowsOf } from "./rows.ts";
-import { fitTicks, refine } from "./tick-fit.ts";
+import { fitTicks, labelStep, refine } from "./tick-fit.ts";
 
 export type PictureQuantity = "s11-db" | "return-loss" | "swr" | "level";
 
@@ -82,7 +82,8 @@ function fromLabels(
     intercept /= 10;
     slope /= 10;
   }
-  const at = (y: number) => roundest(intercept + slope * y, 0.8 * Math.abs(slope));
+  const step = labelStep(fit) * (slope / aligned.slope);
+  const at = (y: number) => endValue(intercept + slope * y, step, Math.abs(slope));
   const share = fit.inliers / Math.max(1, fit.total);
   const confidence = Math.min(0.98, 0.3 + 0.09 * Math.min(5, fit.weight) + 0.25 * share);
   return {
