@@ -16,6 +16,7 @@ import { plainText, renderNote } from "~/services/markdown.server";
 import { listThread } from "~/services/notes.server";
 import { listSweeps } from "~/services/sweep-summaries.server";
 import type { Route } from "./+types/project";
+import { SharedAxis } from "./components/SharedAxis";
 
 export async function loader(args: Route.LoaderArgs) {
   const access = await requireProject(args, "project.read");
@@ -136,6 +137,12 @@ function Strips({ data }: { data: Data }) {
             </div>
           </li>
         ))}
+        {axis.fromHz < axis.toHz && (
+          <li className="strip" aria-hidden="true">
+            <div />
+            <SharedAxis {...axis} />
+          </li>
+        )}
       </ol>
       {data.sweepCount > data.sweeps.length && (
         <p>

@@ -155,7 +155,12 @@ function columnsFor(base: string): Column<SweepSummary>[] {
       label: "Dips",
       numeric: true,
       sortBy: (row) => row.dips.length,
-      cell: (row) => `${row.dips.length}${row.openDips > 0 ? `, ${row.openDips} unsettled` : ""}`,
+      cell: (row) => (
+        <>
+          {row.dips.length}
+          {row.openDips > 0 && <span className="text-clay"> ({unsettled(row)})</span>}
+        </>
+      ),
     },
     {
       key: "notes",
@@ -166,6 +171,10 @@ function columnsFor(base: string): Column<SweepSummary>[] {
     },
     { key: "kind", label: "From", sortBy: (row) => kindOf(row.format), cell: (row) => kindOf(row.format) },
   ];
+}
+
+function unsettled({ dips, openDips }: SweepSummary): string {
+  return openDips === dips.length ? "unsettled" : `${openDips} unsettled`;
 }
 
 function matches(row: SweepSummary, words: string, only: (typeof ONLY)[number]): boolean {

@@ -88,12 +88,7 @@ export default function ReadingPage({ loaderData, actionData }: Route.ComponentP
   return (
     <div className="grid gap-6">
       <div className="grid gap-1">
-        <Breadcrumbs
-          items={[
-            { label: "Sweeps", to: `/projects/${projectId}/sweeps` },
-            ...(unread ? [] : [{ label: title, to: base }]),
-          ]}
-        />
+        {!unread && <Breadcrumbs items={[{ label: title, to: base }]} />}
         <h2>How “{title}” was read</h2>
         <Source data={loaderData} base={base} />
       </div>

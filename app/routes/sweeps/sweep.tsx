@@ -116,14 +116,14 @@ export default function SweepPage({ loaderData, actionData }: Route.ComponentPro
       {outside && <OutsideBandsCaution dismissed={loaderData.dismissed} />}
       <div className={thread ? "workspace workspace-open" : "workspace"}>
         <div className="grid gap-4 min-w-0 content-start">
-          <div className="flex flex-wrap items-end justify-between gap-4">
-            <ViewBar view={view} />
-            <SettingsForm view={view} stored={analysis.settings} mayKeep={loaderData.may.edit} />
-          </div>
+          <ViewBar view={view} />
           <SweepView data={loaderData} />
           <Advice data={loaderData} />
           <section aria-labelledby="dips" className="grid gap-3">
-            <h2 id="dips">Dips as numbers</h2>
+            <div className="flex flex-wrap items-end justify-between gap-x-6 gap-y-3">
+              <h2 id="dips">Dips as numbers</h2>
+              <SettingsForm view={view} stored={analysis.settings} mayKeep={loaderData.may.edit} />
+            </div>
             <DipsTable dips={dips} view={view} swrLimit={swrLimit} />
             <LostDips data={loaderData} />
           </section>

@@ -4,7 +4,8 @@ import type { SweepPageData } from "../sweep";
 /** What the analysis warns of, and what to sweep again. */
 export function Advice({ data }: { data: SweepPageData }) {
   const again = data.dips.filter((dip) => dip.advice !== null);
-  if (again.length === 0 && data.warnings.length === 0) return null;
+  const warnings = data.warnings.filter((warning) => again.length === 0 || warning.code !== "too-few-points");
+  if (again.length === 0 && warnings.length === 0) return null;
   return (
     <section aria-label="What to mind" className="grid gap-1 text-small">
       {again.map(
@@ -20,7 +21,7 @@ export function Advice({ data }: { data: SweepPageData }) {
             </p>
           ),
       )}
-      {data.warnings.map((warning) => (
+      {warnings.map((warning) => (
         <p key={`${warning.code} ${warning.message}`} className="soft">
           {warning.message}
         </p>

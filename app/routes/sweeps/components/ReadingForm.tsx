@@ -109,7 +109,7 @@ function TextFields({ spec, reading, errors, zeroFirst }: TextFieldsProps) {
   const fault = (name: string) => (errors[name] ? [errors[name]] : undefined);
   return (
     <>
-      <div className="grid gap-4 sm:grid-cols-2">
+      <div className="grid items-start gap-4 sm:grid-cols-2">
         <SelectField
           label="Quantity"
           name="quantity"
@@ -176,7 +176,7 @@ function TextFields({ spec, reading, errors, zeroFirst }: TextFieldsProps) {
       </div>
       <details>
         <summary>Separators and lines</summary>
-        <div className="grid gap-4 pt-3 sm:grid-cols-2">
+        <div className="grid items-start gap-4 pt-3 sm:grid-cols-2">
           <SelectField
             label="Columns separated by"
             name="delimiter"

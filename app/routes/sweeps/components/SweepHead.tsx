@@ -1,5 +1,4 @@
 import { Form, Link } from "react-router";
-import { Breadcrumbs } from "~/components/ui/Breadcrumbs";
 import { Button } from "~/components/ui/Button";
 import { DateTime } from "~/components/ui/DateTime";
 import { Dialog } from "~/components/ui/Dialog";
@@ -14,7 +13,6 @@ export function SweepHead({ data, errors }: { data: SweepPageData; errors: strin
   const base = `/projects/${project.publicId}`;
   return (
     <header className="grid gap-2">
-      <Breadcrumbs items={[{ label: "Sweeps", to: `${base}/sweeps` }]} />
       <div className="flex flex-wrap items-start justify-between gap-x-6 gap-y-3">
         <h2 className="sweep-title">{sweep.title}</h2>
         <div className="flex flex-wrap gap-2 no-print">
