@@ -1,11 +1,16 @@
 /** Says what is being done and how long it took, one line a step. */
 
-const INTERACTIVE = process.stdout.isTTY === true;
+/** Where steps are told; a command whose answer is on standard output tells them beside it. */
+let out = process.stdout;
+
+export function tellStepsOnStandardError() {
+  out = process.stderr;
+}
 
 /** Runs `work` as one step. On failure the line says so and the error goes on. */
 export async function step(title, work) {
   const started = Date.now();
-  if (INTERACTIVE) process.stdout.write(`  … ${title}`);
+  if (out.isTTY) out.write(`  … ${title}`);
   try {
     const note = await work();
     line("✓", title, started, typeof note === "string" ? note : "");
@@ -29,5 +34,5 @@ export function reportFailure(error) {
 function line(mark, title, started, note) {
   const seconds = ((Date.now() - started) / 1000).toFixed(1);
   const text = `  ${mark} ${title.padEnd(46)} ${seconds.padStart(6)} s${note ? `  ${note}` : ""}`;
-  process.stdout.write(INTERACTIVE ? `\r\u001b[K${text}\n` : `${text}\n`);
+  out.write(out.isTTY ? `\r\u001b[K${text}\n` : `${text}\n`);
 }
