@@ -32,12 +32,18 @@ export function PlotlyChart(props: PlotlyChartProps) {
   const { view, plotHeightPx, yOfMagnitude } = scene;
   const palette = usePageColours();
   const data = useMemo(() => {
-    const { words, ...line } = figureLine(points, view.scale, yOfMagnitude, plotHeightPx);
-    const pen = { color: palette.ink, width: 1.6 };
-    const read = { text: words, hovertemplate: "%{text}<extra></extra>" };
-    return [
-      { ...line, ...read, type: "scatter", mode: "lines", connectgaps: false, line: pen },
-    ] as Plotly.Data[];
+    const { x, y, readY, words } = figureLine(points, view.scale, yOfMagnitude, plotHeightPx);
+    const common = { type: "scatter", mode: "lines", connectgaps: false, x } as const;
+    const pen = { ...common, y, line: { color: palette.ink, width: 1.6 }, hoverinfo: "skip" } as const;
+    const unseen = { color: "rgba(0,0,0,0)", width: 1 };
+    const reader = {
+      ...common,
+      y: readY,
+      line: unseen,
+      text: words,
+      hovertemplate: "%{text}<extra></extra>",
+    };
+    return [pen, reader] as Plotly.Data[];
   }, [points, view.scale, yOfMagnitude, plotHeightPx, palette]);
   const { fromHz, toHz } = view;
   const layout = useMemo(

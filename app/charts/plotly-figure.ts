@@ -10,6 +10,8 @@ export interface FigureLine {
   x: number[];
   /** px over the plot's bottom; null in gaps and where the value is off the scale. */
   y: (number | null)[];
+  /** The same with what is off the scale at the edge, so that it can still be read out. */
+  readY: (number | null)[];
   words: string[];
 }
 
@@ -19,13 +21,14 @@ export function figureLine(
   yOfMagnitude: (magnitude: number) => number,
   plotHeightPx: number,
 ): FigureLine {
-  const line: FigureLine = { x: [], y: [], words: [] };
+  const line: FigureLine = { x: [], y: [], readY: [], words: [] };
   for (let index = 0; index < points.frequencyHz.length; index++) {
     const hz = points.frequencyHz[index];
     const magnitude = points.magnitude[index];
     const y = yOfMagnitude(magnitude);
     line.x.push(axisValue(hz, scale));
     line.y.push(y >= 0 && y <= plotHeightPx ? plotHeightPx - y : null);
+    line.readY.push(Number.isNaN(y) ? null : Math.min(plotHeightPx, Math.max(0, plotHeightPx - y)));
     line.words.push(pointWords(hz, magnitude));
   }
   return line;

@@ -21,6 +21,8 @@ describe("figureLine", () => {
       const line = figureLine(sweep, "log", scene.yOfMagnitude, scene.plotHeightPx);
       expect(line.y[2]).toBeNull();
       expect(line.y[0]).toBe(quantity === "rl" ? scene.plotHeightPx : null);
+      expect(line.readY[0]).toBe(scene.plotHeightPx);
+      expect(line.readY[2]).toBeNull();
       const drawn = pathNumbers(scene.land);
       expect(drawn).toContain(Math.round((scene.plotHeightPx - (line.y[1] ?? 0)) * 100) / 100);
       expect(line.x[1]).toBe(7);
