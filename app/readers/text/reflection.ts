@@ -49,16 +49,29 @@ export function toReflection(rows: Rows, convert: Convert): Reflection {
     case "real-imaginary":
       return complex(value.slice(), second.slice());
     case "magnitude-angle":
-      return fromPolar(value, second, convert.angleUnit);
+      return signed(fromPolar(value, second, convert.angleUnit), second, convert.angleUnit);
     case "db-angle":
-      return fromDbAngle(value, second, convert.angleUnit);
+      return signed(fromDbAngle(value, second, convert.angleUnit), second, convert.angleUnit);
     case "resistance-reactance":
       return fromImpedance(value, second, convert.referenceOhm, convert.unsigned || turnsAtZero(second));
     case "impedance-angle": {
       const { re, im } = cartesian(value, second, convert.angleUnit);
-      return fromImpedance(re, im, convert.referenceOhm, false);
+      return fromImpedance(re, im, convert.referenceOhm, turnsAtZero(im));
     }
   }
+}
+
+/** Γ as it is, or its magnitude alone where the angles bounce off 0° and 180° because their sign was not written. */
+function signed(found: Reflection, angle: Float64Array, unit: "deg" | "rad"): Reflection {
+  const half = unit === "deg" ? 180 : Math.PI;
+  const beyond = (a: number) => a < 0 || a > half * 1.001;
+  if (angle.some(beyond) || !(turnsAtZero(angle) || turnsAtZero(angle.map((a) => half * 1.001 - a))))
+    return found;
+  return {
+    magnitude: found.magnitude,
+    impossible: 0,
+    assumed: [...found.assumed, "The angle is written without its sign: only the magnitude of Γ is used."],
+  };
 }
 
 function scalar(value: Float64Array, rule: (v: number) => number): Reflection {

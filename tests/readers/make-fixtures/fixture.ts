@@ -5,6 +5,7 @@ export interface Fixture {
   file: string;
   trouble: string;
   bytes: Uint8Array;
+  model: Model;
   truth: Truth;
 }
 
@@ -48,7 +49,7 @@ export function fixture(
   };
   if (zeroDb !== undefined) truth.zero_db_at = zeroDb;
   if (model.referenceOhm !== 50) truth.reference_ohm = model.referenceOhm;
-  return { file, trouble, bytes: (make.encode ?? utf8)(text(points(model))), truth };
+  return { file, trouble, model, bytes: (make.encode ?? utf8)(text(points(model))), truth };
 }
 
 export const utf8 = (text: string) => new TextEncoder().encode(text);

@@ -12,7 +12,7 @@ export const QUANTITIES: Fixture[] = [
   fixture(
     "many-columns.csv",
     "Return loss, phase, R, SWR, X, Z and its angle together.",
-    { model: HF, quantity: "impedance" },
+    { model: HF, quantity: "gamma" },
     (p) =>
       lines([
         "Frequency(Hz),Return Loss(dB),Phase(deg),Rs,SWR,Xs,|Z|,Theta",

@@ -32,7 +32,7 @@ export const WRITING: Fixture[] = [
   fixture(
     "fixed-width.txt",
     "Aligned with runs of blanks, heading words with blanks in them.",
-    { model: VHF, quantity: "s11-db" },
+    { model: VHF, quantity: "return-loss" },
     (p) =>
       lines([
         "   Frequency (MHz)     Return Loss (dB)",
