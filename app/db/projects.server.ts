@@ -95,6 +95,12 @@ export async function countByVisibility(tx: Queryable = db) {
     .limit(10);
 }
 
+/** The projects of the demo, complete or not. */
+export async function findIdsOfDemo(tx: Queryable = db): Promise<number[]> {
+  const rows = await tx.select({ id: projects.id }).from(projects).where(eq(projects.demo, 1)).limit(100);
+  return rows.map((row) => row.id);
+}
+
 export interface NewProject {
   title: string;
   summary: string;

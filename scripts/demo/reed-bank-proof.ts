@@ -1,0 +1,306 @@
+import { LIGHT_SPEED } from "./antenna.ts";
+import { AS_BUILT, MORE_RADIALS, type reedBankFiles, STAKE_FAR, STAKE_NEAR } from "./reed-bank.ts";
+import { decided, said, swept } from "./steps.ts";
+import { on, type Step } from "./story.ts";
+import { khz, mhz, percent } from "./told.ts";
+
+const FREE_M = AS_BUILT.braidM ?? 0;
+const FAR_M = STAKE_FAR.braidM ?? 0;
+const NEAR_M = STAKE_NEAR.braidM ?? 0;
+
+/** Late March and April: the suspicion is tried, from four sides, until nothing else is left. */
+export function proof(files: ReturnType<typeof reedBankFiles>): Step[] {
+  return [
+    swept({
+      key: "radials",
+      by: "ada-marsh",
+      at: on(3, 28, 14, 30),
+      title: `${MORE_RADIALS.radials} radials`,
+      fileName: "Schilf_24_Radials.txt",
+      bytes: files.radials,
+    }),
+    said(
+      "bram-sedge",
+      on(3, 28, 17, 20),
+      { sweep: "radials", nearMhz: 7.12 },
+      (t) =>
+        `Sixteen more radials, a whole afternoon on our knees, and 40 m got worse: SWR ${t.dip("bothCut", 7.12).s} before, ${t.dip("radials", 7.12).s} now. Can we have the afternoon back?`,
+      { key: "worse" },
+    ),
+    said(
+      "dov-heron",
+      on(3, 28, 18, 3),
+      { sweep: "radials", nearMhz: 7.12 },
+      (t) =>
+        `It got better. The resistance of a short ground system is radiation plus loss, and yours happened to add up to nearly 50 Ω. Less loss means less than 50 Ω, so more SWR and more signal. The width tells it without any phase: ${t.dip("bothCut", 7.12).w} before, ${t.dip("radials", 7.12).w} now. What only warms the ground makes a dip wide.`,
+      { key: "better", answers: "worse" },
+    ),
+    said(
+      "ada-marsh",
+      on(3, 28, 18, 40),
+      { sweep: "radials", nearMhz: 52.2 },
+      (t) =>
+        `For the chase: ${t.dip("radials", 52.2).link} after, ${t.dip("bothCut", 52.2).link} before, so ${khz(t.dip("radials", 52.2).hz - t.dip("bothCut", 52.2).hz)} for three times as many radials. Not the radials either.`,
+    ),
+    // Two pictures of the analyser's screen, taken on 28 March, belong here once pictures can be read.
+    swept({
+      key: "hub",
+      by: "cleo-reed",
+      at: on(3, 29, 13, 0),
+      title: "At the hub, feedline taken off",
+      fileName: "hub-no-feedline.s1p",
+      bytes: files.hub,
+    }),
+    said(
+      "cleo-reed",
+      on(3, 29, 14, 15),
+      { sweep: "hub" },
+      (t) =>
+        `The last day of the loan. Battery on, calibrated at the hub, feedline unscrewed and laid aside, stake still in the ground. The elements are where they were (${t.dip("hub", 7.12).f}, ${t.dip("hub", 18.2).f}). At 52.3 MHz the return loss is ${t.loss("hub", 52.3)}: **no dip**. With the feedline it was ${t.loss("radials", 52.3)}.`,
+      { key: "no-dip" },
+    ),
+    said(
+      "cleo-reed",
+      on(3, 29, 14, 25),
+      { sweep: "hub", nearMhz: 55.3 },
+      (t) => {
+        const [first, third] = [t.dip("hub", 18.2), t.dip("hub", 55.3)];
+        return `And this is Dov's third resonance of the short element, out in the open at last: 3 × ${first.f} = ${mhz(3 * first.hz)}, found at ${third.link}, ${percent(third.hz / (3 * first.hz))}. It was there all the time, hidden beside the deep one.`;
+      },
+      { key: "hidden" },
+    ),
+    said("dov-heron", on(3, 29, 15, 0), { sweep: "hub", nearMhz: 55.3 }, "I accept the consolation prize.", {
+      answers: "hidden",
+    }),
+    said(
+      "bram-sedge",
+      on(3, 29, 16, 30),
+      { sweep: "hub" },
+      "Careful. You took away the cable *and* 12 m of loss *and* moved the instrument. That is three changes in one sweep.",
+      { key: "three-changes", answers: "no-dip" },
+    ),
+    said(
+      "cleo-reed",
+      on(3, 29, 17, 5),
+      { sweep: "hub" },
+      "Fair. It shows that the dip needs the feedline. It does not show which part of it. So change one length and nothing else.",
+      { answers: "three-changes" },
+    ),
+    swept({
+      key: "shackChoke",
+      by: "bram-sedge",
+      at: on(4, 3, 17, 10),
+      title: "Beads on the cable at the shack",
+      fileName: "reedbank_0403_beads.tsv",
+      bytes: files.shackChoke,
+    }),
+    said(
+      "bram-sedge",
+      on(4, 3, 17, 45),
+      { sweep: "shackChoke", nearMhz: 52.2 },
+      (t) =>
+        `Five ferrite beads at the shack end. ${t.dip("shackChoke", 52.2).link}, SWR ${t.dip("shackChoke", 52.2).s}. Same as ever. If the cable were the culprit this should have hurt it.`,
+      { key: "beads" },
+    ),
+    said(
+      "dov-heron",
+      on(4, 3, 19, 30),
+      { sweep: "shackChoke", nearMhz: 52.2 },
+      "Only where the current runs. The stretch Ada named ends at the stake, and your beads sit on the other side of it. A choke has to go where the current is: at the hub.",
+      { key: "where-it-runs", answers: "beads" },
+    ),
+    said(
+      "ada-marsh",
+      on(4, 3, 20, 2),
+      { sweep: "shackChoke", nearMhz: 52.2 },
+      (t) =>
+        `First the length, then the choke. Tomorrow I move the stake to ${FAR_M.toFixed(2)} m from the hub. If it is the braid, we shall find it at ${t.dip("radials", 52.2).f} × ${FREE_M.toFixed(2)} / ${FAR_M.toFixed(2)} = ${mhz((t.dip("radials", 52.2).hz * FREE_M) / FAR_M, 1)}. I write it down before I sweep.`,
+      { key: "before-i-sweep", answers: "where-it-runs" },
+    ),
+    swept({
+      key: "stakeFar",
+      by: "ada-marsh",
+      at: on(4, 4, 11, 0),
+      title: `Stake moved out to ${FAR_M.toFixed(2)} m`,
+      fileName: "stake-324.s1p",
+      bytes: files.stakeFar,
+    }),
+    said("ada-marsh", on(4, 4, 12, 10), { sweep: "stakeFar", nearMhz: 44.4 }, (t) => {
+      const should = (t.dip("radials", 52.2).hz * FREE_M) / FAR_M;
+      const { link, hz, s } = t.dip("stakeFar", 44.4);
+      return `${link}, SWR ${s}. Foretold ${mhz(should, 1)}, so ${percent(hz / should)}. The 40 and 17 m dips stayed where they were: ${t.dip("stakeFar", 7.12).f} and ${t.dip("stakeFar", 18.2).f}.`;
+    }),
+    swept({
+      key: "stakeNear",
+      by: "bram-sedge",
+      at: on(4, 5, 10, 20),
+      title: `Stake moved in to ${NEAR_M.toFixed(2)} m`,
+      fileName: "reedbank_0405a.csv",
+      bytes: files.stakeNear,
+    }),
+    said(
+      "bram-sedge",
+      on(4, 5, 10, 50),
+      { sweep: "stakeNear" },
+      `Stake at ${NEAR_M.toFixed(2)} m and it is **gone**. No deep dip left above 40 MHz. Leave the stake there and we are done.`,
+      { key: "gone" },
+    ),
+    said(
+      "cleo-reed",
+      on(4, 5, 11, 20),
+      { sweep: "stakeNear" },
+      (t) =>
+        `Gone from your sweep, which ends at 60 MHz. The same sum says ${mhz((t.dip("radials", 52.2).hz * FREE_M) / NEAR_M, 1)}. Sweep to 80 before you put the spade away.`,
+      { key: "sweep-on", answers: "gone" },
+    ),
+    swept({
+      key: "stakeNearWide",
+      by: "bram-sedge",
+      at: on(4, 5, 12, 5),
+      title: `Stake at ${NEAR_M.toFixed(2)} m, on to 80 MHz`,
+      fileName: "reedbank_0405b.csv",
+      bytes: files.stakeNearWide,
+    }),
+    said(
+      "bram-sedge",
+      on(4, 5, 12, 30),
+      { sweep: "stakeNearWide", nearMhz: 62 },
+      (t) => `${t.dip("stakeNearWide", 62).link}. I was too quick. It only went out of the picture.`,
+      { key: "too-quick" },
+    ),
+    said(
+      "cleo-reed",
+      on(4, 5, 14, 40),
+      { sweep: "stakeNearWide", nearMhz: 62 },
+      (t) => {
+        const row = (key: string, nearMhz: number, lengthM: number) => {
+          const { f, hz } = t.dip(key, nearMhz);
+          return `| ${lengthM.toFixed(2)} m | ${f} | ${((2 * lengthM * hz) / LIGHT_SPEED).toFixed(3)} |`;
+        };
+        return `Three lengths, three frequencies. If it is a half wave, twice length times frequency is a constant part of the speed of light:
+
+| hub to stake | dip | 2·l·f / c |
+|--:|--:|--:|
+${row("stakeNearWide", 62, NEAR_M)}
+${row("radials", 52.2, FREE_M)}
+${row("stakeFar", 44.4, FAR_M)}
+
+Constant within a per cent while the length changes by 40. I propose it.`;
+      },
+      { key: "three-lengths" },
+    ),
+    decided(
+      "cleo-reed",
+      on(4, 5, 14, 45),
+      { sweep: "stakeNearWide", nearMhz: 62 },
+      "propose",
+      "Half wave on the outside of the braid, between the hub and the earth stake",
+    ),
+    said(
+      "bram-sedge",
+      on(4, 5, 15, 10),
+      { sweep: "stakeNearWide", nearMhz: 62 },
+      "I am convinced about the length. I will be convinced about the outside when a choke takes it away.",
+      { answers: "three-lengths" },
+    ),
+    swept({
+      key: "choked",
+      by: "ada-marsh",
+      at: on(4, 11, 15, 0),
+      title: "Choke at the hub, stake back at 2.76 m",
+      fileName: "Schilf_Drossel.txt",
+      bytes: files.choked,
+    }),
+    said(
+      "ada-marsh",
+      on(4, 11, 16, 40),
+      { sweep: "choked" },
+      (
+        t,
+      ) => `Twelve turns of the feedline on a ferrite core, right at the hub, and the stake back where it began. Swept to 80 MHz so that nobody can say it left the picture. Return loss at the three places where it has been:
+
+| | with the dip there | choked |
+|:--|--:|--:|
+| 44.4 MHz | ${t.loss("stakeFar", 44.37)} | ${t.loss("choked", 44.37)} |
+| 52.3 MHz | ${t.loss("radials", 52.26)} | ${t.loss("choked", 52.26)} |
+| 62.0 MHz | ${t.loss("stakeNearWide", 62)} | ${t.loss("choked", 62)} |
+
+All that is left up there is the short element's third resonance, ${t.dip("choked", 55.3).link}, SWR ${t.dip("choked", 55.3).s}.`,
+      { key: "choked" },
+    ),
+    said("bram-sedge", on(4, 11, 17, 0), { sweep: "choked" }, "Convinced.", { answers: "choked" }),
+    said(
+      "dov-heron",
+      on(4, 11, 19, 15),
+      { sweep: "choked" },
+      (t) =>
+        `Worth saying what it did *not* do: 40 m ${t.dip("radials", 7.12).f} before and ${t.dip("choked", 7.12).f} after, 17 m ${t.dip("radials", 18.2).f} and ${t.dip("choked", 18.2).f}. At those frequencies the braid was too far from half a wave to take part. What it does to noise picked up on the cable this sweep cannot say.`,
+      { answers: "choked" },
+    ),
+    swept({
+      key: "final",
+      by: "cleo-reed",
+      at: on(4, 18, 10, 0),
+      title: "As it stays",
+      fileName: "reed-bank-final.s1p",
+      bytes: files.final,
+    }),
+    said(
+      "cleo-reed",
+      on(4, 18, 11, 30),
+      { sweep: "final" },
+      (
+        t,
+      ) => `For the record, from the shack, 1 to 80 MHz. SWR at the edges and in the middle of what we wanted:
+
+| | low edge | middle | high edge |
+|:--|--:|--:|--:|
+| 40 m | ${t.swrAt("final", 7)} | ${t.swrAt("final", 7.1)} | ${t.swrAt("final", 7.2)} |
+| 17 m | ${t.swrAt("final", 18.068)} | ${t.swrAt("final", 18.118)} | ${t.swrAt("final", 18.168)} |
+
+Both inside the limit of 2 everywhere.`,
+    ),
+    ...settled(),
+    said(
+      "ada-marsh",
+      on(4, 18, 20, 30),
+      {},
+      `Six weeks for one dip. What I take along:
+
+1. A dip that does not move with an element does not belong to it, however well the multiples fit.
+2. Change one thing, write the expected frequency down, then sweep.
+3. A dip that leaves the sweep is not gone.
+4. The good match at 52 MHz was never a permission to use it, and with the choke it is not even a match.
+
+The stake stays, for lightning. Nobody works at the mast when there is thunder about.`,
+      { key: "what-i-take" },
+    ),
+    said(
+      "dov-heron",
+      on(4, 18, 21, 4),
+      {},
+      "5. Believe Cleo about which side of three times it ought to lie.",
+      { answers: "what-i-take" },
+    ),
+  ];
+}
+
+/** The verdict, on each sweep in which the dip stood out. */
+function settled(): Step[] {
+  const where = [
+    ["asBuilt", 52.2],
+    ["bothCut", 52.2],
+    ["radials", 52.2],
+    ["stakeFar", 44.4],
+    ["stakeNearWide", 62],
+  ] as const;
+  return where.map(([sweep, nearMhz], i) =>
+    decided(
+      "ada-marsh",
+      on(4, 18, 20, 10 + i),
+      { sweep, nearMhz },
+      "settle",
+      "Half wave on the outside of the braid between hub and stake: moved with that length, gone with a choke at the hub",
+    ),
+  );
+}

@@ -1,0 +1,28 @@
+import type { NoteStep, On, Step, SweepStep, VerdictStep, Who } from "./story.ts";
+
+/** Short forms of what happens in a story. */
+
+export function swept(step: Omit<SweepStep, "kind">): Step {
+  return { kind: "sweep", ...step };
+}
+
+/** Who says what, when and on what; `more` names the note or the one that it answers. */
+export function said(
+  by: Who,
+  at: Date,
+  on: On,
+  text: NoteStep["text"] | string,
+  more: Pick<NoteStep, "key" | "answers"> = {},
+): Step {
+  return { kind: "note", by, at, on, text: typeof text === "string" ? () => text : text, ...more };
+}
+
+export function decided(
+  by: Who,
+  at: Date,
+  on: Required<On>,
+  intent: VerdictStep["intent"],
+  text: VerdictStep["text"] | string,
+): Step {
+  return { kind: "verdict", by, at, on, intent, text: typeof text === "string" ? () => text : text };
+}

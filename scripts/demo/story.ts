@@ -1,0 +1,62 @@
+import type { Given } from "~/readers/reading";
+import type { VerdictIntent } from "~/services/verdicts.server";
+import type { Told } from "./told.ts";
+
+/** A story: what was swept, said and decided, in the order in which it happened. */
+
+export const CAST = ["ada-marsh", "bram-sedge", "cleo-reed", "dov-heron"] as const;
+export type Who = (typeof CAST)[number];
+
+/** On a sweep; with `nearMhz` on its dip there; with neither on the project. */
+export interface On {
+  sweep?: string;
+  nearMhz?: number;
+}
+
+export interface SweepStep {
+  kind: "sweep";
+  key: string;
+  by: Who;
+  at: Date;
+  title: string;
+  fileName: string;
+  bytes: Uint8Array;
+  given?: Given;
+}
+
+export interface NoteStep {
+  kind: "note";
+  /** So that others can answer it. */
+  key?: string;
+  by: Who;
+  at: Date;
+  on: On;
+  answers?: string;
+  text: (told: Told) => string;
+}
+
+export interface VerdictStep {
+  kind: "verdict";
+  by: Who;
+  at: Date;
+  on: Required<On>;
+  intent: VerdictIntent;
+  text: (told: Told) => string;
+}
+
+export type Step = SweepStep | NoteStep | VerdictStep;
+
+export interface Story {
+  title: string;
+  summary: string;
+  visibility: "private" | "linked" | "public";
+  owner: Who;
+  members: { who: Who; role: "owner" | "experimenter" | "commenter" | "reader" }[];
+  bands: { name: string; lowHz: number; highHz: number; swrLimit: number }[];
+  steps: Step[];
+}
+
+/** A moment of the story's year, UTC: month, day, hours, minutes. */
+export function on(month: number, day: number, hours: number, minutes = 0): Date {
+  return new Date(Date.UTC(2026, month - 1, day, hours, minutes));
+}
