@@ -5,18 +5,21 @@ import { dips, notes, sweeps, users } from "./schema/index.ts";
 
 export type DipRow = typeof dips.$inferSelect;
 
+/** With its table's name: in a query of one table the builder leaves it out, and a subquery then finds its own id. */
+const OUTER_DIP_ID = sql`${sql.identifier("dips")}.${sql.identifier("id")}`;
+
 /** A sweep's dips with their notes counted and the latest note's text, lowest frequency first. */
 export async function findAllBySweep(sweepId: number, tx: Queryable = db) {
   const rows = await tx
     .select({
       dip: dips,
       noteCount:
-        sql<number>`(select count(*) from ${notes} n where n.dip_id = ${dips.id} and n.removed_at is null)`.mapWith(
+        sql<number>`(select count(*) from ${notes} n where n.dip_id = ${OUTER_DIP_ID} and n.removed_at is null)`.mapWith(
           Number,
         ),
       latestNote: sql<
         string | null
-      >`(select left(n.body, 200) from ${notes} n where n.dip_id = ${dips.id} and n.removed_at is null order by n.id desc limit 1)`,
+      >`(select left(n.body, 200) from ${notes} n where n.dip_id = ${OUTER_DIP_ID} and n.removed_at is null order by n.id desc limit 1)`,
     })
     .from(dips)
     .where(eq(dips.sweepId, sweepId))
