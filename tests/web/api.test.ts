@@ -1,3 +1,8 @@
+import { execFile } from "node:child_process";
+import { mkdtempSync, rmSync, writeFileSync } from "node:fs";
+import { tmpdir } from "node:os";
+import path from "node:path";
+import { promisify } from "node:util";
 import { afterAll, beforeAll, describe, expect, it } from "vitest";
 import * as tokens from "~/db/tokens.server";
 import * as shapes from "~/routes/api/schemas";
@@ -18,7 +23,7 @@ import {
   touchstone,
 } from "./world.ts";
 
-/** The API as CONTRACT and its own OpenAPI document say. */
+/** The API as its own OpenAPI document says. */
 
 let crew: Crew;
 let place: Place;
@@ -63,6 +68,21 @@ describe("reading", () => {
     expect(sweep.reading?.quantity).toBe("gamma");
     expect(sweep.dips[0].frequencyHz).toBeCloseTo(7.1e6, -4);
     expect(sweep.analysis?.settings).toEqual({ swrLimit: 2, minimumProminenceDb: 3 });
+  });
+
+  it("says of a file what the command line says of it", async () => {
+    const folder = mkdtempSync(path.join(tmpdir(), "swale-"));
+    const file = path.join(folder, "same.s1p");
+    const text = touchstone();
+    writeFileSync(file, text);
+    const command = ["scripts/run.mjs", "analyse.ts", file, "--json"];
+    const { stdout } = await promisify(execFile)(process.execPath, command);
+    rmSync(folder, { recursive: true });
+    const said = JSON.parse(stdout);
+    const answer = await sendSweep(place.project, token, text, {}, "same.s1p");
+    const sweep = await answer.json();
+    expect(sweep).toMatchObject(said);
+    expect(sweep.dips[0].noteCount).toBe(0);
   });
 
   it("gives points, all or a stretch, never more than asked, the dip kept", async () => {
@@ -213,6 +233,8 @@ describe("notes", () => {
     const { items } = shapes.noteListShape.parse(await listed.json());
     expect(items.map((note) => note.id).slice(-2)).toEqual([first.id, second.id]);
     expect(items.at(-1)?.author?.userName).toBe(crew.owner.userName);
+    const { dips } = shapes.sweepShape.parse(await (await askApi(`/sweeps/${place.sweep}`, token)).json());
+    expect(dips[0].noteCount).toBe(items.length);
   });
 
   it("sent again with one key are written once", async () => {

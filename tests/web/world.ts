@@ -119,14 +119,14 @@ export function addBareSweeps(projectId: number, howMany: number): Promise<void>
   });
 }
 
-/** A series resonator at 7.1 MHz seen through 50 Ω, 201 points, as a Touchstone file; no two alike. */
+/** A series resonator of 60 Ω at 7.1 MHz against 50 Ω, 201 points, as a Touchstone file; no two alike. */
 export function touchstone(): string {
   count += 1;
   const lines = [`! ${run} ${process.env.VITEST_POOL_ID ?? 0} ${count}, invented`, "# MHz S RI R 50"];
   for (let i = 0; i <= 200; i++) {
     const mhz = 6 + (2.2 * i) / 200;
     const x = 50 * 20 * (mhz / 7.1 - 7.1 / mhz);
-    const [re, im] = divide([10, x], [110, x]);
+    const [re, im] = divide([60 - 50, x], [60 + 50, x]);
     lines.push(`${mhz.toFixed(4)} ${re.toFixed(8)} ${im.toFixed(8)}`);
   }
   return `${lines.join("\n")}\n`;
