@@ -1,3 +1,4 @@
+import { credibleDips } from "./dips/credible.ts";
 import { describeDip, type Neighbours } from "./dips/describe.ts";
 import { findDips } from "./dips/find.ts";
 import { noiseDb } from "./noise.ts";
@@ -18,7 +19,7 @@ export function analyse(sweep: Sweep, settings: Partial<AnalysisSettings> = {}):
   const used = sensible(settings);
   const noise = noiseDb(sweep.magnitude);
   const threshold = Math.max(used.minimumProminenceDb, NOISE_FACTOR * noise);
-  const found = findDips(sweep.magnitude, threshold);
+  const found = credibleDips(sweep.magnitude, findDips(sweep.magnitude, threshold));
   const limit = fitLimit(found.map((dip) => dip.prominenceDb));
   const neighbours: Neighbours = { at: 0, found, stretch: null };
   const notes: Warning[] = [];

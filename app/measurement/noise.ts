@@ -11,57 +11,66 @@
  * rounded has many equal neighbours and a median of 0: then σ is at least that of its rounding, step/√12.
  */
 export function noiseDb(magnitude: Float64Array): number {
-  const values = new Float64Array(Math.min(magnitude.length, SAMPLE));
-  const absolute = new Float64Array(values.length);
-  let sigma = Number.POSITIVE_INFINITY;
-  let count = 0;
-  for (const { weights, scale } of DIFFERENCES) {
-    count = differences(magnitude, weights, values);
-    if (count < 3) continue;
-    const centre = medianInPlace(values, count);
-    for (let i = 0; i < count; i++) absolute[i] = Math.abs(values[i] - centre);
-    sigma = Math.min(sigma, medianInPlace(absolute, count) / (NORMAL_QUARTILE * scale));
+  const values = sample(magnitude);
+  for (let i = 0; i < values.length; i++) values[i] = DB_PER_NEPER * Math.log(values[i]);
+  return Math.max(scatterOf(values), roundingOf(values));
+}
+
+/** The same in abs Γ itself; 0 where none can be told. */
+export function noiseGamma(magnitude: Float64Array): number {
+  return scatterOf(sample(magnitude));
+}
+
+/** All values, or blocks spread over the whole with a gap between them. */
+function sample(magnitude: Float64Array): Float64Array {
+  const n = magnitude.length;
+  if (n <= SAMPLE) return Float64Array.from(magnitude);
+  const blocks = SAMPLE / BLOCK;
+  const values = new Float64Array(blocks * (BLOCK + 1)).fill(Number.NaN);
+  for (let block = 0; block < blocks; block++) {
+    const start = Math.floor((block * (n - BLOCK)) / (blocks - 1));
+    values.set(magnitude.subarray(start, start + BLOCK), block * (BLOCK + 1));
   }
-  if (sigma === Number.POSITIVE_INFINITY) return 0;
-  return Math.max(sigma, roundingDb(magnitude, values));
+  return values;
+}
+
+function scatterOf(values: Float64Array): number {
+  const sums = new Float64Array(values.length);
+  let sigma = Number.POSITIVE_INFINITY;
+  for (const { weights, factor } of DIFFERENCES) {
+    const count = differences(values, weights, sums);
+    if (count < 3) continue;
+    const centre = medianInPlace(sums, count);
+    for (let i = 0; i < count; i++) sums[i] = Math.abs(sums[i] - centre);
+    sigma = Math.min(sigma, medianInPlace(sums, count) / (NORMAL_QUARTILE * factor));
+  }
+  return sigma === Number.POSITIVE_INFINITY ? 0 : sigma;
 }
 
 /** σ of the rounding step, dB; 0 where neighbours are seldom equal. */
-function roundingDb(magnitude: Float64Array, values: Float64Array): number {
-  const count = differences(magnitude, [1, -1], values);
+function roundingOf(valuesDb: Float64Array): number {
+  let count = 0;
   let equal = 0;
   let step = Number.POSITIVE_INFINITY;
-  for (let i = 0; i < count; i++) {
-    const size = Math.abs(values[i]);
+  for (let i = 1; i < valuesDb.length; i++) {
+    const size = Math.abs(valuesDb[i] - valuesDb[i - 1]);
+    if (!Number.isFinite(size)) continue;
+    count++;
     if (size < SAME_DB) equal++;
     else if (size < step) step = size;
   }
   return equal >= EQUAL_SHARE * count && step < COARSEST_STEP_DB ? step / Math.sqrt(12) : 0;
 }
 
-/** Weighted sums of neighbouring return losses in dB, written to `out`; returns how many. */
-function differences(magnitude: Float64Array, weights: number[], out: Float64Array): number {
-  const n = magnitude.length - weights.length + 1;
-  const blocks = n > out.length ? Math.ceil(out.length / BLOCK) : 1;
-  const length = n > out.length ? Math.floor(out.length / blocks) : n;
-  const window = new Float64Array(weights.length);
+/** Weighted sums of neighbours, written to `out`; those that touch a gap are left out. Returns how many. */
+function differences(values: Float64Array, weights: number[], out: Float64Array): number {
   let count = 0;
-  for (let block = 0; block < blocks; block++) {
-    const start = blocks === 1 ? 0 : Math.floor((block * (n - length)) / (blocks - 1));
-    for (let j = 0; j < weights.length - 1; j++) window[j + 1] = decibels(magnitude[start + j]);
-    for (let i = start; i < start + length; i++) {
-      window.copyWithin(0, 1);
-      window[weights.length - 1] = decibels(magnitude[i + weights.length - 1]);
-      let sum = 0;
-      for (let j = 0; j < weights.length; j++) sum += weights[j] * window[j];
-      if (sum - sum === 0) out[count++] = sum;
-    }
+  for (let i = weights.length - 1; i < values.length; i++) {
+    let sum = 0;
+    for (let j = 0; j < weights.length; j++) sum += weights[j] * values[i - j];
+    if (sum - sum === 0) out[count++] = sum;
   }
   return count;
-}
-
-function decibels(magnitude: number): number {
-  return DB_PER_NEPER * Math.log(magnitude);
 }
 
 /** Median by selection (Hoare's quickselect); reorders the first `count` values. */
@@ -97,13 +106,13 @@ function select(values: Float64Array, count: number, rank: number): number {
 
 const DB_PER_NEPER = 20 / Math.LN10;
 const NORMAL_QUARTILE = 0.674489750196082;
-/** The median of this many differences is good to about 1 %. */
-const SAMPLE = 16_384;
+/** The median of this many differences is good to about 1.5 %. */
+const SAMPLE = 8192;
 const BLOCK = 256;
 const DIFFERENCES = [
-  { weights: [1, -2, 1], scale: Math.sqrt(6) },
-  { weights: [1, -4, 6, -4, 1], scale: Math.sqrt(70) },
-  { weights: [1, -6, 15, -20, 15, -6, 1], scale: Math.sqrt(924) },
+  { weights: [1, -2, 1], factor: Math.sqrt(6) },
+  { weights: [1, -4, 6, -4, 1], factor: Math.sqrt(70) },
+  { weights: [1, -6, 15, -20, 15, -6, 1], factor: Math.sqrt(924) },
 ];
 /** Return losses that differ by less were the same printed number. */
 const SAME_DB = 1e-9;

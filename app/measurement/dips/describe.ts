@@ -1,13 +1,11 @@
 import { gammaToReturnLossDb, gammaToSwr, swrToGamma } from "../reflection.ts";
 import type { AnalysisSettings, Dip, Sweep, Warning } from "../sweep.ts";
-import { combine, type Interval, swrInterval } from "../uncertainty.ts";
+import { combine } from "../uncertainty.ts";
 import { halfDepthWidthHz, sweepAgain } from "./advice.ts";
 import { bandwidthOf, type Stretch, stretchAround } from "./bandwidth.ts";
 import type { FoundDip } from "./find.ts";
-import { type Fit, fitDip } from "./fit.ts";
-import { parabolaDip } from "./parabola.ts";
+import { type Lowest, lowestOf, sampleOnly } from "./lowest.ts";
 import { qualityOf } from "./quality.ts";
-import { fitWindow } from "./window.ts";
 
 /** Where a dip stands among the found ones; `stretch` is the last one walked, kept so that no sample is walked twice. */
 export interface Neighbours {
@@ -23,16 +21,6 @@ export interface DescribeSettings extends AnalysisSettings {
   mayFit: boolean;
 }
 
-/** The lowest point of a dip by one of the three methods; half-widths of 95 %, null where not known. */
-interface Lowest {
-  method: Dip["method"];
-  frequencyHz: number;
-  frequencyHalfHz: number | null;
-  magnitude: number;
-  swr: Interval | null;
-  fit: Fit | null;
-}
-
 /** All numbers of one found dip. Adds a warning where its Q is not that of the antenna. */
 export function describeDip(
   sweep: Sweep,
@@ -43,7 +31,9 @@ export function describeDip(
 ): Dip {
   const { magnitude, frequencyHz } = sweep;
   const { index, edge } = found;
-  const lowest = edge ? sampleOnly(sweep, index) : lowestPoint(sweep, found, neighbours, settings);
+  const lowest = edge
+    ? sampleOnly(sweep, index, 0)
+    : lowestOf(sweep, found, between(sweep, neighbours), settings.noise, settings.mayFit);
   const stretch = stretchFor(sweep, index, neighbours, settings.swrLimit);
   const shared = stretch !== null && isShared(stretch, neighbours);
   const bandwidth = bandwidthOf({
@@ -90,71 +80,9 @@ export function describeDip(
   };
 }
 
-function lowestPoint(
-  sweep: Sweep,
-  found: FoundDip,
-  neighbours: Neighbours,
-  settings: DescribeSettings,
-): Lowest {
-  const { frequencyHz, magnitude } = sweep;
-  const { index, prominenceDb } = found;
-  if (settings.mayFit) {
-    const before = neighbours.found[neighbours.at - 1]?.index ?? 0;
-    const after = neighbours.found[neighbours.at + 1]?.index ?? magnitude.length - 1;
-    const window = fitWindow(magnitude, index, prominenceDb, before, after);
-    const fit = fitDip(frequencyHz, magnitude, index, window, settings.noise);
-    if (fit) {
-      return {
-        method: "fit",
-        frequencyHz: fit.resonator.f0Hz,
-        frequencyHalfHz: fit.frequencyHalfHz,
-        magnitude: Math.sqrt(fit.power),
-        swr: swrInterval(fit.power, fit.powerHalf),
-        fit,
-      };
-    }
-  }
-  if (pointsOf(magnitude, index, prominenceDb) < FEWEST_FOR_PARABOLA) return sampleOnly(sweep, index);
-  const top = parabolaDip(frequencyHz, magnitude, index, settings.noise);
-  if (!top) return sampleOnly(sweep, index);
-  const gamma = 10 ** (-top.returnLossDb / 20);
-  const swr = (db: number) => gammaToSwr(10 ** (-(top.returnLossDb + db) / 20));
-  return {
-    method: "parabola",
-    frequencyHz: top.frequencyHz,
-    frequencyHalfHz: top.frequencyHalfHz,
-    magnitude: gamma,
-    swr: { low: swr(top.returnLossHalfDb), high: swr(-top.returnLossHalfDb) },
-    fit: null,
-  };
-}
-
-/** The lowest sample, or the middle of its plateau. Between it and its neighbours the dip may go anywhere. */
-function sampleOnly({ frequencyHz, magnitude }: Sweep, index: number): Lowest {
-  const value = magnitude[index];
-  let from = index;
-  let to = index;
-  while (from > 0 && magnitude[from - 1] === value) from--;
-  while (to < magnitude.length - 1 && magnitude[to + 1] === value) to++;
-  const inside = from > 0 && to < magnitude.length - 1;
-  const centre = inside ? (frequencyHz[from] + frequencyHz[to]) / 2 : frequencyHz[index];
-  return {
-    method: "sample",
-    frequencyHz: centre,
-    frequencyHalfHz: inside ? (frequencyHz[to + 1] - frequencyHz[from - 1]) / 2 : null,
-    magnitude: value,
-    swr: null,
-    fit: null,
-  };
-}
-
-/** Samples below half of the dip's depth in dB. */
-function pointsOf(magnitude: Float64Array, index: number, prominenceDb: number): number {
-  const half = magnitude[index] * 10 ** (prominenceDb / 40);
-  let count = 1;
-  for (let i = index - 1; magnitude[i] <= half && count < FEWEST_FOR_PARABOLA; i--) count++;
-  for (let i = index + 1; magnitude[i] <= half && count < FEWEST_FOR_PARABOLA; i++) count++;
-  return count;
+/** The dips on each side, or the ends of the sweep. */
+function between({ magnitude }: Sweep, { found, at }: Neighbours): Stretch {
+  return { from: found[at - 1]?.index ?? 0, to: found[at + 1]?.index ?? magnitude.length - 1 };
 }
 
 function stretchFor(sweep: Sweep, index: number, neighbours: Neighbours, swrLimit: number): Stretch | null {
@@ -192,7 +120,5 @@ function qWarning(frequencyHz: number): Warning {
   };
 }
 
-/** Three points make a parabola. */
-const FEWEST_FOR_PARABOLA = 3;
 /** A return loss that no instrument sees; a computed 0 of abs Γ is told as this deep, as no file holds an infinity. */
 const DEEPEST_DB = 200;

@@ -1,6 +1,7 @@
 import { student95 } from "../uncertainty.ts";
 import { leastSquares, type Solution } from "./least-squares.ts";
-import { type Residuals, residualsOf, whiteEnough } from "./residuals.ts";
+import { meanPoints, selectPoints } from "./points.ts";
+import { ROUNDING, residualsOf, successive, whiteEnough } from "./residuals.ts";
 import {
   DEPTH,
   edgeAt,
@@ -11,6 +12,7 @@ import {
   type Resonator,
   resonatorPower,
 } from "./resonator.ts";
+import { type Candidate, fitMeans, likelier } from "./weighing.ts";
 import type { Window } from "./window.ts";
 
 /** A resonator that the samples of a window support, with 95 % half-widths from its covariance. */
@@ -28,13 +30,14 @@ export interface Fit {
 }
 
 /**
- * Fits the resonator to abs Γ² over the window, and when the shape leaves more than noise there, over its inner halves with
+ * Fits the resonator to abs Γ² over the window, and when the shape leaves more than noise there, over ever smaller inner windows with
  * the far power held, down to FEWEST_POINTS. Null when no window will do: the caller then takes a parabola.
  *
  * `frequencyHz` ascending Hz, `magnitude` abs Γ without NaN inside the window, `index` the lowest sample, `noise` the
- * sweep's σ in dB of return loss. Whether the scatter is even in abs Γ (a receiver's) or in decibels (a detector's) is decided by the
- * likelihood of the residuals; the bias of abs Γ² that goes with it is taken off (Rice, Bell Syst. Tech. J. 24, 1945,
- * and the mean of a log-normal; both from memory, not seen). A million points are fitted on a selection first.
+ * sweep's σ in dB of return loss, `complex` whether abs Γ comes
+ * from a complex Γ. Whether the scatter is even in abs Γ (a receiver's) or in decibels (a detector's) is decided by the
+ * likelihood of the residuals; the bias of abs Γ² that goes with it is taken off. Long windows are fitted on a selection of samples, and in noise
+ * then on means of all of them.
  */
 export function fitDip(
   frequencyHz: Float64Array,
@@ -42,14 +45,23 @@ export function fitDip(
   index: number,
   window: Window,
   noise: number,
+  complex: boolean,
 ): Fit | null {
   let { from, to } = window;
   const farPower = Math.min(1, Math.max(magnitude[from], magnitude[to]) ** 2);
   for (let whole = true; to - from + 1 >= FEWEST_POINTS; whole = false) {
-    const fit = fitInside(frequencyHz, magnitude, index, { from, to }, noise, whole ? null : farPower);
+    const fit = fitInside(
+      frequencyHz,
+      magnitude,
+      index,
+      { from, to },
+      noise,
+      complex,
+      whole ? null : farPower,
+    );
     if (fit) return fit;
-    from = Math.ceil((from + index) / 2);
-    to = Math.floor((to + index) / 2);
+    from = Math.ceil(index - (index - from) / SHRINK);
+    to = Math.floor(index + (to - index) / SHRINK);
     if (to - from + 1 < FEWEST_HELD) break;
   }
   return null;
@@ -61,29 +73,32 @@ function fitInside(
   index: number,
   window: Window,
   noise: number,
+  complex: boolean,
   heldPower: number | null,
 ): Fit | null {
   const referenceHz = frequencyHz[index];
-  const count = window.to - window.from + 1;
-  const stride = Math.ceil(count / SELECTION);
-  const some = pick(frequencyHz, magnitude, window, stride, referenceHz);
-  const start = firstGuess(frequencyHz, magnitude, index, window, heldPower);
   const free = heldPower === null ? 4 : 3;
-  const problem = { model: resonatorPower, ...some, start, free };
-  let solution = leastSquares(problem);
-  let residuals: Residuals | null = null;
-  for (let round = 0; round < ROUNDS; round++) {
-    const last = round === ROUNDS - 1;
-    const data = last && stride > 1 ? pick(frequencyHz, magnitude, window, 1, referenceHz) : some;
-    residuals = residualsOf(data.x, data.y, solution.p, free);
-    if (!residuals) return null;
-    const y = data.y.map(residuals.unbiased);
-    solution = leastSquares({ ...problem, ...data, y, weight: residuals.weight, start: solution.p });
-    if (last) residuals = residualsOf(data.x, data.y, solution.p, free, residuals.even);
+  const some = selectPoints(frequencyHz, magnitude, window, referenceHz, SELECTION);
+  const start = firstGuess(frequencyHz, magnitude, index, window, heldPower);
+  const first = leastSquares({ model: resonatorPower, ...some, start, free });
+  const flat = residualsOf(some.x, some.y, first.p, free, "even");
+  if (!flat || successive(flat.standard) < HOPELESS) return null;
+  let best: Candidate | null = { solution: first, residuals: flat };
+  if (flat.relative >= ROUNDING) best = likelier(some, first.p, free, complex);
+  if (best && flat.relative >= ROUNDING && window.to - window.from + 1 > some.x.length) {
+    const means = meanPoints(frequencyHz, magnitude, window, referenceHz, MEANS, best.solution.p);
+    best = fitMeans(means, best, free, complex);
   }
-  if (!residuals || !usable(solution, count, free)) return null;
-  if (!whiteEnough(residuals, noise, free)) return null;
-  return describe(solution, window, referenceHz, frequencyHz, count - free, free);
+  if (!best || !usable(best.solution, best.residuals.standard.length, free)) return null;
+  if (!whiteEnough(best.residuals, noise, free)) return null;
+  return describe(
+    best.solution,
+    window,
+    referenceHz,
+    frequencyHz,
+    best.residuals.standard.length - free,
+    free,
+  );
 }
 
 function describe(
@@ -129,30 +144,6 @@ function usable({ p, converged, inverse }: Solution, count: number, free: number
   return converged && inverse !== null && count > free && p[DEPTH] > 0 && p[FAR_POWER] > 0;
 }
 
-interface Points {
-  x: Float64Array;
-  y: Float64Array;
-  weight: Float64Array;
-}
-
-/** Every `stride`-th sample of the window: x = ln(f/reference), y = abs Γ², even weights. */
-function pick(
-  f: Float64Array,
-  g: Float64Array,
-  { from, to }: Window,
-  stride: number,
-  referenceHz: number,
-): Points {
-  const n = Math.floor((to - from) / stride) + 1;
-  const x = new Float64Array(n);
-  const y = new Float64Array(n);
-  for (let k = 0; k < n; k++) {
-    x[k] = Math.log(f[from + k * stride] / referenceHz);
-    y[k] = g[from + k * stride] ** 2;
-  }
-  return { x, y, weight: new Float64Array(n).fill(1) };
-}
-
 function firstGuess(
   f: Float64Array,
   g: Float64Array,
@@ -174,6 +165,10 @@ function firstGuess(
 const FEWEST_POINTS = 5;
 /** An inner window needs enough points to tell shape from scatter. */
 const FEWEST_HELD = 9;
-/** Enough for the parameters to within their last uncertainty; all points come in the last round. */
-const SELECTION = 400;
-const ROUNDS = 3;
+/** Each inner window has a shape error about ten times smaller: it goes with the fourth power of the width. */
+const SHRINK = 1.8;
+/** Samples that find the shape; in noise the means of all samples then sharpen it. */
+const SELECTION = 240;
+const MEANS = 400;
+/** Von Neumann's ratio; scatter gives 2 ± 0.3 over that many samples, a shape that does not fit under 0.1. */
+const HOPELESS = 0.2;

@@ -30,7 +30,8 @@ export interface ParabolaDip {
 /**
  * The dip by three points of return loss around sample `index`, which must have a neighbour on each side. `noise`: σ in dB. The part for
  * the frequency step is the distance between the vertex of return loss and that of the reflected power, as
- * the true curve lies between them near a dip. Null when there is no vertex, as on a plateau.
+ * the true curve lies between them near a dip. Null when there is no vertex, as
+ * on a plateau, or when its bend may be scatter.
  */
 export function parabolaDip(
   f: Float64Array,
@@ -43,7 +44,7 @@ export function parabolaDip(
   const power = at.map((i) => magnitude[i] ** 2);
   const loss = power.map((p) => -10 * Math.log10(p));
   const top = parabolaTop(x, loss);
-  if (!top) return null;
+  if (!top || loss[1] - (loss[0] + loss[2]) / 2 < CLEAR_OF_NOISE * noise) return null;
   const other = parabolaTop(
     x,
     power.map((p) => -p),
@@ -69,5 +70,7 @@ export function parabolaDip(
 }
 
 const NORMAL_95 = 1.959963984540054;
+/** In σ: the middle of three scattered points on a line stands out by this in 1 of 1,000. */
+const CLEAR_OF_NOISE = 4;
 /** Share of σ by which a point is moved to see the effect. */
 const SMALL = 1e-2;

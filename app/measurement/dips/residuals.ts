@@ -1,115 +1,128 @@
 import { resonatorPower } from "./resonator.ts";
 
-/** What a fit leaves over, weighed by the scatter that explains it best. */
+/** How the scatter of a sweep goes with its value: even in abs Γ, as a receiver's, or even in decibels, as a detector's. */
+export type Scatter = "even" | "decibel";
+
+/** What a fit leaves over. */
 export interface Residuals {
   /** Residual of abs Γ² over its standard deviation up to a common factor, length n. */
   standard: Float64Array;
-  /** 1/variance of abs Γ² up to a common factor. */
+  /** 1/variance of abs Γ² up to a common factor, length n. */
   weight: Float64Array;
-  /** True: scatter even in abs Γ; false: even in decibels. */
-  even: boolean;
-  /** Scatter as σ of abs Γ and as σ in dB, whichever `even` tells; root mean square. */
+  scatter: Scatter;
+  /** What keeps the variance over 0 where nothing returns; σ² of single samples where the scatter is even. */
+  floor: number;
+  /** σ of abs Γ, or σ in dB. */
   sigma: number;
+  /** −2 log likelihood up to a constant; the scatter with the smaller one explains the residuals better. Deep samples are left out. */
+  score: number;
   /** Largest residual over the far power: what rounding alone leaves is near 1e-16. */
   relative: number;
-  /** Takes the bias of the scatter off a measured abs Γ². */
-  unbiased: (power: number) => number;
 }
 
 /**
- * Residuals of abs Γ² against the resonator `p` at x. Two kinds of scatter are tried: even in abs Γ (variance 4σ²(Γ² + σ²))
- * and even in decibels (variance in proportion to Γ⁴); the likelier one counts unless `even` says which. Null when
- * the model gives no finite numbers.
+ * Residuals of abs Γ² (`y`) against the resonator `p` at x, weighed as the scatter says: variance in proportion to Γ² + σ² when even in abs Γ,
+ * to Γ⁴ when even in decibels. Null when the model gives no finite numbers.
  */
 export function residualsOf(
   x: Float64Array,
   y: Float64Array,
   p: Float64Array,
   free: number,
-  even?: boolean,
+  scatter: Scatter,
+  heldFloor?: number,
 ): Residuals | null {
   const n = x.length;
   const gradient = new Float64Array(p.length);
-  const model = new Float64Array(n);
-  const rest = new Float64Array(n);
+  const standard = new Float64Array(n);
+  const weight = new Float64Array(n);
   let squares = 0;
   let total = 0;
   let worst = 0;
   for (let i = 0; i < n; i++) {
-    model[i] = Math.max(0, resonatorPower(p, x[i], gradient));
-    rest[i] = y[i] - model[i];
-    squares += rest[i] * rest[i];
-    total += model[i];
-    worst = Math.max(worst, Math.abs(rest[i]));
+    weight[i] = Math.max(0, resonatorPower(p, x[i], gradient));
+    standard[i] = y[i] - weight[i];
+    squares += standard[i] * standard[i];
+    total += weight[i];
+    worst = Math.max(worst, Math.abs(standard[i]));
   }
   if (!Number.isFinite(squares) || !(total > 0)) return null;
-  const evenFloor = Math.max(squares / (4 * total), total * 1e-12);
-  const dbFloor = (DB_FLOOR * total) / n;
-  const linear = weigh(rest, model, free, (m) => m + evenFloor);
-  const decibel = weigh(rest, model, free, (m) => m * m + dbFloor * dbFloor);
-  const isEven = even ?? linear.score < decibel.score;
-  const chosen = isEven ? linear : decibel;
-  const variance = isEven ? chosen.mean / 4 : chosen.mean;
-  const factor = Math.exp(-variance / 2);
+  const even = scatter === "even";
+  const floor =
+    heldFloor ?? (even ? Math.max(squares / (4 * total), total * 1e-12) : ((DB_FLOOR * total) / n) ** 2);
+  const scored = (SCORED * total) / n;
+  let logs = 0;
+  let scoredSum = 0;
+  let scoredCount = 0;
+  let sum = 0;
+  for (let i = 0; i < n; i++) {
+    const variance = (even ? weight[i] : weight[i] * weight[i]) + floor;
+    weight[i] = 1 / variance;
+    standard[i] /= Math.sqrt(variance);
+    const square = standard[i] * standard[i];
+    sum += square;
+    if (y[i] < scored) continue;
+    logs += Math.log(variance);
+    scoredSum += square;
+    scoredCount++;
+  }
+  const sigma = Math.sqrt(sum / Math.max(1, n - free));
   return {
-    standard: chosen.standard,
-    weight: chosen.weight,
-    even: isEven,
-    sigma: isEven ? Math.sqrt(variance) : (10 / Math.LN10) * Math.sqrt(variance),
+    standard,
+    weight,
+    scatter,
+    floor,
+    sigma: even ? sigma / 2 : DB_PER_POWER * sigma,
+    score: scoredCount * Math.log(scoredSum / scoredCount || Number.MIN_VALUE) + logs,
     relative: worst / p[p.length - 1],
-    unbiased: isEven ? (power) => power - 2 * variance : (power) => power * factor,
   };
 }
 
 /**
+ * abs Γ² less the bias that scatter gives its mean. Even in abs Γ: 2σ² of a complex Γ (S. O. Rice, Bell Syst. Tech. J. 24, 1945), σ² of
+ * a normal abs Γ; a scalar trace cannot tell these and takes the middle. Even in dB: the mean of a log-normal. (All from memory, not seen.)
+ */
+export function unbiased(power: Float64Array, { scatter, sigma }: Residuals, complex: boolean): Float64Array {
+  const factor = scatter === "even" ? 1 : Math.exp(-((sigma / DB_PER_POWER) ** 2) / 2);
+  const shift = scatter === "even" ? (complex ? 2 : 1.5) * sigma * sigma : 0;
+  return power.map((value) => value * factor - shift);
+}
+
+/**
  * True when what is left looks like scatter and no more of it than the sweep's noise allows. With enough points by the ratio of
- * J. von Neumann (Ann. Math. Stat. 12, 367-395, 1941; from memory, not seen): mean squared successive difference over variance,
- * 2 for scatter without order, near 0 for a shape that does not fit. With few points by the size against `noise` (dB).
+ * J. von Neumann (Ann. Math. Stat. 12, 367-395, 1941; from memory, not seen). With few points by the size against `noise` (dB).
  */
 export function whiteEnough(residuals: Residuals, noise: number, free: number): boolean {
-  const { standard, sigma, even, relative } = residuals;
+  const { standard, sigma, scatter, relative } = residuals;
   if (relative < ROUNDING) return true;
   const n = standard.length;
-  const allowed = NOISE_FACTOR * (even ? (noise * Math.LN10) / 20 : noise);
+  const allowed = NOISE_FACTOR * (scatter === "even" ? (noise * Math.LN10) / 20 : noise);
   if (n < FEW) return sigma <= allowed;
+  return successive(standard) >= 2 * (1 - ORDER_LIMIT / Math.sqrt(Math.max(1, n - free)));
+}
+
+/** Von Neumann's ratio: mean squared successive difference over mean square; 2 for scatter, near 0 for a smooth shape. Exact fits give 2. */
+export function successive(standard: Float64Array): number {
   let squares = standard[0] ** 2;
   let steps = 0;
-  for (let i = 1; i < n; i++) {
+  for (let i = 1; i < standard.length; i++) {
     squares += standard[i] ** 2;
     steps += (standard[i] - standard[i - 1]) ** 2;
   }
-  const lag = 1 - ORDER_LIMIT / Math.sqrt(Math.max(1, n - free));
-  return steps / squares >= 2 * lag;
+  return squares > 0 ? steps / squares : 2;
 }
 
-function weigh(rest: Float64Array, model: Float64Array, free: number, variance: (m: number) => number) {
-  const n = rest.length;
-  const weight = new Float64Array(n);
-  const standard = new Float64Array(n);
-  let logs = 0;
-  let sum = 0;
-  for (let i = 0; i < n; i++) {
-    const v = variance(model[i]);
-    weight[i] = 1 / v;
-    standard[i] = rest[i] / Math.sqrt(v);
-    logs += Math.log(v);
-    sum += standard[i] * standard[i];
-  }
-  return {
-    weight,
-    standard,
-    mean: sum / Math.max(1, n - free),
-    score: n * Math.log(sum / n || Number.MIN_VALUE) + logs,
-  };
-}
-
-/** Decibels mean nothing 40 dB under the mean power: no detector there follows them. */
-const DB_FLOOR = 1e-4;
+/** Of the mean power. Deeper samples tell nothing of the scatter: one that happens to be near 0 would decide alone. */
+const SCORED = 0.1;
 /** abs Γ² over the far power; resonators without noise leave less than 1e-13. */
-const ROUNDING = 1e-9;
+export const ROUNDING = 1e-9;
 /** σ of few points scatters by half of itself. */
 const NOISE_FACTOR = 2;
 /** Under this the von Neumann ratio tells nothing. */
-const FEW = 10;
+const FEW = 12;
 /** In standard deviations of the ratio (1/√n): scatter without order stays above with 99.9 %. */
 const ORDER_LIMIT = 3;
+/** Decibels mean nothing 40 dB under the mean power: no detector there follows them. */
+const DB_FLOOR = 1e-4;
+/** dB of power in one neper of power. */
+const DB_PER_POWER = 10 / Math.LN10;

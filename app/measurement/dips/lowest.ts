@@ -1,0 +1,106 @@
+import { gammaToSwr } from "../reflection.ts";
+import type { Dip, Sweep } from "../sweep.ts";
+import { type Interval, swrInterval } from "../uncertainty.ts";
+import type { Stretch } from "./bandwidth.ts";
+import { noiseNear } from "./credible.ts";
+import type { FoundDip } from "./find.ts";
+import { type Fit, fitDip } from "./fit.ts";
+import { parabolaDip } from "./parabola.ts";
+import { fitWindow } from "./window.ts";
+
+/** The lowest point of a dip by one of the three methods; half-widths of 95 %, null where not known. */
+export interface Lowest {
+  method: Dip["method"];
+  frequencyHz: number;
+  frequencyHalfHz: number | null;
+  magnitude: number;
+  swr: Interval | null;
+  fit: Fit | null;
+}
+
+/**
+ * A resonator's fit, else a parabola through three samples of return loss, else (fewer than three samples in the dip,
+ * or its bend lost in noise) the lowest sample. `between`: the dips on both sides or the ends of the sweep, which a
+ * fit may not cross. `noise`: σ in dB.
+ */
+export function lowestOf(
+  sweep: Sweep,
+  found: FoundDip,
+  between: Stretch,
+  noise: number,
+  mayFit: boolean,
+): Lowest {
+  const { frequencyHz, magnitude } = sweep;
+  const { index, prominenceDb } = found;
+  if (mayFit) {
+    const window = fitWindow(magnitude, index, prominenceDb, between.from, between.to);
+    const fit = fitDip(frequencyHz, magnitude, index, window, noise, sweep.gammaRe !== undefined);
+    if (fit) {
+      return {
+        method: "fit",
+        frequencyHz: fit.resonator.f0Hz,
+        frequencyHalfHz: fit.frequencyHalfHz,
+        magnitude: Math.sqrt(fit.power),
+        swr: swrInterval(fit.power, fit.powerHalf),
+        fit,
+      };
+    }
+  }
+  const nearby = Math.max(noise, (DB_PER_NEPER * noiseNear(magnitude, index)) / magnitude[index]);
+  const few = pointsOf(magnitude, index, prominenceDb) < FEWEST_FOR_PARABOLA;
+  const top = few ? null : parabolaDip(frequencyHz, magnitude, index, nearby);
+  if (!top) return sampleOnly(sweep, index, nearby);
+  const gamma = 10 ** (-top.returnLossDb / 20);
+  const swr = (db: number) => gammaToSwr(10 ** (-(top.returnLossDb + db) / 20));
+  return {
+    method: "parabola",
+    frequencyHz: top.frequencyHz,
+    frequencyHalfHz: top.frequencyHalfHz,
+    magnitude: gamma,
+    swr: { low: swr(top.returnLossHalfDb), high: swr(-top.returnLossHalfDb) },
+    fit: null,
+  };
+}
+
+/** The lowest sample, or the middle of its plateau. Between it and the first samples that stand clear of it by the noise, the dip may be anywhere. */
+export function sampleOnly({ frequencyHz, magnitude }: Sweep, index: number, noise: number): Lowest {
+  const value = magnitude[index];
+  const plateau = reachOf(magnitude, index, value);
+  const vague = reachOf(magnitude, index, value * 10 ** ((CLEAR_SIGMAS * noise) / 20));
+  const inside = vague.from > 0 && vague.to < magnitude.length - 1;
+  const centre = (frequencyHz[plateau.from] + frequencyHz[plateau.to]) / 2;
+  const halfHz = inside
+    ? Math.max(frequencyHz[vague.to + 1] - centre, centre - frequencyHz[vague.from - 1])
+    : null;
+  return {
+    method: "sample",
+    frequencyHz: inside ? centre : frequencyHz[index],
+    frequencyHalfHz: halfHz,
+    magnitude: value,
+    swr: null,
+    fit: null,
+  };
+}
+
+function reachOf(magnitude: Float64Array, index: number, level: number): Stretch {
+  let from = index;
+  let to = index;
+  while (from > 0 && magnitude[from - 1] <= level) from--;
+  while (to < magnitude.length - 1 && magnitude[to + 1] <= level) to++;
+  return { from, to };
+}
+
+/** Samples below half of the dip's depth in dB. */
+function pointsOf(magnitude: Float64Array, index: number, prominenceDb: number): number {
+  const half = magnitude[index] * 10 ** (prominenceDb / 40);
+  let count = 1;
+  for (let i = index - 1; magnitude[i] <= half && count < FEWEST_FOR_PARABOLA; i--) count++;
+  for (let i = index + 1; magnitude[i] <= half && count < FEWEST_FOR_PARABOLA; i++) count++;
+  return count;
+}
+
+const DB_PER_NEPER = 20 / Math.LN10;
+/** A sample this far over the lowest one is higher in truth. */
+const CLEAR_SIGMAS = 4;
+/** Three points make a parabola. */
+const FEWEST_FOR_PARABOLA = 3;
