@@ -145,8 +145,15 @@ export async function updateBody(id: number, body: string, tx: Queryable = db) {
   await tx.update(notes).set({ body, editedAt: new Date() }).where(eq(notes.id, id));
 }
 
-export async function hasReplies(id: number, tx: Queryable = db): Promise<boolean> {
-  return (await tx.select({ id: notes.id }).from(notes).where(eq(notes.parentId, id)).limit(1)).length > 0;
+/** Reads what is committed now, not what was there when the transaction began. */
+export async function hasReplies(id: number, tx: Queryable): Promise<boolean> {
+  const rows = await tx
+    .select({ id: notes.id })
+    .from(notes)
+    .where(eq(notes.parentId, id))
+    .limit(1)
+    .for("update");
+  return rows.length > 0;
 }
 
 /** Leaves a stub in its place: the text goes, who and when stay. */

@@ -3,6 +3,7 @@ import { levelFile, type Span } from "./files.ts";
 import { gaussBy } from "./random.ts";
 import { said, swept } from "./steps.ts";
 import { on, type Step, type Story } from "./story.ts";
+import { dbm } from "./told.ts";
 
 const SPAN: Span = { startHz: 1e6, stopHz: 100e6, points: 991 };
 /** Nominal level with the port open or shorted, dBm: 0 dBm less the 12.04 dB of an ideal bridge, rounded. */
@@ -30,7 +31,7 @@ Invented, as all of the *Fennmarsh Antenna Circle*.`,
         on(2, 21, 16, 0),
         { sweep: "short" },
         (t) =>
-          `The 0 dB line given to all of these is ${ZERO_DBM} dBm, from the generator's 0 dBm and the 12.04 dB that an ideal bridge loses. Against it the open reads ${t.loss("open", 10)} at 10 MHz and the short ${t.loss("short", 10)}; at 90 MHz ${t.loss("open", 90)} and ${t.loss("short", 90)}. An ideal bridge would give 0 for both, everywhere.`,
+          `The 0 dB line given to all of these is ${dbm(ZERO_DBM)}, from the generator's 0 dBm and the 12.04 dB that an ideal bridge loses. Against it the open reads ${t.loss("open", 10)} at 10 MHz and the short ${t.loss("short", 10)}; at 90 MHz ${t.loss("open", 90)} and ${t.loss("short", 90)}. An ideal bridge would give 0 for both, everywhere.`,
         { key: "zero" },
       ),
       said(

@@ -122,7 +122,7 @@ function cut(): Step[] {
     }),
     said("bram-sedge", on(5, 30, 16, 45), { sweep: "summer", nearMhz: 10.12 }, (t) => {
       const [before, now] = [t.dip("cut", 10.12), t.dip("summer", 10.12)];
-      return `Checked it while I was up there for the wasps. ${before.f} then, ${now.link} now: ${khz(now.hz - before.hz)}, ${now.pm}. Drier wood, I suppose, or the wasps.`;
+      return `Checked it while I was up there for the wasps. ${before.f} then, ${now.link} now: ${khz(now.hz - before.hz)} higher, and I know either to ${now.pm}. Drier wood, I suppose, or the wasps.`;
     }),
   ];
 }
@@ -134,7 +134,7 @@ function attic(name: string, lengthM: number, wet: boolean) {
 /** Wet tiles slow the wave and take power: lower, wider, more resistance. */
 function resonatorsOf(lengthM: number, wet: boolean): Resonator[] {
   const shortening = wet ? 0.922 : 0.931;
-  const ohm = wet ? 68 : 58;
+  const ohm = wet ? 56 : 43;
   const hz = (shortening * LIGHT_SPEED) / (2 * lengthM);
   return [
     { hz, ohm, q: 640 / ohm },

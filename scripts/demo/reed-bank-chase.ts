@@ -2,7 +2,7 @@ import { LIGHT_SPEED } from "./antenna.ts";
 import { AS_BUILT, BOTH_CUT, type reedBankFiles, SHORT_CUT, ZERO_DBM } from "./reed-bank.ts";
 import { decided, said, swept } from "./steps.ts";
 import { on, type Step } from "./story.ts";
-import { khz, mhz, percent } from "./told.ts";
+import { aside, dbm, khz, mhz, percent } from "./told.ts";
 
 /** March: a dip that nobody built, three instruments that agree on it, and a first explanation that fails. */
 export function chase(files: ReturnType<typeof reedBankFiles>): Step[] {
@@ -50,7 +50,7 @@ But the widest good match of the whole sweep is this one: SWR ${t.dip("asBuilt",
       odd,
       (t) => {
         const short = t.dip("asBuilt", 17.6).hz;
-        return `Three times the short element, I would say. A quarter wave against ground comes back at every odd multiple, and 3 × ${mhz(short)} = ${mhz(3 * short)}. This dip is ${percent(t.dip("asBuilt", 52.2).hz / (3 * short))} off that.`;
+        return `Three times the short element, I would say. A quarter wave against ground comes back at every odd multiple, and 3 × ${mhz(short)} = ${mhz(3 * short)}. This dip is ${aside(t.dip("asBuilt", 52.2).hz / (3 * short))} that.`;
       },
       { key: "three-times", answers: "what-is-it" },
     ),
@@ -90,7 +90,7 @@ But the widest good match of the whole sweep is this one: SWR ${t.dip("asBuilt",
       "ada-marsh",
       on(3, 14, 16, 5),
       { sweep: "bridge" },
-      `Spectrum analyser with tracking generator at 0 dBm, bridge, ten minutes of warming up. With the port open the level is ${ZERO_DBM} dBm; a resistive 50 Ω bridge with a 50 Ω source and detector loses 12.04 dB from the source to the detector when the port is open or shorted, so that is a sane bridge. I gave ${ZERO_DBM} as the 0 dB line. I have no load sweep of this bench yet, so its directivity is not in the limits.`,
+      `Spectrum analyser with tracking generator at 0 dBm, bridge, ten minutes of warming up. With the port open the level is ${dbm(ZERO_DBM)}; a resistive 50 Ω bridge with a 50 Ω source and detector loses 12.04 dB from the source to the detector when the port is open or shorted, so that is a sane bridge. I gave ${dbm(ZERO_DBM)} as the 0 dB line. I have no load sweep of this bench yet, so its directivity is not in the limits.`,
       { key: "zero-line" },
     ),
     said(
@@ -115,7 +115,7 @@ But the widest good match of the whole sweep is this one: SWR ${t.dip("asBuilt",
       { sweep: "laboratory", nearMhz: 52.2 },
       (
         t,
-      ) => `Borrowed for the weekend, calibrated at the end of its own test lead. Three instruments, the same antenna:
+      ) => `Borrowed until the 20th of April, calibrated at the end of its own test lead. Three instruments, the same antenna:
 
 | | odd dip | SWR | 2:1 width |
 |:--|--:|--:|--:|

@@ -56,7 +56,7 @@ export function proof(files: ReturnType<typeof reedBankFiles>): Step[] {
       on(3, 29, 14, 15),
       { sweep: "hub" },
       (t) =>
-        `The last day of the loan. Battery on, calibrated at the hub, feedline unscrewed and laid aside, stake still in the ground. The elements are where they were (${t.dip("hub", 7.12).f}, ${t.dip("hub", 18.2).f}). At 52.3 MHz the return loss is ${t.loss("hub", 52.3)}: **no dip**. With the feedline it was ${t.loss("radials", 52.3)}.`,
+        `Laboratory analyser on its battery, calibrated at the hub, feedline unscrewed and laid aside, stake still in the ground. The elements are where they were (${t.dip("hub", 7.12).f}, ${t.dip("hub", 18.2).f}). At 52.3 MHz the return loss is ${t.loss("hub", 52.3)}: **no dip**. With the feedline it was ${t.loss("radials", 52.3)}.`,
       { key: "no-dip" },
     ),
     said(
@@ -119,7 +119,7 @@ export function proof(files: ReturnType<typeof reedBankFiles>): Step[] {
     ),
     swept({
       key: "stakeFar",
-      by: "ada-marsh",
+      by: "cleo-reed",
       at: on(4, 4, 11, 0),
       title: `Stake moved out to ${FAR_M.toFixed(2)} m`,
       fileName: "stake-324.s1p",
@@ -185,7 +185,7 @@ ${row("stakeNearWide", 62, NEAR_M)}
 ${row("radials", 52.2, FREE_M)}
 ${row("stakeFar", 44.4, FAR_M)}
 
-Constant within a per cent while the length changes by 40. I propose it.`;
+Constant within a per cent while the length changes by 40 per cent. I propose it.`;
       },
       { key: "three-lengths" },
     ),
@@ -234,7 +234,7 @@ All that is left up there is the short element's third resonance, ${t.dip("choke
       on(4, 11, 19, 15),
       { sweep: "choked" },
       (t) =>
-        `Worth saying what it did *not* do: 40 m ${t.dip("radials", 7.12).f} before and ${t.dip("choked", 7.12).f} after, 17 m ${t.dip("radials", 18.2).f} and ${t.dip("choked", 18.2).f}. At those frequencies the braid was too far from half a wave to take part. What it does to noise picked up on the cable this sweep cannot say.`,
+        `Worth saying what it did *not* do: 40 m ${t.dip("radials", 7.12).f} before and ${t.dip("choked", 7.12).f} after, 17 m ${t.dip("radials", 18.2).f} and ${t.dip("choked", 18.2).f}. At those frequencies the braid is too far from half a wave to take much part. What the choke does to noise picked up on the cable these sweeps cannot say.`,
       { answers: "choked" },
     ),
     swept({

@@ -57,7 +57,9 @@ export class Told {
       s: formatSwr(minimumSwr),
       w: bandwidth ? formatWidth(bandwidth.widthHz, bandwidth.widthUncertaintyHz) : "no width",
       pm:
-        frequencyUncertaintyHz === null ? "by an unknown amount" : `± ${formatWidth(frequencyUncertaintyHz)}`,
+        frequencyUncertaintyHz === null
+          ? "by an unknown amount"
+          : `± ${formatWidth(frequencyUncertaintyHz, frequencyUncertaintyHz)}`,
     };
   }
 
@@ -109,10 +111,20 @@ export function mhz(hz: number, digits = 2): string {
   return `${(hz / 1e6).toFixed(digits)} MHz`;
 }
 
+/** "1.1 % below" */
+export function aside(ratio: number): string {
+  return `${Math.abs((ratio - 1) * 100).toFixed(1)} % ${ratio < 1 ? "below" : "above"}`;
+}
+
 /** "+3.3 %" */
 export function percent(ratio: number, digits = 1): string {
   const value = (ratio - 1) * 100;
   return `${value < 0 ? "−" : "+"}${Math.abs(value).toFixed(digits)} %`;
+}
+
+/** "−11.9 dBm" */
+export function dbm(level: number): string {
+  return `${level < 0 ? "−" : ""}${Math.abs(level)} dBm`;
 }
 
 export function khz(hz: number): string {

@@ -224,7 +224,7 @@ describe("removeNote", () => {
   });
 
   it("never loses an answer that is written meanwhile", async () => {
-    for (let round = 0; round < 8; round++) {
+    for (let round = 0; round < 25; round++) {
       const { publicId } = await write(ada, "question");
       const [answer] = await Promise.allSettled([
         write(bram, "answer", { parentPublicId: publicId }),

@@ -27,7 +27,7 @@ export function DipNumbers({ data }: { data: DipPageData }) {
         <Row label="Frequency" number={formatFrequency(numbers.frequencyHz, numbers.frequencyUncertaintyHz)}>
           {numbers.frequencyUncertaintyHz === null
             ? "limits unknown"
-            : `± ${formatWidth(numbers.frequencyUncertaintyHz)} (95 %)`}
+            : `± ${formatWidth(numbers.frequencyUncertaintyHz, numbers.frequencyUncertaintyHz)} (95 %)`}
           . {METHOD[numbers.method]}
           {data.closeUp.stepHz !== null && ` Points ${formatWidth(data.closeUp.stepHz)} apart.`}
         </Row>
@@ -73,7 +73,9 @@ function BandwidthRow({ numbers, limitSwr }: { numbers: Dip; limitSwr: number })
     <Row label={label} number={bandwidth.open ? `at least ${width}` : width}>
       {edgesOf(bandwidth)}
       {bandwidth.fractional !== null && `, ${formatPercent(bandwidth.fractional)} of the centre`}.{" "}
-      {widthUncertaintyHz === null ? "Limits unknown." : `± ${formatWidth(widthUncertaintyHz)} (95 %).`}
+      {widthUncertaintyHz === null
+        ? "Limits unknown."
+        : `± ${formatWidth(widthUncertaintyHz, widthUncertaintyHz)} (95 %).`}
       {bandwidth.shared && " Another dip lies in the same stretch: the width belongs to both."}
       {bandwidth.open && " The sweep ends inside, so it is wider than this."}
     </Row>

@@ -1,0 +1,110 @@
+import { eq } from "drizzle-orm";
+import { beforeAll, describe, expect, it } from "vitest";
+import { db } from "~/db/client.server";
+import * as jobs from "~/db/jobs.server";
+import * as people from "~/db/people.server";
+import { dips, facts, memberships, notes, projects, sweeps, users } from "~/db/schema/index";
+import { buildDemo } from "../../scripts/demo/build.ts";
+import { play } from "../../scripts/demo/play.ts";
+import { reedBankStory } from "../../scripts/demo/reed-bank-story.ts";
+
+const STORY = "The vertical on the reed bank";
+
+async function demo() {
+  const [project] = await db.select().from(projects).where(eq(projects.title, STORY));
+  const of = { sweeps, notes, dips };
+  const rows = async <Table extends keyof typeof of>(table: Table) =>
+    (await db
+      .select()
+      .from(of[table])
+      .where(eq(of[table].projectId, project.id))) as (typeof of)[Table]["$inferSelect"][];
+  return { project, sweeps: await rows("sweeps"), notes: await rows("notes"), dips: await rows("dips") };
+}
+
+let first: Awaited<ReturnType<typeof buildDemo>>;
+beforeAll(async () => {
+  first = await buildDemo();
+}, 120_000);
+
+describe("the demo", () => {
+  it("is built once", async () => {
+    expect(first).toBe("built");
+    const before = await demo();
+    expect(await buildDemo()).toBe("there already");
+    expect(await demo()).toEqual(before);
+  });
+
+  it("has enough of everything, and says that it is invented", async () => {
+    const found = await demo();
+    expect(found.sweeps.length).toBeGreaterThanOrEqual(12);
+    expect(found.notes.length).toBeGreaterThanOrEqual(25);
+    expect(new Set(found.notes.map((note) => note.authorId)).size).toBe(4);
+    const all = await db.select().from(projects);
+    expect(all.map((project) => [project.visibility, project.demo]).sort()).toEqual([
+      ["private", 1],
+      ["public", 1],
+      ["public", 1],
+    ]);
+    for (const { summary } of all) expect(summary).toMatch(/invented/i);
+  });
+
+  it("goes on for about six weeks of 2026, in order", async () => {
+    const found = await demo();
+    const times = found.notes.map((note) => note.createdAt.getTime());
+    expect(times).toEqual([...times].sort((a, b) => a - b));
+    const taken = found.sweeps.map((sweep) => sweep.takenAt?.getTime() ?? 0);
+    expect(Math.min(...taken)).toBeGreaterThan(Date.UTC(2026, 0, 1));
+    expect((Math.max(...taken) - Math.min(...taken)) / 86_400_000).toBeCloseTo(42, 0);
+  });
+
+  it("ends settled: every dip that was chased has the same verdict", async () => {
+    const chased = (await demo()).dips.filter((dip) => dip.verdictText.includes("braid"));
+    expect(chased.length).toBe(5);
+    expect(chased.every((dip) => dip.verdict === "settled" && dip.verdictBy !== null)).toBe(true);
+  });
+
+  it("says nothing that is not there: links lead somewhere, numbers are numbers", async () => {
+    const found = await demo();
+    const known = new Set([
+      ...found.dips.map((dip) => `/projects/${found.project.publicId}/dips/${dip.publicId}`),
+      ...found.sweeps.map((sweep) => `/projects/${found.project.publicId}/sweeps/${sweep.publicId}`),
+    ]);
+    let links = 0;
+    for (const { body } of found.notes) {
+      expect(body).not.toMatch(/NaN|undefined|null|Infinity|unknown|\[object/);
+      for (const [, path] of body.matchAll(/\]\((\/[^)]*)\)/g)) {
+        links++;
+        expect(known.has(path)).toBe(true);
+      }
+    }
+    expect(links).toBeGreaterThan(15);
+  });
+
+  it("lets the stand-in's people into these accounts, the keeper as administrator where there is one", async () => {
+    const provider = process.env.LOCAL_GITHUB === "1" ? "github" : "demo";
+    expect((await people.findByIdentity(provider, "1001"))?.userName).toBe("ada-marsh");
+    const administrators = await db.select().from(users).where(eq(users.administrator, true));
+    expect(administrators.map((user) => user.userName)).toEqual(provider === "github" ? ["site-keeper"] : []);
+  });
+
+  it("is cleaned and built anew when a build was killed half-way", async () => {
+    const before = await demo();
+    const ada = await people.findByUserName("ada-marsh");
+    const one = { id: ada?.id ?? 0, userName: "ada-marsh" };
+    await db.delete(facts).where(eq(facts.name, "demo"));
+    const half = { ...reedBankStory(), members: [], steps: reedBankStory().steps.slice(0, 2) };
+    const cast = { "ada-marsh": one, "bram-sedge": one, "cleo-reed": one, "dov-heron": one };
+    await play(half, cast);
+    expect(await buildDemo()).toBe("built");
+    const again = await demo();
+    expect((await db.select().from(projects)).length).toBe(3);
+    expect(again.project.id).not.toBe(before.project.id);
+    expect(again.sweeps.map((sweep) => sweep.title)).toEqual(before.sweeps.map((sweep) => sweep.title));
+    const plain = (rows: typeof before.notes) =>
+      rows.map((note) => note.body.replace(/\(\/projects[^)]*\)/g, ""));
+    expect(plain(again.notes)).toEqual(plain(before.notes));
+    expect((await db.select().from(memberships)).length).toBe(4 + 3 + 3);
+    expect((await db.select().from(users)).length).toBeLessThanOrEqual(5);
+    expect(await jobs.findFact("demo")).toBeTruthy();
+  }, 120_000);
+});
