@@ -2,15 +2,18 @@ import { useHydrated } from "~/components/ui/hydrated";
 
 export type DragMode = "off" | "zoom" | "move";
 
+/** Of the view that zooms: being fetched, drawn, or not to be had. */
+export type ZoomViewState = "waiting" | "ready" | "failed";
+
 export interface DragBarProps {
   drag: DragMode;
   onDrag: (drag: DragMode) => void;
-  /** The zooming view is on its way. */
-  waiting: boolean;
+  /** Null while nobody asked for it. */
+  state: ZoomViewState | null;
 }
 
 /** What dragging on the chart does. On a touch screen it is off until asked for, so that the page scrolls. */
-export function DragBar({ drag, onDrag, waiting }: DragBarProps) {
+export function DragBar({ drag, onDrag, state }: DragBarProps) {
   if (!useHydrated()) return null;
   return (
     // biome-ignore lint/a11y/useSemanticElements: two buttons, not a form
@@ -26,7 +29,8 @@ export function DragBar({ drag, onDrag, waiting }: DragBarProps) {
         </button>
       ))}
       <span role="status" className="soft">
-        {waiting ? "Fetching the zooming view" : ""}
+        {state === "waiting" && "Fetching the zooming view"}
+        {state === "failed" && "The zooming view could not be fetched. The buttons on the left still work."}
       </span>
     </div>
   );

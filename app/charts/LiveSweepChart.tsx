@@ -1,17 +1,21 @@
-import { lazy, Suspense, useEffect, useMemo, useRef, useState } from "react";
+import { type ComponentType, lazy, Suspense, useEffect, useMemo, useRef, useState } from "react";
 import { useHydrated } from "~/components/ui/hydrated";
 import type { ChartDip } from "./chart-types";
-import { DragBar, type DragMode } from "./DragBar";
+import { DragBar, type DragMode, type ZoomViewState } from "./DragBar";
 import type { ChartPoints } from "./decimate";
 import { dipsWithCards, HollowCards } from "./HollowCards";
+import type { PlotlyChartProps } from "./PlotlyChart.client";
 import { RangeBar } from "./RangeBar";
 import { type FrequencyRange, mergePoints } from "./ranges";
 import { SweepChart } from "./SweepChart";
 import { buildSweepScene, type SceneInput } from "./scene";
 
 // Megabytes: fetched when somebody first turns to the chart, never with the page.
-const PlotlyChart = lazy(() =>
-  import("./PlotlyChart.client").then(({ PlotlyChart }) => ({ default: PlotlyChart })),
+const PlotlyChart = lazy<ComponentType<PlotlyChartProps>>(() =>
+  import("./PlotlyChart.client").then(
+    ({ PlotlyChart }) => ({ default: PlotlyChart }),
+    () => ({ default: PlotlyMissing }),
+  ),
 );
 
 export interface LiveSweepChartProps extends Omit<SceneInput, "plotWidthPx" | "limits"> {
@@ -50,7 +54,8 @@ export function LiveSweepChart(props: LiveSweepChartProps) {
     onRange(range);
   };
   const live = useHydrated() && (drag === "zoom" || drag === "move");
-  const [ready, setReady] = useState(false);
+  const [state, setState] = useState<ZoomViewState>("waiting");
+  const drawnLive = live && state === "ready";
   const links = { dipHref, chosenDipId, onPick };
   const chosen = dips.find((dip) => dip.id === chosenDipId);
   const now = asked ?? { fromHz: view.fromHz, toHz: view.toHz };
@@ -65,14 +70,14 @@ export function LiveSweepChart(props: LiveSweepChartProps) {
           rangeHref={rangeHref}
           onRange={choose}
         />
-        <DragBar drag={drag ?? "off"} onDrag={setDrag} waiting={live && !ready} />
+        <DragBar drag={drag ?? "off"} onDrag={setDrag} state={live ? state : null} />
       </div>
       <div onPointerEnter={(event) => event.pointerType === "mouse" && drag === null && setDrag("zoom")}>
         <SweepChart
           scene={shown}
           label={label}
           leaders={dipsWithCards(shown)}
-          lineHidden={live && ready}
+          lineHidden={drawnLive}
           {...links}
         >
           {live && (
@@ -85,7 +90,7 @@ export function LiveSweepChart(props: LiveSweepChartProps) {
                 onDrag={setAsked}
                 onRange={choose}
                 onPick={onPick}
-                onReady={setReady}
+                onState={setState}
               />
             </Suspense>
           )}
@@ -94,6 +99,12 @@ export function LiveSweepChart(props: LiveSweepChartProps) {
       <HollowCards scene={shown} designBands={designBands} {...links} />
     </div>
   );
+}
+
+/** In place of a view that could not be fetched: the drawing and its links stay as they are. */
+function PlotlyMissing({ onState }: Pick<PlotlyChartProps, "onState">) {
+  useEffect(() => onState("failed"), [onState]);
+  return null;
 }
 
 /** The points of the stretch in view laid into the widest set seen so far, so that moving shows land at once. */

@@ -1,6 +1,7 @@
 import Plotly from "plotly.js-dist-min";
 import { useMemo } from "react";
 import createPlotlyComponent from "react-plotly.js/factory";
+import type { ZoomViewState } from "./DragBar";
 import type { ChartPoints } from "./decimate";
 import { usePageColours } from "./page-colours";
 import { axisHz, axisValue, figureLayout, figureLine } from "./plotly-figure";
@@ -19,8 +20,7 @@ export interface PlotlyChartProps {
   onDrag: (range: FrequencyRange) => void;
   onRange: (range: FrequencyRange) => void;
   onPick?: (dipId: string) => void;
-  /** True once the line is drawn, false when it is taken away. */
-  onReady: (ready: boolean) => void;
+  onState: (state: ZoomViewState) => void;
 }
 
 /** A press this near to a dip picks it. */
@@ -28,7 +28,7 @@ const PICK_PX = 14;
 
 /** The line of a sweep with zoom, pan, read-out and picking, laid over the drawing's plot. */
 export function PlotlyChart(props: PlotlyChartProps) {
-  const { scene, points, whole, drag, onDrag, onRange, onPick, onReady } = props;
+  const { scene, points, whole, drag, onDrag, onRange, onPick, onState } = props;
   const { view, plotHeightPx, yOfMagnitude } = scene;
   const palette = usePageColours();
   const data = useMemo(() => {
@@ -56,8 +56,8 @@ export function PlotlyChart(props: PlotlyChartProps) {
       layout={layout as Partial<Plotly.Layout>}
       config={CONFIG}
       useResizeHandler
-      onInitialized={() => onReady(true)}
-      onPurge={() => onReady(false)}
+      onInitialized={() => onState("ready")}
+      onPurge={() => onState("waiting")}
       className="plotly-layer"
       // A box being drawn changes nothing until it is let go.
       onRelayouting={(event) => drag === "pan" && withRange(event, view.scale, onDrag)}

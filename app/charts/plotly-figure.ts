@@ -8,7 +8,7 @@ import type { FrequencyRange } from "./ranges.ts";
 export interface FigureLine {
   /** Hz, or its decimal logarithm on a logarithmic axis. */
   x: number[];
-  /** px over the plot's bottom; null in gaps and where the value is off the scale. */
+  /** px over the plot's bottom; null in gaps and beyond the first point off the scale. */
   y: (number | null)[];
   /** The same with what is off the scale at the edge, so that it can still be read out. */
   readY: (number | null)[];
@@ -22,14 +22,21 @@ export function figureLine(
   plotHeightPx: number,
 ): FigureLine {
   const line: FigureLine = { x: [], y: [], readY: [], words: [] };
-  for (let index = 0; index < points.frequencyHz.length; index++) {
-    const hz = points.frequencyHz[index];
-    const magnitude = points.magnitude[index];
-    const y = yOfMagnitude(magnitude);
-    line.x.push(axisValue(hz, scale));
-    line.y.push(y >= 0 && y <= plotHeightPx ? plotHeightPx - y : null);
-    line.readY.push(Number.isNaN(y) ? null : Math.min(plotHeightPx, Math.max(0, plotHeightPx - y)));
-    line.words.push(pointWords(hz, magnitude));
+  const count = points.frequencyHz.length;
+  const overBottom = Array.from(
+    { length: count },
+    (_, index) => plotHeightPx - yOfMagnitude(points.magnitude[index]),
+  );
+  const onScale = (index: number) => overBottom[index] >= 0 && overBottom[index] <= plotHeightPx;
+  for (let index = 0; index < count; index++) {
+    const edge = Math.min(plotHeightPx, Math.max(0, overBottom[index]));
+    const read = Number.isNaN(edge) ? null : edge;
+    // The pen runs on to the first point beyond the edge, where the dashes take over.
+    const drawn = onScale(index) || onScale(index - 1) || onScale(index + 1);
+    line.x.push(axisValue(points.frequencyHz[index], scale));
+    line.y.push(drawn ? read : null);
+    line.readY.push(read);
+    line.words.push(pointWords(points.frequencyHz[index], points.magnitude[index]));
   }
   return line;
 }

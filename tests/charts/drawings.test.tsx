@@ -3,6 +3,7 @@ import sharp from "sharp";
 import { describe, expect, it } from "vitest";
 import type { ChartDip } from "../../app/charts/chart-types.ts";
 import { dipsWithCards, HollowCards } from "../../app/charts/HollowCards.tsx";
+import { LiveSweepChart } from "../../app/charts/LiveSweepChart.tsx";
 import { Profile } from "../../app/charts/Profile.tsx";
 import { PAPER_PALETTE } from "../../app/charts/palette.ts";
 import { SweepChart, SweepFigure } from "../../app/charts/SweepChart.tsx";
@@ -86,6 +87,35 @@ describe("a chart on a page", () => {
 
   it("has no cards where there are no dips", () => {
     expect(page({ ...base, dips: [] })).not.toContain("hollow-card");
+  });
+});
+
+describe("a live chart before scripts run", () => {
+  const live = (view: SceneInput["view"]) =>
+    renderToStaticMarkup(
+      <LiveSweepChart
+        {...base}
+        view={view}
+        whole={{ fromHz: 1e6, toHz: 30e6 }}
+        label="Chart"
+        dipHref={dipHref}
+        rangeHref={({ fromHz, toHz }) => `?from=${fromHz}&to=${toHz}`}
+        onRange={() => undefined}
+      />,
+    );
+
+  it("has its line, its cards and its links to other stretches, and no buttons that need scripts", () => {
+    const markup = live({ ...base.view, scale: "linear", fromHz: 5e6, toHz: 15e6 });
+    assertWellFormed(markup);
+    expect(markup).toContain(`stroke="var(--color-ink)"`);
+    expect(markup).toContain("hollow-card");
+    expect(markup).toContain('href="?from=7500000&amp;to=12500000"');
+    expect(markup).toContain('href="?from=1000000&amp;to=30000000"');
+    expect(markup).not.toContain("<button");
+  });
+
+  it("offers of the whole sweep only to zoom in", () => {
+    expect(live(base.view).match(/href="\?from/g)).toHaveLength(1);
   });
 });
 

@@ -4,7 +4,7 @@ import { axisHz, axisValue, figureLayout, figureLine, pointWords } from "../../a
 import { buildSweepScene } from "../../app/charts/scene.ts";
 import { pathNumbers } from "./sample.ts";
 
-const sweep = { frequencyHz: [1e6, 10e6, 20e6, 100e6], magnitude: [1, 0.1, Number.NaN, 0.5] };
+const sweep = { frequencyHz: [1e6, 5e6, 10e6, 20e6, 100e6], magnitude: [1, 1, 0.1, Number.NaN, 0.5] };
 
 describe("figureLine", () => {
   it("lies on the drawing: the same px from the bottom, nothing in gaps and off the scale", () => {
@@ -19,13 +19,14 @@ describe("figureLine", () => {
         swrLimit: 2,
       });
       const line = figureLine(sweep, "log", scene.yOfMagnitude, scene.plotHeightPx);
-      expect(line.y[2]).toBeNull();
+      expect(line.y[3]).toBeNull();
+      expect(line.readY[3]).toBeNull();
       expect(line.y[0]).toBe(quantity === "rl" ? scene.plotHeightPx : null);
+      expect(line.y[1]).toBe(scene.plotHeightPx);
       expect(line.readY[0]).toBe(scene.plotHeightPx);
-      expect(line.readY[2]).toBeNull();
       const drawn = pathNumbers(scene.land);
-      expect(drawn).toContain(Math.round((scene.plotHeightPx - (line.y[1] ?? 0)) * 100) / 100);
-      expect(line.x[1]).toBe(7);
+      expect(drawn).toContain(Math.round((scene.plotHeightPx - (line.y[2] ?? 0)) * 100) / 100);
+      expect(line.x[2]).toBe(7);
     }
   });
 });
