@@ -1,9 +1,9 @@
 import type { Ground } from "./ground.ts";
-import type { Rgb } from "./oklab.ts";
+import { lookApart, type Rgb } from "./oklab.ts";
 import type { Picture } from "./picture.ts";
 
-/** A grid line nearer to the trace than this share of the squared distance to the ground is not told apart. */
-const OWN_COLOR = 0.05;
+/** Difference below which a line's colour may be the trace's own. */
+const OWN_COLOR = 0.045;
 
 /** How much of each pixel inside the plot a colour covers, 0 to 1, row by row. */
 export interface Coverage {
@@ -63,9 +63,11 @@ function difference(from: Rgb, color: Rgb): Difference {
   return { from, to, square, tolerance: COLOR_TOLERANCE ** 2 * square + WEAR_TOLERANCE ** 2 };
 }
 
-/** A line's colour serves as ground unless it is nearly the trace's own: then the trace runs along it. */
+/** A line's colour serves as ground unless it may be the trace itself, in full or paler, running along it. */
 function usable(line: Rgb | undefined, color: Rgb, base: Difference): Difference | undefined {
   if (!line) return undefined;
-  const own = difference(line, color);
-  return own.square < OWN_COLOR * base.square ? undefined : own;
+  const along = line.reduce((sum, v, i) => sum + (v - base.from[i]) * base.to[i], 0) / base.square;
+  const paler = base.from.map((v, i) => v + Math.min(1, along) * base.to[i]) as Rgb;
+  if (along > 0 && along < 1.1 && lookApart(line, paler) < OWN_COLOR) return undefined;
+  return difference(line, color);
 }

@@ -32,9 +32,13 @@ const TICK_LENGTH = 12;
 /** Half the width over which one outline may be found as several lines. */
 const THICK_OUTLINE = 4.2;
 /** Pixels by which an outline may miss its library's standard place. */
-const MARGIN_TOLERANCE = 1.6;
+const MARGIN_TOLERANCE = 2.7;
+/** An outer line counts as much as so many lines inside. */
+const SIDE_WORTH = 6;
 /** A tick's label can seem to continue the line further. */
-const LABEL_REACH = 24;
+const LABEL_REACH = 32;
+/** Share of a side that a line may be short: a trace or text lies over its end. */
+const LARGEST_SHORTFALL = 0.16;
 /** Smallest share of the picture's sides that a plot has. */
 const SMALLEST_SIDE = 0.25;
 
@@ -202,7 +206,7 @@ function judge(
   const bezel = margins.filter((m) => m < 0.015).length >= 3 ? 0.3 : 1;
   const exact = h.exact + v.exact;
   const score =
-    (Math.min(6, h.inside) + Math.min(6, v.inside) + 4 * sides + 0.25 * Math.min(8, exact)) *
+    (Math.min(6, h.inside) + Math.min(6, v.inside) + SIDE_WORTH * sides + 0.25 * Math.min(8, exact)) *
     Math.sqrt(area) *
     bezel;
   return { left: x.from, right: x.to, top: y.from, bottom: y.to, score, sides, inside };
@@ -216,7 +220,7 @@ function support(lines: Line[], along: Span, across: Span): { sides: number; ins
   for (const line of lines) {
     const before = along.from - line.from;
     const after = line.to - along.to;
-    const shortest = -Math.max(TICK_LENGTH, 0.05 * (along.to - along.from));
+    const shortest = -Math.max(TICK_LENGTH, LARGEST_SHORTFALL * (along.to - along.from));
     if (Math.max(before, after) > LABEL_REACH || Math.min(before, after) < shortest) continue;
     const ends = endVote(before) + endVote(after);
     exact += ends;
@@ -230,7 +234,8 @@ function support(lines: Line[], along: Span, across: Span): { sides: number; ins
 /** Half a vote for an end that fits; a tick may stick out, a trace may cover the last stretch. */
 function endVote(overshoot: number): number {
   if (Math.abs(overshoot) <= END_TOLERANCE) return 0.5;
-  return overshoot < 0 ? 0.25 : overshoot <= TICK_LENGTH ? 0.4 : 0.3;
+  if (overshoot < 0) return overshoot >= -TICK_LENGTH ? 0.25 : 0.15;
+  return overshoot <= TICK_LENGTH ? 0.4 : 0.3;
 }
 
 /** A window's border around the plot scores by its size alone: the gridded rectangle inside it is meant. */

@@ -7,6 +7,8 @@ export interface Ground {
   color: Rgb;
   /** Colour of the grid lines; null where there are none. */
   grid: Rgb | null;
+  /** Colour of the left and right outer lines; null where they are none or differ. */
+  outline: Rgb | null;
   /** First and last column and row that belong to the plot's inside. */
   left: number;
   right: number;
@@ -21,6 +23,8 @@ export interface Ground {
 const OVERHANG = 2;
 /** Smallest visible difference of a grid line from the ground. */
 const SEEN = 0.02;
+/** Difference within which lines have one colour. */
+const LIKE = 0.08;
 
 /** Finds the plot's ground colour and the colours of its grid lines, row by row and column by column. */
 export function findGround(picture: Picture, found: FoundFrame): Ground {
@@ -30,33 +34,69 @@ export function findGround(picture: Picture, found: FoundFrame): Ground {
   const top = Math.max(0, Math.round(frame.top) - OVERHANG);
   const bottom = Math.min(picture.height - 1, Math.round(frame.bottom) + OVERHANG);
   const color = commonest(picture, left, right, top + 4, bottom - 4);
-  const ground: Ground = { color, grid: null, left, right, top, bottom, rows: [], columns: [] };
+  const ground: Ground = {
+    color,
+    grid: null,
+    outline: null,
+    left,
+    right,
+    top,
+    bottom,
+    rows: [],
+    columns: [],
+  };
   const lineRows = [...found.horizontal.map((l) => l.position), frame.top, frame.bottom];
   const lineColumns = [...found.vertical.map((l) => l.position), frame.left, frame.right];
   const inner: Rgb[] = [];
-  for (const y of around(lineRows, top, bottom)) {
-    const typical = median(picture, (i) => [left + i, y], right - left + 1);
-    if (lookApart(typical, color) < SEEN) continue;
-    ground.rows[y] = typical;
-    if (y > frame.top + 3 && y < frame.bottom - 3) inner.push(typical);
+  for (const position of lineRows) {
+    const seen = around(position, top, bottom).map((y) => ({
+      place: y,
+      color: median(picture, (i) => [left + i, y], right - left + 1),
+    }));
+    for (const { place, color: typical } of seen)
+      if (lookApart(typical, color) >= SEEN) ground.rows[place] = typical;
+    if (position > frame.top + 3 && position < frame.bottom - 3)
+      inner.push(
+        farthest(
+          seen.map((s) => s.color),
+          color,
+        ),
+      );
   }
-  for (const x of around(lineColumns, left, right)) {
-    const typical = median(picture, (i) => [x, top + i], bottom - top + 1);
-    if (lookApart(typical, color) < SEEN) continue;
-    ground.columns[x] = typical;
-    if (x > frame.left + 3 && x < frame.right - 3) inner.push(typical);
+  for (const position of lineColumns) {
+    const seen = around(position, left, right).map((x) => ({
+      place: x,
+      color: median(picture, (i) => [x, top + i], bottom - top + 1),
+    }));
+    for (const { place, color: typical } of seen)
+      if (lookApart(typical, color) >= SEEN) ground.columns[place] = typical;
+    if (position > frame.left + 3 && position < frame.right - 3)
+      inner.push(
+        farthest(
+          seen.map((s) => s.color),
+          color,
+        ),
+      );
   }
-  ground.grid = inner.length > 0 ? farthest(inner, color) : null;
+  ground.grid = shared(inner, color);
+  ground.outline = shared(
+    [frame.left, frame.right].map((x) =>
+      farthest(
+        around(x, 0, picture.width - 1).map((at) => median(picture, (i) => [at, top + i], bottom - top + 1)),
+        color,
+      ),
+    ),
+    color,
+    2,
+  );
   return ground;
 }
 
-/** Rows or columns within two pixels of the lines. */
-function around(positions: number[], first: number, last: number): Set<number> {
-  const near = new Set<number>();
-  for (const position of positions) {
-    for (let i = Math.floor(position) - 1; i <= Math.ceil(position) + 1; i++)
-      if (i >= first && i <= last) near.add(i);
-  }
+/** Rows or columns within two pixels of a line. */
+function around(position: number, first: number, last: number): number[] {
+  const near: number[] = [];
+  for (let i = Math.floor(position) - 1; i <= Math.ceil(position) + 1; i++)
+    if (i >= first && i <= last) near.push(i);
   return near;
 }
 
@@ -99,6 +139,19 @@ function median(picture: Picture, place: (i: number) => [number, number], length
 }
 
 function farthest(colors: Rgb[], from: Rgb): Rgb {
-  const sorted = [...colors].sort((a, b) => lookApart(a, from) - lookApart(b, from));
-  return sorted[Math.floor(sorted.length * 0.6)];
+  return colors.reduce((a, b) => (lookApart(b, from) > lookApart(a, from) ? b : a), from);
+}
+
+/** The colour that at least `least` lines have; a single line may be a flat trace. */
+function shared(colors: Rgb[], ground: Rgb, least = 3): Rgb | null {
+  let best: Rgb | null = null;
+  let most = least - 1;
+  for (const color of colors) {
+    const like = colors.filter((other) => lookApart(color, other) < LIKE).length;
+    if (like > most && lookApart(color, ground) >= SEEN) {
+      most = like;
+      best = color;
+    }
+  }
+  return best;
 }

@@ -16,6 +16,9 @@ const LONG_HOLE = 9;
 const MOST_HOLES = 0.35;
 /** Pixels of a line that are looked at for its place. */
 const SAMPLES = 150;
+/** Pixels beside a line in which one so many times fainter is taken for its echo. */
+const RINGING_REACH = 10;
+const RINGING_RATIO = 8;
 /** Rows that one stroke's edges may lie apart: strokes are up to 4 pixels thick. */
 const THICKEST = 4;
 
@@ -36,7 +39,17 @@ export function findLines(grey: Float32Array, width: number, height: number): Li
   const chains: Chain[] = [];
   for (let y = 0; y + 1 < height; y++) chainsOfRow(grey, width, y, chains);
   const lines = groupChains(chains, width).map((group) => measureLine(group, grey, width, height));
-  return lines.filter((l) => l.to - l.from >= SHORTEST_SHARE * width).sort((a, b) => a.position - b.position);
+  const long = lines.filter((l) => l.to - l.from >= SHORTEST_SHARE * width);
+  return long
+    .filter((l) => !long.some((other) => isRinging(l, other)))
+    .sort((a, b) => a.position - b.position);
+}
+
+/** Compression and sharpening draw faint lines beside strong ones. */
+function isRinging(line: Line, other: Line): boolean {
+  const near = Math.abs(line.position - other.position) <= RINGING_REACH;
+  const beside = Math.min(line.to, other.to) - Math.max(line.from, other.from) > 0.7 * (line.to - line.from);
+  return near && beside && line.contrast * RINGING_RATIO < other.contrast;
 }
 
 function chainsOfRow(grey: Float32Array, width: number, row: number, chains: Chain[]): void {

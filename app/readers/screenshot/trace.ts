@@ -16,6 +16,8 @@ export interface Trace {
   share: number;
   /** The same with the stretches in which the trace was outside the plot. */
   explained: number;
+  /** Mean coverage on the crest of the stroke, 0 to 1: low where the colour is not quite the stroke's own. */
+  fullness: number;
   /** Rows between the 2nd and 98th percentile of the trace. */
   extent: number;
 }
@@ -48,7 +50,16 @@ export function readTrace(coverage: Coverage, top: number, bottom: number): Trac
   const uncertainty = new Float64Array(width).fill(Number.NaN);
   const seen = path.filter((r) => r !== undefined).length;
   if (seen === 0)
-    return { left: coverage.left, row, uncertainty, thickness: 0, share: 0, explained: 0, extent: 0 };
+    return {
+      left: coverage.left,
+      row,
+      uncertainty,
+      thickness: 0,
+      share: 0,
+      explained: 0,
+      fullness: 0,
+      extent: 0,
+    };
   const thickness = thicknessOf(path);
   path.forEach((run, x) => {
     if (!run) return;
@@ -56,6 +67,7 @@ export function readTrace(coverage: Coverage, top: number, bottom: number): Trac
     row[x] = value;
     uncertainty[x] = spread;
   });
+  const fullness = path.reduce((sum, run) => sum + (run?.peak ?? 0), 0) / seen;
   const accounted = bridge(row, uncertainty, path, top, bottom);
   const sorted = [...row].filter((v) => !Number.isNaN(v)).sort((a, b) => a - b);
   const extent = sorted[Math.floor(sorted.length * 0.98)] - sorted[Math.floor(sorted.length * 0.02)];
@@ -66,6 +78,7 @@ export function readTrace(coverage: Coverage, top: number, bottom: number): Trac
     thickness,
     share: seen / width,
     explained: accounted / width,
+    fullness,
     extent,
   };
 }

@@ -1,7 +1,7 @@
 import { type ColorCandidate, findColors } from "./colors.ts";
 import { coverageOf } from "./coverage.ts";
 import type { FoundFrame } from "./frame.ts";
-import { findGround } from "./ground.ts";
+import { findGround, type Ground } from "./ground.ts";
 import { hexOf, lookApart, type Rgb } from "./oklab.ts";
 import type { Picture, Stage } from "./picture.ts";
 import { readTrace, type Trace } from "./trace.ts";
@@ -22,6 +22,8 @@ export interface FoundTraces extends Stage {
 
 /** Difference from the ground from which a colour is as visible as a trace is meant to be. */
 const PLAIN_TO_SEE = 0.3;
+/** Weight of a colour that grid lines leave beside them. */
+const GRID_RESIDUE = 0.3;
 /** Share of the plot's height over which a trace must range to count fully as a sweep. */
 const LIVELY = 0.1;
 
@@ -44,7 +46,9 @@ export function findTraces(picture: Picture, found: FoundFrame, given: Rgb | nul
         : trace.explained *
           (0.35 + 0.65 * lively) *
           Math.min(1, 0.3 + trace.share * 2) *
-          plainness(color, ground.color);
+          plainness(color, ground.color) *
+          (0.25 + 0.75 * trace.fullness) *
+          (isPaleGrid(color, ground) ? GRID_RESIDUE : 1);
     return { color, hex: hexOf(color), trace, score };
   };
   const traces = candidates
@@ -67,4 +71,16 @@ export function findTraces(picture: Picture, found: FoundFrame, given: Rgb | nul
 /** Halos of compression are hardly different from the ground. */
 function plainness(color: Rgb, ground: Rgb): number {
   return 0.4 + 0.6 * Math.min(1, lookApart(color, ground) / PLAIN_TO_SEE);
+}
+
+/** What is left beside a grid line lies between the ground's colour and the line's. */
+function isPaleGrid(color: Rgb, ground: Ground): boolean {
+  const lines = [ground.grid, ground.outline].filter((c) => c !== null);
+  return lines.some((line) => {
+    const full = line.map((v, i) => v - ground.color[i]);
+    const square = full.reduce((sum, v) => sum + v * v, 0);
+    const along = color.reduce((sum, v, i) => sum + (v - ground.color[i]) * full[i], 0) / square;
+    const mix = ground.color.map((v, i) => v + along * full[i]) as Rgb;
+    return along > 0 && along < 1.05 && lookApart(mix, color) < 0.03;
+  });
 }
