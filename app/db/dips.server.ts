@@ -1,4 +1,4 @@
-import { and, asc, count, desc, eq, isNull, sql } from "drizzle-orm";
+import { and, asc, count, eq, isNull, sql } from "drizzle-orm";
 import type { Dip } from "~/measurement/sweep";
 import { db, type Queryable } from "./client.server.ts";
 import { dips, notes, sweeps, users } from "./schema/index.ts";
@@ -44,7 +44,7 @@ export async function findByPublicId(publicId: string, tx: Queryable = db) {
   return rows[0] && { ...rows[0], dip: revive(rows[0].dip) };
 }
 
-/** Dips of the project that nobody has settled, those with the lowest SWR first. */
+/** Dips of the project's newest sweep that nobody has settled, those with the lowest SWR first. */
 export async function findOpenByProject(projectId: number, limit = 20, tx: Queryable = db) {
   return tx
     .select({
@@ -63,9 +63,21 @@ export async function findOpenByProject(projectId: number, limit = 20, tx: Query
     })
     .from(dips)
     .innerJoin(sweeps, eq(sweeps.id, dips.sweepId))
-    .where(and(eq(dips.projectId, projectId), eq(dips.present, true), sql`${dips.verdict} <> 'settled'`))
-    .orderBy(desc(sweeps.createdAt), asc(dips.minimumSwr))
+    .where(
+      and(
+        eq(dips.sweepId, newestSweepOf(projectId)),
+        eq(dips.present, true),
+        sql`${dips.verdict} <> 'settled'`,
+      ),
+    )
+    .orderBy(asc(dips.minimumSwr))
     .limit(limit);
+}
+
+/** The id of the sweep taken last, among those that were read. */
+function newestSweepOf(projectId: number) {
+  return sql<number>`(select s.id from ${sweeps} s where s.project_id = ${projectId} and s.analysis_id is not null
+    order by coalesce(s.taken_at, s.created_at) desc, s.id desc limit 1)`;
 }
 
 export async function countOpenByProject(projectId: number, tx: Queryable = db): Promise<number> {

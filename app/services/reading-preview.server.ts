@@ -39,7 +39,10 @@ export async function tryReading(
     problem: null,
     points: outcome.pointCount,
     span: `${formatFrequency(outcome.startHz, null)} – ${formatFrequency(outcome.stopHz, null)}`,
-    profile: smallProfile(decodePoints([Buffer.from(outcome.preview)]), analysis.dips, PROFILE_POINTS),
+    profile: smallProfile(decodePoints([Buffer.from(outcome.preview)]), analysis.dips, {
+      mostPoints: PROFILE_POINTS,
+      log: false,
+    }),
     dips: analysis.dips.slice(0, MOST_DIPS).map((dip) => ({
       frequency: formatFrequency(dip.frequencyHz, dip.frequencyUncertaintyHz),
       swr: formatSwr(dip.minimumSwr, null, null),

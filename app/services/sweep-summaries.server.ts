@@ -60,13 +60,13 @@ export async function listSweeps(projectId: number, page: { limit?: number; curs
   return { rows, nextCursor: found.nextCursor };
 }
 
-/** At most `MOST_POINTS` points, dips kept. */
+/** At most `mostPoints` points, dips kept, closest where the axis (logarithmic unless said otherwise) is widest. */
 export function smallProfile(
   sweep: Sweep,
   dips: { frequencyHz: number; returnLossDb: number }[],
-  mostPoints = MOST_POINTS,
+  { mostPoints = MOST_POINTS, log = true } = {},
 ): SmallProfile {
-  const { frequencyHz, magnitude } = pickPoints(sweep, decimate(sweep, mostPoints));
+  const { frequencyHz, magnitude } = pickPoints(sweep, decimate(sweep, mostPoints, undefined, log));
   return {
     points: {
       frequencyHz: Array.from(frequencyHz, (hz) => Number(hz.toPrecision(6))),
@@ -76,4 +76,4 @@ export function smallProfile(
   };
 }
 
-const MOST_POINTS = 240;
+const MOST_POINTS = 360;

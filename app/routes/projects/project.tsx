@@ -158,7 +158,9 @@ function OpenDips({ data }: { data: Data }) {
     <section aria-labelledby="open-dips" className="grid gap-3">
       <h2 id="open-dips">Unsettled dips</h2>
       {data.open.length === 0 ? (
-        <p className="soft">Every dip found so far is settled, or none was found.</p>
+        <p className="soft">
+          {data.sweeps.length === 0 ? "None: no sweep was taken yet." : "None in the newest sweep."}
+        </p>
       ) : (
         <ul className="grid gap-2">
           {data.open.map((dip) => (
@@ -184,7 +186,11 @@ function OpenDips({ data }: { data: Data }) {
         </ul>
       )}
       {data.openCount > data.open.length && (
-        <p className="text-small soft">and {data.openCount - data.open.length} more</p>
+        <p className="text-small">
+          <Link to={`/projects/${data.project.publicId}/sweeps?only=open`}>
+            {data.openCount - data.open.length} more in all sweeps
+          </Link>
+        </p>
       )}
     </section>
   );
