@@ -19,6 +19,10 @@ const RATIO = /^(.*\d)\s*[:/]\s*1(?:[.,]0+)?$/;
 const NUMBER = /^([<>≥≤~≈]?)\s*([+-]?)\s*(\d[\d.,' ]*|[.,]\d+)(?:[eEdD]([+-]?\d{1,5}))?\s*([^\d\s].*)?$/;
 const UNIT = /^(?:[kmg]?hz|db(?:m|mv|uv|i|c)?|k?ohms?|k?ω|deg|°|grad|rad|%|v|mv|w|mw)$/i;
 
+const PLAIN_POINT = /^[+-]?\d+(?:\.\d+)?$/;
+const PLAIN_COMMA = /^[+-]?\d+(?:,\d+)?$/;
+const NEEDS_PLAIN_SIGNS = /[^ -&(-_a-~]/;
+
 /** Cells of one line; quotes as in RFC 4180. Blanks: runs of them part, and a unit stays with its number. */
 export function splitCells(line: string, delimiter: TextSpec["delimiter"]): string[] {
   if (delimiter === " ") return splitBlanks(line);
@@ -54,18 +58,28 @@ export function cellColumn(line: string, delimiter: TextSpec["delimiter"], index
 
 /** Reads a cell. Minus signs, blanks and apostrophes of any script are understood. Never fails. */
 export function parseCell(raw: string, writing: Writing): Cell {
-  const text = plainSigns(raw.trim());
-  if (text === "" || GAP_WORDS.test(text)) return GAP;
+  const trimmed = raw.trim();
+  if (trimmed === "") return GAP;
+  if (writing.decimal === "." ? PLAIN_POINT.test(trimmed) : PLAIN_COMMA.test(trimmed))
+    return number(Number(writing.decimal === "." ? trimmed : trimmed.replace(",", ".")), null, false);
+  const text = NEEDS_PLAIN_SIGNS.test(trimmed) ? plainSigns(trimmed) : trimmed;
+  const ratio = text.match(RATIO);
+  const found = written(ratio ? ratio[1] : text, writing);
+  if (found) return found;
   const infinite = text.match(INFINITE);
   if (infinite) return number(infinite[1] === "-" ? -Infinity : Infinity, null, false);
-  const ratio = text.match(RATIO);
-  const match = (ratio ? ratio[1] : text).match(NUMBER);
-  if (!match) return TEXT;
+  return GAP_WORDS.test(text) ? GAP : TEXT;
+}
+
+/** A number with sign, thousands, exponent and unit; null where the text is none. */
+function written(text: string, writing: Writing): Cell | null {
+  const match = text.match(NUMBER);
+  if (!match) return null;
   const [, limit, sign, body, exponent, tail] = match;
   const unit = tail ? plainUnit(tail) : null;
-  if (unit !== null && !UNIT.test(unit)) return TEXT;
+  if (unit !== null && !UNIT.test(unit)) return null;
   const digits = plainDigits(body.trimEnd(), writing);
-  if (digits === null) return TEXT;
+  if (digits === null) return null;
   const size = Number(exponent === undefined ? digits : `${digits}e${exponent}`);
   const value = (sign === "-" ? -size : size) * (unit === "%" ? 0.01 : 1);
   return number(value, unit, limit !== "");

@@ -31,6 +31,7 @@ export interface Rows {
   skipped: number[];
 }
 
+const QUOTE = 34;
 const row = { frequency: Number.NaN, value: Number.NaN, second: Number.NaN };
 
 /**
@@ -71,36 +72,37 @@ export function readRows(lines: Lines, segments: Segment[], dialect: Dialect, wa
   return rows;
 }
 
-/** Makes the reader of plain rows: true and `row` filled, or false where a line needs care. */
+/** Makes the reader of plain rows, quoted or not: true and `row` filled, or false where a line needs care. */
 function rowScanner(dialect: Dialect, wanted: Wanted) {
   const blank = dialect.delimiter === " ";
   const delimiter = dialect.delimiter.charCodeAt(0);
   const decimal = dialect.decimal.charCodeAt(0);
+  const bareDecimal = delimiter === decimal ? -1 : decimal;
   const { frequencyColumn, valueColumn } = wanted;
   const secondColumn = wanted.secondColumn ?? -1;
   const last = Math.max(frequencyColumn, valueColumn, secondColumn);
-  if (delimiter === decimal) return () => false;
   return (bytes: Uint8Array, from: number, to: number): boolean => {
     let i = from;
     for (let column = 0; column <= last; column++) {
       while (i < to && (bytes[i] === 32 || (blank && bytes[i] === 9))) i++;
       if (i >= to) return false;
+      const quoted = bytes[i] === QUOTE && !blank;
+      if (quoted) i++;
       if (column === frequencyColumn || column === valueColumn || column === secondColumn) {
-        scanNumber(bytes, i, to, decimal);
+        scanNumber(bytes, i, to, quoted ? decimal : bareDecimal);
         if (!scan.ok) return false;
         i = scan.at;
         if (column === frequencyColumn) row.frequency = scan.value;
         else if (column === valueColumn) row.value = scan.value;
         else row.second = scan.value;
       } else {
-        while (i < to) {
+        for (; i < to; i++) {
           const c = bytes[i];
-          if (c === delimiter || (blank && c === 9)) break;
-          if (c > 57 && c !== 69 && c !== 101) return false;
-          if (c === 34) return false;
-          i++;
+          if (quoted ? c === QUOTE : c === delimiter || (blank && c === 9)) break;
+          if (c === QUOTE || (c > 58 && c !== 69 && c !== 101)) return false;
         }
       }
+      if (quoted && bytes[i++] !== QUOTE) return false;
       if (blank) {
         if (i < to && bytes[i] !== 32 && bytes[i] !== 9) return false;
       } else {
@@ -115,27 +117,28 @@ function rowScanner(dialect: Dialect, wanted: Wanted) {
   };
 }
 
+/** Reads a row cell by cell into `row`; false where the line is no row, or has no frequency. */
 function readCarefully(line: string, n: number, dialect: Dialect, wanted: Wanted, rows: Rows): boolean {
-  const kind = lineKind(line, dialect);
-  if (kind === "blank" || kind === "comment") return false;
-  if (kind === "text") {
-    rows.skipped.push(n);
-    return false;
-  }
   const cells = splitCells(line, dialect.delimiter);
-  const cell = (index: number, what: string): Cell => {
-    const parsed = parseCell(cells[index] ?? "", dialect);
-    if (parsed.kind === "text") badNumber(line, n, dialect, index, what, cells[index]);
-    return parsed;
-  };
-  const frequency = cell(wanted.frequencyColumn, "a frequency");
+  const cell = (index: number) => parseCell(cells[index] ?? "", dialect);
+  const frequency = cell(wanted.frequencyColumn);
+  const value = cell(wanted.valueColumn);
+  const second = wanted.secondColumn === null ? null : cell(wanted.secondColumn);
+  if (frequency.kind !== "number" || value.kind === "text" || second?.kind === "text") {
+    const kind = lineKind(line, dialect);
+    if (kind === "text") rows.skipped.push(n);
+    if (kind === "text" || kind === "blank" || kind === "comment") return false;
+    if (frequency.kind === "text") badNumber(line, n, dialect, wanted.frequencyColumn, "a frequency");
+    if (value.kind === "text") badNumber(line, n, dialect, wanted.valueColumn, "a number");
+    if (second?.kind === "text") badNumber(line, n, dialect, wanted.secondColumn ?? 0, "a number");
+  }
   if (frequency.kind !== "number") {
     rows.withoutFrequency.push(n);
     return false;
   }
   row.frequency = frequency.value * frequencyFactor(frequency.unit, wanted.frequencyUnit);
-  row.value = numberIn(cell(wanted.valueColumn, "a number"), rows);
-  if (wanted.secondColumn !== null) row.second = numberIn(cell(wanted.secondColumn, "a number"), rows);
+  row.value = numberIn(value, rows);
+  if (second !== null) row.second = numberIn(second, rows);
   return true;
 }
 
@@ -151,14 +154,8 @@ function frequencyFactor(unit: string | null, column: FrequencyUnit): number {
   return own === undefined ? 1 : UNIT_HZ[own] / UNIT_HZ[column];
 }
 
-function badNumber(
-  line: string,
-  n: number,
-  dialect: Dialect,
-  index: number,
-  what: string,
-  found: string,
-): never {
+function badNumber(line: string, n: number, dialect: Dialect, index: number, what: string): never {
+  const found = splitCells(line, dialect.delimiter)[index] ?? "";
   const mark = dialect.decimal === "," ? "decimal comma" : "decimal point";
   return fail(
     "bad-number",

@@ -86,6 +86,6 @@ function isPlainRow(lines: Lines, line: number, dialect: Dialect): boolean {
     else if (c === delimiter) delimiters++;
   }
   if (digits < 2 || delimiters === 0) return false;
-  const first = bytes[from];
+  const first = bytes[from] === 34 ? bytes[from + 1] : bytes[from];
   return (first >= 48 && first <= 57) || first === 45 || first === 43 || first === 32 || first === 46;
 }
