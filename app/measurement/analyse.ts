@@ -1,7 +1,7 @@
 import { credibleDips } from "./dips/credible.ts";
 import { describeDip, type Neighbours } from "./dips/describe.ts";
 import { findDips } from "./dips/find.ts";
-import { noiseDb } from "./noise.ts";
+import { noiseOf } from "./noise.ts";
 import { type Analysis, type AnalysisSettings, DEFAULT_SETTINGS, type Sweep, type Warning } from "./sweep.ts";
 import { warningsOf } from "./warnings.ts";
 
@@ -17,9 +17,9 @@ export const ANALYSIS_VERSION = "1";
  */
 export function analyse(sweep: Sweep, settings: Partial<AnalysisSettings> = {}): Analysis {
   const used = sensible(settings);
-  const noise = noiseDb(sweep.magnitude);
-  const threshold = Math.max(used.minimumProminenceDb, NOISE_FACTOR * noise);
-  const found = credibleDips(sweep.magnitude, findDips(sweep.magnitude, threshold));
+  const noise = noiseOf(sweep.magnitude);
+  const threshold = Math.max(used.minimumProminenceDb, NOISE_FACTOR * noise.db);
+  const found = credibleDips(sweep.magnitude, findDips(sweep.magnitude, threshold), noise.gamma);
   const limit = fitLimit(found.map((dip) => dip.prominenceDb));
   const neighbours: Neighbours = { at: 0, found, stretch: null };
   const notes: Warning[] = [];
@@ -30,12 +30,12 @@ export function analyse(sweep: Sweep, settings: Partial<AnalysisSettings> = {}):
   return {
     version: ANALYSIS_VERSION,
     settings: used,
-    noiseDb: noise,
+    noiseDb: noise.db,
     dips,
     warnings: warningsOf(
       sweep,
       dips,
-      { threshold, settings: used, noise, unfitted: found.length > MOST_FITS },
+      { threshold, settings: used, noise: noise.db, unfitted: found.length > MOST_FITS },
       notes,
     ),
   };

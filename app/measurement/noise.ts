@@ -16,9 +16,25 @@ export function noiseDb(magnitude: Float64Array): number {
   return Math.max(scatterOf(values), roundingOf(values));
 }
 
-/** The same in abs Γ itself; 0 where none can be told. */
+/** The same in abs Γ itself. */
 export function noiseGamma(magnitude: Float64Array): number {
-  return scatterOf(sample(magnitude));
+  const values = sample(magnitude);
+  return Math.max(scatterOf(values), roundingOf(values));
+}
+
+/** σ in both: of decibels and of abs Γ. */
+export interface Noise {
+  db: number;
+  gamma: number;
+}
+
+export function noiseOf(magnitude: Float64Array): Noise {
+  return { db: noiseDb(magnitude), gamma: noiseGamma(magnitude) };
+}
+
+/** σ from the samples around one: as far as 32 on each side, enough for 15 %, few enough to stay near a dip. */
+export function noiseNear(magnitude: Float64Array, index: number): Noise {
+  return noiseOf(magnitude.subarray(Math.max(0, index - NEAR), index + NEAR + 1));
 }
 
 /** All values, or blocks spread over the whole with a gap between them. */
@@ -47,19 +63,19 @@ function scatterOf(values: Float64Array): number {
   return sigma === Number.POSITIVE_INFINITY ? 0 : sigma;
 }
 
-/** σ of the rounding step, dB; 0 where neighbours are seldom equal. */
-function roundingOf(valuesDb: Float64Array): number {
+/** σ of the rounding step; 0 where neighbours are seldom equal. */
+function roundingOf(values: Float64Array): number {
   let count = 0;
   let equal = 0;
   let step = Number.POSITIVE_INFINITY;
-  for (let i = 1; i < valuesDb.length; i++) {
-    const size = Math.abs(valuesDb[i] - valuesDb[i - 1]);
+  for (let i = 1; i < values.length; i++) {
+    const size = Math.abs(values[i] - values[i - 1]);
     if (!Number.isFinite(size)) continue;
     count++;
-    if (size < SAME_DB) equal++;
+    if (size < SAME) equal++;
     else if (size < step) step = size;
   }
-  return equal >= EQUAL_SHARE * count && step < COARSEST_STEP_DB ? step / Math.sqrt(12) : 0;
+  return equal >= EQUAL_SHARE * count && step < COARSEST_STEP ? step / Math.sqrt(12) : 0;
 }
 
 /** Weighted sums of neighbours, written to `out`; those that touch a gap are left out. Returns how many. */
@@ -109,14 +125,15 @@ const NORMAL_QUARTILE = 0.674489750196082;
 /** The median of this many differences is good to about 1.5 %. */
 const SAMPLE = 8192;
 const BLOCK = 256;
+const NEAR = 32;
 const DIFFERENCES = [
   { weights: [1, -2, 1], factor: Math.sqrt(6) },
   { weights: [1, -4, 6, -4, 1], factor: Math.sqrt(70) },
   { weights: [1, -6, 15, -20, 15, -6, 1], factor: Math.sqrt(924) },
 ];
-/** Return losses that differ by less were the same printed number. */
-const SAME_DB = 1e-9;
+/** Values that differ by less were the same printed number. */
+const SAME = 1e-9;
 /** 10 % of equal neighbours was never seen in unrounded data; 0.1 dB steps on a flat trace give over half. */
 const EQUAL_SHARE = 0.1;
-/** Instruments round to 0.001 to 0.5 dB; larger steps belong to the trace itself. */
-const COARSEST_STEP_DB = 1;
+/** Instruments round to 0.001 to 0.5 dB, or to 0.001 to 0.02 of abs Γ; larger steps belong to the trace itself. */
+const COARSEST_STEP = 1;

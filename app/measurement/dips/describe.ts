@@ -1,3 +1,4 @@
+import type { Noise } from "../noise.ts";
 import { gammaToReturnLossDb, gammaToSwr, swrToGamma } from "../reflection.ts";
 import type { AnalysisSettings, Dip, Sweep, Warning } from "../sweep.ts";
 import { combine } from "../uncertainty.ts";
@@ -15,8 +16,7 @@ export interface Neighbours {
 }
 
 export interface DescribeSettings extends AnalysisSettings {
-  /** σ, dB of return loss. */
-  noise: number;
+  noise: Noise;
   /** False where there are more dips than can be fitted. */
   mayFit: boolean;
 }
@@ -44,7 +44,7 @@ export function describeDip(
     stretch,
     shared,
     fit: lowest.fit,
-    noise: settings.noise,
+    noise: settings.noise.db,
   });
   const minimumSwr = gammaToSwr(lowest.magnitude);
   const { notOfAntenna, ...quality } = qualityOf({

@@ -1,7 +1,8 @@
+import type { Noise } from "../noise.ts";
 import { student95 } from "../uncertainty.ts";
 import { leastSquares, type Solution } from "./least-squares.ts";
 import { meanPoints, selectPoints } from "./points.ts";
-import { ROUNDING, residualsOf, successive, whiteEnough } from "./residuals.ts";
+import { ROUNDING, residualsOf, smallEnough, successive, whiteEnough } from "./residuals.ts";
 import {
   DEPTH,
   edgeAt,
@@ -34,7 +35,7 @@ export interface Fit {
  * the far power held, down to FEWEST_POINTS. Null when no window will do: the caller then takes a parabola.
  *
  * `frequencyHz` ascending Hz, `magnitude` abs Γ without NaN inside the window, `index` the lowest sample, `noise` the
- * sweep's σ in dB of return loss, `complex` whether abs Γ comes
+ * larger σ of the sweep's and of the samples near the dip, `complex` whether abs Γ comes
  * from a complex Γ. Whether the scatter is even in abs Γ (a receiver's) or in decibels (a detector's) is decided by the
  * likelihood of the residuals; the bias of abs Γ² that goes with it is taken off. Long windows are fitted on a selection of samples, and in noise
  * then on means of all of them.
@@ -44,7 +45,7 @@ export function fitDip(
   magnitude: Float64Array,
   index: number,
   window: Window,
-  noise: number,
+  noise: Noise,
   complex: boolean,
 ): Fit | null {
   let { from, to } = window;
@@ -72,7 +73,7 @@ function fitInside(
   magnitude: Float64Array,
   index: number,
   window: Window,
-  noise: number,
+  noise: Noise,
   complex: boolean,
   heldPower: number | null,
 ): Fit | null {
@@ -85,12 +86,13 @@ function fitInside(
   if (!flat || successive(flat.standard) < HOPELESS) return null;
   let best: Candidate | null = { solution: first, residuals: flat };
   if (flat.relative >= ROUNDING) best = likelier(some, first.p, free, complex);
-  if (best && flat.relative >= ROUNDING && window.to - window.from + 1 > some.x.length) {
+  if (!best || !smallEnough(best.residuals, noise)) return null;
+  if (flat.relative >= ROUNDING && window.to - window.from + 1 > some.x.length) {
     const means = meanPoints(frequencyHz, magnitude, window, referenceHz, MEANS, best.solution.p);
     best = fitMeans(means, best, free, complex);
   }
   if (!best || !usable(best.solution, best.residuals.standard.length, free)) return null;
-  if (!whiteEnough(best.residuals, noise, free)) return null;
+  if (!whiteEnough(best.residuals, free)) return null;
   return describe(
     best.solution,
     window,

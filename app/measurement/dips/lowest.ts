@@ -1,8 +1,8 @@
+import { type Noise, noiseNear } from "../noise.ts";
 import { gammaToSwr } from "../reflection.ts";
 import type { Dip, Sweep } from "../sweep.ts";
 import { type Interval, swrInterval } from "../uncertainty.ts";
 import type { Stretch } from "./bandwidth.ts";
-import { noiseNear } from "./credible.ts";
 import type { FoundDip } from "./find.ts";
 import { type Fit, fitDip } from "./fit.ts";
 import { parabolaDip } from "./parabola.ts";
@@ -21,20 +21,22 @@ export interface Lowest {
 /**
  * A resonator's fit, else a parabola through three samples of return loss, else (fewer than three samples in the dip,
  * or its bend lost in noise) the lowest sample. `between`: the dips on both sides or the ends of the sweep, which a
- * fit may not cross. `noise`: σ in dB.
+ * fit may not cross. `noise`: σ of the sweep.
  */
 export function lowestOf(
   sweep: Sweep,
   found: FoundDip,
   between: Stretch,
-  noise: number,
+  noise: Noise,
   mayFit: boolean,
 ): Lowest {
   const { frequencyHz, magnitude } = sweep;
   const { index, prominenceDb } = found;
+  const near = noiseNear(magnitude, index);
   if (mayFit) {
+    const allowed = { db: Math.max(noise.db, near.db), gamma: Math.max(noise.gamma, near.gamma) };
     const window = fitWindow(magnitude, index, prominenceDb, between.from, between.to);
-    const fit = fitDip(frequencyHz, magnitude, index, window, noise, sweep.gammaRe !== undefined);
+    const fit = fitDip(frequencyHz, magnitude, index, window, allowed, sweep.gammaRe !== undefined);
     if (fit) {
       return {
         method: "fit",
@@ -46,7 +48,8 @@ export function lowestOf(
       };
     }
   }
-  const nearby = Math.max(noise, (DB_PER_NEPER * noiseNear(magnitude, index)) / magnitude[index]);
+  const lowest = Math.max(magnitude[index], SMALLEST);
+  const nearby = Math.max(noise.db, (DB_PER_NEPER * near.gamma) / lowest);
   const few = pointsOf(magnitude, index, prominenceDb) < FEWEST_FOR_PARABOLA;
   const top = few ? null : parabolaDip(frequencyHz, magnitude, index, nearby);
   if (!top) return sampleOnly(sweep, index, nearby);
@@ -99,6 +102,8 @@ function pointsOf(magnitude: Float64Array, index: number, prominenceDb: number):
   return count;
 }
 
+/** abs Γ that no instrument sees; keeps a computed 0 from dividing. */
+const SMALLEST = 1e-10;
 const DB_PER_NEPER = 20 / Math.LN10;
 /** A sample this far over the lowest one is higher in truth. */
 const CLEAR_SIGMAS = 4;

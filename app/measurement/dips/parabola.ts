@@ -1,3 +1,5 @@
+import { NORMAL_95 } from "../uncertainty.ts";
+
 /** The vertex of a parabola through three points. */
 export interface Vertex {
   x: number;
@@ -28,10 +30,10 @@ export interface ParabolaDip {
 }
 
 /**
- * The dip by three points of return loss around sample `index`, which must have a neighbour on each side. `noise`: σ in dB. The part for
- * the frequency step is the distance between the vertex of return loss and that of the reflected power, as
- * the true curve lies between them near a dip. Null when there is no vertex, as
- * on a plateau, or when its bend may be scatter.
+ * The dip by three points of return loss around sample `index`, which must have a neighbour on each side. `noise`: σ in
+ * dB. Null when there is no vertex, as on a plateau, or when its bend may be scatter. The part for the frequency step is
+ * the largest distance to the vertex by another choice: the reflected power as ordinate, or samples twice as far away
+ * (whose error is about four times that of the near ones, as it goes with the square of the step).
  */
 export function parabolaDip(
   f: Float64Array,
@@ -39,20 +41,13 @@ export function parabolaDip(
   index: number,
   noise: number,
 ): ParabolaDip | null {
-  const at = [index - 1, index, index + 1];
-  const x = at.map((i) => f[i]);
-  const power = at.map((i) => magnitude[i] ** 2);
-  const loss = power.map((p) => -10 * Math.log10(p));
+  const { x, power, loss } = around(f, magnitude, index, 1);
   const top = parabolaTop(x, loss);
   if (!top || loss[1] - (loss[0] + loss[2]) / 2 < CLEAR_OF_NOISE * noise) return null;
-  const other = parabolaTop(
-    x,
-    power.map((p) => -p),
-  );
-  let frequency = other ? (other.x - top.x) ** 2 : ((x[2] - x[0]) / 4) ** 2;
-  let depth = other && other.y < 0 ? (top.y + 10 * Math.log10(-other.y)) ** 2 : (top.y - loss[1]) ** 2;
-  const sigma = noise * NORMAL_95;
-  for (let i = 0; i < 3 && sigma > 0; i++) {
+  const step = stepPart(f, magnitude, index, top);
+  let frequency = step.x ** 2;
+  let depth = step.y ** 2;
+  for (let i = 0; i < 3 && noise > 0; i++) {
     const shifted = [...loss];
     shifted[i] -= noise * SMALL;
     const moved = parabolaTop(x, shifted);
@@ -60,16 +55,38 @@ export function parabolaDip(
     frequency += (((moved.x - top.x) / SMALL) * NORMAL_95) ** 2;
     depth += (((moved.y - top.y) / SMALL) * NORMAL_95) ** 2;
   }
-  const span = (x[2] - x[0]) / 2;
   return {
     frequencyHz: top.x,
     returnLossDb: top.y,
-    frequencyHalfHz: Math.min(span, Math.sqrt(frequency)),
+    frequencyHalfHz: Math.min((x[2] - x[0]) / 2, Math.sqrt(frequency)),
     returnLossHalfDb: Math.sqrt(depth),
   };
 }
 
-const NORMAL_95 = 1.959963984540054;
+function stepPart(f: Float64Array, magnitude: Float64Array, index: number, vertex: Vertex): Vertex {
+  const { x, power, loss } = around(f, magnitude, index, 1);
+  const byPower = parabolaTop(
+    x,
+    power.map((p) => -p),
+  );
+  const wide = around(f, magnitude, index, 2);
+  const known = [
+    byPower && { x: byPower.x, y: byPower.y < 0 ? -10 * Math.log10(-byPower.y) : loss[1] },
+    parabolaTop(wide.x, wide.loss),
+  ].filter((one) => one !== null);
+  if (known.length === 0) return { x: (x[2] - x[0]) / 2, y: vertex.y - loss[1] };
+  return {
+    x: Math.max(...known.map((one) => Math.abs(one.x - vertex.x))),
+    y: Math.max(...known.map((one) => Math.abs(one.y - vertex.y))),
+  };
+}
+
+function around(f: Float64Array, magnitude: Float64Array, index: number, reach: number) {
+  const at = [index - reach, index, index + reach];
+  const power = at.map((i) => magnitude[i] ** 2);
+  return { x: at.map((i) => f[i]), power, loss: power.map((p) => -10 * Math.log10(p)) };
+}
+
 /** In σ: the middle of three scattered points on a line stands out by this in 1 of 1,000. */
 const CLEAR_OF_NOISE = 4;
 /** Share of σ by which a point is moved to see the effect. */

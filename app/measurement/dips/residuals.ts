@@ -1,3 +1,4 @@
+import type { Noise } from "../noise.ts";
 import { resonatorPower } from "./resonator.ts";
 
 /** How the scatter of a sweep goes with its value: even in abs Γ, as a receiver's, or even in decibels, as a detector's. */
@@ -88,17 +89,19 @@ export function unbiased(power: Float64Array, { scatter, sigma }: Residuals, com
   return power.map((value) => value * factor - shift);
 }
 
+/** True when what single samples leave is no larger than the noise allows, or no more than rounding. */
+export function smallEnough({ sigma, scatter, relative }: Residuals, noise: Noise): boolean {
+  return relative < ROUNDING || sigma <= NOISE_FACTOR * (scatter === "even" ? noise.gamma : noise.db);
+}
+
 /**
- * True when what is left looks like scatter and no more of it than the sweep's noise allows. With enough points by the ratio of
- * J. von Neumann (Ann. Math. Stat. 12, 367-395, 1941; from memory, not seen). With few points by the size against `noise` (dB).
+ * True when what is left looks like scatter: the ratio of J. von Neumann (Ann. Math. Stat. 12, 367-395, 1941; from memory, not
+ * seen) shows a shape that does not fit even where it is smaller than the noise of one sample. Few points tell nothing.
  */
-export function whiteEnough(residuals: Residuals, noise: number, free: number): boolean {
-  const { standard, sigma, scatter, relative } = residuals;
-  if (relative < ROUNDING) return true;
+export function whiteEnough({ standard, relative }: Residuals, free: number): boolean {
   const n = standard.length;
-  const allowed = NOISE_FACTOR * (scatter === "even" ? (noise * Math.LN10) / 20 : noise);
-  if (n < FEW) return sigma <= allowed;
-  return successive(standard) >= 2 * (1 - ORDER_LIMIT / Math.sqrt(Math.max(1, n - free)));
+  if (relative < ROUNDING || n < FEW) return true;
+  return successive(standard) >= 2 * (1 - ORDER_LIMIT / Math.sqrt(n - free));
 }
 
 /** Von Neumann's ratio: mean squared successive difference over mean square; 2 for scatter, near 0 for a smooth shape. Exact fits give 2. */
@@ -116,7 +119,7 @@ export function successive(standard: Float64Array): number {
 const SCORED = 0.1;
 /** abs Γ² over the far power; resonators without noise leave less than 1e-13. */
 export const ROUNDING = 1e-9;
-/** σ of few points scatters by half of itself. */
+/** Both are estimates: σ of few points scatters by half of itself. */
 const NOISE_FACTOR = 2;
 /** Under this the von Neumann ratio tells nothing. */
 const FEW = 12;
