@@ -13,6 +13,7 @@ import { accessLog } from "~/services/access-log.server";
 import { bodyLimits } from "~/services/body-limits.server";
 import { readiness } from "~/services/health.server";
 import { startJobs } from "~/services/jobs.server";
+import { knownMethods } from "~/services/known-methods.server";
 import { log } from "~/services/log.server";
 import { metricsText } from "~/services/metrics.server";
 import { closeReaders } from "~/services/reading.server";
@@ -37,6 +38,7 @@ export function createApp(development = false): Express {
     response.set("Content-Type", "text/plain; version=0.0.4; charset=utf-8").send(await metricsText());
   });
   app.use(securityHeaders(development));
+  app.use(knownMethods);
   app.use(bodyLimits);
   app.use(compression({ filter: isWorthCompressing }));
   if (!development) serveStaticFiles(app);

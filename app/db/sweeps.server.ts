@@ -1,20 +1,10 @@
-import { and, asc, count, desc, eq, inArray, isNotNull, lt, or, sql } from "drizzle-orm";
+import { and, asc, count, desc, eq, inArray, lt, or, sql } from "drizzle-orm";
 import type { AnalysisSettings, Dip, Warning } from "~/measurement/sweep";
 import type { Given, Reading } from "~/readers/reading";
 import { db, type Queryable } from "./client.server.ts";
 import { decodeCursor, encodeCursor } from "./cursor.server.ts";
 import { newPublicId } from "./ids.server.ts";
-import {
-  analyses,
-  dips,
-  files,
-  notes,
-  projects,
-  readings,
-  sweepPoints,
-  sweeps,
-  users,
-} from "./schema/index.ts";
+import { analyses, dips, files, notes, readings, sweepPoints, sweeps, users } from "./schema/index.ts";
 
 export type SweepRow = typeof sweeps.$inferSelect;
 export type FileRow = typeof files.$inferSelect;
@@ -86,44 +76,6 @@ export async function findAllByProject(
     rows: rows.slice(0, limit),
     nextCursor: last ? encodeCursor({ at: last.takenAt ?? last.createdAt, id: last.id }) : null,
   };
-}
-
-/** The newest sweep that anybody may look at, demonstrations before all others. */
-export async function findPublicExample(tx: Queryable = db) {
-  // Chosen by its id first: sorting must not carry the drawings along.
-  const newest = tx
-    .select({ id: sweeps.id })
-    .from(sweeps)
-    .innerJoin(projects, eq(projects.id, sweeps.projectId))
-    .where(and(eq(projects.visibility, "public"), isNotNull(sweeps.analysisId), isNotNull(sweeps.preview)))
-    .orderBy(desc(projects.demo), desc(sweeps.createdAt))
-    .limit(1)
-    .as("newest");
-  const rows = await tx
-    .select({
-      sweep: {
-        id: sweeps.id,
-        publicId: sweeps.publicId,
-        title: sweeps.title,
-        startHz: sweeps.startHz,
-        stopHz: sweeps.stopHz,
-        preview: sweeps.preview,
-      },
-      project: {
-        id: projects.id,
-        publicId: projects.publicId,
-        title: projects.title,
-        demo: projects.demo,
-        ituRegion: projects.ituRegion,
-      },
-      settings: analyses.settings,
-    })
-    .from(sweeps)
-    .innerJoin(newest, eq(newest.id, sweeps.id))
-    .innerJoin(projects, eq(projects.id, sweeps.projectId))
-    .innerJoin(analyses, eq(analyses.id, sweeps.analysisId))
-    .limit(1);
-  return rows[0];
 }
 
 /** Bytes of all originals, as they were given. */

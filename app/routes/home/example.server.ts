@@ -1,13 +1,13 @@
 import * as dips from "~/db/dips.server";
+import { findPublicExample } from "~/db/examples.server";
 import * as projects from "~/db/projects.server";
-import * as sweeps from "~/db/sweeps.server";
 import { bandsOverlapping, type ItuRegion } from "~/measurement/bands";
 import { decodePoints } from "~/services/points.server";
 import { storedDips } from "~/services/shown-dips.server";
 
 /** A public sweep, ready to be drawn; null while there is none. */
 export async function loadExample() {
-  const found = await sweeps.findPublicExample();
+  const found = await findPublicExample();
   if (!found?.sweep.preview) return null;
   const { project, sweep, settings } = found;
   const [known, bands] = await Promise.all([
