@@ -1,7 +1,7 @@
 import type { MouseEvent } from "react";
 import { Cairn } from "./Cairn";
 import type { Palette } from "./palette";
-import { At } from "./place";
+import { At, round } from "./place";
 import type { Scene } from "./scene";
 import { type SceneDip, STONE_HEIGHT_PX } from "./scene-dips";
 
@@ -37,6 +37,7 @@ export function DipMarks({ scene, palette, dipHref, chosenDipId, onPick }: DipMa
 
 function Mark({ dip, palette }: { dip: SceneDip; palette: Palette }) {
   const cairnTop = dip.cairnY - dip.y;
+  const stem = round(dip.y - dip.lineY, 1);
   const bottom = cairnTop + Math.max(1, dip.stones) * STONE_HEIGHT_PX + 6;
   return (
     <>
@@ -50,8 +51,9 @@ function Mark({ dip, palette }: { dip: SceneDip; palette: Palette }) {
         fill="transparent"
         className="dip-hit"
       />
+      {stem > 3 && <path d={`M0 ${-stem}V-3`} fill="none" stroke={palette.heather} strokeDasharray="2 2" />}
       <circle r="3" fill={palette.paper} stroke={palette.heather} strokeWidth="1.75" />
-      <g transform={`translate(0 ${cairnTop})`}>
+      <g transform={`translate(0 ${round(cairnTop, 2)})`}>
         <Cairn stones={dip.stones} colour={palette.heather} ground={palette.land} />
       </g>
     </>

@@ -37,7 +37,7 @@ export function FrequencyAxisMarks({ frequency, y, plotWidthPx, palette }: Frequ
         </g>
       ))}
       <text
-        x="-16"
+        x={captionX(frequency)}
         y={y + 17}
         textAnchor="end"
         fontFamily={palette.monoFont}
@@ -49,3 +49,13 @@ export function FrequencyAxisMarks({ frequency, y, plotWidthPx, palette }: Frequ
     </g>
   );
 }
+
+/** Right end of the unit's name: left of the first number, also where that stands at the very edge. */
+function captionX({ ticks }: FrequencyAxis): number {
+  const first = ticks.find((tick) => tick.label !== null);
+  const reach = (first?.label?.length ?? 0) * HALF_CHARACTER_PX - (first?.fraction ?? 0) * NARROWEST_PLOT_PX;
+  return -8 - Math.max(0, reach);
+}
+
+const HALF_CHARACTER_PX = 3.6;
+const NARROWEST_PLOT_PX = 240;

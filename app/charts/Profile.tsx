@@ -35,6 +35,8 @@ export function Profile(props: ProfileProps) {
   const lowestMagnitude = magnitudes.reduce((low, value) => Math.min(low, value), 1);
   const inner = heightPx - 2;
   const axis = valueAxis("rl", inner, { lowestMagnitude, highestMagnitude: 1 });
+  // A fitted dip deeper than every sample stands at the line's lowest place.
+  const deepestY = Math.min(inner, Math.max(0, axis.yOfMagnitude(lowestMagnitude)));
   const width = widthPx ?? 300;
   const paths = profilePaths(runs, { width, heightPx: inner, yOfMagnitude: axis.yOfMagnitude });
   const plotWidthPx = widthPx ?? null;
@@ -58,7 +60,7 @@ export function Profile(props: ProfileProps) {
           <circle
             key={dip.frequencyHz}
             cx={across(scale.fractionOf(dip.frequencyHz), plotWidthPx)}
-            cy={1 + Math.min(inner, Math.max(0, axis.yOfMagnitude(10 ** (-dip.returnLossDb / 20))))}
+            cy={1 + Math.min(deepestY, Math.max(0, axis.yOfMagnitude(10 ** (-dip.returnLossDb / 20))))}
             r="2.5"
             fill={palette.heather}
           />

@@ -94,7 +94,7 @@ export function buildSweepScene(input: SceneInput): Scene {
     frequency: frequencyAxis(scale, widths),
     ribbon: ribbonBands(scale, input.bands, input.designBands, widths),
     waters: limitShown ? watersOf(dips, runs, box, levelY, scale) : [],
-    dips: sceneDips(dips, input, scale, axis),
+    dips: sceneDips(dips, input, scale, axis, runs),
     remarks: [paths.beyondTop && axis.beyondTop, paths.beyondBottom && axis.beyondBottom].filter(
       (remark): remark is string => Boolean(remark),
     ),

@@ -118,6 +118,16 @@ describe("buildSweepScene", () => {
     expect(buildSweepScene({ ...base, bands: [], dips: [chartDip()] }).dips[0].hang).toBeNull();
   });
 
+  it("knows where the line ends over a dip that the fit puts deeper than its samples", () => {
+    const sweep = points(300, (index) => (Math.abs(index - 63) < 3 ? 0.1 : 0.9));
+    const deep = buildSweepScene({ ...base, points: sweep, dips: [chartDip({ returnLossDb: 34 })] });
+    // 50 dB axis over 300 px.
+    expect(deep.dips[0].y).toBeCloseTo(34 * 6, 6);
+    expect(deep.dips[0].lineY).toBeCloseTo(20 * 6, 6);
+    const there = buildSweepScene({ ...base, points: sweep, dips: [chartDip({ returnLossDb: 20 })] });
+    expect(there.dips[0].lineY).toBeCloseTo(there.dips[0].y, 6);
+  });
+
   it("keeps the axis as it is when the view moves off the deepest dip", () => {
     const dips = [chartDip({ returnLossDb: 33 })];
     const away = buildSweepScene({ ...base, dips, view: { ...base.view, fromHz: 20e6 } });

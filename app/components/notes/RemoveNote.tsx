@@ -1,3 +1,4 @@
+import type { SubmissionResult } from "@conform-to/react";
 import { useEffect, useRef } from "react";
 import { useFetcher, useLocation } from "react-router";
 import { Button } from "~/components/ui/Button";
@@ -14,7 +15,7 @@ interface RemoveNoteProps {
 
 /** Asks once, in place, then removes. */
 export function RemoveNote({ note, where, about }: RemoveNoteProps) {
-  const fetcher = useFetcher<{ done?: "remove" }>();
+  const fetcher = useFetcher<{ done?: "remove"; lastResult?: SubmissionResult<string[]> }>();
   const { show } = useToast();
   const { pathname, search } = useLocation();
   const told = useRef(false);
@@ -23,6 +24,7 @@ export function RemoveNote({ note, where, about }: RemoveNoteProps) {
     told.current = true;
     show({ id: `removed-${note.publicId}`, text: "The note is removed." });
   });
+  const problem = fetcher.data?.lastResult?.error?.[""]?.[0];
   const ask = (
     <fetcher.Form
       method="post"
@@ -35,6 +37,11 @@ export function RemoveNote({ note, where, about }: RemoveNoteProps) {
         Remove {about} for good?
         {note.replies.length > 0 && " Answers to it stay, under a line that says it was removed."}
       </p>
+      {problem && (
+        <p role="alert" className="field-error">
+          {problem}
+        </p>
+      )}
       <Button variant="danger" size="small" busy={fetcher.state !== "idle"}>
         Remove the note
       </Button>
