@@ -94,12 +94,12 @@ async function plotlyBytesBeforePaint(url: string): Promise<number> {
   }
 }
 
-/** The built files that hold Plotly, told by its own banner. */
+/** The built files that hold Plotly, told by a class name of its own. */
 function plotlyFiles(): string[] {
   const folder = path.join(ROOT, "build", "client", "assets");
   const scripts = readdirSync(folder).filter((name) => name.endsWith(".js"));
   const found = scripts.filter((name) =>
-    readFileSync(path.join(folder, name), "utf8").includes("plotly.js v"),
+    readFileSync(path.join(folder, name), "utf8").includes("modebar-btn"),
   );
   if (found.length === 0) throw new PlainFailure("No built file holds Plotly, so nothing was measured.");
   return found;
