@@ -13,7 +13,8 @@ export function SweepView({ data }: { data: SweepPageData }) {
   const dips = useMemo(() => data.dips.map(chartDip), [data.dips]);
   const { quantity, scale } = view;
   const chartView = useMemo(() => ({ quantity, scale, ...range }), [quantity, scale, range]);
-  const whole = { fromHz: sweep.startHz ?? range.fromHz, toHz: sweep.stopHz ?? range.toHz };
+  const [startHz, stopHz] = [sweep.startHz ?? range.fromHz, sweep.stopHz ?? range.toHz];
+  const whole = useMemo(() => ({ fromHz: startHz, toHz: stopHz }), [startHz, stopHz]);
   const searchFor = ({ fromHz, toHz }: FrequencyRange) =>
     searchWith(view, {
       fromHz: fromHz > whole.fromHz ? fromHz : null,

@@ -1,0 +1,112 @@
+import AxeBuilder from "@axe-core/playwright";
+import {
+  type Browser,
+  type BrowserContext,
+  type BrowserContextOptions,
+  chromium,
+  type Page,
+} from "playwright-core";
+import { expect } from "vitest";
+
+/** A real Chromium against the running server, with what every journey needs. */
+
+export const SERVER = process.env.SWALE_URL ?? "";
+
+const FLAGS = [
+  "--no-sandbox",
+  "--disable-gpu",
+  "--disable-quic",
+  "--no-first-run",
+  "--disable-background-networking",
+  "--disable-component-update",
+  "--disable-sync",
+];
+
+export function launch(): Promise<Browser> {
+  return chromium.launch({ executablePath: process.env.CHROMIUM ?? "/usr/bin/chromium", args: FLAGS });
+}
+
+export interface Visitor {
+  context: BrowserContext;
+  page: Page;
+  /** What the page complained of: script errors and console errors. Empty at the end of a good journey. */
+  complaints: string[];
+}
+
+/** A fresh browser profile with one page. Missing pages and refusals are told by their status, not as complaints. */
+export async function visit(browser: Browser, options: BrowserContextOptions = {}): Promise<Visitor> {
+  const context = await browser.newContext({
+    baseURL: SERVER,
+    viewport: { width: 1280, height: 900 },
+    ...options,
+  });
+  const page = await context.newPage();
+  page.setDefaultTimeout(20_000);
+  const complaints: string[] = [];
+  page.on("pageerror", (error) => complaints.push(error.message));
+  page.on("console", (message) => {
+    const own = message.location().url.startsWith(SERVER);
+    const status = /status of 4\d\d/.test(message.text());
+    if (own && message.type() === "error" && !status) complaints.push(message.text());
+  });
+  return { context, page, complaints };
+}
+
+/** Signs in through the stand-in, as a newcomer or as somebody it knows. */
+export async function signIn(page: Page, login: string): Promise<void> {
+  await page.goto("/sign-in");
+  await page.getByRole("button", { name: "Sign in with" }).click();
+  const known = page.getByRole("button", { name: `(${login})` });
+  if ((await known.count()) > 0) await known.click();
+  else {
+    await page.getByLabel("User name").fill(login);
+    await page.getByLabel("Name", { exact: true }).fill(login);
+    await page.getByLabel("E-mail").fill(`${login}@fennmarsh.example`);
+    await page.getByRole("button", { name: "Sign in as this person" }).click();
+  }
+  await page.waitForURL(`${SERVER}/**`);
+}
+
+/** A login nobody has yet. */
+export function newcomer(name: string): string {
+  return `${name}-${Math.random().toString(36).slice(2, 8)}`;
+}
+
+/** Waits until the page's scripts have taken over: only then do its forms answer without a reload. */
+export async function settled(page: Page): Promise<void> {
+  await page.waitForLoadState("networkidle");
+}
+
+/** Nothing serious by axe; the rules' names are in the message otherwise. */
+export async function expectAccessible(page: Page): Promise<void> {
+  const { violations } = await new AxeBuilder({ page })
+    .withTags(["wcag2a", "wcag2aa", "wcag21aa", "wcag22aa"])
+    .analyze();
+  const serious = violations
+    .filter(({ impact }) => impact === "serious" || impact === "critical")
+    .map(({ id, nodes }) => `${id}: ${nodes.map((node) => node.target.join(" ")).join(", ")}`);
+  expect(serious, page.url()).toEqual([]);
+}
+
+/** Nothing sticks out of the page sideways. */
+export async function expectFits(page: Page): Promise<void> {
+  const over = await page.evaluate(
+    () => document.documentElement.scrollWidth - document.documentElement.clientWidth,
+  );
+  expect(over, `${page.url()} sticks out`).toBeLessThanOrEqual(0);
+}
+
+/** Invented: S11 in dB over 1 to 60 MHz with a dip at each frequency given. */
+export function sweepText(...dipsMHz: number[]): string {
+  const lines = ["Frequency (MHz),S11 (dB)"];
+  for (let i = 0; i <= 800; i++) {
+    const mhz = 1 + (59 * i) / 800;
+    const db = dipsMHz.reduce((sum, at) => sum - 19 / (1 + (24 * (mhz / at - at / mhz)) ** 2), -0.3);
+    lines.push(`${mhz.toFixed(5)},${db.toFixed(4)}`);
+  }
+  return lines.join("\n");
+}
+
+export function fileOf(name: string, text: string) {
+  return { name, mimeType: "text/csv", buffer: Buffer.from(text) };
+}
