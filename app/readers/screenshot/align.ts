@@ -1,3 +1,7 @@
+/** Pixels within which labels must miss their lines alike, and the share of labels that must do so. */
+const AGREEMENT = 1.5;
+const LEAST_AGREEING = 0.4;
+
 /**
  * Moves labels onto the lines that they belong to.
  *
@@ -18,11 +22,12 @@ export function alignToLines<T extends { position: number }>(
     return best;
   });
   const misses = nearest.filter((d) => d !== null).sort((a, b) => a - b);
-  if (misses.length === 0) return labels;
-  const usual = misses[Math.floor(misses.length / 2)];
+  const usual = misses[Math.floor(misses.length / 2)] ?? 0;
+  const agreeing = misses.filter((d) => Math.abs(d - usual) <= AGREEMENT).length;
+  if (agreeing < Math.max(2, LEAST_AGREEING * labels.length)) return labels;
   return labels.map((label, i) => {
     const d = nearest[i];
-    const move = d !== null && Math.abs(d - usual) <= 1.5 ? d : usual;
+    const move = d !== null && Math.abs(d - usual) <= AGREEMENT ? d : usual;
     return { ...label, position: label.position + move };
   });
 }

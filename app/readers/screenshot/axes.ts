@@ -1,4 +1,4 @@
-import type { ScreenshotSpec } from "../reading.ts";
+import type { AxisSource, ScreenshotSpec } from "../reading.ts";
 import type { FoundFrame, Frame } from "./frame.ts";
 import { cornerAxis, type FrequencyAxis, namedAxis, namedFrequencies, tickAxis } from "./frequency-axis.ts";
 import type { Ocr, Picture, Stage, Word } from "./picture.ts";
@@ -11,8 +11,6 @@ import {
   referencedAxis,
   type ValueAxis,
 } from "./value-axis.ts";
-
-export type AxisSource = "printed" | "given" | "assumed";
 
 /** The axes of a plot; null is what could not be found. */
 export interface Axes {

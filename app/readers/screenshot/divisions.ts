@@ -4,7 +4,9 @@ import type { Box, Line } from "./picture.ts";
 const COUNTS = [2, 3, 4, 5, 6, 7, 8, 9, 10, 11, 12, 14, 15, 16, 18, 20];
 /** Grid lines needed inside a plot before they correct its outer lines, and by how many pixels they may. */
 const LEAST_INNER = 4;
-const LARGEST_CORRECTION = 1.6;
+const LARGEST_CORRECTION = 4;
+/** One end at least must lie on the even grid as it is. */
+const SURE_END = 1.2;
 /** Share of the inner grid lines that must be seen. */
 const SEEN_SHARE = 0.8;
 
@@ -45,33 +47,47 @@ export function countDivisions(grey: Float32Array, width: number, box: Box, line
  * that miss it left out. The outer lines as they were where the grid is not even or has few lines.
  */
 export function evenEnds(lines: number[], first: number, last: number): [number, number] {
-  const inner = lines.filter((p) => p > first + 3 && p < last - 3);
-  const comb = (y: number) => Math.min(...inner.map((p) => Math.abs(p - y))) <= 1.6;
-  const count = inner.length < LEAST_INNER ? null : largestComb(comb, first, last - first);
-  if (!count) return [first, last];
-  let points = [first, ...inner, last]
-    .map((place) => ({ place, number: Math.round(((place - first) / (last - first)) * count) }))
-    .filter((p) => Math.abs(p.place - first - (p.number * (last - first)) / count) < 2);
-  let line = straightLine(points);
-  for (let pass = 0; pass < 3; pass++) {
-    const kept = points.filter((p) => Math.abs(line.at(p.number) - p.place) < (pass === 0 ? 0.8 : 0.5));
-    if (kept.length < LEAST_INNER || kept.length === points.length) break;
-    points = kept;
-    line = straightLine(points);
+  const inner = lines.filter((p) => p > first + 3 && p < last - 3).sort((a, b) => a - b);
+  if (inner.length < LEAST_INNER) return [first, last];
+  const steps = inner
+    .slice(1)
+    .map((p, i) => p - inner[i])
+    .filter((d) => d > 4);
+  const step = medianOf(steps);
+  if (!(step > 8)) return [first, last];
+  const origin = inner[inner.length >> 1];
+  const points = [first, ...inner, last].map((place) => ({
+    place,
+    number: Math.round((place - origin) / step),
+  }));
+  let kept = points.filter((p) => Math.abs(p.place - origin - p.number * step) < 2 + 0.02 * step);
+  for (const limit of [0.9, 0.5]) {
+    const line = straightLine(kept);
+    kept = kept.filter((p) => Math.abs(line.at(p.number) - p.place) < limit);
+    if (kept.length < LEAST_INNER) return [first, last];
   }
-  const ends: [number, number] = [line.at(0), line.at(count)];
-  const near =
-    Math.abs(ends[0] - first) < LARGEST_CORRECTION && Math.abs(ends[1] - last) < LARGEST_CORRECTION;
-  return near && points.length >= LEAST_INNER ? ends : [first, last];
+  const line = straightLine(kept);
+  const ends = [first, last].map((end) => line.at(line.numberAt(end)));
+  const misses = [Math.abs(ends[0] - first), Math.abs(ends[1] - last)];
+  const sound = Math.min(...misses) < SURE_END && Math.max(...misses) < LARGEST_CORRECTION;
+  const even = distinct(kept) >= 0.7 * distinct(points);
+  return sound && even ? [ends[0], ends[1]] : [first, last];
 }
 
-function straightLine(points: { place: number; number: number }[]): { at: (number: number) => number } {
+function distinct(points: { number: number }[]): number {
+  return new Set(points.map((p) => p.number)).size;
+}
+
+function straightLine(points: { place: number; number: number }[]) {
   const n = points.length;
   const meanX = points.reduce((s, p) => s + p.number, 0) / n;
   const meanY = points.reduce((s, p) => s + p.place, 0) / n;
   const xx = points.reduce((s, p) => s + (p.number - meanX) ** 2, 0);
   const slope = points.reduce((s, p) => s + (p.number - meanX) * (p.place - meanY), 0) / (xx || 1);
-  return { at: (number) => meanY + slope * (number - meanX) };
+  return {
+    at: (number: number) => meanY + slope * (number - meanX),
+    numberAt: (place: number) => Math.round(meanX + (place - meanY) / slope),
+  };
 }
 
 function largestComb(hit: (y: number) => boolean, top: number, height: number): number | null {

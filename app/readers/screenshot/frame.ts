@@ -221,7 +221,10 @@ function support(lines: Line[], along: Span, across: Span): { sides: number; ins
     const before = along.from - line.from;
     const after = line.to - along.to;
     const shortest = -Math.max(TICK_LENGTH, LARGEST_SHORTFALL * (along.to - along.from));
-    if (Math.max(before, after) > LABEL_REACH || Math.min(before, after) < shortest) continue;
+    if (Math.min(before, after) < shortest) continue;
+    const beyond = Math.max(before, after) > LABEL_REACH;
+    const outer = Math.abs(line.position - across.from) <= 1 || Math.abs(line.position - across.to) <= 1;
+    if (beyond && !outer) continue;
     const ends = endVote(before) + endVote(after);
     exact += ends;
     if (Math.abs(line.position - across.from) <= 1) first = Math.max(first, ends);
@@ -235,7 +238,8 @@ function support(lines: Line[], along: Span, across: Span): { sides: number; ins
 function endVote(overshoot: number): number {
   if (Math.abs(overshoot) <= END_TOLERANCE) return 0.5;
   if (overshoot < 0) return overshoot >= -TICK_LENGTH ? 0.25 : 0.15;
-  return overshoot <= TICK_LENGTH ? 0.4 : 0.3;
+  if (overshoot <= TICK_LENGTH) return 0.4;
+  return overshoot <= LABEL_REACH ? 0.3 : 0.15;
 }
 
 /** A window's border around the plot scores by its size alone: the gridded rectangle inside it is meant. */

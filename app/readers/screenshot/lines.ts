@@ -38,7 +38,9 @@ interface Chain {
 export function findLines(grey: Float32Array, width: number, height: number): Line[] {
   const chains: Chain[] = [];
   for (let y = 0; y + 1 < height; y++) chainsOfRow(grey, width, y, chains);
-  const lines = groupChains(chains, width).map((group) => measureLine(group, grey, width, height));
+  const lines = groupChains(chains, width)
+    .flatMap((group) => [group, ...partsOf(group)])
+    .map((group) => measureLine(group, grey, width, height));
   const long = lines.filter((l) => l.to - l.from >= SHORTEST_SHARE * width);
   return long
     .filter((l) => !long.some((other) => isRinging(l, other)))
@@ -171,6 +173,16 @@ function sameLine(a: Chain, b: Chain, width: number): boolean {
   const alike =
     Math.abs(a.row - b.row) <= 1 && a.step * b.step > 0 && a.step / b.step > 0.5 && a.step / b.step < 2;
   return alike && both > -0.4 * width;
+}
+
+/** A line that goes on behind a gap may be two: a plot's outline and, in the same row, a button's. */
+function partsOf(group: Chain[]): Chain[][] {
+  const head = group[0];
+  const alike = group.filter((c) => Math.abs(c.row - head.row) <= 1 && c.step * head.step > 0);
+  const apart = alike.filter((a) => alike.some((b) => a.from > b.to || b.from > a.to));
+  return apart.map((part) =>
+    group.filter((c) => Math.min(c.to, part.to) - Math.max(c.from, part.from) > 0.6 * (c.to - c.from)),
+  );
 }
 
 function measureLine(group: Chain[], grey: Float32Array, width: number, height: number): Line {

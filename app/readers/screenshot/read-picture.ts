@@ -17,6 +17,8 @@ export interface PictureDetails {
   traces: { color: string; share: number; chosen: boolean }[];
   /** Columns in which the trace was seen, in the axis' own unit; null without a sweep. */
   points: ReadPoints | null;
+  /** The chosen trace in the picture: its place in each pixel column, NaN where it was not seen. */
+  line: { x: Float64Array; y: Float64Array } | null;
   stages: { frame: Stage; axes: Stage; trace: Stage };
 }
 
@@ -51,6 +53,7 @@ export async function readPicture(
     axes: null,
     traces: [],
     points: null,
+    line: null,
     stages: { frame: NOT_REACHED, axes: NOT_REACHED, trace: NOT_REACHED },
   };
   progress("frame");
@@ -93,6 +96,10 @@ function conclude(
       "No trace was found inside the frame. Choose its colour in the picture.",
       reading,
     );
+  details.line = {
+    x: chosen.trace.row.map((_, i) => chosen.trace.left + i),
+    y: chosen.trace.row,
+  };
   const { startHz, stopHz, top, bottom, quantity } = axes.axes;
   if (startHz === null || stopHz === null || top === null || bottom === null) {
     const missing = [
