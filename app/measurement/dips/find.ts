@@ -121,7 +121,7 @@ class Waiting {
     const left = this.left[at];
     const edge = this.isEdge[at] === 1;
     const crest = edge ? Math.max(left, right) : Math.min(left, right);
-    if (crest < this.ratio * value || value > 1 || crest <= value) return;
+    if (crest < this.ratio * value * SLACK || value > 1 || crest <= value) return;
     this.found.push({ index: this.index[at], prominenceDb: 20 * Math.log10(crest / value), edge });
   }
 
@@ -144,3 +144,5 @@ function widen(values: Float64Array, room: number): Float64Array<ArrayBuffer> {
 }
 
 const FIRST_ROOM = 1024;
+/** A prominence that equals the asked one counts, whatever the last bits of the ratio are. */
+const SLACK = 1 - 1e-12;

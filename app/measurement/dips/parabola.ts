@@ -41,7 +41,7 @@ export function parabolaDip(
   index: number,
   noise: number,
 ): ParabolaDip | null {
-  const { x, power, loss } = around(f, magnitude, index, 1);
+  const { x, loss } = around(f, magnitude, index, 1);
   const top = parabolaTop(x, loss);
   if (!top || loss[1] - (loss[0] + loss[2]) / 2 < CLEAR_OF_NOISE * noise) return null;
   const step = stepPart(f, magnitude, index, top);
