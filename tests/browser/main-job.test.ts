@@ -113,7 +113,7 @@ test("a second person is added, answers the note without a reload, and settles t
 
   await second.page.goto(dipPath);
   await settled(second.page);
-  await second.page.getByText("Answer", { exact: true }).first().click();
+  await second.page.locator("summary", { hasText: /^Answer/ }).first().click();
   await second.page
     .getByRole("textbox", { name: /answer/i })
     .first()
