@@ -2,7 +2,7 @@ import { LIGHT_SPEED } from "./antenna.ts";
 import { AS_BUILT, MORE_RADIALS, type reedBankFiles, STAKE_FAR, STAKE_NEAR } from "./reed-bank.ts";
 import { decided, said, swept } from "./steps.ts";
 import { on, type Step } from "./story.ts";
-import { khz, mhz, percent } from "./told.ts";
+import { aside, khz, mhz, percent } from "./told.ts";
 
 const FREE_M = AS_BUILT.braidM ?? 0;
 const FAR_M = STAKE_FAR.braidM ?? 0;
@@ -237,6 +237,7 @@ All that is left up there is the short element's third resonance, ${t.dip("choke
         `Worth saying what it did *not* do: 40 m ${t.dip("radials", 7.12).f} before and ${t.dip("choked", 7.12).f} after, 17 m ${t.dip("radials", 18.2).f} and ${t.dip("choked", 18.2).f}. At those frequencies the braid is too far from half a wave to take much part. What the choke does to noise picked up on the cable these sweeps cannot say.`,
       { answers: "choked" },
     ),
+    ...settled(),
     swept({
       key: "final",
       by: "cleo-reed",
@@ -260,7 +261,7 @@ All that is left up there is the short element's third resonance, ${t.dip("choke
 
 Both inside the limit of 2 everywhere.`,
     ),
-    ...settled(),
+    ...asItStays(),
     said(
       "ada-marsh",
       on(4, 18, 20, 30),
@@ -285,6 +286,41 @@ The stake stays, for lightning. Nobody works at the mast when there is thunder a
   ];
 }
 
+/** What is left in the last sweep: three explained, one proposed, one open. */
+function asItStays(): Step[] {
+  const settle = (nearMhz: number, text: string, minute: number) =>
+    decided("ada-marsh", on(4, 18, 12, minute), { sweep: "final", nearMhz }, "settle", text);
+  return [
+    settle(7.12, "Long element, quarter wave", 10),
+    settle(18.16, "Short element, quarter wave", 11),
+    settle(21.5, "Long element, three quarter waves", 12),
+    decided(
+      "dov-heron",
+      on(4, 18, 13, 30),
+      { sweep: "final", nearMhz: 55.3 },
+      "propose",
+      "Short element, three quarter waves",
+    ),
+    said(
+      "bram-sedge",
+      on(4, 18, 14, 20),
+      { sweep: "final", nearMhz: 36.2 },
+      (t) => {
+        const [first, fifth] = [t.dip("final", 7.12), t.dip("final", 36.2)];
+        return `If we are sorting the rest: is this five quarter waves on the long one? 5 × ${first.f} = ${mhz(5 * first.hz)}, found at ${fifth.link}, ${aside(fifth.hz / (5 * first.hz))}. On the right side this time.`;
+      },
+      { key: "five-quarters" },
+    ),
+    said(
+      "cleo-reed",
+      on(4, 18, 15, 2),
+      { sweep: "final", nearMhz: 36.2 },
+      "On the right side, and it moved when you cut. Somebody should still change one length and nothing else before we call it settled.",
+      { answers: "five-quarters" },
+    ),
+  ];
+}
+
 /** The verdict, on each sweep in which the dip stood out. */
 function settled(): Step[] {
   const where = [
@@ -297,7 +333,7 @@ function settled(): Step[] {
   return where.map(([sweep, nearMhz], i) =>
     decided(
       "ada-marsh",
-      on(4, 18, 20, 10 + i),
+      on(4, 12, 10, 10 + i),
       { sweep, nearMhz },
       "settle",
       "Half wave on the outside of the braid between hub and stake: moved with that length, gone with a choke at the hub",

@@ -1,6 +1,6 @@
 import { getFormProps, type SubmissionResult, useForm } from "@conform-to/react";
 import { parseWithZod } from "@conform-to/zod/v4";
-import { useEffect, useId, useRef } from "react";
+import { type FormEvent, useEffect, useId, useRef, useState } from "react";
 import { useFetcher } from "react-router";
 import { Button } from "~/components/ui/Button";
 import { TextareaField } from "~/components/ui/Field";
@@ -55,12 +55,20 @@ export function NoteForm({ where, target = {}, label, onDone, onCancel, autoFocu
     show({ id: `note-${Date.now()}`, text: data.done ? "The note is changed." : "The note is stored." });
     onDone?.();
   });
+  const [offline, setOffline] = useState(false);
+  const formProps = getFormProps(form);
+  const send = (event: FormEvent<HTMLFormElement>) => {
+    setOffline(!navigator.onLine);
+    if (navigator.onLine) formProps.onSubmit(event);
+    else event.preventDefault();
+  };
   const busy = fetcher.state !== "idle";
   return (
     <fetcher.Form
       method="post"
       action={notesPath(where, edited?.publicId)}
-      {...getFormProps(form)}
+      {...formProps}
+      onSubmit={send}
       className="grid gap-2"
     >
       <NoteTargetFields where={where} target={target} />
@@ -78,7 +86,7 @@ export function NoteForm({ where, target = {}, label, onDone, onCancel, autoFocu
           if (event.key === "Enter" && (event.ctrlKey || event.metaKey))
             event.currentTarget.form?.requestSubmit();
         }}
-        errors={fields.body.errors ?? form.errors}
+        errors={offline ? [OFFLINE] : (fields.body.errors ?? form.errors)}
         hint={<Hint restored={draft.restored} left={MAX_NOTE_CHARACTERS - draft.text.length} />}
       />
       <Preview text={draft.text} />
@@ -119,3 +127,5 @@ function Hint({ restored, left }: { restored: boolean; left: number }) {
 }
 
 const NEAR_LIMIT = 1000;
+const OFFLINE =
+  "There is no connection, so nothing was sent. The text is kept on this device; store it when there is one again.";

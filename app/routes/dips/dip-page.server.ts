@@ -82,7 +82,13 @@ function neighboursOf(dip: dips.DipRow, known: dips.ListedDip[]) {
   const below = others.filter((other) => other.frequencyHz < dip.frequencyHz).at(-1);
   const above = others.find((other) => other.frequencyHz >= dip.frequencyHz);
   const brief = (other: dips.DipRow | undefined) =>
-    other ? { publicId: other.publicId, frequencyHz: other.frequencyHz } : null;
+    other
+      ? {
+          publicId: other.publicId,
+          frequencyHz: other.frequencyHz,
+          frequencyUncertaintyHz: other.numbers.frequencyUncertaintyHz,
+        }
+      : null;
   return { previous: brief(below), next: brief(above) };
 }
 

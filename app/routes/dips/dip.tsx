@@ -2,7 +2,6 @@ import { Link } from "react-router";
 import { requireProject } from "~/auth/require.server";
 import { Thread } from "~/components/notes/Thread";
 import { VerdictForm } from "~/components/notes/VerdictForm";
-import { Breadcrumbs } from "~/components/ui/Breadcrumbs";
 import { Caution } from "~/components/ui/Caution";
 import { DateTime } from "~/components/ui/DateTime";
 import { VerdictTag } from "~/components/ui/Tag";
@@ -36,7 +35,6 @@ export default function DipPage({ loaderData }: Route.ComponentProps) {
   return (
     <article className="grid gap-6">
       <header className="grid gap-2">
-        <Breadcrumbs items={[{ label: sweep.title, to: `${sweepPath}?dip=${dip.publicId}` }]} />
         <div className="flex flex-wrap items-center gap-x-4 gap-y-2">
           <h1>
             Dip at <span className="font-mono tracking-tight">{frequencyOf(loaderData)}</span>
@@ -44,7 +42,7 @@ export default function DipPage({ loaderData }: Route.ComponentProps) {
           <VerdictTag verdict={dip.verdict} />
         </div>
         <p className="soft">
-          in <Link to={sweepPath}>{sweep.title}</Link>,{" "}
+          in <Link to={`${sweepPath}?dip=${dip.publicId}`}>{sweep.title}</Link>,{" "}
           {sweep.takenAt ? (
             <>
               taken <DateTime at={sweep.takenAt} />
@@ -67,14 +65,12 @@ export default function DipPage({ loaderData }: Route.ComponentProps) {
           licence and local rules allow.
         </Caution>
       )}
-      <div className="grid gap-8 lg:grid-cols-[minmax(0,3fr)_minmax(20rem,2fr)]">
+      <div className="grid gap-8 lg:grid-cols-[minmax(0,3fr)_minmax(20rem,2fr)] lg:grid-rows-[auto_1fr]">
         <div className="grid gap-8 content-start min-w-0">
           <CloseUp data={loaderData} />
           <DipNumbers data={loaderData} />
-          <Whereabouts data={loaderData} />
-          <Provenance data={loaderData} />
         </div>
-        <div className="grid gap-8 content-start min-w-0">
+        <div className="grid gap-8 content-start min-w-0 lg:col-start-2 lg:row-start-1 lg:row-span-2">
           <section aria-labelledby="verdict" className="grid gap-3">
             <h2 id="verdict">Verdict</h2>
             <VerdictForm
@@ -96,6 +92,10 @@ export default function DipPage({ loaderData }: Route.ComponentProps) {
             />
           </section>
         </div>
+        <div className="grid gap-8 content-start min-w-0">
+          <Whereabouts data={loaderData} />
+          <Provenance data={loaderData} />
+        </div>
       </div>
     </article>
   );
@@ -111,12 +111,16 @@ function Neighbours({ data: { neighbours, projectId } }: { data: DipPageData }) 
     <nav aria-label="Dips of this sweep" className="flex flex-wrap gap-x-6 gap-y-1 text-small no-print">
       {previous && (
         <Link to={path(previous.publicId)} rel="prev">
-          Lower: <span className="font-mono">{formatFrequency(previous.frequencyHz)}</span>
+          Lower:{" "}
+          <span className="font-mono">
+            {formatFrequency(previous.frequencyHz, previous.frequencyUncertaintyHz)}
+          </span>
         </Link>
       )}
       {next && (
         <Link to={path(next.publicId)} rel="next">
-          Higher: <span className="font-mono">{formatFrequency(next.frequencyHz)}</span>
+          Higher:{" "}
+          <span className="font-mono">{formatFrequency(next.frequencyHz, next.frequencyUncertaintyHz)}</span>
         </Link>
       )}
     </nav>

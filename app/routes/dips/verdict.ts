@@ -2,6 +2,7 @@ import { parseWithZod } from "@conform-to/zod/v4";
 import { data, redirect } from "react-router";
 import { safePath } from "~/auth/next";
 import { requireProject } from "~/auth/require.server";
+import { sendOrSayWhy } from "~/components/notes/unsent";
 import { verdictSchema } from "~/components/notes/verdict.schema";
 import * as dips from "~/db/dips.server";
 import { notFound, refused } from "~/errors";
@@ -32,6 +33,10 @@ export async function action(args: Route.ActionArgs) {
   if (change === "done") return stays ? { done: intent } : redirectWithMessage(to, DONE[intent]);
   if (!stays) return redirectWithMessage(to, PROBLEMS[change]);
   return data({ lastResult: submission.reply({ formErrors: [PROBLEMS[change]] }) }, { status: 409 });
+}
+
+export function clientAction({ serverAction }: Route.ClientActionArgs) {
+  return sendOrSayWhy(serverAction);
 }
 
 export async function loader(args: Route.LoaderArgs) {

@@ -2,6 +2,7 @@ import { parseWithZod } from "@conform-to/zod/v4";
 import { data, redirect } from "react-router";
 import { requireProject } from "~/auth/require.server";
 import { changeNoteSchema } from "~/components/notes/notes.schema";
+import { sendOrSayWhy } from "~/components/notes/unsent";
 import * as notes from "~/db/notes.server";
 import { notFound, refused } from "~/errors";
 import { redirectWithMessage } from "~/services/flash.server";
@@ -42,6 +43,10 @@ export async function action(args: Route.ActionArgs) {
     default:
       return value satisfies never;
   }
+}
+
+export function clientAction({ serverAction }: Route.ClientActionArgs) {
+  return sendOrSayWhy(serverAction);
 }
 
 async function requireNote(projectId: number, publicId: string) {

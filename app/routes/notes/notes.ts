@@ -2,6 +2,7 @@ import { parseWithZod } from "@conform-to/zod/v4";
 import { data } from "react-router";
 import { requireProject } from "~/auth/require.server";
 import { writeNoteSchema } from "~/components/notes/notes.schema";
+import { sendOrSayWhy } from "~/components/notes/unsent";
 import { refused } from "~/errors";
 import { redirectWithMessage } from "~/services/flash.server";
 import { listThread, NoteProblem, writeNote } from "~/services/notes.server";
@@ -50,4 +51,8 @@ export async function action(args: Route.ActionArgs) {
     if (!stays) return redirectWithMessage(backTo(returnTo, page), error.message);
     return data({ lastResult: submission.reply({ formErrors: [error.message] }) }, { status: 409 });
   }
+}
+
+export function clientAction({ serverAction }: Route.ClientActionArgs) {
+  return sendOrSayWhy(serverAction);
 }

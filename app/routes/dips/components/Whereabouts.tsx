@@ -42,7 +42,8 @@ function relationTo(band: { lowHz: number; highHz: number }, hz: number): string
   const above = hz > band.highHz;
   const offHz = above ? hz - band.highHz : band.lowHz - hz;
   const share = offHz / (above ? band.highHz : band.lowHz);
-  return `the dip lies ${formatWidth(offHz)} ${above ? "above" : "below"} it (${formatPercent(share)})`;
+  const far = share < 1 ? ` (${formatPercent(share)})` : "";
+  return `the dip lies ${formatWidth(offHz)} ${above ? "above" : "below"} it${far}`;
 }
 
 function holds(band: { lowHz: number; highHz: number }, hz: number): boolean {
