@@ -4,7 +4,7 @@ import { createServer as createVite } from "vite";
 
 /** `npm run dev`: the same app through Vite, so that a change shows at once. */
 const http = createServer();
-const vite = await createVite({ server: { middlewareMode: { server: http } }, appType: "custom" });
+const vite = await createVite({ server: { middlewareMode: true, hmr: { server: http } }, appType: "custom" });
 const app = express();
 app.use(vite.middlewares);
 app.use(async (request, response, next) => {
