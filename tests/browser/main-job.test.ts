@@ -113,7 +113,10 @@ test("a second person is added, answers the note without a reload, and settles t
 
   await second.page.goto(dipPath);
   await settled(second.page);
-  await second.page.locator("summary", { hasText: /^Answer/ }).first().click();
+  await second.page
+    .locator("summary", { hasText: /^Answer/ })
+    .first()
+    .click();
   await second.page
     .getByRole("textbox", { name: /answer/i })
     .first()
@@ -125,8 +128,14 @@ test("a second person is added, answers the note without a reload, and settles t
   await second.page.getByText("twice the length of the ditch").last().waitFor();
   expect(new URL(second.page.url()).pathname).toBe(dipPath);
 
+  await second.page.locator("summary", { hasText: /^Explain it/ }).click();
+  await second.page.getByLabel("The explanation in a few words").fill("the long wire's own half wave");
+  await second.page.getByRole("button", { name: "Settle it" }).click();
+  await second.page.getByText("the long wire's own half wave").first().waitFor();
+
   await owner.page.goto(dipPath);
   await owner.page.getByText("twice the length of the ditch").first().waitFor();
+  expect(await owner.page.getByText("settled").first().isVisible()).toBe(true);
   await owner.context.close();
   expect(second.complaints).toEqual([]);
   await second.context.close();
