@@ -51,7 +51,8 @@ export function cellColumn(line: string, delimiter: TextSpec["delimiter"], index
   const cells = splitCells(line, delimiter);
   for (let i = 0; i < index && i < cells.length; i++) {
     const found = line.indexOf(cells[i], at);
-    at = (found < 0 ? at : found) + cells[i].length + 1;
+    const next = line.indexOf(delimiter, (found < 0 ? at : found) + cells[i].length);
+    at = next < 0 ? line.length : next + 1;
   }
   return at + 1 + (line.slice(at).match(/^[\s"]*/)?.[0].length ?? 0);
 }

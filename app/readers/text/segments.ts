@@ -22,7 +22,8 @@ export function findSegments(lines: Lines, dialect: Dialect, fromLine = 1): Segm
   const segments: Segment[] = [];
   let open: Segment | null = null;
   for (let n = fromLine; n <= lines.count; n++) {
-    const kind = isPlainRow(lines, n, dialect) ? "row" : lineKind(lines.text(n), dialect);
+    const row = isPlainRow(lines, n, dialect) || (open !== null && looksLikeRow(lines, n, dialect));
+    const kind = row ? "row" : lineKind(lines.text(n), dialect);
     if (kind === "row") {
       if (open === null) {
         open = { firstLine: n, lastLine: n, rows: 0 };
@@ -70,6 +71,16 @@ function isCutOff(lines: Lines, line: number, { delimiter }: Dialect): boolean {
     lines.end(line) === lines.bytes.length &&
     !lines.text(line).trim().includes(delimiter)
   );
+}
+
+/** Inside a table a line that begins as a number and is parted goes for a row; reading it will show. */
+function looksLikeRow(lines: Lines, line: number, dialect: Dialect): boolean {
+  const { bytes } = lines;
+  const from = lines.start(line);
+  const first = bytes[from] === 45 ? bytes[from + 1] : bytes[from];
+  if (!(first >= 48 && first <= 57)) return false;
+  const at = bytes.indexOf(dialect.delimiter.charCodeAt(0), from);
+  return at > from && at < lines.end(line);
 }
 
 function isPlainRow(lines: Lines, line: number, dialect: Dialect): boolean {

@@ -28,6 +28,8 @@ const SAMPLE_LINES = 300;
 const SAMPLE_CHUNKS = 10;
 const SAMPLE_ROWS = 200;
 const PREAMBLE_LINES = 400;
+/** Rows that a table without a heading for its frequencies must have, so that no two lines of prose pass for a sweep. */
+const LEAST_BARE_ROWS = 3;
 /** A table with fewer rows than this share of the largest is a list beside the sweep, not a sweep. */
 const LEAST_BLOCK_SHARE = 0.2;
 
@@ -50,9 +52,14 @@ export function findTable(lines: Lines, given: Partial<TextSpec>): Table {
     (l) => lineKind(l, dialect) === "row",
   );
   const columns = describeColumns(rows, dialect, headings);
+  const asked = given.frequencyColumn;
+  if (asked !== undefined && columns[asked] === undefined)
+    fail("no-such-column", `The table has ${columns.length} columns; column ${asked + 1} was asked for.`);
   const preamble = preambleOf(lines, block.firstLine);
   const frequencies =
     given.frequencyColumn === undefined ? frequencyColumns(columns) : [columns[given.frequencyColumn]];
+  const named = frequencies[0]?.heading.role === "frequency" || given.frequencyColumn !== undefined;
+  if (!named && block.rows < LEAST_BARE_ROWS) return notASweep(lines);
   if (frequencies.length === 0 || frequencies[0] === undefined) return noFrequency(block, columns);
   const candidates = findCandidates(
     columns,

@@ -23,18 +23,24 @@ let buffer = new Float64Array(64);
  * Pairs of numbers that the first frequency has, over as many lines as it takes: a line with an even count of numbers
  * goes on where the last one ended. Null where there are no data.
  */
-export function firstSetPairs(lines: Lines, firstLine: number): { pairs: number; line: number } | null {
+export function firstSetPairs(
+  lines: Lines,
+  firstLine: number,
+): { pairs: number; line: number; onFirstLine: number } | null {
   let total = 0;
   let line = 0;
+  let onFirstLine = 0;
   for (let n = firstLine; n <= lines.count; n++) {
     const found = numbersOf(lines, n);
     if (found === END) break;
     if (found === 0) continue;
-    if (total === 0) line = n;
-    else if (found % 2 === 1) break;
+    if (total === 0) {
+      line = n;
+      onFirstLine = found;
+    } else if (found % 2 === 1) break;
     total += found;
   }
-  return total === 0 ? null : { pairs: (total - 1) / 2, line };
+  return total === 0 ? null : { pairs: (total - 1) / 2, line, onFirstLine };
 }
 
 /** Reads all network data: sets of 1 + 2·pairs numbers, wrapped at will; noise data behind two ports are passed over. */

@@ -92,7 +92,8 @@ function layoutOf(lines: Lines, header: Header, named: number | null): { ports: 
   if (header.ports !== null) return { ports: header.ports, assumed: [] };
   if (first === null) return { ports: named ?? 1, assumed: [] };
   const root = Math.round(Math.sqrt(first.pairs));
-  if (named !== null && named * named === first.pairs) return { ports: named, assumed: [] };
+  if (named !== null && (named * named === first.pairs || first.onFirstLine === 1 + 2 * named * named))
+    return { ports: named, assumed: [] };
   if (first.pairs < 1 || root * root !== first.pairs) {
     const need =
       named === null
