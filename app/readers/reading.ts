@@ -46,9 +46,30 @@ export interface TouchstoneSpec {
   referenceOhm: number | null;
 }
 
+/** A place in a picture; pixel centres are at whole numbers. */
+export interface PicturePoint {
+  x: number;
+  y: number;
+}
+
+/** A stretch of pixel columns that was misread, both ends included. */
+export interface MaskedStretch {
+  fromX: number;
+  toX: number;
+  /** With both, only ink between these rows is passed over; without, the columns become gaps. */
+  top?: number;
+  bottom?: number;
+}
+
 /** The choices of a picture's reading; filled by `readers/screenshot`. */
 export interface ScreenshotSpec {
   frame?: { left: number; top: number; right: number; bottom: number };
+  /** The plot's corners in a photograph of a screen: top left, top right, bottom right, bottom left; in place of `frame`. */
+  corners?: PicturePoint[];
+  /** In pixels of the picture; with `corners` in pixels of the plot laid flat. */
+  masked?: MaskedStretch[];
+  /** Colour of a trace in the same picture that is the 0 dB line, for levels; in place of `zeroDb`. */
+  zeroTrace?: string;
   startHz?: number;
   stopHz?: number;
   scale?: "linear" | "log";
@@ -83,6 +104,17 @@ export interface Question {
   proposed: string | null;
 }
 
+export type AxisSource = "printed" | "given" | "assumed";
+
+/** What was seen in a picture when it was read, for the page that shows the reading. */
+export interface PictureNotes {
+  width: number;
+  height: number;
+  sources: Record<"startHz" | "stopHz" | "scale" | "top" | "bottom" | "quantity", AxisSource> | null;
+  /** 0 to 1 and in words, stage by stage. */
+  stages: Record<"frame" | "axes" | "trace", { confidence: number; saw: string }>;
+}
+
 export interface Reading {
   format: FileFormat;
   quantity: Quantity;
@@ -98,6 +130,8 @@ export interface Reading {
   shape: string;
   /** Preview for the reading page: headings and the first rows as they stand in the file. */
   preview: { headings: string[]; rows: string[][]; firstLine: number } | null;
+  /** Of pictures only. */
+  picture?: PictureNotes;
 }
 
 /** A located error: what was expected, where. Lines and columns count from 1. */

@@ -4,10 +4,12 @@ import * as jobs from "~/db/jobs.server";
 import * as projects from "~/db/projects.server";
 import * as sweeps from "~/db/sweeps.server";
 import { DEFAULT_SETTINGS } from "~/measurement/sweep";
-import { type Given, MAX_FILE_BYTES, type ReadProblem } from "~/readers/reading";
+import { type Given, MAX_FILE_BYTES, type Reading, type ReadProblem } from "~/readers/reading";
 import { storeAnalysis } from "./analyses.server.ts";
+import { doubted, isBeyondReading, rememberedFor } from "./picture-doubt.ts";
 import type { ReadOutcome } from "./read-and-analyse.server.ts";
 import { readFile } from "./reading.server.ts";
+import type { PictureStage } from "./seen-picture.ts";
 import { deleteObject, putObject, sha256Of } from "./storage.server.ts";
 
 export interface TakeIn {
@@ -19,6 +21,8 @@ export interface TakeIn {
   given?: Given;
   /** Keep a file that can't be read, so that a person can say how to read it; else it is refused whole. */
   keepUnread: boolean;
+  /** Told each stage of a picture that is done. */
+  progress?: (stage: PictureStage) => void;
 }
 
 export type Taken =
@@ -41,7 +45,9 @@ export async function takeIn(input: TakeIn): Promise<Taken> {
   if (twin) return twiceOf(twin);
 
   const { outcome, given } = await readAsBefore(input);
-  if (!outcome.ok && !input.keepUnread) return { kind: "refused", problem: outcome.problem };
+  if (!outcome.ok && (!input.keepUnread || isBeyondReading(outcome.problem))) {
+    return { kind: "refused", problem: outcome.problem };
+  }
 
   const storageKey = `originals/${project.publicId}/${newPublicId()}${newPublicId()}`;
   const undo = await jobs.insert("delete-object", { key: storageKey }, new Date(Date.now() + UNDO_AFTER_MS));
@@ -136,14 +142,23 @@ export async function storeOutcome(
 async function readAsBefore(input: TakeIn): Promise<{ outcome: ReadOutcome; given: Given }> {
   const task = { ...input.file, settings: DEFAULT_SETTINGS };
   const given = input.given ?? {};
-  const outcome = await readFile({ ...task, given });
-  if (input.given || !outcome.reading) return { outcome, given };
-  const before = await sweeps.findGivenByShape(input.project.id, outcome.reading.shape);
-  if (!before || Object.keys(before).length === 0) return { outcome, given };
-  const again = await readFile({ ...task, given: before });
-  if (!again.ok) return { outcome, given };
+  const outcome = await readFile({ ...task, given }, input.progress);
+  const first = { outcome: doubted(outcome), given };
+  const { reading } = outcome;
+  if (input.given || !reading) return first;
+  const last = await sweeps.findGivenByShape(input.project.id, reading.shape);
+  const before = last && reading.format === "screenshot" ? rememberedFor(reading, last) : last;
+  if (!before || Object.keys(before).length === 0) return first;
+  const again = doubted(await readFile({ ...task, given: withFound(before, reading) }));
+  if (!again.ok) return first;
   again.reading.assumed.unshift("Read as the last file of this shape in the project was read.");
   return { outcome: again, given: before };
+}
+
+/** A picture's axes were just read: they are not read a second time. */
+function withFound(before: Given, reading: Reading): Given {
+  if (!before.screenshot) return before;
+  return { screenshot: { ...reading.spec.screenshot, ...before.screenshot } };
 }
 
 function twiceOf(first: { sweep: { publicId: string; title: string } }): Taken {

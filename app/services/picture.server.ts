@@ -4,8 +4,9 @@ import sharp from "sharp";
 import { createWorker, PSM, type Worker } from "tesseract.js";
 import type { SweepFile } from "../readers/read.ts";
 import type { Given } from "../readers/reading.ts";
+import { type CorrectedResult, readCorrected } from "../readers/screenshot/correct.ts";
 import type { Ocr, Picture, TextKind, Word } from "../readers/screenshot/picture.ts";
-import { type PictureProgress, type PictureResult, readPicture } from "../readers/screenshot/read-picture.ts";
+import type { PictureProgress } from "../readers/screenshot/read-picture.ts";
 
 /** Decoding and text recognition for `readers/screenshot` on the server and on the command line. */
 
@@ -75,7 +76,7 @@ export async function readPictureFile(
   file: SweepFile,
   given: Given = {},
   progress?: PictureProgress,
-): Promise<PictureResult> {
+): Promise<CorrectedResult> {
   let pixels: Picture;
   try {
     pixels = await decodePicture(file.bytes);
@@ -89,16 +90,19 @@ export async function readPictureFile(
       axes: null,
       traces: [],
       points: null,
+      line: null,
       stages: { frame: unseen, axes: unseen, trace: unseen },
     };
-    return { ok: false, problem: { code: error.code, message: error.message }, picture };
+    return { ok: false, problem: { code: error.code, message: error.message }, picture, corners: null };
   }
-  const ocr: Ocr = async (region, kind) => {
-    recognition ??= openTextRecognition();
-    return (await recognition).ocr(region, kind);
-  };
-  return readPicture(pixels, ocr, given.screenshot, progress);
+  return readCorrected(pixels, recogniseText, given.screenshot, progress);
 }
+
+/** Recognises the text of a region; the first call starts the recognition. */
+export const recogniseText: Ocr = async (region, kind) => {
+  recognition ??= openTextRecognition();
+  return (await recognition).ocr(region, kind);
+};
 
 /** Ends text recognition; the next picture starts it again. */
 export async function closePictureReader(): Promise<void> {

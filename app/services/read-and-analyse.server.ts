@@ -1,9 +1,14 @@
+import type { MessagePort } from "node:worker_threads";
 import { analyse } from "../measurement/analyse.ts";
 import { decimate } from "../measurement/decimate.ts";
-import type { Analysis, AnalysisSettings, Warning } from "../measurement/sweep.ts";
-import { read } from "../readers/read.ts";
-import type { Given, Reading, ReadProblem } from "../readers/reading.ts";
+import type { Analysis, AnalysisSettings, Sweep, Warning } from "../measurement/sweep.ts";
+import { readAny } from "../readers/read.ts";
+import type { Given, Reading, ReadProblem, ReadResult } from "../readers/reading.ts";
+import { type CorrectedResult, readCorrected } from "../readers/screenshot/correct.ts";
+import { keptPicture, recogniseNothing } from "./kept-pictures.server.ts";
+import { PictureRefused, readPictureFile, recogniseText } from "./picture.server.ts";
 import { encodePoints, pickPoints } from "./points.server.ts";
+import { type PictureStage, type SeenPicture, seenPicture } from "./seen-picture.ts";
 
 /** A file to findings in one go, ready to be stored. Runs in a worker thread or in place. */
 
@@ -12,10 +17,16 @@ export interface ReadTask {
   bytes: Uint8Array;
   given: Given;
   settings: AnalysisSettings;
+  /** Pictures: told each stage that is done. */
+  port?: MessagePort;
+  /** Pictures: the file's SHA-256 where it is being corrected, so that its pixels are kept at hand. */
+  kept?: string;
+  /** Pictures: whether what is printed is read where it is not given. */
+  print?: boolean;
 }
 
 export type ReadOutcome =
-  | { ok: false; problem: ReadProblem; reading: Reading | null }
+  | { ok: false; problem: ReadProblem; reading: Reading | null; picture: SeenPicture | null }
   | {
       ok: true;
       reading: Reading;
@@ -27,17 +38,52 @@ export type ReadOutcome =
       referenceOhm: number;
       complex: boolean;
       analysis: Analysis;
+      picture: SeenPicture | null;
     };
 
-export default function readAndAnalyse(task: ReadTask): ReadOutcome {
-  const result = read({ name: task.name, bytes: task.bytes }, task.given);
-  if (!result.ok) return { ok: false, problem: result.problem, reading: result.reading ?? null };
+export default async function readAndAnalyse(task: ReadTask): Promise<ReadOutcome> {
+  const tell = (stage: PictureStage) => task.port?.postMessage(stage);
+  let seen: SeenPicture | null = null;
+  const picture = async (): Promise<ReadResult> => {
+    const result = await readOnePicture(task, tell);
+    seen = result.corners || result.picture.width > 0 ? seenPicture(result) : null;
+    return result;
+  };
+  const result = await readAny({ name: task.name, bytes: task.bytes }, task.given, { picture });
+  if (!result.ok) {
+    return { ok: false, problem: result.problem, reading: result.reading ?? null, picture: seen };
+  }
+  if (seen) tell("trace");
   const { sweep, reading } = result;
   const analysis = analyse(sweep, task.settings);
-  const n = sweep.frequencyHz.length;
+  if (seen) tell("dips");
   return {
     ok: true,
     reading,
+    ...storedForm(sweep),
+    analysis: { ...analysis, warnings: mergeWarnings(result.warnings, analysis.warnings) },
+    picture: seen,
+  };
+}
+
+/** The reader says which stage it begins; the one before it is then done. */
+async function readOnePicture(task: ReadTask, tell: (stage: PictureStage) => void): Promise<CorrectedResult> {
+  const done = { frame: "decoded", axes: "frame", trace: "axes" } as const;
+  const file = { name: task.name, bytes: task.bytes };
+  if (!task.kept) return readPictureFile(file, task.given, (stage) => tell(done[stage]));
+  try {
+    const pixels = await keptPicture(task.kept, task.bytes);
+    return await readCorrected(pixels, task.print ? recogniseText : recogniseNothing, task.given.screenshot);
+  } catch (error) {
+    // Said by the reader in its own words.
+    if (error instanceof PictureRefused) return readPictureFile(file, task.given);
+    throw error;
+  }
+}
+
+function storedForm(sweep: Sweep) {
+  const n = sweep.frequencyHz.length;
+  return {
     parts: encodePoints(sweep),
     preview: encodePoints(pickPoints(sweep, decimate(sweep, PREVIEW_POINTS)))[0],
     pointCount: n,
@@ -45,7 +91,6 @@ export default function readAndAnalyse(task: ReadTask): ReadOutcome {
     stopHz: sweep.frequencyHz[n - 1],
     referenceOhm: sweep.referenceOhm,
     complex: sweep.gammaRe !== undefined,
-    analysis: { ...analysis, warnings: mergeWarnings(result.warnings, analysis.warnings) },
   };
 }
 

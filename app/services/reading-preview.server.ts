@@ -3,6 +3,7 @@ import { formatFrequency, formatSwr } from "~/measurement/units";
 import type { Given, Reading, ReadProblem } from "~/readers/reading";
 import { decodePoints } from "./points.server.ts";
 import { readFile } from "./reading.server.ts";
+import type { SeenPicture } from "./seen-picture.ts";
 import { type SmallProfile, smallProfile } from "./sweep-summaries.server.ts";
 
 /** What a reading would give, without keeping it: the curve, the dips, what was assumed, or why not. */
@@ -14,14 +15,18 @@ export interface TriedReading {
   profile: SmallProfile | null;
   dips: { frequency: string; swr: string }[];
   warnings: string[];
+  /** Of pictures that could be opened. */
+  picture: SeenPicture | null;
 }
 
 export async function tryReading(
   file: { name: string; bytes: Uint8Array },
   given: Given,
   settings: AnalysisSettings,
+  /** Pictures: their SHA-256, so that their pixels are kept at hand, and whether print is read. */
+  picture: { kept?: string; print?: boolean } = {},
 ): Promise<TriedReading> {
-  const outcome = await readFile({ ...file, given, settings });
+  const outcome = await readFile({ ...file, given, settings, ...picture });
   if (!outcome.ok) {
     return {
       reading: outcome.reading,
@@ -31,6 +36,7 @@ export async function tryReading(
       profile: null,
       dips: [],
       warnings: [],
+      picture: outcome.picture,
     };
   }
   const { analysis } = outcome;
@@ -48,6 +54,7 @@ export async function tryReading(
       swr: formatSwr(dip.minimumSwr, null, null),
     })),
     warnings: analysis.warnings.map((warning) => warning.message),
+    picture: outcome.picture,
   };
 }
 

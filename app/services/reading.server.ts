@@ -1,23 +1,56 @@
 import { existsSync } from "node:fs";
 import { availableParallelism } from "node:os";
 import { fileURLToPath } from "node:url";
+import { MessageChannel } from "node:worker_threads";
 import { Piscina } from "piscina";
+import { detect } from "../readers/detect.ts";
 import readAndAnalyse, { type ReadOutcome, type ReadTask } from "./read-and-analyse.server.ts";
+import type { PictureStage } from "./seen-picture.ts";
 
-/** Reads a file without holding up the pages: small ones in place, the rest in a worker thread. */
-export async function readFile(task: ReadTask): Promise<ReadOutcome> {
+/**
+ * Reads a file without holding up the pages: small ones in place, the rest in a worker thread, pictures one after
+ * another in a thread of their own. `progress` is told each stage of a picture that is done.
+ */
+export async function readFile(
+  task: Omit<ReadTask, "port">,
+  progress?: (stage: PictureStage) => void,
+): Promise<ReadOutcome> {
+  if (detect(task.name, task.bytes).kind === "picture") return readInTurn(task, progress);
   if (task.bytes.length <= IN_PLACE_BYTES) return readAndAnalyse(task);
-  return workers().run(task);
+  return threads("numbers").run(task);
 }
 
 export async function closeReaders(): Promise<void> {
-  await pool?.close();
-  pool = undefined;
+  const open = [...pools.values()];
+  pools.clear();
+  await Promise.all(open.map((pool) => pool.close()));
 }
 
-let pool: Piscina<ReadTask, ReadOutcome> | undefined;
+type Threads = Piscina<ReadTask, ReadOutcome>;
 
-function workers(): Piscina<ReadTask, ReadOutcome> {
+async function readInTurn(task: Omit<ReadTask, "port">, progress?: (stage: PictureStage) => void) {
+  const pool = threads(task.kept ? "corrections" : "pictures");
+  if (!progress) return pool.run(task);
+  const { port1, port2 } = new MessageChannel();
+  port1.on("message", progress);
+  try {
+    return await pool.run({ ...task, port: port2 }, { transferList: [port2] });
+  } finally {
+    port1.close();
+  }
+}
+
+/** Pictures have one thread, and with it at most one text recognition; trying a correction must not wait for them. */
+const KINDS = {
+  numbers: { maxThreads: Math.max(1, Math.min(4, availableParallelism() - 1)), idleTimeout: 30_000 },
+  pictures: { maxThreads: 1, idleTimeout: 30_000 },
+  corrections: { maxThreads: 1, idleTimeout: 3 * 60_000 },
+} as const;
+
+const pools = new Map<keyof typeof KINDS, Threads>();
+
+function threads(kind: keyof typeof KINDS): Threads {
+  let pool = pools.get(kind);
   if (!pool) {
     const built = ["./worker.js", "../worker.js"]
       .map((name) => fileURLToPath(new URL(name, import.meta.url)))
@@ -25,12 +58,12 @@ function workers(): Piscina<ReadTask, ReadOutcome> {
     pool = new Piscina({
       filename: built ?? fileURLToPath(new URL("./reading.worker.ts", import.meta.url)),
       execArgv: built ? [] : ["--import", "tsx"],
-      maxThreads: Math.max(1, Math.min(4, availableParallelism() - 1)),
       minThreads: 0,
-      idleTimeout: 30_000,
       maxQueue: 200,
       resourceLimits: { maxOldGenerationSizeMb: 1024 },
+      ...KINDS[kind],
     });
+    pools.set(kind, pool);
   }
   return pool;
 }

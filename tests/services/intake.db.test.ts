@@ -99,7 +99,7 @@ describe("takeIn", () => {
     const found = await sweeps.findByPublicId(result.kind === "unread" ? result.sweepPublicId : "");
     expect(found?.sweep.problem?.message).toBeTruthy();
     expect(found?.sweep.pointCount).toBeNull();
-    expect((await getObject(found?.file.storageKey ?? "")).length).toBe(27);
+    expect((await getObject(found?.file.storageKey ?? "")).length).toBe(28);
   });
 
   it("refuses it whole when asked to, and refuses an empty file always", async () => {

@@ -36,6 +36,18 @@ const text = z
 const screenshot = z
   .strictObject({
     frame: z.strictObject({ left: z.number(), top: z.number(), right: z.number(), bottom: z.number() }),
+    corners: z.array(z.strictObject({ x: z.number(), y: z.number() })).length(4),
+    masked: z
+      .array(
+        z.strictObject({
+          fromX: z.number(),
+          toX: z.number(),
+          top: z.number().optional(),
+          bottom: z.number().optional(),
+        }),
+      )
+      .max(100),
+    zeroTrace: z.string().regex(/^#[0-9a-f]{6}$/i),
     startHz: z.number(),
     stopHz: z.number(),
     scale: z.enum(["linear", "log"]),
