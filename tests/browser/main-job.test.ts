@@ -131,11 +131,11 @@ test("a second person is added, answers the note without a reload, and settles t
   await second.page.locator("summary", { hasText: /^Explain it/ }).click();
   await second.page.getByLabel("The explanation in a few words").fill("the long wire's own half wave");
   await second.page.getByRole("button", { name: "Settle it" }).click();
-  await second.page.getByText("the long wire's own half wave").first().waitFor();
+  await second.page.locator(".prose-note, p", { hasText: "the long wire's own half wave" }).first().waitFor();
 
   await owner.page.goto(dipPath);
   await owner.page.getByText("twice the length of the ditch").first().waitFor();
-  expect(await owner.page.getByText("settled").first().isVisible()).toBe(true);
+  expect(await owner.page.locator(".tag", { hasText: "settled" }).first().isVisible()).toBe(true);
   await owner.context.close();
   expect(second.complaints).toEqual([]);
   await second.context.close();
