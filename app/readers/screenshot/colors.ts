@@ -17,9 +17,9 @@ const BIN = 0.04;
 const ONE_COLOR = 0.1;
 /** Cosine of the angle, seen from the ground, within which a paler colour is the same one thinly drawn. */
 const SAME_DIRECTION = 0.985;
-const MOST_CANDIDATES = 5;
-/** A colour in fewer columns is text or a marker. */
-const LEAST_SHARE = 0.05;
+const MOST_CANDIDATES = 6;
+/** A colour in fewer columns is text or a marker; a single narrow dip below a clipped trace has about 0.02. */
+const LEAST_SHARE = 0.012;
 
 interface Bin {
   count: number;

@@ -29,7 +29,10 @@ export function coverageOf(picture: Picture, ground: Ground, color: Rgb): Covera
   const height = ground.bottom - ground.top + 1;
   const share = new Float32Array(width * height);
   const base = difference(ground.color, color);
-  const rowBase = ground.rows.map((g) => usable(g, color, base));
+  const outer = ground.outline && difference(ground.outline, color);
+  const rowBase = ground.rows.map(
+    (g, y) => usable(g, color, base) ?? (g && outer && ground.outerRows.includes(y) ? outer : undefined),
+  );
   const columnBase = ground.columns.map((g) => usable(g, color, base));
   const { data } = picture;
   for (let y = 0; y < height; y++) {

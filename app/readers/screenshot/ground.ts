@@ -14,6 +14,8 @@ export interface Ground {
   right: number;
   top: number;
   bottom: number;
+  /** Rows of the top and the bottom line: a trace at the limit lies on them. */
+  outerRows: number[];
   /** Colour behind a whole row or column where a grid line runs; undefined elsewhere. */
   rows: (Rgb | undefined)[];
   columns: (Rgb | undefined)[];
@@ -25,6 +27,8 @@ const OVERHANG = 2;
 const SEEN = 0.02;
 /** Difference within which lines have one colour. */
 const LIKE = 0.08;
+/** Pixels between two lines of a grid at least. */
+const APART = 8;
 
 /** Finds the plot's ground colour and the colours of its grid lines, row by row and column by column. */
 export function findGround(picture: Picture, found: FoundFrame): Ground {
@@ -42,12 +46,13 @@ export function findGround(picture: Picture, found: FoundFrame): Ground {
     right,
     top,
     bottom,
+    outerRows: [Math.round(frame.top), Math.round(frame.bottom)],
     rows: [],
     columns: [],
   };
   const lineRows = [...found.horizontal.map((l) => l.position), frame.top, frame.bottom];
   const lineColumns = [...found.vertical.map((l) => l.position), frame.left, frame.right];
-  const inner: Rgb[] = [];
+  const inner: { color: Rgb; position: number }[] = [];
   for (const position of lineRows) {
     const seen = around(position, top, bottom).map((y) => ({
       place: y,
@@ -56,12 +61,13 @@ export function findGround(picture: Picture, found: FoundFrame): Ground {
     for (const { place, color: typical } of seen)
       if (lookApart(typical, color) >= SEEN) ground.rows[place] = typical;
     if (position > frame.top + 3 && position < frame.bottom - 3)
-      inner.push(
-        farthest(
+      inner.push({
+        color: farthest(
           seen.map((s) => s.color),
           color,
         ),
-      );
+        position,
+      });
   }
   for (const position of lineColumns) {
     const seen = around(position, left, right).map((x) => ({
@@ -71,24 +77,22 @@ export function findGround(picture: Picture, found: FoundFrame): Ground {
     for (const { place, color: typical } of seen)
       if (lookApart(typical, color) >= SEEN) ground.columns[place] = typical;
     if (position > frame.left + 3 && position < frame.right - 3)
-      inner.push(
-        farthest(
+      inner.push({
+        color: farthest(
           seen.map((s) => s.color),
           color,
         ),
-      );
+        position,
+      });
   }
   ground.grid = shared(inner, color);
-  ground.outline = shared(
-    [frame.left, frame.right].map((x) =>
-      farthest(
-        around(x, 0, picture.width - 1).map((at) => median(picture, (i) => [at, top + i], bottom - top + 1)),
-        color,
-      ),
-    ),
-    color,
-    2,
-  );
+  const sides = [frame.left, frame.right].map((x) => {
+    const near = around(x, 0, picture.width - 1).map((at) =>
+      median(picture, (i) => [at, top + i], bottom - top + 1),
+    );
+    return farthest(near, color);
+  });
+  if (lookApart(sides[0], sides[1]) < LIKE && lookApart(sides[0], color) >= SEEN) ground.outline = sides[0];
   return ground;
 }
 
@@ -142,14 +146,15 @@ function farthest(colors: Rgb[], from: Rgb): Rgb {
   return colors.reduce((a, b) => (lookApart(b, from) > lookApart(a, from) ? b : a), from);
 }
 
-/** The colour that at least `least` lines have; a single line may be a flat trace. */
-function shared(colors: Rgb[], ground: Rgb, least = 3): Rgb | null {
+/** The colour that at least three lines apart from each other have; lines close together may be one flat trace. */
+function shared(lines: { color: Rgb; position: number }[], ground: Rgb): Rgb | null {
   let best: Rgb | null = null;
-  let most = least - 1;
-  for (const color of colors) {
-    const like = colors.filter((other) => lookApart(color, other) < LIKE).length;
-    if (like > most && lookApart(color, ground) >= SEEN) {
-      most = like;
+  let most = 2;
+  for (const { color } of lines) {
+    const like = lines.filter((l) => lookApart(color, l.color) < LIKE).map((l) => l.position);
+    const apart = like.filter((p, i) => like.slice(0, i).every((q) => Math.abs(p - q) > APART)).length;
+    if (apart > most && lookApart(color, ground) >= SEEN) {
+      most = apart;
       best = color;
     }
   }

@@ -18,7 +18,7 @@ export interface Trace {
   explained: number;
   /** Mean coverage on the crest of the stroke, 0 to 1: low where the colour is not quite the stroke's own. */
   fullness: number;
-  /** Rows between the 2nd and 98th percentile of the trace. */
+  /** Rows between the lowest and highest half per cent of the columns. */
   extent: number;
 }
 
@@ -70,7 +70,7 @@ export function readTrace(coverage: Coverage, top: number, bottom: number): Trac
   const fullness = path.reduce((sum, run) => sum + (run?.peak ?? 0), 0) / seen;
   const accounted = bridge(row, uncertainty, path, top, bottom);
   const sorted = [...row].filter((v) => !Number.isNaN(v)).sort((a, b) => a - b);
-  const extent = sorted[Math.floor(sorted.length * 0.98)] - sorted[Math.floor(sorted.length * 0.02)];
+  const extent = sorted[Math.floor(sorted.length * 0.995)] - sorted[Math.floor(sorted.length * 0.005)];
   return {
     left: coverage.left,
     row,
