@@ -42,7 +42,9 @@ function expectOutcome(result: ReadResult): void {
   expect(result.reading.confidence).toBeLessThanOrEqual(1);
 }
 
-const files = readdirSync(FOLDER).filter((name) => !name.endsWith(".json"));
+const files = readdirSync(FOLDER)
+  .filter((name) => name.endsWith(".json"))
+  .map((name) => name.slice(0, -5));
 const contents = new Map(files.map((name) => [name, new Uint8Array(readFileSync(FOLDER + name))]));
 
 describe("any bytes", () => {

@@ -38,10 +38,14 @@ const TRANSMISSION_COST = 60;
  * Lists the ways to read the columns, best first. `frequencies`: the columns that hold frequencies;
  * each value belongs to the nearest of them on its left.
  */
-export function findCandidates(columns: Column[], frequencies: number[], hints: Hints): Candidate[] {
+export function findCandidates(
+  columns: Column[],
+  frequencies: number[],
+  hints: Omit<Hints, "phase">,
+): Candidate[] {
   const held = columns
     .filter((c) => !frequencies.includes(c.index) && !(c.heading.role === "unknown" && isCounter(c)))
-    .map((c) => kindOf(c, hints));
+    .map((c) => kindOf(c, { ...hints, phase: columns.some((other) => other.heading.role === "angle") }));
   const pairs = [...headedPairs(held), ...unheadedPairs(held)];
   const singles: Pair[] = [];
   for (const h of held)

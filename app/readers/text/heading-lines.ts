@@ -90,12 +90,14 @@ function headingCells(text: string, dialect: Dialect): string[] | null {
     if (cells.length !== dialect.columns) continue;
     if (cells.some((cell) => parseCell(cell, dialect).kind === "number")) continue;
     if (cells.every((cell) => cell.trim() === "")) continue;
-    if (sure || cells.some((cell) => readHeading(cell).role === "frequency")) return cells;
+    const roles = sure ? [] : cells.map((cell) => readHeading(cell).role);
+    const telling = roles.includes("frequency") && roles.some((r) => r !== "frequency" && r !== "unknown");
+    if (sure || telling) return cells;
   }
   return null;
 }
 
-/** Ways to part a line into headings; those that are not the table's own must name a frequency. */
+/** Ways to part a line into headings; those that are not the table's own must name a frequency and something else. */
 function* splits(text: string, dialect: Dialect): Generator<{ cells: string[]; sure: boolean }> {
   const line = text.trim();
   yield { cells: splitCells(text, dialect.delimiter), sure: true };

@@ -36,6 +36,10 @@ export interface Heading {
 const WORDS: [Role, RegExp][] = [
   [
     "other",
+    /\b(?:reflected power|reflektierte leistung|rucklaufende leistung|puissance reflechie|potencia reflejada|potenza riflessa|gereflecteerd vermogen)\b/,
+  ],
+  [
+    "other",
     /\b(?:time|date|datum|zeit|uhrzeit|heure|hora|fecha|ora|tijd|timestamp|index|idx|punkt|point|points|no|nr|num|nummer)\b/,
   ],
   [

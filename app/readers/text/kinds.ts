@@ -26,6 +26,8 @@ export interface Held {
 export interface Hints {
   /** The file speaks of dBm or the like above its table. */
   levels: boolean;
+  /** A column of angles stands beside: the instrument measures reflection, not levels. */
+  phase: boolean;
   /** Somebody gave the level of the 0 dB line. */
   zeroDbGiven: boolean;
 }
@@ -105,7 +107,7 @@ function decibels(column: Column, hints: Hints): Held {
   const reflection = column.heading.role === "reflection";
   if (reflection && column.minimum >= 0 && column.maximum <= GAMMA_LIMIT)
     return say("magnitude", `${name(column)} lies between 0 and 1: taken as the magnitude of Γ.`, 0.85);
-  if (!reflection && (hints.levels || hints.zeroDbGiven))
+  if (!reflection && !hints.phase && (hints.levels || hints.zeroDbGiven))
     return say("level", `${name(column)} is taken as a level that needs a 0 dB line.`, 0.9);
   if (positive(column) && column.minimum > -1)
     return say("return-loss", `${name(column)} is positive: taken as return loss.`, 0.7);
@@ -113,7 +115,11 @@ function decibels(column: Column, hints: Hints): Held {
   const worded = /level|pegel|niveau|nivel|livello|trace|spur|hold|power|leistung|trc/i.test(
     column.heading.text,
   );
-  if (reflection || (column.maximum < 1 && crest > (worded ? LEVEL_CREST_DB : REFLECTION_CREST_DB)))
+  if (
+    reflection ||
+    hints.phase ||
+    (column.maximum < 1 && crest > (worded ? LEVEL_CREST_DB : REFLECTION_CREST_DB))
+  )
     return say(
       "s11-db",
       `${name(column)} is taken as S11 in dB: its crest lies near 0 dB.`,
@@ -144,13 +150,19 @@ function fromValues(column: Column, hints: Hints): Held {
       `${name(column)} is positive and falls below 1: taken as return loss in dB.`,
       0.6,
     );
+  const [first, last] = [column.values[0], column.values[column.values.length - 1]];
+  const ends = Math.min(first, last) > column.median ? 1 : Math.max(first, last) < column.median ? -1 : 0;
   const swr = hollow(column, (v) => (v - 1) / (v + 1));
   const loss = hollow(column, (v) => 10 ** (-v / 20));
-  if (loss > swr && loss > 0)
-    return say("return-loss", `${name(column)} has narrow peaks: taken as return loss in dB, not SWR.`, 0.5);
+  if (ends < 0 || (ends === 0 && loss > swr && loss > 0))
+    return say(
+      "return-loss",
+      `${name(column)} peaks between its ends: taken as return loss in dB, not SWR.`,
+      0.5,
+    );
   return say(
     "swr",
-    `${name(column)} is never below 1 and has narrow hollows: taken as SWR, not return loss.`,
+    `${name(column)} is never below 1 and has hollows between its ends: taken as SWR, not return loss.`,
     0.5,
   );
 }

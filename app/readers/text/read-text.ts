@@ -2,7 +2,7 @@ import type { Quantity, Warning } from "../../measurement/sweep.ts";
 import { assemble } from "../assemble.ts";
 import { plainText } from "../decode.ts";
 import { indexLines, type Lines } from "../lines.ts";
-import { fail } from "../problem.ts";
+import { fail, ReadFailure } from "../problem.ts";
 import type { Reading, ReadResult, TextSpec } from "../reading.ts";
 import { UNIT_HZ } from "../units.ts";
 import { counted } from "../wording.ts";
@@ -28,7 +28,9 @@ export function readText(bytes: Uint8Array, given: Partial<TextSpec> = {}, wante
   const plain = plainText(bytes, given.encoding);
   const lines = indexLines(plain);
   const table = findTable(lines, given);
-  const chosen = choose(table.candidates, table.columns, table.frequencies[0].index, given, wanted);
+  const chosen = located(table.block.firstLine, () =>
+    choose(table.candidates, table.columns, table.frequencies[0].index, given, wanted),
+  );
   const column = table.columns[chosen.frequencyColumn];
   const unit = given.frequencyUnit
     ? { unit: given.frequencyUnit, assumed: null, confidence: 1 }
@@ -79,6 +81,16 @@ export function readText(bytes: Uint8Array, given: Partial<TextSpec> = {}, wante
     preview: preview(lines, table),
   };
   return finish(reading, spec, table, stretch.rows);
+}
+
+/** Gives a problem that concerns the whole table the line at which the table begins. */
+function located<T>(line: number, work: () => T): T {
+  try {
+    return work();
+  } catch (error) {
+    if (error instanceof ReadFailure) throw new ReadFailure({ line, ...error.problem });
+    throw error;
+  }
 }
 
 function finish(reading: Reading, spec: TextSpec, table: Table, rows: Rows): ReadResult {

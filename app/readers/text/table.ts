@@ -51,6 +51,7 @@ export function findTable(lines: Lines, given: Partial<TextSpec>): Table {
   const rows = sample(lines, block.firstLine, block.lastLine, SAMPLE_ROWS).filter(
     (l) => lineKind(l, dialect) === "row",
   );
+  if (commaTwice(rows, dialect)) ambiguousComma(block);
   const columns = describeColumns(rows, dialect, headings);
   const asked = given.frequencyColumn;
   if (asked !== undefined && columns[asked] === undefined)
@@ -121,6 +122,24 @@ function notASweep(lines: Lines): never {
     "not-a-sweep",
     "No rows of numbers were found: expected one line a point, with a frequency and at least one value parted by comma, semicolon, tab or blanks.",
     line,
+    1,
+  );
+}
+
+/** "140,20,-5,123": whole numbers in pairs, the second of them with leading zeros, are decimal commas between commas. */
+function commaTwice(rows: string[], { delimiter, decimal, columns }: Dialect): boolean {
+  if (delimiter !== "," || decimal !== "." || columns < 4 || columns % 2 === 1) return false;
+  const cells = rows.map((row) => row.split(",").map((cell) => cell.trim()));
+  if (!cells.every((row) => row.every((cell, i) => (i % 2 === 0 ? /^-?\d+$/ : /^\d+$/).test(cell))))
+    return false;
+  return cells.some((row) => row.some((cell, i) => i % 2 === 1 && /^0\d/.test(cell)));
+}
+
+function ambiguousComma(block: Segment): never {
+  return fail(
+    "ambiguous-comma",
+    `Line ${block.firstLine}: the comma parts the cells and marks the decimals at once; expected another delimiter, or quotes. Export the file with semicolons or tabs.`,
+    block.firstLine,
     1,
   );
 }
