@@ -15,7 +15,7 @@ export function formatFrequency(hz: number | null, uncertaintyHz: number | null 
 /** Hz → "260 kHz", "1.22 MHz": as a frequency, with three digits where the uncertainty is not known. */
 export function formatWidth(hz: number | null, uncertaintyHz: number | null = null): string {
   if (hz === null || Number.isNaN(hz)) return UNKNOWN;
-  return withUnit(hz, uncertaintyHz, unitOf(hz), 3);
+  return withUnit(hz, uncertaintyHz, unitOf(hz), 3, "width");
 }
 
 /** SWR with its limits: "1.21 (1.12–1.31)"; two decimals to 10, one to 100, then none. An unknown limit stays away. */
@@ -66,13 +66,20 @@ function unitOf(hz: number): Unit {
   return UNITS.find(({ factor }) => size >= factor) ?? UNITS[UNITS.length - 1];
 }
 
-function withUnit(hz: number, uncertaintyHz: number | null, unit: Unit, digits = 6): string {
+function withUnit(
+  hz: number,
+  uncertaintyHz: number | null,
+  unit: Unit,
+  digits = 6,
+  of: keyof typeof FINEST = "frequency",
+): string {
   if (!Number.isFinite(hz)) return `${plain(hz, 0)}${THIN}${unit.name}`;
   const value = hz / unit.factor;
   if (uncertaintyHz === null || !Number.isFinite(uncertaintyHz) || uncertaintyHz <= 0) {
     return `${significant(value, digits)}${THIN}${unit.name}`;
   }
-  const decimals = Math.min(MOST_DECIMALS, decimalsFor(uncertaintyHz / unit.factor));
+  const supportedHz = Math.max(uncertaintyHz, Math.abs(hz) * FINEST[of]);
+  const decimals = Math.min(MOST_DECIMALS, decimalsFor(supportedHz / unit.factor));
   return `${plain(value, decimals)}${THIN}${unit.name}`;
 }
 
@@ -108,6 +115,11 @@ const UNKNOWN = "unknown";
 const THIN = "\u2009";
 /** A hertz in a gigahertz. */
 const MOST_DECIMALS = 9;
+/**
+ * Parts of the value below which digits say nothing: a sweep generator's clock is known to about a part in a million
+ * at best (common practice, no source), and a width is a difference of two such edges on a curve that weather moves.
+ */
+const FINEST = { frequency: 1e-6, width: 1e-3 };
 const FACTORS: Record<string, number> = { "": 1, k: 1e3, m: 1e6, g: 1e9 };
 /** Large first; the switch to megahertz lies at 1 MHz as on most instruments. */
 const UNITS: Unit[] = [

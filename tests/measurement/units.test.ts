@@ -44,7 +44,7 @@ describe("frequencies", () => {
     expect(formatWidth(260_000, 4000)).toBe("260\u2009kHz");
     expect(formatWidth(260_400)).toBe("260\u2009kHz");
     expect(formatWidth(1_223_000)).toBe("1.22\u2009MHz");
-    expect(formatWidth(1_223_000, 500)).toBe("1.2230\u2009MHz");
+    expect(formatWidth(1_223_000, 500)).toBe("1.223\u2009MHz");
   });
 
   test.each([
@@ -99,4 +99,11 @@ describe("SWR, dB, ranges", () => {
     expect(formatPercent(0.0317)).toBe("3.2\u2009%");
     expect(formatPercent(null)).toBe("unknown");
   });
+});
+
+test("no digits below a part in a million of a frequency, nor below a thousandth of a width", () => {
+  expect(formatFrequency(14_309_999.5, 0.4)).toBe("14.31000\u2009MHz");
+  expect(formatFrequency(433_900_000.1, 3)).toBe("433.9000\u2009MHz");
+  expect(formatFrequency(7_089_371, 2_600)).toBe("7.089\u2009MHz");
+  expect(formatWidth(870_160, 12)).toBe("870.2\u2009kHz");
 });
