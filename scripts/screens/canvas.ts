@@ -56,14 +56,14 @@ function paintInPage(scene: Scene): string {
         pen.clip();
         pen.beginPath();
       }
-      points.forEach(([x, y], i) => (i === 0 ? pen.moveTo(x, y) : pen.lineTo(x, y)));
+      for (const [x, y] of points) pen.lineTo(x, y);
       pen.strokeStyle = mark.color;
       pen.lineWidth = mark.width;
       pen.lineJoin = "round";
       pen.setLineDash(mark.dash ?? []);
       pen.stroke();
     } else if (mark.kind === "shape") {
-      mark.points.forEach(([x, y], i) => (i === 0 ? pen.moveTo(x, y) : pen.lineTo(x, y)));
+      for (const [x, y] of mark.points) pen.lineTo(x, y);
       pen.fillStyle = mark.fill;
       pen.fill();
     } else {

@@ -5,6 +5,10 @@ import type { Picture } from "./picture.ts";
 /** Difference below which a line's colour may be the trace's own. */
 const OWN_COLOR = 0.045;
 
+/** Coverage that a grid line's colour may seem to have of the trace's, and the colour error of its dots, of 255. */
+const GRID_AT_MOST = 0.6;
+const GRID_TOLERANCE = 14;
+
 /** How much of each pixel inside the plot a colour covers, 0 to 1, row by row. */
 export interface Coverage {
   width: number;
@@ -35,6 +39,7 @@ export function coverageOf(picture: Picture, ground: Ground, color: Rgb): Covera
   );
   const columnBase = ground.columns.map((g) => usable(g, color, base));
   const { data } = picture;
+  const grid = ground.grid && usable(ground.grid, color, base) ? difference(ground.color, ground.grid) : null;
   for (let y = 0; y < height; y++) {
     const rowGround = rowBase[y + ground.top];
     let j = 4 * ((y + ground.top) * picture.width + ground.left);
@@ -47,10 +52,24 @@ export function coverageOf(picture: Picture, ground: Ground, color: Rgb): Covera
       if (along < 0.12) continue;
       const off =
         (red - along * d.to[0]) ** 2 + (green - along * d.to[1]) ** 2 + (blue - along * d.to[2]) ** 2;
-      share[y * width + x] = Math.min(1, along) * Math.exp(-off / d.tolerance);
+      const covered = Math.min(1, along) * Math.exp(-off / d.tolerance);
+      if (covered < GRID_AT_MOST && grid && isGrid(data, j, grid)) continue;
+      share[y * width + x] = covered;
     }
   }
   return { width, height, left: ground.left, top: ground.top, share };
+}
+
+/** A dot or dash of the grid, in full or smoothed: on the line from the ground to the grid's colour. */
+function isGrid(data: Uint8Array | Uint8ClampedArray, j: number, grid: Difference): boolean {
+  const red = data[j] - grid.from[0];
+  const green = data[j + 1] - grid.from[1];
+  const blue = data[j + 2] - grid.from[2];
+  const along = (red * grid.to[0] + green * grid.to[1] + blue * grid.to[2]) / grid.square;
+  if (along > 1.15) return false;
+  const off =
+    (red - along * grid.to[0]) ** 2 + (green - along * grid.to[1]) ** 2 + (blue - along * grid.to[2]) ** 2;
+  return off < GRID_TOLERANCE ** 2;
 }
 
 interface Difference {

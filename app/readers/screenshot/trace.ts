@@ -18,6 +18,8 @@ export interface Trace {
   explained: number;
   /** Mean coverage on the crest of the stroke, 0 to 1: low where the colour is not quite the stroke's own. */
   fullness: number;
+  /** Share of the columns in which the trace does not touch the one before: text and marks have many. */
+  jumps: number;
   /** Rows between the lowest and highest half per cent of the columns. */
   extent: number;
 }
@@ -27,6 +29,8 @@ const STEEP = 1.7;
 /** Longest stretch over which a hidden trace is drawn on. */
 const LONGEST_BRIDGE = 24;
 const EDGE_REACH = 5;
+/** Pixels between neighbouring runs that are no longer one stroke. */
+const JUMP = 2;
 
 /**
  * Follows a colour from column to column.
@@ -58,6 +62,7 @@ export function readTrace(coverage: Coverage, top: number, bottom: number): Trac
       share: 0,
       explained: 0,
       fullness: 0,
+      jumps: 0,
       extent: 0,
     };
   const thickness = thicknessOf(path);
@@ -79,6 +84,7 @@ export function readTrace(coverage: Coverage, top: number, bottom: number): Trac
     share: seen / width,
     explained: accounted / width,
     fullness,
+    jumps: jumpsOf(path) / seen,
     extent,
   };
 }
@@ -90,6 +96,15 @@ function touches(run: Run, blobs: Uint8Array, coverage: Coverage): boolean {
     if (blobs[(y - top) * width + run.column - left]) return true;
   }
   return false;
+}
+
+function jumpsOf(path: (Run | undefined)[]): number {
+  let jumps = 0;
+  path.forEach((run, x) => {
+    const before = path[x - 1];
+    if (run && before && Math.max(run.upper - before.lower, before.upper - run.lower) > JUMP) jumps++;
+  });
+  return jumps;
 }
 
 /** Ink across the stroke: a steep stroke leaves more in a column by the slope. */

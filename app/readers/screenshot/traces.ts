@@ -22,6 +22,8 @@ export interface FoundTraces extends Stage {
 
 /** Difference from the ground from which a colour is as visible as a trace is meant to be. */
 const PLAIN_TO_SEE = 0.3;
+/** A tenth of the columns with jumps halves a colour's score. */
+const JUMP_WEIGHT = 5;
 /** Weight of a colour that grid lines leave beside them. */
 const GRID_RESIDUE = 0.3;
 /** Share of the plot's height over which a trace must range to count fully as a sweep. */
@@ -48,6 +50,7 @@ export function findTraces(picture: Picture, found: FoundFrame, given: Rgb | nul
           Math.min(1, 0.3 + trace.share * 2) *
           plainness(color, ground.color) *
           (0.25 + 0.75 * trace.fullness) *
+          Math.max(0.2, 1 - JUMP_WEIGHT * trace.jumps) *
           (isPaleGrid(color, ground) ? GRID_RESIDUE : 1);
     return { color, hex: hexOf(color), trace, score };
   };
@@ -81,6 +84,6 @@ function isPaleGrid(color: Rgb, ground: Ground): boolean {
     const square = full.reduce((sum, v) => sum + v * v, 0);
     const along = color.reduce((sum, v, i) => sum + (v - ground.color[i]) * full[i], 0) / square;
     const mix = ground.color.map((v, i) => v + along * full[i]) as Rgb;
-    return along > 0 && along < 1.05 && lookApart(mix, color) < 0.03;
+    return along > 0 && along < 1.05 && lookApart(mix, color) < 0.05;
   });
 }
