@@ -85,7 +85,7 @@ async function installPackages(packages) {
     );
   if (sudo.length > 0 && spawnSync("sudo", ["-n", "true"], { stdio: "ignore" }).status !== 0) {
     throw new PlainFailure(
-      `Missing: ${packages.join(", ")}. Installing needs root, and sudo asks for a password. ${advice}`,
+      `Missing: ${packages.join(", ")}. Installing needs root, or sudo without a password, and neither is here. ${advice}`,
     );
   }
   const asRoot = [
