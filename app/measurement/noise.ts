@@ -1,8 +1,8 @@
 /**
  * The noise of a sweep: standard deviation σ of its return loss, dB.
  *
- * Reads abs Γ (linear, any length, NaN for gaps); differences never reach across a gap. Fewer than five finite points
- * in a row anywhere give 0: no noise can be told. Sweeps over SAMPLE points are sampled in blocks spread over the whole.
+ * Reads abs Γ (linear, any length, NaN for gaps); differences never reach across a gap. Too few of them give 0: no noise
+ * can be told. Sweeps over SAMPLE points are sampled in blocks spread over the whole.
  *
  * σ is the median absolute deviation of second differences over √6 and Φ⁻¹(3/4), as for signal-to-noise of spectra
  * (F. Stoehr et al., "DER_SNR", ADASS XVII, ASP Conf. Ser. 394, 2008; from memory, not seen). Second differences also hold the curvature of
@@ -13,13 +13,13 @@
 export function noiseDb(magnitude: Float64Array): number {
   const values = sample(magnitude);
   for (let i = 0; i < values.length; i++) values[i] = DB_PER_NEPER * Math.log(values[i]);
-  return Math.max(scatterOf(values), roundingOf(values));
+  return Math.max(scatterOf(values), roundingOf(values, COARSEST_DB));
 }
 
 /** The same in abs Γ itself. */
 export function noiseGamma(magnitude: Float64Array): number {
   const values = sample(magnitude);
-  return Math.max(scatterOf(values), roundingOf(values));
+  return Math.max(scatterOf(values), roundingOf(values, COARSEST_GAMMA));
 }
 
 /** σ in both: of decibels and of abs Γ. */
@@ -55,7 +55,7 @@ function scatterOf(values: Float64Array): number {
   let sigma = Number.POSITIVE_INFINITY;
   for (const { weights, factor } of DIFFERENCES) {
     const count = differences(values, weights, sums);
-    if (count < 3) continue;
+    if (count < FEWEST) continue;
     const centre = medianInPlace(sums, count);
     for (let i = 0; i < count; i++) sums[i] = Math.abs(sums[i] - centre);
     sigma = Math.min(sigma, medianInPlace(sums, count) / (NORMAL_QUARTILE * factor));
@@ -64,7 +64,7 @@ function scatterOf(values: Float64Array): number {
 }
 
 /** σ of the rounding step; 0 where neighbours are seldom equal. */
-function roundingOf(values: Float64Array): number {
+function roundingOf(values: Float64Array, coarsest: number): number {
   let count = 0;
   let equal = 0;
   let step = Number.POSITIVE_INFINITY;
@@ -75,7 +75,7 @@ function roundingOf(values: Float64Array): number {
     if (size < SAME) equal++;
     else if (size < step) step = size;
   }
-  return equal >= EQUAL_SHARE * count && step < COARSEST_STEP ? step / Math.sqrt(12) : 0;
+  return equal >= EQUAL_SHARE * count && step < coarsest ? step / Math.sqrt(12) : 0;
 }
 
 /** Weighted sums of neighbours, written to `out`; those that touch a gap are left out. Returns how many. */
@@ -126,6 +126,8 @@ const NORMAL_QUARTILE = 0.674489750196082;
 const SAMPLE = 8192;
 const BLOCK = 256;
 const NEAR = 32;
+/** With fewer differences the dip itself is the median. */
+const FEWEST = 10;
 const DIFFERENCES = [
   { weights: [1, -2, 1], factor: Math.sqrt(6) },
   { weights: [1, -4, 6, -4, 1], factor: Math.sqrt(70) },
@@ -136,4 +138,5 @@ const SAME = 1e-9;
 /** 10 % of equal neighbours was never seen in unrounded data; 0.1 dB steps on a flat trace give over half. */
 const EQUAL_SHARE = 0.1;
 /** Instruments round to 0.001 to 0.5 dB, or to 0.001 to 0.02 of abs Γ; larger steps belong to the trace itself. */
-const COARSEST_STEP = 1;
+const COARSEST_DB = 1;
+const COARSEST_GAMMA = 0.03;

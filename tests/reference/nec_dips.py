@@ -11,6 +11,7 @@ import csv, glob, json, math, os, re, subprocess, sys, tempfile
 import numpy as np
 from scipy.interpolate import CubicSpline
 from scipy.optimize import brentq, minimize_scalar
+from scipy.signal import find_peaks
 
 HERE = os.path.join(os.path.dirname(os.path.abspath(__file__)), "..", "fixtures", "measurement", "nec")
 Z0 = 50.0
@@ -38,8 +39,7 @@ def dips(rows):
         z = complex(resistance(at), reactance(at)); return abs((z - Z0) / (z + Z0))
     swr = lambda at: (1 + gamma(at)) / (1 - gamma(at))
     g = np.array([gamma(at) for at in f]); found = []
-    for i in range(1, len(f) - 1):
-        if not (g[i] < g[i - 1] and g[i] <= g[i + 1]): continue
+    for i in find_peaks(-20 * np.log10(g), prominence=3)[0]:
         best = minimize_scalar(gamma, bounds=(f[i - 1], f[i + 1]), method="bounded", options={"xatol": 1e-9})
         dip = {"mhz": best.x, "swr": swr(best.x), "low": None, "high": None}
         if dip["swr"] < 2:

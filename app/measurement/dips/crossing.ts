@@ -26,6 +26,8 @@ export function crossingHz(sweep: Sweep, i: number, level: number, smooth: boole
     for (let k = start; k <= last; k++) sum += magnitude[k] ** 2 * weight(frequencyHz, k, start, last, hz);
     return sum;
   };
+  if (Math.abs(magnitude[i] - level) < SAME * level) return frequencyHz[i];
+  if (Math.abs(magnitude[i + 1] - level) < SAME * level) return frequencyHz[i + 1];
   let low = frequencyHz[i];
   let high = frequencyHz[i + 1];
   const rising = magnitude[i + 1] > magnitude[i];
@@ -51,3 +53,5 @@ function weight(x: Float64Array, k: number, start: number, last: number, at: num
 
 /** Halvings until a step of any size is below the last bit. */
 const BISECTIONS = 52;
+/** A sample on the level is the crossing. */
+const SAME = 1e-12;

@@ -1,0 +1,161 @@
+import fc from "fast-check";
+import { describe, expect, test } from "vitest";
+import { fitDip } from "../../../app/measurement/dips/fit.ts";
+import { leastSquares } from "../../../app/measurement/dips/least-squares.ts";
+import { edgeAt, lowestPower, ratioOf, resonatorPower } from "../../../app/measurement/dips/resonator.ts";
+import { fitWindow } from "../../../app/measurement/dips/window.ts";
+import scipy from "../../fixtures/measurement/scipy.json";
+import { normals, resonatorSweep, truthOf } from "../resonators.ts";
+
+const NO_NOISE = { db: 0, gamma: 0 };
+
+function fitOf(sweep: ReturnType<typeof resonatorSweep>, noise = NO_NOISE) {
+  const { frequencyHz, magnitude } = sweep;
+  const index = magnitude.indexOf(Math.min(...magnitude));
+  const prominence =
+    20 * Math.log10(Math.min(magnitude[0], magnitude[magnitude.length - 1]) / magnitude[index]);
+  const window = fitWindow(magnitude, index, prominence, 0, magnitude.length - 1);
+  return fitDip(frequencyHz, magnitude, index, window, noise, false);
+}
+
+/** Truth: scipy.optimize.curve_fit with absolute sigma (tests/reference/scipy_dips.py). */
+describe("Levenberg–Marquardt as scipy has it", () => {
+  test.each(scipy.fits.map((fit, k) => [k, fit] as const))("fit %d: values and covariance", (_, fit) => {
+    const weight = Float64Array.from(fit.sigma, (s) => 1 / (s * s));
+    const [x, y] = [Float64Array.from(fit.x), Float64Array.from(fit.y)];
+    const solution = leastSquares({
+      model: resonatorPower,
+      x,
+      y,
+      weight,
+      start: Float64Array.of(0.8, 0, Math.log(12), 0.98),
+      free: 4,
+    });
+    expect(solution.converged).toBe(true);
+    for (let i = 0; i < 4; i++) {
+      const sigma = Math.sqrt(fit.covariance[i][i]);
+      expect(Math.abs(solution.p[i] - fit.p[i]) / sigma).toBeLessThan(1e-4);
+      for (let j = 0; j < 4; j++) {
+        const scale = sigma * Math.sqrt(fit.covariance[j][j]);
+        expect(
+          Math.abs((solution.inverse as Float64Array)[4 * i + j] - fit.covariance[i][j]) / scale,
+        ).toBeLessThan(2e-3);
+      }
+    }
+  });
+
+  test("what cannot be told is said: no slope, no covariance", () => {
+    const x = Float64Array.of(0, 0.1, 0.2, 0.3, 0.4);
+    const { inverse } = leastSquares({
+      model: (p, _, gradient) => {
+        gradient.fill(0);
+        return p[0];
+      },
+      x,
+      y: x,
+      weight: x.map(() => 1),
+      start: Float64Array.of(1),
+      free: 1,
+    });
+    expect(inverse).toBeNull();
+  });
+
+  test("a model that is not finite never throws", () => {
+    const x = Float64Array.of(1, 2, 3);
+    const solution = leastSquares({
+      model: () => Number.NaN,
+      x,
+      y: x,
+      weight: x,
+      start: Float64Array.of(1, 1),
+      free: 2,
+    });
+    expect(solution.converged).toBe(false);
+  });
+
+  test("slopes of the resonator agree with differences", () => {
+    const p = Float64Array.of(0.8, 0.01, Math.log(9), 0.97);
+    const gradient = new Float64Array(4);
+    const unused = new Float64Array(4);
+    for (const x of [-0.2, -0.03, 0.01, 0.012, 0.15]) {
+      resonatorPower(p, x, gradient);
+      for (let i = 0; i < 4; i++) {
+        const [up, down] = [Float64Array.from(p), Float64Array.from(p)];
+        up[i] += 1e-6;
+        down[i] -= 1e-6;
+        const slope = (resonatorPower(up, x, unused) - resonatorPower(down, x, unused)) / 2e-6;
+        expect(Math.abs(slope - gradient[i])).toBeLessThan(1e-7);
+      }
+    }
+  });
+});
+
+describe("closed form", () => {
+  test("any resonator is found again from its own samples", () => {
+    const shape = fc.record({
+      r: fc.double({ min: 0.4, max: 2.5, noNaN: true }),
+      q: fc.double({ min: 2.5, max: 400, noNaN: true }),
+      a: fc.double({ min: 0.75, max: 1, noNaN: true }),
+      f0Hz: fc.double({ min: 1.5e6, max: 1.3e9, noNaN: true }),
+      offset: fc.double({ min: 0, max: 1, noNaN: true }),
+    });
+    fc.assert(
+      fc.property(shape, (given) => {
+        const stepHz = given.f0Hz / given.q / 22;
+        const points = Math.min(151, 2 * Math.floor((0.9 * given.f0Hz) / stepHz / 2) + 1);
+        const fit = fitOf(resonatorSweep({ ...given, points, stepHz }));
+        expect(fit).not.toBeNull();
+        if (!fit) return;
+        const { resonator, power } = fit;
+        expect(Math.abs(resonator.f0Hz / given.f0Hz - 1)).toBeLessThan(1e-9);
+        const swr = (1 + Math.sqrt(power)) / (1 - Math.sqrt(power));
+        expect(Math.abs(swr / truthOf(given).swr - 1)).toBeLessThan(1e-6);
+        expect(resonator.farPower).toBeCloseTo(given.a ** 2, 7);
+        const r = Math.max(given.r, 1 / given.r);
+        expect(ratioOf(resonator)).toBeCloseTo(r, 4);
+        expect(resonator.kappa / ((given.r * given.q) / (given.r + 1))).toBeCloseTo(1, 6);
+      }),
+      { numRuns: 150 },
+    );
+  });
+
+  test("edges, and none where the resonator stays above or below", () => {
+    const resonator = { f0Hz: 1, farPower: 1, depth: 0.9, kappa: 5 };
+    expect(lowestPower(resonator)).toBeCloseTo(0.1, 12);
+    expect(lowestPower({ ...resonator, depth: 1.01 })).toBe(0);
+    expect(edgeAt(resonator, 0.05)).toBeNull();
+    expect(edgeAt(resonator, 1)).toBeNull();
+    const w = edgeAt(resonator, 1 / 9) as number;
+    expect(1 - 0.9 / (1 + w * w)).toBeCloseTo(1 / 9, 12);
+  });
+});
+
+describe("what is refused", () => {
+  test("a shape that is no resonator, without noise to excuse it", () => {
+    const sweep = resonatorSweep({ r: 1.3, q: 12, points: 121, spanHz: 4e6 });
+    const bent = sweep.magnitude.map((v, i) => v * (1 + 0.2 * Math.sin(i / 7)));
+    expect(fitOf({ ...sweep, magnitude: bent })).toBeNull();
+  });
+
+  test("fewer than five samples", () => {
+    expect(fitOf(resonatorSweep({ r: 1.3, q: 12, points: 4, spanHz: 1e6 }))).toBeNull();
+  });
+
+  test("five samples with as much left over as the noise allows are taken", () => {
+    const fit = fitOf(resonatorSweep({ r: 1.3, q: 12, points: 5, spanHz: 2.4e6 }));
+    expect(Math.abs((fit?.resonator.f0Hz ?? 0) / 14.15e6 - 1)).toBeLessThan(1e-6);
+  });
+});
+
+describe("long sweeps", () => {
+  test("100,001 noisy samples are fitted on all of them, quickly, and as well as their number allows", () => {
+    const normal = normals(21);
+    const sweep = resonatorSweep({ r: 1.4, q: 12, points: 100_001, spanHz: 4e6 });
+    const magnitude = sweep.magnitude.map((v) => v * 10 ** ((0.1 * normal()) / 20));
+    const fit = fitOf({ ...sweep, magnitude }, { db: 0.1, gamma: 0.01 });
+    expect(fit?.frequencyHalfHz).toBeLessThan(150);
+    expect(fit?.frequencyHalfHz).toBeGreaterThan(20);
+    expect(Math.abs((fit?.resonator.f0Hz ?? 0) - 14.15e6)).toBeLessThan(2 * (fit?.frequencyHalfHz ?? 0));
+    expect(Math.abs(Math.sqrt(fit?.power ?? 0) - 1 / 6)).toBeLessThan(2e-4);
+  });
+});
