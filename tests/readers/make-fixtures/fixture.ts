@@ -30,6 +30,9 @@ export interface Make {
   encode?: (text: string) => Uint8Array;
 }
 
+/** The truth's dips are those seen from 50 Ω, whatever the file is referred to. */
+const FINDINGS_OHM = 50;
+
 /** Builds a fixture from the points of its model. */
 export function fixture(
   file: string,
@@ -45,7 +48,7 @@ export function fixture(
     stop_mhz: model.stopMhz,
     points: make.points ?? model.points,
     quantity,
-    dips: dips(model),
+    dips: dips({ ...model, referenceOhm: FINDINGS_OHM }),
   };
   if (zeroDb !== undefined) truth.zero_db_at = zeroDb;
   if (model.referenceOhm !== 50) truth.reference_ohm = model.referenceOhm;
