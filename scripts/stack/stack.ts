@@ -1,5 +1,6 @@
 import { existsSync } from "node:fs";
 import path from "node:path";
+import mysql, { type RowDataPacket } from "mysql2/promise";
 import { ROOT } from "../install.mjs";
 import { endProcesses, processesWith } from "../processes.mjs";
 import { PlainFailure, step } from "../steps.mjs";
@@ -52,6 +53,10 @@ export async function bringUp(options: StackOptions): Promise<Stack> {
     const settings = await settingsFor(folder, options.environment, port);
     const { environment, local, ports, secrets } = settings;
     if (options.server !== false) await refuseTakenPort(port, environment.HOST ?? LOOPBACK);
+    // They take their time to load, so they begin first and are waited for after the database.
+    const standIns =
+      local.storage || local.mail || local.github ? startStandIns(folder, settings) : undefined;
+    if (standIns) watch(standIns);
     if (local.database) {
       await step("MariaDB", async () =>
         watch(await startDatabase({ folder, port: ports.database, secrets, throwaway: options.throwaway })),
@@ -61,10 +66,10 @@ export async function bringUp(options: StackOptions): Promise<Stack> {
       const count = await migrateOrExplain(environment.DATABASE_URL ?? "");
       return count === 0 ? "up to date" : `${count} migration${count === 1 ? "" : "s"}`;
     });
-    if (local.storage || local.mail || local.github) {
+    if (standIns) {
       const names = Object.entries({ S3: local.storage, mail: local.mail, GitHub: local.github });
       const title = `Stand-ins: ${names.flatMap(([name, on]) => (on ? [name] : [])).join(", ")}`;
-      await step(title, async () => watch(await startStandIns(folder, settings)));
+      await step(title, () => waitForStandIns(standIns, settings));
     }
     await step("Bucket", () => ensureBucket(environment));
     if (options.server === false) return { settings, address: "", stop };
@@ -101,8 +106,8 @@ async function migrateOrExplain(databaseUrl: string): Promise<number> {
   }
 }
 
-async function startStandIns(folder: string, settings: Settings): Promise<Part> {
-  const part = startPart({
+function startStandIns(folder: string, settings: Settings): Part {
+  return startPart({
     name: "stand-ins",
     folder,
     program: process.execPath,
@@ -118,6 +123,9 @@ async function startStandIns(folder: string, settings: Settings): Promise<Part> 
       }),
     },
   });
+}
+
+async function waitForStandIns(part: Part, settings: Settings): Promise<void> {
   const wanted = [
     settings.local.storage ? settings.ports.storage : 0,
     settings.local.mail ? settings.ports.inbox : 0,
@@ -127,11 +135,14 @@ async function startStandIns(folder: string, settings: Settings): Promise<Part> 
     const answers = await Promise.all(wanted.map((port) => answersHttp(`http://${LOOPBACK}:${port}/`)));
     return answers.every((status) => status > 0);
   });
-  return part;
 }
 
-/** The demo notes in the database that it is complete, so asking again costs little. */
-async function buildDemo(folder: string, environment: Environment): Promise<void> {
+/** Once: the demo notes in the database that it is complete, and that note is looked for first. */
+async function buildDemo(folder: string, environment: Environment): Promise<string> {
+  const connection = await mysql.createConnection({ uri: environment.DATABASE_URL });
+  const [found] = await connection.query<RowDataPacket[]>("select 1 from facts where name = 'demo'");
+  await connection.end();
+  if (found.length > 0) return "there already";
   await runToEnd({
     name: "demo",
     folder,
@@ -139,6 +150,7 @@ async function buildDemo(folder: string, environment: Environment): Promise<void
     arguments: [...TSX_ARGUMENTS, DEMO],
     environment: { ...process.env, ...environment },
   });
+  return "";
 }
 
 async function startServer(options: StackOptions, environment: Environment): Promise<Part> {
