@@ -33,13 +33,15 @@ export function coverageOf(picture: Picture, ground: Ground, color: Rgb): Covera
   const height = ground.bottom - ground.top + 1;
   const share = new Float32Array(width * height);
   const base = difference(ground.color, color);
+  const told = ground.grid && lookApart(ground.grid, color) >= OWN_COLOR;
+  const grid = told && ground.grid ? difference(ground.color, ground.grid) : null;
   const outer = ground.outline && difference(ground.outline, color);
   const rowBase = ground.rows.map(
-    (g, y) => usable(g, color, base) ?? (g && outer && ground.outerRows.includes(y) ? outer : undefined),
+    (g, y) =>
+      usable(g, color, base, grid) ?? (g && outer && ground.outerRows.includes(y) ? outer : undefined),
   );
-  const columnBase = ground.columns.map((g) => usable(g, color, base));
+  const columnBase = ground.columns.map((g) => usable(g, color, base, grid));
   const { data } = picture;
-  const grid = ground.grid && usable(ground.grid, color, base) ? difference(ground.color, ground.grid) : null;
   for (let y = 0; y < height; y++) {
     const rowGround = rowBase[y + ground.top];
     let j = 4 * ((y + ground.top) * picture.width + ground.left);
@@ -61,7 +63,7 @@ export function coverageOf(picture: Picture, ground: Ground, color: Rgb): Covera
 }
 
 /** A dot or dash of the grid, in full or smoothed: on the line from the ground to the grid's colour. */
-function isGrid(data: Uint8Array | Uint8ClampedArray, j: number, grid: Difference): boolean {
+function isGrid(data: ArrayLike<number>, j: number, grid: Difference): boolean {
   const red = data[j] - grid.from[0];
   const green = data[j + 1] - grid.from[1];
   const blue = data[j + 2] - grid.from[2];
@@ -86,8 +88,14 @@ function difference(from: Rgb, color: Rgb): Difference {
 }
 
 /** A line's colour serves as ground unless it may be the trace itself, in full or paler, running along it. */
-function usable(line: Rgb | undefined, color: Rgb, base: Difference): Difference | undefined {
+function usable(
+  line: Rgb | undefined,
+  color: Rgb,
+  base: Difference,
+  grid: Difference | null,
+): Difference | undefined {
   if (!line) return undefined;
+  if (grid && isGrid(line, 0, grid)) return difference(line, color);
   const along = line.reduce((sum, v, i) => sum + (v - base.from[i]) * base.to[i], 0) / base.square;
   const paler = base.from.map((v, i) => v + Math.min(1, along) * base.to[i]) as Rgb;
   if (along > 0 && along < 1.1 && lookApart(line, paler) < OWN_COLOR) return undefined;
