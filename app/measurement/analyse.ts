@@ -11,9 +11,10 @@ export const ANALYSIS_VERSION = "1";
 /**
  * A sweep to its findings: noise, dips with their numbers and 95 % intervals, and what to be wary of.
  *
- * Frequencies ascending in Hz, abs Γ linear, NaN a gap. Never throws on numbers of any kind: an empty sweep, one point, only gaps or a
- * flat trace give no dips and a warning that says so. Settings that make no sense (a limit of 1 or less, a negative
- * prominence) fall back to the default. Methods: MEASUREMENT sections 2 and 3, one file each under `dips/`.
+ * Frequencies ascending in Hz, abs Γ linear, NaN a gap. Never throws on numbers of any kind: an empty
+ * sweep, one point, only gaps or a flat trace give no dips and a warning that says so. Settings that make
+ * no sense (a limit of 1 or less, a negative prominence) fall back to the default. Methods: MEASUREMENT
+ * sections 2 and 3, one file each under `dips/`.
  */
 export function analyse(sweep: Sweep, settings: Partial<AnalysisSettings> = {}): Analysis {
   const used = sensible(settings);
@@ -60,5 +61,8 @@ function fitLimit(prominences: number[]): number {
 
 /** MEASUREMENT section 2: 6 σ. */
 const NOISE_FACTOR = 6;
-/** Antennas show a handful, a feedline's ripple a few dozen; more is no antenna, and each fit costs a tenth of a millisecond. */
+/**
+ * Antennas show a handful, a feedline's ripple a few dozen; more is no antenna, and each fit costs a tenth
+ * of a millisecond.
+ */
 const MOST_FITS = 300;

@@ -25,7 +25,10 @@ export interface BandSource {
   seen: string;
 }
 
-/** Bands of a region that touch `fromHz`..`toHz`, ascending. Region null: the union of all, labelled as general. */
+/**
+ * Bands of a region that touch `fromHz`..`toHz`, ascending. Region null: the union of all, labelled as
+ * general.
+ */
 export function bandsOverlapping(region: ItuRegion | null, fromHz: number, toHz: number): Band[] {
   return tableOf(region).filter((band) => band.highHz >= fromHz && band.lowHz <= toHz);
 }

@@ -4,12 +4,13 @@ import type { Sweep } from "./sweep.ts";
 /**
  * Which points of a sweep to draw so that nothing that matters is lost.
  *
- * Returns ascending indices into the sweep, at most `maxPoints` of them: the first and the last point of the range, the
- * lowest sample of every dip of 3 dB and more (the most prominent where they would fill over a quarter) and, for each
- * of the buckets of equal width (in frequency, or in its logarithm) that the rest allows, its lowest and its highest
- * abs Γ. A bucket with a gap keeps one NaN in place of its highest point. A range takes in its ends, plus the neighbour
- * outside on each side, so that a line runs to the border. Empty sweep or range: empty result. `maxPoints` under 4
- * counts as 4. The method is the min/max envelope of common practice, no source.
+ * Returns ascending indices into the sweep, at most `maxPoints` of them: the first and the last point of
+ * the range, the lowest sample of every dip of 3 dB and more (the most prominent where they would fill over
+ * a quarter) and, for each of the buckets of equal width (in frequency, or in its logarithm) that the rest
+ * allows, its lowest and its highest abs Γ. A bucket with a gap keeps one NaN in place of its highest
+ * point. A range takes in its ends, plus the neighbour outside on each side, so that a line runs to the
+ * border. Empty sweep or range: empty result. `maxPoints` under 4 counts as 4. The method is the min/max
+ * envelope of common practice, no source.
  */
 export function decimate(
   sweep: Pick<Sweep, "frequencyHz" | "magnitude">,
@@ -46,7 +47,10 @@ export function decimate(
   return sorted.filter((index, k) => k === 0 || index > sorted[k - 1]);
 }
 
-/** Adds the indices of the lowest and the highest value (or of a gap) of `start`..`end`−1; returns the new size. */
+/**
+ * Adds the indices of the lowest and the highest value (or of a gap) of `start`..`end`−1; returns the new
+ * size.
+ */
 function keepEnds(
   magnitude: Float64Array,
   start: number,

@@ -1,11 +1,13 @@
 /**
- * Pairs the dips of an earlier analysis of a sweep with those of a later one, so that a dip keeps its identity.
+ * Pairs the dips of an earlier analysis of a sweep with those of a later one, so that a dip keeps its
+ * identity.
  *
- * `oldHz` and `newHz` in Hz, any order; `gateHz(hz)` is the farthest a dip at `hz` may have moved. Returns for each old
- * dip the index of its new one or null; no new dip is used twice. As many pairs as the gate allows, and among
- * these the least total distance. Both lists are walked in order of frequency: on a line the best pairing never
- * crosses, so an alignment by dynamic programming is exact (the same argument as for sequence alignment, Needleman &
- * Wunsch 1970, J. Mol. Biol. 48, 443-453; from memory, not seen). NaN never pairs. Time and memory n·m.
+ * `oldHz` and `newHz` in Hz, any order; `gateHz(hz)` is the farthest a dip at `hz` may have moved. Returns
+ * for each old dip the index of its new one or null; no new dip is used twice. As many pairs as the gate
+ * allows, and among these the least total distance. Both lists are walked in order of frequency: on a line
+ * the best pairing never crosses, so an alignment by dynamic programming is exact (the same argument as for
+ * sequence alignment, Needleman & Wunsch 1970, J. Mol. Biol. 48, 443-453; from memory, not seen). NaN never
+ * pairs. Time and memory n·m.
  */
 export function pairDips(
   oldHz: readonly number[],

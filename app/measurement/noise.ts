@@ -1,14 +1,15 @@
 /**
  * The noise of a sweep: standard deviation σ of its return loss, dB.
  *
- * Reads abs Γ (linear, any length, NaN for gaps); differences never reach across a gap. Too few of them give 0: no noise
- * can be told. Sweeps over SAMPLE points are sampled in blocks spread over the whole.
+ * Reads abs Γ (linear, any length, NaN for gaps); differences never reach across a gap. Too few of them
+ * give 0: no noise can be told. Sweeps over SAMPLE points are sampled in blocks spread over the whole.
  *
- * σ is the median absolute deviation of second differences over √6 and Φ⁻¹(3/4), as for signal-to-noise of spectra
- * (F. Stoehr et al., "DER_SNR", ADASS XVII, ASP Conf. Ser. 394, 2008; from memory, not seen). Second differences also hold the curvature of
- * coarsely sampled dips, which fourth and sixth differences hold less of while white noise weighs alike in all three
- * (variance factors 6, 70, 924), so the least of the three counts. A reading that is
- * rounded has many equal neighbours and a median of 0: then σ is at least that of its rounding, step/√12.
+ * σ is the median absolute deviation of second differences over √6 and Φ⁻¹(3/4), as for signal-to-noise of
+ * spectra (F. Stoehr et al., "DER_SNR", ADASS XVII, ASP Conf. Ser. 394, 2008; from memory, not seen).
+ * Second differences also hold the curvature of coarsely sampled dips, which fourth and sixth differences
+ * hold less of while white noise weighs alike in all three (variance factors 6, 70, 924), so the least of
+ * the three counts. A reading that is rounded has many equal neighbours and a median of 0: then σ is at
+ * least that of its rounding, step/√12.
  */
 export function noiseDb(magnitude: Float64Array): number {
   const values = sample(magnitude);
@@ -32,7 +33,9 @@ export function noiseOf(magnitude: Float64Array): Noise {
   return { db: noiseDb(magnitude), gamma: noiseGamma(magnitude) };
 }
 
-/** σ from the samples around one: as far as 32 on each side, enough for 15 %, few enough to stay near a dip. */
+/**
+ * σ from the samples around one: as far as 32 on each side, enough for 15 %, few enough to stay near a dip.
+ */
 export function noiseNear(magnitude: Float64Array, index: number): Noise {
   return noiseOf(magnitude.subarray(Math.max(0, index - NEAR), index + NEAR + 1));
 }
@@ -137,6 +140,9 @@ const DIFFERENCES = [
 const SAME = 1e-9;
 /** 10 % of equal neighbours was never seen in unrounded data; 0.1 dB steps on a flat trace give over half. */
 const EQUAL_SHARE = 0.1;
-/** Instruments round to 0.001 to 0.5 dB, or to 0.001 to 0.02 of abs Γ; larger steps belong to the trace itself. */
+/**
+ * Instruments round to 0.001 to 0.5 dB, or to 0.001 to 0.02 of abs Γ; larger steps belong to the trace
+ * itself.
+ */
 const COARSEST_DB = 1;
 const COARSEST_GAMMA = 0.03;

@@ -64,7 +64,9 @@ export function levelDbToGamma(levelDb: number, zeroDb: number): number {
   return 10 ** ((levelDb - zeroDb) / 20);
 }
 
-/** Z in Ω → Γ = (Z−Z0)/(Z+Z0). An infinite Z gives 1; Z = −Z0 and a reference that is not positive give NaN. */
+/**
+ * Z in Ω → Γ = (Z−Z0)/(Z+Z0). An infinite Z gives 1; Z = −Z0 and a reference that is not positive give NaN.
+ */
 export function impedanceToGamma({ re, im }: Complex, referenceOhm: number): Complex {
   if (!(referenceOhm > 0) || Number.isNaN(re) || Number.isNaN(im)) return NOT_A_NUMBER;
   if (!Number.isFinite(re) || !Number.isFinite(im)) return { re: 1, im: 0 };

@@ -7,8 +7,9 @@ import { gammaToSwr } from "./reflection.ts";
  */
 
 /**
- * Root of the sum of squares of independent half-widths (JCGM 100:2008, "Guide to the expression of uncertainty in
- * measurement", 5.1.2; from memory, not seen). One that is not known makes the whole not known.
+ * Root of the sum of squares of independent half-widths (JCGM 100:2008, "Guide to the expression of
+ * uncertainty in measurement", 5.1.2; from memory, not seen). One that is not known makes the whole not
+ * known.
  */
 export function combine(...halfWidths: (number | null)[]): number | null {
   let sum = 0;
@@ -20,8 +21,9 @@ export function combine(...halfWidths: (number | null)[]): number | null {
 }
 
 /**
- * Two-sided 95 % quantile of Student's t. `freedom` ≥ 1, NaN below. Table values for 1 and 2, else the expansion of Fisher and Cornish
- * (Abramowitz & Stegun 26.7.5; from memory, not seen), right to 0.3 % at 3 and 0.01 % from 8 on.
+ * Two-sided 95 % quantile of Student's t. `freedom` ≥ 1, NaN below. Table values for 1 and 2, else the
+ * expansion of Fisher and Cornish (Abramowitz & Stegun 26.7.5; from memory, not seen), right to 0.3 % at 3
+ * and 0.01 % from 8 on.
  */
 export function student95(freedom: number): number {
   if (!(freedom >= 1)) return Number.NaN;
@@ -43,8 +45,9 @@ export interface Interval {
 }
 
 /**
- * The 95 % interval of SWR from that of abs Γ² (the reflected power, in which the fit is close to normal). SWR rises
- * steadily with it, so the limits carry over; below nothing reflected SWR is 1, from all reflected on Infinity.
+ * The 95 % interval of SWR from that of abs Γ² (the reflected power, in which the fit is close to normal).
+ * SWR rises steadily with it, so the limits carry over; below nothing reflected SWR is 1, from all
+ * reflected on Infinity.
  */
 export function swrInterval(power: number, halfWidth: number | null): Interval | null {
   if (halfWidth === null || Number.isNaN(halfWidth) || Number.isNaN(power)) return null;

@@ -4,8 +4,9 @@
  */
 
 /**
- * Hz → "18.104 MHz". The unit follows the frequency; the last digit is the first one of the uncertainty (half-width of
- * the 95 % interval, Hz). Without an uncertainty up to six significant digits, trailing zeros dropped.
+ * Hz → "18.104 MHz". The unit follows the frequency; the last digit is the first one of the uncertainty
+ * (half-width of the 95 % interval, Hz). Without an uncertainty up to six significant digits, trailing
+ * zeros dropped.
  */
 export function formatFrequency(hz: number | null, uncertaintyHz: number | null = null): string {
   if (hz === null || Number.isNaN(hz)) return UNKNOWN;
@@ -18,7 +19,10 @@ export function formatWidth(hz: number | null, uncertaintyHz: number | null = nu
   return withUnit(hz, uncertaintyHz, unitOf(hz), 3, "width");
 }
 
-/** SWR with its limits: "1.21 (1.12–1.31)"; two decimals to 10, one to 100, then none. An unknown limit stays away. */
+/**
+ * SWR with its limits: "1.21 (1.12–1.31)"; two decimals to 10, one to 100, then none. An unknown limit
+ * stays away.
+ */
 export function formatSwr(swr: number | null, low: number | null = null, high: number | null = null): string {
   if (swr === null || Number.isNaN(swr)) return UNKNOWN;
   const decimals = swrDecimals(swr, low, high);
@@ -48,7 +52,10 @@ export function formatPercent(share: number | null): string {
   return share === null || Number.isNaN(share) ? UNKNOWN : `${significant(share * 100, 2)}${THIN}%`;
 }
 
-/** "18.104 MHz", "18,104 MHz", "7.1e6", "450 kHz" → Hz; null where it is no frequency. Without a unit: hertz. */
+/**
+ * "18.104 MHz", "18,104 MHz", "7.1e6", "450 kHz" → Hz; null where it is no frequency. Without a unit:
+ * hertz.
+ */
 export function parseFrequency(text: string): number | null {
   const match = /^\s*([+]?\d+(?:[.,]\d+)?(?:e[+-]?\d+)?)\s*([kmg]?)(?:hz)?\s*$/i.exec(text);
   if (!match) return null;
@@ -116,8 +123,9 @@ const THIN = "\u2009";
 /** A hertz in a gigahertz. */
 const MOST_DECIMALS = 9;
 /**
- * Parts of the value below which digits say nothing: a sweep generator's clock is known to about a part in a million
- * at best (common practice, no source), and a width is a difference of two such edges on a curve that weather moves.
+ * Parts of the value below which digits say nothing: a sweep generator's clock is known to about a part in
+ * a million at best (common practice, no source), and a width is a difference of two such edges on a curve
+ * that weather moves.
  */
 const FINEST = { frequency: 1e-6, width: 1e-3 };
 const FACTORS: Record<string, number> = { "": 1, k: 1e3, m: 1e6, g: 1e9 };

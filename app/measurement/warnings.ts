@@ -12,7 +12,7 @@ export interface WarningContext {
 
 /** What a reader of the numbers must know, a code and a plain sentence each, in order of weight. */
 export function warningsOf(sweep: Sweep, dips: Dip[], context: WarningContext, notes: Warning[]): Warning[] {
-  const { gaps, over, lowest, highest } = survey(sweep.magnitude);
+  const { gaps, over, flat } = survey(sweep.magnitude);
   const n = sweep.magnitude.length;
   const warnings: Warning[] = [];
   const add = (code: string, message: string) => warnings.push({ code, message });
@@ -20,8 +20,7 @@ export function warningsOf(sweep: Sweep, dips: Dip[], context: WarningContext, n
   else if (gaps === n) add("only-gaps", "The sweep has no value at any frequency: every point is a gap.");
   else if (n - gaps < 3)
     add("too-few-points", `The sweep has ${n - gaps} usable points; a dip needs at least three.`);
-  else if (highest === lowest)
-    add("flat", "The sweep has the same value everywhere, so there is no dip in it.");
+  else if (flat) add("flat", "The sweep has the same value everywhere, so there is no dip in it.");
   if (gaps > 0 && gaps < n)
     add("gaps", `${gaps} of ${n} points are gaps; no dip or band reaches across one.`);
   if (over > 0)
@@ -52,16 +51,10 @@ export function warningsOf(sweep: Sweep, dips: Dip[], context: WarningContext, n
 function survey(magnitude: Float64Array) {
   let gaps = 0;
   let over = 0;
-  let lowest = Number.POSITIVE_INFINITY;
-  let highest = Number.NEGATIVE_INFINITY;
   for (let i = 0; i < magnitude.length; i++) {
-    const value = magnitude[i];
-    if (Number.isNaN(value)) gaps++;
-    else {
-      if (value > 1) over++;
-      if (value < lowest) lowest = value;
-      if (value > highest) highest = value;
-    }
+    if (magnitude[i] <= 1) continue;
+    if (Number.isNaN(magnitude[i])) gaps++;
+    else over++;
   }
-  return { gaps, over, lowest, highest };
+  return { gaps, over, flat: magnitude.every((value) => value === magnitude[0]) };
 }

@@ -2,8 +2,8 @@ import { describe, expect, test } from "vitest";
 import { bandAt, bandSources, bandsOverlapping, type ItuRegion } from "../../app/measurement/bands.ts";
 
 /**
- * Truth: IARU Region 1 HF band plan (2020), IARU Region 2 MF/HF band plan (2008), IARU Region 3 document R3-004 rev. 3 (2019);
- * what of them was seen stands beside the data.
+ * Truth: IARU Region 1 HF band plan (2020), IARU Region 2 MF/HF band plan (2008), IARU Region 3 document
+ * R3-004 rev. 3 (2019); what of them was seen stands beside the data.
  */
 describe("single frequencies", () => {
   test.each([

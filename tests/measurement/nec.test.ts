@@ -8,9 +8,9 @@ import groundPlane from "../fixtures/measurement/nec/ground-plane.csv?raw";
 import groundPlaneDips from "../fixtures/measurement/nec/ground-plane.json";
 
 /**
- * Feed impedances of the NEC-2 solver (Debian's nec2c, decks beside the fixtures) for a half-wave dipole (12-16 MHz) and a
- * ground-plane vertical for 14.1 MHz from 10 to 146 MHz; truth: cubic splines, bounded minimisation and Brent's method in scipy on the
- * same impedances (tests/reference/nec_dips.py).
+ * Feed impedances of the NEC-2 solver (Debian's nec2c, decks beside the fixtures) for a half-wave dipole
+ * (12-16 MHz) and a ground-plane vertical for 14.1 MHz from 10 to 146 MHz; truth: cubic splines, bounded
+ * minimisation and Brent's method in scipy on the same impedances (tests/reference/nec_dips.py).
  */
 function sweepOf(csv: string, complex: boolean): Sweep {
   const rows = csv

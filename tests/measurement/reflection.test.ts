@@ -15,9 +15,10 @@ import {
 } from "../../app/measurement/reflection.ts";
 
 /**
- * SWR, abs Γ, return loss dB, mismatch loss dB, reflected %. The definitions of T. S. Bird, IEEE Antennas Propag. Mag. 51(2),
- * 166-167, 2009, computed apart; rows 2 to 5 agree with the table in the M/A-COM handbook, page 10-4 ("VSWR, Return Loss and
- * Transmission Loss vs. Transmitted Power", cjreal.com/vswr_datasheet_15629069.html).
+ * SWR, abs Γ, return loss dB, mismatch loss dB, reflected %. The definitions of T. S. Bird, IEEE Antennas
+ * Propag. Mag. 51(2), 166-167, 2009, computed apart; rows 2 to 5 agree with the table in the M/A-COM
+ * handbook, page 10-4 ("VSWR, Return Loss and Transmission Loss vs. Transmitted Power",
+ * cjreal.com/vswr_datasheet_15629069.html).
  */
 const TABLE = [
   [1.01, 0.004975, 46.0639, 0.00011, 0.0025],
@@ -64,7 +65,10 @@ const RETURN_LOSS_TO_SWR = [
   [30, 1.065],
 ];
 
-/** R, X, Z0, Re Γ, Im Γ, abs Γ, SWR; computed apart from Γ = (Z−Z0)/(Z+Z0) (Pozar, Microwave Engineering, ch. 2; from memory, not seen). */
+/**
+ * R, X, Z0, Re Γ, Im Γ, abs Γ, SWR; computed apart from Γ = (Z−Z0)/(Z+Z0) (Pozar, Microwave Engineering,
+ * ch. 2; from memory, not seen).
+ */
 const IMPEDANCES = [
   [25, 0, 50, -0.333333, 0, 0.333333, 2],
   [100, 0, 50, 0.333333, 0, 0.333333, 2],

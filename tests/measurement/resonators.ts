@@ -1,8 +1,9 @@
 import type { Sweep } from "../../app/measurement/sweep.ts";
 
 /**
- * Resonators in closed form: abs Γ² = a²·((r−1)²+u²)/((r+1)²+u²), u = r·Q·(f/f0 − f0/f): a series R-L-C with R = r·Z0 behind a constant
- * loss a. Γ = a·(r−1+ju)/(r+1+ju). At SWR limit s: u_s² = ((r+1)²g² − (r−1)²)/(1−g²), g = (s−1)/(s+1)/a, width f0·u_s/(r·Q).
+ * Resonators in closed form: abs Γ² = a²·((r−1)²+u²)/((r+1)²+u²), u = r·Q·(f/f0 − f0/f): a series R-L-C
+ * with R = r·Z0 behind a constant loss a. Γ = a·(r−1+ju)/(r+1+ju). At SWR limit s: u_s² = ((r+1)²g² −
+ * (r−1)²)/(1−g²), g = (s−1)/(s+1)/a, width f0·u_s/(r·Q).
  */
 export interface Shape {
   r: number;
@@ -79,7 +80,10 @@ export function uniforms(start: number): () => number {
   };
 }
 
-/** Repeatable standard normal numbers (G. E. P. Box & M. E. Muller, Ann. Math. Stat. 29, 610-611, 1958; from memory, not seen). */
+/**
+ * Repeatable standard normal numbers (G. E. P. Box & M. E. Muller, Ann. Math. Stat. 29, 610-611, 1958; from
+ * memory, not seen).
+ */
 export function normals(start: number): () => number {
   const uniform = uniforms(start);
   return () => Math.sqrt(-2 * Math.log(uniform())) * Math.cos(2 * Math.PI * uniform());

@@ -3,9 +3,10 @@ import type { SweepAgain } from "../sweep.ts";
 /**
  * What to sweep again where a dip is narrower than four frequency steps; null where its points suffice.
  *
- * `index` the lowest sample, `widthHz` the best known width of the dip. Asks for SPAN widths around `centreHz` (never
- * narrower than four of the old steps, as the dip may sit anywhere between them) with at least POINTS_PER_WIDTH points in the width, as an odd
- * count so that one lies in the middle. Frequencies are rounded outwards to a tenth of the width.
+ * `index` the lowest sample, `widthHz` the best known width of the dip. Asks for SPAN widths around
+ * `centreHz` (never narrower than four of the old steps, as the dip may sit anywhere between them) with at
+ * least POINTS_PER_WIDTH points in the width, as an odd count so that one lies in the middle. Frequencies
+ * are rounded outwards to a tenth of the width.
  */
 export function sweepAgain(
   frequencyHz: Float64Array,

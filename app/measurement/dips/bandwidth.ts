@@ -38,10 +38,11 @@ export interface BandwidthInput {
 /**
  * The bandwidth at an SWR limit over 1. Null, never 0, where the dip's lowest SWR is above the limit.
  *
- * Where a whole resonator fits and the dip does not share its stretch, the edges are the fit's closed form f0·e^±asinh(w/2κ), which
- * averages the noise of all samples and is exact for a resonator; else they are interpolated between the two samples on each side of the limit
- * (`crossingHz`). An edge beyond the sweep or in a gap is open: null, and the width "at least" up to the last sample.
- * The fractional bandwidth is the width over the geometric mean of the edges.
+ * Where a whole resonator fits and the dip does not share its stretch, the edges are the fit's closed form
+ * f0·e^±asinh(w/2κ), which averages the noise of all samples and is exact for a resonator; else they are
+ * interpolated between the two samples on each side of the limit (`crossingHz`). An edge beyond the sweep
+ * or in a gap is open: null, and the width "at least" up to the last sample. The fractional bandwidth is
+ * the width over the geometric mean of the edges.
  */
 export function bandwidthOf(input: BandwidthInput): Bandwidth | null {
   const level = swrToGamma(input.swrLimit);

@@ -1,11 +1,13 @@
 import type { Sweep } from "../sweep.ts";
 
 /**
- * The frequency between samples `i` and `i+1` at which abs Γ equals `level`; one of the two lies at or below it, the other above.
+ * The frequency between samples `i` and `i+1` at which abs Γ equals `level`; one of the two lies at or
+ * below it, the other above.
  *
- * Complex sweeps are interpolated on Γ's real and imaginary part, others on abs Γ², both with the cubic through
- * the four nearest samples (a line where a sample is missing, a gap, or in noise), whose error falls with the fourth power of the
- * step. The root is bracketed by bisection, so that it never leaves the step. `smooth` false asks for the line.
+ * Complex sweeps are interpolated on Γ's real and imaginary part, others on abs Γ², both with the cubic
+ * through the four nearest samples (a line where a sample is missing, a gap, or in noise), whose error
+ * falls with the fourth power of the step. The root is bracketed by bisection, so that it never leaves the
+ * step. `smooth` false asks for the line.
  */
 export function crossingHz(sweep: Sweep, i: number, level: number, smooth: boolean): number {
   const { frequencyHz, magnitude, gammaRe, gammaIm } = sweep;

@@ -8,7 +8,10 @@ import type { FoundDip } from "./find.ts";
 import { type Lowest, lowestOf, sampleOnly } from "./lowest.ts";
 import { qualityOf } from "./quality.ts";
 
-/** Where a dip stands among the found ones; `stretch` is the last one walked, kept so that no sample is walked twice. */
+/**
+ * Where a dip stands among the found ones; `stretch` is the last one walked, kept so that no sample is
+ * walked twice.
+ */
 export interface Neighbours {
   at: number;
   found: readonly FoundDip[];
@@ -120,5 +123,8 @@ function qWarning(frequencyHz: number): Warning {
   };
 }
 
-/** A return loss that no instrument sees; a computed 0 of abs Γ is told as this deep, as no file holds an infinity. */
+/**
+ * A return loss that no instrument sees; a computed 0 of abs Γ is told as this deep, as no file holds an
+ * infinity.
+ */
 const DEEPEST_DB = 200;

@@ -1,10 +1,16 @@
 /** A local minimum of abs Γ that stands out. */
 export interface FoundDip {
-  /** Index of the lowest sample; of a plateau its middle (rounded down); of an edge dip the first or last finite one. */
+  /**
+   * Index of the lowest sample; of a plateau its middle (rounded down); of an edge dip the first or last
+   * finite one.
+   */
   index: number;
   /** Depth in dB of return loss below the lower of its two crests. Infinity where abs Γ is 0. */
   prominenceDb: number;
-  /** Lowest on the first or last point of the sweep or beside a gap. Its prominence counts the one side there is. */
+  /**
+   * Lowest on the first or last point of the sweep or beside a gap. Its prominence counts the one side
+   * there is.
+   */
   edge: boolean;
 }
 
@@ -14,10 +20,11 @@ export interface FoundDip {
  * `magnitude`: abs Γ, linear. NaN splits the sweep into stretches that know nothing of each other. A point
  * with abs Γ over 1 never is a dip, but counts as a crest. Fewer than two finite points in a row: no dip.
  *
- * The prominence is that of topography, as `scipy.signal.peak_prominences` has it on return loss: from the dip outwards
- * to the first strictly deeper sample or the end, the crest of each side, the lower crest counts. As return loss
- * falls steadily with abs Γ, crests and dips are compared as ratios of abs Γ and no logarithm is taken in the loop.
- * One pass with a stack of the minima that still wait for a deeper one on their right, ascending in value: O(n).
+ * The prominence is that of topography, as `scipy.signal.peak_prominences` has it on return loss: from the
+ * dip outwards to the first strictly deeper sample or the end, the crest of each side, the lower crest
+ * counts. As return loss falls steadily with abs Γ, crests and dips are compared as ratios of abs Γ and no
+ * logarithm is taken in the loop. One pass with a stack of the minima that still wait for a deeper one on
+ * their right, ascending in value: O(n).
  */
 export function findDips(magnitude: Float64Array, minimumProminenceDb: number): FoundDip[] {
   const found: FoundDip[] = [];
@@ -78,7 +85,10 @@ class Waiting {
     this.found = found;
   }
 
-  /** A new minimum with the highest sample since the one before it. A last point is an edge with a left crest. */
+  /**
+   * A new minimum with the highest sample since the one before it. A last point is an edge with a left
+   * crest.
+   */
   push(index: number, value: number, crest: number, edge: boolean): void {
     let left = this.popAbove(value, crest);
     const top = this.size - 1;
@@ -101,8 +111,9 @@ class Waiting {
   }
 
   /**
-   * Takes off all minima above `value`; returns the highest crest on the way. What lies between a minimum and the one
-   * below it was noted as the lower one's right crest when the upper one came, so only right crests are carried down.
+   * Takes off all minima above `value`; returns the highest crest on the way. What lies between a minimum
+   * and the one below it was noted as the lower one's right crest when the upper one came, so only right
+   * crests are carried down.
    */
   private popAbove(value: number, crest: number): number {
     let right = crest;

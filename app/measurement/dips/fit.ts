@@ -26,19 +26,22 @@ export interface Fit {
   powerHalf: number;
   /** True when the far power was fitted too: then the closed form holds at the edges and for Q. */
   whole: boolean;
-  /** Half-width of the distance f0·w/κ between the edges at abs Γ² = `power`, Hz; null where there are none. */
+  /**
+   * Half-width of the distance f0·w/κ between the edges at abs Γ² = `power`, Hz; null where there are none.
+   */
   widthHalfHz(power: number): number | null;
 }
 
 /**
- * Fits the resonator to abs Γ² over the window, and when the shape leaves more than noise there, over ever smaller inner windows with
- * the far power held, down to FEWEST_POINTS. Null when no window will do: the caller then takes a parabola.
+ * Fits the resonator to abs Γ² over the window, and when the shape leaves more than noise there, over ever
+ * smaller inner windows with the far power held, down to FEWEST_POINTS. Null when no window will do: the
+ * caller then takes a parabola.
  *
- * `frequencyHz` ascending Hz, `magnitude` abs Γ without NaN inside the window, `index` the lowest sample, `noise` the
- * larger σ of the sweep's and of the samples near the dip, `complex` whether abs Γ comes
- * from a complex Γ. Whether the scatter is even in abs Γ (a receiver's) or in decibels (a detector's) is decided by the
- * likelihood of the residuals; the bias of abs Γ² that goes with it is taken off. Long windows are fitted on a selection of samples, and in noise
- * then on means of all of them.
+ * `frequencyHz` ascending Hz, `magnitude` abs Γ without NaN inside the window, `index` the lowest sample,
+ * `noise` the larger σ of the sweep's and of the samples near the dip, `complex` whether abs Γ comes from a
+ * complex Γ. Whether the scatter is even in abs Γ (a receiver's) or in decibels (a detector's) is decided
+ * by the likelihood of the residuals; the bias of abs Γ² that goes with it is taken off. Long windows are
+ * fitted on a selection of samples, and in noise then on means of all of them.
  */
 export function fitDip(
   frequencyHz: Float64Array,
@@ -60,14 +63,16 @@ export function fitDip(
       complex,
       whole ? null : farPower,
     );
-    if (fit) return fit;
-    from = Math.ceil(index - (index - from) / SHRINK);
-    to = Math.floor(index + (to - index) / SHRINK);
+    if (typeof fit !== "number") return fit;
+    const shrink = Math.max(SHRINK, fit ** (1 / SHAPE_POWER));
+    from = Math.ceil(index - (index - from) / shrink);
+    to = Math.floor(index + (to - index) / shrink);
     if (to - from + 1 < FEWEST_HELD) break;
   }
   return null;
 }
 
+/** The fit, or by how many times what it left was too much (1 where only its order told). */
 function fitInside(
   frequencyHz: Float64Array,
   magnitude: Float64Array,
@@ -76,31 +81,26 @@ function fitInside(
   noise: Noise,
   complex: boolean,
   heldPower: number | null,
-): Fit | null {
+): Fit | number {
   const referenceHz = frequencyHz[index];
   const free = heldPower === null ? 4 : 3;
   const some = selectPoints(frequencyHz, magnitude, window, referenceHz, SELECTION);
   const start = firstGuess(frequencyHz, magnitude, index, window, heldPower);
   const first = leastSquares({ model: resonatorPower, ...some, start, free });
   const flat = residualsOf(some.x, some.y, first.p, free, "even");
-  if (!flat || successive(flat.standard) < HOPELESS) return null;
+  if (!flat) return 1;
+  if (successive(flat.standard) < HOPELESS) return flat.sigma / noise.gamma;
   let best: Candidate | null = { solution: first, residuals: flat };
   if (flat.relative >= ROUNDING) best = likelier(some, first.p, free, complex);
-  if (!best || !smallEnough(best.residuals, noise)) return null;
+  if (!best || !smallEnough(best.residuals, noise)) return flat.sigma / noise.gamma;
   if (flat.relative >= ROUNDING && window.to - window.from + 1 > some.x.length) {
     const means = meanPoints(frequencyHz, magnitude, window, referenceHz, MEANS, best.solution.p);
     best = fitMeans(means, best, free, complex);
   }
-  if (!best || !usable(best.solution, best.residuals.standard.length, free)) return null;
-  if (!whiteEnough(best.residuals, free)) return null;
-  return describe(
-    best.solution,
-    window,
-    referenceHz,
-    frequencyHz,
-    best.residuals.standard.length - free,
-    free,
-  );
+  if (!best || !whiteEnough(best.residuals, free)) return 1;
+  const freedom = best.residuals.standard.length - free;
+  if (freedom < 1 || !usable(best.solution)) return 1;
+  return describe(best.solution, window, referenceHz, frequencyHz, freedom, free) ?? 1;
 }
 
 function describe(
@@ -142,8 +142,8 @@ function describe(
   };
 }
 
-function usable({ p, converged, inverse }: Solution, count: number, free: number): boolean {
-  return converged && inverse !== null && count > free && p[DEPTH] > 0 && p[FAR_POWER] > 0;
+function usable({ p, converged, inverse }: Solution): boolean {
+  return converged && inverse !== null && p[DEPTH] > 0 && p[FAR_POWER] > 0;
 }
 
 function firstGuess(
@@ -167,8 +167,12 @@ function firstGuess(
 const FEWEST_POINTS = 5;
 /** An inner window needs enough points to tell shape from scatter. */
 const FEWEST_HELD = 9;
-/** Each inner window has a shape error about ten times smaller: it goes with the fourth power of the width. */
 const SHRINK = 1.8;
+/**
+ * The error of the shape goes with this power of the window's width, so each step leaves about a tenth of
+ * it.
+ */
+const SHAPE_POWER = 4;
 /** Samples that find the shape; in noise the means of all samples then sharpen it. */
 const SELECTION = 240;
 const MEANS = 400;

@@ -1,10 +1,10 @@
 /**
  * Least squares with the Levenberg–Marquardt method for models of a few parameters.
  *
- * Own code, because what is needed beside the best values is their covariance, a step that is refused when it
- * makes the fit worse, scaling that does not depend on units, and convergence to the last bits without noise.
- * Source: D. W. Marquardt, J. SIAM 11(2), 431-441, 1963; scaling by the diagonal as J. J. Moré, Lecture Notes in
- * Mathematics 630, 105-116, 1978 (both from memory, not seen).
+ * Own code, because what is needed beside the best values is their covariance, a step that is refused when
+ * it makes the fit worse, scaling that does not depend on units, and convergence to the last bits without
+ * noise. Source: D. W. Marquardt, J. SIAM 11(2), 431-441, 1963; scaling by the diagonal as J. J. Moré,
+ * Lecture Notes in Mathematics 630, 105-116, 1978 (both from memory, not seen).
  */
 
 /** Model at `x` with parameters `p`; writes ∂/∂p to `gradient`. */
@@ -26,7 +26,10 @@ export interface Solution {
   p: Float64Array;
   /** Σ weight·residual². */
   cost: number;
-  /** Inverse of JᵀWJ over the free parameters, row by row; times the variance it is the covariance. Null when singular. */
+  /**
+   * Inverse of JᵀWJ over the free parameters, row by row; times the variance it is the covariance. Null
+   * when singular.
+   */
   inverse: Float64Array | null;
   converged: boolean;
 }

@@ -19,9 +19,9 @@ export interface Lowest {
 }
 
 /**
- * A resonator's fit, else a parabola through three samples of return loss, else (fewer than three samples in the dip,
- * or its bend lost in noise) the lowest sample. `between`: the dips on both sides or the ends of the sweep, which a
- * fit may not cross. `noise`: σ of the sweep.
+ * A resonator's fit, else a parabola through three samples of return loss, else (fewer than three samples
+ * in the dip, or its bend lost in noise) the lowest sample. `between`: the dips on both sides or the ends
+ * of the sweep, which a fit may not cross. `noise`: σ of the sweep.
  */
 export function lowestOf(
   sweep: Sweep,
@@ -65,7 +65,10 @@ export function lowestOf(
   };
 }
 
-/** The lowest sample, or the middle of its plateau. Between it and the first samples that stand clear of it by the noise, the dip may be anywhere. */
+/**
+ * The lowest sample, or the middle of its plateau. Between it and the first samples that stand clear of it
+ * by the noise, the dip may be anywhere.
+ */
 export function sampleOnly({ frequencyHz, magnitude }: Sweep, index: number, noise: number): Lowest {
   const value = magnitude[index];
   const plateau = reachOf(magnitude, index, value);

@@ -7,9 +7,9 @@ export interface Vertex {
 }
 
 /**
- * The vertex of the parabola through three points with any spacing; null when they lie on a line or curve the wrong way
- * for a maximum, or when one is not finite. With the middle one the highest the vertex lies between the outer ones.
- * Lagrange's form of the interpolating polynomial.
+ * The vertex of the parabola through three points with any spacing; null when they lie on a line or curve
+ * the wrong way for a maximum, or when one is not finite. With the middle one the highest the vertex lies
+ * between the outer ones. Lagrange's form of the interpolating polynomial.
  */
 export function parabolaTop(x: readonly number[], y: readonly number[]): Vertex | null {
   const [left, right] = [x[0] - x[1], x[2] - x[1]];
@@ -24,16 +24,20 @@ export function parabolaTop(x: readonly number[], y: readonly number[]): Vertex 
 export interface ParabolaDip {
   frequencyHz: number;
   returnLossDb: number;
-  /** 95 % half-widths: noise carried through the parabola, and what another choice of ordinate gives, combined. */
+  /**
+   * 95 % half-widths: noise carried through the parabola, and what another choice of ordinate gives,
+   * combined.
+   */
   frequencyHalfHz: number;
   returnLossHalfDb: number;
 }
 
 /**
- * The dip by three points of return loss around sample `index`, which must have a neighbour on each side. `noise`: σ in
- * dB. Null when there is no vertex, as on a plateau, or when its bend may be scatter. The part for the frequency step is
- * the largest distance to the vertex by another choice: the reflected power as ordinate, or samples twice as far away
- * (whose error is about four times that of the near ones, as it goes with the square of the step).
+ * The dip by three points of return loss around sample `index`, which must have a neighbour on each side.
+ * `noise`: σ in dB. Null when there is no vertex, as on a plateau, or when its bend may be scatter. The
+ * part for the frequency step is the largest distance to the vertex by another choice: the reflected power
+ * as ordinate, or samples twice as far away (whose error is about four times that of the near ones, as it
+ * goes with the square of the step).
  */
 export function parabolaDip(
   f: Float64Array,

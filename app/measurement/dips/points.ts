@@ -8,7 +8,10 @@ export interface Points {
   weight: Float64Array;
 }
 
-/** All samples of the window, or evenly spaced ones, at most about `most`. Both ends are taken in as far as the spacing allows. */
+/**
+ * All samples of the window, or evenly spaced ones, at most about `most`. Both ends are taken in as far as
+ * the spacing allows.
+ */
 export function selectPoints(
   frequencyHz: Float64Array,
   magnitude: Float64Array,
@@ -27,8 +30,9 @@ export function selectPoints(
 }
 
 /**
- * Means of neighbouring samples, about `most` of them, over the window (a rest shorter than one block is left out). A mean over a bend is
- * not the value in its middle: what resonator `p` bends is taken off, by its values at ± the standard deviation of the block's frequencies.
+ * Means of neighbouring samples, about `most` of them, over the window (a rest shorter than one block is
+ * left out). A mean over a bend is not the value in its middle: what resonator `p` bends is taken off, by
+ * its values at ± the standard deviation of the block's frequencies.
  */
 export function meanPoints(
   frequencyHz: Float64Array,

@@ -3,7 +3,10 @@ import type { Bandwidth, Sweep } from "../sweep.ts";
 import type { Fit } from "./fit.ts";
 import { ratioOf } from "./resonator.ts";
 
-/** The loaded quality factor of a dip: one number where it can be told, else its range; all null where it can't be had. */
+/**
+ * The loaded quality factor of a dip: one number where it can be told, else its range; all null where it
+ * can't be had.
+ */
 export interface Quality {
   q: number | null;
   qLow: number | null;
@@ -22,14 +25,16 @@ export interface QualityInput {
 }
 
 /**
- * Q by A. D. Yaghjian & S. R. Best, "Impedance, bandwidth, and Q of antennas", IEEE Trans. Antennas Propag. 53(4),
- * 1298-1324, 2005, for a single resonance: Q·FBW = √((s−r)(rs−1)/s)/r with r = R/Z0 at the dip, s the SWR limit and FBW the
- * width over the geometric mean of the edges; where a whole resonator fits, the same from its κ = rQ/(r+1).
+ * Q by A. D. Yaghjian & S. R. Best, "Impedance, bandwidth, and Q of antennas", IEEE Trans. Antennas Propag.
+ * 53(4), 1298-1324, 2005, for a single resonance: Q·FBW = √((s−r)(rs−1)/s)/r with r = R/Z0 at the dip, s
+ * the SWR limit and FBW the width over the geometric mean of the edges; where a whole resonator fits, the
+ * same from its κ = rQ/(r+1).
  *
- * Without phase r and 1/r look the same, and their Qs differ by the factor r: then `qLow` and `qHigh` are the two, and `q` is
- * told only where they are within SAME of each other. With phase R at the dip decides, and the slope
- * Q ≈ f0/(2R)·√(R'² + (X' + abs(X)/f0)²) must agree with it within AGREE; else both make the range. All null on an open or shared
- * stretch, where the lowest SWR is above the limit, or where the dip is a sample only.
+ * Without phase r and 1/r look the same, and their Qs differ by the factor r: then `qLow` and `qHigh` are
+ * the two, and `q` is told only where they are within SAME of each other. With phase R at the dip decides,
+ * and the slope Q ≈ f0/(2R)·√(R'² + (X' + abs(X)/f0)²) must agree with it within AGREE; else both make the
+ * range. All null on an open or shared stretch, where the lowest SWR is above the limit, or where the dip
+ * is a sample only.
  */
 export function qualityOf(input: QualityInput): Quality {
   const { bandwidth, fit, sweep, index } = input;
@@ -86,7 +91,10 @@ function range(a: number, b: number) {
 const NONE: Quality = { q: null, qLow: null, qHigh: null, notOfAntenna: false };
 /** The two Qs print alike to two digits. */
 const SAME = 1.02;
-/** Slope and band agreed within 4 % on antennas of one resonance; a length of line before them makes it tens. */
+/**
+ * Slope and band agreed within 4 % on antennas of one resonance; a length of line before them makes it
+ * tens.
+ */
 const AGREE = 0.15;
 /** a² of a quarter decibel of loss there and back. */
 const LOSSY_POWER = 0.94;

@@ -1,7 +1,10 @@
 import type { Noise } from "../noise.ts";
 import { resonatorPower } from "./resonator.ts";
 
-/** How the scatter of a sweep goes with its value: even in abs Γ, as a receiver's, or even in decibels, as a detector's. */
+/**
+ * How the scatter of a sweep goes with its value: even in abs Γ, as a receiver's, or even in decibels, as a
+ * detector's.
+ */
 export type Scatter = "even" | "decibel";
 
 /** What a fit leaves over. */
@@ -15,15 +18,19 @@ export interface Residuals {
   floor: number;
   /** σ of abs Γ, or σ in dB. */
   sigma: number;
-  /** −2 log likelihood up to a constant; the scatter with the smaller one explains the residuals better. Deep samples are left out. */
+  /**
+   * −2 log likelihood up to a constant; the scatter with the smaller one explains the residuals better.
+   * Deep samples are left out.
+   */
   score: number;
   /** Largest residual over the far power: what rounding alone leaves is near 1e-16. */
   relative: number;
 }
 
 /**
- * Residuals of abs Γ² (`y`) against the resonator `p` at x, weighed as the scatter says: variance in proportion to Γ² + σ² when even in abs Γ,
- * to Γ⁴ when even in decibels. Null when the model gives no finite numbers.
+ * Residuals of abs Γ² (`y`) against the resonator `p` at x, weighed as the scatter says: variance in
+ * proportion to Γ² + σ² when even in abs Γ, to Γ⁴ when even in decibels. Null when the model gives no
+ * finite numbers.
  */
 export function residualsOf(
   x: Float64Array,
@@ -80,8 +87,9 @@ export function residualsOf(
 }
 
 /**
- * abs Γ² less the bias that scatter gives its mean. Even in abs Γ: 2σ² of a complex Γ (S. O. Rice, Bell Syst. Tech. J. 24, 1945), σ² of
- * a normal abs Γ; a scalar trace cannot tell these and takes the middle. Even in dB: the mean of a log-normal. (All from memory, not seen.)
+ * abs Γ² less the bias that scatter gives its mean. Even in abs Γ: 2σ² of a complex Γ (S. O. Rice, Bell
+ * Syst. Tech. J. 24, 1945), σ² of a normal abs Γ; a scalar trace cannot tell these and takes the middle.
+ * Even in dB: the mean of a log-normal. (All from memory, not seen.)
  */
 export function unbiased(power: Float64Array, { scatter, sigma }: Residuals, complex: boolean): Float64Array {
   const factor = scatter === "even" ? 1 : Math.exp(-((sigma / DB_PER_POWER) ** 2) / 2);
@@ -95,8 +103,9 @@ export function smallEnough({ sigma, scatter, relative }: Residuals, noise: Nois
 }
 
 /**
- * True when what is left looks like scatter: the ratio of J. von Neumann (Ann. Math. Stat. 12, 367-395, 1941; from memory, not
- * seen) shows a shape that does not fit even where it is smaller than the noise of one sample. Few points tell nothing.
+ * True when what is left looks like scatter: the ratio of J. von Neumann (Ann. Math. Stat. 12, 367-395,
+ * 1941; from memory, not seen) shows a shape that does not fit even where it is smaller than the noise of
+ * one sample. Few points tell nothing.
  */
 export function whiteEnough({ standard, relative }: Residuals, free: number): boolean {
   const n = standard.length;
@@ -104,7 +113,10 @@ export function whiteEnough({ standard, relative }: Residuals, free: number): bo
   return successive(standard) >= 2 * (1 - ORDER_LIMIT / Math.sqrt(n - free));
 }
 
-/** Von Neumann's ratio: mean squared successive difference over mean square; 2 for scatter, near 0 for a smooth shape. Exact fits give 2. */
+/**
+ * Von Neumann's ratio: mean squared successive difference over mean square; 2 for scatter, near 0 for a
+ * smooth shape. Exact fits give 2.
+ */
 export function successive(standard: Float64Array): number {
   let squares = standard[0] ** 2;
   let steps = 0;
@@ -115,7 +127,10 @@ export function successive(standard: Float64Array): number {
   return squares > 0 ? steps / squares : 2;
 }
 
-/** Of the mean power. Deeper samples tell nothing of the scatter: one that happens to be near 0 would decide alone. */
+/**
+ * Of the mean power. Deeper samples tell nothing of the scatter: one that happens to be near 0 would decide
+ * alone.
+ */
 const SCORED = 0.1;
 /** abs Γ² over the far power; resonators without noise leave less than 1e-13. */
 export const ROUNDING = 1e-9;

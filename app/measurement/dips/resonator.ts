@@ -3,10 +3,10 @@ import type { Model } from "./least-squares.ts";
 /**
  * A series resonator behind a constant loss, as the power abs Γ² that returns from it.
  *
- * MEASUREMENT's form abs Γ² = a²·((r−1)²+u²)/((r+1)²+u²), u = r·Q·(f/f0 − f0/f), is the same for r and Q as for 1/r
- * and r·Q. Written with what can be told apart it is A − D/(1+w²), w = κ·(f/f0 − f0/f): A = a² far off resonance,
- * D = A·(1−ρ²) the depth with ρ = abs(r−1)/(r+1), κ = r·Q/(r+1). Parameters here: D, ln f0, ln κ, A.
- * Frequencies enter as x = ln(f/reference), so that f/f0 − f0/f = 2 sinh(x − x0).
+ * MEASUREMENT's form abs Γ² = a²·((r−1)²+u²)/((r+1)²+u²), u = r·Q·(f/f0 − f0/f), is the same for r and Q as
+ * for 1/r and r·Q. Written with what can be told apart it is A − D/(1+w²), w = κ·(f/f0 − f0/f): A = a² far
+ * off resonance, D = A·(1−ρ²) the depth with ρ = abs(r−1)/(r+1), κ = r·Q/(r+1). Parameters here: D, ln f0,
+ * ln κ, A. Frequencies enter as x = ln(f/reference), so that f/f0 − f0/f = 2 sinh(x − x0).
  */
 export interface Resonator {
   f0Hz: number;
@@ -42,9 +42,9 @@ export function lowestPower({ farPower, depth }: Resonator): number {
 }
 
 /**
- * w at which abs Γ² = `power`: the edge of a band. Null where the resonator never gets there (its lowest is above) or
- * never leaves (its far power is below). The edges are f0·e^±asinh(w/2κ), their geometric mean is f0, their
- * distance f0·w/κ.
+ * w at which abs Γ² = `power`: the edge of a band. Null where the resonator never gets there (its lowest is
+ * above) or never leaves (its far power is below). The edges are f0·e^±asinh(w/2κ), their geometric mean is
+ * f0, their distance f0·w/κ.
  */
 export function edgeAt({ farPower, depth }: Resonator, power: number): number | null {
   const square = depth / (farPower - power) - 1;

@@ -10,8 +10,9 @@ export interface Candidate {
 }
 
 /**
- * The resonator fitted to `data` under each kind of scatter, from `start`; the one whose scatter explains the residuals better. `free` parameters
- * move; `complex` says that abs Γ comes from a complex Γ. Null when neither gives finite numbers.
+ * The resonator fitted to `data` under each kind of scatter, from `start`; the one whose scatter explains
+ * the residuals better. `free` parameters move; `complex` says that abs Γ comes from a complex Γ. Null when
+ * neither gives finite numbers.
  */
 export function likelier(
   data: Points,
@@ -63,5 +64,8 @@ function reweigh(
 }
 
 const ROUNDS = 3;
-/** In −2 log likelihood. Taking an even scatter for one in dB makes intervals too narrow, the other way round a little too wide. */
+/**
+ * In −2 log likelihood. Taking an even scatter for one in dB makes intervals too narrow, the other way
+ * round a little too wide.
+ */
 const CLEARLY = 4;

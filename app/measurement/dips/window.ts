@@ -5,9 +5,9 @@ export interface Window {
 }
 
 /**
- * From the dip outwards to about SWR 5, or the larger part of the way to the lower crest where the dip is shallower
- * than that, or the crest towards a neighbour (the index of the next dip, or of the end of the stretch). `index` is the dip's lowest sample, `prominenceDb` its
- * depth. Stops before gaps.
+ * From the dip outwards to about SWR 5, or the larger part of the way to the lower crest where the dip is
+ * shallower than that, or the crest towards a neighbour (the index of the next dip, or of the end of the
+ * stretch). `index` is the dip's lowest sample, `prominenceDb` its depth. Stops before gaps.
  */
 export function fitWindow(
   magnitude: Float64Array,

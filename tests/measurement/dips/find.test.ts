@@ -5,7 +5,10 @@ import scipy from "../../fixtures/measurement/scipy.json";
 /** Return loss in hundredths of a dB → abs Γ. */
 const gamma = (hundredths: number[]) => Float64Array.from(hundredths, (h) => 10 ** (-h / 2000));
 
-/** Truth: scipy.signal.find_peaks and peak_prominences on the same return losses (tests/reference/scipy_dips.py). */
+/**
+ * Truth: scipy.signal.find_peaks and peak_prominences on the same return losses
+ * (tests/reference/scipy_dips.py).
+ */
 describe("as scipy has it", () => {
   test("252 curves: the same dips with the same prominences", () => {
     expect(scipy.curves.length).toBeGreaterThanOrEqual(200);

@@ -7,9 +7,9 @@ import { resonatorSweep, truthOf } from "../resonators.ts";
 const inner = (sweep: Sweep, swrLimit = 2) => analyse(sweep, { swrLimit }).dips.filter((dip) => !dip.edge);
 
 /**
- * r → naive Q, (s−1)/√s over FBW, divided by the true Q at s = 2. From Q·FBW = √((s−r)(rs−1)/s)/r (A. D. Yaghjian & S. R. Best, IEEE
- * Trans. Antennas Propag. 53(4), 2005; same form in H. F. Pues & A. R. Van de Capelle, IEEE TAP 37(11), 1989, from memory, not
- * seen), computed apart.
+ * r → naive Q, (s−1)/√s over FBW, divided by the true Q at s = 2. From Q·FBW = √((s−r)(rs−1)/s)/r (A. D.
+ * Yaghjian & S. R. Best, IEEE Trans. Antennas Propag. 53(4), 2005; same form in H. F. Pues & A. R. Van de
+ * Capelle, IEEE TAP 37(11), 1989, from memory, not seen), computed apart.
  */
 const NAIVE_OVER_TRUE = [
   [0.5714, 1.2649],
@@ -110,9 +110,10 @@ describe("none", () => {
   });
 
   /**
-   * Shape and figures of a measured resonator: A. P. Gregory, NPL Report MAT 58 (2021), data of its figure 27: 201 points, 3.639545 to
-   * 3.666415 GHz, lowest abs S11 0.63637 at 3.652980 GHz (SWR 4.500); published fit f 3.652938 GHz, loaded Q 708.
-   * It never comes near SWR 2: its bandwidth is none. The samples here are made from those figures.
+   * Shape and figures of a measured resonator: A. P. Gregory, NPL Report MAT 58 (2021), data of its figure
+   * 27: 201 points, 3.639545 to 3.666415 GHz, lowest abs S11 0.63637 at 3.652980 GHz (SWR 4.500); published
+   * fit f 3.652938 GHz, loaded Q 708. It never comes near SWR 2: its bandwidth is none. The samples here
+   * are made from those figures.
    */
   test("a resonator that never reaches SWR 2 has no bandwidth and no Q, but a frequency", () => {
     const rho = 0.63637;
