@@ -4,7 +4,7 @@ import { plainText } from "../decode.ts";
 import { indexLines, type Lines } from "../lines.ts";
 import { fail, ReadFailure } from "../problem.ts";
 import type { Reading, ReadResult, TextSpec } from "../reading.ts";
-import { UNIT_HZ } from "../units.ts";
+import { toHertz, UNIT_HZ } from "../units.ts";
 import { counted } from "../wording.ts";
 import { splitCells } from "./cells.ts";
 import { COARSE, choose } from "./choose.ts";
@@ -116,7 +116,7 @@ function finish(reading: Reading, spec: TextSpec, table: Table, rows: Rows): Rea
   const frequencyHz = new Float64Array(rows.count);
   const factor = UNIT_HZ[spec.frequencyUnit];
   for (let i = 0; i < rows.count; i++) {
-    frequencyHz[i] = rows.frequency[i] * factor;
+    frequencyHz[i] = toHertz(rows.frequency[i], factor);
     if (!(frequencyHz[i] >= 0 && frequencyHz[i] < Infinity))
       fail(
         "bad-frequency",

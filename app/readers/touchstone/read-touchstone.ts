@@ -6,7 +6,7 @@ import { portsFromName } from "../detect.ts";
 import { indexLines, type Lines } from "../lines.ts";
 import { fail } from "../problem.ts";
 import type { Reading, ReadResult, TouchstoneSpec } from "../reading.ts";
-import { UNIT_HZ } from "../units.ts";
+import { toHertz, UNIT_HZ } from "../units.ts";
 import { counted } from "../wording.ts";
 import { type DataEnd, fillMatrix, firstSetPairs, readData } from "./data.ts";
 import { contentOf, type Header, readHeader } from "./header.ts";
@@ -138,7 +138,7 @@ function readPoints(lines: Lines, header: Header, ports: number, port: number, r
   const to = parameter === "S" ? from + 2 : matrix.length;
   let count = 0;
   const end = readData(lines, header.firstLine, pairs, ports === 2, (set, line) => {
-    const frequency = set[0] * UNIT_HZ[unit];
+    const frequency = toHertz(set[0], UNIT_HZ[unit]);
     if (!(frequency >= 0 && frequency < Infinity))
       fail("bad-frequency", `Line ${line}: expected a frequency of zero or more, found ${set[0]}.`, line, 1);
     fillMatrix(set, ports, header.matrix, matrix);
