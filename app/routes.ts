@@ -30,6 +30,7 @@ export default [
   ...prefix("projects/:project", [
     route("sweeps/upload", "routes/sweeps/upload.ts"),
     route("sweeps/:sweep/original", "routes/sweeps/original.ts"),
+    route("sweeps/:sweep/picture", "routes/sweeps/picture.ts"),
     route("sweeps/:sweep/points.json", "routes/sweeps/points.ts"),
     route("sweeps/:sweep/sweep.csv", "routes/sweeps/csv.ts"),
     route("sweeps/:sweep/sweep.s1p", "routes/sweeps/touchstone.ts"),

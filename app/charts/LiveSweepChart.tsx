@@ -18,7 +18,7 @@ const PlotlyChart = lazy<ComponentType<PlotlyChartProps>>(() =>
   ),
 );
 
-export interface LiveSweepChartProps extends Omit<SceneInput, "plotWidthPx" | "limits"> {
+export interface LiveSweepChartProps extends Omit<SceneInput, "plotWidthPx"> {
   /** The sweep's own ends. */
   whole: FrequencyRange;
   label: string;
@@ -34,21 +34,32 @@ export interface LiveSweepChartProps extends Omit<SceneInput, "plotWidthPx" | "l
 /** A sweep's chart with its cards: drawn by the server, then zoomed, moved and read with the pointer. */
 export function LiveSweepChart(props: LiveSweepChartProps) {
   const { whole, label, dipHref, chosenDipId, onPick, rangeHref, onRange, ...input } = props;
-  const { view, dips, bands, designBands, swrLimit, plotHeightPx } = input;
-  const points = useAllPoints(input.points, whole);
+  const { view, dips, bands, designBands, swrLimit, plotHeightPx, limits } = input;
+  const all = useAllPoints(input.points, whole);
+  // Limits go point by point with the points they came with.
+  const points = limits ? input.points : all;
   const [asked, setAsked] = useState<FrequencyRange | null>(null);
   const [drag, setDrag] = useState<DragMode | null>(null);
   // biome-ignore lint/correctness/useExhaustiveDependencies: the address has caught up with what was asked
   useEffect(() => setAsked(null), [view.fromHz, view.toHz, view.scale]);
   const scene = useMemo(
-    () => buildSweepScene({ points, dips, bands, designBands, swrLimit, plotHeightPx, view }),
-    [points, dips, bands, designBands, swrLimit, plotHeightPx, view],
+    () => buildSweepScene({ points, limits, dips, bands, designBands, swrLimit, plotHeightPx, view }),
+    [points, limits, dips, bands, designBands, swrLimit, plotHeightPx, view],
   );
   const shown = useMemo(() => {
     if (!asked) return scene;
     const moved = { ...view, ...asked };
-    return buildSweepScene({ points, dips, bands, designBands, swrLimit, plotHeightPx, view: moved });
-  }, [asked, scene, points, dips, bands, designBands, swrLimit, plotHeightPx, view]);
+    return buildSweepScene({
+      points,
+      limits,
+      dips,
+      bands,
+      designBands,
+      swrLimit,
+      plotHeightPx,
+      view: moved,
+    });
+  }, [asked, scene, points, limits, dips, bands, designBands, swrLimit, plotHeightPx, view]);
   const choose = (range: FrequencyRange) => {
     setAsked(range);
     onRange(range);

@@ -26,7 +26,14 @@ export interface TakeIn {
 }
 
 export type Taken =
-  | { kind: "read"; sweepPublicId: string; title: string; dipCount: number; questions: number }
+  | {
+      kind: "read";
+      sweepPublicId: string;
+      title: string;
+      dipCount: number;
+      questions: number;
+      halfColumnHz: number | null;
+    }
   | { kind: "unread"; sweepPublicId: string; title: string; problem: ReadProblem }
   | { kind: "twice"; sweepPublicId: string; title: string }
   | { kind: "refused"; problem: ReadProblem };
@@ -80,6 +87,9 @@ export async function takeIn(input: TakeIn): Promise<Taken> {
             title,
             dipCount: outcome.analysis.dips.length,
             questions: outcome.reading.questions.length,
+            halfColumnHz: outcome.picture
+              ? (outcome.stopHz - outcome.startHz) / Math.max(1, outcome.pointCount - 1) / 2
+              : null,
           }
         : { kind: "unread" as const, sweepPublicId: sweep.publicId, title, problem: outcome.problem };
     });

@@ -4,6 +4,8 @@ import { fileURLToPath } from "node:url";
 import { MessageChannel } from "node:worker_threads";
 import { Piscina } from "piscina";
 import { detect } from "../readers/detect.ts";
+import type { ScreenshotSpec } from "../readers/reading.ts";
+import type { PictureCopy } from "./picture-copies.server.ts";
 import readAndAnalyse, { type ReadOutcome, type ReadTask } from "./read-and-analyse.server.ts";
 import type { PictureStage } from "./seen-picture.ts";
 
@@ -20,13 +22,19 @@ export async function readFile(
   return threads("numbers").run(task);
 }
 
+/** The plot of a photograph laid flat, for a page; undefined where its corners enclose none. */
+export async function layFlat(bytes: Uint8Array, spec: ScreenshotSpec): Promise<PictureCopy | undefined> {
+  return threads("corrections").run({ bytes, spec }, { name: "flatPicture" });
+}
+
 export async function closeReaders(): Promise<void> {
   const open = [...pools.values()];
   pools.clear();
   await Promise.all(open.map((pool) => pool.close()));
 }
 
-type Threads = Piscina<ReadTask, ReadOutcome>;
+// biome-ignore lint/suspicious/noExplicitAny: a thread runs two kinds of work, each typed where it is asked for
+type Threads = Piscina<any, any>;
 
 async function readInTurn(task: Omit<ReadTask, "port">, progress?: (stage: PictureStage) => void) {
   const pool = threads(task.kept ? "corrections" : "pictures");

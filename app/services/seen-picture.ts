@@ -1,7 +1,5 @@
-import type { ScreenshotSpec } from "../readers/reading.ts";
 import type { Axes } from "../readers/screenshot/axes.ts";
 import type { CorrectedResult } from "../readers/screenshot/correct.ts";
-import { type FlatPlot, flatPlot } from "../readers/screenshot/rectify.ts";
 
 /** What was seen in a picture, small enough for a page: places in pixels of the upright picture. */
 export interface SeenPicture {
@@ -27,11 +25,6 @@ export function seenPicture({ picture, corners }: CorrectedResult): SeenPicture 
 /** The stages of a picture's reading in our words. */
 export const STAGES = ["decoded", "frame", "axes", "trace", "dips"] as const;
 export type PictureStage = (typeof STAGES)[number];
-
-/** The plot laid flat where its corners were given. */
-export function flatOf(spec: ScreenshotSpec | undefined): FlatPlot | null {
-  return spec?.corners ? flatPlot(spec.corners) : null;
-}
 
 function piecesOf(line: { x: Float64Array; y: Float64Array } | null): { x: number; y: number }[][] {
   const pieces: { x: number; y: number }[][] = [];

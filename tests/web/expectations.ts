@@ -181,6 +181,7 @@ export const EXPECTATIONS: Record<string, Expectation> = {
     POST: [{ ask: { project: "sweep.edit" }, form: () => ({ port: "1" }) }],
   },
   "routes/sweeps/original.ts": { GET: read },
+  "routes/sweeps/picture.ts": { GET: read },
   "routes/sweeps/points.ts": { GET: read },
   "routes/sweeps/csv.ts": { GET: read },
   "routes/sweeps/touchstone.ts": { GET: read },

@@ -38,8 +38,10 @@ export default function NewSweeps({ loaderData, actionData }: Route.ComponentPro
       <div>
         <h2 id="add-sweeps">Add sweeps</h2>
         <p className="soft max-w-[72ch]">
-          Text with any separator, or Touchstone. Headings and units are found in the file; what it does not
-          say is shown and can be changed. Up to 64 MB and 1,000,000 points a file.
+          Text with any separator, Touchstone, or a picture of a screen (PNG, JPEG, WebP). Headings, units and
+          axes are found in the file; what it does not say is shown and can be changed. Up to 64 MB and
+          1,000,000 points a file, 40 megapixels a picture. Place and camera data of a picture stay with the
+          owners and experimenters of the project.
         </p>
       </div>
       <FirstSweepCaution dismissed={dismissed} />

@@ -2,6 +2,7 @@ import { data, Link } from "react-router";
 import { requireProject } from "~/auth/require.server";
 import { Breadcrumbs } from "~/components/ui/Breadcrumbs";
 import { LinkButton } from "~/components/ui/Button";
+import type { FoundSweep } from "~/db/sweeps.server";
 import { refused } from "~/errors";
 import { DEFAULT_SETTINGS } from "~/measurement/sweep";
 import { answer } from "~/readers/read";
@@ -11,10 +12,12 @@ import { tryReading } from "~/services/reading-preview.server";
 import { getObject } from "~/services/storage.server";
 import { readAnew } from "~/services/sweep-edits.server";
 import type { Route } from "./+types/reading";
+import { PictureReading } from "./components/picture/PictureReading";
 import { ReadingForm } from "./components/ReadingForm";
 import { ReadingRows } from "./components/ReadingRows";
 import { TriedView } from "./components/TriedView";
 import { useTriedReading } from "./components/use-tried-reading";
+import { keepPictureForm, loadPictureReading } from "./picture-page.server";
 import { givenFromForm, type ReadingFormErrors } from "./reading.schema";
 import { requireSweep } from "./require-sweep.server";
 
@@ -25,13 +28,9 @@ export const meta: Route.MetaFunction = ({ data }) => [
 export async function loader(args: Route.LoaderArgs) {
   const access = await requireProject(args, "project.read");
   const found = await requireSweep(access, args.params.sweep);
-  const { sweep, file, reading, analysis } = found;
-  const bytes = await getObject(file.storageKey);
-  const stored = await tryReading(
-    { name: file.name, bytes },
-    reading?.given ?? {},
-    analysis?.settings ?? DEFAULT_SETTINGS,
-  );
+  const { sweep, file, reading } = found;
+  const isPicture = reading?.reading?.format === "screenshot";
+  const picture = isPicture ? await loadPictureReading(found) : null;
   return {
     projectId: access.project.publicId,
     sweepId: sweep.publicId,
@@ -42,8 +41,15 @@ export async function loader(args: Route.LoaderArgs) {
     number: reading?.number ?? null,
     fixed: Object.keys(reading?.given.text ?? reading?.given.touchstone ?? {}),
     mayEdit: access.may("sweep.edit"),
-    stored,
+    stored: picture?.stored ?? (await tryStored(found)),
+    picture,
   };
+}
+
+async function tryStored({ file, reading, analysis }: FoundSweep) {
+  const bytes = await getObject(file.storageKey);
+  const settings = analysis?.settings ?? DEFAULT_SETTINGS;
+  return tryReading({ name: file.name, bytes }, reading?.given ?? {}, settings);
 }
 
 export async function action(args: Route.ActionArgs) {
@@ -53,6 +59,10 @@ export async function action(args: Route.ActionArgs) {
   const form = await args.request.formData();
   const current = found.reading?.reading;
   if (!current) return data({ errors: { form: NOTHING_TO_CHOOSE } }, 400);
+  if (current.format === "screenshot" && form.get("intent") !== "afresh") {
+    const errors = await keepPictureForm(found, form, access.person.id);
+    return errors ? data({ errors }, 400) : readAgain(access.project.publicId, found.sweep.publicId);
+  }
   const result = givenOf(form, found.reading?.given ?? {}, current);
   if ("errors" in result) return data({ errors: result.errors }, 400);
   const settings = found.analysis?.settings ?? DEFAULT_SETTINGS;
@@ -63,8 +73,12 @@ export async function action(args: Route.ActionArgs) {
       : "";
     return data({ errors: { form: `${problem.message}${place} The reading was left as it was.` } }, 400);
   }
+  return readAgain(access.project.publicId, found.sweep.publicId);
+}
+
+function readAgain(project: string, sweep: string) {
   return redirectWithMessage(
-    `/projects/${access.project.publicId}/sweeps/${found.sweep.publicId}`,
+    `/projects/${project}/sweeps/${sweep}`,
     "Read anew. Notes and verdicts stayed with their dips.",
   );
 }
@@ -80,18 +94,36 @@ function givenOf(form: FormData, before: Given, current: Reading) {
 }
 
 export default function ReadingPage({ loaderData, actionData }: Route.ComponentProps) {
-  const { projectId, sweepId, title, stored, mayEdit, unread } = loaderData;
+  const { projectId, sweepId, title, stored, mayEdit, unread, picture } = loaderData;
   const base = `/projects/${projectId}/sweeps/${sweepId}`;
   const { tried, errors, busy, onChange } = useTriedReading(`${base}/reading/try`);
   const shown = tried ?? stored;
   const faults: ReadingFormErrors = { ...errors, ...actionData?.errors };
+  const head = (
+    <div className="grid gap-1">
+      {!unread && <Breadcrumbs items={[{ label: title, to: base }]} />}
+      <h2>How “{title}” was read</h2>
+      <Source data={loaderData} base={base} />
+    </div>
+  );
+  if (picture) {
+    return (
+      <div className="grid gap-6">
+        {head}
+        <PictureReading
+          // The reading that is kept is what the fields begin with.
+          key={`${sweepId} ${loaderData.number}`}
+          data={picture}
+          base={base}
+          errors={actionData?.errors ?? {}}
+          {...{ mayEdit, unread }}
+        />
+      </div>
+    );
+  }
   return (
     <div className="grid gap-6">
-      <div className="grid gap-1">
-        {!unread && <Breadcrumbs items={[{ label: title, to: base }]} />}
-        <h2>How “{title}” was read</h2>
-        <Source data={loaderData} base={base} />
-      </div>
+      {head}
       <div className="reading-page">
         <div className="grid gap-6 content-start min-w-0">
           <TriedView tried={shown} busy={busy} />

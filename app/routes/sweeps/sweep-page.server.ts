@@ -7,6 +7,8 @@ import { analyse } from "~/measurement/analyse";
 import { bandsOverlapping, type ItuRegion } from "~/measurement/bands";
 import { decimate } from "~/measurement/decimate";
 import type { AnalysisSettings, Sweep } from "~/measurement/sweep";
+import { lineInPicture, placeInPicture } from "~/readers/screenshot/in-picture";
+import { flatPlot } from "~/readers/screenshot/rectify";
 import { listThread } from "~/services/notes.server";
 import { decodePoints, pickPoints } from "~/services/points.server";
 import { storedDips, triedDips } from "~/services/shown-dips.server";
@@ -34,6 +36,7 @@ export async function loadSweepPage(
   const full = (tried || zoomed) && reading ? await loadPoints(reading.id) : null;
   const analysis = tried && full ? analyse(full, tried) : null;
   const range = rangeOf(view, found);
+  const shown = full ? zoomPoints(full, range) : previewOf(found);
   return {
     dips: analysis ? triedDips(analysis.dips, known, designBands) : storedDips(known, designBands),
     lostDips: known.filter((listed) => !listed.dip.present).map(lostDip),
@@ -41,7 +44,8 @@ export async function loadSweepPage(
     noiseDb: analysis?.noiseDb ?? found.analysis?.noiseDb ?? null,
     tried: tried !== null,
     range,
-    points: chartPoints(full ? zoomPoints(full, range) : previewOf(found)),
+    points: chartPoints(shown),
+    picture: besideOf(found, shown, range),
     designBands: designBands.map(({ name, lowHz, highHz }) => ({ name, lowHz, highHz })),
     bands: bandsOverlapping((project.ituRegion as ItuRegion | null) ?? null, range.fromHz, range.toHz),
     dismissed,
@@ -84,12 +88,46 @@ function zoomPoints(full: Sweep, range: { fromHz: number; toHz: number }): Sweep
   return pickPoints(full, decimate(full, CHART_POINTS, range));
 }
 
+interface ShownPoints {
+  frequencyHz: number[];
+  magnitude: number[];
+  /** Of pictures: what their pixels allow. */
+  limits?: { low: number[]; high: number[] };
+}
+
 /** Rounded to what a chart can show; NaN is a gap. */
-function chartPoints(sweep: Sweep | null): { frequencyHz: number[]; magnitude: number[] } {
+function chartPoints(sweep: Sweep | null): ShownPoints {
   if (!sweep) return { frequencyHz: [], magnitude: [] };
+  const rounded = (values: Float64Array) => Array.from(values, (value) => Number(value.toPrecision(5)));
+  const { pictureLimits } = sweep;
   return {
     frequencyHz: Array.from(sweep.frequencyHz, (hz) => Number(hz.toPrecision(8))),
-    magnitude: Array.from(sweep.magnitude, (value) => Number(value.toPrecision(5))),
+    magnitude: rounded(sweep.magnitude),
+    ...(pictureLimits && {
+      limits: { low: rounded(pictureLimits.magnitudeLow), high: rounded(pictureLimits.magnitudeHigh) },
+    }),
+  };
+}
+
+/** The picture as it stands beside the curve: what of it lies over the stretch in view; null for files of numbers. */
+function besideOf({ reading }: FoundSweep, points: Sweep | null, range: { fromHz: number; toHz: number }) {
+  const spec = reading?.reading?.spec.screenshot;
+  const place = spec ? placeInPicture(spec) : null;
+  const size = spec?.corners ? flatPlot(spec.corners) : reading?.reading?.picture;
+  if (!spec || !place || !size) return null;
+  const { width, height } = size;
+  return {
+    flat: spec.corners !== undefined,
+    width,
+    height,
+    frame: place.frame,
+    fromX: place.columnOf(range.fromHz),
+    toX: place.columnOf(range.toHz),
+    scale: spec.scale ?? "linear",
+    unit: spec.quantity === "swr" ? "SWR" : "dB",
+    halfColumnHz: place.halfColumnHz,
+    halfRow: place.halfRow,
+    line: points ? lineInPicture(points, place) : [],
   };
 }
 

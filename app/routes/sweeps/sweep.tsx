@@ -11,6 +11,7 @@ import { OutsideBandsCaution } from "./components/cautions";
 import { DipsTable } from "./components/DipsTable";
 import { Downloads } from "./components/Downloads";
 import { LostDips } from "./components/LostDips";
+import { PictureBeside } from "./components/picture/PictureBeside";
 import { SettingsForm } from "./components/SettingsForm";
 import { SweepHead } from "./components/SweepHead";
 import { SweepThreads } from "./components/SweepThreads";
@@ -118,6 +119,7 @@ export default function SweepPage({ loaderData, actionData }: Route.ComponentPro
         <div className="grid gap-4 min-w-0 content-start">
           <ViewBar view={view} />
           <SweepView data={loaderData} />
+          <PictureBeside data={loaderData} />
           <Advice data={loaderData} />
           <section aria-labelledby="dips" className="grid gap-3">
             <div className="flex flex-wrap items-end justify-between gap-x-6 gap-y-3">

@@ -1,7 +1,9 @@
 import type { ProjectAccess } from "~/auth/require.server";
 import { refused } from "~/errors";
+import { formatFrequency } from "~/measurement/units";
 import { type Taken, takeIn } from "~/services/intake.server";
 import { log } from "~/services/log.server";
+import type { PictureStage } from "~/services/seen-picture";
 
 /** What became of one file, ready to be shown. */
 export interface UploadResult {
@@ -14,7 +16,11 @@ export interface UploadResult {
 }
 
 /** Takes the files of a form in, one after another; one that fails does not stop the others. */
-export async function takeUploads(access: ProjectAccess, form: FormData): Promise<UploadResult[]> {
+export async function takeUploads(
+  access: ProjectAccess,
+  form: FormData,
+  progress?: (stage: PictureStage) => void,
+): Promise<UploadResult[]> {
   const { project, person } = access;
   if (!person) throw refused("Sign in first. Nothing was stored.");
   const files = form
@@ -29,6 +35,7 @@ export async function takeUploads(access: ProjectAccess, form: FormData): Promis
         by: person,
         file: { name: file.name, bytes },
         keepUnread: true,
+        progress,
       });
       results.push(describe(file.name, project.publicId, taken));
     } catch (error) {
@@ -59,11 +66,15 @@ function describe(name: string, project: string, taken: Taken): UploadResult {
     case "read": {
       const dips = taken.dipCount === 1 ? "1 dip" : `${taken.dipCount || "no"} dips`;
       const ask = taken.questions > 0 ? " The file leaves something open; look at its reading." : "";
+      const how =
+        taken.halfColumnHz === null
+          ? "Read"
+          : `Read from a picture, half a pixel being ${formatFrequency(taken.halfColumnHz, null)}`;
       return {
         name,
         kind: "read",
         title: taken.title,
-        message: `Read, ${dips} found.${ask}`,
+        message: `${how}; ${dips} found.${ask}`,
         href: `/projects/${project}/sweeps/${taken.sweepPublicId}`,
       };
     }

@@ -11,7 +11,9 @@ export function Downloads({ data }: { data: SweepPageData }) {
       </h2>
       <ul className="flex flex-wrap gap-x-5 gap-y-2">
         <li>
-          <a href={`${base}/original`}>Original, {sweep.fileName}</a>
+          <a href={`${base}/original`}>
+            {sweep.format === "screenshot" && !data.may.edit ? "Picture" : "Original"}, {sweep.fileName}
+          </a>
         </li>
         <li>
           <a href={`${base}/sweep.csv`}>Points as CSV</a>
@@ -22,6 +24,13 @@ export function Downloads({ data }: { data: SweepPageData }) {
           </li>
         )}
       </ul>
+      {sweep.format === "screenshot" && (
+        <p className="soft">
+          {data.may.edit
+            ? "The untouched original is for owners and experimenters only: it may say where and with what it was taken. Others are given the picture written anew without that."
+            : "The picture is given without place and camera data. The untouched original is for owners and experimenters of the project."}
+        </p>
+      )}
       <p className="soft break-words">
         SHA-256 of the original <span className="font-mono break-all">{sweep.sha256}</span>; analysis{" "}
         {analysis.number} by method {analysis.version}

@@ -1,6 +1,7 @@
 import { useDropzone } from "react-dropzone";
 import { Button } from "~/components/ui/Button";
 import { Icon } from "~/components/ui/Icon";
+import { PictureStages } from "./picture/PictureStages";
 import { ResultLine } from "./UploadResults";
 import { type Upload, useUploads } from "./use-uploads";
 
@@ -87,6 +88,7 @@ function UploadLine({
           aria-label={`Progress of ${upload.file.name}`}
         />
       )}
+      {upload.stage && <PictureStages done={upload.stage} />}
       <p className={`text-small ${upload.state === "failed" ? "text-alarm" : "soft"}`}>{words}</p>
     </div>
   );

@@ -36,7 +36,10 @@ export function SweepHead({ data, errors }: { data: SweepPageData; errors: strin
         {" · as measured, no bench"}
       </p>
       <p className="text-small">
-        <Link to={`${base}/sweeps/${sweep.publicId}/reading`}>{readingWords(sweep)}</Link>
+        <Link to={`${base}/sweeps/${sweep.publicId}/reading`}>
+          {sweep.format === "screenshot" && "Read from a picture. "}
+          {readingWords(sweep)}
+        </Link>
       </p>
       {errors.map((error) => (
         <p key={error} role="alert" className="text-alarm">

@@ -23,6 +23,7 @@ export function SweepView({ data }: { data: SweepPageData }) {
   return (
     <LiveSweepChart
       points={points}
+      limits={points.limits}
       dips={dips}
       bands={bands}
       designBands={designBands}

@@ -1,4 +1,5 @@
 import { useCallback, useEffect, useReducer, useRef } from "react";
+import { type PictureStage, STAGES } from "~/services/seen-picture";
 import type { UploadResult } from "../take-uploads.server";
 
 interface Base {
@@ -6,6 +7,8 @@ interface Base {
   file: File;
   /** 0 to 1. */
   sent: number;
+  /** Of a picture: what is done of its reading. */
+  stage?: PictureStage;
 }
 
 export type Upload = Base &
@@ -33,15 +36,19 @@ export function useUploads(action: string) {
       const request = new XMLHttpRequest();
       running.current.set(upload.id, request);
       request.open("POST", action);
-      request.responseType = "json";
+      request.setRequestHeader("Accept", "application/x-ndjson, application/json");
       request.upload.onprogress = (event) => {
         if (event.lengthComputable) set({ state: "sending", sent: event.loaded / event.total });
       };
       request.upload.onload = () => set({ state: "reading", sent: 1 });
+      request.onprogress = () => {
+        const stage = eventsOf(request.responseText).findLast((event) => event.stage)?.stage;
+        if (stage) set({ state: "reading", sent: 1, stage });
+      };
       request.onerror = () => set({ state: "failed", message: LOST });
       request.onabort = () => change({ type: "remove", id: upload.id });
       request.onload = () => {
-        const result = (request.response as { results?: UploadResult[] } | null)?.results?.[0];
+        const result = eventsOf(request.responseText).findLast((event) => event.results)?.results?.[0];
         if (result && result.kind !== "failed") set({ state: "done", result });
         else set({ state: "failed", message: result?.message ?? wordsFor(request.status) });
       };
@@ -73,7 +80,8 @@ export function useUploads(action: string) {
     uploads,
     add: (files: File[]) =>
       change({ type: "add", files: files.map((file) => ({ id: nextId.current++, file })) }),
-    retry: (id: number) => change({ type: "set", id, upload: { state: "waiting", sent: 0 } }),
+    retry: (id: number) =>
+      change({ type: "set", id, upload: { state: "waiting", sent: 0, stage: undefined } }),
     cancel: (id: number) => {
       const request = running.current.get(id);
       if (request) request.abort();
@@ -93,6 +101,18 @@ function reduce(uploads: Upload[], change: Change): Upload[] {
         upload.id === change.id ? ({ ...upload, ...change.upload } as Upload) : upload,
       );
   }
+}
+
+/** One event a line; a line that is not whole yet is left for later. */
+function eventsOf(text: string): { stage?: PictureStage; results?: UploadResult[] }[] {
+  return text.split("\n").flatMap((line) => {
+    try {
+      const event = JSON.parse(line);
+      return event.stage && !STAGES.includes(event.stage) ? [] : [event];
+    } catch {
+      return [];
+    }
+  });
 }
 
 function wordsFor(status: number): string {
