@@ -22,8 +22,8 @@ const BELOW = {
 };
 /** The packages that pure code may use. Everything else, Node's own modules first, is refused there. */
 const PURE = {
-  measurement: ["ml-levenberg-marquardt"],
-  readers: ["ml-levenberg-marquardt", "papaparse", "fflate"],
+  measurement: [],
+  readers: ["papaparse"],
 };
 /** The environment, the clock, chance and the browser, which pure code does not know. */
 const IMPURE =

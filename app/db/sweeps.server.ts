@@ -7,7 +7,6 @@ import { newPublicId } from "./ids.server.ts";
 import { analyses, dips, files, notes, readings, sweepPoints, sweeps, users } from "./schema/index.ts";
 
 export type SweepRow = typeof sweeps.$inferSelect;
-export type FileRow = typeof files.$inferSelect;
 
 /** A sweep with its file, its current reading and analysis, all in one query. */
 export async function findByPublicId(publicId: string, tx: Queryable = db) {
