@@ -54,7 +54,10 @@ export async function decodePicture(bytes: Uint8Array): Promise<Picture> {
   if (header.width * header.height > MAX_PICTURE_PIXELS) {
     throw new PictureRefused("too-large", "This picture has more than 40 megapixels. Give a smaller copy.");
   }
+  // libpng fills up a cut picture in silence.
+  const cut = header.format === "png" && Buffer.from(bytes).lastIndexOf("IEND") < 0;
   try {
+    if (cut) throw new Error("The last chunk is missing.");
     const { data, info } = await sharp(bytes, options)
       .autoOrient()
       .flatten({ background: "#ffffff" })

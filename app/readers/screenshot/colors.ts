@@ -66,12 +66,16 @@ function crestBins(picture: Picture, ground: Ground): Map<number, Bin> {
     Math.abs(data[j + 1] - ground.color[1]) +
     Math.abs(data[j + 2] - ground.color[2]);
   const row = 4 * width;
+  const outer = (y: number) => ground.outerRows.some((o) => Math.abs(o - y) <= 2);
+  const skipRow = (y: number) =>
+    ground.rows[y] !== undefined && (outer(y) || isGridColor(ground.rows[y], ground));
+  const skipColumn = (x: number) => ground.columns[x] !== undefined && isGridColor(ground.columns[x], ground);
   for (let y = ground.top + 1; y < ground.bottom; y++) {
-    if (ground.rows[y]) continue;
+    if (skipRow(y)) continue;
     for (let x = ground.left; x <= ground.right; x++) {
       const j = 4 * (y * width + x);
       const own = off(j);
-      if (own < 24 || ground.columns[x]) continue;
+      if (own < 24 || skipColumn(x)) continue;
       const crest = (own >= off(j - row) && own >= off(j + row)) || (own >= off(j - 4) && own >= off(j + 4));
       if (!crest) continue;
       const rgb: Rgb = [data[j], data[j + 1], data[j + 2]];
@@ -90,6 +94,12 @@ function crestBins(picture: Picture, ground: Ground): Map<number, Bin> {
   for (const [key, bin] of bins)
     if (lookApart(meanOf(bin).color, ground.color) < FAINTEST_TRACE) bins.delete(key);
   return bins;
+}
+
+/** A line of another colour than the grid's may be a flat trace. */
+function isGridColor(line: Rgb | undefined, ground: Ground): boolean {
+  if (!line || !ground.grid) return false;
+  return lookApart(line, ground.grid) < ONE_COLOR || isSameTrace(ground.grid, line, ground.color);
 }
 
 function meanOf(bin: Bin): { color: Rgb; count: number; columns: Set<number> } {
