@@ -54,10 +54,8 @@ export async function decodePicture(bytes: Uint8Array): Promise<Picture> {
   if (header.width * header.height > MAX_PICTURE_PIXELS) {
     throw new PictureRefused("too-large", "This picture has more than 40 megapixels. Give a smaller copy.");
   }
-  // libpng fills up a cut picture in silence.
-  const cut = header.format === "png" && Buffer.from(bytes).lastIndexOf("IEND") < 0;
   try {
-    if (cut) throw new Error("The last chunk is missing.");
+    if (isCutShort(bytes, header.format)) throw new Error("The picture's end is missing.");
     const { data, info } = await sharp(bytes, options)
       .autoOrient()
       .flatten({ background: "#ffffff" })
@@ -69,6 +67,15 @@ export async function decodePicture(bytes: Uint8Array): Promise<Picture> {
   } catch {
     throw new PictureRefused("damaged", "This picture is damaged or cut short. Save or send it again.");
   }
+}
+
+/** The decoders fill up a cut picture in silence: PNG ends with IEND, JPEG with a marker behind its last scan. */
+function isCutShort(bytes: Uint8Array, format: string | undefined): boolean {
+  const all = Buffer.from(bytes.buffer, bytes.byteOffset, bytes.byteLength);
+  if (format === "png") return all.lastIndexOf("IEND") < 0;
+  if (format === "jpeg")
+    return all.lastIndexOf(Buffer.from([0xff, 0xd9])) < all.lastIndexOf(Buffer.from([0xff, 0xda]));
+  return false;
 }
 
 /**
