@@ -5,7 +5,7 @@ export interface Window {
 }
 
 /**
- * From the dip outwards to about SWR 5, or the larger part of the way to the lower crest where the dip is
+ * From the dip outwards to about SWR 5, or half of the way (in power) to the lower crest where the dip is
  * shallower than that, or the crest towards a neighbour (the index of the next dip, or of the end of the
  * stretch). `index` is the dip's lowest sample, `prominenceDb` its depth. Stops before gaps.
  */
@@ -38,4 +38,4 @@ function reach(magnitude: Float64Array, index: number, step: 1 | -1, stop: numbe
 /** abs Γ of SWR 5. */
 const WINDOW_GAMMA = 2 / 3;
 /** Of the power between dip and crest: a resonator's flank is still steep there. */
-const CREST_SHARE = 0.75;
+const CREST_SHARE = 0.5;
