@@ -5,6 +5,7 @@ import * as projects from "~/db/projects.server";
 import * as sweeps from "~/db/sweeps.server";
 import { DEFAULT_SETTINGS } from "~/measurement/sweep";
 import { type Given, MAX_FILE_BYTES, type Reading, type ReadProblem } from "~/readers/reading";
+import { placeInPicture } from "~/readers/screenshot/in-picture";
 import { storeAnalysis } from "./analyses.server.ts";
 import { doubted, isBeyondReading, rememberedFor } from "./picture-doubt.ts";
 import type { ReadOutcome } from "./read-and-analyse.server.ts";
@@ -87,9 +88,7 @@ export async function takeIn(input: TakeIn): Promise<Taken> {
             title,
             dipCount: outcome.analysis.dips.length,
             questions: outcome.reading.questions.length,
-            halfColumnHz: outcome.picture
-              ? (outcome.stopHz - outcome.startHz) / Math.max(1, outcome.pointCount - 1) / 2
-              : null,
+            halfColumnHz: placeInPicture(outcome.reading.spec.screenshot ?? {})?.halfColumnHz ?? null,
           }
         : { kind: "unread" as const, sweepPublicId: sweep.publicId, title, problem: outcome.problem };
     });

@@ -1,6 +1,6 @@
 import { createRequire } from "node:module";
 import { dirname, join } from "node:path";
-import sharp from "sharp";
+import sharp, { type Metadata } from "sharp";
 import { createWorker, PSM, type Worker } from "tesseract.js";
 import type { SweepFile } from "../readers/read.ts";
 import type { Given } from "../readers/reading.ts";
@@ -31,14 +31,7 @@ const FORMATS = new Set(["png", "jpeg", "webp"]);
  */
 export async function decodePicture(bytes: Uint8Array): Promise<Picture> {
   const options = { limitInputPixels: MAX_PICTURE_PIXELS, failOn: "error" as const };
-  const header = await sharp(bytes, { ...options, animated: true, limitInputPixels: false })
-    .metadata()
-    .catch(() => {
-      throw new PictureRefused(
-        "not-a-picture",
-        "This is not a picture that can be read. Give a PNG, JPEG or WebP.",
-      );
-    });
+  const header = await headerOf(bytes);
   if (!FORMATS.has(header.format ?? "")) {
     throw new PictureRefused(
       "picture-format",
@@ -66,6 +59,17 @@ export async function decodePicture(bytes: Uint8Array): Promise<Picture> {
     return { width: info.width, height: info.height, data };
   } catch {
     throw new PictureRefused("damaged", "This picture is damaged or cut short. Save or send it again.");
+  }
+}
+
+async function headerOf(bytes: Uint8Array): Promise<Metadata> {
+  try {
+    return await sharp(bytes, { animated: true, limitInputPixels: false }).metadata();
+  } catch {
+    throw new PictureRefused(
+      "not-a-picture",
+      "This is not a picture that can be read. Give a PNG, JPEG or WebP.",
+    );
   }
 }
 

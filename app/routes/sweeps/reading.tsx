@@ -36,6 +36,7 @@ export async function loader(args: Route.LoaderArgs) {
     sweepId: sweep.publicId,
     title: sweep.title,
     unread: sweep.problem !== null,
+    problem: sweep.problem,
     fileName: file.name,
     sha256: file.sha256,
     number: reading?.number ?? null,
@@ -116,7 +117,8 @@ export default function ReadingPage({ loaderData, actionData }: Route.ComponentP
           data={picture}
           base={base}
           errors={actionData?.errors ?? {}}
-          {...{ mayEdit, unread }}
+          mayEdit={mayEdit}
+          problem={loaderData.problem}
         />
       </div>
     );

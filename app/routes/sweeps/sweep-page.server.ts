@@ -1,4 +1,5 @@
 import type { ProjectAccess } from "~/auth/require.server";
+import { packPoints } from "~/charts/sent-points";
 import * as dips from "~/db/dips.server";
 import * as people from "~/db/people.server";
 import * as projects from "~/db/projects.server";
@@ -44,7 +45,7 @@ export async function loadSweepPage(
     noiseDb: analysis?.noiseDb ?? found.analysis?.noiseDb ?? null,
     tried: tried !== null,
     range,
-    points: chartPoints(shown),
+    points: packPoints(shown),
     picture: besideOf(found, shown, range),
     designBands: designBands.map(({ name, lowHz, highHz }) => ({ name, lowHz, highHz })),
     bands: bandsOverlapping((project.ituRegion as ItuRegion | null) ?? null, range.fromHz, range.toHz),
@@ -86,27 +87,6 @@ function previewOf({ sweep }: FoundSweep): Sweep | null {
 
 function zoomPoints(full: Sweep, range: { fromHz: number; toHz: number }): Sweep {
   return pickPoints(full, decimate(full, CHART_POINTS, range));
-}
-
-interface ShownPoints {
-  frequencyHz: number[];
-  magnitude: number[];
-  /** Of pictures: what their pixels allow. */
-  limits?: { low: number[]; high: number[] };
-}
-
-/** Rounded to what a chart can show; NaN is a gap. */
-function chartPoints(sweep: Sweep | null): ShownPoints {
-  if (!sweep) return { frequencyHz: [], magnitude: [] };
-  const rounded = (values: Float64Array) => Array.from(values, (value) => Number(value.toPrecision(5)));
-  const { pictureLimits } = sweep;
-  return {
-    frequencyHz: Array.from(sweep.frequencyHz, (hz) => Number(hz.toPrecision(8))),
-    magnitude: rounded(sweep.magnitude),
-    ...(pictureLimits && {
-      limits: { low: rounded(pictureLimits.magnitudeLow), high: rounded(pictureLimits.magnitudeHigh) },
-    }),
-  };
 }
 
 /** The picture as it stands beside the curve: what of it lies over the stretch in view; null for files of numbers. */

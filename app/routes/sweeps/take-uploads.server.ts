@@ -1,9 +1,9 @@
 import type { ProjectAccess } from "~/auth/require.server";
 import { refused } from "~/errors";
-import { formatFrequency } from "~/measurement/units";
 import { type Taken, takeIn } from "~/services/intake.server";
 import { log } from "~/services/log.server";
 import type { PictureStage } from "~/services/seen-picture";
+import { roughFrequency } from "./words";
 
 /** What became of one file, ready to be shown. */
 export interface UploadResult {
@@ -69,7 +69,7 @@ function describe(name: string, project: string, taken: Taken): UploadResult {
       const how =
         taken.halfColumnHz === null
           ? "Read"
-          : `Read from a picture, half a pixel being ${formatFrequency(taken.halfColumnHz, null)}`;
+          : `Read from a picture, half a pixel being ${roughFrequency(taken.halfColumnHz)}`;
       return {
         name,
         kind: "read",

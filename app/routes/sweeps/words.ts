@@ -1,3 +1,4 @@
+import { formatFrequency } from "~/measurement/units";
 import type { FileFormat } from "~/readers/reading";
 
 /** Our words for where a sweep came from. */
@@ -12,4 +13,9 @@ export function kindOf(format: FileFormat | null): string {
     case null:
       return "Not read yet";
   }
+}
+
+/** A frequency to two digits, for uncertainties. */
+export function roughFrequency(hz: number): string {
+  return formatFrequency(Number(hz.toPrecision(2)), null);
 }

@@ -3,13 +3,15 @@ import { useNavigate } from "react-router";
 import type { ChartDip } from "~/charts/chart-types";
 import { LiveSweepChart } from "~/charts/LiveSweepChart";
 import type { FrequencyRange } from "~/charts/ranges";
+import { unpackPoints } from "~/charts/sent-points";
 import type { SweepPageData } from "../sweep";
 import { searchWith } from "../sweeps.schema";
 
 /** The chart with its cairns and ribbon, and the cards that hang from its dips. */
 export function SweepView({ data }: { data: SweepPageData }) {
-  const { view, points, range, bands, designBands, analysis, sweep } = data;
+  const { view, range, bands, designBands, analysis, sweep } = data;
   const navigate = useNavigate();
+  const points = useMemo(() => unpackPoints(data.points), [data.points]);
   const dips = useMemo(() => data.dips.map(chartDip), [data.dips]);
   const { quantity, scale } = view;
   const chartView = useMemo(() => ({ quantity, scale, ...range }), [quantity, scale, range]);
@@ -23,7 +25,7 @@ export function SweepView({ data }: { data: SweepPageData }) {
   return (
     <LiveSweepChart
       points={points}
-      limits={points.limits}
+      limits={data.points.limits}
       dips={dips}
       bands={bands}
       designBands={designBands}

@@ -2,9 +2,9 @@ import { useEffect, useState } from "react";
 import { Link } from "react-router";
 import { Button } from "~/components/ui/Button";
 import { useHydrated } from "~/components/ui/hydrated";
-import { formatFrequency } from "~/measurement/units";
 import type { SweepPageData } from "../../sweep";
 import { searchWith } from "../../sweeps.schema";
+import { roughFrequency } from "../../words";
 
 /** Rows of the picture shown over and under the plot. */
 const AROUND = 6;
@@ -59,7 +59,7 @@ export function PictureBeside({ data }: { data: SweepPageData }) {
       )}
       <p className="text-small soft">
         Read from a picture: half a pixel is{" "}
-        <span className="font-mono">{formatFrequency(picture.halfColumnHz, null)}</span> across and{" "}
+        <span className="font-mono">{roughFrequency(picture.halfColumnHz)}</span> across and{" "}
         <span className="font-mono">
           {Number(picture.halfRow.toPrecision(2))} {picture.unit}
         </span>{" "}

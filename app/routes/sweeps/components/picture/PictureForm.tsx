@@ -40,6 +40,7 @@ export function PictureForm(props: PictureFormProps) {
   const choice = (name: keyof PictureFields) => ({
     name,
     value: fields[name],
+    autoFocus: missing === name,
     onChange: (event: { target: { value: string } }) => set({ [name]: event.target.value }, name),
   });
   const from = (field: keyof PictureFields, key: keyof NonNullable<PictureNotes["sources"]>) =>

@@ -1,4 +1,5 @@
 import { type KeyboardEvent, useMemo } from "react";
+import type { ReadProblem } from "~/readers/reading";
 import type { PictureErrors, PictureFields } from "../../picture.schema";
 import type { PictureReadingData } from "../../picture-page.server";
 import { TriedView } from "../TriedView";
@@ -11,20 +12,20 @@ interface PictureReadingProps {
   base: string;
   errors: PictureErrors;
   mayEdit: boolean;
-  /** Not a sweep yet: what is missing takes the focus. */
-  unread: boolean;
+  /** Why it is not a sweep yet; what is missing takes the focus. */
+  problem: ReadProblem | null;
 }
 
 /** How a picture was read, and every choice of it; the curve and its dips follow while one works. */
-export function PictureReading({ data, base, errors, mayEdit, unread }: PictureReadingProps) {
+export function PictureReading({ data, base, errors, mayEdit, problem }: PictureReadingProps) {
   const { stored, fields: first, notes, assumed, zeroLines } = data;
   const state = usePictureFields(first, `${base}/reading/try`);
   const shown = state.tried ?? stored;
   const seen = shown.picture ?? stored.picture;
   const faults: PictureErrors = { ...state.errors, ...errors };
   const missing = useMemo(
-    () => (unread ? missingField(stored.problem?.code ?? null, first, notes) : null),
-    [unread, stored, first, notes],
+    () => (problem ? missingField(stored.problem?.code ?? problem.code, first, notes) : null),
+    [problem, stored, first, notes],
   );
   const onKeyDown = (event: KeyboardEvent) => {
     if (event.key.toLowerCase() !== "z" || !(event.ctrlKey || event.metaKey) || event.shiftKey) return;
@@ -36,6 +37,12 @@ export function PictureReading({ data, base, errors, mayEdit, unread }: PictureR
     // biome-ignore lint/a11y/noStaticElementInteractions: undo is heard wherever the focus is; its button is in the form
     <div className="reading-page picture-reading" onKeyDown={onKeyDown}>
       <div className="grid gap-6 content-start min-w-0">
+        {problem && !stored.problem && (
+          <p className="panel border-l-4 border-l-clay">
+            {problem.message} Look it over{mayEdit && ", correct what is wrong, and press “Read it so”"}:
+            until then it is no sweep.
+          </p>
+        )}
         {seen && (
           <PictureBoard
             src={`${base}/picture`}
@@ -121,6 +128,8 @@ function missingField(
   const empty = (["start", "stop", "top", "bottom"] as const).find((name) => fields[name] === "");
   if (empty) return empty;
   if (code === "zero-db-needed") return "zeroDb";
+  const assumed = (["quantity", "scale"] as const).find((name) => notes?.sources?.[name] === "assumed");
+  if (code === "axes-doubtful" && assumed) return assumed;
   const weakest = Object.entries(notes?.stages ?? {}).sort(
     (a, b) => a[1].confidence - b[1].confidence,
   )[0]?.[0];
