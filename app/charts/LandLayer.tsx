@@ -19,10 +19,13 @@ export function LandLayer({ scene, palette, id, lineHidden }: LandLayerProps) {
       <Washes scene={scene} palette={palette} opacity={1} />
       <line x1="0" x2={across(1, plotWidthPx)} y1={top} y2={top} stroke={palette.rule} />
       <Stretched width={pathWidth} height={height} plotWidthPx={plotWidthPx}>
+        <defs>
+          <path id={`${clipId}-shape`} d={scene.land || "M0 0"} />
+        </defs>
         <clipPath id={clipId}>
-          <path d={scene.land || "M0 0"} />
+          <use href={`#${clipId}-shape`} />
         </clipPath>
-        <path d={scene.land} fill={palette.land} />
+        <use href={`#${clipId}-shape`} fill={palette.land} />
       </Stretched>
       <Washes scene={scene} palette={palette} opacity={0.35} />
       <Stretched width={pathWidth} height={height} plotWidthPx={plotWidthPx}>

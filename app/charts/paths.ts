@@ -20,10 +20,12 @@ export interface ProfilePaths {
 export function profilePaths(runs: readonly Run[], box: ProfileBox): ProfilePaths {
   const paths = { land: "", line: "", offScale: "", beyondTop: false, beyondBottom: false };
   for (const run of runs) {
-    const xs = run.fractions.map((fraction) => fraction * box.width);
-    const raw = run.magnitudes.map(box.yOfMagnitude);
-    paths.beyondTop ||= raw.some((y) => y < -SLACK_PX);
-    paths.beyondBottom ||= raw.some((y) => y > box.heightPx + SLACK_PX);
+    const all = run.magnitudes.map(box.yOfMagnitude);
+    paths.beyondTop ||= all.some((y) => y < -SLACK_PX);
+    paths.beyondBottom ||= all.some((y) => y > box.heightPx + SLACK_PX);
+    const kept = cornersOf(run.fractions, all);
+    const xs = kept.map((index) => run.fractions[index] * box.width);
+    const raw = kept.map((index) => all[index]);
     addLand(paths, xs, raw, box);
     addLine(paths, xs, raw, box);
   }
@@ -64,8 +66,34 @@ export function betweenPath(upper: readonly Run[], lower: readonly Run[], box: P
 }
 
 const SLACK_PX = 0.5;
+/** A sixth of a pixel: no eye sees it, and a smooth sweep needs a tenth of its points. */
+const STRAIGHT_PX = 0.16;
 /** A point alone is drawn as a dot: a line too short to see, with round ends. */
 const DOT = "h0.01";
+
+/**
+ * Which points a pen needs: those left out lie within `STRAIGHT_PX` of the straight line between kept ones. From
+ * each kept point the cone that passes all later ones is narrowed until the next point falls outside it.
+ */
+function cornersOf(xs: readonly number[], ys: readonly number[]): number[] {
+  const kept = [0];
+  let anchor = 0;
+  let [steepest, flattest] = [Number.POSITIVE_INFINITY, Number.NEGATIVE_INFINITY];
+  for (let i = 1; i < xs.length; i++) {
+    const dx = xs[i] - xs[anchor];
+    const slope = (ys[i] - ys[anchor]) / dx;
+    if (i > anchor + 1 && !(slope >= flattest && slope <= steepest)) {
+      anchor = i - 1;
+      kept.push(anchor);
+      [steepest, flattest] = [Number.POSITIVE_INFINITY, Number.NEGATIVE_INFINITY];
+    }
+    const reach = xs[i] - xs[anchor];
+    steepest = Math.min(steepest, (ys[i] + STRAIGHT_PX - ys[anchor]) / reach);
+    flattest = Math.max(flattest, (ys[i] - STRAIGHT_PX - ys[anchor]) / reach);
+  }
+  if (xs.length > 1) kept.push(xs.length - 1);
+  return kept;
+}
 
 function addLand(paths: ProfilePaths, xs: number[], raw: number[], box: ProfileBox) {
   if (xs.length < 2) return;
