@@ -32,6 +32,11 @@ export interface Fit {
   widthHalfHz(power: number): number | null;
 }
 
+/** The larger σ of the sweep's and of the samples near the dip, and that of the sweep alone. */
+export interface FitNoise extends Noise {
+  sweepDb: number;
+}
+
 /**
  * Fits the resonator to abs Γ² over the window, and when the shape leaves more than noise there, over ever
  * smaller inner windows with the far power held, down to FEWEST_POINTS. Null when no window will do: the
@@ -48,7 +53,7 @@ export function fitDip(
   magnitude: Float64Array,
   index: number,
   window: Window,
-  noise: Noise,
+  noise: FitNoise,
   complex: boolean,
 ): Fit | null {
   let { from, to } = window;
@@ -78,7 +83,7 @@ function fitInside(
   magnitude: Float64Array,
   index: number,
   window: Window,
-  noise: Noise,
+  noise: FitNoise,
   complex: boolean,
   heldPower: number | null,
 ): Fit | number {
@@ -91,7 +96,7 @@ function fitInside(
   if (!flat) return 1;
   if (successive(flat.standard) < HOPELESS) return flat.sigma / noise.gamma;
   let best: Candidate | null = { solution: first, residuals: flat };
-  if (flat.relative >= ROUNDING) best = likelier(some, first.p, free, complex);
+  if (flat.relative >= ROUNDING) best = likelier(some, first.p, free, complex, noise.sweepDb);
   if (!best || !smallEnough(best.residuals, noise)) return flat.sigma / noise.gamma;
   if (flat.relative >= ROUNDING && window.to - window.from + 1 > some.x.length) {
     const means = meanPoints(frequencyHz, magnitude, window, referenceHz, MEANS, best.solution.p);

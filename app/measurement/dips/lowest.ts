@@ -34,7 +34,11 @@ export function lowestOf(
   const { index, prominenceDb } = found;
   const near = noiseNear(magnitude, index);
   if (mayFit) {
-    const allowed = { db: Math.max(noise.db, near.db), gamma: Math.max(noise.gamma, near.gamma) };
+    const allowed = {
+      db: Math.max(noise.db, near.db),
+      gamma: Math.max(noise.gamma, near.gamma),
+      sweepDb: noise.db,
+    };
     const window = fitWindow(magnitude, index, prominenceDb, between.from, between.to);
     const fit = fitDip(frequencyHz, magnitude, index, window, allowed, sweep.gammaRe !== undefined);
     if (fit) {

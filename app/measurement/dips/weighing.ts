@@ -11,18 +11,21 @@ export interface Candidate {
 
 /**
  * The resonator fitted to `data` under each kind of scatter, from `start`; the one whose scatter explains
- * the residuals better. `free` parameters move; `complex` says that abs Γ comes from a complex Γ. Null when
- * neither gives finite numbers.
+ * the residuals better. `free` parameters move; `complex` says that abs Γ comes from a complex Γ, `noiseDb`
+ * is the sweep's σ. Null when neither gives finite numbers.
  */
 export function likelier(
   data: Points,
   start: Float64Array,
   free: number,
   complex: boolean,
+  noiseDb: number,
 ): Candidate | null {
   const even = reweigh(data, start, free, "even", complex);
   const decibel = reweigh(data, start, free, "decibel", complex);
-  return !even || (decibel && decibel.residuals.score < even.residuals.score - CLEARLY) ? decibel : even;
+  if (!even || !decibel) return even ?? decibel;
+  const clearly = decibel.residuals.score < even.residuals.score - CLEARLY;
+  return clearly && decibel.residuals.sigma <= SAME_EVERYWHERE * noiseDb ? decibel : even;
 }
 
 /** Last fit on the means of all samples; their bias is that of single samples, as the selection told it. */
@@ -69,3 +72,8 @@ const ROUNDS = 3;
  * round a little too wide.
  */
 const CLEARLY = 4;
+/**
+ * A scatter that is even in decibels is so in the whole sweep: more of it in a dip than outside is another
+ * kind.
+ */
+const SAME_EVERYWHERE = 1.5;

@@ -7,7 +7,7 @@ import { fitWindow } from "../../../app/measurement/dips/window.ts";
 import scipy from "../../fixtures/measurement/scipy.json";
 import { normals, resonatorSweep, truthOf } from "../resonators.ts";
 
-const NO_NOISE = { db: 0, gamma: 0 };
+const NO_NOISE = { db: 0, gamma: 0, sweepDb: 0 };
 
 function fitOf(sweep: ReturnType<typeof resonatorSweep>, noise = NO_NOISE) {
   const { frequencyHz, magnitude } = sweep;
@@ -152,7 +152,7 @@ describe("long sweeps", () => {
     const normal = normals(21);
     const sweep = resonatorSweep({ r: 1.4, q: 12, points: 100_001, spanHz: 4e6 });
     const magnitude = sweep.magnitude.map((v) => v * 10 ** ((0.1 * normal()) / 20));
-    const fit = fitOf({ ...sweep, magnitude }, { db: 0.1, gamma: 0.01 });
+    const fit = fitOf({ ...sweep, magnitude }, { db: 0.1, gamma: 0.01, sweepDb: 0.1 });
     expect(fit?.frequencyHalfHz).toBeLessThan(150);
     expect(fit?.frequencyHalfHz).toBeGreaterThan(20);
     expect(Math.abs((fit?.resonator.f0Hz ?? 0) - 14.15e6)).toBeLessThan(2 * (fit?.frequencyHalfHz ?? 0));
