@@ -52,9 +52,10 @@ export const pictureSchema = z.object({
     "Over 0 Ω.",
   ),
   traceColor: colour,
-  zeroFrom: z.enum(["number", "crest", "trace"]),
-  zeroDb: numberOf("the level"),
-  zeroTrace: colour,
+  // Asked of levels only.
+  zeroFrom: z.enum(["number", "crest", "trace"]).default("number"),
+  zeroDb: z.string().default("").pipe(numberOf("the level")),
+  zeroTrace: z.string().default("").pipe(colour),
   masked: z
     .string()
     .max(4000)

@@ -4,9 +4,13 @@ import { notFound } from "~/errors";
 import type { Sweep } from "~/measurement/sweep";
 import { loadPoints } from "~/services/sweep-points.server";
 
-/** The sweep of this project, or 404. */
-export async function requireSweep(access: ProjectAccess, publicId: string): Promise<sweeps.FoundSweep> {
-  const found = await sweeps.findByPublicId(publicId);
+/** The sweep of this project, or 404. `asked` is the query, where it was begun while access was still being asked. */
+export async function requireSweep(
+  access: ProjectAccess,
+  publicId: string,
+  asked: ReturnType<typeof sweeps.findByPublicId> = sweeps.findByPublicId(publicId),
+): Promise<sweeps.FoundSweep> {
+  const found = await asked;
   if (!found || found.sweep.projectId !== access.project.id) throw notFound("sweep");
   return found;
 }

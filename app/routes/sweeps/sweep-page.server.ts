@@ -25,12 +25,12 @@ export async function loadSweepPage(
 ) {
   const { project, person } = access;
   const { sweep, reading } = found;
-  const chosen = view.dip ? dips.findByPublicId(view.dip) : undefined;
-  const [known, designBands, dismissed, dip] = await Promise.all([
+  const [known, designBands, dismissed, thread, sweepThread] = await Promise.all([
     dips.findAllBySweep(sweep.id),
     projects.findDesignBands(project.id),
     person ? people.findDismissals(person.id) : [],
-    chosen,
+    view.dip ? threadOf(view.dip, access, sweep.id) : null,
+    listThread({ projectId: project.id, sweepId: sweep.id, dipId: null }, access),
   ]);
   const tried = triedSettings(view, settings);
   const zoomed = view.fromHz !== null || view.toHz !== null;
@@ -50,17 +50,21 @@ export async function loadSweepPage(
     designBands: designBands.map(({ name, lowHz, highHz }) => ({ name, lowHz, highHz })),
     bands: bandsOverlapping((project.ituRegion as ItuRegion | null) ?? null, range.fromHz, range.toHz),
     dismissed,
-    thread:
-      dip && dip.dip.sweepId === sweep.id
-        ? {
-            publicId: dip.dip.publicId,
-            verdict: dip.dip.verdict,
-            verdictText: dip.dip.verdictText,
-            verdictBy: dip.verdictBy,
-            notes: await listThread({ projectId: project.id, sweepId: sweep.id, dipId: dip.dip.id }, access),
-          }
-        : null,
-    sweepThread: await listThread({ projectId: project.id, sweepId: sweep.id, dipId: null }, access),
+    thread,
+    sweepThread,
+  };
+}
+
+/** The chosen dip with its verdict and its thread; null where it is not a dip of this sweep. */
+async function threadOf(publicId: string, access: ProjectAccess, sweepId: number) {
+  const found = await dips.findByPublicId(publicId);
+  if (found?.dip.sweepId !== sweepId) return null;
+  return {
+    publicId: found.dip.publicId,
+    verdict: found.dip.verdict,
+    verdictText: found.dip.verdictText,
+    verdictBy: found.verdictBy,
+    notes: await listThread({ projectId: access.project.id, sweepId, dipId: found.dip.id }, access),
   };
 }
 

@@ -24,8 +24,9 @@ import { editSweepSchema, parseView, settingsSchema } from "./sweeps.schema";
 export const meta: Route.MetaFunction = ({ data }) => [{ title: `${data?.sweep.title ?? "Sweep"} · Swale` }];
 
 export async function loader(args: Route.LoaderArgs) {
-  const access = await requireProject(args, "project.read");
-  const found = await requireSweep(access, args.params.sweep);
+  const asked = sweeps.findByPublicId(args.params.sweep);
+  const [access] = await Promise.all([requireProject(args, "project.read"), asked]);
+  const found = await requireSweep(access, args.params.sweep, asked);
   const { sweep, file, reading, analysis } = found;
   if (sweep.problem || !analysis) {
     throw redirect(`/projects/${access.project.publicId}/sweeps/${sweep.publicId}/reading`);

@@ -104,15 +104,13 @@ function Strip({ picture, src, over }: StripProps) {
             preserveAspectRatio="none"
             aria-hidden="true"
           >
-            {line.map((piece) => {
-              const points = piece.map(({ x, y }) => `${x},${y}`).join(" ");
-              return (
-                <g key={piece[0].x}>
-                  <polyline className="board-line-ground" points={points} />
-                  <polyline className="board-line" points={points} />
-                </g>
-              );
-            })}
+            {line.map((piece) => (
+              <polyline
+                key={piece[0].x}
+                className="board-line"
+                points={piece.map(({ x, y }) => `${x},${y}`).join(" ")}
+              />
+            ))}
           </svg>
         )}
       </div>

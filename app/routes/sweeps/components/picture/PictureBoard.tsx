@@ -136,13 +136,11 @@ export function PictureBoard({ src, seen, fields, mayEdit, cornersFirst, set }: 
               points={corners.map(({ x, y }) => `${x},${y}`).join(" ")}
             />
             {seen.line.map((piece) => (
-              <g key={piece[0].x}>
-                <polyline
-                  className="board-line-ground"
-                  points={piece.map(({ x, y }) => `${x},${y}`).join(" ")}
-                />
-                <polyline className="board-line" points={piece.map(({ x, y }) => `${x},${y}`).join(" ")} />
-              </g>
+              <polyline
+                key={piece[0].x}
+                className="board-line"
+                points={piece.map(({ x, y }) => `${x},${y}`).join(" ")}
+              />
             ))}
           </svg>
           {live && tool === "corners" && (
