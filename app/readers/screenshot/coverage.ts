@@ -40,7 +40,7 @@ export function coverageOf(picture: Picture, ground: Ground, color: Rgb): Covera
     (g, y) =>
       usable(g, color, base, grid) ?? (g && outer && ground.outerRows.includes(y) ? outer : undefined),
   );
-  const columnBase = ground.columns.map((g) => usable(g, color, base, grid));
+  const columnBase = ground.columns.map((g) => g && difference(g, color));
   const { data } = picture;
   for (let y = 0; y < height; y++) {
     const rowGround = rowBase[y + ground.top];
@@ -68,7 +68,7 @@ function isGrid(data: ArrayLike<number>, j: number, grid: Difference): boolean {
   const green = data[j + 1] - grid.from[1];
   const blue = data[j + 2] - grid.from[2];
   const along = (red * grid.to[0] + green * grid.to[1] + blue * grid.to[2]) / grid.square;
-  if (along > 1.15) return false;
+  if (along > 1.3) return false;
   const off =
     (red - along * grid.to[0]) ** 2 + (green - along * grid.to[1]) ** 2 + (blue - along * grid.to[2]) ** 2;
   return off < GRID_TOLERANCE ** 2;

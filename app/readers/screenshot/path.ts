@@ -23,12 +23,18 @@ interface Node {
 
 /**
  * The run of each column that a trace follows, by dynamic programming: ink is worth its coverage, gaps and
- * jumps cost. Undefined where the trace was not seen. `top` and `bottom` are the plot's limits in rows.
+ * jumps cost. Undefined where the trace was not seen. `top` and `bottom` are the plot's limits in rows;
+ * `thickness` of the stroke in pixels, 0 while it is not known.
  *
  * Method: R. Bellman's dynamic programming over columns, as commonly used for following lines in pictures
  * (common practice, no source).
  */
-export function followTrace(columns: Run[][], top: number, bottom: number): (Run | undefined)[] {
+export function followTrace(
+  columns: Run[][],
+  top: number,
+  bottom: number,
+  thickness = 0,
+): (Run | undefined)[] {
   const nodes: Node[][] = [];
   let best: Node | null = null;
   let bestLeaving: Node | null = null;
@@ -48,7 +54,7 @@ export function followTrace(columns: Run[][], top: number, bottom: number): (Run
       }
       if (best) offer(node, best, best.score - RESTART_PRICE);
       if (bestLeaving && leaves(run)) offer(node, bestLeaving, bestLeaving.score - EDGE_RESTART_PRICE);
-      node.score += worth(run);
+      node.score += worth(run, thickness);
       return node;
     });
     nodes.push(here);
@@ -76,8 +82,10 @@ function wander(a: Run, b: Run): number {
   return WANDER_PRICE * Math.min(MOST_WANDER, Math.abs(a.middle - b.middle));
 }
 
-function worth(run: Run): number {
-  return Math.min(1, run.peak * 1.2);
+/** Ink of the stroke's own thickness is worth most: the edge of a hollow marker is thinner. */
+function worth(run: Run, thickness: number): number {
+  const full = thickness > 0 ? Math.min(1, 0.4 + (0.6 * run.ink) / thickness) : 1;
+  return Math.min(1, run.peak * 1.2) * full;
 }
 
 function gapBetween(a: Run, b: Run): number {

@@ -29,6 +29,8 @@ const STEEP = 1.7;
 /** Longest stretch over which a hidden trace is drawn on. */
 const LONGEST_BRIDGE = 24;
 const EDGE_REACH = 5;
+/** Thickness, in pixels, from which a marker's thin edge can be told from the stroke. */
+const THICK = 1.6;
 /** Pixels between neighbouring runs that are no longer one stroke. */
 const JUMP = 2;
 
@@ -42,13 +44,12 @@ const JUMP = 2;
 export function readTrace(coverage: Coverage, top: number, bottom: number): Trace {
   const columns = runsByColumn(coverage);
   let path = followTrace(columns, top, bottom);
-  const blobs = findBlobs(coverage, thicknessOf(path));
-  if (blobs)
-    path = followTrace(
-      columns.map((runs) => runs.filter((r) => !touches(r, blobs, coverage))),
-      top,
-      bottom,
-    );
+  const firstThickness = thicknessOf(path);
+  const blobs = findBlobs(coverage, firstThickness);
+  if (blobs || firstThickness > THICK) {
+    const clear = blobs ? columns.map((runs) => runs.filter((r) => !touches(r, blobs, coverage))) : columns;
+    path = followTrace(clear, top, bottom, firstThickness > THICK ? firstThickness : 0);
+  }
   const width = path.length;
   const row = new Float64Array(width).fill(Number.NaN);
   const uncertainty = new Float64Array(width).fill(Number.NaN);
