@@ -1,4 +1,5 @@
 import sharp from "sharp";
+import { cornersOf, homography, mapPoint } from "~/readers/screenshot/rectify";
 
 /** Screens of our own invention, drawn at test time: a dark plot with printed axes and one sweep with a dip. */
 export interface DrawnScreen {
@@ -59,4 +60,41 @@ export async function drawnScreen(screen: DrawnScreen = {}): Promise<Buffer> {
     `<rect width="2" height="2" fill="rgb(${shade},20,${(shade * 7) % 200})"/></svg>`,
   );
   return sharp(Buffer.from(svg)).png().toBuffer();
+}
+
+/** Where the plot's corners lie in the photograph: top left, top right, bottom right, bottom left. */
+export const PHOTO_CORNERS = [
+  { x: 130, y: 110 },
+  { x: 850, y: 170 },
+  { x: 800, y: 560 },
+  { x: 100, y: 500 },
+];
+
+/** The screen as a camera sees it from the side, blurred a little and worn by compression. */
+export async function photographedScreen(screen: DrawnScreen = {}): Promise<Buffer> {
+  const { data, info } = await sharp(await drawnScreen(screen))
+    .ensureAlpha()
+    .raw()
+    .toBuffer({ resolveWithObject: true });
+  const back = homography(PHOTO_CORNERS, cornersOf(PLOT));
+  if (!back) throw new Error("no such view");
+  const [width, height] = [1000, 700];
+  const sums = new Float32Array(3 * width * height).fill(0x2b);
+  for (let y = 0; y < height; y++) {
+    for (let x = 0; x < width; x++) {
+      for (let s = 0; s < 9; s++) {
+        const at = mapPoint(back, { x: x + (s % 3) / 3 - 1 / 3, y: y + Math.floor(s / 3) / 3 - 1 / 3 });
+        const [px, py] = [Math.round(at.x), Math.round(at.y)];
+        if (px < 0 || py < 0 || px >= info.width || py >= info.height) continue;
+        for (let c = 0; c < 3; c++) {
+          const to = 3 * (y * width + x) + c;
+          sums[to] += (data[4 * (py * info.width + px) + c] - 0x2b) / 9;
+        }
+      }
+    }
+  }
+  return sharp(Buffer.from(Uint8Array.from(sums)), { raw: { width, height, channels: 3 } })
+    .blur(0.5)
+    .jpeg({ quality: 90 })
+    .toBuffer();
 }

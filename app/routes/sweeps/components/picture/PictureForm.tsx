@@ -105,6 +105,14 @@ export function PictureForm(props: PictureFormProps) {
         </Group>
         <TraceChoice {...props} name="traceColor" legend="Trace" autoFocus={missing === "traceColor"} />
         {fields.quantity === "level" && <ZeroLine {...props} input={input} />}
+        <SelectField
+          label="The plot is seen"
+          options={[
+            { value: "straight", label: "straight on, as in a screenshot" },
+            { value: "angle", label: "at an angle, as in a photograph" },
+          ]}
+          {...choice("seenAs")}
+        />
         <details open={fields.masked !== "" || undefined}>
           <summary>Stretches left out</summary>
           <div className="grid gap-2 pt-3">
@@ -118,14 +126,6 @@ export function PictureForm(props: PictureFormProps) {
         <details open={missing === "x0" || fields.seenAs === "angle" || undefined}>
           <summary>Corners of the plot</summary>
           <div className="grid gap-3 pt-3">
-            <SelectField
-              label="The plot is seen"
-              options={[
-                { value: "straight", label: "straight on, as in a screenshot" },
-                { value: "angle", label: "at an angle, as in a photograph" },
-              ]}
-              {...choice("seenAs")}
-            />
             <div className="grid grid-cols-2 gap-3">
               {CORNER_FIELDS.map((name, i) => (
                 <InputField
