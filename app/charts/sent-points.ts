@@ -1,32 +1,51 @@
 import type { Sweep } from "../measurement/sweep.ts";
 import type { ChartPoints } from "./decimate.ts";
 
-/** Points on their way from the server to a chart: an even grid as its ends, magnitudes rounded to what can be seen. */
+/**
+ * Points on their way from the server to a chart: an even grid as its ends, columns of numbers as base64 (float32 for
+ * abs Γ, float64 for frequencies), because thousands of single numbers cost the page's data format dearly.
+ */
 export interface SentPoints {
-  grid: { startHz: number; stopHz: number } | { frequencyHz: number[] };
+  count: number;
+  grid: { startHz: number; stopHz: number } | { frequencyHz: string };
   /** abs Γ; NaN is a gap. */
-  magnitude: number[];
-  limits?: { low: number[]; high: number[] };
+  magnitude: string;
+  limits?: { low: string; high: string };
+}
+
+export interface UnpackedPoints extends ChartPoints {
+  limits?: { low: ArrayLike<number>; high: ArrayLike<number> };
 }
 
 export function packPoints(sweep: Sweep | null): SentPoints {
-  if (!sweep) return { grid: { frequencyHz: [] }, magnitude: [] };
+  if (!sweep) return { count: 0, grid: { frequencyHz: "" }, magnitude: "" };
   const { frequencyHz, magnitude, pictureLimits } = sweep;
+  const single = (values: Float64Array) => toBase64(Float32Array.from(values));
   return {
+    count: frequencyHz.length,
     grid: isEven(frequencyHz)
       ? { startHz: frequencyHz[0], stopHz: frequencyHz[frequencyHz.length - 1] }
-      : { frequencyHz: Array.from(frequencyHz, (hz) => Math.round(hz * 10) / 10) },
-    magnitude: rounded(magnitude),
+      : { frequencyHz: toBase64(frequencyHz) },
+    magnitude: single(magnitude),
     ...(pictureLimits && {
-      limits: { low: rounded(pictureLimits.magnitudeLow), high: rounded(pictureLimits.magnitudeHigh) },
+      limits: { low: single(pictureLimits.magnitudeLow), high: single(pictureLimits.magnitudeHigh) },
     }),
   };
 }
 
-export function unpackPoints({ grid, magnitude }: SentPoints): ChartPoints {
-  if ("frequencyHz" in grid) return { frequencyHz: grid.frequencyHz, magnitude };
-  const step = (grid.stopHz - grid.startHz) / (magnitude.length - 1);
-  return { frequencyHz: magnitude.map((_, i) => grid.startHz + i * step), magnitude };
+export function unpackPoints({ count, grid, magnitude, limits }: SentPoints): UnpackedPoints {
+  const single = (text: string) => new Float32Array(fromBase64(text));
+  return {
+    frequencyHz:
+      "frequencyHz" in grid ? new Float64Array(fromBase64(grid.frequencyHz)) : evenGrid(grid, count),
+    magnitude: single(magnitude),
+    ...(limits && { limits: { low: single(limits.low), high: single(limits.high) } }),
+  };
+}
+
+function evenGrid({ startHz, stopHz }: { startHz: number; stopHz: number }, count: number): Float64Array {
+  const step = (stopHz - startHz) / (count - 1);
+  return Float64Array.from({ length: count }, (_, i) => startHz + i * step);
 }
 
 /** Within a part in ten million of its span everywhere: a thousandth of a pixel. */
@@ -40,9 +59,20 @@ function isEven(frequencyHz: Float64Array): boolean {
   return true;
 }
 
-/** Five decimals of abs Γ: 80 dB of return loss. */
-function rounded(values: Float64Array): number[] {
-  return Array.from(values, (value) => Math.round(value * 1e5) / 1e5);
+function toBase64(values: Float32Array | Float64Array): string {
+  const bytes = new Uint8Array(values.buffer, values.byteOffset, values.byteLength);
+  let text = "";
+  for (let i = 0; i < bytes.length; i += CHUNK) text += String.fromCharCode(...bytes.subarray(i, i + CHUNK));
+  return btoa(text);
+}
+
+function fromBase64(text: string): ArrayBuffer {
+  const binary = atob(text);
+  const bytes = new Uint8Array(binary.length);
+  for (let i = 0; i < binary.length; i++) bytes[i] = binary.charCodeAt(i);
+  return bytes.buffer;
 }
 
 const EVENNESS = 1e-7;
+/** As many arguments as any engine takes. */
+const CHUNK = 8192;

@@ -25,7 +25,7 @@ export function SweepView({ data }: { data: SweepPageData }) {
   return (
     <LiveSweepChart
       points={points}
-      limits={data.points.limits}
+      limits={points.limits}
       dips={dips}
       bands={bands}
       designBands={designBands}
