@@ -16,6 +16,8 @@ export default function handleRequest(
   routerContext: EntryContext,
   loadContext: Readonly<RouterContextProvider>,
 ) {
+  // Pages differ from person to person, and the Back button must not show them after signing out.
+  if (!responseHeaders.has("Cache-Control")) responseHeaders.set("Cache-Control", "private, no-cache");
   if (request.method.toUpperCase() === "HEAD") {
     return new Response(null, { status: responseStatusCode, headers: responseHeaders });
   }

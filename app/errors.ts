@@ -19,6 +19,11 @@ export function notFound(what = "page", signIn = false) {
   );
 }
 
+/** Something that this service needs does not answer just now. */
+export function unavailable(title: string, message: string) {
+  return data<PlainError>({ title, message }, { status: 503 });
+}
+
 export function refused(message: string) {
   return data<PlainError>({ title: "Not allowed", message }, { status: 403 });
 }

@@ -54,7 +54,7 @@ export function ErrorPage({ error }: { error: unknown }) {
   const { pathname, search } = useLocation();
   const status = isRouteErrorResponse(error) ? error.status : 500;
   const words = WORDS[status] ?? (status < 500 ? WORDS[400] : WORDS[500]);
-  const said = isRouteErrorResponse(error) && status < 500 ? saidBy(error.data) : {};
+  const said = isRouteErrorResponse(error) && (status < 500 || status === 503) ? saidBy(error.data) : {};
   const title = said.title ?? words.title;
   const action = said.signIn
     ? { to: `/sign-in?next=${encodeURIComponent(pathname + search)}`, label: "Sign in" }

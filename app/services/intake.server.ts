@@ -7,6 +7,7 @@ import { DEFAULT_SETTINGS } from "~/measurement/sweep";
 import { type Given, MAX_FILE_BYTES, type Reading, type ReadProblem } from "~/readers/reading";
 import { placeInPicture } from "~/readers/screenshot/in-picture";
 import { storeAnalysis } from "./analyses.server.ts";
+import { cleanFileName, plainText, titleFromFileName } from "./file-names.ts";
 import { doubted, isBeyondReading, rememberedFor } from "./picture-doubt.ts";
 import type { ReadOutcome } from "./read-and-analyse.server.ts";
 import { readFile } from "./reading.server.ts";
@@ -65,7 +66,7 @@ export async function takeIn(input: TakeIn): Promise<Taken> {
       const fileId = await sweeps.insertFile(
         {
           projectId: project.id,
-          name: cleanName(file.name),
+          name: cleanFileName(file.name),
           sizeBytes: file.bytes.length,
           sha256,
           storageKey,
@@ -73,7 +74,9 @@ export async function takeIn(input: TakeIn): Promise<Taken> {
         },
         tx,
       );
-      const title = (input.title?.trim() || titleOf(file.name)).slice(0, 160);
+      const title = Array.from(plainText(input.title ?? "") || titleFromFileName(file.name))
+        .slice(0, 160)
+        .join("");
       const sweep = await sweeps.insert(
         { projectId: project.id, fileId, title, takenAt: input.takenAt ?? null, createdBy: input.by.id },
         tx,
@@ -93,7 +96,11 @@ export async function takeIn(input: TakeIn): Promise<Taken> {
         : { kind: "unread" as const, sweepPublicId: sweep.publicId, title, problem: outcome.problem };
     });
   } catch (error) {
-    await deleteObject(storageKey).catch(() => undefined);
+    await deleteObject(storageKey).then(
+      () => jobs.deleteById(undo),
+      // The noted removal does it later.
+      () => undefined,
+    );
     if (!isDuplicate(error)) throw error;
     const first = await sweeps.findFileBySha256(project.id, sha256);
     if (!first) throw error;
@@ -172,20 +179,6 @@ function withFound(before: Given, reading: Reading): Given {
 
 function twiceOf(first: { sweep: { publicId: string; title: string } }): Taken {
   return { kind: "twice", sweepPublicId: first.sweep.publicId, title: first.sweep.title };
-}
-
-function cleanName(name: string): string {
-  const last = name.split(/[\\/]/).pop() ?? "";
-  // biome-ignore lint/suspicious/noControlCharactersInRegex: control characters are what must go
-  return last.replace(/[\u0000-\u001f\u007f]/g, "").slice(0, 255) || "unnamed";
-}
-
-function titleOf(name: string): string {
-  const bare = cleanName(name)
-    .replace(/\.[A-Za-z0-9]{1,5}$/, "")
-    .replace(/[_]+/g, " ")
-    .trim();
-  return bare || "Unnamed sweep";
 }
 
 function tooLarge(bytes: number): ReadProblem {

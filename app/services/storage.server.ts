@@ -18,6 +18,9 @@ const client = new S3Client({
   credentials: { accessKeyId: env.S3_ACCESS_KEY_ID, secretAccessKey: env.S3_SECRET_ACCESS_KEY },
   requestChecksumCalculation: "WHEN_REQUIRED",
   responseChecksumValidation: "WHEN_REQUIRED",
+  // A store that does not answer must not hold a request for ever: nothing moving for so long is an error.
+  requestHandler: { connectionTimeout: 3_000, socketTimeout: 20_000 },
+  maxAttempts: 2,
 });
 
 export function sha256Of(bytes: Uint8Array): string {

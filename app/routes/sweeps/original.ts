@@ -1,9 +1,10 @@
 import { Readable } from "node:stream";
 import { requireProject } from "~/auth/require.server";
 import { notFound } from "~/errors";
+import { attachment } from "~/services/file-names";
 import { mayCarryPlace, strippedCopy } from "~/services/picture-copies.server";
-import { getObject, getObjectStream } from "~/services/storage.server";
 import type { Route } from "./+types/original";
+import { readOriginal, streamOriginal } from "./open-original.server";
 import { requireSweep } from "./require-sweep.server";
 
 /**
@@ -15,12 +16,12 @@ export async function loader(args: Route.LoaderArgs) {
   const { file } = await requireSweep(access, args.params.sweep);
   const headers = {
     "Content-Type": "application/octet-stream",
-    "Content-Disposition": `attachment; filename*=UTF-8''${encodeURIComponent(file.name)}`,
+    "Content-Disposition": attachment(file.name),
     "X-Content-Type-Options": "nosniff",
     "Cache-Control": "private, no-cache",
   };
   if (!access.may("sweep.edit")) {
-    const bytes = await getObject(file.storageKey);
+    const bytes = await readOriginal(file.storageKey);
     if (mayCarryPlace(file.name, bytes)) {
       const copy = await strippedCopy(bytes);
       if (!copy) throw notFound("copy of this picture without its camera data");
@@ -29,7 +30,7 @@ export async function loader(args: Route.LoaderArgs) {
       });
     }
   }
-  const body = await getObjectStream(file.storageKey);
+  const body = await streamOriginal(file.storageKey);
   return new Response(Readable.toWeb(body) as ReadableStream, {
     headers: { ...headers, "Content-Length": String(file.sizeBytes), ETag: `"${file.sha256}"` },
   });

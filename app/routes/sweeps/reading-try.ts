@@ -1,8 +1,8 @@
 import { requireProject } from "~/auth/require.server";
 import { DEFAULT_SETTINGS } from "~/measurement/sweep";
 import { type TriedReading, tryReading } from "~/services/reading-preview.server";
-import { getObject } from "~/services/storage.server";
 import type { Route } from "./+types/reading-try";
+import { readOriginal } from "./open-original.server";
 import type { PictureFields } from "./picture.schema";
 import { tryPictureForm } from "./picture-page.server";
 import { givenFromForm, type ReadingFormErrors } from "./reading.schema";
@@ -21,7 +21,7 @@ export async function action(args: Route.ActionArgs): Promise<TryAnswer> {
     return { errors: { form: "Nothing of this file was understood, so there is nothing to choose." } };
   const form = await args.request.formData();
   if (current.format === "screenshot") return (await tryPictureForm(found, form)) as TryAnswer;
-  const bytes = await getObject(found.file.storageKey);
+  const bytes = await readOriginal(found.file.storageKey);
   const result = givenFromForm(form, found.reading?.given ?? {}, current);
   if ("errors" in result) return { errors: result.errors };
   const settings = found.analysis?.settings ?? DEFAULT_SETTINGS;
