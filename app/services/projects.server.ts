@@ -4,6 +4,7 @@ import * as jobs from "~/db/jobs.server";
 import * as people from "~/db/people.server";
 import * as projects from "~/db/projects.server";
 import * as sweeps from "~/db/sweeps.server";
+import { type Merged, mergeEdit } from "./merge-edit.ts";
 
 /** Makes a project with its first owner. */
 export function createProject(project: projects.NewProject, ownerId: number) {
@@ -26,6 +27,24 @@ export function deleteProject(id: number): Promise<void> {
       tx,
     );
     await projects.deleteById(id, tx);
+  });
+}
+
+export type AboutValues = Pick<projects.Project, "title" | "summary" | "visibility" | "ituRegion">;
+
+/** Keeps what a person changed of what a project says of itself; writes nothing where that meets another's change. */
+export function changeAbout(
+  id: number,
+  was: Partial<AboutValues>,
+  wanted: AboutValues,
+): Promise<Merged<AboutValues> & { now: AboutValues }> {
+  return inTransaction(async (tx) => {
+    const project = await projects.lock(id, tx);
+    const { title, summary, visibility, ituRegion } = project ?? wanted;
+    const now = { title, summary, visibility, ituRegion };
+    const merged = mergeEdit(was, now, wanted);
+    if (merged.conflicts.length === 0) await projects.update(id, merged.changes, tx);
+    return { ...merged, now };
   });
 }
 

@@ -6,9 +6,44 @@ import type { AnalysisSettings } from "~/measurement/sweep";
 import type { Given, ReadProblem } from "~/readers/reading";
 import { storeAnalysis } from "./analyses.server.ts";
 import { storeOutcome } from "./intake.server.ts";
+import { mergeEdit } from "./merge-edit.ts";
 import { readFile } from "./reading.server.ts";
 import { getObject } from "./storage.server.ts";
 import { loadPoints } from "./sweep-points.server.ts";
+
+export interface TitleAndDate {
+  title: string;
+  /** To the minute in UTC, `2026-09-14T17:20`; null where it is not known. */
+  takenAt: string | null;
+}
+
+/** As the form shows them. */
+export function titleAndDateOf(sweep: { title: string; takenAt: Date | null }): TitleAndDate {
+  return { title: sweep.title, takenAt: sweep.takenAt?.toISOString().slice(0, 16) ?? null };
+}
+
+/** Keeps what a person changed of title and date; answers what somebody else changed meanwhile, with nothing kept. */
+export function keepTitleAndDate(
+  id: number,
+  was: Partial<TitleAndDate>,
+  wanted: { title: string; takenAt: Date | null },
+): Promise<TitleAndDate | null> {
+  return inTransaction(async (tx) => {
+    const sweep = await sweeps.lock(id, tx);
+    if (!sweep) return null;
+    const now = titleAndDateOf(sweep);
+    const { changes, conflicts } = mergeEdit(was, { ...now }, { ...titleAndDateOf(wanted) });
+    if (conflicts.length > 0) return now;
+    const { title, takenAt } = changes;
+    if (title === undefined && takenAt === undefined) return null;
+    await sweeps.update(
+      id,
+      { ...(title !== undefined && { title }), ...(takenAt !== undefined && { takenAt: wanted.takenAt }) },
+      tx,
+    );
+    return null;
+  });
+}
 
 /** Analyses the sweep anew under other settings and keeps that as the current analysis. */
 export async function keepSettings(

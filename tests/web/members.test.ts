@@ -87,6 +87,32 @@ describe("members", () => {
   });
 });
 
+describe("two owners with the settings open at once", () => {
+  const opened = (title: string) => ({
+    intent: "about",
+    was: JSON.stringify({ title, summary: "", visibility: "private", ituRegion: null }),
+    visibility: "private",
+  });
+
+  it("do not undo one another's changes", async () => {
+    const title = await makeProject();
+    await browser.post(`${page}/settings`, { ...opened(title), title: `${title} renamed` });
+    await browser.post(`${page}/settings`, { ...opened(title), title, summary: "About it" });
+    const now = await projects.findWithRole(project.publicId, owner.id);
+    expect(now?.project).toMatchObject({ title: `${title} renamed`, summary: "About it" });
+  });
+
+  it("are asked where both changed the same", async () => {
+    const title = await makeProject();
+    await browser.post(`${page}/settings`, { ...opened(title), title: `${title} renamed` });
+    const answer = await browser.post(`${page}/settings`, { ...opened(title), title: `${title} other` });
+    expect(answer.status).toBe(409);
+    expect(await answer.text()).toContain("Somebody else made this");
+    const now = await projects.findWithRole(project.publicId, owner.id);
+    expect(now?.project.title).toBe(`${title} renamed`);
+  });
+});
+
 describe("the last owner", () => {
   it.each([
     ["leave", () => ({ intent: "leave" })],

@@ -47,7 +47,7 @@ export function Thread({ projectId, place, thread, mayWrite }: ThreadProps) {
 
 function WriteNote({ where }: { where: ThreadWhere }) {
   const hydrated = useHydrated();
-  const label = "Write a note";
+  const label = `Write a note on ${where.place.dip ? "this dip" : where.place.sweep ? "the sweep" : "the project"}`;
   if (hydrated) return <NoteForm where={where} label={label} />;
   return (
     <div className="grid gap-1">

@@ -1,5 +1,6 @@
 import { z } from "zod";
 import { PROJECT_ROLES } from "~/auth/permissions";
+import { plainText } from "~/services/file-names";
 
 /** Words for a choice, and what follows from it. */
 export const VISIBILITIES = [
@@ -36,7 +37,7 @@ export const ITU_REGIONS = [
 
 const titleField = z
   .string({ error: "Give the project a title." })
-  .trim()
+  .overwrite(plainText)
   .min(1, "Give the project a title.")
   .max(160, "At most 160 characters.");
 
@@ -61,7 +62,11 @@ export const newProjectSchema = z.object({
   ituRegion: regionField,
 });
 
-export const aboutSchema = newProjectSchema.extend({ intent: z.literal("about") });
+/** With what the form began with, so that two people who change a project do not undo one another's changes. */
+export const aboutSchema = newProjectSchema.extend({
+  intent: z.literal("about"),
+  was: z.string().optional(),
+});
 
 /** Accepts a decimal comma: it is what many people's keyboards give. */
 const megahertz = z

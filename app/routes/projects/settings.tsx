@@ -4,7 +4,8 @@ import { requireProject } from "~/auth/require.server";
 import * as projects from "~/db/projects.server";
 import { refused } from "~/errors";
 import { redirectWithMessage } from "~/services/flash.server";
-import { changeBands, deleteProject } from "~/services/projects.server";
+import { parseWas } from "~/services/merge-edit";
+import { type AboutValues, changeAbout, changeBands, deleteProject } from "~/services/projects.server";
 import type { Route } from "./+types/settings";
 import { AboutForm } from "./components/AboutForm.tsx";
 import { BandsForm } from "./components/BandsForm.tsx";
@@ -16,13 +17,10 @@ export const meta: Route.MetaFunction = () => [{ title: "Project settings · Swa
 export async function loader(args: Route.LoaderArgs) {
   const { project } = await requireProject(args, "project.edit");
   const bands = await projects.findDesignBands(project.id);
+  const { title, summary, visibility, ituRegion } = project;
   return {
-    about: {
-      title: project.title,
-      summary: project.summary,
-      visibility: project.visibility,
-      ituRegion: project.ituRegion === null ? "" : String(project.ituRegion),
-    },
+    was: { title, summary, visibility, ituRegion },
+    about: aboutOf(project),
     bands: bands.map((band) => ({
       name: band.name,
       lowMhz: inMegahertz(band.lowHz),
@@ -40,9 +38,11 @@ export async function action(args: Route.ActionArgs) {
   const here = `/projects/${project.publicId}/settings`;
   switch (value.intent) {
     case "about": {
-      const { intent: _, ...about } = value;
-      await projects.update(project.id, about);
-      return redirectWithMessage(here, "The project was changed.");
+      const { intent: _, was, ...about } = value;
+      const { conflicts, now } = await changeAbout(project.id, parseWas(was), about);
+      if (conflicts.length === 0) return redirectWithMessage(here, "The project was changed.");
+      const fieldErrors = Object.fromEntries(conflicts.map((name) => [name, [changedMeanwhile(now[name])]]));
+      return data({ lastResult: submission.reply({ fieldErrors }), now }, { status: 409 });
     }
     case "bands":
       await changeBands(project.id, value.bands.map(inHertz));
@@ -59,6 +59,15 @@ export async function action(args: Route.ActionArgs) {
     default:
       return value satisfies never;
   }
+}
+
+function aboutOf({ title, summary, visibility, ituRegion }: AboutValues) {
+  return { title, summary, visibility, ituRegion: ituRegion === null ? "" : String(ituRegion) };
+}
+
+function changedMeanwhile(now: string | number | null): string {
+  const short = String(now ?? "nothing").slice(0, 80);
+  return `Somebody else made this “${short}” in the meantime. Nothing was changed; keep this once more to put yours in its place.`;
 }
 
 /** Without the last digits of a binary fraction: 7.1 MHz is stored as 7100000. */
@@ -80,7 +89,11 @@ export default function ProjectSettings({ loaderData, actionData }: Route.Compon
   const lastOf = (intent: string) => (last?.initialValue?.intent === intent ? last : undefined);
   return (
     <div className="max-w-[52rem] space-y-12">
-      <AboutForm about={loaderData.about} lastResult={lastOf("about")} />
+      <AboutForm
+        about={loaderData.about}
+        was={JSON.stringify(actionData && "now" in actionData ? actionData.now : loaderData.was)}
+        lastResult={lastOf("about")}
+      />
       <BandsForm
         key={JSON.stringify(loaderData.bands)}
         bands={loaderData.bands}

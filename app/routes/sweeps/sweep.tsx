@@ -4,7 +4,13 @@ import * as sweeps from "~/db/sweeps.server";
 import { refused } from "~/errors";
 import { DEFAULT_SETTINGS } from "~/measurement/sweep";
 import { redirectWithMessage } from "~/services/flash.server";
-import { deleteSweep, keepSettings } from "~/services/sweep-edits.server";
+import { parseWas } from "~/services/merge-edit";
+import {
+  deleteSweep,
+  keepSettings,
+  keepTitleAndDate,
+  type TitleAndDate,
+} from "~/services/sweep-edits.server";
 import type { Route } from "./+types/sweep";
 import { Advice } from "./components/Advice";
 import { OutsideBandsCaution } from "./components/cautions";
@@ -14,7 +20,7 @@ import { LostDips } from "./components/LostDips";
 import { PictureBeside } from "./components/picture/PictureBeside";
 import { SettingsForm } from "./components/SettingsForm";
 import { SweepHead } from "./components/SweepHead";
-import { SweepThreads } from "./components/SweepThreads";
+import { DipThread, SweepNotes } from "./components/SweepThreads";
 import { SweepView } from "./components/SweepView";
 import { ViewBar } from "./components/ViewBar";
 import { requireSweep } from "./require-sweep.server";
@@ -78,7 +84,9 @@ export async function action(args: Route.ActionArgs) {
         takenAt: form.get("takenAt") || undefined,
       });
       if (!parsed.success) return data({ errors: parsed.error.issues.map((issue) => issue.message) }, 400);
-      await sweeps.update(found.sweep.id, { title: parsed.data.title, takenAt: parsed.data.takenAt ?? null });
+      const { title, takenAt = null } = parsed.data;
+      const theirs = await keepTitleAndDate(found.sweep.id, parseWas(form.get("was")), { title, takenAt });
+      if (theirs) return data({ errors: [changedMeanwhile(theirs)] }, 409);
       return redirectWithMessage(here, "Title and date kept.");
     }
     case "settings": {
@@ -108,6 +116,11 @@ export async function action(args: Route.ActionArgs) {
   }
 }
 
+function changedMeanwhile({ title, takenAt }: TitleAndDate): string {
+  const when = takenAt ? `taken at ${takenAt.replace("T", " ")} UTC` : "date not said";
+  return `Somebody else changed this in the meantime; it is now “${title}”, ${when}. Nothing of yours was kept: open “Title and date” to see it, and change it there.`;
+}
+
 export default function SweepPage({ loaderData, actionData }: Route.ComponentProps) {
   const { view, dips, analysis, thread } = loaderData;
   const outside = dips.some((dip) => dip.inDesignBand === false && !dip.edge);
@@ -122,6 +135,9 @@ export default function SweepPage({ loaderData, actionData }: Route.ComponentPro
           <SweepView data={loaderData} />
           <PictureBeside data={loaderData} />
           <Advice data={loaderData} />
+        </div>
+        <DipThread data={loaderData} />
+        <div className="grid gap-6 min-w-0 content-start">
           <section aria-labelledby="dips" className="grid gap-3">
             <div className="flex flex-wrap items-end justify-between gap-x-6 gap-y-3">
               <h2 id="dips">Dips as numbers</h2>
@@ -131,8 +147,8 @@ export default function SweepPage({ loaderData, actionData }: Route.ComponentPro
             <LostDips data={loaderData} />
           </section>
           <Downloads data={loaderData} />
+          <SweepNotes data={loaderData} />
         </div>
-        <SweepThreads data={loaderData} />
       </div>
     </article>
   );

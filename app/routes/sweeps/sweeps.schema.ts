@@ -1,11 +1,12 @@
 import { z } from "zod";
+import { plainText } from "~/services/file-names";
 
 /** The forms about sweeps, and the view of a sweep as it stands in an address. */
 
 export const editSweepSchema = z.object({
   title: z
     .string({ error: "Give the sweep a title." })
-    .trim()
+    .overwrite(plainText)
     .min(1, "Give the sweep a title.")
     .max(160, "A title has at most 160 characters."),
   /** As a local-less `datetime-local` control gives it; read as UTC. Empty: not known. */

@@ -7,10 +7,12 @@ import { AboutFields } from "./AboutFields.tsx";
 
 export interface AboutFormProps {
   about: { title: string; summary: string; visibility: string; ituRegion: string };
+  /** What is stored now, as JSON: only what differs from it is changed. */
+  was: string;
   lastResult?: SubmissionResult<string[]>;
 }
 
-export function AboutForm({ about, lastResult }: AboutFormProps) {
+export function AboutForm({ about, was, lastResult }: AboutFormProps) {
   const busy = useNavigation().formData?.get("intent") === "about";
   const [form, fields] = useForm({
     id: "about",
@@ -25,6 +27,7 @@ export function AboutForm({ about, lastResult }: AboutFormProps) {
     <section className="space-y-3">
       <h2>About</h2>
       <Form method="post" {...getFormProps(form)} className="max-w-[42rem] space-y-5">
+        <input type="hidden" name="was" value={was} />
         <AboutFields fields={fields} />
         <Button name="intent" value="about" busy={busy}>
           Keep this

@@ -64,6 +64,11 @@ function EditDialog({ sweep }: { sweep: SweepPageData["sweep"] }) {
     <Dialog label="Title and date" icon="edit" size="small" title="Title and date">
       <Form method="post" className="grid gap-4">
         <input type="hidden" name="intent" value="edit" />
+        <input
+          type="hidden"
+          name="was"
+          value={JSON.stringify({ title: sweep.title, takenAt: taken || null })}
+        />
         <InputField label="Title" name="title" defaultValue={sweep.title} required maxLength={160} />
         <InputField
           label="Taken at"
