@@ -37,6 +37,7 @@ export function FrequencyAxisMarks({ frequency, y, plotWidthPx, palette }: Frequ
         </g>
       ))}
       <text
+        className="axis-caption"
         x={captionX(frequency)}
         y={y + 17}
         textAnchor="end"

@@ -3,9 +3,10 @@ import { formatFrequency, formatSwr, formatWidth } from "~/measurement/units";
 import { cardVerdict, type WidthBar, widthBar } from "./card-words";
 import type { ChartBand, ChartDip } from "./chart-types";
 import { pick } from "./DipMarks";
-import { type CardPlace, chooseTelling, placeCards } from "./hollow-layout";
+import { type CardPlace, chooseTelling, MOST_CLOSE_CARDS, placeCards } from "./hollow-layout";
 import { across, Stretched } from "./place";
 import type { Scene } from "./scene";
+import type { SceneDip } from "./scene-dips";
 import { formatNoteCount } from "./words";
 
 export interface HollowCardsProps {
@@ -29,29 +30,21 @@ export function HollowCards({ scene, designBands, dipHref, chosenDipId, onPick }
   const cards = dipsWithCards(scene);
   const told = scene.dips.filter((dip) => cards.has(dip.id)).sort((a, b) => a.fraction - b.fraction);
   const rest = scene.dips.filter((dip) => !cards.has(dip.id));
-  const places = placeCards(told.map((dip) => dip.fraction));
+  const fractions = told.map((dip) => dip.fraction);
+  const places = placeCards(fractions);
+  const close = told.length <= MOST_CLOSE_CARDS ? placeCards(fractions, true) : null;
   const links = { dipHref, chosenDipId, onPick };
   return (
     <section className="chart-frame" aria-label="Dips">
-      <div className="hollows">
-        <svg className="hollow-leaders" height={LEADER_HEIGHT_PX} aria-hidden="true">
-          <Stretched width={1000} height={LEADER_HEIGHT_PX} plotWidthPx={null}>
-            {told.map((dip, index) => (
-              <path
-                key={dip.id}
-                d={leaderPath(dip.fraction, places[index].anchor)}
-                className="hollow-leader"
-                vectorEffect="non-scaling-stroke"
-              />
-            ))}
-          </Stretched>
-        </svg>
+      <div className={`hollows ${crowdOf(told.length)}`}>
+        <Leaders dips={told} places={places} />
+        {close && <Leaders dips={told} places={close} close />}
         <ul className="hollow-row">
           {told.map(({ id, dip }, index) => (
             <HollowCard
               key={id}
               dip={dip}
-              style={placeStyle(places, index)}
+              style={{ ...placeStyle(places, index), ...(close && placeStyle(close, index, "close")) }}
               {...links}
               designBands={designBands}
             />
@@ -79,6 +72,34 @@ export function HollowCards({ scene, designBands, dipHref, chosenDipId, onPick }
   );
 }
 
+/** How many cards there are, as far as it decides how narrow their plot may be: for the styles. */
+export function crowdOf(cards: number): string {
+  if (cards <= 3) return "cards-few";
+  return cards <= MOST_CLOSE_CARDS ? "cards-four" : "cards-many";
+}
+
+function Leaders(props: { dips: readonly SceneDip[]; places: CardPlace[]; close?: boolean }) {
+  const { dips, places, close = false } = props;
+  return (
+    <svg
+      className={close ? "hollow-leaders hollow-leaders-close" : "hollow-leaders"}
+      height={LEADER_HEIGHT_PX}
+      aria-hidden="true"
+    >
+      <Stretched width={1000} height={LEADER_HEIGHT_PX} plotWidthPx={null}>
+        {dips.map((dip, index) => (
+          <path
+            key={dip.id}
+            d={leaderPath(dip.fraction, places[index].anchor)}
+            className="hollow-leader"
+            vectorEffect="non-scaling-stroke"
+          />
+        ))}
+      </Stretched>
+    </svg>
+  );
+}
+
 interface HollowCardProps extends Omit<HollowCardsProps, "scene"> {
   dip: ChartDip;
   style: CSSProperties;
@@ -99,7 +120,9 @@ function HollowCard({ dip, style, designBands, dipHref, chosenDipId, onPick }: H
           {formatFrequency(dip.frequencyHz, dip.frequencyUncertaintyHz)}
         </a>
       </h3>
-      <p className="number soft">SWR {formatSwr(dip.minimumSwr, dip.minimumSwrLow, dip.minimumSwrHigh)}</p>
+      <p className="number soft hollow-swr">
+        SWR {formatSwr(dip.minimumSwr, dip.minimumSwrLow, dip.minimumSwrHigh).replace("–", "\u2060–\u2060")}
+      </p>
       <Bar bar={widthBar(dip, designBands)} />
       <p className="number soft">
         {bandwidth
@@ -143,11 +166,11 @@ function Bar({ bar }: { bar: WidthBar }) {
   );
 }
 
-function placeStyle(places: CardPlace[], index: number): CSSProperties {
+function placeStyle(places: CardPlace[], index: number, kind: "wide" | "close" = "wide"): CSSProperties {
   const before = index === 0 ? 0 : places[index - 1].left + places[index - 1].width;
   return {
-    "--hollow-gap": across(places[index].left - before, null),
-    "--hollow-width": across(places[index].width, null),
+    [`--hollow-${kind}-gap`]: across(places[index].left - before, null),
+    [`--hollow-${kind}-width`]: across(places[index].width, null),
   } as CSSProperties;
 }
 

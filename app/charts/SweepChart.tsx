@@ -1,6 +1,7 @@
 import { type ReactNode, useId } from "react";
 import { CHART_FOOT_PX, CHART_TOP_PX, ChartBase } from "./ChartBase";
 import { DipMarks, type DipMarksProps } from "./DipMarks";
+import { crowdOf } from "./HollowCards";
 import { PAGE_PALETTE, PAPER_PALETTE, type Palette } from "./palette";
 import type { Scene } from "./scene";
 
@@ -23,7 +24,7 @@ export function SweepChart({ scene, label, leaders, lineHidden, children, ...mar
   return (
     // biome-ignore lint/a11y/useSemanticElements: a chart is not a set of form fields
     <div role="group" aria-label={label} className="chart-frame">
-      <div className="chart">
+      <div className={`chart ${leaders ? crowdOf(leaders.size) : ""}`}>
         <div className="chart-plot" style={{ height: heightPx }}>
           <svg className="chart-layer" height={heightPx} aria-hidden="true">
             <g transform={`translate(0 ${CHART_TOP_PX})`}>

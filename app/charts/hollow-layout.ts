@@ -10,6 +10,10 @@ export interface CardPlace {
 
 export const MOST_CARDS = 6;
 const WIDEST_CARD = 0.21;
+/** On a narrow plot few cards may be wider. */
+const WIDEST_CLOSE_CARD = 0.32;
+/** More cards than this need a wide plot to stand under their dips. */
+export const MOST_CLOSE_CARDS = 4;
 const GAP = 0.012;
 /** How far from the card's corner a leader may arrive, as a share of the card. */
 const CORNER_SHARE = 0.08;
@@ -18,11 +22,12 @@ const CORNER_SHARE = 0.08;
  * Places one card per dip, in the dips' order from left to right, moving each as little as possible
  * (least squares, by pooling neighbours that press on each other).
  * @param fractions ascending positions of the dips, 0 to 1; at most `MOST_CARDS`
+ * @param close for a narrow plot: the cards take more of it
  */
-export function placeCards(fractions: readonly number[]): CardPlace[] {
+export function placeCards(fractions: readonly number[], close = false): CardPlace[] {
   const count = fractions.length;
   if (count === 0) return [];
-  const width = Math.min(WIDEST_CARD, (1 - GAP * (count - 1)) / count);
+  const width = Math.min(close ? WIDEST_CLOSE_CARD : WIDEST_CARD, (1 - GAP * (count - 1)) / count);
   const pitch = width + GAP;
   const room = 1 - width;
   // Less its place in the row, each card's wish must not fall: then neighbours are at least a pitch apart.

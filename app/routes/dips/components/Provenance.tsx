@@ -44,11 +44,18 @@ export function Provenance({ data }: { data: DipPageData }) {
         )}
         {from.settings &&
           `; SWR limit ${from.settings.swrLimit}, smallest prominence ${formatDb(from.settings.minimumProminenceDb)}`}
-        ; noise of the sweep {formatDb(from.noiseDb, from.noiseDb)} (standard deviation).
+        ; noise of the sweep{" "}
+        {from.noiseDb !== null && from.noiseDb < LEAST_NOISE_DB
+          ? `under ${formatDb(LEAST_NOISE_DB, LEAST_NOISE_DB)}`
+          : formatDb(from.noiseDb, from.noiseDb)}{" "}
+        (standard deviation).
       </p>
     </section>
   );
 }
+
+/** Finer than any file's last digit. */
+const LEAST_NOISE_DB = 0.001;
 
 const QUANTITIES = {
   "s11-db": "S11 in dB",

@@ -83,7 +83,7 @@ function columnsFor(view: SweepView, swrLimit: number): Column<ShownDip>[] {
     },
     {
       key: "method",
-      label: "From",
+      label: "Method",
       sortBy: (dip) => dip.method,
       cell: (dip) => (dip.edge ? "edge" : METHODS[dip.method]),
     },
@@ -131,7 +131,10 @@ function WidthCell({ dip }: { dip: ShownDip }) {
 
 function edges({ lowHz, highHz, widthUncertaintyHz }: Bandwidth): string {
   const show = (hz: number | null) => (hz === null ? "sweep ends" : formatFrequency(hz, widthUncertaintyHz));
-  return `${show(lowHz)} – ${show(highHz)}`;
+  const [low, high] = [show(lowHz), show(highHz)];
+  const unit = high.match(SPACE_AND_UNIT)?.[0];
+  // One unit for both, where it is the same.
+  return unit && low.endsWith(unit) ? `${low.slice(0, -unit.length)}–${high}` : `${low} – ${high}`;
 }
 
 export function qText(dip: Pick<ShownDip, "q" | "qLow" | "qHigh">): string {
@@ -140,5 +143,6 @@ export function qText(dip: Pick<ShownDip, "q" | "qLow" | "qHigh">): string {
   return "unknown";
 }
 
+const SPACE_AND_UNIT = /\u2009\S+$/;
 const METHODS = { fit: "fit", parabola: "parabola", sample: "lowest sample" } as const;
 const SORTABLE = ["frequency", "swr", "return-loss", "width", "edges", "q", "method", "verdict", "notes"];

@@ -45,5 +45,12 @@ export function SweepView({ data }: { data: SweepPageData }) {
 }
 
 function chartDip(dip: SweepPageData["dips"][number], index: number): ChartDip {
-  return { ...dip, id: dip.publicId ?? `tried-${index}`, verdictText: dip.verdictText || null };
+  return {
+    ...dip,
+    id: dip.publicId ?? `tried-${index}`,
+    verdictText: dip.verdictText || null,
+    // The limits that are known: with the bench's, else from noise alone, as everywhere on the page.
+    minimumSwrLow: dip.minimumSwrLow ?? dip.minimumSwrNoiseLow,
+    minimumSwrHigh: dip.minimumSwrHigh ?? dip.minimumSwrNoiseHigh,
+  };
 }
