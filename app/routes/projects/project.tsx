@@ -123,7 +123,7 @@ function Strips({ data }: { data: Data }) {
               <p className="text-small soft">
                 {sweep.takenAt ? <DateTime at={sweep.takenAt} dateOnly /> : "date not said"}
                 {" · "}
-                {countOf(sweep.dips.length, "dip")}
+                {sweep.unread ? "not read yet" : countOf(sweep.dips.length, "dip")}
                 {sweep.noteCount > 0 && ` · ${countOf(sweep.noteCount, "note")}`}
               </p>
               {sweep.openDips > 0 && <p className="text-small text-clay">{sweep.openDips} unsettled</p>}

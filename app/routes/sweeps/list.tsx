@@ -154,10 +154,10 @@ function columnsFor(base: string): Column<SweepSummary>[] {
       key: "dips",
       label: "Dips",
       numeric: true,
-      sortBy: (row) => row.dips.length,
+      sortBy: (row) => (row.unread ? null : row.dips.length),
       cell: (row) => (
         <>
-          {row.dips.length}
+          {row.unread ? "unknown" : row.dips.length}
           {row.openDips > 0 && <span className="text-clay"> ({unsettled(row)})</span>}
         </>
       ),

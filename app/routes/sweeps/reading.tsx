@@ -9,7 +9,6 @@ import { answer } from "~/readers/read";
 import type { Given, Reading } from "~/readers/reading";
 import { redirectWithMessage } from "~/services/flash.server";
 import { tryReading } from "~/services/reading-preview.server";
-import { getObject } from "~/services/storage.server";
 import { readAnew } from "~/services/sweep-edits.server";
 import type { Route } from "./+types/reading";
 import { PictureReading } from "./components/picture/PictureReading";
@@ -17,6 +16,7 @@ import { ReadingForm } from "./components/ReadingForm";
 import { ReadingRows } from "./components/ReadingRows";
 import { TriedView } from "./components/TriedView";
 import { useTriedReading } from "./components/use-tried-reading";
+import { readOriginal } from "./open-original.server";
 import { keepPictureForm, loadPictureReading } from "./picture-page.server";
 import { givenFromForm, type ReadingFormErrors } from "./reading.schema";
 import { requireSweep } from "./require-sweep.server";
@@ -48,7 +48,7 @@ export async function loader(args: Route.LoaderArgs) {
 }
 
 async function tryStored({ file, reading, analysis }: FoundSweep) {
-  const bytes = await getObject(file.storageKey);
+  const bytes = await readOriginal(file.storageKey);
   const settings = analysis?.settings ?? DEFAULT_SETTINGS;
   return tryReading({ name: file.name, bytes }, reading?.given ?? {}, settings);
 }
@@ -89,6 +89,7 @@ function givenOf(form: FormData, before: Given, current: Reading) {
   const answered = form.get("answer");
   if (typeof answered === "string") {
     const [question, ...value] = answered.split("=");
+    if (!current.questions.some(({ id }) => id === question)) return { errors: { form: NOT_ASKED } };
     return { given: answer(current, question, value.join("=")) };
   }
   return form.get("intent") === "afresh" ? { given: {} } : givenFromForm(form, before, current);
@@ -103,7 +104,7 @@ export default function ReadingPage({ loaderData, actionData }: Route.ComponentP
   const head = (
     <div className="grid gap-1">
       {!unread && <Breadcrumbs items={[{ label: title, to: base }]} />}
-      <h2>How “{title}” was read</h2>
+      <h2>{unread ? `“${title}” is not read yet` : `How “${title}” was read`}</h2>
       <Source data={loaderData} base={base} />
     </div>
   );
@@ -169,9 +170,11 @@ function Source({ data, base }: { data: Route.ComponentProps["loaderData"]; base
       </Link>
       , SHA-256 <span className="font-mono">{data.sha256.slice(0, 12)}…</span>
       {data.number !== null && ` · reading ${data.number}`}
-      {data.fixed.length > 0 && ` · chosen by hand: ${data.fixed.join(", ")}`}
+      {data.fixed.length > 0 &&
+        ` · ${data.fixed.length === 1 ? "one choice" : `${data.fixed.length} choices`} made by hand`}
     </p>
   );
 }
 
+const NOT_ASKED = "The file does not ask this any more. Nothing was changed; load the page again.";
 const NOTHING_TO_CHOOSE = "Nothing of this file was understood, so there is nothing to choose.";

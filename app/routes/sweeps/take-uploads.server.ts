@@ -83,7 +83,7 @@ function describe(name: string, project: string, taken: Taken): UploadResult {
         name,
         kind: "unread",
         title: taken.title,
-        message: `${taken.problem.message}${placeOf(taken.problem)} The file is kept; say how to read it.`,
+        message: `${taken.problem.message}${placeOf(taken.problem)} The file is kept: look at its reading.`,
         href: `/projects/${project}/sweeps/${taken.sweepPublicId}/reading`,
       };
     case "twice":
@@ -105,8 +105,9 @@ function describe(name: string, project: string, taken: Taken): UploadResult {
   }
 }
 
-function placeOf(problem: { line?: number; column?: number }): string {
-  if (!problem.line) return "";
+/** Where the trouble is, unless the words say it. */
+function placeOf(problem: { message: string; line?: number; column?: number }): string {
+  if (!problem.line || /^Line \d/.test(problem.message)) return "";
   return problem.column ? ` (line ${problem.line}, column ${problem.column})` : ` (line ${problem.line})`;
 }
 

@@ -17,7 +17,7 @@ export function ReadingRows({ reading }: { reading: Reading }) {
     <section aria-labelledby="first-rows" className="grid gap-2">
       <h3 id="first-rows">First rows of the file</h3>
       {/* biome-ignore lint/a11y/noNoninteractiveTabindex: a box that scrolls must be reachable by keyboard */}
-      <section className="table-box" aria-label="First rows of the file" tabIndex={0}>
+      <section className="rows-box" aria-label="First rows of the file" tabIndex={0}>
         <table className="table rows-table">
           <thead>
             <tr>

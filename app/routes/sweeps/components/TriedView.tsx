@@ -1,6 +1,11 @@
 import { Profile } from "~/charts/Profile";
 import type { TriedReading } from "~/services/reading-preview.server";
 
+/** Nothing is wrong with the file: only a number is missing that a person can give. */
+function asks(problem: { code: string }): boolean {
+  return problem.code === "zero-db-needed";
+}
+
 /** What the reading gives: the curve, its dips, what was assumed; or what stands in its way. */
 export function TriedView({ tried, busy }: { tried: TriedReading; busy: boolean }) {
   return (
@@ -10,9 +15,14 @@ export function TriedView({ tried, busy }: { tried: TriedReading; busy: boolean 
       className={`grid gap-4 ${busy ? "waiting relative" : ""}`}
     >
       {tried.problem && (
-        <div role="alert" className="panel border-l-4 border-l-alarm grid gap-1">
-          <p className="font-semibold text-alarm">{tried.problem.message}</p>
-          {tried.problem.line && (
+        <div
+          role="alert"
+          className={`panel border-l-4 grid gap-1 ${asks(tried.problem) ? "border-l-clay" : "border-l-alarm"}`}
+        >
+          <p className={`font-semibold ${asks(tried.problem) ? "text-clay" : "text-alarm"}`}>
+            {tried.problem.message}
+          </p>
+          {tried.problem.line && !/^Line \d/.test(tried.problem.message) && (
             <p className="text-small">
               Line {tried.problem.line}
               {tried.problem.column ? `, column ${tried.problem.column}` : ""}
