@@ -66,6 +66,9 @@ const POINT_WIDTH = 0.4;
 const LABEL_PIXELS = 1.6;
 const ROUND_PIXELS = 0.8;
 
+/** Share of an axis' labels with a decimal point from which all are taken to have one. */
+const LEAST_POINTED = 0.25;
+
 /** Dashes of all kinds become a minus sign, tick marks behind the figure go. */
 export function cleanFigure(text: string): string {
   return text
@@ -93,8 +96,8 @@ export function repairedNumber(text: string): number | null {
   return plainNumber([...clean].map((c) => MISTAKEN[c] ?? c).join(""));
 }
 
-/** All numbers that a tick label may stand for: as read, with a lost decimal point, with a lost minus. */
-export function tickCandidates(word: Word): Candidate[] {
+/** All numbers that a tick label may stand for: as read, with a lost decimal point (likely among `decimals`), with a lost minus. */
+export function tickCandidates(word: Word, decimals = false): Candidate[] {
   const power = powerOfTen(word);
   if (power.length > 0) return power;
   const value = repairedNumber(word.text);
@@ -106,9 +109,9 @@ export function tickCandidates(word: Word): Candidate[] {
     const digits = clean.replace("-", "").length;
     const width = (word.right - word.left) / Math.max(1, word.bottom - word.top);
     const room = width - (digits * DIGIT_WIDTH - 0.1);
-    const wide = !clean.startsWith("-") && room > POINT_WIDTH / 2;
+    const wide = decimals || (!clean.startsWith("-") && room > POINT_WIDTH / 2);
     if (digits >= 2) {
-      found[0].weight *= wide ? 0.75 : 1;
+      found[0].weight *= decimals ? 0.5 : wide ? 0.75 : 1;
       found.push({ value: value / 10, weight: certain * (wide ? 0.9 : 0.4) });
     }
     if (digits >= 3) found.push({ value: value / 100, weight: certain * 0.25 });
@@ -117,6 +120,13 @@ export function tickCandidates(word: Word): Candidate[] {
   if (unslashed !== clean) found.push({ value: Number(unslashed), weight: certain * 0.5 });
   if (value > 0) found.push({ value: -value, weight: certain * 0.35 });
   return found;
+}
+
+/** Whether an axis' labels have decimals: then one without a point has lost it. */
+export function haveDecimals(words: Word[]): boolean {
+  const figures = words.filter((w) => plainNumber(w.text) !== null);
+  const pointed = figures.filter((w) => /\d[.,]\d/.test(w.text)).length;
+  return pointed >= 2 && pointed >= LEAST_POINTED * figures.length;
 }
 
 /** "10²" comes as 102, 10?, 10*; "3×10¹" as 3x10!. */

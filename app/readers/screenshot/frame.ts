@@ -31,6 +31,8 @@ const END_TOLERANCE = 3;
 const TICK_LENGTH = 12;
 /** Half the width over which one outline may be found as several lines. */
 const THICK_OUTLINE = 4.2;
+/** Pixels by which that library's lines lie right of and below their true places, in the mean. */
+const SNAP_BIAS = 0.5;
 /** Pixels by which an outline may miss its library's standard place. */
 const MARGIN_TOLERANCE = 2.7;
 /** An outer line counts as much as so many lines inside. */
@@ -71,8 +73,15 @@ export function findFrame(
   };
   const evened = given ? settled : evenOut(settled, horizontals, verticals);
   const { left, top, right, bottom } = given ? evened : onStandardMargins(evened, width, height);
-  const horizontal = horizontals.filter((l) => between(l.position, top, bottom) && covers(l, left, right));
-  const vertical = verticals.filter((l) => between(l.position, left, right) && covers(l, top, bottom));
+  const snapped = onMargins({ left, top, right, bottom }, standardMargins(width, height), 0.01);
+  const placed = (lines: Line[]) =>
+    snapped ? lines.map((l) => ({ ...l, position: l.position - SNAP_BIAS })) : lines;
+  const horizontal = placed(horizontals).filter(
+    (l) => between(l.position, top, bottom) && covers(l, left, right),
+  );
+  const vertical = placed(verticals).filter(
+    (l) => between(l.position, left, right) && covers(l, top, bottom),
+  );
   const rows = countDivisions(grey, width, { left, right, top, bottom }, horizontal);
   const columns = countDivisions(
     turned,
@@ -101,21 +110,30 @@ function evenOut<B extends Box>(box: B, horizontals: Line[], verticals: Line[]):
  * picture, draws the data there, and the outline on the next whole pixels. Where all four sides agree with
  * those shares, the unrounded place is the better one.
  */
-function onStandardMargins<B extends { left: number; top: number; right: number; bottom: number }>(
-  box: B,
-  width: number,
-  height: number,
-): B {
-  const exact = {
+function onStandardMargins(box: Box, width: number, height: number): Box {
+  const exact = standardMargins(width, height);
+  const drawn = {
+    left: exact.left + SNAP_BIAS,
+    right: exact.right + SNAP_BIAS,
+    top: exact.top + SNAP_BIAS,
+    bottom: exact.bottom + SNAP_BIAS,
+  };
+  return onMargins(box, drawn, MARGIN_TOLERANCE) ? exact : box;
+}
+
+function standardMargins(width: number, height: number): Box {
+  return {
     left: 0.125 * width - 0.5,
     right: 0.9 * width - 0.5,
     top: 0.12 * height - 0.5,
     bottom: 0.89 * height - 0.5,
   };
-  const near = (["left", "right", "top", "bottom"] as const).every(
-    (side) => Math.abs(box[side] - exact[side] - 0.5) <= MARGIN_TOLERANCE,
+}
+
+function onMargins(box: Box, margins: Box, tolerance: number): boolean {
+  return (["left", "right", "top", "bottom"] as const).every(
+    (side) => Math.abs(box[side] - margins[side]) <= tolerance,
   );
-  return near ? { ...box, ...exact } : box;
 }
 
 interface Rectangle {

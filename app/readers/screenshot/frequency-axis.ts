@@ -1,5 +1,12 @@
 import { alignToLines } from "./align.ts";
-import { type Candidate, cleanFigure, endValue, repairedNumber, tickCandidates } from "./figures.ts";
+import {
+  type Candidate,
+  cleanFigure,
+  endValue,
+  haveDecimals,
+  repairedNumber,
+  tickCandidates,
+} from "./figures.ts";
 import type { Frame } from "./frame.ts";
 import type { Line, Word } from "./picture.ts";
 import { lettersApart, type Row, rowsOf } from "./rows.ts";
@@ -125,9 +132,10 @@ export function tickAxis(words: Word[], frame: Frame, lines: Line[]): FrequencyA
   const outside = words.filter((w) => w.top > frame.bottom - 4 || w.bottom < frame.top + 4);
   for (const row of rowsOf(outside)) {
     if (SETTINGS.test(row.text)) continue;
+    const decimals = haveDecimals(row.words);
     const ticks = row.words
       .filter((w) => w.right > frame.left - 30 && w.left < frame.right + 30)
-      .map((w) => ({ position: (w.left + w.right) / 2, candidates: frequencyCandidates(w) }));
+      .map((w) => ({ position: (w.left + w.right) / 2, candidates: frequencyCandidates(w, decimals) }));
     for (const scale of ["linear", "log"] as const) {
       const fit = fitTicks(ticks, length, scale);
       if (!fit || fit.slope < 0) continue;
@@ -178,9 +186,9 @@ function settle(fit: TickFit, row: Row, words: Word[], frame: Frame, lines: Line
   };
 }
 
-function frequencyCandidates(word: Word): Candidate[] {
+function frequencyCandidates(word: Word, decimals: boolean): Candidate[] {
   const bare = { ...word, text: word.text.replace(/[kMG]?H[z2:]$/i, "") };
-  return tickCandidates(bare).filter((c) => c.value >= 0);
+  return tickCandidates(bare, decimals).filter((c) => c.value >= 0);
 }
 
 function keyOf(text: string): Key | null {

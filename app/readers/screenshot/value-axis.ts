@@ -1,5 +1,5 @@
 import { alignToLines } from "./align.ts";
-import { cleanFigure, endValue, repairedNumber, tickCandidates } from "./figures.ts";
+import { cleanFigure, endValue, haveDecimals, repairedNumber, tickCandidates } from "./figures.ts";
 import type { Frame } from "./frame.ts";
 import type { Line, Word } from "./picture.ts";
 import { lettersApart, rowsOf } from "./rows.ts";
@@ -60,9 +60,10 @@ function fromLabels(
   quantity: PictureQuantity | null,
 ): ValueAxis | null {
   const within = side.filter((w) => w.bottom > frame.top - 8 && w.top < frame.bottom + 8);
+  const decimals = haveDecimals(within);
   const ticks = within.map((w) => ({
     position: (w.top + w.bottom) / 2,
-    candidates: tickCandidates(w).filter((c) => quantity !== "swr" || c.value >= 0),
+    candidates: tickCandidates(w, decimals).filter((c) => quantity !== "swr" || c.value >= 0),
   }));
   const fromOne = (intercept: number, slope: number) => {
     const low = Math.min(intercept + slope * frame.top, intercept + slope * frame.bottom);
