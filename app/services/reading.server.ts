@@ -51,7 +51,8 @@ async function readInTurn(task: Omit<ReadTask, "port">, progress?: (stage: Pictu
 /** Pictures have one thread, and with it at most one text recognition; trying a correction must not wait for them. */
 const KINDS = {
   numbers: { maxThreads: Math.max(1, Math.min(4, availableParallelism() - 1)), idleTimeout: 30_000 },
-  pictures: { maxThreads: 1, idleTimeout: 30_000 },
+  // Pages come first: its work and that of its text recognition yields to theirs.
+  pictures: { maxThreads: 1, idleTimeout: 30_000, niceIncrement: 10 },
   corrections: { maxThreads: 1, idleTimeout: 3 * 60_000 },
 } as const;
 
