@@ -1,5 +1,5 @@
 import type { AxisSource, ScreenshotSpec } from "../reading.ts";
-import type { FoundFrame, Frame } from "./frame.ts";
+import type { FoundFrame } from "./frame.ts";
 import { cornerAxis, type FrequencyAxis, namedAxis, namedFrequencies, tickAxis } from "./frequency-axis.ts";
 import type { Ocr, Picture, Stage, Word } from "./picture.ts";
 import { isDoubtful, printedWords, rereadFrequencies, rereadLabels, uprightWords } from "./print.ts";
@@ -158,8 +158,4 @@ function settleQuantity(
 function quantitySentence(quantity: PictureQuantity): string {
   const names = { "s11-db": "S11 in dB", "return-loss": "return loss", swr: "SWR", level: "a raw level" };
   return `The vertical axis was taken as ${names[quantity]} by its numbers.`;
-}
-
-export function frameBox(frame: Frame): { left: number; top: number; right: number; bottom: number } {
-  return { left: frame.left, top: frame.top, right: frame.right, bottom: frame.bottom };
 }
