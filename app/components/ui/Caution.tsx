@@ -1,12 +1,13 @@
 import type { ReactNode } from "react";
-import { useFetcher, useLocation } from "react-router";
+import { useFetcher, useLocation, useRouteLoaderData } from "react-router";
+import type { loader as rootLoader } from "~/root";
 import { Button } from "./Button";
 import { Icon } from "./Icon";
 
 export interface CautionProps {
   /** Which caution: what is sent to `POST /cautions/dismiss` as `caution`, with `returnTo`. */
   id: string;
-  /** False where there is nobody to remember it for, or where it must always stand. */
+  /** False where it must always stand; for a visitor, whom nobody remembers, it always does. */
   dismissible?: boolean;
   children: ReactNode;
 }
@@ -15,12 +16,13 @@ export interface CautionProps {
 export function Caution({ id, dismissible = true, children }: CautionProps) {
   const fetcher = useFetcher();
   const { pathname, search } = useLocation();
+  const remembered = useRouteLoaderData<typeof rootLoader>("root")?.person;
   if (fetcher.state !== "idle" || fetcher.data) return null;
   return (
     <aside className="caution" aria-label="Caution">
       <Icon name="warning" />
       <div className="caution-words">{children}</div>
-      {dismissible && (
+      {dismissible && remembered && (
         <fetcher.Form method="post" action="/cautions/dismiss" className="no-print">
           <input type="hidden" name="caution" value={id} />
           <input type="hidden" name="returnTo" value={pathname + search} />

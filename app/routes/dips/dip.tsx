@@ -19,7 +19,6 @@ export async function loader(args: Route.LoaderArgs) {
     projectId: access.project.publicId,
     mayWrite: access.may("note.write"),
     mayVerdict: { propose: access.may("verdict.propose"), settle: access.may("verdict.settle") },
-    signedIn: access.person !== null,
     ...(await loadDipPage(access, args.params.dip)),
   };
 }
@@ -60,7 +59,7 @@ export default function DipPage({ loaderData }: Route.ComponentProps) {
         </p>
       )}
       {outside && !dismissed.includes("outside-bands") && (
-        <Caution id="outside-bands" dismissible={loaderData.signedIn}>
+        <Caution id="outside-bands">
           This dip lies outside the design bands: a finding, not a permission. Transmit only where your
           licence and local rules allow.
         </Caution>
