@@ -19,7 +19,7 @@ const client = new S3Client({
   requestChecksumCalculation: "WHEN_REQUIRED",
   responseChecksumValidation: "WHEN_REQUIRED",
   // A store that does not answer must not hold a request for ever: nothing moving for so long is an error.
-  requestHandler: { connectionTimeout: 3_000, socketTimeout: 20_000 },
+  requestHandler: { connectionTimeout: 3_000, socketTimeout: 10_000 },
   maxAttempts: 2,
 });
 

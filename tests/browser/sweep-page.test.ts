@@ -146,3 +146,35 @@ test.each([
   expect(complaints).toEqual([]);
   await context.close();
 });
+
+test("choosing a dip is answered in sight, on a phone too", async () => {
+  for (const viewport of [
+    { width: 390, height: 844 },
+    { width: 1600, height: 1000 },
+  ]) {
+    const { page, context } = await visit(browser, { viewport });
+    await page.goto(sweepPath);
+    await settled(page);
+    const card = page.locator(".hollow-card a").first();
+    await card.click();
+    const thread = page.getByRole("complementary", { name: "Thread of the chosen dip" });
+    await thread.waitFor();
+    const topOf = async () => (await thread.boundingBox())?.y ?? Number.POSITIVE_INFINITY;
+    await expect.poll(topOf).toBeLessThan(viewport.height * 0.7);
+    // Closing it leaves the keyboard where it was.
+    await thread.getByRole("link", { name: "Close" }).click();
+    await thread.waitFor({ state: "detached" });
+    expect(await card.evaluate((link) => link === document.activeElement)).toBe(true);
+    await context.close();
+  }
+});
+
+test("the thread beside the chart leaves the cards joined to their dips", async () => {
+  const { page, context } = await visit(browser, { viewport: { width: 1600, height: 1000 } });
+  await page.goto(sweepPath);
+  await settled(page);
+  await page.locator(".hollow-card a").first().click();
+  await page.getByRole("complementary", { name: "Thread of the chosen dip" }).waitFor();
+  expect(await page.locator(".hollow-leaders:visible").count()).toBe(1);
+  await context.close();
+});
