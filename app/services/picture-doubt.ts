@@ -3,8 +3,8 @@ import { reusableSpec } from "../readers/screenshot/correct.ts";
 import type { ReadOutcome } from "./read-and-analyse.server.ts";
 
 /**
- * A picture that was read, but not for certain, is not taken for a sweep: a person looks at it first. Pictures read
- * rightly had 0.83 and more in every stage; an axis whose labels disagree stays under 0.7.
+ * A picture that was read, but not for certain, is not taken for a sweep: a person looks at it first. Of 82 invented
+ * pictures 58 were over this in every stage, 4 of them with an axis misread; under it were 24, 3 of them misread.
  */
 const SURE = 0.8;
 

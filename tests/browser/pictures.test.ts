@@ -62,6 +62,7 @@ test("a picture reads itself, and the curve is laid over it with one key", async
   await settled(page);
   expect(await firstDip().textContent()).toMatch(/^14\.[12]\d*\sMHz/);
 
+  expect(await page.locator('.chart-plot path[opacity="0.25"]').count()).toBe(1);
   const plot = await page.locator(".chart-plot").first().boundingBox();
   const strip = await page.locator(".picture-strip").boundingBox();
   expect(Math.abs((plot?.x ?? 0) - (strip?.x ?? 9))).toBeLessThan(1.5);

@@ -40,7 +40,7 @@ export async function loader(args: Route.LoaderArgs) {
     fileName: file.name,
     sha256: file.sha256,
     number: reading?.number ?? null,
-    fixed: Object.keys(reading?.given.text ?? reading?.given.touchstone ?? {}),
+    fixed: Object.keys(reading?.given.text ?? reading?.given.touchstone ?? reading?.given.screenshot ?? {}),
     mayEdit: access.may("sweep.edit"),
     stored: picture?.stored ?? (await tryStored(found)),
     picture,
