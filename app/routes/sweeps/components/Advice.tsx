@@ -4,7 +4,9 @@ import type { SweepPageData } from "../sweep";
 /** What the analysis warns of, and what to sweep again. */
 export function Advice({ data }: { data: SweepPageData }) {
   const again = data.dips.filter((dip) => dip.advice !== null);
-  const warnings = data.warnings.filter((warning) => again.length === 0 || warning.code !== "few-points-in-dip");
+  const warnings = data.warnings.filter(
+    (warning) => again.length === 0 || warning.code !== "few-points-in-dip",
+  );
   if (again.length === 0 && warnings.length === 0) return null;
   return (
     <section aria-label="What to mind" className="grid gap-1 text-small">
