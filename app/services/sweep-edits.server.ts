@@ -71,6 +71,28 @@ export async function keepSettings(
   });
 }
 
+/**
+ * Keeps an answer to one question of a file that was never read: the next question may still be open, and there are no
+ * numbers to lose. Answers what still stands in the way; null when the file is read now.
+ */
+export async function keepAnswer(
+  found: sweeps.FoundSweep,
+  given: Given,
+  settings: AnalysisSettings,
+  by: number,
+): Promise<ReadProblem | null> {
+  const bytes = await getObject(found.file.storageKey);
+  const outcome = await readFile({ name: found.file.name, bytes, given, settings });
+  if (!outcome.ok && !outcome.reading) return outcome.problem;
+  await inTransaction(async (tx) => {
+    const now = await sweeps.lock(found.sweep.id, tx);
+    // Read by somebody else in the meantime: that stays.
+    if (!now?.problem) return;
+    await storeOutcome({ projectId: found.sweep.projectId, sweepId: found.sweep.id, given, outcome, by }, tx);
+  });
+  return outcome.ok ? null : outcome.problem;
+}
+
 /** Reads the stored original anew. A reading that fails changes nothing and says why. */
 export async function readAnew(
   found: sweeps.FoundSweep,

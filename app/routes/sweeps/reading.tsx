@@ -9,7 +9,7 @@ import { answer } from "~/readers/read";
 import type { Given, Reading } from "~/readers/reading";
 import { redirectWithMessage } from "~/services/flash.server";
 import { tryReading } from "~/services/reading-preview.server";
-import { readAnew } from "~/services/sweep-edits.server";
+import { keepAnswer, readAnew } from "~/services/sweep-edits.server";
 import type { Route } from "./+types/reading";
 import { PictureReading } from "./components/picture/PictureReading";
 import { ReadingForm } from "./components/ReadingForm";
@@ -67,6 +67,12 @@ export async function action(args: Route.ActionArgs) {
   const result = givenOf(form, found.reading?.given ?? {}, current);
   if ("errors" in result) return data({ errors: result.errors }, 400);
   const settings = found.analysis?.settings ?? DEFAULT_SETTINGS;
+  if (form.has("answer") && found.sweep.problem) {
+    const open = await keepAnswer(found, result.given, settings, access.person.id);
+    if (open)
+      return redirectWithMessage(new URL(args.request.url).pathname.replace(/\.data$/, ""), ANSWER_KEPT);
+    return readAgain(access.project.publicId, found.sweep.publicId);
+  }
   const problem = await readAnew(found, result.given, settings, access.person.id);
   if (problem) {
     const place = problem.line
@@ -98,7 +104,7 @@ function givenOf(form: FormData, before: Given, current: Reading) {
 export default function ReadingPage({ loaderData, actionData }: Route.ComponentProps) {
   const { projectId, sweepId, title, stored, mayEdit, unread, picture } = loaderData;
   const base = `/projects/${projectId}/sweeps/${sweepId}`;
-  const { tried, errors, busy, onChange } = useTriedReading(`${base}/reading/try`);
+  const { tried, errors, busy, onChange } = useTriedReading(`${base}/reading/try`, loaderData.number);
   const shown = tried ?? stored;
   const faults: ReadingFormErrors = { ...errors, ...actionData?.errors };
   const head = (
@@ -140,6 +146,8 @@ export default function ReadingPage({ loaderData, actionData }: Route.ComponentP
           )}
           {stored.reading ? (
             <ReadingForm
+              // The reading that is kept is what the fields begin with.
+              key={loaderData.number}
               reading={stored.reading}
               problem={shown.problem}
               errors={faults}
@@ -176,5 +184,6 @@ function Source({ data, base }: { data: Route.ComponentProps["loaderData"]; base
   );
 }
 
+const ANSWER_KEPT = "The answer is kept. Something is still open before the file can be read.";
 const NOT_ASKED = "The file does not ask this any more. Nothing was changed; load the page again.";
 const NOTHING_TO_CHOOSE = "Nothing of this file was understood, so there is nothing to choose.";

@@ -117,16 +117,18 @@ function TextFields({ spec, reading, errors, zeroFirst }: TextFieldsProps) {
           options={QUANTITIES}
           errors={fault("quantity")}
         />
-        <InputField
-          label="0 dB line"
-          hint="Only for raw levels: the level of full reflection."
-          name="zeroDb"
-          inputMode="decimal"
-          unit="dB"
-          autoFocus={zeroFirst}
-          defaultValue={spec.zeroDb ?? ""}
-          errors={fault("zeroDb")}
-        />
+        <div className="for-level">
+          <InputField
+            label="0 dB line"
+            hint="Only for raw levels: the level of full reflection."
+            name="zeroDb"
+            inputMode="decimal"
+            unit="dB"
+            autoFocus={zeroFirst}
+            defaultValue={spec.zeroDb ?? ""}
+            errors={fault("zeroDb")}
+          />
+        </div>
         <SelectField
           label="Frequency column"
           name="frequencyColumn"
@@ -145,17 +147,19 @@ function TextFields({ spec, reading, errors, zeroFirst }: TextFieldsProps) {
           defaultValue={String((spec.valueColumn ?? 1) + 1)}
           options={columns}
         />
-        <SelectField
-          label="Second column"
-          hint="Angle, imaginary part or reactance."
-          name="secondColumn"
-          defaultValue={
-            spec.secondColumn === null || spec.secondColumn === undefined
-              ? "none"
-              : String(spec.secondColumn + 1)
-          }
-          options={[{ value: "none", label: "none" }, ...columns]}
-        />
+        <div className="for-pairs">
+          <SelectField
+            label="Second column"
+            hint="Angle, imaginary part or reactance."
+            name="secondColumn"
+            defaultValue={
+              spec.secondColumn === null || spec.secondColumn === undefined
+                ? "none"
+                : String(spec.secondColumn + 1)
+            }
+            options={[{ value: "none", label: "none" }, ...columns]}
+          />
+        </div>
         <InputField
           label="Reference impedance"
           name="referenceOhm"
@@ -164,15 +168,17 @@ function TextFields({ spec, reading, errors, zeroFirst }: TextFieldsProps) {
           defaultValue={spec.referenceOhm ?? 50}
           errors={fault("referenceOhm")}
         />
-        <SelectField
-          label="Angles in"
-          name="angleUnit"
-          defaultValue={spec.angleUnit ?? "deg"}
-          options={[
-            { value: "deg", label: "degrees" },
-            { value: "rad", label: "radians" },
-          ]}
-        />
+        <div className="for-angles">
+          <SelectField
+            label="Angles in"
+            name="angleUnit"
+            defaultValue={spec.angleUnit ?? "deg"}
+            options={[
+              { value: "deg", label: "degrees" },
+              { value: "rad", label: "radians" },
+            ]}
+          />
+        </div>
       </div>
       <details>
         <summary>Separators and lines</summary>

@@ -32,7 +32,13 @@ export function TriedView({ tried, busy }: { tried: TriedReading; busy: boolean 
       )}
       {tried.profile && (
         <>
-          <Profile {...tried.profile} heightPx={200} />
+          {tried.profile.points.magnitude.some(Number.isFinite) ? (
+            <Profile {...tried.profile} heightPx={200} />
+          ) : (
+            <p className="panel soft">
+              No point has a value that can be drawn: these columns or this quantity do not fit.
+            </p>
+          )}
           <p className="text-small">
             <span className="font-mono">{tried.points?.toLocaleString("en")}</span> points,{" "}
             <span className="font-mono">{tried.span}</span>.{" "}

@@ -2,9 +2,9 @@ import { useCallback, useEffect, useRef } from "react";
 import { useFetcher } from "react-router";
 import type { TryAnswer } from "../reading-try";
 
-/** Reads the file as the form stands a moment after the last change; the newest answer counts. */
-export function useTriedReading(action: string) {
-  const fetcher = useFetcher<TryAnswer>();
+/** Reads the file as the form stands a moment after the last change; the newest answer counts, until the reading is kept. */
+export function useTriedReading(action: string, reading: number | null) {
+  const fetcher = useFetcher<TryAnswer>({ key: `${action} ${reading}` });
   const timer = useRef<ReturnType<typeof setTimeout>>(undefined);
   const { submit } = fetcher;
   useEffect(() => () => clearTimeout(timer.current), []);

@@ -116,8 +116,8 @@ function eventsOf(text: string): { stage?: PictureStage; results?: UploadResult[
 }
 
 function wordsFor(status: number): string {
-  if (status === 401 || status === 403)
-    return "You are signed out or may not add sweeps here. Nothing was stored; sign in and send it again.";
+  if (status === 401 || status === 403 || status === 404)
+    return "You are signed out, or may not add sweeps here. Nothing was stored; sign in and send it again.";
   if (status === 413)
     return "The file is larger than 64 MB. Nothing was stored; sweep with fewer points or split it.";
   if (status === 429)
