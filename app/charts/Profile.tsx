@@ -20,6 +20,9 @@ export interface ProfileProps {
 }
 
 const COLUMNS = 120;
+/** A tall profile is looked at, not glanced at. */
+const TALL_PX = 120;
+const COLUMNS_OF_TALL = 480;
 
 /** A sweep as a small strip of land, with a dot in each dip. Decoration: its row says the numbers. */
 export function Profile(props: ProfileProps) {
@@ -30,7 +33,7 @@ export function Profile(props: ProfileProps) {
     props.fromHz ?? frequencyHz[0] ?? 0,
     props.toHz ?? frequencyHz[frequencyHz.length - 1] ?? 1,
   );
-  const runs = decimate(points, scale, COLUMNS);
+  const runs = decimate(points, scale, heightPx > TALL_PX ? COLUMNS_OF_TALL : COLUMNS);
   const magnitudes = runs.flatMap((run) => run.magnitudes);
   const lowestMagnitude = magnitudes.reduce((low, value) => Math.min(low, value), 1);
   const inner = heightPx - 2;

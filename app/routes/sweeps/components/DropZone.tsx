@@ -1,4 +1,5 @@
 import { useDropzone } from "react-dropzone";
+import { Link } from "react-router";
 import { Button } from "~/components/ui/Button";
 import { Icon } from "~/components/ui/Icon";
 import { PictureStages } from "./picture/PictureStages";
@@ -32,6 +33,11 @@ export function DropZone({ action }: { action: string }) {
         <>
           <p role="status" className="text-small soft">
             {done} of {uploads.length} {uploads.length === 1 ? "file" : "files"} done
+            {done === uploads.length && (
+              <>
+                . <Link to={action.replace(/\/upload$/, "")}>See them among all sweeps</Link>
+              </>
+            )}
           </p>
           <ul className="grid gap-2" aria-label="Files">
             {uploads.map((upload) => (

@@ -1,5 +1,22 @@
+import { frequencyAxis, frequencyScale } from "~/charts/axis";
+import { FrequencyAxisMarks } from "~/charts/FrequencyAxisMarks";
 import { Profile } from "~/charts/Profile";
+import { PAGE_PALETTE } from "~/charts/palette";
 import type { TriedReading } from "~/services/reading-preview.server";
+
+function CurveAxis({ frequencyHz }: { frequencyHz: ArrayLike<number> }) {
+  const axis = frequencyAxis(frequencyScale("linear", frequencyHz[0], frequencyHz[frequencyHz.length - 1]));
+  return (
+    <div className="chart-frame">
+      <div className="shared-axis">
+        <svg width="100%" height="24" overflow="visible" aria-hidden="true">
+          <FrequencyAxisMarks frequency={axis} y={1} plotWidthPx={null} palette={PAGE_PALETTE} />
+        </svg>
+        <p className="number soft">{axis.caption}; return loss downwards</p>
+      </div>
+    </div>
+  );
+}
 
 /** Nothing is wrong with the file: only a number is missing that a person can give. */
 function asks(problem: { code: string }): boolean {
@@ -33,7 +50,10 @@ export function TriedView({ tried, busy }: { tried: TriedReading; busy: boolean 
       {tried.profile && (
         <>
           {tried.profile.points.magnitude.some(Number.isFinite) ? (
-            <Profile {...tried.profile} heightPx={200} />
+            <div className="grid">
+              <Profile {...tried.profile} heightPx={200} />
+              <CurveAxis frequencyHz={tried.profile.points.frequencyHz} />
+            </div>
           ) : (
             <p className="panel soft">
               No point has a value that can be drawn: these columns or this quantity do not fit.
