@@ -16,6 +16,7 @@ export interface BenchRow {
 /** Where the rows come from: a file and the function in it that makes them. */
 const SOURCES = [
   ["bench-reading.ts", "benchReading", "Reading"],
+  ["bench-pictures.ts", "benchPictures", "Pictures"],
   ["bench-analysis.ts", "benchAnalysis", "Analysis"],
 ] as const;
 

@@ -26,6 +26,8 @@ const PLAIN_TO_SEE = 0.3;
 const JUMP_WEIGHT = 5;
 /** Weight of a colour that grid lines leave beside them. */
 const GRID_RESIDUE = 0.3;
+/** A given colour this near to one that was found is that one. */
+const SAME_AS_GIVEN = 0.12;
 /** Share of the plot's height over which a trace must range to count fully as a sweep. */
 const LIVELY = 0.1;
 
@@ -54,21 +56,42 @@ export function findTraces(picture: Picture, found: FoundFrame, given: Rgb | nul
           (isPaleGrid(color, ground) ? GRID_RESIDUE : 1);
     return { color, hex: hexOf(color), trace, score };
   };
-  const traces = candidates
-    .map((c) => follow(c.color))
-    .filter((t) => t.score > 0.02)
-    .sort((a, b) => b.score - a.score);
-  if (given) {
-    const near = traces.findIndex((t) => lookApart(t.color, given) < 0.12);
-    const own = near >= 0 ? traces.splice(near, 1)[0] : follow(given);
-    traces.unshift(own);
-  }
+  const followed = (some: ColorCandidate[]) =>
+    some
+      .map((c) => follow(c.color))
+      .filter((t) => t.score > 0.02)
+      .sort((a, b) => b.score - a.score);
+  const isMeant = (c: ColorCandidate) => given !== null && lookApart(c.color, given) < SAME_AS_GIVEN;
+  // With a colour given the others are only named, to be chosen instead: following costs most of the time.
+  const traces = given
+    ? [
+        followed(candidates.filter(isMeant))[0] ?? follow(given),
+        ...candidates.filter((c) => !isMeant(c) && !isPaleGrid(c.color, ground)).map(unfollowed),
+      ]
+    : followed(candidates);
   const chosen = traces[0];
   if (!chosen) return { traces, confidence: 0, saw: "No trace was found inside the frame." };
   const rival = traces[1] && !given ? traces[1].score / chosen.score : 0;
   const confidence = Math.min(1, chosen.trace.explained) * (rival > 0.85 ? 0.7 : 1);
   const saw = `The trace ${chosen.hex} was followed through ${Math.round(100 * chosen.trace.share)} % of the columns${traces.length > 1 ? `; ${traces.length - 1} other colour${traces.length > 2 ? "s" : ""} in view` : ""}.`;
   return { traces, confidence, saw };
+}
+
+/** A colour in view that is not the one asked for. */
+function unfollowed({ color, columnShare }: ColorCandidate): ColoredTrace {
+  const none = new Float64Array();
+  const trace: Trace = {
+    left: 0,
+    row: none,
+    uncertainty: none,
+    thickness: 0,
+    share: columnShare,
+    explained: 0,
+    fullness: 0,
+    extent: 0,
+    jumps: 0,
+  };
+  return { color, hex: hexOf(color), trace, score: 0 };
 }
 
 /** Halos of compression are hardly different from the ground. */
