@@ -96,11 +96,7 @@ export async function takeIn(input: TakeIn): Promise<Taken> {
         : { kind: "unread" as const, sweepPublicId: sweep.publicId, title, problem: outcome.problem };
     });
   } catch (error) {
-    await deleteObject(storageKey).then(
-      () => jobs.deleteById(undo),
-      // The noted removal does it later.
-      () => undefined,
-    );
+    await deleteObject(storageKey).catch(() => undefined);
     if (!isDuplicate(error)) throw error;
     const first = await sweeps.findFileBySha256(project.id, sha256);
     if (!first) throw error;

@@ -12,9 +12,9 @@ export function knownMethods(request: Request, response: Response, next: NextFun
     refuse(response, api, { status: 405, title: "Method Not Allowed", code: "wrong-method" }, request.method);
     return;
   }
-  if (!api && request.method === "POST" && !FORMS.test(request.get("Content-Type") ?? "")) {
-    const what = request.get("Content-Type") ?? "A body without a type";
-    refuse(response, api, { status: 415, title: "Unsupported Media Type", code: "wrong-type" }, what);
+  const type = request.get("Content-Type");
+  if (!api && request.method === "POST" && type !== undefined && !FORMS.test(type)) {
+    refuse(response, api, { status: 415, title: "Unsupported Media Type", code: "wrong-type" }, type);
     return;
   }
   next();
