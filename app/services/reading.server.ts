@@ -1,7 +1,7 @@
 import { existsSync } from "node:fs";
 import { availableParallelism } from "node:os";
 import { fileURLToPath } from "node:url";
-import { MessageChannel } from "node:worker_threads";
+import { MessageChannel, receiveMessageOnPort } from "node:worker_threads";
 import { Piscina } from "piscina";
 import { detect } from "../readers/detect.ts";
 import type { ScreenshotSpec } from "../readers/reading.ts";
@@ -44,6 +44,9 @@ async function readInTurn(task: Omit<ReadTask, "port">, progress?: (stage: Pictu
   try {
     return await pool.run({ ...task, port: port2 }, { transferList: [port2] });
   } finally {
+    // The answer may overtake what was said before it.
+    for (let said = receiveMessageOnPort(port1); said; said = receiveMessageOnPort(port1))
+      progress(said.message);
     port1.close();
   }
 }

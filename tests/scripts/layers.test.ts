@@ -19,9 +19,8 @@ function layers(files: Record<string, string>): { code: number | null; faults: s
 test("imports that point down pass", () => {
   const result = layers({
     "measurement/sweep.ts": "export const a = 1;",
-    "measurement/fit.ts":
-      'import { levenbergMarquardt } from "ml-levenberg-marquardt"; // not process.env\nexport {};',
-    "readers/read.ts": 'import { a } from "../measurement/sweep.ts";',
+    "measurement/fit.ts": "export const c = 2; // not process.env",
+    "readers/read.ts": 'import Papa from "papaparse";\nimport { a } from "../measurement/sweep.ts";',
     "db/sweeps.server.ts": 'import { a } from "~/measurement/sweep";\nimport mysql from "mysql2";',
     "services/intake.server.ts": 'import { b } from "~/db/sweeps.server";',
     "routes/page.tsx": 'import { b } from "~/services/intake.server";',
