@@ -77,11 +77,22 @@ function sounder<T extends { confidence: number }>(a: T | null, b: T | null): T 
 }
 
 function frequencyFrom(words: Word[], found: FoundFrame): FrequencyAxis | null {
-  return namedAxis(words) ?? tickAxis(words, found.frame, found.vertical) ?? cornerAxis(words, found.frame);
+  return (
+    namedAxis(words) ?? tickAxis(words, found.frame, placesAcross(found)) ?? cornerAxis(words, found.frame)
+  );
+}
+
+/** Where labels may belong: lines across the plot and the marks on its outer lines. */
+function placesAcross({ vertical, ticks }: FoundFrame): number[] {
+  return [...vertical.map((l) => l.position), ...ticks.columns];
+}
+
+function placesDown({ horizontal, ticks }: FoundFrame): number[] {
+  return [...horizontal.map((l) => l.position), ...ticks.rows];
 }
 
 function valueFrom(words: Word[], found: FoundFrame, quantity: PictureQuantity | null): ValueAxis | null {
-  const labels = labelledAxis(words, found.frame, found.horizontal, quantity);
+  const labels = labelledAxis(words, found.frame, placesDown(found), quantity);
   const other = referencedAxis(words, found.frame) ?? rangedAxis(words);
   if (!labels || !other) return labels ?? other;
   const span = Math.abs(labels.top - labels.bottom);
@@ -152,7 +163,9 @@ function settleQuantity(
   const low = Math.min(top, bottom);
   const high = Math.max(top, bottom);
   if (named === null && low >= 0.9 && low <= 1.05 && high > 1.2) return "swr";
-  return -low > high ? "s11-db" : "return-loss";
+  // A passive load has no return loss below zero: an axis that goes there shows S11, unless it is named otherwise.
+  const below = named === "return-loss" ? -low > high : low < 0;
+  return below ? "s11-db" : "return-loss";
 }
 
 function quantitySentence(quantity: PictureQuantity): string {

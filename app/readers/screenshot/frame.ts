@@ -1,6 +1,7 @@
 import { countDivisions, evenEnds } from "./divisions.ts";
 import { findLines } from "./lines.ts";
 import { type Box, brightness, type Line, type Picture, type Stage, transpose } from "./picture.ts";
+import { tickMarks } from "./tick-marks.ts";
 
 /** The plot's outer lines and its divisions. */
 export interface Frame {
@@ -18,6 +19,8 @@ export interface FoundFrame extends Stage {
   /** Lines across the plot, the outer ones among them. */
   horizontal: Line[];
   vertical: Line[];
+  /** Places of short tick marks along the bottom and the left line. */
+  ticks: { columns: number[]; rows: number[] };
 }
 
 interface Span {
@@ -89,11 +92,17 @@ export function findFrame(
     { left: top, right: bottom, top: left, bottom: right },
     vertical,
   );
+  const exchanged = { left: top, right: bottom, top: right, bottom: left };
+  const bias = snapped ? SNAP_BIAS : 0;
+  const ticks = {
+    columns: tickMarks(grey, width, { left, right, top, bottom }, -1).map((x) => x - bias),
+    rows: tickMarks(turned, height, exchanged, 1).map((y) => y - bias),
+  };
   const confidence = given ? 1 : Math.min(1, 0.3 + 0.12 * best.sides + 0.04 * Math.min(8, best.inside));
   const saw = given
     ? "The frame was given."
     : `${Math.round(best.sides)} of 4 outer lines and ${Math.round(best.inside)} lines inside that end at them.`;
-  return { frame: { left, top, right, bottom, columns, rows }, horizontal, vertical, confidence, saw };
+  return { frame: { left, top, right, bottom, columns, rows }, horizontal, vertical, ticks, confidence, saw };
 }
 
 /** Evenly spaced grid lines say where the outer lines lie better than these do alone. */

@@ -8,7 +8,7 @@ import {
   tickCandidates,
 } from "./figures.ts";
 import type { Frame } from "./frame.ts";
-import type { Line, Word } from "./picture.ts";
+import type { Word } from "./picture.ts";
 import { lettersApart, type Row, rowsOf } from "./rows.ts";
 import { fitTicks, labelStep, refine, type TickFit } from "./tick-fit.ts";
 
@@ -126,7 +126,7 @@ export function cornerAxis(words: Word[], frame: Frame): FrequencyAxis | null {
 }
 
 /** Start and stop from the labels of ticks below or above the plot. */
-export function tickAxis(words: Word[], frame: Frame, lines: Line[]): FrequencyAxis | null {
+export function tickAxis(words: Word[], frame: Frame, places: number[]): FrequencyAxis | null {
   const length = frame.right - frame.left;
   let best: { fit: TickFit; row: Row } | null = null;
   const outside = words.filter((w) => w.top > frame.bottom - 4 || w.bottom < frame.top + 4);
@@ -145,16 +145,16 @@ export function tickAxis(words: Word[], frame: Frame, lines: Line[]): FrequencyA
     }
   }
   if (!best || best.fit.weight < 1.2) return null;
-  return settle(best.fit, best.row, words, frame, lines);
+  return settle(best.fit, best.row, words, frame, places);
 }
 
-function settle(fit: TickFit, row: Row, words: Word[], frame: Frame, lines: Line[]): FrequencyAxis {
+function settle(fit: TickFit, row: Row, words: Word[], frame: Frame, places: number[]): FrequencyAxis {
   const along = (v: number) => (fit.scale === "log" ? Math.log10(v) : v);
   const height = Math.max(...row.words.map((w) => w.bottom - w.top));
   const aligned = refine(
     {
       ...fit,
-      used: alignToLines(fit.used, [...lines.map((l) => l.position), frame.left, frame.right], 0.4 * height),
+      used: alignToLines(fit.used, [...places, frame.left, frame.right], 0.8 * height),
     },
     along,
   );

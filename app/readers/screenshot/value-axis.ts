@@ -1,7 +1,7 @@
 import { alignToLines } from "./align.ts";
 import { cleanFigure, endValue, haveDecimals, repairedNumber, tickCandidates } from "./figures.ts";
 import type { Frame } from "./frame.ts";
-import type { Line, Word } from "./picture.ts";
+import type { Word } from "./picture.ts";
 import { lettersApart, rowsOf } from "./rows.ts";
 import { fitTicks, labelStep, refine } from "./tick-fit.ts";
 
@@ -38,7 +38,7 @@ export function namedQuantity(texts: string[]): { quantity: PictureQuantity; dec
 export function labelledAxis(
   words: Word[],
   frame: Frame,
-  lines: Line[],
+  places: number[],
   quantity: PictureQuantity | null,
 ): ValueAxis | null {
   const left = words.filter(
@@ -48,7 +48,7 @@ export function labelledAxis(
     (w) => w.left > frame.right - 4 && w.right < frame.right + 0.15 * (frame.right - frame.left),
   );
   const axes = [left, right]
-    .map((side) => fromLabels(side, frame, lines, quantity))
+    .map((side) => fromLabels(side, frame, places, quantity))
     .filter((a) => a !== null);
   return axes.sort((a, b) => b.confidence - a.confidence)[0] ?? null;
 }
@@ -56,7 +56,7 @@ export function labelledAxis(
 function fromLabels(
   side: Word[],
   frame: Frame,
-  lines: Line[],
+  places: number[],
   quantity: PictureQuantity | null,
 ): ValueAxis | null {
   const within = side.filter((w) => w.bottom > frame.top - 8 && w.top < frame.bottom + 8);
@@ -72,11 +72,8 @@ function fromLabels(
   const fit = fitTicks(ticks, frame.bottom - frame.top, "linear", fromOne);
   if (!fit || fit.weight < 1.2) return null;
   const height = Math.max(...within.map((w) => w.bottom - w.top));
-  const places = [...lines.map((l) => l.position), frame.top, frame.bottom];
-  const aligned = refine(
-    { ...fit, used: alignToLines(fit.used, places, Math.min(6, 0.5 * height)) },
-    (v) => v,
-  );
+  const all = [...places, frame.top, frame.bottom];
+  const aligned = refine({ ...fit, used: alignToLines(fit.used, all, Math.min(6, 0.5 * height)) }, (v) => v);
   let { intercept, slope } = aligned;
   const lowest = Math.min(intercept + slope * frame.top, intercept + slope * frame.bottom);
   if (quantity === "swr" && lowest > 6) {
