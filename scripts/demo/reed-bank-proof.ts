@@ -1,4 +1,5 @@
 import { LIGHT_SPEED } from "./antenna.ts";
+import { pictureOf } from "./pictures.ts";
 import { AS_BUILT, MORE_RADIALS, type reedBankFiles, STAKE_FAR, STAKE_NEAR } from "./reed-bank.ts";
 import { decided, said, swept } from "./steps.ts";
 import { on, type Step } from "./story.ts";
@@ -42,7 +43,29 @@ export function proof(files: ReturnType<typeof reedBankFiles>): Step[] {
       (t) =>
         `For the chase: ${t.dip("radials", 52.2).link} after, ${t.dip("bothCut", 52.2).link} before, so ${khz(t.dip("radials", 52.2).hz - t.dip("bothCut", 52.2).hz)} for three times as many radials. Not the radials either.`,
     ),
-    // Two pictures of the analyser's screen, taken on 28 March, belong here once pictures can be read.
+    swept({
+      key: "screenLow",
+      by: "dov-heron",
+      at: on(3, 28, 15, 10),
+      title: "The screen, 5 to 25 MHz",
+      fileName: "screen-5-25.png",
+      bytes: pictureOf("screen-5-25"),
+    }),
+    swept({
+      key: "screenHigh",
+      by: "dov-heron",
+      at: on(3, 28, 15, 14),
+      title: "The screen, 46 to 58 MHz",
+      fileName: "screen-46-58.png",
+      bytes: pictureOf("screen-46-58"),
+    }),
+    said(
+      "dov-heron",
+      on(3, 28, 19, 20),
+      { sweep: "screenHigh", nearMhz: 52.2 },
+      (t) =>
+        `I had no stick with me, so here are two pictures of the screen. Read from the pixels, the odd one sits at ${t.dip("screenHigh", 52.2).f}; Ada's file says ${t.dip("radials", 52.2).f}. Good enough to see that it is the same dip, not good enough to trim by.`,
+    ),
     swept({
       key: "hub",
       by: "cleo-reed",

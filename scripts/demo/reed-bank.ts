@@ -106,6 +106,12 @@ export function reedBankFiles() {
   };
 }
 
+/** What the two pictures of 28 March show: abs Γ of the antenna with its 24 radials. */
+export function radialsOnScreen(name: string): (hz: number) => number {
+  const gamma = seen(name, MORE_RADIALS, LABORATORY);
+  return (hz) => Math.hypot(gamma(hz).re, gamma(hz).im);
+}
+
 function seen(name: string, state: State, instrument: Instrument, feedline: Feedline = FEEDLINE) {
   return reflection(resonatorsOf(state), feedline, instrument, gaussBy(name));
 }
