@@ -39,6 +39,12 @@ export function formatDb(db: number | null, uncertaintyDb: number | null = null)
   return `${plain(db, decimals)}${THIN}dB`;
 }
 
+/** A sweep's noise: one digit, and what no instrument resolves only as less than that. */
+export function formatNoise(db: number | null): string {
+  if (db === null || Number.isNaN(db)) return UNKNOWN;
+  return db < LEAST_NOISE_DB ? `under ${LEAST_NOISE_DB}${THIN}dB` : formatDb(db, db);
+}
+
 /** A range of positive numbers with three digits: "11.2–15.7"; one number where both print alike. */
 export function formatRange(low: number | null, high: number | null): string {
   if (low === null || high === null || Number.isNaN(low) || Number.isNaN(high)) return UNKNOWN;
@@ -118,6 +124,8 @@ function plain(value: number, decimals: number): string {
 }
 
 const UNKNOWN = "unknown";
+/** The last digit that files usually carry. */
+const LEAST_NOISE_DB = 0.001;
 /** U+2009, thin space. */
 const THIN = "\u2009";
 /** A hertz in a gigahertz. */

@@ -2,6 +2,7 @@ import { describe, expect, test } from "vitest";
 import {
   formatDb,
   formatFrequency,
+  formatNoise,
   formatPercent,
   formatRange,
   formatSwr,
@@ -106,4 +107,11 @@ test("no digits below a part in a million of a frequency, nor below a thousandth
   expect(formatFrequency(433_900_000.1, 3)).toBe("433.9000\u2009MHz");
   expect(formatFrequency(7_089_371, 2_600)).toBe("7.089\u2009MHz");
   expect(formatWidth(870_160, 12)).toBe("870.2\u2009kHz");
+});
+
+test("noise shows one digit, and no less than files carry", () => {
+  expect(formatNoise(0.0432)).toBe("0.04\u2009dB");
+  expect(formatNoise(4.8e-8)).toBe("under 0.001\u2009dB");
+  expect(formatNoise(0)).toBe("under 0.001\u2009dB");
+  expect(formatNoise(null)).toBe("unknown");
 });

@@ -1,6 +1,6 @@
 import { Link } from "react-router";
 import { DateTime } from "~/components/ui/DateTime";
-import { formatDb, formatFrequency } from "~/measurement/units";
+import { formatDb, formatFrequency, formatNoise } from "~/measurement/units";
 import type { DipPageData } from "../dip";
 
 /** How the numbers came about: file, reading, analysis and its settings. */
@@ -44,18 +44,11 @@ export function Provenance({ data }: { data: DipPageData }) {
         )}
         {from.settings &&
           `; SWR limit ${from.settings.swrLimit}, smallest prominence ${formatDb(from.settings.minimumProminenceDb)}`}
-        ; noise of the sweep{" "}
-        {from.noiseDb !== null && from.noiseDb < LEAST_NOISE_DB
-          ? `under ${formatDb(LEAST_NOISE_DB, LEAST_NOISE_DB)}`
-          : formatDb(from.noiseDb, from.noiseDb)}{" "}
-        (standard deviation).
+        ; noise of the sweep {formatNoise(from.noiseDb)} (standard deviation).
       </p>
     </section>
   );
 }
-
-/** Finer than any file's last digit. */
-const LEAST_NOISE_DB = 0.001;
 
 const QUANTITIES = {
   "s11-db": "S11 in dB",

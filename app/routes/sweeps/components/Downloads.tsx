@@ -1,3 +1,4 @@
+import { formatNoise } from "~/measurement/units";
 import type { SweepPageData } from "../sweep";
 
 /** The original and the numbers, and how the numbers came about. */
@@ -34,8 +35,8 @@ export function Downloads({ data }: { data: SweepPageData }) {
       <p className="soft break-words">
         SHA-256 of the original <span className="font-mono break-all">{sweep.sha256}</span>; analysis{" "}
         {analysis.number} by method {analysis.version}
-        {data.noiseDb !== null && `, noise ${data.noiseDb.toPrecision(2)} dB`}. Limits of SWR leave out the
-        bench: no open, short and load sweeps are known, so what its directivity adds is unknown.
+        {data.noiseDb !== null && `, noise ${formatNoise(data.noiseDb)}`}. Limits of SWR leave out the bench:
+        no open, short and load sweeps are known, so what its directivity adds is unknown.
       </p>
     </section>
   );
