@@ -24,6 +24,14 @@ export function unavailable(title: string, message: string) {
   return data<PlainError>({ title, message }, { status: 503 });
 }
 
+/** A form that can't be taken apart: cut short on its way, or no form at all. */
+export function brokenForm() {
+  return data<PlainError>(
+    { title: "The form did not arrive whole", message: "Nothing was stored; go back and send it again." },
+    { status: 400 },
+  );
+}
+
 export function refused(message: string) {
   return data<PlainError>({ title: "Not allowed", message }, { status: 403 });
 }

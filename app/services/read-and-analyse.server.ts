@@ -55,6 +55,7 @@ export default async function readAndAnalyse(task: ReadTask): Promise<ReadOutcom
   }
   if (seen) tell("trace");
   const { sweep, reading } = result;
+  if (sweep.magnitude.every(Number.isNaN)) return { ok: false, problem: ONLY_GAPS, reading, picture: seen };
   const analysis = analyse(sweep, task.settings);
   if (seen) tell("dips");
   return {
@@ -102,5 +103,10 @@ function mergeWarnings(a: Warning[], b: Warning[]): Warning[] {
   });
 }
 
+const ONLY_GAPS: ReadProblem = {
+  code: "no-values",
+  message:
+    "Every value is a gap when read so: expected numbers. Choose another column, quantity or decimal sign.",
+};
 /** Enough for a chart 1600 px wide. */
 export const PREVIEW_POINTS = 1600;

@@ -189,6 +189,14 @@ describe("analyses", () => {
     expect(again?.sweep.startHz).toBe(1000);
   });
 
+  it("are not made of nothing: a reading whose every point is a gap is refused", async () => {
+    const text = "MHz,S11 (dB),remark\n7,-1,x\n7.1,-12,y\n7.2,-1.5,z\n7.3,-1,x\n";
+    const found = await takenSweep(new TextEncoder().encode(text));
+    const problem = await readAnew(found, { text: { valueColumn: 2 } }, DEFAULT_SETTINGS, by.id);
+    expect(problem?.message).toBeTruthy();
+    expect((await sweeps.findByPublicId(found.sweep.publicId))?.reading?.number).toBe(1);
+  });
+
   it("offer the choices made for the last file of the same shape", async () => {
     const first = await takenSweep(sweepFile(7.1));
     await readAnew(first, { text: { referenceOhm: 75 } }, DEFAULT_SETTINGS, by.id);

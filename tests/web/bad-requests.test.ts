@@ -42,3 +42,10 @@ it("pages are not kept by caches, so that signing out ends their showing", async
     expect((await browser.get(path)).headers.get("Cache-Control"), path).toBe("private, no-cache");
   }
 });
+
+it("a form that is cut short is refused, and nothing is stored", async () => {
+  const cut = '--cut\r\nContent-Disposition: form-data; name="files"; filename="a.csv"\r\n\r\n1,2\r\n';
+  const answer = await browser.postBody(`${page}/sweeps/new`, cut, "multipart/form-data; boundary=cut");
+  expect(answer.status).toBe(400);
+  expect(await answer.text()).toContain("did not arrive whole");
+});

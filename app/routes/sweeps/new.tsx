@@ -7,7 +7,7 @@ import type { Route } from "./+types/new";
 import { FirstSweepCaution } from "./components/cautions";
 import { DropZone } from "./components/DropZone";
 import { UploadResults } from "./components/UploadResults";
-import { takeUploads } from "./take-uploads.server";
+import { readUploadForm, takeUploads } from "./take-uploads.server";
 
 export const meta: Route.MetaFunction = () => [{ title: "Add sweeps · Swale" }];
 
@@ -20,7 +20,7 @@ export async function loader(args: Route.LoaderArgs) {
 /** The plain form: every file at once, answered with the list of what became of each. */
 export async function action(args: Route.ActionArgs) {
   const access = await requireProject(args, "sweep.add");
-  const results = await takeUploads(access, await args.request.formData());
+  const results = await takeUploads(access, await readUploadForm(args.request));
   if (results.length === 0) {
     return data(
       { results, error: "No file was chosen. Nothing was stored; choose one or more and send again." },

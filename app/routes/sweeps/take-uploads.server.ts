@@ -1,5 +1,5 @@
 import type { ProjectAccess } from "~/auth/require.server";
-import { refused } from "~/errors";
+import { brokenForm, refused } from "~/errors";
 import { type Taken, takeIn } from "~/services/intake.server";
 import { log } from "~/services/log.server";
 import type { PictureStage } from "~/services/seen-picture";
@@ -13,6 +13,15 @@ export interface UploadResult {
   message: string;
   /** Where to go on; null where nothing was stored. */
   href: string | null;
+}
+
+/** The form with its files; one that was cut short on its way is refused plainly. */
+export async function readUploadForm(request: Request): Promise<FormData> {
+  try {
+    return await request.formData();
+  } catch {
+    throw brokenForm();
+  }
 }
 
 /** Takes the files of a form in, one after another; one that fails does not stop the others. */

@@ -1,6 +1,6 @@
 import { type ProjectAccess, requireProject } from "~/auth/require.server";
 import type { Route } from "./+types/upload";
-import { takeUploads } from "./take-uploads.server";
+import { readUploadForm, takeUploads } from "./take-uploads.server";
 
 /**
  * One file of the drop zone; the page sends them one by one. Answered as JSON, or, to whoever accepts
@@ -8,7 +8,7 @@ import { takeUploads } from "./take-uploads.server";
  */
 export async function action(args: Route.ActionArgs) {
   const access = await requireProject(args, "sweep.add");
-  const form = await args.request.formData();
+  const form = await readUploadForm(args.request);
   if (args.request.headers.get("Accept")?.includes(EVENTS)) return eventsOf(access, form);
   const results = await takeUploads(access, form);
   const refused = results.some((result) => result.kind === "refused");
