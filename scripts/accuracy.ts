@@ -1,16 +1,23 @@
 import { existsSync, readFileSync } from "node:fs";
 import { closePictureReader } from "../app/services/picture.server.ts";
+import type { PhotographTruth } from "./screens/photographs.ts";
 import { type PictureScore, scorePicture, totals, traceRight, truthsIn } from "./screens/score.ts";
+import { photographTotals, scorePhotograph, shaken } from "./screens/score-photograph.ts";
 
 /**
  * `npm run accuracy -- screens [FOLDER] [--given] [--json]`: how well pictures are read, against their truth.
+ * `npm run accuracy -- photographs`: photographs by four corners and axes, with exact corners and 1 px off.
  *
  * Exit code: 0; 1 where a share is below the last accepted table's; 2 for usage and parts that are not there yet.
  */
 const FIXTURES = new URL("../tests/fixtures/screens/", import.meta.url).pathname;
-const PARTS = ["screens", "coverage", "causes", "trails"];
+const PHOTOGRAPHS = new URL("../tests/fixtures/photographs/", import.meta.url).pathname;
+/** What reading from whole pixels can miss without any other fault. */
+const QUANTISATION_PX = 0.5;
+const PARTS = ["screens", "photographs", "coverage", "causes", "trails"];
 const NAMES = ["frame", "axes", "trace", "dips"] as const;
-const USAGE = "Usage: npm run accuracy -- screens|coverage|causes|trails [FOLDER] [--given] [--json]";
+const USAGE =
+  "Usage: npm run accuracy -- screens|photographs|coverage|causes|trails [FOLDER] [--given] [--json]";
 
 process.exitCode = await main(process.argv.slice(2));
 
@@ -21,6 +28,7 @@ async function main(args: string[]): Promise<number> {
     process.stderr.write(`${USAGE}\n`);
     return 2;
   }
+  if (part === "photographs") return photographs(flags.includes("--json"));
   if (part !== "screens") {
     process.stderr.write(`${part}: not available yet.\n`);
     return 2;
@@ -41,7 +49,7 @@ async function main(args: string[]): Promise<number> {
   const now = totals(scores);
   const accepted = folder === `${FIXTURES}pictures` ? acceptedShares(given ? "given" : "nothing") : null;
   process.stdout.write(
-    `${json ? JSON.stringify({ total: now, accepted }) : summary(scores.length, now, accepted)}\n`,
+    `${json ? JSON.stringify({ total: now, accepted, medianPx: medianOf(scores) }) : summary(scores, now, accepted)}\n`,
   );
   return accepted && NAMES.some((name) => now[name] < accepted[name] - 1e-9) ? 1 : 0;
 }
@@ -64,6 +72,7 @@ function row(score: PictureScore): string {
     `frame ${px(score.framePx)}`,
     `axes ${mark(score.axesRight)}`,
     `trace ${mark(traceRight(score))} ${px(score.traceMedianPx)}/${px(score.traceP95Px)}`,
+    `of ½ px ${px(score.traceMedianPx === null ? null : score.traceMedianPx / QUANTISATION_PX)}`,
     `dips ${mark(score.dipsRight)} ${dips}`,
     score.error ?? "",
   ]
@@ -71,10 +80,38 @@ function row(score: PictureScore): string {
     .trimEnd();
 }
 
-function summary(count: number, now: Shares, accepted: Shares | null): string {
+/** The pictures' median misses: their median, pixels; null where none is comparable. */
+function medianOf(scores: PictureScore[]): number | null {
+  const medians = scores.map((s) => s.traceMedianPx).filter((v) => v !== null);
+  return medians.sort((a, b) => a - b)[medians.length >> 1] ?? null;
+}
+
+async function photographs(json: boolean): Promise<number> {
+  const accepted = JSON.parse(readFileSync(`${PHOTOGRAPHS}accepted.json`, "utf8"));
+  let worse = false;
+  for (const corners of ["exact", "shaken"] as const) {
+    const scores: PictureScore[] = [];
+    for (const [i, truth] of (truthsIn(`${PHOTOGRAPHS}pictures`) as PhotographTruth[]).entries()) {
+      const at = corners === "exact" ? truth.corners : shaken(truth.corners, i);
+      const score = await scorePhotograph(`${PHOTOGRAPHS}pictures`, truth, at);
+      scores.push(score);
+      process.stdout.write(`${json ? JSON.stringify({ corners, ...score }) : row(score)}\n`);
+    }
+    const now = photographTotals(scores);
+    worse ||= now.trace < accepted[corners].trace || now.dips < accepted[corners].dips;
+    process.stdout.write(`${JSON.stringify({ corners, total: now, accepted: accepted[corners] })}\n`);
+  }
+  await closePictureReader();
+  return worse ? 1 : 0;
+}
+
+function summary(scores: PictureScore[], now: Shares, accepted: Shares | null): string {
   const shares = NAMES.map((name) => {
     const before = accepted ? ` (accepted ${(100 * accepted[name]).toFixed(1)} %)` : "";
     return `${name} ${(100 * now[name]).toFixed(1)} %${before}`;
   });
-  return `of ${count}: ${shares.join(", ")}`;
+  const median = medianOf(scores);
+  const floor =
+    median === null ? "" : `${median.toFixed(2)} px, ${(median / QUANTISATION_PX).toFixed(2)} of ½ px`;
+  return `of ${scores.length}: ${shares.join(", ")}; median trace miss over the pictures ${floor || "unknown"}`;
 }

@@ -3,6 +3,7 @@ import { join } from "node:path";
 import { analyse } from "../../app/measurement/analyse.ts";
 import type { Dip } from "../../app/measurement/sweep.ts";
 import type { ScreenshotSpec } from "../../app/readers/reading.ts";
+import type { PictureResult } from "../../app/readers/screenshot/read-picture.ts";
 import { readPictureFile } from "../../app/services/picture.server.ts";
 import type { Truth } from "./picture.ts";
 
@@ -40,6 +41,11 @@ export async function scorePicture(folder: string, truth: Truth, axesGiven: bool
     { name: truth.file, bytes },
     { screenshot: givenFor(truth, axesGiven) },
   );
+  return scoreResult(truth, result, axesGiven);
+}
+
+/** What was read against what was drawn; `truth.plot` in pixels of the picture that the trace was followed in. */
+export function scoreResult(truth: Truth, result: PictureResult, axesGiven: boolean): PictureScore {
   const { frame, axes, points } = result.picture;
   const must = truth.dips.filter((d) => d.prominence_db >= SURE_PROMINENCE);
   const score: PictureScore = {
@@ -114,7 +120,8 @@ const QUANTITIES = {
   return_loss_down: "s11-db",
 } as const;
 
-function givenFor({ axis }: Truth, axesGiven: boolean): ScreenshotSpec {
+/** What is given of a picture: the 0 dB line of raw levels, and its axes on demand. */
+export function givenFor({ axis }: Truth, axesGiven: boolean): ScreenshotSpec {
   const zero = axis.unit === "dBm" ? { zeroDb: axis.zero_db_at } : {};
   if (!axesGiven) return zero;
   const quantity = QUANTITIES[axis.quantity as keyof typeof QUANTITIES];

@@ -6,6 +6,7 @@ import type {
   Reading,
   ScreenshotSpec,
 } from "../reading.ts";
+import { evenLight } from "./even-light.ts";
 import { paintAway } from "./paint.ts";
 import type { Ocr, Picture } from "./picture.ts";
 import { type PictureProgress, type PictureResult, readPicture } from "./read-picture.ts";
@@ -34,7 +35,8 @@ export async function readCorrected(
   const flat = corners ? rectify(pixels, corners) : null;
   if (flat) direct.frame = flat.plot.frame;
   if (zeroTrace) direct.zeroDb = 0;
-  const seen = paintAway(flat?.picture ?? pixels, masked);
+  const plain = flat ? evenLight(flat.picture, flat.plot.frame) : pixels;
+  const seen = paintAway(plain, masked);
   const result = await readPicture(seen, ocr, direct, progress);
   const found = corners && !flat ? cornersProblem(result) : result;
   const levelled = zeroTrace ? await againstTrace(found, seen, ocr, zeroTrace) : found;
