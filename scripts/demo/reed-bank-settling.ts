@@ -1,11 +1,7 @@
-import { AS_BUILT, type reedBankFiles, STAKE_FAR, STAKE_NEAR } from "./reed-bank.ts";
+import type { reedBankFiles } from "./reed-bank.ts";
 import { decided, said, swept } from "./steps.ts";
 import { on, type Step } from "./story.ts";
 import { aside, mhz } from "./told.ts";
-
-const _FREE_M = AS_BUILT.braidM ?? 0;
-const _FAR_M = STAKE_FAR.braidM ?? 0;
-const _NEAR_M = STAKE_NEAR.braidM ?? 0;
 
 /** April: a choke at the hub, and what is settled and kept. */
 export function settling(files: ReturnType<typeof reedBankFiles>): Step[] {
