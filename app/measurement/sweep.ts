@@ -8,7 +8,8 @@
 /** What the numbers of a file stand for, as other programs see it. */
 export type Quantity = "s11-db" | "return-loss" | "swr" | "level" | "gamma" | "impedance";
 
-export type FrequencyUnit = "Hz" | "kHz" | "MHz" | "GHz";
+export const FREQUENCY_UNITS = ["Hz", "kHz", "MHz", "GHz"] as const;
+export type FrequencyUnit = (typeof FREQUENCY_UNITS)[number];
 
 /** Where the reflection coefficient is referred to. */
 export type Plane = "instrument" | "port" | "antenna";

@@ -5,21 +5,25 @@ import type { FrequencyUnit, Quantity, Sweep, Warning } from "../measurement/swe
 export type FileFormat = "text" | "touchstone" | "screenshot";
 
 /** What the columns of a text file hold; finer than `Quantity`. */
-export type TextQuantity =
-  | "s11-db"
-  | "return-loss"
-  | "swr"
-  | "level"
-  | "magnitude"
-  | "magnitude-angle"
-  | "db-angle"
-  | "real-imaginary"
-  | "resistance-reactance"
-  | "impedance-angle";
+export const TEXT_QUANTITIES = [
+  "s11-db",
+  "return-loss",
+  "swr",
+  "level",
+  "magnitude",
+  "magnitude-angle",
+  "db-angle",
+  "real-imaginary",
+  "resistance-reactance",
+  "impedance-angle",
+] as const;
+export type TextQuantity = (typeof TEXT_QUANTITIES)[number];
+
+export const TEXT_ENCODINGS = ["utf-8", "utf-16le", "utf-16be", "latin1"] as const;
 
 /** Every choice that a reading of delimited text rests on. Columns count from 0, lines from 1. */
 export interface TextSpec {
-  encoding: "utf-8" | "utf-16le" | "utf-16be" | "latin1";
+  encoding: (typeof TEXT_ENCODINGS)[number];
   delimiter: "," | ";" | "\t" | " ";
   decimal: "." | ",";
   thousands: "" | "." | "," | " " | "'";

@@ -1,32 +1,22 @@
 import { z } from "zod";
-import type { Given } from "~/readers/reading";
+import { FREQUENCY_UNITS } from "~/measurement/sweep";
+import { type Given, TEXT_ENCODINGS, TEXT_QUANTITIES } from "~/readers/reading";
 
 /** What comes with a file. */
 
 const text = z
   .strictObject({
-    encoding: z.enum(["utf-8", "utf-16le", "utf-16be", "latin1"]),
+    encoding: z.enum(TEXT_ENCODINGS),
     delimiter: z.enum([",", ";", "\t", " "]),
     decimal: z.enum([".", ","]),
     thousands: z.enum(["", ".", ",", " ", "'"]),
     headerLine: z.number().int().min(0),
     firstDataLine: z.number().int().min(1),
     frequencyColumn: z.number().int().min(0),
-    frequencyUnit: z.enum(["Hz", "kHz", "MHz", "GHz"]),
+    frequencyUnit: z.enum(FREQUENCY_UNITS),
     valueColumn: z.number().int().min(0),
     secondColumn: z.number().int().min(0).nullable(),
-    quantity: z.enum([
-      "s11-db",
-      "return-loss",
-      "swr",
-      "level",
-      "magnitude",
-      "magnitude-angle",
-      "db-angle",
-      "real-imaginary",
-      "resistance-reactance",
-      "impedance-angle",
-    ]),
+    quantity: z.enum(TEXT_QUANTITIES),
     angleUnit: z.enum(["deg", "rad"]),
     referenceOhm: z.number().positive(),
     zeroDb: z.number().nullable(),

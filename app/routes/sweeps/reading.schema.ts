@@ -1,5 +1,6 @@
 import { z } from "zod";
-import type { Given, Reading, TextSpec } from "~/readers/reading";
+import { FREQUENCY_UNITS } from "~/measurement/sweep";
+import { type Given, type Reading, TEXT_ENCODINGS, TEXT_QUANTITIES, type TextSpec } from "~/readers/reading";
 
 /** The choices of a reading as a form sends them; columns count from 1 there, as people count. */
 
@@ -9,30 +10,19 @@ const column = z.coerce.number().int().min(1, "Columns count from 1.").max(1000)
 const line = z.coerce.number().int().min(0).max(10_000_000);
 
 export const textReadingSchema = z.object({
-  encoding: z.enum(["utf-8", "utf-16le", "utf-16be", "latin1"]),
+  encoding: z.enum(TEXT_ENCODINGS),
   delimiter: z.enum(["comma", "semicolon", "tab", "blank"]).transform((name) => DELIMITERS[name]),
   decimal: z.enum([".", ","]),
   thousands: z.enum(["none", "point", "comma", "blank", "apostrophe"]).transform((name) => THOUSANDS[name]),
   headerLine: line,
   firstDataLine: line.min(1, "Lines count from 1."),
   frequencyColumn: column.transform((n) => n - 1),
-  frequencyUnit: z.enum(["Hz", "kHz", "MHz", "GHz"]),
+  frequencyUnit: z.enum(FREQUENCY_UNITS),
   valueColumn: column.transform((n) => n - 1),
   secondColumn: z
     .union([z.literal("none"), column.transform((n) => n - 1)])
     .transform((value) => (value === "none" ? null : value)),
-  quantity: z.enum([
-    "s11-db",
-    "return-loss",
-    "swr",
-    "level",
-    "magnitude",
-    "magnitude-angle",
-    "db-angle",
-    "real-imaginary",
-    "resistance-reactance",
-    "impedance-angle",
-  ]),
+  quantity: z.enum(TEXT_QUANTITIES),
   angleUnit: z.enum(["deg", "rad"]),
   referenceOhm: z.coerce.number({ error: "Give the reference impedance in ohms." }).gt(0, "Over 0 Ω."),
   /** An empty field is "not known". */
