@@ -28,6 +28,27 @@ export interface Sweep {
   plane: Plane;
   /** What a picture's pixels allow: half-widths per point. Absent for files of numbers. */
   pictureLimits?: PictureLimits;
+  /** What the bench's errors allow, referred to this sweep's plane. Absent while there is no bench. */
+  benchLimits?: BenchLimits;
+}
+
+/**
+ * Worst-case residual errors of the bench at each point, linear, length n; NaN where one is not known. abs Γ lies
+ * within abs Γ ± (directivity + tracking·abs Γ + match·abs Γ²) (MEASUREMENT section 3).
+ */
+export interface BenchLimits {
+  directivity: Float64Array;
+  tracking: Float64Array;
+  match: Float64Array;
+}
+
+/** What was done to a sweep before its dips were found. */
+export interface Correction {
+  kind: "none" | "scalar" | "three-term";
+  plane: Plane;
+  /** Hz; the range in which the correction holds; null where nothing was corrected. */
+  fromHz: number | null;
+  toHz: number | null;
 }
 
 export interface PictureLimits {
