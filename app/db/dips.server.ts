@@ -1,4 +1,5 @@
 import { and, asc, count, eq, isNull, sql } from "drizzle-orm";
+import { completeDip } from "~/measurement/dips/complete";
 import type { Dip } from "~/measurement/sweep";
 import { db, type Queryable } from "./client.server.ts";
 import { dips, notes, sweeps, users } from "./schema/index.ts";
@@ -144,10 +145,7 @@ function columnsOf(numbers: Dip) {
   };
 }
 
-/** JSON has no Infinity: an SWR without a number comes back as null and means infinite. */
+/** The numbers as the current method's shape has them, whichever version stored them. */
 function revive(row: DipRow): DipRow {
-  return {
-    ...row,
-    numbers: { ...row.numbers, minimumSwr: row.numbers.minimumSwr ?? Number.POSITIVE_INFINITY },
-  };
+  return { ...row, numbers: completeDip(row.numbers) };
 }

@@ -1,4 +1,13 @@
-import { boolean, index, json, mysqlTable, primaryKey, uniqueIndex, varchar } from "drizzle-orm/mysql-core";
+import {
+  boolean,
+  index,
+  json,
+  mysqlTable,
+  primaryKey,
+  tinyint,
+  uniqueIndex,
+  varchar,
+} from "drizzle-orm/mysql-core";
 import { publicId, rowId, rowRef, sha256, utc } from "./columns.ts";
 
 export const users = mysqlTable("users", {
@@ -12,7 +21,52 @@ export const users = mysqlTable("users", {
   createdAt: utc("created_at").notNull(),
   lastSeenAt: utc("last_seen_at"),
   suspendedAt: utc("suspended_at"),
+  /** Lengths shown in metres or feet. */
+  lengthUnit: varchar("length_unit", { length: 4, enum: ["m", "ft"] })
+    .notNull()
+    .default("m"),
+  /** As the person writes it; checked against nothing. */
+  callSign: varchar("call_sign", { length: 20 }).notNull().default(""),
+  ituRegion: tinyint("itu_region"),
+  /** IANA name; mail and digests keep its days. */
+  timeZone: varchar("time_zone", { length: 60 }).notNull().default("UTC"),
+  /** Closed by the person: no sign-in, shown as "former member". */
+  closedAt: utc("closed_at"),
 });
+
+/** An e-mail sign-in under way. Only the code's hash is kept; single use. */
+export const emailCodes = mysqlTable(
+  "email_codes",
+  {
+    id: rowId(),
+    /** Of the random value in the browser's cookie that asked. */
+    askHash: sha256("ask_hash").notNull().unique(),
+    email: varchar("email", { length: 254 }).notNull(),
+    codeHash: sha256("code_hash").notNull(),
+    attempts: tinyint("attempts").notNull().default(0),
+    /** Set when an account that is signed in adds this address to itself. */
+    forUserId: rowRef("for_user_id").references(() => users.id, { onDelete: "cascade" }),
+    createdAt: utc("created_at").notNull(),
+    expiresAt: utc("expires_at").notNull(),
+    usedAt: utc("used_at"),
+  },
+  (t) => [index("email_codes_expires").on(t.expiresAt)],
+);
+
+/** `blockerId` does not hear from `blockedId` any more: no mentions, no invitations. */
+export const blocks = mysqlTable(
+  "blocks",
+  {
+    blockerId: rowRef("blocker_id")
+      .notNull()
+      .references(() => users.id, { onDelete: "cascade" }),
+    blockedId: rowRef("blocked_id")
+      .notNull()
+      .references(() => users.id, { onDelete: "cascade" }),
+    at: utc("at").notNull(),
+  },
+  (t) => [primaryKey({ columns: [t.blockerId, t.blockedId] }), index("blocks_blocked").on(t.blockedId)],
+);
 
 /** One way of signing in, e.g. provider "github" with its numeric id. */
 export const identities = mysqlTable(

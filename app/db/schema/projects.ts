@@ -1,5 +1,5 @@
-import { double, index, mysqlTable, primaryKey, text, tinyint, varchar } from "drizzle-orm/mysql-core";
-import { publicId, rowId, rowRef, utc } from "./columns.ts";
+import { double, index, int, mysqlTable, primaryKey, text, tinyint, varchar } from "drizzle-orm/mysql-core";
+import { publicId, rowId, rowRef, sha256, utc } from "./columns.ts";
 import { users } from "./people.ts";
 
 export const projects = mysqlTable(
@@ -32,8 +32,36 @@ export const memberships = mysqlTable(
       .references(() => users.id, { onDelete: "cascade" }),
     role: varchar("role", { length: 12, enum: ["owner", "experimenter", "commenter", "reader"] }).notNull(),
     createdAt: utc("created_at").notNull(),
+    lastActiveAt: utc("last_active_at"),
+    /** The newest event the person had seen on the project's page: "since you were last here". */
+    seenEventId: rowRef("seen_event_id"),
   },
   (t) => [primaryKey({ columns: [t.projectId, t.userId] }), index("memberships_user").on(t.userId)],
+);
+
+/** An open door with a role, by mail to one address or by link. Only the token's hash is kept. */
+export const invitations = mysqlTable(
+  "invitations",
+  {
+    id: rowId(),
+    publicId: publicId(),
+    projectId: rowRef("project_id")
+      .notNull()
+      .references(() => projects.id, { onDelete: "cascade" }),
+    role: varchar("role", { length: 12, enum: ["experimenter", "commenter", "reader"] }).notNull(),
+    /** Null: anyone with the link. */
+    email: varchar("email", { length: 254 }),
+    tokenHash: sha256("token_hash").notNull().unique(),
+    createdBy: rowRef("created_by").references(() => users.id, { onDelete: "set null" }),
+    createdAt: utc("created_at").notNull(),
+    expiresAt: utc("expires_at").notNull(),
+    revokedAt: utc("revoked_at"),
+    /** For one by mail: who took it. A link may be taken many times. */
+    acceptedBy: rowRef("accepted_by").references(() => users.id, { onDelete: "set null" }),
+    acceptedAt: utc("accepted_at"),
+    uses: int("uses", { unsigned: true }).notNull().default(0),
+  },
+  (t) => [index("invitations_project").on(t.projectId)],
 );
 
 /** A stretch that the antenna is meant to work in. */

@@ -10,7 +10,8 @@ import {
   uniqueIndex,
   varchar,
 } from "drizzle-orm/mysql-core";
-import type { AnalysisSettings, Dip, Warning } from "../../measurement/sweep.ts";
+import type { Feedline } from "../../measurement/feedline.ts";
+import type { AnalysisSettings, Correction, Dip, Warning } from "../../measurement/sweep.ts";
 import type { Given, Reading, ReadProblem } from "../../readers/reading.ts";
 import { longBlob, publicId, rowId, rowRef, sha256, utc } from "./columns.ts";
 import { users } from "./people.ts";
@@ -61,11 +62,23 @@ export const sweeps = mysqlTable(
     complex: boolean("complex"),
     /** Decimated points for lists and the first paint; dips kept. */
     preview: longBlob("preview"),
+    /** A reference is a bench's open, short, load or through: not part of the story, of trails or of search. */
+    purpose: varchar("purpose", { length: 10, enum: ["antenna", "reference"] })
+      .notNull()
+      .default("antenna"),
+    /** The bench it was taken with; null while that is not said. Which version counts is found by date. */
+    benchId: rowRef("bench_id"),
+    /** The line that may be taken away, as last said; null while that is not said. */
+    feedline: json("feedline").$type<Feedline | null>(),
+    /** Sweeps of the same thing share one; null for a sweep on its own. */
+    repeatGroup: varchar("repeat_group", { length: 16 }),
   },
   (t) => [
     index("sweeps_project").on(t.projectId, t.createdAt),
     index("sweeps_taken").on(t.projectId, t.takenAt),
     index("sweeps_file").on(t.fileId),
+    index("sweeps_bench").on(t.benchId),
+    index("sweeps_repeat").on(t.projectId, t.repeatGroup),
   ],
 );
 
@@ -117,6 +130,8 @@ export const analyses = mysqlTable(
     number: int("number", { unsigned: true }).notNull(),
     version: varchar("version", { length: 20 }).notNull(),
     settings: json("settings").$type<AnalysisSettings>().notNull(),
+    /** What was done before dips were found; null: nothing (as measured). */
+    correction: json("correction").$type<StoredCorrection | null>(),
     noiseDb: double("noise_db"),
     warnings: json("warnings").$type<Warning[]>().notNull(),
     dips: json("dips").$type<(Dip & { publicId: string })[]>().notNull(),
@@ -125,6 +140,15 @@ export const analyses = mysqlTable(
   },
   (t) => [uniqueIndex("analyses_sweep_number").on(t.sweepId, t.number)],
 );
+
+/** A correction with where it came from, so that a number can say how it came about. */
+export interface StoredCorrection extends Correction {
+  /** Public ids and the version's number at that time; null where no bench took part. */
+  bench: { bench: string; version: string; number: number; name: string } | null;
+  /** SHA-256 of the reference sweeps' originals by kind. */
+  references: Partial<Record<"open" | "short" | "load" | "through", string>>;
+  feedline: Feedline | null;
+}
 
 /**
  * A dip's lasting identity: its thread and verdict stay while its numbers are computed anew.
