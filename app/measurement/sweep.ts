@@ -76,13 +76,18 @@ export interface Dip {
   frequencyUncertaintyHz: number | null;
   /** Lowest SWR; Infinity where abs Γ reaches 1. */
   minimumSwr: number;
-  /** Limits that include the bench's directivity; null while the bench is unknown. */
+  /** Worst-case limits of the bench and the 95 % interval together; null while the bench is unknown. */
   minimumSwrLow: number | null;
   minimumSwrHigh: number | null;
   /** 95 % interval from noise, fit and frequency step alone; null where it is not known. */
   minimumSwrNoiseLow: number | null;
   minimumSwrNoiseHigh: number | null;
   returnLossDb: number;
+  /** The same limits as of the SWR, dB; null while the bench is unknown. */
+  returnLossLowDb: number | null;
+  returnLossHighDb: number | null;
+  /** Hz; how far the bench's errors may have moved the lowest point, worst case; null while unknown. */
+  benchFrequencyHalfHz: number | null;
   /** Depth below the lower of the two neighbouring crests, dB of return loss. */
   prominenceDb: number;
   bandwidth: Bandwidth | null;
@@ -90,6 +95,12 @@ export interface Dip {
   q: number | null;
   qLow: number | null;
   qHigh: number | null;
+  /** `qLow`..`qHigh` widened by the limits of the width and of the lowest SWR; null where one is unknown. */
+  qLimits: Limits | null;
+  /** What the limits of the lowest SWR come from, the largest first, sum 1; empty while they are unknown. */
+  shares: Share[];
+  /** What is not known about the limits, and what would make it known. */
+  unknown: Unknown[];
   method: DipMethod;
   /** True when the lowest point is the first or the last of the sweep. */
   edge: boolean;
@@ -107,11 +118,48 @@ export interface Bandwidth {
   widthHz: number;
   /** Half-width of the width's 95 % interval, Hz; null where it is not known. */
   widthUncertaintyHz: number | null;
+  /** Hz; worst-case limits of the bench and the 95 % interval together; null where unknown or open. */
+  widthLowHz: number | null;
+  widthHighHz: number | null;
+  /** The same for the edges themselves, Hz; null where unknown or open. */
+  lowEdge: Limits | null;
+  highEdge: Limits | null;
   open: boolean;
   /** Another dip lies in the same stretch. */
   shared: boolean;
   /** Width over the geometric mean of the edges; null when open. */
   fractional: number | null;
+}
+
+/** A number lies between these. */
+export interface Limits {
+  low: number;
+  high: number;
+}
+
+export const LIMIT_SOURCES = [
+  "directivity",
+  "tracking",
+  "match",
+  "noise",
+  "fit",
+  "step",
+  "pixel",
+  "feedline",
+] as const;
+/** Where doubt about a number comes from. */
+export type LimitSource = (typeof LIMIT_SOURCES)[number];
+
+export interface Share {
+  source: LimitSource;
+  /** 0 to 1. */
+  share: number;
+}
+
+export interface Unknown {
+  source: LimitSource;
+  /** A plain sentence: which sweep or number would make it known. */
+  remedy: string;
 }
 
 /** "Too few points: sweep again over …" */

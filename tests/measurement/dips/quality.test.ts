@@ -30,7 +30,14 @@ function bandOf(r: number, q: number, s = 2): Bandwidth {
   const truth = truthOf({ r, q }, s);
   const width = { lowHz: truth.lowHz, highHz: truth.highHz, widthHz: truth.widthHz as number };
   const fractional = width.widthHz / 14.15e6;
-  return { limitSwr: s, ...width, widthUncertaintyHz: null, open: false, shared: false, fractional };
+  const limits = {
+    widthUncertaintyHz: null,
+    widthLowHz: null,
+    widthHighHz: null,
+    lowEdge: null,
+    highEdge: null,
+  };
+  return { limitSwr: s, ...width, ...limits, open: false, shared: false, fractional };
 }
 
 describe("from the bandwidth", () => {
