@@ -1,0 +1,26 @@
+/** What can happen in a project, as live updates, activity, feeds and mail know it. */
+export const EVENT_KINDS = [
+  "note.added",
+  "note.edited",
+  "note.removed",
+  "sweep.added",
+  "sweep.edited",
+  "sweep.read-anew",
+  "sweep.analysed",
+  "sweep.deleted",
+  "verdict.given",
+  "trail.named",
+  "trail.corrected",
+  "step.added",
+  "step.edited",
+  "step.deleted",
+  "antenna.changed",
+  "bench.added",
+  "bench.changed",
+  "member.joined",
+  "member.changed",
+  "member.left",
+  "project.changed",
+] as const;
+
+export type EventKind = (typeof EVENT_KINDS)[number];
