@@ -1,11 +1,13 @@
 import { existsSync, readFileSync } from "node:fs";
 import { closePictureReader } from "../app/services/picture.server.ts";
+import { trails } from "./accuracy-trails.ts";
 import type { PhotographTruth } from "./screens/photographs.ts";
 import { type PictureScore, scorePicture, totals, traceRight, truthsIn } from "./screens/score.ts";
 import { photographTotals, scorePhotograph, shaken } from "./screens/score-photograph.ts";
 
 /**
  * `npm run accuracy -- screens [FOLDER] [--given] [--json]`: how well pictures are read, against their truth.
+ * `npm run accuracy -- trails [--json]`: dips followed through invented histories (`accuracy-trails.ts`).
  * `npm run accuracy -- photographs`: photographs by four corners and axes, with exact corners and 1 px off.
  *
  * Exit code: 0; 1 where a share is below the last accepted table's; 2 for usage and parts that are not there yet.
@@ -29,6 +31,7 @@ async function main(args: string[]): Promise<number> {
     return 2;
   }
   if (part === "photographs") return photographs(flags.includes("--json"));
+  if (part === "trails") return trails(flags.includes("--json"));
   if (part !== "screens") {
     process.stderr.write(`${part}: not available yet.\n`);
     return 2;
