@@ -35,6 +35,8 @@ export default [
     route("sweeps/:sweep/sweep.csv", "routes/sweeps/csv.ts"),
     route("sweeps/:sweep/sweep.s1p", "routes/sweeps/touchstone.ts"),
     route("sweeps/:sweep/reading/try", "routes/sweeps/reading-try.ts"),
+    route("photographs", "routes/photographs/photographs.ts"),
+    route("photographs/:photograph/:size", "routes/photographs/photograph.ts"),
     route("notes", "routes/notes/notes.ts"),
     route("notes/:note", "routes/notes/note.tsx"),
     route("dips/:dip/verdict", "routes/dips/verdict.ts"),

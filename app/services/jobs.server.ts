@@ -1,15 +1,17 @@
 import * as jobs from "~/db/jobs.server";
+import * as photographs from "~/db/photographs.server";
 import * as sessions from "~/db/sessions.server";
-import { isStorageKeyUsed } from "~/db/sweeps.server";
+import * as sweeps from "~/db/sweeps.server";
 import { log } from "./log.server.ts";
 import { deleteObject } from "./storage.server.ts";
 
 /** Background work. Every kind must be harmless to run twice. */
 
 const KINDS: Record<string, (payload: never) => Promise<void>> = {
-  /** Removes a stored object unless a file's row says that it is in use. */
+  /** Removes a stored object unless a row says that it is in use. */
   "delete-object": async ({ key }: { key: string }) => {
-    if (!(await isStorageKeyUsed(key))) await deleteObject(key);
+    const rows = key.startsWith("photographs/") ? photographs : sweeps;
+    if (!(await rows.isStorageKeyUsed(key))) await deleteObject(key);
   },
 };
 

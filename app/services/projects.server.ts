@@ -2,6 +2,7 @@ import type { ProjectRole } from "~/auth/permissions";
 import { inTransaction, isDuplicate, type Transaction } from "~/db/client.server";
 import * as jobs from "~/db/jobs.server";
 import * as people from "~/db/people.server";
+import * as photographs from "~/db/photographs.server";
 import * as projects from "~/db/projects.server";
 import * as sweeps from "~/db/sweeps.server";
 import { type Merged, mergeEdit } from "./merge-edit.ts";
@@ -20,7 +21,7 @@ export function deleteProject(id: number): Promise<void> {
   return inTransaction(async (tx) => {
     // Locked before the keys are read: an upload under way is either seen here or finds no project.
     await projects.lock(id, tx);
-    const keys = await sweeps.findStorageKeys(id, tx);
+    const keys = [...(await sweeps.findStorageKeys(id, tx)), ...(await photographs.findStorageKeys(id, tx))];
     await jobs.insertAll(
       "delete-object",
       keys.map((key) => ({ key })),
