@@ -77,15 +77,23 @@ export async function findOpenByProject(projectId: number, limit = 20, tx: Query
 
 /** The id of the sweep taken last, among those that were read. */
 function newestSweepOf(projectId: number) {
-  return sql<number>`(select s.id from ${sweeps} s where s.project_id = ${projectId} and s.analysis_id is not null
-    order by coalesce(s.taken_at, s.created_at) desc, s.id desc limit 1)`;
+  return sql<number>`(select s.id from ${sweeps} s where s.project_id = ${projectId} and s.purpose = 'antenna'
+    and s.analysis_id is not null order by coalesce(s.taken_at, s.created_at) desc, s.id desc limit 1)`;
 }
 
 export async function countOpenByProject(projectId: number, tx: Queryable = db): Promise<number> {
   const rows = await tx
     .select({ n: count() })
     .from(dips)
-    .where(and(eq(dips.projectId, projectId), eq(dips.present, true), sql`${dips.verdict} <> 'settled'`));
+    .innerJoin(sweeps, eq(sweeps.id, dips.sweepId))
+    .where(
+      and(
+        eq(dips.projectId, projectId),
+        eq(dips.present, true),
+        eq(sweeps.purpose, "antenna"),
+        sql`${dips.verdict} <> 'settled'`,
+      ),
+    );
   return rows[0].n;
 }
 

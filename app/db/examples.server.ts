@@ -9,7 +9,14 @@ export async function findPublicExample(tx: Queryable = db) {
     .select({ id: sweeps.id })
     .from(sweeps)
     .innerJoin(projects, eq(projects.id, sweeps.projectId))
-    .where(and(eq(projects.visibility, "public"), isNotNull(sweeps.analysisId), isNotNull(sweeps.preview)))
+    .where(
+      and(
+        eq(projects.visibility, "public"),
+        eq(sweeps.purpose, "antenna"),
+        isNotNull(sweeps.analysisId),
+        isNotNull(sweeps.preview),
+      ),
+    )
     .orderBy(desc(projects.demo), desc(sweeps.createdAt))
     .limit(1)
     .as("newest");

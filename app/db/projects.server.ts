@@ -55,7 +55,7 @@ export async function findPageByUser(
     })
     .from(memberships)
     .innerJoin(projects, eq(projects.id, memberships.projectId))
-    .leftJoin(sweeps, eq(sweeps.projectId, projects.id))
+    .leftJoin(sweeps, and(eq(sweeps.projectId, projects.id), eq(sweeps.purpose, "antenna")))
     .where(
       and(
         eq(memberships.userId, userId),
@@ -80,7 +80,7 @@ export async function findAllPublic(limit = 20, tx: Queryable = db) {
   return tx
     .select({ ...listColumns, sweepCount: count(sweeps.id) })
     .from(projects)
-    .leftJoin(sweeps, eq(sweeps.projectId, projects.id))
+    .leftJoin(sweeps, and(eq(sweeps.projectId, projects.id), eq(sweeps.purpose, "antenna")))
     .where(eq(projects.visibility, "public"))
     .groupBy(projects.id)
     .orderBy(desc(projects.updatedAt))
