@@ -45,6 +45,17 @@ export function LandLayer({ scene, palette, id, lineHidden }: LandLayerProps) {
         {scene.waters.map((water) => (
           <path key={water.key} d={water.path} fill={palette.water} />
         ))}
+        {scene.measured && (
+          <path
+            d={scene.measured}
+            fill="none"
+            stroke={palette.edge}
+            strokeWidth="1.25"
+            strokeDasharray="5 2"
+            strokeLinejoin="round"
+            vectorEffect="non-scaling-stroke"
+          />
+        )}
         <PenLines {...{ scene, palette, lineHidden }} />
       </Stretched>
       {scene.waters.map((water) => (

@@ -34,17 +34,18 @@ export interface LiveSweepChartProps extends Omit<SceneInput, "plotWidthPx"> {
 /** A sweep's chart with its cards: drawn by the server, then zoomed, moved and read with the pointer. */
 export function LiveSweepChart(props: LiveSweepChartProps) {
   const { whole, label, dipHref, chosenDipId, onPick, rangeHref, onRange, ...input } = props;
-  const { view, dips, bands, designBands, swrLimit, plotHeightPx, limits } = input;
+  const { view, dips, bands, designBands, swrLimit, plotHeightPx, limits, measured } = input;
   const all = useAllPoints(input.points, whole);
-  // Limits go point by point with the points they came with.
-  const points = limits ? input.points : all;
+  // Limits and the grey stretch go point by point with the points they came with.
+  const points = limits || measured ? input.points : all;
   const [asked, setAsked] = useState<FrequencyRange | null>(null);
   const [drag, setDrag] = useState<DragMode | null>(null);
   // biome-ignore lint/correctness/useExhaustiveDependencies: the address has caught up with what was asked
   useEffect(() => setAsked(null), [view.fromHz, view.toHz, view.scale]);
   const scene = useMemo(
-    () => buildSweepScene({ points, limits, dips, bands, designBands, swrLimit, plotHeightPx, view }),
-    [points, limits, dips, bands, designBands, swrLimit, plotHeightPx, view],
+    () =>
+      buildSweepScene({ points, limits, measured, dips, bands, designBands, swrLimit, plotHeightPx, view }),
+    [points, limits, measured, dips, bands, designBands, swrLimit, plotHeightPx, view],
   );
   const shown = useMemo(() => {
     if (!asked) return scene;
@@ -52,6 +53,7 @@ export function LiveSweepChart(props: LiveSweepChartProps) {
     return buildSweepScene({
       points,
       limits,
+      measured,
       dips,
       bands,
       designBands,
@@ -59,7 +61,7 @@ export function LiveSweepChart(props: LiveSweepChartProps) {
       plotHeightPx,
       view: moved,
     });
-  }, [asked, scene, points, limits, dips, bands, designBands, swrLimit, plotHeightPx, view]);
+  }, [asked, scene, points, limits, measured, dips, bands, designBands, swrLimit, plotHeightPx, view]);
   const choose = (range: FrequencyRange) => {
     setAsked(range);
     onRange(range);

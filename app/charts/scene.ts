@@ -14,6 +14,8 @@ export interface SceneInput {
   points: ChartPoints;
   /** Limits per point, as abs Γ, drawn as a band around the line. */
   limits?: { low: ArrayLike<number>; high: ArrayLike<number> };
+  /** abs Γ as measured at the same points where a correction does not hold, NaN elsewhere; drawn in grey. */
+  measured?: ArrayLike<number>;
   dips: readonly ChartDip[];
   bands: readonly ChartBand[];
   designBands: readonly ChartBand[];
@@ -39,6 +41,8 @@ export interface Scene {
   line: string;
   offScale: string;
   limits: string;
+  /** The line as measured, outside the correction. */
+  measured: string;
   valueTicks: ValueTick[];
   /** The SWR limit; null where it lies beyond the axis. */
   limit: { y: number; label: string } | null;
@@ -71,7 +75,10 @@ export function buildSweepScene(input: SceneInput): Scene {
   const columns = plotWidthPx ? Math.max(50, Math.round(plotWidthPx / 2)) : COLUMNS;
   const runs = decimate(points, scale, columns);
   const dips = input.dips.filter(({ frequencyHz: hz }) => hz >= scale.fromHz && hz <= scale.toHz);
-  const axis = valueAxis(view.quantity, plotHeightPx, rangeOf(runs, input.dips));
+  const grey = input.measured
+    ? decimate({ frequencyHz: points.frequencyHz, magnitude: input.measured }, scale, columns)
+    : [];
+  const axis = valueAxis(view.quantity, plotHeightPx, rangeOf([...runs, ...grey], input.dips));
   const pathWidth = plotWidthPx ?? FLUID_PATH_WIDTH;
   const box: ProfileBox = { width: pathWidth, heightPx: plotHeightPx, yOfMagnitude: axis.yOfMagnitude };
   const paths = profilePaths(runs, box);
@@ -89,6 +96,7 @@ export function buildSweepScene(input: SceneInput): Scene {
     line: paths.line,
     offScale: paths.offScale,
     limits: input.limits ? limitsPath(input, scale, columns, box) : "",
+    measured: grey.length > 0 ? profilePaths(grey, box).line : "",
     valueTicks: axis.ticks,
     limit: limitShown ? { y: levelY, label: `SWR ${Number(input.swrLimit.toFixed(2))}` } : null,
     frequency: frequencyAxis(scale, widths),
@@ -98,7 +106,7 @@ export function buildSweepScene(input: SceneInput): Scene {
     remarks: [paths.beyondTop && axis.beyondTop, paths.beyondBottom && axis.beyondBottom].filter(
       (remark): remark is string => Boolean(remark),
     ),
-    empty: runs.length === 0,
+    empty: runs.length === 0 && grey.length === 0,
   };
 }
 

@@ -11,15 +11,26 @@ export interface SentPoints {
   /** abs Γ; NaN is a gap. */
   magnitude: string;
   limits?: { low: string; high: string };
+  /** abs Γ as measured where the correction does not hold; NaN elsewhere. */
+  measured?: string;
 }
 
 export interface UnpackedPoints extends ChartPoints {
   limits?: { low: ArrayLike<number>; high: ArrayLike<number> };
+  measured?: ArrayLike<number>;
 }
 
-export function packPoints(sweep: Sweep | null): SentPoints {
+/** What is drawn besides the line itself, point by point. */
+export interface BesidePoints {
+  /** abs Γ; NaN where not known. In place of a picture's own limits. */
+  limits?: { low: Float64Array; high: Float64Array };
+  measured?: Float64Array;
+}
+
+export function packPoints(sweep: Sweep | null, beside: BesidePoints = {}): SentPoints {
   if (!sweep) return { count: 0, grid: { frequencyHz: "" }, magnitude: "" };
-  const { frequencyHz, magnitude, pictureLimits } = sweep;
+  const { frequencyHz, magnitude } = sweep;
+  const limits = beside.limits ?? pictured(sweep);
   const single = (values: Float64Array) => toBase64(Float32Array.from(values));
   return {
     count: frequencyHz.length,
@@ -27,19 +38,23 @@ export function packPoints(sweep: Sweep | null): SentPoints {
       ? { startHz: frequencyHz[0], stopHz: frequencyHz[frequencyHz.length - 1] }
       : { frequencyHz: toBase64(frequencyHz) },
     magnitude: single(magnitude),
-    ...(pictureLimits && {
-      limits: { low: single(pictureLimits.magnitudeLow), high: single(pictureLimits.magnitudeHigh) },
-    }),
+    ...(limits && { limits: { low: single(limits.low), high: single(limits.high) } }),
+    ...(beside.measured && { measured: single(beside.measured) }),
   };
 }
 
-export function unpackPoints({ count, grid, magnitude, limits }: SentPoints): UnpackedPoints {
+function pictured({ pictureLimits }: Sweep): BesidePoints["limits"] {
+  return pictureLimits && { low: pictureLimits.magnitudeLow, high: pictureLimits.magnitudeHigh };
+}
+
+export function unpackPoints({ count, grid, magnitude, limits, measured }: SentPoints): UnpackedPoints {
   const single = (text: string) => new Float32Array(fromBase64(text));
   return {
     frequencyHz:
       "frequencyHz" in grid ? new Float64Array(fromBase64(grid.frequencyHz)) : evenGrid(grid, count),
     magnitude: single(magnitude),
     ...(limits && { limits: { low: single(limits.low), high: single(limits.high) } }),
+    ...(measured && { measured: single(measured) }),
   };
 }
 
@@ -59,14 +74,14 @@ function isEven(frequencyHz: Float64Array): boolean {
   return true;
 }
 
-function toBase64(values: Float32Array | Float64Array): string {
+export function toBase64(values: Float32Array | Float64Array): string {
   const bytes = new Uint8Array(values.buffer, values.byteOffset, values.byteLength);
   let text = "";
   for (let i = 0; i < bytes.length; i += CHUNK) text += String.fromCharCode(...bytes.subarray(i, i + CHUNK));
   return btoa(text);
 }
 
-function fromBase64(text: string): ArrayBuffer {
+export function fromBase64(text: string): ArrayBuffer {
   const binary = atob(text);
   const bytes = new Uint8Array(binary.length);
   for (let i = 0; i < binary.length; i++) bytes[i] = binary.charCodeAt(i);

@@ -4,7 +4,17 @@ import type { Given, Reading } from "~/readers/reading";
 import { db, type Queryable } from "./client.server.ts";
 import { decodeCursor, encodeCursor } from "./cursor.server.ts";
 import { newPublicId } from "./ids.server.ts";
-import { analyses, dips, files, notes, readings, sweepPoints, sweeps, users } from "./schema/index.ts";
+import {
+  analyses,
+  dips,
+  files,
+  notes,
+  readings,
+  type StoredCorrection,
+  sweepPoints,
+  sweeps,
+  users,
+} from "./schema/index.ts";
 
 export type SweepRow = typeof sweeps.$inferSelect;
 
@@ -28,6 +38,7 @@ export async function lock(id: number, tx: Queryable): Promise<SweepRow | undefi
   return (await tx.select().from(sweeps).where(eq(sweeps.id, id)).limit(1).for("update"))[0];
 }
 
+/** The antenna's sweeps, newest first; a bench's references stand with their bench. */
 export async function findAllByProject(
   projectId: number,
   page: { limit?: number; cursor?: string } = {},
@@ -65,6 +76,7 @@ export async function findAllByProject(
     .where(
       and(
         eq(sweeps.projectId, projectId),
+        eq(sweeps.purpose, "antenna"),
         before && or(lt(orderTime, before.at), and(eq(orderTime, before.at), lt(sweeps.id, before.id))),
       ),
     )
@@ -85,14 +97,18 @@ export async function sumStoredBytes(tx: Queryable = db): Promise<{ files: numbe
   return rows[0];
 }
 
+/** How many sweeps of the antenna there are. */
 export async function countByProject(projectId: number, tx: Queryable = db): Promise<number> {
-  const rows = await tx.select({ n: count() }).from(sweeps).where(eq(sweeps.projectId, projectId));
+  const rows = await tx
+    .select({ n: count() })
+    .from(sweeps)
+    .where(and(eq(sweeps.projectId, projectId), eq(sweeps.purpose, "antenna")));
   return rows[0].n;
 }
 
 export async function findFileBySha256(projectId: number, sha256: string, tx: Queryable = db) {
   const rows = await tx
-    .select({ file: files, sweep: { publicId: sweeps.publicId, title: sweeps.title } })
+    .select({ file: files, sweep: SWEEP_OF_FILE })
     .from(files)
     .innerJoin(sweeps, eq(sweeps.fileId, files.id))
     .where(and(eq(files.projectId, projectId), eq(files.sha256, sha256)))
@@ -127,7 +143,10 @@ export async function insertFile(
 }
 
 export async function insert(
-  values: Pick<typeof sweeps.$inferInsert, "projectId" | "fileId" | "title" | "takenAt" | "createdBy">,
+  values: Pick<
+    typeof sweeps.$inferInsert,
+    "projectId" | "fileId" | "title" | "takenAt" | "createdBy" | "purpose"
+  >,
   tx: Queryable,
 ) {
   const publicId = newPublicId();
@@ -198,6 +217,7 @@ export interface NewAnalysis {
   readingId: number;
   version: string;
   settings: AnalysisSettings;
+  correction: StoredCorrection | null;
   noiseDb: number | null;
   warnings: Warning[];
   dips: (Dip & { publicId: string })[];
@@ -247,6 +267,13 @@ async function nextNumber(table: typeof readings | typeof analyses, sweepId: num
     .where(eq(table.sweepId, sweepId));
   return rows[0].n;
 }
+
+const SWEEP_OF_FILE = {
+  id: sweeps.id,
+  publicId: sweeps.publicId,
+  title: sweeps.title,
+  purpose: sweeps.purpose,
+};
 
 /** Newest first by when it was taken, or where that is unknown by when it came in. */
 const orderTime = sql<Date>`coalesce(${sweeps.takenAt}, ${sweeps.createdAt})`;

@@ -1,6 +1,7 @@
 import type { Transaction } from "~/db/client.server";
 import * as dips from "~/db/dips.server";
 import { newPublicId } from "~/db/ids.server";
+import type { StoredCorrection } from "~/db/schema";
 import * as sweeps from "~/db/sweeps.server";
 import { pairDips } from "~/measurement/match-dips";
 import type { Analysis, Dip } from "~/measurement/sweep";
@@ -10,6 +11,8 @@ export interface StoreAnalysis {
   sweepId: number;
   readingId: number;
   analysis: Analysis;
+  /** Null: the dips were found in the sweep as it was measured. */
+  correction: StoredCorrection | null;
   by: number | null;
 }
 
@@ -48,6 +51,7 @@ export async function storeAnalysis(input: StoreAnalysis, tx: Transaction): Prom
       readingId: input.readingId,
       version: analysis.version,
       settings: analysis.settings,
+      correction: input.correction,
       noiseDb: Number.isFinite(analysis.noiseDb) ? analysis.noiseDb : null,
       warnings: analysis.warnings,
       dips: analysis.dips.map((dip, j) => ({ ...dip, publicId: publicIds[j] })),

@@ -1,7 +1,7 @@
 import * as benches from "~/db/benches.server";
 import type { BenchForCorrection, BenchReferences, ReadAs } from "~/measurement/correction/correct";
 import type { Sweep } from "~/measurement/sweep";
-import type { Reading } from "~/readers/reading";
+import { readAsOf } from "./correction.server.ts";
 import { loadPoints } from "./sweep-points.server.ts";
 
 /** A version of a bench with the points of its references, ready for `correctSweep` and `qualifyBench`. */
@@ -69,11 +69,6 @@ export async function loadBench(
     unread: found.filter((reference) => !references.includes(reference)),
     sha256: Object.fromEntries(references.map(({ kind, sha256 }) => [kind, sha256])),
   };
-}
-
-/** How a file was read, as far as a correction must know it. */
-export function readAsOf({ quantity, spec }: Reading): NonNullable<ReadAs["sweep"]> {
-  return { quantity, zeroDb: spec.screenshot?.zeroDb ?? spec.text?.zeroDb ?? null };
 }
 
 /** The benches that a sweep of the project can be said to be taken with: kept here, or members' own, none put away. */

@@ -7,12 +7,14 @@ import { DEFAULT_SETTINGS } from "~/measurement/sweep";
 import { type Given, MAX_FILE_BYTES, type Reading, type ReadProblem } from "~/readers/reading";
 import { placeInPicture } from "~/readers/screenshot/in-picture";
 import { storeAnalysis } from "./analyses.server.ts";
+import type { CorrectionTask } from "./correction.server.ts";
 import { cleanFileName, plainText, titleFromFileName } from "./file-names.ts";
 import { doubted, isBeyondReading, rememberedFor } from "./picture-doubt.ts";
 import type { ReadOutcome } from "./read-and-analyse.server.ts";
 import { readFile } from "./reading.server.ts";
 import type { PictureStage } from "./seen-picture.ts";
 import { deleteObject, putObject, sha256Of } from "./storage.server.ts";
+import { type Means, meansOf, taskOf, toStore, withBenchWarnings } from "./sweep-corrections.server.ts";
 
 export interface TakeIn {
   project: { id: number; publicId: string };
@@ -21,6 +23,10 @@ export interface TakeIn {
   title?: string;
   takenAt?: Date | null;
   given?: Given;
+  /** "reference" for a bench's open, short, load or through; else it is a sweep of the antenna. */
+  purpose?: sweeps.SweepRow["purpose"];
+  /** Row id of the bench it was taken with: its dips are then found at that bench's port. */
+  benchId?: number | null;
   /** Keep a file that can't be read, so that a person can say how to read it; else it is refused whole. */
   keepUnread: boolean;
   /** Told each stage of a picture that is done. */
@@ -53,7 +59,13 @@ export async function takeIn(input: TakeIn): Promise<Taken> {
   const twin = await sweeps.findFileBySha256(project.id, sha256);
   if (twin) return twiceOf(twin);
 
-  const { outcome, given } = await readAsBefore(input);
+  const means = await meansOf({
+    benchId: input.benchId ?? null,
+    feedline: null,
+    takenAt: input.takenAt ?? null,
+    createdAt: new Date(),
+  });
+  const { outcome, given } = await readAsBefore(input, taskOf(means, "port"));
   if (!outcome.ok && (!input.keepUnread || isBeyondReading(outcome.problem))) {
     return { kind: "refused", problem: outcome.problem };
   }
@@ -78,10 +90,21 @@ export async function takeIn(input: TakeIn): Promise<Taken> {
         .slice(0, 160)
         .join("");
       const sweep = await sweeps.insert(
-        { projectId: project.id, fileId, title, takenAt: input.takenAt ?? null, createdBy: input.by.id },
+        {
+          projectId: project.id,
+          fileId,
+          title,
+          takenAt: input.takenAt ?? null,
+          createdBy: input.by.id,
+          purpose: input.purpose,
+        },
         tx,
       );
-      await storeOutcome({ projectId: project.id, sweepId: sweep.id, given, outcome, by: input.by.id }, tx);
+      if (input.benchId) await sweeps.update(sweep.id, { benchId: input.benchId }, tx);
+      await storeOutcome(
+        { projectId: project.id, sweepId: sweep.id, given, outcome, means, by: input.by.id },
+        tx,
+      );
       await jobs.deleteById(undo, tx);
       await projects.update(project.id, {}, tx);
       return outcome.ok
@@ -109,6 +132,8 @@ export interface StoreOutcome {
   sweepId: number;
   given: Given;
   outcome: ReadOutcome;
+  /** What its dips were corrected with, as far as they were. */
+  means: Means;
   by: number;
 }
 
@@ -129,7 +154,14 @@ export async function storeOutcome(
     return;
   }
   const analysisId = await storeAnalysis(
-    { projectId: input.projectId, sweepId, readingId, analysis: outcome.analysis, by },
+    {
+      projectId: input.projectId,
+      sweepId,
+      readingId,
+      analysis: withBenchWarnings(outcome.analysis, input.means),
+      correction: toStore(outcome.correction, input.means),
+      by,
+    },
     tx,
   );
   const { pointCount, startHz, stopHz, referenceOhm, complex } = outcome;
@@ -151,8 +183,11 @@ export async function storeOutcome(
 }
 
 /** Reads the file, with what a person chose for the last file of the same shape in this project where it has one. */
-async function readAsBefore(input: TakeIn): Promise<{ outcome: ReadOutcome; given: Given }> {
-  const task = { ...input.file, settings: DEFAULT_SETTINGS };
+async function readAsBefore(
+  input: TakeIn,
+  correct: CorrectionTask,
+): Promise<{ outcome: ReadOutcome; given: Given }> {
+  const task = { ...input.file, settings: DEFAULT_SETTINGS, correct };
   const given = input.given ?? {};
   const outcome = await readFile({ ...task, given }, input.progress);
   const first = { outcome: doubted(outcome), given };

@@ -6,6 +6,7 @@ import { storeOutcome } from "./intake.server.ts";
 import { readFile } from "./reading.server.ts";
 import { type TriedReading, tryReading } from "./reading-preview.server.ts";
 import { getObject } from "./storage.server.ts";
+import { meansOf, planeToKeep, taskOf } from "./sweep-corrections.server.ts";
 
 /** All choices of a picture's reading as a person sees them; what is left out is not known. */
 export interface PictureChoices {
@@ -40,8 +41,10 @@ export async function keepPicture(
 ): Promise<ReadProblem | null> {
   const { sweep, file } = found;
   const bytes = await getObject(file.storageKey);
+  const means = await meansOf(sweep);
+  const correct = taskOf(means, planeToKeep(found));
   const read = (spec: ScreenshotSpec) =>
-    readFile({ name: file.name, bytes, given: { screenshot: spec }, settings, kept: file.sha256 });
+    readFile({ name: file.name, bytes, given: { screenshot: spec }, settings, correct, kept: file.sha256 });
   let spec = choices.spec;
   if (choices.zeroAtCrest) {
     const crest = (await read({ ...spec, zeroDb: undefined })).picture?.crest ?? null;
@@ -55,7 +58,7 @@ export async function keepPicture(
   if (reading.picture) reading.picture.sources = sourcesOf(given, reading.picture, before?.picture);
   await inTransaction(async (tx) => {
     if (!(await sweeps.lock(sweep.id, tx))) return;
-    await storeOutcome({ projectId: sweep.projectId, sweepId: sweep.id, given, outcome, by }, tx);
+    await storeOutcome({ projectId: sweep.projectId, sweepId: sweep.id, given, outcome, means, by }, tx);
   });
   return null;
 }

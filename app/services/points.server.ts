@@ -1,4 +1,5 @@
 import { deflateSync, inflateSync } from "node:zlib";
+import { decimate } from "../measurement/decimate.ts";
 import type { Sweep } from "../measurement/sweep.ts";
 
 /**
@@ -58,6 +59,11 @@ export function pickPoints(sweep: Sweep, indices: ArrayLike<number>): Sweep {
   return { ...sweepOf(columns, flags, sweep.referenceOhm), plane: sweep.plane };
 }
 
+/** What lists and the first paint draw: of the sweep that the dips were found in. */
+export function previewOf(sweep: Sweep): Buffer {
+  return encodePoints(pickPoints(sweep, decimate(sweep, PREVIEW_POINTS)))[0];
+}
+
 function columnsOf(sweep: Sweep): Float64Array[] {
   const columns = [sweep.frequencyHz, sweep.magnitude];
   if (sweep.gammaRe && sweep.gammaIm) columns.push(sweep.gammaRe, sweep.gammaIm);
@@ -108,5 +114,7 @@ const FORMAT = 1;
 const HEADER_BYTES = 16;
 const COMPLEX = 1;
 const PICTURE = 2;
+/** Enough for a chart 1600 px wide. */
+const PREVIEW_POINTS = 1600;
 /** 7 columns of 8 bytes stay under 8 MB before packing: half the usual largest packet. */
 const POINTS_PER_PART = 131_072;

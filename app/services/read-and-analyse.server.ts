@@ -1,13 +1,13 @@
 import type { MessagePort } from "node:worker_threads";
 import { analyse } from "../measurement/analyse.ts";
-import { decimate } from "../measurement/decimate.ts";
-import type { Analysis, AnalysisSettings, Sweep, Warning } from "../measurement/sweep.ts";
+import type { Analysis, AnalysisSettings, Correction, Sweep, Warning } from "../measurement/sweep.ts";
 import { readAny } from "../readers/read.ts";
 import type { Given, Reading, ReadProblem, ReadResult } from "../readers/reading.ts";
 import { type CorrectedResult, readCorrected } from "../readers/screenshot/correct.ts";
+import { type CorrectionTask, correctAsRead } from "./correction.server.ts";
 import { keptPicture, recogniseNothing } from "./kept-pictures.server.ts";
 import { PictureRefused, readPictureFile, recogniseText } from "./picture.server.ts";
-import { encodePoints, pickPoints } from "./points.server.ts";
+import { encodePoints, previewOf } from "./points.server.ts";
 import { type PictureStage, type SeenPicture, seenPicture } from "./seen-picture.ts";
 
 /** A file to findings in one go, ready to be stored. Runs in a worker thread or in place. */
@@ -17,6 +17,8 @@ export interface ReadTask {
   bytes: Uint8Array;
   given: Given;
   settings: AnalysisSettings;
+  /** The bench and the line to correct with before dips are found; as measured without. */
+  correct?: CorrectionTask;
   /** Pictures: told each stage that is done. */
   port?: MessagePort;
   /** Pictures: the file's SHA-256 where it is being corrected, so that its pixels are kept at hand. */
@@ -38,6 +40,8 @@ export type ReadOutcome =
       referenceOhm: number;
       complex: boolean;
       analysis: Analysis;
+      /** What was done before the dips were found; null: nothing. */
+      correction: Correction | null;
       picture: SeenPicture | null;
     };
 
@@ -56,13 +60,18 @@ export default async function readAndAnalyse(task: ReadTask): Promise<ReadOutcom
   if (seen) tell("trace");
   const { sweep, reading } = result;
   if (sweep.magnitude.every(Number.isNaN)) return { ok: false, problem: ONLY_GAPS, reading, picture: seen };
-  const analysis = analyse(sweep, task.settings);
+  const done = correctAsRead(sweep, reading, task.correct);
+  const analysis = analyse(done.sweep, task.settings);
   if (seen) tell("dips");
   return {
     ok: true,
     reading,
-    ...storedForm(sweep),
-    analysis: { ...analysis, warnings: mergeWarnings(result.warnings, analysis.warnings) },
+    ...storedForm(sweep, done.sweep),
+    analysis: {
+      ...analysis,
+      warnings: mergeWarnings(result.warnings, [...done.warnings, ...analysis.warnings]),
+    },
+    correction: done.correction,
     picture: seen,
   };
 }
@@ -82,11 +91,12 @@ async function readOnePicture(task: ReadTask, tell: (stage: PictureStage) => voi
   }
 }
 
-function storedForm(sweep: Sweep) {
+/** The points as they were read, and a preview of the sweep that was analysed. */
+function storedForm(sweep: Sweep, analysed: Sweep) {
   const n = sweep.frequencyHz.length;
   return {
     parts: encodePoints(sweep),
-    preview: encodePoints(pickPoints(sweep, decimate(sweep, PREVIEW_POINTS)))[0],
+    preview: previewOf(analysed),
     pointCount: n,
     startHz: sweep.frequencyHz[0],
     stopHz: sweep.frequencyHz[n - 1],
@@ -108,5 +118,3 @@ const ONLY_GAPS: ReadProblem = {
   message:
     "Every value is a gap when read so: expected numbers. Choose another column, quantity or decimal sign.",
 };
-/** Enough for a chart 1600 px wide. */
-export const PREVIEW_POINTS = 1600;

@@ -2,13 +2,23 @@ import { inTransaction } from "~/db/client.server";
 import * as jobs from "~/db/jobs.server";
 import * as sweeps from "~/db/sweeps.server";
 import { analyse } from "~/measurement/analyse";
-import type { AnalysisSettings } from "~/measurement/sweep";
+import type { AnalysisSettings, Plane } from "~/measurement/sweep";
 import type { Given, ReadProblem } from "~/readers/reading";
 import { storeAnalysis } from "./analyses.server.ts";
+import { correctAsRead } from "./correction.server.ts";
 import { storeOutcome } from "./intake.server.ts";
 import { mergeEdit } from "./merge-edit.ts";
+import { previewOf } from "./points.server.ts";
 import { readFile } from "./reading.server.ts";
 import { getObject } from "./storage.server.ts";
+import {
+  meansOf,
+  NO_MEANS,
+  planeToKeep,
+  taskOf,
+  toStore,
+  withBenchWarnings,
+} from "./sweep-corrections.server.ts";
 import { loadPoints } from "./sweep-points.server.ts";
 
 export interface TitleAndDate {
@@ -45,16 +55,26 @@ export function keepTitleAndDate(
   });
 }
 
-/** Analyses the sweep anew under other settings and keeps that as the current analysis. */
+/**
+ * Analyses the sweep anew, under other settings or at another plane, and keeps that as the current analysis. At the port
+ * and at the antenna the bench counts as it was when the sweep was taken.
+ */
 export async function keepSettings(
   found: sweeps.FoundSweep,
   settings: AnalysisSettings,
   by: number,
+  plane: Plane = planeToKeep(found),
 ): Promise<void> {
-  const { sweep } = found;
-  if (!sweep.readingId) return;
+  const { sweep, reading } = found;
+  if (!sweep.readingId || !reading?.reading) return;
   const readingId = sweep.readingId;
-  const analysis = analyse(await loadPoints(readingId), settings);
+  const [points, means] = await Promise.all([loadPoints(readingId), meansOf(sweep)]);
+  const done = correctAsRead(points, reading.reading, taskOf(means, plane));
+  const plain = analyse(done.sweep, settings);
+  const analysis = withBenchWarnings(
+    { ...plain, warnings: [...done.warnings, ...plain.warnings] },
+    plane === "instrument" ? NO_MEANS : means,
+  );
   const kept = found.analysis?.warnings.filter(
     (warning) => !analysis.warnings.some((w) => w.code === warning.code),
   );
@@ -64,10 +84,17 @@ export async function keepSettings(
     if (now?.readingId !== readingId) return;
     const warnings = [...(kept ?? []).filter((w) => w.code.startsWith("read-")), ...analysis.warnings];
     const analysisId = await storeAnalysis(
-      { projectId: sweep.projectId, sweepId: sweep.id, readingId, analysis: { ...analysis, warnings }, by },
+      {
+        projectId: sweep.projectId,
+        sweepId: sweep.id,
+        readingId,
+        analysis: { ...analysis, warnings },
+        correction: toStore(done.correction, means),
+        by,
+      },
       tx,
     );
-    await sweeps.update(sweep.id, { analysisId }, tx);
+    await sweeps.update(sweep.id, { analysisId, preview: previewOf(done.sweep) }, tx);
   });
 }
 
@@ -81,14 +108,14 @@ export async function keepAnswer(
   settings: AnalysisSettings,
   by: number,
 ): Promise<ReadProblem | null> {
-  const bytes = await getObject(found.file.storageKey);
-  const outcome = await readFile({ name: found.file.name, bytes, given, settings });
+  const { outcome, means } = await readStored(found, given, settings);
   if (!outcome.ok && !outcome.reading) return outcome.problem;
   await inTransaction(async (tx) => {
     const now = await sweeps.lock(found.sweep.id, tx);
     // Read by somebody else in the meantime: that stays.
     if (!now?.problem) return;
-    await storeOutcome({ projectId: found.sweep.projectId, sweepId: found.sweep.id, given, outcome, by }, tx);
+    const { id: sweepId, projectId } = found.sweep;
+    await storeOutcome({ projectId, sweepId, given, outcome, means, by }, tx);
   });
   return outcome.ok ? null : outcome.problem;
 }
@@ -100,14 +127,22 @@ export async function readAnew(
   settings: AnalysisSettings,
   by: number,
 ): Promise<ReadProblem | null> {
-  const bytes = await getObject(found.file.storageKey);
-  const outcome = await readFile({ name: found.file.name, bytes, given, settings });
+  const { outcome, means } = await readStored(found, given, settings);
   if (!outcome.ok) return outcome.problem;
   await inTransaction(async (tx) => {
     if (!(await sweeps.lock(found.sweep.id, tx))) return;
-    await storeOutcome({ projectId: found.sweep.projectId, sweepId: found.sweep.id, given, outcome, by }, tx);
+    const { id: sweepId, projectId } = found.sweep;
+    await storeOutcome({ projectId, sweepId, given, outcome, means, by }, tx);
   });
   return null;
+}
+
+/** The stored original read once more, its dips found where they were found before. */
+async function readStored(found: sweeps.FoundSweep, given: Given, settings: AnalysisSettings) {
+  const [bytes, means] = await Promise.all([getObject(found.file.storageKey), meansOf(found.sweep)]);
+  const correct = taskOf(means, planeToKeep(found));
+  const outcome = await readFile({ name: found.file.name, bytes, given, settings, correct });
+  return { outcome, means };
 }
 
 /** Deletes a sweep with its dips, notes and original; the object goes once the rows are gone. */

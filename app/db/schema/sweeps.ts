@@ -148,6 +148,10 @@ export interface StoredCorrection extends Correction {
   /** SHA-256 of the reference sweeps' originals by kind. */
   references: Partial<Record<"open" | "short" | "load" | "through", string>>;
   feedline: Feedline | null;
+  /** Of all that the bench's part was computed from: another one gives other numbers. Absent without a bench. */
+  basis?: string;
+  /** The day, UTC, from which that version of the bench holds. Absent without a bench. */
+  validFrom?: string;
 }
 
 /**

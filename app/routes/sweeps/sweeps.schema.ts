@@ -1,4 +1,5 @@
 import { z } from "zod";
+import type { Plane } from "~/measurement/sweep";
 import { plainText } from "~/services/file-names";
 
 /** The forms about sweeps, and the view of a sweep as it stands in an address. */
@@ -32,6 +33,11 @@ export const settingsSchema = z.object({
 
 export const QUANTITIES = ["rl", "swr"] as const;
 export const SCALES = ["linear", "log"] as const;
+export const PLANES = ["instrument", "port", "antenna"] as const satisfies readonly Plane[];
+
+export function parsePlane(text: unknown): Plane | null {
+  return PLANES.find((plane) => plane === text) ?? null;
+}
 
 export interface SweepView {
   quantity: (typeof QUANTITIES)[number];
@@ -44,6 +50,8 @@ export interface SweepView {
   /** Settings tried out in the address; null for those of the stored analysis. */
   swrLimit: number | null;
   minimumProminenceDb: number | null;
+  /** Plane tried out in the address; null for that of the stored analysis. */
+  plane: Plane | null;
   sort: string | null;
 }
 
@@ -65,6 +73,7 @@ export function parseView(search: URLSearchParams): SweepView {
     dip: search.get("dip"),
     swrLimit: number("limit", (n) => settings.swrLimit.safeParse(n).success),
     minimumProminenceDb: number("prominence", (n) => settings.minimumProminenceDb.safeParse(n).success),
+    plane: parsePlane(search.get("plane")),
     sort: search.get("sort"),
   };
 }
@@ -77,6 +86,7 @@ const NAMES: Record<keyof SweepView, string> = {
   dip: "dip",
   swrLimit: "limit",
   minimumProminenceDb: "prominence",
+  plane: "plane",
   sort: "sort",
 };
 
