@@ -38,7 +38,7 @@ async function storeVerdict(dip: dips.DipRow, input: ChangeVerdict, tx: Transact
   const text = input.text.trim().slice(0, MAX_VERDICT_CHARACTERS);
   await dips.updateVerdict(
     dip.id,
-    { verdict: AFTER[input.intent], verdictText: text, verdictBy: input.by.id, verdictAt: at },
+    { verdict: VERDICT_AFTER[input.intent], verdictText: text, verdictBy: input.by.id, verdictAt: at },
     tx,
   );
   await writeNote(
@@ -53,9 +53,10 @@ async function storeVerdict(dip: dips.DipRow, input: ChangeVerdict, tx: Transact
   );
 }
 
-const AFTER = { propose: "proposed", settle: "settled", reopen: "open" } as const;
+export const VERDICT_AFTER = { propose: "proposed", settle: "settled", reopen: "open" } as const;
 const SAID = { propose: "Verdict proposed", settle: "Verdict settled", reopen: "Verdict reopened" } as const;
-const ALLOWED_FROM: Record<VerdictIntent, dips.DipRow["verdict"][]> = {
+/** What a verdict must be for it to be done. */
+export const ALLOWED_FROM: Record<VerdictIntent, dips.DipRow["verdict"][]> = {
   propose: ["open", "proposed"],
   settle: ["open", "proposed"],
   reopen: ["proposed", "settled"],
