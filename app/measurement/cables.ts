@@ -23,12 +23,16 @@ export interface CableEntry {
 /** What a sheet says, before the fit. */
 export type CableSheet = Omit<CableEntry, "k1" | "k2">;
 
-/** The cable of this name; case, spaces and punctuation don't matter. Null where there is none. */
+/**
+ * The cable of this name; case, spaces and punctuation don't matter, and a beginning will do ("RG-213" for "RG-213/U (solid PE)") where no
+ * digit follows it; of several the first of the table. Null where there is none.
+ */
 export function cableNamed(name: string): CableEntry | null {
   const wanted = plain(name);
-  return (
-    CABLES.find((cable) => plain(cable.name) === wanted || plain(cable.name.split("(")[0]) === wanted) ?? null
-  );
+  if (wanted.length < SHORTEST) return null;
+  const begins = (cable: CableEntry) =>
+    plain(cable.name).startsWith(wanted) && !/^[0-9]/.test(plain(cable.name).slice(wanted.length));
+  return CABLES.find((cable) => plain(cable.name) === wanted) ?? CABLES.find(begins) ?? null;
 }
 
 /**
@@ -67,6 +71,8 @@ function plain(name: string): string {
   return name.toLowerCase().replace(/[^a-z0-9]/g, "");
 }
 
+/** "h500", "5dfb" and "rfa" are the shortest names that mean anything. */
+const SHORTEST = 3;
 /** Points at one frequency leave the two losses inseparable: their determinant is then rounding. */
 const FLAT = 1e-12;
 

@@ -5,6 +5,7 @@ import { none } from "./correct-scalar.ts";
 import { commonSpan, gammaAt } from "./references.ts";
 import { residualLimits } from "./residual-limits.ts";
 import { standardGammas } from "./standards.ts";
+import { termFaults } from "./term-faults.ts";
 import { applyTerms, type ErrorTerms, solveTerms } from "./three-term.ts";
 
 /**
@@ -54,7 +55,8 @@ export function correctFully(sweep: Sweep, bench: BenchForCorrection): Corrected
     [gammaRe[i], gammaIm[i], magnitude[i]] = [re, im, Math.hypot(re, im)];
   }
   const benchLimits: BenchLimits = residualLimits(n, bench.standards, bench.given);
-  const warnings: Warning[] = [];
+  const warnings: Warning[] = [...termFaults(sweep.frequencyHz, terms)];
+  if (Number.isNaN(benchLimits.directivity[0])) warnings.push(IDEAL_LOAD);
   if (solved < inside) warnings.push(equalStandards(inside - solved, inside));
   return {
     sweep: { ...sweep, plane: "port", gammaRe, gammaIm, magnitude, benchLimits },
@@ -70,3 +72,9 @@ function equalStandards(count: number, of: number): Warning {
     message: `Two of open, short and load are the same ${where}, or one is a gap: three errors can't be told from two standards, and nothing was corrected there. Look whether one file was given twice.`,
   };
 }
+
+const IDEAL_LOAD: Warning = {
+  code: "load-taken-as-ideal",
+  message:
+    "Limits are not known: after a correction the directivity left is the load's own return loss, and the bench does not give it. A load that was compared with a better one makes it known.",
+};

@@ -36,6 +36,7 @@ export function correctScalar(sweep: Sweep, bench: BenchForCorrection, zeroDb: n
       magnitudeHigh: over(magnitudeHigh),
     };
   }
+  warnings.push(...limitNotes(bench, line !== null));
   const span = line ? commonSpan([open, short, sweep]) : commonSpan([sweep]);
   return { sweep: out, correction: { kind: "scalar", plane: "port", ...span }, warnings };
 }
@@ -55,6 +56,27 @@ function turnBack(re: Float64Array, im: Float64Array, phase: { re: Float64Array;
     re[i] = x * phase.re[i] + y * phase.im[i];
     im[i] = y * phase.re[i] - x * phase.im[i];
   }
+}
+
+function limitNotes({ references, standards, given }: BenchForCorrection, line: boolean): Warning[] {
+  const notes: Warning[] = [];
+  if (line && references.load && standards.loadReturnLossDb === null && standards.loadOhm === null)
+    notes.push({
+      code: "load-not-described",
+      message:
+        "The directivity is what the load leaves: the load's own error is inside it, either way. The bench does not give the load's return loss.",
+    });
+  else if (!(line && references.load) && given.directivityDb === null)
+    notes.push({
+      code: "directivity-unknown",
+      message: "Without a sweep of the load the directivity is not known, and so no limits of SWR are.",
+    });
+  if (line && !(references.open && references.short) && given.testPortMatchDb === null)
+    notes.push({
+      code: "one-reference",
+      message: `The 0 dB line is the ${references.open ? "open" : "short"} alone: source match and directivity stay in it in full. A sweep of the ${references.open ? "short" : "open"} as well takes most of them out and shows how large they are.`,
+    });
+  return notes;
 }
 
 function phaseNote(referred: boolean): Warning {

@@ -1,8 +1,8 @@
 import type { BenchGiven, BenchStandards } from "../bench.ts";
 import type { Correction, Sweep, Warning } from "../sweep.ts";
 import { correctFully } from "./correct-fully.ts";
-import { correctScalar } from "./correct-scalar.ts";
-import { type ReadAs, referenceFaults } from "./faults.ts";
+import { correctScalar, none } from "./correct-scalar.ts";
+import { outcomeFaults, type ReadAs, referenceFaults } from "./faults.ts";
 import type { BenchReferences } from "./references.ts";
 
 export type { ReadAs } from "./faults.ts";
@@ -34,5 +34,7 @@ export function correctSweep(sweep: Sweep, bench: BenchForCorrection, readAs: Re
   const { zeroDb } = bench.given;
   const shift = zeroDb === null ? null : zeroDb - (readAs.sweep?.zeroDb ?? 0);
   const done = correctFully(sweep, bench) ?? correctScalar(sweep, bench, shift);
-  return { ...done, warnings: [...faults, ...done.warnings] };
+  if (done.correction.kind === "none") return { ...done, warnings: [...faults, ...done.warnings] };
+  if (done.sweep.magnitude.every(Number.isNaN)) return none(sweep, ...faults, ...done.warnings);
+  return { ...done, warnings: [...faults, ...done.warnings, ...outcomeFaults(done.sweep.magnitude)] };
 }

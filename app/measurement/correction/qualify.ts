@@ -1,52 +1,114 @@
+import type { BenchLimits, Sweep } from "../sweep.ts";
 import type { BenchForCorrection } from "./correct.ts";
+import { termsAt } from "./correct-fully.ts";
+import { type BenchLimit, limitsOf } from "./limiting.ts";
+import { type Missing, missingOf } from "./missing.ts";
+import { commonSpan, magnitudeAt } from "./references.ts";
+import { residualLimits } from "./residual-limits.ts";
+import { scalarLimits } from "./scalar-limits.ts";
+import { median, stretchesOf } from "./stretches.ts";
+import { isKnown, type Wish } from "./wish.ts";
+import { zeroLine } from "./zero-line.ts";
 
-/** A stretch of frequencies in which something limits the bench, in plain words. */
-export interface BenchLimit {
-  code: string;
-  message: string;
-  fromHz: number;
-  toHz: number;
-}
+export type { BenchLimit } from "./limiting.ts";
+export type { Missing } from "./missing.ts";
 
 export interface BenchQuality {
-  /** Hz, ascending, length n: where the references that there are overlap. Arrays below have the same length; NaN is "not known". */
+  /** What this bench does to a sweep that has phase; one without is never corrected by more than "scalar". */
+  correction: "none" | "scalar" | "three-term";
+  /** Hz, ascending, length n: where open and short overlap. Arrays below have the same length; NaN is "not known". */
   frequencyHz: Float64Array;
   /** dB from a through sweep down to the 0 dB line. */
   insertionLossDb: Float64Array;
-  /** dB, the 0 dB line against its own median. */
+  /** dB, the 0 dB line over its own median. */
   flatnessDb: Float64Array;
-  /** dB, open over short; the sign is kept. */
+  /** dB, open over short, with its sign. */
   openShortDisagreementDb: Float64Array;
-  /** dB, positive: 40 is better than 30. */
+  /** dB, positive, of the bench itself before a three-term correction: 40 is better than 30. */
   directivityDb: Float64Array;
-  /** dB, worst case either way. */
+  /** dB, worst case, error of the 0 dB line. */
   trackingDb: Float64Array;
-  /** dB, positive, as a return loss. */
+  /** dB, positive, return loss of the test port itself. */
   testPortMatchDb: Float64Array;
-  wish: { swr: number; tolerance: number };
-  /** Hz; stretches in which the wished SWR is known to ± its tolerance. */
+  /** What is left in a corrected sweep: the limits behind `ranges`. */
+  left: BenchLimits;
+  wish: Wish;
+  /** Hz; stretches in which the wished SWR is known to plus or minus its tolerance. */
   ranges: { fromHz: number; toHz: number }[];
+  /** What limits the bench, and where, in plain words. */
   limits: BenchLimit[];
-  /** What is not known, and what would make it known, a plain sentence each. */
-  missing: { code: string; message: string }[];
+  /** What is not known, and which sweep or figure would make it known. */
+  missing: Missing[];
 }
 
-export function qualifyBench(
-  _bench: BenchForCorrection,
-  wish: { swr: number; tolerance: number },
-): BenchQuality {
-  const none = new Float64Array(0);
-  return {
-    frequencyHz: none,
-    insertionLossDb: none,
-    flatnessDb: none,
-    openShortDisagreementDb: none,
-    directivityDb: none,
-    trackingDb: none,
-    testPortMatchDb: none,
-    wish,
-    ranges: [],
-    limits: [],
-    missing: [],
+/**
+ * What a bench can do, from its references alone (MEASUREMENT section 4), at the frequencies of the finer of open and short within both. An
+ * empty bench gives empty arrays and what is missing. Never throws. Sources with the parts: `zeroLine`, `scalarLimits`, `residualLimits`.
+ */
+export function qualifyBench(bench: BenchForCorrection, wish: Wish): BenchQuality {
+  const { references, standards, given } = bench;
+  const at = gridOf([references.open, references.short]);
+  const n = at.length;
+  const line = zeroLine(references, at);
+  const scalar = line
+    ? scalarLimits(at, line, references.load, standards, given)
+    : { directivity: unknown(n), tracking: unknown(n), match: unknown(n) };
+  const terms = termsAt(bench, at, references.open?.referenceOhm ?? 50)?.map((term) => {
+    if (!term) return { directivity: Number.NaN, match: Number.NaN };
+    const tracking = Math.hypot(term.tracking.re, term.tracking.im);
+    return {
+      directivity: Math.hypot(term.directivity.re, term.directivity.im) / tracking,
+      match: Math.hypot(term.match.re, term.match.im),
+    };
+  });
+  const through = references.through && magnitudeAt(references.through, at);
+  const amplitude = line?.amplitude ?? unknown(n);
+  const middle = median(amplitude);
+  const left = terms ? residualLimits(n, standards, given) : scalar;
+  const directivity = terms ? Float64Array.from(terms, (term) => term.directivity) : scalar.directivity;
+  const measures = {
+    frequencyHz: at,
+    insertionLossDb: through ? through.map((value, i) => db(value / amplitude[i])) : unknown(n),
+    flatnessDb: amplitude.map((value) => db(value / middle)),
+    openShortDisagreementDb: disagreement(references, at),
+    directivityDb: directivity.map((value) => -db(value)),
+    trackingDb: left.tracking.map((value) => db(1 + value)),
+    testPortMatchDb: (terms ? Float64Array.from(terms, (term) => term.match) : scalar.match).map(
+      (value) => -db(value),
+    ),
   };
+  return {
+    ...measures,
+    correction: terms ? "three-term" : line ? "scalar" : "none",
+    left,
+    wish,
+    ranges: stretchesOf(at, (i) => isKnown(wish, left, i)).map(({ first, last }) => ({
+      fromHz: at[first],
+      toHz: at[last],
+    })),
+    limits: limitsOf(measures, left, wish),
+    missing: missingOf(bench, terms !== undefined),
+  };
+}
+
+function gridOf(sweeps: (Sweep | undefined)[]): Float64Array {
+  const given = sweeps.filter((sweep) => sweep !== undefined);
+  if (given.length === 0) return new Float64Array(0);
+  const { fromHz, toHz } = commonSpan(given);
+  const inside = given.map((sweep) => sweep.frequencyHz.filter((hz) => hz >= fromHz && hz <= toHz));
+  return inside.reduce((finest, grid) => (grid.length > finest.length ? grid : finest));
+}
+
+function disagreement({ open, short }: BenchForCorrection["references"], at: Float64Array): Float64Array {
+  if (!open || !short) return unknown(at.length);
+  const shorted = magnitudeAt(short, at);
+  return magnitudeAt(open, at).map((value, i) => db(value / shorted[i]));
+}
+
+function db(ratio: number): number {
+  return 20 * Math.log10(ratio);
+}
+
+function unknown(n: number): Float64Array {
+  return new Float64Array(n).fill(Number.NaN);
 }

@@ -1,5 +1,5 @@
-import type { BenchReferences } from "./references.ts";
-import { gammaAt, magnitudeAt } from "./references.ts";
+import type { Sweep } from "../sweep.ts";
+import { type BenchReferences, gammaAt, magnitudeAt } from "./references.ts";
 
 /** The amplitude of full reflection, in the scale of the sweeps, at each frequency; NaN where it is not known. */
 export interface ZeroLine {
@@ -12,11 +12,11 @@ export interface ZeroLine {
 /**
  * The 0 dB line: the mean of the amplitudes of open and short, in which their first-order errors from directivity and source match
  * cancel (Keysight N9000B Spectrum Analyzer Mode reference, p. 547: point-by-point linear average of the two traces), or the one
- * there is. Null without either. Which of the two is which makes no difference here.
+ * there is. The same sweep given as both counts once. Null without either. Which of the two is which makes no difference here.
  */
 export function zeroLine({ open, short }: BenchReferences, atHz: Float64Array): ZeroLine | null {
   const opened = open && magnitudeAt(open, atHz);
-  const shorted = short && magnitudeAt(short, atHz);
+  const shorted = short && !(open && sameSweep(open, short)) ? magnitudeAt(short, atHz) : undefined;
   const ripple = new Float64Array(atHz.length).fill(Number.NaN);
   if (opened && shorted) {
     const amplitude = new Float64Array(atHz.length);
@@ -30,6 +30,18 @@ export function zeroLine({ open, short }: BenchReferences, atHz: Float64Array): 
   return amplitude ? { amplitude, ripple, from: opened ? "open" : "short" } : null;
 }
 
+/** Whether two references hold the same numbers: one file given twice. */
+export function sameSweep(a: Sweep, b: Sweep): boolean {
+  const same = (x: Float64Array | undefined, y: Float64Array | undefined) =>
+    x?.length === y?.length && (x ?? []).every((value, i) => Object.is(value, y?.[i]));
+  return (
+    same(a.frequencyHz, b.frequencyHz) &&
+    same(a.magnitude, b.magnitude) &&
+    same(a.gammaRe, b.gammaRe) &&
+    same(a.gammaIm, b.gammaIm)
+  );
+}
+
 /**
  * The phase, as a unit vector, that full reflection of +1 has in these references: of open − short, in which directivity cancels, or
  * of the one there is. Null where they have no phase.
@@ -39,8 +51,8 @@ export function zeroPhase(
   atHz: Float64Array,
 ): { re: Float64Array; im: Float64Array } | null {
   const opened = open && gammaAt(open, atHz);
-  const shorted = short && gammaAt(short, atHz);
-  if ((open && !opened) || (short && !shorted) || (!opened && !shorted)) return null;
+  const shorted = short && !(open && sameSweep(open, short)) ? gammaAt(short, atHz) : undefined;
+  if ((open && !opened) || shorted === null || (!opened && !shorted)) return null;
   const re = new Float64Array(atHz.length);
   const im = new Float64Array(atHz.length);
   for (let i = 0; i < atHz.length; i++) {
