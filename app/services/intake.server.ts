@@ -1,4 +1,4 @@
-import { inTransaction, isDuplicate } from "~/db/client.server";
+import { inTransaction, isDuplicate, type Transaction } from "~/db/client.server";
 import { newPublicId } from "~/db/ids.server";
 import * as jobs from "~/db/jobs.server";
 import * as projects from "~/db/projects.server";
@@ -15,6 +15,7 @@ import { readFile } from "./reading.server.ts";
 import type { PictureStage } from "./seen-picture.ts";
 import { deleteObject, putObject, sha256Of } from "./storage.server.ts";
 import { type Means, meansOf, taskOf, toStore, withBenchWarnings } from "./sweep-corrections.server.ts";
+import { refreshTrails } from "./trails.server.ts";
 
 export interface TakeIn {
   project: { id: number; publicId: string };
@@ -29,6 +30,8 @@ export interface TakeIn {
   benchId?: number | null;
   /** Keep a file that can't be read, so that a person can say how to read it; else it is refused whole. */
   keepUnread: boolean;
+  /** Written in the same transaction as the sweep. */
+  also?: (sweep: { id: number; publicId: string }, tx: Transaction) => Promise<void>;
   /** Told each stage of a picture that is done. */
   progress?: (stage: PictureStage) => void;
 }
@@ -75,6 +78,8 @@ export async function takeIn(input: TakeIn): Promise<Taken> {
   await putObject(storageKey, file.bytes);
   try {
     return await inTransaction(async (tx) => {
+      // First: whoever changes the project's trails at the same time waits, and then sees this sweep.
+      await projects.lock(project.id, tx);
       const fileId = await sweeps.insertFile(
         {
           projectId: project.id,
@@ -105,6 +110,7 @@ export async function takeIn(input: TakeIn): Promise<Taken> {
         { projectId: project.id, sweepId: sweep.id, given, outcome, means, by: input.by.id },
         tx,
       );
+      await input.also?.(sweep, tx);
       await jobs.deleteById(undo, tx);
       await projects.update(project.id, {}, tx);
       return outcome.ok
@@ -137,11 +143,8 @@ export interface StoreOutcome {
   by: number;
 }
 
-/** Writes a reading and, where it gave a sweep, its points and analysis, and makes them the sweep's current ones. */
-export async function storeOutcome(
-  input: StoreOutcome,
-  tx: Parameters<Parameters<typeof inTransaction>[0]>[0],
-): Promise<void> {
+/** Writes a reading and, where it gave a sweep, its points and analysis, and makes them the sweep's current ones; under `projects.lock`. */
+export async function storeOutcome(input: StoreOutcome, tx: Transaction): Promise<void> {
   const { outcome, sweepId, given, by } = input;
   const parts = outcome.ok ? outcome.parts.map((part) => Buffer.from(part)) : [];
   const readingId = await sweeps.insertReading(
@@ -180,6 +183,7 @@ export async function storeOutcome(
     },
     tx,
   );
+  await refreshTrails(input.projectId, tx);
 }
 
 /** Reads the file, with what a person chose for the last file of the same shape in this project where it has one. */

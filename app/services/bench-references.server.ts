@@ -1,0 +1,142 @@
+import * as benches from "~/db/benches.server";
+import { inTransaction, isDuplicate, type Transaction } from "~/db/client.server";
+import * as sweeps from "~/db/sweeps.server";
+import { record } from "./events.server.ts";
+import { takeIn } from "./intake.server.ts";
+import { log } from "./log.server.ts";
+import { sha256Of } from "./storage.server.ts";
+
+export interface ReferenceFile {
+  kind: benches.ReferenceKind;
+  file: { name: string; bytes: Uint8Array };
+}
+
+/** What became of one reference's file, in words for its person. */
+export interface ReferenceTaken {
+  kind: benches.ReferenceKind;
+  how: "read" | "unread" | "shared" | "refused" | "failed";
+  message: string;
+}
+
+export interface TakeReferences {
+  project: { id: number; publicId: string };
+  bench: { id: number; publicId: string; name: string };
+  version: { id: number; number: number; validFrom: Date };
+  by: { id: number };
+}
+
+/**
+ * Takes files in as reference sweeps of a version, one after another; one that fails does not stop the others. A file that is in the
+ * project already is used where it is. A kind that the version has already is refused: a rebuilt bench is another version.
+ */
+export async function takeReferences(
+  input: TakeReferences,
+  files: ReferenceFile[],
+): Promise<ReferenceTaken[]> {
+  const taken: ReferenceTaken[] = [];
+  for (const one of files) {
+    try {
+      taken.push(await takeReference(input, one));
+    } catch (error) {
+      log.error({ err: error, name: one.file.name }, "a reference could not be taken in");
+      const message = `“${one.file.name}” failed here while it was taken in. Nothing of it was kept; send it again.`;
+      taken.push({ kind: one.kind, how: "failed", message });
+    }
+  }
+  return taken;
+}
+
+/** Two kinds that were given the same file, which can't both be right; null where all differ. */
+export function sameFileTwice(files: ReferenceFile[]): [benches.ReferenceKind, benches.ReferenceKind] | null {
+  const seen = new Map<string, benches.ReferenceKind>();
+  for (const { kind, file } of files) {
+    const sha256 = sha256Of(file.bytes);
+    const first = seen.get(sha256);
+    if (first) return [first, kind];
+    seen.set(sha256, kind);
+  }
+  return null;
+}
+
+async function takeReference(input: TakeReferences, { kind, file }: ReferenceFile): Promise<ReferenceTaken> {
+  const { bench, version, project, by } = input;
+  const present = await benches.findReferences([version.id]);
+  if (present.some((reference) => reference.kind === kind)) {
+    return {
+      kind,
+      how: "refused",
+      message: `“${file.name}” was not taken: there is ${aKind(kind)} already.`,
+    };
+  }
+  const taken = await takeIn({
+    project,
+    by,
+    file,
+    title: `${bench.name}, ${kind}`,
+    takenAt: version.validFrom,
+    purpose: "reference",
+    keepUnread: true,
+    also: (sweep, tx) => attach(input, kind, sweep.id, tx),
+  });
+  switch (taken.kind) {
+    case "read":
+      return { kind, how: "read", message: `The ${kind} was read from “${file.name}”.` };
+    case "unread":
+      return {
+        kind,
+        how: "unread",
+        message: `The ${kind} “${file.name}” is kept and still to be read: ${taken.problem.message}`,
+      };
+    case "refused":
+      return { kind, how: "refused", message: `“${file.name}” was not taken: ${taken.problem.message}` };
+    case "twice":
+      return attachTwin(input, { kind, file }, present);
+  }
+}
+
+/** The file is in the project: its sweep is used as it is, unless the version has it as another kind. */
+async function attachTwin(
+  input: TakeReferences,
+  { kind, file }: ReferenceFile,
+  present: benches.FoundReference[],
+): Promise<ReferenceTaken> {
+  const twin = await sweeps.findFileBySha256(input.project.id, sha256Of(file.bytes));
+  if (!twin) throw new Error("The file that was here is gone.");
+  const other = present.find(({ sweep }) => sweep.id === twin.sweep.id);
+  if (other) {
+    const message = `“${file.name}” was not taken as ${kind}: it is the same file as the ${other.kind}. Sweep each standard by itself.`;
+    return { kind, how: "refused", message };
+  }
+  try {
+    await inTransaction((tx) => attach(input, kind, twin.sweep.id, tx));
+  } catch (error) {
+    if (!isDuplicate(error)) throw error;
+    return {
+      kind,
+      how: "refused",
+      message: `“${file.name}” was not taken: there is ${aKind(kind)} already.`,
+    };
+  }
+  const stays = twin.sweep.purpose === "antenna" ? " It also stays among the project's sweeps." : "";
+  const message = `The ${kind} is “${twin.sweep.title}”, which is the same file as “${file.name}”.${stays}`;
+  return { kind, how: "shared", message };
+}
+
+async function attach(
+  { bench, version, project, by }: TakeReferences,
+  kind: benches.ReferenceKind,
+  sweepId: number,
+  tx: Transaction,
+): Promise<void> {
+  await benches.insertReference({ versionId: version.id, kind, sweepId }, tx);
+  await benches.update(bench.id, {}, tx);
+  const about = {
+    bench: bench.publicId,
+    title: `${bench.name}: ${aKind(kind)} for version ${version.number}`,
+  };
+  await record({ projectId: project.id, kind: "bench.changed", actorId: by.id, about }, tx);
+}
+
+function aKind(kind: benches.ReferenceKind): string {
+  return kind === "open" ? "an open" : `a ${kind}`;
+}
