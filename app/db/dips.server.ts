@@ -1,8 +1,8 @@
-import { and, asc, count, eq, isNull, sql } from "drizzle-orm";
+import { and, asc, count, eq, isNull, or, sql } from "drizzle-orm";
 import { completeDip } from "~/measurement/dips/complete";
 import type { Dip } from "~/measurement/sweep";
 import { db, type Queryable } from "./client.server.ts";
-import { dips, notes, sweeps, users } from "./schema/index.ts";
+import { dips, notes, sweeps, trailDecisions, users } from "./schema/index.ts";
 
 export type DipRow = typeof dips.$inferSelect;
 
@@ -129,13 +129,22 @@ export async function updateVerdict(
   await tx.update(dips).set(values).where(eq(dips.id, id));
 }
 
-/** A dip that is no longer found and on which nobody said or settled anything. */
+/** A dip that is no longer found and on which nobody said, settled or decided anything. */
 export async function deleteIfBare(id: number, tx: Queryable): Promise<boolean> {
   const rows = await tx
     .select({ id: dips.id })
     .from(dips)
     .leftJoin(notes, eq(notes.dipId, dips.id))
-    .where(and(eq(dips.id, id), eq(dips.verdict, "open"), eq(dips.verdictText, ""), isNull(notes.id)))
+    .leftJoin(trailDecisions, or(eq(trailDecisions.oneId, dips.id), eq(trailDecisions.otherId, dips.id)))
+    .where(
+      and(
+        eq(dips.id, id),
+        eq(dips.verdict, "open"),
+        eq(dips.verdictText, ""),
+        isNull(notes.id),
+        isNull(trailDecisions.oneId),
+      ),
+    )
     .limit(1);
   if (rows.length === 0) return false;
   await tx.delete(dips).where(eq(dips.id, id));
