@@ -4,6 +4,7 @@ export * from "./conversation.ts";
 export * from "./mail.ts";
 export * from "./notes.ts";
 export * from "./people.ts";
+export * from "./plates.ts";
 export * from "./projects.ts";
 export * from "./sweeps.ts";
 export * from "./trails.ts";

@@ -15,6 +15,8 @@ export const projects = mysqlTable(
     ituRegion: tinyint("itu_region"),
     /** Invented data, and the pages say so. */
     demo: tinyint("demo").notNull().default(0),
+    /** Licence that is proposed for its plates; an SPDX name. */
+    licence: varchar("licence", { length: 40 }).notNull().default("CC-BY-4.0"),
     createdAt: utc("created_at").notNull(),
     updatedAt: utc("updated_at").notNull(),
   },
