@@ -5,7 +5,7 @@ import { decimate } from "./decimate";
 import { FrequencyAxisMarks } from "./FrequencyAxisMarks";
 import { PAGE_PALETTE, type Palette } from "./palette";
 import { profilePaths } from "./paths";
-import { across, Stretched } from "./place";
+import { across, round, Stretched } from "./place";
 import type { ValueTick } from "./value-axis";
 
 export interface FrequencyLine {
@@ -67,14 +67,14 @@ export function FrequencyLines(props: FrequencyLinesProps) {
                   <line
                     x1="0"
                     x2={across(1, null)}
-                    y1={tick.y}
-                    y2={tick.y}
+                    y1={round(tick.y, 1)}
+                    y2={round(tick.y, 1)}
                     stroke={palette.edge}
                     strokeDasharray="1 4"
                   />
                   <text
                     x="-8"
-                    y={tick.y + 4}
+                    y={round(tick.y, 1) + 4}
                     textAnchor="end"
                     fontFamily={palette.monoFont}
                     fontSize="11.5"

@@ -25,7 +25,7 @@ export function smithTrace({ re, im }: ComplexPoints): SmithTrace {
   let pen: "inside" | "outside" | null = null;
   for (let i = 0; i < re.length; i++) {
     const size = Math.hypot(re[i], im[i]);
-    if (Number.isNaN(size)) {
+    if (!Number.isFinite(size)) {
       last = null;
       pen = null;
       continue;
