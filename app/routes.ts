@@ -25,6 +25,8 @@ export default [
       route("sweeps/:sweep", "routes/sweeps/sweep.tsx"),
       route("sweeps/:sweep/reading", "routes/sweeps/reading.tsx"),
       route("dips/:dip", "routes/dips/dip.tsx"),
+      route("antenna", "routes/antenna/antenna.tsx"),
+      route("antenna/edit", "routes/antenna/edit.tsx"),
     ]),
   ]),
   ...prefix("projects/:project", [

@@ -1,5 +1,5 @@
 import type { ProjectAction, SiteAction } from "~/auth/permissions";
-import { type Crew, type Place, type Someone, touchstone, unique } from "./world.ts";
+import { type Crew, type Place, type Someone, onePixel, touchstone, unique } from "./world.ts";
 
 /** What each route asks for, and the smallest form that it takes. One line a case; the walk does the rest. */
 
@@ -195,6 +195,56 @@ export const EXPECTATIONS: Record<string, Expectation> = {
       form: () => ({ intent, was: "open", text: "The second element." }),
     })),
   },
+  "routes/photographs/photographs.ts": {
+    POST: [
+      {
+        name: "add to the antenna",
+        ask: { project: "antenna.edit" },
+        form: () => ({ intent: "add", photographs: new File([onePixel()], "mast.png") }),
+      },
+      {
+        name: "add to a bench",
+        ask: { project: "bench.edit" },
+        form: ({ place }) => ({
+          intent: "add",
+          bench: place.bench,
+          photographs: new File([onePixel()], "bridge.png"),
+        }),
+      },
+      {
+        name: "caption",
+        ask: { project: "bench.edit" },
+        form: ({ place }) => ({ intent: "caption", photograph: place.photograph, caption: "The bridge" }),
+      },
+      {
+        name: "delete",
+        ask: { project: "bench.edit" },
+        form: ({ place }) => ({ intent: "delete", photograph: place.photograph }),
+        destroys: "sweep",
+      },
+    ],
+  },
+  "routes/photographs/photograph.ts": { GET: read },
+
+  "routes/antenna/antenna.tsx": { GET: read },
+  "routes/antenna/edit.tsx": {
+    GET: [{ ask: { project: "antenna.edit" } }],
+    POST: [
+      {
+        name: "keep",
+        ask: { project: "antenna.edit" },
+        form: () => ({
+          intent: "keep",
+          since: "2026-01-02T10:00",
+          "elements[0].kind": "vertical",
+          "elements[0].length": "33 ft 6 in",
+        }),
+      },
+      { name: "another", ask: { project: "antenna.edit" }, form: () => ({ intent: "another" }) },
+      { name: "bands", ask: { project: "antenna.edit" }, form: () => ({ intent: "bands" }) },
+    ],
+  },
+
   "routes/notes/notes.ts": {
     GET: read,
     POST: [{ ask: { project: "note.write" }, form: ({ place }) => ({ body: "A note.", dip: place.dip }) }],

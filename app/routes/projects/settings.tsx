@@ -7,6 +7,7 @@ import { redirectWithMessage } from "~/services/flash.server";
 import { parseWas } from "~/services/merge-edit";
 import { type AboutValues, changeAbout, changeBands, deleteProject } from "~/services/projects.server";
 import type { Route } from "./+types/settings";
+import { bandInHertz, bandRowOf } from "./band-rows.ts";
 import { AboutForm } from "./components/AboutForm.tsx";
 import { BandsForm } from "./components/BandsForm.tsx";
 import { DeleteForm } from "./components/DeleteForm.tsx";
@@ -21,12 +22,7 @@ export async function loader(args: Route.LoaderArgs) {
   return {
     was: { title, summary, visibility, ituRegion },
     about: aboutOf(project),
-    bands: bands.map((band) => ({
-      name: band.name,
-      lowMhz: inMegahertz(band.lowHz),
-      highMhz: inMegahertz(band.highHz),
-      swrLimit: String(band.swrLimit),
-    })),
+    bands: bands.map(bandRowOf),
   };
 }
 
@@ -45,7 +41,7 @@ export async function action(args: Route.ActionArgs) {
       return data({ lastResult: submission.reply({ fieldErrors }), now }, { status: 409 });
     }
     case "bands":
-      await changeBands(project.id, value.bands.map(inHertz));
+      await changeBands(project.id, value.bands.map(bandInHertz));
       return redirectWithMessage(here, "The design bands were changed.");
     case "delete": {
       if (!may("project.delete")) throw refused("Only owners delete a project. Nothing was changed.");
@@ -68,20 +64,6 @@ function aboutOf({ title, summary, visibility, ituRegion }: AboutValues) {
 function changedMeanwhile(now: string | number | null): string {
   const short = String(now ?? "nothing").slice(0, 80);
   return `Somebody else made this “${short}” in the meantime. Nothing was changed; keep this once more to put yours in its place.`;
-}
-
-/** Without the last digits of a binary fraction: 7.1 MHz is stored as 7100000. */
-function inMegahertz(hz: number): string {
-  return String(Number((hz / 1e6).toPrecision(12)));
-}
-
-function inHertz(band: { name: string; lowMhz: number; highMhz: number; swrLimit: number }) {
-  return {
-    name: band.name,
-    lowHz: Number((band.lowMhz * 1e6).toPrecision(12)),
-    highHz: Number((band.highMhz * 1e6).toPrecision(12)),
-    swrLimit: band.swrLimit,
-  };
 }
 
 export default function ProjectSettings({ loaderData, actionData }: Route.ComponentProps) {

@@ -1,0 +1,146 @@
+import { BandRibbon } from "./BandRibbon";
+import { AXIS_HEIGHT_PX, CHART_FOOT_PX, CHART_TOP_PX } from "./ChartBase";
+import { FrequencyAxisMarks } from "./FrequencyAxisMarks";
+import type { OverlayScene, PlacedTrace } from "./overlay-scene";
+import { ValueMarks, Washes } from "./PlotGround";
+import { PAGE_PALETTE } from "./palette";
+import { At, across, Stretched } from "./place";
+import { traceStyle } from "./trace-styles";
+
+export interface OverlayChartProps {
+  scene: OverlayScene;
+  label: string;
+}
+
+const palette = PAGE_PALETTE;
+
+/** Several sweeps over one another; each line has its own dash and is named at its end and under the chart. */
+export function OverlayChart({ scene, label }: OverlayChartProps) {
+  const heightPx = CHART_TOP_PX + scene.plotHeightPx + CHART_FOOT_PX;
+  return (
+    <div className="chart-frame">
+      <div className="chart">
+        <div className="chart-plot" style={{ height: heightPx }}>
+          <svg className="chart-layer" height={heightPx} role="img" aria-label={label}>
+            <g transform={`translate(0 ${CHART_TOP_PX})`}>
+              <Washes bands={scene.ribbon} heightPx={scene.plotHeightPx} />
+              <ValueMarks ticks={scene.valueTicks} heightPx={scene.plotHeightPx} />
+              <Stretched width={scene.pathWidth} height={scene.plotHeightPx} plotWidthPx={null}>
+                {scene.traces.map((trace) => (
+                  <TraceLine key={trace.id} trace={trace} />
+                ))}
+              </Stretched>
+              <Links scene={scene} />
+              {scene.traces.map((trace) => (
+                <TraceName key={trace.id} trace={trace} />
+              ))}
+              <FrequencyAxisMarks
+                frequency={scene.frequency}
+                y={scene.plotHeightPx}
+                {...{ plotWidthPx: null, palette }}
+              />
+              <BandRibbon
+                bands={scene.ribbon}
+                dips={[]}
+                y={scene.plotHeightPx + AXIS_HEIGHT_PX}
+                {...{ plotWidthPx: null, palette }}
+              />
+            </g>
+          </svg>
+        </div>
+      </div>
+      <TraceKey traces={scene.traces} />
+    </div>
+  );
+}
+
+function TraceLine({ trace }: { trace: PlacedTrace }) {
+  const { colour, dash } = traceStyle(trace.style);
+  return (
+    <path
+      d={trace.line}
+      fill="none"
+      stroke={colour}
+      strokeWidth="1.8"
+      strokeDasharray={dash}
+      strokeLinejoin="round"
+      strokeLinecap={dash ? "butt" : "round"}
+      vectorEffect="non-scaling-stroke"
+    />
+  );
+}
+
+/** A dip's way from one line to the other. */
+function Links({ scene }: { scene: OverlayScene }) {
+  return scene.links.map(({ id, stops }) => (
+    <g key={id}>
+      {stops.length === 2 && (
+        <line
+          x1={across(stops[0].fraction, null)}
+          y1={stops[0].y}
+          x2={across(stops[1].fraction, null)}
+          y2={stops[1].y}
+          stroke={palette.heather}
+          strokeWidth="1.4"
+        />
+      )}
+      {stops.map((stop) => (
+        <circle
+          key={stop.style}
+          cx={across(stop.fraction, null)}
+          cy={stop.y}
+          r="4"
+          fill={palette.paper}
+          stroke={traceStyle(stop.style).colour}
+          strokeWidth="2"
+        />
+      ))}
+    </g>
+  ));
+}
+
+function TraceName({ trace: { end, label, style } }: { trace: PlacedTrace }) {
+  if (!end) return null;
+  const short = label.length > 24 ? `${label.slice(0, 23)}…` : label;
+  return (
+    <At fraction={end.fraction} y={end.y} plotWidthPx={null}>
+      <text
+        x="-6"
+        y="-4"
+        textAnchor="end"
+        fontFamily={palette.sansFont}
+        fontSize="12"
+        fill={traceStyle(style).colour}
+        stroke={palette.paper}
+        strokeWidth="4"
+        strokeLinejoin="round"
+        paintOrder="stroke"
+      >
+        {short}
+      </text>
+    </At>
+  );
+}
+
+function TraceKey({ traces }: { traces: PlacedTrace[] }) {
+  return (
+    <ul className="flex flex-wrap gap-x-6 gap-y-1 text-small mt-1">
+      {traces.map(({ id, label, style }) => (
+        <li key={id} className="inline-flex items-center gap-2">
+          <svg width="34" height="8" aria-hidden="true" className="flex-none">
+            <line
+              x1="1"
+              x2="33"
+              y1="4"
+              y2="4"
+              stroke={traceStyle(style).colour}
+              strokeWidth="2"
+              strokeDasharray={traceStyle(style).dash}
+            />
+          </svg>
+          {label}
+        </li>
+      ))}
+    </ul>
+  );
+}

@@ -1,0 +1,157 @@
+import { parseWithZod } from "@conform-to/zod/v4";
+import { data } from "react-router";
+import { requireProject } from "~/auth/require.server";
+import { Breadcrumbs } from "~/components/ui/Breadcrumbs";
+import * as antennas from "~/db/antennas.server";
+import { newPublicId } from "~/db/ids.server";
+import * as people from "~/db/people.server";
+import * as projects from "~/db/projects.server";
+import * as steps from "~/db/steps.server";
+import { NO_ANTENNA } from "~/measurement/antenna";
+import { CABLES } from "~/measurement/cables";
+import { bandInHertz, bandRowOf } from "~/routes/projects/band-rows";
+import { BandsForm } from "~/routes/projects/components/BandsForm";
+import { bandsSchema } from "~/routes/projects/project.schema";
+import { changeText } from "~/services/antenna-words";
+import { changeAntenna } from "~/services/antennas.server";
+import { redirectWithMessage } from "~/services/flash.server";
+import { changeBands } from "~/services/projects.server";
+import type { Route } from "./+types/edit";
+import { antennaSchema } from "./antenna.schema";
+import { type AntennaTexts, antennaFrom, parseAntenna, textsOf } from "./antenna-form";
+import { AntennaCautions } from "./components/AntennaCautions";
+import { AntennaForm } from "./components/AntennaForm";
+import { lengthUnitOf } from "./sizes";
+
+export const meta: Route.MetaFunction = () => [{ title: "Change the antenna · Swale" }];
+
+export async function loader(args: Route.LoaderArgs) {
+  const { project, person } = await requireProject(args, "antenna.edit");
+  const [now, bands, sweeps, dismissed] = await Promise.all([
+    antennas.findAt(project.id, new Date()),
+    projects.findDesignBands(project.id),
+    steps.findSweepsInOrder(project.id),
+    person ? people.findDismissals(person.id) : [],
+  ]);
+  const unit = lengthUnitOf(person);
+  const antenna = now?.content ?? NO_ANTENNA;
+  const first = sweeps[0] && (sweeps[0].takenAt ?? sweeps[0].createdAt);
+  return {
+    project: { publicId: project.publicId },
+    unit,
+    isFirst: !now,
+    texts: textsOf(antenna, unit),
+    was: JSON.stringify(antenna),
+    // A first description holds for the sweeps that are there already; a change is of now.
+    since: now || !first ? minuteOf(new Date()) : `${first.toISOString().slice(0, 10)}T00:00`,
+    cables: CABLES.map(({ name }) => name),
+    bands: bands.map(bandRowOf),
+    dismissed,
+  };
+}
+
+export async function action(args: Route.ActionArgs) {
+  const { project, person } = await requireProject(args, "antenna.edit");
+  const form = await args.request.formData();
+  const here = `/projects/${project.publicId}/antenna`;
+  const intent = String(form.get("intent"));
+  switch (intent) {
+    case "bands": {
+      const submission = parseWithZod(form, { schema: bandsSchema });
+      if (submission.status !== "success") return data({ bands: submission.reply() }, { status: 400 });
+      await changeBands(project.id, submission.value.bands.map(bandInHertz));
+      return redirectWithMessage(here, "The design bands were changed.");
+    }
+    case "another":
+    case "keep": {
+      const unit = lengthUnitOf(person);
+      const submission = parseWithZod(form, { schema: antennaSchema(unit) });
+      const sent = sentTexts(submission.payload);
+      if (intent === "another") return data({ sent, errors: {}, more: true });
+      if (submission.status !== "success") {
+        return data({ sent, errors: submission.error ?? {} }, { status: 400 });
+      }
+      const { value } = submission;
+      const was = parseAntenna(value.was);
+      const wanted = antennaFrom(value, was, unit, newPublicId);
+      const change = await changeAntenna({
+        projectId: project.id,
+        by: person?.id ?? null,
+        was,
+        wanted,
+        validFrom: value.since,
+        remark: value.remark,
+      });
+      if (change.kind === "conflict") {
+        const lines = change.conflicts.map((one) => changeText(one, unit, wanted, change.basis, was));
+        return data(
+          { sent, errors: {}, conflicts: lines, was: JSON.stringify(change.basis) },
+          { status: 409 },
+        );
+      }
+      return redirectWithMessage(
+        here,
+        change.kind === "kept"
+          ? "The antenna was changed."
+          : "Nothing differs from before; nothing was kept.",
+      );
+    }
+    default:
+      return data(
+        { errors: { "": ["The form asked for something this page does not do. Nothing was changed."] } },
+        { status: 400 },
+      );
+  }
+}
+
+export type SentAntenna = AntennaTexts & { since: string; remark: string; was: string };
+
+/** The fields as they were sent, so that nothing that was typed is lost. */
+function sentTexts(payload: Record<string, unknown>): SentAntenna {
+  const sent = payload as unknown as Partial<SentAntenna>;
+  return {
+    elements: Array.isArray(sent.elements) ? sent.elements.map((row) => row ?? {}) : [],
+    feedline: sent.feedline ?? {},
+    choke: sent.choke ?? {},
+    ground: String(sent.ground ?? ""),
+    remarks: String(sent.remarks ?? ""),
+    since: String(sent.since ?? ""),
+    remark: String(sent.remark ?? ""),
+    was: String(sent.was ?? ""),
+  };
+}
+
+function minuteOf(at: Date): string {
+  return at.toISOString().slice(0, 16);
+}
+
+export default function EditAntenna({ loaderData, actionData }: Route.ComponentProps) {
+  const { project, isFirst, dismissed, bands } = loaderData;
+  const sent = actionData && "sent" in actionData ? actionData : null;
+  return (
+    <article className="grid gap-10 max-w-[64rem]">
+      <header className="grid gap-2">
+        <Breadcrumbs items={[{ label: "Antenna", to: `/projects/${project.publicId}/antenna` }]} />
+        <h2 className="sweep-title">{isFirst ? "Describe the antenna" : "Change the antenna"}</h2>
+        <p className="soft max-w-[72ch]">
+          Lengths in metres or feet as you like: 10.14, 312 cm, 33 ft 3 1/4 in. Leave empty what is not known.
+        </p>
+      </header>
+      <AntennaCautions dismissed={dismissed} />
+      <AntennaForm data={loaderData} answer={sent} errors={sent?.errors ?? actionDataErrors(actionData)} />
+      <div id="bands">
+        <BandsForm
+          key={JSON.stringify(bands)}
+          bands={bands}
+          lastResult={actionData && "bands" in actionData ? actionData.bands : undefined}
+        />
+      </div>
+    </article>
+  );
+}
+
+function actionDataErrors(actionData: Route.ComponentProps["actionData"]): Record<string, string[] | null> {
+  return actionData && "errors" in actionData ? (actionData.errors as Record<string, string[] | null>) : {};
+}
+
+export type EditAntennaData = Route.ComponentProps["loaderData"];
