@@ -1,14 +1,15 @@
 import { createHash } from "node:crypto";
-import { readFile, stat } from "node:fs/promises";
 import { basename } from "node:path";
 import { analyse } from "../app/measurement/analyse.ts";
 import { renormalise } from "../app/measurement/renormalise.ts";
 import type { Sweep, Warning } from "../app/measurement/sweep.ts";
-import { type PictureReader, readAny } from "../app/readers/read.ts";
-import { MAX_FILE_BYTES } from "../app/readers/reading.ts";
+import { type PictureReader, readAny, type SweepFile } from "../app/readers/read.ts";
+import { type Given, MAX_FILE_BYTES } from "../app/readers/reading.ts";
 import type { PictureDetails } from "../app/readers/screenshot/read-picture.ts";
 import { closePictureReader, readPictureFile } from "../app/services/picture.server.ts";
+import { correct, type Done } from "./analyse/correction.ts";
 import { type Options, parseOptions, USAGE, UsageError } from "./analyse/options.ts";
+import { bytesOf, readLevels, readReferences } from "./analyse/read-reference.ts";
 import { type AnalysedFile, type FailedFile, failedRow, jsonRow } from "./analyse/rows.ts";
 import { table } from "./analyse/table.ts";
 
@@ -41,7 +42,7 @@ async function main(args: string[]): Promise<number> {
 
 async function analyseFile(
   path: string,
-  { given, settings, systemOhm }: Options,
+  { given, settings, systemOhm, correction: asked }: Options,
 ): Promise<AnalysedFile | FailedFile> {
   const file = basename(path);
   const bytes = await bytesOf(path);
@@ -58,12 +59,24 @@ async function analyseFile(
     picture = read.picture;
     return read;
   };
-  const result = await readAny({ name: file, bytes }, given, { picture: readAPicture });
+  const own = (one: SweepFile, with_: Given) => readAny(one, with_, { picture: readAPicture });
+  const result = asked
+    ? await readLevels({ name: file, bytes }, given, own)
+    : await own({ name: file, bytes }, given);
   if (!result.ok) return { file, sha256, error: result.problem, ...(picture ? { picture } : {}) };
-  const judged = renormalise(result.sweep, systemOhm);
+  let done: Done | null = null;
+  if (asked) {
+    const references = await readReferences(asked.references, result.reading, given, (one, with_) =>
+      readAny(one, with_, { picture: readPictureFile }),
+    );
+    if ("message" in references) return { file, sha256, error: references };
+    done = correct(result.sweep, result.reading, references, asked);
+  }
+  const judged = inOhm(done?.sweep ?? result.sweep, systemOhm);
   const analysis = analyse(judged, settings);
   const warnings = distinct([
     ...result.warnings,
+    ...(done?.warnings ?? []),
     ...referenceWarning(result.sweep.referenceOhm, systemOhm, judged),
     ...analysis.warnings,
   ]);
@@ -74,18 +87,17 @@ async function analyseFile(
     sweep: result.sweep,
     analysis,
     warnings,
+    ...(done ? { done } : {}),
     ...(picture ? { picture } : {}),
   };
 }
 
-/** The file's bytes, null where there are too many, or a sentence where it can't be opened. */
-async function bytesOf(path: string): Promise<Uint8Array | string | null> {
-  try {
-    const { size } = await stat(path);
-    return size > MAX_FILE_BYTES ? null : await readFile(path);
-  } catch (error) {
-    return `${path} could not be opened: ${(error as NodeJS.ErrnoException).code ?? (error as Error).message}.`;
-  }
+/** Brought to another reference; limits hold for the file's own and don't go along. */
+function inOhm(sweep: Sweep, systemOhm: number): Sweep {
+  const brought = renormalise(sweep, systemOhm);
+  if (brought.referenceOhm === sweep.referenceOhm) return sweep;
+  const { benchLimits: _limits, ...rest } = brought;
+  return rest;
 }
 
 /** Findings hold for the reference that was asked for, 50 Ω unless told; without phase they can't be brought there. */

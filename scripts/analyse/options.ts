@@ -1,6 +1,23 @@
+import { CABLES, cableNamed } from "../../app/measurement/cables.ts";
 import type { AnalysisSettings, Quantity } from "../../app/measurement/sweep.ts";
 import { DEFAULT_SETTINGS } from "../../app/measurement/sweep.ts";
 import type { Given, ScreenshotSpec } from "../../app/readers/reading.ts";
+
+/** What brings a sweep to the port or to the antenna. */
+export interface CorrectionOptions {
+  /** Paths of the reference sweeps. */
+  references: { open?: string; short?: string; load?: string };
+  /** dB; null where nothing is known of the load. */
+  loadReturnLossDb: number | null;
+  line: {
+    name: string;
+    k1: number;
+    k2: number;
+    lengthM: number;
+    /** Null where neither the cable's entry nor the command gives it. */
+    velocityFactor: number | null;
+  } | null;
+}
 
 export interface Options {
   files: string[];
@@ -10,6 +27,8 @@ export interface Options {
   settings: AnalysisSettings;
   /** Ω for which findings are given. */
   systemOhm: number;
+  /** Null where no option asks for a correction. */
+  correction: CorrectionOptions | null;
 }
 
 export const USAGE = `Usage: npm run analyse -- FILE… [options]
@@ -19,6 +38,11 @@ export const USAGE = `Usage: npm run analyse -- FILE… [options]
   --reference-ohm R       reference impedance of the findings (50), and of files that name none
   --zero-db DB            level that counts as full reflection
   --quantity Q            s11-db, return-loss, swr, level, gamma or impedance
+Correction (references are levels or complex, as the file is; nothing is extrapolated beyond them):
+  --open F --short F --load F    sweeps of the port open, shorted and with a load
+  --load-return-loss DB          what the load itself is known to have
+  --cable NAME|k1,k2 --length-m L [--velocity-factor V]
+                                 feedline to take out; k1, k2 in dB per metre: k1·√f + k2·f, f in MHz
 Pictures:
   --start-hz F --stop-hz F --scale linear|log --top V --bottom V --trace-color #RRGGBB --frame L,T,R,B`;
 
@@ -26,7 +50,6 @@ Pictures:
 export class UsageError extends Error {}
 
 const QUANTITIES = ["s11-db", "return-loss", "swr", "level", "gamma", "impedance"];
-const LATER = ["--open", "--short", "--load", "--cable", "--length-m", "--velocity-factor"];
 
 /** Parses the arguments of the command. Throws `UsageError`. */
 export function parseOptions(args: string[]): Options {
@@ -37,7 +60,10 @@ export function parseOptions(args: string[]): Options {
     given: {},
     settings: { ...DEFAULT_SETTINGS },
     systemOhm: 50,
+    correction: null,
   };
+  const bench: CorrectionOptions = { references: {}, loadReturnLossDb: null, line: null };
+  const line: LineOptions = {};
   const picture: ScreenshotSpec = {};
   const rest = [...args];
   for (let arg = rest.shift(); arg !== undefined; arg = rest.shift()) {
@@ -47,17 +73,75 @@ export function parseOptions(args: string[]): Options {
     else if (arg === "--points") options.points = true;
     else {
       const [name, glued] = arg.split(/=(.*)/s);
-      if (LATER.includes(name)) throw new UsageError(`${name}: correction is not available yet.`);
-      if (!(name in VALUED)) throw new UsageError(`${name}: no such option.`);
+      if (!(name in VALUED) && !(name in CORRECTING)) throw new UsageError(`${name}: no such option.`);
       const value = glued ?? rest.shift();
       if (value === undefined) throw new UsageError(`${name}: a value is missing.`);
-      VALUED[name](value, options, picture, name);
+      if (name in CORRECTING) CORRECTING[name](value, bench, line, name);
+      else VALUED[name](value, options, picture, name);
     }
   }
   if (options.files.length === 0) throw new UsageError("No file was named.");
+  bench.line = lineOf(line);
+  if (bench.line || Object.keys(bench.references).length > 0) options.correction = bench;
+  else if (bench.loadReturnLossDb !== null) throw new UsageError("--load-return-loss: needs --load.");
   if (Object.keys(picture).length > 0) options.given.screenshot = picture;
   return options;
 }
+
+interface LineOptions {
+  cable?: string;
+  lengthM?: number;
+  velocityFactor?: number;
+}
+
+/** The feedline that was named. A cable of the table brings its velocity factor; own k1 and k2 may go without. */
+function lineOf({ cable, lengthM, velocityFactor }: LineOptions): CorrectionOptions["line"] {
+  if (cable === undefined) {
+    if (lengthM === undefined && velocityFactor === undefined) return null;
+    throw new UsageError("--length-m and --velocity-factor need --cable.");
+  }
+  if (lengthM === undefined) throw new UsageError("--cable: needs --length-m.");
+  const entry = cableNamed(cable);
+  if (entry) {
+    const { name, k1, k2 } = entry;
+    return { name, k1, k2, lengthM, velocityFactor: velocityFactor ?? entry.velocityFactor };
+  }
+  const [k1, k2, ...more] = cable.split(",").map((part) => (part.trim() === "" ? Number.NaN : Number(part)));
+  if (k2 === undefined || more.length > 0 || !(k1 >= 0 && k2 >= 0 && Number.isFinite(k1 + k2)))
+    throw new UsageError(
+      `--cable: expected k1,k2 in dB per metre or one of ${CABLES.map(({ name }) => name).join("; ")}. Found "${cable}".`,
+    );
+  return { name: "own values", k1, k2, lengthM, velocityFactor: velocityFactor ?? null };
+}
+
+type Correct = (value: string, bench: CorrectionOptions, line: LineOptions, name: string) => void;
+
+const CORRECTING: Record<string, Correct> = {
+  "--open": (value, { references }) => {
+    references.open = value;
+  },
+  "--short": (value, { references }) => {
+    references.short = value;
+  },
+  "--load": (value, { references }) => {
+    references.load = value;
+  },
+  "--load-return-loss": (value, bench, _line, name) => {
+    bench.loadReturnLossDb = positive(value, name);
+  },
+  "--cable": (value, _bench, line) => {
+    line.cable = value;
+  },
+  "--length-m": (value, _bench, line, name) => {
+    line.lengthM = number(value, name);
+    if (line.lengthM < 0) throw new UsageError(`${name}: expected a length in metres, found "${value}".`);
+  },
+  "--velocity-factor": (value, _bench, line, name) => {
+    line.velocityFactor = positive(value, name);
+    if (line.velocityFactor > 1)
+      throw new UsageError(`${name}: expected a factor up to 1, found "${value}".`);
+  },
+};
 
 type Apply = (value: string, options: Options, picture: ScreenshotSpec, name: string) => void;
 

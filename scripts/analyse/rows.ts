@@ -2,6 +2,7 @@ import type { Analysis, Dip, Sweep, Warning } from "../../app/measurement/sweep.
 import type { Reading, ReadProblem } from "../../app/readers/reading.ts";
 import type { PictureDetails } from "../../app/readers/screenshot/read-picture.ts";
 import type { ReadPoints } from "../../app/readers/screenshot/to-sweep.ts";
+import type { Done } from "./correction.ts";
 
 /** One file's answer, in the field names that other programs rely on. */
 export interface AnalysedFile {
@@ -11,6 +12,8 @@ export interface AnalysedFile {
   sweep: Sweep;
   analysis: Analysis;
   warnings: Warning[];
+  /** Where a correction was asked for. */
+  done?: Done;
   /** Of pictures only. */
   picture?: PictureDetails;
 }
@@ -25,7 +28,7 @@ export interface FailedFile {
 
 /** The JSON object of a file; numbers that are unknown or infinite are null. */
 export function jsonRow(
-  { file, sha256, reading, sweep, analysis, warnings, picture }: AnalysedFile,
+  { file, sha256, reading, sweep, analysis, warnings, done, picture }: AnalysedFile,
   points: boolean,
 ) {
   const n = sweep.frequencyHz.length;
@@ -46,10 +49,12 @@ export function jsonRow(
       referenceOhm: sweep.referenceOhm,
       complex: sweep.gammaRe !== undefined,
     },
+    ...(done ? { correction: done.correction } : {}),
     dips: analysis.dips.map(dipRow),
     warnings,
     ...(picture ? pictureRow(picture) : {}),
     ...(points ? { points: picture?.points ? seenRow(picture.points) : pointRow(reading, sweep) } : {}),
+    ...(points && done ? { corrected: correctedRow(done.sweep) } : {}),
   };
 }
 
@@ -95,6 +100,12 @@ function pointRow(reading: Reading, sweep: Sweep) {
   const value = Array.from(sweep.magnitude, shownValue(reading));
   if (!sweep.gammaRe || !sweep.gammaIm) return { frequencyHz, value };
   return { frequencyHz, value, re: Array.from(sweep.gammaRe), im: Array.from(sweep.gammaIm) };
+}
+
+/** abs Γ after the correction, gaps where it does not hold. */
+function correctedRow({ frequencyHz, magnitude, gammaRe, gammaIm }: Sweep) {
+  const row = { frequencyHz: Array.from(frequencyHz), value: Array.from(magnitude) };
+  return gammaRe && gammaIm ? { ...row, re: Array.from(gammaRe), im: Array.from(gammaIm) } : row;
 }
 
 function shownValue({ quantity, spec }: Reading): (magnitude: number) => number {

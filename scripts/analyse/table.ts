@@ -4,12 +4,13 @@ import type { AnalysedFile } from "./rows.ts";
 const HEAD = ["dip MHz", "±", "lowest SWR", "return loss dB", "band MHz", "width MHz", "Q", "from"];
 
 /** A file's findings for a person to read. */
-export function table({ file, reading, sweep, analysis, warnings }: AnalysedFile): string {
+export function table({ file, reading, sweep, analysis, warnings, done }: AnalysedFile): string {
   const n = sweep.frequencyHz.length;
   const lines = [
     file,
     `  ${reading.format}, ${reading.quantity}: ${n} points from ${mhz(sweep.frequencyHz[0])} to ${mhz(sweep.frequencyHz[n - 1])} MHz, ${sweep.referenceOhm} Ω`,
   ];
+  if (done) lines.push(`  ${done.told}`);
   const rows = analysis.dips.map(cells);
   if (rows.length === 0) lines.push("  no dip");
   else {

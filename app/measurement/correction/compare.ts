@@ -19,7 +19,7 @@ export interface BenchComparison {
 
 /** Two benches, or one before and after it was rebuilt: differences at the second one's frequencies, and what they mean. */
 export function compareBenches(before: BenchQuality, after: BenchQuality): BenchComparison {
-  const { fromHz, toHz } = commonSpan([spanned(before), spanned(after)]);
+  const { fromHz, toHz } = commonSpan([before, after]);
   const at = after.frequencyHz.filter((hz) => hz >= fromHz && hz <= toHz);
   const difference = (pick: (quality: BenchQuality) => Float64Array) => {
     const was = interpolate(before.frequencyHz, pick(before), at);
@@ -51,10 +51,6 @@ export function compareBenches(before: BenchQuality, after: BenchQuality): Bench
       known(before, after),
     ],
   };
-}
-
-function spanned({ frequencyHz }: BenchQuality) {
-  return { frequencyHz, magnitude: frequencyHz, referenceOhm: 1, plane: "instrument" as const };
 }
 
 function inWords(

@@ -47,7 +47,7 @@ export function none(sweep: Sweep, ...warnings: Warning[]): Corrected {
 }
 
 function stated(amplitude: Float64Array) {
-  return { amplitude, ripple: new Float64Array(amplitude.length).fill(Number.NaN), from: "number" as const };
+  return { amplitude, ripple: new Float64Array(amplitude.length).fill(Number.NaN) };
 }
 
 function turnBack(re: Float64Array, im: Float64Array, phase: { re: Float64Array; im: Float64Array }) {
@@ -74,7 +74,7 @@ function limitNotes({ references, standards, given }: BenchForCorrection, line: 
   if (line && !(references.open && references.short) && given.testPortMatchDb === null)
     notes.push({
       code: "one-reference",
-      message: `The 0 dB line is the ${references.open ? "open" : "short"} alone: source match and directivity stay in it in full. A sweep of the ${references.open ? "short" : "open"} as well takes most of them out and shows how large they are.`,
+      message: `The 0 dB line is the ${references.open ? "open" : "short"} alone: source match and directivity stay in it in full, and the limits take a test port of 14 dB for it. A sweep of the ${references.open ? "short" : "open"} as well takes most of them out and shows how large they are.`,
     });
   return notes;
 }

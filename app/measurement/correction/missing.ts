@@ -37,7 +37,10 @@ export function missingOf(
         : "The load's own return loss is not known, so the directivity may be better or worse than what the load leaves: compare the load with a better one, or give its resistance as measured.",
     );
   if ((!open || !short) && given.testPortMatchDb === null)
-    add("match", "The test port's match is not known: open and short together show it as a ripple.");
+    add(
+      "match",
+      "The test port's match is not known, and 14 dB is taken for it: open and short together show it as a ripple.",
+    );
   if (!through)
     add(
       "through",

@@ -5,7 +5,7 @@ import { type BenchLimit, limitsOf } from "./limiting.ts";
 import { type Missing, missingOf } from "./missing.ts";
 import { commonSpan, magnitudeAt } from "./references.ts";
 import { residualLimits } from "./residual-limits.ts";
-import { scalarLimits } from "./scalar-limits.ts";
+import { portMatch, scalarLimits } from "./scalar-limits.ts";
 import { median, stretchesOf } from "./stretches.ts";
 import { isKnown, type Wish } from "./wish.ts";
 import { zeroLine } from "./zero-line.ts";
@@ -66,6 +66,8 @@ export function qualifyBench(bench: BenchForCorrection, wish: Wish): BenchQualit
   const middle = median(amplitude);
   const left = terms ? residualLimits(n, standards, given) : scalar;
   const directivity = terms ? Float64Array.from(terms, (term) => term.directivity) : scalar.directivity;
+  const port = line ? portMatch(at, line, scalar.directivity, given) : scalar.match;
+  const match = terms ? Float64Array.from(terms, (term) => term.match) : port;
   const measures = {
     frequencyHz: at,
     insertionLossDb: through ? through.map((value, i) => db(value / amplitude[i])) : unknown(n),
@@ -73,9 +75,7 @@ export function qualifyBench(bench: BenchForCorrection, wish: Wish): BenchQualit
     openShortDisagreementDb: disagreement(references, at),
     directivityDb: directivity.map((value) => -db(value)),
     trackingDb: left.tracking.map((value) => db(1 + value)),
-    testPortMatchDb: (terms ? Float64Array.from(terms, (term) => term.match) : scalar.match).map(
-      (value) => -db(value),
-    ),
+    testPortMatchDb: match.map((value) => -db(value)),
   };
   return {
     ...measures,

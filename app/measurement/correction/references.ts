@@ -18,7 +18,7 @@ export interface Span {
 }
 
 /** The range that all of these sweeps cover. No sweep at all covers everything; one without points nothing. */
-export function commonSpan(sweeps: readonly (Sweep | undefined)[]): Span {
+export function commonSpan(sweeps: readonly (Pick<Sweep, "frequencyHz"> | undefined)[]): Span {
   let fromHz = Number.NEGATIVE_INFINITY;
   let toHz = Number.POSITIVE_INFINITY;
   for (const sweep of sweeps) {

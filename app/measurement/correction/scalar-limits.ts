@@ -6,38 +6,51 @@ import { magnitudeAt } from "./references.ts";
 import type { ZeroLine } from "./zero-line.ts";
 
 /**
- * Worst-case limits of a sweep that was divided by a 0 dB line, from Γm = D + T·Γ/(1 − M·Γ), all relative to that line; linear, one value a
- * point, NaN where nothing is known.
- * - Directivity: what the load leaves, plus what the load itself is known to return. With a load that is not described its own
- *   error is inside what it leaves; a notch where the two cancel proves nothing, so the largest value within LOAD_REACH counts.
- *   Without a load the given directivity.
- * - Match: as given; else from the ripple between open and short, whose half is at most abs M + abs D: its largest value within
- *   RIPPLE_REACH plus the directivity. That sees errors in phase with the reflection somewhere in the reach; an error that is in quadrature all
- *   over is not seen, and for a hard limit the test port's match must be given.
- * - Tracking: after the mean of both references only second-order terms are left, M² + (M + D)²/2; with one reference, or a number, the
- *   first-order ones are too, M + D and the square. What is given is a floor, as a drift that no reference shows.
- * Sources: the error model of scalar reflectometers (HP application notes 183 and 1287-3, from memory, not seen); the cancelling of the first
- * order: Keysight N9000B Spectrum Analyzer Mode reference, p. 547; second order by own derivation, checked against a
- * nodal solution of a bridge.
+ * Worst-case limits of a sweep that was divided by a 0 dB line, from Γm = D + T·Γ/(1 − M·Γ), all relative to that
+ * line; linear, one value a point, NaN where nothing is known.
+ * - Directivity: what the load leaves, plus what the load itself is known to return. With a load that is not described
+ *   its own error is inside what it leaves; a notch where the two cancel proves nothing, so the largest value within
+ *   LOAD_REACH counts. Without a load the given directivity.
+ * - Match: as given; else from the ripple between open and short, whose half is at most abs M + abs D: its largest
+ *   value within RIPPLE_REACH plus the directivity. That sees errors in phase with the reflection somewhere in the
+ *   reach; one in quadrature all over is not seen, and for a hard limit the test port's match must be given. With only
+ *   one reference, or a number, POOR_PORT is taken, and the caller says so.
+ * - Tracking: after the mean of both references only second-order terms are left, M² + (M + D)²/2; with one reference,
+ *   or a number, the first-order ones are too, M + D and its square. What is given is a floor, as for a drift that no
+ *   reference shows.
+ * Sources: the error model of scalar reflectometers (HP application notes 183 and 1287-3, from memory, not seen); the
+ * cancelling of the first order: Keysight N9000B Spectrum Analyzer Mode reference, p. 547; second order by own
+ * derivation, checked against a nodal solution of a bridge.
  */
 export function scalarLimits(
   atHz: Float64Array,
-  line: Omit<ZeroLine, "from"> & { from: ZeroLine["from"] | "number" },
+  line: Pick<ZeroLine, "amplitude" | "ripple">,
   load: Sweep | undefined,
   standards: BenchStandards,
   given: BenchGiven,
 ): BenchLimits {
   const directivity = directivityOf(atHz, line, load, standards, given);
-  const match = matchOf(atHz, line, directivity, given);
+  const seen = portMatch(atHz, line, directivity, given);
+  const match = seen.map((m, i) => (Number.isNaN(m) && !Number.isNaN(directivity[i]) ? POOR_PORT : m));
   const floor = given.trackingDb === null ? 0 : 10 ** (given.trackingDb / 20) - 1;
-  const both = line?.from === "open-and-short";
-  const tracking = Float64Array.from(match, (m, i) => {
+  const tracking = match.map((m, i) => {
     const sum = m + directivity[i];
-    const own = both ? m * m + (sum * sum) / 2 : sum + sum * sum;
-    if (Number.isNaN(own)) return line || given.trackingDb === null ? Number.NaN : floor;
-    return Math.max(floor, own);
+    const own = Number.isNaN(line.ripple[i]) ? sum + sum * sum : m * m + (sum * sum) / 2;
+    return Number.isNaN(own) ? own : Math.max(floor, own);
   });
   return { directivity, tracking, match };
+}
+
+/** The test port's match as far as it is known: given, or from the ripple of open and short; NaN where it is not. */
+export function portMatch(
+  atHz: Float64Array,
+  line: Pick<ZeroLine, "ripple">,
+  directivity: Float64Array,
+  { testPortMatchDb }: BenchGiven,
+): Float64Array {
+  if (testPortMatchDb !== null)
+    return new Float64Array(atHz.length).fill(returnLossDbToGamma(testPortMatchDb));
+  return envelope(atHz, line.ripple, RIPPLE_REACH).map((value, i) => value + directivity[i]);
 }
 
 /** Highest abs Γ that the load may have, in place of none; null where that is not known. */
@@ -49,34 +62,22 @@ export function loadGamma(standards: BenchStandards, referenceOhm: number): numb
 
 function directivityOf(
   atHz: Float64Array,
-  line: Pick<ZeroLine, "amplitude"> | null,
+  line: Pick<ZeroLine, "amplitude">,
   load: Sweep | undefined,
   standards: BenchStandards,
   { directivityDb }: BenchGiven,
 ): Float64Array {
-  const n = atHz.length;
   const stated = directivityDb === null ? Number.NaN : returnLossDbToGamma(directivityDb);
-  if (!load || !line) return new Float64Array(n).fill(stated);
+  if (!load) return new Float64Array(atHz.length).fill(stated);
   const own = loadGamma(standards, load.referenceOhm);
-  const left = magnitudeAt(load, atHz);
-  for (let i = 0; i < n; i++) left[i] /= line.amplitude[i];
+  const left = magnitudeAt(load, atHz).map((value, i) => value / line.amplitude[i]);
   const sure = own === null ? envelope(atHz, left, LOAD_REACH) : left;
   return sure.map((value) => (Number.isNaN(value) ? stated : value + (own ?? 0)));
-}
-
-function matchOf(
-  atHz: Float64Array,
-  line: Pick<ZeroLine, "ripple"> | null,
-  directivity: Float64Array,
-  { testPortMatchDb }: BenchGiven,
-): Float64Array {
-  if (testPortMatchDb !== null)
-    return new Float64Array(atHz.length).fill(returnLossDbToGamma(testPortMatchDb));
-  if (!line) return new Float64Array(atHz.length).fill(Number.NaN);
-  return envelope(atHz, line.ripple, RIPPLE_REACH).map((value, i) => value + directivity[i]);
 }
 
 /** Notches of a load against a bridge were seen to be narrower than a tenth of their frequency (common practice, no source). */
 const LOAD_REACH = 1.1;
 /** Half a turn of the phase between a bridge and its port, at most a metre of cable, within an octave above 50 MHz. */
 const RIPPLE_REACH = 1.5;
+/** 14 dB, an SWR of 1.5: the poorest test port that is still called one (common practice, no source). */
+const POOR_PORT = 0.2;
