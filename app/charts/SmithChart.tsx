@@ -64,6 +64,7 @@ export function SmithChart(props: SmithChartProps) {
       <svg className="smith" viewBox={viewBox} style={style} aria-hidden="true">
         <Ground {...{ referenceOhm, swrLimit, palette }} />
         <TraceLine points={points} palette={palette} />
+        <LimitLabel swrLimit={swrLimit} zoom={zoom} palette={palette} />
         <Ticks points={points} most={10 * Math.sqrt(zoom)} taken={spots} zoom={zoom} palette={palette} />
       </svg>
       {props.children && <div className="smith-layer">{props.children}</div>}
@@ -103,17 +104,26 @@ function Ground({ referenceOhm, swrLimit, palette }: GroundProps) {
             {text}
           </text>
         ))}
-        <text
-          y={hollow + 11}
-          textAnchor="middle"
-          fill={palette.moss}
-          stroke={palette.land}
-          className="smith-over"
-        >
-          SWR {swrLimit}
-        </text>
       </g>
     </>
+  );
+}
+
+/** Over the line, which may run through it. */
+function LimitLabel({ swrLimit, zoom, palette }: Omit<GroundProps, "referenceOhm"> & { zoom: number }) {
+  return (
+    <g transform={`translate(0 ${round(swrRadius(swrLimit), 2)}) scale(${round(1 / zoom, 4)})`}>
+      <text
+        y="13"
+        textAnchor="middle"
+        fill={palette.moss}
+        stroke={palette.land}
+        fontFamily={palette.monoFont}
+        className="smith-tick"
+      >
+        SWR {swrLimit}
+      </text>
+    </g>
   );
 }
 

@@ -18,6 +18,18 @@ export function AtEachDip({ data }: { data: ComplexData }) {
         rows={data.dips}
         rowKey={(row) => String(row.frequencyHz)}
       />
+      {data.dips.some(({ side }) => side?.benchUnknown) && (
+        <p className="soft max-w-[72ch] text-small">
+          The bench's directivity is not known, so the side is told by the noise alone: a bridge of 30 dB can
+          turn it where the SWR is under 1.07.
+        </p>
+      )}
+      {data.dips.some(({ slope }) => slope && uneven(slope)) && (
+        <p className="soft max-w-[72ch] text-small">
+          Q by slope is unknown where the slope of R and X changes within the dip: two resonances or a line
+          make it.
+        </p>
+      )}
       {data.moreDips > 0 && <p className="soft">{data.moreDips} more dips; zoom in to see theirs.</p>}
     </div>
   );
@@ -52,6 +64,7 @@ function SideCell({ row: { side } }: { row: Row }) {
 
 function SlopeCell({ row: { slope, edge } }: { row: Row }) {
   if (!slope || edge) return <span className="soft">unknown</span>;
+  if (uneven(slope)) return <span className="soft">unknown</span>;
   const decimals = slope.q >= 100 || slope.halfWidth >= 0.5 ? 0 : slope.halfWidth >= 0.05 ? 1 : 2;
   const half = slope.halfWidth.toFixed(decimals);
   return (
@@ -60,6 +73,11 @@ function SlopeCell({ row: { slope, edge } }: { row: Row }) {
       {Number(half) > 0 && <span className="soft"> ± {half}</span>}
     </>
   );
+}
+
+/** The interval holds half and half again: no digit of it would mean anything. */
+function uneven({ q, halfWidth }: NonNullable<Row["slope"]>): boolean {
+  return halfWidth > q / 2;
 }
 
 function ZeroCell({ row: { zero } }: { row: Row }) {

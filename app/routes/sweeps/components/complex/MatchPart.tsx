@@ -76,19 +76,15 @@ function Solutions({ data: { match, referenceOhm } }: { data: ComplexData }) {
     return <p>It is matched as it is: no element is needed.</p>;
   return (
     <>
-      {singles.length > 0 && (
-        <div className="network-cards">
-          {singles.map(({ element, swr }) => (
-            <NetworkCard
-              key={element.place}
-              title={element.place === "series" ? "One element in series" : "One element across the port"}
-              elements={[element]}
-              result={`SWR ${formatSwr(swr)} there`}
-            />
-          ))}
-        </div>
-      )}
       <div className="network-cards">
+        {singles.map(({ element, swr }) => (
+          <NetworkCard
+            key={element.place}
+            title={element.place === "series" ? "One element in series" : "One element across the port"}
+            elements={[element]}
+            result={`SWR ${formatSwr(swr)} there`}
+          />
+        ))}
         {networks
           .filter(({ elements }) => elements.length === 2)
           .map(({ order, elements, input }) => (
