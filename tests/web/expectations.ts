@@ -1,5 +1,5 @@
 import type { ProjectAction, SiteAction } from "~/auth/permissions";
-import { type Crew, type Place, type Someone, onePixel, touchstone, unique } from "./world.ts";
+import { type Crew, onePixel, type Place, type Someone, touchstone, unique } from "./world.ts";
 
 /** What each route asks for, and the smallest form that it takes. One line a case; the walk does the rest. */
 
@@ -195,6 +195,50 @@ export const EXPECTATIONS: Record<string, Expectation> = {
       form: () => ({ intent, was: "open", text: "The second element." }),
     })),
   },
+  "routes/benches/list.tsx": { GET: read },
+  "routes/benches/new.tsx": {
+    GET: [{ ask: { project: "bench.edit" } }],
+    POST: [
+      {
+        ask: { project: "bench.edit" },
+        form: () => ({ name: unique("Bridge"), validFrom: "2026-05-03", open: sweepFile() }),
+      },
+    ],
+  },
+  "routes/benches/bench.tsx": {
+    GET: read,
+    POST: [
+      { name: "retire", ask: { project: "bench.edit" }, form: () => ({ intent: "retire" }) },
+      { name: "resume", ask: { project: "bench.edit" }, form: () => ({ intent: "resume" }) },
+      {
+        name: "delete",
+        ask: { project: "bench.edit" },
+        form: () => ({ intent: "delete" }),
+        destroys: "sweep",
+      },
+    ],
+  },
+  "routes/benches/edit.tsx": {
+    GET: [{ ask: { project: "bench.edit" } }],
+    POST: [
+      {
+        name: "bench",
+        ask: { project: "bench.edit" },
+        form: () => ({ intent: "bench", name: unique("So") }),
+      },
+    ],
+  },
+  "routes/benches/rebuild.tsx": {
+    GET: [{ ask: { project: "bench.edit" } }],
+    POST: [
+      {
+        ask: { project: "bench.edit" },
+        form: () => ({ validFrom: "2026-05-04", remark: "Another arm", load: sweepFile() }),
+      },
+    ],
+  },
+  "routes/benches/compare.tsx": { GET: read },
+
   "routes/photographs/photographs.ts": {
     POST: [
       {

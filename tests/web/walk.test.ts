@@ -200,6 +200,9 @@ function fill(path: string, place: Place): string {
     .replace(":sweep", place.sweep)
     .replace(":dip", place.dip)
     .replace(":note", place.note)
+    .replace(":bench", place.bench)
+    .replace(":photograph", place.photograph)
+    .replace(":size", "small")
     .replace("*", "no/such/thing");
 }
 

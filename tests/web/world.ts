@@ -6,6 +6,9 @@ import { inTransaction, pool } from "~/db/client.server";
 import * as people from "~/db/people.server";
 import * as projects from "~/db/projects.server";
 import * as sweeps from "~/db/sweeps.server";
+import { IDEAL_STANDARDS, NOTHING_GIVEN } from "~/measurement/bench";
+import { createBench } from "~/services/benches.server";
+import { addPhotograph } from "~/services/photographs.server";
 import { createProject } from "~/services/projects.server";
 import { makeToken } from "~/services/tokens.server";
 import { askApi, Browser, SERVER } from "./browser.ts";
@@ -52,6 +55,9 @@ export interface Place {
   dip: string;
   /** Written by the commenter. */
   note: string;
+  /** With one photograph. */
+  bench: string;
+  photograph: string;
 }
 
 export type Crew = Record<ProjectRole, Someone>;
@@ -66,7 +72,7 @@ export async function makePlace(crew: Crew, visibility: Visibility, empty = fals
   const second = await makePerson("second");
   await projects.insertMember(project.id, second.id, "owner");
   const place = { title, visibility, project: project.publicId, projectId: project.id };
-  if (empty) return { ...place, sweep: "", dip: "", note: "" };
+  if (empty) return { ...place, sweep: "", dip: "", note: "", bench: "", photograph: "" };
   const token = await tokenOf(crew.owner);
   const answer = await sendSweep(project.publicId, token, touchstone());
   if (answer.status !== 201) throw new Error(`No sweep: ${answer.status} ${await answer.text()}`);
@@ -78,7 +84,16 @@ export async function makePlace(crew: Crew, visibility: Visibility, empty = fals
     body: JSON.stringify({ body: "A first thought." }),
   });
   const note = (await written.json()).id;
-  return { ...place, sweep: sweep.id, dip, note };
+  const bench = await makeBench(project, crew.owner);
+  const added = await addPhotograph({
+    of: { projectId: project.id, benchId: bench.id },
+    project,
+    by: crew.owner,
+    file: { name: "bridge.png", bytes: onePixel() },
+    caption: "",
+  });
+  const photograph = added.kind === "added" ? added.publicId : "";
+  return { ...place, sweep: sweep.id, dip, note, bench: bench.publicId, photograph };
 }
 
 export async function makeCrew(): Promise<Crew> {
@@ -88,6 +103,28 @@ export async function makeCrew(): Promise<Crew> {
     commenter: await makePerson("commenter"),
     reader: await makePerson("reader"),
   };
+}
+
+/** A bench without references, the project's own. */
+export async function makeBench(project: { id: number }, by: Someone, name = unique("Bench")) {
+  const { bench } = await createBench(
+    project,
+    by,
+    { name, description: "", own: "no" },
+    {
+      validFrom: new Date("2026-01-01T00:00Z"),
+      remark: "",
+      parts: [],
+      standards: IDEAL_STANDARDS,
+      given: NOTHING_GIVEN,
+    },
+  );
+  return bench;
+}
+
+/** A picture of one grey pixel, PNG. */
+export function onePixel(): Uint8Array<ArrayBuffer> {
+  return new Uint8Array(Buffer.from(ONE_PIXEL, "base64"));
 }
 
 export function sendSweep(
@@ -141,3 +178,6 @@ function divide([a, b]: [number, number], [c, d]: [number, number]): [number, nu
 export async function closeWorld(): Promise<void> {
   await pool.end();
 }
+
+const ONE_PIXEL =
+  "iVBORw0KGgoAAAANSUhEUgAAAAEAAAABCAIAAACQd1PeAAAACXBIWXMAAAPoAAAD6AG1e1JrAAAADElEQVQImWPo6OgAAAM0AZmUse0HAAAAAElFTkSuQmCC";

@@ -3,7 +3,6 @@ import { Button } from "~/components/ui/Button";
 import { Dialog } from "~/components/ui/Dialog";
 import { InputField } from "~/components/ui/Field";
 import type { ShownPhotograph } from "~/services/photographs.server";
-import "./photographs.css";
 
 export interface PhotographsProps {
   /** Public id of the project. */

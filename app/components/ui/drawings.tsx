@@ -22,6 +22,13 @@ export const DRAWINGS = {
       <path d="M60 4v20m-6-6 6 6 6-6" {...ACCENT} />
     </Paper>
   ),
+  benches: () => (
+    <Paper>
+      <Land d="M4 54H116V66H4Z" line="M4 54H116" />
+      <path d="M34 54V34h52v20M34 40H14m72 0h20M60 34V16m-5 0h10" {...PEN} />
+      <path d="M48 44h24m-18-4-6 4 6 4m12-8 6 4-6 4" {...ACCENT} />
+    </Paper>
+  ),
   dips: () => (
     <Paper>
       <Land d="M4 28C30 25 44 31 60 28S96 26 116 28V66H4Z" line="M4 28C30 25 44 31 60 28S96 26 116 28" />

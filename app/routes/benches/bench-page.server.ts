@@ -1,0 +1,104 @@
+import type { ProjectAccess } from "~/auth/require.server";
+import * as benches from "~/db/benches.server";
+import { type BenchQuality, qualifyBench } from "~/measurement/correction/qualify";
+import { mayEditBench } from "~/services/bench-access.server";
+import { loadBench } from "~/services/bench-sweeps.server";
+import { renderNote } from "~/services/markdown.server";
+import { listPhotographs } from "~/services/photographs.server";
+import { benchScene, MEASURES } from "./bench-scene";
+import type { Wish } from "./benches.schema";
+import { pickVersion } from "./require-bench.server";
+
+/** All that a bench's page shows: one round of queries, then its references' points. */
+export async function loadBenchPage(
+  access: ProjectAccess,
+  found: benches.FoundBench,
+  wish: Wish,
+  versionId: string | null,
+) {
+  const { project, person } = access;
+  const { bench, home, owner } = found;
+  const here = bench.projectId === project.id;
+  const [versions, taken, sweepCount, photographs] = await Promise.all([
+    benches.findVersions(bench.id),
+    benches.findSweepsTakenWith(bench.id, project.id),
+    benches.countSweeps(bench.id),
+    here ? listPhotographs({ projectId: project.id, benchId: bench.id }) : [],
+  ]);
+  const chosen = pickVersion(versions, versionId);
+  const loaded = await loadBench(bench, chosen.version);
+  const quality = qualifyBench(loaded.correction, wish);
+  return {
+    project: { publicId: project.publicId },
+    may: { edit: mayEditBench(access, bench) },
+    bench: {
+      publicId: bench.publicId,
+      name: bench.name,
+      descriptionHtml: bench.description ? renderNote(bench.description) : null,
+      owner: bench.ownerId === null ? null : bench.ownerId === person?.id ? "you" : owner,
+      home: here ? null : home.title,
+      retiredAt: bench.retiredAt,
+    },
+    version: { ...shownVersion(chosen), parts: chosen.version.parts },
+    standards: chosen.version.standards,
+    given: chosen.version.given,
+    versions: versions.map(shownVersion),
+    references: [...loaded.references, ...loaded.unread].map((reference) => shownReference(reference, here)),
+    taken,
+    sweepCount,
+    photographs,
+    wish,
+    quality: {
+      correction: quality.correction,
+      ranges: quality.ranges,
+      limits: quality.limits.map(({ code, message }) => ({ code, message })),
+      missing: quality.missing,
+    },
+    scene: benchScene([quality], wish),
+    numbers: numbersOf(quality),
+  };
+}
+
+/** The measures at a handful of frequencies, for the table under the drawing. */
+export function numbersOf(quality: BenchQuality) {
+  const n = quality.frequencyHz.length;
+  const indices = Array.from({ length: Math.min(n, TABLE_ROWS) }, (_, i) =>
+    n <= TABLE_ROWS ? i : Math.round((i * (n - 1)) / (TABLE_ROWS - 1)),
+  );
+  return indices.map((i) => ({
+    frequencyHz: quality.frequencyHz[i],
+    values: MEASURES.map(({ key }) => {
+      const value = quality[key][i];
+      return Number.isFinite(value) ? value : null;
+    }),
+  }));
+}
+
+function shownVersion({ version, by }: benches.ListedVersion) {
+  const { publicId, number, validFrom, remark, createdAt } = version;
+  return { publicId, number, validFrom, remark, createdAt, by };
+}
+
+/** The sweep's page is in the project that keeps the bench: elsewhere there is no link to it. */
+function shownReference(
+  { kind, sweep, project, fileName, sha256, reading }: benches.FoundReference,
+  here: boolean,
+) {
+  const unread = sweep.readingId === null || sweep.problem !== null;
+  const page = `/projects/${project}/sweeps/${sweep.publicId}`;
+  return {
+    kind,
+    sweep: sweep.publicId,
+    title: sweep.title,
+    fileName,
+    sha256,
+    unread,
+    quantity: reading?.quantity ?? null,
+    pointCount: sweep.pointCount,
+    startHz: sweep.startHz,
+    stopHz: sweep.stopHz,
+    href: here ? (unread ? `${page}/reading` : page) : null,
+  };
+}
+
+const TABLE_ROWS = 13;
