@@ -10,12 +10,14 @@ import { sha256Of } from "./storage.server.ts";
 /** The bench and the line that a sweep can be corrected with. */
 export interface Means {
   bench: LoadedBench | null;
+  /** The bench that was said, also where it can't be used. */
+  named: benches.BenchRow | null;
   feedline: Feedline | null;
   /** Why a bench that was named can't be used for this sweep; null where there is nothing against it. */
   problem: string | null;
 }
 
-export const NO_MEANS: Means = { bench: null, feedline: null, problem: null };
+export const NO_MEANS: Means = { bench: null, named: null, feedline: null, problem: null };
 
 /** What the sweep says it was taken with, as that was when it was taken (or, where that is not said, came in). */
 export async function meansOf(
@@ -24,7 +26,9 @@ export async function meansOf(
   const means = { ...NO_MEANS, feedline: sweep.feedline ?? null };
   const found = await benchForSweep(sweep);
   if (!found) return means;
-  return found.kind === "bench" ? { ...means, bench: found } : { ...means, problem: found.message };
+  return found.kind === "bench"
+    ? { ...means, bench: found, named: found.bench }
+    : { ...means, named: found.bench, problem: found.message };
 }
 
 /** What a stored analysis was corrected with, as it is now. */
@@ -33,7 +37,7 @@ export async function meansOfStored(stored: StoredCorrection | null): Promise<Me
   const means = { ...NO_MEANS, feedline: stored.feedline };
   if (!stored.bench) return means;
   const found = await benches.findVersionByPublicId(stored.bench.version);
-  if (found) return { ...means, bench: await loadBench(found.bench, found.version) };
+  if (found) return { ...means, named: found.bench, bench: await loadBench(found.bench, found.version) };
   const problem = `The bench “${stored.bench.name}” that it was corrected with is no longer here. The numbers are kept as they were found; the curve is as it was measured.`;
   return { ...means, feedline: null, problem };
 }

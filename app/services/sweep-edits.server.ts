@@ -1,8 +1,11 @@
 import { inTransaction } from "~/db/client.server";
+import * as dips from "~/db/dips.server";
 import * as jobs from "~/db/jobs.server";
+import * as projects from "~/db/projects.server";
 import * as sweeps from "~/db/sweeps.server";
 import { analyse } from "~/measurement/analyse";
-import type { AnalysisSettings, Plane } from "~/measurement/sweep";
+import type { Feedline } from "~/measurement/feedline";
+import { type AnalysisSettings, DEFAULT_SETTINGS, type Plane } from "~/measurement/sweep";
 import type { Given, ReadProblem } from "~/readers/reading";
 import { storeAnalysis } from "./analyses.server.ts";
 import { correctAsRead } from "./correction.server.ts";
@@ -20,6 +23,7 @@ import {
   withBenchWarnings,
 } from "./sweep-corrections.server.ts";
 import { loadPoints } from "./sweep-points.server.ts";
+import { keepDecisionsAround, refreshTrails } from "./trails.server.ts";
 
 export interface TitleAndDate {
   title: string;
@@ -51,6 +55,10 @@ export function keepTitleAndDate(
       { ...(title !== undefined && { title }), ...(takenAt !== undefined && { takenAt: wanted.takenAt }) },
       tx,
     );
+    if (takenAt !== undefined) {
+      await projects.lock(sweep.projectId, tx);
+      await refreshTrails(sweep.projectId, tx);
+    }
     return null;
   });
 }
@@ -64,8 +72,11 @@ export async function keepSettings(
   settings: AnalysisSettings,
   by: number,
   plane: Plane = planeToKeep(found),
+  /** Of the sweep's own row, written with the analysis. */
+  changes: Pick<Partial<sweeps.SweepRow>, "benchId" | "feedline"> = {},
 ): Promise<void> {
-  const { sweep, reading } = found;
+  const { reading } = found;
+  const sweep = { ...found.sweep, ...changes };
   if (!sweep.readingId || !reading?.reading) return;
   const readingId = sweep.readingId;
   const [points, means] = await Promise.all([loadPoints(readingId), meansOf(sweep)]);
@@ -79,9 +90,13 @@ export async function keepSettings(
     (warning) => !analysis.warnings.some((w) => w.code === warning.code),
   );
   await inTransaction(async (tx) => {
+    await projects.lock(sweep.projectId, tx);
     const now = await sweeps.lock(sweep.id, tx);
     // Read anew in the meantime: the newer reading has its own analysis.
-    if (now?.readingId !== readingId) return;
+    if (now?.readingId !== readingId) {
+      if (now && Object.keys(changes).length > 0) await sweeps.update(sweep.id, changes, tx);
+      return;
+    }
     const warnings = [...(kept ?? []).filter((w) => w.code.startsWith("read-")), ...analysis.warnings];
     const analysisId = await storeAnalysis(
       {
@@ -94,8 +109,46 @@ export async function keepSettings(
       },
       tx,
     );
-    await sweeps.update(sweep.id, { analysisId, preview: previewOf(done.sweep) }, tx);
+    await sweeps.update(sweep.id, { ...changes, analysisId, preview: previewOf(done.sweep) }, tx);
+    await refreshTrails(sweep.projectId, tx);
   });
+}
+
+/** The same settings and plane once more, with the bench and the line as they are now. */
+export async function analyseAnew(found: sweeps.FoundSweep, by: number): Promise<void> {
+  await keepSettings(found, found.analysis?.settings ?? DEFAULT_SETTINGS, by);
+}
+
+/**
+ * Says which bench the sweep was taken with, null for none, and finds its dips anew at that bench's port (or at the antenna, where they were);
+ * without one, where it was measured.
+ */
+export async function chooseBench(
+  found: sweeps.FoundSweep,
+  benchId: number | null,
+  by: number,
+): Promise<void> {
+  const { analysis } = found;
+  if (!analysis) return sweeps.update(found.sweep.id, { benchId });
+  const atAntenna = analysis.correction?.plane === "antenna";
+  const plane = atAntenna ? "antenna" : benchId === null ? "instrument" : "port";
+  await keepSettings(found, analysis.settings, by, plane, { benchId });
+}
+
+/** Says which line lies before the antenna, null for none. Answers whether dips were found anew, as those at the antenna are. */
+export async function chooseFeedline(
+  found: sweeps.FoundSweep,
+  feedline: Feedline | null,
+  by: number,
+): Promise<boolean> {
+  const { analysis, sweep } = found;
+  if (analysis?.correction?.plane !== "antenna") {
+    await sweeps.update(sweep.id, { feedline });
+    return false;
+  }
+  const without = sweep.benchId === null ? "instrument" : "port";
+  await keepSettings(found, analysis.settings, by, feedline ? "antenna" : without, { feedline });
+  return true;
 }
 
 /**
@@ -111,6 +164,7 @@ export async function keepAnswer(
   const { outcome, means } = await readStored(found, given, settings);
   if (!outcome.ok && !outcome.reading) return outcome.problem;
   await inTransaction(async (tx) => {
+    await projects.lock(found.sweep.projectId, tx);
     const now = await sweeps.lock(found.sweep.id, tx);
     // Read by somebody else in the meantime: that stays.
     if (!now?.problem) return;
@@ -130,6 +184,7 @@ export async function readAnew(
   const { outcome, means } = await readStored(found, given, settings);
   if (!outcome.ok) return outcome.problem;
   await inTransaction(async (tx) => {
+    await projects.lock(found.sweep.projectId, tx);
     if (!(await sweeps.lock(found.sweep.id, tx))) return;
     const { id: sweepId, projectId } = found.sweep;
     await storeOutcome({ projectId, sweepId, given, outcome, means, by }, tx);
@@ -147,8 +202,16 @@ async function readStored(found: sweeps.FoundSweep, given: Given, settings: Anal
 
 /** Deletes a sweep with its dips, notes and original; the object goes once the rows are gone. */
 export async function deleteSweep(found: sweeps.FoundSweep): Promise<void> {
+  const { id, projectId } = found.sweep;
   await inTransaction(async (tx) => {
+    await projects.lock(projectId, tx);
     await jobs.insert("delete-object", { key: found.file.storageKey }, new Date(), tx);
+    const gone = await dips.findAllBySweep(id, tx);
+    await keepDecisionsAround(
+      gone.map(({ dip }) => dip.id),
+      tx,
+    );
     await sweeps.deleteByFileId(found.file.id, tx);
+    await refreshTrails(projectId, tx);
   });
 }

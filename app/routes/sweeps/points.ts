@@ -2,13 +2,13 @@ import { requireProject } from "~/auth/require.server";
 import { decimate } from "~/measurement/decimate";
 import { pickPoints } from "~/services/points.server";
 import type { Route } from "./+types/points";
-import { requirePoints } from "./require-sweep.server";
+import { requireSweepAt } from "./require-sweep.server";
 import { parseView } from "./sweeps.schema";
 
 /** What the zoomable chart draws: `{frequencyHz, magnitude, total}`, decimated with dips kept. */
 export async function loader(args: Route.LoaderArgs) {
   const access = await requireProject(args, "project.read");
-  const { points } = await requirePoints(access, args.params.sweep);
+  const { sweep: points } = (await requireSweepAt(access, args.params.sweep, args.request)).at;
   const view = parseView(new URL(args.request.url).searchParams);
   const indices = decimate(points, MOST_POINTS, {
     fromHz: view.fromHz ?? points.frequencyHz[0],

@@ -1,8 +1,8 @@
 import type { ProjectAccess } from "~/auth/require.server";
 import * as sweeps from "~/db/sweeps.server";
 import { notFound } from "~/errors";
-import type { Sweep } from "~/measurement/sweep";
-import { loadPoints } from "~/services/sweep-points.server";
+import { type SweepAt, sweepAt } from "~/services/shown-sweep.server";
+import { parsePlane } from "./sweeps.schema";
 
 /** The sweep of this project, or 404. `asked` is the query, where it was begun while access was still being asked. */
 export async function requireSweep(
@@ -15,12 +15,14 @@ export async function requireSweep(
   return found;
 }
 
-/** A sweep that was read, with all its points, or 404: an unread one has no numbers to give. */
-export async function requirePoints(
+/** A sweep that was read, with all its points at the plane of the address (`?plane=`, else where its dips were found), or 404. */
+export async function requireSweepAt(
   access: ProjectAccess,
   publicId: string,
-): Promise<{ found: sweeps.FoundSweep; points: Sweep }> {
+  { url }: Request,
+): Promise<{ found: sweeps.FoundSweep; at: SweepAt }> {
   const found = await requireSweep(access, publicId);
-  if (!found.sweep.readingId || found.sweep.problem) throw notFound("reading of this sweep");
-  return { found, points: await loadPoints(found.sweep.readingId) };
+  const at = await sweepAt(found, parsePlane(new URL(url).searchParams.get("plane")));
+  if (!at) throw notFound("reading of this sweep");
+  return { found, at };
 }

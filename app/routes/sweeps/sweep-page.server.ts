@@ -1,5 +1,5 @@
 import type { ProjectAccess } from "~/auth/require.server";
-import { packPoints } from "~/charts/sent-points";
+import { type BesidePoints, packPoints } from "~/charts/sent-points";
 import * as dips from "~/db/dips.server";
 import * as people from "~/db/people.server";
 import * as projects from "~/db/projects.server";
@@ -13,7 +13,8 @@ import { flatPlot } from "~/readers/screenshot/rectify";
 import { listThread } from "~/services/notes.server";
 import { decodePoints, pickPoints } from "~/services/points.server";
 import { storedDips, triedDips } from "~/services/shown-dips.server";
-import { loadPoints } from "~/services/sweep-points.server";
+import { limitsOf, type SweepAt, sweepAt, uncorrected } from "~/services/shown-sweep.server";
+import { loadCorrection } from "./correction-page.server";
 import type { SweepView } from "./sweeps.schema";
 
 /** All that the sweep page shows besides the sweep's own row: one round of queries, all at once. */
@@ -24,7 +25,7 @@ export async function loadSweepPage(
   settings: AnalysisSettings,
 ) {
   const { project, person } = access;
-  const { sweep, reading } = found;
+  const { sweep } = found;
   const [known, designBands, dismissed, thread, sweepThread] = await Promise.all([
     dips.findAllBySweep(sweep.id),
     projects.findDesignBands(project.id),
@@ -32,21 +33,28 @@ export async function loadSweepPage(
     view.dip ? threadOf(view.dip, access, sweep.id) : null,
     listThread({ projectId: project.id, sweepId: sweep.id, dipId: null }, access),
   ]);
-  const tried = triedSettings(view, settings);
+  const stored = found.analysis?.correction ?? null;
+  const plane = view.plane === (stored?.plane ?? "instrument") ? null : view.plane;
+  const tried = triedSettings(view, settings) ?? (plane ? settings : null);
   const zoomed = view.fromHz !== null || view.toHz !== null;
-  const full = (tried || zoomed) && reading ? await loadPoints(reading.id) : null;
-  const analysis = tried && full ? analyse(full, tried) : null;
+  const at = tried || zoomed || stored ? await sweepAt(found, plane) : null;
+  const [analysis, correction] = [
+    tried && at ? analyse(at.sweep, tried) : null,
+    await loadCorrection(access, found, plane, at),
+  ];
   const range = rangeOf(view, found);
-  const shown = full ? zoomPoints(full, range) : previewOf(found);
+  const shown = at ? drawnOf(at, range) : { sweep: previewOf(found), beside: NOTHING_BESIDE };
+  const measured = at ? zoomPoints(at.measured, range) : shown.sweep;
   return {
+    correction: { ...correction, grey: shown.beside.measured !== undefined },
     dips: analysis ? triedDips(analysis.dips, known, designBands) : storedDips(known, designBands),
     lostDips: known.filter((listed) => !listed.dip.present).map(lostDip),
-    warnings: analysis?.warnings ?? found.analysis?.warnings ?? [],
+    warnings: analysis ? [...(at?.warnings ?? []), ...analysis.warnings] : (found.analysis?.warnings ?? []),
     noiseDb: analysis?.noiseDb ?? found.analysis?.noiseDb ?? null,
     tried: tried !== null,
     range,
-    points: packPoints(shown),
-    picture: besideOf(found, shown, range),
+    points: packPoints(shown.sweep, shown.beside),
+    picture: besideOf(found, measured, range),
     designBands: designBands.map(({ name, lowHz, highHz }) => ({ name, lowHz, highHz })),
     bands: bandsOverlapping((project.ituRegion as ItuRegion | null) ?? null, range.fromHz, range.toHz),
     dismissed,
@@ -89,6 +97,32 @@ function previewOf({ sweep }: FoundSweep): Sweep | null {
   return sweep.preview ? decodePoints([sweep.preview]) : null;
 }
 
+/** The stretch in view with its limits and, in grey, what lies outside the correction. */
+function drawnOf(
+  at: SweepAt,
+  range: { fromHz: number; toHz: number },
+): { sweep: Sweep; beside: BesidePoints } {
+  const { sweep, measured } = at;
+  const outside = uncorrected(at);
+  const limits = limitsOf(sweep);
+  // Chosen by what is drawn at each point, so that the grey line keeps its dips too.
+  const drawn = outside
+    ? {
+        ...sweep,
+        magnitude: sweep.magnitude.map((value, i) => (Number.isNaN(value) ? measured.magnitude[i] : value)),
+      }
+    : sweep;
+  const kept = decimate(drawn, CHART_POINTS, range);
+  const pick = (values: Float64Array) => Float64Array.from(kept, (i) => values[i]);
+  return {
+    sweep: pickPoints(sweep, kept),
+    beside: {
+      limits: limits && { low: pick(limits.low), high: pick(limits.high) },
+      measured: outside && pick(outside),
+    },
+  };
+}
+
 function zoomPoints(full: Sweep, range: { fromHz: number; toHz: number }): Sweep {
   return pickPoints(full, decimate(full, CHART_POINTS, range));
 }
@@ -119,4 +153,5 @@ function lostDip({ dip, noteCount }: dips.ListedDip) {
   return { publicId: dip.publicId, frequencyHz: dip.frequencyHz, noteCount, verdict: dip.verdict };
 }
 
+const NOTHING_BESIDE: BesidePoints = {};
 const CHART_POINTS = 1600;

@@ -1,4 +1,4 @@
-import { data, redirect } from "react-router";
+import { redirect } from "react-router";
 import { requireProject } from "~/auth/require.server";
 import * as sweeps from "~/db/sweeps.server";
 import { refused } from "~/errors";
@@ -12,8 +12,10 @@ import {
   type TitleAndDate,
 } from "~/services/sweep-edits.server";
 import type { Route } from "./+types/sweep";
+import { changeCorrection } from "./change-correction.server";
 import { Advice } from "./components/Advice";
 import { OutsideBandsCaution } from "./components/cautions";
+import { CorrectionBar } from "./components/correction/CorrectionBar";
 import { DipsTable } from "./components/DipsTable";
 import { Downloads } from "./components/Downloads";
 import { LostDips } from "./components/LostDips";
@@ -23,9 +25,10 @@ import { SweepHead } from "./components/SweepHead";
 import { DipThread, SweepNotes } from "./components/SweepThreads";
 import { SweepView } from "./components/SweepView";
 import { ViewBar } from "./components/ViewBar";
+import { formErrors } from "./form-errors";
 import { requireSweep } from "./require-sweep.server";
 import { loadSweepPage } from "./sweep-page.server";
-import { editSweepSchema, parseView, settingsSchema } from "./sweeps.schema";
+import { editSweepSchema, parsePlane, parseView, settingsSchema } from "./sweeps.schema";
 
 export const meta: Route.MetaFunction = ({ data }) => [{ title: `${data?.sweep.title ?? "Sweep"} · Swale` }];
 
@@ -63,6 +66,7 @@ export async function loader(args: Route.LoaderArgs) {
       quantity: reading?.reading?.quantity ?? null,
       assumed: reading?.reading?.assumed ?? [],
       questions: reading?.reading?.questions.length ?? 0,
+      repeatGroup: sweep.repeatGroup,
     },
     analysis: { settings: analysis.settings, version: analysis.version, number: analysis.number },
     view,
@@ -83,24 +87,29 @@ export async function action(args: Route.ActionArgs) {
         title: form.get("title") ?? undefined,
         takenAt: form.get("takenAt") || undefined,
       });
-      if (!parsed.success) return data({ errors: parsed.error.issues.map((issue) => issue.message) }, 400);
+      if (!parsed.success) return formErrors(parsed.error.issues.map((issue) => issue.message));
       const { title, takenAt = null } = parsed.data;
       const theirs = await keepTitleAndDate(found.sweep.id, parseWas(form.get("was")), { title, takenAt });
-      if (theirs) return data({ errors: [changedMeanwhile(theirs)] }, 409);
+      if (theirs) return formErrors([changedMeanwhile(theirs)], 409);
       return redirectWithMessage(here, "Title and date kept.");
     }
     case "settings": {
       const parsed = settingsSchema.safeParse(Object.fromEntries(form));
-      if (!parsed.success) return data({ errors: parsed.error.issues.map((issue) => issue.message) }, 400);
-      await keepSettings(found, { ...DEFAULT_SETTINGS, ...parsed.data }, access.person.id);
+      if (!parsed.success) return formErrors(parsed.error.issues.map((issue) => issue.message));
+      const plane = parsePlane(form.get("plane")) ?? undefined;
+      await keepSettings(found, { ...DEFAULT_SETTINGS, ...parsed.data }, access.person.id, plane);
       const search = new URL(args.request.url).searchParams;
-      search.delete("limit");
-      search.delete("prominence");
+      for (const name of ["limit", "prominence", "plane"]) search.delete(name);
       return redirectWithMessage(
         `${here}?${search}`,
         "Analysed anew; these settings are kept with the sweep.",
       );
     }
+    case "bench":
+    case "feedline":
+    case "no-feedline":
+    case "anew":
+      return changeCorrection(intent, form, found, access.project.id, access.person.id, here);
     case "delete": {
       await deleteSweep(found);
       return redirectWithMessage(
@@ -109,10 +118,7 @@ export async function action(args: Route.ActionArgs) {
       );
     }
     default:
-      return data(
-        { errors: ["The form asked for something this page does not do. Nothing was changed."] },
-        400,
-      );
+      return formErrors(["The form asked for something this page does not do. Nothing was changed."]);
   }
 }
 
@@ -132,6 +138,7 @@ export default function SweepPage({ loaderData, actionData }: Route.ComponentPro
       <div className={thread ? "workspace workspace-open" : "workspace"}>
         <div className="grid gap-4 min-w-0 content-start">
           <ViewBar view={view} />
+          <CorrectionBar data={loaderData} errors={actionData?.fields} />
           <SweepView data={loaderData} />
           <PictureBeside data={loaderData} />
           <Advice data={loaderData} />
@@ -141,7 +148,12 @@ export default function SweepPage({ loaderData, actionData }: Route.ComponentPro
           <section aria-labelledby="dips" className="grid gap-3">
             <div className="flex flex-wrap items-end justify-between gap-x-6 gap-y-3">
               <h2 id="dips">Dips as numbers</h2>
-              <SettingsForm view={view} stored={analysis.settings} mayKeep={loaderData.may.edit} />
+              <SettingsForm
+                view={view}
+                stored={analysis.settings}
+                storedPlane={loaderData.correction.storedPlane}
+                mayKeep={loaderData.may.edit}
+              />
             </div>
             <DipsTable dips={dips} view={view} swrLimit={swrLimit} />
             <LostDips data={loaderData} />

@@ -5,6 +5,8 @@ import type { SweepPageData } from "../sweep";
 export function Downloads({ data }: { data: SweepPageData }) {
   const { project, sweep, analysis } = data;
   const base = `/projects/${project.publicId}/sweeps/${sweep.publicId}`;
+  // What is seen is what is given, also while a plane is only tried.
+  const plane = `?plane=${data.correction.plane}`;
   return (
     <section aria-labelledby="downloads" className="grid gap-2 text-small">
       <h2 id="downloads" className="text-base">
@@ -17,11 +19,11 @@ export function Downloads({ data }: { data: SweepPageData }) {
           </a>
         </li>
         <li>
-          <a href={`${base}/sweep.csv`}>Points as CSV</a>
+          <a href={`${base}/sweep.csv${plane}`}>Points as CSV</a>
         </li>
         {sweep.complex && (
           <li>
-            <a href={`${base}/sweep.s1p`}>Touchstone</a>
+            <a href={`${base}/sweep.s1p${plane}`}>Touchstone</a>
           </li>
         )}
       </ul>
@@ -35,8 +37,7 @@ export function Downloads({ data }: { data: SweepPageData }) {
       <p className="soft break-words">
         SHA-256 of the original <span className="font-mono break-all">{sweep.sha256}</span>; analysis{" "}
         {analysis.number} by method {analysis.version}
-        {data.noiseDb !== null && `, noise ${formatNoise(data.noiseDb)}`}. Limits of SWR leave out the bench:
-        no open, short and load sweeps are known, so what its directivity adds is unknown.
+        {data.noiseDb !== null && `, noise ${formatNoise(data.noiseDb)}`}. {data.correction.words}
       </p>
     </section>
   );

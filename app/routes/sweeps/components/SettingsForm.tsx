@@ -2,24 +2,29 @@ import { useRef } from "react";
 import { Form, Link, useNavigation, useSubmit } from "react-router";
 import { Button } from "~/components/ui/Button";
 import { InputField } from "~/components/ui/Field";
-import type { AnalysisSettings } from "~/measurement/sweep";
+import type { AnalysisSettings, Plane } from "~/measurement/sweep";
+import { PLANE_WORDS } from "../correction-words";
 import { type SweepView, searchWith } from "../sweeps.schema";
 
 interface SettingsFormProps {
   view: SweepView;
   /** Kept with the sweep. */
   stored: AnalysisSettings;
+  /** Where the stored dips were found. */
+  storedPlane: Plane;
   mayKeep: boolean;
 }
 
 /** What counts as a dip and what as its bandwidth. The effect is shown at once, in the address; keeping is asked for. */
-export function SettingsForm({ view, stored, mayKeep }: SettingsFormProps) {
+export function SettingsForm({ view, stored, storedPlane, mayKeep }: SettingsFormProps) {
   const submit = useSubmit();
   const navigation = useNavigation();
   const form = useRef<HTMLFormElement>(null);
   const swrLimit = view.swrLimit ?? stored.swrLimit;
   const minimumProminenceDb = view.minimumProminenceDb ?? stored.minimumProminenceDb;
-  const tried = swrLimit !== stored.swrLimit || minimumProminenceDb !== stored.minimumProminenceDb;
+  const plane = view.plane ?? storedPlane;
+  const moved = plane !== storedPlane;
+  const tried = moved || swrLimit !== stored.swrLimit || minimumProminenceDb !== stored.minimumProminenceDb;
   const onChange = () => {
     if (form.current?.checkValidity()) submit(form.current, { replace: true, preventScrollReset: true });
   };
@@ -68,11 +73,18 @@ export function SettingsForm({ view, stored, mayKeep }: SettingsFormProps) {
               <input type="hidden" name="intent" value="settings" />
               <input type="hidden" name="swrLimit" value={swrLimit} />
               <input type="hidden" name="minimumProminenceDb" value={minimumProminenceDb} />
-              <Button busy={navigation.formMethod === "POST"}>Keep these settings</Button>
+              <input type="hidden" name="plane" value={plane} />
+              <Button busy={navigation.formMethod === "POST"}>
+                {moved ? `Keep “${PLANE_WORDS[plane]}” and these settings` : "Keep these settings"}
+              </Button>
             </Form>
           )}
-          <Link to={searchWith(view, { swrLimit: null, minimumProminenceDb: null })} preventScrollReset>
-            Back to {stored.swrLimit}:1 and {stored.minimumProminenceDb} dB
+          <Link
+            to={searchWith(view, { swrLimit: null, minimumProminenceDb: null, plane: null }) || "?"}
+            preventScrollReset
+          >
+            Back to {moved && `“${PLANE_WORDS[storedPlane]}”, `}
+            {stored.swrLimit}:1 and {stored.minimumProminenceDb} dB
           </Link>
           {!mayKeep && (
             <span className="text-small soft">Only in this address; not kept with the sweep.</span>

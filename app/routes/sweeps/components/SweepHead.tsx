@@ -33,7 +33,7 @@ export function SweepHead({ data, errors }: { data: SweepPageData; errors: strin
           ` · ${formatFrequency(sweep.startHz, null)} – ${formatFrequency(sweep.stopHz, null)}`}
         {` · ${kindOf(sweep.format)}`}
         {sweep.referenceOhm !== null && ` · ${sweep.referenceOhm} Ω`}
-        {" · as measured, no bench"}
+        {` · ${data.correction.short}`}
       </p>
       <p className="text-small">
         <Link to={`${base}/sweeps/${sweep.publicId}/reading`}>
