@@ -17,7 +17,7 @@ export function referenceFaults(sweep: Sweep, references: BenchReferences, readA
   return [
     ...rangeFaults(sweep, [open, short, ...(threeTerm(sweep, references) ? [load] : [])]),
     ...loadFaults(sweep, references),
-    ...pairFaults(sweep, references),
+    ...(threeTerm(sweep, references) ? [] : pairFaults(sweep, references)),
     ...scaleFaults(readAs),
     ...used
       .filter((one) => one.referenceOhm !== sweep.referenceOhm)

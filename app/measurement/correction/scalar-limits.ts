@@ -11,10 +11,11 @@ import type { ZeroLine } from "./zero-line.ts";
  * - Directivity: what the load leaves, plus what the load itself is known to return. With a load that is not described
  *   its own error is inside what it leaves; a notch where the two cancel proves nothing, so the largest value within
  *   LOAD_REACH counts. Without a load the given directivity.
- * - Match: as given; else from the ripple between open and short, whose half is at most abs M + abs D: its largest
- *   value within RIPPLE_REACH plus the directivity. That sees errors in phase with the reflection somewhere in the
- *   reach; one in quadrature all over is not seen, and for a hard limit the test port's match must be given. With only
- *   one reference, or a number, POOR_PORT is taken, and the caller says so.
+ * - Match: as given; else from the ripple between open and short, whose half is the part of M + D that is in phase
+ *   with the reflection, so its largest value up to RIPPLE_REACH times the frequency, plus the directivity (bridges
+ *   grow worse upwards; the phase between them and their port turns). An error in quadrature all over is not seen, and
+ *   for a hard limit the test port's match must be given. With only one reference, or a number, POOR_PORT is taken, and
+ *   the caller says so.
  * - Tracking: after the mean of both references only second-order terms are left, M² + (M + D)²/2; with one reference,
  *   or a number, the first-order ones are too, M + D and its square. What is given is a floor, as for a drift that no
  *   reference shows.
@@ -50,7 +51,7 @@ export function portMatch(
 ): Float64Array {
   if (testPortMatchDb !== null)
     return new Float64Array(atHz.length).fill(returnLossDbToGamma(testPortMatchDb));
-  return envelope(atHz, line.ripple, RIPPLE_REACH).map((value, i) => value + directivity[i]);
+  return envelope(atHz, line.ripple, Infinity, RIPPLE_REACH).map((value, i) => value + directivity[i]);
 }
 
 /** Highest abs Γ that the load may have, in place of none; null where that is not known. */
@@ -71,13 +72,13 @@ function directivityOf(
   if (!load) return new Float64Array(atHz.length).fill(stated);
   const own = loadGamma(standards, load.referenceOhm);
   const left = magnitudeAt(load, atHz).map((value, i) => value / line.amplitude[i]);
-  const sure = own === null ? envelope(atHz, left, LOAD_REACH) : left;
+  const sure = own === null ? envelope(atHz, left, LOAD_REACH, LOAD_REACH) : left;
   return sure.map((value) => (Number.isNaN(value) ? stated : value + (own ?? 0)));
 }
 
 /** Notches of a load against a bridge were seen to be narrower than a tenth of their frequency (common practice, no source). */
 const LOAD_REACH = 1.1;
-/** Half a turn of the phase between a bridge and its port, at most a metre of cable, within an octave above 50 MHz. */
+/** A quarter turn between a bridge and its port, half a metre of cable away, within this factor from 75 MHz on. */
 const RIPPLE_REACH = 1.5;
 /** 14 dB, an SWR of 1.5: the poorest test port that is still called one (common practice, no source). */
 const POOR_PORT = 0.2;
