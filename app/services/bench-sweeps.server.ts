@@ -80,6 +80,12 @@ export async function usableBenches(projectId: number): Promise<benches.ListedBe
   return [...own.filter(({ bench }) => bench.retiredAt === null), ...borrowed];
 }
 
+/** Row id of a bench that a sweep of the project can be said to be taken with; undefined where there is none such. */
+export async function usableBenchId(publicId: string, projectId: number): Promise<number | undefined> {
+  const found = await benches.findByPublicId(publicId);
+  return found && (await benches.isUsableIn(found.bench, projectId)) ? found.bench.id : undefined;
+}
+
 function dayOf(at: Date): string {
   return at.toISOString().slice(0, 10);
 }

@@ -83,7 +83,12 @@ export function toStore(correction: Correction | null, { bench, feedline }: Mean
 
 /** What has changed in the bench since an analysis, in words; null where analysing anew would give the same. */
 export function changedSince(stored: StoredCorrection | null, now: Means): string | null {
-  if (!stored?.bench || !now.bench) return null;
+  if (!stored?.bench) return null;
+  if (!now.bench)
+    return (
+      now.problem &&
+      `${now.problem} The numbers are of version ${stored.bench.number} of that bench, as they were found.`
+    );
   const { version, bench } = now.bench;
   if (version.publicId !== stored.bench.version)
     return `For the day of this sweep the bench “${bench.name}” now has version ${version.number}; the numbers are of version ${stored.bench.number}.`;

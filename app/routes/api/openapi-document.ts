@@ -44,6 +44,7 @@ const COMPONENTS = {
   SweepList: shapes.sweepListShape,
   Sweep: shapes.sweepShape,
   Dip: shapes.dipShape,
+  Correction: shapes.correctionShape,
   Bandwidth: shapes.bandwidthShape,
   Points: shapes.pointsShape,
   Note: shapes.noteShape,

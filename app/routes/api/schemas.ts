@@ -1,4 +1,5 @@
 import { z } from "zod";
+import { LIMIT_SOURCES } from "~/measurement/sweep";
 
 /** The shapes of the API: what answers hold, and where the OpenAPI document comes from. */
 
@@ -51,6 +52,8 @@ export const bandwidthShape = z.object({
   open: z.boolean(),
   shared: z.boolean().describe("Another dip lies in the same stretch"),
   fractional: z.number().nullish(),
+  widthLowHz: z.number().nullish().describe("Worst case with the bench's errors; null where unknown"),
+  widthHighHz: z.number().nullish(),
 });
 
 export const dipShape = z.object({
@@ -63,11 +66,27 @@ export const dipShape = z.object({
   minimumSwrNoiseLow: z.number().nullish().describe("95 % interval from noise and fit alone"),
   minimumSwrNoiseHigh: z.number().nullish(),
   returnLossDb: z.number(),
+  returnLossLowDb: z.number().nullable().describe("The same limits as of the SWR, dB; null where unknown"),
+  returnLossHighDb: z.number().nullable(),
+  benchFrequencyHalfHz: z
+    .number()
+    .nullable()
+    .describe("Hz; how far the bench's errors may have moved the lowest point; null where unknown"),
   prominenceDb: z.number(),
   bandwidth: bandwidthShape.nullable().describe("Null where the lowest SWR is above the limit"),
   q: z.number().nullable(),
   qLow: z.number().nullish(),
   qHigh: z.number().nullish(),
+  qLimits: z
+    .object({ low: z.number().nullable(), high: z.number().nullable() })
+    .nullable()
+    .describe("`qLow` to `qHigh` widened by the bench's errors; null where unknown"),
+  limits: z
+    .array(z.object({ source: z.enum(LIMIT_SOURCES), share: z.number() }))
+    .describe("What the limits of the lowest SWR come from, the largest first, sum 1"),
+  unknown: z
+    .array(z.object({ source: z.enum(LIMIT_SOURCES), remedy: z.string() }))
+    .describe("What is not known about the limits, and what would make it known"),
   method: z.enum(["fit", "parabola", "sample"]),
   edge: z.boolean(),
   verdict,
@@ -121,6 +140,27 @@ export const sweepListShape = z.object({
   nextCursor: z.string().nullable(),
 });
 
+export const correctionShape = z.object({
+  kind: z.enum(["none", "scalar", "three-term"]),
+  plane: z.enum(["instrument", "port", "antenna"]).describe("Where the numbers are referred to"),
+  fromHz: hz.nullable().describe("Hz; the correction holds from here; null where nothing was corrected"),
+  toHz: hz.nullable(),
+  bench: z
+    .object({ id, name: z.string(), version: z.number().int() })
+    .nullable()
+    .describe("The bench as it was that day"),
+  feedline: z
+    .object({
+      name: z.string(),
+      k1: z.number().describe("Matched loss in dB a metre is k1·√f + k2·f, f in MHz"),
+      k2: z.number(),
+      lengthM: z.number(),
+      velocityFactor: z.number(),
+    })
+    .nullable()
+    .describe("The line that was taken away"),
+});
+
 export const sweepShape = sweepHead.extend({
   reading: z
     .object({
@@ -130,6 +170,7 @@ export const sweepShape = sweepHead.extend({
       confidence: z.number().min(0).max(1),
     })
     .nullable(),
+  correction: correctionShape.describe("What was done before the dips were found"),
   dips: z.array(dipShape),
   warnings: z.array(z.object({ code: z.string(), message: z.string() })),
   analysis: z
@@ -153,6 +194,7 @@ const column = z.array(z.number().nullable());
 
 export const pointsShape = z.object({
   total: z.number().int().describe("Points of the whole sweep"),
+  correction: correctionShape,
   points: z.object({
     frequencyHz: z.array(z.number()),
     magnitude: column.describe("Magnitude of the reflection coefficient; null is a gap"),
@@ -188,6 +230,10 @@ export const newNoteSchema = z.strictObject({
 });
 
 export const pointsQuerySchema = z.object({
+  plane: z
+    .enum(["instrument", "port", "antenna"])
+    .optional()
+    .describe("Where the points are referred to; without it, where the dips were found"),
   fromHz: z.coerce.number().min(0).optional(),
   toHz: z.coerce.number().min(0).optional(),
   max: z.coerce

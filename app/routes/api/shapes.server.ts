@@ -3,6 +3,7 @@ import type { ProjectRole } from "~/auth/permissions";
 import type * as dips from "~/db/dips.server";
 import type * as notes from "~/db/notes.server";
 import type * as projects from "~/db/projects.server";
+import type { StoredCorrection } from "~/db/schema";
 import type * as sweeps from "~/db/sweeps.server";
 import type { Dip } from "~/measurement/sweep";
 import type * as shapes from "./schemas.ts";
@@ -113,6 +114,7 @@ export function shapeSweep(
       assumed: read.assumed,
       confidence: read.confidence,
     },
+    correction: shapeCorrection(sweep.problem ? null : (analysis?.correction ?? null)),
     dips: present.map((row) => shapeDip(row, project)),
     warnings: analysis && !sweep.problem ? analysis.warnings : [],
     analysis:
@@ -134,6 +136,26 @@ export function shapeSweep(
   };
 }
 
+export function shapeCorrection(stored: StoredCorrection | null): z.output<typeof shapes.correctionShape> {
+  if (!stored)
+    return { kind: "none", plane: "instrument", fromHz: null, toHz: null, bench: null, feedline: null };
+  const { kind, plane, fromHz, toHz, bench, feedline } = stored;
+  return {
+    kind,
+    plane,
+    fromHz,
+    toHz,
+    bench: bench && { id: bench.bench, name: bench.name, version: bench.number },
+    feedline: feedline && {
+      name: feedline.name,
+      k1: feedline.k1,
+      k2: feedline.k2,
+      lengthM: feedline.lengthM,
+      velocityFactor: feedline.velocityFactor,
+    },
+  };
+}
+
 function shapeDip({ dip, noteCount }: dips.ListedDip, project: string): z.output<typeof shapes.dipShape> {
   const numbers: Dip = dip.numbers;
   return {
@@ -146,11 +168,17 @@ function shapeDip({ dip, noteCount }: dips.ListedDip, project: string): z.output
     minimumSwrNoiseLow: numbers.minimumSwrNoiseLow,
     minimumSwrNoiseHigh: numbers.minimumSwrNoiseHigh,
     returnLossDb: numbers.returnLossDb,
+    returnLossLowDb: numbers.returnLossLowDb,
+    returnLossHighDb: numbers.returnLossHighDb,
+    benchFrequencyHalfHz: numbers.benchFrequencyHalfHz,
     prominenceDb: numbers.prominenceDb,
     bandwidth: numbers.bandwidth,
     q: numbers.q,
     qLow: numbers.qLow,
     qHigh: numbers.qHigh,
+    qLimits: numbers.qLimits,
+    limits: numbers.shares,
+    unknown: numbers.unknown,
     method: numbers.method,
     edge: numbers.edge,
     verdict: dip.verdict,

@@ -1,6 +1,7 @@
 import * as dips from "~/db/dips.server";
 import * as sweeps from "~/db/sweeps.server";
 import type { ReadProblem } from "~/readers/reading";
+import { usableBenchId } from "~/services/bench-sweeps.server";
 import { takeIn } from "~/services/intake.server";
 import { requireApiProject } from "./access.server.ts";
 import { type Call, endpoint } from "./endpoint.server.ts";
@@ -40,7 +41,11 @@ async function takeOne(call: Call): Promise<Response> {
   }
   const parsed = uploadFieldsSchema.safeParse(fields);
   if (!parsed.success) throw invalid(parsed.error);
-  const { title, takenAt, reading } = parsed.data;
+  const { title, takenAt, reading, bench } = parsed.data;
+  const benchId = bench ? await usableBenchId(bench, project.id) : null;
+  if (benchId === undefined) {
+    throw invalid([{ field: "bench", message: "There is no such bench that can be used in this project." }]);
+  }
   const taken = await takeIn({
     project,
     by: call.user,
@@ -48,6 +53,7 @@ async function takeOne(call: Call): Promise<Response> {
     title,
     takenAt: takenAt ? new Date(takenAt) : null,
     given: reading,
+    benchId,
     keepUnread: false,
   });
   switch (taken.kind) {

@@ -66,7 +66,11 @@ export const uploadFieldsSchema = z.strictObject({
     })
     .optional()
     .describe("When it was swept"),
-  bench: z.string().max(0, "This project has no bench of that name yet. Leave it out.").optional(),
+  bench: z
+    .string()
+    .max(16, "The public id of a bench.")
+    .optional()
+    .describe("Public id of the bench it was taken with: its dips are then found at that bench's port"),
   step: z.string().max(0, "This project has no step of that name yet. Leave it out.").optional(),
   reading: z
     .string()

@@ -1,7 +1,7 @@
 import { z } from "zod";
-import * as benches from "~/db/benches.server";
 import * as cables from "~/db/cables.server";
 import type { FoundSweep } from "~/db/sweeps.server";
+import { usableBenchId } from "~/services/bench-sweeps.server";
 import { redirectWithMessage } from "~/services/flash.server";
 import { analyseAnew, chooseBench, chooseFeedline } from "~/services/sweep-edits.server";
 import { feedlineFrom, feedlineSchema } from "./feedline.schema";
@@ -19,17 +19,16 @@ export async function changeCorrection(
   switch (intent) {
     case "bench": {
       const publicId = String(form.get("bench") ?? "");
-      const chosen = publicId ? await benches.findByPublicId(publicId) : null;
-      const kept = chosen?.bench.id === found.sweep.benchId;
-      if (chosen === undefined || (chosen && !kept && !(await benches.isUsableIn(chosen.bench, projectId)))) {
+      const benchId = publicId ? await usableBenchId(publicId, projectId) : null;
+      if (benchId === undefined) {
         return formErrors(["There is no such bench that can be used here. Nothing was changed."]);
       }
-      await chooseBench(found, chosen?.bench.id ?? null, by);
+      await chooseBench(found, benchId, by);
       return redirectWithMessage(
         here,
-        chosen
-          ? `Analysed anew with the bench “${chosen.bench.name}”.`
-          : "The sweep is as it was measured again, without a bench.",
+        benchId === null
+          ? "The sweep is as it was measured again, without a bench."
+          : "The sweep was analysed anew with that bench.",
       );
     }
     case "feedline": {

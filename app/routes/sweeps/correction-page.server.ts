@@ -8,6 +8,7 @@ import { antennaAt } from "~/services/antennas.server";
 import { usableBenches } from "~/services/bench-sweeps.server";
 import type { SweepAt } from "~/services/shown-sweep.server";
 import { changedSince, type Means, meansOf } from "~/services/sweep-corrections.server";
+import { benchOptions } from "./bench-options";
 import { correctionWords, PLANE_WORDS, planeWords } from "./correction-words";
 import { type FeedlineFields, OWN } from "./feedline.schema";
 import { PLANES } from "./sweeps.schema";
@@ -29,6 +30,7 @@ export async function loadCorrection(
     edit ? usableBenches(access.project.id) : [],
     edit ? cables.findAllByProject(access.project.id) : [],
   ]);
+  const changed = changedSince(stored, now);
   const shown = tried ? (at?.correction ?? null) : stored;
   return {
     /** The switch that is down: what was asked for, else what is kept. */
@@ -36,8 +38,8 @@ export async function loadCorrection(
     storedPlane,
     words: correctionWords(shown),
     short: planeWords(shown),
-    problem: at?.means.problem ?? now.problem,
-    changed: changedSince(stored, now),
+    problem: changed ? null : (at?.means.problem ?? now.problem),
+    changed,
     grey: false,
     planes: PLANES.map((plane) => ({
       plane,
@@ -50,13 +52,7 @@ export async function loadCorrection(
     proposal: antenna?.kind === "described" ? proposalOf(antenna.version.content.feedline, own) : null,
     choices: edit
       ? {
-          benches: benches.map(({ bench, owner, home }) => ({
-            value: bench.publicId,
-            label:
-              home.publicId === access.project.publicId
-                ? bench.name
-                : `${bench.name} (${owner ?? "a member"}'s own)`,
-          })),
+          benches: benchOptions(benches, access.project.publicId),
           cables: CABLES.map(({ name, velocityFactor }) => ({ name, velocityFactor })),
           own: own.map(({ publicId, name, velocityFactor }) => ({ publicId, name, velocityFactor })),
         }

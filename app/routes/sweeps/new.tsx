@@ -1,9 +1,14 @@
+import { type ReactNode, useState } from "react";
 import { data, Form, useNavigation } from "react-router";
 import { requireProject } from "~/auth/require.server";
 import { Button } from "~/components/ui/Button";
+import { SelectField } from "~/components/ui/Field";
 import { useHydrated } from "~/components/ui/hydrated";
+import * as benches from "~/db/benches.server";
 import * as people from "~/db/people.server";
+import { usableBenches } from "~/services/bench-sweeps.server";
 import type { Route } from "./+types/new";
+import { benchOptions } from "./bench-options";
 import { FirstSweepCaution } from "./components/cautions";
 import { DropZone } from "./components/DropZone";
 import { UploadResults } from "./components/UploadResults";
@@ -13,8 +18,17 @@ export const meta: Route.MetaFunction = () => [{ title: "Add sweeps · Swale" }]
 
 export async function loader(args: Route.LoaderArgs) {
   const { project, person } = await requireProject(args, "sweep.add");
-  const dismissed = person ? await people.findDismissals(person.id) : [];
-  return { project: { publicId: project.publicId }, dismissed };
+  const [dismissed, usable, last] = await Promise.all([
+    person ? people.findDismissals(person.id) : [],
+    usableBenches(project.id),
+    benches.findLastUsed(project.id),
+  ]);
+  return {
+    project: { publicId: project.publicId },
+    dismissed,
+    benches: benchOptions(usable, project.publicId),
+    lastBench: last?.publicId ?? "",
+  };
 }
 
 /** The plain form: every file at once, answered with the list of what became of each. */
@@ -31,8 +45,19 @@ export async function action(args: Route.ActionArgs) {
 }
 
 export default function NewSweeps({ loaderData, actionData }: Route.ComponentProps) {
-  const { project, dismissed } = loaderData;
+  const { project, dismissed, benches, lastBench } = loaderData;
   const hydrated = useHydrated();
+  const [bench, setBench] = useState(lastBench);
+  const choice = (
+    <SelectField
+      label="Taken with the bench"
+      name="bench"
+      hint="Their dips are then found at its port. It can be said or changed later, too."
+      defaultValue={lastBench}
+      onChange={(event) => setBench(event.target.value)}
+      options={[{ value: "", label: "Not said: as measured" }, ...benches]}
+    />
+  );
   return (
     <section className="grid gap-6" aria-labelledby="add-sweeps">
       <div>
@@ -45,7 +70,17 @@ export default function NewSweeps({ loaderData, actionData }: Route.ComponentPro
         </p>
       </div>
       <FirstSweepCaution dismissed={dismissed} />
-      {hydrated ? <DropZone action={`/projects/${project.publicId}/sweeps/upload`} /> : <PlainForm />}
+      {hydrated ? (
+        <>
+          {benches.length > 0 && <div className="max-w-[28rem]">{choice}</div>}
+          <DropZone
+            action={`/projects/${project.publicId}/sweeps/upload`}
+            fields={bench ? { bench } : NO_FIELDS}
+          />
+        </>
+      ) : (
+        <PlainForm>{benches.length > 0 && choice}</PlainForm>
+      )}
       {actionData?.error && (
         <p role="alert" className="text-alarm">
           {actionData.error}
@@ -56,7 +91,7 @@ export default function NewSweeps({ loaderData, actionData }: Route.ComponentPro
   );
 }
 
-function PlainForm() {
+function PlainForm({ children }: { children: ReactNode }) {
   const navigation = useNavigation();
   return (
     <Form method="post" encType="multipart/form-data" className="panel grid gap-4 justify-items-start">
@@ -64,9 +99,12 @@ function PlainForm() {
         <span className="font-semibold">Sweep files</span>
         <input type="file" name="files" multiple />
       </label>
+      {children}
       <Button icon="upload" busy={navigation.state !== "idle"}>
         Send
       </Button>
     </Form>
   );
 }
+
+const NO_FIELDS = {};

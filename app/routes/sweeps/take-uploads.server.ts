@@ -1,5 +1,6 @@
 import type { ProjectAccess } from "~/auth/require.server";
 import { brokenForm, refused } from "~/errors";
+import { usableBenchId } from "~/services/bench-sweeps.server";
 import { type Taken, takeIn } from "~/services/intake.server";
 import { log } from "~/services/log.server";
 import type { PictureStage } from "~/services/seen-picture";
@@ -35,6 +36,10 @@ export async function takeUploads(
   const files = form
     .getAll("files")
     .filter((entry): entry is File => entry instanceof File && entry.name !== "");
+  const bench = String(form.get("bench") ?? "");
+  const benchId = bench ? await usableBenchId(bench, project.id) : null;
+  if (benchId === undefined)
+    throw refused("There is no such bench that can be used here. Nothing was stored.");
   const results: UploadResult[] = [];
   for (const file of files.slice(0, MOST_FILES)) {
     try {
@@ -44,6 +49,7 @@ export async function takeUploads(
         by: person,
         file: { name: file.name, bytes },
         keepUnread: true,
+        benchId,
         progress,
       });
       results.push(describe(file.name, project.publicId, taken));

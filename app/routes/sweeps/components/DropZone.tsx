@@ -7,8 +7,8 @@ import { ResultLine } from "./UploadResults";
 import { type Upload, useUploads } from "./use-uploads";
 
 /** Many files at once, each with its own progress and result. */
-export function DropZone({ action }: { action: string }) {
-  const { uploads, add, retry, cancel } = useUploads(action);
+export function DropZone({ action, fields }: { action: string; fields: Record<string, string> }) {
+  const { uploads, add, retry, cancel } = useUploads(action, fields);
   const { getRootProps, getInputProps, isDragActive, open } = useDropzone({
     onDrop: (files) => add(files),
     noClick: true,

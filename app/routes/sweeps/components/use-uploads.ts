@@ -23,8 +23,8 @@ type Change =
   | { type: "remove"; id: number }
   | { type: "set"; id: number; upload: Partial<Base> & (Pick<Upload, "state"> & object) };
 
-/** Sends files one request each, two at a time, and says how far each one is. */
-export function useUploads(action: string) {
+/** Sends files one request each with the same fields, two at a time, and says how far each one is. */
+export function useUploads(action: string, fields: Record<string, string>) {
   const [uploads, change] = useReducer(reduce, []);
   const nextId = useRef(1);
   const running = useRef(new Map<number, XMLHttpRequest>());
@@ -55,10 +55,11 @@ export function useUploads(action: string) {
       request.onloadend = () => running.current.delete(upload.id);
       const form = new FormData();
       form.set("files", upload.file);
+      for (const [name, value] of Object.entries(fields)) form.set(name, value);
       set({ state: "sending", sent: 0 });
       request.send(form);
     },
-    [action],
+    [action, fields],
   );
 
   useEffect(() => {
