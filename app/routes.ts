@@ -3,6 +3,7 @@ import { index, layout, prefix, type RouteConfig, route } from "@react-router/de
 /** The site map. Paths are fixed: addresses that were given out must keep working. */
 export default [
   index("routes/home/home.tsx"),
+  route("methods", "routes/methods/methods.tsx"),
 
   route("sign-in", "routes/account/sign-in.tsx"),
   route("auth/github", "routes/account/github.ts"),
@@ -33,6 +34,10 @@ export default [
       route("benches/:bench/compare", "routes/benches/compare.tsx"),
       route("antenna", "routes/antenna/antenna.tsx"),
       route("antenna/edit", "routes/antenna/edit.tsx"),
+      route("steps", "routes/steps/list.tsx"),
+      route("steps/new", "routes/steps/new.tsx"),
+      route("steps/:step", "routes/steps/step.tsx"),
+      route("steps/:step/edit", "routes/steps/edit.tsx"),
     ]),
   ]),
   ...prefix("projects/:project", [

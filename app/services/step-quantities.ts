@@ -1,5 +1,5 @@
 import type { Antenna, AntennaField, StepQuantity } from "../measurement/antenna.ts";
-import { entryAt } from "./antenna-changes.ts";
+import { entryAt, pathOf } from "./antenna-changes.ts";
 
 export interface QuantityProblem {
   /** Which quantity, from 0. */
@@ -18,41 +18,47 @@ export const FIELD_UNITS: Record<AntennaField, string> = {
 
 /**
  * Quantities that point at the antenna, with what it said that day as where they began. What the antenna does not say
- * is taken from the person; what it says otherwise is a problem, and so is a part that was not there.
+ * is taken from the person; what it says otherwise is a problem, and so is a part that was not there. Where a `stored`
+ * quantity began was the antenna's word at that time, and gives way to what it says now.
  */
 export function resolveQuantities(
   quantities: readonly StepQuantity[],
   antenna: Antenna | null,
+  stored: readonly StepQuantity[] = [],
 ): { quantities: StepQuantity[]; problem: QuantityProblem | null } {
   const resolved: StepQuantity[] = [];
   for (const [index, quantity] of quantities.entries()) {
-    const { target } = quantity;
-    if (!target) {
-      resolved.push(quantity);
-      continue;
-    }
-    const entry = antenna ? entryAt(antenna, target) : undefined;
-    if (!antenna || entry === undefined) return failed(index, antenna ? NO_PART : NOT_DESCRIBED);
-    const known = typeof entry === "number" ? entry : null;
-    const { from, to } = quantity;
-    if (known !== null && from !== null && Math.abs(from - known) > SAME * Math.abs(known)) {
-      return failed(
-        index,
-        `The antenna says ${plainly(known)} ${FIELD_UNITS[target.field]} there, not ${plainly(from)}. Leave “from” empty, or set the antenna right first.`,
-      );
-    }
-    if (to === null) return failed(index, "Say what it became.");
-    resolved.push({ ...quantity, unit: FIELD_UNITS[target.field], from: known ?? from });
+    const one = resolve(quantity, antenna, stored);
+    if (typeof one === "string") return { quantities: [], problem: { index, message: one } };
+    resolved.push(one);
   }
   return { quantities: resolved, problem: null };
 }
 
-function failed(index: number, message: string) {
-  return { quantities: [], problem: { index, message } };
+/** The quantity, or what stands in its way. */
+function resolve(
+  quantity: StepQuantity,
+  antenna: Antenna | null,
+  stored: readonly StepQuantity[],
+): StepQuantity | string {
+  const { target, from, to } = quantity;
+  if (!target) return quantity;
+  if (!antenna) return NOT_DESCRIBED;
+  const entry = entryAt(antenna, target);
+  if (entry === undefined) return NO_PART;
+  if (to === null) return "Say what it became.";
+  const known = typeof entry === "number" ? entry : null;
+  const isStored = stored.some(
+    (one) => one.from === from && one.target && pathOf(one.target) === pathOf(target),
+  );
+  if (known !== null && from !== null && !isStored && Math.abs(from - known) > SAME * Math.abs(known)) {
+    return `The antenna says ${plainly(known, target.field)} there, not ${plainly(from, target.field)}. Leave “from” empty, or set the antenna right first.`;
+  }
+  return { ...quantity, unit: FIELD_UNITS[target.field], from: known ?? from };
 }
 
-function plainly(value: number): string {
-  return String(Number(value.toPrecision(5)));
+function plainly(value: number, field: AntennaField): string {
+  return `${Number(value.toPrecision(5))} ${FIELD_UNITS[field]}`.trim();
 }
 
 /** Feet and inches are shown to an eighth of an inch, a fifth of a per cent of a metre and a half. */

@@ -108,7 +108,7 @@ export function changeStep(
       quantities: "quantities" in changes ? wanted.quantities : step.quantities,
     };
     const number = await withdrawFrom(id, actor.projectId, tx);
-    const resolved = await resolveAt(actor.projectId, merged, tx);
+    const resolved = await resolveAt(actor.projectId, merged, tx, step.quantities);
     if (resolved.problem) throw new Refused(resolved.problem);
     const values = { ...merged, quantities: resolved.quantities, ...(expected && { expected }) };
     await steps.update(id, values, tx);
@@ -149,9 +149,18 @@ export function deleteStep(
 
 type Entries = Record<string, string | null>;
 
-async function resolveAt(projectId: number, values: StepValues, tx: Transaction) {
+async function resolveAt(
+  projectId: number,
+  values: StepValues,
+  tx: Transaction,
+  stored: StepQuantity[] = [],
+) {
   const then = await antennaAt(projectId, values.at ?? new Date(), tx);
-  return resolveQuantities(values.quantities, then.kind === "described" ? then.version.content : null);
+  return resolveQuantities(
+    values.quantities,
+    then.kind === "described" ? then.version.content : null,
+    stored,
+  );
 }
 
 /** A done step that points at the antenna makes a version of it. */

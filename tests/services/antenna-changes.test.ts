@@ -125,7 +125,7 @@ describe("quantities of a step", () => {
       { ...cut, target: { part: "z", field: "lengthM" as const } },
       /no such part/,
     ],
-    ["what the antenna says otherwise", { ...cut, from: 10.5 }, /says 10.2 m there, not 10.5/],
+    ["what the antenna says otherwise", { ...cut, from: 10.5 }, /says 10.2 m there, not 10.5 m/],
     ["a change to nothing", { ...cut, to: null }, /became/],
   ])("refuse %s", (_, quantity, message) => {
     const { problem } = resolveQuantities([{ ...cut, target: null }, quantity], REEDS);

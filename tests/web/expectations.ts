@@ -48,6 +48,7 @@ const sweepFile = () => new File([touchstone()], "walk.s1p");
 
 export const EXPECTATIONS: Record<string, Expectation> = {
   "routes/home/home.tsx": { GET: anybody },
+  "routes/methods/methods.tsx": { GET: anybody },
   "routes/home/missing.tsx": { GET: [{ ask: { status: 404 } }], POST: [{ ask: { status: 404 } }] },
 
   "routes/account/sign-in.tsx": { GET: anybody },
@@ -286,6 +287,44 @@ export const EXPECTATIONS: Record<string, Expectation> = {
       },
       { name: "another", ask: { project: "antenna.edit" }, form: () => ({ intent: "another" }) },
       { name: "bands", ask: { project: "antenna.edit" }, form: () => ({ intent: "bands" }) },
+    ],
+  },
+
+  "routes/steps/list.tsx": { GET: read },
+  "routes/steps/new.tsx": {
+    GET: [{ ask: { project: "step.edit" } }],
+    POST: [
+      {
+        name: "keep",
+        ask: { project: "step.edit" },
+        form: () => ({ intent: "keep", title: "Cut the pole", state: "done", at: "2026-01-03T10:00" }),
+      },
+      { name: "another", ask: { project: "step.edit" }, form: () => ({ intent: "another" }) },
+    ],
+  },
+  "routes/steps/edit.tsx": {
+    GET: [{ ask: { project: "step.edit" } }],
+    POST: [{ ask: { project: "step.edit" }, form: () => ({ intent: "another" }) }],
+  },
+  "routes/steps/step.tsx": {
+    GET: read,
+    POST: [
+      {
+        name: "done",
+        ask: { project: "step.edit" },
+        form: () => ({ intent: "done", at: "2026-01-04T10:00" }),
+      },
+      {
+        name: "sweeps",
+        ask: { project: "step.edit" },
+        form: ({ place }) => ({ intent: "sweeps", before: place.sweep, after: "" }),
+      },
+      {
+        name: "delete",
+        ask: { project: "step.edit" },
+        form: () => ({ intent: "delete" }),
+        destroys: "sweep",
+      },
     ],
   },
 

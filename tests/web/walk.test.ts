@@ -202,6 +202,7 @@ function fill(path: string, place: Place): string {
     .replace(":note", place.note)
     .replace(":bench", place.bench)
     .replace(":photograph", place.photograph)
+    .replace(":step", place.step)
     .replace(":size", "small")
     .replace("*", "no/such/thing");
 }

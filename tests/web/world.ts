@@ -9,6 +9,7 @@ import * as sweeps from "~/db/sweeps.server";
 import { IDEAL_STANDARDS, NOTHING_GIVEN } from "~/measurement/bench";
 import { createBench } from "~/services/benches.server";
 import { addPhotograph } from "~/services/photographs.server";
+import { makeStep } from "~/services/steps.server";
 import { createProject } from "~/services/projects.server";
 import { makeToken } from "~/services/tokens.server";
 import { askApi, Browser, SERVER } from "./browser.ts";
@@ -58,6 +59,7 @@ export interface Place {
   /** With one photograph. */
   bench: string;
   photograph: string;
+  step: string;
 }
 
 export type Crew = Record<ProjectRole, Someone>;
@@ -72,7 +74,7 @@ export async function makePlace(crew: Crew, visibility: Visibility, empty = fals
   const second = await makePerson("second");
   await projects.insertMember(project.id, second.id, "owner");
   const place = { title, visibility, project: project.publicId, projectId: project.id };
-  if (empty) return { ...place, sweep: "", dip: "", note: "", bench: "", photograph: "" };
+  if (empty) return { ...place, sweep: "", dip: "", note: "", bench: "", photograph: "", step: "" };
   const token = await tokenOf(crew.owner);
   const answer = await sendSweep(project.publicId, token, touchstone());
   if (answer.status !== 201) throw new Error(`No sweep: ${answer.status} ${await answer.text()}`);
@@ -93,7 +95,8 @@ export async function makePlace(crew: Crew, visibility: Visibility, empty = fals
     caption: "",
   });
   const photograph = added.kind === "added" ? added.publicId : "";
-  return { ...place, sweep: sweep.id, dip, note, bench: bench.publicId, photograph };
+  const step = await makeStepOf(project.id, crew.owner.id);
+  return { ...place, sweep: sweep.id, dip, note, bench: bench.publicId, photograph, step };
 }
 
 export async function makeCrew(): Promise<Crew> {
@@ -103,6 +106,14 @@ export async function makeCrew(): Promise<Crew> {
     commenter: await makePerson("commenter"),
     reader: await makePerson("reader"),
   };
+}
+
+/** A step that changes nothing of the antenna. */
+async function makeStepOf(projectId: number, by: number): Promise<string> {
+  const at = new Date("2026-01-02T10:00:00Z");
+  const values = { title: "More turns", body: "", state: "done" as const, at, quantities: [] };
+  const made = await makeStep({ projectId, by }, values);
+  return made.kind === "kept" ? made.publicId : "";
 }
 
 /** A bench without references, the project's own. */

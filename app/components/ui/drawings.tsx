@@ -48,6 +48,14 @@ export const DRAWINGS = {
       </g>
     </Paper>
   ),
+  steps: () => (
+    <Paper>
+      <Land d="M4 54H116V66H4Z" line="M4 54H116" />
+      <path d="M40 54V12M80 54V24" {...PEN} />
+      <path d="M80 12v9m-4-4.5h8" {...DASHED} />
+      <path d="M50 32h18m-5-5 5 5-5 5" {...ACCENT} />
+    </Paper>
+  ),
   projects: () => (
     <Paper>
       <Land d="M4 52H116V66H4Z" line="M4 52H116" />

@@ -44,6 +44,8 @@ export default function ProjectLayout({ loaderData }: Route.ComponentProps) {
           <Tab to={base} end label="Story" />
           <Tab to={`${base}/sweeps`} label="Sweeps" />
           <Tab to={`${base}/benches`} label="Benches" />
+          <Tab to={`${base}/antenna`} label="Antenna" />
+          <Tab to={`${base}/steps`} label="Steps" />
           <Tab to={`${base}/members`} label="Members" />
           {mayEdit && <Tab to={`${base}/settings`} label="Settings" />}
         </nav>
