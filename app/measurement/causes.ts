@@ -1,0 +1,74 @@
+import type { Antenna } from "./antenna.ts";
+import { byMultiples } from "./causes/multiples.ts";
+import { byParts } from "./causes/parts.ts";
+import { byReferences, type ReferenceDip } from "./causes/references.ts";
+import { byRipple } from "./causes/ripple.ts";
+import type { LengthUnit } from "./lengths.ts";
+import type { Dip } from "./sweep.ts";
+
+export { type Discrimination, discriminate } from "./causes/discriminate.ts";
+export type { ReferenceDip } from "./causes/references.ts";
+export { type NotJudged, notJudged } from "./elements.ts";
+
+/** What may be behind a dip. Never more than "may be". */
+export interface Cause {
+  kind: "part" | "multiple" | "ripple" | "reference";
+  /** The antenna's part, by its key; null where the cause is none. */
+  part: string | null;
+  /** 3 in "3 × quarter wave"; null for a reference. */
+  order: number | null;
+  /** "may be the mast, 3 × quarter wave". */
+  title: string;
+  /** How the predicted frequency was reckoned, and how far off it is. */
+  arithmetic: string;
+  predictedHz: number;
+  /** Half-width of what the prediction allows, Hz. */
+  toleranceHz: number;
+  /** Dip minus prediction, Hz. */
+  offsetHz: number;
+  /** Share of frequencies chosen blindly that this cause would fit as well, 0 to 1. */
+  byChance: number;
+  /** Larger is likelier: the logarithm of how much more often the cause puts a dip here than chance does. */
+  score: number;
+  /** How the frequency follows the length of `part`: d ln f / d ln(path) × path / part, per metre; 0 where not. */
+  hzPerMetre: number;
+  /** The measurement that would tell it apart. */
+  test: string;
+}
+
+/** A dip as causes need it. */
+export type JudgedDip = Pick<Dip, "frequencyHz"> & { frequencyUncertaintyHz?: number | null; edge?: boolean };
+
+export interface CauseContext {
+  antenna: Antenna;
+  /** All dips of the sweep, the judged one among them or not. */
+  dips: readonly JudgedDip[];
+  /** VF·c/(2l) of the feedline, Hz; null where it is not known. */
+  ripplePeriodHz: number | null;
+  /** The dips of the bench's own sweeps. */
+  references: readonly ReferenceDip[];
+  /** How lengths are written. */
+  unit?: LengthUnit;
+}
+
+/**
+ * Causes of a dip, likeliest first, at most one a part; empty where nothing that is known explains it. Predictions further off
+ * than FARTHEST times their tolerance are not offered.
+ *
+ * Ranking: with z the offset in tolerances (95 %), a dip of this cause lies there with a density of
+ * Student's form (5 degrees of freedom, so that one bad length does not rule a cause out), a dip of no cause anywhere between two of the
+ * series' predictions alike. The score is the logarithm of their ratio, times how usual the case is. So a near
+ * prediction of a crowded series counts less than one of a sparse series. An own rule; how often it is right is measured on
+ * NEC-2 models (`npm run accuracy -- causes`). A NaN or infinite frequency has no causes.
+ */
+export function causesOf(dip: JudgedDip, context: CauseContext): Cause[] {
+  if (!(dip.frequencyHz > 0) || !Number.isFinite(dip.frequencyHz)) return [];
+  const parts = byParts(dip, context);
+  const all = [
+    ...parts,
+    ...byMultiples(dip, context, parts),
+    ...byRipple(dip, context),
+    ...byReferences(dip, context),
+  ];
+  return all.sort((a, b) => b.score - a.score);
+}

@@ -1,0 +1,211 @@
+import type { Antenna, AntennaElement, ElementKind } from "./antenna.ts";
+import { SPEED_OF_LIGHT } from "./feedline.ts";
+import { formatLength, type LengthUnit } from "./lengths.ts";
+import { formatFrequency } from "./units.ts";
+
+/** A frequency at which a part of the antenna may resonate. */
+export interface Prediction {
+  /** An element's key, or FEEDLINE. */
+  part: string;
+  name: string;
+  /** What carries the wave: quarter waves, half waves, or whole waves around a loop. */
+  series: Series;
+  /** How many of them, from 1. */
+  order: number;
+  /** "3 × quarter wave". */
+  what: string;
+  /** What has to be so: "if its foot is insulated"; empty for the usual case. */
+  condition: string;
+  frequencyHz: number;
+  /** What k's usual range and the surroundings make of it; about the 95 % of cases. */
+  lowHz: number;
+  highHz: number;
+  /** Distance of this series' predictions from each other, Hz. */
+  spacingHz: number;
+  /** How usual the case is, 0 to 1. */
+  weight: number;
+  /** Metres that the wave runs along, for the change with length. */
+  pathM: number;
+  /** "3 × 0.983 × c/(4 × 10.07 m) = 21.94 MHz". */
+  arithmetic: string;
+}
+
+export type Series = "quarter" | "half" | "loop";
+
+/** A part that nothing can be predicted for. */
+export interface NotJudged {
+  part: string;
+  name: string;
+  reason: string;
+}
+
+/**
+ * Resonances of every part of the antenna up to `upToHz` (Hz), ascending: n·k·c/(4L) with odd n for a wire grounded at one end,
+ * n·k·c/(2L) for one that is free at both or fed in the middle, n·k·c/L for a loop. Parts without a sensible length are left
+ * out: `notJudged` names them. At most MOST_ORDERS of a series.
+ *
+ * k at order 1: handbook lengths 234/f and 468/f ft, so 0.951 (on-the-numbers.co.uk/useful-info.html, seen), loops 1005/f ft, so
+ * 1.022 (ARRL Antenna Book; from memory, not seen). At order n the open ends take the same share of one half wave: k = 1 − (1 −
+ * k1)/n, after the long-wire rule L = 492·(n − 0.05)/f ft (ARRL Antenna Book; from memory, not seen).
+ */
+export function predictionsOf(antenna: Antenna, upToHz: number, unit: LengthUnit = "metres"): Prediction[] {
+  const parts = antenna.elements
+    .filter(({ lengthM }) => isLength(lengthM))
+    .flatMap((element) =>
+      RULES[element.kind].flatMap((rule) => seriesOf(ofElement(element, rule), upToHz, unit)),
+    );
+  return [...parts, ...ofFeedline(antenna, upToHz, unit)].sort((a, b) => a.frequencyHz - b.frequencyHz);
+}
+
+/** The parts that make no predictions, and why. */
+export function notJudged({ elements, feedline }: Antenna): NotJudged[] {
+  const missing = elements
+    .filter(({ lengthM }) => !isLength(lengthM))
+    .map(({ key, name, kind, lengthM }) => ({ part: key, name: name || kind, reason: reasonOf(lengthM) }));
+  if (!feedline) return [...missing, { part: FEEDLINE, name: FEEDLINE_NAME, reason: "no feedline said" }];
+  if (isLength(feedline.lengthM)) return missing;
+  return [...missing, { part: FEEDLINE, name: FEEDLINE_NAME, reason: reasonOf(feedline.lengthM) }];
+}
+
+interface Rule {
+  series: Series;
+  /** 2: odd orders only. */
+  step: 1 | 2;
+  /** The first order; 2 with a step of 2 for even ones. */
+  first: 1 | 2;
+  /** Half-width of k at order 1. */
+  spread: number;
+  weight: number;
+  condition: string;
+}
+
+interface Part extends Rule {
+  part: string;
+  name: string;
+  pathM: number;
+  k: number;
+  /** How the path's length is written. */
+  path?: (unit: LengthUnit) => string;
+}
+
+function ofElement({ key, name, kind, lengthM, insulated }: AntennaElement, rule: Rule): Part {
+  const k = (rule.series === "loop" ? LOOP_K : WIRE_K) * (insulated ? COVERED : 1);
+  return { ...rule, part: key, name: name || kind, pathM: lengthM as number, k };
+}
+
+/**
+ * The outside of the feedline as a wire: its far end grounded or free, so any number of quarter waves; without a choke also on
+ * through half of a dipole, or a radial, to that one's end.
+ */
+function ofFeedline({ feedline, choke, elements }: Antenna, upToHz: number, unit: LengthUnit): Prediction[] {
+  if (!feedline || !isLength(feedline.lengthM)) return [];
+  const lengthM = feedline.lengthM as number;
+  const condition = choke ? "if the choke does not stop it there" : "";
+  const weight = choke ? RARE : PARASITE;
+  const base = { part: FEEDLINE, name: FEEDLINE_NAME, k: WIRE_K, spread: LOOSE, step: 2 as const };
+  const alone: Part[] = [
+    { ...base, series: "quarter", first: 1, weight, condition, pathM: lengthM },
+    { ...base, series: "half", first: 1, step: 1, weight, condition, pathM: lengthM },
+  ];
+  const arm = choke ? null : armOf(elements);
+  if (arm) {
+    const path = (u: LengthUnit) => `(${formatLength(lengthM, u)} + ${formatLength(arm.lengthM, u)})`;
+    const joined = {
+      ...base,
+      pathM: lengthM + arm.lengthM,
+      path,
+      weight: PARASITE,
+      condition: `together with ${arm.name}`,
+    };
+    alone.push({ ...joined, series: "quarter", first: 1 }, { ...joined, series: "half", first: 1, step: 1 });
+  }
+  return alone.flatMap((part) => seriesOf(part, upToHz, unit));
+}
+
+/** What the feedline's outside joins: half of the longest dipole, else a radial. */
+function armOf(elements: readonly AntennaElement[]): { name: string; lengthM: number } | null {
+  const longest = (kind: ElementKind) =>
+    elements
+      .filter((e) => e.kind === kind && isLength(e.lengthM))
+      .sort((a, b) => (b.lengthM ?? 0) - (a.lengthM ?? 0))[0];
+  const dipole = longest("dipole");
+  if (dipole) return { name: `half of ${dipole.name || "the dipole"}`, lengthM: (dipole.lengthM ?? 0) / 2 };
+  const radial = longest("radial");
+  return radial ? { name: radial.name || "a radial", lengthM: radial.lengthM ?? 0 } : null;
+}
+
+function seriesOf(part: Part, upToHz: number, unit: LengthUnit): Prediction[] {
+  const base = SPEED_OF_LIGHT / (DIVISOR[part.series] * part.pathM);
+  const made: Prediction[] = [];
+  for (let order: number = part.first; made.length < MOST_ORDERS; order += part.step) {
+    const k = part.series === "loop" ? 1 + (part.k - 1) / order : 1 - (1 - part.k) / order;
+    const frequencyHz = order * k * base;
+    const half = order * base * (part.spread / order + SURROUNDINGS * (1 - 1 / order));
+    if (!(frequencyHz - half <= upToHz)) break;
+    const spacingHz = part.step * base;
+    const arithmetic = arithmeticOf(part, order, k, frequencyHz, unit);
+    const { name, series, condition, weight, pathM } = part;
+    const what = order === 1 ? WAVE[series] : `${order} × ${WAVE[series]}`;
+    const range = { frequencyHz, lowHz: frequencyHz - half, highHz: frequencyHz + half, spacingHz };
+    made.push({ part: part.part, name, series, order, what, condition, ...range, weight, pathM, arithmetic });
+  }
+  return made;
+}
+
+function arithmeticOf(part: Part, order: number, k: number, frequencyHz: number, unit: LengthUnit): string {
+  const length = part.path ? part.path(unit) : formatLength(part.pathM, unit);
+  const below = part.series === "loop" ? length : `(${DIVISOR[part.series]} × ${length})`;
+  return `${order === 1 ? "" : `${order} × `}${k.toFixed(3)} × c/${below} = ${formatFrequency(Number(frequencyHz.toPrecision(4)))}`;
+}
+
+function isLength(lengthM: number | null): boolean {
+  return lengthM !== null && Number.isFinite(lengthM) && lengthM > 0;
+}
+
+function reasonOf(lengthM: number | null): string {
+  return lengthM === null || Number.isNaN(lengthM) ? "length not said" : "length is not more than zero";
+}
+
+/** The feedline's key among the parts, as steps point at it. */
+export const FEEDLINE = "feedline";
+const FEEDLINE_NAME = "the feedline's outer surface";
+const DIVISOR: Record<Series, number> = { quarter: 4, half: 2, loop: 1 };
+const WAVE: Record<Series, string> = { quarter: "quarter wave", half: "half wave", loop: "wave around" };
+
+/** 234 ft·MHz × 4 / c. */
+const WIRE_K = 0.9516;
+/** 1005 ft·MHz / c. */
+const LOOP_K = 1.0218;
+/** Insulated wire is slower: 0.95 to 0.99 of a bare one (common practice, no source). */
+const COVERED = 0.97;
+/**
+ * Half-widths of k at order 1. 0.92 to 0.99 seen for verticals and dipoles from thin wire to tube; masts and guys carry
+ * fittings, and the outside of a cable ends in unknown ways.
+ */
+const CLEAN = 0.04;
+const LOOSE = 0.06;
+/** What neighbouring conductors and ground move a resonance by, 95 %: 0 to 3 % in the models of tests/fixtures/nec. */
+const SURROUNDINGS = 0.02;
+/** How usual: what is fed; what is joined or near; what needs something unusual. */
+const FED = 1;
+const PARASITE = 0.4;
+const RARE = 0.15;
+/** 20 times the lowest design frequency is order 20; a long feedline has some more. */
+const MOST_ORDERS = 60;
+
+const usual = { condition: "", first: 1 } as const;
+const grounded: Rule = { ...usual, series: "quarter", step: 2, spread: LOOSE, weight: PARASITE };
+const floating: Rule = { ...usual, series: "half", step: 1, spread: LOOSE, weight: PARASITE };
+
+const RULES: Record<ElementKind, Rule[]> = {
+  vertical: [{ ...usual, series: "quarter", step: 2, spread: CLEAN, weight: FED }],
+  dipole: [
+    { ...usual, series: "half", step: 2, spread: CLEAN, weight: FED },
+    { series: "half", step: 2, first: 2, spread: CLEAN, weight: RARE, condition: "if it is not balanced" },
+  ],
+  loop: [{ ...usual, series: "loop", step: 1, spread: CLEAN, weight: FED }],
+  radial: [{ ...usual, series: "quarter", step: 2, spread: LOOSE, weight: PARASITE }],
+  mast: [grounded, { ...floating, weight: RARE, condition: "if its foot is insulated" }],
+  guy: [floating, { ...grounded, weight: RARE, condition: "if one end is grounded" }],
+  wire: [floating, { ...grounded, weight: RARE, condition: "if one end is grounded" }],
+};
