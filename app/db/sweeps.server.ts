@@ -200,13 +200,44 @@ export async function findPoints(readingId: number, tx: Queryable = db): Promise
   return rows.map((row) => row.data);
 }
 
-/** What a person chose for the last file of this shape in the project. */
-export async function findGivenByShape(projectId: number, shape: string, tx: Queryable = db) {
+/** The parts of many readings' points, each in their order. */
+export async function findPointsOfAll(
+  readingIds: number[],
+  tx: Queryable = db,
+): Promise<Map<number, Buffer[]>> {
+  const found = new Map<number, Buffer[]>();
+  if (readingIds.length === 0) return found;
+  const rows = await tx
+    .select({ readingId: sweepPoints.readingId, data: sweepPoints.data })
+    .from(sweepPoints)
+    .where(inArray(sweepPoints.readingId, readingIds))
+    .orderBy(asc(sweepPoints.readingId), asc(sweepPoints.part))
+    .limit(10_000);
+  for (const { readingId, data } of rows) found.set(readingId, [...(found.get(readingId) ?? []), data]);
+  return found;
+}
+
+/**
+ * What was chosen for the last file of this shape in the project. A bench's references count `withReferences` only: their level of
+ * the 0 dB line is arbitrary, and right for nothing but the sweeps that are divided by them.
+ */
+export async function findGivenByShape(
+  projectId: number,
+  shape: string,
+  withReferences: boolean,
+  tx: Queryable = db,
+) {
   const rows = await tx
     .select({ given: readings.given })
     .from(readings)
     .innerJoin(sweeps, eq(sweeps.readingId, readings.id))
-    .where(and(eq(readings.shape, shape.slice(0, 190)), eq(sweeps.projectId, projectId)))
+    .where(
+      and(
+        eq(readings.shape, shape.slice(0, 190)),
+        eq(sweeps.projectId, projectId),
+        withReferences ? undefined : eq(sweeps.purpose, "antenna"),
+      ),
+    )
     .orderBy(desc(readings.id))
     .limit(1);
   return rows[0]?.given;

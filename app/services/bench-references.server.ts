@@ -1,10 +1,14 @@
 import * as benches from "~/db/benches.server";
 import { inTransaction, isDuplicate, type Transaction } from "~/db/client.server";
+import { findZeroLines } from "~/db/readings.server";
 import * as sweeps from "~/db/sweeps.server";
+import type { BenchGiven } from "~/measurement/bench";
+import { DEFAULT_SETTINGS } from "~/measurement/sweep";
 import { record } from "./events.server.ts";
 import { takeIn } from "./intake.server.ts";
 import { log } from "./log.server.ts";
 import { sha256Of } from "./storage.server.ts";
+import { readAnew } from "./sweep-edits.server.ts";
 
 export interface ReferenceFile {
   kind: benches.ReferenceKind;
@@ -21,7 +25,7 @@ export interface ReferenceTaken {
 export interface TakeReferences {
   project: { id: number; publicId: string };
   bench: { id: number; publicId: string; name: string };
-  version: { id: number; number: number; validFrom: Date };
+  version: { id: number; number: number; validFrom: Date; given: BenchGiven };
   by: { id: number };
 }
 
@@ -82,6 +86,10 @@ async function takeReference(input: TakeReferences, { kind, file }: ReferenceFil
     case "read":
       return { kind, how: "read", message: `The ${kind} was read from “${file.name}”.` };
     case "unread":
+      if (taken.problem.code === "zero-db-needed" && (await readAsRatio(input, taken.sweepPublicId))) {
+        const message = `The ${kind} was read from “${file.name}” as levels: of references only their ratios count.`;
+        return { kind, how: "read", message };
+      }
       return {
         kind,
         how: "unread",
@@ -120,6 +128,18 @@ async function attachTwin(
   const stays = twin.sweep.purpose === "antenna" ? " It also stays among the project's sweeps." : "";
   const message = `The ${kind} is “${twin.sweep.title}”, which is the same file as “${file.name}”.${stays}`;
   return { kind, how: "shared", message };
+}
+
+/**
+ * Reads a file of levels against whatever 0 dB line the project's other levels have, else 0 dB: a reference is only divided by.
+ * False where it is still not read, a picture for instance.
+ */
+async function readAsRatio({ project, by, version }: TakeReferences, publicId: string): Promise<boolean> {
+  const found = await sweeps.findByPublicId(publicId);
+  if (found?.reading?.reading?.format !== "text") return false;
+  const others = await findZeroLines(project.id, found.sweep.id);
+  const zeroDb = version.given.zeroDb ?? others[0]?.zeroDb ?? 0;
+  return (await readAnew(found, { text: { zeroDb } }, DEFAULT_SETTINGS, by.id)) === null;
 }
 
 async function attach(

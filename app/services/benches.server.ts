@@ -46,7 +46,7 @@ export function createBench(
     await tell({ ...bench, ...values, projectId: project.id }, by, "bench.added", values.name, tx);
     return {
       bench: { ...bench, name: values.name },
-      version: { ...made, validFrom: version.validFrom },
+      version: { ...made, validFrom: version.validFrom, given: version.given },
     };
   });
 }
@@ -58,7 +58,7 @@ export function rebuildBench(bench: benches.BenchRow, by: By, version: VersionVa
     const made = await benches.insertVersion({ ...version, benchId: bench.id, createdBy: by.id }, tx);
     await benches.update(bench.id, {}, tx);
     await tell(bench, by, "bench.changed", `${bench.name}, version ${made.number}: ${version.remark}`, tx);
-    return { ...made, validFrom: version.validFrom };
+    return { ...made, validFrom: version.validFrom, given: version.given };
   });
 }
 

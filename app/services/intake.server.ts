@@ -197,7 +197,8 @@ async function readAsBefore(
   const first = { outcome: doubted(outcome), given };
   const { reading } = outcome;
   if (input.given || !reading) return first;
-  const last = await sweeps.findGivenByShape(input.project.id, reading.shape);
+  const divided = input.purpose === "reference" || Boolean(input.benchId);
+  const last = await sweeps.findGivenByShape(input.project.id, reading.shape, divided);
   const before = last && reading.format === "screenshot" ? rememberedFor(reading, last) : last;
   if (!before || Object.keys(before).length === 0) return first;
   const again = doubted(await readFile({ ...task, given: withFound(before, reading) }));
