@@ -39,6 +39,25 @@ export function formatDb(db: number | null, uncertaintyDb: number | null = null)
   return `${plain(db, decimals)}${THIN}dB`;
 }
 
+/** dB with its limits: "20.4 dB (18.9–22.3)"; an unknown limit stays away. */
+export function formatDbLimits(db: number | null, low: number | null, high: number | null): string {
+  if (db === null || Number.isNaN(db) || low === null || high === null) return formatDb(db);
+  const decimals = Number.isFinite(high - low) ? Math.min(1, decimalsFor((high - low) / 2)) : 1;
+  const [shown, from, to] = [plain(db, decimals), plain(low, decimals), plain(high, decimals)];
+  return from === to ? `${shown}${THIN}dB` : `${shown}${THIN}dB (${from}–${to})`;
+}
+
+/** A width with its limits: "260 kHz (241–283)", all in the unit of the width; an unknown limit stays away. */
+export function formatWidthLimits(hz: number, low: number | null, high: number | null): string {
+  if (low === null || high === null) return formatWidth(hz);
+  const half = (high - low) / 2;
+  const { factor } = unitOf(hz);
+  if (!(half > 0) || !Number.isFinite(half)) return formatWidth(hz, half);
+  const decimals = decimalsFor(Math.max(half, hz * FINEST.width) / factor);
+  const ends = [low, high].map((end) => plain(end / factor, decimals));
+  return `${formatWidth(hz, half)} (${ends.join("–")})`;
+}
+
 /** A sweep's noise: one digit, and what no instrument resolves only as less than that. */
 export function formatNoise(db: number | null): string {
   if (db === null || Number.isNaN(db)) return UNKNOWN;

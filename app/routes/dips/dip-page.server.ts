@@ -8,9 +8,8 @@ import { bandAt, bandSources, bandsOverlapping, type ItuRegion } from "~/measure
 import { decimate } from "~/measurement/decimate";
 import type { Dip, Sweep } from "~/measurement/sweep";
 import { listThread } from "~/services/notes.server";
-import { pickPoints } from "~/services/points.server";
 import { storedDips } from "~/services/shown-dips.server";
-import { loadPoints } from "~/services/sweep-points.server";
+import { limitsOf, sweepAt } from "~/services/shown-sweep.server";
 
 /** Everything about one dip of this project, or 404. */
 export async function loadDipPage(access: ProjectAccess, publicId: string) {
@@ -26,7 +25,8 @@ export async function loadDipPage(access: ProjectAccess, publicId: string) {
     listThread({ projectId: project.id, sweepId: dip.sweepId, dipId: dip.id }, access),
   ]);
   if (!from) throw notFound("sweep");
-  const points = from.reading && !from.sweep.problem ? await loadPoints(from.reading.id) : null;
+  const at = await sweepAt(from);
+  const points = at?.sweep ?? null;
   const range = closeUpRange(dip.numbers, points);
   const region = (project.ituRegion as ItuRegion | null) ?? null;
   return {
@@ -41,6 +41,7 @@ export async function loadDipPage(access: ProjectAccess, publicId: string) {
     },
     sweep: { publicId: from.sweep.publicId, title: from.sweep.title, takenAt: from.sweep.takenAt },
     provenance: provenanceOf(from),
+    benchId: from.analysis?.correction?.bench?.bench ?? null,
     closeUp: { range, points: closeUpPoints(points, range), stepHz: stepAround(dip.numbers, points) },
     shown: storedDips(known, designBands),
     neighbours: neighboursOf(dip, known),
@@ -67,6 +68,7 @@ function provenanceOf({ file, reading, analysis, sweep, by }: sweeps.FoundSweep)
     analysisVersion: analysis?.version ?? null,
     analysedAt: analysis?.createdAt ?? null,
     settings: analysis?.settings ?? null,
+    correction: analysis?.correction ?? null,
     noiseDb: analysis?.noiseDb ?? null,
     pointCount: sweep.pointCount,
     startHz: sweep.startHz,
@@ -110,11 +112,15 @@ function closeUpRange({ frequencyHz, bandwidth }: Dip, points: Sweep | null) {
 
 /** Rounded to what a drawing can show; NaN is a gap. */
 function closeUpPoints(points: Sweep | null, range: { fromHz: number; toHz: number }) {
-  if (!points || !(range.fromHz < range.toHz)) return { frequencyHz: [], magnitude: [] };
-  const near = pickPoints(points, decimate(points, CLOSE_UP_POINTS, range));
+  if (!points || !(range.fromHz < range.toHz)) return { frequencyHz: [], magnitude: [], limits: undefined };
+  const kept = decimate(points, CLOSE_UP_POINTS, range);
+  const limits = limitsOf(points);
+  const pick = (values: Float64Array, digits: number) =>
+    Array.from(kept, (i) => Number(values[i].toPrecision(digits)));
   return {
-    frequencyHz: Array.from(near.frequencyHz, (hz) => Number(hz.toPrecision(9))),
-    magnitude: Array.from(near.magnitude, (value) => Number(value.toPrecision(5))),
+    frequencyHz: pick(points.frequencyHz, 9),
+    magnitude: pick(points.magnitude, 5),
+    limits: limits && { low: pick(limits.low, 5), high: pick(limits.high, 5) },
   };
 }
 

@@ -18,6 +18,7 @@ import { OutsideBandsCaution } from "./components/cautions";
 import { CorrectionBar } from "./components/correction/CorrectionBar";
 import { DipsTable } from "./components/DipsTable";
 import { Downloads } from "./components/Downloads";
+import { LimitList } from "./components/LimitList";
 import { LostDips } from "./components/LostDips";
 import { PictureBeside } from "./components/picture/PictureBeside";
 import { SettingsForm } from "./components/SettingsForm";
@@ -156,6 +157,7 @@ export default function SweepPage({ loaderData, actionData }: Route.ComponentPro
               />
             </div>
             <DipsTable dips={dips} view={view} swrLimit={swrLimit} />
+            <LimitList data={loaderData} />
             <LostDips data={loaderData} />
           </section>
           <Downloads data={loaderData} />

@@ -15,6 +15,7 @@ export function CloseUp({ data }: { data: DipPageData }) {
     () =>
       buildSweepScene({
         points,
+        limits: points.limits,
         dips: shown.map((one, i) => ({
           ...one,
           id: one.publicId ?? String(i),

@@ -1,6 +1,7 @@
 import { Link } from "react-router";
 import { DateTime } from "~/components/ui/DateTime";
 import { formatDb, formatFrequency, formatNoise } from "~/measurement/units";
+import { correctionWords } from "../../sweeps/correction-words";
 import type { DipPageData } from "../dip";
 
 /** How the numbers came about: file, reading, analysis and its settings. */
@@ -45,6 +46,10 @@ export function Provenance({ data }: { data: DipPageData }) {
         {from.settings &&
           `; SWR limit ${from.settings.swrLimit}, smallest prominence ${formatDb(from.settings.minimumProminenceDb)}`}
         ; noise of the sweep {formatNoise(from.noiseDb)} (standard deviation).
+      </p>
+      <p>{correctionWords(from.correction)}</p>
+      <p className="soft">
+        Every number is defined, with its source and its limits, among the <Link to="/methods">methods</Link>.
       </p>
     </section>
   );

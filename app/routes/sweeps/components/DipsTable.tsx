@@ -3,7 +3,14 @@ import { parseSort } from "~/components/ui/sort";
 import { type Column, Table } from "~/components/ui/Table";
 import { VerdictTag } from "~/components/ui/Tag";
 import type { Bandwidth } from "~/measurement/sweep";
-import { formatDb, formatFrequency, formatRange, formatSwr, formatWidth } from "~/measurement/units";
+import {
+  formatDbLimits,
+  formatFrequency,
+  formatRange,
+  formatSwr,
+  formatWidth,
+  formatWidthLimits,
+} from "~/measurement/units";
 import type { ShownDip } from "~/services/shown-dips.server";
 import { type SweepView, searchWith } from "../sweeps.schema";
 
@@ -58,7 +65,8 @@ function columnsFor(view: SweepView, swrLimit: number): Column<ShownDip>[] {
       label: "Return loss",
       numeric: true,
       sortBy: (dip) => dip.returnLossDb,
-      cell: (dip) => (dip.edge ? "" : formatDb(dip.returnLossDb)),
+      cell: (dip) =>
+        dip.edge ? "" : formatDbLimits(dip.returnLossDb, dip.returnLossLowDb, dip.returnLossHighDb),
     },
     {
       key: "width",
@@ -119,11 +127,13 @@ function SwrCell({ dip }: { dip: ShownDip }) {
 function WidthCell({ dip }: { dip: ShownDip }) {
   if (dip.edge) return null;
   if (!dip.bandwidth) return <span className="soft">none: not reached</span>;
-  const { widthHz, widthUncertaintyHz, open, shared } = dip.bandwidth;
+  const { widthHz, widthUncertaintyHz, widthLowHz, widthHighHz, open, shared } = dip.bandwidth;
   return (
     <>
       {open && "at least "}
-      {formatWidth(widthHz, widthUncertaintyHz)}
+      {widthLowHz === null || widthHighHz === null
+        ? formatWidth(widthHz, widthUncertaintyHz)
+        : formatWidthLimits(widthHz, widthLowHz, widthHighHz)}
       {shared && <span className="soft">, shared</span>}
     </>
   );
@@ -137,7 +147,9 @@ function edges({ lowHz, highHz, widthUncertaintyHz }: Bandwidth): string {
   return unit && low.endsWith(unit) ? `${low.slice(0, -unit.length)}–${high}` : `${low} – ${high}`;
 }
 
-export function qText(dip: Pick<ShownDip, "q" | "qLow" | "qHigh">): string {
+/** With its limits where the bench's errors are known, else its range from what a scalar sweep can't tell. */
+export function qText(dip: Pick<ShownDip, "q" | "qLow" | "qHigh" | "qLimits">): string {
+  if (dip.qLimits) return formatRange(dip.qLimits.low, dip.qLimits.high);
   if (dip.q !== null) return dip.q.toPrecision(3);
   if (dip.qLow !== null && dip.qHigh !== null) return formatRange(dip.qLow, dip.qHigh);
   return "unknown";
