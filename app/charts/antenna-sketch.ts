@@ -14,6 +14,8 @@ export interface SketchSlot {
   feed: { x: number; y: number } | null;
   /** A conductor by intent, or something that takes part without it. */
   meant: boolean;
+  /** Lies on the ground: drawn thick, so that it shows beside the ground's line. */
+  flat: boolean;
   /** Its height is not known: drawn where such a thing usually is. */
   heightGuessed: boolean;
 }
@@ -46,6 +48,7 @@ export function sketchOf({ elements }: Antenna): Sketch | null {
         dashed: element.lengthM === null,
         feed: feed === null ? null : { x: widthPx / 2, y: groundY - feed },
         meant: ["vertical", "dipole", "loop", "wire"].includes(element.kind),
+        flat: element.kind === "radial" && !element.heightM,
         heightGuessed,
       };
     }),

@@ -46,6 +46,9 @@ export function changesInWords(was: Antenna, now: Antenna, unit: LengthUnit): st
   const came = after.filter((key) => !before.includes(key));
   const gone = before.filter((key) => !after.includes(key));
   const whole = new Set([...came, ...gone]);
+  if (before.length === 0 && after.length > 1 && was.feedline === null && !was.ground) {
+    return [`described: ${after.map((key) => elementName(key, now)).join(", ")}`];
+  }
   return [
     ...came.map((key) => `${elementName(key, now)} added${lengthOf(key, now, unit)}`),
     ...gone.map((key) => `${elementName(key, was)} removed`),

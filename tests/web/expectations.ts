@@ -64,6 +64,11 @@ export const EXPECTATIONS: Record<string, Expectation> = {
         form: ({ self }) => ({ intent: "profile", name: "New name", userName: self?.userName ?? "nobody" }),
       },
       {
+        name: "lengths",
+        ask: { site: "account.own" },
+        form: () => ({ intent: "lengths", lengthUnit: "ft" }),
+      },
+      {
         name: "revoke-session",
         ask: { site: "account.own" },
         form: () => ({ intent: "revoke-session", session: "0".repeat(64) }),

@@ -17,12 +17,26 @@ export const profileSchema = z.object({
     .regex(USER_NAME, "Lower-case letters, digits and hyphens; no hyphen first or last."),
 });
 
+export const LENGTH_UNITS = [
+  { value: "m", label: "Metres" },
+  { value: "ft", label: "Feet and inches" },
+] as const;
+
+export const lengthsSchema = z.object({
+  intent: z.literal("lengths"),
+  lengthUnit: z.enum(["m", "ft"], { error: "Choose metres or feet." }),
+});
+
 export const sessionsSchema = z.discriminatedUnion("intent", [
   z.object({ intent: z.literal("revoke-session"), session: z.string().regex(/^[0-9a-f]{64}$/) }),
   z.object({ intent: z.literal("revoke-others") }),
 ]);
 
-export const settingsSchema = z.discriminatedUnion("intent", [profileSchema, ...sessionsSchema.options]);
+export const settingsSchema = z.discriminatedUnion("intent", [
+  profileSchema,
+  lengthsSchema,
+  ...sessionsSchema.options,
+]);
 
 export const makeTokenSchema = z.object({
   intent: z.literal("make"),

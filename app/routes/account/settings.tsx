@@ -2,12 +2,14 @@ import { parseWithZod } from "@conform-to/zod/v4";
 import { data, Link, useRouteLoaderData } from "react-router";
 import { requirePerson } from "~/auth/require.server";
 import { ThemeSwitch } from "~/components/ThemeSwitch";
+import * as people from "~/db/people.server";
 import * as sessions from "~/db/sessions.server";
 import type { loader as rootLoader } from "~/root";
 import { redirectWithMessage } from "~/services/flash.server";
 import { renameMember } from "~/services/people.server";
 import type { Route } from "./+types/settings";
 import { settingsSchema } from "./account.schema.ts";
+import { LengthsForm } from "./components/LengthsForm.tsx";
 import { ProfileForm } from "./components/ProfileForm.tsx";
 import { SessionList } from "./components/SessionList.tsx";
 
@@ -18,6 +20,7 @@ export async function loader(args: Route.LoaderArgs) {
   const rows = await sessions.findAllByUser(person.id);
   return {
     person: { name: person.name, userName: person.userName, email: person.email },
+    lengthUnit: person.lengthUnit,
     sessions: rows.map((row) => ({
       id: row.id,
       userAgent: row.userAgent,
@@ -42,6 +45,9 @@ export async function action(args: Route.ActionArgs) {
         return data({ lastResult: submission.reply({ fieldErrors }) }, { status: 409 });
       }
       return redirectWithMessage("/settings", "Your names were changed.");
+    case "lengths":
+      await people.update(person.id, { lengthUnit: value.lengthUnit });
+      return redirectWithMessage("/settings", "Lengths are shown so from now on.");
     case "revoke-session":
       await sessions.deleteByUser(person.id, value.session);
       return redirectWithMessage("/settings", "That session was ended.");
@@ -65,6 +71,7 @@ export default function Settings({ loaderData, actionData }: Route.ComponentProp
           <ThemeSwitch choice={root?.theme ?? "system"} />
         </div>
       </section>
+      <LengthsForm lengthUnit={loaderData.lengthUnit} />
       <section className="space-y-3">
         <h2>Scripts</h2>
         <p>

@@ -98,7 +98,7 @@ function Row({ label, children }: { label: string; children: ReactNode }) {
 }
 
 function size(metres: number | null, unit: LengthUnit): ReactNode {
-  return metres === null ? UNSAID : metres === 0 ? "on the ground" : formatLength(metres, unit);
+  return metres === null ? UNSAID : metres === 0 ? ON_GROUND : formatLength(metres, unit);
 }
 
 function materialOf({ material, insulated }: AntennaElement): ReactNode {
@@ -107,3 +107,4 @@ function materialOf({ material, insulated }: AntennaElement): ReactNode {
 }
 
 const UNSAID = <span className="soft font-sans">not said</span>;
+const ON_GROUND = <span className="font-sans">on the ground</span>;

@@ -19,7 +19,7 @@ export function Sketch({ antenna, unit }: { antenna: Antenna; unit: LengthUnit }
               <g
                 fill="none"
                 stroke={slot.meant ? "var(--color-ink)" : "var(--color-edge)"}
-                strokeWidth={slot.meant ? 2 : 1.6}
+                strokeWidth={slot.flat ? 4 : slot.meant ? 2 : 1.6}
                 strokeLinecap="round"
               >
                 <path d={slot.path} strokeDasharray={slot.dashed ? "3 5" : undefined} />
@@ -64,9 +64,11 @@ function captionOf(element: AntennaElement, antenna: Antenna, unit: LengthUnit) 
       {element.count > 1 && <span className="number"> ×{element.count}</span>}
       <span className="block soft">
         {element.name ? `${KIND_WORDS[element.kind]}, ` : ""}
-        <span className="number">
-          {element.lengthM === null ? "length not said" : formatLength(element.lengthM, unit)}
-        </span>
+        {element.lengthM === null ? (
+          "length not said"
+        ) : (
+          <span className="number">{formatLength(element.lengthM, unit)}</span>
+        )}
       </span>
     </>
   );
