@@ -19,7 +19,8 @@ export function table({ file, reading, sweep, analysis, warnings, done }: Analys
       lines.push(`  ${row.map((text, c) => text.padStart(widths[c])).join("  ")}`);
   }
   for (const sentence of reading.assumed) lines.push(`  assumed: ${sentence}`);
-  for (const question of reading.questions) lines.push(`  open: ${question.text} Used: ${chosen(question)}`);
+  const open = done ? reading.questions.filter(({ id }) => id !== "zero-db") : reading.questions;
+  for (const question of open) lines.push(`  open: ${question.text} Used: ${chosen(question)}`);
   for (const warning of warnings) lines.push(`  warning: ${warning.message}`);
   return lines.join("\n");
 }

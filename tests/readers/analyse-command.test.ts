@@ -157,8 +157,12 @@ describe("npm run analyse", () => {
     [["a.csv", "--swr-limit", "1"]],
     [["a.csv", "--scale", "square"]],
     [["a.csv", "--frame", "1,2,3"]],
-    [["a.csv", "--load", "load.s1p"]],
     [["a.csv", "--cable", "RG-58"]],
+    [["a.csv", "--cable", "no-such-cable", "--length-m", "5"]],
+    [["a.csv", "--cable", "0.01", "--length-m", "5"]],
+    [["a.csv", "--length-m", "5"]],
+    [["a.csv", "--cable", "RG-58", "--length-m", "5", "--velocity-factor", "66"]],
+    [["a.csv", "--load-return-loss", "40"]],
   ])(
     "ends with 2 on %j",
     (args) => {

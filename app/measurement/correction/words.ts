@@ -9,11 +9,11 @@ export function allMhz(at: Float64Array, indices: readonly number[]): string {
   return whereMhz(at, first, last) + (last - first + 1 > indices.length ? " (not at every point)" : "");
 }
 
-/** The stretch from one point to another, in words. */
+/** The stretch from one point to another, in words; one that reaches an end is told from the next point outside it. */
 export function whereMhz(at: Float64Array, first: number, last: number): string {
   const end = at.length - 1;
   if (first === 0 && last === end) return "everywhere";
-  if (first === 0) return `below ${mhz(at[last])} MHz`;
-  if (last === end) return `above ${mhz(at[first])} MHz`;
+  if (first === 0) return `below ${mhz(at[last + 1])} MHz`;
+  if (last === end) return `above ${mhz(at[first - 1])} MHz`;
   return first === last ? `at ${mhz(at[first])} MHz` : `from ${mhz(at[first])} to ${mhz(at[last])} MHz`;
 }
