@@ -9,21 +9,24 @@ export interface RangeBarProps {
   scale: FrequencyScaleKind;
   /** Zooming keeps this frequency in the middle while it is in view. */
   aroundHz?: number | null;
+  /** What it is a stretch of. */
+  of?: string;
   rangeHref: (range: FrequencyRange) => string;
   onRange?: (range: FrequencyRange) => void;
 }
 
 /** Closer, further, along: links that work without scripts, answered on the spot with them. */
-export function RangeBar({ now, whole, scale, aroundHz, rangeHref, onRange }: RangeBarProps) {
+export function RangeBar(props: RangeBarProps) {
+  const { now, whole, scale, aroundHz, of = "the sweep", rangeHref, onRange } = props;
   const steps: { label: string; icon: IconName; to: FrequencyRange }[] = [
     { label: "Zoom in", icon: "zoomIn", to: zoomRange(now, whole, scale, 0.5, aroundHz) },
     { label: "Zoom out", icon: "zoomOut", to: zoomRange(now, whole, scale, 2, aroundHz) },
     { label: "Lower frequencies", icon: "back", to: shiftRange(now, whole, scale, -0.5) },
     { label: "Higher frequencies", icon: "forward", to: shiftRange(now, whole, scale, 0.5) },
-    { label: "Whole sweep", icon: "whole", to: whole },
+    { label: of === "the sweep" ? "Whole sweep" : "Everything", icon: "whole", to: whole },
   ];
   return (
-    <nav aria-label="Stretch of the sweep" className="range-bar">
+    <nav aria-label={`Stretch of ${of}`} className="range-bar">
       {steps.map(({ label, icon, to }) =>
         sameRange(now, to) ? (
           <span key={label} className="range-step range-step-off">

@@ -1,35 +1,49 @@
+import type { CSSProperties, ReactNode } from "react";
 import { BandRibbon } from "./BandRibbon";
 import { AXIS_HEIGHT_PX, CHART_FOOT_PX } from "./ChartBase";
 import { FrequencyAxisMarks } from "./FrequencyAxisMarks";
 import { PAGE_PALETTE } from "./palette";
-import { across, Stretched } from "./place";
+import { across } from "./place";
+import { StripGhosts } from "./StripGhosts";
+import { StripLand } from "./StripLand";
 import { StripTrail } from "./StripTrail";
-import type { PlacedStrip, Strip, StripScene, Trail } from "./strip-scene";
+import { type StripHrefs, StripWords } from "./StripWords";
+import type { StripScene } from "./strip-scene";
 
-export interface StripMapProps {
+export interface StripMapProps extends StripHrefs {
   scene: StripScene;
   label: string;
-  stripHref: (strip: Strip) => string;
-  trailHref?: (trail: Trail) => string;
+  trailHref: (trailId: string) => string;
+  dipHref: (dipId: string) => string;
+  /** The trail whose numbers stand beside its stops. */
+  activeTrail?: string | null;
+  onActive?: (trailId: string | null) => void;
+  /** Lies over the map, under its links: dragging. */
+  children?: ReactNode;
 }
 
-const TOP_PX = 8;
+const TOP_PX = 10;
+/** What fits on a sheet. */
+const SHEET_PX = 880;
 const palette = PAGE_PALETTE;
 
 /** The project's story at a glance: what moved, what did not, what appeared. */
-export function StripMap({ scene, label, stripHref, trailHref }: StripMapProps) {
+export function StripMap(props: StripMapProps) {
+  const { scene, label, activeTrail = null, onActive, trailHref, dipHref, children } = props;
   const heightPx = TOP_PX + scene.heightPx + CHART_FOOT_PX;
+  const print = { "--print-zoom": Math.min(1, SHEET_PX / heightPx).toFixed(3) } as CSSProperties;
   return (
     // biome-ignore lint/a11y/useSemanticElements: a drawing is not a set of form fields
     <div role="group" aria-label={label} className="chart-frame">
-      <div className="chart strip-map">
+      <div className="chart strip-map" style={print}>
         <div className="chart-plot" style={{ height: heightPx }}>
           <svg className="chart-layer" height={heightPx} aria-hidden="true">
             <g transform={`translate(0 ${TOP_PX})`}>
               <Washes scene={scene} />
               {scene.strips.map((placed) => (
-                <StripLand key={placed.strip.id} placed={placed} width={scene.pathWidth} />
+                <StripLand key={placed.id} placed={placed} />
               ))}
+              <line x1="0" x2="100%" y1={scene.heightPx} y2={scene.heightPx} stroke={palette.ink} />
               <FrequencyAxisMarks
                 frequency={scene.frequency}
                 y={scene.heightPx}
@@ -43,63 +57,32 @@ export function StripMap({ scene, label, stripHref, trailHref }: StripMapProps) 
               />
             </g>
           </svg>
+          {children && (
+            <div className="strip-map-ground" style={{ top: TOP_PX, height: scene.heightPx }}>
+              {children}
+            </div>
+          )}
+          <StripWords topPx={TOP_PX} {...props} />
           {scene.trails.length > 0 && (
             // biome-ignore lint/a11y/noSvgWithoutTitle: its links carry their own names
-            <svg className="chart-layer chart-marks" height={heightPx}>
+            <svg className="chart-layer chart-marks strip-trails" height={heightPx}>
               <g transform={`translate(0 ${TOP_PX})`}>
                 {scene.trails.map((placed) => (
                   <StripTrail
-                    key={placed.trail.id}
+                    key={placed.id}
                     placed={placed}
-                    scene={scene}
-                    href={trailHref?.(placed.trail)}
+                    heightPx={scene.heightPx}
+                    active={placed.id === activeTrail}
+                    {...{ onActive, trailHref, dipHref }}
                   />
                 ))}
+                <StripGhosts trails={scene.trails} />
               </g>
             </svg>
           )}
-          <ol className="strip-map-words" style={{ top: TOP_PX }}>
-            {scene.strips.map(({ strip, captionY, stepY }) => (
-              <li key={strip.id}>
-                <p className="strip-caption" style={{ top: captionY }}>
-                  <a href={stripHref(strip)}>{strip.title}</a>{" "}
-                  <span className="number soft">{strip.caption}</span>
-                </p>
-                {stepY !== null && (
-                  <p className="strip-step" style={{ top: stepY }}>
-                    {strip.step}
-                  </p>
-                )}
-              </li>
-            ))}
-          </ol>
         </div>
       </div>
     </div>
-  );
-}
-
-function StripLand({ placed, width }: { placed: PlacedStrip; width: number }) {
-  const { landY, footY } = placed;
-  return (
-    <g>
-      <Stretched width={width} height={footY - landY} plotWidthPx={null} y={landY}>
-        <path d={placed.land} fill={palette.land} />
-        <path
-          d={placed.line}
-          fill="none"
-          stroke={palette.ink}
-          strokeWidth="1.4"
-          strokeLinejoin="round"
-          strokeLinecap="round"
-          vectorEffect="non-scaling-stroke"
-        />
-      </Stretched>
-      <line x1="0" x2="100%" y1={footY} y2={footY} stroke={palette.edge} />
-      {placed.dips.map((dip) => (
-        <circle key={dip.id} cx={across(dip.fraction, null)} cy={dip.y} r="2.5" fill={palette.heather} />
-      ))}
-    </g>
   );
 }
 
@@ -110,9 +93,9 @@ function Washes({ scene }: { scene: StripScene }) {
       <rect
         key={`${band.name} ${band.fraction}`}
         x={across(band.fraction, null)}
-        y="0"
-        width={across(Math.max(band.widthFraction, 0.001), null)}
-        height={scene.heightPx}
+        y={-TOP_PX}
+        width={across(Math.max(band.widthFraction, 0.0016), null)}
+        height={scene.heightPx + TOP_PX + AXIS_HEIGHT_PX}
         fill={palette.wash}
       />
     ));

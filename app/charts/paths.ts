@@ -75,7 +75,7 @@ const DOT = "h0.01";
  * Which points a pen needs: those left out lie within `STRAIGHT_PX` of the straight line between kept ones. From
  * each kept point the cone that passes all later ones is narrowed until the next point falls outside it.
  */
-function cornersOf(xs: readonly number[], ys: readonly number[]): number[] {
+export function cornersOf(xs: readonly number[], ys: readonly number[]): number[] {
   const kept = [0];
   let anchor = 0;
   let [steepest, flattest] = [Number.POSITIVE_INFINITY, Number.NEGATIVE_INFINITY];

@@ -1,20 +1,13 @@
 /**
- * The strip map: every sweep of a project as a strip of the same country on one frequency axis, oldest at the
- * bottom. Fractions across, px down.
+ * The strip map: every sweep of a project as a strip of the same country on one frequency axis, oldest at the bottom.
+ * Fractions across, px down. What comes out is plain data: the server reckons it and sends it with the page.
  */
-import {
-  type FrequencyAxis,
-  type FrequencyScale,
-  type FrequencyScaleKind,
-  frequencyAxis,
-  frequencyScale,
-} from "./axis.ts";
+import { type FrequencyAxis, type FrequencyScaleKind, frequencyAxis, frequencyScale } from "./axis.ts";
 import type { ChartBand } from "./chart-types.ts";
 import { type ChartPoints, decimate } from "./decimate.ts";
-import { profilePaths } from "./paths.ts";
 import { type RibbonBand, ribbonBands } from "./ribbon.ts";
-import { type PlacedTrail, placeTrails } from "./trail-names.ts";
-import { valueAxis } from "./value-axis.ts";
+import { type StripPath, stripPath } from "./strip-path.ts";
+import { type PlacedTrail, placeTrails, type Trail } from "./strip-trails.ts";
 
 export interface Strip {
   id: string;
@@ -23,22 +16,23 @@ export interface Strip {
   caption: string;
   points: ChartPoints;
   dips: readonly { id: string; frequencyHz: number; returnLossDb: number }[];
-  /** What was changed before this sweep, since the one under it. */
-  step: string | null;
 }
 
-export interface Trail {
+export interface StripStep {
   id: string;
-  label: string;
-  tone: "heather" | "clay";
-  /** One dip of some of the strips, in any order. */
-  stops: readonly { stripId: string; dipId: string; words: string }[];
+  title: string;
+  caption: string;
+  planned: boolean;
+  /** The strip that came after it; null while there is none. */
+  before: string | null;
 }
 
 export interface StripSceneInput {
   /** Oldest first. */
   strips: readonly Strip[];
-  trails?: readonly Trail[];
+  /** In order of time. */
+  steps: readonly StripStep[];
+  trails: readonly Trail[];
   scale: FrequencyScaleKind;
   fromHz: number;
   toHz: number;
@@ -47,73 +41,101 @@ export interface StripSceneInput {
 }
 
 export interface PlacedStrip {
-  strip: Strip;
-  /** Top of the caption line, top of the land, and the land's foot. */
-  captionY: number;
+  id: string;
+  title: string;
+  caption: string;
   landY: number;
   footY: number;
-  land: string;
-  line: string;
-  /** Top of the line with the step that led here; null without one. */
-  stepY: number | null;
+  path: StripPath;
+  /** Dips in view. */
   dips: { id: string; fraction: number; y: number }[];
 }
 
+/** The steps that lie between two strips, or over the newest one. */
+export interface PlacedSteps {
+  y: number;
+  heightPx: number;
+  /** Nothing of it is done yet: ghosts stand in it. */
+  planned: boolean;
+  steps: { id: string; title: string; caption: string; planned: boolean }[];
+}
+
 export interface StripScene {
-  scale: FrequencyScale;
+  scale: { kind: FrequencyScaleKind; fromHz: number; toHz: number };
   frequency: FrequencyAxis;
   ribbon: RibbonBand[];
   /** Newest first, as they stand from the top. */
   strips: PlacedStrip[];
+  steps: PlacedSteps[];
   trails: PlacedTrail[];
   heightPx: number;
-  pathWidth: number;
 }
 
-const CAPTION_PX = 22;
-const LAND_PX = 64;
-const STEP_PX = 22;
-const PATH_WIDTH = 1000;
-const COLUMNS = 300;
+const STEP_PX = 24;
+const PLANNED_PX = 46;
+/** Land under the deepest hollow, where the caption stands. */
+const GROUND_PX = 21;
 /** All strips share one depth, so that a deeper hollow is deeper in truth. */
-const DEEPEST_MAGNITUDE = 10 ** (-30 / 20);
+const DEEPEST_DB = 30;
+/** Depth of the hollows by how many strips there are; more of them are drawn lower, never narrower. */
+const DEPTHS_PX: readonly [most: number, px: number][] = [
+  [8, 68],
+  [16, 56],
+  [36, 42],
+  [Number.POSITIVE_INFINITY, 30],
+];
+/** Columns of a strip: a dip narrower than one keeps its lowest point. */
+const COLUMNS = 700;
 
 export function buildStripScene(input: StripSceneInput): StripScene {
   const scale = frequencyScale(input.scale, input.fromHz, input.toHz);
-  const axis = valueAxis("rl", LAND_PX, { lowestMagnitude: DEEPEST_MAGNITUDE, highestMagnitude: 1 });
-  const box = { width: PATH_WIDTH, heightPx: LAND_PX, yOfMagnitude: axis.yOfMagnitude };
+  const depthPx = DEPTHS_PX.find(([most]) => input.strips.length <= most)?.[1] ?? STEP_PX;
+  const yOfDb = (db: number) => Math.min(depthPx, Math.max(0, (db / DEEPEST_DB) * depthPx));
+  const steps: PlacedSteps[] = [];
   let y = 0;
+  const addSteps = (before: string | null, planned: boolean) => {
+    const own = input.steps.filter((step) => step.before === before && step.planned === planned);
+    if (own.length === 0) return;
+    const heightPx = planned ? PLANNED_PX : STEP_PX;
+    const shown = own.map(({ id, title, caption }) => ({ id, title, caption, planned }));
+    steps.push({ y, heightPx, planned, steps: shown });
+    y += heightPx;
+  };
+  addSteps(null, true);
+  addSteps(null, false);
   const strips = [...input.strips].reverse().map((strip): PlacedStrip => {
-    const paths = profilePaths(decimate(strip.points, scale, COLUMNS), box);
-    const captionY = y;
-    const landY = captionY + CAPTION_PX;
-    const footY = landY + LAND_PX;
-    y = footY + (strip.step ? STEP_PX : 0);
-    const dips = strip.dips
-      .filter((dip) => dip.frequencyHz >= scale.fromHz && dip.frequencyHz <= scale.toHz)
-      .map((dip) => ({
-        id: dip.id,
-        fraction: scale.fractionOf(dip.frequencyHz),
-        y: landY + Math.min(LAND_PX, Math.max(0, axis.yOfMagnitude(10 ** (-dip.returnLossDb / 20)))),
-      }));
+    const landY = y;
+    const footY = landY + depthPx + GROUND_PX;
+    y = footY;
+    addSteps(strip.id, false);
+    const runs = decimate(strip.points, scale, COLUMNS);
     return {
-      strip,
-      captionY,
+      id: strip.id,
+      title: strip.title,
+      caption: strip.caption,
       landY,
       footY,
-      land: paths.land,
-      line: paths.line + paths.offScale,
-      stepY: strip.step ? footY : null,
-      dips,
+      path: stripPath(runs, (m) => yOfDb(-20 * Math.log10(m)), depthPx, depthPx + GROUND_PX),
+      dips: strip.dips
+        .filter((dip) => dip.frequencyHz >= scale.fromHz && dip.frequencyHz <= scale.toHz)
+        .map((dip) => ({
+          id: dip.id,
+          fraction: thousandths(scale.fractionOf(dip.frequencyHz)),
+          y: Math.round(landY + yOfDb(dip.returnLossDb)),
+        })),
     };
   });
   return {
-    scale,
+    scale: { kind: scale.kind, fromHz: scale.fromHz, toHz: scale.toHz },
     frequency: frequencyAxis(scale),
     ribbon: ribbonBands(scale, input.bands, input.designBands),
     strips,
-    trails: placeTrails(input.trails ?? [], strips, PATH_WIDTH),
+    steps,
+    trails: placeTrails(input.trails, strips, steps, scale),
     heightPx: y,
-    pathWidth: PATH_WIDTH,
   };
+}
+
+function thousandths(fraction: number): number {
+  return Math.round(fraction * 1e5) / 1e5;
 }

@@ -1,4 +1,4 @@
-import { findPoints } from "~/db/sweeps.server";
+import { findPoints, findPointsOfAll } from "~/db/sweeps.server";
 import type { Sweep } from "~/measurement/sweep";
 import { decodePoints } from "./points.server.ts";
 
@@ -13,7 +13,23 @@ export async function loadPoints(readingId: number): Promise<Sweep> {
     cache.set(readingId, kept);
     return kept;
   }
-  const sweep = decodePoints(await findPoints(readingId));
+  return keep(readingId, decodePoints(await findPoints(readingId)));
+}
+
+/** The points of many readings, those that are not kept in one query. */
+export async function loadManyPoints(readingIds: readonly number[]): Promise<Map<number, Sweep>> {
+  const found = new Map<number, Sweep>();
+  const missing: number[] = [];
+  for (const id of readingIds) {
+    const kept = cache.get(id);
+    if (kept) found.set(id, kept);
+    else missing.push(id);
+  }
+  for (const [id, parts] of await findPointsOfAll(missing)) found.set(id, keep(id, decodePoints(parts)));
+  return found;
+}
+
+function keep(readingId: number, sweep: Sweep): Sweep {
   cache.set(readingId, sweep);
   keptPoints += sweep.frequencyHz.length;
   for (const [id, old] of cache) {

@@ -11,6 +11,11 @@ export function formatDate(date: Date): string {
   return `${date.getUTCDate()} ${MONTHS[date.getUTCMonth()]} ${date.getUTCFullYear()}`;
 }
 
+/** `14 Sep` */
+export function formatDateShort(date: Date): string {
+  return `${date.getUTCDate()} ${MONTHS[date.getUTCMonth()]}`;
+}
+
 /** `14 Sep 2026, 17:20 UTC` */
 export function formatDateTime(date: Date): string {
   const hours = String(date.getUTCHours()).padStart(2, "0");

@@ -1,0 +1,57 @@
+import { asc, eq, sql } from "drizzle-orm";
+import { db, type Queryable } from "./client.server.ts";
+import { dipNumber } from "./dip-numbers.server.ts";
+import { dips, notes, sweeps, trailDips, trails } from "./schema/index.ts";
+
+/** Numbers of a dip as its trail is read; limits of noise alone where the bench's are not known. */
+const stopColumns = {
+  id: dips.id,
+  publicId: dips.publicId,
+  frequencyHz: dips.frequencyHz,
+  minimumSwr: dips.minimumSwr,
+  frequencyUncertaintyHz: dipNumber("frequencyUncertaintyHz"),
+  minimumSwrLow: dipNumber("minimumSwrLow", "minimumSwrNoiseLow"),
+  minimumSwrHigh: dipNumber("minimumSwrHigh", "minimumSwrNoiseHigh"),
+  at: sweeps.takenAt,
+  sweepTitle: sweeps.title,
+  sweepPublicId: sweeps.publicId,
+};
+
+/** The dips of every trail of a project, each trail's in order of time. */
+export async function findAllByProject(projectId: number, tx: Queryable = db) {
+  return tx
+    .select({ trailId: trailDips.trailId, ...stopColumns })
+    .from(trailDips)
+    .innerJoin(trails, eq(trails.id, trailDips.trailId))
+    .innerJoin(dips, eq(dips.id, trailDips.dipId))
+    .innerJoin(sweeps, eq(sweeps.id, dips.sweepId))
+    .where(eq(trails.projectId, projectId))
+    .orderBy(asc(orderTime), asc(sweeps.id))
+    .limit(MOST_STOPS);
+}
+
+/** One trail's dips in order of time, with all their numbers and how much was said on each. */
+export async function findAllByTrail(trailId: number, tx: Queryable = db) {
+  return tx
+    .select({
+      ...stopColumns,
+      sweepId: sweeps.id,
+      numbers: dips.numbers,
+      verdict: dips.verdict,
+      verdictText: dips.verdictText,
+      noteCount:
+        sql<number>`(select count(*) from ${notes} n where n.dip_id = ${dips.id} and n.removed_at is null)`.mapWith(
+          Number,
+        ),
+    })
+    .from(trailDips)
+    .innerJoin(dips, eq(dips.id, trailDips.dipId))
+    .innerJoin(sweeps, eq(sweeps.id, dips.sweepId))
+    .where(eq(trailDips.trailId, trailId))
+    .orderBy(asc(orderTime), asc(sweeps.id))
+    .limit(MOST_STOPS);
+}
+
+/** By when a sweep was taken, or where that is unknown by when it came in: as in every list of sweeps. */
+const orderTime = sql<Date>`coalesce(${sweeps.takenAt}, ${sweeps.createdAt})`;
+const MOST_STOPS = 20_000;
