@@ -171,6 +171,20 @@ export const EXPECTATIONS: Record<string, Expectation> = {
         ask: { project: "sweep.edit" },
         form: () => ({ intent: "settings", swrLimit: "2", minimumProminenceDb: "3" }),
       },
+      { name: "bench", ask: { project: "sweep.edit" }, form: () => ({ intent: "bench", bench: "" }) },
+      {
+        name: "feedline",
+        ask: { project: "sweep.edit" },
+        form: () => ({
+          intent: "feedline",
+          cable: "values",
+          lengthM: "10",
+          velocityFactor: "0.66",
+          k1: "0.01",
+        }),
+      },
+      { name: "no-feedline", ask: { project: "sweep.edit" }, form: () => ({ intent: "no-feedline" }) },
+      { name: "anew", ask: { project: "sweep.edit" }, form: () => ({ intent: "anew" }) },
       {
         name: "delete",
         ask: { project: "sweep.delete" },
@@ -192,6 +206,20 @@ export const EXPECTATIONS: Record<string, Expectation> = {
   "routes/sweeps/csv.ts": { GET: read },
   "routes/sweeps/touchstone.ts": { GET: read },
 
+  "routes/sweeps/repeats.tsx": {
+    GET: read,
+    POST: [{ ask: { project: "sweep.edit" }, form: () => ({ intent: "leave" }) }],
+  },
+  "routes/cables/cables.tsx": {
+    GET: read,
+    POST: [
+      {
+        name: "add",
+        ask: { project: "bench.edit" },
+        form: () => ({ intent: "add", name: unique("cable"), points: "10 2", velocityFactor: "0.66" }),
+      },
+    ],
+  },
   "routes/dips/dip.tsx": { GET: read },
   "routes/dips/verdict.ts": {
     GET: read,

@@ -40,6 +40,14 @@ export function SweepHead({ data, errors }: { data: SweepPageData; errors: strin
           {sweep.format === "screenshot" && "Read from a picture. "}
           {readingWords(sweep)}
         </Link>
+        {(sweep.repeatGroup || may.edit) && (
+          <>
+            {" · "}
+            <Link to={`${base}/sweeps/${sweep.publicId}/repeats`}>
+              {sweep.repeatGroup ? "One of several repeats: see their spread" : "Repeats"}
+            </Link>
+          </>
+        )}
       </p>
       {errors.map((error) => (
         <p key={error} role="alert" className="text-alarm">
