@@ -20,6 +20,8 @@ export interface ReferenceTaken {
   kind: benches.ReferenceKind;
   how: "read" | "unread" | "shared" | "refused" | "failed";
   message: string;
+  /** The message says more than that it was read. */
+  note?: boolean;
 }
 
 export interface TakeReferences {
@@ -48,6 +50,14 @@ export async function takeReferences(
     }
   }
   return taken;
+}
+
+/** What became of all of them, in a few sentences: those that were simply read share one. */
+export function takenWords(taken: readonly ReferenceTaken[]): string {
+  const read = taken.filter(({ how, note }) => how === "read" && !note).map(({ kind }) => kind);
+  const list = read.length > 1 ? `${read.slice(0, -1).join(", ")} and ${read[read.length - 1]}` : read[0];
+  const others = taken.filter(({ kind }) => !read.includes(kind)).map(({ message }) => message);
+  return [...(list ? [`Read: the ${list}.`] : []), ...others].join(" ");
 }
 
 /** Two kinds that were given the same file, which can't both be right; null where all differ. */
@@ -88,7 +98,7 @@ async function takeReference(input: TakeReferences, { kind, file }: ReferenceFil
     case "unread":
       if (taken.problem.code === "zero-db-needed" && (await readAsRatio(input, taken.sweepPublicId))) {
         const message = `The ${kind} was read from “${file.name}” as levels: of references only their ratios count.`;
-        return { kind, how: "read", message };
+        return { kind, how: "read", message, note: true };
       }
       return {
         kind,

@@ -48,7 +48,9 @@ export function benchScene(qualities: readonly BenchQuality[], wish: Wish): Benc
           const { land, line, offScale } = profilePaths(one, box);
           return { land, line: line + offScale };
         }),
-        needed: inside(axis.yOf(neededDb)) ? { y: axis.yOf(neededDb), label: "needed" } : null,
+        needed: inside(axis.yOf(neededDb))
+          ? { y: axis.yOf(neededDb), label: `needed: ${neededDb.toFixed(1)} dB` }
+          : null,
       },
     ];
   });

@@ -5,7 +5,7 @@ import { Photographs } from "~/components/photographs/Photographs";
 import { Markdown } from "~/components/ui/Markdown";
 import * as benches from "~/db/benches.server";
 import { brokenForm, refused } from "~/errors";
-import { takeReferences } from "~/services/bench-references.server";
+import { takenWords, takeReferences } from "~/services/bench-references.server";
 import { deleteBench, setRetired } from "~/services/benches.server";
 import { redirectWithMessage } from "~/services/flash.server";
 import type { Route } from "./+types/bench";
@@ -48,10 +48,7 @@ export async function action(args: Route.ActionArgs) {
       }
       const { version } = pickVersion(await benches.findVersions(bench.id), value.version);
       const taken = await takeReferences({ bench, version, project, by: person }, files);
-      return redirectWithMessage(
-        `${page}?version=${version.publicId}`,
-        taken.map(({ message }) => message).join(" "),
-      );
+      return redirectWithMessage(`${page}?version=${version.publicId}`, takenWords(taken));
     }
     case "retire":
       await setRetired(bench, person, true);

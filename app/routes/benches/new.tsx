@@ -4,7 +4,7 @@ import { requireProject } from "~/auth/require.server";
 import { Breadcrumbs } from "~/components/ui/Breadcrumbs";
 import { Button } from "~/components/ui/Button";
 import { refused } from "~/errors";
-import { takeReferences } from "~/services/bench-references.server";
+import { takenWords, takeReferences } from "~/services/bench-references.server";
 import { createBench } from "~/services/benches.server";
 import { redirectWithMessage } from "~/services/flash.server";
 import type { Route } from "./+types/new";
@@ -38,7 +38,7 @@ export async function action(args: Route.ActionArgs) {
   const { name, description, own, ...version } = submission.value;
   const made = await createBench(project, person, { name, description, own }, version);
   const taken = await takeReferences({ ...made, project, by: person }, files);
-  const said = ["The bench is written down.", ...taken.map(({ message }) => message)];
+  const said = ["The bench is written down.", takenWords(taken)];
   return redirectWithMessage(`/projects/${project.publicId}/benches/${made.bench.publicId}`, said.join(" "));
 }
 

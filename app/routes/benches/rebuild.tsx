@@ -5,7 +5,7 @@ import { Breadcrumbs } from "~/components/ui/Breadcrumbs";
 import { Button } from "~/components/ui/Button";
 import * as benches from "~/db/benches.server";
 import { refused } from "~/errors";
-import { takeReferences } from "~/services/bench-references.server";
+import { takenWords, takeReferences } from "~/services/bench-references.server";
 import { rebuildBench } from "~/services/benches.server";
 import { redirectWithMessage } from "~/services/flash.server";
 import type { Route } from "./+types/rebuild";
@@ -48,7 +48,7 @@ export async function action(args: Route.ActionArgs) {
   const taken = await takeReferences({ bench, version, project, by: person }, files);
   const said = [
     `Version ${version.number} is written down; sweeps keep the numbers they have until somebody asks for new ones.`,
-    ...taken.map(({ message }) => message),
+    takenWords(taken),
   ];
   return redirectWithMessage(`/projects/${project.publicId}/benches/${bench.publicId}`, said.join(" "));
 }

@@ -65,6 +65,20 @@ function Strip({ strip, known, filled }: { strip: BenchStrip; known: BenchScene[
   const { heightPx: height, ticks, lines, needed } = strip;
   return (
     <>
+      {known.map(({ fraction, widthFraction }) => (
+        <rect
+          key={fraction}
+          x={across(fraction, null)}
+          width={across(Math.max(widthFraction, 0.002), null)}
+          y="0"
+          height={height}
+          fill={PALETTE.moss}
+          opacity="0.18"
+        />
+      ))}
+      <Stretched width={STRIP_WIDTH} height={height} plotWidthPx={null}>
+        {filled && <path d={lines[0].land} fill={PALETTE.land} />}
+      </Stretched>
       {ticks.map((tick) => (
         <g key={tick.label}>
           <line x1="0" x2="100%" y1={tick.y} y2={tick.y} stroke={PALETTE.rule} />
@@ -79,20 +93,6 @@ function Strip({ strip, known, filled }: { strip: BenchStrip; known: BenchScene[
             {tick.label}
           </text>
         </g>
-      ))}
-      <Stretched width={STRIP_WIDTH} height={height} plotWidthPx={null}>
-        {filled && <path d={lines[0].land} fill={PALETTE.land} />}
-      </Stretched>
-      {known.map(({ fraction, widthFraction }) => (
-        <rect
-          key={fraction}
-          x={across(fraction, null)}
-          width={across(Math.max(widthFraction, 0.002), null)}
-          y="0"
-          height={height}
-          fill={PALETTE.moss}
-          opacity="0.18"
-        />
       ))}
       {needed && (
         <g>
