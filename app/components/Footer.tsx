@@ -10,6 +10,9 @@ export function Footer() {
           lightning; work at height and mains work belong to those qualified for it. Numbers are as good as
           the bench they were taken with; the product says how good that is.
         </p>
+        <p className="mt-2">
+          <a href="/methods">Methods: how each number is reckoned</a>
+        </p>
       </div>
     </footer>
   );
