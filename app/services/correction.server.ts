@@ -61,11 +61,31 @@ export function correctAsRead(
   task: CorrectionTask | undefined,
 ): CorrectedSweep {
   if (!task) return { sweep: measured, correction: null, warnings: [], measured };
-  return correctedSweep(measured, { ...task, readAs: { ...task.readAs, sweep: readAsOf(reading) } });
+  const sweep = readAsOf(reading);
+  const { references, readAs } = onZeroLineOf(sweep, task);
+  const bench = task.bench && { ...task.bench, references };
+  return correctedSweep(measured, { ...task, bench, readAs: { ...readAs, sweep } });
 }
 
+/** Levels of references brought to the 0 dB line that the sweep's own levels were read with: only their ratio counts. */
+function onZeroLineOf({ quantity, zeroDb }: ReadFigures, { bench, readAs }: CorrectionTask) {
+  const references = { ...bench?.references };
+  const figures = { ...readAs };
+  for (const kind of ["open", "short", "load", "through"] as const) {
+    const [one, its] = [references[kind], figures[kind]];
+    if (quantity !== "level" || its?.quantity !== "level" || !one) continue;
+    const ratio = 10 ** (((its.zeroDb ?? 0) - (zeroDb ?? 0)) / 20);
+    if (ratio === 1) continue;
+    references[kind] = { ...one, magnitude: one.magnitude.map((value) => value * ratio) };
+    figures[kind] = { quantity, zeroDb };
+  }
+  return { references, readAs: figures };
+}
+
+type ReadFigures = NonNullable<ReadAs["sweep"]>;
+
 /** What a reading says of its numbers, to be compared with those of other files. */
-export function readAsOf({ quantity, spec }: Reading) {
+export function readAsOf({ quantity, spec }: Reading): ReadFigures {
   return { quantity, zeroDb: spec.text?.zeroDb ?? spec.screenshot?.zeroDb ?? null };
 }
 

@@ -68,7 +68,11 @@ export async function takeIn(input: TakeIn): Promise<Taken> {
     takenAt: input.takenAt ?? null,
     createdAt: new Date(),
   });
-  const { outcome, given } = await readAsBefore(input, taskOf(means, "port"));
+  const { outcome, given } = await againstBench(
+    await readAsBefore(input, taskOf(means, "port")),
+    input,
+    taskOf(means, "port"),
+  );
   if (!outcome.ok && (!input.keepUnread || isBeyondReading(outcome.problem))) {
     return { kind: "refused", problem: outcome.problem };
   }
@@ -205,6 +209,27 @@ async function readAsBefore(
   if (!again.ok) return first;
   again.reading.assumed.unshift("Read as the last file of this shape in the project was read.");
   return { outcome: again, given: before };
+}
+
+/** Levels without a 0 dB line are read against that of the bench's own levels: the bench's open or short is the line then. */
+async function againstBench(
+  first: { outcome: ReadOutcome; given: Given },
+  { file, given }: TakeIn,
+  correct: CorrectionTask,
+): Promise<{ outcome: ReadOutcome; given: Given }> {
+  const { outcome } = first;
+  const line = correct.readAs.open ?? correct.readAs.short;
+  if (outcome.ok || outcome.problem.code !== "zero-db-needed" || line?.quantity !== "level") return first;
+  const zeroDb = line.zeroDb ?? 0;
+  const format = outcome.reading?.format;
+  const spec: Given =
+    format === "screenshot"
+      ? { screenshot: { ...outcome.reading?.spec.screenshot, zeroDb } }
+      : { text: { ...given?.text, zeroDb } };
+  const again = doubted(await readFile({ ...file, settings: DEFAULT_SETTINGS, given: spec, correct }));
+  if (!again.ok) return first;
+  again.reading.assumed.unshift("Levels are read against the 0 dB line of the bench's open and short.");
+  return { outcome: again, given: format === "screenshot" ? { screenshot: { zeroDb } } : spec };
 }
 
 /** A picture's axes were just read: they are not read a second time. */
