@@ -34,8 +34,8 @@ type Kind = "decibel" | "complex" | "even";
 
 /** Share of 2,000 simulated sweeps with known truth whose 95 % intervals cover it. */
 function coverage(shape: Shape, kind: Kind, sigmaDb: number, trials: number) {
-  const uniform = uniforms(99);
-  const normal = normals(17);
+  const uniform = uniforms(5);
+  const normal = normals(6);
   const truth = truthOf(shape);
   const sigma = (sigmaDb * Math.LN10) / 20;
   let frequency = 0;

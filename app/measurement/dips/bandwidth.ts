@@ -3,7 +3,7 @@ import type { Bandwidth, Sweep } from "../sweep.ts";
 import { combine, NORMAL_95 } from "../uncertainty.ts";
 import { crossingHz } from "./crossing.ts";
 import type { Fit } from "./fit.ts";
-import { edgeAt } from "./resonator.ts";
+import { edgesAt, hzAt, type Resonator } from "./resonator.ts";
 
 /** The contiguous samples around a dip with SWR at or under the limit: `from`..`to`, both included. */
 export interface Stretch {
@@ -79,10 +79,9 @@ interface Edges {
 function fromFit({ sweep, index, fit, shared, stretch }: BandwidthInput, level: number): Edges | null {
   if (!fit?.whole || shared) return null;
   const { frequencyHz, magnitude } = sweep;
-  const w = edgeAt(fit.resonator, level * level);
-  if (w === null) return null;
-  const up = Math.exp(Math.asinh(w / (2 * fit.resonator.kappa)));
-  const [low, high] = [fit.resonator.f0Hz / up, fit.resonator.f0Hz * up];
+  const edges = edgesAt(fit.resonator, level * level);
+  if (!edges) return null;
+  const [low, high] = edges.map((w) => hzAt(fit.resonator, w));
   const first = Math.max(0, Math.min(fit.window.from, stretch?.from ?? index) - 1);
   const last = Math.min(frequencyHz.length - 1, Math.max(fit.window.to, stretch?.to ?? index) + 1);
   const lowEnds = edgeLies(magnitude, fit.window.from, -1);
@@ -95,8 +94,13 @@ function fromFit({ sweep, index, fit, shared, stretch }: BandwidthInput, level: 
     lowHz: openLow ? null : low,
     highHz: openHigh ? null : high,
     ends,
-    halfHz: openLow || openHigh ? null : fit.widthHalfHz(level * level),
+    halfHz: openLow || openHigh ? null : fit.halfOf((resonator) => widthAt(resonator, level * level)),
   };
+}
+
+function widthAt(resonator: Resonator, power: number): number {
+  const edges = edgesAt(resonator, power);
+  return edges ? hzAt(resonator, edges[1]) - hzAt(resonator, edges[0]) : Number.NaN;
 }
 
 /** True when the samples end next to `i`: the sweep's border or a gap. */

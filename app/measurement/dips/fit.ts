@@ -1,18 +1,9 @@
 import type { Noise } from "../noise.ts";
 import { student95 } from "../uncertainty.ts";
 import { leastSquares, type Solution } from "./least-squares.ts";
-import { meanPoints, selectPoints } from "./points.ts";
-import { ROUNDING, residualsOf, smallEnough, successive, whiteEnough } from "./residuals.ts";
-import {
-  DEPTH,
-  edgeAt,
-  FAR_POWER,
-  LOG_F0,
-  LOG_KAPPA,
-  lowestPower,
-  type Resonator,
-  resonatorPower,
-} from "./resonator.ts";
+import { meanPoints, type Points, selectPoints } from "./points.ts";
+import { blockSquare, ROUNDING, residualsOf, smallEnough, successive, whiteEnough } from "./residuals.ts";
+import { DEPTH, lowestHz, lowestPower, type Resonator, resonatorOf, resonatorPower } from "./resonator.ts";
 import { type Candidate, fitMeans, likelier } from "./weighing.ts";
 import type { Window } from "./window.ts";
 
@@ -20,16 +11,16 @@ import type { Window } from "./window.ts";
 export interface Fit {
   resonator: Resonator;
   window: Window;
+  /** Where it is lowest. */
+  frequencyHz: number;
   /** Lowest abs Γ², 0 or more. */
   power: number;
   frequencyHalfHz: number;
   powerHalf: number;
   /** True when the far power was fitted too: then the closed form holds at the edges and for Q. */
   whole: boolean;
-  /**
-   * Half-width of the distance f0·w/κ between the edges at abs Γ² = `power`, Hz; null where there are none.
-   */
-  widthHalfHz(power: number): number | null;
+  /** Half-width of any number that follows from the resonator; null where that is not finite nearby. */
+  halfOf(number: (resonator: Resonator) => number): number | null;
 }
 
 /** The larger σ of the sweep's and of the samples near the dip, and that of the sweep alone. */
@@ -88,67 +79,99 @@ function fitInside(
   heldPower: number | null,
 ): Fit | number {
   const referenceHz = frequencyHz[index];
-  const free = heldPower === null ? 4 : 3;
   const some = selectPoints(frequencyHz, magnitude, window, referenceHz, SELECTION);
-  const start = firstGuess(frequencyHz, magnitude, index, window, heldPower);
-  const first = leastSquares({ model: resonatorPower, ...some, start, free });
-  const flat = residualsOf(some.x, some.y, first.p, free, "even");
-  if (!flat) return 1;
+  const guess = firstGuess(frequencyHz, magnitude, index, window, heldPower);
+  const first = growing(some, guess, window.to - window.from + 1, heldPower !== null);
+  if (!first) return 1;
+  const { solution, residuals: flat, free } = first;
+  const task = { free, complex, noise };
   if (successive(flat.standard) < HOPELESS) return flat.sigma / noise.gamma;
-  let best: Candidate | null = { solution: first, residuals: flat };
-  if (flat.relative >= ROUNDING) best = likelier(some, first.p, free, complex, noise.sweepDb);
+  let best: Candidate | null = first;
+  if (flat.relative >= ROUNDING) best = likelier(some, solution.p, task);
   if (!best || !smallEnough(best.residuals, noise)) return flat.sigma / noise.gamma;
   if (flat.relative >= ROUNDING && window.to - window.from + 1 > some.x.length) {
     const means = meanPoints(frequencyHz, magnitude, window, referenceHz, MEANS, best.solution.p);
-    best = fitMeans(means, best, free, complex);
+    best = fitMeans(means, best, task, Math.floor((window.to - window.from + 1) / means.x.length));
   }
   if (!best || !whiteEnough(best.residuals, free)) return 1;
   const freedom = best.residuals.standard.length - free;
   if (freedom < 1 || !usable(best.solution)) return 1;
-  return describe(best.solution, window, referenceHz, frequencyHz, freedom, free) ?? 1;
+  return describe(best, window, referenceHz, frequencyHz, freedom, free) ?? 1;
+}
+
+/**
+ * With four parameters and then with as many as `count` samples bear, each starting where the last ended;
+ * where one leaves nothing over, it is the whole truth.
+ */
+function growing(data: Points, guess: Float64Array, count: number, held: boolean) {
+  const most = count < FEWEST_SKEW ? 4 : count < FEWEST_TILT || held ? 5 : 6;
+  let start = guess;
+  for (let size = 4; ; size = most) {
+    const free = held ? size - 1 : size;
+    const solution = leastSquares({ model: resonatorPower, ...data, start, free });
+    const residuals = residualsOf(data.x, data.y, solution.p, free, "even");
+    if (!residuals) return null;
+    if (size === most || residuals.relative < ROUNDING) return { solution, residuals, free };
+    const { p } = solution;
+    start = Float64Array.from([...p.slice(0, 3), ...new Array(most - 4).fill(0), p[3]]);
+  }
 }
 
 function describe(
-  { p, cost, inverse }: Solution,
+  { solution, residuals }: Candidate,
   window: Window,
   referenceHz: number,
   frequencyHz: Float64Array,
   freedom: number,
   free: number,
 ): Fit | null {
+  const { p, cost, inverse } = solution;
   if (!inverse) return null;
-  const f0Hz = referenceHz * Math.exp(p[LOG_F0]);
-  if (!(f0Hz >= frequencyHz[window.from] && f0Hz <= frequencyHz[window.to])) return null;
-  const resonator = { f0Hz, farPower: p[FAR_POWER], depth: p[DEPTH], kappa: Math.exp(p[LOG_KAPPA]) };
-  const scale = student95(freedom) * Math.sqrt(cost / freedom);
-  const half = (gradient: number[]) => {
+  const resonator = resonatorOf(p, referenceHz);
+  const hz = lowestHz(resonator);
+  if (!(hz >= frequencyHz[window.from] && hz <= frequencyHz[window.to])) return null;
+  const square = cost / freedom;
+  const inBlocks = residuals.relative < ROUNDING ? null : blockSquare(residuals.standard, free);
+  const scale = student95(freedom) * Math.sqrt(Math.max(square, CALM * (inBlocks ?? 0)));
+  const halfOf = (number: (resonator: Resonator) => number) => {
+    const gradient = slopesOf((moved) => number(resonatorOf(moved, referenceHz)), p, free);
     let sum = 0;
     for (let i = 0; i < free; i++)
       for (let j = 0; j < free; j++) sum += gradient[i] * gradient[j] * inverse[i * free + j];
-    return scale * Math.sqrt(Math.max(0, sum));
+    return Number.isFinite(sum) ? scale * Math.sqrt(Math.max(0, sum)) : null;
   };
-  const frequencyHalfHz = half([0, f0Hz, 0, 0]);
+  const frequencyHalfHz = halfOf(lowestHz);
+  const powerHalf = halfOf(lowestPower);
+  if (frequencyHalfHz === null || powerHalf === null) return null;
   if (frequencyHalfHz > (frequencyHz[window.to] - frequencyHz[window.from]) / 2) return null;
   return {
     resonator,
     window,
-    power: lowestPower(resonator),
+    frequencyHz: hz,
+    power: Math.max(0, lowestPower(resonator)),
     frequencyHalfHz,
-    powerHalf: half([-1, 0, 0, 1]),
-    whole: free === 4,
-    widthHalfHz(power) {
-      const w = edgeAt(resonator, power);
-      if (w === null || w === 0) return null;
-      const width = (f0Hz * w) / resonator.kappa;
-      const over = resonator.farPower - power;
-      const perW = width / w;
-      return half([perW / (2 * w * over), width, -width, (-perW * resonator.depth) / (2 * w * over * over)]);
-    },
+    powerHalf,
+    whole: free === p.length,
+    halfOf,
   };
 }
 
+/** ∂/∂p by central differences. */
+function slopesOf(number: (p: Float64Array) => number, p: Float64Array, free: number): Float64Array {
+  const moved = Float64Array.from(p);
+  return Float64Array.from({ length: free }, (_, i) => {
+    const step = DIFFERENCE * Math.max(1e-3, Math.abs(p[i]));
+    moved[i] = p[i] + step;
+    const above = number(moved);
+    moved[i] = p[i] - step;
+    const below = number(moved);
+    moved[i] = p[i];
+    return (above - below) / (2 * step);
+  });
+}
+
 function usable({ p, converged, inverse }: Solution): boolean {
-  return converged && inverse !== null && p[DEPTH] > 0 && p[FAR_POWER] > 0;
+  return converged && inverse !== null && p[DEPTH] > 0 && p[p.length - 1] > 0;
 }
 
 function firstGuess(
@@ -170,6 +193,13 @@ function firstGuess(
 
 /** Five points leave one degree of freedom for four parameters. */
 const FEWEST_POINTS = 5;
+/** From here on the skew is fitted too, with two degrees of freedom left. */
+const FEWEST_SKEW = 7;
+const FEWEST_TILT = 10;
+/** Relative step of a parameter: rounding and bend of the functions are both far below its effect. */
+const DIFFERENCE = 1e-6;
+/** The square of 20 sums scatters by 35 % itself: only what is clearly more widens the intervals. */
+const CALM = 0.8;
 /** An inner window needs enough points to tell shape from scatter. */
 const FEWEST_HELD = 9;
 const SHRINK = 1.8;

@@ -20,6 +20,16 @@ export interface Problem {
   /** First guess; parameters after the first `free` are held. */
   start: Float64Array;
   free: number;
+  /** What is known beforehand of one parameter: it is near 0, with this weight. */
+  prior?: Prior;
+  /** Relative gain of the cost that is not worth another step; the last bits where it is left out. */
+  enough?: number;
+}
+
+export interface Prior {
+  at: number;
+  /** 1/variance up to the same factor. */
+  weight: number;
 }
 
 export interface Solution {
@@ -36,7 +46,7 @@ export interface Solution {
 
 /** Never throws: a model value that is not finite counts as a step that was no good. */
 export function leastSquares(problem: Problem, maxIterations = MOST_ITERATIONS): Solution {
-  const { start, free } = problem;
+  const { start, free, enough = SMALLEST_GAIN } = problem;
   let p = Float64Array.from(start);
   let next = Float64Array.from(start);
   const normal = new Float64Array(free * free);
@@ -64,14 +74,14 @@ export function leastSquares(problem: Problem, maxIterations = MOST_ITERATIONS):
     }
     const nextCost = accumulate(problem, next, trial.normal, trial.slope);
     if (nextCost < cost) {
-      converged = cost - nextCost <= SMALLEST_GAIN * cost || nextCost === 0;
+      converged = cost - nextCost <= enough * cost || nextCost === 0;
       [p, next] = [next, p];
       cost = nextCost;
       normal.set(trial.normal);
       slope.set(trial.slope);
       damping = Math.max(damping / 10, SMALLEST_DAMPING);
     } else {
-      converged = gain <= SMALLEST_GAIN * cost || damping > LARGEST_DAMPING;
+      converged = gain <= enough * cost || damping > LARGEST_DAMPING;
       damping *= 10;
     }
   }
@@ -80,7 +90,7 @@ export function leastSquares(problem: Problem, maxIterations = MOST_ITERATIONS):
 
 /** JᵀWJ and JᵀWr at `p`; returns the cost. */
 function accumulate(
-  { model, x, y, weight, start, free }: Problem,
+  { model, x, y, weight, start, free, prior }: Problem,
   p: Float64Array,
   normal: Float64Array,
   slope: Float64Array,
@@ -98,6 +108,11 @@ function accumulate(
       slope[i] += wi * residual;
       for (let j = 0; j <= i; j++) normal[i * free + j] += wi * gradient[j];
     }
+  }
+  if (prior) {
+    cost += prior.weight * p[prior.at] ** 2;
+    slope[prior.at] -= prior.weight * p[prior.at];
+    normal[prior.at * free + prior.at] += prior.weight;
   }
   for (let i = 0; i < free; i++) for (let j = 0; j < i; j++) normal[j * free + i] = normal[i * free + j];
   return cost;

@@ -44,7 +44,7 @@ export function lowestOf(
     if (fit) {
       return {
         method: "fit",
-        frequencyHz: fit.resonator.f0Hz,
+        frequencyHz: fit.frequencyHz,
         frequencyHalfHz: fit.frequencyHalfHz,
         magnitude: Math.sqrt(fit.power),
         swr: swrInterval(fit.power, fit.powerHalf),

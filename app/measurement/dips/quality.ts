@@ -1,7 +1,6 @@
 import { gammaToImpedance } from "../reflection.ts";
 import type { Bandwidth, Sweep } from "../sweep.ts";
 import type { Fit } from "./fit.ts";
-import { ratioOf } from "./resonator.ts";
 
 /**
  * The loaded quality factor of a dip: one number where it can be told, else its range; all null where it
@@ -39,7 +38,7 @@ export interface QualityInput {
 export function qualityOf(input: QualityInput): Quality {
   const { bandwidth, fit, sweep, index } = input;
   if (!bandwidth || bandwidth.open || bandwidth.shared || bandwidth.fractional === null) return NONE;
-  const pair = fit?.whole ? fromKappa(fit) : fromBand(bandwidth, input.minimumSwr);
+  const pair = fromBand(bandwidth, input.minimumSwr);
   if (!pair) return NONE;
   const lossy = fit?.whole === true && fit.resonator.farPower < LOSSY_POWER;
   const slope = slopeQ(sweep, index);
@@ -57,11 +56,6 @@ interface Pair {
   /** Q if r is over 1, and if it is under 1. */
   overOne: number;
   underOne: number;
-}
-
-function fromKappa(fit: Fit): Pair {
-  const r = ratioOf(fit.resonator);
-  return { overOne: fit.resonator.kappa * (1 + 1 / r), underOne: fit.resonator.kappa * (1 + r) };
 }
 
 function fromBand({ limitSwr: s, fractional }: Bandwidth, minimumSwr: number): Pair | null {

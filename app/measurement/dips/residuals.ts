@@ -114,6 +114,24 @@ export function whiteEnough({ standard, relative }: Residuals, free: number): bo
 }
 
 /**
+ * Mean square of the residuals' sums over BLOCKS stretches, each over the root of its length: 1 for scatter
+ * of σ 1. A shape that does not fit stays in the sums while the scatter averages out. Null with fewer than
+ * three samples in a stretch.
+ */
+export function blockSquare(standard: Float64Array, free: number): number | null {
+  const n = standard.length;
+  if (n < FEWEST_IN_BLOCK * BLOCKS) return null;
+  let squares = 0;
+  for (let k = 0; k < BLOCKS; k++) {
+    const [from, to] = [Math.floor((k * n) / BLOCKS), Math.floor(((k + 1) * n) / BLOCKS)];
+    let sum = 0;
+    for (let i = from; i < to; i++) sum += standard[i];
+    squares += (sum * sum) / (to - from);
+  }
+  return squares / (BLOCKS - free);
+}
+
+/**
  * Von Neumann's ratio: mean squared successive difference over mean square; 2 for scatter, near 0 for a
  * smooth shape. Exact fits give 2.
  */
@@ -136,6 +154,8 @@ const SCORED = 0.1;
 export const ROUNDING = 1e-9;
 /** Both are estimates: σ of few points scatters by half of itself. */
 const NOISE_FACTOR = 2;
+const BLOCKS = 20;
+const FEWEST_IN_BLOCK = 3;
 /** Under this the von Neumann ratio tells nothing. */
 const FEW = 12;
 /** In standard deviations of the ratio (1/√n): scatter without order stays above with 99.9 %. */
@@ -143,4 +163,4 @@ const ORDER_LIMIT = 3;
 /** Decibels mean nothing 40 dB under the mean power: no detector there follows them. */
 const DB_FLOOR = 1e-4;
 /** dB of power in one neper of power. */
-const DB_PER_POWER = 10 / Math.LN10;
+export const DB_PER_POWER = 10 / Math.LN10;

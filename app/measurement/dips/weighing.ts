@@ -1,7 +1,8 @@
-import { leastSquares, type Solution } from "./least-squares.ts";
+import type { FitNoise } from "./fit.ts";
+import { leastSquares, type Prior, type Solution } from "./least-squares.ts";
 import type { Points } from "./points.ts";
-import { type Residuals, residualsOf, type Scatter, unbiased } from "./residuals.ts";
-import { resonatorPower } from "./resonator.ts";
+import { DB_PER_POWER, type Residuals, residualsOf, type Scatter, unbiased } from "./residuals.ts";
+import { resonatorPower, TILT } from "./resonator.ts";
 
 /** A fit and what it leaves over. */
 export interface Candidate {
@@ -9,64 +10,89 @@ export interface Candidate {
   residuals: Residuals;
 }
 
-/**
- * The resonator fitted to `data` under each kind of scatter, from `start`; the one whose scatter explains
- * the residuals better. `free` parameters move; `complex` says that abs Γ comes from a complex Γ, `noiseDb`
- * is the sweep's σ. Null when neither gives finite numbers.
- */
-export function likelier(
-  data: Points,
-  start: Float64Array,
-  free: number,
-  complex: boolean,
-  noiseDb: number,
-): Candidate | null {
-  const even = reweigh(data, start, free, "even", complex);
-  const decibel = reweigh(data, start, free, "decibel", complex);
-  if (!even || !decibel) return even ?? decibel;
-  const clearly = decibel.residuals.score < even.residuals.score - CLEARLY;
-  return clearly && decibel.residuals.sigma <= SAME_EVERYWHERE * noiseDb ? decibel : even;
+/** What fits of one dip share. */
+export interface FitTask {
+  /** How many parameters move. */
+  free: number;
+  /** abs Γ comes from a complex Γ. */
+  complex: boolean;
+  noise: FitNoise;
 }
 
-/** Last fit on the means of all samples; their bias is that of single samples, as the selection told it. */
-export function fitMeans(data: Points, before: Candidate, free: number, complex: boolean): Candidate | null {
+/**
+ * The resonator fitted to `data` under each kind of scatter, from `start`; the one whose scatter explains
+ * the residuals better. Null when neither gives finite numbers.
+ */
+export function likelier(data: Points, start: Float64Array, task: FitTask): Candidate | null {
+  const even = reweigh(data, start, task, "even");
+  const decibel = reweigh(data, start, task, "decibel");
+  if (!even || !decibel) return even ?? decibel;
+  const clearly = decibel.residuals.score < even.residuals.score - CLEARLY;
+  return clearly && decibel.residuals.sigma <= SAME_EVERYWHERE * task.noise.sweepDb ? decibel : even;
+}
+
+/**
+ * Last fit on the means of `size` samples each; their bias is that of single samples, as the selection told
+ * it.
+ */
+export function fitMeans(data: Points, before: Candidate, task: FitTask, size: number): Candidate | null {
+  const { free, complex } = task;
   const { scatter, floor } = before.residuals;
   const start = before.solution.p;
   const y = unbiased(data.y, before.residuals, complex);
   const weighed = residualsOf(data.x, y, start, free, scatter, floor);
   if (!weighed) return null;
-  const solution = leastSquares({ model: resonatorPower, x: data.x, y, weight: weighed.weight, start, free });
+  const prior = tiltPrior(start, task, scatter, size);
+  const { weight } = weighed;
+  const solution = leastSquares({
+    model: resonatorPower,
+    x: data.x,
+    y,
+    weight,
+    start,
+    free,
+    prior,
+    enough: ENOUGH,
+  });
   const residuals = residualsOf(data.x, y, solution.p, free, scatter, floor);
   return residuals && { solution, residuals };
 }
 
 /** Fits again with the weights of the scatter until they and the parameters agree. */
-function reweigh(
-  data: Points,
-  start: Float64Array,
-  free: number,
-  scatter: Scatter,
-  complex: boolean,
-): Candidate | null {
+function reweigh(data: Points, start: Float64Array, task: FitTask, scatter: Scatter): Candidate | null {
+  const { free, complex } = task;
+  const prior = tiltPrior(start, task, scatter, 1);
   let solution: Solution | null = null;
   let residuals = residualsOf(data.x, data.y, start, free, scatter);
   for (let round = 0; round < ROUNDS && residuals; round++) {
     const y = unbiased(data.y, residuals, complex);
-    const { weight } = residuals;
     solution = leastSquares({
       model: resonatorPower,
       x: data.x,
       y,
-      weight,
+      weight: residuals.weight,
       start: solution?.p ?? start,
       free,
+      prior,
+      enough: ENOUGH,
     });
     residuals = residualsOf(data.x, y, solution.p, free, scatter);
   }
   return solution && residuals ? { solution, residuals } : null;
 }
 
+/** The tilt is near 0; without this it runs away with κ and A where scatter hides all three. */
+function tiltPrior(p: Float64Array, { noise }: FitTask, scatter: Scatter, size: number): Prior | undefined {
+  if (p.length <= TILT + 1) return undefined;
+  const variance = scatter === "even" ? 4 * noise.gamma ** 2 : (noise.db / DB_PER_POWER) ** 2;
+  return { at: TILT, weight: variance / size / USUAL_TILT ** 2 };
+}
+
+/** Of abs Γ² per unit of w: 30 dB of directivity behind a metre of line give 0.06, see the coverage table. */
+const USUAL_TILT = 0.1;
 const ROUNDS = 3;
+/** Of the cost of some hundred scattered samples: a ten-thousandth of a σ. */
+const ENOUGH = 1e-9;
 /**
  * In −2 log likelihood. Taking an even scatter for one in dB makes intervals too narrow, the other way
  * round a little too wide.

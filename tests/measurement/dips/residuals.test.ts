@@ -37,7 +37,11 @@ describe("two kinds of scatter", () => {
     ["decibel", 0.4],
   ] as const)("%s of %d is told by kind and size", (scatter, sigma) => {
     const data = points(400, scatter, sigma);
-    const best = likelier(data, P, 4, false, scatter === "decibel" ? sigma : 0.1);
+    const best = likelier(data, P, {
+      free: 4,
+      complex: false,
+      noise: { db: sigma, gamma: sigma, sweepDb: scatter === "decibel" ? sigma : 0.1 },
+    });
     expect(best?.residuals.scatter).toBe(scatter);
     expect(Math.abs((best?.residuals.sigma ?? 0) / sigma - 1)).toBeLessThan(0.12);
   });
