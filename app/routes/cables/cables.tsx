@@ -181,7 +181,7 @@ function AddForm({ errors }: { errors: CableErrors }) {
             name="k1"
             inputMode="decimal"
             unit="dB/m per √MHz"
-            className="w-52"
+            className="w-60"
             errors={errors.k1}
           />
           <InputField
@@ -189,7 +189,7 @@ function AddForm({ errors }: { errors: CableErrors }) {
             name="k2"
             inputMode="decimal"
             unit="dB/m per MHz"
-            className="w-52"
+            className="w-60"
             errors={errors.k2}
           />
         </div>

@@ -26,6 +26,7 @@ export function SweepView({ data }: { data: SweepPageData }) {
     <LiveSweepChart
       points={points}
       limits={points.limits}
+      measured={points.measured}
       dips={dips}
       bands={bands}
       designBands={designBands}

@@ -35,6 +35,7 @@ export function FeedlineDialog({ data, choices, errors }: FeedlineDialogProps) {
           defaultValue={begin.cable}
           errors={errors?.cable}
           options={[
+            ...(begin.cable === "" ? [{ value: "", label: "Choose a cable" }] : []),
             ...choices.own.map(({ publicId, name }) => ({
               value: `own:${publicId}`,
               label: `${name} (this project's)`,
@@ -60,7 +61,7 @@ export function FeedlineDialog({ data, choices, errors }: FeedlineDialogProps) {
           hint="Empty: as the cable's sheet says."
           defaultValue={begin.velocityFactor}
           errors={errors?.velocityFactor}
-          className="w-36"
+          className="w-60"
         />
         <fieldset className="field-group">
           <legend>Figures, where no cable of the list is it</legend>
@@ -72,7 +73,7 @@ export function FeedlineDialog({ data, choices, errors }: FeedlineDialogProps) {
               unit="dB/m per √MHz"
               defaultValue={begin.k1}
               errors={errors?.k1}
-              className="w-52"
+              className="w-60"
             />
             <InputField
               label="k2"
@@ -81,7 +82,7 @@ export function FeedlineDialog({ data, choices, errors }: FeedlineDialogProps) {
               unit="dB/m per MHz"
               defaultValue={begin.k2}
               errors={errors?.k2}
-              className="w-52"
+              className="w-60"
             />
           </div>
           <p className="field-hint">
