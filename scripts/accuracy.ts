@@ -1,5 +1,6 @@
 import { existsSync, readFileSync } from "node:fs";
 import { closePictureReader } from "../app/services/picture.server.ts";
+import { printCauses } from "./accuracy-causes.ts";
 import { trails } from "./accuracy-trails.ts";
 import type { PhotographTruth } from "./screens/photographs.ts";
 import { type PictureScore, scorePicture, totals, traceRight, truthsIn } from "./screens/score.ts";
@@ -7,6 +8,7 @@ import { photographTotals, scorePhotograph, shaken } from "./screens/score-photo
 
 /**
  * `npm run accuracy -- screens [FOLDER] [--given] [--json]`: how well pictures are read, against their truth.
+ * `npm run accuracy -- causes [--json]`: origins of dips and trims on NEC-2 antennas (`accuracy-causes.ts`).
  * `npm run accuracy -- trails [--json]`: dips followed through invented histories (`accuracy-trails.ts`).
  * `npm run accuracy -- photographs`: photographs by four corners and axes, with exact corners and 1 px off.
  *
@@ -31,6 +33,7 @@ async function main(args: string[]): Promise<number> {
     return 2;
   }
   if (part === "photographs") return photographs(flags.includes("--json"));
+  if (part === "causes") return printCauses(flags.includes("--json"));
   if (part === "trails") return trails(flags.includes("--json"));
   if (part !== "screens") {
     process.stderr.write(`${part}: not available yet.\n`);

@@ -1,7 +1,6 @@
 import type { AskedBand } from "./band-figures.ts";
 import type { LengthPair } from "./length-line.ts";
-import type { LengthUnit } from "./lengths.ts";
-import { type Trim, trimTo } from "./trim.ts";
+import { type Trim, type TrimOptions, trimTo } from "./trim.ts";
 
 /** How far a dip lies from the design band that is nearest. */
 export interface DipOffset {
@@ -26,7 +25,7 @@ export function dipOffset(
   frequencyHz: number,
   bands: readonly AskedBand[],
   pairs: readonly LengthPair[] = [],
-  unit: LengthUnit = "metres",
+  options: TrimOptions = {},
 ): DipOffset | null {
   if (!(frequencyHz > 0) || !Number.isFinite(frequencyHz)) return null;
   const near = bands
@@ -35,7 +34,7 @@ export function dipOffset(
     .toSorted((a, b) => Number(b.inside) - Number(a.inside) || away(a.targetHz) - away(b.targetHz))[0];
   if (!near) return null;
   const offsetHz = frequencyHz - near.targetHz;
-  return { ...near, offsetHz, share: offsetHz / near.targetHz, trim: trimTo(pairs, near.targetHz, unit) };
+  return { ...near, offsetHz, share: offsetHz / near.targetHz, trim: trimTo(pairs, near.targetHz, options) };
 
   function away(targetHz: number): number {
     return Math.abs(Math.log(frequencyHz / targetHz));

@@ -1,5 +1,5 @@
-import type { ExpectedPlace, StepQuantity } from "./antenna.ts";
-import { FOLLOWS, fitLengthLine, frequencyAt, isCredible, type LengthPair } from "./length-line.ts";
+import type { ElementKind, ExpectedPlace, StepQuantity } from "./antenna.ts";
+import { fitLengthLine, followsOf, frequencyAt, isCredible, type LengthPair } from "./length-line.ts";
 import { formatLength, type LengthUnit } from "./lengths.ts";
 import { formatFrequency } from "./units.ts";
 
@@ -12,6 +12,8 @@ export interface TrailAtStep {
   frequencyUncertaintyHz: number | null;
   /** The part of its cause: an element's key or "feedline"; null where no cause is agreed on. */
   part: string | null;
+  /** That part's kind, which says how closely a trail follows it. */
+  kind?: ElementKind | null;
   /** What earlier steps showed: for each part whose length changed, lengths and this trail's frequencies. */
   history: { part: string; pairs: LengthPair[] }[];
 }
@@ -19,7 +21,7 @@ export interface TrailAtStep {
 /**
  * The place of every trail after a planned step, in the order given. Of the step's quantities those count that point at a length
  * and have both numbers. With a history of two or more of its lengths a trail follows their line, with its 95 % interval; else it
- * follows in proportion if the part is its cause, within what such proportions are off by (FOLLOWS); else it stays, and says so.
+ * follows in proportion if the part is its cause, within what such proportions are off by (`followsOf`); else it stays, and says so.
  * Several lengths at once: one after the other. Nothing is known of trails whose frequency is none: they are left out.
  */
 export function expectedPlaces(
@@ -95,7 +97,7 @@ function factorOf(trail: TrailAtStep, { part, from, to }: Change, unit: LengthUn
     return { value: after.value / before.value, low: share(after.low), high: share(after.high), how };
   }
   if (trail.part !== part) return null;
-  const ends = FOLLOWS.map((s) => (from / to) ** s);
+  const ends = followsOf(trail.kind).map((s) => (from / to) ** s);
   return {
     value: from / to,
     low: Math.min(...ends),

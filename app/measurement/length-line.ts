@@ -1,3 +1,4 @@
+import type { ElementKind } from "./antenna.ts";
 import { NORMAL_95, student95 } from "./uncertainty.ts";
 
 /** A length as it was, and where the dip lay then. */
@@ -85,6 +86,14 @@ export function lengthFor(line: LengthLine, frequencyHz: number): Estimate {
   return { value, low: Math.exp(meanLogL + middle - half), high: Math.exp(meanLogL + middle + half) };
 }
 
+/**
+ * Least and most s of f ~ L^−s where only this part changes: 0.66 to 0.72 for a vertical whose radials stay, 0.27 for the radials
+ * themselves, 0.97 to 1.17 for dipoles alone or beside other wires (tests/fixtures/nec/trims.json).
+ */
+export function followsOf(kind: ElementKind | null | undefined): readonly [number, number] {
+  return kind === "radial" ? RADIAL_FOLLOWS : FOLLOWS;
+}
+
 /** The steepness that lengths of antennas can show; else the history is of something else. */
 export function isCredible(line: LengthLine): boolean {
   return line.slope > SLOPES[0] && line.slope < SLOPES[1];
@@ -111,7 +120,7 @@ function mean(values: readonly number[]): number {
 
 /** Lengths nearer than this are one length: a millimetre in ten metres. */
 const LEAST_SPREAD = 1e-4;
-/** s of f ~ L^−s: 0.66 for a vertical whose radials stay, 1.0 for a dipole alone (tests/fixtures/nec/trims.json). */
-export const FOLLOWS = [0.6, 1.05] as const;
 /** A line this steep or this flat is no length of an antenna: −1 and −0.6 usual, coupled wires −0.3. */
 const SLOPES = [-1.5, -0.15] as const;
+const FOLLOWS = [0.6, 1.2] as const;
+const RADIAL_FOLLOWS = [0.2, 1.05] as const;

@@ -1,6 +1,7 @@
+import type { ElementKind } from "./antenna.ts";
 import {
-  FOLLOWS,
   fitLengthLine,
+  followsOf,
   isCredible,
   type LengthLine,
   type LengthPair,
@@ -11,6 +12,13 @@ import { formatFrequency } from "./units.ts";
 
 export { expectedPlaces, type TrailAtStep } from "./expected-places.ts";
 export type { LengthPair } from "./length-line.ts";
+
+export interface TrimOptions {
+  /** How lengths are written. */
+  unit?: LengthUnit;
+  /** Of the part that is cut. */
+  kind?: ElementKind | null;
+}
 
 /** What to make of a length so that its dip comes to the wanted frequency. */
 export interface Trim {
@@ -35,32 +43,29 @@ export interface Trim {
 export function trimTo(
   pairs: readonly LengthPair[],
   wantedHz: number,
-  unit: LengthUnit = "metres",
+  options: TrimOptions = {},
 ): Trim | null {
   const last = pairs.at(-1);
   if (!last || !(wantedHz > 0) || !Number.isFinite(wantedHz)) return null;
   const line = fitLengthLine(pairs);
   return line && isCredible(line)
-    ? byLine(line, last, wantedHz, unit)
-    : trimByProportion(last, wantedHz, unit);
+    ? byLine(line, last, wantedHz, options.unit)
+    : trimByProportion(last, wantedHz, options);
 }
 
 /**
  * L_new = L·f_measured/f_wanted, exact where everything scales together. Other parts that share the current make the
- * frequency follow the length less, f ~ L^−s; the limits are those for s from FOLLOWS, joined with the uncertainty of the
+ * frequency follow the length less, f ~ L^−s; the limits are those for s of `followsOf`, joined with the uncertainty of the
  * frequency. Null where a number is not positive. Source: REFERENCE 8, after the handbooks' lengths in inverse
  * proportion to frequency.
  */
-export function trimByProportion(
-  pair: LengthPair,
-  wantedHz: number,
-  unit: LengthUnit = "metres",
-): Trim | null {
+export function trimByProportion(pair: LengthPair, wantedHz: number, options: TrimOptions = {}): Trim | null {
   const { lengthM, frequencyHz, frequencyUncertaintyHz: half } = pair;
   if (![lengthM, frequencyHz, wantedHz].every((v) => v > 0 && Number.isFinite(v))) return null;
+  const { unit } = options;
   const ratio = frequencyHz / wantedHz;
   const newM = lengthM * ratio;
-  const ends = FOLLOWS.map((s) => lengthM * ratio ** (1 / s));
+  const ends = followsOf(options.kind).map((s) => lengthM * ratio ** (1 / s));
   const spread = half === null || half === undefined ? null : newM * (half / frequencyHz);
   const how = `${formatLength(lengthM, unit)} × ${formatFrequency(frequencyHz, half ?? null)} / ${formatFrequency(wantedHz)} = ${formatLength(newM, unit)}`;
   return {
@@ -74,7 +79,7 @@ export function trimByProportion(
   };
 }
 
-function byLine(line: LengthLine, last: LengthPair, wantedHz: number, unit: LengthUnit): Trim {
+function byLine(line: LengthLine, last: LengthPair, wantedHz: number, unit?: LengthUnit): Trim {
   const { value, low, high } = lengthFor(line, wantedHz);
   const margin = 1 + (line.longestM / line.shortestM - 1) * BEYOND;
   const steepness = `${line.slope < 0 ? "−" : ""}${Math.abs(line.slope).toFixed(2)}`;

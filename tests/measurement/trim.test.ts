@@ -118,12 +118,12 @@ describe("the line through earlier lengths: tests/reference/length_line.py (scip
   });
 });
 
+const rounds = trims.flatMap(({ model, part, wantedMhz, rounds: all }) =>
+  all.map((round) => ({ model, part, wantedMhz, ...round })),
+);
+
 /** NEC-2 as the antenna (tests/reference/nec_causes.py): cut by the advice, solved, cut again. */
 describe("advice on antennas of the wrong length", () => {
-  const rounds = trims.flatMap(({ model, part, wantedMhz, rounds: all }) =>
-    all.map((round) => ({ model, part, wantedMhz, ...round })),
-  );
-
   test("twelve or more lengths wrong by 1, 2 and 5 % either way", () => {
     expect(rounds.length).toBeGreaterThanOrEqual(12 * 6);
   });
@@ -161,6 +161,18 @@ describe("expected places after a planned step", () => {
     to: 10.2,
     target: { part: "a", field: "lengthM" },
   };
+
+  test.each(rounds)(
+    "$model $part, off by $off: the solver's answer lies in the interval",
+    ({ model, part, pairs }) => {
+      const kind = model === "ground-plane" && part === "r" ? "radial" : null;
+      const [[from, beforeMhz], [to, afterMhz]] = pairs;
+      const planned = { ...longer, from, to, target: { part, field: "lengthM" as const } };
+      const [place] = expectedPlaces([trail({ frequencyHz: beforeMhz * 1e6, part, kind })], [planned]);
+      expect(place.lowHz ?? Number.POSITIVE_INFINITY).toBeLessThan(afterMhz * 1e6);
+      expect(place.highHz ?? 0).toBeGreaterThan(afterMhz * 1e6);
+    },
+  );
 
   test("in proportion where the part is its cause, with what proportions are off by", () => {
     const [place] = expectedPlaces([trail({ part: "a" })], [longer]);

@@ -13,7 +13,8 @@ export function byRipple(dip: JudgedDip, { dips, ripplePeriodHz: period }: Cause
   const others = dips.filter((other) => other.frequencyHz !== dip.frequencyHz && !other.edge);
   const sides = [-1, 1].flatMap((side) => {
     const aim = dip.frequencyHz + side * period;
-    const near = others.toSorted((a, b) => Math.abs(a.frequencyHz - aim) - Math.abs(b.frequencyHz - aim))[0];
+    const beyond = others.filter((other) => (other.frequencyHz - dip.frequencyHz) * side > 0);
+    const near = beyond.toSorted((a, b) => Math.abs(a.frequencyHz - aim) - Math.abs(b.frequencyHz - aim))[0];
     if (!near) return [];
     const apartHz = Math.abs(near.frequencyHz - dip.frequencyHz);
     const standing = standingOf(apartHz, dip.frequencyUncertaintyHz, {
