@@ -14,6 +14,7 @@ import { listThread } from "~/services/notes.server";
 import { decodePoints, pickPoints } from "~/services/points.server";
 import { storedDips, triedDips } from "~/services/shown-dips.server";
 import { limitsOf, type SweepAt, sweepAt, uncorrected } from "~/services/shown-sweep.server";
+import { loadComplex } from "./complex-page.server";
 import { loadCorrection } from "./correction-page.server";
 import type { SweepView } from "./sweeps.schema";
 
@@ -45,9 +46,13 @@ export async function loadSweepPage(
   const range = rangeOf(view, found);
   const shown = at ? drawnOf(at, range) : { sweep: previewOf(found), beside: NOTHING_BESIDE };
   const measured = at ? zoomPoints(at.measured, range) : shown.sweep;
+  const shownDips = analysis ? triedDips(analysis.dips, known, designBands) : storedDips(known, designBands);
+  // Slopes and noise need every point.
+  const whole = at ?? (sweep.complex ? await sweepAt(found) : null);
   return {
     correction: { ...correction, grey: shown.beside.measured !== undefined },
-    dips: analysis ? triedDips(analysis.dips, known, designBands) : storedDips(known, designBands),
+    dips: shownDips,
+    complex: whole && loadComplex(whole.sweep, shownDips, view.match, range),
     lostDips: known.filter((listed) => !listed.dip.present).map(lostDip),
     warnings: analysis ? [...(at?.warnings ?? []), ...analysis.warnings] : (found.analysis?.warnings ?? []),
     noiseDb: analysis?.noiseDb ?? found.analysis?.noiseDb ?? null,

@@ -15,6 +15,7 @@ import type { Route } from "./+types/sweep";
 import { changeCorrection } from "./change-correction.server";
 import { Advice } from "./components/Advice";
 import { OutsideBandsCaution } from "./components/cautions";
+import { ComplexSection } from "./components/complex/ComplexSection";
 import { CorrectionBar } from "./components/correction/CorrectionBar";
 import { DipsTable } from "./components/DipsTable";
 import { Downloads } from "./components/Downloads";
@@ -160,6 +161,7 @@ export default function SweepPage({ loaderData, actionData }: Route.ComponentPro
             <LimitList data={loaderData} />
             <LostDips data={loaderData} />
           </section>
+          <ComplexSection data={loaderData.complex} {...{ dips, view, swrLimit }} />
           <Downloads data={loaderData} />
           <SweepNotes data={loaderData} />
         </div>

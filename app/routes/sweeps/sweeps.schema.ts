@@ -52,6 +52,8 @@ export interface SweepView {
   minimumProminenceDb: number | null;
   /** Plane tried out in the address; null for that of the stored analysis. */
   plane: Plane | null;
+  /** Frequency of the matching networks, as it was typed. */
+  match: string | null;
   sort: string | null;
 }
 
@@ -71,6 +73,7 @@ export function parseView(search: URLSearchParams): SweepView {
     fromHz: fromMHz === null ? null : fromMHz * 1e6,
     toHz: toMHz === null ? null : toMHz * 1e6,
     dip: search.get("dip"),
+    match: search.get("match"),
     swrLimit: number("limit", (n) => settings.swrLimit.safeParse(n).success),
     minimumProminenceDb: number("prominence", (n) => settings.minimumProminenceDb.safeParse(n).success),
     plane: parsePlane(search.get("plane")),
@@ -84,6 +87,7 @@ const NAMES: Record<keyof SweepView, string> = {
   fromHz: "from",
   toHz: "to",
   dip: "dip",
+  match: "match",
   swrLimit: "limit",
   minimumProminenceDb: "prominence",
   plane: "plane",
