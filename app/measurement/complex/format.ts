@@ -23,10 +23,10 @@ export function formatImpedance(z: Complex | null): string {
 
 /** "0.451 µH", "282 pF". */
 export function formatElement({ kind, value }: Pick<Element, "kind" | "value">): string {
-  const unit = kind === "inductor" ? "H" : "F";
+  const { unit, from } = LOOKS[kind];
   if (!Number.isFinite(value) || !(value > 0)) return UNKNOWN;
   const { name, factor } =
-    PREFIXES.find((prefix) => value >= prefix.factor * 0.1) ?? PREFIXES[PREFIXES.length - 1];
+    PREFIXES.find((prefix) => value >= prefix.factor * from) ?? PREFIXES[PREFIXES.length - 1];
   return `${digits(value / factor)}${THIN}${name}${unit}`;
 }
 
@@ -48,7 +48,8 @@ function minus(text: string): string {
 const UNKNOWN = "unknown";
 /** U+2009, thin space. */
 const THIN = "\u2009";
-/** A part's bag says 470 pF and 0.45 µH, so the switch lies at a tenth. */
+/** A part's bag says 470 pF and 0.47 µH: where the next unit begins, in parts of it. */
+const LOOKS = { inductor: { unit: "H", from: 0.1 }, capacitor: { unit: "F", from: 1 } } as const;
 const PREFIXES = [
   { name: "", factor: 1 },
   { name: "m", factor: 1e-3 },

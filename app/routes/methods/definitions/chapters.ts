@@ -22,6 +22,7 @@ import { swr } from "./swr";
 import { threeTerm } from "./three-term";
 import { tooFewPoints } from "./too-few-points";
 import { trails } from "./trails";
+import { trim } from "./trim";
 import { uncertainty } from "./uncertainty";
 import { zeroLine } from "./zero-line";
 
@@ -32,5 +33,5 @@ export const CHAPTERS: readonly { title: string; definitions: readonly Definitio
   { title: "How well it is known", definitions: [noise, uncertainty, directivity, knownSwr] },
   { title: "Bench and feedline", definitions: [zeroLine, threeTerm, feedline] },
   { title: "With phase", definitions: [impedance, resonance, qSlope, side, lNetwork] },
-  { title: "Why a dip is there", definitions: [bands, elements, causes, trails] },
+  { title: "Why a dip is there, and what to do", definitions: [bands, elements, causes, trails, trim] },
 ];
