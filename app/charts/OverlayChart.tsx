@@ -99,9 +99,9 @@ function Links({ scene }: { scene: OverlayScene }) {
   ));
 }
 
-function TraceName({ trace: { end, label, style } }: { trace: PlacedTrace }) {
+function TraceName({ trace: { end, short, style } }: { trace: PlacedTrace }) {
   if (!end) return null;
-  const short = label.length > 24 ? `${label.slice(0, 23)}…` : label;
+  const words = short.length > 24 ? `${short.slice(0, 23)}…` : short;
   return (
     <At fraction={end.fraction} y={end.y} plotWidthPx={null}>
       <text
@@ -116,7 +116,7 @@ function TraceName({ trace: { end, label, style } }: { trace: PlacedTrace }) {
         strokeLinejoin="round"
         paintOrder="stroke"
       >
-        {short}
+        {words}
       </text>
     </At>
   );

@@ -10,6 +10,8 @@ export interface Trace {
   /** Lasting and unique among the traces. */
   id: string;
   label: string;
+  /** What stands at the line's end, where the label is long. */
+  short?: string;
   points: ChartPoints;
 }
 
@@ -31,6 +33,7 @@ export interface OverlayInput {
 export interface PlacedTrace {
   id: string;
   label: string;
+  short: string;
   /** Which of the trace styles. */
   style: number;
   line: string;
@@ -76,7 +79,8 @@ export function buildOverlayScene(input: OverlayInput): OverlayScene {
       y: keep(axis.yOfMagnitude(last.magnitudes[last.magnitudes.length - 1])),
     };
     const { line, offScale } = paths[style];
-    return { id: trace.id, label: trace.label, style, line: line + offScale, end: end ?? null };
+    const { id, label, short = label } = trace;
+    return { id, label, short, style, line: line + offScale, end: end ?? null };
   });
   const styleOf = new Map(traces.map(({ id, style }) => [id, style]));
   return {

@@ -1,8 +1,9 @@
 import { and, asc, desc, eq, isNotNull, sql } from "drizzle-orm";
 import { alias } from "drizzle-orm/mysql-core";
+import { completeDip } from "~/measurement/dips/complete";
 import { db, type Queryable } from "./client.server.ts";
 import { newPublicId } from "./ids.server.ts";
-import { steps, sweeps, users } from "./schema/index.ts";
+import { dips, steps, sweeps, trailDips, trails, users } from "./schema/index.ts";
 
 export type StepRow = typeof steps.$inferSelect;
 
@@ -91,6 +92,19 @@ export async function findSweepsInOrder(projectId: number, tx: Queryable = db) {
     .limit(MOST_SWEEPS);
   return rows.reverse();
 }
+/** Every dip that is on a trail and found now, with its trail and sweep: what expectations are reckoned from. */
+export async function findTrailStops(projectId: number, tx: Queryable = db) {
+  const rows = await tx
+    .select({ trail: trails.publicId, sweepId: dips.sweepId, numbers: dips.numbers })
+    .from(trailDips)
+    .innerJoin(trails, eq(trails.id, trailDips.trailId))
+    .innerJoin(dips, eq(dips.id, trailDips.dipId))
+    .where(and(eq(trails.projectId, projectId), eq(dips.present, true)))
+    .orderBy(asc(dips.id))
+    .limit(MOST_STOPS);
+  return rows.map((row) => ({ ...row, numbers: completeDip(row.numbers) }));
+}
+
 export type OrderedSweep = Awaited<ReturnType<typeof findSweepsInOrder>>[number];
 
 const before = alias(sweeps, "before_sweep");
@@ -99,3 +113,4 @@ const after = alias(sweeps, "after_sweep");
 const orderTime = sql<Date>`coalesce(${sweeps.takenAt}, ${sweeps.createdAt})`;
 export const MOST_STEPS = 500;
 const MOST_SWEEPS = 2000;
+const MOST_STOPS = 20_000;

@@ -96,7 +96,7 @@ function useSceneOf({ effect, range, log, bands, designBands }: StepPageData) {
     ];
     return buildOverlayScene({
       traces: sides.flatMap(({ id, word, side }) =>
-        side ? [{ id, label: `${word}: ${side.title}`, points: unpackPoints(side.points) }] : [],
+        side ? [{ id, label: `${word}: ${side.title}`, short: word, points: unpackPoints(side.points) }] : [],
       ),
       links: movements.map((move, i) => ({
         id: String(i),
