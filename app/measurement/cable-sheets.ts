@@ -12,17 +12,18 @@ const per100ft = (figures: string) => printed(figures, 0.3048);
 const per100m = (figures: string) => printed(figures, 1);
 
 /**
- * Published sheets differ by this part of the loss for one and the same "RG" number: 1.6 to 2.0 dB per 100 ft at 30 MHz for RG-8X
- * (ARRL General Class License Manual, table 6-1 erratum, against the sheet of type 9258).
+ * Published sheets differ by this part of the loss for one and the same "RG" number: 1.6 to 2.0 dB per 100 ft at 30 MHz
+ * for RG-8X (ARRL General Class License Manual, table 6-1 erratum, against the sheet of type 9258).
  */
 const BARE_NUMBER = 0.2;
 /** Reel to reel, temperature and age of one maker's type (common practice, no source). */
 const ONE_MAKER = 0.1;
 
 /**
- * Published attenuation of common cables, a source each. All figures were seen second-hand, in collections that name the sheet; none was read on the
- * maker's own page. Leaving one point out of the fit, the curve comes back to it within 3 % or the print's own rounding, except for type 8216, whose
- * thin conductor over a steel core (from memory, not seen) leaves the square root below 50 MHz: its curve misses the sheet by up to 6 %, inside what is claimed for it.
+ * Published attenuation of common cables, a source each. All figures were seen second-hand, in collections that name
+ * the sheet; none was read on the maker's own page. Leaving one point out of the fit, the curve comes back to it within
+ * 3 % or the print's own rounding, except for type 8216, whose thin conductor over a steel core (from memory, not seen)
+ * leaves the square root below 50 MHz: its curve misses the sheet by up to 6 %, inside what is claimed for it.
  */
 export const CABLE_SHEETS: readonly CableSheet[] = [
   {

@@ -24,8 +24,8 @@ export interface CableEntry {
 export type CableSheet = Omit<CableEntry, "k1" | "k2">;
 
 /**
- * The cable of this name; case, spaces and punctuation don't matter, and a beginning will do ("RG-213" for "RG-213/U (solid PE)") where no
- * digit follows it; of several the first of the table. Null where there is none.
+ * The cable of this name; case, spaces and punctuation don't matter, and a beginning will do ("RG-213" for "RG-213/U
+ * (solid PE)") where no digit follows it; of several the first of the table. Null where there is none.
  */
 export function cableNamed(name: string): CableEntry | null {
   const wanted = plain(name);
@@ -36,9 +36,10 @@ export function cableNamed(name: string): CableEntry | null {
 }
 
 /**
- * k1 and k2, dB per metre, of the least relative squares through published points (dB per 100 m): skin effect grows with √f, losses
- * in the insulation with f. Neither is under 0: where the free fit says so, the other alone is fitted. `worstRelative` is the
- * largest deviation of a point from the curve, as a part of the point. One point gives k1 alone; none, or one that is not over 0, throws RangeError.
+ * k1 and k2, dB per metre, of the least relative squares through published points (dB per 100 m): skin effect grows
+ * with √f, losses in the insulation with f. Neither is under 0: where the free fit says so, the other alone is fitted.
+ * `worstRelative` is the largest deviation of a point from the curve, as a part of the point. One point gives k1 alone;
+ * none, or one that is not over 0, throws RangeError.
  */
 export function fitCable(points: readonly CablePoint[]): { k1: number; k2: number; worstRelative: number } {
   if (points.length === 0 || points.some(({ mhz, dbPer100m }) => !(mhz > 0 && dbPer100m > 0)))

@@ -1,7 +1,8 @@
 import { cableNamed } from "./cables.ts";
+import { lineWarnings, otherImpedance, scaleLimits, scalePicture } from "./feedline-effects.ts";
 import { gammaToSwr, swrToGamma } from "./reflection.ts";
 import { renormalise } from "./renormalise.ts";
-import type { BenchLimits, PictureLimits, Sweep, Warning } from "./sweep.ts";
+import type { Sweep, Warning } from "./sweep.ts";
 
 /** A length of line between the port and the antenna. */
 export interface Feedline {
@@ -24,13 +25,14 @@ export function matchedLossDb(
 }
 
 /**
- * The sweep as it is at the far end of the line: abs Γ times 10^(A/10) with A the matched loss one way in dB, and for complex
- * sweeps Γ times e^(2(α+jβ)l), β = 2πf/(c·VF). NaN stays NaN. Where the cable's sheet has no figures (outside its first and
- * last point) the loss is not known, and the value becomes NaN; own k1 and k2 hold everywhere. abs Γ over 1 is kept and said.
- * A cable of another impedance than the sweep's reference is taken out in its own (complex sweeps only; a scalar one can't
- * be, and that is said). Limits go along: with g = 10^(A/10), d' = g·d, M' = M/g, T' = T plus what the cable's own
- * uncertainty makes of g; so abs Γ' ± (d' + T'·abs Γ' + M'·abs Γ'²) is g times the old interval. Impossible
- * lines (a length or loss under 0, a velocity factor outside 0 to 1) give the sweep as it was, with a warning.
+ * The sweep as it is at the far end of the line: abs Γ times 10^(A/10) with A the matched loss one way in dB, and for
+ * complex sweeps Γ times e^(2(α+jβ)l), β = 2πf/(c·VF). NaN stays NaN. Where the cable's sheet has no figures (outside
+ * its first and last point) the loss is not known, and the value becomes NaN; own k1 and k2 hold everywhere. abs Γ over
+ * 1 is kept and said. A cable of another impedance than the sweep's reference is taken out in its own (complex sweeps
+ * only; a scalar one can't be, and that is said). Limits go along: with g = 10^(A/10), d' = g·d, M' = M/g, T' = T plus
+ * what the cable's own uncertainty makes of g; so abs Γ' ± (d' + T'·abs Γ' + M'·abs Γ'²) is g times the old interval.
+ * Impossible lines (a length or loss under 0, a velocity factor outside 0 to 1) give the sweep as it was, with a
+ * warning.
  * Source: wave on a line with small loss, D. M. Pozar, Microwave Engineering, ch. 2 (from memory, not seen).
  */
 export function removeFeedline(sweep: Sweep, line: Feedline): { sweep: Sweep; warnings: Warning[] } {
@@ -53,15 +55,17 @@ export function removeFeedline(sweep: Sweep, line: Feedline): { sweep: Sweep; wa
     moved.benchLimits = scaleLimits(sweep.benchLimits, gain, cable?.lossUncertainty ?? 0);
   if (sweep.pictureLimits) moved.pictureLimits = scalePicture(sweep.pictureLimits, gain);
   const out = renormalise(moved, seenOhm);
-  warnings.push(...outcome(sweep, out, gain, line));
+  if (ownOhm !== seenOhm) delete out.benchLimits;
+  warnings.push(...lineWarnings(sweep, out, gain, line.name));
   return { sweep: out, warnings };
 }
 
 /**
- * What a mismatch adds to the loss of a line, dB: 10 log((a² − ρ²)/(a(1 − ρ²))) less the matched loss, a = 10^(ML/10), ρ = abs Γ
- * at the load. `matchedDb` ≥ 0 and `swr` ≥ 1 at the load; SWR Infinity gives Infinity on a lossy line; NaN for anything else.
- * ARRL Antenna Book, "additional loss due to SWR" (from memory, not seen); it is net power in over net power out of a line whose
- * Z0 is real, at any length. Where Z0 has a reactive part (long lossy lines at low frequencies) it is an approximation.
+ * What a mismatch adds to the loss of a line, dB: 10 log((a² − ρ²)/(a(1 − ρ²))) less the matched loss, a = 10^(ML/10),
+ * ρ = abs Γ at the load. `matchedDb` ≥ 0 and `swr` ≥ 1 at the load; SWR Infinity gives Infinity on a lossy line; NaN
+ * for anything else. ARRL Antenna Book, "additional loss due to SWR" (from memory, not seen); it is net power in over
+ * net power out of a line whose Z0 is real, at any length. Where Z0 has a reactive part (long lossy lines at low
+ * frequencies) it is an approximation.
  */
 export function addedLossDb(matchedDb: number, swr: number): number {
   if (!(matchedDb >= 0)) return Number.NaN;
@@ -118,56 +122,6 @@ function turn(
     out.im[i] = re[i] * s + im[i] * c;
   }
   return out;
-}
-
-function scaleLimits(
-  { directivity, tracking, match }: BenchLimits,
-  gain: Float64Array,
-  uncertainty: number,
-): BenchLimits {
-  return {
-    directivity: times(directivity, gain),
-    tracking: Float64Array.from(tracking, (t, i) => t + (gain[i] ** uncertainty - 1) * (1 + t)),
-    match: Float64Array.from(match, (m, i) => m / gain[i]),
-  };
-}
-
-function scalePicture(limits: PictureLimits, gain: Float64Array): PictureLimits {
-  return {
-    frequencyHz: limits.frequencyHz,
-    magnitudeLow: times(limits.magnitudeLow, gain),
-    magnitudeHigh: times(limits.magnitudeHigh, gain),
-  };
-}
-
-function otherImpedance(name: string, ownOhm: number, seenOhm: number, complex: boolean): Warning {
-  return {
-    code: "cable-impedance",
-    message: complex
-      ? `${name} is a ${ownOhm} Ω cable and the sweep is referred to ${seenOhm} Ω: the line was removed in ${ownOhm} Ω, through the impedance.`
-      : `${name} is a ${ownOhm} Ω cable and the sweep is referred to ${seenOhm} Ω. Without phase the step between the two can't be removed: values at the antenna are a guess.`,
-  };
-}
-
-function outcome(before: Sweep, after: Sweep, gain: Float64Array, line: Feedline): Warning[] {
-  const warnings: Warning[] = [];
-  let over = 0;
-  let unknown = 0;
-  for (let i = 0; i < gain.length; i++) {
-    if (after.magnitude[i] > 1 && !(before.magnitude[i] > 1)) over++;
-    if (Number.isNaN(gain[i]) && !Number.isNaN(before.magnitude[i])) unknown++;
-  }
-  if (over > 0)
-    warnings.push({
-      code: "feedline-over-unity",
-      message: `With the feedline removed, ${over} of ${gain.length} points return more than was sent: the cable entry is wrong (too long or too lossy), or the sweep's 0 dB line is. They are kept, marked, and have no SWR.`,
-    });
-  if (unknown > 0)
-    warnings.push({
-      code: "cable-range",
-      message: `${unknown} of ${gain.length} points lie outside the frequencies for which the sheet of ${line.name} gives a loss; they are gaps at the antenna. Give k1 and k2 of your own to go further.`,
-    });
-  return warnings;
 }
 
 /** m/s, exact by definition of the metre (BIPM, SI brochure). */

@@ -29,8 +29,8 @@ export async function readLevels(file: SweepFile, given: Given, read: Read): Pro
 }
 
 /**
- * The references that were named, read like the sweep's own file: with the same givens, and in the same quantity where a text has the
- * same columns. The first that can't be read is the problem.
+ * The references that were named, read like the sweep's own file: with the same givens, and in the same quantity where
+ * a text has the same columns. The first that can't be read is the problem.
  */
 export async function readReferences(
   paths: Partial<Record<Role, string>>,

@@ -112,7 +112,13 @@ describe("removeFeedline", () => {
     const line: Feedline = { name: "RG-59", k1: 0, k2: 0, lengthM: 299792458 / 100e6 / 4, velocityFactor: 1 };
     // A quarter wave of 75 Ω turns 50 Ω into 75²/50 = 112.5 Ω.
     const seen = (112.5 - 50) / (112.5 + 50);
-    const complex = removeFeedline(complexSweep([100e6], [seen], [0]), line);
+    const benchLimits = {
+      directivity: Float64Array.of(0.01),
+      tracking: Float64Array.of(0),
+      match: Float64Array.of(0),
+    };
+    const complex = removeFeedline({ ...complexSweep([100e6], [seen], [0]), benchLimits }, line);
+    expect(complex.sweep.benchLimits).toBeUndefined();
     expect(complex.sweep.magnitude[0]).toBeCloseTo(0, 12);
     expect(complex.sweep.referenceOhm).toBe(50);
     expect(codes(complex.warnings)).toEqual(["cable-impedance"]);

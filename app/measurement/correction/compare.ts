@@ -17,7 +17,9 @@ export interface BenchComparison {
   words: string[];
 }
 
-/** Two benches, or one before and after it was rebuilt: differences at the second one's frequencies, and what they mean. */
+/**
+ * Two benches, or one before and after it was rebuilt: differences at the second one's frequencies, and what they mean.
+ */
 export function compareBenches(before: BenchQuality, after: BenchQuality): BenchComparison {
   const { fromHz, toHz } = commonSpan([before, after]);
   const at = after.frequencyHz.filter((hz) => hz >= fromHz && hz <= toHz);
@@ -79,6 +81,9 @@ function known(before: BenchQuality, after: BenchQuality): string {
   return `An SWR of ${after.wish.swr} is known to ± ${after.wish.tolerance} ${told(after)}; before ${told(before)}.`;
 }
 
-/** Two sweeps of one reference differ by the repeatability of a connector, 0.1 to 0.5 dB at 40 dB (common practice, no source). */
+/**
+ * Two sweeps of one reference differ by the repeatability of a connector, 0.1 to 0.5 dB at 40 dB (common practice, no
+ * source).
+ */
 const SAME_DB = 0.5;
 const BRIDGE = 1.1;

@@ -9,8 +9,8 @@ import { termFaults } from "./term-faults.ts";
 import { applyTerms, type ErrorTerms, solveTerms } from "./three-term.ts";
 
 /**
- * The three error terms at the frequencies of `atHz`, from complex open, short and load; null where one is a gap, out of range or
- * equal to another. Null as a whole where a reference is missing or has no phase.
+ * The three error terms at the frequencies of `atHz`, from complex open, short and load; null where one is a gap, out
+ * of range or equal to another. Null as a whole where a reference is missing or has no phase.
  */
 export function termsAt(
   bench: BenchForCorrection,

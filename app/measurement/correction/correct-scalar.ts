@@ -5,9 +5,9 @@ import { scalarLimits } from "./scalar-limits.ts";
 import { zeroLine, zeroPhase } from "./zero-line.ts";
 
 /**
- * abs Γ over the 0 dB line: the references' (see `zeroLine`), or a level that was given, `zeroDb` dB above the sweep's own. The phase of
- * a complex sweep is referred to open and short where they have phase (response normalisation), else kept as it was measured. NaN outside
- * the references, or where one of them is a gap.
+ * abs Γ over the 0 dB line: the references' (see `zeroLine`), or a level that was given, `zeroDb` dB above the sweep's
+ * own. The phase of a complex sweep is referred to open and short where they have phase (response normalisation), else
+ * kept as it was measured. NaN outside the references, or where one of them is a gap.
  */
 export function correctScalar(sweep: Sweep, bench: BenchForCorrection, zeroDb: number | null): Corrected {
   const { open, short, load } = bench.references;

@@ -2,11 +2,12 @@ import type { BenchGiven, BenchStandards } from "../bench.ts";
 import type { Correction, Sweep, Warning } from "../sweep.ts";
 import { correctFully } from "./correct-fully.ts";
 import { correctScalar, none } from "./correct-scalar.ts";
-import { outcomeFaults, type ReadAs, referenceFaults } from "./faults.ts";
+import { referenceFaults } from "./faults.ts";
 import type { BenchReferences } from "./references.ts";
+import { outcomeFaults, type ReadAs } from "./scale-faults.ts";
 
-export type { ReadAs } from "./faults.ts";
-export type { BenchReferences, ReferenceRole } from "./references.ts";
+export type { BenchReferences } from "./references.ts";
+export type { ReadAs } from "./scale-faults.ts";
 
 export interface BenchForCorrection {
   references: BenchReferences;
@@ -23,11 +24,12 @@ export interface Corrected {
 /**
  * A sweep referred to the bench's test port (MEASUREMENT section 4).
  *
- * With phase everywhere (sweep, open, short, load): the three-term correction. Else abs Γ over the 0 dB line of open and short, of one of
- * them, or of the level that was given. Else the sweep as it is, kind "none". Grids may differ: references are interpolated (real and
- * imaginary part, or amplitude) and never extrapolated: outside their range the value is NaN, and `correction` says the range.
- * `sweep.benchLimits` come along, NaN where a limit is not known. Every doubt on the references is a warning; none of them is corrected
- * silently. `readAs` lets the way the files were read be compared. Never throws.
+ * With phase everywhere (sweep, open, short, load): the three-term correction. Else abs Γ over the 0 dB line of open
+ * and short, of one of them, or of the level that was given. Else the sweep as it is, kind "none". Grids may differ:
+ * references are interpolated (real and imaginary part, or amplitude) and never extrapolated: outside their range the
+ * value is NaN, and `correction` says the range. `sweep.benchLimits` come along, NaN where a limit is not known. Every
+ * doubt on the references is a warning; none of them is corrected silently. `readAs` lets the way the files were read
+ * be compared. Never throws.
  */
 export function correctSweep(sweep: Sweep, bench: BenchForCorrection, readAs: ReadAs = {}): Corrected {
   const faults = referenceFaults(sweep, bench.references, readAs);

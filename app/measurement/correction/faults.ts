@@ -1,14 +1,13 @@
-import type { Quantity, Sweep, Warning } from "../sweep.ts";
-import { type BenchReferences, commonSpan, magnitudeAt, type ReferenceRole } from "./references.ts";
+import type { Sweep, Warning } from "../sweep.ts";
+import { type BenchReferences, commonSpan, magnitudeAt } from "./references.ts";
+import { type ReadAs, scaleFaults } from "./scale-faults.ts";
 import { allMhz, mhz } from "./words.ts";
 import { sameSweep, zeroLine } from "./zero-line.ts";
 
-/** How the files behind the sweeps were read, where that is known. */
-export type ReadAs = Partial<Record<"sweep" | ReferenceRole, { quantity: Quantity; zeroDb?: number | null }>>;
-
 /**
  * What is wrong with the references of a sweep, as far as it can be seen without phase; each with a code and a plain
- * sentence. Nothing is repaired. A swapped open and short makes no difference to a scalar correction and is not looked for here.
+ * sentence. Nothing is repaired. A swapped open and short makes no difference to a scalar correction and is not looked
+ * for here.
  */
 export function referenceFaults(sweep: Sweep, references: BenchReferences, readAs: ReadAs): Warning[] {
   const { open, short, load } = references;
@@ -27,29 +26,6 @@ export function referenceFaults(sweep: Sweep, references: BenchReferences, readA
         message: `The references are in ${one.referenceOhm} Ω and the sweep in ${sweep.referenceOhm} Ω: were they taken with one instrument and one setting?`,
       })),
   ];
-}
-
-/** A corrected sweep that can't be one: the scales of sweep and references don't belong together. */
-export function outcomeFaults(corrected: Float64Array): Warning[] {
-  const values = corrected.filter((value) => !Number.isNaN(value)).sort();
-  if (values.length === 0) return [];
-  const middle = 20 * Math.log10(values[values.length >> 1]);
-  const top = 20 * Math.log10(values[values.length - 1]);
-  if (middle > OVER_DB)
-    return [
-      {
-        code: "not-one-scale",
-        message: `Half of the corrected sweep lies more than ${middle.toFixed(1)} dB over full reflection. Sweep and references are not levels of one setting: one was read as a level and the other as a loss, or the power or the attenuator was changed in between.`,
-      },
-    ];
-  if (top < UNDER_DB)
-    return [
-      {
-        code: "all-far-below",
-        message: `No point of the corrected sweep comes nearer to full reflection than ${(-top).toFixed(0)} dB. That is a load, or sweep and references are not levels of one setting.`,
-      },
-    ];
-  return [];
 }
 
 function rangeFaults(sweep: Sweep, references: (Sweep | undefined)[]): Warning[] {
@@ -111,29 +87,6 @@ function pairFaults(sweep: Sweep, references: BenchReferences): Warning[] {
   ];
 }
 
-function scaleFaults(readAs: ReadAs): Warning[] {
-  const { sweep, through: _through, ...references } = readAs;
-  if (!sweep) return [];
-  for (const [role, reference] of Object.entries(references)) {
-    const levels = [sweep, reference].map(({ quantity }) => quantity === "level");
-    if (levels[0] !== levels[1])
-      return [
-        {
-          code: "level-and-loss",
-          message: `The sweep was read as ${sweep.quantity} and the ${role} as ${reference.quantity}: a level and a reflection are only comparable where the instrument's own 0 dB line is at 0 dB.`,
-        },
-      ];
-    if (levels[0] && (sweep.zeroDb ?? 0) !== (reference.zeroDb ?? 0))
-      return [
-        {
-          code: "other-zero",
-          message: `The sweep was read with its 0 dB line at ${sweep.zeroDb ?? 0} dB and the ${role} at ${reference.zeroDb ?? 0} dB: their ratio is off by the difference. Read both with the same one.`,
-        },
-      ];
-  }
-  return [];
-}
-
 function stretch(at: Float64Array, values: Float64Array, bad: (value: number) => boolean): string | null {
   const hits: number[] = [];
   values.forEach((value, i) => {
@@ -146,7 +99,3 @@ function stretch(at: Float64Array, values: Float64Array, bad: (value: number) =>
 const NO_LOAD = 10 ** (-10 / 20);
 /** Half the difference over the mean that is 1 dB between the two. */
 const DISAGREE = (10 ** (1 / 20) - 1) / (10 ** (1 / 20) + 1);
-/** Noise and connectors give a few tenths of a decibel over full reflection, seldom one (common practice, no source). */
-const OVER_DB = 1;
-/** Every antenna reflects out of its bands; a long lossy feedline has been seen to leave 12 dB (common practice, no source). */
-const UNDER_DB = -20;

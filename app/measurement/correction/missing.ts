@@ -13,6 +13,8 @@ export function missingOf(
   threeTerm: boolean,
 ): Missing[] {
   const { open, short, load, through } = references;
+  const loadKnown = standards.loadReturnLossDb !== null || standards.loadOhm !== null;
+  const residualKnown = standards.loadReturnLossDb !== null || given.directivityDb !== null;
   const missing: Missing[] = [];
   const add = (code: string, message: string) => missing.push({ code, message });
   if (!open && !short)
@@ -29,11 +31,11 @@ export function missingOf(
       "load",
       "The directivity is not known, so no SWR has limits: sweep the port with the best load at hand.",
     );
-  else if (load && standards.loadReturnLossDb === null && standards.loadOhm === null)
+  else if (load && !(threeTerm ? residualKnown : loadKnown))
     add(
       "load-return-loss",
       threeTerm
-        ? "The load's own return loss is not known. After the correction it is the directivity that is left, so no SWR has limits: compare the load with a better one, or give its resistance as measured."
+        ? "The load's own return loss is not known. After the correction it is the directivity that is left, so no SWR has limits: compare the load with a better one and give the return loss that is found."
         : "The load's own return loss is not known, so the directivity may be better or worse than what the load leaves: compare the load with a better one, or give its resistance as measured.",
     );
   if ((!open || !short) && given.testPortMatchDb === null)

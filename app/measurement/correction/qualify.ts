@@ -42,8 +42,9 @@ export interface BenchQuality {
 }
 
 /**
- * What a bench can do, from its references alone (MEASUREMENT section 4), at the frequencies of the finer of open and short within both. An
- * empty bench gives empty arrays and what is missing. Never throws. Sources with the parts: `zeroLine`, `scalarLimits`, `residualLimits`.
+ * What a bench can do, from its references alone (MEASUREMENT section 4), at the frequencies of the finer of open and
+ * short within both. An empty bench gives empty arrays and what is missing. Never throws. Sources with the parts:
+ * `zeroLine`, `scalarLimits`, `residualLimits`.
  */
 export function qualifyBench(bench: BenchForCorrection, wish: Wish): BenchQuality {
   const { references, standards, given } = bench;

@@ -76,7 +76,10 @@ function directivityOf(
   return sure.map((value) => (Number.isNaN(value) ? stated : value + (own ?? 0)));
 }
 
-/** Notches of a load against a bridge were seen to be narrower than a tenth of their frequency (common practice, no source). */
+/**
+ * Notches of a load against a bridge were seen to be narrower than a tenth of their frequency (common practice, no
+ * source).
+ */
 const LOAD_REACH = 1.1;
 /** A quarter turn between a bridge and its port, half a metre of cable away, within this factor from 75 MHz on. */
 const RIPPLE_REACH = 1.5;

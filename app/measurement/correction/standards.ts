@@ -9,9 +9,9 @@ export interface StandardGammas {
 
 /**
  * Γ of open, short and load at `hz` (Hz) as the bench describes them, against `referenceOhm` (Ω). The open is a
- * capacitance, the short an inductance, each behind a lossless line of the offset delay τ (one way, so e^(−2jωτ)); the load is
- * a resistance without a line. What is null is ideal: +1, −1, 0. Lumped model of coaxial standards with its first
- * coefficients only (common practice in one-port calibration; D. M. Pozar, Microwave Engineering, ch. 2 for the
+ * capacitance, the short an inductance, each behind a lossless line of the offset delay τ (one way, so e^(−2jωτ)); the
+ * load is a resistance without a line. What is null is ideal: +1, −1, 0. Lumped model of coaxial standards with its
+ * first coefficients only (common practice in one-port calibration; D. M. Pozar, Microwave Engineering, ch. 2 for the
  * lines, from memory, not seen).
  */
 export function standardGammas(standards: BenchStandards, hz: number, referenceOhm: number): StandardGammas {

@@ -7,8 +7,8 @@ export interface Stretch {
 }
 
 /**
- * Stretches of ascending frequencies (Hz) for which `is` holds. With `bridge` > 1, those whose gap is narrower than that factor count as one
- * (for a ripple that crosses its limit again and again).
+ * Stretches of ascending frequencies (Hz) for which `is` holds. With `bridge` > 1, those whose gap is narrower than
+ * that factor count as one (for a ripple that crosses its limit again and again).
  */
 export function stretchesOf(frequencyHz: Float64Array, is: (i: number) => boolean, bridge = 1): Stretch[] {
   const found: Stretch[] = [];

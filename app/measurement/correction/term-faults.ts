@@ -2,10 +2,11 @@ import type { Warning } from "../sweep.ts";
 import type { ErrorTerms } from "./three-term.ts";
 
 /**
- * Faults that only the phase shows. Open and short exchanged turn the tracking term by half a turn and every result with it: its phase is a delay
- * that starts at 0 for f → 0 (a bridge and its cables turn nothing at direct current), so a straight line through the unwrapped phase
- * that starts near π says so. Looked for only where the sweep starts low enough for that line to be drawn (START of its end) and the line fits. A
- * detector with its leads exchanged looks the same, and the sentence says that too.
+ * Faults that only the phase shows. Open and short exchanged turn the tracking term by half a turn and every result
+ * with it: its phase is a delay that starts at 0 for f → 0 (a bridge and its cables turn nothing at direct current), so
+ * a straight line through the unwrapped phase that starts near π says so. Looked for only where the sweep starts low
+ * enough for that line to be drawn (START of its end) and the line fits. A detector with its leads exchanged looks the
+ * same, and the sentence says that too.
  */
 export function termFaults(frequencyHz: Float64Array, terms: readonly (ErrorTerms | null)[]): Warning[] {
   const line = phaseLine(frequencyHz, terms);

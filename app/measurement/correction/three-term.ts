@@ -12,25 +12,25 @@ export interface ErrorTerms {
 }
 
 /**
- * The error terms from what was measured on three standards and what they are: Γm = e00 + e10e01·Γ/(1 − e11·Γ), made linear as
- * Γ·a + b − Γ·Γm·c = Γm with a = e10e01 − e00·e11, b = e00, c = −e11, and solved by Cramer's rule. Null where a value is NaN or
- * two of the standards can't be told apart, in what they are or in what was measured (nearer than EQUAL of the
- * widest distance): the equations are then singular. Source: HP/Agilent, "Solving the one-port calibration
- * equations" (na.tm.agilent.com/vnahelp/tip20.html).
+ * The error terms from what was measured on three standards and what they are: Γm = e00 + e10e01·Γ/(1 − e11·Γ), made
+ * linear as Γ·a + b − Γ·Γm·c = Γm with a = e10e01 − e00·e11, b = e00, c = −e11; the load's equation is taken from the
+ * other two, which are solved for a and c. Null where a value is NaN or two of the standards can't be told apart, in
+ * what they are or in what was measured (nearer than EQUAL of the widest distance): the equations are then singular.
+ * Source: HP/Agilent, "Solving the one-port calibration equations" (na.tm.agilent.com/vnahelp/tip20.html).
  */
 export function solveTerms(measured: StandardGammas, actual: StandardGammas): ErrorTerms | null {
   if (!(distinctness(measured) > EQUAL) || !(distinctness(actual) > EQUAL)) return null;
-  const [o, s, l] = [
-    row(actual.open, measured.open),
-    row(actual.short, measured.short),
-    row(actual.load, measured.load),
-  ];
-  const whole = determinant([o.a, o.b, o.c], [s.a, s.b, s.c], [l.a, l.b, l.c]);
-  const a = over(determinant([o.m, o.b, o.c], [s.m, s.b, s.c], [l.m, l.b, l.c]), whole);
-  const b = over(determinant([o.a, o.m, o.c], [s.a, s.m, s.c], [l.a, l.m, l.c]), whole);
-  const c = over(determinant([o.a, o.b, o.m], [s.a, s.b, s.m], [l.a, l.b, l.m]), whole);
+  const products = { o: times(actual.open, measured.open), s: times(actual.short, measured.short) };
+  const load = times(actual.load, measured.load);
+  const [o, s] = [minus(actual.open, actual.load), minus(actual.short, actual.load)];
+  const [op, sp] = [minus(products.o, load), minus(products.s, load)];
+  const [om, sm] = [minus(measured.open, measured.load), minus(measured.short, measured.load)];
+  const whole = minus(times(op, s), times(o, sp));
+  const a = over(minus(times(op, sm), times(om, sp)), whole);
+  const c = over(minus(times(o, sm), times(om, s)), whole);
+  const directivity = plus(minus(measured.load, times(actual.load, a)), times(load, c));
   const match = { re: -c.re, im: -c.im };
-  return { directivity: b, match, tracking: plus(a, times(b, match)) };
+  return { directivity, match, tracking: plus(a, times(directivity, match)) };
 }
 
 /** Γ = (Γm − e00)/(e10e01 + e11(Γm − e00)). NaN in gives NaN out. */
@@ -46,20 +46,6 @@ export function applyTerms({ directivity, match, tracking }: ErrorTerms, measure
 export function distinctness({ open, short, load }: StandardGammas): number {
   const apart = [distance(open, short), distance(open, load), distance(short, load)];
   return Math.min(...apart) / Math.max(...apart);
-}
-
-function row(actual: Complex, measured: Complex) {
-  const product = times(actual, measured);
-  return { a: actual, b: ONE, c: { re: -product.re, im: -product.im }, m: measured };
-}
-
-type Row = [Complex, Complex, Complex];
-
-function determinant([a, b, c]: Row, [d, e, f]: Row, [g, h, i]: Row): Complex {
-  const first = times(a, minus(times(e, i), times(f, h)));
-  const second = times(b, minus(times(d, i), times(f, g)));
-  const third = times(c, minus(times(d, h), times(e, g)));
-  return plus(minus(first, second), third);
 }
 
 function distance(a: Complex, b: Complex): number {
@@ -83,7 +69,6 @@ function over(a: Complex, b: Complex): Complex {
   return { re: (a.re * b.re + a.im * b.im) / power, im: (a.im * b.re - a.re * b.im) / power };
 }
 
-const ONE: Complex = { re: 1, im: 0 };
 /**
  * Real bridges and standards give 0.2 to 0.6; the same standard swept twice differs by its noise and the
  * connector's repeatability, under 0.02 (common practice, no source).

@@ -21,8 +21,8 @@ export function isKnown({ swr, tolerance }: Wish, limits: BenchLimits, i: number
 }
 
 /**
- * The error of abs Γ, linear, that the wish allows: the smaller of the ways to SWR ± tolerance. With nothing but directivity it is the directivity that is needed.
- * NaN for an SWR under 1 or a tolerance that is not over 0.
+ * The error of abs Γ, linear, that the wish allows: the smaller of the ways to SWR ± tolerance. With nothing but
+ * directivity it is the directivity that is needed. NaN for an SWR under 1 or a tolerance that is not over 0.
  */
 export function allowedError({ swr, tolerance }: Wish): number {
   if (!(tolerance > 0)) return Number.NaN;

@@ -3,7 +3,10 @@ export function mhz(hz: number): string {
   return String(Number((hz / 1e6).toPrecision(5)));
 }
 
-/** Where these points of ascending frequencies lie: "above 210 MHz", "below 3 MHz", "from 5 to 7 MHz (with gaps)", "everywhere". */
+/**
+ * Where these points of ascending frequencies lie: "above 210 MHz", "below 3 MHz", "from 5 to 7 MHz (with gaps)",
+ * "everywhere".
+ */
 export function allMhz(at: Float64Array, indices: readonly number[]): string {
   const [first, last] = [indices[0], indices[indices.length - 1]];
   return whereMhz(at, first, last) + (last - first + 1 > indices.length ? " (not at every point)" : "");

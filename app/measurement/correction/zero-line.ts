@@ -10,9 +10,10 @@ export interface ZeroLine {
 }
 
 /**
- * The 0 dB line: the mean of the amplitudes of open and short, in which their first-order errors from directivity and source match
- * cancel (Keysight N9000B Spectrum Analyzer Mode reference, p. 547: point-by-point linear average of the two traces), or the one
- * there is. The same sweep given as both counts once. Null without either. Which of the two is which makes no difference here.
+ * The 0 dB line: the mean of the amplitudes of open and short, in which their first-order errors from directivity and
+ * source match cancel (Keysight N9000B Spectrum Analyzer Mode reference, p. 547: point-by-point linear average of the
+ * two traces), or the one there is. The same sweep given as both counts once. Null without either. Which of the two is
+ * which makes no difference here.
  */
 export function zeroLine({ open, short }: BenchReferences, atHz: Float64Array): ZeroLine | null {
   const opened = open && magnitudeAt(open, atHz);
@@ -43,8 +44,8 @@ export function sameSweep(a: Sweep, b: Sweep): boolean {
 }
 
 /**
- * The phase, as a unit vector, that full reflection of +1 has in these references: of open − short, in which directivity cancels, or
- * of the one there is. Null where they have no phase.
+ * The phase, as a unit vector, that full reflection of +1 has in these references: of open − short, in which
+ * directivity cancels, or of the one there is. Null where they have no phase.
  */
 export function zeroPhase(
   { open, short }: BenchReferences,

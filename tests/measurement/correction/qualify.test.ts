@@ -162,7 +162,9 @@ describe("the error a wish allows", () => {
     else expect(swr.low).toBeCloseTo(1, 9);
   });
 
-  /** REFERENCE section 5: D 40 dB, M 30 dB, T 0.1 dB: 10 dB → 9.550..10.475 (SWR 1.8547..1.9987); 20 → 19.057..21.059. */
+  /**
+   * REFERENCE section 5: D 40 dB, M 30 dB, T 0.1 dB: 10 dB → 9.550..10.475 (SWR 1.8547..1.9987); 20 → 19.057..21.059.
+   */
   it.each([
     [10, 9.55, 10.475],
     [20, 19.057, 21.059],

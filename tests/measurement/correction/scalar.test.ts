@@ -20,7 +20,10 @@ const level = (db: number) =>
 const db = (magnitude: number) => 20 * Math.log10(magnitude);
 
 describe("the 0 dB line", () => {
-  /** REFERENCE section 5, "averaging kind", average of magnitudes: open and short of Γm = D + Γ/(1 − MΓ), D and M in phase. */
+  /**
+   * REFERENCE section 5, "averaging kind", average of magnitudes: open and short of Γm = D + Γ/(1 − MΓ), D and M in
+   * phase.
+   */
   it.each([
     [0.01, 0.05, 0.0217],
     [0.0316, 0.1, 0.0873],
