@@ -17,7 +17,7 @@ export async function loadBenchPage(
   versionId: string | null,
 ) {
   const { project, person } = access;
-  const { bench, home, owner } = found;
+  const { bench, owner } = found;
   const here = bench.projectId === project.id;
   const [versions, taken, sweepCount, photographs] = await Promise.all([
     benches.findVersions(bench.id),
@@ -36,7 +36,7 @@ export async function loadBenchPage(
       name: bench.name,
       descriptionHtml: bench.description ? renderNote(bench.description) : null,
       owner: bench.ownerId === null ? null : bench.ownerId === person?.id ? "you" : owner,
-      home: here ? null : home.title,
+      elsewhere: !here,
       retiredAt: bench.retiredAt,
     },
     version: { ...shownVersion(chosen), parts: chosen.version.parts },
@@ -79,25 +79,18 @@ function shownVersion({ version, by }: benches.ListedVersion) {
   return { publicId, number, validFrom, remark, createdAt, by };
 }
 
-/** The sweep's page is in the project that keeps the bench: elsewhere there is no link to it. */
-function shownReference(
-  { kind, sweep, project, fileName, sha256, reading }: benches.FoundReference,
-  here: boolean,
-) {
+/** Where the bench is lent, what its references cover; their sweeps, files and pages are of the project that keeps it. */
+function shownReference({ kind, sweep, project, fileName }: benches.FoundReference, here: boolean) {
   const unread = sweep.readingId === null || sweep.problem !== null;
   const page = `/projects/${project}/sweeps/${sweep.publicId}`;
   return {
     kind,
-    sweep: sweep.publicId,
-    title: sweep.title,
-    fileName,
-    sha256,
     unread,
-    quantity: reading?.quantity ?? null,
+    fileName: here ? fileName : null,
+    href: here ? (unread ? `${page}/reading` : page) : null,
     pointCount: sweep.pointCount,
     startHz: sweep.startHz,
     stopHz: sweep.stopHz,
-    href: here ? (unread ? `${page}/reading` : page) : null,
   };
 }
 

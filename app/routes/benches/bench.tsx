@@ -85,7 +85,7 @@ export default function Bench({ loaderData, actionData }: Route.ComponentProps) 
         <div className="grid gap-8 content-start min-w-0">
           {bench.descriptionHtml && <Markdown html={bench.descriptionHtml} />}
           <Quality data={loaderData} />
-          {bench.home === null && (
+          {!bench.elsewhere && (
             <Photographs
               project={project.publicId}
               of={{ bench: bench.publicId }}

@@ -44,10 +44,10 @@ export function BenchHead({ data }: { data: BenchPageData }) {
         {versions.length > 1 && ` · version ${version.number} of ${versions.length}`}
         {version.remark && ` · ${version.remark}`}
       </p>
-      {(bench.owner || bench.home || bench.retiredAt) && (
+      {(bench.owner || bench.elsewhere || bench.retiredAt) && (
         <p className="flex flex-wrap gap-2">
           {bench.owner && <Tag tone="fen">{bench.owner === "you" ? "yours" : `${bench.owner}’s own`}</Tag>}
-          {bench.home && <Tag>kept in another project</Tag>}
+          {bench.elsewhere && <Tag>kept in another project</Tag>}
           {bench.retiredAt && <Tag tone="clay">put away</Tag>}
         </p>
       )}

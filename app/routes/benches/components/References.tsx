@@ -55,7 +55,7 @@ function Reference({ reference }: { reference: BenchPageData["references"][numbe
         )}
         {unread && <Tag tone="clay">to be read</Tag>}
       </p>
-      <p className="text-small soft break-all">{fileName}</p>
+      {fileName && <p className="text-small soft break-all">{fileName}</p>}
       {startHz !== null && stopHz !== null && (
         <p className="text-small">
           {spanWords({ fromHz: startHz, toHz: stopHz })}
