@@ -7,7 +7,9 @@ export const otherReference: Definition = {
   id: "other-reference",
   title: "Another reference",
   says: "The same impedance has another reflection coefficient and another SWR against another reference. Where a sweep has phase, it is brought from one to the other through its impedance.",
-  formulas: [String.raw`\Gamma' = \frac{\Gamma-k}{1-k\,\Gamma},\qquad k=\frac{Z_0'-Z_0}{Z_0'+Z_0}`],
+  formulas: [
+    String.raw`\Gamma_\mathrm{new} = \frac{\Gamma-k}{1-k\,\Gamma},\qquad k=\frac{Z_\mathrm{new}-Z_\mathrm{old}}{Z_\mathrm{new}+Z_\mathrm{old}}`,
+  ],
   source: "Follows from Γ = (Z − Z0)/(Z + Z0) put in twice; any text on lines.",
   limits: "Without phase it can't be done: a scalar sweep keeps its file's reference.",
   example: example(

@@ -7,7 +7,7 @@ export const qSlope: Definition = {
   title: "Q from the slope of the impedance",
   says: "With phase, Q follows from how fast R and X change with frequency, without asking where the band ends. The slopes are those of parabolas by least squares through the samples near the dip, each weighed by what the noise makes of its impedance.",
   formulas: [
-    String.raw`Q \approx \frac{f_0}{2R}\sqrt{R'^2+\left(X'+\frac{|X|}{f_0}\right)^2}`,
+    String.raw`Q \approx \frac{f_0}{2R}\sqrt{\left(\frac{\mathrm{d}R}{\mathrm{d}f}\right)^2+\left(\frac{\mathrm{d}X}{\mathrm{d}f}+\frac{|X|}{f_0}\right)^2}`,
     String.raw`\sigma_Z = \sigma_\Gamma\,\frac{2 Z_0}{|1-\Gamma|^2}`,
   ],
   source:

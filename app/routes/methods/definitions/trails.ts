@@ -5,7 +5,7 @@ export const trails: Definition = {
   id: "trails",
   title: "Trails",
   says: "Dips of sweeps that follow one another are paired by the least total distance in log frequency within a gate; depth and width are weak evidence. What finds no partner begins or ends a trail. A person's correction is kept and outranks the pairing for ever.",
-  formulas: [String.raw`\min_\pi \sum_i \left|\ln\frac{f'_{\pi(i)}}{f_i}\right|`],
+  formulas: [String.raw`\min_\pi \sum_i \left|\ln\frac{g_{\pi(i)}}{f_i}\right|`],
   source:
     "The assignment problem, H. W. Kuhn, Naval Research Logistics Quarterly 2, 83–97, 1955 (from memory, not seen); the gate and the weights are own rules, measured on generated histories.",
   limits:
