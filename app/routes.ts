@@ -27,6 +27,7 @@ export default [
       route("sweeps/:sweep/reading", "routes/sweeps/reading.tsx"),
       route("sweeps/:sweep/repeats", "routes/sweeps/repeats.tsx"),
       route("dips/:dip", "routes/dips/dip.tsx"),
+      route("trails/:trail", "routes/trails/trail.tsx"),
       route("cables", "routes/cables/cables.tsx"),
       route("benches", "routes/benches/list.tsx"),
       route("benches/new", "routes/benches/new.tsx"),

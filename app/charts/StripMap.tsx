@@ -62,7 +62,6 @@ export function StripMap(props: StripMapProps) {
               {children}
             </div>
           )}
-          <StripWords topPx={TOP_PX} {...props} />
           {scene.trails.length > 0 && (
             // biome-ignore lint/a11y/noSvgWithoutTitle: its links carry their own names
             <svg className="chart-layer chart-marks strip-trails" height={heightPx}>
@@ -80,6 +79,7 @@ export function StripMap(props: StripMapProps) {
               </g>
             </svg>
           )}
+          <StripWords topPx={TOP_PX} {...props} />
         </div>
       </div>
     </div>

@@ -79,9 +79,9 @@ const GROUND_PX = 21;
 const DEEPEST_DB = 30;
 /** Depth of the hollows by how many strips there are; more of them are drawn lower, never narrower. */
 const DEPTHS_PX: readonly [most: number, px: number][] = [
-  [8, 68],
-  [16, 56],
-  [36, 42],
+  [10, 68],
+  [20, 54],
+  [40, 40],
   [Number.POSITIVE_INFINITY, 30],
 ];
 /** Columns of a strip: a dip narrower than one keeps its lowest point. */

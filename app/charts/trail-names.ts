@@ -16,7 +16,8 @@ const OFFSET_PX = 12;
 const HALF_HEIGHT_PX = 8;
 const DOT_PX = 7;
 type Place = Pick<TrailName, "side" | "shiftY">;
-const PLACES: Place[] = [0, 13, -13].flatMap((shiftY) => [
+/** Beside and a little under the stop, where the land is; over it last. */
+const PLACES: Place[] = [12, 0, 26, -14].flatMap((shiftY) => [
   { side: "right" as const, shiftY },
   { side: "left" as const, shiftY },
 ]);
@@ -70,7 +71,7 @@ function isClear(
   tier: number,
   plotWidthPx: number,
 ): boolean {
-  if (box.left < 0 || box.right > plotWidthPx) return false;
+  if (box.left < 0 || box.right > plotWidthPx || box.top < 0) return false;
   return all.every((other) => {
     if (other === own) return true;
     if (other.name) {

@@ -1,7 +1,7 @@
-import { asc, eq, sql } from "drizzle-orm";
+import { and, asc, desc, eq, isNull, sql } from "drizzle-orm";
 import { db, type Queryable } from "./client.server.ts";
 import { dipNumber } from "./dip-numbers.server.ts";
-import { dips, notes, sweeps, trailDips, trails } from "./schema/index.ts";
+import { dips, notes, sweeps, trailDips, trails, users } from "./schema/index.ts";
 
 /** Numbers of a dip as its trail is read; limits of noise alone where the bench's are not known. */
 const stopColumns = {
@@ -50,6 +50,28 @@ export async function findAllByTrail(trailId: number, tx: Queryable = db) {
     .where(eq(trailDips.trailId, trailId))
     .orderBy(asc(orderTime), asc(sweeps.id))
     .limit(MOST_STOPS);
+}
+
+/** What was said last on the trail's dips, newest first. */
+export async function findNotes(trailId: number, limit: number, tx: Queryable = db) {
+  return tx
+    .select({
+      publicId: notes.publicId,
+      body: notes.body,
+      at: notes.createdAt,
+      author: users.name,
+      sweepTitle: sweeps.title,
+      dipPublicId: dips.publicId,
+      frequencyHz: dips.frequencyHz,
+    })
+    .from(notes)
+    .innerJoin(trailDips, eq(trailDips.dipId, notes.dipId))
+    .innerJoin(dips, eq(dips.id, notes.dipId))
+    .innerJoin(sweeps, eq(sweeps.id, dips.sweepId))
+    .leftJoin(users, eq(users.id, notes.authorId))
+    .where(and(eq(trailDips.trailId, trailId), isNull(notes.removedAt)))
+    .orderBy(desc(notes.createdAt), desc(notes.id))
+    .limit(limit);
 }
 
 /** By when a sweep was taken, or where that is unknown by when it came in: as in every list of sweeps. */

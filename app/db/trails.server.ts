@@ -207,6 +207,11 @@ export async function deleteDecision(oneId: number, otherId: number, tx: Queryab
   return affectedRows > 0;
 }
 
+export async function findSweepTitle(sweepId: number, tx: Queryable = db): Promise<string | undefined> {
+  const rows = await tx.select({ title: sweeps.title }).from(sweeps).where(eq(sweeps.id, sweepId)).limit(1);
+  return rows[0]?.title;
+}
+
 export async function insertVerdictEvent(
   event: Omit<typeof verdictEvents.$inferInsert, "id" | "publicId">,
   tx: Queryable,
