@@ -40,21 +40,32 @@ export interface NotJudged {
 }
 
 /**
- * Resonances of every part of the antenna up to `upToHz` (Hz), ascending: n·k·c/(4L) with odd n for a wire grounded at one end,
+ * Resonances of every part of the antenna that reach into `fromHz`..`upToHz` (Hz), ascending: n·k·c/(4L) with odd n for a wire grounded at one end,
  * n·k·c/(2L) for one that is free at both or fed in the middle, n·k·c/L for a loop. Parts without a sensible length are left
- * out: `notJudged` names them. At most MOST_ORDERS of a series.
+ * out: `notJudged` names them. No order over MOST_ORDER.
  *
  * k at order 1: handbook lengths 234/f and 468/f ft, so 0.951 (on-the-numbers.co.uk/useful-info.html, seen), loops 1005/f ft, so
  * 1.022 (ARRL Antenna Book; from memory, not seen). At order n the open ends take the same share of one half wave: k = 1 − (1 −
  * k1)/n, after the long-wire rule L = 492·(n − 0.05)/f ft (ARRL Antenna Book; from memory, not seen).
  */
-export function predictionsOf(antenna: Antenna, upToHz: number, unit: LengthUnit = "metres"): Prediction[] {
+export function predictionsOf(
+  antenna: Antenna,
+  upToHz: number,
+  unit: LengthUnit = "metres",
+  fromHz = 0,
+): Prediction[] {
+  const range = { fromHz, upToHz, unit };
   const parts = antenna.elements
     .filter(({ lengthM }) => isLength(lengthM))
-    .flatMap((element) =>
-      RULES[element.kind].flatMap((rule) => seriesOf(ofElement(element, rule), upToHz, unit)),
-    );
-  return [...parts, ...ofFeedline(antenna, upToHz, unit)].sort((a, b) => a.frequencyHz - b.frequencyHz);
+    .flatMap((element) => RULES[element.kind].flatMap((rule) => seriesOf(ofElement(element, rule), range)));
+  return [...parts, ...ofFeedline(antenna, range)].sort((a, b) => a.frequencyHz - b.frequencyHz);
+}
+
+/** Which predictions are wanted: of frequencies from, to, Hz, and how lengths are written. */
+interface Wanted {
+  fromHz: number;
+  upToHz: number;
+  unit: LengthUnit;
 }
 
 /** The parts that make no predictions, and why. */
@@ -97,7 +108,7 @@ function ofElement({ key, name, kind, lengthM, insulated }: AntennaElement, rule
  * The outside of the feedline as a wire: its far end grounded or free, so any number of quarter waves; without a choke also on
  * through half of a dipole, or a radial, to that one's end.
  */
-function ofFeedline({ feedline, choke, elements }: Antenna, upToHz: number, unit: LengthUnit): Prediction[] {
+function ofFeedline({ feedline, choke, elements }: Antenna, range: Wanted): Prediction[] {
   if (!feedline || !isLength(feedline.lengthM)) return [];
   const lengthM = feedline.lengthM as number;
   const condition = choke ? "if the choke does not stop it there" : "";
@@ -119,7 +130,7 @@ function ofFeedline({ feedline, choke, elements }: Antenna, upToHz: number, unit
     };
     alone.push({ ...joined, series: "quarter", first: 1 }, { ...joined, series: "half", first: 1, step: 1 });
   }
-  return alone.flatMap((part) => seriesOf(part, upToHz, unit));
+  return alone.flatMap((part) => seriesOf(part, range));
 }
 
 /** What the feedline's outside joins: half of the longest dipole, else a radial. */
@@ -134,14 +145,15 @@ function armOf(elements: readonly AntennaElement[]): { name: string; lengthM: nu
   return radial ? { name: radial.name || "a radial", lengthM: radial.lengthM ?? 0 } : null;
 }
 
-function seriesOf(part: Part, upToHz: number, unit: LengthUnit): Prediction[] {
+function seriesOf(part: Part, { fromHz, upToHz, unit }: Wanted): Prediction[] {
   const base = SPEED_OF_LIGHT / (DIVISOR[part.series] * part.pathM);
   const made: Prediction[] = [];
-  for (let order: number = part.first; made.length < MOST_ORDERS; order += part.step) {
+  for (let order: number = part.first; order <= MOST_ORDER; order += part.step) {
     const k = part.series === "loop" ? 1 + (part.k - 1) / order : 1 - (1 - part.k) / order;
     const frequencyHz = order * k * base;
     const half = order * base * (part.spread / order + SURROUNDINGS * (1 - 1 / order));
     if (!(frequencyHz - half <= upToHz)) break;
+    if (frequencyHz + half < fromHz) continue;
     const spacingHz = part.step * base;
     const arithmetic = arithmeticOf(part, order, k, frequencyHz, unit);
     const { name, series, condition, weight, pathM } = part;
@@ -190,8 +202,8 @@ const SURROUNDINGS = 0.02;
 const FED = 1;
 const PARASITE = 0.4;
 const RARE = 0.15;
-/** 20 times the lowest design frequency is order 20; a long feedline has some more. */
-const MOST_ORDERS = 60;
+/** 20 times the lowest design frequency is order 20 of its element; the outside of a long feedline goes further. */
+const MOST_ORDER = 80;
 
 const usual = { condition: "", first: 1 } as const;
 const grounded: Rule = { ...usual, series: "quarter", step: 2, spread: LOOSE, weight: PARASITE };

@@ -1,6 +1,6 @@
 import type { Cause, CauseContext, JudgedDip } from "../causes.ts";
 import { formatFrequency } from "../units.ts";
-import { standingOf } from "./rank.ts";
+import { type Standing, standingOf } from "./rank.ts";
 import { offsetWords } from "./words.ts";
 
 /**
@@ -10,38 +10,50 @@ import { offsetWords } from "./words.ts";
  * and 0.06, 0.02 to 0.035 in NEC-2 (tests/fixtures/nec and REFERENCE values 3.068, 5.142, 7.218, 9.295 for a vertical).
  */
 export function byMultiples(dip: JudgedDip, { dips }: CauseContext, parts: readonly Cause[]): Cause[] {
-  let best: Cause | null = null;
+  let best: Multiple | null = null;
   for (const lower of dips) {
     if (lower.edge || !(lower.frequencyHz < dip.frequencyHz / 2)) continue;
-    const cause = multipleOf(dip, lower);
-    if (cause && cause.score > (best?.score ?? Number.NEGATIVE_INFINITY)) best = cause;
+    const multiple = multipleOf(dip, lower);
+    if (multiple && multiple.standing.score > (best?.standing.score ?? Number.NEGATIVE_INFINITY))
+      best = multiple;
   }
-  const said = parts.some(
-    ({ order, offsetHz, toleranceHz }) => order === best?.order && Math.abs(offsetHz) < toleranceHz,
-  );
-  return best && !said ? [best] : [];
+  if (best === null) return [];
+  const { order } = best;
+  const said = parts.some((part) => part.order === order && Math.abs(part.offsetHz) < part.toleranceHz);
+  return said ? [] : [causeOf(best)];
 }
 
-function multipleOf(dip: JudgedDip, lower: JudgedDip): Cause | null {
+interface Multiple {
+  lower: JudgedDip;
+  order: number;
+  ratio: number;
+  predictedHz: number;
+  standing: Standing;
+}
+
+function multipleOf(dip: JudgedDip, lower: JudgedDip): Multiple | null {
   const order = nearestOdd(dip.frequencyHz / lower.frequencyHz);
   if (order < 3 || order > MOST) return null;
   const ratio = (order - END) / (1 - END);
   const predictedHz = ratio * lower.frequencyHz;
-  const toleranceHz = predictedHz * SPREAD;
   const standing = standingOf(dip.frequencyHz, dip.frequencyUncertaintyHz, {
     predictedHz,
-    toleranceHz,
+    toleranceHz: predictedHz * SPREAD,
     spacingHz: 2 * lower.frequencyHz,
     weight: WEIGHT,
   });
-  if (!standing) return null;
+  return standing && { lower, order, ratio, predictedHz, standing };
+}
+
+function causeOf({ lower, order, ratio, predictedHz, standing }: Multiple): Cause {
   const at = formatFrequency(lower.frequencyHz, lower.frequencyUncertaintyHz ?? null);
+  const sum = `${ratio.toFixed(3)} × ${at} = ${formatFrequency(Number(predictedHz.toPrecision(4)))}`;
   return {
     kind: "multiple",
     part: null,
     order,
     title: `may be the ${order}-fold of the dip at ${at}`,
-    arithmetic: `${ratio.toFixed(3)} × ${at} = ${formatFrequency(Number(predictedHz.toPrecision(4)))}${offsetWords(standing, predictedHz)}`,
+    arithmetic: sum + offsetWords(standing, predictedHz),
     predictedHz,
     ...standing,
     hzPerMetre: 0,
