@@ -73,11 +73,18 @@ const ROWS: Row[] = [
   ["70 cm", ...SAME(430_000, 440_000), "420-450 MHz in the USA; 440-450 MHz in parts of region 3"],
 ];
 
+/**
+ * Where the parts that were seen stood. Region 1: 160 m, 80 m, 60 m and the foot of 40 m docslib.org/doc/5353906, 17 m uba.be
+ * (bandplanning between 18.068 and 18.168 MHz), 6 m dokumen.tips (bandplan 50-52 MHz, 2011), 4 m and 2 m hamradio.com.pl (Bandplan
+ * UKF, 2004). Region 2: docslib.org/doc/13887483. Region 3: pdfslide.us, document R3-004. Newer plans of regions 2
+ * (September 2020) and 3 (November 2024) were not seen; a public review of the latter says that it drops 7.2-7.3 and
+ * 440-450 MHz, which this table never had.
+ */
 const REGION_SOURCES: Record<ItuRegion, BandSource> = {
   1: {
     title: "IARU Region 1 HF band plan; IARU Region 1 VHF Handbook 8.00 (November 2017) above 30 MHz",
     date: "2020-10-16",
-    seen: "seen up to 7.1 MHz, the rest from memory",
+    seen: "seen for 160, 80, 60, 17, 6, 4 and 2 m, the rest from memory",
   },
   2: {
     title: "IARU Region 2 MF/HF band plan",

@@ -36,6 +36,47 @@ describe("single frequencies", () => {
   });
 });
 
+/**
+ * First and last kilohertz of the published segments that were seen: IARU Region 1 HF band plan, 16 October 2020
+ * (docslib.org/doc/5353906), its 18 MHz part at uba.be, the 50-52 MHz plan of 2011 (dokumen.tips), 70 and 144 MHz of 2004
+ * (hamradio.com.pl); IARU Region 2 MF/HF band plan, 1 January 2008 (docslib.org/doc/13887483).
+ */
+describe("edges of the published plans", () => {
+  test.each([
+    [1, "160 m", 1810, 2000],
+    [1, "80 m", 3500, 3800],
+    [1, "60 m", 5351.5, 5366.5],
+    [1, "17 m", 18_068, 18_168],
+    [1, "6 m", 50_000, 52_000],
+    [1, "4 m", 70_000, 70_500],
+    [1, "2 m", 144_000, 146_000],
+    [2, "160 m", 1800, 2000],
+    [2, "80 m", 3500, 4000],
+  ] as [ItuRegion, string, number, number][])(
+    "region %d, %s: %d to %d kHz",
+    (region, name, lowKhz, highKhz) => {
+      const band = bandAt(region, ((lowKhz + highKhz) / 2) * 1e3);
+      expect(band).toMatchObject({ name, lowHz: lowKhz * 1e3, highHz: highKhz * 1e3 });
+      expect(bandAt(region, lowKhz * 1e3 - 1)).toBeNull();
+      expect(bandAt(region, highKhz * 1e3 + 1)).toBeNull();
+    },
+  );
+
+  test("every band of a region lies within the general one of its name, and none overlaps the next", () => {
+    for (const region of [1, 2, 3] as ItuRegion[]) {
+      const bands = bandsOverlapping(region, 0, 1e9);
+      for (const [i, band] of bands.entries()) {
+        const general = bandsOverlapping(null, band.lowHz, band.highHz).find(
+          ({ name }) => name === band.name,
+        );
+        expect(general?.lowHz ?? Number.POSITIVE_INFINITY).toBeLessThanOrEqual(band.lowHz);
+        expect(general?.highHz ?? 0).toBeGreaterThanOrEqual(band.highHz);
+        if (i > 0) expect(band.lowHz).toBeGreaterThan(bands[i - 1].highHz);
+      }
+    }
+  });
+});
+
 describe("ranges", () => {
   test("bands that a sweep touches, ascending", () => {
     expect(bandsOverlapping(1, 1e6, 30e6).map((band) => band.name)).toEqual([
