@@ -60,7 +60,8 @@ async function analyseFile(
     return read;
   };
   const own = (one: SweepFile, with_: Given) => readAny(one, with_, { picture: readAPicture });
-  const result = asked
+  const ratio = asked?.references.open !== undefined || asked?.references.short !== undefined;
+  const result = ratio
     ? await readLevels({ name: file, bytes }, given, own)
     : await own({ name: file, bytes }, given);
   if (!result.ok) return { file, sha256, error: result.problem, ...(picture ? { picture } : {}) };

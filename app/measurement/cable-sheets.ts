@@ -69,6 +69,7 @@ export const CABLE_SHEETS: readonly CableSheet[] = [
     source:
       "sheet of type 8216, dB per 100 ft at 30 to 900 MHz (second-hand: a table checked against the sheet)",
     points: per100ft("30: 4.85 50: 5.8 150: 10.6 450: 20.5 900: 31"),
+    steelCore: true,
   },
   {
     name: "RG-59/U (type 9259, foam PE, 75 Ω)",

@@ -13,15 +13,20 @@ export interface CableEntry {
   k2: number;
   velocityFactor: number;
   impedanceOhm: number;
-  /** Of the sheet, ascending; the entry holds from the first to the last. */
+  /** Of the sheet, ascending; the entry holds up to the last. */
   points: readonly CablePoint[];
+  /** From here on the entry holds: below the first point by the law of the skin effect alone. */
+  lowestMhz: number;
   source: string;
   /** How far a reel may be from the sheet, as a part of the loss in dB. */
   lossUncertainty: number;
 }
 
 /** What a sheet says, before the fit. */
-export type CableSheet = Omit<CableEntry, "k1" | "k2">;
+export type CableSheet = Omit<CableEntry, "k1" | "k2" | "lowestMhz"> & {
+  /** A thin copper skin on steel, which leaves the law of the skin effect at low frequencies. */
+  steelCore?: true;
+};
 
 /**
  * The cable of this name; case, spaces and punctuation don't matter, and a beginning will do ("RG-213" for "RG-213/U
@@ -77,7 +82,14 @@ const SHORTEST = 3;
 /** Points at one frequency leave the two losses inseparable: their determinant is then rounding. */
 const FLAT = 1e-12;
 
-export const CABLES: readonly CableEntry[] = CABLE_SHEETS.map((sheet) => {
+/**
+ * Down to here k1·√f holds below a sheet's first point: the skin of copper, 66 µm deep at 1 MHz, is then still thin
+ * against the conductors of these cables (skin depth: D. M. Pozar, Microwave Engineering, ch. 1, from memory, not seen).
+ */
+const SKIN_MHZ = 1;
+
+export const CABLES: readonly CableEntry[] = CABLE_SHEETS.map(({ steelCore, ...sheet }) => {
   const { k1, k2 } = fitCable(sheet.points);
-  return { ...sheet, k1, k2 };
+  const [{ mhz: first }] = sheet.points;
+  return { ...sheet, k1, k2, lowestMhz: steelCore ? first : Math.min(first, SKIN_MHZ) };
 });

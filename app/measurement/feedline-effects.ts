@@ -1,3 +1,4 @@
+import type { CableEntry } from "./cables.ts";
 import type { BenchLimits, PictureLimits, Sweep, Warning } from "./sweep.ts";
 
 /** What taking out a feedline does to limits, and what there is to say of it. `gain` is abs Γ there over abs Γ here, per point. */
@@ -35,7 +36,12 @@ export function otherImpedance(name: string, ownOhm: number, seenOhm: number, co
 }
 
 /** What the removal made of the values: over full reflection, or not known. */
-export function lineWarnings(before: Sweep, after: Sweep, gain: Float64Array, name: string): Warning[] {
+export function lineWarnings(
+  before: Sweep,
+  after: Sweep,
+  gain: Float64Array,
+  cable: CableEntry | null,
+): Warning[] {
   const warnings: Warning[] = [];
   let over = 0;
   let unknown = 0;
@@ -48,10 +54,20 @@ export function lineWarnings(before: Sweep, after: Sweep, gain: Float64Array, na
       code: "feedline-over-unity",
       message: `With the feedline removed, ${over} of ${gain.length} points return more than was sent: the cable entry is wrong (too long or too lossy), or the sweep's 0 dB line is. They are kept, marked, and have no SWR.`,
     });
-  if (unknown > 0)
+  if (cable && unknown > 0)
     warnings.push({
       code: "cable-range",
-      message: `${unknown} of ${gain.length} points lie outside the frequencies for which the sheet of ${name} gives a loss; they are gaps at the antenna. Give k1 and k2 of your own to go further.`,
+      message: `${unknown} of ${gain.length} points lie outside the frequencies for which ${cable.name} has a loss in the table; they are gaps at the antenna. Give k1 and k2 of your own to go further.`,
+    });
+  const firstHz = (cable?.points[0].mhz ?? 0) * 1e6;
+  const below = before.frequencyHz.reduce(
+    (n, hz, i) => n + Number(hz < firstHz && !Number.isNaN(gain[i])),
+    0,
+  );
+  if (cable && below > 0)
+    warnings.push({
+      code: "cable-below-sheet",
+      message: `The sheet of ${cable.name} begins at ${cable.points[0].mhz} MHz: at ${below} of ${gain.length} points the loss follows from the skin effect, not from a printed figure.`,
     });
   return warnings;
 }

@@ -1,4 +1,4 @@
-import { cableNamed } from "./cables.ts";
+import { type CableEntry, cableNamed } from "./cables.ts";
 import { lineWarnings, otherImpedance, scaleLimits, scalePicture } from "./feedline-effects.ts";
 import { gammaToSwr, swrToGamma } from "./reflection.ts";
 import { renormalise } from "./renormalise.ts";
@@ -26,8 +26,9 @@ export function matchedLossDb(
 
 /**
  * The sweep as it is at the far end of the line: abs Γ times 10^(A/10) with A the matched loss one way in dB, and for
- * complex sweeps Γ times e^(2(α+jβ)l), β = 2πf/(c·VF). NaN stays NaN. Where the cable's sheet has no figures (outside
- * its first and last point) the loss is not known, and the value becomes NaN; own k1 and k2 hold everywhere. abs Γ over
+ * complex sweeps Γ times e^(2(α+jβ)l), β = 2πf/(c·VF). NaN stays NaN. Above the last point of
+ * the cable's sheet the loss is not known, and the value becomes NaN; below the first it follows the law of the skin
+ * effect as far as that holds (`lowestMhz`), which is said; own k1 and k2 hold everywhere. abs Γ over
  * 1 is kept and said. A cable of another impedance than the sweep's reference is taken out in its own (complex sweeps
  * only; a scalar one can't be, and that is said). Limits go along: with g = 10^(A/10), d' = g·d, M' = M/g, T' = T plus
  * what the cable's own uncertainty makes of g; so abs Γ' ± (d' + T'·abs Γ' + M'·abs Γ'²) is g times the old interval.
@@ -45,7 +46,7 @@ export function removeFeedline(sweep: Sweep, line: Feedline): { sweep: Sweep; wa
   if (ownOhm !== seenOhm)
     warnings.push(otherImpedance(line.name, ownOhm, seenOhm, sweep.gammaRe !== undefined));
   const inLine = renormalise(sweep, ownOhm);
-  const gain = gainsOf(sweep.frequencyHz, line, cable?.points);
+  const gain = gainsOf(sweep.frequencyHz, line, cable);
   const moved: Sweep = { ...inLine, plane: "antenna", magnitude: times(inLine.magnitude, gain) };
   if (inLine.gammaRe && inLine.gammaIm) {
     const turned = turn(inLine.gammaRe, inLine.gammaIm, sweep.frequencyHz, gain, line);
@@ -56,7 +57,7 @@ export function removeFeedline(sweep: Sweep, line: Feedline): { sweep: Sweep; wa
   if (sweep.pictureLimits) moved.pictureLimits = scalePicture(sweep.pictureLimits, gain);
   const out = renormalise(moved, seenOhm);
   if (ownOhm !== seenOhm) delete out.benchLimits;
-  warnings.push(...lineWarnings(sweep, out, gain, line.name));
+  warnings.push(...lineWarnings(sweep, out, gain, cable));
   return { sweep: out, warnings };
 }
 
@@ -91,13 +92,9 @@ function faultOf({ k1, k2, lengthM, velocityFactor }: Feedline): string | null {
 }
 
 /** abs Γ at the far end over that at the near end, per point; NaN where the sheet has no figures. */
-function gainsOf(
-  frequencyHz: Float64Array,
-  line: Feedline,
-  points?: readonly { mhz: number }[],
-): Float64Array {
-  const fromHz = points ? points[0].mhz * 1e6 : 0;
-  const toHz = points ? points[points.length - 1].mhz * 1e6 : Number.POSITIVE_INFINITY;
+function gainsOf(frequencyHz: Float64Array, line: Feedline, cable: CableEntry | null): Float64Array {
+  const fromHz = (cable?.lowestMhz ?? 0) * 1e6;
+  const toHz = (cable?.points[cable.points.length - 1].mhz ?? Number.POSITIVE_INFINITY) * 1e6;
   return Float64Array.from(frequencyHz, (hz) =>
     hz >= fromHz && hz <= toHz ? 10 ** (matchedLossDb(line, hz) / 10) : Number.NaN,
   );

@@ -108,6 +108,16 @@ describe("removeFeedline", () => {
     expect(removeFeedline(seen, { ...line, name: "own values" }).warnings).toEqual([]);
   });
 
+  it("follows the skin effect below a sheet that begins later, and says so, but not on a steel core", () => {
+    const seen = scalarSweep([0.9e6, 1e6, 7e6, 30e6], [0.1, 0.1, 0.1, 0.1]);
+    const low = removeFeedline(seen, { ...losing(0), name: "LMR-400" });
+    expect(Array.from(low.sweep.magnitude, Number.isNaN)).toEqual([true, false, false, false]);
+    expect(codes(low.warnings)).toEqual(["cable-range", "cable-below-sheet"]);
+    expect(low.warnings[1].message).toContain("begins at 30 MHz: at 2 of 4 points");
+    const steel = removeFeedline(seen, { ...losing(0), name: "RG-174" });
+    expect(Array.from(steel.sweep.magnitude, Number.isNaN)).toEqual([true, true, true, false]);
+  });
+
   it("takes a 75 Ω cable out in 75 Ω where there is phase, and says what it can't do where there is none", () => {
     const line: Feedline = { name: "RG-59", k1: 0, k2: 0, lengthM: 299792458 / 100e6 / 4, velocityFactor: 1 };
     // A quarter wave of 75 Ω turns 50 Ω into 75²/50 = 112.5 Ω.

@@ -60,13 +60,13 @@ function turnBack(re: Float64Array, im: Float64Array, phase: { re: Float64Array;
 
 function limitNotes({ references, standards, given }: BenchForCorrection, line: boolean): Warning[] {
   const notes: Warning[] = [];
-  if (line && references.load && standards.loadReturnLossDb === null && standards.loadOhm === null)
+  if (references.load && standards.loadReturnLossDb === null && standards.loadOhm === null)
     notes.push({
       code: "load-not-described",
       message:
         "The directivity is what the load leaves: the load's own error is inside it, either way. The bench does not give the load's return loss.",
     });
-  else if (!(line && references.load) && given.directivityDb === null)
+  else if (!references.load && given.directivityDb === null)
     notes.push({
       code: "directivity-unknown",
       message: "Without a sweep of the load the directivity is not known, and so no limits of SWR are.",
