@@ -1,7 +1,20 @@
 import type { Antenna, AntennaElement, ElementKind } from "./antenna.ts";
+import {
+  COVERED,
+  LOOP_K,
+  LOOSE,
+  PARASITE,
+  RARE,
+  RULES,
+  type Rule,
+  type Series,
+  WIRE_K,
+} from "./element-rules.ts";
 import { SPEED_OF_LIGHT } from "./feedline.ts";
 import { formatLength, type LengthUnit } from "./lengths.ts";
 import { formatFrequency } from "./units.ts";
+
+export type { Series } from "./element-rules.ts";
 
 /** A frequency at which a part of the antenna may resonate. */
 export interface Prediction {
@@ -29,8 +42,6 @@ export interface Prediction {
   /** "3 × 0.983 × c/(4 × 10.07 m) = 21.94 MHz". */
   arithmetic: string;
 }
-
-export type Series = "quarter" | "half" | "loop";
 
 /** A part that nothing can be predicted for. */
 export interface NotJudged {
@@ -76,18 +87,6 @@ export function notJudged({ elements, feedline }: Antenna): NotJudged[] {
   if (!feedline) return [...missing, { part: FEEDLINE, name: FEEDLINE_NAME, reason: "no feedline said" }];
   if (isLength(feedline.lengthM)) return missing;
   return [...missing, { part: FEEDLINE, name: FEEDLINE_NAME, reason: reasonOf(feedline.lengthM) }];
-}
-
-interface Rule {
-  series: Series;
-  /** 2: odd orders only. */
-  step: 1 | 2;
-  /** The first order; 2 with a step of 2 for even ones. */
-  first: 1 | 2;
-  /** Half-width of k at order 1. */
-  spread: number;
-  weight: number;
-  condition: string;
 }
 
 interface Part extends Rule {
@@ -184,40 +183,7 @@ const FEEDLINE_NAME = "the feedline's outer surface";
 const DIVISOR: Record<Series, number> = { quarter: 4, half: 2, loop: 1 };
 const WAVE: Record<Series, string> = { quarter: "quarter wave", half: "half wave", loop: "wave around" };
 
-/** 234 ft·MHz × 4 / c. */
-const WIRE_K = 0.9516;
-/** 1005 ft·MHz / c. */
-const LOOP_K = 1.0218;
-/** Insulated wire is slower: 0.95 to 0.99 of a bare one (common practice, no source). */
-const COVERED = 0.97;
-/**
- * Half-widths of k at order 1. 0.92 to 0.99 seen for verticals and dipoles from thin wire to tube; masts and guys carry
- * fittings, and the outside of a cable ends in unknown ways.
- */
-const CLEAN = 0.04;
-const LOOSE = 0.06;
 /** What neighbouring conductors and ground move a resonance by, 95 %: 0 to 3 % in the models of tests/fixtures/nec. */
 const SURROUNDINGS = 0.02;
-/** How usual: what is fed; what is joined or near; what needs something unusual. */
-const FED = 1;
-const PARASITE = 0.4;
-const RARE = 0.15;
 /** 20 times the lowest design frequency is order 20 of its element; the outside of a long feedline goes further. */
 const MOST_ORDER = 80;
-
-const usual = { condition: "", first: 1 } as const;
-const grounded: Rule = { ...usual, series: "quarter", step: 2, spread: LOOSE, weight: PARASITE };
-const floating: Rule = { ...usual, series: "half", step: 1, spread: LOOSE, weight: PARASITE };
-
-const RULES: Record<ElementKind, Rule[]> = {
-  vertical: [{ ...usual, series: "quarter", step: 2, spread: CLEAN, weight: FED }],
-  dipole: [
-    { ...usual, series: "half", step: 2, spread: CLEAN, weight: FED },
-    { series: "half", step: 2, first: 2, spread: CLEAN, weight: RARE, condition: "if it is not balanced" },
-  ],
-  loop: [{ ...usual, series: "loop", step: 1, spread: CLEAN, weight: FED }],
-  radial: [{ ...usual, series: "quarter", step: 2, spread: LOOSE, weight: PARASITE }],
-  mast: [grounded, { ...floating, weight: RARE, condition: "if its foot is insulated" }],
-  guy: [floating, { ...grounded, weight: RARE, condition: "if one end is grounded" }],
-  wire: [floating, { ...grounded, weight: RARE, condition: "if one end is grounded" }],
-};
