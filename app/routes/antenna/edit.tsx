@@ -3,6 +3,7 @@ import { data } from "react-router";
 import { requireProject } from "~/auth/require.server";
 import { Breadcrumbs } from "~/components/ui/Breadcrumbs";
 import * as antennas from "~/db/antennas.server";
+import * as cables from "~/db/cables.server";
 import { newPublicId } from "~/db/ids.server";
 import * as people from "~/db/people.server";
 import * as projects from "~/db/projects.server";
@@ -27,10 +28,11 @@ export const meta: Route.MetaFunction = () => [{ title: "Change the antenna · S
 
 export async function loader(args: Route.LoaderArgs) {
   const { project, person } = await requireProject(args, "antenna.edit");
-  const [now, bands, sweeps, dismissed] = await Promise.all([
+  const [now, bands, sweeps, own, dismissed] = await Promise.all([
     antennas.findAt(project.id, new Date()),
     projects.findDesignBands(project.id),
     steps.findSweepsInOrder(project.id),
+    cables.findAllByProject(project.id),
     person ? people.findDismissals(person.id) : [],
   ]);
   const unit = lengthUnitOf(person);
@@ -44,7 +46,7 @@ export async function loader(args: Route.LoaderArgs) {
     was: JSON.stringify(antenna),
     // A first description holds for the sweeps that are there already; a change is of now.
     since: now || !first ? minuteOf(new Date()) : `${first.toISOString().slice(0, 10)}T00:00`,
-    cables: CABLES.map(({ name }) => name),
+    cables: [...own, ...CABLES].map(({ name }) => name),
     bands: bands.map(bandRowOf),
     dismissed,
   };
