@@ -47,11 +47,18 @@ export function diameterField() {
     .optional()
     .transform((text, context): number | null => {
       if (!text) return null;
-      const parsed = parseLength(/[a-z'"]/i.test(text) ? text : `${text} mm`);
-      if (parsed.ok && parsed.metres < MOST_DIAMETER_M) return parsed.metres * 1000;
-      context.addIssue({ code: "custom", message: parsed.ok ? "A diameter under a metre." : parsed.message });
+      const read = readDiameter(text);
+      if (typeof read === "number") return read;
+      context.addIssue({ code: "custom", message: read });
       return z.NEVER;
     });
+}
+
+/** Millimetres, or what is wrong. A thin wire is no short antenna: nothing is asked about it. */
+export function readDiameter(text: string): number | string {
+  const parsed = parseLength(/[a-z'"]/i.test(text) ? text : `${text} mm`);
+  if (!parsed.ok) return parsed.message;
+  return parsed.metres < MOST_DIAMETER_M ? parsed.metres * 1000 : "A diameter under a metre.";
 }
 
 export function wholeField(most: number) {

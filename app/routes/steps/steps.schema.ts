@@ -1,6 +1,7 @@
 import { z } from "zod";
 import type { AntennaField, QuantityTarget } from "~/measurement/antenna";
 import { type LengthUnit, parseLength } from "~/measurement/lengths";
+import { readDiameter } from "~/routes/antenna/sizes";
 import { plainText } from "~/services/file-names";
 
 export interface ReadQuantity {
@@ -102,8 +103,8 @@ function readNumber(
     case "lengthM":
       return lengthOf(parseLength(text, unit));
     case "diameterMm": {
-      const read = lengthOf(parseLength(/[a-z'"]/i.test(text) ? text : `${text} mm`));
-      return { ...read, value: read.value === null ? null : read.value * 1000 };
+      const read = readDiameter(text);
+      return typeof read === "number" ? { value: read, message: null } : { value: null, message: read };
     }
     case "count":
     case "turns":
