@@ -2,6 +2,7 @@ import { existsSync, readFileSync } from "node:fs";
 import { closePictureReader } from "../app/services/picture.server.ts";
 import { printCauses } from "./accuracy-causes.ts";
 import { trails } from "./accuracy-trails.ts";
+import { reportCoverage } from "./coverage.ts";
 import type { PhotographTruth } from "./screens/photographs.ts";
 import { type PictureScore, scorePicture, totals, traceRight, truthsIn } from "./screens/score.ts";
 import { photographTotals, scorePhotograph, shaken } from "./screens/score-photograph.ts";
@@ -11,6 +12,7 @@ import { photographTotals, scorePhotograph, shaken } from "./screens/score-photo
  * `npm run accuracy -- causes [--json]`: origins of dips and trims on NEC-2 antennas (`accuracy-causes.ts`).
  * `npm run accuracy -- trails [--json]`: dips followed through invented histories (`accuracy-trails.ts`).
  * `npm run accuracy -- photographs`: photographs by four corners and axes, with exact corners and 1 px off.
+ * `npm run accuracy -- coverage [--json]`: how often the limits of dips hold the truth, on simulated sweeps.
  *
  * Exit code: 0; 1 where a share is below the last accepted table's; 2 for usage and parts that are not there yet.
  */
@@ -35,6 +37,7 @@ async function main(args: string[]): Promise<number> {
   if (part === "photographs") return photographs(flags.includes("--json"));
   if (part === "causes") return printCauses(flags.includes("--json"));
   if (part === "trails") return trails(flags.includes("--json"));
+  if (part === "coverage") return reportCoverage(flags.includes("--json"));
   if (part !== "screens") {
     process.stderr.write(`${part}: not available yet.\n`);
     return 2;

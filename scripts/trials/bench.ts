@@ -60,8 +60,7 @@ export function hollowOf(
 ): Hollow {
   const step = reachHz / GRID;
   let best = middleHz;
-  for (let k = -GRID; k <= GRID; k++)
-    if (at(middleHz + k * step) < at(best)) best = middleHz + k * step;
+  for (let k = -GRID; k <= GRID; k++) if (at(middleHz + k * step) < at(best)) best = middleHz + k * step;
   const hz = lowestBetween(at, best - step, best + step);
   const edge = (direction: 1 | -1) => {
     if (at(hz) > level) return Number.NaN;

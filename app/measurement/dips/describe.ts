@@ -1,3 +1,4 @@
+import { dipLimits } from "../limits/dip-limits.ts";
 import type { Noise } from "../noise.ts";
 import { gammaToReturnLossDb, gammaToSwr, swrToGamma } from "../reflection.ts";
 import type { AnalysisSettings, Dip, Sweep, Warning } from "../sweep.ts";
@@ -6,7 +7,7 @@ import { halfDepthWidthHz, sweepAgain } from "./advice.ts";
 import { bandwidthOf, type Stretch, stretchAround } from "./bandwidth.ts";
 import type { FoundDip } from "./find.ts";
 import { type Lowest, lowestOf, sampleOnly } from "./lowest.ts";
-import { qualityOf } from "./quality.ts";
+import { qLimitsOf, qualityOf } from "./quality.ts";
 
 /**
  * Where a dip stands among the found ones; `stretch` is the last one walked, kept so that no sample is
@@ -64,24 +65,27 @@ export function describeDip(
     bandwidth && !bandwidth.open && !bandwidth.shared ? bandwidth.widthHz : Number.POSITIVE_INFINITY,
   );
   const pictured = withPicture(sweep, index, lowest);
+  const limits = dipLimits({
+    sweep,
+    index,
+    lowest,
+    swr: edge ? null : pictured.swr,
+    pixelHalf: pictured.pixelHalf,
+    bandwidth: edge ? null : bandwidth,
+    sigma: settings.noise.gamma,
+  });
   return {
     frequencyHz: lowest.frequencyHz,
     frequencyUncertaintyHz: pictured.frequencyHalfHz,
     minimumSwr,
-    minimumSwrLow: null,
-    minimumSwrHigh: null,
     minimumSwrNoiseLow: pictured.swr?.low ?? null,
     minimumSwrNoiseHigh: pictured.swr?.high ?? null,
     returnLossDb: Math.min(DEEPEST_DB, gammaToReturnLossDb(lowest.magnitude)),
-    returnLossLowDb: null,
-    returnLossHighDb: null,
-    benchFrequencyHalfHz: null,
     prominenceDb: Math.min(DEEPEST_DB, found.prominenceDb),
-    bandwidth,
+    ...limits,
+    ...(edge && { bandwidth, unknown: [] }),
     ...quality,
-    qLimits: null,
-    shares: [],
-    unknown: [],
+    qLimits: qLimitsOf(limits, quality, minimumSwr),
     method: lowest.method,
     edge,
     sampleIndex: index,
@@ -108,7 +112,7 @@ function isShared({ from, to }: Stretch, { found, at }: Neighbours): boolean {
 
 /** Half a pixel of each axis and the trace's width, combined with the rest as independent parts. */
 function withPicture({ pictureLimits: limits, magnitude }: Sweep, index: number, lowest: Lowest) {
-  if (!limits || lowest.frequencyHalfHz === null) return lowest;
+  if (!limits || lowest.frequencyHalfHz === null) return { ...lowest, pixelHalf: 0 };
   const half = (limits.magnitudeHigh[index] - limits.magnitudeLow[index]) / 2;
   const middle = lowest.magnitude;
   const from = (swr: number | undefined) =>
@@ -117,6 +121,7 @@ function withPicture({ pictureLimits: limits, magnitude }: Sweep, index: number,
   const high = combine(from(lowest.swr?.high), half) ?? Number.NaN;
   const known = Number.isFinite(low) && Number.isFinite(high) && Number.isFinite(magnitude[index]);
   return {
+    pixelHalf: known ? half : 0,
     frequencyHalfHz: combine(lowest.frequencyHalfHz, limits.frequencyHz[index]),
     swr: known ? { low: gammaToSwr(Math.max(0, middle - low)), high: gammaToSwr(middle + high) } : lowest.swr,
   };

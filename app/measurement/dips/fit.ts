@@ -17,6 +17,8 @@ export interface Fit {
   power: number;
   frequencyHalfHz: number;
   powerHalf: number;
+  /** Of the squares of the half-widths: what the shape leaves over beyond scatter. */
+  shapeShare: number;
   /** True when the far power was fitted too: then the closed form holds at the edges and for Q. */
   whole: boolean;
   /** Half-width of any number that follows from the resonator; null where that is not finite nearby. */
@@ -132,7 +134,8 @@ function describe(
   if (!(hz >= frequencyHz[window.from] && hz <= frequencyHz[window.to])) return null;
   const square = cost / freedom;
   const inBlocks = residuals.relative < ROUNDING ? null : blockSquare(residuals.standard, free);
-  const scale = student95(freedom) * Math.sqrt(Math.max(square, CALM * (inBlocks ?? 0)));
+  const used = Math.max(square, CALM * (inBlocks ?? 0));
+  const scale = student95(freedom) * Math.sqrt(used);
   const halfOf = (number: (resonator: Resonator) => number) => {
     const gradient = slopesOf((moved) => number(resonatorOf(moved, referenceHz)), p, free);
     let sum = 0;
@@ -151,6 +154,7 @@ function describe(
     power: Math.max(0, lowestPower(resonator)),
     frequencyHalfHz,
     powerHalf,
+    shapeShare: used > 0 ? 1 - square / used : 0,
     whole: free === p.length,
     halfOf,
   };

@@ -15,6 +15,8 @@ export interface Lowest {
   frequencyHalfHz: number | null;
   magnitude: number;
   swr: Interval | null;
+  /** Of the square of the interval's half-width: what is not noise, but the fit's shape or the step. */
+  otherShare: number;
   fit: Fit | null;
 }
 
@@ -48,6 +50,7 @@ export function lowestOf(
         frequencyHalfHz: fit.frequencyHalfHz,
         magnitude: Math.sqrt(fit.power),
         swr: swrInterval(fit.power, fit.powerHalf),
+        otherShare: fit.shapeShare,
         fit,
       };
     }
@@ -65,6 +68,7 @@ export function lowestOf(
     frequencyHalfHz: top.frequencyHalfHz,
     magnitude: gamma,
     swr: { low: swr(top.returnLossHalfDb), high: swr(-top.returnLossHalfDb) },
+    otherShare: top.stepShare,
     fit: null,
   };
 }
@@ -88,6 +92,7 @@ export function sampleOnly({ frequencyHz, magnitude }: Sweep, index: number, noi
     frequencyHalfHz: halfHz,
     magnitude: value,
     swr: null,
+    otherShare: 0,
     fit: null,
   };
 }

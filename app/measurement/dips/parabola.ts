@@ -30,6 +30,8 @@ export interface ParabolaDip {
    */
   frequencyHalfHz: number;
   returnLossHalfDb: number;
+  /** Of the square of that of the return loss: what the frequency step adds. */
+  stepShare: number;
 }
 
 /**
@@ -50,7 +52,7 @@ export function parabolaDip(
   if (!top || loss[1] - (loss[0] + loss[2]) / 2 < CLEAR_OF_NOISE * noise) return null;
   const step = stepPart(f, magnitude, index, top);
   let frequency = step.x ** 2;
-  let depth = step.y ** 2;
+  let depth = step.y ** 2 + (top.y - loss[1]) ** 2;
   for (let i = 0; i < 3 && noise > 0; i++) {
     const shifted = [...loss];
     shifted[i] -= noise * SMALL;
@@ -64,6 +66,7 @@ export function parabolaDip(
     returnLossDb: top.y,
     frequencyHalfHz: Math.min((x[2] - x[0]) / 2, Math.sqrt(frequency)),
     returnLossHalfDb: Math.sqrt(depth),
+    stepShare: depth > 0 ? (step.y ** 2 + (top.y - loss[1]) ** 2) / depth : 0,
   };
 }
 

@@ -1,5 +1,5 @@
 import { gammaToImpedance } from "../reflection.ts";
-import type { Bandwidth, Sweep } from "../sweep.ts";
+import type { Bandwidth, Dip, Limits, Sweep } from "../sweep.ts";
 import type { Fit } from "./fit.ts";
 
 /**
@@ -26,8 +26,7 @@ export interface QualityInput {
 /**
  * Q by A. D. Yaghjian & S. R. Best, "Impedance, bandwidth, and Q of antennas", IEEE Trans. Antennas Propag.
  * 53(4), 1298-1324, 2005, for a single resonance: Q·FBW = √((s−r)(rs−1)/s)/r with r = R/Z0 at the dip, s
- * the SWR limit and FBW the width over the geometric mean of the edges; where a whole resonator fits, the
- * same from its κ = rQ/(r+1).
+ * the SWR limit and FBW the width over the geometric mean of the edges.
  *
  * Without phase r and 1/r look the same, and their Qs differ by the factor r: then `qLow` and `qHigh` are
  * the two, and `q` is told only where they are within SAME of each other. With phase R at the dip decides,
@@ -50,6 +49,33 @@ export function qualityOf(input: QualityInput): Quality {
   const chosen = slope.ratio >= 1 ? pair.overOne : pair.underOne;
   const agrees = Math.abs(slope.q / chosen - 1) < AGREE;
   return { q: agrees ? chosen : null, ...range(chosen, slope.q), notOfAntenna: lossy || !agrees };
+}
+
+/**
+ * The range of Q over all widths and lowest SWRs within their limits; null where these are not known, or
+ * reach to where there is no band. With one Q told, its own side of the reference alone.
+ */
+export function qLimitsOf(
+  { minimumSwrLow, minimumSwrHigh, bandwidth }: Pick<Dip, "minimumSwrLow" | "minimumSwrHigh" | "bandwidth">,
+  { q, qLow, qHigh }: Pick<Quality, "q" | "qLow" | "qHigh">,
+  minimumSwr: number,
+): Limits | null {
+  if (!bandwidth || minimumSwrLow === null || minimumSwrHigh === null || qLow === null || qHigh === null)
+    return null;
+  const { widthLowHz, widthHighHz, widthHz, fractional, limitSwr } = bandwidth;
+  if (!widthLowHz || widthHighHz === null || fractional === null || minimumSwrHigh >= limitSwr) return null;
+  const told = fromBand(bandwidth, minimumSwr);
+  const over = told !== null && q !== null && Math.abs(q - told.overOne) <= Math.abs(q - told.underOne);
+  let [low, high] = [qLow, qHigh];
+  for (let k = 0; k <= LOOKS; k++) {
+    const swr = minimumSwrLow + (k / LOOKS) * (minimumSwrHigh - minimumSwrLow);
+    const pair = fromBand(bandwidth, swr);
+    if (!pair) return null;
+    const sides = q === null ? [pair.overOne, pair.underOne] : [over ? pair.overOne : pair.underOne];
+    low = Math.min(low, ...sides.map((one) => (one * widthHz) / widthHighHz));
+    high = Math.max(high, ...sides.map((one) => (one * widthHz) / widthLowHz));
+  }
+  return { low, high };
 }
 
 interface Pair {
@@ -82,6 +108,8 @@ function range(a: number, b: number) {
   return { qLow: Math.min(a, b), qHigh: Math.max(a, b) };
 }
 
+/** Q falls and rises once over the range of r. */
+const LOOKS = 16;
 const NONE: Quality = { q: null, qLow: null, qHigh: null, notOfAntenna: false };
 /** The two Qs print alike to two digits. */
 const SAME = 1.02;
