@@ -33,9 +33,9 @@ export function benchScene(qualities: readonly BenchQuality[], wish: Wish): Benc
     const runs = qualities.map(({ frequencyHz, [measure.key]: values }) =>
       decimate({ frequencyHz, magnitude: values.map(drawable) }, scale, COLUMNS),
     );
-    const axis = axisOf(runs, measure);
-    if (!axis) return [];
     const neededDb = measure.key === "directivityDb" ? -20 * Math.log10(allowedError(wish)) : Number.NaN;
+    const axis = axisOf(runs, measure, neededDb);
+    if (!axis) return [];
     return [
       {
         key: measure.key,
@@ -68,9 +68,10 @@ interface Measure {
   least: number;
 }
 
-function axisOf(all: readonly Run[][], { zero, least }: Measure) {
+function axisOf(all: readonly Run[][], { zero, least }: Measure, neededDb: number) {
   let [low, high] = zero ? [0, 0] : [Number.POSITIVE_INFINITY, Number.NEGATIVE_INFINITY];
-  for (const value of all.flatMap((runs) => runs.flatMap((run) => run.magnitudes))) {
+  const values = all.flatMap((runs) => runs.flatMap((run) => run.magnitudes));
+  for (const value of Number.isFinite(neededDb) ? [...values, neededDb] : values) {
     low = Math.min(low, value);
     high = Math.max(high, value);
   }

@@ -117,8 +117,9 @@ export default function EditBench({ loaderData, actionData }: Route.ComponentPro
           {versionCount > 1 ? `As it was in version ${version.number}` : "As it is"}
         </h2>
         <p className="soft">
-          For what was written down wrong. Was the bench changed itself? Then write a rebuilt bench down, so
-          that older sweeps keep theirs.
+          For what was written down wrong. Sweeps keep the numbers they have until somebody analyses them
+          anew. Was the bench itself changed? Then write a rebuilt bench down, so that older sweeps keep
+          theirs.
         </p>
         <Form
           method="post"
