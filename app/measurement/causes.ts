@@ -3,6 +3,7 @@ import { byMultiples } from "./causes/multiples.ts";
 import { byParts } from "./causes/parts.ts";
 import { byReferences, type ReferenceDip } from "./causes/references.ts";
 import { byRipple } from "./causes/ripple.ts";
+import type { Series } from "./elements.ts";
 import type { LengthUnit } from "./lengths.ts";
 import type { Dip } from "./sweep.ts";
 
@@ -17,7 +18,9 @@ export interface Cause {
   part: string | null;
   /** 3 in "3 × quarter wave"; null for a reference. */
   order: number | null;
-  /** "may be the mast, 3 × quarter wave". */
+  /** "the mast, 3 × quarter wave". */
+  name: string;
+  /** "may be the mast, 3 × quarter wave, if its foot is insulated". */
   title: string;
   /** How the predicted frequency was reckoned, and how far off it is. */
   arithmetic: string;
@@ -30,10 +33,18 @@ export interface Cause {
   byChance: number;
   /** Larger is likelier: the logarithm of how much more often the cause puts a dip here than chance does. */
   score: number;
-  /** How the frequency follows the length of `part`: d ln f / d ln(path) × path / part, per metre; 0 where not. */
-  hzPerMetre: number;
+  /** The wire that the wave runs along, for the try that tells it apart; null where the cause is none. */
+  path: CausePath | null;
   /** The measurement that would tell it apart. */
   test: string;
+}
+
+export interface CausePath {
+  name: string;
+  series: Series;
+  lengthM: number;
+  /** Another part that the path goes on through, and the share of that part's length in it. */
+  joined: { part: string; share: number } | null;
 }
 
 /** A dip as causes need it. */

@@ -39,6 +39,8 @@ export interface Prediction {
   weight: number;
   /** Metres that the wave runs along, for the change with length. */
   pathM: number;
+  /** Another part that the path goes on through, and the share of that part's length in it. */
+  joined: { part: string; share: number } | null;
   /** "3 × 0.983 × c/(4 × 10.07 m) = 21.94 MHz". */
   arithmetic: string;
 }
@@ -93,6 +95,7 @@ interface Part extends Rule {
   part: string;
   name: string;
   pathM: number;
+  joined?: { part: string; share: number };
   k: number;
   /** How the path's length is written. */
   path?: (unit: LengthUnit) => string;
@@ -126,6 +129,7 @@ function ofFeedline({ feedline, choke, elements }: Antenna, range: Wanted): Pred
       path,
       weight: PARASITE,
       condition: `together with ${arm.name}`,
+      joined: arm.joined,
     };
     alone.push({ ...joined, series: "quarter", first: 1 }, { ...joined, series: "half", first: 1, step: 1 });
   }
@@ -133,15 +137,17 @@ function ofFeedline({ feedline, choke, elements }: Antenna, range: Wanted): Pred
 }
 
 /** What the feedline's outside joins: half of the longest dipole, else a radial. */
-function armOf(elements: readonly AntennaElement[]): { name: string; lengthM: number } | null {
+function armOf(elements: readonly AntennaElement[]) {
   const longest = (kind: ElementKind) =>
     elements
       .filter((e) => e.kind === kind && isLength(e.lengthM))
       .sort((a, b) => (b.lengthM ?? 0) - (a.lengthM ?? 0))[0];
   const dipole = longest("dipole");
-  if (dipole) return { name: `half of ${dipole.name || "the dipole"}`, lengthM: (dipole.lengthM ?? 0) / 2 };
-  const radial = longest("radial");
-  return radial ? { name: radial.name || "a radial", lengthM: radial.lengthM ?? 0 } : null;
+  const arm = dipole ?? longest("radial");
+  if (!arm) return null;
+  const share = dipole ? 0.5 : 1;
+  const name = dipole ? `half of ${arm.name || "the dipole"}` : arm.name || "a radial";
+  return { name, lengthM: share * (arm.lengthM ?? 0), joined: { part: arm.key, share } };
 }
 
 function seriesOf(part: Part, { fromHz, upToHz, unit }: Wanted): Prediction[] {
@@ -155,10 +161,22 @@ function seriesOf(part: Part, { fromHz, upToHz, unit }: Wanted): Prediction[] {
     if (frequencyHz + half < fromHz) continue;
     const spacingHz = part.step * base;
     const arithmetic = arithmeticOf(part, order, k, frequencyHz, unit);
-    const { name, series, condition, weight, pathM } = part;
+    const { name, series, condition, weight, pathM, joined = null } = part;
     const what = order === 1 ? WAVE[series] : `${order} × ${WAVE[series]}`;
     const range = { frequencyHz, lowHz: frequencyHz - half, highHz: frequencyHz + half, spacingHz };
-    made.push({ part: part.part, name, series, order, what, condition, ...range, weight, pathM, arithmetic });
+    made.push({
+      part: part.part,
+      name,
+      series,
+      order,
+      what,
+      condition,
+      ...range,
+      weight,
+      pathM,
+      joined,
+      arithmetic,
+    });
   }
   return made;
 }

@@ -30,7 +30,9 @@ describe("parts", () => {
     expect(causes[0].arithmetic).toContain(
       "3 × 0.984 × c/(4 × 7.4\u2009m) = 29.89\u2009MHz; the dip is there",
     );
-    expect(causes[0].test).toContain("mast 0.74\u2009m longer");
+    expect(causes[0].test).toBe(
+      "Clip 0.74\u2009m of wire to the end of mast: this cause predicts −2.7\u2009MHz.",
+    );
     for (const cause of causes) expect(cause.title.startsWith("may be ")).toBe(true);
     expect(causes.map(({ score }) => score)).toEqual(
       causes.map(({ score }) => score).toSorted((a, b) => b - a),
@@ -150,6 +152,18 @@ describe("telling causes apart", () => {
     const swap = discriminate(causes).find(({ change }) => change.includes("load"));
     expect(swap?.words).toContain("that the dip stays");
     expect(swap?.words).toContain("that it goes");
+  });
+
+  /** 16 m of feedline on through half of a 20.1 m dipole: a half wave on 26.05 m. */
+  test("a dipole's piece moves the feedline's cause by the half that lies in its path", () => {
+    const joined = withFeedline(bareAntenna(part("dipole", 20.1)), 16);
+    const causes = causesOf(at(5.4), context(joined));
+    expect(causes[0].path).toMatchObject({ lengthM: 26.05, joined: { part: "dipole", share: 0.5 } });
+    const beside = causesOf(at(7.1), context(bareAntenna(part("dipole", 20.1))));
+    const [clip] = discriminate([beside[0], causes[0]]).filter(({ change }) => change.includes("dipole"));
+    expect(clip.change).toBe("Clip 2\u2009m of wire to the end of dipole");
+    expect(clip.shiftHz[0] ?? 0).toBeCloseTo((-7.1e6 * 2) / 22.1, 0);
+    expect(clip.shiftHz[1] ?? 0).toBeCloseTo((-5.4e6 * 1) / 27.05, 0);
   });
 
   test("no cause, nothing to try", () => {

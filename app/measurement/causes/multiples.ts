@@ -52,11 +52,12 @@ function causeOf({ lower, order, ratio, predictedHz, standing }: Multiple): Caus
     kind: "multiple",
     part: null,
     order,
+    name: `the ${order}-fold of the dip at ${at}`,
     title: `may be the ${order}-fold of the dip at ${at}`,
     arithmetic: sum + offsetWords(standing, predictedHz),
     predictedHz,
     ...standing,
-    hzPerMetre: 0,
+    path: null,
     test: `Change what makes the dip at ${at}: this cause predicts that both move by the same per cent.`,
   };
 }

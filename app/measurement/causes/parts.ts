@@ -1,7 +1,7 @@
 import type { Cause, CauseContext, JudgedDip } from "../causes.ts";
-import { FEEDLINE, type Prediction, predictionsOf } from "../elements.ts";
-import { formatLength } from "../lengths.ts";
+import { type Prediction, predictionsOf } from "../elements.ts";
 import { FARTHEST, type Standing, standingOf } from "./rank.ts";
+import { shiftOf, tryOn } from "./tries.ts";
 import { offsetWords, shiftWords } from "./words.ts";
 
 /** The best prediction of each part of the antenna that is near enough to the dip. */
@@ -24,28 +24,22 @@ function causeOf(
   standing: Standing,
   unit: CauseContext["unit"],
 ): Cause {
-  const { frequencyHz: predictedHz, part, name, order, what, condition, pathM } = prediction;
-  const hzPerMetre = -dip.frequencyHz / pathM;
-  const stepM = part === FEEDLINE ? 1 : TRY_SHARE * pathM;
-  const shift = shiftWords(-dip.frequencyHz * (stepM / (pathM + stepM)));
-  const test =
-    part === FEEDLINE
-      ? `Add ${formatLength(1, unit)} of feedline, or lay it otherwise: this cause predicts ${shift}.`
-      : `Make ${name} ${formatLength(Number(stepM.toPrecision(2)), unit)} longer for a try: this cause predicts ${shift}.`;
+  const { frequencyHz: predictedHz, part, order, what, condition, series, joined } = prediction;
+  const { change, stepM } = tryOn(part, prediction.name, series, prediction.pathM, unit ?? "metres");
+  const name = `${prediction.name}, ${what}`;
   return {
     kind: "part",
     part,
     order,
-    title: `may be ${name}, ${what}${condition && `, ${condition}`}`,
+    name,
+    title: `may be ${name}${condition && `, ${condition}`}`,
     arithmetic: prediction.arithmetic + offsetWords(standing, predictedHz),
     predictedHz,
     ...standing,
-    hzPerMetre,
-    test,
+    path: { name: prediction.name, series, lengthM: prediction.pathM, joined },
+    test: `${change}: this cause predicts ${shiftWords(shiftOf(dip.frequencyHz, prediction.pathM, stepM))}.`,
   };
 }
 
 /** Predictions that may still reach to the dip: FARTHEST times the widest tolerance. */
 const REACH = 1 + FARTHEST * 0.06;
-/** A clip-on piece of a tenth moves what it is on beyond doubt. */
-const TRY_SHARE = 0.1;

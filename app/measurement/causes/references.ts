@@ -31,11 +31,12 @@ export function byReferences(dip: JudgedDip, { references }: CauseContext): Caus
       kind: "reference",
       part: null,
       order: null,
+      name: "the bench",
       title: `may be of the bench: its ${near.role} sweep has the same dip`,
       arithmetic: `${near.role} sweep: dip at ${at}${offsetWords(standing, near.frequencyHz)}`,
       predictedHz: near.frequencyHz,
       ...standing,
-      hzPerMetre: 0,
+      path: null,
       test: "Put the load in the antenna's place and sweep: this cause predicts the dip without the antenna.",
     },
   ];
