@@ -9,6 +9,7 @@ import type { Dip } from "./sweep.ts";
 
 export { type Discrimination, discriminate } from "./causes/discriminate.ts";
 export type { ReferenceDip } from "./causes/references.ts";
+export { ripplePeriodOf } from "./causes/ripple.ts";
 export { type NotJudged, notJudged } from "./elements.ts";
 
 /** What may be behind a dip. Never more than "may be". */

@@ -1,7 +1,7 @@
 import { describe, expect, test } from "vitest";
 import type { Antenna } from "../../app/measurement/antenna.ts";
 import { standingOf } from "../../app/measurement/causes/rank.ts";
-import { type CauseContext, causesOf, discriminate } from "../../app/measurement/causes.ts";
+import { type CauseContext, causesOf, discriminate, ripplePeriodOf } from "../../app/measurement/causes.ts";
 import { bareAntenna, part } from "./antennas.ts";
 
 const at = (mhz: number) => ({ frequencyHz: mhz * 1e6, frequencyUncertaintyHz: 2e3, edge: false });
@@ -111,6 +111,20 @@ describe("other causes", () => {
     expect(causesOf(at(27), context(bareAntenna(), { dips, ripplePeriodHz }))).toEqual([]);
     expect(causesOf(dips[1], context(bareAntenna(), { dips, ripplePeriodHz: null }))).toEqual([]);
     expect(causesOf(dips[1], context(bareAntenna(), { dips, ripplePeriodHz: 0 }))).toEqual([]);
+  });
+
+  test("the period of a feedline, by its own velocity factor or its cable's; else not known", () => {
+    const line = { cable: null, lengthM: 20, velocityFactor: 0.66 };
+    expect((ripplePeriodOf(line) ?? 0) / 1e6).toBeCloseTo(4.94658, 5);
+    expect(ripplePeriodOf({ ...line, velocityFactor: null })).toBeNull();
+    expect(ripplePeriodOf({ ...line, velocityFactor: null, cable: "RG-213" }) ?? 0).toBeCloseTo(
+      4.94658e6,
+      -2,
+    );
+    for (const lengthM of [null, 0, -1, Number.NaN]) expect(ripplePeriodOf({ ...line, lengthM })).toBeNull();
+    for (const velocityFactor of [0, -0.5, 1.2, Number.NaN])
+      expect(ripplePeriodOf({ ...line, velocityFactor })).toBeNull();
+    expect(ripplePeriodOf(null)).toBeNull();
   });
 
   /** NEC-2 vertical: dips at 14.288, 43.572 and 72.979 MHz (REFERENCE 11). */

@@ -1,7 +1,21 @@
+import type { AntennaFeedline } from "../antenna.ts";
+import { cableNamed } from "../cables.ts";
 import type { Cause, CauseContext, JudgedDip } from "../causes.ts";
+import { SPEED_OF_LIGHT } from "../feedline.ts";
 import { formatFrequency } from "../units.ts";
 import { standingOf } from "./rank.ts";
 import { offsetWords } from "./words.ts";
+
+/**
+ * VF·c/(2l) of a feedline, Hz; null where its length is not said, or neither its velocity factor nor a cable of the table
+ * (`cables.ts`) that has one.
+ */
+export function ripplePeriodOf(line: Pick<AntennaFeedline, "cable" | "lengthM" | "velocityFactor"> | null) {
+  const factor = line?.velocityFactor ?? (line?.cable ? cableNamed(line.cable)?.velocityFactor : null);
+  const lengthM = line?.lengthM;
+  if (!factor || !lengthM || !(factor > 0 && factor <= 1 && lengthM > 0)) return null;
+  return (factor * SPEED_OF_LIGHT) / (2 * lengthM);
+}
 
 /**
  * Ripple of a mismatched feedline: minima VF·c/(2l) apart. Offered where a neighbouring dip lies one period away within the
