@@ -65,7 +65,13 @@ export function SmithChart(props: SmithChartProps) {
         <Ground {...{ referenceOhm, swrLimit, palette }} />
         <TraceLine points={points} palette={palette} />
         <LimitLabel swrLimit={swrLimit} zoom={zoom} palette={palette} />
-        <Ticks points={points} most={10 * Math.sqrt(zoom)} taken={spots} zoom={zoom} palette={palette} />
+        <Ticks
+          points={points}
+          most={Math.min(MOST_TICKS, 10 * zoom)}
+          taken={spots}
+          zoom={zoom}
+          palette={palette}
+        />
       </svg>
       {props.children && <div className="smith-layer">{props.children}</div>}
       {/* biome-ignore lint/a11y/noSvgWithoutTitle: its links carry their own names */}
@@ -77,6 +83,9 @@ export function SmithChart(props: SmithChartProps) {
     </div>
   );
 }
+
+/** More would crowd the line from end to end, wherever one looks. */
+const MOST_TICKS = 100;
 
 interface GroundProps {
   referenceOhm: number;
@@ -147,7 +156,7 @@ interface TicksProps {
 }
 
 function Ticks({ points, most, taken, zoom, palette }: TicksProps) {
-  return traceTicks(points, most, taken).map(({ x, y, hz, label, across, shown }) => (
+  return traceTicks(points, most, taken, zoom).map(({ x, y, hz, label, across, shown }) => (
     <g key={hz} transform={`translate(${round(x, 1)} ${round(y, 1)}) scale(${round(1 / zoom, 4)})`}>
       <path
         d={`M${round(-across.x * 3, 1)} ${round(-across.y * 3, 1)}L${round(across.x * 6, 1)} ${round(across.y * 6, 1)}`}

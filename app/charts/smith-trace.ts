@@ -54,8 +54,16 @@ export interface TraceTick extends Spot {
   shown: boolean;
 }
 
-/** Round frequencies along the trace, about `most` of them; `taken` are places that labels keep clear of. */
-export function traceTicks(points: ComplexPoints, most: number, taken: readonly Spot[] = []): TraceTick[] {
+/**
+ * Round frequencies along the trace, about `most` of them; `taken` are places that labels keep clear of. Seen `zoom` times larger,
+ * labels of the same size need so much less of the drawing.
+ */
+export function traceTicks(
+  points: ComplexPoints,
+  most: number,
+  taken: readonly Spot[] = [],
+  zoom = 1,
+): TraceTick[] {
   const { frequencyHz } = points;
   const n = frequencyHz.length;
   if (n < 2) return [];
@@ -71,9 +79,10 @@ export function traceTicks(points: ComplexPoints, most: number, taken: readonly 
     const spot = spotAt(points, right, hz);
     if (!spot) continue;
     const across = acrossAt(points, right, spot);
-    const place = { x: spot.x + across.x * LABEL_AWAY, y: spot.y + across.y * LABEL_AWAY };
+    const place = { x: spot.x + (across.x * LABEL_AWAY) / zoom, y: spot.y + (across.y * LABEL_AWAY) / zoom };
     const shown =
-      labelled.every((other) => clear(place, other)) && Math.hypot(place.x, place.y) < SMITH_RADIUS * 1.12;
+      labelled.every((other) => clear(place, other, zoom)) &&
+      Math.hypot(place.x, place.y) < SMITH_RADIUS * 1.12;
     if (shown) labelled.push(place);
     ticks.push({ ...spot, hz, label: (hz / 1e6).toFixed(decimals), across, shown });
   }
@@ -102,8 +111,8 @@ function acrossAt({ re, im }: ComplexPoints, right: number, spot: Spot): Spot {
   return outwards === wanted ? normal : { x: -normal.x, y: -normal.y };
 }
 
-function clear(a: Spot, b: Spot): boolean {
-  return Math.abs(a.x - b.x) > LABEL_WIDTH || Math.abs(a.y - b.y) > LABEL_HEIGHT;
+function clear(a: Spot, b: Spot, zoom: number): boolean {
+  return Math.abs(a.x - b.x) * zoom > LABEL_WIDTH || Math.abs(a.y - b.y) * zoom > LABEL_HEIGHT;
 }
 
 function at({ x, y }: Spot): string {

@@ -1,4 +1,5 @@
 import { packComplex } from "~/charts/sent-complex";
+import { evenSteps } from "~/measurement/complex/even-steps";
 import { gammaAt } from "~/measurement/complex/gamma-at";
 import { lNetworks, singleElements } from "~/measurement/complex/l-network";
 import { unwrappedPhaseDeg } from "~/measurement/complex/phase";
@@ -37,7 +38,7 @@ export function loadComplex(
   const n = sweep.frequencyHz.length;
   if (!sweep.gammaRe || !sweep.gammaIm || !phase || n === 0) return null;
   const shown = range ?? { fromHz: sweep.frequencyHz[0], toHz: sweep.frequencyHz[n - 1] };
-  const indices = Array.from(decimate(sweep, POINTS, shown));
+  const indices = drawnPoints(sweep, shown);
   const pick = (column: Float64Array) => Float64Array.from(indices, (i) => column[i]);
   const zeros = reactanceZeros(sweep);
   const inView = dips.filter(({ frequencyHz }) => frequencyHz >= shown.fromHz && frequencyHz <= shown.toHz);
@@ -68,6 +69,14 @@ export function loadComplex(
     moreDips: Math.max(0, inView.length - MOST_ROWS),
     match: matchAt(sweep, asked(sweep, inView, at)),
   };
+}
+
+/** Points for lines over frequency, and as many even steps along the line of Γ, which runs fast where little of the frequency is. */
+function drawnPoints(sweep: Sweep, range: Range): number[] {
+  const over = decimate(sweep, POINTS, range);
+  if (over.length < POINTS) return Array.from(over);
+  const along = evenSteps(sweep, over[0], over[over.length - 1], POINTS);
+  return [...new Set([...over, ...along])].sort((a, b) => a - b);
 }
 
 /** The frequency that is asked for, with what is wrong with it; without one the deepest dip in view, or its middle. */
@@ -102,8 +111,8 @@ function matchAt(sweep: Sweep, { hz, problem }: ReturnType<typeof asked>) {
   };
 }
 
-/** Two a pixel of the widest chart, as on the sweep's own. */
-const POINTS = 800;
+/** One a pixel of the widest of these charts. */
+const POINTS = 500;
 /** Dips and resonances beyond this many are a line's ripple; the table of dips has them all. */
 const MOST_ROWS = 24;
 

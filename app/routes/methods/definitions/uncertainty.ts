@@ -1,5 +1,5 @@
 import { analyse } from "~/measurement/analyse";
-import { formatFrequency } from "~/measurement/units";
+import { formatWidth } from "~/measurement/units";
 import { type Definition, example } from "../definition";
 import { exampleSweep, scalar } from "../example-sweep";
 
@@ -34,7 +34,7 @@ export const uncertainty: Definition = {
         { label: "Intervals of the frequency that hold the truth", value: `${held} of ${told}` },
         {
           label: "Their half-width, on average",
-          value: told ? formatFrequency(Math.round(width / told)) : "unknown",
+          value: told ? formatWidth(width / told) : "unknown",
         },
       ];
     },
