@@ -109,17 +109,38 @@ function edgeLies(magnitude: Float64Array, i: number, step: 1 | -1): boolean {
   return next === undefined || Number.isNaN(next);
 }
 
-function fromSamples({ sweep, stretch, noise }: BandwidthInput, level: number): Edges | null {
+function fromSamples({ sweep, index, stretch, noise }: BandwidthInput, level: number): Edges | null {
   if (!stretch) return null;
   const { frequencyHz } = sweep;
-  const low = sampleEdge(sweep, stretch.from - 1, level, noise);
-  const high = sampleEdge(sweep, stretch.to, level, noise);
+  const low = vagueEdge(sweep, index, -1, level, noise) ?? sampleEdge(sweep, stretch.from - 1, level, noise);
+  const high = vagueEdge(sweep, index, 1, level, noise) ?? sampleEdge(sweep, stretch.to, level, noise);
   return {
     lowHz: low?.hz ?? null,
     highHz: high?.hz ?? null,
     ends: { lowHz: frequencyHz[stretch.from], highHz: frequencyHz[stretch.to] },
     halfHz: combine(low?.halfHz ?? null, high?.halfHz ?? null),
   };
+}
+
+/**
+ * The edge in scatter: in the middle of the samples that lie within VAGUE_SIGMAS of the level, and no better
+ * known than they reach; null where they are so few that interpolation does better, or the samples end.
+ */
+function vagueEdge(
+  { frequencyHz, magnitude }: Sweep,
+  index: number,
+  side: -1 | 1,
+  level: number,
+  noise: number,
+) {
+  const factor = 10 ** ((VAGUE_SIGMAS * noise) / 20);
+  let near = index;
+  while (magnitude[near] <= level / factor) near += side;
+  let far = near;
+  while (magnitude[far] <= level * factor) far += side;
+  if (Number.isNaN(magnitude[far] ?? Number.NaN) || Math.abs(far - near) < FEWEST_VAGUE) return null;
+  const hz = (frequencyHz[near] + frequencyHz[far]) / 2;
+  return { hz, halfHz: Math.abs(frequencyHz[far] - frequencyHz[near]) / 2 };
 }
 
 /** The edge between samples i and i+1; null where one of them is missing or a gap. */
@@ -135,5 +156,8 @@ function sampleEdge(sweep: Sweep, i: number, level: number, noise: number) {
   return { hz, halfHz: combine(scatter, noise < SMOOTH_DB ? hz - straight : stepHz / 4) };
 }
 
+/** In σ of the sweep. */
+const VAGUE_SIGMAS = 2;
+const FEWEST_VAGUE = 3;
 /** Over this σ the cubic would follow the scatter of its outer samples. */
 const SMOOTH_DB = 0.05;
