@@ -1,4 +1,5 @@
 import type { ProjectAccess } from "~/auth/require.server";
+import { packPoints } from "~/charts/sent-points";
 import * as repeats from "~/db/repeats.server";
 import type { FoundSweep } from "~/db/sweeps.server";
 import { findRepeats } from "~/services/repeat-findings.server";
@@ -19,8 +20,15 @@ export async function loadRepeats({ project, may }: ProjectAccess, { sweep }: Fo
     candidates: all
       .filter((one) => overlaps(one, sweep) && !members.some((m) => m.sweep.publicId === one.publicId))
       .map(({ publicId, title, takenAt }) => ({ publicId, title, takenAt })),
-    findings: members.length > 1 ? await findRepeats(members) : null,
+    findings: members.length > 1 ? await findingsOf(members) : null,
   };
+}
+
+async function findingsOf(members: FoundSweep[]) {
+  const { mean, ...findings } = await findRepeats(members);
+  if (!mean) return { ...findings, mean: null };
+  const { sweep, limits, ...rest } = mean;
+  return { ...findings, mean: { ...rest, points: packPoints(sweep, { limits }) } };
 }
 
 type Span = { startHz: number | null; stopHz: number | null };
