@@ -1,4 +1,5 @@
 import type { CSSProperties, ReactNode } from "react";
+import { AxisUnit } from "./AxisUnit";
 import { BandRibbon } from "./BandRibbon";
 import { AXIS_HEIGHT_PX, CHART_FOOT_PX } from "./ChartBase";
 import { FrequencyAxisMarks } from "./FrequencyAxisMarks";
@@ -48,6 +49,10 @@ export function StripMap(props: StripMapProps) {
                 frequency={scene.frequency}
                 y={scene.heightPx}
                 {...{ plotWidthPx: null, palette }}
+              />
+              <AxisUnit
+                y={scene.heightPx + CHART_FOOT_PX - 2}
+                text={scene.frequency.caption.replace(" log", ", logarithmic")}
               />
               <BandRibbon
                 bands={scene.ribbon}

@@ -10,7 +10,7 @@ export type DecisionRow = typeof trailDecisions.$inferSelect;
 /** The sweeps of a project that have numbers, in order of time, references left out. */
 export async function findSweeps(projectId: number, tx: Queryable = db) {
   return tx
-    .select({ id: sweeps.id, startHz: sweeps.startHz, stopHz: sweeps.stopHz })
+    .select({ id: sweeps.id, title: sweeps.title, startHz: sweeps.startHz, stopHz: sweeps.stopHz })
     .from(sweeps)
     .where(and(eq(sweeps.projectId, projectId), ofTheStory))
     .orderBy(asc(orderTime), asc(sweeps.id))

@@ -45,12 +45,16 @@ export async function refreshTrails(projectId: number, tx: Transaction): Promise
 }
 
 /** The sweeps of the story with their dips, as the pairing takes them; a dip's id is its row's. */
-export async function loadTrailSweeps(projectId: number, tx?: Transaction): Promise<TrailSweep[]> {
+export async function loadTrailSweeps(
+  projectId: number,
+  tx?: Transaction,
+): Promise<(TrailSweep & { title: string })[]> {
   const sweeps = await trails.findSweeps(projectId, tx);
   const dips = await trails.findDips(projectId, tx);
   const bySweep = new Map<number, TrailSweep["dips"][number][]>(sweeps.map(({ id }) => [id, []]));
   for (const { sweepId, ...dip } of dips) bySweep.get(sweepId)?.push({ ...dip, id: String(dip.id) });
-  return sweeps.map(({ id, startHz, stopHz }) => ({
+  return sweeps.map(({ id, title, startHz, stopHz }) => ({
+    title,
     id: String(id),
     startHz: startHz ?? Number.NaN,
     stopHz: stopHz ?? Number.NaN,

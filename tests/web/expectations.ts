@@ -229,6 +229,36 @@ export const EXPECTATIONS: Record<string, Expectation> = {
       form: () => ({ intent, was: "open", text: "The second element." }),
     })),
   },
+  "routes/trails/trail.tsx": {
+    GET: read,
+    POST: [
+      ...(["propose", "settle", "reopen"] as const).map((intent) => ({
+        name: intent,
+        ask: { project: intent === "propose" ? ("verdict.propose" as const) : ("verdict.settle" as const) },
+        form: () => ({ intent, was: "open", text: "The second element." }),
+      })),
+      {
+        name: "name",
+        ask: { project: "trail.correct" },
+        form: () => ({ intent: "name", name: "The second element" }),
+      },
+      ...(["part", "take-back"] as const).map((intent) => ({
+        name: intent,
+        ask: { project: "trail.correct" as const },
+        form: ({ place }: About) => ({ intent, one: place.dip, other: place.dip }),
+      })),
+      {
+        name: "join",
+        ask: { project: "trail.correct" },
+        form: ({ place }) => ({ intent: "join", other: place.trail }),
+      },
+      {
+        name: "join-dip",
+        ask: { project: "trail.correct" },
+        form: ({ place }) => ({ intent: "join-dip", dip: place.dip }),
+      },
+    ],
+  },
   "routes/benches/list.tsx": { GET: read },
   "routes/benches/new.tsx": {
     GET: [{ ask: { project: "bench.edit" } }],

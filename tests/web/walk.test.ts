@@ -203,6 +203,7 @@ function fill(path: string, place: Place): string {
     .replace(":bench", place.bench)
     .replace(":photograph", place.photograph)
     .replace(":step", place.step)
+    .replace(":trail", place.trail)
     .replace(":size", "small")
     .replace("*", "no/such/thing");
 }

@@ -6,11 +6,12 @@ import { inTransaction, pool } from "~/db/client.server";
 import * as people from "~/db/people.server";
 import * as projects from "~/db/projects.server";
 import * as sweeps from "~/db/sweeps.server";
+import * as trails from "~/db/trails.server";
 import { IDEAL_STANDARDS, NOTHING_GIVEN } from "~/measurement/bench";
 import { createBench } from "~/services/benches.server";
 import { addPhotograph } from "~/services/photographs.server";
-import { makeStep } from "~/services/steps.server";
 import { createProject } from "~/services/projects.server";
+import { makeStep } from "~/services/steps.server";
 import { makeToken } from "~/services/tokens.server";
 import { askApi, Browser, SERVER } from "./browser.ts";
 
@@ -60,6 +61,8 @@ export interface Place {
   bench: string;
   photograph: string;
   step: string;
+  /** That its dip is on. */
+  trail: string;
 }
 
 export type Crew = Record<ProjectRole, Someone>;
@@ -74,7 +77,8 @@ export async function makePlace(crew: Crew, visibility: Visibility, empty = fals
   const second = await makePerson("second");
   await projects.insertMember(project.id, second.id, "owner");
   const place = { title, visibility, project: project.publicId, projectId: project.id };
-  if (empty) return { ...place, sweep: "", dip: "", note: "", bench: "", photograph: "", step: "" };
+  if (empty)
+    return { ...place, sweep: "", dip: "", note: "", bench: "", photograph: "", step: "", trail: "" };
   const token = await tokenOf(crew.owner);
   const answer = await sendSweep(project.publicId, token, touchstone());
   if (answer.status !== 201) throw new Error(`No sweep: ${answer.status} ${await answer.text()}`);
@@ -96,7 +100,16 @@ export async function makePlace(crew: Crew, visibility: Visibility, empty = fals
   });
   const photograph = added.kind === "added" ? added.publicId : "";
   const step = await makeStepOf(project.id, crew.owner.id);
-  return { ...place, sweep: sweep.id, dip, note, bench: bench.publicId, photograph, step };
+  return {
+    ...place,
+    sweep: sweep.id,
+    dip,
+    note,
+    bench: bench.publicId,
+    photograph,
+    step,
+    trail: await trailOf(project.id),
+  };
 }
 
 export async function makeCrew(): Promise<Crew> {
@@ -106,6 +119,11 @@ export async function makeCrew(): Promise<Crew> {
     commenter: await makePerson("commenter"),
     reader: await makePerson("reader"),
   };
+}
+
+/** The trail of the lowest dip. */
+async function trailOf(projectId: number): Promise<string> {
+  return (await trails.findAllByProject(projectId))[0].publicId;
 }
 
 /** A step that changes nothing of the antenna. */

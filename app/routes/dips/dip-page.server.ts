@@ -10,6 +10,7 @@ import type { Dip, Sweep } from "~/measurement/sweep";
 import { listThread } from "~/services/notes.server";
 import { storedDips } from "~/services/shown-dips.server";
 import { limitsOf, sweepAt } from "~/services/shown-sweep.server";
+import { loadTrailOfDip } from "../trails/trail-of-dip.server.ts";
 
 /** Everything about one dip of this project, or 404. */
 export async function loadDipPage(access: ProjectAccess, publicId: string) {
@@ -17,12 +18,13 @@ export async function loadDipPage(access: ProjectAccess, publicId: string) {
   const found = await dips.findByPublicId(publicId);
   if (!found || found.dip.projectId !== project.id) throw notFound("dip");
   const { dip } = found;
-  const [from, known, designBands, dismissed, thread] = await Promise.all([
+  const [from, known, designBands, dismissed, thread, trail] = await Promise.all([
     sweeps.findByPublicId(found.sweep.publicId),
     dips.findAllBySweep(dip.sweepId),
     projects.findDesignBands(project.id),
     person ? people.findDismissals(person.id) : ([] as string[]),
     listThread({ projectId: project.id, sweepId: dip.sweepId, dipId: dip.id }, access),
+    loadTrailOfDip(access, dip),
   ]);
   if (!from) throw notFound("sweep");
   const at = await sweepAt(from);
@@ -39,6 +41,7 @@ export async function loadDipPage(access: ProjectAccess, publicId: string) {
       verdictBy: found.verdictBy,
       verdictAt: dip.verdictAt,
     },
+    trail,
     sweep: { publicId: from.sweep.publicId, title: from.sweep.title, takenAt: from.sweep.takenAt },
     provenance: provenanceOf(from),
     benchId: from.analysis?.correction?.bench?.bench ?? null,

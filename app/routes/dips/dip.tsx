@@ -6,6 +6,7 @@ import { Caution } from "~/components/ui/Caution";
 import { DateTime } from "~/components/ui/DateTime";
 import { VerdictTag } from "~/components/ui/Tag";
 import { formatFrequency } from "~/measurement/units";
+import { TrailOfDip } from "../trails/components/TrailOfDip.tsx";
 import type { Route } from "./+types/dip";
 import { CloseUp } from "./components/CloseUp.tsx";
 import { DipNumbers } from "./components/DipNumbers.tsx";
@@ -51,6 +52,7 @@ export default function DipPage({ loaderData }: Route.ComponentProps) {
           )}
         </p>
         <Neighbours data={loaderData} />
+        <TrailOfDip projectId={projectId} dipId={dip.publicId} trail={loaderData.trail} />
       </header>
       {!dip.present && (
         <p className="panel border-l-3 border-l-clay">

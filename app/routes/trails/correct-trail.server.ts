@@ -53,7 +53,9 @@ export async function correctTrail(access: ProjectAccess, person: Person, public
     }
     case "join-dip": {
       const dipId = await rowIdOf(form.dip, project.id);
-      const joined = await joinDip({ ...task, dipId, trailId: trail.id });
+      const to = form.trail ? (await trails.findByPublicId(form.trail))?.trail : trail;
+      if (to?.projectId !== project.id) throw notFound("trail");
+      const joined = await joinDip({ ...task, dipId, trailId: to.id });
       return answer(joined, "The dip is on this trail now. It can be taken back below.");
     }
     default:

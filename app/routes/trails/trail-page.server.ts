@@ -8,7 +8,7 @@ import * as trails from "~/db/trails.server";
 import { notFound } from "~/errors";
 import { completeDip } from "~/measurement/dips/complete";
 import { agree } from "~/measurement/trails/decisions";
-import { trailEvents } from "~/measurement/trails/events";
+import { type TrailEvent, trailEvents } from "~/measurement/trails/events";
 import { formatFrequency } from "~/measurement/units";
 import { plainText } from "~/services/markdown.server";
 import { decisionOf, loadTrailSweeps } from "~/services/trails.server";
@@ -60,7 +60,7 @@ export async function loadTrailPage(access: ProjectAccess, publicId: string) {
       `Trail at ${formatFrequency(last?.frequencyHz ?? trail.frequencyHz, last?.frequencyUncertaintyHz ?? null)}`,
     seen: [seenWords(stops), moved].filter(Boolean).join(": "),
     stops: way,
-    happened: happenedTo(trail.id, { sweeps, members, all }, titlesOf(stops)),
+    happened: happenedTo(trail.id, { sweeps, members, all }),
     expected: expectationsOf(trail.publicId, stepRows, stops),
     designBands: designBands.map(({ name, lowHz, highHz }) => ({ name, lowHz, highHz })),
     corrections: decisions
@@ -102,7 +102,7 @@ interface Known {
 }
 
 /** Appearing, vanishing, splitting and merging, in words that name the sweep. */
-function happenedTo(trailId: number, { sweeps, members, all }: Known, titles: Map<number, string>) {
+function happenedTo(trailId: number, { sweeps, members, all }: Known) {
   const trailOf = new Map(members.map((member) => [String(member.dipId), member.trailId]));
   const ways = all.map(({ id }) => ({
     stops: sweeps.flatMap(({ dips }, sweepIndex) =>
@@ -116,19 +116,23 @@ function happenedTo(trailId: number, { sweeps, members, all }: Known, titles: Ma
     ways.filter(({ stops }) => stops.length > 0),
     sweeps,
   );
-  return events[index].map(({ kind, sweepIndex, otherTrail }) => {
+  const told: {
+    kind: TrailEvent["kind"];
+    sweeps: string[];
+    other: { publicId: string; label: string } | null;
+  }[] = [];
+  for (const { kind, sweepIndex, otherTrail } of events[index]) {
+    const { title } = sweeps[sweepIndex];
+    const before = told.find((one) => one.kind === kind && otherTrail === null);
+    if (before) {
+      before.sweeps.push(title);
+      continue;
+    }
     const other = otherTrail === null ? null : there[otherTrail];
-    return {
-      kind,
-      sweepId: Number(sweeps[sweepIndex].id),
-      sweepTitle: titles.get(Number(sweeps[sweepIndex].id)) ?? null,
-      other: other && { publicId: other.publicId, label: other.name || formatFrequency(other.frequencyHz) },
-    };
-  });
-}
-
-function titlesOf(stops: { sweepId: number; sweepTitle: string }[]): Map<number, string> {
-  return new Map(stops.map(({ sweepId, sweepTitle }) => [sweepId, sweepTitle]));
+    const label = other && (other.name || formatFrequency(other.frequencyHz));
+    told.push({ kind, sweeps: [title], other: other && { publicId: other.publicId, label: label ?? "" } });
+  }
+  return told;
 }
 
 function seenWords(stops: { at: Date | null }[]): string {

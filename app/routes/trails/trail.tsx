@@ -4,6 +4,8 @@ import { VerdictTag } from "~/components/ui/Tag";
 import { refused } from "~/errors";
 import type { Route } from "./+types/trail";
 import { CorrectTrail } from "./components/CorrectTrail.tsx";
+import { Expected } from "./components/Expected.tsx";
+import { Happened } from "./components/Happened.tsx";
 import { NameForm } from "./components/NameForm.tsx";
 import { TrailChart } from "./components/TrailChart.tsx";
 import { TrailNotes } from "./components/TrailNotes.tsx";
@@ -62,22 +64,25 @@ export default function TrailPage({ loaderData, actionData }: Route.ComponentPro
           another trail. Its name and its verdict are kept. Join it with another trail to bring it back.
         </p>
       )}
-      {stops.length > 0 && <TrailChart data={loaderData} />}
-      <div className="grid gap-10 lg:grid-cols-[minmax(0,3fr)_minmax(18rem,2fr)]">
-        <div className="grid gap-8 content-start min-w-0">
-          {stops.length > 0 && <WayTable data={loaderData} errors={errors("part")} />}
-          <CorrectTrail
-            data={loaderData}
-            errors={[...errors("join"), ...errors("join-dip"), ...errors("take-back")]}
-          />
-        </div>
-        <div className="grid gap-8 content-start min-w-0">
-          <TrailVerdict
-            data={loaderData}
-            errors={[...errors("propose"), ...errors("settle"), ...errors("reopen")]}
-          />
-          <TrailNotes data={loaderData} />
-        </div>
+      <TrailVerdict
+        data={loaderData}
+        errors={[...errors("propose"), ...errors("settle"), ...errors("reopen")]}
+      />
+      {stops.length > 0 && (
+        <section aria-labelledby="way" className="grid gap-4">
+          <h2 id="way">Along the way</h2>
+          <TrailChart data={loaderData} />
+          <WayTable data={loaderData} errors={errors("part")} />
+          <Happened data={loaderData} />
+          <Expected data={loaderData} />
+        </section>
+      )}
+      <div className="grid gap-10 lg:grid-cols-2">
+        <TrailNotes data={loaderData} />
+        <CorrectTrail
+          data={loaderData}
+          errors={[...errors("join"), ...errors("join-dip"), ...errors("take-back")]}
+        />
       </div>
     </article>
   );

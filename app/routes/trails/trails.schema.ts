@@ -24,7 +24,12 @@ export const pairSchema = z.object({
 
 export const joinSchema = z.object({ intent: z.literal("join"), other: publicId });
 
-export const joinDipSchema = z.object({ intent: z.literal("join-dip"), dip: publicId });
+/** `trail`: where the dip belongs; left out, it is the trail of the page. */
+export const joinDipSchema = z.object({
+  intent: z.literal("join-dip"),
+  dip: publicId,
+  trail: publicId.optional(),
+});
 
 export const trailForm = z.discriminatedUnion("intent", [
   nameSchema,

@@ -1,8 +1,9 @@
+import { AxisUnit } from "~/charts/AxisUnit";
 import { frequencyAxis, frequencyScale } from "~/charts/axis";
 import { FrequencyAxisMarks } from "~/charts/FrequencyAxisMarks";
 import { PAGE_PALETTE } from "~/charts/palette";
 import { across, Stretched } from "~/charts/place";
-import { formatDate } from "~/components/ui/dates";
+import { formatDateShort } from "~/components/ui/dates";
 import type { TrailPageData } from "../trail";
 
 const ROW_PX = 34;
@@ -18,6 +19,7 @@ export function TrailChart({ data }: { data: TrailPageData }) {
   const planned = expected.filter(({ step }) => step.planned);
   const rows = [...stops].reverse();
   const scale = scaleOf(data);
+  const axis = frequencyAxis(scale);
   const top = planned.length > 0 ? ROW_PX : 0;
   const heightPx = top + rows.length * ROW_PX;
   const yOf = (row: number) => top + (row + 0.5) * ROW_PX;
@@ -94,11 +96,8 @@ export function TrailChart({ data }: { data: TrailPageData }) {
               </g>
             ))}
             <line x1="0" x2="100%" y1={heightPx} y2={heightPx} stroke={palette.ink} />
-            <FrequencyAxisMarks
-              frequency={frequencyAxis(scale)}
-              y={heightPx}
-              {...{ plotWidthPx: null, palette }}
-            />
+            <FrequencyAxisMarks frequency={axis} y={heightPx} {...{ plotWidthPx: null, palette }} />
+            <AxisUnit y={heightPx + 34} text={axis.caption} />
           </svg>
           <ol className="strip-map-words">
             {planned.length > 0 && (
@@ -113,7 +112,7 @@ export function TrailChart({ data }: { data: TrailPageData }) {
                 style={{ top: yOf(row) - ROW_PX / 2, height: ROW_PX }}
               >
                 <span className="number">
-                  {stop.sweep.takenAt ? formatDate(stop.sweep.takenAt) : "no date"}
+                  {stop.sweep.takenAt ? formatDateShort(stop.sweep.takenAt) : "no date"}
                 </span>{" "}
                 <a href={`/projects/${project.publicId}/dips/${stop.publicId}`}>{stop.sweep.title}</a>
               </li>
@@ -173,5 +172,5 @@ function inside(fraction: number): number {
   return Math.min(1, Math.max(0, fraction));
 }
 
-const AXIS_PX = 26;
+const AXIS_PX = 40;
 const NAMES_SHARE = 0.45;

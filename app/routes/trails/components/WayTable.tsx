@@ -7,16 +7,15 @@ import { Problems } from "./Problems.tsx";
 
 type Stop = TrailPageData["stops"][number] & { before: string | null };
 
-/** The way in numbers, newest first, as on the map. */
+/** The way in numbers, newest first, as on the map. "(within)": not beyond the limits of the two together. */
 export function WayTable({ data, errors }: { data: TrailPageData; errors: string[] }) {
-  const { project, stops, may, happened, expected } = data;
+  const { project, stops, may } = data;
   const base = `/projects/${project.publicId}`;
   const rows: Stop[] = stops
     .map((stop, i) => ({ ...stop, before: stops[i - 1]?.publicId ?? null }))
     .reverse();
   return (
-    <section aria-labelledby="way" className="grid gap-3">
-      <h2 id="way">Along the way</h2>
+    <div className="grid gap-2">
       <Table<Stop>
         caption="The trail's dips, newest first"
         rows={rows}
@@ -47,13 +46,13 @@ export function WayTable({ data, errors }: { data: TrailPageData; errors: string
           },
           {
             key: "moved",
-            label: "Moved",
+            label: "Moved since the last",
             numeric: true,
             cell: ({ moved }) =>
               moved && (
                 <span className={moved.beyond ? undefined : "soft"}>
                   {moved.words}
-                  {moved.beyond === false && ", within its limits"}
+                  {moved.beyond === false && " (within)"}
                 </span>
               ),
           },
@@ -81,48 +80,7 @@ export function WayTable({ data, errors }: { data: TrailPageData; errors: string
         ]}
       />
       <Problems errors={errors} />
-      {happened.length > 0 && (
-        <ul className="text-small grid gap-1">
-          {happened.map(({ kind, sweepId, sweepTitle, other }) => (
-            <li key={`${kind} ${sweepId}`}>
-              {SAID[kind]}
-              {other && (
-                <>
-                  {" "}
-                  <Link to={`${base}/trails/${other.publicId}`}>{other.label}</Link>
-                </>
-              )}
-              {sweepTitle && ` in “${sweepTitle}”`}
-            </li>
-          ))}
-        </ul>
-      )}
-      {expected.length > 0 && (
-        <>
-          <h3>Expected</h3>
-          <ul className="text-small grid gap-2">
-            {expected.map((place) => (
-              <li key={place.step.publicId}>
-                After <Link to={`${base}/steps/${place.step.publicId}`}>{place.step.title}</Link>
-                {place.step.planned && " (planned)"}: <span className="font-mono">{place.frequency}</span>
-                {place.interval && `, between ${place.interval}`}.{" "}
-                {place.came && (
-                  <strong className="font-semibold">
-                    It came out at {place.came.frequency} in “{place.came.sweepTitle}”
-                    {place.met === null
-                      ? "."
-                      : place.met
-                        ? ": inside what was expected."
-                        : ": outside what was expected."}
-                  </strong>
-                )}{" "}
-                <span className="soft">{place.how}</span>
-              </li>
-            ))}
-          </ul>
-        </>
-      )}
-    </section>
+    </div>
   );
 }
 
@@ -139,12 +97,3 @@ function PartForm({ one, other }: { one: string | null; other: string }) {
     </Form>
   );
 }
-
-const SAID: Record<TrailPageData["happened"][number]["kind"], string> = {
-  appears: "Appeared",
-  vanishes: "Not seen any more from the sweep after its last one",
-  missed: "Not seen in a sweep between that reaches it",
-  "not-covered": "A sweep between does not reach it",
-  "splits-from": "Split from the trail",
-  "merges-into": "Merged into the trail",
-};
