@@ -10,6 +10,8 @@ export interface Palette {
   edge: string;
   fen: string;
   heather: string;
+  /** Only for lines beside others: no kind of colour blindness joins it to clay, fen or ink. */
+  iris: string;
   clay: string;
   moss: string;
   wash: string;
@@ -30,6 +32,7 @@ const COLOURS = [
   "edge",
   "fen",
   "heather",
+  "iris",
   "clay",
   "moss",
   "wash",
@@ -65,6 +68,7 @@ export const PAPER_PALETTE: Palette = {
   edge: "#857d68",
   fen: "#1f6f63",
   heather: "#7b4b86",
+  iris: "#7a2fd0",
   clay: "#994a25",
   moss: "#4f6827",
   wash: "#d6e6dd",
@@ -84,6 +88,7 @@ export const PEAT_PALETTE: Palette = {
   edge: "#75807a",
   fen: "#63c2b0",
   heather: "#c79ad2",
+  iris: "#a884f0",
   clay: "#e39a6c",
   moss: "#a9c46c",
   wash: "#24453e",

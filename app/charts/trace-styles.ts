@@ -6,18 +6,28 @@ export interface TraceStyle {
   dash: string | undefined;
 }
 
-/** The look of the n-th of several lines; told apart by the dash as well as by the colour. */
+/** The look of the n-th of several lines: MOST_TRACES of them differ, each by its own dash. */
 export function traceStyle(index: number): TraceStyle {
-  return STYLES[index % STYLES.length];
+  const at = index % MOST_TRACES;
+  return { colour: COLOURS[at % COLOURS.length], dash: DASHES[at] };
 }
 
-const { soft, ink, fen, clay, heather, moss } = PAGE_PALETTE;
-/** Every pair of neighbours differs in lightness or in dash as well, so that no kind of colour blindness joins two. */
-const STYLES: TraceStyle[] = [
-  { colour: clay, dash: "7 4" },
-  { colour: fen, dash: undefined },
-  { colour: heather, dash: "2 4" },
-  { colour: ink, dash: "12 4 2 4" },
-  { colour: moss, dash: "4 3" },
-  { colour: soft, dash: "1 3" },
-];
+const { ink, fen, clay, iris } = PAGE_PALETTE;
+/** Four that stay apart in full and with each kind of colour blindness, in both themes (tests/charts/trace-styles.test.ts). */
+const COLOURS = [clay, fen, ink, iris];
+/** Four lines that follow one another differ in colour, and those of one colour in a dash that is easily told. */
+const DASHES = [
+  "7 4",
+  undefined,
+  "12 4 2 4",
+  "2 4",
+  "2 3",
+  "14 5",
+  "5 3",
+  "10 3 2 3 2 3",
+  "16 4 4 4",
+  "3 5 10 5",
+  "1 5",
+  "8 8",
+] as const;
+export const MOST_TRACES = DASHES.length;

@@ -32,18 +32,20 @@ export async function expectedAfter(
   return expectedPlaces(
     newestStops
       .filter(({ numbers }) => !numbers.edge)
-      .map(
-        (stop): TrailAtStep => ({
+      .map((stop): TrailAtStep => {
+        const part = likeliestPart(stop, newestStops, antenna, unit);
+        return {
           trail: stop.trail,
           frequencyHz: stop.numbers.frequencyHz,
           frequencyUncertaintyHz: stop.numbers.frequencyUncertaintyHz,
-          part: likeliestPart(stop, newestStops, antenna, unit),
+          part,
+          kind: antenna.elements.find(({ key }) => key === part)?.kind ?? null,
           history: historyOf(
             stops.filter(({ trail }) => trail === stop.trail),
             antennaOf,
           ),
-        }),
-      ),
+        };
+      }),
     resolved,
     unit,
   );
@@ -57,7 +59,10 @@ function likeliestPart(stop: Stop, all: Stop[], antenna: Antenna, unit: LengthUn
 }
 
 /** What a trail did while the length of a part changed: its frequencies with that part's lengths, oldest sweep first. */
-function historyOf(stops: Stop[], antennaOf: ReadonlyMap<number, Antenna | null>): TrailAtStep["history"] {
+export function historyOf(
+  stops: Stop[],
+  antennaOf: ReadonlyMap<number, Antenna | null>,
+): TrailAtStep["history"] {
   const order = [...antennaOf.keys()];
   const inOrder = [...stops].sort((a, b) => order.indexOf(a.sweepId) - order.indexOf(b.sweepId));
   const byPart = new Map<string, TrailAtStep["history"][number]["pairs"]>();
@@ -73,7 +78,7 @@ function historyOf(stops: Stop[], antennaOf: ReadonlyMap<number, Antenna | null>
     .map(([part, pairs]) => ({ part, pairs }));
 }
 
-function lengthsOf(antenna: Antenna | null): { part: string; lengthM: number }[] {
+export function lengthsOf(antenna: Antenna | null): { part: string; lengthM: number }[] {
   if (!antenna) return [];
   const all = [
     ...antenna.elements.map(({ key, lengthM }) => ({ part: key, lengthM })),
@@ -82,6 +87,6 @@ function lengthsOf(antenna: Antenna | null): { part: string; lengthM: number }[]
   return all.flatMap(({ part, lengthM }) => (lengthM === null ? [] : [{ part, lengthM }]));
 }
 
-function antennaOn(versions: readonly antennas.ListedVersion[], at: Date): Antenna | null {
+export function antennaOn(versions: readonly antennas.ListedVersion[], at: Date): Antenna | null {
   return versions.findLast(({ version }) => version.validFrom <= at)?.version.content ?? null;
 }

@@ -11,7 +11,7 @@ const tokens = Object.fromEntries(
   ),
 );
 const THEMES = ["light", "dark"] as const;
-const TEXT = ["ink", "soft", "fen", "heather", "clay", "moss", "alarm"];
+const TEXT = ["ink", "soft", "fen", "heather", "iris", "clay", "moss", "alarm"];
 const GROUNDS = ["paper", "surface"];
 
 function luminance(colour: string): number {
