@@ -15,6 +15,7 @@ import { noise } from "./noise";
 import { otherReference } from "./other-reference";
 import { q } from "./q";
 import { qSlope } from "./q-slope";
+import { repeats } from "./repeats";
 import { resonance } from "./resonance";
 import { returnLoss } from "./return-loss";
 import { side } from "./side";
@@ -30,7 +31,7 @@ import { zeroLine } from "./zero-line";
 export const CHAPTERS: readonly { title: string; definitions: readonly Definition[] }[] = [
   { title: "Quantities", definitions: [returnLoss, swr, mismatchLoss, otherReference] },
   { title: "Dips", definitions: [dip, lowestSwr, bandwidth, q, tooFewPoints] },
-  { title: "How well it is known", definitions: [noise, uncertainty, directivity, knownSwr] },
+  { title: "How well it is known", definitions: [noise, uncertainty, repeats, directivity, knownSwr] },
   { title: "Bench and feedline", definitions: [zeroLine, threeTerm, feedline] },
   { title: "With phase", definitions: [impedance, resonance, qSlope, side, lNetwork] },
   { title: "Why a dip is there, and what to do", definitions: [bands, elements, causes, trails, trim] },

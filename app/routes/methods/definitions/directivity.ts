@@ -1,12 +1,12 @@
-import { swrLimits } from "~/measurement/correction/wish";
-import { gammaToReturnLossDb, gammaToSwr, returnLossDbToGamma, swrToGamma } from "~/measurement/reflection";
+import { trueLimits } from "~/measurement/limits/worst-case";
+import { gammaToReturnLossDb, gammaToSwr, returnLossDbToGamma } from "~/measurement/reflection";
 import { formatSwr } from "~/measurement/units";
 import { type Definition, example, plain } from "../definition";
 
 export const directivity: Definition = {
   id: "directivity",
   title: "Limits from directivity, match and tracking",
-  says: "What a bridge passes by itself (directivity d), its own port's mismatch M and the error T of the 0 dB line bound what the true abs Γ may be. These are worst-case limits: the truth lies inside them however the errors' phases fall.",
+  says: "What a bridge passes by itself (directivity d), its own port's mismatch M and the error T of the 0 dB line bound what the true abs Γ may be. To first order it is the formula below; the limits are solved for the whole model. These are worst-case limits: the truth lies inside them however the errors' phases fall.",
   formulas: [
     String.raw`\bigl||\Gamma|-|\Gamma_m|\bigr| \le d + T\,|\Gamma_m| + M\,|\Gamma_m|^2`,
     String.raw`d = 10^{-D/20},\quad M = 10^{-M_\mathrm{dB}/20},\quad T = 10^{T_\mathrm{dB}/20}-1`,
@@ -23,17 +23,16 @@ export const directivity: Definition = {
       { name: "loss", label: "Return loss read", unit: "dB", value: 20, least: 0.1, most: 70 },
     ],
     ({ directivity, match, tracking, loss }) => {
-      const one = (value: number) => Float64Array.of(value);
-      const limits = {
-        directivity: one(returnLossDbToGamma(directivity)),
-        match: one(returnLossDbToGamma(match)),
-        tracking: one(10 ** (tracking / 20) - 1),
-      };
-      const swr = gammaToSwr(returnLossDbToGamma(loss));
-      const { low, high } = swrLimits(swr, limits, 0);
-      const lossAt = (bound: number) => plain(Math.max(0, gammaToReturnLossDb(swrToGamma(bound))), 4);
+      const measured = returnLossDbToGamma(loss);
+      const { low, high } = trueLimits(measured, {
+        directivity: returnLossDbToGamma(directivity),
+        match: returnLossDbToGamma(match),
+        tracking: 10 ** (tracking / 20) - 1,
+      });
+      const swr = (gamma: number) => formatSwr(gammaToSwr(gamma));
+      const lossAt = (gamma: number) => plain(Math.max(0, gammaToReturnLossDb(gamma)), 4);
       return [
-        { label: "SWR", value: `${formatSwr(swr)}, between ${formatSwr(low)} and ${formatSwr(high)}` },
+        { label: "SWR", value: `${swr(measured)}, between ${swr(low)} and ${swr(high)}` },
         { label: "Return loss", value: `between ${lossAt(high)} and ${lossAt(low)} dB` },
       ];
     },
