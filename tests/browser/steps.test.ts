@@ -1,4 +1,4 @@
-import type { Browser } from "playwright-core";
+import type { Browser, Page } from "playwright-core";
 import { afterAll, beforeAll, expect, test } from "vitest";
 import {
   expectAccessible,
@@ -37,7 +37,9 @@ test("the antenna is described, in feet and in metres", async () => {
   await page.goto(`${projectPath}/sweeps/new`);
   await settled(page);
   await page.locator("input[type=file]").setInputFiles([fileOf("as built.csv", sweepText(6.99, 25))]);
-  await page.getByText("1 of 1 files done").waitFor();
+  await page.getByText(/1 of 1 files? done/).waitFor();
+
+  await dateSweep(page, "as built", "2026-05-01T12:00");
 
   await page.goto(`${projectPath}/antenna`);
   await page.getByRole("link", { name: "Describe the antenna" }).click();
@@ -80,8 +82,9 @@ test("a step is planned with what to expect, then done, and changes the antenna"
   const expected = page.getByRole("region", { name: "What to expect" });
   expect(await expected.textContent()).toMatch(/7\.1\d*\sMHz/);
 
+  await page.getByLabel("Done at").fill("2026-05-05T12:00");
   await page.getByRole("button", { name: "Mark it done" }).click();
-  await page.getByText("no sweep was taken after it yet", { exact: false }).first().waitFor();
+  await page.getByText("No sweep was taken after it yet").first().waitFor();
   await page.getByRole("link", { name: "antenna as it was then" }).click();
   await page.waitForURL(/\/antenna\?on=/);
   const row = page.getByRole("table", { name: "Elements" }).getByRole("row", { name: /Dike pole/ });
@@ -97,7 +100,8 @@ test("the sweep that comes shows what moved, and anyone can read it on a phone",
   await page.goto(`${projectPath}/sweeps/new`);
   await settled(page);
   await page.locator("input[type=file]").setInputFiles([fileOf("shortened.csv", sweepText(7.137, 25))]);
-  await page.getByText("1 of 1 files done").waitFor();
+  await page.getByText(/1 of 1 files? done/).waitFor();
+  await dateSweep(page, "shortened", "2026-05-10T12:00");
   await context.close();
 
   for (const options of [
@@ -123,3 +127,14 @@ test("the sweep that comes shows what moved, and anyone can read it on a phone",
     await reader.context.close();
   }
 });
+
+/** Says when a sweep that was just taken in was taken. */
+async function dateSweep(page: Page, title: string, at: string): Promise<void> {
+  await page.getByRole("list", { name: "Files" }).getByRole("link").first().click();
+  await page.getByRole("heading", { name: title, level: 2 }).waitFor();
+  await settled(page);
+  await page.getByRole("button", { name: "Title and date" }).click();
+  await page.getByLabel("Taken at").fill(at);
+  await page.getByRole("button", { name: "Keep", exact: true }).click();
+  await page.getByText("Title and date kept.").waitFor();
+}

@@ -19,13 +19,15 @@ export async function loader(args: Route.LoaderArgs) {
     person ? people.findDismissals(person.id) : [],
   ]);
   const unit = lengthUnitOf(person);
-  const planned = new URL(args.request.url).searchParams.get("state") === "planned";
+  const asked = new URL(args.request.url).searchParams;
+  const planned = asked.get("state") === "planned";
+  const [target, to] = ["target", "to"].map((name) => asked.get(name)?.slice(0, 40) ?? "");
   const texts: StepTexts = {
-    title: "",
-    body: "",
+    title: asked.get("title")?.slice(0, 160) ?? "",
+    body: asked.get("body")?.slice(0, 2000) ?? "",
     state: planned ? "planned" : "done",
     at: planned ? "" : new Date().toISOString().slice(0, 16),
-    quantities: [],
+    quantities: target && to ? [{ target, to }] : [],
   };
   return {
     projectId: project.publicId,

@@ -129,11 +129,15 @@ function parseTarget(text: string): QuantityTarget | null {
   return part ? { part, field: field as AntennaField } : null;
 }
 
-/** As a `datetime-local` control gives it; read as UTC. */
+/** As a `datetime-local` control gives it; read as UTC. The minute that runs is now: what came in before it is before. */
 const momentField = z
   .string()
   .regex(/^\d{4}-\d{2}-\d{2}(T\d{2}:\d{2}(:\d{2})?)?$/, "Give date and time as 2026-09-14T17:20.")
-  .transform((text) => new Date(text.includes("T") ? `${text}Z` : `${text}T12:00Z`))
+  .transform((text) => {
+    const now = new Date();
+    if (now.toISOString().startsWith(text) && text.length > DAY_LENGTH) return now;
+    return new Date(text.includes("T") ? `${text}Z` : `${text}T12:00Z`);
+  })
   .refine((at) => !Number.isNaN(at.getTime()), "There is no such day.");
 
 export const doneSchema = z.object({
@@ -146,4 +150,6 @@ export const sweepsSchema = z.object({
   after: z.string().max(16).optional(),
 });
 
+/** `2026-09-14` */
+const DAY_LENGTH = 10;
 const DAY_MS = 24 * 60 * 60 * 1000;
