@@ -25,7 +25,7 @@ export interface StripMapProps extends StripHrefs {
 
 const TOP_PX = 10;
 /** What fits on a sheet. */
-const SHEET_PX = 880;
+const SHEET_PX = 760;
 const palette = PAGE_PALETTE;
 
 /** The project's story at a glance: what moved, what did not, what appeared. */

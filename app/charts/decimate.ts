@@ -91,7 +91,7 @@ function between({ frequencyHz, magnitude }: ChartPoints, index: number, hz: num
   return magnitude[index - 1] + share * (magnitude[index] - magnitude[index - 1]);
 }
 
-function lowerBound(values: ArrayLike<number>, target: number): number {
+export function lowerBound(values: ArrayLike<number>, target: number): number {
   let low = 0;
   let high = values.length;
   while (low < high) {

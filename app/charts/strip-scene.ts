@@ -4,7 +4,7 @@
  */
 import { type FrequencyAxis, type FrequencyScaleKind, frequencyAxis, frequencyScale } from "./axis.ts";
 import type { ChartBand } from "./chart-types.ts";
-import { type ChartPoints, decimate } from "./decimate.ts";
+import { type ChartPoints, decimate, lowerBound } from "./decimate.ts";
 import { type RibbonBand, ribbonBands } from "./ribbon.ts";
 import { type StripPath, stripPath } from "./strip-path.ts";
 import { type PlacedTrail, placeTrails, type Trail } from "./strip-trails.ts";
@@ -86,6 +86,8 @@ const DEPTHS_PX: readonly [most: number, px: number][] = [
 ];
 /** Columns of a strip: a dip narrower than one keeps its lowest point. */
 const COLUMNS = 700;
+/** Where a dip's own samples lie, as a share of its frequency. */
+const NEAR_SHARE = 0.004;
 
 export function buildStripScene(input: StripSceneInput): StripScene {
   const scale = frequencyScale(input.scale, input.fromHz, input.toHz);
@@ -121,7 +123,9 @@ export function buildStripScene(input: StripSceneInput): StripScene {
         .map((dip) => ({
           id: dip.id,
           fraction: thousandths(scale.fractionOf(dip.frequencyHz)),
-          y: Math.round(landY + yOfDb(dip.returnLossDb)),
+          y: Math.round(
+            landY + Math.min(yOfDb(dip.returnLossDb), lineY(strip.points, dip.frequencyHz, yOfDb)),
+          ),
         })),
     };
   });
@@ -134,6 +138,16 @@ export function buildStripScene(input: StripSceneInput): StripScene {
     trails: placeTrails(input.trails, strips, steps, scale),
     heightPx: y,
   };
+}
+
+/** How deep the line goes at a dip: a fitted one may be deeper than every sample, and its mark stays on the line. */
+function lineY({ frequencyHz, magnitude }: ChartPoints, hz: number, yOfDb: (db: number) => number): number {
+  let lowest = Number.POSITIVE_INFINITY;
+  for (let i = lowerBound(frequencyHz, hz * (1 - NEAR_SHARE)); i < frequencyHz.length; i++) {
+    if (frequencyHz[i] > hz * (1 + NEAR_SHARE)) break;
+    if (magnitude[i] < lowest) lowest = magnitude[i];
+  }
+  return lowest === Number.POSITIVE_INFINITY ? lowest : yOfDb(-20 * Math.log10(lowest));
 }
 
 function thousandths(fraction: number): number {

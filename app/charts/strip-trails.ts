@@ -74,7 +74,7 @@ export function placeTrails(
   scale: FrequencyScale,
 ): PlacedTrail[] {
   const placed = trails.map((trail) => placeTrail(trail, strips, steps, scale));
-  return nameTrails(placed);
+  return nameTrails(placed, strips);
 }
 
 function placeTrail(

@@ -1,4 +1,5 @@
 /** Where the names of trails stand without running into each other. */
+import type { PlacedStrip } from "./strip-scene.ts";
 import type { PlacedTrail } from "./strip-trails.ts";
 import { TIER_PLOT_WIDTHS_PX } from "./tiers.ts";
 
@@ -15,22 +16,24 @@ const CHARACTER_PX = 7;
 const OFFSET_PX = 12;
 const HALF_HEIGHT_PX = 8;
 const DOT_PX = 7;
+const CAPTION_PX = 20;
 type Place = Pick<TrailName, "side" | "shiftY">;
 /** Beside and a little under the stop, where the land is; over it last. */
-const PLACES: Place[] = [12, 0, 26, -14].flatMap((shiftY) => [
+const PLACES: Place[] = [12, 26, 0, -14].flatMap((shiftY) => [
   { side: "right" as const, shiftY },
   { side: "left" as const, shiftY },
 ]);
 
 /** Longest trails first; a label stays where its narrowest width puts it, and takes its detail along where that fits. */
-export function nameTrails(placed: PlacedTrail[]): PlacedTrail[] {
+export function nameTrails(placed: PlacedTrail[], strips: readonly PlacedStrip[]): PlacedTrail[] {
+  const captions = strips.map(captionOf);
   const order = [...placed].sort((a, b) => b.stops.length - a.stops.length).filter(isNamed);
   for (const [tier, plotWidthPx] of TIER_PLOT_WIDTHS_PX.entries()) {
     for (const trail of order) {
       if (trail.name !== null) continue;
       const place = PLACES.find((candidate) => {
         const box = boxOf(trail, candidate, trail.label, plotWidthPx);
-        return isClear(box, trail, placed, tier, plotWidthPx);
+        return isClear(box, trail, placed, tier, plotWidthPx) && !captions.some((one) => overlap(box, one));
       });
       if (place) trail.name = { ...place, tier, detailTier: null };
     }
@@ -38,7 +41,8 @@ export function nameTrails(placed: PlacedTrail[]): PlacedTrail[] {
       const { name } = trail;
       if (!name || name.detailTier !== null || trail.detail === "" || tier === 0) continue;
       const box = boxOf(trail, name, `${trail.label}, ${trail.detail}`, plotWidthPx);
-      if (isClear(box, trail, placed, tier, plotWidthPx)) name.detailTier = tier;
+      const clear = isClear(box, trail, placed, tier, plotWidthPx);
+      if (clear && !captions.some((one) => overlap(box, one))) name.detailTier = tier;
     }
   }
   return placed;
@@ -62,6 +66,12 @@ function boxOf({ stops }: PlacedTrail, place: Place, text: string, plotWidthPx: 
   const y = stops[0].y + place.shiftY;
   const [left, right] = place.side === "left" ? [at - length, at - DOT_PX] : [at + DOT_PX, at + length];
   return { left, right, top: y - HALF_HEIGHT_PX, bottom: y + HALF_HEIGHT_PX };
+}
+
+/** Date and title at the left of a strip's ground. */
+function captionOf({ caption, title, footY }: PlacedStrip): Box {
+  const characters = caption.length + 2 + title.length;
+  return { left: 0, right: characters * CHARACTER_PX, top: footY - CAPTION_PX, bottom: footY };
 }
 
 function isClear(

@@ -5,6 +5,7 @@ import { chromium } from "playwright-core";
 import type { BenchRow } from "../bench.ts";
 import { findProgram, ROOT } from "../install.mjs";
 import { PlainFailure } from "../steps.mjs";
+import { benchStripMap } from "./bench-strip-map.ts";
 import { startTestStack } from "./test-stack.ts";
 
 const WARM_UP = 60;
@@ -28,6 +29,7 @@ export async function benchServer(): Promise<BenchRow[]> {
         unit: "×",
       },
       { name: "sweep page, Plotly loaded before the first paint", value: bytes, goal: 0, unit: "bytes" },
+      ...(await benchStripMap()),
     ];
   } finally {
     await stack.stop();
