@@ -2,18 +2,20 @@ import { and, asc, count, eq, isNull, or, sql } from "drizzle-orm";
 import { completeDip } from "~/measurement/dips/complete";
 import type { Dip } from "~/measurement/sweep";
 import { db, type Queryable } from "./client.server.ts";
-import { dips, notes, sweeps, trailDecisions, users } from "./schema/index.ts";
+import { dips, notes, sweeps, trailDecisions, trailDips, trails, users } from "./schema/index.ts";
+import { standing, standingVerdict } from "./standing-verdict.server.ts";
 
 export type DipRow = typeof dips.$inferSelect;
 
 /** With its table's name: in a query of one table the builder leaves it out, and a subquery then finds its own id. */
 const OUTER_DIP_ID = sql`${sql.identifier("dips")}.${sql.identifier("id")}`;
 
-/** A sweep's dips with their notes counted and the latest note's text, lowest frequency first. */
+/** A sweep's dips with the verdicts that stand, their notes counted and the latest note's text, lowest frequency first. */
 export async function findAllBySweep(sweepId: number, tx: Queryable = db) {
   const rows = await tx
     .select({
       dip: dips,
+      standing,
       noteCount:
         sql<number>`(select count(*) from ${notes} n where n.dip_id = ${OUTER_DIP_ID} and n.removed_at is null)`.mapWith(
           Number,
@@ -23,26 +25,34 @@ export async function findAllBySweep(sweepId: number, tx: Queryable = db) {
       >`(select left(n.body, 200) from ${notes} n where n.dip_id = ${OUTER_DIP_ID} and n.removed_at is null order by n.id desc limit 1)`,
     })
     .from(dips)
+    .leftJoin(trailDips, eq(trailDips.dipId, dips.id))
+    .leftJoin(trails, eq(trails.id, trailDips.trailId))
     .where(eq(dips.sweepId, sweepId))
     .orderBy(asc(dips.frequencyHz))
     .limit(1000);
-  return rows.map((row) => ({ ...row, dip: revive(row.dip) }));
+  return rows.map(({ standing, ...row }) => ({ ...row, dip: withStanding(row.dip, standing) }));
 }
 export type ListedDip = Awaited<ReturnType<typeof findAllBySweep>>[number];
 
+/** A dip with its sweep and the verdict that stands; `byTrail` where that is its trail's. */
 export async function findByPublicId(publicId: string, tx: Queryable = db) {
   const rows = await tx
     .select({
       dip: dips,
+      standing,
       sweep: { id: sweeps.id, publicId: sweeps.publicId, title: sweeps.title, takenAt: sweeps.takenAt },
       verdictBy: users.name,
     })
     .from(dips)
     .innerJoin(sweeps, eq(sweeps.id, dips.sweepId))
-    .leftJoin(users, eq(users.id, dips.verdictBy))
+    .leftJoin(trailDips, eq(trailDips.dipId, dips.id))
+    .leftJoin(trails, eq(trails.id, trailDips.trailId))
+    .leftJoin(users, eq(users.id, standing.verdictBy))
     .where(eq(dips.publicId, publicId))
     .limit(1);
-  return rows[0] && { ...rows[0], dip: revive(rows[0].dip) };
+  if (!rows[0]) return undefined;
+  const { dip, standing: stands, ...rest } = rows[0];
+  return { ...rest, dip: withStanding(dip, stands), byTrail: stands.byTrail };
 }
 
 /** Dips of the project's newest sweep that nobody has settled, those with the lowest SWR first. */
@@ -53,8 +63,8 @@ export async function findOpenByProject(projectId: number, limit = 20, tx: Query
       frequencyHz: dips.frequencyHz,
       numbers: dips.numbers,
       minimumSwr: dips.minimumSwr,
-      verdict: dips.verdict,
-      verdictText: dips.verdictText,
+      verdict: standing.verdict,
+      verdictText: standing.verdictText,
       sweepTitle: sweeps.title,
       sweepPublicId: sweeps.publicId,
       noteCount:
@@ -64,11 +74,13 @@ export async function findOpenByProject(projectId: number, limit = 20, tx: Query
     })
     .from(dips)
     .innerJoin(sweeps, eq(sweeps.id, dips.sweepId))
+    .leftJoin(trailDips, eq(trailDips.dipId, dips.id))
+    .leftJoin(trails, eq(trails.id, trailDips.trailId))
     .where(
       and(
         eq(dips.sweepId, newestSweepOf(projectId)),
         eq(dips.present, true),
-        sql`${dips.verdict} <> 'settled'`,
+        sql`${standingVerdict} <> 'settled'`,
       ),
     )
     .orderBy(asc(dips.minimumSwr))
@@ -86,12 +98,14 @@ export async function countOpenByProject(projectId: number, tx: Queryable = db):
     .select({ n: count() })
     .from(dips)
     .innerJoin(sweeps, eq(sweeps.id, dips.sweepId))
+    .leftJoin(trailDips, eq(trailDips.dipId, dips.id))
+    .leftJoin(trails, eq(trails.id, trailDips.trailId))
     .where(
       and(
         eq(dips.projectId, projectId),
         eq(dips.present, true),
         eq(sweeps.purpose, "antenna"),
-        sql`${dips.verdict} <> 'settled'`,
+        sql`${standingVerdict} <> 'settled'`,
       ),
     );
   return rows[0].n;
@@ -162,7 +176,12 @@ function columnsOf(numbers: Dip) {
   };
 }
 
-/** The numbers as the current method's shape has them, whichever version stored them. */
-function revive(row: DipRow): DipRow {
-  return { ...row, numbers: completeDip(row.numbers) };
+/** The dip with the verdict that stands, and its numbers as the current method's shape has them, whichever version stored them. */
+function withStanding(
+  row: DipRow,
+  { byTrail: _, ...verdict }: Pick<DipRow, keyof Verdict> & { byTrail: boolean },
+) {
+  return { ...row, ...verdict, numbers: completeDip(row.numbers) };
 }
+
+type Verdict = Pick<DipRow, "verdict" | "verdictText" | "verdictBy" | "verdictAt">;

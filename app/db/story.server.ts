@@ -1,7 +1,8 @@
 import { and, asc, count, desc, eq, inArray, isNotNull, isNull, sql } from "drizzle-orm";
 import { db, type Queryable } from "./client.server.ts";
 import { dipNumber } from "./dip-numbers.server.ts";
-import { analyses, dips, notes, steps, sweeps } from "./schema/index.ts";
+import { analyses, dips, notes, steps, sweeps, trailDips, trails } from "./schema/index.ts";
+import { standing } from "./standing-verdict.server.ts";
 
 /** What the strip map is drawn from: the newest sweeps of the antenna that have numbers, oldest of them first. */
 export async function findStrips(projectId: number, tx: Queryable = db) {
@@ -46,10 +47,12 @@ export async function findDips(sweepIds: number[], tx: Queryable = db) {
       minimumSwrLow: dipNumber("minimumSwrLow", "minimumSwrNoiseLow"),
       minimumSwrHigh: dipNumber("minimumSwrHigh", "minimumSwrNoiseHigh"),
       returnLossDb: dips.returnLossDb,
-      verdict: dips.verdict,
-      verdictText: dips.verdictText,
+      verdict: standing.verdict,
+      verdictText: standing.verdictText,
     })
     .from(dips)
+    .leftJoin(trailDips, eq(trailDips.dipId, dips.id))
+    .leftJoin(trails, eq(trails.id, trailDips.trailId))
     .where(and(inArray(dips.sweepId, sweepIds), eq(dips.present, true)))
     .orderBy(asc(dips.frequencyHz))
     .limit(20_000);

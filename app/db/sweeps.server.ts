@@ -13,8 +13,11 @@ import {
   type StoredCorrection,
   sweepPoints,
   sweeps,
+  trailDips,
+  trails,
   users,
 } from "./schema/index.ts";
+import { standingVerdict } from "./standing-verdict.server.ts";
 
 export type SweepRow = typeof sweeps.$inferSelect;
 
@@ -283,9 +286,11 @@ export async function findDipsOf(sweepIds: number[], tx: Queryable = db) {
       frequencyHz: dips.frequencyHz,
       minimumSwr: dips.minimumSwr,
       returnLossDb: dips.returnLossDb,
-      verdict: dips.verdict,
+      verdict: standingVerdict,
     })
     .from(dips)
+    .leftJoin(trailDips, eq(trailDips.dipId, dips.id))
+    .leftJoin(trails, eq(trails.id, trailDips.trailId))
     .where(and(inArray(dips.sweepId, sweepIds), eq(dips.present, true)))
     .orderBy(asc(dips.frequencyHz))
     .limit(5000);

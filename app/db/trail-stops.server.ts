@@ -2,6 +2,7 @@ import { and, asc, desc, eq, isNull, sql } from "drizzle-orm";
 import { db, type Queryable } from "./client.server.ts";
 import { dipNumber } from "./dip-numbers.server.ts";
 import { dips, notes, sweeps, trailDips, trails, users } from "./schema/index.ts";
+import { standing } from "./standing-verdict.server.ts";
 
 /** Numbers of a dip as its trail is read; limits of noise alone where the bench's are not known. */
 const stopColumns = {
@@ -37,14 +38,15 @@ export async function findAllByTrail(trailId: number, tx: Queryable = db) {
       ...stopColumns,
       sweepId: sweeps.id,
       numbers: dips.numbers,
-      verdict: dips.verdict,
-      verdictText: dips.verdictText,
+      verdict: standing.verdict,
+      verdictText: standing.verdictText,
       noteCount:
         sql<number>`(select count(*) from ${notes} n where n.dip_id = ${dips.id} and n.removed_at is null)`.mapWith(
           Number,
         ),
     })
     .from(trailDips)
+    .innerJoin(trails, eq(trails.id, trailDips.trailId))
     .innerJoin(dips, eq(dips.id, trailDips.dipId))
     .innerJoin(sweeps, eq(sweeps.id, dips.sweepId))
     .where(eq(trailDips.trailId, trailId))

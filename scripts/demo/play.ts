@@ -64,7 +64,7 @@ async function perform(step: Step, stage: Stage): Promise<void> {
       const now = (await dips.findByPublicId(publicId))?.dip.verdict ?? "open";
       const text = step.text(stage.told);
       const change = await changeVerdict({
-        dip: { id },
+        dip: { id, projectId: stage.project.id },
         by,
         intent: step.intent,
         text,

@@ -123,7 +123,8 @@ describe("changeVerdict", () => {
   });
 
   it("says that a dip is gone", async () => {
-    expect(await changeVerdict({ dip: { id: 0 }, by: ada, intent: "settle", text: "x", was: "open" })).toBe(
+    const gone = { id: 0, projectId: 0 };
+    expect(await changeVerdict({ dip: gone, by: ada, intent: "settle", text: "x", was: "open" })).toBe(
       "missing",
     );
   });

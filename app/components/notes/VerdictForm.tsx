@@ -1,6 +1,6 @@
 import { getFormProps, getInputProps, type SubmissionResult, useForm } from "@conform-to/react";
 import { getZodConstraint, parseWithZod } from "@conform-to/zod/v4";
-import { useEffect, useId, useRef } from "react";
+import { type ReactNode, useEffect, useId, useRef } from "react";
 import { useFetcher, useLocation } from "react-router";
 import { Button } from "~/components/ui/Button";
 import { InputField } from "~/components/ui/Field";
@@ -17,6 +17,8 @@ export interface VerdictFormProps {
   /** Name of who gave it. */
   verdictBy: string | null;
   may: { propose: boolean; settle: boolean };
+  /** Controls named `evidence`, where there is something to choose. */
+  evidence?: ReactNode;
 }
 
 /** What the dip is held to be, and what the person may do about it. */
@@ -50,7 +52,7 @@ interface Answer {
 }
 
 function Change({ onDone, ...props }: VerdictFormProps & { onDone?: () => void }) {
-  const { projectId, dipId, verdict, verdictText, may } = props;
+  const { projectId, dipId, verdict, verdictText, may, evidence } = props;
   const fetcher = useFetcher<Answer>();
   const { show } = useToast();
   const { pathname, search } = useLocation();
@@ -85,6 +87,7 @@ function Change({ onDone, ...props }: VerdictFormProps & { onDone?: () => void }
         errors={fields.text.errors ?? form.errors}
         {...getInputProps(fields.text, { type: "text" })}
       />
+      {evidence}
       <div className="flex flex-wrap gap-2">
         {verdict !== "settled" && (
           <Button

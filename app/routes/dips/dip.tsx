@@ -8,19 +8,28 @@ import { VerdictTag } from "~/components/ui/Tag";
 import { formatFrequency } from "~/measurement/units";
 import { TrailOfDip } from "../trails/components/TrailOfDip.tsx";
 import type { Route } from "./+types/dip";
+import { Causes } from "./components/Causes.tsx";
 import { CloseUp } from "./components/CloseUp.tsx";
 import { DipNumbers } from "./components/DipNumbers.tsx";
+import { EvidenceChoice } from "./components/EvidenceChoice.tsx";
 import { Provenance } from "./components/Provenance.tsx";
+import { VerdictHistory } from "./components/VerdictHistory.tsx";
 import { Whereabouts } from "./components/Whereabouts.tsx";
 import { loadDipPage } from "./dip-page.server.ts";
+import { loadJudgement } from "./judgement.server.ts";
 
 export async function loader(args: Route.LoaderArgs) {
   const access = await requireProject(args, "project.read");
+  const [page, judgement] = await Promise.all([
+    loadDipPage(access, args.params.dip),
+    loadJudgement(access, args.params.dip),
+  ]);
   return {
     projectId: access.project.publicId,
     mayWrite: access.may("note.write"),
     mayVerdict: { propose: access.may("verdict.propose"), settle: access.may("verdict.settle") },
-    ...(await loadDipPage(access, args.params.dip)),
+    ...page,
+    judgement,
   };
 }
 
@@ -31,7 +40,9 @@ export const meta: Route.MetaFunction = ({ data }) => [
 export default function DipPage({ loaderData }: Route.ComponentProps) {
   const { projectId, dip, sweep, designBands, dismissed, thread } = loaderData;
   const sweepPath = `/projects/${projectId}/sweeps/${sweep.publicId}`;
-  const outside = designBands.length > 0 && !designBands.some((band) => holds(band, dip.numbers.frequencyHz));
+  const inside = designBands.some((band) => holds(band, dip.numbers.frequencyHz));
+  const outside = designBands.length > 0 && !inside;
+  const { verdictOfTrail } = loaderData.judgement;
   return (
     <article className="grid gap-6">
       <header className="grid gap-2">
@@ -81,7 +92,18 @@ export default function DipPage({ loaderData }: Route.ComponentProps) {
               verdictText={dip.verdictText}
               verdictBy={dip.verdictBy}
               may={loaderData.mayVerdict}
+              evidence={<EvidenceChoice data={loaderData} />}
             />
+            {verdictOfTrail && (
+              <p className="text-small">
+                This is the verdict of{" "}
+                <Link to={`/projects/${projectId}/trails/${verdictOfTrail.publicId}`}>
+                  its trail{verdictOfTrail.label && `, ${verdictOfTrail.label}`}
+                </Link>
+                , which stands for every dip on it that has no later one of its own.
+              </p>
+            )}
+            <VerdictHistory data={loaderData} />
           </section>
           <section aria-labelledby="thread" className="grid gap-4">
             <h2 id="thread">What is said about it</h2>
@@ -95,6 +117,7 @@ export default function DipPage({ loaderData }: Route.ComponentProps) {
         </div>
         <div className="grid gap-8 content-start min-w-0">
           <Whereabouts data={loaderData} />
+          <Causes data={loaderData} inside={inside} />
           <Provenance data={loaderData} />
         </div>
       </div>

@@ -1,12 +1,17 @@
 import { parseWithZod } from "@conform-to/zod/v4";
 import { data, redirect } from "react-router";
 import { safePath } from "~/auth/next";
-import { requireProject } from "~/auth/require.server";
+import { type Person, requireProject } from "~/auth/require.server";
 import { sendOrSayWhy } from "~/components/notes/unsent";
 import { verdictSchema } from "~/components/notes/verdict.schema";
 import * as dips from "~/db/dips.server";
+import * as sweeps from "~/db/sweeps.server";
+import * as trails from "~/db/trails.server";
 import { notFound, refused } from "~/errors";
+import { lengthUnitOf } from "~/routes/antenna/sizes";
+import { judgeDip } from "~/services/causes.server";
 import { redirectWithMessage } from "~/services/flash.server";
+import { chosenEvidence, evidenceFor } from "~/services/verdict-evidence.server";
 import { changeVerdict, type VerdictChange, type VerdictIntent } from "~/services/verdicts.server";
 import type { Route } from "./+types/verdict";
 
@@ -27,13 +32,31 @@ export async function action(args: Route.ActionArgs) {
     if (stays) return data({ lastResult: submission.reply() }, { status: 400 });
     return redirectWithMessage(to, "The verdict needs a few words. Nothing was changed.");
   }
-  const { intent, text, was } = submission.value;
-  const change = await changeVerdict({ dip: found.dip, by: person, intent, text, was });
+  const { intent, text, was, note, evidence: keys = [] } = submission.value;
+  const evidence = keys.length > 0 ? chosenEvidence(keys, await offeredEvidence(found, person)) : [];
+  const change = await changeVerdict({
+    dip: found.dip,
+    by: person,
+    intent,
+    text,
+    was,
+    evidence,
+    details: note?.trim(),
+  });
   if (change === "missing") throw notFound("dip");
   if (change === "done") return stays ? { done: intent } : redirectWithMessage(to, DONE[intent]);
   if (!stays) return redirectWithMessage(to, PROBLEMS[change]);
   return data({ lastResult: submission.reply({ formErrors: [PROBLEMS[change]] }) }, { status: 409 });
 }
+
+/** All that may be chosen for this dip, as it reads for this person. */
+async function offeredEvidence({ dip, sweep }: Found, person: Person) {
+  const [from, trail] = await Promise.all([sweeps.findByPublicId(sweep.publicId), trails.findByDip(dip.id)]);
+  const judged = from && (await judgeDip(dip, from.sweep, lengthUnitOf(person)));
+  return evidenceFor(dip, trail?.id ?? null, judged?.causes ?? []);
+}
+
+type Found = NonNullable<Awaited<ReturnType<typeof dips.findByPublicId>>>;
 
 export function clientAction({ serverAction }: Route.ClientActionArgs) {
   return sendOrSayWhy(serverAction);

@@ -1,5 +1,6 @@
 import { formatFrequency, formatPercent, formatWidth } from "~/measurement/units";
 import type { DipPageData } from "../dip";
+import { TrimPart } from "./TrimPart.tsx";
 
 /** Where the dip lies: relative to the design bands, and to the allocations of the project's region. */
 export function Whereabouts({ data }: { data: DipPageData }) {
@@ -23,6 +24,7 @@ export function Whereabouts({ data }: { data: DipPageData }) {
           ))}
         </ul>
       )}
+      <TrimPart data={data} />
       <p>
         {allocation
           ? `${regionWords(region)}, ${allocation.name} is allocated to amateurs here`
