@@ -33,6 +33,8 @@ export interface StepSide {
 export interface ExpectedAgainst extends ExpectedPlace {
   /** The trail's name; empty where nobody gave one. */
   name: string;
+  /** Where its dip lay before; null where the sweep before shows none on it. */
+  was: ExpectedAgainst["came"];
   /** Where the trail's dip came; null where the later sweep shows none on it, or there is no later sweep. */
   came: { publicId: string; frequencyHz: number; frequencyUncertaintyHz: number | null } | null;
 }
@@ -73,9 +75,17 @@ export async function loadEffect(
     expected: step.expected.map((place) => ({
       ...place,
       name: named.find(({ publicId }) => publicId === place.trail)?.name ?? "",
-      came: fresh?.dips.find((dip) => dip.trail === place.trail && !dip.edge) ?? null,
+      was: dipOn(place.trail, old),
+      came: dipOn(place.trail, fresh),
     })),
   };
+}
+
+function dipOn(trail: string, side: { dips: StepDip[] } | null): ExpectedAgainst["came"] {
+  const dip = side?.dips.find((one) => one.trail === trail && !one.edge);
+  if (!dip) return null;
+  const { publicId, frequencyHz, frequencyUncertaintyHz } = dip;
+  return { publicId, frequencyHz, frequencyUncertaintyHz };
 }
 
 interface LoadedSide {

@@ -54,7 +54,15 @@ describe("movementWords", () => {
 });
 
 describe("expectationWords", () => {
-  const place = { trail: "t", name: "", frequencyHz: 7.2e6, lowHz: 7.15e6, highHz: 7.25e6, how: "" };
+  const place = {
+    trail: "t",
+    name: "",
+    frequencyHz: 7.2e6,
+    lowHz: 7.15e6,
+    highHz: 7.25e6,
+    how: "",
+    was: null,
+  };
   const came = (frequencyHz: number) => ({ publicId: "d", frequencyHz, frequencyUncertaintyHz: 6e3 });
   it.each([
     [7.21e6, /^Met: it came at 7.210 MHz/],

@@ -65,10 +65,19 @@ export function Effect({ data }: { data: StepPageData }) {
 }
 
 function View({ data }: { data: StepPageData }) {
-  const { log, zoomed, range } = data;
+  const { log, zoomed, range, effect, project } = data;
+  const { before, after } = effect;
   const stretch = zoomed && range ? `&from=${megahertz(range.fromHz)}&to=${megahertz(range.toHz)}` : "";
   return (
     <div className="flex flex-wrap items-center gap-3 no-print">
+      {before && after && (
+        <Link
+          to={`/projects/${project.publicId}/compare?sweep=${before.publicId}&sweep=${after.publicId}`}
+          className="text-small"
+        >
+          Compare with others
+        </Link>
+      )}
       {zoomed && (
         <Link to={log ? "?axis=log" : "?"} preventScrollReset className="text-small">
           The whole range
