@@ -1,5 +1,6 @@
 import type { CSSProperties } from "react";
-import { formatFrequency, formatSwr, formatWidth } from "~/measurement/units";
+import type { Bandwidth } from "~/measurement/sweep";
+import { formatFrequency, formatSwr, formatWidth, formatWidthLimits } from "~/measurement/units";
 import { cardVerdict, type WidthBar, widthBar } from "./card-words";
 import type { ChartBand, ChartDip } from "./chart-types";
 import { pick } from "./DipMarks";
@@ -126,7 +127,7 @@ function HollowCard({ dip, style, designBands, dipHref, chosenDipId, onPick }: H
       <Bar bar={widthBar(dip, designBands)} />
       <p className="number soft">
         {bandwidth
-          ? `${limit} over ${bandwidth.open ? "at least " : ""}${formatWidth(bandwidth.widthHz, bandwidth.widthUncertaintyHz)}`
+          ? `${limit} over ${bandwidth.open ? "at least " : ""}${cardWidth(bandwidth)}`
           : "never under the limit"}
         {bandwidth?.shared && ", shared"}
       </p>
@@ -137,6 +138,13 @@ function HollowCard({ dip, style, designBands, dipHref, chosenDipId, onPick }: H
       </p>
     </li>
   );
+}
+
+/** With its limits where the bench's errors are known. */
+function cardWidth({ widthHz, widthUncertaintyHz, widthLowHz, widthHighHz }: Bandwidth): string {
+  return widthLowHz === null || widthHighHz === null
+    ? formatWidth(widthHz, widthUncertaintyHz)
+    : formatWidthLimits(widthHz, widthLowHz, widthHighHz).replace("–", "\u2060–\u2060");
 }
 
 function Bar({ bar }: { bar: WidthBar }) {

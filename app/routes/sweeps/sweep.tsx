@@ -1,4 +1,4 @@
-import { redirect } from "react-router";
+import { Link, redirect } from "react-router";
 import { requireProject } from "~/auth/require.server";
 import * as sweeps from "~/db/sweeps.server";
 import { refused } from "~/errors";
@@ -12,8 +12,10 @@ import {
   type TitleAndDate,
 } from "~/services/sweep-edits.server";
 import type { Route } from "./+types/sweep";
+import { loadBands } from "./bands-page.server";
 import { changeCorrection } from "./change-correction.server";
 import { Advice } from "./components/Advice";
+import { BandsSection } from "./components/bands/BandsSection";
 import { OutsideBandsCaution } from "./components/cautions";
 import { ComplexSection } from "./components/complex/ComplexSection";
 import { CorrectionBar } from "./components/correction/CorrectionBar";
@@ -43,6 +45,8 @@ export async function loader(args: Route.LoaderArgs) {
     throw redirect(`/projects/${access.project.publicId}/sweeps/${sweep.publicId}/reading`);
   }
   const view = parseView(new URL(args.request.url).searchParams);
+  const page = await loadSweepPage(access, found, view, analysis.settings);
+  const limit = view.swrLimit ?? analysis.settings.swrLimit;
   return {
     project: { publicId: access.project.publicId, title: access.project.title },
     may: {
@@ -72,7 +76,8 @@ export async function loader(args: Route.LoaderArgs) {
     },
     analysis: { settings: analysis.settings, version: analysis.version, number: analysis.number },
     view,
-    ...(await loadSweepPage(access, found, view, analysis.settings)),
+    ...page,
+    inBands: await loadBands(access, found, { dips: page.dips, plane: view.plane, limit }),
   };
 }
 
@@ -149,7 +154,12 @@ export default function SweepPage({ loaderData, actionData }: Route.ComponentPro
         <div className="grid gap-6 min-w-0 content-start">
           <section aria-labelledby="dips" className="grid gap-3">
             <div className="flex flex-wrap items-end justify-between gap-x-6 gap-y-3">
-              <h2 id="dips">Dips as numbers</h2>
+              <h2 id="dips">
+                Dips as numbers{" "}
+                <Link to="/methods#dip" className="text-small font-normal font-sans">
+                  How they are reckoned
+                </Link>
+              </h2>
               <SettingsForm
                 view={view}
                 stored={analysis.settings}
@@ -161,6 +171,7 @@ export default function SweepPage({ loaderData, actionData }: Route.ComponentPro
             <LimitList data={loaderData} />
             <LostDips data={loaderData} />
           </section>
+          <BandsSection data={loaderData.inBands} />
           <ComplexSection data={loaderData.complex} {...{ dips, view, swrLimit }} />
           <Downloads data={loaderData} />
           <SweepNotes data={loaderData} />

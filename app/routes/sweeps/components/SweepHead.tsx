@@ -16,7 +16,7 @@ export function SweepHead({ data, errors }: { data: SweepPageData; errors: strin
       <div className="flex flex-wrap items-start justify-between gap-x-6 gap-y-3">
         <h2 className="sweep-title">{sweep.title}</h2>
         <div className="flex flex-wrap gap-2 no-print">
-          {may.edit && <EditDialog sweep={sweep} />}
+          {may.edit && <EditDialog key={`${sweep.title} ${sweep.takenAt}`} sweep={sweep} />}
           {may.delete && (
             <DeleteDialog
               title={sweep.title}
@@ -39,6 +39,10 @@ export function SweepHead({ data, errors }: { data: SweepPageData; errors: strin
         <Link to={`${base}/sweeps/${sweep.publicId}/reading`}>
           {sweep.format === "screenshot" && "Read from a picture. "}
           {readingWords(sweep)}
+        </Link>
+        {" · "}
+        <Link to={`${base}/compare?sweep=${sweep.publicId}`} className="no-print">
+          Compare with others
         </Link>
         {(sweep.repeatGroup || may.edit) && (
           <>

@@ -41,8 +41,14 @@ export function CorrectionBar({ data, errors }: CorrectionBarProps) {
         </nav>
         {choices && (
           <div className="flex flex-wrap gap-2 no-print">
-            <BenchDialog data={data} choices={choices} />
-            <FeedlineDialog data={data} choices={choices} errors={errors} />
+            {/* What was kept closes its dialog: a new key is a new one, closed. */}
+            <BenchDialog key={`bench ${data.analysis.number}`} data={data} choices={choices} />
+            <FeedlineDialog
+              key={`line ${data.analysis.number} ${view.plane} ${JSON.stringify(correction.feedline)}`}
+              data={data}
+              choices={choices}
+              errors={errors}
+            />
           </div>
         )}
       </div>
