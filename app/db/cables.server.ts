@@ -1,4 +1,4 @@
-import { and, asc, eq } from "drizzle-orm";
+import { asc, eq } from "drizzle-orm";
 import { db, type Queryable } from "./client.server.ts";
 import { newPublicId } from "./ids.server.ts";
 import { cables } from "./schema/index.ts";
@@ -8,15 +8,6 @@ export type CableRow = typeof cables.$inferSelect;
 /** A project's own cable entries, by name. */
 export async function findAllByProject(projectId: number, tx: Queryable = db): Promise<CableRow[]> {
   return tx.select().from(cables).where(eq(cables.projectId, projectId)).orderBy(asc(cables.name)).limit(100);
-}
-
-export async function findByName(projectId: number, name: string, tx: Queryable = db) {
-  const rows = await tx
-    .select()
-    .from(cables)
-    .where(and(eq(cables.projectId, projectId), eq(cables.name, name)))
-    .limit(1);
-  return rows[0] as CableRow | undefined;
 }
 
 export async function findByPublicId(publicId: string, tx: Queryable = db) {

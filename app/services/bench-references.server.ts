@@ -1,3 +1,4 @@
+import * as benchReferences from "~/db/bench-references.server";
 import * as benches from "~/db/benches.server";
 import { inTransaction, isDuplicate, type Transaction } from "~/db/client.server";
 import { findZeroLines } from "~/db/readings.server";
@@ -11,13 +12,13 @@ import { sha256Of } from "./storage.server.ts";
 import { readAnew } from "./sweep-edits.server.ts";
 
 export interface ReferenceFile {
-  kind: benches.ReferenceKind;
+  kind: benchReferences.ReferenceKind;
   file: { name: string; bytes: Uint8Array };
 }
 
 /** What became of one reference's file, in words for its person. */
 export interface ReferenceTaken {
-  kind: benches.ReferenceKind;
+  kind: benchReferences.ReferenceKind;
   how: "read" | "unread" | "shared" | "refused" | "failed";
   message: string;
   /** The message says more than that it was read. */
@@ -61,8 +62,10 @@ export function takenWords(taken: readonly ReferenceTaken[]): string {
 }
 
 /** Two kinds that were given the same file, which can't both be right; null where all differ. */
-export function sameFileTwice(files: ReferenceFile[]): [benches.ReferenceKind, benches.ReferenceKind] | null {
-  const seen = new Map<string, benches.ReferenceKind>();
+export function sameFileTwice(
+  files: ReferenceFile[],
+): [benchReferences.ReferenceKind, benchReferences.ReferenceKind] | null {
+  const seen = new Map<string, benchReferences.ReferenceKind>();
   for (const { kind, file } of files) {
     const sha256 = sha256Of(file.bytes);
     const first = seen.get(sha256);
@@ -74,7 +77,7 @@ export function sameFileTwice(files: ReferenceFile[]): [benches.ReferenceKind, b
 
 async function takeReference(input: TakeReferences, { kind, file }: ReferenceFile): Promise<ReferenceTaken> {
   const { bench, version, project, by } = input;
-  const present = await benches.findReferences([version.id]);
+  const present = await benchReferences.findAllByVersions([version.id]);
   if (present.some((reference) => reference.kind === kind)) {
     return {
       kind,
@@ -116,7 +119,7 @@ async function takeReference(input: TakeReferences, { kind, file }: ReferenceFil
 async function attachTwin(
   input: TakeReferences,
   { kind, file }: ReferenceFile,
-  present: benches.FoundReference[],
+  present: benchReferences.FoundReference[],
 ): Promise<ReferenceTaken> {
   const twin = await sweeps.findFileBySha256(input.project.id, sha256Of(file.bytes));
   if (!twin) throw new Error("The file that was here is gone.");
@@ -154,11 +157,11 @@ async function readAsRatio({ project, by, version }: TakeReferences, publicId: s
 
 async function attach(
   { bench, version, project, by }: TakeReferences,
-  kind: benches.ReferenceKind,
+  kind: benchReferences.ReferenceKind,
   sweepId: number,
   tx: Transaction,
 ): Promise<void> {
-  await benches.insertReference({ versionId: version.id, kind, sweepId }, tx);
+  await benchReferences.insert({ versionId: version.id, kind, sweepId }, tx);
   await benches.update(bench.id, {}, tx);
   const about = {
     bench: bench.publicId,
@@ -167,6 +170,6 @@ async function attach(
   await record({ projectId: project.id, kind: "bench.changed", actorId: by.id, about }, tx);
 }
 
-function aKind(kind: benches.ReferenceKind): string {
+function aKind(kind: benchReferences.ReferenceKind): string {
   return kind === "open" ? "an open" : `a ${kind}`;
 }

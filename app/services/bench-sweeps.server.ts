@@ -1,3 +1,4 @@
+import * as benchReferences from "~/db/bench-references.server";
 import * as benches from "~/db/benches.server";
 import type { BenchForCorrection, BenchReferences, ReadAs } from "~/measurement/correction/correct";
 import type { Sweep } from "~/measurement/sweep";
@@ -12,10 +13,10 @@ export interface LoadedBench {
   /** How the references were read, for `correctSweep`. */
   readAs: ReadAs;
   /** Those that are read; one whose file is still to be read is missing from `correction` and listed in `unread`. */
-  references: benches.FoundReference[];
-  unread: benches.FoundReference[];
+  references: benchReferences.FoundReference[];
+  unread: benchReferences.FoundReference[];
   /** SHA-256 of the references' originals by kind. */
-  sha256: Partial<Record<benches.ReferenceKind, string>>;
+  sha256: Partial<Record<benchReferences.ReferenceKind, string>>;
 }
 
 export type BenchForSweep =
@@ -51,7 +52,7 @@ export async function loadBench(
   bench: benches.BenchRow,
   version: benches.BenchVersionRow,
 ): Promise<LoadedBench> {
-  const found = await benches.findReferences([version.id]);
+  const found = await benchReferences.findAllByVersions([version.id]);
   const references = found.filter(({ sweep }) => sweep.readingId !== null && sweep.problem === null);
   const points = await Promise.all(references.map(({ sweep }) => loadPoints(sweep.readingId as number)));
   const byKind: BenchReferences = {};

@@ -1,3 +1,4 @@
+import * as benchReferences from "~/db/bench-references.server";
 import * as benches from "~/db/benches.server";
 import { inTransaction, type Transaction } from "~/db/client.server";
 import * as jobs from "~/db/jobs.server";
@@ -98,18 +99,18 @@ export function correctVersion(
   versionId: number,
   by: By,
   values: VersionValues,
-  kinds: ReadonlyMap<string, benches.ReferenceKind>,
+  kinds: ReadonlyMap<string, benchReferences.ReferenceKind>,
 ): Promise<void> {
   return inTransaction(async (tx) => {
     await benches.lock(bench.id, tx);
     await benches.updateVersion(versionId, values, tx);
-    const references = await benches.findReferences([versionId], tx);
+    const references = await benchReferences.findAllByVersions([versionId], tx);
     const wanted = references.map(({ sweep, kind }) => ({
       sweepId: sweep.id,
       kind: kinds.get(sweep.publicId) ?? kind,
     }));
     if (wanted.some(({ kind }, i) => kind !== references[i].kind)) {
-      await benches.replaceReferenceKinds(versionId, wanted, tx);
+      await benchReferences.replaceKinds(versionId, wanted, tx);
     }
     await benches.update(bench.id, {}, tx);
     await tell(bench, by, "bench.changed", `${bench.name}: details corrected`, tx);
@@ -133,7 +134,7 @@ export function deleteBench(bench: benches.BenchRow): Promise<boolean> {
   return inTransaction(async (tx) => {
     await benches.lock(bench.id, tx);
     if ((await benches.countSweeps(bench.id, tx)) > 0) return false;
-    const files = await benches.findOwnReferenceFiles(bench.id, tx);
+    const files = await benchReferences.findOwnFiles(bench.id, tx);
     await deletePhotographsOf({ projectId: bench.projectId, benchId: bench.id }, tx);
     await jobs.insertAll(
       "delete-object",

@@ -1,6 +1,7 @@
 import { eq } from "drizzle-orm";
 import sharp from "sharp";
 import { beforeEach, describe, expect, it } from "vitest";
+import * as benchReferences from "~/db/bench-references.server";
 import * as benchRows from "~/db/benches.server";
 import { db } from "~/db/client.server";
 import * as dips from "~/db/dips.server";
@@ -131,7 +132,7 @@ describe("a bench from four files", () => {
     expect(taken[0].how).toBe("shared");
     expect(taken[0].message).toContain("also stays among the project's sweeps");
     expect(await sweeps.countByProject(project.id)).toBe(1);
-    expect((await benchRows.findOfReference(sweep.id)).map(({ kind }) => kind)).toEqual(["load"]);
+    expect((await benchReferences.findBenchesOf(sweep.id)).map(({ kind }) => kind)).toEqual(["load"]);
   });
 
   it("refuses one file for two kinds and a second of one kind", async () => {
@@ -144,7 +145,7 @@ describe("a bench from four files", () => {
     ]);
     expect(again.map(({ how }) => how)).toEqual(["refused", "refused"]);
     expect(again[0].message).toContain("the same file as the open");
-    expect(await benchRows.findReferences([version.id])).toHaveLength(1);
+    expect(await benchReferences.findAllByVersions([version.id])).toHaveLength(1);
   });
 
   it("keeps the bench when a file can't be read, and says which", async () => {
@@ -152,7 +153,10 @@ describe("a bench from four files", () => {
     const { taken, version } = await madeBench([fileOf("open"), nothing, fileOf("load")]);
     expect(taken.map(({ how }) => how)).toEqual(["read", "refused", "read"]);
     expect(taken[1].message).toContain("short.csv");
-    expect((await benchRows.findReferences([version.id])).map(({ kind }) => kind)).toEqual(["open", "load"]);
+    expect((await benchReferences.findAllByVersions([version.id])).map(({ kind }) => kind)).toEqual([
+      "open",
+      "load",
+    ]);
   });
 });
 
@@ -197,13 +201,13 @@ describe("changing a bench", () => {
       fileOf("open", GOOD_BRIDGE, "short"),
       fileOf("short", GOOD_BRIDGE, "open"),
     ]);
-    const [open, short] = await benchRows.findReferences([version.id]);
+    const [open, short] = await benchReferences.findAllByVersions([version.id]);
     const kinds = new Map([
       [open.sweep.publicId, "short" as const],
       [short.sweep.publicId, "open" as const],
     ]);
     await correctVersion(bench, version.id, by, { ...VERSION, validFrom: day("2026-04-01") }, kinds);
-    const [nowOpen] = await benchRows.findReferences([version.id]);
+    const [nowOpen] = await benchReferences.findAllByVersions([version.id]);
     expect(nowOpen.fileName).toBe("open.csv");
     expect((await versionOf(bench.id, "2026-04-02")).number).toBe(1);
   });
@@ -224,7 +228,7 @@ describe("changing a bench", () => {
 
   it("deletes an unused one with its files, and none that a sweep rests on", async () => {
     const { bench, version } = await madeBench([fileOf("open")]);
-    const [reference] = await benchRows.findReferences([version.id]);
+    const [reference] = await benchReferences.findAllByVersions([version.id]);
     const found = await sweeps.findByPublicId(reference.sweep.publicId);
     const sweep = await antennaSweep(day("2026-05-20"));
     await sweeps.update(sweep.id, { benchId: bench.id });

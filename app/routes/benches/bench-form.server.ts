@@ -1,4 +1,4 @@
-import * as benches from "~/db/benches.server";
+import * as benchReferences from "~/db/bench-references.server";
 import { brokenForm } from "~/errors";
 import { MAX_FILE_BYTES } from "~/readers/reading";
 import { type ReferenceFile, sameFileTwice } from "~/services/bench-references.server";
@@ -22,7 +22,7 @@ export async function readBenchForm(request: Request): Promise<BenchForm> {
       fields.append(name, value);
       continue;
     }
-    const kind = benches.REFERENCE_KINDS.find((known) => known === name);
+    const kind = benchReferences.REFERENCE_KINDS.find((known) => known === name);
     if (!kind || value.name === "" || files.some((file) => file.kind === kind)) continue;
     files.push({ kind, file: { name: value.name, bytes: new Uint8Array(await value.arrayBuffer()) } });
   }

@@ -1,4 +1,5 @@
 import type { ProjectAccess } from "~/auth/require.server";
+import type * as benchReferences from "~/db/bench-references.server";
 import * as benches from "~/db/benches.server";
 import { type BenchQuality, qualifyBench } from "~/measurement/correction/qualify";
 import { mayEditBench } from "~/services/bench-access.server";
@@ -80,7 +81,7 @@ function shownVersion({ version, by }: benches.ListedVersion) {
 }
 
 /** Where the bench is lent, what its references cover; their sweeps, files and pages are of the project that keeps it. */
-function shownReference({ kind, sweep, project, fileName }: benches.FoundReference, here: boolean) {
+function shownReference({ kind, sweep, project, fileName }: benchReferences.FoundReference, here: boolean) {
   const unread = sweep.readingId === null || sweep.problem !== null;
   const page = `/projects/${project}/sweeps/${sweep.publicId}`;
   return {

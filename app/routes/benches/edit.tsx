@@ -3,6 +3,7 @@ import { data, Form, useNavigation } from "react-router";
 import { requireProject } from "~/auth/require.server";
 import { Breadcrumbs } from "~/components/ui/Breadcrumbs";
 import { Button } from "~/components/ui/Button";
+import * as benchReferences from "~/db/bench-references.server";
 import * as benches from "~/db/benches.server";
 import { refused } from "~/errors";
 import { benchValuesOf, changeBench, correctVersion } from "~/services/benches.server";
@@ -25,7 +26,7 @@ export async function loader(args: Route.LoaderArgs) {
   const search = new URL(args.request.url).searchParams;
   const versions = await benches.findVersions(bench.id);
   const { version } = pickVersion(versions, search.get("version"));
-  const references = await benches.findReferences([version.id]);
+  const references = await benchReferences.findAllByVersions([version.id]);
   return {
     project: { publicId: access.project.publicId },
     bench: { publicId: bench.publicId, name: bench.name },

@@ -4,6 +4,7 @@ import { LinkButton } from "~/components/ui/Button";
 import { DateTime } from "~/components/ui/DateTime";
 import { EmptyState } from "~/components/ui/EmptyState";
 import { Tag } from "~/components/ui/Tag";
+import * as benchReferences from "~/db/bench-references.server";
 import * as benches from "~/db/benches.server";
 import type { Route } from "./+types/list";
 import { listOf } from "./words";
@@ -106,7 +107,7 @@ function shownBench(
     retired: bench.retiredAt !== null,
     versionCount,
     validFrom: validFrom ? new Date(`${String(validFrom).replace(" ", "T")}Z`) : null,
-    kinds: benches.REFERENCE_KINDS.filter((kind) => known.includes(kind)),
+    kinds: benchReferences.REFERENCE_KINDS.filter((kind) => known.includes(kind)),
     lacking: (["open", "short", "load"] as const).filter((kind) => !known.includes(kind)),
     sweepCount,
   };
