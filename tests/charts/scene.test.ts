@@ -218,3 +218,19 @@ describe("buildSweepScene", () => {
     );
   });
 });
+
+describe("a stretch outside the correction", () => {
+  it("is drawn as measured where the corrected line is not, and widens the axis to hold it", () => {
+    const corrected = points(30, (i) => (i < 20 ? 0.9 : Number.NaN));
+    const measured = Float64Array.from({ length: 30 }, (_, i) => (i < 20 ? Number.NaN : 0.01));
+    const scene = buildSweepScene({ ...base, points: corrected, measured, plotWidthPx: 290 });
+    const across = (path: string) => pathNumbers(path).filter((_, i) => i % 2 === 0);
+    expect(Math.max(...across(scene.line))).toBeLessThanOrEqual(190);
+    expect(Math.min(...across(scene.measured))).toBeGreaterThanOrEqual(199);
+    // 40 dB deep: inside the axis.
+    expect(scene.offScale).toBe("");
+    expect(scene.yOfMagnitude(0.01)).toBeLessThanOrEqual(scene.plotHeightPx);
+    expect(scene.empty).toBe(false);
+    expect(buildSweepScene({ ...base, points: corrected }).measured).toBe("");
+  });
+});

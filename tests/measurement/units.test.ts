@@ -1,12 +1,14 @@
 import { describe, expect, test } from "vitest";
 import {
   formatDb,
+  formatDbLimits,
   formatFrequency,
   formatNoise,
   formatPercent,
   formatRange,
   formatSwr,
   formatWidth,
+  formatWidthLimits,
   parseFrequency,
 } from "../../app/measurement/units.ts";
 
@@ -114,4 +116,24 @@ test("noise shows one digit, and no less than files carry", () => {
   expect(formatNoise(4.8e-8)).toBe("under 0.001\u2009dB");
   expect(formatNoise(0)).toBe("under 0.001\u2009dB");
   expect(formatNoise(null)).toBe("unknown");
+});
+
+describe("numbers with limits", () => {
+  test.each<[number | null, number | null, number | null, string]>([
+    [20.43, 18.93, 22.31, "20\u2009dB (19–22)"],
+    [20.43, 20.21, 20.63, "20.4\u2009dB (20.2–20.6)"],
+    [20.43, null, 22.31, "20.4\u2009dB"],
+    [40, 22.31, Number.POSITIVE_INFINITY, "40.0\u2009dB (22.3–∞)"],
+    [null, 1, 2, "unknown"],
+  ])("return loss %s from %s to %s is %s", (db, low, high, words) => {
+    expect(formatDbLimits(db, low, high)).toBe(words);
+  });
+
+  test.each<[number, number | null, number | null, string]>([
+    [321_700, 269_300, 378_200, "322\u2009kHz (269–378)"],
+    [321_700, 319_300, 324_200, "322\u2009kHz (319–324)"],
+    [321_700, null, null, "322\u2009kHz"],
+  ])("width %s from %s to %s is %s", (hz, low, high, words) => {
+    expect(formatWidthLimits(hz, low, high)).toBe(words);
+  });
 });
