@@ -16,6 +16,7 @@ import { startJobs } from "~/services/jobs.server";
 import { knownMethods } from "~/services/known-methods.server";
 import { log } from "~/services/log.server";
 import { metricsText } from "~/services/metrics.server";
+import { startOutbox } from "~/services/outbox.server";
 import { closeReaders } from "~/services/reading.server";
 import { securityHeaders } from "~/services/security-headers.server";
 import { onShutdown, runShutdown } from "~/services/shutdown.server";
@@ -65,6 +66,7 @@ export function startBackground(): void {
   onShutdown(() => pool.end());
   onShutdown(closeReaders);
   onShutdown(startJobs());
+  onShutdown(startOutbox());
 }
 
 function serveStaticFiles(app: Express): void {

@@ -26,6 +26,7 @@ export default [
       route("sweeps/:sweep", "routes/sweeps/sweep.tsx"),
       route("sweeps/:sweep/reading", "routes/sweeps/reading.tsx"),
       route("sweeps/:sweep/repeats", "routes/sweeps/repeats.tsx"),
+      route("compare", "routes/compare/compare.tsx"),
       route("dips/:dip", "routes/dips/dip.tsx"),
       route("trails/:trail", "routes/trails/trail.tsx"),
       route("cables", "routes/cables/cables.tsx"),
@@ -60,6 +61,7 @@ export default [
   route("notes/preview", "routes/notes/preview.ts"),
 
   route("admin", "routes/admin/admin.tsx"),
+  route("admin/mail", "routes/admin/mail.tsx"),
 
   ...prefix("api/v1", [
     route("openapi.json", "routes/api/openapi.ts"),

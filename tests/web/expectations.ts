@@ -1,5 +1,5 @@
 import type { ProjectAction, SiteAction } from "~/auth/permissions";
-import { type Crew, onePixel, type Place, type Someone, touchstone, unique } from "./world.ts";
+import { type Crew, onePixel, type Place, type Someone, touchstone, unique, waitingMail } from "./world.ts";
 
 /** What each route asks for, and the smallest form that it takes. One line a case; the walk does the rest. */
 
@@ -23,12 +23,16 @@ export interface About {
   self: Someone | null;
   /** Takes no other part in the walk. */
   bystander: Someone;
+  /** What `prepare` answered; else empty. */
+  prepared: string;
 }
 
 export interface Case {
   ask: Ask;
   /** Distinguishes the forms of one page. */
   name?: string;
+  /** Makes what the form names; its answer is `prepared`. */
+  prepare?: (about: About) => Promise<string>;
   form?: (about: About) => Record<string, string | Blob>;
   json?: () => unknown;
   /** The case destroys what it is asked of: it gets a project of its own for each role, empty or with a sweep. */
@@ -220,6 +224,7 @@ export const EXPECTATIONS: Record<string, Expectation> = {
       },
     ],
   },
+  "routes/compare/compare.tsx": { GET: read },
   "routes/dips/dip.tsx": { GET: read },
   "routes/dips/verdict.ts": {
     GET: read,
@@ -419,6 +424,18 @@ export const EXPECTATIONS: Record<string, Expectation> = {
       ask: { site: "site.administer" as const },
       form: ({ bystander }: About) => ({ intent, user: bystander.publicId }),
     })),
+  },
+
+  "routes/admin/mail.tsx": {
+    GET: [{ ask: { site: "site.administer" } }],
+    // A mail made up for each who asks, so that there is one to be tried again.
+    POST: [
+      {
+        ask: { site: "site.administer" },
+        prepare: waitingMail,
+        form: ({ prepared }) => ({ intent: "retry", mail: prepared }),
+      },
+    ],
   },
 
   "routes/api/openapi.ts": { GET: anybody, POST: notHere },

@@ -133,7 +133,9 @@ async function send(
   place: Place,
 ): Promise<Response> {
   const path = fill(route.path, place);
-  const form = one.form?.({ place, crew, self: personOf(actor), bystander }) ?? {};
+  const about = { place, crew, self: personOf(actor), bystander, prepared: "" };
+  const prepared = (await one.prepare?.(about)) ?? "";
+  const form = one.form?.({ ...about, prepared }) ?? {};
   if (!("api" in one.ask)) {
     const browser = await browserOf(actor);
     return method === "GET" ? browser.get(path) : browser.post(path, form);

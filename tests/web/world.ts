@@ -3,6 +3,7 @@ import type { ProjectRole, Visibility } from "~/auth/permissions";
 import { startSession } from "~/auth/session.server";
 import { inTransaction, pool } from "~/db/client.server";
 
+import * as outbox from "~/db/outbox.server";
 import * as people from "~/db/people.server";
 import * as projects from "~/db/projects.server";
 import * as sweeps from "~/db/sweeps.server";
@@ -167,6 +168,19 @@ export function sendSweep(
   form.set("file", new File([text], name));
   for (const [key, value] of Object.entries(fields)) form.set(key, value);
   return askApi(`/projects/${project}/sweeps`, token, { method: "POST", body: form });
+}
+
+/** A mail that waits for longer than any test; its public id. */
+export async function waitingMail(): Promise<string> {
+  const toAddress = `${unique("mail")}@fennmarsh.example`;
+  const messageId = `<${toAddress}>`;
+  const mail = { messageId, onceKey: null, toAddress, userId: null, subject: "A walk", text: "", html: "" };
+  await inTransaction(async (tx) => {
+    await outbox.insert({ ...mail, headers: {} }, tx);
+    const row = await outbox.findByMessageId(messageId, tx);
+    await outbox.putOff(row?.id ?? 0, new Date(Date.now() + 3.6e6), "put off by a test", tx);
+  });
+  return (await outbox.findByMessageId(messageId))?.publicId ?? "";
 }
 
 /** Sweeps that were never read, many of them of one moment: for lists. */

@@ -3,6 +3,7 @@ import type { ReactNode } from "react";
 import { data, Link } from "react-router";
 import { requirePerson } from "~/auth/require.server";
 import * as jobs from "~/db/jobs.server";
+import * as outbox from "~/db/outbox.server";
 import * as people from "~/db/people.server";
 import * as projects from "~/db/projects.server";
 import * as sweeps from "~/db/sweeps.server";
@@ -21,12 +22,13 @@ const PAGE_ROWS = 100;
 export async function loader(args: Route.LoaderArgs) {
   const person = await requirePerson(args, "site.administer");
   const page = Math.max(0, Math.trunc(Number(new URL(args.request.url).searchParams.get("page"))) || 0);
-  const [users, userCount, visibilities, stored, waiting] = await Promise.all([
+  const [users, userCount, visibilities, stored, waiting, mails] = await Promise.all([
     people.findAll(PAGE_ROWS, page * PAGE_ROWS),
     people.countAll(),
     projects.countByVisibility(),
     sweeps.sumStoredBytes(),
     jobs.countAll(),
+    outbox.countByState(),
   ]);
   return {
     page,
@@ -35,6 +37,7 @@ export async function loader(args: Route.LoaderArgs) {
     visibilities,
     stored,
     waiting,
+    mails,
     users: users.map((user) => ({
       id: user.publicId,
       userName: user.userName,
@@ -70,7 +73,7 @@ const LAST_ADMINISTRATOR =
   "This is the last administrator who can sign in. Nothing was changed. Make somebody else administrator first.";
 
 export default function Admin({ loaderData, actionData }: Route.ComponentProps) {
-  const { visibilities, stored, waiting, userCount, users, page, more } = loaderData;
+  const { visibilities, stored, waiting, mails, userCount, users, page, more } = loaderData;
   return (
     <div className="space-y-10">
       <h1>Administration</h1>
@@ -86,8 +89,14 @@ export default function Admin({ loaderData, actionData }: Route.ComponentProps) 
             {stored.files} {stored.files === 1 ? "file" : "files"}, {megabytes(stored.bytes)}
           </Fact>
           <Fact label="Waiting work">{waiting}</Fact>
+          <Fact label="Mails not sent">
+            {mails.waiting + mails.sending} waiting, {mails.failed} given up
+          </Fact>
           <Fact label="Accounts">{userCount}</Fact>
         </dl>
+        <p>
+          <Link to="/admin/mail">Mail</Link>
+        </p>
       </section>
       <section className="space-y-3">
         <h2>Accounts</h2>
