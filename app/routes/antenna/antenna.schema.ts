@@ -1,7 +1,6 @@
 import { z } from "zod";
 import { ELEMENT_KINDS } from "~/measurement/antenna";
 import type { LengthUnit } from "~/measurement/lengths";
-import { bandsSchema } from "~/routes/projects/project.schema";
 import { plainText } from "~/services/file-names";
 import { diameterField, heightField, lengthField, type Sized, wholeField } from "./sizes";
 
@@ -47,8 +46,6 @@ export function antennaSchema(unit: LengthUnit) {
     });
 }
 export type AntennaForm = z.output<ReturnType<typeof antennaSchema>>;
-
-export const antennaBandsSchema = bandsSchema;
 
 function elementSchema(unit: LengthUnit) {
   return z
@@ -138,4 +135,4 @@ const EMPTY = {
   where: "",
 };
 const DAY_MS = 24 * 60 * 60 * 1000;
-export const MOST_ELEMENTS = 60;
+const MOST_ELEMENTS = 60;

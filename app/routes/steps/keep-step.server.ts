@@ -66,8 +66,6 @@ export async function keepStep(access: ProjectAccess, form: FormData, step: step
   }
 }
 
-export type StepAnswer = Exclude<Awaited<ReturnType<typeof keepStep>>, Response>["data"];
-
 function wordsFor(state: "planned" | "done"): string {
   return state === "planned" ? "The step is planned. Mark it done once it is." : "The step was written down.";
 }

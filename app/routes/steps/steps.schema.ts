@@ -61,7 +61,6 @@ export function stepSchema(unit: LengthUnit) {
       return { ...value, quantities };
     });
 }
-export type StepForm = z.output<ReturnType<typeof stepSchema>>;
 
 interface Fault {
   field: "target" | "label" | "from" | "to";
