@@ -50,6 +50,8 @@ export interface OverlayScene {
   links: { id: string; stops: { style: number; fraction: number; y: number }[] }[];
   plotHeightPx: number;
   pathWidth: number;
+  /** A line straight across, of nothing changed; absent where there is none. */
+  levelY?: number;
   remarks: string[];
 }
 
@@ -88,7 +90,7 @@ export function buildOverlayScene(input: OverlayInput): OverlayScene {
     frequency: frequencyAxis(scale),
     ribbon: ribbonBands(scale, input.bands, input.designBands),
     valueTicks: axis.ticks,
-    traces: spread(traces, plotHeightPx),
+    traces: spreadNames(traces, plotHeightPx),
     links: links.map(({ id, stops }) => ({
       id,
       stops: stops
@@ -109,7 +111,7 @@ export function buildOverlayScene(input: OverlayInput): OverlayScene {
 }
 
 /** Names that would stand on one another move apart, the upper ones staying. */
-function spread(traces: PlacedTrace[], heightPx: number): PlacedTrace[] {
+export function spreadNames(traces: PlacedTrace[], heightPx: number): PlacedTrace[] {
   let free = 10;
   const moved = new Map<string, number>();
   const ends = traces.flatMap(({ id, end }) => (end ? [{ id, y: end.y }] : [])).sort((a, b) => a.y - b.y);

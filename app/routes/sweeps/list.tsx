@@ -1,7 +1,7 @@
 import { Form, Link } from "react-router";
 import { requireProject } from "~/auth/require.server";
 import { Profile } from "~/charts/Profile";
-import { LinkButton } from "~/components/ui/Button";
+import { Button, LinkButton } from "~/components/ui/Button";
 import { DateTime } from "~/components/ui/DateTime";
 import { EmptyState } from "~/components/ui/EmptyState";
 import { InputField, SelectField } from "~/components/ui/Field";
@@ -75,13 +75,18 @@ export default function Sweeps({ loaderData }: Route.ComponentProps) {
       {rows.length === 0 ? (
         <p className="soft">No sweep matches. Change the words or show all sweeps.</p>
       ) : (
-        <Table
-          caption="Sweeps of this project"
-          columns={columnsFor(base)}
-          rows={rows}
-          rowKey={(row) => row.publicId}
-          sort={sort}
-        />
+        <Form action={`/projects/${project.publicId}/compare`} className="grid gap-3">
+          <Table
+            caption="Sweeps of this project"
+            columns={columnsFor(base)}
+            rows={rows}
+            rowKey={(row) => row.publicId}
+            sort={sort}
+          />
+          <div className="no-print">
+            <Button variant="quiet">Compare the ticked sweeps</Button>
+          </div>
+        </Form>
       )}
       {nextCursor && (
         <p>
@@ -99,14 +104,23 @@ function columnsFor(base: string): Column<SweepSummary>[] {
       label: "Sweep",
       sortBy: (row) => row.title.toLowerCase(),
       cell: (row) => (
-        <span className="grid gap-0.5">
-          <Link
-            to={row.unread ? `${base}/${row.publicId}/reading` : `${base}/${row.publicId}`}
-            className="font-semibold"
-          >
-            {row.title}
-          </Link>
-          <span className="text-tiny soft break-all">{row.fileName}</span>
+        <span className="sweep-tick">
+          <input
+            type="checkbox"
+            name="sweep"
+            value={row.publicId}
+            disabled={row.unread}
+            aria-label={`Compare ${row.title}`}
+          />
+          <span className="grid gap-0.5">
+            <Link
+              to={row.unread ? `${base}/${row.publicId}/reading` : `${base}/${row.publicId}`}
+              className="font-semibold"
+            >
+              {row.title}
+            </Link>
+            <span className="text-tiny soft break-all">{row.fileName}</span>
+          </span>
         </span>
       ),
     },

@@ -1,0 +1,58 @@
+import { redirect } from "react-router";
+import { requireProject } from "~/auth/require.server";
+import { Breadcrumbs } from "~/components/ui/Breadcrumbs";
+import { EmptyState } from "~/components/ui/EmptyState";
+import type { Route } from "./+types/compare";
+import { compareSearch, countLeftOut, MOST_COMPARED, parseCompare, sweepInAddress } from "./compare.schema";
+import { loadCompare } from "./compare-page.server";
+import { BandsBySide } from "./components/BandsBySide";
+import { ChosenSweeps } from "./components/ChosenSweeps";
+import { Curves } from "./components/Curves";
+import { DipsBySide } from "./components/DipsBySide";
+import { NotShown } from "./components/NotShown";
+import { Picker } from "./components/Picker";
+
+export const meta: Route.MetaFunction = () => [{ title: "Sweeps compared · Swale" }];
+
+export async function loader(args: Route.LoaderArgs) {
+  const access = await requireProject(args, "project.read");
+  const search = new URL(args.request.url).searchParams;
+  const view = parseCompare(search);
+  const pasted = search.get("add")?.trim() ?? "";
+  const added = pasted ? sweepInAddress(pasted) : null;
+  if (added && view.sweeps.length < MOST_COMPARED) {
+    throw redirect(compareSearch(view, { sweeps: [...new Set([...view.sweeps, added])] }));
+  }
+  return {
+    ...(await loadCompare(access, view)),
+    view,
+    leftOut: countLeftOut(search) + (added ? 1 : 0),
+    noAddress: pasted && !added ? pasted.slice(0, 200) : null,
+  };
+}
+
+export default function ComparePage({ loaderData }: Route.ComponentProps) {
+  const { project, sweeps, shown, view } = loaderData;
+  const base = `/projects/${project.publicId}`;
+  return (
+    <article className="grid gap-8">
+      <div className="grid gap-2">
+        <Breadcrumbs items={[{ label: "Sweeps", to: `${base}/sweeps` }]} />
+        <h2>Sweeps compared</h2>
+        <NotShown data={loaderData} />
+      </div>
+      {sweeps.length === 0 && (
+        <EmptyState drawing="sweeps" title="Choose the sweeps to lay over one another">
+          Two or more of this project, or of any project that you may read. The address keeps the choice.
+        </EmptyState>
+      )}
+      {sweeps.length > 0 && <ChosenSweeps data={loaderData} />}
+      <Picker data={loaderData} key={view.sweeps.join()} />
+      {shown && <Curves data={loaderData} shown={shown} />}
+      {shown && <DipsBySide data={loaderData} shown={shown} />}
+      {shown && <BandsBySide data={loaderData} shown={shown} />}
+    </article>
+  );
+}
+
+export type ComparePageData = Route.ComponentProps["loaderData"];
