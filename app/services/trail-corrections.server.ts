@@ -60,7 +60,8 @@ export function joinTrails(input: Correction & { trailId: number; otherId: numbe
 export function partDips(input: Correction & { dipId: number; otherId: number }): Promise<Joined> {
   return inTransaction(async (tx) => {
     const known = await lockedOrder(input.projectId, tx);
-    if (!known.order.has(input.dipId) || !known.order.has(input.otherId)) return { kind: "missing" };
+    if (input.dipId === input.otherId || !known.order.has(input.dipId) || !known.order.has(input.otherId))
+      return { kind: "missing" };
     return decide(input, [[input.dipId, input.otherId, "apart"]], input.dipId, tx);
   });
 }

@@ -9,17 +9,27 @@ import { changeTrailVerdict, nameTrail } from "~/services/trail-verdicts.server"
 import type { VerdictChange } from "~/services/verdicts.server";
 import type { TrailForm } from "./trails.schema.ts";
 
-/** Does what a form of the trail page asks, or says why not. */
-export async function correctTrail(access: ProjectAccess, person: Person, publicId: string, form: TrailForm) {
+/** Does what a form of the trail page asks, or says why not: beside the form where the page `stays`, else on it anew. */
+export async function correctTrail(
+  access: ProjectAccess,
+  person: Person,
+  publicId: string,
+  form: TrailForm,
+  stays: boolean,
+) {
   const { project } = access;
   const found = await trails.findByPublicId(publicId);
   if (!found || found.trail.projectId !== project.id) throw notFound("trail");
   const { trail } = found;
   const task = { projectId: project.id, by: person };
   const pageOf = (id: string) => `/projects/${project.publicId}/trails/${id}`;
+  const notDone = (problem: string) =>
+    stays
+      ? data({ intent: form.intent, errors: [problem] }, 409)
+      : redirectWithMessage(pageOf(publicId), problem);
   const answer = async (joined: Joined, done: string) => {
     if (joined.kind === "done") return redirectWithMessage(pageOf(joined.trail.publicId), done);
-    return data({ intent: form.intent, errors: [await problemOf(joined)] }, 409);
+    return notDone(await problemOf(joined));
   };
   switch (form.intent) {
     case "name": {
@@ -35,7 +45,7 @@ export async function correctTrail(access: ProjectAccess, person: Person, public
       const change = await changeTrailVerdict({ trail, by: person, ...form });
       if (change === "missing") throw notFound("trail");
       if (change === "done") return redirectWithMessage(pageOf(publicId), SAID[form.intent]);
-      return data({ intent: form.intent, errors: [VERDICT_PROBLEMS[change]] }, 409);
+      return notDone(VERDICT_PROBLEMS[change]);
     }
     case "part":
     case "take-back": {

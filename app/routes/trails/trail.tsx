@@ -37,7 +37,8 @@ export async function action(args: Route.ActionArgs) {
     const errors = parsed.error.issues.map(({ message }) => message);
     return data({ intent, errors: [...errors, "Nothing was changed."] }, 400);
   }
-  return correctTrail(access, access.person, args.params.trail, parsed.data);
+  const stays = new URL(args.request.url).pathname.endsWith(".data");
+  return correctTrail(access, access.person, args.params.trail, parsed.data, stays);
 }
 
 export const meta: Route.MetaFunction = ({ data }) => [{ title: `${data?.title ?? "Trail"} · Swale` }];
