@@ -3,7 +3,7 @@ import * as compare from "~/db/compare.server";
 import type { DesignBand } from "~/db/projects.server";
 import * as steps from "~/db/steps.server";
 import type { SweepRow } from "~/db/sweeps.server";
-import { type Antenna, NO_ANTENNA } from "~/measurement/antenna";
+import type { Antenna } from "~/measurement/antenna";
 import { type AskedBand, type BandFigures, bandFigures } from "~/measurement/band-figures";
 import { bandsOverlapping, type ItuRegion } from "~/measurement/bands";
 import { causesOf } from "~/measurement/causes";
@@ -65,8 +65,10 @@ export function bandsOfSweep(
 
 export interface DipTarget extends DipOffset {
   dip: Dip & { publicId: string | null };
-  /** Name of the part that the dip may be of and that `trim` is about; null where none fits. */
+  /** Name of the part that the dip may be of and that `trim` is about; null where there is none. */
   part: string | null;
+  /** Why there is no trim: too far off to be this band's, the antenna not described for that day, or none of its parts behind the dip. */
+  without: "far" | "not-described" | "no-part" | null;
 }
 
 /**
@@ -95,8 +97,11 @@ export async function targetsOf(
   return inner.flatMap((dip): DipTarget[] => {
     const offset = dipOffset(dip.frequencyHz, designBands);
     if (!offset) return [];
-    const element = Math.abs(offset.share) > TOO_FAR ? null : partBehind(dip, inner, then, unit);
-    if (!element) return [{ ...offset, dip, part: null }];
+    const far = Math.abs(offset.share) > TOO_FAR;
+    const element = far || !then ? null : partBehind(dip, inner, then, unit);
+    if (!element) {
+      return [{ ...offset, dip, part: null, without: far ? "far" : then ? "no-part" : "not-described" }];
+    }
     const trail = known.find(({ publicId }) => publicId === dip.publicId)?.trail ?? null;
     const seen = stops.filter((stop) => stop.trail === trail && antennaOf.has(stop.sweepId));
     const { key, name, kind, lengthM } = element;
@@ -105,13 +110,12 @@ export async function targetsOf(
       { lengthM, frequencyHz, frequencyUncertaintyHz },
     ];
     const { trim } = dipOffset(frequencyHz, designBands, pairs, { unit, kind }) ?? offset;
-    return [{ ...offset, trim, dip, part: name }];
+    return [{ ...offset, trim, dip, part: name, without: null }];
   });
 }
 
 /** The likeliest part of the antenna that may be behind a dip; null where none is among the likely causes, or its length is not said. */
-function partBehind(dip: Dip, dips: readonly Dip[], then: Antenna | null, unit: LengthUnit) {
-  const antenna = then ?? NO_ANTENNA;
+function partBehind(dip: Dip, dips: readonly Dip[], antenna: Antenna, unit: LengthUnit) {
   const causes = causesOf(dip, { antenna, dips, ripplePeriodHz: null, references: [], unit });
   const lengths = lengthsOf(antenna);
   const found = causes

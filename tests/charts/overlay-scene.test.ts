@@ -1,6 +1,7 @@
 import { describe, expect, it } from "vitest";
 import { frequencyScale } from "~/charts/axis";
 import { differencePath, differenceTicks } from "~/charts/difference-path";
+import { buildDifferenceScene } from "~/charts/difference-scene";
 import { buildOverlayScene } from "~/charts/overlay-scene";
 
 /** abs Γ with one dip of 20 dB at `dipHz` on an even grid. */
@@ -77,5 +78,44 @@ describe("the difference's path", () => {
       expect(yOf(-most)).toBeLessThanOrEqual(100);
       expect(yOf(most)).toBeCloseTo(100 - yOf(-most), 9);
     }
+  });
+});
+
+describe("buildDifferenceScene", () => {
+  const scale = frequencyScale("linear", 1e6, 9e6);
+  const line = (id: string, style: number, db: number[]) => ({
+    id,
+    label: id,
+    short: id,
+    style,
+    frequencyHz: db.map((_, i) => 1e6 + (8e6 * i) / (db.length - 1)),
+    db,
+  });
+
+  it("lays lines around a level line at 0 dB, each with the look of its sweep", () => {
+    const scene = buildDifferenceScene([line("b", 1, [0, 4, 0]), line("d", 3, [0, -4, 0])], scale);
+    expect(scene.levelY).toBe(scene.plotHeightPx / 2);
+    expect(scene.traces.map(({ style }) => style)).toEqual([1, 3]);
+    const ys = scene.traces.map(({ line: path }) =>
+      [...path.matchAll(/ ([\d.]+)/g)].map(([, y]) => Number(y)),
+    );
+    // 4 dB up and 4 dB down lie as far from the level line.
+    expect(scene.plotHeightPx / 2 - Math.min(...ys[0])).toBeCloseTo(
+      Math.max(...ys[1]) - scene.plotHeightPx / 2,
+    );
+    expect(Math.min(...ys[0])).toBeLessThan(scene.plotHeightPx / 2);
+  });
+
+  it("breaks a line at a gap and keeps a spike", () => {
+    const db = Array.from({ length: 5000 }, (_, i) =>
+      i === 2503 ? 9 : i > 3000 && i < 3100 ? Number.NaN : 0,
+    );
+    const { traces, valueTicks } = buildDifferenceScene([line("b", 1, db)], scale);
+    expect(traces[0].line.split("M").length - 1).toBe(2);
+    expect(valueTicks.map(({ label }) => label)).toContain("+12 dB");
+  });
+
+  it("draws nothing of nothing", () => {
+    expect(buildDifferenceScene([], scale).traces).toEqual([]);
   });
 });

@@ -28,7 +28,7 @@ export async function loadBands(
     hasDesignBands: designBands.length > 0,
     mayEditAntenna: may("antenna.edit"),
     bands: at ? bandsOfSweep(at.sweep, dips, project.ituRegion, designBands, limit) : [],
-    targets: targets.map(({ dip, band, part, trim, targetHz, offsetHz, share, inside }, i) => ({
+    targets: targets.map(({ dip, band, part, trim, without, targetHz, offsetHz, share, inside }, i) => ({
       id: dip.publicId ?? `tried-${i}`,
       publicId: dip.publicId,
       frequencyHz: dip.frequencyHz,
@@ -40,6 +40,7 @@ export async function loadBands(
       inside,
       part,
       trim,
+      without,
     })),
   };
 }

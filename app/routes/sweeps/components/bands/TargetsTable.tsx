@@ -27,7 +27,8 @@ export function TargetsTable({ data }: { data: BandsData }) {
   }
   if (targets.length === 0) return null;
   return (
-    <>
+    <section aria-labelledby="targets" className="grid gap-3 min-w-0">
+      <h3 id="targets">From the design bands</h3>
       <Table
         caption="How far each dip lies from its design band"
         rows={targets}
@@ -40,7 +41,7 @@ export function TargetsTable({ data }: { data: BandsData }) {
         dip's trail has seen, else by proportion. Cut less than that and sweep again. Keep wires and masts
         away from power lines.
       </p>
-    </>
+    </section>
   );
 }
 
@@ -49,10 +50,13 @@ function columnsFor({ project, unit }: BandsData): Column<Row>[] {
     {
       key: "dip",
       label: "Dip",
-      numeric: true,
       cell: ({ publicId, frequencyHz, frequencyUncertaintyHz }) => {
         const text = formatFrequency(frequencyHz, frequencyUncertaintyHz);
-        return publicId ? <Link to={`/projects/${project}/dips/${publicId}`}>{text}</Link> : text;
+        return (
+          <span className="number">
+            {publicId ? <Link to={`/projects/${project}/dips/${publicId}`}>{text}</Link> : text}
+          </span>
+        );
       },
     },
     {
@@ -77,9 +81,8 @@ function columnsFor({ project, unit }: BandsData): Column<Row>[] {
     {
       key: "trim",
       label: "Length for the middle",
-      cell: ({ trim, part }) => {
-        if (!trim)
-          return <span className="text-small soft">{part ? "unknown" : "no part of that day fits"}</span>;
+      cell: ({ trim, part, without }) => {
+        if (!trim) return <span className="text-small soft">{without ? WITHOUT[without] : "unknown"}</span>;
         const { lengthM, changeM, lowM, highM, farOut, method } = trim;
         return (
           <span className="grid gap-0.5">
@@ -98,3 +101,9 @@ function columnsFor({ project, unit }: BandsData): Column<Row>[] {
     },
   ];
 }
+
+const WITHOUT = {
+  far: "too far off to be this band's",
+  "not-described": "the antenna is not described for that day",
+  "no-part": "none of the antenna's parts explains it",
+} as const;

@@ -27,12 +27,16 @@ export function swrWords(swr: number | null): string {
   return swr === null ? "not swept" : swr > MOST_SWR ? `over ${MOST_SWR}` : formatSwr(swr);
 }
 
-/** "+42 kHz" of an offset. */
+/** "+42.3 kHz (+0.6 %)". */
 export function offsetWords(hz: number, share: number): string {
   const sign = hz < 0 ? "−" : "+";
-  const khz = Math.abs(hz) / 1e3;
-  const shown = khz >= 100 ? khz.toFixed(0) : khz.toFixed(1);
-  return `${sign}${shown}\u2009kHz (${sign}${formatPercent(Math.abs(share))})`;
+  return `${sign}${offsetSize(Math.abs(hz))} (${sign}${formatPercent(Math.abs(share))})`;
+}
+
+/** Kilohertz, as targets are spoken of; from 10 MHz on that would be too many digits. */
+function offsetSize(hz: number): string {
+  if (hz >= 10e6) return `${(hz / 1e6).toFixed(1)}\u2009MHz`;
+  return `${(hz / 1e3).toFixed(hz >= 100e3 ? 0 : 1)}\u2009kHz`;
 }
 
 /** A share between none and all never prints as either. */
