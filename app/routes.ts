@@ -44,6 +44,7 @@ export default [
       route("steps/:step/edit", "routes/steps/edit.tsx"),
     ]),
   ]),
+      route("notes/:note/history", "routes/notes/history.tsx"),
   ...prefix("projects/:project", [
     route("sweeps/upload", "routes/sweeps/upload.ts"),
     route("sweeps/:sweep/original", "routes/sweeps/original.ts"),

@@ -1,8 +1,17 @@
 import { and, asc, desc, eq, inArray, isNotNull, or, sql } from "drizzle-orm";
-import { alias } from "drizzle-orm/mysql-core";
+import { alias, union } from "drizzle-orm/mysql-core";
 import { db, type Queryable } from "./client.server.ts";
 import { newPublicId } from "./ids.server.ts";
-import { dips, sweeps, trailDecisions, trailDips, trails, users, verdictEvents } from "./schema/index.ts";
+import {
+  dips,
+  notes,
+  sweeps,
+  trailDecisions,
+  trailDips,
+  trails,
+  users,
+  verdictEvents,
+} from "./schema/index.ts";
 
 export type TrailRow = typeof trails.$inferSelect;
 export type DecisionRow = typeof trailDecisions.$inferSelect;
@@ -133,13 +142,17 @@ export async function deleteAll(ids: number[], tx: Queryable) {
   if (ids.length > 0) await tx.delete(trails).where(inArray(trails.id, ids));
 }
 
-/** Trails of the project on which a verdict was ever given. */
+/** Trails of the project on which a verdict was ever given or a note written. */
 export async function findJudged(projectId: number, tx: Queryable = db): Promise<number[]> {
-  const rows = await tx
-    .selectDistinct({ id: verdictEvents.trailId })
+  const judged = tx
+    .select({ id: verdictEvents.trailId })
     .from(verdictEvents)
-    .where(and(eq(verdictEvents.projectId, projectId), isNotNull(verdictEvents.trailId)))
-    .limit(MOST_DIPS);
+    .where(and(eq(verdictEvents.projectId, projectId), isNotNull(verdictEvents.trailId)));
+  const saidOf = tx
+    .select({ id: notes.trailId })
+    .from(notes)
+    .where(and(eq(notes.projectId, projectId), isNotNull(notes.trailId)));
+  const rows = await union(judged, saidOf).limit(MOST_DIPS);
   return rows.flatMap(({ id }) => (id === null ? [] : [id]));
 }
 

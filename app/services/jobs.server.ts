@@ -1,8 +1,10 @@
+import * as emailCodes from "~/db/email-codes.server";
 import * as jobs from "~/db/jobs.server";
 import * as photographs from "~/db/photographs.server";
 import * as sessions from "~/db/sessions.server";
 import * as sweeps from "~/db/sweeps.server";
 import { log } from "./log.server.ts";
+import { purgeNote } from "./note-changes.server.ts";
 import { deleteObject } from "./storage.server.ts";
 
 /** Background work. Every kind must be harmless to run twice. */
@@ -13,6 +15,7 @@ const KINDS: Record<string, (payload: never) => Promise<void>> = {
     const rows = key.startsWith("photographs/") ? photographs : sweeps;
     if (!(await rows.isStorageKeyUsed(key))) await deleteObject(key);
   },
+  "purge-note": ({ note }: { note: string }) => purgeNote(note),
 };
 
 /** Begins looking for due work; the answer stops it and waits for what is under way. */
@@ -26,6 +29,7 @@ export function startJobs(everyMs = 2000): () => Promise<void> {
         if (Date.now() - lastSweepMs < SWEEP_EVERY_MS) return;
         lastSweepMs = Date.now();
         await sessions.deleteExpired();
+        await emailCodes.deleteExpired();
       })
       .catch((error) =>
         log.warn({ err: error }, "background work could not be looked for; it is tried again"),

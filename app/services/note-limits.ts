@@ -3,3 +3,6 @@ export const MAX_NOTE_CHARACTERS = 20_000;
 
 /** Characters in the text of a verdict. */
 export const MAX_VERDICT_CHARACTERS = 300;
+
+/** For so long a removed note can be brought back by whoever removed it. */
+export const UNDO_MS = 10_000;

@@ -7,7 +7,7 @@ import { Thread, type ThreadProps } from "../../app/components/notes/Thread.tsx"
 import { VerdictForm, type VerdictFormProps } from "../../app/components/notes/VerdictForm.tsx";
 import { verdictSchema } from "../../app/components/notes/verdict.schema.ts";
 import { MAX_NOTE_CHARACTERS, MAX_VERDICT_CHARACTERS } from "../../app/services/note-limits.ts";
-import type { ThreadNote } from "../../app/services/notes.server.ts";
+import type { ThreadNote } from "../../app/services/note-thread.server.ts";
 
 const Shown = createContext<ReactNode>(null);
 const Page = createRoutesStub([{ path: "*", Component: Body }]);
@@ -40,6 +40,8 @@ function note(publicId: string, more: Partial<ThreadNote> = {}): ThreadNote {
     body: null,
     mayEdit: false,
     mayRemove: false,
+    mayRestore: false,
+    revision: "2026-03-07T12:00:00.000Z",
     answers: null,
     replies: [],
     ...more,
@@ -63,7 +65,7 @@ describe("a thread without scripts", () => {
     expect(markup).toContain('href="#note-n1"');
     expect(markup).toContain('title="7 Mar 2026, 12:00 UTC"');
     expect(markup).toContain('aria-label="Answers to Ada"');
-    expect(markup).toContain('<a href="#note-n9" class="text-small">to Bram</a>');
+    expect(markup).toContain('<a href="#note-n9" class="text-small">in answer to Bram</a>');
     expect(markup.indexOf("said n1")).toBeLessThan(markup.indexOf("said n2"));
   });
 

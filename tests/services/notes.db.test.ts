@@ -1,19 +1,22 @@
+import { asc, eq } from "drizzle-orm";
 import { beforeEach, describe, expect, it } from "vitest";
 import { mayInProject, type ProjectRole } from "~/auth/permissions";
+import * as benches from "~/db/benches.server";
+import { db } from "~/db/client.server";
 import { newPublicId } from "~/db/ids.server";
+import * as noteVersions from "~/db/note-versions.server";
 import * as noteRows from "~/db/notes.server";
 import * as people from "~/db/people.server";
+import { events, notes as noteTable } from "~/db/schema";
+import * as steps from "~/db/steps.server";
+import { IDEAL_STANDARDS, NOTHING_GIVEN } from "~/measurement/bench";
+import { createBench } from "~/services/benches.server";
+import { editNote, purgeNote, removeNote, restoreNote, revisionOf } from "~/services/note-changes.server";
 import { MAX_NOTE_CHARACTERS } from "~/services/note-limits";
-import {
-  countNotes,
-  editNote,
-  listThread,
-  NoteProblem,
-  removeNote,
-  type WriteNote,
-  writeNote,
-} from "~/services/notes.server";
+import { countNotes, listThread } from "~/services/note-thread.server";
+import { NoteProblem, type WriteNote, writeNote } from "~/services/notes.server";
 import { createProject } from "~/services/projects.server";
+import { makeStep } from "~/services/steps.server";
 
 let ada: { id: number };
 let bram: { id: number };
@@ -101,6 +104,56 @@ describe("writeNote", () => {
   });
 });
 
+describe("where a note stands", () => {
+  const at = new Date("2026-05-01T12:00:00Z");
+
+  it("keeps the threads of a step, a bench and the project apart", async () => {
+    const made = await makeStep(
+      { projectId: project.id, by: ada.id },
+      { title: "More turns", body: "", state: "done", at, quantities: [] },
+    );
+    const step = made.kind === "kept" ? (await steps.findByPublicId(made.publicId))?.step : undefined;
+    const details = {
+      validFrom: at,
+      remark: "",
+      parts: [],
+      standards: IDEAL_STANDARDS,
+      given: NOTHING_GIVEN,
+    };
+    const { bench } = await createBench(
+      project,
+      ada,
+      { name: "Bridge", description: "", own: "no" },
+      details,
+    );
+    const on = {
+      step: { ...place, stepId: step?.id ?? 0 },
+      bench: { ...place, benchId: (await benches.findByPublicId(bench.publicId))?.bench.id ?? 0 },
+      project: place,
+    };
+    const first = await write(ada, "on the step", { place: on.step });
+    await write(ada, "on the bench", { place: on.bench });
+    await write(ada, "on the project", { place: on.project });
+    for (const [kind, there] of Object.entries(on)) {
+      expect((await listThread(there, asAda())).map(({ html }) => text(html))).toEqual([`on the ${kind}`]);
+    }
+    await expect(write(bram, "no", { place: on.bench, parentPublicId: first.publicId })).rejects.toThrow(
+      NoteProblem,
+    );
+    const told = await db
+      .select({ kind: events.kind, about: events.about })
+      .from(events)
+      .where(eq(events.projectId, project.id))
+      .orderBy(asc(events.id));
+    expect(told.filter(({ kind }) => kind === "note.added").map(({ about }) => about.title)).toEqual([
+      "the step More turns",
+      "the bench Bridge",
+      "the project",
+    ]);
+    expect(JSON.stringify(told)).not.toContain("on the step");
+  });
+});
+
 describe("listThread", () => {
   it("puts every answer under the note that began it, oldest first", async () => {
     const first = await write(ada, "first");
@@ -165,6 +218,33 @@ describe("editNote", () => {
     expect((await listThread(place, asAda()))[0].editedAt).toBeNull();
   });
 
+  it("keeps what it said, with from when to when", async () => {
+    const at = (minute: number) => new Date(Date.UTC(2026, 4, 1, 12, minute));
+    const { publicId } = await write(ada, "one", { createdAt: at(0) });
+    const noteId = (await noteRows.findByPublicId(publicId))?.note.id ?? 0;
+    await editNote({ project, notePublicId: publicId, by: ada, body: "two", at: at(1) });
+    await editNote({ project, notePublicId: publicId, by: ada, body: "three", at: at(2) });
+    expect(await noteVersions.findAllByNote(noteId)).toEqual([
+      { body: "one", from: at(0), until: at(1), editedBy: "Ada" },
+      { body: "two", from: at(1), until: at(2), editedBy: "Ada" },
+    ]);
+  });
+
+  it("writes nothing over a change made in another window", async () => {
+    const { publicId } = await write(ada, "one");
+    const note = (await noteRows.findByPublicId(publicId))?.note;
+    if (!note) throw new Error("The note is not there.");
+    const revision = revisionOf(note);
+    const edit = (body: string, wished: string) =>
+      editNote({ project, notePublicId: publicId, by: ada, body, revision: wished, at: new Date(2027, 1) });
+    expect(await edit("two", revision)).toBe("done");
+    const refused = await edit("three", revision);
+    expect(refused).toMatchObject({ changedSince: { body: "two" } });
+    expect((await listThread(place, asAda()))[0].body).toBe("two");
+    const now = typeof refused === "object" ? refused.changedSince.revision : "";
+    expect(await edit("three", now)).toBe("done");
+  });
+
   it("does not reach into another project", async () => {
     const { publicId } = await write(ada, "here");
     const other = await newProject();
@@ -187,13 +267,21 @@ describe("editNote", () => {
 describe("removeNote", () => {
   const remove = (notePublicId: string, by: { id: number }, mayModerate = false) =>
     removeNote({ project, notePublicId, by, mayModerate });
+  const restore = (notePublicId: string, by: { id: number }) => restoreNote({ project, notePublicId, by });
+  const later = () => new Date(Date.now() + 60_000);
+  const bodyOf = async (publicId: string) => (await noteRows.findByPublicId(publicId))?.note.body;
 
-  it("takes an unanswered note away", async () => {
+  it("takes an unanswered note out of everybody's sight at once, and away for good later", async () => {
     const { publicId } = await write(bram, "gone");
     expect(await remove(publicId, ada)).toBe("refused");
     expect(await remove(publicId, bram)).toBe("done");
     expect(await remove(publicId, bram)).toBe("missing");
     expect(await listThread(place, asAda())).toEqual([]);
+    await purgeNote(publicId);
+    expect(await bodyOf(publicId)).toBe("gone");
+    await purgeNote(publicId, later());
+    expect(await noteRows.findByPublicId(publicId)).toBeUndefined();
+    await purgeNote(publicId, later());
   });
 
   it("is for an owner too", async () => {
@@ -201,14 +289,40 @@ describe("removeNote", () => {
     expect(await remove(publicId, ada, true)).toBe("done");
   });
 
-  it("leaves a stub without text or name where it was answered", async () => {
+  it("can be undone by who did it, and by nobody else", async () => {
+    const { publicId } = await write(bram, "back again");
+    await remove(publicId, ada, true);
+    expect((await listThread(place, asAda()))[0]).toMatchObject({ html: "", body: null, mayRestore: true });
+    expect(await listThread(place, as(bram, "commenter"))).toEqual([]);
+    expect(await restore(publicId, bram)).toBe("refused");
+    expect(await restore(publicId, ada)).toBe("done");
+    expect(await restore(publicId, ada)).toBe("done");
+    await purgeNote(publicId, later());
+    expect((await listThread(place, as(bram, "commenter")))[0]).toMatchObject({ body: "back again" });
+  });
+
+  it("can't be undone when its time is over", async () => {
+    const { publicId } = await write(bram, "gone");
+    await remove(publicId, bram);
+    await aged(publicId);
+    expect(await listThread(place, as(bram, "commenter"))).toEqual([]);
+    expect(await restore(publicId, bram)).toBe("too-late");
+    await purgeNote(publicId);
+    expect(await restore(publicId, bram)).toBe("too-late");
+  });
+
+  it("leaves a stub without text, name or versions where it was answered", async () => {
     const { publicId } = await write(bram, "secret");
+    await editNote({ project, notePublicId: publicId, by: bram, body: "still secret" });
+    const noteId = (await noteRows.findByPublicId(publicId))?.note.id ?? 0;
     await write(ada, "answer", { parentPublicId: publicId });
     expect(await remove(publicId, bram)).toBe("done");
     const [stub] = await listThread(place, asAda());
     expect(stub).toMatchObject({ removed: true, html: "", body: null, author: null, mayEdit: false });
     expect(stub.replies.map((reply) => text(reply.html))).toEqual(["answer"]);
-    expect((await noteRows.findByPublicId(publicId))?.note.body).toBe("");
+    await purgeNote(publicId, later());
+    expect(await bodyOf(publicId)).toBe("");
+    expect(await noteVersions.findAllByNote(noteId)).toEqual([]);
     expect(await editNote({ project, notePublicId: publicId, by: bram, body: "back" })).toBe("missing");
   });
 
@@ -220,7 +334,9 @@ describe("removeNote", () => {
     await remove(middle.publicId, ada);
     expect(countNotes(await listThread(place, asAda()))).toBe(1);
     await remove(leaf.publicId, bram);
-    expect(await listThread(place, asAda())).toEqual([]);
+    expect(await listThread(place, as(null, "reader"))).toEqual([]);
+    for (const { publicId } of [top, middle, leaf]) await purgeNote(publicId, later());
+    expect(await noteRows.findByPublicId(top.publicId)).toBeUndefined();
   });
 
   it("never loses an answer that is written meanwhile", async () => {
@@ -228,7 +344,7 @@ describe("removeNote", () => {
       const { publicId } = await write(ada, "question");
       const [answer] = await Promise.allSettled([
         write(bram, "answer", { parentPublicId: publicId }),
-        remove(publicId, ada),
+        remove(publicId, ada).then(() => purgeNote(publicId, later())),
       ]);
       const stored = answer.status === "fulfilled" && (await noteRows.findByPublicId(answer.value.publicId));
       if (answer.status === "fulfilled") expect(stored).toBeTruthy();
@@ -236,6 +352,12 @@ describe("removeNote", () => {
     }
   });
 });
+
+/** As if the note had been removed a minute ago. */
+async function aged(publicId: string): Promise<void> {
+  const removedAt = new Date(Date.now() - 60_000);
+  await db.update(noteTable).set({ removedAt }).where(eq(noteTable.publicId, publicId));
+}
 
 function text(html: string): string {
   return html.replace(/<[^>]*>/g, "").trim();

@@ -6,7 +6,7 @@ import { newPublicId } from "~/db/ids.server";
 import * as people from "~/db/people.server";
 import * as sweeps from "~/db/sweeps.server";
 import type { Dip } from "~/measurement/sweep";
-import { listThread } from "~/services/notes.server";
+import { listThread } from "~/services/note-thread.server";
 import { createProject } from "~/services/projects.server";
 import { changeVerdict, type VerdictIntent } from "~/services/verdicts.server";
 

@@ -398,7 +398,11 @@ export const EXPECTATIONS: Record<string, Expectation> = {
 
   "routes/notes/notes.ts": {
     GET: read,
-    POST: [{ ask: { project: "note.write" }, form: ({ place }) => ({ body: "A note.", dip: place.dip }) }],
+    POST: (["dip", "sweep", "trail", "step", "bench"] as const).map((kind) => ({
+      name: kind,
+      ask: { project: "note.write" as const },
+      form: ({ place }: About) => ({ body: "A note.", [kind]: place[kind] }),
+    })),
   },
   "routes/notes/note.tsx": {
     GET: read,
@@ -440,8 +444,10 @@ export const EXPECTATIONS: Record<string, Expectation> = {
 
   "routes/api/openapi.ts": { GET: anybody, POST: notHere },
   "routes/api/projects.ts": { GET: [{ ask: { api: "any-member" } }], POST: notHere },
+      { name: "restore", ask: { project: "note.write" }, form: () => ({ intent: "restore" }) },
   "routes/api/project.ts": { GET: apiRead, POST: notHere },
   "routes/api/sweeps.ts": {
+  "routes/notes/history.tsx": { GET: read },
     GET: apiRead,
     POST: [{ ask: { api: "sweep.add" }, form: () => ({ file: sweepFile() }) }],
   },

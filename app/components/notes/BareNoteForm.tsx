@@ -1,13 +1,13 @@
 import { useLocation } from "react-router";
 import { Button } from "~/components/ui/Button";
 import { MAX_NOTE_CHARACTERS } from "~/services/note-limits";
-import { notesPath, type ThreadWhere } from "./place.ts";
+import { kindOf, notesPath, type ThreadWhere } from "./place.ts";
 
 export interface NoteTarget {
   /** The note that is answered. */
   parent?: string;
   /** The note that is changed. */
-  edited?: { publicId: string; body: string };
+  edited?: { publicId: string; body: string; revision: string };
 }
 
 /** A note's form for a browser without scripts: a field and a button. */
@@ -44,13 +44,15 @@ export function BareNoteForm({
 /** What says where a note goes, and where its writer goes back to. */
 export function NoteTargetFields({ where: { place }, target }: { where: ThreadWhere; target: NoteTarget }) {
   const { pathname, search } = useLocation();
+  const { edited, parent } = target;
+  const kind = kindOf(place);
   return (
     <>
       <input type="hidden" name="returnTo" value={pathname + search} />
-      {target.edited && <input type="hidden" name="intent" value="edit" />}
-      {!target.edited && place.dip && <input type="hidden" name="dip" value={place.dip} />}
-      {!target.edited && place.sweep && <input type="hidden" name="sweep" value={place.sweep} />}
-      {!target.edited && target.parent && <input type="hidden" name="parent" value={target.parent} />}
+      {edited && <input type="hidden" name="intent" value="edit" />}
+      {edited && <input type="hidden" name="revision" value={edited.revision} />}
+      {!edited && kind && <input type="hidden" name={kind} value={place[kind]} />}
+      {!edited && parent && <input type="hidden" name="parent" value={parent} />}
     </>
   );
 }

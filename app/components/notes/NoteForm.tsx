@@ -27,6 +27,8 @@ export interface NoteFormProps {
 interface Answer {
   publicId?: string;
   done?: "edit";
+  /** Changed in another window since this form was opened. */
+  changedSince?: { body: string; revision: string };
   lastResult?: SubmissionResult<string[]>;
 }
 
@@ -44,6 +46,7 @@ export function NoteForm({ where, target = {}, label, onDone, onCancel, autoFocu
     shouldRevalidate: "onInput",
     onValidate: ({ formData }) => parseWithZod(formData, { schema }) as never,
   });
+  const theirs = fetcher.data?.changedSince;
   const answered = useRef<unknown>(null);
   useEffect(() => {
     const { data } = fetcher;
@@ -71,7 +74,23 @@ export function NoteForm({ where, target = {}, label, onDone, onCancel, autoFocu
       onSubmit={send}
       className="grid gap-2"
     >
-      <NoteTargetFields where={where} target={target} />
+      <NoteTargetFields
+        where={where}
+        target={edited && theirs ? { edited: { ...edited, revision: theirs.revision } } : target}
+      />
+      {theirs && (
+        <section
+          role="alert"
+          className="grid gap-2 border border-dashed border-edge rounded-base p-3"
+          aria-label="Changed in another window"
+        >
+          <p>
+            You changed this note in another window since this form was opened. Nothing was stored yet. It now
+            says what stands here; take over from it what you want to keep, or store yours in its place.
+          </p>
+          <pre className="whitespace-pre-wrap break-words text-small">{theirs.body}</pre>
+        </section>
+      )}
       {!edited && <input type="hidden" name="clientKey" value={clientKey} />}
       <TextareaField
         id={fields.body.id}
@@ -92,7 +111,7 @@ export function NoteForm({ where, target = {}, label, onDone, onCancel, autoFocu
       <Preview text={draft.text} />
       <div className="flex flex-wrap items-center gap-2">
         <Button size="small" busy={busy}>
-          {edited ? "Keep the change" : "Store the note"}
+          {theirs ? "Store mine in its place" : edited ? "Keep the change" : "Store the note"}
         </Button>
         {onCancel && (
           <Button

@@ -1,13 +1,13 @@
 import { useEffect, useRef } from "react";
-import { useLocation } from "react-router";
+import { Link, useLocation } from "react-router";
 import { RelativeTime } from "~/components/ui/DateTime";
 import { useHydrated } from "~/components/ui/hydrated";
 import { Markdown } from "~/components/ui/Markdown";
-import type { ThreadNote } from "~/services/notes.server";
+import type { ThreadNote } from "~/services/note-thread.server";
 import { BareNoteForm } from "./BareNoteForm.tsx";
 import { NoteForm } from "./NoteForm.tsx";
-import type { ThreadWhere } from "./place.ts";
-import { RemoveNote } from "./RemoveNote.tsx";
+import { notesPath, type ThreadWhere } from "./place.ts";
+import { RemovedNote, RemoveNote } from "./RemoveNote.tsx";
 import { Unfold } from "./Unfold.tsx";
 
 /** One note under its permanent anchor. */
@@ -17,7 +17,7 @@ export function NoteItem({ note, where }: { note: ThreadNote; where: ThreadWhere
   if (note.removed) {
     return (
       <article ref={article} id={`note-${note.publicId}`} tabIndex={-1} className="note soft">
-        <p>This note was removed. What answers it stays.</p>
+        <RemovedNote note={note} where={where} />
       </article>
     );
   }
@@ -33,7 +33,7 @@ export function NoteItem({ note, where }: { note: ThreadNote; where: ThreadWhere
         <span className="font-semibold">{name}</span>
         {note.answers && (
           <a href={`#note-${note.answers.publicId}`} className="text-small">
-            to {note.answers.author}
+            in answer to {note.answers.author}
           </a>
         )}
         <a href={`#note-${note.publicId}`} className="note-time">
@@ -41,7 +41,9 @@ export function NoteItem({ note, where }: { note: ThreadNote; where: ThreadWhere
         </a>
         {note.editedAt && (
           <span className="text-small soft">
-            changed <RelativeTime at={note.editedAt} />
+            <Link to={`${notesPath(where, note.publicId)}/history`}>
+              changed <RelativeTime at={note.editedAt} />
+            </Link>
           </span>
         )}
       </header>
@@ -56,7 +58,8 @@ export function NoteItem({ note, where }: { note: ThreadNote; where: ThreadWhere
 function Actions({ note, where, name }: { note: ThreadNote; where: ThreadWhere; name: string }) {
   const about = note.mayEdit ? "your note" : `the note by ${name}`;
   const answer = { parent: note.publicId };
-  const edit = { edited: { publicId: note.publicId, body: note.body ?? "" } };
+  const { publicId, body, revision } = note;
+  const edit = { edited: { publicId, body: body ?? "", revision } };
   return (
     <footer className="flex flex-wrap items-start gap-x-4 no-print">
       {where.mayWrite && (

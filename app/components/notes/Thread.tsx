@@ -1,10 +1,10 @@
 import { Link, useLocation, useRouteLoaderData } from "react-router";
 import { useHydrated } from "~/components/ui/hydrated";
-import type { ThreadNote } from "~/services/notes.server";
+import type { ThreadNote } from "~/services/note-thread.server";
 import { BareNoteForm } from "./BareNoteForm.tsx";
 import { NoteForm } from "./NoteForm.tsx";
 import { NoteItem } from "./NoteItem.tsx";
-import type { ThreadPlace, ThreadWhere } from "./place.ts";
+import { placeName, type ThreadPlace, type ThreadWhere } from "./place.ts";
 import "./notes.css";
 
 export interface ThreadProps {
@@ -47,7 +47,7 @@ export function Thread({ projectId, place, thread, mayWrite }: ThreadProps) {
 
 function WriteNote({ where }: { where: ThreadWhere }) {
   const hydrated = useHydrated();
-  const label = `Write a note on ${where.place.dip ? "this dip" : where.place.sweep ? "the sweep" : "the project"}`;
+  const label = `Write a note on ${placeName(where.place)}`;
   if (hydrated) return <NoteForm where={where} label={label} />;
   return (
     <div className="grid gap-1">

@@ -12,10 +12,13 @@ const body = z
     error: `A note has at most ${MAX_NOTE_CHARACTERS.toLocaleString("en")} characters.`,
   });
 
-/** A note on a dip, on a sweep, or with neither on the project. */
+/** A note on one of these, or with none of them on the project. */
 export const writeNoteSchema = z.object({
   dip: publicId.optional(),
   sweep: publicId.optional(),
+  trail: publicId.optional(),
+  step: publicId.optional(),
+  bench: publicId.optional(),
   parent: publicId.optional(),
   body,
   clientKey: z.string().max(40).optional(),
@@ -25,12 +28,15 @@ export const writeNoteSchema = z.object({
 export const editNoteSchema = z.object({
   intent: z.literal("edit"),
   body,
+  /** Of the text that the change was begun with. */
+  revision: z.string().max(40).optional(),
   returnTo: z.string().optional(),
 });
 
 export const changeNoteSchema = z.discriminatedUnion("intent", [
   editNoteSchema,
   z.object({ intent: z.literal("remove"), returnTo: z.string().optional() }),
+  z.object({ intent: z.literal("restore"), returnTo: z.string().optional() }),
 ]);
 
 export const previewSchema = z.object({ body: z.string().default("") });

@@ -1,8 +1,9 @@
-/** Where a thread stands: on a dip, on a sweep, or with neither on the project. Public ids. */
-export interface ThreadPlace {
-  dip?: string;
-  sweep?: string;
-}
+/** What a thread can stand on, as forms and addresses name it. */
+export const PLACE_KINDS = ["dip", "sweep", "trail", "step", "bench"] as const;
+export type PlaceKind = (typeof PLACE_KINDS)[number];
+
+/** Where a thread stands: on one of these, or with none of them on the project. Public ids. */
+export type ThreadPlace = Partial<Record<PlaceKind, string>>;
 
 /** What every part of a thread needs to know. */
 export interface ThreadWhere {
@@ -17,6 +18,17 @@ export function notesPath({ projectId }: Pick<ThreadWhere, "projectId">, notePub
 }
 
 export function placeKey({ projectId, place }: ThreadWhere): string {
-  if (place.dip) return `${projectId}:dip:${place.dip}`;
-  return place.sweep ? `${projectId}:sweep:${place.sweep}` : projectId;
+  const kind = kindOf(place);
+  return kind ? `${projectId}:${kind}:${place[kind]}` : projectId;
+}
+
+/** "this dip", "the project": for labels. */
+export function placeName(place: ThreadPlace): string {
+  const kind = kindOf(place);
+  return kind ? `${kind === "dip" ? "this" : "the"} ${kind}` : "the project";
+}
+
+/** The first kind that the place names: a dip's thread is the dip's, though its sweep is named too. */
+export function kindOf(place: ThreadPlace): PlaceKind | undefined {
+  return PLACE_KINDS.find((kind) => place[kind]);
 }

@@ -7,6 +7,8 @@ export interface FlashMessage {
   id: string;
   tone?: "done" | "failed";
   text: string;
+  /** Takes back what the message tells; offered for `forMs`. */
+  undo?: { act: () => void; forMs: number };
 }
 
 interface ToastActions {
@@ -48,13 +50,26 @@ function Toast({ message, onClose }: { message: FlashMessage; onClose: (id: stri
   useEffect(() => {
     // What failed stays until it is closed.
     if (failed) return;
-    const timer = setTimeout(() => onClose(message.id), STAYS_MS);
+    const timer = setTimeout(() => onClose(message.id), message.undo?.forMs ?? STAYS_MS);
     return () => clearTimeout(timer);
-  }, [failed, message.id, onClose]);
+  }, [failed, message.id, message.undo, onClose]);
   return (
     <div className={`toast ${failed ? "tone-alarm" : "tone-moss"}`}>
       <Icon name={failed ? "warning" : "check"} />
       <p>{message.text}</p>
+      {message.undo && (
+        <Button
+          type="button"
+          variant="quiet"
+          size="small"
+          onClick={() => {
+            message.undo?.act();
+            onClose(message.id);
+          }}
+        >
+          Undo
+        </Button>
+      )}
       <Button type="button" variant="quiet" size="small" onClick={() => onClose(message.id)}>
         Close
       </Button>

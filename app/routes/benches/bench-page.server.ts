@@ -5,6 +5,7 @@ import { type BenchQuality, qualifyBench } from "~/measurement/correction/qualif
 import { mayEditBench } from "~/services/bench-access.server";
 import { loadBench } from "~/services/bench-sweeps.server";
 import { renderNote } from "~/services/markdown.server";
+import { listThread } from "~/services/note-thread.server";
 import { listPhotographs } from "~/services/photographs.server";
 import { benchScene, MEASURES } from "./bench-scene";
 import type { Wish } from "./benches.schema";
@@ -20,18 +21,21 @@ export async function loadBenchPage(
   const { project, person } = access;
   const { bench, owner } = found;
   const here = bench.projectId === project.id;
-  const [versions, taken, sweepCount, photographs] = await Promise.all([
+  const [versions, taken, sweepCount, photographs, thread] = await Promise.all([
     benches.findVersions(bench.id),
     benches.findSweepsTakenWith(bench.id, project.id),
     benches.countSweeps(bench.id),
     here ? listPhotographs({ projectId: project.id, benchId: bench.id }) : [],
+    // What is said of a bench is for the readers of the project that keeps it.
+    here ? listThread({ projectId: project.id, sweepId: null, dipId: null, benchId: bench.id }, access) : [],
   ]);
   const chosen = pickVersion(versions, versionId);
   const loaded = await loadBench(bench, chosen.version);
   const quality = qualifyBench(loaded.correction, wish);
   return {
     project: { publicId: project.publicId },
-    may: { edit: mayEditBench(access, bench) },
+    may: { edit: mayEditBench(access, bench), write: access.may("note.write") },
+    thread,
     bench: {
       publicId: bench.publicId,
       name: bench.name,

@@ -1,6 +1,7 @@
 import { parseWithZod } from "@conform-to/zod/v4";
 import { data } from "react-router";
 import { requireProject } from "~/auth/require.server";
+import { ThreadSection } from "~/components/notes/ThreadSection";
 import { Photographs } from "~/components/photographs/Photographs";
 import { Markdown } from "~/components/ui/Markdown";
 import * as benches from "~/db/benches.server";
@@ -92,6 +93,14 @@ export default function Bench({ loaderData, actionData }: Route.ComponentProps) 
               photographs={photographs}
               mayEdit={may.edit}
               what="the bench with its cables"
+            />
+          )}
+          {!bench.elsewhere && (
+            <ThreadSection
+              projectId={project.publicId}
+              place={{ bench: bench.publicId }}
+              thread={loaderData.thread}
+              mayWrite={may.write}
             />
           )}
         </div>

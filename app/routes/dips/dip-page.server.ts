@@ -7,7 +7,7 @@ import { notFound } from "~/errors";
 import { bandAt, bandSources, bandsOverlapping, type ItuRegion } from "~/measurement/bands";
 import { decimate } from "~/measurement/decimate";
 import type { Dip, Sweep } from "~/measurement/sweep";
-import { listThread } from "~/services/notes.server";
+import { listThread } from "~/services/note-thread.server";
 import { storedDips } from "~/services/shown-dips.server";
 import { limitsOf, sweepAt } from "~/services/shown-sweep.server";
 import { loadTrailOfDip } from "../trails/trail-of-dip.server.ts";

@@ -2,25 +2,26 @@ import { parseWithZod } from "@conform-to/zod/v4";
 import { data, redirect } from "react-router";
 import { requireProject } from "~/auth/require.server";
 import { changeNoteSchema } from "~/components/notes/notes.schema";
+import type { ThreadPlace } from "~/components/notes/place";
 import { sendOrSayWhy } from "~/components/notes/unsent";
-import * as notes from "~/db/notes.server";
 import { notFound, refused } from "~/errors";
 import { redirectWithMessage } from "~/services/flash.server";
-import { editNote, type NoteChange, removeNote } from "~/services/notes.server";
+import { editNote, type NoteChange, removeNote, restoreNote } from "~/services/note-changes.server";
 import type { Route } from "./+types/note";
 import { backTo, isFromScript, pathOf } from "./place.server.ts";
+import { findNote } from "./require-note.server.ts";
 
 /** A note's permanent address: leads to the page on which it stands. */
 export async function loader(args: Route.LoaderArgs) {
   const { project } = await requireProject(args, "project.read");
-  const found = await requireNote(project.id, args.params.note);
+  const found = await findNote(project.id, args.params.note);
   return redirect(`${pathOf(project, placeOf(found))}#note-${found.note.publicId}`);
 }
 
 export async function action(args: Route.ActionArgs) {
   const { project, person, may } = await requireProject(args, "note.write");
   if (!person) throw refused("Sign in first. Nothing was changed.");
-  const found = await requireNote(project.id, args.params.note);
+  const found = await findNote(project.id, args.params.note);
   const submission = parseWithZod(await args.request.formData(), { schema: changeNoteSchema });
   const stays = isFromScript(args.request);
   const page = pathOf(project, placeOf(found));
@@ -32,14 +33,31 @@ export async function action(args: Route.ActionArgs) {
   }
   const { value } = submission;
   switch (value.intent) {
-    case "edit":
-      checkDone(await editNote({ ...who, body: value.body }));
+    case "edit": {
+      const outcome = await editNote({ ...who, body: value.body, revision: value.revision });
+      if (typeof outcome === "object") {
+        if (stays) return data(outcome, { status: 409 });
+        return redirectWithMessage(backTo(value.returnTo, page, found.note.publicId), CHANGED_SINCE);
+      }
+      checkDone(outcome);
       if (stays) return { done: "edit" as const };
       return redirectWithMessage(backTo(value.returnTo, page, found.note.publicId), "The note is changed.");
+    }
     case "remove":
       checkDone(await removeNote({ ...who, mayModerate: may("note.moderate") }));
       if (stays) return { done: "remove" as const };
-      return redirectWithMessage(backTo(value.returnTo, page), "The note is removed.");
+      return redirectWithMessage(
+        backTo(value.returnTo, page, found.note.publicId),
+        "The note is removed. For ten seconds you can bring it back, where it stood.",
+      );
+    case "restore": {
+      const outcome = await restoreNote(who);
+      const message = outcome === "too-late" ? TOO_LATE : "The note is back.";
+      if (outcome !== "too-late") checkDone(outcome);
+      if (!stays) return redirectWithMessage(backTo(value.returnTo, page, found.note.publicId), message);
+      if (outcome !== "too-late") return { done: "restore" as const };
+      return data({ lastResult: submission.reply({ formErrors: [message] }) }, { status: 409 });
+    }
     default:
       return value satisfies never;
   }
@@ -49,17 +67,21 @@ export function clientAction({ serverAction }: Route.ClientActionArgs) {
   return sendOrSayWhy(serverAction);
 }
 
-async function requireNote(projectId: number, publicId: string) {
-  const found = await notes.findByPublicId(publicId);
-  if (!found || found.note.projectId !== projectId) throw notFound("note");
-  return found;
-}
-
-function placeOf(found: { dipPublicId: string | null; sweepPublicId: string | null }) {
-  return { dip: found.dipPublicId, sweep: found.sweepPublicId };
+function placeOf(found: Awaited<ReturnType<typeof findNote>>): ThreadPlace {
+  return {
+    dip: found.dipPublicId ?? undefined,
+    sweep: found.sweepPublicId ?? undefined,
+    trail: found.trailPublicId ?? undefined,
+    step: found.stepPublicId ?? undefined,
+    bench: found.benchPublicId ?? undefined,
+  };
 }
 
 function checkDone(change: NoteChange): void {
   if (change === "missing") throw notFound("note");
   if (change === "refused") throw refused("This note is somebody else's. Nothing was changed.");
 }
+
+const CHANGED_SINCE =
+  "You changed this note in another window since this form was opened. Nothing was changed now; open “Change” again to see what it says.";
+const TOO_LATE = "It is too late to bring it back: a removed note can be brought back for ten seconds.";

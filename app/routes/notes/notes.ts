@@ -5,15 +5,15 @@ import { writeNoteSchema } from "~/components/notes/notes.schema";
 import { sendOrSayWhy } from "~/components/notes/unsent";
 import { refused } from "~/errors";
 import { redirectWithMessage } from "~/services/flash.server";
-import { listThread, NoteProblem, writeNote } from "~/services/notes.server";
+import { listThread } from "~/services/note-thread.server";
+import { NoteProblem, writeNote } from "~/services/notes.server";
 import type { Route } from "./+types/notes";
-import { backTo, isFromScript, pathOf, requirePlace } from "./place.server.ts";
+import { backTo, isFromScript, pathOf, requirePlace, wishedPlace } from "./place.server.ts";
 
-/** The thread of a dip (`?dip=`), of a sweep (`?sweep=`) or of the project. */
+/** The thread of a dip (`?dip=`), a sweep, a trail, a step, a bench, or with none of them of the project. */
 export async function loader(args: Route.LoaderArgs) {
   const access = await requireProject(args, "project.read");
-  const query = new URL(args.request.url).searchParams;
-  const place = await requirePlace(access, { dip: query.get("dip"), sweep: query.get("sweep") });
+  const place = await requirePlace(access, wishedPlace(new URL(args.request.url).searchParams));
   return { thread: await listThread(place, access), mayWrite: access.may("note.write") };
 }
 
@@ -32,9 +32,9 @@ export async function action(args: Route.ActionArgs) {
       `${what}. Nothing was stored.`,
     );
   }
-  const { dip, sweep, parent, body, clientKey, returnTo } = submission.value;
-  const place = await requirePlace(access, { dip, sweep });
-  const page = pathOf(project, { dip, sweep });
+  const { parent, body, clientKey, returnTo, ...wished } = submission.value;
+  const place = await requirePlace(access, wished);
+  const page = pathOf(project, wished);
   try {
     const written = await writeNote({
       project,

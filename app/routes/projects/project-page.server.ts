@@ -5,7 +5,8 @@ import * as projects from "~/db/projects.server";
 import * as story from "~/db/story.server";
 import { formatFrequency, formatSwr } from "~/measurement/units";
 import { plainText, renderNote } from "~/services/markdown.server";
-import { listThread } from "~/services/notes.server";
+import { placeWords } from "~/services/note-places";
+import { listThread } from "~/services/note-thread.server";
 import { loadStripMap } from "./strip-map.server.ts";
 import { loadTrailList } from "./trail-list.server.ts";
 
@@ -45,9 +46,7 @@ export async function loadProjectPage(access: ProjectAccess, search: URLSearchPa
       line: plainText(note.body, 140),
       author: author?.name ?? "former member",
       at: note.createdAt,
-      about: place.dipFrequencyHz
-        ? `${formatFrequency(place.dipFrequencyHz, null)}, ${place.sweepTitle}`
-        : (place.sweepTitle ?? "the project"),
+      about: placeWords(place),
     })),
     members: members.map(({ name, userName, role }) => ({ name, userName, role })),
     thread,

@@ -6,6 +6,7 @@ import * as steps from "~/db/steps.server";
 import { bandsOverlapping, type ItuRegion } from "~/measurement/bands";
 import { lengthUnitOf } from "~/routes/antenna/sizes";
 import { renderNote } from "~/services/markdown.server";
+import { listThread } from "~/services/note-thread.server";
 import { listPhotographs } from "~/services/photographs.server";
 import { loadEffect, type StepSide } from "~/services/step-effects.server";
 import { stepsBetween } from "~/services/step-sweeps";
@@ -15,13 +16,14 @@ import { quantityText } from "~/services/step-words";
 export async function loadStepPage(access: ProjectAccess, found: steps.FoundStep, search: URLSearchParams) {
   const { project, person, may } = access;
   const { step, by } = found;
-  const [ordered, listed, designBands, photographs, dismissed, described] = await Promise.all([
+  const [ordered, listed, designBands, photographs, dismissed, described, thread] = await Promise.all([
     steps.findSweepsInOrder(project.id),
     steps.findAllByProject(project.id),
     projects.findDesignBands(project.id),
     listPhotographs({ projectId: project.id, stepId: step.id }),
     person ? people.findDismissals(person.id) : [],
     antennas.findFirstDay(project.id),
+    listThread({ projectId: project.id, sweepId: null, dipId: null, stepId: step.id }, access),
   ]);
   const asked = askedRange(search);
   const effect = await loadEffect(project.id, step, ordered, asked ?? undefined);
@@ -35,6 +37,8 @@ export async function loadStepPage(access: ProjectAccess, found: steps.FoundStep
   return {
     project: { publicId: project.publicId },
     mayEdit: may("step.edit"),
+    mayWrite: may("note.write"),
+    thread,
     dismissed,
     step: {
       publicId: step.publicId,

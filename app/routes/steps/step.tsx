@@ -1,5 +1,6 @@
 import { data } from "react-router";
 import { requireProject } from "~/auth/require.server";
+import { ThreadSection } from "~/components/notes/ThreadSection";
 import { Photographs } from "~/components/photographs/Photographs";
 import { Markdown } from "~/components/ui/Markdown";
 import { redirectWithMessage } from "~/services/flash.server";
@@ -76,6 +77,12 @@ export default function StepPage({ loaderData, actionData }: Route.ComponentProp
         photographs={photographs}
         mayEdit={mayEdit}
         what="what was changed, with a tape beside it"
+      />
+      <ThreadSection
+        projectId={project.publicId}
+        place={{ step: step.publicId }}
+        thread={loaderData.thread}
+        mayWrite={loaderData.mayWrite}
       />
     </article>
   );

@@ -10,7 +10,7 @@ import { decimate } from "~/measurement/decimate";
 import type { AnalysisSettings, Sweep } from "~/measurement/sweep";
 import { lineInPicture, placeInPicture } from "~/readers/screenshot/in-picture";
 import { flatPlot } from "~/readers/screenshot/rectify";
-import { listThread } from "~/services/notes.server";
+import { listThread } from "~/services/note-thread.server";
 import { decodePoints, pickPoints } from "~/services/points.server";
 import { storedDips, triedDips } from "~/services/shown-dips.server";
 import { limitsOf, type SweepAt, sweepAt, uncorrected } from "~/services/shown-sweep.server";

@@ -11,6 +11,7 @@ import { agree } from "~/measurement/trails/decisions";
 import { type TrailEvent, trailEvents } from "~/measurement/trails/events";
 import { formatFrequency } from "~/measurement/units";
 import { plainText } from "~/services/markdown.server";
+import { listThread } from "~/services/note-thread.server";
 import { decisionOf, loadTrailSweeps } from "~/services/trails.server";
 import { expectationsOf } from "./expectations.server.ts";
 import { wayOf } from "./way.server.ts";
@@ -21,7 +22,7 @@ export async function loadTrailPage(access: ProjectAccess, publicId: string) {
   const found = await trails.findByPublicId(publicId);
   if (!found || found.trail.projectId !== project.id) throw notFound("trail");
   const { trail } = found;
-  const [stops, sweeps, members, all, decisions, events, notes, designBands, stepRows] = await Promise.all([
+  const [stops, sweeps, members, all, decisions, events, notes, designBands, stepRows, thread] = await Promise.all([
     trailStops.findAllByTrail(trail.id),
     loadTrailSweeps(project.id),
     trails.findMembers(project.id),
@@ -48,6 +49,7 @@ export async function loadTrailPage(access: ProjectAccess, publicId: string) {
       propose: may("verdict.propose"),
       settle: may("verdict.settle"),
     },
+      write: may("note.write"),
     trail: {
       publicId: trail.publicId,
       name: trail.name,
@@ -91,6 +93,7 @@ export async function loadTrailPage(access: ProjectAccess, publicId: string) {
       at: event.at,
     })),
     notes: notes.map(({ body, ...note }) => ({ ...note, line: plainText(body, 220) })),
+    thread,
     moreNotes: way.reduce((sum, { noteCount }) => sum + noteCount, 0) - notes.length,
   };
 }

@@ -1,5 +1,6 @@
 import { data, Link } from "react-router";
 import { requireProject } from "~/auth/require.server";
+import { ThreadSection } from "~/components/notes/ThreadSection";
 import { VerdictTag } from "~/components/ui/Tag";
 import { refused } from "~/errors";
 import type { Route } from "./+types/trail";
@@ -79,7 +80,15 @@ export default function TrailPage({ loaderData, actionData }: Route.ComponentPro
         </section>
       )}
       <div className="grid gap-10 lg:grid-cols-2">
-        <TrailNotes data={loaderData} />
+        <div className="grid gap-10 content-start min-w-0">
+          <ThreadSection
+            projectId={project.publicId}
+            place={{ trail: trail.publicId }}
+            thread={loaderData.thread}
+            mayWrite={may.write}
+          />
+          <TrailNotes data={loaderData} />
+        </div>
         <CorrectTrail
           data={loaderData}
           errors={[...errors("join"), ...errors("join-dip"), ...errors("take-back")]}
