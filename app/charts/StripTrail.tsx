@@ -33,6 +33,7 @@ export function StripTrail({ placed, heightPx, active, onActive, trailHref, dipH
     <g
       className={active ? "trail trail-active" : "trail"}
       data-tone={tone}
+      color={colour}
       onPointerEnter={(event) => event.pointerType === "mouse" && onActive?.(id)}
       onPointerLeave={(event) => event.pointerType === "mouse" && onActive?.(null)}
       onFocus={() => onActive?.(id)}
@@ -58,16 +59,8 @@ export function StripTrail({ placed, heightPx, active, onActive, trailHref, dipH
           tabIndex={-1}
           aria-label={stop.words}
         >
-          <circle cx={across(stop.fraction, null)} cy={stop.y} r="10" fill="transparent" />
-          <circle
-            cx={across(stop.fraction, null)}
-            cy={stop.y}
-            r="4"
-            fill={palette.paper}
-            stroke={colour}
-            strokeWidth="2"
-            className="trail-dot"
-          />
+          <circle cx={across(stop.fraction, null)} cy={stop.y} r="10" className="trail-hit" />
+          <circle cx={across(stop.fraction, null)} cy={stop.y} r="4" className="trail-dot" />
         </a>
       ))}
       {active ? (

@@ -47,7 +47,7 @@ export interface PlacedStrip {
   landY: number;
   footY: number;
   path: StripPath;
-  /** Dips in view. */
+  /** Dips in view that are on no trail. */
   dips: { id: string; fraction: number; y: number }[];
 }
 
@@ -129,13 +129,15 @@ export function buildStripScene(input: StripSceneInput): StripScene {
         })),
     };
   });
+  const trails = placeTrails(input.trails, strips, steps, scale);
+  const onTrails = new Set(trails.flatMap(({ stops }) => stops.map(({ dipId }) => dipId)));
   return {
     scale: { kind: scale.kind, fromHz: scale.fromHz, toHz: scale.toHz },
     frequency: frequencyAxis(scale),
     ribbon: ribbonBands(scale, input.bands, input.designBands),
-    strips,
+    strips: strips.map((strip) => ({ ...strip, dips: strip.dips.filter(({ id }) => !onTrails.has(id)) })),
     steps,
-    trails: placeTrails(input.trails, strips, steps, scale),
+    trails,
     heightPx: y,
   };
 }

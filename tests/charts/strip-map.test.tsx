@@ -84,8 +84,10 @@ describe("buildStripScene", () => {
       fromHz: 10e6,
       trails: [trail("a", "7 MHz"), trail("b", "18 MHz")],
     });
-    expect(scene.strips[0].dips.map(({ id }) => id)).toEqual(["b3"]);
-    expect(scene.trails[0].stops).toEqual([]);
+    expect(scene.trails.map(({ stops }) => stops.length)).toEqual([0, 4]);
+    expect(scene.strips[0].dips).toEqual([]);
+    const { strips: bare } = buildStripScene({ ...base, fromHz: 10e6 });
+    expect(bare[0].dips.map(({ id }) => id)).toEqual(["b3"]);
   });
 
   it("draws a trail on where strips follow one another, and apart where one between does not show it", () => {
