@@ -1,7 +1,7 @@
 import { desc, eq, or } from "drizzle-orm";
 import { db, type Queryable } from "./client.server.ts";
 import { newPublicId } from "./ids.server.ts";
-import { users, verdictEvents } from "./schema/index.ts";
+import { trailDips, trails, users, verdictEvents } from "./schema/index.ts";
 
 export async function insert(
   event: Omit<typeof verdictEvents.$inferInsert, "id" | "publicId">,
@@ -21,4 +21,16 @@ export async function findAllOnDip(dipId: number, trailId: number | null, tx: Qu
     .orderBy(desc(verdictEvents.at), desc(verdictEvents.id))
     .limit(100);
 }
+/** What verdicts rest on, those of a trail's dips and its own, by the trail's public id; newest first. */
+export async function findAllOnTrails(projectId: number, tx: Queryable = db) {
+  return tx
+    .select({ trail: trails.publicId, verdict: verdictEvents.verdict, evidence: verdictEvents.evidence })
+    .from(verdictEvents)
+    .leftJoin(trailDips, eq(trailDips.dipId, verdictEvents.dipId))
+    .innerJoin(trails, or(eq(trails.id, trailDips.trailId), eq(trails.id, verdictEvents.trailId)))
+    .where(eq(verdictEvents.projectId, projectId))
+    .orderBy(desc(verdictEvents.at), desc(verdictEvents.id))
+    .limit(2000);
+}
+
 export type ListedVerdict = Awaited<ReturnType<typeof findAllOnDip>>[number];

@@ -16,6 +16,7 @@ import type { LengthUnit } from "~/measurement/lengths";
 import type { Dip } from "~/measurement/sweep";
 import { type AntennaThen, antennaAt } from "./antennas.server.ts";
 import { benchForSweep } from "./bench-sweeps.server.ts";
+import { keyOf } from "./cause-keys.ts";
 
 export interface NamedCause extends Cause {
   /** Stays the same while the antenna has the part: "part.a1b2.3". */
@@ -100,10 +101,6 @@ async function dipsOf(
 /** Return loss beside a dip, dB. */
 function crestOf({ returnLossDb, prominenceDb }: Dip): number {
   return returnLossDb - prominenceDb;
-}
-
-function keyOf({ kind, part, order }: Cause): string {
-  return [kind, part ?? "", order ?? ""].join(".");
 }
 
 /** Of a good load everything lies far down, and its nulls are no dips that an antenna's sweep could show: a tenth in abs Γ. */

@@ -1,9 +1,11 @@
 import * as antennas from "~/db/antennas.server";
 import * as steps from "~/db/steps.server";
+import * as verdictEvents from "~/db/verdict-events.server";
 import { type Antenna, type ExpectedPlace, NO_ANTENNA, type StepQuantity } from "~/measurement/antenna";
 import { causesOf } from "~/measurement/causes";
 import type { LengthUnit } from "~/measurement/lengths";
 import { expectedPlaces, type TrailAtStep } from "~/measurement/trim";
+import { partOf } from "./cause-keys.ts";
 import { resolveQuantities } from "./step-quantities.ts";
 
 type Stop = Awaited<ReturnType<typeof steps.findTrailStops>>[number];
@@ -14,10 +16,11 @@ export async function expectedAfter(
   quantities: readonly StepQuantity[],
   unit: LengthUnit,
 ): Promise<ExpectedPlace[]> {
-  const [versions, sweeps, stops] = await Promise.all([
+  const [versions, sweeps, stops, verdicts] = await Promise.all([
     antennas.findAllByProject(projectId),
     steps.findSweepsInOrder(projectId),
     steps.findTrailStops(projectId),
+    verdictEvents.findAllOnTrails(projectId),
   ]);
   const now = versions.at(-1)?.version.content ?? null;
   const { quantities: resolved, problem } = resolveQuantities(quantities, now);
@@ -33,7 +36,7 @@ export async function expectedAfter(
     newestStops
       .filter(({ numbers }) => !numbers.edge)
       .map((stop): TrailAtStep => {
-        const part = likeliestPart(stop, newestStops, antenna, unit);
+        const part = agreedPart(stop.trail, verdicts) ?? likeliestPart(stop, newestStops, antenna, unit);
         return {
           trail: stop.trail,
           frequencyHz: stop.numbers.frequencyHz,
@@ -50,6 +53,16 @@ export async function expectedAfter(
     unit,
   );
 }
+
+/** The part whose cause the trail's last verdict rests on; null where that rests on none or was opened again. */
+function agreedPart(trail: string, verdicts: Verdicts): string | null {
+  const last = verdicts.find((one) => one.trail === trail);
+  if (!last || last.verdict === "open") return null;
+  const cause = last.evidence.find(({ kind }) => kind === "cause");
+  return cause ? partOf(cause.id) : null;
+}
+
+type Verdicts = Awaited<ReturnType<typeof verdictEvents.findAllOnTrails>>;
 
 /** The part that may be behind the dip before all others; null where that is none of the antenna's parts. */
 function likeliestPart(stop: Stop, all: Stop[], antenna: Antenna, unit: LengthUnit): string | null {

@@ -44,6 +44,7 @@ export function nameTrail(input: {
   trail: { id: number; projectId: number };
   by: { id: number };
   name: string;
+  at?: Date;
 }): Promise<boolean> {
   return inTransaction(async (tx) => {
     await projects.lock(input.trail.projectId, tx);
@@ -52,7 +53,8 @@ export function nameTrail(input: {
     await trails.update(trail.id, { name: input.name }, tx);
     const title = input.name || "A trail has no name any more";
     const about = { trail: trail.publicId, title };
-    await record({ projectId: trail.projectId, kind: "trail.named", actorId: input.by.id, about }, tx);
+    const by = input.by.id;
+    await record({ projectId: trail.projectId, kind: "trail.named", actorId: by, about, at: input.at }, tx);
     return true;
   });
 }

@@ -21,7 +21,8 @@ export async function buildDemo(): Promise<"built" | "there already"> {
   if (await jobs.findFact(FACT)) return "there already";
   for (const id of await projects.findIdsOfDemo()) await deleteProject(id);
   const cast = await findCast();
-  for (const story of [benchStory(), dipoleStory(), reedBankStory()]) await play(story, cast);
+  const benchIds = new Map<string, number>();
+  for (const story of [benchStory(), dipoleStory(), reedBankStory()]) await play(story, cast, benchIds);
   await jobs.setFact(FACT, { version: VERSION });
   return "built";
 }

@@ -1,8 +1,15 @@
 import { readFileSync } from "node:fs";
 
-export type PictureName = "screen-5-25" | "screen-46-58";
+export type PictureName =
+  | "screen-5-25"
+  | "screen-46-58"
+  | "reed-bank"
+  | "stake"
+  | "choke"
+  | "bridge"
+  | "attic";
 
-/** A picture of an invented analyser's screen, drawn by `pictures/draw.ts` and kept, so that no fonts are needed. */
+/** A picture drawn by `pictures/draw.ts` or `pictures/scenes.ts` and kept, so that nothing is needed to draw it. */
 export function pictureOf(name: PictureName): Uint8Array {
   return readFileSync(new URL(`./pictures/${name}.png`, import.meta.url));
 }

@@ -1,5 +1,9 @@
 import { LIGHT_SPEED } from "./antenna.ts";
-import { AS_BUILT, BOTH_CUT, type reedBankFiles, SHORT_CUT, ZERO_DBM } from "./reed-bank.ts";
+import { ZERO_DBM } from "./bridge.ts";
+import { changed, pictured } from "./deeds.ts";
+import { makes } from "./quantities.ts";
+import { AS_BUILT, BOTH_CUT, type reedBankFiles, SHORT_CUT } from "./reed-bank.ts";
+import { asBuilt } from "./reed-bank-antenna.ts";
 import { decided, said, swept } from "./steps.ts";
 import { on, type Step } from "./story.ts";
 import { aside, dbm, khz, mhz, percent } from "./told.ts";
@@ -8,6 +12,8 @@ import { aside, dbm, khz, mhz, percent } from "./told.ts";
 export function chase(files: ReturnType<typeof reedBankFiles>): Step[] {
   const odd = { sweep: "asBuilt", nearMhz: 52.2 };
   return [
+    asBuilt(),
+    pictured("ada-marsh", on(3, 6, 19, 5), "reed-bank", REED_BANK),
     said(
       "ada-marsh",
       on(3, 6, 19, 10),
@@ -85,12 +91,13 @@ But the widest good match of the whole sweep is this one: SWR ${t.dip("asBuilt",
       fileName: "Schilf_Bruecke.txt",
       bytes: files.bridge,
       given: { text: { zeroDb: ZERO_DBM } },
+      bench: "bridge",
     }),
     said(
       "ada-marsh",
       on(3, 14, 16, 5),
       { sweep: "bridge" },
-      `Spectrum analyser with tracking generator at 0 dBm, bridge, ten minutes of warming up. With the port open the level is ${dbm(ZERO_DBM)}; a resistive 50 Ω bridge with a 50 Ω source and detector loses 12.04 dB from the source to the detector when the port is open or shorted, so that is a sane bridge. I gave ${dbm(ZERO_DBM)} as the 0 dB line. I have no load sweep of this bench yet, so its directivity is not in the limits.`,
+      `Spectrum analyser with tracking generator at 0 dBm, bridge, ten minutes of warming up. With the port open the level is ${dbm(ZERO_DBM)}; a resistive 50 Ω bridge with a 50 Ω source and detector loses 12.04 dB from the source to the detector when the port is open or shorted, so that is a sane bridge. It was chosen as this sweep's bench, so its own open, short and load are in the numbers and in their limits. The pocket analyser has none of the three: of its numbers only the noise is known.`,
       { key: "zero-line" },
     ),
     said(
@@ -133,6 +140,12 @@ It is real. One warning: this sweep has phase, but there are 12 m of cable in it
       "Agreed, it is real. And the loss of the cable flatters all three alike, more so at 52 MHz than at 7.",
       { answers: "three-instruments" },
     ),
+    changed("bram-sedge", on(3, 21, 9, 50), {
+      key: "shortCut",
+      title: `Short element cut to ${SHORT_CUT.shortM.toFixed(2)} m`,
+      body: "At the top, mast laid down for it.",
+      quantities: [makes("short", "lengthM", "Short element, length", SHORT_CUT.shortM)],
+    }),
     swept({
       key: "shortCut",
       by: "bram-sedge",
@@ -171,6 +184,11 @@ It is real. One warning: this sweep has phase, but there are 12 m of cable in it
       "reopen",
       "It did not move with the short element, so it is not its third resonance",
     ),
+    changed("bram-sedge", on(3, 21, 14, 30), {
+      key: "bothCut",
+      title: `Long element cut to ${BOTH_CUT.longM.toFixed(2)} m`,
+      quantities: [makes("long", "lengthM", "Long element, length", BOTH_CUT.longM)],
+    }),
     swept({
       key: "bothCut",
       by: "bram-sedge",
@@ -251,3 +269,6 @@ It is real. One warning: this sweep has phase, but there are 12 m of cable in it
     ),
   ];
 }
+
+const REED_BANK =
+  "Both elements on the hub, radials around it, the cable over the stake up the bank. Drawn, not photographed: the place is invented.";

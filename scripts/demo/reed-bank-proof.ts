@@ -1,7 +1,9 @@
 import { LIGHT_SPEED } from "./antenna.ts";
+import { changed, done, pictured, planned } from "./deeds.ts";
 import { pictureOf } from "./pictures.ts";
+import { counts, makes } from "./quantities.ts";
 import { AS_BUILT, MORE_RADIALS, type reedBankFiles, STAKE_FAR, STAKE_NEAR } from "./reed-bank.ts";
-import { decided, said, swept } from "./steps.ts";
+import { adopted, said, swept } from "./steps.ts";
 import { on, type Step } from "./story.ts";
 import { khz, mhz, percent } from "./told.ts";
 
@@ -12,6 +14,12 @@ const NEAR_M = STAKE_NEAR.braidM ?? 0;
 /** Late March and April: the suspicion is tried, from four sides, until nothing else is left. */
 export function proof(files: ReturnType<typeof reedBankFiles>): Step[] {
   return [
+    changed("ada-marsh", on(3, 28, 13, 50), {
+      key: "radials",
+      title: "Sixteen more radials",
+      body: "Same wire, same 7 m, between the old ones.",
+      quantities: [makes("radials", "count", "Radials, count", MORE_RADIALS.radials)],
+    }),
     swept({
       key: "radials",
       by: "ada-marsh",
@@ -19,6 +27,7 @@ export function proof(files: ReturnType<typeof reedBankFiles>): Step[] {
       title: `${MORE_RADIALS.radials} radials`,
       fileName: "Schilf_24_Radials.txt",
       bytes: files.radials,
+      bench: "bridge",
     }),
     said(
       "bram-sedge",
@@ -66,6 +75,11 @@ export function proof(files: ReturnType<typeof reedBankFiles>): Step[] {
       (t) =>
         `I had no stick with me, so here are two pictures of the screen. Read from the pixels, the odd one sits at ${t.dip("screenHigh", 52.2).f}; Ada's file says ${t.dip("radials", 52.2).f}. Good enough to see that it is the same dip, not good enough to trim by.`,
     ),
+    changed("cleo-reed", on(3, 29, 12, 20), {
+      key: "feedlineOff",
+      title: "Feedline taken off at the hub",
+      body: "Unscrewed and laid aside, for one sweep; the stake stays in the ground.",
+    }),
     swept({
       key: "hub",
       by: "cleo-reed",
@@ -109,6 +123,12 @@ export function proof(files: ReturnType<typeof reedBankFiles>): Step[] {
       "Fair. It shows that the dip needs the feedline. It does not show which part of it. So change one length and nothing else.",
       { answers: "three-changes" },
     ),
+    changed("bram-sedge", on(4, 3, 16, 50), {
+      key: "beads",
+      title: "Beads on the cable at the shack",
+      body: "The feedline is back on the hub since the 29th.",
+      quantities: [counts("Ferrite beads at the shack end", "beads", 0, 5)],
+    }),
     swept({
       key: "shackChoke",
       by: "bram-sedge",
@@ -140,6 +160,28 @@ export function proof(files: ReturnType<typeof reedBankFiles>): Step[] {
         `First the length, then the choke. Tomorrow I move the stake to ${FAR_M.toFixed(2)} m from the hub. If it is the braid, we shall find it at ${t.dip("radials", 52.2).f} × ${FREE_M.toFixed(2)} / ${FAR_M.toFixed(2)} = ${mhz((t.dip("radials", 52.2).hz * FREE_M) / FAR_M, 1)}. I write it down before I sweep.`,
       { key: "before-i-sweep", answers: "where-it-runs" },
     ),
+    adopted(
+      "ada-marsh",
+      on(4, 3, 20, 4),
+      { sweep: "shackChoke", nearMhz: 52.2 },
+      {
+        cause: "braid",
+        note: () => "Adopted from the list on this page, so that the plan for tomorrow reckons with it.",
+      },
+    ),
+    planned(
+      "ada-marsh",
+      on(4, 3, 20, 10),
+      {
+        key: "stakeFar",
+        title: `Stake moved out to ${FAR_M.toFixed(2)} m`,
+        body: "Only the stake. Where every dip should go is written down here before anybody sweeps.",
+        quantities: [makes("braid", "lengthM", "Braid from hub to stake, length", FAR_M)],
+      },
+      on(4, 4, 10, 0),
+    ),
+    pictured("ada-marsh", on(4, 3, 20, 20), "stake", STAKE, "stakeFar"),
+    done("ada-marsh", on(4, 4, 10, 20), "stakeFar"),
     swept({
       key: "stakeFar",
       by: "cleo-reed",
@@ -152,6 +194,11 @@ export function proof(files: ReturnType<typeof reedBankFiles>): Step[] {
       const should = (t.dip("radials", 52.2).hz * FREE_M) / FAR_M;
       const { link, hz, s } = t.dip("stakeFar", 44.4);
       return `${link}, SWR ${s}. Foretold ${mhz(should, 1)}, so ${percent(hz / should)}. The 40 and 17 m dips stayed where they were: ${t.dip("stakeFar", 7.12).f} and ${t.dip("stakeFar", 18.2).f}.`;
+    }),
+    changed("bram-sedge", on(4, 5, 9, 40), {
+      key: "stakeNear",
+      title: `Stake moved in to ${NEAR_M.toFixed(2)} m`,
+      quantities: [makes("braid", "lengthM", "Braid from hub to stake, length", NEAR_M)],
     }),
     swept({
       key: "stakeNear",
@@ -212,12 +259,16 @@ Constant within a per cent while the length changes by 40 per cent. I propose it
       },
       { key: "three-lengths" },
     ),
-    decided(
+    adopted(
       "cleo-reed",
       on(4, 5, 14, 45),
       { sweep: "stakeNearWide", nearMhz: 62 },
-      "propose",
-      "Half wave on the outside of the braid, between the hub and the earth stake",
+      {
+        cause: "braid",
+        steps: ["stakeFar", "stakeNear"],
+        sweeps: ["hub", "radials", "stakeFar"],
+        note: () => "A half wave on the outside of the braid, between the hub and the earth stake.",
+      },
     ),
     said(
       "bram-sedge",
@@ -228,3 +279,6 @@ Constant within a per cent while the length changes by 40 per cent. I propose it
     ),
   ];
 }
+
+const STAKE =
+  "The hub, the stake and the length of cable between them that is meant to change. Drawn, not photographed.";

@@ -1,4 +1,7 @@
-import type { reedBankFiles } from "./reed-bank.ts";
+import { atTheAntenna, changed, followed, pictured, repeated } from "./deeds.ts";
+import { makes } from "./quantities.ts";
+import { AS_BUILT, FEEDLINE, type reedBankFiles } from "./reed-bank.ts";
+import { chokeDescribed, oneMoreCut } from "./reed-bank-antenna.ts";
 import { decided, said, swept } from "./steps.ts";
 import { on, type Step } from "./story.ts";
 import { aside, mhz } from "./told.ts";
@@ -6,6 +9,17 @@ import { aside, mhz } from "./told.ts";
 /** April: a choke at the hub, and what is settled and kept. */
 export function settling(files: ReturnType<typeof reedBankFiles>): Step[] {
   return [
+    changed("ada-marsh", on(4, 11, 13, 50), {
+      key: "choked",
+      title: "Choke at the hub, stake back at 2.76 m",
+      body: "Twelve turns of the feedline through a ferrite ring.",
+      quantities: [
+        makes("choke", "turns", "Choke, turns", 12),
+        makes("braid", "lengthM", "Braid from hub to stake, length", AS_BUILT.braidM ?? 0),
+      ],
+    }),
+    chokeDescribed(),
+    pictured("ada-marsh", on(4, 11, 14, 10), "choke", CHOKE, "choked"),
     swept({
       key: "choked",
       by: "ada-marsh",
@@ -13,6 +27,7 @@ export function settling(files: ReturnType<typeof reedBankFiles>): Step[] {
       title: "Choke at the hub, stake back at 2.76 m",
       fileName: "Schilf_Drossel.txt",
       bytes: files.choked,
+      bench: "bridge",
     }),
     said(
       "ada-marsh",
@@ -41,6 +56,7 @@ All that is left up there is the short element's third resonance, ${t.dip("choke
       { answers: "choked" },
     ),
     ...settled(),
+    ...again(files),
     swept({
       key: "final",
       by: "cleo-reed",
@@ -49,20 +65,21 @@ All that is left up there is the short element's third resonance, ${t.dip("choke
       fileName: "reed-bank-final.s1p",
       bytes: files.final,
     }),
+    atTheAntenna("cleo-reed", on(4, 18, 11, 0), "final", { name: "own values", ...FEEDLINE }),
     said(
       "cleo-reed",
       on(4, 18, 11, 30),
       { sweep: "final" },
       (
         t,
-      ) => `For the record, from the shack, 1 to 80 MHz. SWR at the edges and in the middle of what we wanted:
+      ) => `For the record, 1 to 80 MHz. It has phase, so the 12 m of feedline are taken out again: this is the antenna itself, where the cable flatters nothing. SWR at the edges and in the middle of what we wanted:
 
 | | low edge | middle | high edge |
 |:--|--:|--:|--:|
 | 40 m | ${t.swrAt("final", 7)} | ${t.swrAt("final", 7.1)} | ${t.swrAt("final", 7.2)} |
 | 17 m | ${t.swrAt("final", 18.068)} | ${t.swrAt("final", 18.118)} | ${t.swrAt("final", 18.168)} |
 
-Both inside the limit of 2 everywhere.`,
+Both inside the limit of 2 everywhere. Three sweeps of 5 to 25 MHz, one right after the other, show how well such numbers repeat.`,
     ),
     ...asItStays(),
     said(
@@ -86,17 +103,18 @@ The stake stays, for lightning. Nobody works at the mast when there is thunder a
       "5. Believe Cleo about which side of three times it ought to lie.",
       { answers: "what-i-take" },
     ),
+    oneMoreCut(),
   ];
 }
 
 /** What is left in the last sweep: three explained, one proposed, one open. */
 function asItStays(): Step[] {
-  const settle = (nearMhz: number, text: string, minute: number) =>
-    decided("ada-marsh", on(4, 18, 12, minute), { sweep: "final", nearMhz }, "settle", text);
+  const settle = (nearMhz: number, name: string, settled: string, minute: number) =>
+    followed("ada-marsh", on(4, 18, 12, minute), { sweep: "final", nearMhz }, { name, settled });
   return [
-    settle(7.12, "Long element, quarter wave", 10),
-    settle(18.16, "Short element, quarter wave", 11),
-    settle(21.5, "Long element, three quarter waves", 12),
+    settle(7.12, "Long element", "Long element, quarter wave", 10),
+    settle(18.16, "Short element", "Short element, quarter wave", 11),
+    settle(21.5, "Long element, third", "Long element, three quarter waves", 12),
     decided(
       "dov-heron",
       on(4, 18, 13, 30),
@@ -124,22 +142,45 @@ function asItStays(): Step[] {
   ];
 }
 
-/** The verdict, on each sweep in which the dip stood out. */
+/** Another person's word on Cleo's proposal; and for its whole trail, which the stake had torn into three. */
 function settled(): Step[] {
-  const where = [
-    ["asBuilt", 52.2],
-    ["bothCut", 52.2],
-    ["radials", 52.2],
-    ["stakeFar", 44.4],
-    ["stakeNearWide", 62],
-  ] as const;
-  return where.map(([sweep, nearMhz], i) =>
-    decided(
-      "ada-marsh",
-      on(4, 12, 10, 10 + i),
-      { sweep, nearMhz },
-      "settle",
-      "Half wave on the outside of the braid between hub and stake: moved with that length, gone with a choke at the hub",
-    ),
-  );
+  const at = (sweep: string, nearMhz: number) => ({ sweep, nearMhz });
+  const last = at("stakeNearWide", 62);
+  return [
+    decided("ada-marsh", on(4, 12, 10, 10), last, "settle", SETTLED, {
+      steps: ["stakeFar", "stakeNear", "choked"],
+      sweeps: ["hub", "choked"],
+      notes: ["three-lengths"],
+    }),
+    followed("ada-marsh", on(4, 12, 10, 20), at("radials", 52.2), {
+      name: "The braid's half wave",
+      // Without the feedline the short element's third was all that was left, and the pairing went on with it.
+      apart: [[at("screenHigh", 52.2), at("hub", 55.3)]],
+      others: [at("shackChoke", 52.2), at("stakeFar", 44.4), last],
+      settled: SETTLED,
+    }),
+  ];
 }
+
+/** Three sweeps of one thing, a minute apart. */
+function again(files: ReturnType<typeof reedBankFiles>): Step[] {
+  const keys = ["againOne", "againTwo", "againThree"] as const;
+  return [
+    ...keys.map((key, i) =>
+      swept({
+        key,
+        by: "cleo-reed",
+        at: on(4, 18, 9, 30 + i),
+        title: `As it stays, 5 to 25 MHz, ${["once", "twice", "three times"][i]}`,
+        fileName: `reed-bank-repeat-${i + 1}.s1p`,
+        bytes: files[key],
+      }),
+    ),
+    repeated("cleo-reed", on(4, 18, 9, 50), [...keys]),
+  ];
+}
+
+const SETTLED =
+  "Half wave on the outside of the braid between hub and stake: moved with that length, gone with a choke at the hub";
+const CHOKE =
+  "Twelve turns of the feedline through a ferrite ring, right at the hub. Drawn, not photographed.";

@@ -7,6 +7,7 @@ import {
   type Resonator,
   reflection,
 } from "./antenna.ts";
+import { atBridge, type Built, ZERO_DBM } from "./bridge.ts";
 import { impedanceFile, levelFile, returnLossFile, type Span, swrFile, touchstoneFile } from "./files.ts";
 import { gaussBy } from "./random.ts";
 
@@ -28,13 +29,12 @@ export const STAKE_FAR: State = { ...MORE_RADIALS, braidM: 3.24 };
 export const STAKE_NEAR: State = { ...MORE_RADIALS, braidM: 2.31 };
 export const CHOKED: State = { ...MORE_RADIALS, braidM: null };
 
-export const ZERO_DBM = -11.9;
-
 const WIDE: Span = { startHz: 1e6, stopHz: 60e6, points: 591 };
 const WIDER: Span = { startHz: 1e6, stopHz: 80e6, points: 791 };
-const FEEDLINE: Feedline = { lengthM: 12, velocityFactor: 0.82, k1: 0.0057, k2: 0.0001 };
+export const FEEDLINE: Feedline = { lengthM: 12, velocityFactor: 0.82, k1: 0.0057, k2: 0.0001 };
 const POCKET: Instrument = { noise: 0.0025, directivity: 0.008 };
-const BRIDGE: Instrument = { noise: 0.003, directivity: 0.012 };
+/** Its own leakage comes with the bridge. */
+const BRIDGE: Instrument = { noise: 0.003, directivity: 0 };
 const LABORATORY: Instrument = { noise: 0.0006, directivity: 0.001 };
 
 /** The files in the order in which they were taken. */
@@ -44,7 +44,7 @@ export function reedBankFiles() {
     rain: returnLossFile(WIDE, seen("rain", AS_BUILT, POCKET), "reed bank, after the rain"),
     bridge: levelFile(
       { ...WIDE, points: 1181 },
-      seen("bridge", AS_BUILT, BRIDGE),
+      bridged("first", "bridge", AS_BUILT),
       ZERO_DBM,
       "Schilfbank, wie gebaut",
     ),
@@ -68,7 +68,7 @@ export function reedBankFiles() {
     ),
     radials: levelFile(
       { ...WIDE, points: 1181 },
-      seen("radials", MORE_RADIALS, BRIDGE),
+      bridged("rebuilt", "radials", MORE_RADIALS),
       ZERO_DBM,
       "Schilfbank, 24 Radials",
     ),
@@ -93,7 +93,7 @@ export function reedBankFiles() {
     ),
     choked: levelFile(
       { ...WIDER, points: 1581 },
-      seen("choked", CHOKED, BRIDGE),
+      bridged("rebuilt", "choked", CHOKED),
       ZERO_DBM,
       "Schilfbank, Drossel am Fusspunkt",
     ),
@@ -103,6 +103,9 @@ export function reedBankFiles() {
       "RI",
       "reed bank, as it stays",
     ),
+    againOne: again("once"),
+    againTwo: again("twice"),
+    againThree: again("three times"),
   };
 }
 
@@ -114,6 +117,15 @@ export function radialsOnScreen(name: string): (hz: number) => number {
 
 function seen(name: string, state: State, instrument: Instrument, feedline: Feedline = FEEDLINE) {
   return reflection(resonatorsOf(state), feedline, instrument, gaussBy(name));
+}
+
+function again(time: string): Uint8Array {
+  const span = { startHz: 5e6, stopHz: 25e6, points: 401 };
+  return touchstoneFile(span, seen(`again ${time}`, CHOKED, LABORATORY), "RI", `reed bank, ${time}`);
+}
+
+function bridged(built: Built, name: string, state: State) {
+  return atBridge(built, seen(name, state, BRIDGE));
 }
 
 /** Radials on the ground lower its loss: the resistance falls towards the radiation resistance. */

@@ -1,4 +1,4 @@
-import type { NoteStep, On, Step, SweepStep, VerdictStep, Who } from "./story.ts";
+import type { NoteStep, On, Rests, Step, SweepStep, VerdictStep, Who } from "./story.ts";
 
 /** Short forms of what happens in a story. */
 
@@ -23,6 +23,17 @@ export function decided(
   on: Required<On>,
   intent: VerdictStep["intent"],
   text: VerdictStep["text"] | string,
+  rests?: Rests,
 ): Step {
-  return { kind: "verdict", by, at, on, intent, text: typeof text === "string" ? () => text : text };
+  return { kind: "verdict", by, at, on, intent, text: typeof text === "string" ? () => text : text, rests };
+}
+
+/** Proposes what the product's own list of causes says of that part of the antenna. */
+export function adopted(
+  by: Who,
+  at: Date,
+  on: Required<On>,
+  rests: Rests & Required<Pick<Rests, "cause">>,
+): Step {
+  return { kind: "verdict", by, at, on, intent: "propose", text: () => "", rests };
 }

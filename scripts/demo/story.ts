@@ -1,8 +1,9 @@
 import type { Given } from "~/readers/reading";
 import type { VerdictIntent } from "~/services/verdicts.server";
+import type { Stage } from "./stage.ts";
 import type { Told } from "./told.ts";
 
-/** A story: what was swept, said and decided, in the order in which it happened. */
+/** A story: what was swept, said, decided and done, in the order in which it happened. */
 
 export const CAST = ["ada-marsh", "bram-sedge", "cleo-reed", "dov-heron"] as const;
 export type Who = (typeof CAST)[number];
@@ -22,6 +23,8 @@ export interface SweepStep {
   fileName: string;
   bytes: Uint8Array;
   given?: Given;
+  /** Key of the bench it was taken with. */
+  bench?: string;
 }
 
 export interface NoteStep {
@@ -42,9 +45,29 @@ export interface VerdictStep {
   on: Required<On>;
   intent: VerdictIntent;
   text: (told: Told) => string;
+  rests?: Rests;
 }
 
-export type Step = SweepStep | NoteStep | VerdictStep;
+/** What a verdict rests on, by the story's own keys. */
+export interface Rests {
+  /** The antenna's part whose cause is adopted: then the verdict says what that cause says. */
+  cause?: string;
+  sweeps?: string[];
+  steps?: string[];
+  notes?: string[];
+  /** Markdown that goes along. */
+  note?: (told: Told) => string;
+}
+
+/** Anything else that somebody does. */
+export interface DeedStep {
+  kind: "deed";
+  by: Who;
+  at: Date;
+  do: (stage: Stage, by: { id: number; userName: string }, at: Date) => Promise<void>;
+}
+
+export type Step = SweepStep | NoteStep | VerdictStep | DeedStep;
 
 export interface Story {
   title: string;

@@ -20,6 +20,7 @@ export interface ToldDip {
 }
 
 export interface KnownSweep {
+  publicId: string;
   path: string;
   title: string;
   dips: { publicId: string; id: number; numbers: Dip }[];
@@ -29,6 +30,8 @@ export interface KnownSweep {
 export class Told {
   readonly #projectPath: string;
   readonly #sweeps = new Map<string, KnownSweep>();
+  readonly #benches = new Map<string, string>();
+  readonly #steps = new Map<string, string>();
 
   constructor(projectPath: string) {
     this.#projectPath = projectPath;
@@ -36,6 +39,28 @@ export class Told {
 
   add(key: string, sweep: KnownSweep): void {
     this.#sweeps.set(key, sweep);
+  }
+
+  addBench(key: string, name: string, publicId: string): void {
+    this.#benches.set(key, `[${name}](${this.#projectPath}/benches/${publicId})`);
+  }
+
+  /** A bench's name as a link to it. */
+  bench(key: string): string {
+    const bench = this.#benches.get(key);
+    if (!bench) throw new Error(`The demo has no bench "${key}" yet.`);
+    return bench;
+  }
+
+  addStep(key: string, title: string, publicId: string): void {
+    this.#steps.set(key, `[${title}](${this.#projectPath}/steps/${publicId})`);
+  }
+
+  /** A step's title as a link to it. */
+  step(key: string): string {
+    const step = this.#steps.get(key);
+    if (!step) throw new Error(`The demo has no step "${key}" yet.`);
+    return step;
   }
 
   /** The sweep's title as a link to it. */

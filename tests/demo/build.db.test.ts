@@ -1,9 +1,22 @@
 import { eq } from "drizzle-orm";
 import { beforeAll, describe, expect, it } from "vitest";
 import { db } from "~/db/client.server";
+import { findByPublicId as findDip } from "~/db/dips.server";
 import * as jobs from "~/db/jobs.server";
 import * as people from "~/db/people.server";
-import { dips, facts, memberships, notes, projects, sweeps, users } from "~/db/schema/index";
+import {
+  analyses,
+  dips,
+  facts,
+  memberships,
+  notes,
+  projects,
+  steps,
+  sweeps,
+  users,
+  verdictEvents,
+} from "~/db/schema/index";
+import { findTrailStops } from "~/db/steps.server";
 import { buildDemo } from "../../scripts/demo/build.ts";
 import { play } from "../../scripts/demo/play.ts";
 import { reedBankStory } from "../../scripts/demo/reed-bank-story.ts";
@@ -12,13 +25,19 @@ const STORY = "The vertical on the reed bank";
 
 async function demo() {
   const [project] = await db.select().from(projects).where(eq(projects.title, STORY));
-  const of = { sweeps, notes, dips };
+  const of = { sweeps, notes, dips, steps };
   const rows = async <Table extends keyof typeof of>(table: Table) =>
     (await db
       .select()
       .from(of[table])
       .where(eq(of[table].projectId, project.id))) as (typeof of)[Table]["$inferSelect"][];
-  return { project, sweeps: await rows("sweeps"), notes: await rows("notes"), dips: await rows("dips") };
+  return {
+    project,
+    sweeps: await rows("sweeps"),
+    notes: await rows("notes"),
+    dips: await rows("dips"),
+    steps: await rows("steps"),
+  };
 }
 
 let first: Awaited<ReturnType<typeof buildDemo>>;
@@ -58,9 +77,58 @@ describe("the demo", () => {
   });
 
   it("ends settled: every dip that was chased has the same verdict", async () => {
-    const chased = (await demo()).dips.filter((dip) => dip.verdictText.includes("braid"));
-    expect(chased.length).toBe(5);
-    expect(chased.every((dip) => dip.verdict === "settled" && dip.verdictBy !== null)).toBe(true);
+    const found = await demo();
+    const standing = await Promise.all(found.dips.map((dip) => findDip(dip.publicId)));
+    const chased = standing.filter((one) => one?.dip.verdictText.includes("outside of the braid"));
+    expect(chased.length).toBeGreaterThanOrEqual(9);
+    expect(chased.every((one) => one?.dip.verdict === "settled" && one.verdictBy === "Ada Marsh")).toBe(true);
+    expect(chased.filter((one) => one?.byTrail).length).toBe(chased.length - 1);
+  });
+
+  it("lets two people settle a cause that was adopted, on evidence", async () => {
+    const { project } = await demo();
+    const events = await db.select().from(verdictEvents).where(eq(verdictEvents.projectId, project.id));
+    const proposed = events.find(({ evidence }) => evidence.some(({ kind }) => kind === "step"));
+    expect(proposed?.text).toMatch(/^May be Braid from hub to stake, half wave/);
+    const settled = events.find((one) => one.dipId === proposed?.dipId && one.verdict === "settled");
+    expect(settled?.evidence.length).toBeGreaterThanOrEqual(4);
+    expect(settled?.by).not.toBe(proposed?.by);
+  });
+
+  it("met where its plan put the chased dip, and plans one more cut", async () => {
+    const { project, sweeps: taken } = await demo();
+    const all = await db.select().from(steps).where(eq(steps.projectId, project.id));
+    expect(all.filter(({ state }) => state === "done").length).toBeGreaterThanOrEqual(7);
+    const far = all.find(({ title }) => title === "Stake moved out to 3.24 m");
+    const sweep = taken.find(({ title }) => title === far?.title);
+    const stops = await findTrailStops(project.id);
+    const came = stops.find(
+      (stop) =>
+        stop.sweepId === sweep?.id &&
+        stop.numbers.frequencyHz / 1e6 < 46 &&
+        stop.numbers.frequencyHz / 1e6 > 43,
+    );
+    const expected = far?.expected.find(({ how }) => how.includes("2.76"));
+    // 52.2 MHz × 2.76 / 3.24
+    expect((expected?.frequencyHz ?? 0) / 1e6).toBeCloseTo(44.5, 0);
+    expect(came?.numbers.frequencyHz).toBeGreaterThan(expected?.lowHz ?? Number.NaN);
+    expect(came?.numbers.frequencyHz).toBeLessThan(expected?.highHz ?? Number.NaN);
+    const planned = all.filter(({ state }) => state === "planned");
+    expect(planned.map(({ expected: places }) => places.length > 0)).toEqual([true]);
+  });
+
+  it("has a bench behind the bridge's sweeps, one at the antenna, and three that repeat one another", async () => {
+    const { sweeps: taken } = await demo();
+    const corrected = await db.select().from(analyses);
+    const planeOf = (id: number | null) =>
+      corrected.find((one) => one.id === id)?.correction?.plane ?? "instrument";
+    const planes = taken.map(({ analysisId }) => planeOf(analysisId));
+    expect(planes.filter((plane) => plane === "port").length).toBe(3);
+    expect(planes.filter((plane) => plane === "antenna").length).toBe(1);
+    expect(taken.filter(({ repeatGroup }) => repeatGroup !== null).length).toBe(3);
+    const bridge = taken.find(({ title }) => title === "With the bridge");
+    const its = (await demo()).dips.filter(({ sweepId, present }) => sweepId === bridge?.id && present);
+    expect(its.every(({ numbers }) => numbers.edge || numbers.minimumSwrHigh !== null)).toBe(true);
   });
 
   it("says nothing that is not there: links lead somewhere, numbers are numbers", async () => {
@@ -68,6 +136,7 @@ describe("the demo", () => {
     const known = new Set([
       ...found.dips.map((dip) => `/projects/${found.project.publicId}/dips/${dip.publicId}`),
       ...found.sweeps.map((sweep) => `/projects/${found.project.publicId}/sweeps/${sweep.publicId}`),
+      ...found.steps.map((step) => `/projects/${found.project.publicId}/steps/${step.publicId}`),
     ]);
     let links = 0;
     for (const { body } of found.notes) {
@@ -103,7 +172,7 @@ describe("the demo", () => {
     const plain = (rows: typeof before.notes) =>
       rows.map((note) => note.body.replace(/\(\/projects[^)]*\)/g, ""));
     expect(plain(again.notes)).toEqual(plain(before.notes));
-    expect((await db.select().from(memberships)).length).toBe(4 + 3 + 3);
+    expect((await db.select().from(memberships)).length).toBe(4 + 4 + 3);
     expect((await db.select().from(users)).length).toBeLessThanOrEqual(5);
     expect(await jobs.findFact("demo")).toBeTruthy();
   }, 120_000);

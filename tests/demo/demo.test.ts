@@ -3,8 +3,9 @@ import { analyse } from "~/measurement/analyse";
 import { DEFAULT_SETTINGS } from "~/measurement/sweep";
 import { read } from "~/readers/read";
 import { quarterWave, reflection } from "../../scripts/demo/antenna.ts";
+import { ZERO_DBM } from "../../scripts/demo/bridge.ts";
 import { randomBy } from "../../scripts/demo/random.ts";
-import { reedBankFiles, ZERO_DBM } from "../../scripts/demo/reed-bank.ts";
+import { reedBankFiles } from "../../scripts/demo/reed-bank.ts";
 
 const files = reedBankFiles();
 type Name = keyof typeof files;

@@ -177,6 +177,7 @@ describe("taking a sweep in", () => {
     [{ reading: '{"text":{"quantity":"volts"}}' }, "reading.text.quantity"],
     [{ reading: '{"colour":1}' }, "reading"],
     [{ bench: "abc" }, "bench"],
+    [{ step: "abc" }, "step"],
     [{ title: "x".repeat(161) }, "title"],
     [{ surprise: "1" }, "body"],
   ])("answers 422 and the field for %j", async (fields, field) => {

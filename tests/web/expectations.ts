@@ -457,5 +457,20 @@ export const EXPECTATIONS: Record<string, Expectation> = {
     GET: apiRead,
     POST: [{ ask: { api: "note.write" }, json: () => ({ body: "From a script." }) }],
   },
+  "routes/api/antenna.ts": { GET: apiRead, POST: notHere },
+  "routes/api/steps.ts": {
+    GET: apiRead,
+    POST: [
+      {
+        ask: { api: "step.edit" },
+        json: () => ({ title: "From a script", state: "done", at: "2026-05-01T10:00:00Z" }),
+      },
+    ],
+  },
+  "routes/api/step.ts": { GET: apiRead, POST: notHere },
+  "routes/api/trails.ts": { GET: apiRead, POST: notHere },
+  "routes/api/trail.ts": { GET: apiRead, POST: notHere },
+  "routes/api/benches.ts": { GET: apiRead, POST: notHere },
+  "routes/api/causes.ts": { GET: apiRead, POST: notHere },
   "routes/api/missing.ts": { GET: [{ ask: { status: 404 } }], POST: [{ ask: { status: 404 } }] },
 };

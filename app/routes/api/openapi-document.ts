@@ -1,7 +1,18 @@
 import { z } from "zod";
 import { MAX_FILE_BYTES } from "~/readers/reading";
+import {
+  CURSOR,
+  componentSchemas,
+  inPath,
+  inQuery,
+  type Operation,
+  operation,
+  problemResponse,
+  reference,
+} from "./openapi-parts.ts";
+import { STORY_PATHS } from "./openapi-story.ts";
 import * as shapes from "./schemas.ts";
-import { givenSchema, uploadFieldsSchema } from "./upload.schema.ts";
+import { uploadFieldsSchema } from "./upload.schema.ts";
 
 /** The OpenAPI 3.1 document, made from the schemas that the endpoints check with. */
 
@@ -32,82 +43,6 @@ export function openApiDocument(origin: string) {
     },
   };
 }
-
-type Name = keyof typeof COMPONENTS;
-
-const COMPONENTS = {
-  Problem: shapes.problemShape,
-  Project: shapes.projectShape,
-  ProjectWithBands: shapes.projectWithBandsShape,
-  ProjectList: shapes.projectListShape,
-  SweepSummary: shapes.sweepSummaryShape,
-  SweepList: shapes.sweepListShape,
-  Sweep: shapes.sweepShape,
-  Dip: shapes.dipShape,
-  Correction: shapes.correctionShape,
-  Bandwidth: shapes.bandwidthShape,
-  Points: shapes.pointsShape,
-  Note: shapes.noteShape,
-  NoteList: shapes.noteListShape,
-  Reading: givenSchema,
-  NewNote: shapes.newNoteSchema,
-} satisfies Record<string, z.ZodType>;
-
-function componentSchemas() {
-  const registry = z.registry<{ id: string }>();
-  for (const [id, schema] of Object.entries(COMPONENTS)) registry.add(schema, { id });
-  const { schemas } = z.toJSONSchema(registry, { uri: (id) => `#/components/schemas/${id}` });
-  return Object.fromEntries(
-    Object.entries(schemas).map(([id, { $schema: _, $id: __, ...schema }]) => [id, schema]),
-  );
-}
-
-const reference = (name: Name) => ({ $ref: `#/components/schemas/${name}` });
-
-function problemResponse() {
-  return {
-    description: "What happened, what is safe, what to do",
-    content: { "application/problem+json": { schema: reference("Problem") } },
-  };
-}
-
-interface Operation {
-  operationId: string;
-  summary: string;
-  parameters?: unknown[];
-  requestBody?: unknown;
-  responses: Record<string, unknown>;
-  security?: unknown[];
-}
-
-/** An operation with its good answer and every refusal it may give. */
-function operation(
-  about: Omit<Operation, "responses"> & { status?: string; answer: Name; refusals?: string[] },
-): Operation {
-  const { status = "200", answer, refusals = [], ...rest } = about;
-  const problem = { $ref: "#/components/responses/Problem" };
-  const refused = ["401", "403", "404", "405", "429", "500", ...refusals].map((code) => [code, problem]);
-  return {
-    ...rest,
-    responses: {
-      [status]: {
-        description: status === "201" ? "Made" : "Found",
-        content: { "application/json": { schema: reference(answer) } },
-      },
-      ...Object.fromEntries(refused),
-    },
-  };
-}
-
-const inPath = (name: string) => ({ name, in: "path", required: true, schema: { type: "string" } });
-
-/** One entry for each member of a query's schema. */
-function inQuery(schema: z.ZodObject) {
-  const { properties = {} } = z.toJSONSchema(schema, { io: "input" });
-  return Object.entries(properties).map(([name, member]) => ({ name, in: "query", schema: member }));
-}
-
-const CURSOR = { name: "cursor", in: "query", schema: { type: "string" } };
 
 function uploadBody() {
   const { properties } = z.toJSONSchema(uploadFieldsSchema, { io: "input" });
@@ -207,4 +142,5 @@ const PATHS: Record<string, { get?: Operation; post?: Operation }> = {
       refusals: ["400", "409", "411", "413", "415", "422"],
     }),
   },
+  ...STORY_PATHS,
 };

@@ -92,7 +92,7 @@ export const dipShape = z.object({
   verdict,
   verdictText: z.string(),
   noteCount: z.number().int(),
-  links: z.object({ notes: z.string(), page: z.string() }),
+  links: z.object({ notes: z.string(), causes: z.string(), page: z.string() }),
 });
 
 const sweepFacts = z.object({

@@ -186,6 +186,7 @@ function shapeDip({ dip, noteCount }: dips.ListedDip, project: string): z.output
     noteCount,
     links: {
       notes: `/api/v1/dips/${dip.publicId}/notes`,
+      causes: `/api/v1/dips/${dip.publicId}/causes`,
       page: `/projects/${project}/dips/${dip.publicId}`,
     },
   };

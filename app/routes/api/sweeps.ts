@@ -1,4 +1,5 @@
 import * as dips from "~/db/dips.server";
+import * as steps from "~/db/steps.server";
 import * as sweeps from "~/db/sweeps.server";
 import type { ReadProblem } from "~/readers/reading";
 import { usableBenchId } from "~/services/bench-sweeps.server";
@@ -41,11 +42,12 @@ async function takeOne(call: Call): Promise<Response> {
   }
   const parsed = uploadFieldsSchema.safeParse(fields);
   if (!parsed.success) throw invalid(parsed.error);
-  const { title, takenAt, reading, bench } = parsed.data;
+  const { title, takenAt, reading, bench, step } = parsed.data;
   const benchId = bench ? await usableBenchId(bench, project.id) : null;
   if (benchId === undefined) {
     throw invalid([{ field: "bench", message: "There is no such bench that can be used in this project." }]);
   }
+  const after = step ? await requireDoneStep(step, project.id) : null;
   const taken = await takeIn({
     project,
     by: call.user,
@@ -55,6 +57,7 @@ async function takeOne(call: Call): Promise<Response> {
     given: reading,
     benchId,
     keepUnread: false,
+    also: after ? (sweep, tx) => steps.update(after.id, { afterSweepId: sweep.id }, tx) : undefined,
   });
   switch (taken.kind) {
     case "refused":
@@ -70,6 +73,16 @@ async function takeOne(call: Call): Promise<Response> {
     default:
       return taken satisfies never;
   }
+}
+
+/** The step that the sweep comes after; a problem where there is none such. */
+async function requireDoneStep(publicId: string, projectId: number): Promise<steps.StepRow> {
+  const found = await steps.findByPublicId(publicId);
+  if (found?.step.projectId !== projectId) {
+    throw invalid([{ field: "step", message: "There is no such step in this project." }]);
+  }
+  if (found.step.state === "done") return found.step;
+  throw invalid([{ field: "step", message: "This step is only planned: mark it as done first." }]);
 }
 
 async function created(sweepPublicId: string, projectPublicId: string): Promise<Response> {

@@ -71,7 +71,11 @@ export const uploadFieldsSchema = z.strictObject({
     .max(16, "The public id of a bench.")
     .optional()
     .describe("Public id of the bench it was taken with: its dips are then found at that bench's port"),
-  step: z.string().max(0, "This project has no step of that name yet. Leave it out.").optional(),
+  step: z
+    .string()
+    .max(16, "The public id of a step.")
+    .optional()
+    .describe("Public id of a step that was done: this sweep then stands after it, whatever the dates say"),
   reading: z
     .string()
     .transform((json, context) => {

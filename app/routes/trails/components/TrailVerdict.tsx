@@ -23,6 +23,11 @@ export function TrailVerdict({ data, errors }: { data: TrailPageData; errors: st
       ) : (
         <p className="soft">No explanation of this trail has been proposed yet.</p>
       )}
+      {trail.verdict !== "open" && (
+        <p className="text-small soft">
+          It stands for every dip on this trail, later ones too, except where one has a later word of its own.
+        </p>
+      )}
       {mayChange && (
         <div className="no-print">
           <Unfold

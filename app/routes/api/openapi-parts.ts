@@ -1,0 +1,91 @@
+import { z } from "zod";
+import * as shapes from "./schemas.ts";
+import * as story from "./story-schemas.ts";
+import { givenSchema } from "./upload.schema.ts";
+
+/** The named schemas of the OpenAPI document, and what its paths are made of. */
+
+export type Name = keyof typeof COMPONENTS;
+
+const COMPONENTS = {
+  Problem: shapes.problemShape,
+  Project: shapes.projectShape,
+  ProjectWithBands: shapes.projectWithBandsShape,
+  ProjectList: shapes.projectListShape,
+  SweepSummary: shapes.sweepSummaryShape,
+  SweepList: shapes.sweepListShape,
+  Sweep: shapes.sweepShape,
+  Dip: shapes.dipShape,
+  Correction: shapes.correctionShape,
+  Bandwidth: shapes.bandwidthShape,
+  Points: shapes.pointsShape,
+  Note: shapes.noteShape,
+  NoteList: shapes.noteListShape,
+  Reading: givenSchema,
+  NewNote: shapes.newNoteSchema,
+  Antenna: story.antennaShape,
+  Step: story.stepShape,
+  StepList: story.stepListShape,
+  NewStep: story.newStepSchema,
+  Trail: story.trailShape,
+  TrailList: story.trailListShape,
+  Bench: story.benchShape,
+  BenchList: story.benchListShape,
+  Causes: story.causesShape,
+} satisfies Record<string, z.ZodType>;
+
+export function componentSchemas() {
+  const registry = z.registry<{ id: string }>();
+  for (const [id, schema] of Object.entries(COMPONENTS)) registry.add(schema, { id });
+  const { schemas } = z.toJSONSchema(registry, { uri: (id) => `#/components/schemas/${id}` });
+  return Object.fromEntries(
+    Object.entries(schemas).map(([id, { $schema: _, $id: __, ...schema }]) => [id, schema]),
+  );
+}
+
+export const reference = (name: Name) => ({ $ref: `#/components/schemas/${name}` });
+
+export function problemResponse() {
+  return {
+    description: "What happened, what is safe, what to do",
+    content: { "application/problem+json": { schema: reference("Problem") } },
+  };
+}
+
+export interface Operation {
+  operationId: string;
+  summary: string;
+  parameters?: unknown[];
+  requestBody?: unknown;
+  responses: Record<string, unknown>;
+  security?: unknown[];
+}
+
+/** An operation with its good answer and every refusal it may give. */
+export function operation(
+  about: Omit<Operation, "responses"> & { status?: string; answer: Name; refusals?: string[] },
+): Operation {
+  const { status = "200", answer, refusals = [], ...rest } = about;
+  const problem = { $ref: "#/components/responses/Problem" };
+  const refused = ["401", "403", "404", "405", "429", "500", ...refusals].map((code) => [code, problem]);
+  return {
+    ...rest,
+    responses: {
+      [status]: {
+        description: status === "201" ? "Made" : "Found",
+        content: { "application/json": { schema: reference(answer) } },
+      },
+      ...Object.fromEntries(refused),
+    },
+  };
+}
+
+export const inPath = (name: string) => ({ name, in: "path", required: true, schema: { type: "string" } });
+
+/** One entry for each member of a query's schema. */
+export function inQuery(schema: z.ZodObject) {
+  const { properties = {} } = z.toJSONSchema(schema, { io: "input" });
+  return Object.entries(properties).map(([name, member]) => ({ name, in: "query", schema: member }));
+}
+
+export const CURSOR = { name: "cursor", in: "query", schema: { type: "string" } };

@@ -1,0 +1,24 @@
+import type { Who } from "./story.ts";
+import type { Told } from "./told.ts";
+
+/** User id and user name of everybody in the story. */
+export type Cast = Record<Who, { id: number; userName: string }>;
+
+/** Where a story happens, and what has its place in it by now. */
+export interface Stage {
+  cast: Cast;
+  project: { id: number; publicId: string };
+  told: Told;
+  /** By the story's own keys: row ids of sweeps, public ids of notes and steps. */
+  sweepIds: Map<string, number>;
+  noteIds: Map<string, string>;
+  stepIds: Map<string, string>;
+  /** Row ids of benches: one for all stories, as a bench is used in several projects. */
+  benchIds: Map<string, number>;
+}
+
+export function idOf<Id>(ids: ReadonlyMap<string, Id>, key: string, what: string): Id {
+  const id = ids.get(key);
+  if (id === undefined) throw new Error(`The demo has no ${what} "${key}" yet.`);
+  return id;
+}
