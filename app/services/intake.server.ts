@@ -8,6 +8,7 @@ import { type Given, MAX_FILE_BYTES, type Reading, type ReadProblem } from "~/re
 import { placeInPicture } from "~/readers/screenshot/in-picture";
 import { storeAnalysis } from "./analyses.server.ts";
 import type { CorrectionTask } from "./correction.server.ts";
+import { record } from "./events.server.ts";
 import { cleanFileName, plainText, titleFromFileName } from "./file-names.ts";
 import { doubted, isBeyondReading, rememberedFor } from "./picture-doubt.ts";
 import type { ReadOutcome } from "./read-and-analyse.server.ts";
@@ -23,6 +24,8 @@ export interface TakeIn {
   file: { name: string; bytes: Uint8Array };
   title?: string;
   takenAt?: Date | null;
+  /** When it came in, where that is not now. */
+  addedAt?: Date;
   given?: Given;
   /** "reference" for a bench's open, short, load or through; else it is a sweep of the antenna. */
   purpose?: sweeps.SweepRow["purpose"];
@@ -116,6 +119,12 @@ export async function takeIn(input: TakeIn): Promise<Taken> {
       );
       await input.also?.(sweep, tx);
       await jobs.deleteById(undo, tx);
+      // What is done with a bench's references is told of the bench.
+      if (input.purpose !== "reference") {
+        const about = { sweep: sweep.publicId, title };
+        const at = input.addedAt;
+        await record({ projectId: project.id, kind: "sweep.added", actorId: input.by.id, about, at }, tx);
+      }
       await projects.update(project.id, {}, tx);
       return outcome.ok
         ? {

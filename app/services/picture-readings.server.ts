@@ -1,4 +1,5 @@
 import { inTransaction } from "~/db/client.server";
+import * as projects from "~/db/projects.server";
 import * as sweeps from "~/db/sweeps.server";
 import type { AnalysisSettings } from "~/measurement/sweep";
 import type { AxisSource, Given, PictureNotes, ReadProblem, ScreenshotSpec } from "~/readers/reading";
@@ -7,6 +8,7 @@ import { readFile } from "./reading.server.ts";
 import { type TriedReading, tryReading } from "./reading-preview.server.ts";
 import { getObject } from "./storage.server.ts";
 import { meansOf, planeToKeep, taskOf } from "./sweep-corrections.server.ts";
+import { tellOfSweep } from "./sweep-edits.server.ts";
 
 /** All choices of a picture's reading as a person sees them; what is left out is not known. */
 export interface PictureChoices {
@@ -57,8 +59,10 @@ export async function keepPicture(
   const { reading } = outcome;
   if (reading.picture) reading.picture.sources = sourcesOf(given, reading.picture, before?.picture);
   await inTransaction(async (tx) => {
+    await projects.lock(sweep.projectId, tx);
     if (!(await sweeps.lock(sweep.id, tx))) return;
     await storeOutcome({ projectId: sweep.projectId, sweepId: sweep.id, given, outcome, means, by }, tx);
+    await tellOfSweep("sweep.read-anew", sweep, by, tx);
   });
   return null;
 }

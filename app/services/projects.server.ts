@@ -5,6 +5,7 @@ import * as people from "~/db/people.server";
 import * as photographs from "~/db/photographs.server";
 import * as projects from "~/db/projects.server";
 import * as sweeps from "~/db/sweeps.server";
+import { record } from "./events.server.ts";
 import { type Merged, mergeEdit } from "./merge-edit.ts";
 
 /** Makes a project with its first owner. */
@@ -38,23 +39,34 @@ export function changeAbout(
   id: number,
   was: Partial<AboutValues>,
   wanted: AboutValues,
+  by: number | null = null,
 ): Promise<Merged<AboutValues> & { now: AboutValues }> {
   return inTransaction(async (tx) => {
     const project = await projects.lock(id, tx);
     const { title, summary, visibility, ituRegion } = project ?? wanted;
     const now = { title, summary, visibility, ituRegion };
     const merged = mergeEdit(was, now, wanted);
-    if (merged.conflicts.length === 0) await projects.update(id, merged.changes, tx);
+    if (merged.conflicts.length === 0 && Object.keys(merged.changes).length > 0) {
+      await projects.update(id, merged.changes, tx);
+      const about = { title: wanted.title };
+      await record({ projectId: id, kind: "project.changed", actorId: by, about }, tx);
+    }
     return { ...merged, now };
   });
 }
 
 export type BandValues = Parameters<typeof projects.replaceDesignBands>[1][number];
 
-export async function changeBands(projectId: number, bands: BandValues[]): Promise<void> {
+export async function changeBands(
+  projectId: number,
+  bands: BandValues[],
+  by: number | null = null,
+): Promise<void> {
   await inTransaction(async (tx) => {
+    await projects.lock(projectId, tx);
     await projects.replaceDesignBands(projectId, bands, tx);
-    await projects.update(projectId, {}, tx);
+    const about = { title: "The design bands" };
+    await record({ projectId, kind: "project.changed", actorId: by, about }, tx);
   });
 }
 
@@ -65,11 +77,16 @@ export async function addMember(
   projectId: number,
   userName: string,
   role: ProjectRole,
+  by: number | null = null,
 ): Promise<AddedMember> {
   const user = await people.findByUserName(userName);
   if (!user || user.suspendedAt) return "unknown";
   try {
-    await projects.insertMember(projectId, user.id, role);
+    await inTransaction(async (tx) => {
+      await projects.lock(projectId, tx);
+      await projects.insertMember(projectId, user.id, role, tx);
+      await record({ projectId, kind: "member.joined", actorId: by, about: { title: user.name } }, tx);
+    });
     return "added";
   } catch (error) {
     if (isDuplicate(error)) return "already";
@@ -80,32 +97,44 @@ export async function addMember(
 export type MemberChange = "done" | "last-owner" | "not-a-member";
 
 /** Gives a member another role; the last owner stays one. */
-export function changeRole(projectId: number, userName: string, role: ProjectRole): Promise<MemberChange> {
-  return changeMember(projectId, userName, role !== "owner", (userId, tx) =>
-    projects.updateMember(projectId, userId, role, tx),
-  );
+export function changeRole(
+  projectId: number,
+  userName: string,
+  role: ProjectRole,
+  by: number | null = null,
+): Promise<MemberChange> {
+  return changeMember(projectId, userName, role !== "owner", async (user, tx) => {
+    await projects.updateMember(projectId, user.id, role, tx);
+    await record({ projectId, kind: "member.changed", actorId: by, about: { title: user.name } }, tx);
+  });
 }
 
 /** Removes a member, or lets one leave; the last owner can't go. */
-export function removeMember(projectId: number, userName: string): Promise<MemberChange> {
-  return changeMember(projectId, userName, true, (userId, tx) =>
-    projects.deleteMember(projectId, userId, tx),
-  );
+export function removeMember(
+  projectId: number,
+  userName: string,
+  by: number | null = null,
+): Promise<MemberChange> {
+  return changeMember(projectId, userName, true, async (user, tx) => {
+    await projects.deleteMember(projectId, user.id, tx);
+    await record({ projectId, kind: "member.left", actorId: by, about: { title: user.name } }, tx);
+  });
 }
 
 function changeMember(
   projectId: number,
   userName: string,
   takesOwnership: boolean,
-  change: (userId: number, tx: Transaction) => Promise<void>,
+  change: (user: people.User, tx: Transaction) => Promise<void>,
 ): Promise<MemberChange> {
   return inTransaction(async (tx) => {
+    await projects.lock(projectId, tx);
     const owners = await projects.lockOwners(projectId, tx);
     const user = await people.findByUserName(userName, tx);
     const role = user && (await projects.lockMember(projectId, user.id, tx));
     if (!user || !role) return "not-a-member";
     if (takesOwnership && role === "owner" && owners.length === 1) return "last-owner";
-    await change(user.id, tx);
+    await change(user, tx);
     return "done";
   });
 }

@@ -1,4 +1,4 @@
-import { inTransaction } from "~/db/client.server";
+import { inTransaction, type Transaction } from "~/db/client.server";
 import * as dips from "~/db/dips.server";
 import * as jobs from "~/db/jobs.server";
 import * as projects from "~/db/projects.server";
@@ -9,6 +9,7 @@ import { type AnalysisSettings, DEFAULT_SETTINGS, type Plane } from "~/measureme
 import type { Given, ReadProblem } from "~/readers/reading";
 import { storeAnalysis } from "./analyses.server.ts";
 import { correctAsRead } from "./correction.server.ts";
+import { record } from "./events.server.ts";
 import { storeOutcome } from "./intake.server.ts";
 import { mergeEdit } from "./merge-edit.ts";
 import { previewOf } from "./points.server.ts";
@@ -38,11 +39,13 @@ export function titleAndDateOf(sweep: { title: string; takenAt: Date | null }): 
 
 /** Keeps what a person changed of title and date; answers what somebody else changed meanwhile, with nothing kept. */
 export function keepTitleAndDate(
-  id: number,
+  { id, projectId }: Pick<sweeps.SweepRow, "id" | "projectId">,
   was: Partial<TitleAndDate>,
   wanted: { title: string; takenAt: Date | null },
+  by: number,
 ): Promise<TitleAndDate | null> {
   return inTransaction(async (tx) => {
+    await projects.lock(projectId, tx);
     const sweep = await sweeps.lock(id, tx);
     if (!sweep) return null;
     const now = titleAndDateOf(sweep);
@@ -55,10 +58,8 @@ export function keepTitleAndDate(
       { ...(title !== undefined && { title }), ...(takenAt !== undefined && { takenAt: wanted.takenAt }) },
       tx,
     );
-    if (takenAt !== undefined) {
-      await projects.lock(sweep.projectId, tx);
-      await refreshTrails(sweep.projectId, tx);
-    }
+    if (takenAt !== undefined) await refreshTrails(projectId, tx);
+    await tellOfSweep("sweep.edited", { ...sweep, title: title ?? sweep.title }, by, tx);
     return null;
   });
 }
@@ -94,7 +95,10 @@ export async function keepSettings(
     const now = await sweeps.lock(sweep.id, tx);
     // Read anew in the meantime: the newer reading has its own analysis.
     if (now?.readingId !== readingId) {
-      if (now && Object.keys(changes).length > 0) await sweeps.update(sweep.id, changes, tx);
+      if (now && Object.keys(changes).length > 0) {
+        await sweeps.update(sweep.id, changes, tx);
+        await tellOfSweep("sweep.edited", now, by, tx);
+      }
       return;
     }
     const warnings = [...(kept ?? []).filter((w) => w.code.startsWith("read-")), ...analysis.warnings];
@@ -111,6 +115,7 @@ export async function keepSettings(
     );
     await sweeps.update(sweep.id, { ...changes, analysisId, preview: previewOf(done.sweep) }, tx);
     await refreshTrails(sweep.projectId, tx);
+    await tellOfSweep("sweep.analysed", now, by, tx);
   });
 }
 
@@ -129,7 +134,7 @@ export async function chooseBench(
   by: number,
 ): Promise<void> {
   const { analysis } = found;
-  if (!analysis) return sweeps.update(found.sweep.id, { benchId });
+  if (!analysis) return changeOnly(found.sweep, { benchId }, by);
   const atAntenna = analysis.correction?.plane === "antenna";
   const plane = atAntenna ? "antenna" : benchId === null ? "instrument" : "port";
   await keepSettings(found, analysis.settings, by, plane, { benchId });
@@ -143,12 +148,36 @@ export async function chooseFeedline(
 ): Promise<boolean> {
   const { analysis, sweep } = found;
   if (analysis?.correction?.plane !== "antenna") {
-    await sweeps.update(sweep.id, { feedline });
+    await changeOnly(sweep, { feedline }, by);
     return false;
   }
   const without = sweep.benchId === null ? "instrument" : "port";
   await keepSettings(found, analysis.settings, by, feedline ? "antenna" : without, { feedline });
   return true;
+}
+
+/** Of the sweep's own row, where no dips are to be found anew. */
+function changeOnly(
+  sweep: sweeps.SweepRow,
+  changes: Pick<Partial<sweeps.SweepRow>, "benchId" | "feedline">,
+  by: number,
+): Promise<void> {
+  return inTransaction(async (tx) => {
+    await projects.lock(sweep.projectId, tx);
+    await sweeps.update(sweep.id, changes, tx);
+    await tellOfSweep("sweep.edited", sweep, by, tx);
+  });
+}
+
+/** Writes down what happened to a sweep of the antenna, under `projects.lock`; what is done with references is told of their bench. */
+export async function tellOfSweep(
+  kind: "sweep.edited" | "sweep.read-anew" | "sweep.analysed" | "sweep.deleted",
+  { projectId, publicId, title, purpose }: sweeps.SweepRow,
+  by: number,
+  tx: Transaction,
+): Promise<void> {
+  if (purpose === "reference") return;
+  await record({ projectId, kind, actorId: by, about: { sweep: publicId, title } }, tx);
 }
 
 /**
@@ -170,6 +199,7 @@ export async function keepAnswer(
     if (!now?.problem) return;
     const { id: sweepId, projectId } = found.sweep;
     await storeOutcome({ projectId, sweepId, given, outcome, means, by }, tx);
+    await tellOfSweep("sweep.read-anew", now, by, tx);
   });
   return outcome.ok ? null : outcome.problem;
 }
@@ -188,6 +218,7 @@ export async function readAnew(
     if (!(await sweeps.lock(found.sweep.id, tx))) return;
     const { id: sweepId, projectId } = found.sweep;
     await storeOutcome({ projectId, sweepId, given, outcome, means, by }, tx);
+    await tellOfSweep("sweep.read-anew", found.sweep, by, tx);
   });
   return null;
 }
@@ -201,7 +232,7 @@ async function readStored(found: sweeps.FoundSweep, given: Given, settings: Anal
 }
 
 /** Deletes a sweep with its dips, notes and original; the object goes once the rows are gone. */
-export async function deleteSweep(found: sweeps.FoundSweep): Promise<void> {
+export async function deleteSweep(found: sweeps.FoundSweep, by: number): Promise<void> {
   const { id, projectId } = found.sweep;
   await inTransaction(async (tx) => {
     await projects.lock(projectId, tx);
@@ -213,5 +244,6 @@ export async function deleteSweep(found: sweeps.FoundSweep): Promise<void> {
     );
     await sweeps.deleteByFileId(found.file.id, tx);
     await refreshTrails(projectId, tx);
+    await tellOfSweep("sweep.deleted", found.sweep, by, tx);
   });
 }

@@ -209,7 +209,7 @@ describe("analyses", () => {
 describe("deleting", () => {
   it("a sweep takes its dips, notes and original with it", async () => {
     const found = await takenSweep(sweepFile(7.1));
-    await deleteSweep(found);
+    await deleteSweep(found, by.id);
     expect(await sweeps.findByPublicId(found.sweep.publicId)).toBeUndefined();
     expect(await dips.findAllBySweep(found.sweep.id)).toEqual([]);
     await runDueJobs();

@@ -107,7 +107,7 @@ describe("what a step did", () => {
     expect([chosen.before?.title, chosen.after?.title]).toEqual(["first", "second"]);
     expect([chosen.around.beforeSaid, chosen.around.afterSaid]).toEqual([true, true]);
 
-    await deleteSweep(first);
+    await deleteSweep(first, by);
     const left = (await steps.findByPublicId(step.publicId))?.step as steps.StepRow;
     const again = await effectOf(left);
     expect(again.around.beforeSaid).toBe(false);

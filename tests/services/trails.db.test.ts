@@ -98,7 +98,7 @@ describe("trails as sweeps come, go and change their day", () => {
     const middle = await swept(9, 22);
     expect(await ways()).toEqual(["24.0 22.0", "20.0"].map((w) => w.split(" ").sort().join(" ")).sort());
     const { sweep } = await find(middle);
-    await keepTitleAndDate(sweep.id, {}, { title: sweep.title, takenAt: new Date(Date.UTC(2026, 5, 2)) });
+    await keepTitleAndDate(sweep, {}, { title: sweep.title, takenAt: new Date(Date.UTC(2026, 5, 2)) }, by.id);
     expect(await ways()).toEqual(["20.0 22.0 24.0"]);
   });
 
@@ -107,7 +107,7 @@ describe("trails as sweeps come, go and change their day", () => {
     const only = await swept(2, 20, 40);
     const named = await trailAt(only, 40);
     await nameTrail({ trail: named, by, name: "braid " });
-    await deleteSweep(await find(only));
+    await deleteSweep(await find(only), by.id);
     expect(await ways()).toEqual(["20.0", "braid "]);
   });
 
@@ -145,7 +145,7 @@ describe("corrections by hand", () => {
       trailId: (await trailAt(one, 20)).id,
     });
     expect((await ways()).sort()).toEqual(["20.0 20.2 21.9", "20.1 21.8 22.0"]);
-    await deleteSweep(await find(two));
+    await deleteSweep(await find(two), by.id);
     expect((await ways()).sort()).toEqual(["20.0 20.2", "21.8 22.0"]);
     await swept(4, 20.3, 21.7);
     expect((await ways()).sort()).toEqual(["20.0 20.2 20.3", "21.7 21.8 22.0"]);
@@ -165,7 +165,7 @@ describe("corrections by hand", () => {
     await join(two, 28);
     await join(three, 40);
     expect(await ways()).toEqual(["20.0 28.0 40.0"]);
-    await deleteSweep(await find(two));
+    await deleteSweep(await find(two), by.id);
     expect(await ways()).toEqual(["20.0 40.0"]);
   });
 

@@ -61,7 +61,7 @@ export async function action(args: Route.ActionArgs) {
     case "bands": {
       const submission = parseWithZod(form, { schema: bandsSchema });
       if (submission.status !== "success") return data({ bands: submission.reply() }, { status: 400 });
-      await changeBands(project.id, submission.value.bands.map(bandInHertz));
+      await changeBands(project.id, submission.value.bands.map(bandInHertz), person?.id);
       return redirectWithMessage(here, "The design bands were changed.");
     }
     case "another":

@@ -41,23 +41,23 @@ export async function action(args: Route.ActionArgs) {
   const here = `/projects/${project.publicId}/members`;
   switch (value.intent) {
     case "add": {
-      const done = await addMember(project.id, value.userName, value.role);
+      const done = await addMember(project.id, value.userName, value.role, person?.id);
       if (done === "added") return redirectWithMessage(here, `${value.userName} was added as ${value.role}.`);
       if (done === "already") return redirectWithMessage(here, `${value.userName} is a member already.`);
       const fieldErrors = { userName: [`Nobody here is called ${value.userName}. Nobody was added.`] };
       return data({ lastResult: submission.reply({ fieldErrors }), problem: null }, { status: 400 });
     }
     case "change": {
-      const done = await changeRole(project.id, value.userName, value.role);
+      const done = await changeRole(project.id, value.userName, value.role, person?.id);
       return answer(done, here, `${value.userName} is ${value.role} now.`);
     }
     case "remove": {
-      const done = await removeMember(project.id, value.userName);
+      const done = await removeMember(project.id, value.userName, person?.id);
       return answer(done, here, `${value.userName} is not a member any more. Notes and sweeps stay.`);
     }
     case "leave": {
       if (!person || !membership) throw refused("You are not a member of this project. Nothing was changed.");
-      const done = await removeMember(project.id, person.userName);
+      const done = await removeMember(project.id, person.userName, person.id);
       return answer(
         done,
         done === "done" ? "/projects" : here,

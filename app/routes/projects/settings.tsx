@@ -27,7 +27,7 @@ export async function loader(args: Route.LoaderArgs) {
 }
 
 export async function action(args: Route.ActionArgs) {
-  const { project, may } = await requireProject(args, "project.edit");
+  const { project, may, person } = await requireProject(args, "project.edit");
   const submission = parseWithZod(await args.request.formData(), { schema: projectSettingsSchema });
   if (submission.status !== "success") return data({ lastResult: submission.reply() }, { status: 400 });
   const value = submission.value;
@@ -35,13 +35,13 @@ export async function action(args: Route.ActionArgs) {
   switch (value.intent) {
     case "about": {
       const { intent: _, was, ...about } = value;
-      const { conflicts, now } = await changeAbout(project.id, parseWas(was), about);
+      const { conflicts, now } = await changeAbout(project.id, parseWas(was), about, person?.id);
       if (conflicts.length === 0) return redirectWithMessage(here, "The project was changed.");
       const fieldErrors = Object.fromEntries(conflicts.map((name) => [name, [changedMeanwhile(now[name])]]));
       return data({ lastResult: submission.reply({ fieldErrors }), now }, { status: 409 });
     }
     case "bands":
-      await changeBands(project.id, value.bands.map(bandInHertz));
+      await changeBands(project.id, value.bands.map(bandInHertz), person?.id);
       return redirectWithMessage(here, "The design bands were changed.");
     case "delete": {
       if (!may("project.delete")) throw refused("Only owners delete a project. Nothing was changed.");

@@ -35,12 +35,12 @@ export async function action(args: Route.ActionArgs) {
   switch (form.get("intent")) {
     case "group": {
       const others = form.getAll("sweep").map(String);
-      if (!(await groupRepeats(project.id, [sweep.publicId, ...others])))
+      if (!(await groupRepeats(project.id, [sweep.publicId, ...others], access.person?.id)))
         return formErrors(["Choose at least one other sweep of the same thing. Nothing was changed."]);
       return redirectWithMessage(here, "These sweeps are repeats of one another now.");
     }
     case "leave":
-      await leaveRepeats(sweep);
+      await leaveRepeats(sweep, access.person?.id);
       return redirectWithMessage(here, `“${sweep.title}” stands on its own again.`);
     default:
       return formErrors(["The form asked for something this page does not do. Nothing was changed."]);

@@ -96,7 +96,12 @@ export async function action(args: Route.ActionArgs) {
       });
       if (!parsed.success) return formErrors(parsed.error.issues.map((issue) => issue.message));
       const { title, takenAt = null } = parsed.data;
-      const theirs = await keepTitleAndDate(found.sweep.id, parseWas(form.get("was")), { title, takenAt });
+      const theirs = await keepTitleAndDate(
+        found.sweep,
+        parseWas(form.get("was")),
+        { title, takenAt },
+        access.person.id,
+      );
       if (theirs) return formErrors([changedMeanwhile(theirs)], 409);
       return redirectWithMessage(here, "Title and date kept.");
     }
@@ -118,7 +123,7 @@ export async function action(args: Route.ActionArgs) {
     case "anew":
       return changeCorrection(intent, form, found, access.project.id, access.person.id, here);
     case "delete": {
-      await deleteSweep(found);
+      await deleteSweep(found, access.person.id);
       return redirectWithMessage(
         `/projects/${access.project.publicId}/sweeps`,
         `“${found.sweep.title}” was deleted with its original.`,
