@@ -453,6 +453,8 @@ export const EXPECTATIONS: Record<string, Expectation> = {
   },
   "routes/api/sweep.ts": { GET: apiRead, POST: notHere },
   "routes/api/points.ts": { GET: apiRead, POST: notHere },
+  "routes/api/bands.ts": { GET: apiRead, POST: notHere },
+  "routes/api/compare.ts": { GET: apiRead, POST: notHere },
   "routes/api/notes.ts": {
     GET: apiRead,
     POST: [{ ask: { api: "note.write" }, json: () => ({ body: "From a script." }) }],

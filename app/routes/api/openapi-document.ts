@@ -1,5 +1,6 @@
 import { z } from "zod";
 import { MAX_FILE_BYTES } from "~/readers/reading";
+import { COMPARE_PATHS } from "./openapi-compare.ts";
 import {
   CURSOR,
   componentSchemas,
@@ -143,4 +144,5 @@ const PATHS: Record<string, { get?: Operation; post?: Operation }> = {
     }),
   },
   ...STORY_PATHS,
+  ...COMPARE_PATHS,
 };

@@ -1,4 +1,5 @@
 import { z } from "zod";
+import * as compare from "./compare-schemas.ts";
 import * as shapes from "./schemas.ts";
 import * as story from "./story-schemas.ts";
 import { givenSchema } from "./upload.schema.ts";
@@ -32,6 +33,8 @@ const COMPONENTS = {
   Bench: story.benchShape,
   BenchList: story.benchListShape,
   Causes: story.causesShape,
+  Bands: compare.bandsShape,
+  Comparison: compare.comparisonShape,
 } satisfies Record<string, z.ZodType>;
 
 export function componentSchemas() {

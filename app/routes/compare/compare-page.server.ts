@@ -18,7 +18,7 @@ import {
 import { pickPoints } from "~/services/points.server";
 import { type CompareView, MOST_COMPARED } from "./compare.schema";
 import { shapeRow } from "./compare-rows";
-import { differencesInKind } from "./compare-words";
+import { differencesInKind, LETTERS } from "./compare-words";
 
 /** All that the comparison shows. */
 export async function loadCompare({ project, person }: ProjectAccess, view: CompareView) {
@@ -58,7 +58,7 @@ export async function loadCompare({ project, person }: ProjectAccess, view: Comp
       scale,
       limit,
       region,
-      remarks: differencesInKind(compared, sweeps),
+      remarks: differencesInKind(compared),
       overlay: overlayOf(compared, sweeps, rows, {
         view: { quantity: view.quantity, scale, ...range },
         bands: bandsOverlapping(region as ItuRegion | null, range.fromHz, range.toHz),
@@ -177,7 +177,6 @@ function usualScale({ fromHz, toHz }: { fromHz: number; toHz: number }): Frequen
   return fromHz > 0 && toHz / fromHz > LOG_FROM_RATIO ? "log" : "linear";
 }
 
-const LETTERS = "ABCDEFGHIJKL";
 const CHART_POINTS = 1600;
 /** More lines than these get a taller plot. */
 const FEW = 4;

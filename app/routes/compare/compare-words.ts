@@ -1,16 +1,19 @@
+import { planeWords } from "~/routes/sweeps/correction-words";
 import type { ComparedSweep } from "~/services/compare.server";
 
+type Kind = Pick<ComparedSweep, "sweep" | "reading" | "analysis">;
+
+/** The names of the sweeps, in their order. */
+export const LETTERS = "ABCDEFGHIJKL";
+
 /** What the sweeps do not have in common, a sentence each: whoever reads a difference must know what else is in it. */
-export function differencesInKind(
-  compared: readonly ComparedSweep[],
-  sweeps: readonly { letter: string; plane: string }[],
-): string[] {
+export function differencesInKind(compared: readonly Kind[]): string[] {
   if (compared.length < 2) return [];
-  const say = (start: string, pick: (one: ComparedSweep, i: number) => string, end: string) => {
+  const say = (start: string, pick: (one: Kind) => string, end: string) => {
     const groups = new Map<string, string[]>();
     for (const [i, one] of compared.entries()) {
-      const value = pick(one, i);
-      groups.set(value, [...(groups.get(value) ?? []), sweeps[i].letter]);
+      const value = pick(one);
+      groups.set(value, [...(groups.get(value) ?? []), LETTERS[i]]);
     }
     if (groups.size < 2) return [];
     const words = [...groups].map(([value, letters]) => `${listed(letters)} ${value}`);
@@ -19,7 +22,7 @@ export function differencesInKind(
   return [
     ...say(
       "Not at one plane",
-      (_, i) => sweeps[i].plane,
+      ({ analysis }) => planeWords(analysis?.correction ?? null),
       "What lies between the planes is in every difference.",
     ),
     ...say(
