@@ -26,6 +26,7 @@ export function Header({ person, theme }: HeaderProps) {
         </Link>
         <nav aria-label="Main" className="shell-nav">
           <NavLink to="/projects">Projects</NavLink>
+          <NavLink to="/search">Search</NavLink>
         </nav>
         <div className="shell-person">
           {person ? <PersonMenu person={person} theme={theme} /> : <VisitorBar theme={theme} />}
