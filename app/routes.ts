@@ -60,6 +60,7 @@ export default [
     route("dips/:dip/verdict", "routes/dips/verdict.ts"),
   ]),
   route("notes/preview", "routes/notes/preview.ts"),
+  route("search", "routes/search/search.tsx"),
 
   route("admin", "routes/admin/admin.tsx"),
   route("admin/mail", "routes/admin/mail.tsx"),

@@ -421,6 +421,8 @@ export const EXPECTATIONS: Record<string, Expectation> = {
     POST: [{ ask: { site: "account.own" }, form: () => ({ body: "*so*" }) }],
   },
 
+  "routes/search/search.tsx": { GET: anybody },
+
   "routes/admin/admin.tsx": {
     GET: [{ ask: { site: "site.administer" } }],
     POST: (["suspend", "restore", "promote", "demote"] as const).map((intent) => ({
