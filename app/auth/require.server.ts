@@ -24,6 +24,8 @@ export interface ProjectAccess {
   /** Own membership, not what visibility lends. */
   membership: ProjectRole | null;
   person: Person | null;
+  /** Row id of the project's last event when the page was asked for, 0 for none. */
+  lastEventId: number;
   may: (action: ProjectAction) => boolean;
 }
 
@@ -93,6 +95,7 @@ async function loadProjectAccess(
     role,
     membership: found.role,
     person,
+    lastEventId: found.lastEventId,
     may: (action) => mayInProject(role, action),
   };
 }

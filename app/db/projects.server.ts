@@ -3,7 +3,7 @@ import type { ProjectRole, Visibility } from "~/auth/permissions";
 import { db, type Queryable } from "./client.server.ts";
 import { decodeCursor, encodeCursor } from "./cursor.server.ts";
 import { newPublicId } from "./ids.server.ts";
-import { designBands, memberships, projects, sweeps, users } from "./schema/index.ts";
+import { designBands, events, memberships, projects, sweeps, users } from "./schema/index.ts";
 
 export type Project = typeof projects.$inferSelect;
 export type DesignBand = typeof designBands.$inferSelect;
@@ -19,13 +19,23 @@ export async function findWithRoleById(id: number, userId: number | null, tx: Qu
 
 async function findOneWithRole(which: SQL, userId: number | null, tx: Queryable) {
   const rows = await tx
-    .select({ project: projects, role: memberships.role })
+    .select({
+      project: projects,
+      role: memberships.role,
+      lastActiveAt: memberships.lastActiveAt,
+      lastEventId: LAST_EVENT_ID,
+    })
     .from(projects)
     .leftJoin(memberships, and(eq(memberships.projectId, projects.id), eq(memberships.userId, userId ?? 0)))
     .where(which)
     .limit(1);
   return rows[0];
 }
+/** Row id of the last event, 0 for none: read before anything else of a page, so that what is told after it is not on the page yet. */
+const LAST_EVENT_ID =
+  sql<number>`coalesce((select max(e.id) from ${events} e where e.project_id = ${projects.id}), 0)`.mapWith(
+    Number,
+  );
 
 const listColumns = {
   id: projects.id,

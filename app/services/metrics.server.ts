@@ -30,6 +30,8 @@ export function routeClassOf(path: string): string {
   if (path.startsWith("/api/")) return "api";
   if (path.startsWith("/plates/") || path === "/oembed") return "plate";
   if (/^\/(healthz|readyz|metrics)$/.test(path)) return "health";
+  // Open for hours: by themselves, or no other time could be told.
+  if (path.endsWith("/live")) return "stream";
   if (path.endsWith(".data") || path === "/__manifest") return "data";
   return "page";
 }
