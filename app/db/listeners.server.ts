@@ -37,6 +37,7 @@ export async function findStanding(
               inArray(sessions.id, [...sessionIds]),
               gt(sessions.expiresAt, new Date()),
               isNull(users.suspendedAt),
+              isNull(users.closedAt),
             ),
           )
           .limit(sessionIds.length),

@@ -400,6 +400,7 @@ export const EXPECTATIONS: Record<string, Expectation> = {
   "routes/live/poll.ts": { GET: read },
   "routes/live/looking.ts": {
     POST: [{ ask: { membership: true }, form: () => ({ window: "0123456789abcdef" }) }],
+  },
   "routes/notes/notes.ts": {
     GET: read,
     POST: (["dip", "sweep", "trail", "step", "bench"] as const).map((kind) => ({
