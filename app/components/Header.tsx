@@ -2,6 +2,7 @@ import { Form, Link, NavLink } from "react-router";
 import { ThemeSwitch } from "./ThemeSwitch";
 import type { ThemeChoice } from "./theme";
 import { LinkButton } from "./ui/Button";
+import { Icon } from "./ui/Icon";
 import { Menu } from "./ui/Menu";
 import { Wordmark } from "./Wordmark";
 
@@ -26,7 +27,10 @@ export function Header({ person, theme }: HeaderProps) {
         </Link>
         <nav aria-label="Main" className="shell-nav">
           <NavLink to="/projects">Projects</NavLink>
-          <NavLink to="/search">Search</NavLink>
+          <NavLink to="/search" className="shell-terse">
+            <Icon name="search" />
+            <span>Search</span>
+          </NavLink>
         </nav>
         <div className="shell-person">
           {person ? <PersonMenu person={person} theme={theme} /> : <VisitorBar theme={theme} />}

@@ -13,9 +13,11 @@ export interface DipsSearch extends Search {
   swrUnder: number | null;
   swrOver: number | null;
   verdict: "open" | "proposed" | "settled" | null;
+  /** The words may stand in the sweep's title too. */
+  inTitles: boolean;
 }
 
-/** Dips that are found now, by their numbers and by words of their verdict or of their sweep's title. */
+/** Dips that are found now, by their numbers and by words of their verdict (or of their sweep's title). */
 export async function findDips(search: DipsSearch, tx: Queryable = db) {
   const { fromHz, toHz, swrUnder, swrOver, verdict } = search;
   const rows = await tx
@@ -44,7 +46,7 @@ export async function findDips(search: DipsSearch, tx: Queryable = db) {
         swrUnder === null ? undefined : and(isNotNull(dips.minimumSwr), lt(dips.minimumSwr, swrUnder)),
         swrOver === null ? undefined : and(isNotNull(dips.minimumSwr), gt(dips.minimumSwr, swrOver)),
         verdict === null ? undefined : eq(standing.verdict, verdict),
-        hasWords(search.words, [dips.verdictText], [sweeps.title]),
+        hasWords(search.words, [dips.verdictText], ...(search.inTitles ? [[sweeps.title]] : [])),
         before(search, sweeps.createdAt, dips.id),
       ),
     )

@@ -49,7 +49,12 @@ export async function find(ask: Ask): Promise<ResultGroup[]> {
   if (words.length === 0 && !ask.dips) return [];
   const kinds = ask.dips ? (["dips"] as const) : RESULT_KINDS;
   const asked = kinds.filter((kind) => ask.only === null || kind === ask.only);
-  const about = { userId: ask.userId, words, limit: ask.only ? A_PAGE : A_FEW, cursor: ask.cursor };
+  const about = {
+    userId: ask.userId,
+    words,
+    limit: ask.only || ask.dips ? A_PAGE : A_FEW,
+    cursor: ask.cursor,
+  };
   const groups = await Promise.all(
     asked.map(async (kind) => ({ kind, ...(await FINDERS[kind](about, ask.dips)) })),
   );
@@ -60,7 +65,7 @@ type Found = Pick<ResultGroup, "results" | "nextCursor">;
 
 const FINDERS: Record<ResultKind, (about: search.Search, range: DipRange | null) => Promise<Found>> = {
   dips: async (about, range) => {
-    const page = await searchDips.findDips({ ...about, ...(range ?? ANY_DIP) });
+    const page = await searchDips.findDips({ ...about, ...(range ?? ANY_DIP), inTitles: range !== null });
     return shape(page, ({ publicId, project, numbers, verdict, verdictText, sweepTitle, at }) => ({
       to: `/projects/${project.publicId}/dips/${publicId}`,
       title: `${formatFrequency(numbers.frequencyHz, numbers.frequencyUncertaintyHz)}, SWR ${formatSwr(numbers.minimumSwr, numbers.minimumSwrLow, numbers.minimumSwrHigh)}`,

@@ -33,8 +33,10 @@ export function Groups({ groups, only, typed }: GroupsProps) {
           </ul>
           {nextCursor && (
             <p>
-              <Link to={address(only ? { in: kind, cursor: nextCursor } : { in: kind })}>
-                {only ? `Older ${kind}` : `All ${kind}`}
+              <Link
+                to={address(only || results.length > A_FEW ? { in: kind, cursor: nextCursor } : { in: kind })}
+              >
+                {only || results.length > A_FEW ? `Older ${kind}` : `All ${kind}`}
               </Link>
             </p>
           )}
@@ -67,6 +69,9 @@ function Found({ result }: { result: Result }) {
     </li>
   );
 }
+
+/** Of each kind where several are shown. */
+const A_FEW = 5;
 
 const HEADINGS: Record<ResultKind, string> = {
   dips: "Dips",
