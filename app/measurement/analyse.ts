@@ -6,7 +6,7 @@ import { type Analysis, type AnalysisSettings, DEFAULT_SETTINGS, type Sweep, typ
 import { warningsOf } from "./warnings.ts";
 
 /** Raised whenever a number can come out differently. */
-export const ANALYSIS_VERSION = "2";
+export const ANALYSIS_VERSION = "3";
 
 /**
  * A sweep to its findings: noise, dips with their numbers and 95 % intervals, and what to be wary of.

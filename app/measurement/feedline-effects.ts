@@ -9,10 +9,12 @@ export function scaleLimits(
   gain: Float64Array,
   uncertainty: number,
 ): BenchLimits {
+  const feedline = Float64Array.from(tracking, (t, i) => (gain[i] ** uncertainty - 1) * (1 + t));
   return {
     directivity: times(directivity, gain),
-    tracking: Float64Array.from(tracking, (t, i) => t + (gain[i] ** uncertainty - 1) * (1 + t)),
+    tracking: Float64Array.from(tracking, (t, i) => t + feedline[i]),
     match: Float64Array.from(match, (m, i) => m / gain[i]),
+    ...(uncertainty > 0 && { feedline }),
   };
 }
 

@@ -40,6 +40,11 @@ export interface BenchLimits {
   directivity: Float64Array;
   tracking: Float64Array;
   match: Float64Array;
+  /**
+   * Of the tracking: what the loss of the feedline that was taken away adds, as it is known no better. Absent
+   * where none was or its loss counts as exact.
+   */
+  feedline?: Float64Array;
 }
 
 /** What was done to a sweep before its dips were found. */

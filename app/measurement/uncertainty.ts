@@ -49,10 +49,11 @@ export interface Interval {
  * SWR rises steadily with it, so the limits carry over; below nothing reflected SWR is 1, from all
  * reflected on Infinity.
  */
-export function swrInterval(power: number, halfWidth: number | null): Interval | null {
-  if (halfWidth === null || Number.isNaN(halfWidth) || Number.isNaN(power)) return null;
+export function swrInterval(power: number, halfWidth: number | null, upwards = halfWidth): Interval | null {
+  if (halfWidth === null || upwards === null) return null;
+  if (Number.isNaN(halfWidth + upwards + power)) return null;
   const swr = (p: number) => gammaToSwr(Math.sqrt(Math.max(0, p)));
-  return { low: swr(power - halfWidth), high: swr(power + halfWidth) };
+  return { low: swr(power - halfWidth), high: swr(power + upwards) };
 }
 
 /** Φ⁻¹(0.975). */

@@ -1,8 +1,8 @@
 import type { FoundSweep } from "~/db/sweeps.server";
 import { analyse } from "~/measurement/analyse";
 import { decimate } from "~/measurement/decimate";
-import { completeDip } from "~/measurement/dips/complete";
-import { averageRepeats, repeatDips } from "~/measurement/repeats";
+import { repeatDips } from "~/measurement/repeat-dips";
+import { averageRepeats } from "~/measurement/repeats";
 import type { Sweep } from "~/measurement/sweep";
 import { pickPoints } from "./points.server.ts";
 import { type SweepAt, sweepAt } from "./shown-sweep.server.ts";
@@ -14,7 +14,7 @@ export async function findRepeats(members: FoundSweep[]) {
     (one): one is SweepAt => one !== null,
   );
   const mean = averageRepeats(at.map(({ sweep }) => sweep));
-  const dips = repeatDips(read.map(({ analysis }) => ({ dips: (analysis?.dips ?? []).map(completeDip) })));
+  const dips = repeatDips(read.map(({ analysis }) => ({ dips: analysis?.dips ?? [] })));
   return {
     count: at.length,
     dips: dips.map(({ at: found, ...dip }) => ({

@@ -1,3 +1,4 @@
+import type { BenchErrors } from "../../app/measurement/limits/worst-case.ts";
 import { type Complex, swrToGamma } from "../../app/measurement/reflection.ts";
 import type { BenchLimits, Sweep } from "../../app/measurement/sweep.ts";
 import type { Random } from "../screens/random.ts";
@@ -22,13 +23,29 @@ export interface Trial {
   trace: Hollow;
 }
 
+/** From where to where a trial's quantities are drawn. */
+export interface Ranges {
+  swr: [number, number];
+  directivityDb: [number, number];
+  noiseDb: [number, number];
+  pointsPerBand: [number, number];
+}
+
 /** Lowest SWR 1.02 to 3, directivity 20 to 45 dB, noise 0.01 to 0.5 dB, 3 to 200 points in the band. */
-export function drawTrial(random: Random): Trial {
-  const kind = random.pick(KINDS);
-  const swr = 1 + logBetween(random, 0.02, 2);
-  const directivityDb = random.between(20, 45);
-  const noiseDb = logBetween(random, 0.01, 0.5);
-  const pointsPerBand = logBetween(random, 3, 200);
+export const EVERYWHERE: Ranges = {
+  swr: [1.02, 3],
+  directivityDb: [20, 45],
+  noiseDb: [0.01, 0.5],
+  pointsPerBand: [3, 200],
+};
+
+/** One sweep from `ranges`, with a scatter of any kind where `given` is null. */
+export function drawTrial(random: Random, ranges = EVERYWHERE, given: Kind | null = null): Trial {
+  const kind = given ?? random.pick(KINDS);
+  const swr = 1 + logBetween(random, ranges.swr[0] - 1, ranges.swr[1] - 1);
+  const directivityDb = random.between(...ranges.directivityDb);
+  const noiseDb = logBetween(random, ...ranges.noiseDb);
+  const pointsPerBand = logBetween(random, ...ranges.pointsPerBand);
   const swrLimit = swr < HIGHEST_AT_TWO ? 2 : 5;
   const level = swrToGamma(swrLimit);
   const worst = {
@@ -52,7 +69,7 @@ export function drawTrial(random: Random): Trial {
   return { kind, swr, directivityDb, noiseDb, pointsPerBand, swrLimit, sweep, antenna, trace };
 }
 
-function drawScene(random: Random, swr: number, worst: Record<keyof BenchLimits, number>): Scene {
+function drawScene(random: Random, swr: number, worst: BenchErrors): Scene {
   const loss = random.between(0.97, 1);
   const rho = swrToGamma(swr) / loss;
   const ratio = (1 + rho) / (1 - rho);
@@ -96,7 +113,7 @@ function measured(
   return kind === "with phase" ? { ...sweep, gammaRe, gammaIm } : sweep;
 }
 
-function limitsOf(worst: Record<keyof BenchLimits, number>, points: number): BenchLimits {
+function limitsOf(worst: BenchErrors, points: number): BenchLimits {
   const even = (value: number) => new Float64Array(points).fill(value);
   return { directivity: even(worst.directivity), tracking: even(worst.tracking), match: even(worst.match) };
 }

@@ -94,8 +94,10 @@ describe("removeFeedline", () => {
     expect(own.sweep.pictureLimits?.magnitudeHigh[0]).toBeCloseTo(0.3 * g, 12);
     const half = 0.01 * g + 0.02 * 0.2 * g + (0.05 / g) * (0.2 * g) ** 2;
     expect(half).toBeCloseTo(g * (0.01 + 0.02 * 0.2 + 0.05 * 0.04), 12);
+    expect(own.sweep.benchLimits?.feedline).toBeUndefined();
     const sheet = removeFeedline(seen, { ...losing(0.3), k1: 0.003, name: "RG-213/U (solid PE)" });
     expect(sheet.sweep.benchLimits?.tracking[0]).toBeCloseTo(0.02 + (g ** 0.2 - 1) * 1.02, 12);
+    expect(sheet.sweep.benchLimits?.feedline?.[0]).toBeCloseTo((g ** 0.2 - 1) * 1.02, 12);
   });
 
   it("leaves out what the sheet does not cover, and nothing with own values", () => {

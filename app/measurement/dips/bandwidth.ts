@@ -1,3 +1,4 @@
+import type { Noise } from "../noise.ts";
 import { swrToGamma } from "../reflection.ts";
 import type { Bandwidth, Sweep } from "../sweep.ts";
 import { combine, NORMAL_95 } from "../uncertainty.ts";
@@ -31,8 +32,8 @@ export interface BandwidthInput {
   /** Another dip lies in the stretch. */
   shared: boolean;
   fit: Fit | null;
-  /** σ of the sweep, dB of return loss. */
-  noise: number;
+  /** σ of the sweep. */
+  noise: Noise;
 }
 
 /**
@@ -109,8 +110,12 @@ function edgeLies(magnitude: Float64Array, i: number, step: 1 | -1): boolean {
   return next === undefined || Number.isNaN(next);
 }
 
-function fromSamples({ sweep, index, stretch, noise }: BandwidthInput, level: number): Edges | null {
+function fromSamples(
+  { sweep, index, stretch, noise: all, fit }: BandwidthInput,
+  level: number,
+): Edges | null {
   if (!stretch) return null;
+  const noise = sigmaAt(level, all, fit);
   const { frequencyHz } = sweep;
   const low = vagueEdge(sweep, index, -1, level, noise) ?? sampleEdge(sweep, stretch.from - 1, level, noise);
   const high = vagueEdge(sweep, index, 1, level, noise) ?? sampleEdge(sweep, stretch.to, level, noise);
@@ -156,6 +161,17 @@ function sampleEdge(sweep: Sweep, i: number, level: number, noise: number) {
   return { hz, halfHz: combine(scatter, noise < SMOOTH_DB ? hz - straight : stepHz / 4) };
 }
 
+/**
+ * σ in dB at the limit. A receiver's scatter is even in abs Γ and so is larger there in dB than where most
+ * comes back; without a fit that tells which it is, the larger.
+ */
+function sigmaAt(level: number, noise: Noise, fit: Fit | null): number {
+  const even = (DB_PER_NEPER * noise.gamma) / level;
+  if (fit) return fit.scatter === "even" ? even : noise.db;
+  return Math.max(even, noise.db);
+}
+
+const DB_PER_NEPER = 20 / Math.LN10;
 /** In σ of the sweep. */
 const VAGUE_SIGMAS = 2;
 const FEWEST_VAGUE = 3;

@@ -48,7 +48,7 @@ export function describeDip(
     stretch,
     shared,
     fit: lowest.fit,
-    noise: settings.noise.db,
+    noise: settings.noise,
   });
   const minimumSwr = gammaToSwr(lowest.magnitude);
   const { notOfAntenna, ...quality } = qualityOf({

@@ -21,7 +21,7 @@ export interface Problem {
   start: Float64Array;
   free: number;
   /** What is known beforehand of one parameter: it is near 0, with this weight. */
-  prior?: Prior;
+  priors?: readonly Prior[];
   /** Relative gain of the cost that is not worth another step; the last bits where it is left out. */
   enough?: number;
 }
@@ -90,7 +90,7 @@ export function leastSquares(problem: Problem, maxIterations = MOST_ITERATIONS):
 
 /** JᵀWJ and JᵀWr at `p`; returns the cost. */
 function accumulate(
-  { model, x, y, weight, start, free, prior }: Problem,
+  { model, x, y, weight, start, free, priors = [] }: Problem,
   p: Float64Array,
   normal: Float64Array,
   slope: Float64Array,
@@ -109,7 +109,7 @@ function accumulate(
       for (let j = 0; j <= i; j++) normal[i * free + j] += wi * gradient[j];
     }
   }
-  if (prior) {
+  for (const prior of priors) {
     cost += prior.weight * p[prior.at] ** 2;
     slope[prior.at] -= prior.weight * p[prior.at];
     normal[prior.at * free + prior.at] += prior.weight;

@@ -1,5 +1,4 @@
 import { type Noise, noiseNear } from "../noise.ts";
-import { gammaToSwr } from "../reflection.ts";
 import type { Dip, Sweep } from "../sweep.ts";
 import { type Interval, swrInterval } from "../uncertainty.ts";
 import type { Stretch } from "./bandwidth.ts";
@@ -41,7 +40,7 @@ export function lowestOf(
       gamma: Math.max(noise.gamma, near.gamma),
       sweepDb: noise.db,
     };
-    const window = fitWindow(magnitude, index, prominenceDb, between.from, between.to);
+    const window = fitWindow(magnitude, index, prominenceDb, between.from, between.to, noise.gamma);
     const fit = fitDip(frequencyHz, magnitude, index, window, allowed, sweep.gammaRe !== undefined);
     if (fit) {
       return {
@@ -49,7 +48,7 @@ export function lowestOf(
         frequencyHz: fit.frequencyHz,
         frequencyHalfHz: fit.frequencyHalfHz,
         magnitude: Math.sqrt(fit.power),
-        swr: swrInterval(fit.power, fit.powerHalf),
+        swr: swrInterval(fit.power, fit.powerHalf, fit.powerUp),
         otherShare: fit.shapeShare,
         fit,
       };
@@ -61,13 +60,12 @@ export function lowestOf(
   const top = few ? null : parabolaDip(frequencyHz, magnitude, index, nearby);
   if (!top) return sampleOnly(sweep, index, nearby);
   const gamma = 10 ** (-top.returnLossDb / 20);
-  const swr = (db: number) => gammaToSwr(10 ** (-(top.returnLossDb + db) / 20));
   return {
     method: "parabola",
     frequencyHz: top.frequencyHz,
     frequencyHalfHz: top.frequencyHalfHz,
     magnitude: gamma,
-    swr: { low: swr(top.returnLossHalfDb), high: swr(-top.returnLossHalfDb) },
+    swr: top.swr,
     otherShare: top.stepShare,
     fit: null,
   };

@@ -1,4 +1,4 @@
-import { NORMAL_95 } from "../uncertainty.ts";
+import { type Interval, student95, swrInterval } from "../uncertainty.ts";
 
 /** The vertex of a parabola through three points. */
 export interface Vertex {
@@ -25,12 +25,13 @@ export interface ParabolaDip {
   frequencyHz: number;
   returnLossDb: number;
   /**
-   * 95 % half-widths: noise carried through the parabola, and what another choice of ordinate gives,
+   * 95 % half-width: noise carried through the parabola, and what another choice of ordinate gives,
    * combined.
    */
   frequencyHalfHz: number;
-  returnLossHalfDb: number;
-  /** Of the square of that of the return loss: what the frequency step adds. */
+  /** 95 % interval of the lowest SWR. */
+  swr: Interval;
+  /** Of the square of its half-width downwards: what the frequency step adds. */
   stepShare: number;
 }
 
@@ -51,40 +52,57 @@ export function parabolaDip(
   const top = parabolaTop(x, loss);
   if (!top || loss[1] - (loss[0] + loss[2]) / 2 < CLEAR_OF_NOISE * noise) return null;
   const step = stepPart(f, magnitude, index, top);
-  let frequency = step.x ** 2;
-  let depth = step.y ** 2 + (top.y - loss[1]) ** 2;
+  let frequency = (COVER * step.x) ** 2;
+  let depth = 0;
   for (let i = 0; i < 3 && noise > 0; i++) {
     const shifted = [...loss];
     shifted[i] -= noise * SMALL;
     const moved = parabolaTop(x, shifted);
     if (!moved) continue;
-    frequency += (((moved.x - top.x) / SMALL) * NORMAL_95) ** 2;
-    depth += (((moved.y - top.y) / SMALL) * NORMAL_95) ** 2;
+    frequency += (((moved.x - top.x) / SMALL) * COVER) ** 2;
+    depth += (((moved.y - top.y) / SMALL) * COVER) ** 2;
   }
   return {
     frequencyHz: top.x,
     returnLossDb: top.y,
     frequencyHalfHz: Math.min((x[2] - x[0]) / 2, Math.sqrt(frequency)),
-    returnLossHalfDb: Math.sqrt(depth),
-    stepShare: depth > 0 ? (step.y ** 2 + (top.y - loss[1]) ** 2) / depth : 0,
+    ...limitsOf(top.y, step.power, Math.sqrt(depth), loss[1] - COVER * noise),
   };
 }
 
-function stepPart(f: Float64Array, magnitude: Float64Array, index: number, vertex: Vertex): Vertex {
-  const { x, power, loss } = around(f, magnitude, index, 1);
+/**
+ * The interval of the lowest SWR, in abs Γ². The distance to another choice tells the size of the step's error
+ * as a standard deviation does. Downwards the vertex of the power may lie under 0: then SWR 1. Upwards no further than the lowest sample (`sampleDb`, scatter
+ * included): the dip is no higher.
+ */
+function limitsOf(lossDb: number, stepPower: number, noiseDb: number, sampleDb: number) {
+  const power = 10 ** (-lossDb / 10);
+  const step = COVER * stepPower;
+  const noise = { down: power * (1 - 10 ** (-noiseDb / 10)), up: power * (10 ** (noiseDb / 10) - 1) };
+  const most = Math.max(power, 10 ** (-sampleDb / 10));
+  const up = Math.min(most - power, Math.hypot(noise.up, step));
+  const down = Math.hypot(noise.down, step);
+  const swr = swrInterval(power, down, up) ?? { low: 1, high: Number.POSITIVE_INFINITY };
+  return { swr, stepShare: down > 0 ? (step / down) ** 2 : 0 };
+}
+
+function stepPart(f: Float64Array, magnitude: Float64Array, index: number, vertex: Vertex) {
+  const { x, power } = around(f, magnitude, index, 1);
   const byPower = parabolaTop(
     x,
     power.map((p) => -p),
   );
   const wide = around(f, magnitude, index, 2);
+  const far = parabolaTop(wide.x, wide.loss);
   const known = [
-    byPower && { x: byPower.x, y: byPower.y < 0 ? -10 * Math.log10(-byPower.y) : loss[1] },
-    parabolaTop(wide.x, wide.loss),
+    byPower && { x: byPower.x, power: -byPower.y },
+    far && { x: far.x, power: 10 ** (-far.y / 10) },
   ].filter((one) => one !== null);
-  if (known.length === 0) return { x: (x[2] - x[0]) / 2, y: vertex.y - loss[1] };
+  const lowest = 10 ** (-vertex.y / 10);
+  if (known.length === 0) return { x: (x[2] - x[0]) / 2, power: lowest };
   return {
     x: Math.max(...known.map((one) => Math.abs(one.x - vertex.x))),
-    y: Math.max(...known.map((one) => Math.abs(one.y - vertex.y))),
+    power: Math.max(...known.map((one) => Math.abs(one.power - lowest))),
   };
 }
 
@@ -98,3 +116,8 @@ function around(f: Float64Array, magnitude: Float64Array, index: number, reach: 
 const CLEAR_OF_NOISE = 4;
 /** Share of σ by which a point is moved to see the effect. */
 const SMALL = 1e-2;
+/**
+ * Half-width over standard deviation: what the step adds is told by two distances, and where noise counts an
+ * unlucky estimate of σ from few samples kept a fit away. Two degrees of freedom.
+ */
+const COVER = student95(2);

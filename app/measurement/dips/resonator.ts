@@ -8,8 +8,9 @@ import type { Model } from "./least-squares.ts";
  * off resonance, D = A·(1−ρ²) the depth with ρ = abs(r−1)/(r+1), κ = r·Q/(r+1). A bench adds a constant to Γ
  * (directivity) and turns it about (tracking, match): Γ stays a ratio of two linear functions of w, and abs Γ²
  * becomes A − (D + B·w)/(1+w²), which is skew; where the phase of those errors turns with frequency there is
- * also, to first order, C·w, the tilt. B and C are 0 on a perfect bench (own derivation). Parameters here:
- * D, ln f0, ln κ, B, C, A; few samples bear no C or neither B nor C, and the list is as much shorter.
+ * also, to first order, C·w, the tilt, and to second order E·w², the curve. B, C and E are 0 on a perfect
+ * bench (own derivation). Parameters here: D, ln f0, ln κ, B, C, E, A; few samples bear no E, no C or not even
+ * B, and the list is as much shorter.
  * Frequencies enter as x = ln(f/reference), so that f/f0 − f0/f = 2 sinh(x − x0).
  */
 export interface Resonator {
@@ -24,15 +25,19 @@ export interface Resonator {
   skew: number;
   /** C. */
   tilt: number;
+  /** E. */
+  curve: number;
 }
 
 export const DEPTH = 0;
 const LOG_F0 = 1;
 const LOG_KAPPA = 2;
-/** In a list of five or six; A is always the last. */
+/** In a list of five or more; A is always the last. */
 const SKEW = 3;
-/** In a list of six. */
+/** In a list of six or seven. */
 export const TILT = 4;
+/** In a list of seven. */
+export const CURVE = 5;
 
 export const resonatorPower: Model = (p, x, gradient) => {
   const last = p.length - 1;
@@ -43,13 +48,16 @@ export const resonatorPower: Model = (p, x, gradient) => {
   const skew = last > SKEW ? p[SKEW] : 0;
   const slope = (2 * (p[DEPTH] + skew * w) * w * share - skew) * share;
   const tilt = last > TILT ? p[TILT] : 0;
+  const curve = last > CURVE ? p[CURVE] : 0;
+  const rise = slope + tilt + 2 * curve * w;
   gradient[DEPTH] = -share;
-  gradient[LOG_F0] = -(slope + tilt) * kappa * (up + 1 / up);
-  gradient[LOG_KAPPA] = (slope + tilt) * w;
+  gradient[LOG_F0] = -rise * kappa * (up + 1 / up);
+  gradient[LOG_KAPPA] = rise * w;
+  if (last > CURVE) gradient[CURVE] = w * w;
   if (last > TILT) gradient[TILT] = w;
   if (last > SKEW) gradient[SKEW] = -w * share;
   gradient[last] = 1;
-  return p[last] - (p[DEPTH] + skew * w) * share + tilt * w;
+  return p[last] - (p[DEPTH] + skew * w) * share + (tilt + curve * w) * w;
 };
 
 /** Parameters to the resonator; `referenceHz` is where x is 0. */
@@ -61,6 +69,7 @@ export function resonatorOf(p: Float64Array, referenceHz: number): Resonator {
     kappa: Math.exp(p[LOG_KAPPA]),
     skew: p.length - 1 > SKEW ? p[SKEW] : 0,
     tilt: p.length - 1 > TILT ? p[TILT] : 0,
+    curve: p.length - 1 > CURVE ? p[CURVE] : 0,
   };
 }
 
@@ -85,13 +94,13 @@ export function hzAt({ f0Hz, kappa }: Resonator, w: number): number {
  * without tilt.
  */
 export function edgesAt(resonator: Resonator, power: number): [number, number] | null {
-  const { farPower, depth, skew, tilt } = resonator;
+  const { farPower, depth, skew, tilt, curve } = resonator;
   const over = farPower - power;
   const square = skew * skew - 4 * over * (over - depth);
   if (!(over > 0) || !(square >= 0)) return null;
   const root = Math.sqrt(square);
   const edges: [number, number] = [(skew - root) / (2 * over), (skew + root) / (2 * over)];
-  if (tilt === 0) return edges;
+  if (tilt === 0 && curve === 0) return edges;
   for (const k of [0, 1] as const)
     for (let i = 0; i < NEWTON_STEPS; i++) {
       const step = (powerAt(resonator, edges[k]) - power) / slopeAt(resonator, edges[k]);
@@ -105,7 +114,7 @@ export function edgesAt(resonator: Resonator, power: number): [number, number] |
 /** The w of the lowest abs Γ²: without tilt in closed form, else Newton's method from there. */
 function lowestAt(r: Resonator): number {
   let w = r.skew / (r.depth + Math.hypot(r.depth, r.skew));
-  for (let i = 0; i < NEWTON_STEPS && r.tilt !== 0; i++) {
+  for (let i = 0; i < NEWTON_STEPS && (r.tilt !== 0 || r.curve !== 0); i++) {
     const bend = bendAt(r, w);
     if (!(bend > 0)) return Number.NaN;
     const step = slopeAt(r, w) / bend;
@@ -115,13 +124,13 @@ function lowestAt(r: Resonator): number {
   return w;
 }
 
-function powerAt({ farPower, depth, skew, tilt }: Resonator, w: number): number {
-  return farPower - (depth + skew * w) / (1 + w * w) + tilt * w;
+function powerAt({ farPower, depth, skew, tilt, curve }: Resonator, w: number): number {
+  return farPower - (depth + skew * w) / (1 + w * w) + (tilt + curve * w) * w;
 }
 
-function slopeAt({ depth, skew, tilt }: Resonator, w: number): number {
+function slopeAt({ depth, skew, tilt, curve }: Resonator, w: number): number {
   const share = 1 / (1 + w * w);
-  return (2 * (depth + skew * w) * w * share - skew) * share + tilt;
+  return (2 * (depth + skew * w) * w * share - skew) * share + tilt + 2 * curve * w;
 }
 
 /** By differences: only the speed of Newton's steps hangs on it. */

@@ -1,8 +1,9 @@
+import type { Noise } from "../noise.ts";
 import type { FitNoise } from "./fit.ts";
 import { leastSquares, type Prior, type Solution } from "./least-squares.ts";
 import type { Points } from "./points.ts";
 import { DB_PER_POWER, type Residuals, residualsOf, type Scatter, unbiased } from "./residuals.ts";
-import { resonatorPower, TILT } from "./resonator.ts";
+import { CURVE, resonatorPower, TILT } from "./resonator.ts";
 
 /** A fit and what it leaves over. */
 export interface Candidate {
@@ -27,7 +28,8 @@ export function likelier(data: Points, start: Float64Array, task: FitTask): Cand
   const even = reweigh(data, start, task, "even");
   const decibel = reweigh(data, start, task, "decibel");
   if (!even || !decibel) return even ?? decibel;
-  const clearly = decibel.residuals.score < even.residuals.score - CLEARLY;
+  const n = data.x.length;
+  const clearly = decibel.residuals.score < even.residuals.score - (CLEARLY * n) / Math.max(1, n - task.free);
   return clearly && decibel.residuals.sigma <= SAME_EVERYWHERE * task.noise.sweepDb ? decibel : even;
 }
 
@@ -42,7 +44,7 @@ export function fitMeans(data: Points, before: Candidate, task: FitTask, size: n
   const y = unbiased(data.y, before.residuals, complex);
   const weighed = residualsOf(data.x, y, start, free, scatter, floor);
   if (!weighed) return null;
-  const prior = tiltPrior(start, task, scatter, size);
+  const priors = priorsOf(start, task.noise, scatter, size);
   const { weight } = weighed;
   const solution = leastSquares({
     model: resonatorPower,
@@ -51,7 +53,7 @@ export function fitMeans(data: Points, before: Candidate, task: FitTask, size: n
     weight,
     start,
     free,
-    prior,
+    priors,
     enough: ENOUGH,
   });
   const residuals = residualsOf(data.x, y, solution.p, free, scatter, floor);
@@ -61,7 +63,7 @@ export function fitMeans(data: Points, before: Candidate, task: FitTask, size: n
 /** Fits again with the weights of the scatter until they and the parameters agree. */
 function reweigh(data: Points, start: Float64Array, task: FitTask, scatter: Scatter): Candidate | null {
   const { free, complex } = task;
-  const prior = tiltPrior(start, task, scatter, 1);
+  const priors = priorsOf(start, task.noise, scatter, 1);
   let solution: Solution | null = null;
   let residuals = residualsOf(data.x, data.y, start, free, scatter);
   for (let round = 0; round < ROUNDS && residuals; round++) {
@@ -73,7 +75,7 @@ function reweigh(data: Points, start: Float64Array, task: FitTask, scatter: Scat
       weight: residuals.weight,
       start: solution?.p ?? start,
       free,
-      prior,
+      priors,
       enough: ENOUGH,
     });
     residuals = residualsOf(data.x, y, solution.p, free, scatter);
@@ -81,20 +83,30 @@ function reweigh(data: Points, start: Float64Array, task: FitTask, scatter: Scat
   return solution && residuals ? { solution, residuals } : null;
 }
 
-/** The tilt is near 0; without this it runs away with κ and A where scatter hides all three. */
-function tiltPrior(p: Float64Array, { noise }: FitTask, scatter: Scatter, size: number): Prior | undefined {
-  if (p.length <= TILT + 1) return undefined;
+/**
+ * Tilt and curve are near 0; without this they run away with κ and A where scatter hides them all. `size`:
+ * samples in one mean.
+ */
+export function priorsOf(p: Float64Array, noise: Noise, scatter: Scatter, size: number): Prior[] {
+  if (p.length <= TILT + 1) return [];
   const variance = scatter === "even" ? 4 * noise.gamma ** 2 : (noise.db / DB_PER_POWER) ** 2;
-  return { at: TILT, weight: variance / size / USUAL_TILT ** 2 };
+  const tilt = { at: TILT, weight: variance / size / USUAL_TILT ** 2 };
+  return p.length <= CURVE + 1 ? [tilt] : [tilt, { at: CURVE, weight: variance / size / USUAL_CURVE ** 2 }];
 }
 
 /** Of abs Γ² per unit of w: 30 dB of directivity behind a metre of line give 0.06, see the coverage table. */
 const USUAL_TILT = 0.1;
+/**
+ * The same per unit of w²: half of the tilt's size times the turn in radians over one unit of w, which is
+ * under one behind a few metres of line.
+ */
+const USUAL_CURVE = 0.03;
 const ROUNDS = 3;
 /** Of the cost of some hundred scattered samples: a ten-thousandth of a σ. */
 const ENOUGH = 1e-9;
 /**
- * In −2 log likelihood. Taking an even scatter for one in dB makes intervals too narrow, the other way
+ * In −2 log likelihood, where samples are many: of few the fit itself takes up part of what would tell, and
+ * n/(n − free) times as much is asked. Taking an even scatter for one in dB makes intervals too narrow, the other way
  * round a little too wide.
  */
 const CLEARLY = 4;

@@ -15,14 +15,24 @@ export function fitWindow(
   prominenceDb: number,
   before: number,
   after: number,
+  sigma = 0,
 ): Window {
   const lowest = magnitude[index] ** 2;
   const crest = Math.min(1, lowest * 10 ** (prominenceDb / 10) || 1);
   const level = Math.sqrt(Math.max(WINDOW_GAMMA ** 2, lowest + CREST_SHARE * (crest - lowest)));
-  return { from: reach(magnitude, index, -1, before, level), to: reach(magnitude, index, 1, after, level) };
+  const clear = level + CLEAR_SIGMAS * sigma;
+  const end = (step: 1 | -1, stop: number) => reach(magnitude, index, step, stop, level, clear);
+  return { from: end(-1, before), to: end(1, after) };
 }
 
-function reach(magnitude: Float64Array, index: number, step: 1 | -1, stop: number, level: number): number {
+function reach(
+  magnitude: Float64Array,
+  index: number,
+  step: 1 | -1,
+  stop: number,
+  level: number,
+  clear: number,
+): number {
   let i = index;
   let crest = index;
   while (i !== stop) {
@@ -30,12 +40,31 @@ function reach(magnitude: Float64Array, index: number, step: 1 | -1, stop: numbe
     if (Number.isNaN(value)) break;
     i += step;
     if (value > magnitude[crest]) crest = i;
-    if (value > level) return i;
+    if (value > level) return middle(magnitude, i, step, stop, level, clear);
   }
   return crest;
 }
 
+/**
+ * Between the first sample over the level and the last one under it before they are clear of it: scatter
+ * that ended the window would lean on the shape there.
+ */
+function middle(
+  magnitude: Float64Array,
+  first: number,
+  step: 1 | -1,
+  stop: number,
+  level: number,
+  clear: number,
+): number {
+  let last = first;
+  for (let i = first; i !== stop && magnitude[i] <= clear; i += step) if (magnitude[i] <= level) last = i;
+  return (first + last) >> 1;
+}
+
 /** abs Γ of SWR 5. */
 const WINDOW_GAMMA = 2 / 3;
+/** In σ of abs Γ. */
+const CLEAR_SIGMAS = 4;
 /** Of the power between dip and crest: a resonator's flank is still steep there. */
 const CREST_SHARE = 0.5;

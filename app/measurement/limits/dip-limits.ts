@@ -82,14 +82,20 @@ function bandLimits({ limitSwr, open, lowHz, highHz }: Bandwidth, flanks: Flanks
   };
 }
 
-function sharesFor({ lowest, pixelHalf }: DipLimitsInput, swr: Interval, errors: typeof NOTHING_KNOWN) {
+function sharesFor(
+  { sweep, index, lowest, pixelHalf }: DipLimitsInput,
+  swr: Interval,
+  errors: typeof NOTHING_KNOWN,
+) {
   const gamma = lowest.magnitude;
   const half = (swrToGamma(swr.high) - swrToGamma(swr.low)) / 2;
+  const line = Math.min(errors.tracking, sweep.benchLimits?.feedline?.[index] || 0);
   const own = Math.sqrt(Math.max(0, half * half - pixelHalf * pixelHalf));
   return sharesOf(
     {
       directivity: errors.directivity,
-      tracking: errors.tracking * gamma,
+      tracking: (errors.tracking - line) * gamma,
+      feedline: line * gamma,
       match: errors.match * gamma * gamma,
     },
     {

@@ -80,21 +80,24 @@ describe("Levenberg–Marquardt as scipy has it", () => {
     expect(solution.converged).toBe(false);
   });
 
-  test.each([[[]], [[0.12]], [[0.12, -0.07]]])("slopes agree with differences, with %j beside", (extra) => {
-    const p = Float64Array.of(0.8, 0.01, Math.log(9), ...extra, 0.97);
-    const gradient = new Float64Array(p.length);
-    const unused = new Float64Array(p.length);
-    for (const x of [-0.2, -0.03, 0.01, 0.012, 0.15]) {
-      resonatorPower(p, x, gradient);
-      for (let i = 0; i < p.length; i++) {
-        const [up, down] = [Float64Array.from(p), Float64Array.from(p)];
-        up[i] += 1e-6;
-        down[i] -= 1e-6;
-        const slope = (resonatorPower(up, x, unused) - resonatorPower(down, x, unused)) / 2e-6;
-        expect(Math.abs(slope - gradient[i])).toBeLessThan(1e-7);
+  test.each([[[]], [[0.12]], [[0.12, -0.07]], [[0.12, -0.07, 0.04]]])(
+    "slopes agree with differences, with %j beside",
+    (extra) => {
+      const p = Float64Array.of(0.8, 0.01, Math.log(9), ...extra, 0.97);
+      const gradient = new Float64Array(p.length);
+      const unused = new Float64Array(p.length);
+      for (const x of [-0.2, -0.03, 0.01, 0.012, 0.15]) {
+        resonatorPower(p, x, gradient);
+        for (let i = 0; i < p.length; i++) {
+          const [up, down] = [Float64Array.from(p), Float64Array.from(p)];
+          up[i] += 1e-6;
+          down[i] -= 1e-6;
+          const slope = (resonatorPower(up, x, unused) - resonatorPower(down, x, unused)) / 2e-6;
+          expect(Math.abs(slope - gradient[i])).toBeLessThan(1e-7);
+        }
       }
-    }
-  });
+    },
+  );
 });
 
 describe("closed form", () => {
@@ -125,7 +128,7 @@ describe("closed form", () => {
   });
 
   test("edges, and none where the resonator stays above or below", () => {
-    const resonator = { f0Hz: 1, farPower: 1, depth: 0.9, kappa: 5, skew: 0, tilt: 0 };
+    const resonator = { f0Hz: 1, farPower: 1, depth: 0.9, kappa: 5, skew: 0, tilt: 0, curve: 0 };
     expect(lowestPower(resonator)).toBeCloseTo(0.1, 12);
     expect(lowestPower({ ...resonator, depth: 1.01 })).toBeCloseTo(-0.01, 12);
     expect(edgesAt(resonator, 0.05)).toBeNull();
@@ -137,13 +140,15 @@ describe("closed form", () => {
 
   /** Truth: the samples of the same function, a grid of a million. */
   test.each([
-    { skew: 0.2, tilt: 0 },
-    { skew: -0.15, tilt: 0.08 },
-    { skew: 0.01, tilt: -0.1 },
-  ])("skew and tilted: lowest point and edges, %j", ({ skew, tilt }) => {
-    const p = Float64Array.of(0.9, 0, Math.log(5), skew, tilt, 1);
+    { skew: 0.2, tilt: 0, curve: 0 },
+    { skew: -0.15, tilt: 0.08, curve: 0 },
+    { skew: 0.01, tilt: -0.1, curve: 0 },
+    { skew: 0.1, tilt: -0.06, curve: 0.05 },
+    { skew: 0, tilt: 0, curve: -0.04 },
+  ])("skew, tilted and curved: lowest point and edges, %j", ({ skew, tilt, curve }) => {
+    const p = Float64Array.of(0.9, 0, Math.log(5), skew, tilt, curve, 1);
     const resonator = resonatorOf(p, 1);
-    const gradient = new Float64Array(6);
+    const gradient = new Float64Array(7);
     const at = (hz: number) => resonatorPower(p, Math.log(hz), gradient);
     let best = 0.9;
     for (let hz = 0.9; hz < 1.1; hz += 2e-7) if (at(hz) < at(best)) best = hz;

@@ -58,7 +58,9 @@ describe("a dip by its parabola", () => {
     const quiet = dipOf(40e3, 0.37);
     const noisy = dipOf(40e3, 0.37, 0.02);
     expect(noisy?.frequencyHalfHz ?? 0).toBeGreaterThan(2 * (quiet?.frequencyHalfHz ?? 0));
-    expect(noisy?.returnLossHalfDb ?? 0).toBeGreaterThan(0.02);
+    const width = (dip: typeof noisy) => (dip ? dip.swr.high - dip.swr.low : Number.NaN);
+    expect(width(noisy)).toBeGreaterThan(width(quiet));
+    expect(noisy?.stepShare).toBeLessThan(quiet?.stepShare ?? 0);
     expect(dipOf(40e3, 0.37, 0.5)).toBeNull();
   });
 });

@@ -18,6 +18,13 @@ describe("how far a fit reaches", () => {
     expect(window(values, 5, 19)).toEqual({ from: 2, to: 9 });
   });
 
+  test("in scatter: between the first sample over SWR 5 and the last one under it", () => {
+    const values = [0.99, 0.9, 0.7, 0.6, 0.68, 0.5, 0.1, 0.5, 0.68, 0.64, 0.7, 0.65, 0.69, 0.9, 0.95];
+    const scattered = (sigma: number) => fitWindow(Float64Array.from(values), 6, 19, 0, 14, sigma);
+    expect(scattered(0)).toEqual({ from: 4, to: 8 });
+    expect(scattered(0.02)).toEqual({ from: 3, to: 9 });
+  });
+
   test("a shallow dip: half of the way to its crest", () => {
     const values = [0.95, 0.94, 0.92, 0.86, 0.78, 0.7, 0.78, 0.86, 0.92, 0.94, 0.95];
     const { from, to } = window(values, 5, 20 * Math.log10(0.95 / 0.7));

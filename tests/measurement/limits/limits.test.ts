@@ -3,8 +3,9 @@ import { analyse } from "../../../app/measurement/analyse.ts";
 import { pointLimits } from "../../../app/measurement/limits/point-limits.ts";
 import { sharesOf, shareWords } from "../../../app/measurement/limits/shares.ts";
 import { shownLimits, trueLimits } from "../../../app/measurement/limits/worst-case.ts";
-import { averageRepeats, repeatDips } from "../../../app/measurement/repeats.ts";
-import { faultsOf } from "../../../scripts/coverage.ts";
+import { repeatDips } from "../../../app/measurement/repeat-dips.ts";
+import { averageRepeats } from "../../../app/measurement/repeats.ts";
+import { ENOUGH, faultsOf, LEAST } from "../../../scripts/coverage.ts";
 import { coverage } from "../../../scripts/trials/coverage.ts";
 import { resonatorSweep } from "../resonators.ts";
 
@@ -47,6 +48,15 @@ describe("dips", () => {
     expect(dip.qLimits?.low ?? 9e9).toBeLessThan(dip.qLow ?? 0);
   });
 
+  test("what a feedline's loss adds to the tracking is told apart, and the shares stay whole", () => {
+    const limits = { ...bench, tracking: even(0.03), feedline: even(0.02) };
+    const { shares } = analyse({ ...sweep, benchLimits: limits }).dips[0];
+    const of = (source: string) => shares.find((share) => share.source === source)?.share ?? 0;
+    expect(of("feedline") / of("tracking")).toBeCloseTo(2, 9);
+    expect(of("feedline") / of("directivity")).toBeCloseTo(0.02 / 6 / 0.01, 6);
+    expect(shares.reduce((sum, { share }) => sum + share, 0)).toBeCloseTo(1, 12);
+  });
+
   test("one error that is not known makes the limits unknown, and says which sweep is missing", () => {
     const [dip] = analyse({ ...sweep, benchLimits: { ...bench, directivity: even(Number.NaN) } }).dips;
     expect([dip.minimumSwrLow, dip.benchFrequencyHalfHz, dip.shares.length]).toEqual([null, null, 0]);
@@ -83,5 +93,5 @@ test("repeats: mean, spread by hand, and a change said aloud", () => {
 });
 
 test("the truth is inside as often as is claimed", { timeout: 120_000 }, () => {
-  expect(coverage(2000, 9).flatMap(faultsOf)).toEqual([]);
+  expect(coverage(2000, 9, LEAST, ENOUGH).flatMap(faultsOf)).toEqual([]);
 });
