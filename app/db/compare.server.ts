@@ -13,11 +13,12 @@ import {
   trails,
   users,
 } from "./schema/index.ts";
+import { withWholeDips } from "./whole-dips.server.ts";
 
 /** Sweeps of any projects, each with its reading and analysis and with what the person is in its project. Who may see them is asked above. */
 export async function findSweeps(publicIds: readonly string[], userId: number | null, tx: Queryable = db) {
   if (publicIds.length === 0) return [];
-  return tx
+  const rows = await tx
     .select({
       sweep: sweeps,
       file: files,
@@ -39,6 +40,7 @@ export async function findSweeps(publicIds: readonly string[], userId: number | 
     .leftJoin(users, eq(users.id, sweeps.createdBy))
     .where(inArray(sweeps.publicId, [...publicIds]))
     .limit(publicIds.length);
+  return rows.map(withWholeDips);
 }
 export type AskedSweep = Awaited<ReturnType<typeof findSweeps>>[number];
 

@@ -57,7 +57,7 @@ export async function findByPublicId(publicId: string, tx: Queryable = db) {
 
 /** Dips of the project's newest sweep that nobody has settled, those with the lowest SWR first. */
 export async function findOpenByProject(projectId: number, limit = 20, tx: Queryable = db) {
-  return tx
+  const rows = await tx
     .select({
       publicId: dips.publicId,
       frequencyHz: dips.frequencyHz,
@@ -85,6 +85,7 @@ export async function findOpenByProject(projectId: number, limit = 20, tx: Query
     )
     .orderBy(asc(dips.minimumSwr))
     .limit(limit);
+  return rows.map((row) => ({ ...row, numbers: completeDip(row.numbers) }));
 }
 
 /** The id of the sweep taken last, among those that were read. */

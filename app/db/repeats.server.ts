@@ -2,10 +2,11 @@ import { and, asc, desc, eq, inArray, isNotNull, ne, sql } from "drizzle-orm";
 import { db, type Queryable } from "./client.server.ts";
 import { analyses, files, readings, sweeps, users } from "./schema/index.ts";
 import type { FoundSweep } from "./sweeps.server.ts";
+import { withWholeDips } from "./whole-dips.server.ts";
 
 /** The sweeps of one group with their readings and analyses, the oldest first. */
 export async function findGroup(projectId: number, group: string, tx: Queryable = db): Promise<FoundSweep[]> {
-  return tx
+  const rows = await tx
     .select({ sweep: sweeps, file: files, reading: readings, analysis: analyses, by: users.name })
     .from(sweeps)
     .innerJoin(files, eq(files.id, sweeps.fileId))
@@ -15,6 +16,7 @@ export async function findGroup(projectId: number, group: string, tx: Queryable 
     .where(and(eq(sweeps.projectId, projectId), eq(sweeps.repeatGroup, group)))
     .orderBy(asc(takenOrIn), asc(sweeps.id))
     .limit(MOST_REPEATS);
+  return rows.map(withWholeDips);
 }
 
 /** Antenna sweeps of the project that were read, the newest first: what could be a repeat of this one. */

@@ -18,6 +18,7 @@ import {
   users,
 } from "./schema/index.ts";
 import { standingVerdict } from "./standing-verdict.server.ts";
+import { withWholeDips } from "./whole-dips.server.ts";
 
 export type SweepRow = typeof sweeps.$inferSelect;
 
@@ -32,7 +33,7 @@ export async function findByPublicId(publicId: string, tx: Queryable = db) {
     .leftJoin(users, eq(users.id, sweeps.createdBy))
     .where(eq(sweeps.publicId, publicId))
     .limit(1);
-  return rows[0];
+  return rows.map(withWholeDips).at(0);
 }
 export type FoundSweep = NonNullable<Awaited<ReturnType<typeof findByPublicId>>>;
 
