@@ -62,6 +62,7 @@ export default [
     route("notes/:note", "routes/notes/note.tsx"),
     route("dips/:dip/verdict", "routes/dips/verdict.ts"),
   ]),
+    route("notes/suggest", "routes/notes/suggest.ts"),
   route("notes/preview", "routes/notes/preview.ts"),
   route("search", "routes/search/search.tsx"),
 

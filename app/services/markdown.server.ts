@@ -1,22 +1,31 @@
 import { Marked } from "marked";
 import sanitizeHtml from "sanitize-html";
+import { decodeHtml, escapeHtml } from "./html-text.ts";
+import { drawLinks, heldSubject, isSubject, NO_LINKS, type NoteLinks } from "./markdown-links.ts";
+import { drawFormulas, MATHS } from "./markdown-maths.server.ts";
 import { MAX_NOTE_CHARACTERS } from "./note-limits.ts";
 
 /**
  * Markdown as people write it in notes → HTML that is safe to put on a page. HTML in the text is shown as text;
- * what the renderer makes goes through a short allow-list all the same.
+ * what the renderer makes goes through a short allow-list all the same. `links`: what is known of whom and what it names.
  */
-export function renderNote(markdown: string): string {
+export function renderNote(markdown: string, links: NoteLinks = NO_LINKS): string {
+  return drawLinks(cleaned(markdown), links);
+}
+
+function cleaned(markdown: string): string {
   const kept = cache.get(markdown);
   if (kept !== undefined) return kept;
-  const html = sanitizeHtml(parse(withinLimit(markdown)), RULES);
+  const html = drawFormulas(sanitizeHtml(parse(withinLimit(markdown)), RULES));
   keep(markdown, html);
   return html;
 }
 
 /** The words alone on one line, for cards and lists: at most `max` characters, cut at a word where it can be. */
 export function plainText(markdown: string, max: number): string {
-  const text = decode(sanitizeHtml(parse(withinLimit(markdown)), { allowedTags: [], allowedAttributes: {} }));
+  const text = decodeHtml(
+    sanitizeHtml(parse(withinLimit(markdown)), { allowedTags: [], allowedAttributes: {} }),
+  );
   const line = text.replace(/\s+/g, " ").trim();
   if (line.length <= max) return line;
   const cut = line.slice(0, Math.max(0, max - 1));
@@ -25,16 +34,30 @@ export function plainText(markdown: string, max: number): string {
   return `${whole.replace(/[\s,;:.–-]+$/, "")}…`;
 }
 
+/** The stretches of running text: what is neither code nor a formula nor an address. */
+export function textsIn(markdown: string): string[] {
+  const texts: string[] = [];
+  try {
+    marked.walkTokens(marked.lexer(withinLimit(markdown)), (token) => {
+      if (token.type === "text" && !("tokens" in token && token.tokens)) texts.push(token.raw);
+    });
+  } catch (error) {
+    if (!(error instanceof RangeError)) throw error;
+  }
+  return texts;
+}
+
 const ALIGNMENTS = ["left", "center", "right"];
 
 const RULES: sanitizeHtml.IOptions = {
   allowedTags: [
     ...["p", "br", "hr", "h3", "h4", "h5", "h6", "ul", "ol", "li", "blockquote", "pre", "code"],
-    ...["em", "strong", "del", "a", "table", "thead", "tbody", "tr", "th", "td"],
+    ...["em", "strong", "del", "a", "table", "thead", "tbody", "tr", "th", "td", "span"],
   ],
   allowedAttributes: {
     a: ["href", "title", "rel"],
     ol: ["start"],
+    span: ["data-formula", "data-subject", "data-shown"],
     th: [{ name: "align", multiple: false, values: ALIGNMENTS }],
     td: [{ name: "align", multiple: false, values: ALIGNMENTS }],
   },
@@ -52,6 +75,7 @@ const HEADINGS_BELOW = 2;
 const marked = new Marked({
   gfm: true,
   async: false,
+  extensions: MATHS,
   renderer: {
     heading({ tokens, depth }) {
       const level = Math.min(6, depth + HEADINGS_BELOW);
@@ -59,7 +83,12 @@ const marked = new Marked({
     },
     html: ({ text, block }) => (block ? `<p>${escapeHtml(text.trim())}</p>\n` : escapeHtml(text)),
     // A picture from elsewhere would tell that place who reads: it becomes a link.
-    image: ({ href, text }) => `<a href="${escapeHtml(href)}">${escapeHtml(text || "picture")}</a>`,
+    image({ href, text, tokens }) {
+      const words = (tokens ? this.parser.parseInline(tokens, this.parser.textRenderer) : text) || "picture";
+      if (isSubject(href)) return heldSubject(href, words, true);
+      return `<a href="${escapeHtml(href)}">${escapeHtml(words)}</a>`;
+    },
+    link: ({ href, text }) => (isSubject(href) ? heldSubject(href, text) : false),
     checkbox: ({ checked }) => (checked ? "☑ " : "☐ "),
   },
 });
@@ -94,19 +123,4 @@ function keep(markdown: string, html: string): void {
     cache.delete(oldest);
     cachedCharacters -= oldest.length + drawn.length;
   }
-}
-
-const ENTITIES: Record<string, string> = { "&": "&amp;", "<": "&lt;", ">": "&gt;", '"': "&quot;" };
-
-function escapeHtml(text: string): string {
-  return text.replace(/[&<>"]/g, (character) => ENTITIES[character]);
-}
-
-function decode(html: string): string {
-  return html
-    .replace(/&lt;/g, "<")
-    .replace(/&gt;/g, ">")
-    .replace(/&quot;/g, '"')
-    .replace(/&#39;/g, "'")
-    .replace(/&amp;/g, "&");
 }

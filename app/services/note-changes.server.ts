@@ -1,9 +1,11 @@
 import { inTransaction, type Transaction } from "~/db/client.server";
 import * as jobs from "~/db/jobs.server";
+import * as noteReferences from "~/db/note-references.server";
 import * as noteVersions from "~/db/note-versions.server";
 import * as notes from "~/db/notes.server";
 import * as projects from "~/db/projects.server";
 import { UNDO_MS } from "./note-limits.ts";
+import { expandNote } from "./note-links.server.ts";
 import { checkedBody, tellOfNote } from "./notes.server.ts";
 
 export type NoteChange = "done" | "missing" | "refused";
@@ -28,15 +30,18 @@ export async function editNote(
     const note = await lockNote(input, tx);
     if (!note || note.removedAt) return "missing";
     if (note.authorId !== input.by.id) return "refused";
-    if (note.body === body) return "done";
+    const before = await noteReferences.findAllByNote(note.id, tx);
+    const expanded = await expandNote(note.projectId, body, before, tx);
+    if (note.body === expanded.body) return "done";
     const revision = revisionOf(note);
     if (input.revision !== undefined && input.revision !== revision) {
       return { changedSince: { body: note.body, revision } };
     }
     const at = input.at ?? new Date();
-    const before = { body: note.body, from: note.editedAt ?? note.createdAt, until: at };
-    await noteVersions.insert({ noteId: note.id, ...before, editedBy: input.by.id }, tx);
-    await notes.updateBody(note.id, body, at, tx);
+    const said = { body: note.body, from: note.editedAt ?? note.createdAt, until: at };
+    await noteVersions.insert({ noteId: note.id, ...said, editedBy: input.by.id }, tx);
+    await notes.updateBody(note.id, checkedBody(expanded.body), at, tx);
+    await noteReferences.replaceAllOfNote(note.id, expanded.references, tx);
     await tellOfNote("note.edited", { publicId: note.publicId, by: input.by, at: input.at }, tx);
     return "done";
   });
@@ -88,6 +93,7 @@ export async function purgeNote(publicId: string, now = new Date()): Promise<voi
     if (!note || !isOver(note, now)) return;
     if (await notes.hasReplies(note.id, tx)) {
       await noteVersions.deleteAllByNote(note.id, tx);
+      await noteReferences.replaceAllOfNote(note.id, [], tx);
       await notes.emptyBody(note.id, tx);
       return;
     }

@@ -1,8 +1,10 @@
 import type { ProjectAction } from "~/auth/permissions";
 import * as notes from "~/db/notes.server";
 import { renderNote } from "./markdown.server.ts";
+import type { NoteLinks } from "./markdown-links.ts";
 import { revisionOf } from "./note-changes.server.ts";
 import { UNDO_MS } from "./note-limits.ts";
+import { loadLinks } from "./note-links.server.ts";
 
 /** Who looks at a thread, as far as it changes what is offered. */
 export interface ThreadViewer {
@@ -37,6 +39,8 @@ export async function listThread(place: notes.NotePlace, viewer: ThreadViewer): 
   const all = await notes.findAllByPlace(place);
   const shown = shownOf(all, viewer);
   const rows = all.filter(({ note }) => shown.has(note.id));
+  const said = rows.flatMap(({ note }) => (note.removedAt ? [] : [note.body]));
+  const links = await loadLinks(place.projectId, said);
   const byId = new Map(rows.map((row) => [row.note.id, row]));
   const drawn = new Map<number, ThreadNote>();
   const heads: ThreadNote[] = [];
@@ -44,14 +48,16 @@ export async function listThread(place: notes.NotePlace, viewer: ThreadViewer): 
     const parent = row.note.parentId === null ? undefined : byId.get(row.note.parentId);
     const head = parent && drawn.get(parent.note.id);
     if (!head) {
-      const note = drawNote(row, viewer, null);
+      const note = drawNote(row, viewer, links, null);
       drawn.set(row.note.id, note);
       heads.push(note);
       continue;
     }
     const deeper = head.publicId !== parent.note.publicId;
     const author = parent.author?.name ?? FORMER;
-    head.replies.push(drawNote(row, viewer, deeper ? { publicId: parent.note.publicId, author } : null));
+    head.replies.push(
+      drawNote(row, viewer, links, deeper ? { publicId: parent.note.publicId, author } : null),
+    );
     // Whoever answers this one is shown under the same head.
     drawn.set(row.note.id, head);
   }
@@ -65,6 +71,7 @@ export function countNotes(thread: ThreadNote[]): number {
 function drawNote(
   { note, author }: notes.ListedNote,
   viewer: ThreadViewer,
+  links: NoteLinks,
   answers: ThreadNote["answers"],
 ): ThreadNote {
   const { person, may } = viewer;
@@ -77,7 +84,7 @@ function drawNote(
     createdAt: note.createdAt,
     editedAt: note.editedAt,
     removed,
-    html: removed ? "" : renderNote(note.body),
+    html: removed ? "" : renderNote(note.body, links),
     body: mayEdit ? note.body : null,
     mayEdit,
     revision: revisionOf(note),

@@ -1,9 +1,11 @@
 import { createHash } from "node:crypto";
 import { inTransaction, isDuplicate, isReferenceBroken, type Transaction } from "~/db/client.server";
+import * as noteReferences from "~/db/note-references.server";
 import * as notes from "~/db/notes.server";
 import * as projects from "~/db/projects.server";
 import { record } from "./events.server.ts";
 import { MAX_NOTE_CHARACTERS } from "./note-limits.ts";
+import { expandNote } from "./note-links.server.ts";
 import { aboutNote } from "./note-places.ts";
 
 export interface WriteNote {
@@ -29,6 +31,9 @@ export async function writeNote(input: WriteNote, tx?: Transaction): Promise<{ p
   const write = async (within: Transaction) => {
     const before = clientKey && (await notes.findByClientKey(clientKey, within));
     if (before) return { publicId: before.publicId };
+    // The project's row first: two who write at once then wait for one another.
+    await projects.update(input.project.id, {}, within);
+    const expanded = await expandNote(input.project.id, body, [], within);
     const parentId = input.parentPublicId
       ? await findParent(input.place, input.parentPublicId, within)
       : null;
@@ -37,13 +42,12 @@ export async function writeNote(input: WriteNote, tx?: Transaction): Promise<{ p
       projectId: input.project.id,
       parentId,
       authorId: input.author.id,
-      body,
+      body: checkedBody(expanded.body),
       clientKey,
       ...(input.createdAt ? { createdAt: input.createdAt } : {}),
     };
-    // The project's row first: two who write at once then wait for one another.
-    await projects.update(input.project.id, {}, within);
-    const { publicId } = await notes.insert(values, within);
+    const { id, publicId } = await notes.insert(values, within);
+    await noteReferences.replaceAllOfNote(id, expanded.references, within);
     await tellOfNote("note.added", { publicId, by: input.author, at: input.createdAt }, within);
     return { publicId };
   };

@@ -483,3 +483,5 @@ export const EXPECTATIONS: Record<string, Expectation> = {
   "routes/api/causes.ts": { GET: apiRead, POST: notHere },
   "routes/api/missing.ts": { GET: [{ ask: { status: 404 } }], POST: [{ ask: { status: 404 } }] },
 };
+  "routes/notes/history.tsx": { GET: read },
+  "routes/notes/suggest.ts": { GET: [{ ask: { project: "note.write" } }] },

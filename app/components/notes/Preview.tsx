@@ -5,14 +5,14 @@ import { useHydrated } from "~/components/ui/hydrated";
 import { Markdown } from "~/components/ui/Markdown";
 
 /** How the text will look, drawn by the server as every note is; asked for, and again when the text is another. */
-export function Preview({ text }: { text: string }) {
+export function Preview({ text, projectId }: { text: string; projectId: string }) {
   const fetcher = useFetcher<{ html: string }>();
   const hydrated = useHydrated();
   const [shown, setShown] = useState<string | null>(null);
   if (!hydrated || text.trim() === "") return null;
   const ask = () => {
     setShown(text);
-    fetcher.submit({ body: text }, { method: "post", action: "/notes/preview" });
+    fetcher.submit({ body: text, project: projectId }, { method: "post", action: "/notes/preview" });
   };
   const current = shown === text;
   return (

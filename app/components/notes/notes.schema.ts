@@ -39,4 +39,4 @@ export const changeNoteSchema = z.discriminatedUnion("intent", [
   z.object({ intent: z.literal("restore"), returnTo: z.string().optional() }),
 ]);
 
-export const previewSchema = z.object({ body: z.string().default("") });
+export const previewSchema = z.object({ body: z.string().default(""), project: publicId.optional() });

@@ -5,6 +5,7 @@ import { DateTime } from "~/components/ui/DateTime";
 import { Markdown } from "~/components/ui/Markdown";
 import * as noteVersions from "~/db/note-versions.server";
 import { renderNote } from "~/services/markdown.server";
+import { loadLinks } from "~/services/note-links.server";
 import type { Route } from "./+types/history";
 import { requireNote } from "./require-note.server.ts";
 
@@ -15,12 +16,15 @@ export async function loader(args: Route.LoaderArgs) {
   const { project } = await requireProject(args, "project.read");
   const { note, author } = await requireNote(project.id, args.params.note);
   const versions = await noteVersions.findAllByNote(note.id);
+  const links = await loadLinks(project.id, [note.body, ...versions.map(({ body }) => body)]);
   const last = versions[versions.length - 1];
   return {
     address: `/projects/${project.publicId}/notes/${note.publicId}`,
     author: author?.name ?? "A former member",
-    now: { html: renderNote(note.body), from: last?.until ?? note.createdAt },
-    before: versions.toReversed().map(({ body, from, until }) => ({ html: renderNote(body), from, until })),
+    now: { html: renderNote(note.body, links), from: last?.until ?? note.createdAt },
+    before: versions
+      .toReversed()
+      .map(({ body, from, until }) => ({ html: renderNote(body, links), from, until })),
   };
 }
 
