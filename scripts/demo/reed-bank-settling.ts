@@ -112,9 +112,9 @@ function asItStays(): Step[] {
   const settle = (nearMhz: number, name: string, settled: string, minute: number) =>
     followed("ada-marsh", on(4, 18, 12, minute), { sweep: "final", nearMhz }, { name, settled });
   return [
-    settle(7.12, "Long element", "Long element, quarter wave", 10),
-    settle(18.16, "Short element", "Short element, quarter wave", 11),
-    settle(21.5, "Long element, third", "Long element, three quarter waves", 12),
+    settle(7.12, "Long element", "Quarter wave: moved with its length", 10),
+    settle(18.16, "Short element", "Quarter wave: moved with its length", 11),
+    settle(21.5, "Long element, third", "Three quarter waves: moved with the first", 12),
     decided(
       "dov-heron",
       on(4, 18, 13, 30),

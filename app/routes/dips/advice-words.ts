@@ -22,11 +22,11 @@ export function trimWords(
 ): TrimWords {
   const { lowM, highM, changeM, method, farOut } = trim;
   const known = lowM !== null && highM !== null;
-  const interval = known ? `${formatLength(lowM, unit)} to ${formatLength(highM, unit)}` : "";
+  const interval = known ? `${formatLength(lowM, unit)} and ${formatLength(highM, unit)}` : "";
   const limits =
     method === "line"
       ? known
-        ? `Between ${interval} (95 %), by the line through ${lengthsSeen} lengths that its trail has seen.`
+        ? `Between ${interval} (95 %), by the line through the ${lengthsSeen} lengths that its trail has seen.`
         : "Limits unknown: the lengths seen so far do not tell them."
       : known
         ? `Usually between ${interval}: one length alone does not say how closely the dip follows it.`

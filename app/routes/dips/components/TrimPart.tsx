@@ -3,20 +3,20 @@ import { LinkButton } from "~/components/ui/Button";
 import type { DipPageData } from "../dip";
 
 /** What to make of a length so that the dip comes to its design band, and the step that does it. */
-export function TrimPart({ data: { judgement, projectId } }: { data: DipPageData }) {
+export function TrimPart({ data: { judgement, projectId }, inside }: { data: DipPageData; inside: boolean }) {
   const trims = judgement.advice?.trims ?? [];
   if (trims.length === 0) return null;
   return (
     <div className="grid gap-3">
       <h3>
-        <Link to="/methods#trim">To bring it there</Link>
+        <Link to="/methods#trim">{inside ? "To bring it to the middle" : "To bring it there"}</Link>
       </h3>
       <ul className="grid gap-4">
         {trims.map(({ part, words, changedSince, plan }) => (
           <li key={part} className="trim">
             <p>
-              If it is {part === "feedline" ? "the feedline's" : "this part's"}:{" "}
-              <strong className="font-mono font-semibold">{words.change}</strong>, {words.aim}.
+              <strong className="font-mono font-semibold">{words.change}</strong>, {words.aim}, if the dip is
+              of this part.
             </p>
             <p className="text-small">
               {words.limits} {words.mind}

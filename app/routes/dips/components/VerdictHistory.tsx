@@ -13,7 +13,9 @@ export function VerdictHistory({ data: { judgement, projectId } }: { data: DipPa
       <ol className="grid gap-3 text-small" aria-label="Verdicts so far, newest first">
         {history.map(({ publicId, verdict, text, by, at, evidence, ofTrail }) => (
           <li key={publicId} className="verdict-event">
-            <VerdictTag verdict={verdict} />
+            <p>
+              <VerdictTag verdict={verdict} />
+            </p>
             <div className="grid gap-1 min-w-0">
               <p>{text}</p>
               <p className="soft">
@@ -24,6 +26,7 @@ export function VerdictHistory({ data: { judgement, projectId } }: { data: DipPa
                 <ul className="list-disc pl-5" aria-label="On the evidence of">
                   {evidence.map((one) => (
                     <li key={`${one.kind} ${one.id}`}>
+                      <span className="soft">{KIND_WORDS[one.kind]}</span>{" "}
                       <EvidenceLine one={one} projectId={projectId} />
                     </li>
                   ))}
@@ -60,3 +63,5 @@ function EvidenceLine({
       return kind satisfies never;
   }
 }
+
+const KIND_WORDS = { cause: "Reckoned:", sweep: "Sweep", step: "Step", note: "Note by", dip: "Dip" } as const;

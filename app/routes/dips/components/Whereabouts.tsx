@@ -24,7 +24,7 @@ export function Whereabouts({ data }: { data: DipPageData }) {
           ))}
         </ul>
       )}
-      <TrimPart data={data} />
+      <TrimPart data={data} inside={designBands.some((band) => holds(band, hz))} />
       <p>
         {allocation
           ? `${regionWords(region)}, ${allocation.name} is allocated to amateurs here`
