@@ -19,6 +19,7 @@ export default [
   layout("routes/projects/layout.tsx", [
     ...prefix("projects/:project", [
       index("routes/projects/project.tsx"),
+      route("activity", "routes/activity/activity.tsx"),
       route("members", "routes/projects/members.tsx"),
       route("settings", "routes/projects/settings.tsx"),
       route("sweeps", "routes/sweeps/list.tsx"),
@@ -46,6 +47,7 @@ export default [
   ]),
       route("notes/:note/history", "routes/notes/history.tsx"),
   ...prefix("projects/:project", [
+    route("activity.atom", "routes/activity/feed.ts"),
     route("sweeps/upload", "routes/sweeps/upload.ts"),
     route("sweeps/:sweep/original", "routes/sweeps/original.ts"),
     route("sweeps/:sweep/picture", "routes/sweeps/picture.ts"),

@@ -427,6 +427,19 @@ export const EXPECTATIONS: Record<string, Expectation> = {
   },
 
   "routes/search/search.tsx": { GET: anybody },
+  "routes/activity/activity.tsx": {
+    GET: read,
+    POST: [
+      { name: "seen", ask: { membership: true }, form: () => ({ intent: "seen", mark: "none" }) },
+      { name: "make-feed", ask: { membership: true }, form: () => ({ intent: "make-feed" }) },
+      {
+        name: "revoke-feed",
+        ask: { membership: true },
+        form: () => ({ intent: "revoke-feed", feed: "nothing" }),
+      },
+    ],
+  },
+  "routes/activity/feed.ts": { GET: read },
 
   "routes/admin/admin.tsx": {
     GET: [{ ask: { site: "site.administer" } }],

@@ -1,12 +1,15 @@
 import { NavLink, Outlet } from "react-router";
 import { requireProject } from "~/auth/require.server";
+import { LiveProject } from "~/components/live/LiveProject";
+import { Looking } from "~/components/live/Looking";
 import { Breadcrumbs } from "~/components/ui/Breadcrumbs";
 import { Tag } from "~/components/ui/Tag";
+import { markOf } from "~/services/live-marks.server";
 import type { Route } from "./+types/layout";
 
 /** The head of every page of a project. What is under it asks for access itself. */
 export async function loader(args: Route.LoaderArgs) {
-  const { project, membership, may } = await requireProject(args, "project.read");
+  const { project, membership, may, lastEventId } = await requireProject(args, "project.read");
   return {
     project: {
       id: project.publicId,
@@ -16,42 +19,47 @@ export async function loader(args: Route.LoaderArgs) {
     },
     membership,
     mayEdit: may("project.edit"),
+    mark: markOf(project.id, lastEventId),
   };
 }
 
 export default function ProjectLayout({ loaderData }: Route.ComponentProps) {
-  const { project, membership, mayEdit } = loaderData;
+  const { project, membership, mayEdit, mark } = loaderData;
   const base = `/projects/${project.id}`;
   return (
-    <div className="space-y-6">
-      <header className="space-y-2">
-        {membership && <Breadcrumbs items={[{ label: "Projects", to: "/projects" }]} />}
-        <div className="flex flex-wrap items-center gap-x-3 gap-y-1">
-          <h1 className="text-title">{project.title}</h1>
-          <Tag tone={project.visibility === "private" ? "plain" : "fen"}>{project.visibility}</Tag>
-          {membership && <Tag>you: {membership}</Tag>}
-          {project.demo && <Tag tone="clay">invented data</Tag>}
-        </div>
-        {project.demo && (
-          <p className="soft text-small max-w-[72ch]">
-            A demonstration: the people, places, call signs and numbers of this project are invented.
-          </p>
-        )}
-        <nav
-          aria-label="Project"
-          className="project-tabs no-print flex flex-wrap gap-x-5 border-b border-rule"
-        >
-          <Tab to={base} end label="Story" />
-          <Tab to={`${base}/sweeps`} label="Sweeps" />
-          <Tab to={`${base}/benches`} label="Benches" />
-          <Tab to={`${base}/antenna`} label="Antenna" />
-          <Tab to={`${base}/steps`} label="Steps" />
-          <Tab to={`${base}/members`} label="Members" />
-          {mayEdit && <Tab to={`${base}/settings`} label="Settings" />}
-        </nav>
-      </header>
-      <Outlet />
-    </div>
+    <LiveProject key={project.id} projectId={project.id} mark={mark} member={membership !== null}>
+      <div className="space-y-6">
+        <header className="space-y-2">
+          {membership && <Breadcrumbs items={[{ label: "Projects", to: "/projects" }]} />}
+          <div className="flex flex-wrap items-center gap-x-3 gap-y-1">
+            <h1 className="text-title">{project.title}</h1>
+            <Tag tone={project.visibility === "private" ? "plain" : "fen"}>{project.visibility}</Tag>
+            {membership && <Tag>you: {membership}</Tag>}
+            {project.demo && <Tag tone="clay">invented data</Tag>}
+          </div>
+          {project.demo && (
+            <p className="soft text-small max-w-[72ch]">
+              A demonstration: the people, places, call signs and numbers of this project are invented.
+            </p>
+          )}
+          <nav
+            aria-label="Project"
+            className="project-tabs no-print flex flex-wrap gap-x-5 border-b border-rule"
+          >
+            <Tab to={base} end label="Story" />
+            <Tab to={`${base}/sweeps`} label="Sweeps" />
+            <Tab to={`${base}/benches`} label="Benches" />
+            <Tab to={`${base}/antenna`} label="Antenna" />
+            <Tab to={`${base}/steps`} label="Steps" />
+            <Tab to={`${base}/activity`} label="Activity" />
+            <Tab to={`${base}/members`} label="Members" />
+            {mayEdit && <Tab to={`${base}/settings`} label="Settings" />}
+          </nav>
+          {membership && <Looking />}
+        </header>
+        <Outlet />
+      </div>
+    </LiveProject>
   );
 }
 

@@ -4,6 +4,8 @@ import { Thread } from "~/components/notes/Thread";
 import { RelativeTime } from "~/components/ui/DateTime";
 import { Markdown } from "~/components/ui/Markdown";
 import { VerdictTag } from "~/components/ui/Tag";
+import { SinceLast } from "~/routes/activity/components/SinceLast";
+import { sinceLast } from "~/services/activity.server";
 import type { Route } from "./+types/project";
 import { StripSection } from "./components/strip/StripSection.tsx";
 import { TrailTable } from "./components/TrailTable.tsx";
@@ -11,7 +13,12 @@ import { loadProjectPage } from "./project-page.server.ts";
 
 export async function loader(args: Route.LoaderArgs) {
   const access = await requireProject(args, "project.read");
-  return loadProjectPage(access, new URL(args.request.url).searchParams);
+  const { project, person, membership } = access;
+  const [page, since] = await Promise.all([
+    loadProjectPage(access, new URL(args.request.url).searchParams),
+    person && membership ? sinceLast(project, person.id) : null,
+  ]);
+  return { ...page, since };
 }
 
 export const meta: Route.MetaFunction = ({ data }) => [
@@ -22,6 +29,7 @@ export default function Project({ loaderData }: Route.ComponentProps) {
   const { project, summaryHtml, thread, may, map } = loaderData;
   return (
     <div className="grid gap-10">
+      {loaderData.since && <SinceLast projectId={project.publicId} since={loaderData.since} />}
       {summaryHtml && <Markdown html={summaryHtml} />}
       <StripSection data={loaderData} />
       <div className="project-page">
