@@ -92,7 +92,7 @@ describe("no edge, shared, none", () => {
 
   test("lowest SWR equal to the limit has the width of a point", () => {
     const sweep = sweepOf([0.9, 0.5, 1 / 3, 0.5, 0.9]);
-    const input = { sweep, index: 2, swrLimit: 2, shared: false, fit: null, noise: 0 };
+    const input = { sweep, index: 2, swrLimit: 2, shared: false, fit: null, noise: { db: 0, gamma: 0 } };
     const stretch = stretchAround(sweep.magnitude, 2, 1 / 3);
     expect(bandwidthOf({ ...input, lowest: 1 / 3, stretch })?.widthHz).toBeLessThan(1);
   });
