@@ -8,5 +8,5 @@ export const lookingSchema = z.object({
   subject: z
     .string()
     .regex(/^[0-9a-z]{1,16}$/)
-    .optional(),
+    .default("story"),
 });

@@ -11,7 +11,7 @@ export async function action(args: Route.ActionArgs) {
   if (!person || !membership) throw refused("Only members of the project are shown as looking.");
   const parsed = lookingSchema.safeParse(Object.fromEntries(await args.request.formData()));
   if (!parsed.success) throw data("That does not say what is looked at.", 400);
-  const { window, away, kind, subject = project.publicId } = parsed.data;
+  const { window, away, kind, subject } = parsed.data;
   if (away) await lookAway({ by: person, window });
   else await look({ project, by: person, window, kind, subject });
   return new Response(null, { status: 204 });
