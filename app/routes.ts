@@ -48,6 +48,9 @@ export default [
       route("notes/:note/history", "routes/notes/history.tsx"),
   ...prefix("projects/:project", [
     route("activity.atom", "routes/activity/feed.ts"),
+      route("notes/:note/history", "routes/notes/history.tsx"),
+      route("attachments/:attachment/sweep", "routes/attachments/sweep.tsx"),
+      route("notes/:note/report", "routes/notes/report.tsx"),
     route("sweeps/upload", "routes/sweeps/upload.ts"),
     route("sweeps/:sweep/original", "routes/sweeps/original.ts"),
     route("sweeps/:sweep/picture", "routes/sweeps/picture.ts"),
@@ -64,6 +67,8 @@ export default [
     route("notes/:note", "routes/notes/note.tsx"),
     route("dips/:dip/verdict", "routes/dips/verdict.ts"),
   ]),
+    route("attachments", "routes/attachments/attachments.ts"),
+    route("attachments/:attachment/:size", "routes/attachments/attachment.ts"),
     route("notes/suggest", "routes/notes/suggest.ts"),
   route("notes/preview", "routes/notes/preview.ts"),
   route("search", "routes/search/search.tsx"),

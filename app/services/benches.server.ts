@@ -5,6 +5,7 @@ import * as jobs from "~/db/jobs.server";
 import type { BenchPart } from "~/db/schema";
 import * as sweeps from "~/db/sweeps.server";
 import type { BenchGiven, BenchStandards } from "~/measurement/bench";
+import { deleteAttachmentsUnder } from "./attachments.server.ts";
 import { record } from "./events.server.ts";
 import { type Merged, mergeEdit } from "./merge-edit.ts";
 import { deletePhotographsOf } from "./photographs.server.ts";
@@ -142,6 +143,7 @@ export function deleteBench(bench: benches.BenchRow): Promise<boolean> {
       tx,
     );
     for (const file of files) await sweeps.deleteByFileId(file.id, tx);
+    await deleteAttachmentsUnder({ benchId: bench.id }, tx);
     await benches.deleteById(bench.id, tx);
     return true;
   });

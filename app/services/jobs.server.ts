@@ -1,8 +1,10 @@
+import * as attachments from "~/db/attachments.server";
 import * as emailCodes from "~/db/email-codes.server";
 import * as jobs from "~/db/jobs.server";
 import * as photographs from "~/db/photographs.server";
 import * as sessions from "~/db/sessions.server";
 import * as sweeps from "~/db/sweeps.server";
+import { dropUnsent } from "./attachments.server.ts";
 import { log } from "./log.server.ts";
 import { purgeNote } from "./note-changes.server.ts";
 import { deleteObject } from "./storage.server.ts";
@@ -12,9 +14,10 @@ import { deleteObject } from "./storage.server.ts";
 const KINDS: Record<string, (payload: never) => Promise<void>> = {
   /** Removes a stored object unless a row says that it is in use. */
   "delete-object": async ({ key }: { key: string }) => {
-    const rows = key.startsWith("photographs/") ? photographs : sweeps;
+    const rows = ROWS_OF[key.split("/")[0]] ?? sweeps;
     if (!(await rows.isStorageKeyUsed(key))) await deleteObject(key);
   },
+  "drop-attachment": ({ attachment }: { attachment: string }) => dropUnsent(attachment),
   "purge-note": ({ note }: { note: string }) => purgeNote(note),
 };
 
@@ -65,6 +68,12 @@ export async function runDueJobs(): Promise<number> {
   }
   return done;
 }
+
+/** Where the rows are that use an object, by the first part of its key; else those of sweeps' files. */
+const ROWS_OF: Record<string, { isStorageKeyUsed: (key: string) => Promise<boolean> }> = {
+  photographs,
+  attachments,
+};
 
 const BATCH = 20;
 const LEASE_MS = 60_000;

@@ -1,11 +1,13 @@
+import * as attachments from "~/db/attachments.server";
 import { inTransaction, type Transaction } from "~/db/client.server";
 import * as jobs from "~/db/jobs.server";
 import * as noteReferences from "~/db/note-references.server";
 import * as noteVersions from "~/db/note-versions.server";
 import * as notes from "~/db/notes.server";
 import * as projects from "~/db/projects.server";
+import { deleteAttachmentsOfNote } from "./attachments.server.ts";
 import { UNDO_MS } from "./note-limits.ts";
-import { expandNote } from "./note-links.server.ts";
+import { attachmentsIn, expandNote } from "./note-links.server.ts";
 import { checkedBody, tellOfNote } from "./notes.server.ts";
 
 export type NoteChange = "done" | "missing" | "refused";
@@ -42,6 +44,8 @@ export async function editNote(
     await noteVersions.insert({ noteId: note.id, ...said, editedBy: input.by.id }, tx);
     await notes.updateBody(note.id, checkedBody(expanded.body), at, tx);
     await noteReferences.replaceAllOfNote(note.id, expanded.references, tx);
+    const given = { projectId: note.projectId, by: input.by.id, publicIds: attachmentsIn(expanded.body) };
+    await attachments.giveToNote(note.id, given, tx);
     await tellOfNote("note.edited", { publicId: note.publicId, by: input.by, at: input.at }, tx);
     return "done";
   });
@@ -91,6 +95,7 @@ export async function purgeNote(publicId: string, now = new Date()): Promise<voi
     const found = await notes.findByPublicId(publicId, tx);
     const note = found && (await notes.lock(found.note.id, tx));
     if (!note || !isOver(note, now)) return;
+    await deleteAttachmentsOfNote(note.id, tx);
     if (await notes.hasReplies(note.id, tx)) {
       await noteVersions.deleteAllByNote(note.id, tx);
       await noteReferences.replaceAllOfNote(note.id, [], tx);

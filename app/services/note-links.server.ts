@@ -1,21 +1,35 @@
+import type { ProjectAction } from "~/auth/permissions";
+import * as attachments from "~/db/attachments.server";
 import type { Queryable } from "~/db/client.server";
 import type { NewReference } from "~/db/note-references.server";
 import * as subjects from "~/db/note-subjects.server";
 import { textsIn } from "./markdown.server.ts";
-import { type NoteLinks, type SubjectKind, subjectsIn } from "./markdown-links.ts";
-import { asLabel, dipWords, plateWords, stepWords, sweepWords } from "./note-words.ts";
+import { type NoteLinks, type ShownAttachment, type SubjectKind, subjectsIn } from "./markdown-links.ts";
+import { asLabel, dipWords, plateWords, sizeWords, stepWords, sweepWords } from "./note-words.ts";
+
+/** For whom a text is drawn, as far as it changes what is offered. */
+export interface LinkReader {
+  person: { id: number } | null;
+  may: (action: ProjectAction) => boolean;
+}
 
 /** What is known now of everybody and everything that these texts name, of this project alone. */
-export async function loadLinks(projectId: number, bodies: string[], tx?: Queryable): Promise<NoteLinks> {
+export async function loadLinks(projectId: number, bodies: string[], reader: LinkReader): Promise<NoteLinks> {
   const named = [...new Set(bodies.flatMap(subjectsIn))];
-  const [people, references] = await Promise.all([
-    subjects.findPeople(projectId, { publicIds: idsOf(named, "person") }, tx),
-    findReferences(projectId, named, tx),
+  const [people, references, files] = await Promise.all([
+    subjects.findPeople(projectId, { publicIds: idsOf(named, "person") }),
+    findReferences(projectId, named),
+    attachments.findShown(projectId, idsOf(named, "attachment"), reader.person?.id ?? null),
   ]);
   return {
     people: new Map(people.map(({ publicId, name }) => [`person:${publicId}`, name])),
     references,
-    attachments: new Map(),
+    attachments: new Map(
+      files.map(({ attachment, project }) => {
+        const shown = shownAttachment(attachment, project, reader.may("sweep.add"));
+        return [`attachment:${attachment.publicId}`, shown];
+      }),
+    ),
   };
 }
 
@@ -74,6 +88,27 @@ export async function expandNote(
       return known.has(subject) && words !== undefined ? [{ kind, subject: id, text: words }] : [];
     }),
     mentioned: there.filter((subject) => names.has(subject)).map((subject) => subject.split(":")[1]),
+  };
+}
+
+/** Public ids of the attachments that a text names. */
+export function attachmentsIn(body: string): string[] {
+  return idsOf(subjectsIn(body), "attachment");
+}
+
+function shownAttachment(
+  { publicId, name, sizeBytes, width, height }: attachments.AttachmentRow,
+  project: string,
+  mayTakeIn: boolean,
+): ShownAttachment {
+  const path = `/projects/${project}/attachments/${publicId}`;
+  const picture = width !== null && height !== null ? { width, height } : null;
+  return {
+    path,
+    name,
+    size: sizeWords(sizeBytes),
+    picture,
+    sweepPath: !picture && mayTakeIn ? `${path}/sweep` : null,
   };
 }
 

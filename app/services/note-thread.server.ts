@@ -1,4 +1,5 @@
 import type { ProjectAction } from "~/auth/permissions";
+import * as blocks from "~/db/blocks.server";
 import * as notes from "~/db/notes.server";
 import { renderNote } from "./markdown.server.ts";
 import type { NoteLinks } from "./markdown-links.ts";
@@ -19,6 +20,10 @@ export interface ThreadNote {
   createdAt: Date;
   editedAt: Date | null;
   removed: boolean;
+  /** By somebody whom the viewer blocked: shown only when unfolded. */
+  folded: boolean;
+  /** Somebody else's, seen by somebody who is signed in. */
+  mayReport: boolean;
   html: string;
   /** As it was written; only for who may edit it. */
   body: string | null;
@@ -35,12 +40,16 @@ export interface ThreadNote {
 }
 
 /** The notes of one place, ready for drawing: oldest first, with all that answers each under it. */
-export async function listThread(place: notes.NotePlace, viewer: ThreadViewer): Promise<ThreadNote[]> {
-  const all = await notes.findAllByPlace(place);
+export async function listThread(place: notes.NotePlace, whose: ThreadViewer): Promise<ThreadNote[]> {
+  const [all, blocked] = await Promise.all([
+    notes.findAllByPlace(place),
+    whose.person ? blocks.findBlockedIds(whose.person.id) : [],
+  ]);
+  const viewer = { ...whose, blocked: new Set(blocked) };
   const shown = shownOf(all, viewer);
   const rows = all.filter(({ note }) => shown.has(note.id));
   const said = rows.flatMap(({ note }) => (note.removedAt ? [] : [note.body]));
-  const links = await loadLinks(place.projectId, said);
+  const links = await loadLinks(place.projectId, said, viewer);
   const byId = new Map(rows.map((row) => [row.note.id, row]));
   const drawn = new Map<number, ThreadNote>();
   const heads: ThreadNote[] = [];
@@ -70,7 +79,7 @@ export function countNotes(thread: ThreadNote[]): number {
 
 function drawNote(
   { note, author }: notes.ListedNote,
-  viewer: ThreadViewer,
+  viewer: ThreadViewer & { blocked: ReadonlySet<number> },
   links: NoteLinks,
   answers: ThreadNote["answers"],
 ): ThreadNote {
@@ -84,6 +93,8 @@ function drawNote(
     createdAt: note.createdAt,
     editedAt: note.editedAt,
     removed,
+    folded: !removed && author !== null && viewer.blocked.has(author.id),
+    mayReport: !removed && person !== null && note.authorId !== person.id,
     html: removed ? "" : renderNote(note.body, links),
     body: mayEdit ? note.body : null,
     mayEdit,

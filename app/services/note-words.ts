@@ -28,6 +28,12 @@ export function plateWords(plate: {
   return `Plate ${plate.number}${version}: ${plate.title}${plate.withdrawnAt ? " (withdrawn)" : ""}`;
 }
 
+/** `812 bytes`, `14 kB`, `2.3 MB`. */
+export function sizeWords(bytes: number): string {
+  if (bytes < 1000) return `${bytes} bytes`;
+  return bytes < 1_000_000 ? `${Math.round(bytes / 1000)} kB` : `${(bytes / 1_000_000).toFixed(1)} MB`;
+}
+
 /** As the label of a link in Markdown: on one line, no longer than a reference may be, its brackets kept from ending it. */
 export function asLabel(words: string): string {
   const line = words.replace(/[\\`\s]+/g, " ").trim();

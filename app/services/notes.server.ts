@@ -1,11 +1,12 @@
 import { createHash } from "node:crypto";
+import * as attachments from "~/db/attachments.server";
 import { inTransaction, isDuplicate, isReferenceBroken, type Transaction } from "~/db/client.server";
 import * as noteReferences from "~/db/note-references.server";
 import * as notes from "~/db/notes.server";
 import * as projects from "~/db/projects.server";
 import { record } from "./events.server.ts";
 import { MAX_NOTE_CHARACTERS } from "./note-limits.ts";
-import { expandNote } from "./note-links.server.ts";
+import { attachmentsIn, expandNote } from "./note-links.server.ts";
 import { aboutNote } from "./note-places.ts";
 
 export interface WriteNote {
@@ -48,6 +49,8 @@ export async function writeNote(input: WriteNote, tx?: Transaction): Promise<{ p
     };
     const { id, publicId } = await notes.insert(values, within);
     await noteReferences.replaceAllOfNote(id, expanded.references, within);
+    const publicIds = attachmentsIn(expanded.body);
+    await attachments.giveToNote(id, { projectId: input.project.id, by: input.author.id, publicIds }, within);
     await tellOfNote("note.added", { publicId, by: input.author, at: input.createdAt }, within);
     return { publicId };
   };

@@ -1,4 +1,6 @@
 import type { ProjectRole } from "~/auth/permissions";
+import * as attachments from "~/db/attachments.server";
+import * as blocks from "~/db/blocks.server";
 import { inTransaction, isDuplicate, type Transaction } from "~/db/client.server";
 import * as jobs from "~/db/jobs.server";
 import * as people from "~/db/people.server";
@@ -22,7 +24,11 @@ export function deleteProject(id: number): Promise<void> {
   return inTransaction(async (tx) => {
     // Locked before the keys are read: an upload under way is either seen here or finds no project.
     await projects.lock(id, tx);
-    const keys = [...(await sweeps.findStorageKeys(id, tx)), ...(await photographs.findStorageKeys(id, tx))];
+    const keys = [
+      ...(await sweeps.findStorageKeys(id, tx)),
+      ...(await photographs.findStorageKeys(id, tx)),
+      ...(await attachments.findStorageKeys(id, tx)),
+    ];
     await jobs.insertAll(
       "delete-object",
       keys.map((key) => ({ key })),

@@ -5,6 +5,7 @@ import * as steps from "~/db/steps.server";
 import type { ExpectedPlace, StepQuantity } from "~/measurement/antenna";
 import { applyQuantities } from "./antenna-changes.ts";
 import { antennaAt, insertVersion, withdrawVersion } from "./antennas.server.ts";
+import { deleteAttachmentsUnder } from "./attachments.server.ts";
 import { record } from "./events.server.ts";
 import { mergeEdit } from "./merge-edit.ts";
 import { deletePhotographsOf } from "./photographs.server.ts";
@@ -142,6 +143,7 @@ export function deleteStep(
     await projects.lock(actor.projectId, tx);
     await withdrawFrom(step.id, actor.projectId, tx);
     await deletePhotographsOf({ projectId: actor.projectId, stepId: step.id }, tx);
+    await deleteAttachmentsUnder({ stepId: step.id }, tx);
     await steps.deleteById(step.id, tx);
     await tell("step.deleted", step, actor, tx);
   });

@@ -8,6 +8,7 @@ import type { Feedline } from "~/measurement/feedline";
 import { type AnalysisSettings, DEFAULT_SETTINGS, type Plane } from "~/measurement/sweep";
 import type { Given, ReadProblem } from "~/readers/reading";
 import { storeAnalysis } from "./analyses.server.ts";
+import { deleteAttachmentsUnder } from "./attachments.server.ts";
 import { correctAsRead } from "./correction.server.ts";
 import { record } from "./events.server.ts";
 import { storeOutcome } from "./intake.server.ts";
@@ -242,6 +243,7 @@ export async function deleteSweep(found: sweeps.FoundSweep, by: number): Promise
       gone.map(({ dip }) => dip.id),
       tx,
     );
+    await deleteAttachmentsUnder({ sweepId: id }, tx);
     await sweeps.deleteByFileId(found.file.id, tx);
     await refreshTrails(projectId, tx);
     await tellOfSweep("sweep.deleted", found.sweep, by, tx);

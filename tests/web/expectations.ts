@@ -498,3 +498,17 @@ export const EXPECTATIONS: Record<string, Expectation> = {
 };
   "routes/notes/history.tsx": { GET: read },
   "routes/notes/suggest.ts": { GET: [{ ask: { project: "note.write" } }] },
+  "routes/notes/history.tsx": { GET: read },
+  "routes/notes/report.tsx": {
+    GET: [{ ask: { signedIn: "project.read" } }],
+    POST: [{ ask: { signedIn: "project.read" }, form: () => ({ reason: "A walk." }) }],
+  },
+  "routes/attachments/attachments.ts": {
+    POST: [{ ask: { project: "note.write" }, form: () => ({ file: sweepFile() }) }],
+  },
+  "routes/attachments/attachment.ts": { GET: read },
+  "routes/attachments/sweep.tsx": {
+    GET: [{ ask: { project: "sweep.add" } }],
+    POST: [{ ask: { project: "sweep.add" }, form: () => ({}) }],
+  },
+  "routes/notes/suggest.ts": { GET: [{ ask: { project: "note.write" } }] },

@@ -210,6 +210,8 @@ function fill(path: string, place: Place): string {
     .replace("*", "no/such/thing");
 }
 
+    .replace(":attachment/:size", `${place.attachment}/file`)
+    .replace(":attachment", place.attachment)
 function personOf(actor: Actor): Someone | null {
   if (actor === "visitor") return null;
   return actor in crew ? crew[actor as ProjectRole] : others[actor as keyof typeof others];

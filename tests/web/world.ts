@@ -65,6 +65,8 @@ export interface Place {
   /** That its dip is on. */
   trail: string;
 }
+  /** In a note on the project. */
+  attachment: string;
 
 export type Crew = Record<ProjectRole, Someone>;
 
@@ -79,7 +81,17 @@ export async function makePlace(crew: Crew, visibility: Visibility, empty = fals
   await projects.insertMember(project.id, second.id, "owner");
   const place = { title, visibility, project: project.publicId, projectId: project.id };
   if (empty)
-    return { ...place, sweep: "", dip: "", note: "", bench: "", photograph: "", step: "", trail: "" };
+    return {
+      ...place,
+      sweep: "",
+      dip: "",
+      note: "",
+      bench: "",
+      photograph: "",
+      attachment: "",
+      step: "",
+      trail: "",
+    };
   const token = await tokenOf(crew.owner);
   const answer = await sendSweep(project.publicId, token, touchstone());
   if (answer.status !== 201) throw new Error(`No sweep: ${answer.status} ${await answer.text()}`);
@@ -109,6 +121,7 @@ export async function makePlace(crew: Crew, visibility: Visibility, empty = fals
     bench: bench.publicId,
     photograph,
     step,
+  const attachment = await attachFile(project, crew.owner);
     trail: await trailOf(project.id),
   };
 }
@@ -117,6 +130,7 @@ export async function makeCrew(): Promise<Crew> {
   return {
     owner: await makePerson("owner"),
     experimenter: await makePerson("experimenter"),
+    attachment,
     commenter: await makePerson("commenter"),
     reader: await makePerson("reader"),
   };
@@ -161,6 +175,16 @@ export function sendSweep(
   project: string,
   token: string | null,
   text: string,
+/** A sweep file in a note on the project. */
+async function attachFile(project: { id: number; publicId: string }, by: Someone): Promise<string> {
+  const bytes = new TextEncoder().encode(touchstone());
+  const added = await addAttachment({ project, by, file: { name: "loop.s1p", bytes } });
+  if (added.kind === "refused") throw new Error(added.message);
+  const place = { projectId: project.id, sweepId: null, dipId: null };
+  await writeNote({ project, author: by, place, body: `Here it is: ${added.markdown}` });
+  return added.publicId;
+}
+
   fields: Record<string, string> = {},
   name = "sweep.s1p",
 ): Promise<Response> {

@@ -3,18 +3,15 @@ import { parseWithZod } from "@conform-to/zod/v4";
 import { type FormEvent, useEffect, useId, useRef, useState } from "react";
 import { useFetcher } from "react-router";
 import { Button } from "~/components/ui/Button";
-import { TextareaField } from "~/components/ui/Field";
 import { useHydrated } from "~/components/ui/hydrated";
 import { useToast } from "~/components/ui/Toast";
 import { MAX_NOTE_CHARACTERS } from "~/services/note-limits";
 import { type NoteTarget, NoteTargetFields } from "./BareNoteForm.tsx";
 import { useClientKey, useDraft } from "./draft.ts";
-import { asReference } from "./naming.ts";
+import { NoteText } from "./NoteText.tsx";
 import { editNoteSchema, writeNoteSchema } from "./notes.schema.ts";
 import { Preview } from "./Preview.tsx";
 import { notesPath, placeKey, type ThreadWhere } from "./place.ts";
-import { Suggestions } from "./Suggestions.tsx";
-import { useSuggestions } from "./use-suggestions.ts";
 
 export interface NoteFormProps {
   where: ThreadWhere;
@@ -41,7 +38,6 @@ export function NoteForm({ where, target = {}, label, onDone, onCancel, autoFocu
   const { show } = useToast();
   const { edited } = target;
   const draft = useDraft(`${placeKey(where)}:${edited?.publicId ?? target.parent ?? ""}`, edited?.body ?? "");
-  const naming = useSuggestions(where.projectId, draft.text, draft.change);
   const [clientKey, renewKey] = useClientKey();
   const schema = edited ? editNoteSchema : writeNoteSchema;
   const [form, fields] = useForm<{ body: string }>({
@@ -96,45 +92,16 @@ export function NoteForm({ where, target = {}, label, onDone, onCancel, autoFocu
         </section>
       )}
       {!edited && <input type="hidden" name="clientKey" value={clientKey} />}
-      <TextareaField
-        id={fields.body.id}
-        name={fields.body.name}
+      <NoteText
+        projectId={where.projectId}
+        field={fields.body}
         label={label}
-        required
-        rows={autoFocus ? 3 : 4}
         autoFocus={autoFocus}
-        value={draft.text}
-        onChange={(event) => {
-          draft.change(event.currentTarget.value);
-          naming.look(event.currentTarget);
-        }}
-        onClick={(event) => naming.look(event.currentTarget)}
-        onBlur={naming.close}
-        onPaste={(event) => {
-          const pasted = event.clipboardData.getData("text/plain");
-          const reference = asReference(pasted, location.origin, where.projectId);
-          if (!reference) return;
-          event.preventDefault();
-          const { value, selectionStart, selectionEnd } = event.currentTarget;
-          draft.change(`${value.slice(0, selectionStart)}${reference} ${value.slice(selectionEnd)}`);
-        }}
-        {...naming.field}
-        onKeyDown={(event) => {
-          if (naming.take(event)) return;
-          if (event.key === "Enter" && (event.ctrlKey || event.metaKey))
-            event.currentTarget.form?.requestSubmit();
-        }}
+        text={draft.text}
+        change={draft.change}
         errors={offline ? [OFFLINE] : (fields.body.errors ?? form.errors)}
         hint={<Hint restored={draft.restored} left={MAX_NOTE_CHARACTERS - draft.text.length} />}
       />
-      {naming.suggestions.length > 0 && (
-        <Suggestions
-          id={naming.id}
-          suggestions={naming.suggestions}
-          chosen={naming.chosen}
-          onPick={naming.pick}
-        />
-      )}
       <Preview text={draft.text} projectId={where.projectId} />
       <div className="flex flex-wrap items-center gap-2">
         <Button size="small" busy={busy}>

@@ -47,8 +47,15 @@ export function NoteItem({ note, where }: { note: ThreadNote; where: ThreadWhere
           </span>
         )}
       </header>
-      <Markdown html={note.html} />
-      {(where.mayWrite || note.mayEdit || note.mayRemove) && (
+      {note.folded ? (
+        <details>
+          <summary className="note-action">Folded away: you blocked {name}</summary>
+          <Markdown html={note.html} />
+        </details>
+      ) : (
+        <Markdown html={note.html} />
+      )}
+      {(where.mayWrite || note.mayEdit || note.mayRemove || note.mayReport) && (
         <Actions note={note} where={where} name={name} />
       )}
     </article>
@@ -99,6 +106,11 @@ function Actions({ note, where, name }: { note: ThreadNote; where: ThreadWhere; 
         </Unfold>
       )}
       {note.mayRemove && <RemoveNote note={note} where={where} about={about} />}
+      {note.mayReport && (
+        <Link to={`${notesPath(where, note.publicId)}/report`} className="note-action">
+          Report or block<span className="sr-only"> {about}</span>
+        </Link>
+      )}
     </footer>
   );
 }

@@ -13,10 +13,11 @@ export const meta: Route.MetaFunction = () => [{ title: "What a note said before
 
 /** What a note said before it was changed, for everybody who reads the note. */
 export async function loader(args: Route.LoaderArgs) {
-  const { project } = await requireProject(args, "project.read");
+  const access = await requireProject(args, "project.read");
+  const { project } = access;
   const { note, author } = await requireNote(project.id, args.params.note);
   const versions = await noteVersions.findAllByNote(note.id);
-  const links = await loadLinks(project.id, [note.body, ...versions.map(({ body }) => body)]);
+  const links = await loadLinks(project.id, [note.body, ...versions.map(({ body }) => body)], access);
   const last = versions[versions.length - 1];
   return {
     address: `/projects/${project.publicId}/notes/${note.publicId}`,

@@ -13,9 +13,9 @@ export async function action(args: Route.ActionArgs) {
   if (submission.status !== "success") throw data("There was no text to show.", 400);
   const { body, project: publicId } = submission.value;
   if (!publicId) return { html: renderNote(body) };
-  const { project } = await requireProject({ ...args, params: { project: publicId } }, "note.write");
-  const expanded = await expandNote(project.id, body);
-  return { html: renderNote(expanded.body, await loadLinks(project.id, [expanded.body])) };
+  const access = await requireProject({ ...args, params: { project: publicId } }, "note.write");
+  const expanded = await expandNote(access.project.id, body);
+  return { html: renderNote(expanded.body, await loadLinks(access.project.id, [expanded.body], access)) };
 }
 
 export function loader() {
