@@ -419,8 +419,23 @@ export const EXPECTATIONS: Record<string, Expectation> = {
         form: () => ({ intent: "remove" }),
         destroys: "sweep",
       },
+      { name: "restore", ask: { project: "note.write" }, form: () => ({ intent: "restore" }) },
     ],
   },
+  "routes/notes/history.tsx": { GET: read },
+  "routes/notes/report.tsx": {
+    GET: [{ ask: { signedIn: "project.read" } }],
+    POST: [{ ask: { signedIn: "project.read" }, form: () => ({ reason: "A walk." }) }],
+  },
+  "routes/attachments/attachments.ts": {
+    POST: [{ ask: { project: "note.write" }, form: () => ({ file: sweepFile() }) }],
+  },
+  "routes/attachments/attachment.ts": { GET: read },
+  "routes/attachments/sweep.tsx": {
+    GET: [{ ask: { project: "sweep.add" } }],
+    POST: [{ ask: { project: "sweep.add" }, form: () => ({}) }],
+  },
+  "routes/notes/suggest.ts": { GET: [{ ask: { project: "note.write" } }] },
   "routes/notes/preview.ts": {
     GET: anybody,
     POST: [{ ask: { site: "account.own" }, form: () => ({ body: "*so*" }) }],
@@ -464,10 +479,8 @@ export const EXPECTATIONS: Record<string, Expectation> = {
 
   "routes/api/openapi.ts": { GET: anybody, POST: notHere },
   "routes/api/projects.ts": { GET: [{ ask: { api: "any-member" } }], POST: notHere },
-      { name: "restore", ask: { project: "note.write" }, form: () => ({ intent: "restore" }) },
   "routes/api/project.ts": { GET: apiRead, POST: notHere },
   "routes/api/sweeps.ts": {
-  "routes/notes/history.tsx": { GET: read },
     GET: apiRead,
     POST: [{ ask: { api: "sweep.add" }, form: () => ({ file: sweepFile() }) }],
   },
@@ -496,19 +509,3 @@ export const EXPECTATIONS: Record<string, Expectation> = {
   "routes/api/causes.ts": { GET: apiRead, POST: notHere },
   "routes/api/missing.ts": { GET: [{ ask: { status: 404 } }], POST: [{ ask: { status: 404 } }] },
 };
-  "routes/notes/history.tsx": { GET: read },
-  "routes/notes/suggest.ts": { GET: [{ ask: { project: "note.write" } }] },
-  "routes/notes/history.tsx": { GET: read },
-  "routes/notes/report.tsx": {
-    GET: [{ ask: { signedIn: "project.read" } }],
-    POST: [{ ask: { signedIn: "project.read" }, form: () => ({ reason: "A walk." }) }],
-  },
-  "routes/attachments/attachments.ts": {
-    POST: [{ ask: { project: "note.write" }, form: () => ({ file: sweepFile() }) }],
-  },
-  "routes/attachments/attachment.ts": { GET: read },
-  "routes/attachments/sweep.tsx": {
-    GET: [{ ask: { project: "sweep.add" } }],
-    POST: [{ ask: { project: "sweep.add" }, form: () => ({}) }],
-  },
-  "routes/notes/suggest.ts": { GET: [{ ask: { project: "note.write" } }] },

@@ -204,14 +204,14 @@ function fill(path: string, place: Place): string {
     .replace(":note", place.note)
     .replace(":bench", place.bench)
     .replace(":photograph", place.photograph)
+    .replace(":attachment/:size", `${place.attachment}/file`)
+    .replace(":attachment", place.attachment)
     .replace(":step", place.step)
     .replace(":trail", place.trail)
     .replace(":size", "small")
     .replace("*", "no/such/thing");
 }
 
-    .replace(":attachment/:size", `${place.attachment}/file`)
-    .replace(":attachment", place.attachment)
 function personOf(actor: Actor): Someone | null {
   if (actor === "visitor") return null;
   return actor in crew ? crew[actor as ProjectRole] : others[actor as keyof typeof others];

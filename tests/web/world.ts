@@ -9,7 +9,10 @@ import * as projects from "~/db/projects.server";
 import * as sweeps from "~/db/sweeps.server";
 import * as trails from "~/db/trails.server";
 import { IDEAL_STANDARDS, NOTHING_GIVEN } from "~/measurement/bench";
+import { addAttachment } from "~/services/attachments.server";
 import { createBench } from "~/services/benches.server";
+import { invite } from "~/services/invitations.server";
+import { writeNote } from "~/services/notes.server";
 import { addPhotograph } from "~/services/photographs.server";
 import { createProject } from "~/services/projects.server";
 import { makeStep } from "~/services/steps.server";
@@ -61,12 +64,12 @@ export interface Place {
   /** With one photograph. */
   bench: string;
   photograph: string;
+  /** In a note on the project. */
+  attachment: string;
   step: string;
   /** That its dip is on. */
   trail: string;
 }
-  /** In a note on the project. */
-  attachment: string;
 
 export type Crew = Record<ProjectRole, Someone>;
 
@@ -112,6 +115,7 @@ export async function makePlace(crew: Crew, visibility: Visibility, empty = fals
     caption: "",
   });
   const photograph = added.kind === "added" ? added.publicId : "";
+  const attachment = await attachFile(project, crew.owner);
   const step = await makeStepOf(project.id, crew.owner.id);
   return {
     ...place,
@@ -120,8 +124,8 @@ export async function makePlace(crew: Crew, visibility: Visibility, empty = fals
     note,
     bench: bench.publicId,
     photograph,
+    attachment,
     step,
-  const attachment = await attachFile(project, crew.owner);
     trail: await trailOf(project.id),
   };
 }
@@ -130,7 +134,6 @@ export async function makeCrew(): Promise<Crew> {
   return {
     owner: await makePerson("owner"),
     experimenter: await makePerson("experimenter"),
-    attachment,
     commenter: await makePerson("commenter"),
     reader: await makePerson("reader"),
   };
@@ -166,15 +169,6 @@ export async function makeBench(project: { id: number }, by: Someone, name = uni
   return bench;
 }
 
-/** A picture of one grey pixel, PNG. */
-export function onePixel(): Uint8Array<ArrayBuffer> {
-  return new Uint8Array(Buffer.from(ONE_PIXEL, "base64"));
-}
-
-export function sendSweep(
-  project: string,
-  token: string | null,
-  text: string,
 /** A sweep file in a note on the project. */
 async function attachFile(project: { id: number; publicId: string }, by: Someone): Promise<string> {
   const bytes = new TextEncoder().encode(touchstone());
@@ -185,6 +179,15 @@ async function attachFile(project: { id: number; publicId: string }, by: Someone
   return added.publicId;
 }
 
+/** A picture of one grey pixel, PNG. */
+export function onePixel(): Uint8Array<ArrayBuffer> {
+  return new Uint8Array(Buffer.from(ONE_PIXEL, "base64"));
+}
+
+export function sendSweep(
+  project: string,
+  token: string | null,
+  text: string,
   fields: Record<string, string> = {},
   name = "sweep.s1p",
 ): Promise<Response> {

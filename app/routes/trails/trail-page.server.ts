@@ -32,6 +32,7 @@ export async function loadTrailPage(access: ProjectAccess, publicId: string) {
     trailStops.findNotes(trail.id, MOST_NOTES),
     projects.findDesignBands(project.id),
     steps.findAllByProject(project.id),
+    listThread({ projectId: project.id, sweepId: null, dipId: null, trailId: trail.id }, access),
   ]);
   const way = wayOf(stops.map((stop) => ({ ...stop, numbers: completeDip(stop.numbers) })));
   const [first, last] = [stops[0], stops[stops.length - 1]];
@@ -48,8 +49,8 @@ export async function loadTrailPage(access: ProjectAccess, publicId: string) {
       correct: may("trail.correct"),
       propose: may("verdict.propose"),
       settle: may("verdict.settle"),
-    },
       write: may("note.write"),
+    },
     trail: {
       publicId: trail.publicId,
       name: trail.name,
@@ -92,8 +93,8 @@ export async function loadTrailPage(access: ProjectAccess, publicId: string) {
       by,
       at: event.at,
     })),
-    notes: notes.map(({ body, ...note }) => ({ ...note, line: plainText(body, 220) })),
     thread,
+    notes: notes.map(({ body, ...note }) => ({ ...note, line: plainText(body, 220) })),
     moreNotes: way.reduce((sum, { noteCount }) => sum + noteCount, 0) - notes.length,
   };
 }
