@@ -73,4 +73,5 @@ const NOUNS_OF: Record<string, readonly string[]> = {
   benches: ["bench"],
   antenna: ["antenna", "project"],
   members: ["member"],
+  activity: ["note", "sweep", "verdict", "trail", "step", "antenna", "bench", "member", "project"],
 };
