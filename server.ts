@@ -6,7 +6,7 @@ import { createRequestHandler } from "@react-router/express";
 import compression from "compression";
 import express, { type Express, type NextFunction, type Request, type Response } from "express";
 import { RouterContextProvider } from "react-router";
-import { nonceContext, requestIdContext } from "~/context";
+import { clientAddressContext, nonceContext, requestIdContext } from "~/context";
 import { pool } from "~/db/client.server";
 import { env } from "~/env.server";
 import { accessLog } from "~/services/access-log.server";
@@ -49,10 +49,11 @@ export function createApp(development = false): Express {
     createRequestHandler({
       build: () => import("virtual:react-router/server-build"),
       mode: env.NODE_ENV,
-      getLoadContext(_request, response) {
+      getLoadContext(request, response) {
         const context = new RouterContextProvider();
         context.set(nonceContext, response.locals.nonce);
         context.set(requestIdContext, response.locals.requestId);
+        context.set(clientAddressContext, request.ip ?? "");
         return context;
       },
     }),

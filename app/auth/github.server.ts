@@ -20,31 +20,35 @@ export interface GithubProfile {
 
 export type SignInProblem = "denied" | "state" | "code" | "provider";
 
-/** The redirect to the provider, with the cookies that the way back is checked against. */
-export async function beginGithub(next: unknown): Promise<Response> {
+/**
+ * The redirect to the provider, with the cookies that the way back is checked against. `addTo` is the row id of a
+ * signed-in person who adds it to the account.
+ */
+export async function beginGithub(next: unknown, addTo: number | null = null): Promise<Response> {
   const bare = new Request(new URL("/auth/github", env.BASE_URL));
   try {
     await authenticator.authenticate("github", bare);
   } catch (thrown) {
     if (!(thrown instanceof Response)) throw thrown;
     const headers = new Headers(thrown.headers);
-    headers.append("Set-Cookie", await nextCookie.serialize(safePath(next)));
+    headers.append("Set-Cookie", await nextCookie.serialize({ next: safePath(next), addTo }));
     return new Response(null, { status: thrown.status, headers });
   }
   throw new Error("The sign-in strategy did not ask the provider.");
 }
 
 export type GithubAnswer =
-  | { ok: true; profile: GithubProfile; next: string }
+  | { ok: true; profile: GithubProfile; next: string; addTo: number | null }
   | { ok: false; problem: SignInProblem; next: string };
 
 /** What the provider sent the browser back with: state, then code, then who it is. */
 export async function finishGithub(request: Request): Promise<GithubAnswer> {
-  const next = safePath(await nextCookie.parse(request.headers.get("Cookie")));
+  const kept = keptAnswer.safeParse(await nextCookie.parse(request.headers.get("Cookie"))).data;
+  const [next, addTo] = [safePath(kept?.next), kept?.addTo ?? null];
   const query = new URL(request.url).searchParams;
   if (!query.has("state") && !query.has("error")) return { ok: false, problem: "state", next };
   try {
-    return { ok: true, profile: await authenticator.authenticate("github", request), next };
+    return { ok: true, profile: await authenticator.authenticate("github", request), next, addTo };
   } catch (error) {
     return { ok: false, problem: problemOf(error), next };
   }
@@ -79,6 +83,7 @@ const nextCookie = createCookie("swale_next", {
   secure,
 });
 
+const keptAnswer = z.object({ next: z.string(), addTo: z.number().nullable() });
 const tokenAnswer = z.union([
   z.object({ error: z.string() }),
   z.looseObject({ access_token: z.string().min(1), token_type: z.string() }),

@@ -5,8 +5,10 @@ import * as photographs from "~/db/photographs.server";
 import * as sessions from "~/db/sessions.server";
 import * as sweeps from "~/db/sweeps.server";
 import { dropUnsent } from "./attachments.server.ts";
+import { sendDigests } from "./digests.server.ts";
 import { log } from "./log.server.ts";
 import { purgeNote } from "./note-changes.server.ts";
+import { tellOf } from "./notices.server.ts";
 import { deleteObject } from "./storage.server.ts";
 
 /** Background work. Every kind must be harmless to run twice. */
@@ -19,6 +21,7 @@ const KINDS: Record<string, (payload: never) => Promise<void>> = {
   },
   "drop-attachment": ({ attachment }: { attachment: string }) => dropUnsent(attachment),
   "purge-note": ({ note }: { note: string }) => purgeNote(note),
+  tell: ({ event }: { event: number }) => tellOf(event),
 };
 
 /** Begins looking for due work; the answer stops it and waits for what is under way. */
@@ -26,9 +29,17 @@ export function startJobs(everyMs = 2000): () => Promise<void> {
   let stopped = false;
   let running: Promise<unknown> = Promise.resolve();
   let lastSweepMs = 0;
+  let lastDigestMs = 0;
+  const runAllDue = async () => {
+    while (!stopped && (await runDueJobs()) === BATCH);
+  };
   const tick = () => {
-    running = runDueJobs()
+    running = runAllDue()
       .then(async () => {
+        if (Date.now() - lastDigestMs >= DIGESTS_EVERY_MS) {
+          lastDigestMs = Date.now();
+          await sendDigests();
+        }
         if (Date.now() - lastSweepMs < SWEEP_EVERY_MS) return;
         lastSweepMs = Date.now();
         await sessions.deleteExpired();
@@ -79,3 +90,4 @@ const BATCH = 20;
 const LEASE_MS = 60_000;
 const LONGEST_WAIT_MS = 60 * 60 * 1000;
 const SWEEP_EVERY_MS = 10 * 60 * 1000;
+const DIGESTS_EVERY_MS = 30_000;

@@ -1,6 +1,16 @@
-import { inTransaction, isDuplicate } from "~/db/client.server";
+import { inTransaction, isDuplicate, type Transaction } from "~/db/client.server";
 import * as people from "~/db/people.server";
 import * as sessions from "~/db/sessions.server";
+import { env } from "~/env.server";
+import { queueMail } from "./outbox.server.ts";
+
+/** A way of signing in, as the provider vouches for it. */
+export interface Way {
+  provider: "github" | "email";
+  subject: string;
+  /** An address that is confirmed, if any. */
+  email: string | null;
+}
 
 export interface Identity {
   provider: string;
@@ -45,10 +55,89 @@ function createMember(identity: Identity): Promise<people.User> {
   });
 }
 
-/** Says whether the name is free; false leaves everything as it was. */
-export async function renameMember(id: number, userName: string, name: string): Promise<boolean> {
+/** Adds a way of signing in to an account, and tells the person. Throws where it is somebody else's. */
+export async function addIdentity(userId: number, way: Way, tx: Transaction): Promise<void> {
+  const owner = await people.findByIdentity(way.provider, way.subject, tx);
+  if (owner?.id === userId) return;
+  const user = await people.lock(userId, tx);
+  if (!user) throw new Error("The member is not there.");
+  await people.insertIdentity(userId, way.provider, way.subject, tx);
+  await tellOfWay(user, way, "added", tx);
+  if (!user.email && way.email && !(await people.findByEmail(way.email, tx))) {
+    await people.update(userId, { email: way.email }, tx);
+  }
+}
+
+export type WayAdded = "added" | "taken";
+
+/** The same for a way that the provider just confirmed, in a write of its own. */
+export async function addWay(userId: number, way: Way): Promise<WayAdded> {
   try {
-    await people.update(id, { userName, name });
+    await inTransaction((tx) => addIdentity(userId, way, tx));
+    return "added";
+  } catch (error) {
+    if (isDuplicate(error)) return "taken";
+    throw error;
+  }
+}
+
+/** Takes a way away, never the last one. Mails then go to another address of the person's, or nowhere. */
+export function removeWay(userId: number, provider: string, subject: string): Promise<"done" | "last"> {
+  return inTransaction(async (tx) => {
+    const user = await people.lock(userId, tx);
+    const ways = await people.findIdentities(userId, tx);
+    const isIt = (way: { provider: string; subject: string }) =>
+      way.provider === provider && way.subject === subject;
+    if (!user || !ways.some(isIt)) return "done";
+    if (ways.length === 1) return "last";
+    await people.deleteIdentity(userId, provider, subject, tx);
+    await tellOfWay(user, { provider, subject }, "removed", tx);
+    if (provider === "email" && user.email?.toLowerCase() === subject) {
+      const other = ways.find((way) => way.provider === "email" && !isIt(way));
+      await people.update(userId, { email: other?.subject ?? null }, tx);
+    }
+    return "done";
+  });
+}
+
+/** Mails go to one of the addresses that sign the person in; false for any other. */
+export async function chooseAddress(userId: number, email: string): Promise<boolean> {
+  const ways = await people.findIdentities(userId);
+  if (!ways.some((way) => way.provider === "email" && way.subject === email)) return false;
+  await people.update(userId, { email });
+  return true;
+}
+
+async function tellOfWay(
+  user: people.User,
+  { provider, subject }: { provider: string; subject: string },
+  change: "added" | "removed",
+  tx: Transaction,
+): Promise<void> {
+  if (!user.email) return;
+  const way = provider === "email" ? `codes mailed to ${subject}` : "GitHub";
+  const words = {
+    heading: `A way to sign in was ${change}`,
+    parts: [
+      { kind: "text" as const, text: `For your account ${user.userName}: ${way}.` },
+      { kind: "link" as const, label: "How you sign in", href: `${env.BASE_URL}/settings/sign-in` },
+    ],
+    footer: [
+      {
+        kind: "text" as const,
+        text: "This mail always comes. If it was not you, sign in, take away what is not yours, and end all other sessions under Settings.",
+      },
+    ],
+  };
+  await queueMail({ toAddress: user.email, userId: user.id, subject: words.heading, words }, tx);
+}
+
+export type Profile = Pick<people.User, "userName" | "name" | "callSign" | "ituRegion" | "timeZone">;
+
+/** Says whether the user name is free; false leaves everything as it was. */
+export async function changeProfile(id: number, profile: Profile): Promise<boolean> {
+  try {
+    await people.update(id, profile);
     return true;
   } catch (error) {
     if (isDuplicate(error)) return false;

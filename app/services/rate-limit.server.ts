@@ -9,6 +9,12 @@ export type Bucket = keyof typeof LIMITS;
 const LIMITS = {
   "api-read": { points: 600, duration: 60 },
   "api-write": { points: 120, duration: 60 },
+  /** Codes for signing in: to one address, and asked for from one network, which may be a whole club's. */
+  "code-address": { points: 5, duration: 900 },
+  "code-from": { points: 100, duration: 900 },
+  report: { points: 30, duration: 24 * 60 * 60 },
+  /** Invitations that one person makes: their mails go to people who did not ask. */
+  invite: { points: 40, duration: 24 * 60 * 60 },
 };
 
 /** Counts one use; the answer is null while there is room, else the seconds until there is. */

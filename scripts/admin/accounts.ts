@@ -13,7 +13,9 @@ export function createUser(given: { email: string; name: string; administrator: 
     const there = await people.findByEmail(email, tx);
     if (there) throw new PlainFailure(`${email} belongs to ${there.userName} already. Nobody was added.`);
     const userName = await people.freeUserName(email.split("@")[0], tx);
-    await people.insert({ userName, name: name.slice(0, 120), email, administrator }, tx);
+    const id = await people.insert({ userName, name: name.slice(0, 120), email, administrator }, tx);
+    // Signs in by a code that is mailed there.
+    await people.insertIdentity(id, "email", email.toLowerCase(), tx);
     return `${administrator ? "Administrator" : "Member"} ${userName} <${email}> was made.`;
   });
 }

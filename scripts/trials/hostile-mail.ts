@@ -72,7 +72,10 @@ function converse(socket: Socket, fault: Fault | undefined, taken: string[]): vo
   socket.on("data", (chunk: string) => {
     text += chunk;
     if (inMessage) {
-      if (fault === "drops in the message") return socket.destroy();
+      if (fault === "drops in the message") {
+        socket.destroy();
+        return;
+      }
       if (!text.endsWith("\r\n.\r\n")) return;
       inMessage = false;
       endOfMessage(text);

@@ -20,6 +20,11 @@ export const SIGN_IN_PROBLEMS = {
     title: "The provider could not be asked",
     text: "It did not answer, or not in a way we understand. Nothing was changed. Wait a minute and try again.",
   },
+  "email-over": {
+    status: 410,
+    title: "That code does not work any more",
+    text: "It was used, or is older than ten minutes, or was typed wrongly five times. Nothing was changed. Ask for another one below.",
+  },
   suspended: {
     status: 403,
     title: "This account is suspended",

@@ -4,6 +4,7 @@ import { findPerson } from "~/auth/require.server";
 import { Button } from "~/components/ui/Button";
 import { env } from "~/env.server";
 import type { Route } from "./+types/sign-in";
+import { EmailAskForm } from "./components/EmailAskForm.tsx";
 import { isSignInProblem, SIGN_IN_PROBLEMS } from "./sign-in-problems.ts";
 
 export const meta: Route.MetaFunction = () => [{ title: "Sign in · Swale" }];
@@ -39,9 +40,13 @@ export default function SignIn({ loaderData }: Route.ComponentProps) {
         <input type="hidden" name="next" value={next} />
         <Button icon="person">{standIn ? "Sign in with the local stand-in" : "Sign in with GitHub"}</Button>
       </form>
+      <section className="space-y-3 border-t border-rule pt-6">
+        <h2 className="text-base">Or by e-mail</h2>
+        <EmailAskForm next={next} />
+      </section>
       {standIn && (
         <p className="soft text-small">
-          This installation has no connection to GitHub. The button leads to a stand-in on this machine, where
+          This installation has no connection to GitHub. Its button leads to a stand-in on this machine, where
           you choose one of a few invented people. No password is asked for, and anyone who can reach this
           machine can do the same.
         </p>
