@@ -90,6 +90,9 @@ async function loadProjectAccess(
   const found = await projects.findWithRole(publicId, person?.id ?? null);
   const role = found ? effectiveRole(found.role, found.project.visibility) : null;
   if (!found || !role) return null;
+  if (person && found.role && Date.now() - (found.lastActiveAt?.getTime() ?? 0) > SEEN_EVERY_MS) {
+    await projects.setActive(found.project.id, person.id);
+  }
   return {
     project: found.project,
     role,
@@ -104,7 +107,7 @@ async function loadPerson(request: Request): Promise<Person | null> {
   const sessionId = await readSessionId(request);
   if (!sessionId) return null;
   const found = await sessions.findById(sessionId);
-  if (!found?.user || found.user.suspendedAt) return null;
+  if (!found?.user || found.user.suspendedAt || found.user.closedAt) return null;
   if (Date.now() - found.session.lastSeenAt.getTime() > SEEN_EVERY_MS) {
     const now = new Date();
     await sessions.update(sessionId, { lastSeenAt: now });

@@ -31,6 +31,7 @@ async function findOneWithRole(which: SQL, userId: number | null, tx: Queryable)
     .limit(1);
   return rows[0];
 }
+
 /** Row id of the last event, 0 for none: read before anything else of a page, so that what is told after it is not on the page yet. */
 const LAST_EVENT_ID =
   sql<number>`coalesce((select max(e.id) from ${events} e where e.project_id = ${projects.id}), 0)`.mapWith(
@@ -153,7 +154,8 @@ export async function findMembers(projectId: number, tx: Queryable = db) {
       name: users.name,
       role: memberships.role,
       since: memberships.createdAt,
-      lastSeenAt: users.lastSeenAt,
+      lastActiveAt: memberships.lastActiveAt,
+      callSign: users.callSign,
     })
     .from(memberships)
     .innerJoin(users, eq(users.id, memberships.userId))
@@ -191,6 +193,14 @@ export async function updateMember(projectId: number, userId: number, role: Proj
   await tx
     .update(memberships)
     .set({ role })
+    .where(and(eq(memberships.projectId, projectId), eq(memberships.userId, userId)));
+}
+
+/** That the member was here just now. */
+export async function setActive(projectId: number, userId: number, tx: Queryable = db) {
+  await tx
+    .update(memberships)
+    .set({ lastActiveAt: new Date() })
     .where(and(eq(memberships.projectId, projectId), eq(memberships.userId, userId)));
 }
 

@@ -13,7 +13,7 @@ export function accessLog(request: Request, response: Response, next: NextFuncti
   response.once("close", () => {
     const seconds = Number(process.hrtime.bigint() - started) / 1e9;
     // The query may hold what somebody searched for, so it is not kept.
-    const path = request.originalUrl.split("?", 1)[0];
+    const path = request.originalUrl.split("?", 1)[0].replace(SECRET_PATH, "$1…");
     const { method } = request;
     const status = response.writableFinished ? response.statusCode : 499;
     recordRequest(path, method, status, seconds);
@@ -24,6 +24,8 @@ export function accessLog(request: Request, response: Response, next: NextFuncti
 }
 
 const QUIET_PATH = /^\/(assets\/|healthz$|readyz$|metrics$)/;
+/** What opens a door is not kept either. */
+const SECRET_PATH = /^(\/(?:invitations)\/)[^/.]+/;
 const REQUEST_ID = /^[\w.-]{8,80}$/;
 
 /** A proxy in front that we trust may have named the request already. */

@@ -8,7 +8,7 @@ import * as photographs from "~/db/photographs.server";
 import * as projects from "~/db/projects.server";
 import * as sweeps from "~/db/sweeps.server";
 import { record } from "./events.server.ts";
-import { type Merged, mergeEdit } from "./merge-edit.ts";
+import { conflictOf, mergeEdit } from "./merge-edit.ts";
 
 /** Makes a project with its first owner. */
 export function createProject(project: projects.NewProject, ownerId: number) {
@@ -40,24 +40,25 @@ export function deleteProject(id: number): Promise<void> {
 
 export type AboutValues = Pick<projects.Project, "title" | "summary" | "visibility" | "ituRegion">;
 
-/** Keeps what a person changed of what a project says of itself; writes nothing where that meets another's change. */
+/** Keeps what a person changed of what a project says of itself; where that meets another's change, answers what to ask and writes nothing. */
 export function changeAbout(
   id: number,
   was: Partial<AboutValues>,
   wanted: AboutValues,
   by: number | null = null,
-): Promise<Merged<AboutValues> & { now: AboutValues }> {
+): Promise<ReturnType<typeof conflictOf> | null> {
   return inTransaction(async (tx) => {
     const project = await projects.lock(id, tx);
     const { title, summary, visibility, ituRegion } = project ?? wanted;
     const now = { title, summary, visibility, ituRegion };
     const merged = mergeEdit(was, now, wanted);
-    if (merged.conflicts.length === 0 && Object.keys(merged.changes).length > 0) {
+    if (merged.conflicts.length > 0) return conflictOf(now, wanted, merged);
+    if (Object.keys(merged.changes).length > 0) {
       await projects.update(id, merged.changes, tx);
-      const about = { title: wanted.title };
+      const about = { title: merged.changes.title ?? now.title };
       await record({ projectId: id, kind: "project.changed", actorId: by, about }, tx);
     }
-    return { ...merged, now };
+    return null;
   });
 }
 
@@ -76,7 +77,8 @@ export async function changeBands(
   });
 }
 
-export type AddedMember = "added" | "already" | "unknown";
+/** `unwilling`: the person blocked whoever adds. */
+export type AddedMember = "added" | "already" | "unknown" | "unwilling";
 
 /** Adds a member by user name. Adding someone who is there already changes nothing, not even the role. */
 export async function addMember(
@@ -86,7 +88,8 @@ export async function addMember(
   by: number | null = null,
 ): Promise<AddedMember> {
   const user = await people.findByUserName(userName);
-  if (!user || user.suspendedAt) return "unknown";
+  if (!user || user.suspendedAt || user.closedAt) return "unknown";
+  if (by !== null && (await blocks.exists(user.id, by))) return "unwilling";
   try {
     await inTransaction(async (tx) => {
       await projects.lock(projectId, tx);

@@ -1,5 +1,4 @@
 import { z } from "zod";
-import { PROJECT_ROLES } from "~/auth/permissions";
 import { plainText } from "~/services/file-names";
 
 /** Words for a choice, and what follows from it. */
@@ -46,7 +45,8 @@ const summaryField = z
   .trim()
   .max(20_000, "At most 20,000 characters.")
   .optional()
-  .transform((text) => text ?? "");
+  // Forms send lines ended in their own way: the same text must be the same.
+  .transform((text) => (text ?? "").replace(/\r\n?/g, "\n"));
 
 const regionField = z
   .enum(["1", "2", "3"], { error: "Choose one of the three regions, or none." })
@@ -126,28 +126,3 @@ export const deleteSchema = z.object({
 });
 
 export const projectSettingsSchema = z.discriminatedUnion("intent", [aboutSchema, bandsSchema, deleteSchema]);
-
-const userNameField = z
-  .string({ error: "Say the user name." })
-  .trim()
-  .toLowerCase()
-  .min(1, "Say the user name.")
-  .max(40, "A user name has at most 40 characters.")
-  .transform((text) => text.replace(/^@/, ""));
-
-const roleField = z.enum(PROJECT_ROLES as ["owner", "experimenter", "commenter", "reader"], {
-  error: "Choose a role.",
-});
-
-export const addMemberSchema = z.object({
-  intent: z.literal("add"),
-  userName: userNameField,
-  role: roleField,
-});
-
-export const membersSchema = z.discriminatedUnion("intent", [
-  addMemberSchema,
-  z.object({ intent: z.literal("change"), userName: userNameField, role: roleField }),
-  z.object({ intent: z.literal("remove"), userName: userNameField }),
-  z.object({ intent: z.literal("leave") }),
-]);

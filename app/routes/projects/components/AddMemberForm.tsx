@@ -9,7 +9,8 @@ import { getZodConstraint, parseWithZod } from "@conform-to/zod/v4";
 import { Form, useNavigation } from "react-router";
 import { Button } from "~/components/ui/Button";
 import { InputField, SelectField } from "~/components/ui/Field";
-import { addMemberSchema, ROLES } from "../project.schema.ts";
+import { addMemberSchema } from "../members.schema.ts";
+import { ROLES } from "../project.schema.ts";
 
 export function AddMemberForm({ lastResult }: { lastResult?: SubmissionResult<string[]> | null }) {
   const busy = useNavigation().formData?.get("intent") === "add";
@@ -23,7 +24,7 @@ export function AddMemberForm({ lastResult }: { lastResult?: SubmissionResult<st
   });
   return (
     <section className="space-y-3">
-      <h2>Add a member</h2>
+      <h2>Add somebody who has an account</h2>
       <Form method="post" {...getFormProps(form)} className="max-w-[30rem] space-y-4">
         <InputField
           label="User name"

@@ -1,6 +1,6 @@
 import { Form } from "react-router";
 import { Button } from "~/components/ui/Button";
-import { DateTime } from "~/components/ui/DateTime";
+import { DateTime, RelativeTime } from "~/components/ui/DateTime";
 import { Dialog } from "~/components/ui/Dialog";
 import { type Column, Table } from "~/components/ui/Table";
 import { ROLES } from "../project.schema.ts";
@@ -9,7 +9,10 @@ export interface ListedMember {
   userName: string;
   name: string;
   role: (typeof ROLES)[number]["value"];
+  callSign: string;
   since: string;
+  /** Null where it is not known, or not for the reader. */
+  lastActiveAt: string | null;
   self: boolean;
   lastOwner: boolean;
 }
@@ -28,7 +31,8 @@ export function MemberList({ members, mayManage, isMember }: MemberListProps) {
       label: "Name",
       cell: (member) => (
         <span>
-          {member.name} <span className="soft">{member.userName}</span>
+          {member.name} {member.callSign && <span className="number">{member.callSign} </span>}
+          <span className="soft">{member.userName}</span>
         </span>
       ),
     },
@@ -39,6 +43,13 @@ export function MemberList({ members, mayManage, isMember }: MemberListProps) {
     },
     { key: "since", label: "Since", cell: (member) => <DateTime at={member.since} dateOnly /> },
   ];
+  if (isMember) {
+    columns.push({
+      key: "active",
+      label: "Last here",
+      cell: ({ lastActiveAt }) => (lastActiveAt ? <RelativeTime at={lastActiveAt} /> : "not known"),
+    });
+  }
   if (mayManage || isMember) {
     columns.push({
       key: "go",
