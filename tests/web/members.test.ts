@@ -231,13 +231,31 @@ describe("account settings", () => {
     const holder = await makePerson("holder");
     const person = await makePerson("person");
     const own = await signIn(person);
-    const taken = await own.post("/settings", { intent: "profile", name: "N", userName: holder.userName });
+    const form = { intent: "profile", name: "N", timeZone: "UTC" };
+    const taken = await own.post("/settings", { ...form, userName: holder.userName });
     expect(taken.status).toBe(409);
     expect(await taken.text()).toContain("Somebody has this user name");
     for (const userName of ["-x", "x-", "a b", "ü", "x".repeat(41)]) {
-      const answer = await own.post("/settings", { intent: "profile", name: "N", userName });
+      const answer = await own.post("/settings", { ...form, userName });
       expect([userName, answer.status]).toEqual([userName, 400]);
     }
     expect((await people.findById(person.id))?.userName).toBe(person.userName);
+  });
+
+  it("keep a call sign, a region and a time zone, and refuse a zone that is none", async () => {
+    const person = await makePerson("person");
+    const own = await signIn(person);
+    const form = { intent: "profile", name: "Nell\u202e", userName: person.userName, ituRegion: "1" };
+    const wrong = await own.post("/settings", { ...form, timeZone: "Europe/Nowhere" });
+    expect([wrong.status, await wrong.text()]).toEqual([
+      400,
+      expect.stringContaining("time zone of the list"),
+    ]);
+    await own.post("/settings", { ...form, callSign: "0XX0NN", timeZone: "Europe/Lisbon" });
+    const kept = { name: "Nell", callSign: "0XX0NN", ituRegion: 1, timeZone: "Europe/Lisbon" };
+    expect(await people.findById(person.id)).toMatchObject(kept);
+    expect(await (await own.get("/projects/new")).text()).toMatch(/value="1" selected/);
+    await own.post("/settings", { ...form, ituRegion: "", callSign: "", timeZone: "UTC" });
+    expect(await people.findById(person.id)).toMatchObject({ callSign: "", ituRegion: null });
   });
 });

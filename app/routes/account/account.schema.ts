@@ -1,4 +1,5 @@
 import { z } from "zod";
+import { plainText } from "~/services/file-names";
 
 export const USER_NAME = /^[a-z0-9](?:[a-z0-9-]{0,38}[a-z0-9])?$/;
 
@@ -6,7 +7,7 @@ export const profileSchema = z.object({
   intent: z.literal("profile"),
   name: z
     .string({ error: "Say the name that others see." })
-    .trim()
+    .overwrite(plainText)
     .min(1, "Say the name that others see.")
     .max(120, "At most 120 characters."),
   userName: z
@@ -15,7 +16,32 @@ export const profileSchema = z.object({
     .toLowerCase()
     .max(40, "At most 40 characters.")
     .regex(USER_NAME, "Lower-case letters, digits and hyphens; no hyphen first or last."),
+  /** As the person writes it; checked against nothing. */
+  callSign: z
+    .string()
+    .overwrite(plainText)
+    .max(20, "At most 20 characters.")
+    .optional()
+    .transform((text) => text ?? ""),
+  ituRegion: z
+    .enum(["1", "2", "3"], { error: "Choose one of the three regions, or none." })
+    .optional()
+    .transform((text) => (text ? Number(text) : null)),
+  timeZone: z
+    .string({ error: "Choose a time zone." })
+    .max(60, "Choose a time zone of the list.")
+    .refine(isTimeZone, "Choose a time zone of the list."),
 });
+
+/** Known to the server by its name; `UTC` always is. */
+function isTimeZone(name: string): boolean {
+  try {
+    new Intl.DateTimeFormat("en", { timeZone: name });
+    return /^(UTC|[A-Za-z]+\/[\w+/-]+)$/.test(name);
+  } catch {
+    return false;
+  }
+}
 
 export const LENGTH_UNITS = [
   { value: "m", label: "Metres" },

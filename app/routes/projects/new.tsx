@@ -13,8 +13,8 @@ import { newProjectSchema } from "./project.schema.ts";
 export const meta: Route.MetaFunction = () => [{ title: "New project · Swale" }];
 
 export async function loader(args: Route.LoaderArgs) {
-  await requirePerson(args, "project.create");
-  return null;
+  const { ituRegion } = await requirePerson(args, "project.create");
+  return { ituRegion: ituRegion === null ? "" : String(ituRegion) };
 }
 
 export async function action(args: Route.ActionArgs) {
@@ -25,12 +25,12 @@ export async function action(args: Route.ActionArgs) {
   return redirectWithMessage(`/projects/${publicId}`, "The project was made. Its first sweep is next.");
 }
 
-export default function NewProject({ actionData }: Route.ComponentProps) {
+export default function NewProject({ loaderData, actionData }: Route.ComponentProps) {
   const busy = useNavigation().state === "submitting";
   const [form, fields] = useForm({
     id: "new-project",
     lastResult: actionData?.lastResult,
-    defaultValue: { visibility: "private" },
+    defaultValue: { visibility: "private", ituRegion: loaderData.ituRegion },
     constraint: getZodConstraint(newProjectSchema),
     shouldValidate: "onBlur",
     shouldRevalidate: "onInput",
