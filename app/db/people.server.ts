@@ -1,4 +1,4 @@
-import { and, count, eq, isNull } from "drizzle-orm";
+import { and, asc, count, eq, isNull } from "drizzle-orm";
 import { db, type Queryable } from "./client.server.ts";
 import { newPublicId } from "./ids.server.ts";
 import { dismissals, identities, users } from "./schema/index.ts";
@@ -50,6 +50,29 @@ export async function insertIdentity(userId: number, provider: string, subject: 
   await tx.insert(identities).values({ userId, provider, subject, createdAt: new Date() });
 }
 
+/** The ways in which the person signs in, oldest first. */
+export async function findIdentities(userId: number, tx: Queryable = db) {
+  return tx
+    .select({ provider: identities.provider, subject: identities.subject, createdAt: identities.createdAt })
+    .from(identities)
+    .where(eq(identities.userId, userId))
+    .orderBy(asc(identities.id))
+    .limit(100);
+}
+
+/** Locks the person's row: what is counted of it stays so until the transaction ends. */
+export async function lock(id: number, tx: Queryable): Promise<User | undefined> {
+  return (await tx.select().from(users).where(eq(users.id, id)).limit(1).for("update"))[0];
+}
+
+export async function deleteIdentity(userId: number, provider: string, subject: string, tx: Queryable = db) {
+  await tx
+    .delete(identities)
+    .where(
+      and(eq(identities.userId, userId), eq(identities.provider, provider), eq(identities.subject, subject)),
+    );
+}
+
 export async function update(id: number, values: Partial<typeof users.$inferInsert>, tx: Queryable = db) {
   await tx.update(users).set(values).where(eq(users.id, id));
 }
@@ -89,6 +112,16 @@ export async function freeUserName(wish: string, tx: Queryable = db): Promise<st
     if (!(await findByUserName(userName, tx))) return userName;
   }
   return `${base.slice(0, 28)}-${newPublicId()}`;
+}
+
+export async function findAdministrators(
+  tx: Queryable = db,
+): Promise<{ id: number; email: string | null }[]> {
+  return tx
+    .select({ id: users.id, email: users.email })
+    .from(users)
+    .where(and(eq(users.administrator, true), isNull(users.suspendedAt)))
+    .limit(100);
 }
 
 /** Locks the rows of the administrators who can sign in, so that the last two can't both go at once. */

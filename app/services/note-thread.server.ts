@@ -6,6 +6,7 @@ import type { NoteLinks } from "./markdown-links.ts";
 import { revisionOf } from "./note-changes.server.ts";
 import { UNDO_MS } from "./note-limits.ts";
 import { loadLinks } from "./note-links.server.ts";
+import type { PictureRegion } from "./note-parts.ts";
 
 /** Who looks at a thread, as far as it changes what is offered. */
 export interface ThreadViewer {
@@ -25,6 +26,8 @@ export interface ThreadNote {
   /** Somebody else's, seen by somebody who is signed in. */
   mayReport: boolean;
   html: string;
+  /** Of a sweep: what it speaks of; null for all of it. */
+  part: { stretch: { fromHz: number; toHz: number } | null; region: PictureRegion | null } | null;
   /** As it was written; only for who may edit it. */
   body: string | null;
   mayEdit: boolean;
@@ -95,6 +98,7 @@ function drawNote(
     removed,
     folded: !removed && author !== null && viewer.blocked.has(author.id),
     mayReport: !removed && person !== null && note.authorId !== person.id,
+    part: removed ? null : partOf(note),
     html: removed ? "" : renderNote(note.body, links),
     body: mayEdit ? note.body : null,
     mayEdit,
@@ -120,6 +124,11 @@ function shownOf(rows: notes.ListedNote[], viewer: ThreadViewer): Set<number> {
     if (note.parentId !== null) answered.add(note.parentId);
   }
   return shown;
+}
+
+function partOf({ fromHz, toHz, region }: notes.NoteRow): ThreadNote["part"] {
+  const stretch = fromHz !== null && toHz !== null ? { fromHz, toHz } : null;
+  return stretch || region ? { stretch, region } : null;
 }
 
 function mayRestore({ removedAt, removedBy }: notes.NoteRow, { person }: ThreadViewer): boolean {

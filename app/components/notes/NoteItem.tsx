@@ -6,6 +6,7 @@ import { Markdown } from "~/components/ui/Markdown";
 import type { ThreadNote } from "~/services/note-thread.server";
 import { BareNoteForm } from "./BareNoteForm.tsx";
 import { NoteForm } from "./NoteForm.tsx";
+import { PartLink, usePartShown } from "./PartLink.tsx";
 import { notesPath, type ThreadWhere } from "./place.ts";
 import { RemovedNote, RemoveNote } from "./RemoveNote.tsx";
 import { Unfold } from "./Unfold.tsx";
@@ -13,6 +14,7 @@ import { Unfold } from "./Unfold.tsx";
 /** One note under its permanent anchor. */
 export function NoteItem({ note, where }: { note: ThreadNote; where: ThreadWhere }) {
   const [article, chosen] = useAnchor(`note-${note.publicId}`);
+  const shown = usePartShown(note.part, chosen);
   const name = note.author?.name ?? "A former member";
   if (note.removed) {
     return (
@@ -28,6 +30,7 @@ export function NoteItem({ note, where }: { note: ThreadNote; where: ThreadWhere
       tabIndex={-1}
       aria-label={`Note by ${name}`}
       className={`note ${chosen ? "note-chosen" : ""}`}
+      {...shown}
     >
       <header className="flex flex-wrap items-baseline gap-x-3">
         <span className="font-semibold">{name}</span>
@@ -39,6 +42,7 @@ export function NoteItem({ note, where }: { note: ThreadNote; where: ThreadWhere
         <a href={`#note-${note.publicId}`} className="note-time">
           <RelativeTime at={note.createdAt} />
         </a>
+        {note.part && <PartLink part={note.part} />}
         {note.editedAt && (
           <span className="text-small soft">
             <Link to={`${notesPath(where, note.publicId)}/history`}>

@@ -6,6 +6,7 @@ import * as jobs from "~/db/jobs.server";
 import * as outbox from "~/db/outbox.server";
 import * as people from "~/db/people.server";
 import * as projects from "~/db/projects.server";
+import * as reports from "~/db/reports.server";
 import * as sweeps from "~/db/sweeps.server";
 import { notFound } from "~/errors";
 import { redirectWithMessage } from "~/services/flash.server";
@@ -22,13 +23,14 @@ const PAGE_ROWS = 100;
 export async function loader(args: Route.LoaderArgs) {
   const person = await requirePerson(args, "site.administer");
   const page = Math.max(0, Math.trunc(Number(new URL(args.request.url).searchParams.get("page"))) || 0);
-  const [users, userCount, visibilities, stored, waiting, mails] = await Promise.all([
+  const [users, userCount, visibilities, stored, waiting, mails, openReports] = await Promise.all([
     people.findAll(PAGE_ROWS, page * PAGE_ROWS),
     people.countAll(),
     projects.countByVisibility(),
     sweeps.sumStoredBytes(),
     jobs.countAll(),
     outbox.countByState(),
+    reports.countOpen(),
   ]);
   return {
     page,
@@ -38,6 +40,7 @@ export async function loader(args: Route.LoaderArgs) {
     stored,
     waiting,
     mails,
+    openReports,
     users: users.map((user) => ({
       id: user.publicId,
       userName: user.userName,
@@ -73,7 +76,7 @@ const LAST_ADMINISTRATOR =
   "This is the last administrator who can sign in. Nothing was changed. Make somebody else administrator first.";
 
 export default function Admin({ loaderData, actionData }: Route.ComponentProps) {
-  const { visibilities, stored, waiting, mails, userCount, users, page, more } = loaderData;
+  const { visibilities, stored, waiting, mails, openReports, userCount, users, page, more } = loaderData;
   return (
     <div className="space-y-10">
       <h1>Administration</h1>
@@ -94,8 +97,9 @@ export default function Admin({ loaderData, actionData }: Route.ComponentProps) 
           </Fact>
           <Fact label="Accounts">{userCount}</Fact>
         </dl>
-        <p>
+        <p className="flex gap-6">
           <Link to="/admin/mail">Mail</Link>
+          <Link to="/admin/reports">Reported notes{openReports > 0 && ` (${openReports} to decide)`}</Link>
         </p>
       </section>
       <section className="space-y-3">
