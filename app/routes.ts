@@ -8,18 +8,24 @@ export default [
   route("sign-in", "routes/account/sign-in.tsx"),
   route("auth/github", "routes/account/github.ts"),
   route("auth/github/callback", "routes/account/github-callback.ts"),
+  route("auth/email", "routes/account/email.tsx"),
   route("sign-out", "routes/account/sign-out.ts"),
   route("settings", "routes/account/settings.tsx"),
+  route("settings/sign-in", "routes/account/ways.tsx"),
+  route("settings/blocked", "routes/account/blocked.tsx"),
+  route("settings/close", "routes/account/close.tsx"),
   route("settings/tokens", "routes/account/tokens.tsx"),
   route("theme", "routes/account/theme.ts"),
   route("cautions/dismiss", "routes/account/caution.ts"),
 
+  route("invitations/:token", "routes/invitations/invitation.tsx"),
   route("projects", "routes/projects/list.tsx"),
   route("projects/new", "routes/projects/new.tsx"),
   layout("routes/projects/layout.tsx", [
     ...prefix("projects/:project", [
       index("routes/projects/project.tsx"),
       route("activity", "routes/activity/activity.tsx"),
+      route("follow", "routes/inbox/follow.tsx"),
       route("members", "routes/projects/members.tsx"),
       route("settings", "routes/projects/settings.tsx"),
       route("sweeps", "routes/sweeps/list.tsx"),
@@ -46,6 +52,10 @@ export default [
       route("notes/:note/history", "routes/notes/history.tsx"),
       route("attachments/:attachment/sweep", "routes/attachments/sweep.tsx"),
       route("notes/:note/report", "routes/notes/report.tsx"),
+    ]),
+  ]),
+  ...prefix("projects/:project", [
+    route("activity.atom", "routes/activity/feed.ts"),
     route("sweeps/upload", "routes/sweeps/upload.ts"),
     route("sweeps/:sweep/original", "routes/sweeps/original.ts"),
     route("sweeps/:sweep/picture", "routes/sweeps/picture.ts"),
@@ -67,9 +77,13 @@ export default [
   ]),
   route("notes/preview", "routes/notes/preview.ts"),
   route("search", "routes/search/search.tsx"),
+  route("inbox", "routes/inbox/inbox.tsx"),
+  route("settings/mail", "routes/inbox/mail.tsx"),
+  route("unsubscribe/:token", "routes/inbox/unsubscribe.tsx"),
 
   route("admin", "routes/admin/admin.tsx"),
   route("admin/mail", "routes/admin/mail.tsx"),
+  route("admin/reports", "routes/admin/reports.tsx"),
 
   ...prefix("api/v1", [
     route("openapi.json", "routes/api/openapi.ts"),

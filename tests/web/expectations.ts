@@ -1,11 +1,22 @@
 import type { ProjectAction, SiteAction } from "~/auth/permissions";
-import { type Crew, onePixel, type Place, type Someone, touchstone, unique, waitingMail } from "./world.ts";
+import {
+  type Crew,
+  onePixel,
+  openReport,
+  type Place,
+  type Someone,
+  touchstone,
+  unique,
+  waitingMail,
+} from "./world.ts";
 
 /** What each route asks for, and the smallest form that it takes. One line a case; the walk does the rest. */
 
 export type Ask =
   | { site: SiteAction }
   | { project: ProjectAction }
+  /** The same, for whoever has an account only. */
+  | { signedIn: ProjectAction }
   /** The API: the same table, asked by token. */
   | { api: ProjectAction | "any-member" }
   /** Members only, whatever their role: leaving. */
@@ -37,6 +48,8 @@ export interface Case {
   json?: () => unknown;
   /** The case destroys what it is asked of: it gets a project of its own for each role, empty or with a sweep. */
   destroys?: "project" | "sweep";
+  /** The case ends the account that asks: somebody new asks in place of each. */
+  asNewcomer?: boolean;
 }
 
 interface Expectation {
@@ -58,6 +71,24 @@ export const EXPECTATIONS: Record<string, Expectation> = {
   "routes/account/sign-in.tsx": { GET: anybody },
   "routes/account/github.ts": { GET: anybody },
   "routes/account/github-callback.ts": { GET: anybody },
+  "routes/account/email.tsx": {
+    GET: anybody,
+    POST: [
+      {
+        name: "ask",
+        ask: { site: "site.read" },
+        form: () => ({ intent: "ask", email: `${unique("walk")}@fennmarsh.example` }),
+      },
+      {
+        name: "add",
+        ask: { site: "account.own" },
+        form: () => ({ intent: "ask", add: "yes", email: `${unique("walk")}@fennmarsh.example` }),
+      },
+      { name: "code", ask: { site: "site.read" }, form: () => ({ intent: "code", code: "0000 0000" }) },
+      { name: "name", ask: { site: "site.read" }, form: () => ({ intent: "name", name: "Nobody yet" }) },
+      { name: "again", ask: { site: "site.read" }, form: () => ({ intent: "again" }) },
+    ],
+  },
   "routes/account/sign-out.ts": { GET: anybody, POST: anybody },
   "routes/account/settings.tsx": {
     GET: [{ ask: { site: "account.own" } }],
@@ -65,7 +96,12 @@ export const EXPECTATIONS: Record<string, Expectation> = {
       {
         name: "profile",
         ask: { site: "account.own" },
-        form: ({ self }) => ({ intent: "profile", name: "New name", userName: self?.userName ?? "nobody" }),
+        form: ({ self }) => ({
+          intent: "profile",
+          name: "New name",
+          userName: self?.userName ?? "nobody",
+          timeZone: "UTC",
+        }),
       },
       {
         name: "lengths",
@@ -78,6 +114,37 @@ export const EXPECTATIONS: Record<string, Expectation> = {
         form: () => ({ intent: "revoke-session", session: "0".repeat(64) }),
       },
       { name: "revoke-others", ask: { site: "account.own" }, form: () => ({ intent: "revoke-others" }) },
+    ],
+  },
+  "routes/account/ways.tsx": {
+    GET: [{ ask: { site: "account.own" } }],
+    POST: [
+      { name: "add-github", ask: { site: "account.own" }, form: () => ({ intent: "add-github" }) },
+      {
+        name: "remove",
+        ask: { site: "account.own" },
+        form: () => ({ intent: "remove", provider: "github", subject: "none" }),
+      },
+      { name: "mails-to", ask: { site: "account.own" }, form: () => ({ intent: "mails-to", subject: "no" }) },
+    ],
+  },
+  "routes/account/blocked.tsx": {
+    GET: [{ ask: { site: "account.own" } }],
+    POST: (["block", "unblock"] as const).map((intent) => ({
+      name: intent,
+      ask: { site: "account.own" as const },
+      form: ({ bystander }: About) => ({ intent, userName: bystander.userName }),
+    })),
+  },
+  "routes/account/close.tsx": {
+    GET: [{ ask: { site: "account.own" } }],
+    // Signed in as somebody of their own for each, for the account goes.
+    POST: [
+      {
+        ask: { site: "account.own" },
+        asNewcomer: true,
+        form: ({ self }) => ({ notes: "stay", userName: self?.userName ?? "nobody" }),
+      },
     ],
   },
   "routes/account/tokens.tsx": {
@@ -100,6 +167,11 @@ export const EXPECTATIONS: Record<string, Expectation> = {
     POST: [{ ask: { site: "account.own" }, form: () => ({ caution: "first-sweep", returnTo: "/" }) }],
   },
 
+  "routes/invitations/invitation.tsx": {
+    GET: anybody,
+    POST: [{ ask: { site: "account.own" }, destroys: "project" }],
+  },
+
   "routes/projects/list.tsx": { GET: [{ ask: { site: "account.own" } }] },
   "routes/projects/new.tsx": {
     GET: [{ ask: { site: "project.create" } }],
@@ -115,6 +187,27 @@ export const EXPECTATIONS: Record<string, Expectation> = {
         name: "add",
         ask: { project: "members.manage" },
         form: ({ crew }) => ({ intent: "add", userName: crew.reader.userName, role: "reader" }),
+      },
+      {
+        name: "invite",
+        ask: { project: "members.manage" },
+        form: () => ({ intent: "invite", role: "reader", days: "7" }),
+      },
+      {
+        name: "revoke",
+        ask: { project: "members.manage" },
+        form: () => ({ intent: "revoke", invitation: "nothing" }),
+      },
+      {
+        name: "hand-over",
+        ask: { project: "members.manage" },
+        form: ({ crew, place }) => ({
+          intent: "hand-over",
+          userName: crew.reader.userName,
+          afterwards: "owner",
+          title: place.title,
+        }),
+        destroys: "project",
       },
       {
         name: "change",
@@ -455,6 +548,27 @@ export const EXPECTATIONS: Record<string, Expectation> = {
     ],
   },
   "routes/activity/feed.ts": { GET: read },
+  "routes/inbox/inbox.tsx": {
+    GET: [{ ask: { site: "account.own" } }],
+    POST: [
+      { name: "read", ask: { site: "account.own" }, form: () => ({ intent: "read", notice: "none" }) },
+      { name: "read-all", ask: { site: "account.own" }, form: () => ({ intent: "read-all" }) },
+    ],
+  },
+  "routes/inbox/mail.tsx": {
+    GET: [{ ask: { site: "account.own" } }],
+    POST: [{ ask: { site: "account.own" }, form: () => ({ scope: "all", mode: "daily" }) }],
+  },
+  "routes/inbox/unsubscribe.tsx": { GET: [{ ask: { status: 404 } }], POST: [{ ask: { status: 404 } }] },
+  "routes/inbox/follow.tsx": {
+    GET: [{ ask: { membership: true } }],
+    POST: [
+      { name: "follow", ask: { membership: true }, form: () => ({ intent: "follow", kind: "project" }) },
+      { name: "mute", ask: { membership: true }, form: () => ({ intent: "mute", kind: "project" }) },
+      { name: "neither", ask: { membership: true }, form: () => ({ intent: "neither", kind: "project" }) },
+      { name: "mail", ask: { membership: true }, form: () => ({ intent: "mail", mode: "daily" }) },
+    ],
+  },
 
   "routes/admin/admin.tsx": {
     GET: [{ ask: { site: "site.administer" } }],
@@ -465,6 +579,16 @@ export const EXPECTATIONS: Record<string, Expectation> = {
     })),
   },
 
+  "routes/admin/reports.tsx": {
+    GET: [{ ask: { site: "site.administer" } }],
+    POST: [
+      {
+        ask: { site: "site.administer" },
+        prepare: ({ place, bystander }) => openReport(place, bystander),
+        form: ({ prepared }) => ({ intent: "leave", report: prepared }),
+      },
+    ],
+  },
   "routes/admin/mail.tsx": {
     GET: [{ ask: { site: "site.administer" } }],
     // A mail made up for each who asks, so that there is one to be tried again.

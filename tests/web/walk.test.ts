@@ -133,11 +133,14 @@ async function send(
   place: Place,
 ): Promise<Response> {
   const path = fill(route.path, place);
-  const about = { place, crew, self: personOf(actor), bystander, prepared: "" };
+  const known = personOf(actor);
+  const administrator = actor === "administrator";
+  const self = known && one.asNewcomer ? await makePerson("newcomer", { administrator }) : known;
+  const about = { place, crew, self, bystander, prepared: "" };
   const prepared = (await one.prepare?.(about)) ?? "";
   const form = one.form?.({ ...about, prepared }) ?? {};
   if (!("api" in one.ask)) {
-    const browser = await browserOf(actor);
+    const browser = self ? await signIn(self) : new Browser();
     return method === "GET" ? browser.get(path) : browser.post(path, form);
   }
   const init: RequestInit = { method };
@@ -180,6 +183,9 @@ function expected(ask: Ask, method: string, actor: Actor, visibility: Visibility
     return mayInProject(role, ask.api) ? "allowed" : "refused";
   }
   if (!role) return "hidden";
+  if ("signedIn" in ask) {
+    return actor === "visitor" ? withoutSession : mayInProject(role, ask.signedIn) ? "allowed" : "refused";
+  }
   if (allows(ask, actor, membership, role)) return "allowed";
   return actor === "visitor" ? withoutSession : "refused";
 }
@@ -208,6 +214,7 @@ function fill(path: string, place: Place): string {
     .replace(":attachment", place.attachment)
     .replace(":step", place.step)
     .replace(":trail", place.trail)
+    .replace(":token", place.invitation)
     .replace(":size", "small")
     .replace("*", "no/such/thing");
 }

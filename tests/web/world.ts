@@ -2,10 +2,11 @@ import { createHash } from "node:crypto";
 import type { ProjectRole, Visibility } from "~/auth/permissions";
 import { startSession } from "~/auth/session.server";
 import { inTransaction, pool } from "~/db/client.server";
-
+import * as notes from "~/db/notes.server";
 import * as outbox from "~/db/outbox.server";
 import * as people from "~/db/people.server";
 import * as projects from "~/db/projects.server";
+import * as reports from "~/db/reports.server";
 import * as sweeps from "~/db/sweeps.server";
 import * as trails from "~/db/trails.server";
 import { IDEAL_STANDARDS, NOTHING_GIVEN } from "~/measurement/bench";
@@ -69,6 +70,8 @@ export interface Place {
   step: string;
   /** That its dip is on. */
   trail: string;
+  /** The secret of a link for readers. */
+  invitation: string;
 }
 
 export type Crew = Record<ProjectRole, Someone>;
@@ -82,7 +85,10 @@ export async function makePlace(crew: Crew, visibility: Visibility, empty = fals
   }
   const second = await makePerson("second");
   await projects.insertMember(project.id, second.id, "owner");
-  const place = { title, visibility, project: project.publicId, projectId: project.id };
+  const by = { id: crew.owner.id, name: crew.owner.userName };
+  const door = await invite({ project: { ...project, title }, by, role: "reader", email: null, days: 1 });
+  const invitation = door.kind === "made" ? door.path.replace("/invitations/", "") : "";
+  const place = { title, visibility, project: project.publicId, projectId: project.id, invitation };
   if (empty)
     return {
       ...place,
@@ -195,6 +201,15 @@ export function sendSweep(
   form.set("file", new File([text], name));
   for (const [key, value] of Object.entries(fields)) form.set(key, value);
   return askApi(`/projects/${project}/sweeps`, token, { method: "POST", body: form });
+}
+
+/** An open report on the place's note; its public id. */
+export async function openReport(place: Place, by: Someone): Promise<string> {
+  const found = await notes.findByPublicId(place.note);
+  const noteId = found?.note.id ?? 0;
+  await reports.insert({ noteId, reason: "A walk.", reportedBy: by.id });
+  const open = await reports.findAll("open", 1000);
+  return open.findLast(({ note }) => note.id === noteId)?.report.publicId ?? "";
 }
 
 /** A mail that waits for longer than any test; its public id. */
