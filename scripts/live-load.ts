@@ -13,6 +13,7 @@ const { values } = parseArgs({
     seconds: { type: "string", default: "60" },
   },
 });
+process.env.NODE_ENV = "production";
 const stack = await startTestStack({ demo: false });
 try {
   process.env.BASE_URL = stack.address;

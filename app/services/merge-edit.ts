@@ -25,6 +25,23 @@ export function mergeEdit<V extends Record<string, Value>>(was: Partial<V>, now:
   return merged;
 }
 
+/** The question to the later of two people, as `<EditConflict>` asks it: `text` gives each value as its form sends it. */
+export function conflictOf<V extends Record<string, Value>>(
+  now: V,
+  wanted: V,
+  { changes, conflicts }: Merged<V>,
+  text: (value: Value) => string = (value) => String(value ?? ""),
+) {
+  const settled = Object.entries({ ...now, ...changes }) as [keyof V & string, Value][];
+  return {
+    asked: conflicts.map((name) => ({ name, mine: text(wanted[name]), theirs: text(now[name]) })),
+    rest: Object.fromEntries(
+      settled.flatMap(([name, value]) => (conflicts.includes(name) ? [] : [[name, text(value)]])),
+    ),
+    was: JSON.stringify(now),
+  };
+}
+
 /** What a hidden field says of how the form was filled in; nothing where it says nothing that makes sense. */
 export function parseWas<V extends object>(text: unknown): Partial<V> {
   try {

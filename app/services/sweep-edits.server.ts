@@ -12,7 +12,7 @@ import { deleteAttachmentsUnder } from "./attachments.server.ts";
 import { correctAsRead } from "./correction.server.ts";
 import { record } from "./events.server.ts";
 import { storeOutcome } from "./intake.server.ts";
-import { mergeEdit } from "./merge-edit.ts";
+import { conflictOf, mergeEdit } from "./merge-edit.ts";
 import { previewOf } from "./points.server.ts";
 import { readFile } from "./reading.server.ts";
 import { getObject } from "./storage.server.ts";
@@ -38,21 +38,22 @@ export function titleAndDateOf(sweep: { title: string; takenAt: Date | null }): 
   return { title: sweep.title, takenAt: sweep.takenAt?.toISOString().slice(0, 16) ?? null };
 }
 
-/** Keeps what a person changed of title and date; answers what somebody else changed meanwhile, with nothing kept. */
+/** Keeps what a person changed of title and date; where somebody else changed the same meanwhile, answers what to ask, with nothing kept. */
 export function keepTitleAndDate(
   { id, projectId }: Pick<sweeps.SweepRow, "id" | "projectId">,
   was: Partial<TitleAndDate>,
   wanted: { title: string; takenAt: Date | null },
   by: number,
-): Promise<TitleAndDate | null> {
+): Promise<ReturnType<typeof conflictOf> | null> {
   return inTransaction(async (tx) => {
     await projects.lock(projectId, tx);
     const sweep = await sweeps.lock(id, tx);
     if (!sweep) return null;
     const now = titleAndDateOf(sweep);
-    const { changes, conflicts } = mergeEdit(was, { ...now }, { ...titleAndDateOf(wanted) });
-    if (conflicts.length > 0) return now;
-    const { title, takenAt } = changes;
+    const mine = titleAndDateOf(wanted);
+    const merged = mergeEdit(was, { ...now }, { ...mine });
+    if (merged.conflicts.length > 0) return conflictOf({ ...now }, { ...mine }, merged);
+    const { title, takenAt } = merged.changes;
     if (title === undefined && takenAt === undefined) return null;
     await sweeps.update(
       id,

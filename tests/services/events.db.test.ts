@@ -179,3 +179,24 @@ async function dipRows(publicId: string) {
   const found = await dips.findByPublicId(publicId);
   return found ? [found.dip] : [];
 }
+
+describe("two people who change one thing", () => {
+  it("the later one is asked, with nothing written, and no event tells of it", async () => {
+    const { sweep } = await take("one", 7.1);
+    await told();
+    const was = { title: "one", takenAt: null };
+    await keepTitleAndDate(sweep, was, { title: "hers", takenAt: null }, by.id);
+    const at = new Date("2026-05-01T10:00:00Z");
+    const asked = await keepTitleAndDate(sweep, was, { title: "his", takenAt: at }, by.id);
+    expect(asked).toEqual({
+      asked: [{ name: "title", mine: "his", theirs: "hers" }],
+      rest: { takenAt: "2026-05-01T10:00" },
+      was: JSON.stringify({ title: "hers", takenAt: null }),
+    });
+    expect((await find(sweep.publicId)).sweep.title).toBe("hers");
+    expect(await told()).toEqual(["sweep.edited: hers"]);
+    const now = JSON.parse(asked?.was ?? "");
+    expect(await keepTitleAndDate(sweep, now, { title: "his", takenAt: at }, by.id)).toBeNull();
+    expect(await told()).toEqual(["sweep.edited: his"]);
+  });
+});

@@ -1,5 +1,5 @@
 import { describe, expect, it } from "vitest";
-import { mergeEdit, parseWas } from "../../app/services/merge-edit.ts";
+import { conflictOf, mergeEdit, parseWas } from "../../app/services/merge-edit.ts";
 
 const was = { title: "A", summary: "one", region: null };
 
@@ -20,6 +20,28 @@ describe("mergeEdit", () => {
 
   it("takes a form that does not say how it began as wholly changed", () => {
     expect(mergeEdit({}, was, { ...was, title: "C" }).changes).toEqual({ title: "C" });
+  });
+});
+
+describe("conflictOf", () => {
+  it("asks about what both changed, and settles the rest for both", () => {
+    const now = { title: "B", summary: "two", region: null };
+    const wanted = { title: "C", summary: "one", region: 1 };
+    expect(conflictOf(now, wanted, mergeEdit(was, now, wanted))).toEqual({
+      asked: [{ name: "title", mine: "C", theirs: "B" }],
+      rest: { summary: "two", region: "1" },
+      was: JSON.stringify(now),
+    });
+  });
+
+  it("leads, whatever is chosen, to a form that is taken without another question", () => {
+    const now = { ...was, title: "B" };
+    const wanted = { ...was, title: "C" };
+    const { asked, rest, was: began } = conflictOf(now, wanted, mergeEdit(was, now, wanted));
+    for (const title of [asked[0].mine, asked[0].theirs]) {
+      const sent = { ...now, title, summary: rest.summary };
+      expect(mergeEdit(parseWas<typeof now>(began), now, sent).conflicts).toEqual([]);
+    }
   });
 });
 

@@ -8,6 +8,7 @@ import { parseWas } from "~/services/merge-edit";
 import { type AboutValues, changeAbout, changeBands, deleteProject } from "~/services/projects.server";
 import type { Route } from "./+types/settings";
 import { bandInHertz, bandRowOf } from "./band-rows.ts";
+import { AboutConflict } from "./components/AboutConflict.tsx";
 import { AboutForm } from "./components/AboutForm.tsx";
 import { BandsForm } from "./components/BandsForm.tsx";
 import { DeleteForm } from "./components/DeleteForm.tsx";
@@ -35,10 +36,9 @@ export async function action(args: Route.ActionArgs) {
   switch (value.intent) {
     case "about": {
       const { intent: _, was, ...about } = value;
-      const { conflicts, now } = await changeAbout(project.id, parseWas(was), about, person?.id);
-      if (conflicts.length === 0) return redirectWithMessage(here, "The project was changed.");
-      const fieldErrors = Object.fromEntries(conflicts.map((name) => [name, [changedMeanwhile(now[name])]]));
-      return data({ lastResult: submission.reply({ fieldErrors }), now }, { status: 409 });
+      const conflict = await changeAbout(project.id, parseWas(was), about, person?.id);
+      if (conflict) return data({ lastResult: submission.reply(), conflict }, { status: 409 });
+      return redirectWithMessage(here, "The project was changed.");
     }
     case "bands":
       await changeBands(project.id, value.bands.map(bandInHertz), person?.id);
@@ -61,21 +61,20 @@ function aboutOf({ title, summary, visibility, ituRegion }: AboutValues) {
   return { title, summary, visibility, ituRegion: ituRegion === null ? "" : String(ituRegion) };
 }
 
-function changedMeanwhile(now: string | number | null): string {
-  const short = String(now ?? "nothing").slice(0, 80);
-  return `Somebody else made this “${short}” in the meantime. Nothing was changed; keep this once more to put yours in its place.`;
-}
-
 export default function ProjectSettings({ loaderData, actionData }: Route.ComponentProps) {
   const last = actionData?.lastResult;
   const lastOf = (intent: string) => (last?.initialValue?.intent === intent ? last : undefined);
   return (
     <div className="max-w-[52rem] space-y-12">
-      <AboutForm
-        about={loaderData.about}
-        was={JSON.stringify(actionData && "now" in actionData ? actionData.now : loaderData.was)}
-        lastResult={lastOf("about")}
-      />
+      {actionData && "conflict" in actionData ? (
+        <AboutConflict conflict={actionData.conflict} />
+      ) : (
+        <AboutForm
+          about={loaderData.about}
+          was={JSON.stringify(loaderData.was)}
+          lastResult={lastOf("about")}
+        />
+      )}
       <BandsForm
         key={JSON.stringify(loaderData.bands)}
         bands={loaderData.bands}

@@ -5,12 +5,7 @@ import { refused } from "~/errors";
 import { DEFAULT_SETTINGS } from "~/measurement/sweep";
 import { redirectWithMessage } from "~/services/flash.server";
 import { parseWas } from "~/services/merge-edit";
-import {
-  deleteSweep,
-  keepSettings,
-  keepTitleAndDate,
-  type TitleAndDate,
-} from "~/services/sweep-edits.server";
+import { deleteSweep, keepSettings, keepTitleAndDate } from "~/services/sweep-edits.server";
 import type { Route } from "./+types/sweep";
 import { loadBands } from "./bands-page.server";
 import { changeCorrection } from "./change-correction.server";
@@ -96,13 +91,13 @@ export async function action(args: Route.ActionArgs) {
       });
       if (!parsed.success) return formErrors(parsed.error.issues.map((issue) => issue.message));
       const { title, takenAt = null } = parsed.data;
-      const theirs = await keepTitleAndDate(
+      const conflict = await keepTitleAndDate(
         found.sweep,
         parseWas(form.get("was")),
         { title, takenAt },
         access.person.id,
       );
-      if (theirs) return formErrors([changedMeanwhile(theirs)], 409);
+      if (conflict) return formErrors([CHANGED_MEANWHILE], 409, undefined, conflict);
       return redirectWithMessage(here, "Title and date kept.");
     }
     case "settings": {
@@ -134,10 +129,8 @@ export async function action(args: Route.ActionArgs) {
   }
 }
 
-function changedMeanwhile({ title, takenAt }: TitleAndDate): string {
-  const when = takenAt ? `taken at ${takenAt.replace("T", " ")} UTC` : "date not said";
-  return `Somebody else changed this in the meantime; it is now “${title}”, ${when}. Nothing of yours was kept: open “Title and date” to see it, and change it there.`;
-}
+const CHANGED_MEANWHILE =
+  "Somebody else changed title or date in the meantime. Nothing of yours was kept yet: open “Title and date” to see both and choose.";
 
 export default function SweepPage({ loaderData, actionData }: Route.ComponentProps) {
   const { view, dips, analysis, thread } = loaderData;
@@ -145,7 +138,7 @@ export default function SweepPage({ loaderData, actionData }: Route.ComponentPro
   const swrLimit = view.swrLimit ?? analysis.settings.swrLimit;
   return (
     <article className="grid gap-6">
-      <SweepHead data={loaderData} errors={actionData?.errors ?? []} />
+      <SweepHead data={loaderData} errors={actionData?.errors ?? []} conflict={actionData?.conflict} />
       {outside && <OutsideBandsCaution dismissed={loaderData.dismissed} />}
       <div className={thread ? "workspace workspace-open" : "workspace"}>
         <div className="grid gap-4 min-w-0 content-start">

@@ -1,4 +1,5 @@
 import { Form, Link } from "react-router";
+import { type Conflict, EditConflict } from "~/components/edit-conflict/EditConflict";
 import { Button } from "~/components/ui/Button";
 import { DateTime } from "~/components/ui/DateTime";
 import { Dialog } from "~/components/ui/Dialog";
@@ -8,7 +9,15 @@ import type { SweepPageData } from "../sweep";
 import { kindOf } from "../words";
 
 /** Title, where the numbers come from, and what can be done with the sweep. */
-export function SweepHead({ data, errors }: { data: SweepPageData; errors: string[] }) {
+export function SweepHead({
+  data,
+  errors,
+  conflict,
+}: {
+  data: SweepPageData;
+  errors: string[];
+  conflict?: Conflict;
+}) {
   const { project, sweep, may } = data;
   const base = `/projects/${project.publicId}`;
   return (
@@ -16,7 +25,9 @@ export function SweepHead({ data, errors }: { data: SweepPageData; errors: strin
       <div className="flex flex-wrap items-start justify-between gap-x-6 gap-y-3">
         <h2 className="sweep-title">{sweep.title}</h2>
         <div className="flex flex-wrap gap-2 no-print">
-          {may.edit && <EditDialog key={`${sweep.title} ${sweep.takenAt}`} sweep={sweep} />}
+          {may.edit && (
+            <EditDialog key={`${sweep.title} ${sweep.takenAt}`} sweep={sweep} conflict={conflict} />
+          )}
           {may.delete && (
             <DeleteDialog
               title={sweep.title}
@@ -70,8 +81,21 @@ function readingWords(sweep: SweepPageData["sweep"]): string {
   return "Read without questions";
 }
 
-function EditDialog({ sweep }: { sweep: SweepPageData["sweep"] }) {
+function EditDialog({ sweep, conflict }: { sweep: SweepPageData["sweep"]; conflict?: Conflict }) {
   const taken = sweep.takenAt ? new Date(sweep.takenAt).toISOString().slice(0, 16) : "";
+  if (conflict) {
+    return (
+      <Dialog label="Title and date" icon="edit" size="small" title="Title and date">
+        <EditConflict
+          key={conflict.was}
+          intent="edit"
+          conflict={conflict}
+          labels={{ title: "Title", takenAt: "Taken at, UTC" }}
+          words={{ takenAt: (at) => at.replace("T", " ") || "not said" }}
+        />
+      </Dialog>
+    );
+  }
   return (
     <Dialog label="Title and date" icon="edit" size="small" title="Title and date">
       <Form method="post" className="grid gap-4">
