@@ -72,7 +72,10 @@ test("Ada describes the antenna, sweeps it and lets Bram in", async () => {
   await page.getByLabel("User name").fill(bram);
   await page.getByLabel("Role").last().selectOption("experimenter");
   await page.getByRole("button", { name: "Add", exact: true }).click();
-  await page.getByRole("cell", { name: new RegExp(bram) }).first().waitFor();
+  await page
+    .getByRole("cell", { name: new RegExp(bram) })
+    .first()
+    .waitFor();
   await context.close();
   expect(complaints).toEqual([]);
 });
@@ -87,7 +90,10 @@ test("Bram sees it for the first time, and adopts what may be behind it", async 
   await settled(page);
   await expectAccessible(page);
   const causes = page.getByRole("region", { name: "What it may be" });
-  const braid = causes.getByRole("listitem").filter({ hasText: /May be Braid to the stake, half wave/ }).first();
+  const braid = causes
+    .getByRole("listitem")
+    .filter({ hasText: /May be Braid to the stake, half wave/ })
+    .first();
   // 0.9516 · c / (2 · 2.76 m) = 51.68 MHz.
   expect(await braid.textContent()).toMatch(/= 51\.68\sMHz/);
   expect(await causes.textContent()).toContain("Flagpole (length not said)");
@@ -95,7 +101,10 @@ test("Bram sees it for the first time, and adopts what may be behind it", async 
   await braid.getByText("with a note").click();
   await braid.getByLabel("Your words on it").fill("It runs free for 2.76 m, and nobody thought of it.");
   await braid.getByRole("button", { name: /Adopt as proposed verdict/ }).click();
-  await page.getByRole("region", { name: "Verdict" }).getByText(/Proposed by/).waitFor();
+  await page
+    .getByRole("region", { name: "Verdict" })
+    .getByText(/Proposed by/)
+    .waitFor();
   const thread = page.getByRole("article", { name: /Note by/ });
   expect(await thread.textContent()).toContain("nobody thought of it");
   expect(await thread.textContent()).toMatch(/On the evidence of.*reckoned: may be Braid to the stake/s);
