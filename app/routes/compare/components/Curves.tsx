@@ -1,4 +1,5 @@
 import { Link, useNavigate } from "react-router";
+import { frequencyScale } from "~/charts/axis";
 import { OverlayChart } from "~/charts/OverlayChart";
 import { RangeBar } from "~/charts/RangeBar";
 import type { FrequencyRange } from "~/charts/ranges";
@@ -27,7 +28,8 @@ export function Curves({ data, shown }: CurvesProps) {
   const onRange = (to: FrequencyRange) =>
     navigate(searchFor(to), { replace: true, preventScrollReset: true });
   const against = sweeps.find(({ publicId }) => publicId === reference);
-  const drag = hydrated && <StripDrag scale={overlay.scale} onRange={onRange} />;
+  const axis = frequencyScale(shown.scale, shown.range.fromHz, shown.range.toHz);
+  const drag = hydrated && <StripDrag scale={axis} onRange={onRange} />;
   return (
     <section aria-labelledby="curves" className="grid gap-4 min-w-0">
       <div className="flex flex-wrap items-center justify-between gap-3">
