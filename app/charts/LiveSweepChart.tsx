@@ -1,5 +1,15 @@
-import { type ComponentType, lazy, Suspense, useEffect, useMemo, useRef, useState } from "react";
+import {
+  type ComponentType,
+  lazy,
+  type ReactNode,
+  Suspense,
+  useEffect,
+  useMemo,
+  useRef,
+  useState,
+} from "react";
 import { useHydrated } from "~/components/ui/hydrated";
+import type { FrequencyScale } from "./axis";
 import type { ChartDip } from "./chart-types";
 import { DragBar, type DragMode, type ZoomViewState } from "./DragBar";
 import type { ChartPoints } from "./decimate";
@@ -29,11 +39,13 @@ export interface LiveSweepChartProps extends Omit<SceneInput, "plotWidthPx"> {
   rangeHref: (range: FrequencyRange) => string;
   /** Called when a stretch was chosen: put it in the address. */
   onRange: (range: FrequencyRange) => void;
+  /** A layer of the page's own over the plot, drawn at its scale. */
+  overPlot?: (scale: FrequencyScale) => ReactNode;
 }
 
 /** A sweep's chart with its cards: drawn by the server, then zoomed, moved and read with the pointer. */
 export function LiveSweepChart(props: LiveSweepChartProps) {
-  const { whole, label, dipHref, chosenDipId, onPick, rangeHref, onRange, ...input } = props;
+  const { whole, label, dipHref, chosenDipId, onPick, rangeHref, onRange, overPlot, ...input } = props;
   const { view, dips, bands, designBands, swrLimit, plotHeightPx, limits, measured } = input;
   const all = useAllPoints(input.points, whole);
   // Limits and the grey stretch go point by point with the points they came with.
@@ -107,6 +119,7 @@ export function LiveSweepChart(props: LiveSweepChartProps) {
               />
             </Suspense>
           )}
+          {overPlot?.(shown.scale)}
         </SweepChart>
       </div>
       <HollowCards scene={shown} designBands={designBands} {...links} />

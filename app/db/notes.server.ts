@@ -130,6 +130,9 @@ export async function findLatestByProject(projectId: number, limit = 10, tx: Que
 
 export async function insert(
   values: NotePlace & {
+    fromHz?: number | null;
+    toHz?: number | null;
+    region?: NoteRow["region"];
     parentId: number | null;
     authorId: number;
     body: string;

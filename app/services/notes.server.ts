@@ -7,6 +7,7 @@ import * as projects from "~/db/projects.server";
 import { record } from "./events.server.ts";
 import { MAX_NOTE_CHARACTERS } from "./note-limits.ts";
 import { attachmentsIn, expandNote } from "./note-links.server.ts";
+import type { PictureRegion } from "./note-parts.ts";
 import { aboutNote } from "./note-places.ts";
 
 export interface WriteNote {
@@ -15,12 +16,16 @@ export interface WriteNote {
   place: notes.NotePlace;
   /** The note that is answered; it stands in the same place. */
   parentPublicId?: string | null;
+  /** On a sweep: the stretch of frequency, or the region of its picture, that it speaks of. */
+  part?: NotePart;
   body: string;
   /** Made by whoever sends: sent twice, it is stored once. */
   clientKey?: string | null;
   /** When it was written, where that is not now. */
   createdAt?: Date;
 }
+
+export type NotePart = { fromHz: number; toHz: number } | { region: PictureRegion };
 
 /** Why a note was not stored, in words for the one who wrote it. */
 export class NoteProblem extends Error {}
@@ -40,6 +45,7 @@ export async function writeNote(input: WriteNote, tx?: Transaction): Promise<{ p
       : null;
     const values = {
       ...input.place,
+      ...input.part,
       projectId: input.project.id,
       parentId,
       authorId: input.author.id,

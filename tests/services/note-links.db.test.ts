@@ -133,7 +133,7 @@ describe("references", () => {
     const { dip, found } = await swept(project, "Gone");
     await writeNote({ project, author: ada, place: place(), body: `#dip:${dip}` });
     await keepSettings(found, { ...DEFAULT_SETTINGS, minimumProminenceDb: 60 }, ada.id);
-    await deleteSweep(found);
+    await deleteSweep(found, ada.id);
     const { html } = await thread();
     expect(html).toContain('<span class="reference">7.');
     expect(html).not.toContain("<a ");

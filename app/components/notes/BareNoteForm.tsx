@@ -1,6 +1,7 @@
 import { useLocation } from "react-router";
 import { Button } from "~/components/ui/Button";
 import { MAX_NOTE_CHARACTERS } from "~/services/note-limits";
+import { PartFields } from "./PartFields.tsx";
 import { kindOf, notesPath, type ThreadWhere } from "./place.ts";
 
 export interface NoteTarget {
@@ -36,6 +37,7 @@ export function BareNoteForm({
         aria-label={label}
         className="control"
       />
+      {where.parts && !target.edited && !target.parent && <PartFields offered={where.parts} />}
       <Button size="small">{target.edited ? "Keep the change" : "Store the note"}</Button>
     </form>
   );

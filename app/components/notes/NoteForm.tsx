@@ -2,14 +2,17 @@ import { getFormProps, type SubmissionResult, useForm } from "@conform-to/react"
 import { parseWithZod } from "@conform-to/zod/v4";
 import { type FormEvent, useEffect, useId, useRef, useState } from "react";
 import { useFetcher } from "react-router";
+import { Difference } from "~/components/edit-conflict/Difference";
 import { Button } from "~/components/ui/Button";
 import { useHydrated } from "~/components/ui/hydrated";
 import { useToast } from "~/components/ui/Toast";
 import { MAX_NOTE_CHARACTERS } from "~/services/note-limits";
 import { type NoteTarget, NoteTargetFields } from "./BareNoteForm.tsx";
 import { useClientKey, useDraft } from "./draft.ts";
+import { useMarks } from "./marks.tsx";
 import { NoteText } from "./NoteText.tsx";
 import { editNoteSchema, writeNoteSchema } from "./notes.schema.ts";
+import { PartFields } from "./PartFields.tsx";
 import { Preview } from "./Preview.tsx";
 import { notesPath, placeKey, type ThreadWhere } from "./place.ts";
 
@@ -37,6 +40,7 @@ export function NoteForm({ where, target = {}, label, onDone, onCancel, autoFocu
   const fetcher = useFetcher<Answer>();
   const { show } = useToast();
   const { edited } = target;
+  const marks = useMarks();
   const draft = useDraft(`${placeKey(where)}:${edited?.publicId ?? target.parent ?? ""}`, edited?.body ?? "");
   const [clientKey, renewKey] = useClientKey();
   const schema = edited ? editNoteSchema : writeNoteSchema;
@@ -55,6 +59,7 @@ export function NoteForm({ where, target = {}, label, onDone, onCancel, autoFocu
     if (!data.publicId && !data.done) return;
     draft.forget("");
     renewKey();
+    marks?.setPicked({ stretch: null, region: null });
     show({ id: `note-${Date.now()}`, text: data.done ? "The note is changed." : "The note is stored." });
     onDone?.();
   });
@@ -88,7 +93,9 @@ export function NoteForm({ where, target = {}, label, onDone, onCancel, autoFocu
             You changed this note in another window since this form was opened. Nothing was stored yet. It now
             says what stands here; take over from it what you want to keep, or store yours in its place.
           </p>
-          <pre className="whitespace-pre-wrap break-words text-small">{theirs.body}</pre>
+          <p className="text-small max-h-[20rem] overflow-auto">
+            <Difference text={theirs.body} against={draft.text} />
+          </p>
         </section>
       )}
       {!edited && <input type="hidden" name="clientKey" value={clientKey} />}
@@ -102,6 +109,7 @@ export function NoteForm({ where, target = {}, label, onDone, onCancel, autoFocu
         errors={offline ? [OFFLINE] : (fields.body.errors ?? form.errors)}
         hint={<Hint restored={draft.restored} left={MAX_NOTE_CHARACTERS - draft.text.length} />}
       />
+      {where.parts && !edited && !target.parent && <PartFields offered={where.parts} />}
       <Preview text={draft.text} projectId={where.projectId} />
       <div className="flex flex-wrap items-center gap-2">
         <Button size="small" busy={busy}>

@@ -4,7 +4,8 @@ import type { ThreadNote } from "~/services/note-thread.server";
 import { BareNoteForm } from "./BareNoteForm.tsx";
 import { NoteForm } from "./NoteForm.tsx";
 import { NoteItem } from "./NoteItem.tsx";
-import { placeName, type ThreadPlace, type ThreadWhere } from "./place.ts";
+import type { PartsOffered } from "./parts.ts";
+import { kindOf, placeName, type ThreadPlace, type ThreadWhere } from "./place.ts";
 import "./notes.css";
 
 export interface ThreadProps {
@@ -13,11 +14,13 @@ export interface ThreadProps {
   place: ThreadPlace;
   thread: ThreadNote[];
   mayWrite: boolean;
+  /** On a sweep: what a note can speak of a part of. */
+  parts?: PartsOffered;
 }
 
 /** The notes of one place, with all there is to do about them. Complete without scripts. */
-export function Thread({ projectId, place, thread, mayWrite }: ThreadProps) {
-  const where = { projectId, place, mayWrite };
+export function Thread({ projectId, place, thread, mayWrite, parts }: ThreadProps) {
+  const where = { projectId, place, mayWrite, parts };
   return (
     <div className="grid gap-6">
       {thread.length === 0 ? (

@@ -12,6 +12,18 @@ const body = z
     error: `A note has at most ${MAX_NOTE_CHARACTERS.toLocaleString("en")} characters.`,
   });
 
+/** As a person writes it, with a point or a comma; nothing where the field is empty. */
+function figure(most: number, wrong: string) {
+  return z
+    .string()
+    .optional()
+    .transform((text) => text?.trim().replace(",", ".") || undefined)
+    .refine((text) => text === undefined || (/^\d*\.?\d+$/.test(text) && Number(text) <= most), wrong)
+    .transform((text) => (text === undefined ? undefined : Number(text)));
+}
+const mhz = figure(1e6, "Give the stretch in MHz, as 7.05.");
+const percent = figure(100, "Give the region in per cent of the picture, 0 to 100.");
+
 /** A note on one of these, or with none of them on the project. */
 export const writeNoteSchema = z.object({
   dip: publicId.optional(),
@@ -21,6 +33,12 @@ export const writeNoteSchema = z.object({
   bench: publicId.optional(),
   parent: publicId.optional(),
   body,
+  fromMhz: mhz,
+  toMhz: mhz,
+  regionLeft: percent,
+  regionTop: percent,
+  regionWidth: percent,
+  regionHeight: percent,
   clientKey: z.string().max(40).optional(),
   returnTo: z.string().optional(),
 });

@@ -1,3 +1,5 @@
+import type { PartsOffered } from "./parts.ts";
+
 /** What a thread can stand on, as forms and addresses name it. */
 export const PLACE_KINDS = ["dip", "sweep", "trail", "step", "bench"] as const;
 export type PlaceKind = (typeof PLACE_KINDS)[number];
@@ -11,6 +13,8 @@ export interface ThreadWhere {
   projectId: string;
   place: ThreadPlace;
   mayWrite: boolean;
+  /** On a sweep: what a note can speak of a part of. */
+  parts?: PartsOffered;
 }
 
 export function notesPath({ projectId }: Pick<ThreadWhere, "projectId">, notePublicId?: string): string {

@@ -8,6 +8,7 @@ import { redirectWithMessage } from "~/services/flash.server";
 import { listThread } from "~/services/note-thread.server";
 import { NoteProblem, writeNote } from "~/services/notes.server";
 import type { Route } from "./+types/notes";
+import { requirePart } from "./part.server.ts";
 import { backTo, isFromScript, pathOf, requirePlace, wishedPlace } from "./place.server.ts";
 
 /** The thread of a dip (`?dip=`), a sweep, a trail, a step, a bench, or with none of them of the project. */
@@ -32,7 +33,8 @@ export async function action(args: Route.ActionArgs) {
       `${what}. Nothing was stored.`,
     );
   }
-  const { parent, body, clientKey, returnTo, ...wished } = submission.value;
+  const { parent, body, clientKey, returnTo, dip, sweep, trail, step, bench, ...part } = submission.value;
+  const wished = { dip, sweep, trail, step, bench };
   const place = await requirePlace(access, wished);
   const page = pathOf(project, wished);
   try {
@@ -41,6 +43,7 @@ export async function action(args: Route.ActionArgs) {
       author: person,
       place,
       parentPublicId: parent,
+      part: await requirePart({ sweep, ...part }),
       body,
       clientKey,
     });

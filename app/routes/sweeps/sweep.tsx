@@ -1,5 +1,6 @@
 import { Link, redirect } from "react-router";
 import { requireProject } from "~/auth/require.server";
+import { MarksProvider } from "~/components/notes/marks";
 import * as sweeps from "~/db/sweeps.server";
 import { refused } from "~/errors";
 import { DEFAULT_SETTINGS } from "~/measurement/sweep";
@@ -137,45 +138,47 @@ export default function SweepPage({ loaderData, actionData }: Route.ComponentPro
   const outside = dips.some((dip) => dip.inDesignBand === false && !dip.edge);
   const swrLimit = view.swrLimit ?? analysis.settings.swrLimit;
   return (
-    <article className="grid gap-6">
-      <SweepHead data={loaderData} errors={actionData?.errors ?? []} conflict={actionData?.conflict} />
-      {outside && <OutsideBandsCaution dismissed={loaderData.dismissed} />}
-      <div className={thread ? "workspace workspace-open" : "workspace"}>
-        <div className="grid gap-4 min-w-0 content-start">
-          <ViewBar view={view} />
-          <CorrectionBar data={loaderData} errors={actionData?.fields} />
-          <SweepView data={loaderData} />
-          <PictureBeside data={loaderData} />
-          <Advice data={loaderData} />
+    <MarksProvider>
+      <article className="grid gap-6">
+        <SweepHead data={loaderData} errors={actionData?.errors ?? []} conflict={actionData?.conflict} />
+        {outside && <OutsideBandsCaution dismissed={loaderData.dismissed} />}
+        <div className={thread ? "workspace workspace-open" : "workspace"}>
+          <div className="grid gap-4 min-w-0 content-start">
+            <ViewBar view={view} />
+            <CorrectionBar data={loaderData} errors={actionData?.fields} />
+            <SweepView data={loaderData} />
+            <PictureBeside data={loaderData} />
+            <Advice data={loaderData} />
+          </div>
+          <DipThread data={loaderData} />
+          <div className="grid gap-6 min-w-0 content-start">
+            <section aria-labelledby="dips" className="grid gap-3">
+              <div className="flex flex-wrap items-end justify-between gap-x-6 gap-y-3">
+                <h2 id="dips">
+                  Dips as numbers{" "}
+                  <Link to="/methods#dip" className="text-small font-normal font-sans">
+                    How they are reckoned
+                  </Link>
+                </h2>
+                <SettingsForm
+                  view={view}
+                  stored={analysis.settings}
+                  storedPlane={loaderData.correction.storedPlane}
+                  mayKeep={loaderData.may.edit}
+                />
+              </div>
+              <DipsTable dips={dips} view={view} swrLimit={swrLimit} />
+              <LimitList data={loaderData} />
+              <LostDips data={loaderData} />
+            </section>
+            <BandsSection data={loaderData.inBands} />
+            <ComplexSection data={loaderData.complex} {...{ dips, view, swrLimit }} />
+            <Downloads data={loaderData} />
+            <SweepNotes data={loaderData} />
+          </div>
         </div>
-        <DipThread data={loaderData} />
-        <div className="grid gap-6 min-w-0 content-start">
-          <section aria-labelledby="dips" className="grid gap-3">
-            <div className="flex flex-wrap items-end justify-between gap-x-6 gap-y-3">
-              <h2 id="dips">
-                Dips as numbers{" "}
-                <Link to="/methods#dip" className="text-small font-normal font-sans">
-                  How they are reckoned
-                </Link>
-              </h2>
-              <SettingsForm
-                view={view}
-                stored={analysis.settings}
-                storedPlane={loaderData.correction.storedPlane}
-                mayKeep={loaderData.may.edit}
-              />
-            </div>
-            <DipsTable dips={dips} view={view} swrLimit={swrLimit} />
-            <LimitList data={loaderData} />
-            <LostDips data={loaderData} />
-          </section>
-          <BandsSection data={loaderData.inBands} />
-          <ComplexSection data={loaderData.complex} {...{ dips, view, swrLimit }} />
-          <Downloads data={loaderData} />
-          <SweepNotes data={loaderData} />
-        </div>
-      </div>
-    </article>
+      </article>
+    </MarksProvider>
   );
 }
 

@@ -59,6 +59,7 @@ export function DipThread({ data }: { data: SweepPageData }) {
 
 /** What is said of the sweep as a whole. */
 export function SweepNotes({ data }: { data: SweepPageData }) {
+  const { startHz, stopHz } = data.sweep;
   return (
     <section
       id={data.thread ? undefined : "thread"}
@@ -70,6 +71,11 @@ export function SweepNotes({ data }: { data: SweepPageData }) {
         projectId={data.project.publicId}
         place={{ sweep: data.sweep.publicId }}
         thread={data.sweepThread}
+        parts={
+          startHz !== null && stopHz !== null
+            ? { fromHz: startHz, toHz: stopHz, picture: data.picture !== null }
+            : undefined
+        }
         mayWrite={data.may.write}
       />
     </section>

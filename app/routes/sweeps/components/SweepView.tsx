@@ -4,6 +4,7 @@ import type { ChartDip } from "~/charts/chart-types";
 import { LiveSweepChart } from "~/charts/LiveSweepChart";
 import type { FrequencyRange } from "~/charts/ranges";
 import { unpackPoints } from "~/charts/sent-points";
+import { StretchMarks } from "~/components/notes/PartMarks";
 import type { SweepPageData } from "../sweep";
 import { searchWith } from "../sweeps.schema";
 
@@ -40,6 +41,7 @@ export function SweepView({ data }: { data: SweepPageData }) {
         if (!id.startsWith("tried-")) navigate(searchWith(view, { dip: id }), { preventScrollReset: true });
       }}
       rangeHref={searchFor}
+      overPlot={(shownScale) => <StretchMarks scale={shownScale} />}
       onRange={(to) => navigate(searchFor(to), { replace: true, preventScrollReset: true })}
     />
   );

@@ -1,5 +1,6 @@
 import { useEffect, useState } from "react";
 import { Link } from "react-router";
+import { RegionMarks } from "~/components/notes/PartMarks";
 import { Button } from "~/components/ui/Button";
 import { useHydrated } from "~/components/ui/hydrated";
 import type { SweepPageData } from "../../sweep";
@@ -98,6 +99,17 @@ function Strip({ picture, src, over }: StripProps) {
             height: share(height, down),
           }}
         />
+        <div
+          className="absolute"
+          style={{
+            left: share(-(fromX + 0.5), across),
+            top: share(-top, down),
+            width: share(width, across),
+            height: share(height, down),
+          }}
+        >
+          <RegionMarks />
+        </div>
         {over && (
           <svg
             viewBox={`${fromX} ${top - 0.5} ${across} ${down}`}
