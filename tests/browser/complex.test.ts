@@ -15,7 +15,7 @@ beforeAll(async () => {
   const { page, context } = await visit(browser);
   await page.goto("/");
   await page.getByRole("link", { name: "The vertical on the reed bank" }).click();
-  await page.getByRole("link", { name: "As it stays" }).first().click();
+  await page.getByRole("link", { name: "As it stays", exact: true }).first().click();
   await page.waitForURL(/\/sweeps\/[a-z0-9]{10}$/);
   sweepPath = new URL(page.url()).pathname;
   await context.close();
