@@ -13,23 +13,34 @@ export interface Here {
   form: boolean;
   /** Of a dip's page: the sweep that it was found in. */
   sweep?: string;
+  /** Of a dip's page: the trail that it is on. */
+  trail?: string;
 }
 
 /** Where in the project the person is. */
 export function useHere(projectId: string): Here {
   const page = useMatches().at(-1);
-  const data = page?.loaderData as { sweep?: { publicId?: string } } | undefined;
-  return hereOf(projectId, page?.pathname ?? "", data?.sweep?.publicId);
+  const data = page?.loaderData as DipPage | undefined;
+  return hereOf(projectId, page?.pathname ?? "", {
+    sweep: data?.sweep?.publicId,
+    trail: data?.trail?.publicId,
+  });
 }
 
-export function hereOf(projectId: string, pathname: string, sweep?: string): Here {
+export function hereOf(projectId: string, pathname: string, ofDip: Pick<Here, "sweep" | "trail"> = {}): Here {
   const [area = "", id, more] = pathname.replace(`/projects/${projectId}`, "").split("/").filter(Boolean);
   const kind = KIND_OF[area];
   const form = FORMS.has(id ?? "") || FORMS.has(more ?? "") || FORMS.has(area);
   if (!kind || !id || FORMS.has(id)) {
     return { kind: "project", subject: area || "story", area, form };
   }
-  return { kind, subject: id, area, form, ...(kind === "dip" && sweep ? { sweep } : {}) };
+  return { kind, subject: id, area, form, ...(kind === "dip" ? ofDip : {}) };
+}
+
+/** What the data of a dip's page says of where the dip belongs. */
+interface DipPage {
+  sweep?: { publicId?: string } | null;
+  trail?: { publicId?: string } | null;
 }
 
 /** Whether what happened shows on this page. */
@@ -41,6 +52,7 @@ export function concerns({ kind, about }: LiveEvent, here: Here): boolean {
       return about.sweep === here.subject;
     case "dip":
       if (about.dip) return about.dip === here.subject;
+      if (about.trail) return about.trail === here.trail && noun !== "note";
       return noun === "sweep" && about.sweep !== undefined && about.sweep === here.sweep;
     case "trail":
       return about.trail === here.subject || noun === "sweep" || kind === "verdict.given";

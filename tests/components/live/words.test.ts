@@ -11,7 +11,7 @@ describe("where a person is", () => {
   it("is told from the address", () => {
     expect(story).toMatchObject({ kind: "project", subject: "story", area: "", form: false });
     expect(sweep).toMatchObject({ kind: "sweep", subject: "s1", form: false });
-    expect(hereOf("p1", "/projects/p1/dips/d1", "s1")).toMatchObject({ kind: "dip", sweep: "s1" });
+    expect(hereOf("p1", "/projects/p1/dips/d1", { sweep: "s1" })).toMatchObject({ kind: "dip", sweep: "s1" });
     expect(hereOf("p1", "/projects/p1/steps")).toMatchObject({ kind: "project", subject: "steps" });
     for (const path of ["sweeps/new", "sweeps/s1/reading", "steps/t1/edit", "settings", "antenna/edit"]) {
       expect(hereOf("p1", `/projects/p1/${path}`).form, path).toBe(true);
@@ -21,12 +21,14 @@ describe("where a person is", () => {
 
 describe("what concerns a page", () => {
   it("is what it shows", () => {
-    const dip = hereOf("p1", "/projects/p1/dips/d1", "s1");
+    const dip = hereOf("p1", "/projects/p1/dips/d1", { sweep: "s1", trail: "t1" });
     const onDip = event(1, "note.added", { note: "n1", dip: "d1", sweep: "s1" });
     const onOther = event(2, "note.added", { note: "n2", dip: "d2", sweep: "s1" });
     const anew = event(3, "sweep.analysed", { sweep: "s1" });
     expect([onDip, onOther, anew].map((one) => concerns(one, dip))).toEqual([true, false, true]);
     expect([onDip, onOther, anew].map((one) => concerns(one, sweep))).toEqual([true, true, true]);
+    const verdictOf = (trail: string) => event(7, "verdict.given", { trail });
+    expect([verdictOf("t1"), verdictOf("t2")].map((one) => concerns(one, dip))).toEqual([true, false]);
     expect(concerns(event(4, "sweep.analysed", { sweep: "s2" }), sweep)).toBe(false);
     expect(concerns(event(5, "sweep.added", { sweep: "s2" }), story)).toBe(true);
     expect(concerns(event(6, "antenna.changed"), story)).toBe(false);
