@@ -1,6 +1,8 @@
 import type { BenchLimits } from "../sweep.ts";
 import type { BenchQuality } from "./qualify.ts";
 import { type Stretch, sentenceStart, stretchesOf } from "./stretches.ts";
+import { termFaults } from "./term-faults.ts";
+import type { ErrorTerms } from "./three-term.ts";
 import { allowedError, isKnown, type Wish } from "./wish.ts";
 
 /** A stretch of frequencies in which something limits the bench, in plain words. */
@@ -43,13 +45,13 @@ export function limitsOf(measures: Measures, left: BenchLimits, wish: Wish): Ben
       "load-not-a-load",
       (i) => measures.directivityDb[i] < NO_LOAD_DB,
       (s) =>
-        `the load leaves only ${worst(measures.directivityDb, s, Math.min).toFixed(1)} dB: it is no load, was not connected, or the files were exchanged.`,
+        `the load returns ${least(worst(measures.directivityDb, s, Math.min))} open and short: it is no load, was not connected, or the files were exchanged.`,
     ),
     ...all(
       "open-short-disagree",
       (i) => size[i] > DISAGREE_DB,
       (s) =>
-        `the open and the short disagree by more than 1 dB (${worst(size, s, Math.max).toFixed(1)} dB at most).`,
+        `the open and the short disagree by more than 1 dB (${over(worst(size, s, Math.max))} dB at most).`,
     ),
     ...all(
       "zero-line-falls",
@@ -59,7 +61,8 @@ export function limitsOf(measures: Measures, left: BenchLimits, wish: Wish): Ben
     ),
     ...all(
       "directivity",
-      (i) => left.directivity[i] > needed,
+      // Where the load is none, nothing is known of the directivity.
+      (i) => left.directivity[i] > needed && !(measures.directivityDb[i] < NO_LOAD_DB),
       (s) =>
         `the directivity is down to ${decibels(worst(left.directivity, s, Math.max))} dB; ${wished} needs ${decibels(needed)} dB.`,
     ),
@@ -73,6 +76,20 @@ export function limitsOf(measures: Measures, left: BenchLimits, wish: Wish): Ben
         `directivity alone would do, but with the test port's match (down to ${decibels(worst(left.match, s, Math.max))} dB) and the error of the 0 dB line (up to ${(20 * Math.log10(1 + worst(left.tracking, s, Math.max))).toFixed(2)} dB) ${wished} is not reached.`,
     ),
   ];
+}
+
+/** What only the phase of open, short and load shows, of the bench as a whole; none without phase. */
+export function phaseLimitsOf(at: Float64Array, terms: readonly (ErrorTerms | null)[] | null): BenchLimit[] {
+  return termFaults(at, terms ?? []).map((fault) => ({ ...fault, fromHz: at[0], toHz: at[at.length - 1] }));
+}
+
+function least(db: number): string {
+  return db < 0.05 ? "as much as" : `only ${db.toFixed(1)} dB less than`;
+}
+
+/** A decibel and a hair is not told as "1.0". */
+function over(db: number): string {
+  return db.toFixed(db < 1.1 ? 2 : 1);
 }
 
 function decibels(linear: number): string {

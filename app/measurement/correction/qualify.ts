@@ -1,7 +1,7 @@
 import type { BenchLimits, Sweep } from "../sweep.ts";
 import type { BenchForCorrection } from "./correct.ts";
 import { termsAt } from "./correct-fully.ts";
-import { type BenchLimit, limitsOf } from "./limiting.ts";
+import { type BenchLimit, limitsOf, phaseLimitsOf } from "./limiting.ts";
 import { type Missing, missingOf } from "./missing.ts";
 import { commonSpan, magnitudeAt } from "./references.ts";
 import { residualLimits } from "./residual-limits.ts";
@@ -54,7 +54,8 @@ export function qualifyBench(bench: BenchForCorrection, wish: Wish): BenchQualit
   const scalar = line
     ? scalarLimits(at, line, references.load, standards, given)
     : { directivity: unknown(n), tracking: unknown(n), match: unknown(n) };
-  const terms = termsAt(bench, at, references.open?.referenceOhm ?? 50)?.map((term) => {
+  const solved = termsAt(bench, at, references.open?.referenceOhm ?? 50);
+  const terms = solved?.map((term) => {
     if (!term) return { directivity: Number.NaN, match: Number.NaN };
     const tracking = Math.hypot(term.tracking.re, term.tracking.im);
     return {
@@ -87,7 +88,7 @@ export function qualifyBench(bench: BenchForCorrection, wish: Wish): BenchQualit
       fromHz: at[first],
       toHz: at[last],
     })),
-    limits: limitsOf(measures, left, wish),
+    limits: [...phaseLimitsOf(at, solved), ...limitsOf(measures, left, wish)],
     missing: missingOf(bench, terms !== undefined),
   };
 }

@@ -74,10 +74,41 @@ describe("qualifyBench", () => {
     const line = (mhz: number) => (mhz > 400 ? -30 : -12);
     const references = { open: levels(line), short: levels(line), load: levels((mhz) => line(mhz) - 4) };
     const { limits } = qualifyBench(bench(references), WISH);
-    expect(codes(limits)).toContain("load-not-a-load");
+    expect(limits.find(({ code }) => code === "load-not-a-load")?.message).toMatch(
+      /^Everywhere the load returns only 4\.0 dB less than open and short/,
+    );
+    // What is no load shows no directivity.
+    expect(codes(limits)).not.toContain("directivity");
     expect(limits.find(({ code }) => code === "zero-line-falls")?.message).toMatch(
       /^Above 400 MHz .*\(18 dB at most\)/,
     );
+  });
+
+  it("says that a load returns as much as the open, and tells a hair over a decibel as more than one", () => {
+    const references = { open: levels(-12), short: levels(-13.02), load: levels(-12) };
+    const said = qualifyBench(bench(references), WISH).limits.map(({ message }) => message);
+    expect(said[0]).toMatch(/^Everywhere the load returns as much as open and short/);
+    expect(said[1]).toMatch(/disagree by more than 1 dB \(1\.02 dB at most\)/);
+  });
+
+  it("says of references with phase that open and short are exchanged, and nothing when they are not", () => {
+    const at = Array.from({ length: 100 }, (_, i) => (i + 1) * 1e6);
+    // A delay of 5 ns there and back, and a directivity of 34 dB.
+    const seen = (gamma: number) => {
+      const turned = at.map((hz) => polar(gamma, -360 * hz * 5e-9));
+      return complexSweep(
+        at,
+        turned.map(({ re }) => 0.02 + re),
+        turned.map(({ im }) => im),
+      );
+    };
+    const quality = (open: number, short: number) =>
+      qualifyBench(bench({ open: seen(open), short: seen(short), load: seen(0) }), WISH);
+    expect(codes(quality(1, -1).limits)).not.toContain("open-short-swapped");
+    const swapped = quality(-1, 1);
+    expect(swapped.correction).toBe("three-term");
+    expect(swapped.limits[0]).toMatchObject({ code: "open-short-swapped", fromHz: 1e6, toHz: 100e6 });
+    expect(swapped.limits[0].message).toMatch(/^Open and short seem to be exchanged/);
   });
 
   it("says what is missing of an empty bench and of each part", () => {
