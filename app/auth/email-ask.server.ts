@@ -13,7 +13,8 @@ export interface EmailAsk {
 const askCookie = createCookie("swale_email_ask", {
   httpOnly: true,
   sameSite: "lax",
-  path: "/auth/email",
+  // Not the page's own path: its data is asked for at /auth/email.data, which is no path below it.
+  path: "/auth",
   maxAge: 60 * 60,
   secrets: [env.SESSION_SECRET],
   secure: env.BASE_URL.startsWith("https://"),

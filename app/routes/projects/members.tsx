@@ -130,7 +130,11 @@ export default function Members({ loaderData, actionData }: Route.ComponentProps
       </section>
       {mayManage && (
         <>
-          <InviteForm lastResult={lastOf("invite")} link={actionData?.link ?? null} />
+          <InviteForm
+            key={loaderData.invitations[0]?.id}
+            lastResult={lastOf("invite")}
+            link={actionData?.link ?? null}
+          />
           <InvitationList invitations={loaderData.invitations} />
           <AddMemberForm lastResult={lastOf("add")} />
           <HandOverForm
