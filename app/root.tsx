@@ -9,6 +9,7 @@ import { Footer } from "~/components/Footer";
 import { Header, type SignedInPerson } from "~/components/Header";
 import { type ThemeChoice, themeFromCookie } from "~/components/theme";
 import { type FlashMessage, ToastProvider } from "~/components/ui/Toast";
+import { countUnread } from "~/db/notices.server";
 import { takeMessage } from "~/services/flash.server";
 
 export interface RootData {
@@ -36,12 +37,14 @@ export const meta: Route.MetaFunction = () => [
 export async function loader(args: Route.LoaderArgs) {
   const { request } = args;
   const [person, { message, forget }] = await Promise.all([findPerson(args), takeMessage(request)]);
+  const unread = person ? await countUnread(person.id) : 0;
   const root: RootData = {
     theme: themeFromCookie(request.headers.get("cookie")),
     person: person && {
       name: person.name,
       userName: person.userName,
       administrator: person.administrator,
+      unread,
     },
     flash: message ? { id: crypto.randomUUID(), text: message } : null,
   };

@@ -11,6 +11,8 @@ export interface SignedInPerson {
   name: string;
   userName: string;
   administrator?: boolean;
+  /** How much in the inbox was not read. */
+  unread?: number;
 }
 
 export interface HeaderProps {
@@ -31,6 +33,18 @@ export function Header({ person, theme }: HeaderProps) {
             <Icon name="search" />
             <span>Search</span>
           </NavLink>
+          {person && (
+            <NavLink to="/inbox" className="shell-terse">
+              <Icon name="note" />
+              <span>Inbox</span>
+              {Boolean(person.unread) && (
+                <span className="shell-count">
+                  {Math.min(person.unread ?? 0, 99)}
+                  <span className="sr-only"> unread</span>
+                </span>
+              )}
+            </NavLink>
+          )}
         </nav>
         <div className="shell-person">
           {person ? <PersonMenu person={person} theme={theme} /> : <VisitorBar theme={theme} />}

@@ -84,6 +84,10 @@ export async function setFailed(id: number, error: string, tx: Queryable = db) {
     .where(eq(outbox.id, id));
 }
 
+export async function deleteById(id: number, tx: Queryable = db) {
+  await tx.delete(outbox).where(eq(outbox.id, id));
+}
+
 /** Another try for one that was given up, or at once for one that waits; its Message-ID stays. */
 export async function retry(publicId: string, tx: Queryable = db): Promise<boolean> {
   const [{ affectedRows }] = await tx

@@ -24,3 +24,11 @@ export const EVENT_KINDS = [
 ] as const;
 
 export type EventKind = (typeof EVENT_KINDS)[number];
+
+/** What goes to the inboxes of those who follow; the rest stands in the account of the project. */
+export const TOLD_KINDS: ReadonlySet<EventKind> = new Set([
+  "note.added",
+  "verdict.given",
+  "sweep.added",
+  "step.added",
+]);

@@ -1,8 +1,9 @@
 import type { Transaction } from "~/db/client.server";
 import * as events from "~/db/events.server";
+import * as jobs from "~/db/jobs.server";
 import * as projects from "~/db/projects.server";
 import type { EventAbout } from "~/db/schema";
-import type { EventKind } from "./event-kinds.ts";
+import { type EventKind, TOLD_KINDS } from "./event-kinds.ts";
 
 /**
  * Writes down that something happened, in the transaction that does it: what is rolled back never happened. Answers the
@@ -17,5 +18,7 @@ export async function record(
   tx: Transaction,
 ): Promise<number> {
   await projects.update(event.projectId, {}, tx);
-  return events.insert(event, tx);
+  const id = await events.insert(event, tx);
+  if (TOLD_KINDS.has(event.kind)) await jobs.insert("tell", { event: id }, undefined, tx);
+  return id;
 }

@@ -5,6 +5,7 @@ import { env } from "~/env.server";
 import { plainText } from "./file-names.ts";
 import { log } from "./log.server.ts";
 import { drawMail, type MailWords } from "./mail.server.ts";
+import { isStillWanted } from "./mail-wanted.server.ts";
 import { deliver } from "./smtp.server.ts";
 
 /** Mails on their way: written where they are caused, sent by any process, each at least once and under one Message-ID. */
@@ -52,6 +53,7 @@ export async function sendDue(sending: Sending = {}): Promise<number> {
 async function sendOne(row: outbox.OutboxRow, sending: Sending & { leaseMs: number }): Promise<void> {
   const { smtpUrl = env.SMTP_URL, leaseMs } = sending;
   const { attempts } = row;
+  if (row.onceKey && !(await isStillWanted(row.onceKey, row.toAddress))) return outbox.deleteById(row.id);
   // A slow server may take its time: as long as this process lives, nobody else takes the mail.
   const renewal = setInterval(() => {
     outbox.renew(row.id, new Date(Date.now() + leaseMs)).catch(() => undefined);

@@ -92,6 +92,8 @@ async function build(letter: LetterToSend) {
     messageId: letter.messageId,
     date: letter.date,
     headers: { "Auto-Submitted": "auto-generated", ...letter.headers },
+    // A drawing in the HTML becomes a part of the mail: readers of mail drop addresses that hold data.
+    attachDataUrls: true,
     disableFileAccess: true,
     disableUrlAccess: true,
   });

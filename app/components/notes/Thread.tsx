@@ -44,6 +44,7 @@ export function Thread({ projectId, place, thread, mayWrite, parts }: ThreadProp
         </ol>
       )}
       {mayWrite ? <WriteNote where={where} /> : <WhoMayWrite />}
+      <FollowLink projectId={projectId} place={place} />
     </div>
   );
 }
@@ -58,6 +59,19 @@ function WriteNote({ where }: { where: ThreadWhere }) {
       <BareNoteForm where={where} target={{}} label={label} />
       <p className="field-hint">Markdown.</p>
     </div>
+  );
+}
+
+/** Where a member says what to hear of this thread. */
+function FollowLink({ projectId, place }: Pick<ThreadWhere, "projectId" | "place">) {
+  const root = useRouteLoaderData<{ person: unknown }>("root");
+  if (!root?.person) return null;
+  const kind = kindOf(place);
+  const of = kind ? `?${new URLSearchParams({ kind, subject: place[kind] ?? "" })}` : "";
+  return (
+    <p className="text-small no-print">
+      <Link to={`/projects/${projectId}/follow${of}`}>Follow or mute {placeName(place)}</Link>
+    </p>
   );
 }
 

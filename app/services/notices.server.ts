@@ -1,0 +1,75 @@
+import { inTransaction, type Transaction } from "~/db/client.server";
+import * as follows from "~/db/follows.server";
+import * as notes from "~/db/notes.server";
+import * as notices from "~/db/notices.server";
+import * as people from "~/db/people.server";
+import type { EventAbout } from "~/db/schema";
+import { subjectsIn } from "./markdown-links.ts";
+import { mailAtOnce } from "./notice-mails.server.ts";
+
+type Found = NonNullable<Awaited<ReturnType<typeof notices.findEvent>>>;
+
+/**
+ * An event becomes lines in inboxes, and mails for those who want them at once: for who is named or answered, and for who
+ * follows what it is about, if they are members at this moment. Harmless to run twice.
+ */
+export async function tellOf(eventId: number, now = new Date()): Promise<void> {
+  const found = await notices.findEvent(eventId);
+  if (!found || now.getTime() - found.event.at.getTime() > OLD_MS) return;
+  const { about, kind } = found.event;
+  const note = about.note ? (await notes.findByPublicId(about.note))?.note : undefined;
+  if (kind === "note.added" && (!note || note.removedAt)) return;
+  await inTransaction(async (tx) => {
+    const subjects = await subjectsOf(about, found.project.publicId, tx);
+    await letAuthorFollow(found, subjects[0], tx);
+    const said = await follows.findAllOn(found.project.id, subjects, tx);
+    const muted = new Set(said.filter((one) => one.muted).map(({ userId }) => userId));
+    const reasons = new Map<number, notices.NoticeReason>();
+    const followed = said.filter((one) => one.at <= found.event.at);
+    for (const { userId } of followed) reasons.set(userId, kind === "verdict.given" ? "verdict" : "follow");
+    if (note) for (const [userId, reason] of await calledBy(note, tx)) reasons.set(userId, reason);
+    const wanted = [...reasons.keys()].filter((userId) => !muted.has(userId));
+    const hearers = await notices.findHearers(found.project.id, wanted, found.event.actorId, tx);
+    const made = await notices.insertNew(
+      hearers.map(({ id }) => ({
+        userId: id,
+        projectId: found.project.id,
+        eventId,
+        noteId: note?.id ?? null,
+        reason: reasons.get(id) ?? "follow",
+      })),
+      tx,
+    );
+    await mailAtOnce(found.project, hearers, made, tx);
+  });
+}
+
+/** Narrowest first; the project, which holds them all, last. */
+async function subjectsOf(about: EventAbout, project: string, tx: Transaction): Promise<follows.Subject[]> {
+  const trail = about.trail ?? (about.dip ? await follows.findTrailOfDip(about.dip, tx) : undefined);
+  const { dip, step, bench, sweep } = about;
+  const named = Object.entries({ dip, trail, step, bench, sweep, project });
+  return named.flatMap(([kind, id]) => (id ? [{ kind: kind as follows.FollowKind, id }] : []));
+}
+
+/** Who writes in a thread hears what is said in it from then on; a word on the whole project is no such wish. */
+async function letAuthorFollow({ event, project }: Found, thread: follows.Subject, tx: Transaction) {
+  if (event.kind !== "note.added" || event.actorId === null || thread.kind === "project") return;
+  await follows.setUnlessSaid(event.actorId, project.id, thread, event.at, tx);
+}
+
+/** Who is answered, and who is named, which counts for more. */
+async function calledBy(note: notes.NoteRow, tx: Transaction): Promise<[number, notices.NoticeReason][]> {
+  const called: [number, notices.NoticeReason][] = [];
+  const parent = note.parentId ? await notes.lock(note.parentId, tx) : undefined;
+  if (parent?.authorId) called.push([parent.authorId, "reply"]);
+  for (const subject of subjectsIn(note.body)) {
+    const [kind, publicId] = subject.split(":");
+    const person = kind === "person" ? await people.findByPublicId(publicId, tx) : undefined;
+    if (person) called.push([person.id, "mention"]);
+  }
+  return called;
+}
+
+/** What is written down for an earlier time is no news. */
+const OLD_MS = 2 * 24 * 60 * 60 * 1000;
