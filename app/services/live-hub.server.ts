@@ -6,7 +6,7 @@ import { log } from "./log.server.ts";
 import { forgetOldLooks, lookersOf } from "./presence.server.ts";
 
 /** One open connection. What it is sent are whole messages of a stream of events. */
-export interface Listener extends Ear {
+interface Listener extends Ear {
   send: (message: string) => void;
   close: () => void;
 }

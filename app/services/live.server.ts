@@ -8,7 +8,7 @@ export function liveEvent({ id, projectId, kind, at, by, about }: events.FoundEv
   return { id: markOf(projectId, id), kind: kind as EventKind, at: at.toISOString(), by, about };
 }
 
-export interface CaughtUp {
+interface CaughtUp {
   rows: events.FoundEvent[];
   /** Row id up to which everything is told now. */
   readTo: number;
@@ -47,4 +47,4 @@ export async function pollLive(
 }
 
 /** A page that slept through more than this is loaded anew instead. */
-export const MOST_BEHIND = 2000;
+const MOST_BEHIND = 2000;

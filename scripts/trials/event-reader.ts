@@ -2,7 +2,7 @@ import http from "node:http";
 
 /** A browser's `EventSource` as the standard has it, for trials: reads a stream, and comes again with the last id. */
 
-export interface ReaderOptions {
+interface ReaderOptions {
   /** Tried in turn: after a loss the next one. */
   servers: readonly string[];
   /** Path with the query of the first connection. */

@@ -71,15 +71,16 @@ function isOrAre(n: number): string {
 
 /** A note that was added and removed again leaves nothing to see. */
 function withoutTakenBack(events: readonly LiveEvent[]): LiveEvent[] {
-  const added = new Set(
-    events.flatMap(({ kind, about }) => (kind === "note.added" ? (about.note ?? []) : [])),
-  );
-  const removed = new Set(
-    events.flatMap(({ kind, about }) => (kind === "note.removed" ? (about.note ?? []) : [])),
-  );
+  const added = new Set<string>();
+  const last = new Map<string, EventKind>();
+  for (const { kind, about } of events) {
+    if (!about.note) continue;
+    if (kind === "note.added") added.add(about.note);
+    last.set(about.note, kind);
+  }
   return events.filter(({ kind, about }) => {
     if (!kind.startsWith("note.") || !about.note || !added.has(about.note)) return true;
-    return kind === "note.added" && !removed.has(about.note);
+    return kind === "note.added" && last.get(about.note) !== "note.removed";
   });
 }
 

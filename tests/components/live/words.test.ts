@@ -65,6 +65,8 @@ describe("the words for it", () => {
     expect(newsWords([added, edited], story)).toBe("1 new note, by Cleo");
     expect(newsWords([added, edited, removed], story)).toBe("");
     expect(newsWords([edited], story)).toBe("1 note changed, by Cleo");
+    const back = event(5, "note.edited", { note: "n1" });
+    expect(newsWords([added, removed, back], story), "brought back").toBe("1 new note, by Cleo");
     expect(newNotes([added, event(4, "note.added", { note: "n4" }), removed])).toEqual(["n4"]);
   });
 
