@@ -59,7 +59,7 @@ function loadFaults(sweep: Sweep, references: BenchReferences): Warning[] {
   return [
     {
       code: "load-not-a-load",
-      message: `The load returns only ${Math.max(0, least).toFixed(1)} dB less than open and short ${where}: it is not a load of ${sweep.referenceOhm} Ω, it was not connected, or two files were exchanged.`,
+      message: `The load returns ${least < 0.05 ? "as much as" : `only ${least.toFixed(1)} dB less than`} open and short ${where}: it is not a load of ${sweep.referenceOhm} Ω, it was not connected, or two files were exchanged.`,
     },
   ];
 }
