@@ -62,8 +62,9 @@ class Stream {
 
   async #read(body: ReadableStream<Uint8Array>): Promise<void> {
     let text = "";
-    for await (const chunk of body.pipeThrough(new TextDecoderStream())) {
-      text += chunk;
+    const decoder = new TextDecoder();
+    for await (const chunk of body) {
+      text += decoder.decode(chunk, { stream: true });
       const whole = text.split("\n\n");
       text = whole.pop() ?? "";
       for (const block of whole) {

@@ -1,7 +1,7 @@
 import { describe, expect, it } from "vitest";
 import { conflictOf, mergeEdit, parseWas } from "../../app/services/merge-edit.ts";
 
-const was = { title: "A", summary: "one", region: null };
+const was = { title: "A", summary: "one", region: null as number | null };
 
 describe("mergeEdit", () => {
   it("writes only what this person changed, so that another's change stays", () => {
@@ -25,8 +25,8 @@ describe("mergeEdit", () => {
 
 describe("conflictOf", () => {
   it("asks about what both changed, and settles the rest for both", () => {
-    const now = { title: "B", summary: "two", region: null };
-    const wanted = { title: "C", summary: "one", region: 1 };
+    const now = { ...was, title: "B", summary: "two" };
+    const wanted = { ...was, title: "C", region: 1 };
     expect(conflictOf(now, wanted, mergeEdit(was, now, wanted))).toEqual({
       asked: [{ name: "title", mine: "C", theirs: "B" }],
       rest: { summary: "two", region: "1" },

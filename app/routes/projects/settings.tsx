@@ -1,6 +1,8 @@
+import type { SubmissionResult } from "@conform-to/react";
 import { parseWithZod } from "@conform-to/zod/v4";
 import { data } from "react-router";
 import { requireProject } from "~/auth/require.server";
+import type { Conflict } from "~/components/edit-conflict/EditConflict";
 import * as projects from "~/db/projects.server";
 import { refused } from "~/errors";
 import { redirectWithMessage } from "~/services/flash.server";
@@ -30,14 +32,14 @@ export async function loader(args: Route.LoaderArgs) {
 export async function action(args: Route.ActionArgs) {
   const { project, may, person } = await requireProject(args, "project.edit");
   const submission = parseWithZod(await args.request.formData(), { schema: projectSettingsSchema });
-  if (submission.status !== "success") return data({ lastResult: submission.reply() }, { status: 400 });
+  if (submission.status !== "success") return answer(submission.reply(), 400);
   const value = submission.value;
   const here = `/projects/${project.publicId}/settings`;
   switch (value.intent) {
     case "about": {
       const { intent: _, was, ...about } = value;
       const conflict = await changeAbout(project.id, parseWas(was), about, person?.id);
-      if (conflict) return data({ lastResult: submission.reply(), conflict }, { status: 409 });
+      if (conflict) return answer(submission.reply(), 409, conflict);
       return redirectWithMessage(here, "The project was changed.");
     }
     case "bands":
@@ -47,7 +49,7 @@ export async function action(args: Route.ActionArgs) {
       if (!may("project.delete")) throw refused("Only owners delete a project. Nothing was changed.");
       if (value.title !== project.title) {
         const fieldErrors = { title: ["That is not the title. Nothing was deleted."] };
-        return data({ lastResult: submission.reply({ fieldErrors }) }, { status: 400 });
+        return answer(submission.reply({ fieldErrors }), 400);
       }
       await deleteProject(project.id);
       return redirectWithMessage("/projects", "The project and its files were deleted.");
@@ -55,6 +57,10 @@ export async function action(args: Route.ActionArgs) {
     default:
       return value satisfies never;
   }
+}
+
+function answer(lastResult: SubmissionResult<string[]>, status: number, conflict?: Conflict) {
+  return data({ lastResult, conflict }, { status });
 }
 
 function aboutOf({ title, summary, visibility, ituRegion }: AboutValues) {
@@ -66,7 +72,7 @@ export default function ProjectSettings({ loaderData, actionData }: Route.Compon
   const lastOf = (intent: string) => (last?.initialValue?.intent === intent ? last : undefined);
   return (
     <div className="max-w-[52rem] space-y-12">
-      {actionData && "conflict" in actionData ? (
+      {actionData?.conflict ? (
         <AboutConflict conflict={actionData.conflict} />
       ) : (
         <AboutForm
