@@ -47,6 +47,7 @@ export async function loader(args: Route.LoaderArgs) {
       name: user.name,
       administrator: user.administrator,
       suspended: user.suspendedAt !== null,
+      closed: user.closedAt !== null,
       createdAt: user.createdAt.toISOString(),
       lastSeenAt: user.lastSeenAt?.toISOString() ?? null,
       self: user.id === person.id,

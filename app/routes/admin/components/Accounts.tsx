@@ -11,6 +11,8 @@ interface ListedAccount {
   name: string;
   administrator: boolean;
   suspended: boolean;
+  /** By the person, for good. */
+  closed: boolean;
   createdAt: string;
   lastSeenAt: string | null;
   self: boolean;
@@ -39,7 +41,7 @@ export function Accounts({ users }: { users: ListedAccount[] }) {
           cell: (user) => (
             <span className="flex flex-wrap gap-1">
               {user.administrator && <Tag tone="fen">administrator</Tag>}
-              {user.suspended ? <Tag tone="alarm">suspended</Tag> : <Tag>active</Tag>}
+              <StateTag user={user} />
             </span>
           ),
         },
@@ -55,8 +57,14 @@ export function Accounts({ users }: { users: ListedAccount[] }) {
   );
 }
 
+function StateTag({ user }: { user: ListedAccount }) {
+  if (user.closed) return <Tag>closed</Tag>;
+  return user.suspended ? <Tag tone="alarm">suspended</Tag> : <Tag>active</Tag>;
+}
+
 function Changes({ user }: { user: ListedAccount }) {
   if (user.self) return <span className="soft text-small">you</span>;
+  if (user.closed) return null;
   return (
     <span className="flex flex-wrap gap-2">
       {user.suspended ? (
