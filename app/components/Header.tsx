@@ -69,7 +69,7 @@ function VisitorBar({ theme }: { theme: ThemeChoice }) {
 
 function PersonMenu({ person, theme }: { person: SignedInPerson; theme: ThemeChoice }) {
   return (
-    <Menu label={person.name} icon="person" align="end">
+    <Menu label={person.name} icon="person" terse align="end">
       <Link to="/settings">Settings</Link>
       <Link to="/settings/tokens">Tokens for scripts</Link>
       {person.administrator && <Link to="/admin">Administration</Link>}

@@ -34,7 +34,7 @@ export function startJobs(everyMs = 2000): () => Promise<void> {
     while (!stopped && (await runDueJobs()) === BATCH);
   };
   const tick = () => {
-    running = runAllDue()
+    running = runDueJobs(() => stopped)
       .then(async () => {
         if (Date.now() - lastDigestMs >= DIGESTS_EVERY_MS) {
           lastDigestMs = Date.now();
@@ -60,9 +60,17 @@ export function startJobs(everyMs = 2000): () => Promise<void> {
   };
 }
 
-/** Runs what is due now; answers how many were done. */
-export async function runDueJobs(): Promise<number> {
-  const due = await jobs.claim(BATCH, LEASE_MS);
+/** Runs what is due now, some at a time until there is no more or it is stopped; answers how many were done. */
+export async function runDueJobs(isStopped = () => false): Promise<number> {
+  let done = 0;
+  for (;;) {
+    const due = await jobs.claim(BATCH, LEASE_MS);
+    done += await run(due);
+    if (due.length < BATCH || isStopped()) return done;
+  }
+}
+
+async function run(due: jobs.JobRow[]): Promise<number> {
   let done = 0;
   for (const job of due) {
     try {
