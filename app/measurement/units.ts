@@ -43,7 +43,7 @@ export function formatDb(db: number | null, uncertaintyDb: number | null = null)
 export function formatDbLimits(db: number | null, low: number | null, high: number | null): string {
   if (db === null || Number.isNaN(db) || low === null || high === null) return formatDb(db);
   const decimals = Number.isFinite(high - low) ? Math.min(1, decimalsFor((high - low) / 2)) : 1;
-  const [shown, from, to] = [plain(db, decimals), plain(low, decimals), plain(high, decimals)];
+  const [shown, from, to] = [plain(db, decimals), endDb(low, decimals), endDb(high, decimals)];
   return from === to ? `${shown}${THIN}dB` : `${shown}${THIN}dB (${from}–${to})`;
 }
 
@@ -135,6 +135,11 @@ function significant(value: number, digits: number): string {
   return text.includes(".") ? text.replace(/\.?0+$/, "") : text;
 }
 
+function endDb(db: number, decimals: number): string {
+  if (Math.abs(db) < ENDLESS_DB) return plain(db, decimals);
+  return db < 0 ? "−∞" : "∞";
+}
+
 function plain(value: number, decimals: number): string {
   if (value === Number.POSITIVE_INFINITY) return "∞";
   if (value === Number.NEGATIVE_INFINITY) return "−∞";
@@ -145,6 +150,8 @@ function plain(value: number, decimals: number): string {
 const UNKNOWN = "unknown";
 /** The last digit that files usually carry. */
 const LEAST_NOISE_DB = 0.001;
+/** Where return losses end in stored analyses, for no file holds an infinity. */
+const ENDLESS_DB = 200;
 /** U+2009, thin space. */
 const THIN = "\u2009";
 /** A hertz in a gigahertz. */

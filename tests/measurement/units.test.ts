@@ -124,6 +124,8 @@ describe("numbers with limits", () => {
     [20.43, 20.21, 20.63, "20.4\u2009dB (20.2–20.6)"],
     [20.43, null, 22.31, "20.4\u2009dB"],
     [40, 22.31, Number.POSITIVE_INFINITY, "40.0\u2009dB (22.3–∞)"],
+    [40, 22.31, 200, "40\u2009dB (22–∞)"],
+    [20.43, -200, 200, "20\u2009dB (−∞–∞)"],
     [null, 1, 2, "unknown"],
   ])("return loss %s from %s to %s is %s", (db, low, high, words) => {
     expect(formatDbLimits(db, low, high)).toBe(words);
