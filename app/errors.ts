@@ -32,6 +32,6 @@ export function brokenForm() {
   );
 }
 
-export function refused(message: string) {
-  return data<PlainError>({ title: "Not allowed", message }, { status: 403 });
+export function refused(message: string, signIn = false) {
+  return data<PlainError>({ title: "Not allowed", message, signIn }, { status: 403 });
 }

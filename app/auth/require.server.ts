@@ -66,6 +66,7 @@ export async function requireProject(args: AccessArgs, action: ProjectAction): P
       access.person
         ? `Your role in this project (${access.role}) does not include this. Nothing was changed; an owner can change roles.`
         : "Sign in first. Nothing was changed.",
+      access.person === null,
     );
   }
   return access;
@@ -122,7 +123,7 @@ function siteRole(person: Person | null): SiteRole {
 }
 
 function signInInstead(request: Request) {
-  if (request.method !== "GET") return refused("Sign in first. Nothing was changed.");
+  if (request.method !== "GET") return refused("Sign in first. Nothing was changed.", true);
   const url = new URL(request.url);
   const here = url.pathname.replace(/\.data$/, "") + url.search;
   return redirect(`/sign-in?next=${encodeURIComponent(here)}`);

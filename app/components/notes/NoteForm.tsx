@@ -1,7 +1,7 @@
 import { getFormProps, type SubmissionResult, useForm } from "@conform-to/react";
 import { parseWithZod } from "@conform-to/zod/v4";
-import { type FormEvent, useEffect, useId, useRef, useState } from "react";
-import { useFetcher } from "react-router";
+import { type FormEvent, useEffect, useId, useRef } from "react";
+import { useFetcher, useLocation, useRouteLoaderData } from "react-router";
 import { Difference } from "~/components/edit-conflict/Difference";
 import { Button } from "~/components/ui/Button";
 import { useHydrated } from "~/components/ui/hydrated";
@@ -15,6 +15,7 @@ import { editNoteSchema, writeNoteSchema } from "./notes.schema.ts";
 import { PartFields } from "./PartFields.tsx";
 import { Preview } from "./Preview.tsx";
 import { notesPath, placeKey, type ThreadWhere } from "./place.ts";
+import { useWaiting } from "./use-waiting.ts";
 
 export interface NoteFormProps {
   where: ThreadWhere;
@@ -28,6 +29,8 @@ export interface NoteFormProps {
 }
 
 interface Answer {
+  unreached?: boolean;
+  signedOut?: boolean;
   publicId?: string;
   done?: "edit";
   /** Changed in another window since this form was opened. */
@@ -41,12 +44,18 @@ export function NoteForm({ where, target = {}, label, onDone, onCancel, autoFocu
   const { show } = useToast();
   const { edited } = target;
   const marks = useMarks();
-  const draft = useDraft(`${placeKey(where)}:${edited?.publicId ?? target.parent ?? ""}`, edited?.body ?? "");
-  const [clientKey, renewKey] = useClientKey();
+  const root = useRouteLoaderData<{ person: { userName: string } | null }>("root");
+  const about = `${placeKey(where)}:${edited?.publicId ?? target.parent ?? ""}`;
+  const draftKey = `${root?.person?.userName ?? ""}:${about}`;
+  const draft = useDraft(draftKey, edited?.body ?? "");
+  const busy = fetcher.state !== "idle";
+  const element = useRef<HTMLFormElement>(null);
+  const waiting = useWaiting(draftKey, element, busy);
+  const [clientKey, renewKey] = useClientKey(waiting.clientKey);
   const schema = edited ? editNoteSchema : writeNoteSchema;
   const [form, fields] = useForm<{ body: string }>({
     id: useId(),
-    lastResult: fetcher.state === "idle" ? fetcher.data?.lastResult : null,
+    lastResult: busy || fetcher.data?.unreached ? null : fetcher.data?.lastResult,
     shouldRevalidate: "onInput",
     onValidate: ({ formData }) => parseWithZod(formData, { schema }) as never,
   });
@@ -56,6 +65,8 @@ export function NoteForm({ where, target = {}, label, onDone, onCancel, autoFocu
     const { data } = fetcher;
     if (!data || answered.current === data) return;
     answered.current = data;
+    if (data.unreached) return waiting.wait(clientKey);
+    waiting.stop();
     if (!data.publicId && !data.done) return;
     draft.forget("");
     renewKey();
@@ -63,19 +74,18 @@ export function NoteForm({ where, target = {}, label, onDone, onCancel, autoFocu
     show({ id: `note-${Date.now()}`, text: data.done ? "The note is changed." : "The note is stored." });
     onDone?.();
   });
-  const [offline, setOffline] = useState(false);
   const formProps = getFormProps(form);
   const send = (event: FormEvent<HTMLFormElement>) => {
-    setOffline(!navigator.onLine);
-    if (navigator.onLine) formProps.onSubmit(event);
-    else event.preventDefault();
+    if (navigator.onLine) return formProps.onSubmit(event);
+    event.preventDefault();
+    if (draft.text.trim() !== "") waiting.wait(clientKey);
   };
-  const busy = fetcher.state !== "idle";
   return (
     <fetcher.Form
       method="post"
       action={notesPath(where, edited?.publicId)}
       {...formProps}
+      ref={element}
       onSubmit={send}
       className="grid gap-2"
     >
@@ -105,10 +115,18 @@ export function NoteForm({ where, target = {}, label, onDone, onCancel, autoFocu
         label={label}
         autoFocus={autoFocus}
         text={draft.text}
-        change={draft.change}
-        errors={offline ? [OFFLINE] : (fields.body.errors ?? form.errors)}
+        change={(text) => {
+          draft.change(text);
+          // What was sent already may have arrived: a changed text is another note, and never lost.
+          if (waiting.clientKey === null) return;
+          waiting.stop();
+          renewKey();
+        }}
+        errors={fields.body.errors ?? form.errors}
         hint={<Hint restored={draft.restored} left={MAX_NOTE_CHARACTERS - draft.text.length} />}
       />
+      {fetcher.data?.signedOut && !busy && <SignInAgain />}
+      {waiting.clientKey !== null && <Waiting busy={busy} onStop={waiting.stop} />}
       {where.parts && !edited && !target.parent && <PartFields offered={where.parts} />}
       <Preview text={draft.text} projectId={where.projectId} />
       <div className="flex flex-wrap items-center gap-2">
@@ -133,6 +151,28 @@ export function NoteForm({ where, target = {}, label, onDone, onCancel, autoFocu
   );
 }
 
+/** Leads to signing in and back to the thread, where the text waits on this device. */
+function SignInAgain() {
+  const { pathname, search } = useLocation();
+  const next = encodeURIComponent(`${pathname}${search}#thread`);
+  return (
+    <p>
+      <a href={`/sign-in?next=${next}`}>Sign in again and come back here</a>
+    </p>
+  );
+}
+
+function Waiting({ busy, onStop }: { busy: boolean; onStop: () => void }) {
+  return (
+    <p role="status" className="flex flex-wrap items-center gap-x-3 text-small">
+      {busy ? "Sending it again." : WAITING}
+      <Button type="button" variant="quiet" size="small" onClick={onStop}>
+        Do not send it by itself
+      </Button>
+    </p>
+  );
+}
+
 /** Says how to write while there is room, and how much is left where it gets tight. */
 function Hint({ restored, left }: { restored: boolean; left: number }) {
   const hydrated = useHydrated();
@@ -150,5 +190,5 @@ function Hint({ restored, left }: { restored: boolean; left: number }) {
 }
 
 const NEAR_LIMIT = 1000;
-const OFFLINE =
-  "There is no connection, so nothing was sent. The text is kept on this device; store it when there is one again.";
+const WAITING =
+  "The server can't be reached. The text is kept on this device and is sent by itself, once, when there is a connection again.";

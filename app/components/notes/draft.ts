@@ -30,10 +30,10 @@ export function useDraft(key: string, stored: string) {
   };
 }
 
-/** A key of one's own for one sending; empty until scripts run. A new one after each that was stored. */
-export function useClientKey() {
+/** A key of one's own for one sending; empty until scripts run. A new one after each that was stored. `waiting`: that of a sending begun earlier. */
+export function useClientKey(waiting: string | null) {
   const [key, setKey] = useState("");
-  useEffect(() => setKey(newKey()), []);
+  useEffect(() => setKey((before) => waiting ?? (before || newKey())), [waiting]);
   return [key, () => setKey(newKey())] as const;
 }
 
@@ -43,7 +43,7 @@ function newKey(): string {
   ).join("");
 }
 
-function readDraft(key: string): string | null {
+export function readDraft(key: string): string | null {
   try {
     return localStorage.getItem(PREFIX + key);
   } catch {
@@ -51,7 +51,7 @@ function readDraft(key: string): string | null {
   }
 }
 
-function writeDraft(key: string, text: string | null): void {
+export function writeDraft(key: string, text: string | null): void {
   try {
     if (text === null || text === "") localStorage.removeItem(PREFIX + key);
     else localStorage.setItem(PREFIX + key, text);
