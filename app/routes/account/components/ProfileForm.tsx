@@ -63,7 +63,6 @@ export function ProfileForm({ person, timeZones, lastResult }: ProfileFormProps)
           {...getInputProps(fields.callSign, { type: "text" })}
           autoComplete="off"
           spellCheck={false}
-          className="max-w-[14rem]"
         />
         <SelectField
           label="ITU region"
