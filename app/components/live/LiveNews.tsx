@@ -27,7 +27,8 @@ export function LiveNews({ projectId, state, here }: { projectId: string; state:
     revalidator.revalidate();
   };
   // While something of this person's own is under way, its echo is not news.
-  const shown = words !== "" && (!busy || pressed);
+  // Who is shut out can't load it.
+  const shown = words !== "" && (!busy || pressed) && state.way !== "ended";
   return (
     <div className="live-news no-print" role="status" aria-live="polite">
       {shown && (
