@@ -34,7 +34,6 @@ export function buildDifferenceScene(lines: readonly DifferenceLine[], scale: Fr
     return { id, label, short, style, line: line + offScale, end: end ?? null };
   });
   return {
-    scale,
     frequency: frequencyAxis(scale),
     ribbon: [],
     valueTicks: ticks,

@@ -1,5 +1,5 @@
 /** Several sweeps over one another on one axis, as geometry: fractions of the plot's width across, px down. */
-import { type FrequencyAxis, type FrequencyScale, frequencyAxis, frequencyScale } from "./axis.ts";
+import { type FrequencyAxis, frequencyAxis, frequencyScale } from "./axis.ts";
 import type { ChartBand, ChartView } from "./chart-types.ts";
 import { type ChartPoints, decimate } from "./decimate.ts";
 import { profilePaths } from "./paths.ts";
@@ -42,7 +42,6 @@ export interface PlacedTrace {
 }
 
 export interface OverlayScene {
-  scale: FrequencyScale;
   frequency: FrequencyAxis;
   ribbon: RibbonBand[];
   valueTicks: ValueTick[];
@@ -86,7 +85,6 @@ export function buildOverlayScene(input: OverlayInput): OverlayScene {
   });
   const styleOf = new Map(traces.map(({ id, style }) => [id, style]));
   return {
-    scale,
     frequency: frequencyAxis(scale),
     ribbon: ribbonBands(scale, input.bands, input.designBands),
     valueTicks: axis.ticks,

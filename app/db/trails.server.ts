@@ -180,7 +180,6 @@ export async function findDecisions(projectId: number, tx: Queryable = db) {
     .orderBy(asc(trailDecisions.at), asc(trailDecisions.oneId), asc(trailDecisions.otherId))
     .limit(MOST_DIPS);
 }
-export type ListedDecision = Awaited<ReturnType<typeof findDecisions>>[number];
 
 /** Decisions that name one of the dips, oldest first. */
 export async function findDecisionsOn(dipIds: number[], tx: Queryable): Promise<DecisionRow[]> {

@@ -32,5 +32,3 @@ export async function findAllOnTrails(projectId: number, tx: Queryable = db) {
     .orderBy(desc(verdictEvents.at), desc(verdictEvents.id))
     .limit(2000);
 }
-
-export type ListedVerdict = Awaited<ReturnType<typeof findAllOnDip>>[number];

@@ -30,9 +30,6 @@ export function startJobs(everyMs = 2000): () => Promise<void> {
   let running: Promise<unknown> = Promise.resolve();
   let lastSweepMs = 0;
   let lastDigestMs = 0;
-  const runAllDue = async () => {
-    while (!stopped && (await runDueJobs()) === BATCH);
-  };
   const tick = () => {
     running = runDueJobs(() => stopped)
       .then(async () => {

@@ -30,8 +30,6 @@ export async function findRepeats(members: FoundSweep[]) {
   };
 }
 
-export type RepeatFindingsData = Awaited<ReturnType<typeof findRepeats>>;
-
 /** The mean, and around it one standard deviation of single sweeps. */
 function drawn(sweep: Sweep, spread: Float64Array) {
   const kept = decimate(sweep, CHART_POINTS);

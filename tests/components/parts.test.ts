@@ -40,7 +40,7 @@ describe("the figures of a note's form", () => {
     expect(parse({ fromMhz: "" }).data?.fromMhz).toBeUndefined();
   });
 
-  it.each([
+  it.each<Record<string, string>>([
     { fromMhz: "seven" },
     { fromMhz: "-1" },
     { toMhz: "1e9" },

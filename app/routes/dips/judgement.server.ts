@@ -77,5 +77,3 @@ export async function loadJudgement({ project, person, may }: ProjectAccess, pub
     return planHref(projectId, { part, name, toM: trim.lengthM, how: trim.how }, unit);
   }
 }
-
-export type JudgementData = Awaited<ReturnType<typeof loadJudgement>>;

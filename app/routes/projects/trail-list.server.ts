@@ -35,5 +35,3 @@ export async function loadTrailList(project: Project) {
       };
     });
 }
-
-export type ListedTrail = Awaited<ReturnType<typeof loadTrailList>>[number];

@@ -18,7 +18,7 @@ export async function loader(args: Route.LoaderArgs) {
   const typed = Object.fromEntries(params);
   const parsed = searchSchema.safeParse(typed);
   if (!parsed.success) {
-    const errors: Record<string, string[]> = parsed.error.flatten().fieldErrors;
+    const errors: Record<string, string[] | undefined> = parsed.error.flatten().fieldErrors;
     return { typed, errors, asked: null, groups: [], only: null };
   }
   const said = parseQuestion(parsed.data.q);
@@ -28,7 +28,7 @@ export async function loader(args: Route.LoaderArgs) {
   const cursor = params.get("cursor") ?? undefined;
   const groups = await find({ userId: person?.id ?? null, words: said.words, dips: range, only, cursor });
   const sentence = [said.words, range ? describeRange(range) : ""].filter(Boolean).join(" ");
-  return { typed, errors: {}, asked: sentence || null, groups, only };
+  return { typed, errors: NONE, asked: sentence || null, groups, only };
 }
 
 export default function Search({ loaderData }: Route.ComponentProps) {
@@ -59,3 +59,5 @@ export default function Search({ loaderData }: Route.ComponentProps) {
     </div>
   );
 }
+
+const NONE: Record<string, string[] | undefined> = {};

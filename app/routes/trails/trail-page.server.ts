@@ -22,18 +22,19 @@ export async function loadTrailPage(access: ProjectAccess, publicId: string) {
   const found = await trails.findByPublicId(publicId);
   if (!found || found.trail.projectId !== project.id) throw notFound("trail");
   const { trail } = found;
-  const [stops, sweeps, members, all, decisions, events, notes, designBands, stepRows, thread] = await Promise.all([
-    trailStops.findAllByTrail(trail.id),
-    loadTrailSweeps(project.id),
-    trails.findMembers(project.id),
-    trails.findAllByProject(project.id),
-    trails.findDecisions(project.id),
-    trails.findVerdictEvents(trail.id),
-    trailStops.findNotes(trail.id, MOST_NOTES),
-    projects.findDesignBands(project.id),
-    steps.findAllByProject(project.id),
-    listThread({ projectId: project.id, sweepId: null, dipId: null, trailId: trail.id }, access),
-  ]);
+  const [stops, sweeps, members, all, decisions, events, notes, designBands, stepRows, thread] =
+    await Promise.all([
+      trailStops.findAllByTrail(trail.id),
+      loadTrailSweeps(project.id),
+      trails.findMembers(project.id),
+      trails.findAllByProject(project.id),
+      trails.findDecisions(project.id),
+      trails.findVerdictEvents(trail.id),
+      trailStops.findNotes(trail.id, MOST_NOTES),
+      projects.findDesignBands(project.id),
+      steps.findAllByProject(project.id),
+      listThread({ projectId: project.id, sweepId: null, dipId: null, trailId: trail.id }, access),
+    ]);
   const way = wayOf(stops.map((stop) => ({ ...stop, numbers: completeDip(stop.numbers) })));
   const [first, last] = [stops[0], stops[stops.length - 1]];
   const moved = first && last ? movementWords(first, last) : "";
