@@ -79,6 +79,13 @@ export async function settled(page: Page): Promise<void> {
 
 /** Nothing serious by axe; the rules' names are in the message otherwise. */
 export async function expectAccessible(page: Page): Promise<void> {
+  // What is on its way in is half transparent, and so has no contrast yet.
+  await page.evaluate(() =>
+    Promise.race([
+      Promise.allSettled(document.getAnimations().map(({ finished }) => finished)),
+      new Promise((done) => setTimeout(done, 1000)),
+    ]),
+  );
   const { violations } = await new AxeBuilder({ page })
     .withTags(["wcag2a", "wcag2aa", "wcag21aa", "wcag22aa"])
     .analyze();
