@@ -107,7 +107,7 @@ describe("two owners with the settings open at once", () => {
     await browser.post(`${page}/settings`, { ...opened(title), title: `${title} renamed` });
     const answer = await browser.post(`${page}/settings`, { ...opened(title), title: `${title} other` });
     expect(answer.status).toBe(409);
-    expect(await answer.text()).toContain("Somebody else made this");
+    expect(await answer.text()).toContain("Somebody else changed this while you did");
     const now = await projects.findWithRole(project.publicId, owner.id);
     expect(now?.project.title).toBe(`${title} renamed`);
   });

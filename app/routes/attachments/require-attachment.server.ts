@@ -10,7 +10,7 @@ export async function requireAttachment({ project, person }: ProjectAccess, publ
   if (!found || found.attachment.projectId !== project.id) throw notFound("file");
   const { attachment, note } = found;
   const own = attachment.uploadedBy !== null && attachment.uploadedBy === person?.id;
-  const there = attachment.noteId === null ? own : note?.removedAt === null;
+  const there = attachment.noteId === null ? own : !note?.removedAt;
   if (!there) throw notFound("file");
   return { attachment, own };
 }
