@@ -93,14 +93,6 @@ export async function findAllByProject(
   };
 }
 
-/** Bytes of all originals, as they were given. */
-export async function sumStoredBytes(tx: Queryable = db): Promise<{ files: number; bytes: number }> {
-  const rows = await tx
-    .select({ files: count(), bytes: sql<number>`coalesce(sum(${files.sizeBytes}), 0)`.mapWith(Number) })
-    .from(files);
-  return rows[0];
-}
-
 /** How many sweeps of the antenna there are. */
 export async function countByProject(projectId: number, tx: Queryable = db): Promise<number> {
   const rows = await tx
@@ -108,42 +100,6 @@ export async function countByProject(projectId: number, tx: Queryable = db): Pro
     .from(sweeps)
     .where(and(eq(sweeps.projectId, projectId), eq(sweeps.purpose, "antenna")));
   return rows[0].n;
-}
-
-export async function findFileBySha256(projectId: number, sha256: string, tx: Queryable = db) {
-  const rows = await tx
-    .select({ file: files, sweep: SWEEP_OF_FILE })
-    .from(files)
-    .innerJoin(sweeps, eq(sweeps.fileId, files.id))
-    .where(and(eq(files.projectId, projectId), eq(files.sha256, sha256)))
-    .orderBy(asc(sweeps.id))
-    .limit(1);
-  return rows[0];
-}
-
-export async function findStorageKeys(projectId: number, tx: Queryable = db): Promise<string[]> {
-  const rows = await tx
-    .select({ key: files.storageKey })
-    .from(files)
-    .where(eq(files.projectId, projectId))
-    .limit(100_000);
-  return rows.map((row) => row.key);
-}
-
-export async function isStorageKeyUsed(key: string, tx: Queryable = db): Promise<boolean> {
-  const rows = await tx.select({ id: files.id }).from(files).where(eq(files.storageKey, key)).limit(1);
-  return rows.length > 0;
-}
-
-export async function insertFile(
-  values: Omit<typeof files.$inferInsert, "publicId" | "createdAt">,
-  tx: Queryable,
-) {
-  const [row] = await tx
-    .insert(files)
-    .values({ ...values, publicId: newPublicId(), createdAt: new Date() })
-    .$returningId();
-  return row.id;
 }
 
 export async function insert(
@@ -304,13 +260,6 @@ async function nextNumber(table: typeof readings | typeof analyses, sweepId: num
     .where(eq(table.sweepId, sweepId));
   return rows[0].n;
 }
-
-const SWEEP_OF_FILE = {
-  id: sweeps.id,
-  publicId: sweeps.publicId,
-  title: sweeps.title,
-  purpose: sweeps.purpose,
-};
 
 /** Newest first by when it was taken, or where that is unknown by when it came in. */
 const orderTime = sql<Date>`coalesce(${sweeps.takenAt}, ${sweeps.createdAt})`;

@@ -1,6 +1,7 @@
 import * as benchReferences from "~/db/bench-references.server";
 import * as benches from "~/db/benches.server";
 import { inTransaction, isDuplicate, type Transaction } from "~/db/client.server";
+import * as files from "~/db/files.server";
 import { findZeroLines } from "~/db/readings.server";
 import * as sweeps from "~/db/sweeps.server";
 import type { BenchGiven } from "~/measurement/bench";
@@ -121,7 +122,7 @@ async function attachTwin(
   { kind, file }: ReferenceFile,
   present: benchReferences.FoundReference[],
 ): Promise<ReferenceTaken> {
-  const twin = await sweeps.findFileBySha256(input.project.id, sha256Of(file.bytes));
+  const twin = await files.findBySha256(input.project.id, sha256Of(file.bytes));
   if (!twin) throw new Error("The file that was here is gone.");
   const other = present.find(({ sweep }) => sweep.id === twin.sweep.id);
   if (other) {

@@ -1,4 +1,5 @@
 import { inTransaction, isDuplicate, type Transaction } from "~/db/client.server";
+import * as files from "~/db/files.server";
 import { newPublicId } from "~/db/ids.server";
 import * as jobs from "~/db/jobs.server";
 import * as projects from "~/db/projects.server";
@@ -62,7 +63,7 @@ export async function takeIn(input: TakeIn): Promise<Taken> {
   if (file.bytes.length > MAX_FILE_BYTES) return { kind: "refused", problem: tooLarge(file.bytes.length) };
   if (file.bytes.length === 0) return { kind: "refused", problem: EMPTY };
   const sha256 = sha256Of(file.bytes);
-  const twin = await sweeps.findFileBySha256(project.id, sha256);
+  const twin = await files.findBySha256(project.id, sha256);
   if (twin) return twiceOf(twin);
 
   const means = await meansOf({
@@ -87,7 +88,7 @@ export async function takeIn(input: TakeIn): Promise<Taken> {
     return await inTransaction(async (tx) => {
       // First: whoever changes the project's trails at the same time waits, and then sees this sweep.
       await projects.lock(project.id, tx);
-      const fileId = await sweeps.insertFile(
+      const fileId = await files.insert(
         {
           projectId: project.id,
           name: cleanFileName(file.name),
@@ -140,7 +141,7 @@ export async function takeIn(input: TakeIn): Promise<Taken> {
   } catch (error) {
     await deleteObject(storageKey).catch(() => undefined);
     if (!isDuplicate(error)) throw error;
-    const first = await sweeps.findFileBySha256(project.id, sha256);
+    const first = await files.findBySha256(project.id, sha256);
     if (!first) throw error;
     return twiceOf(first);
   }

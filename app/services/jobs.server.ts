@@ -1,9 +1,9 @@
 import * as attachments from "~/db/attachments.server";
 import * as emailCodes from "~/db/email-codes.server";
+import * as files from "~/db/files.server";
 import * as jobs from "~/db/jobs.server";
 import * as photographs from "~/db/photographs.server";
 import * as sessions from "~/db/sessions.server";
-import * as sweeps from "~/db/sweeps.server";
 import { dropUnsent } from "./attachments.server.ts";
 import { sendDigests } from "./digests.server.ts";
 import { log } from "./log.server.ts";
@@ -16,7 +16,7 @@ import { deleteObject } from "./storage.server.ts";
 const KINDS: Record<string, (payload: never) => Promise<void>> = {
   /** Removes a stored object unless a row says that it is in use. */
   "delete-object": async ({ key }: { key: string }) => {
-    const rows = ROWS_OF[key.split("/")[0]] ?? sweeps;
+    const rows = ROWS_OF[key.split("/")[0]] ?? files;
     if (!(await rows.isStorageKeyUsed(key))) await deleteObject(key);
   },
   "drop-attachment": ({ attachment }: { attachment: string }) => dropUnsent(attachment),

@@ -2,11 +2,11 @@ import type { ProjectRole } from "~/auth/permissions";
 import * as attachments from "~/db/attachments.server";
 import * as blocks from "~/db/blocks.server";
 import { inTransaction, isDuplicate, type Transaction } from "~/db/client.server";
+import * as files from "~/db/files.server";
 import * as jobs from "~/db/jobs.server";
 import * as people from "~/db/people.server";
 import * as photographs from "~/db/photographs.server";
 import * as projects from "~/db/projects.server";
-import * as sweeps from "~/db/sweeps.server";
 import { record } from "./events.server.ts";
 import { conflictOf, mergeEdit } from "./merge-edit.ts";
 
@@ -25,7 +25,7 @@ export function deleteProject(id: number): Promise<void> {
     // Locked before the keys are read: an upload under way is either seen here or finds no project.
     await projects.lock(id, tx);
     const keys = [
-      ...(await sweeps.findStorageKeys(id, tx)),
+      ...(await files.findStorageKeys(id, tx)),
       ...(await photographs.findStorageKeys(id, tx)),
       ...(await attachments.findStorageKeys(id, tx)),
     ];

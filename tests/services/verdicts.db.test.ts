@@ -2,6 +2,7 @@ import { beforeEach, describe, expect, it } from "vitest";
 import { mayInProject } from "~/auth/permissions";
 import { inTransaction } from "~/db/client.server";
 import * as dips from "~/db/dips.server";
+import * as files from "~/db/files.server";
 import { newPublicId } from "~/db/ids.server";
 import * as people from "~/db/people.server";
 import * as sweeps from "~/db/sweeps.server";
@@ -48,7 +49,7 @@ beforeEach(async () => {
   );
   dipPublicId = newPublicId();
   await inTransaction(async (tx) => {
-    const fileId = await sweeps.insertFile(
+    const fileId = await files.insert(
       {
         projectId: project.id,
         name: "a.csv",

@@ -1,7 +1,7 @@
 import { afterAll, beforeAll, describe, expect, it } from "vitest";
+import * as files from "~/db/files.server";
 import * as people from "~/db/people.server";
 import * as projects from "~/db/projects.server";
-import * as sweeps from "~/db/sweeps.server";
 import { createProject } from "~/services/projects.server";
 import { getObject } from "~/services/storage.server";
 import type { Browser } from "./browser.ts";
@@ -190,7 +190,7 @@ describe("settings", () => {
     const title = await makeProject();
     const taken = await sendSweep(project.publicId, await tokenOf(owner), touchstone());
     expect(taken.status).toBe(201);
-    const [key] = await sweeps.findStorageKeys(project.id);
+    const [key] = await files.findStorageKeys(project.id);
     expect(await isStored(key)).toBe(true);
     const wrong = await browser.post(`${page}/settings`, { intent: "delete", title: "another" });
     expect(wrong.status).toBe(400);
@@ -198,7 +198,7 @@ describe("settings", () => {
     const right = await browser.post(`${page}/settings`, { intent: "delete", title });
     expect(right.headers.get("Location")).toBe("/projects");
     expect((await browser.get(page)).status).toBe(404);
-    expect(await sweeps.isStorageKeyUsed(key)).toBe(false);
+    expect(await files.isStorageKeyUsed(key)).toBe(false);
     // The object goes in the background, soon.
     await expect.poll(() => isStored(key), { timeout: 20_000, interval: 500 }).toBe(false);
   });

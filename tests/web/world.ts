@@ -2,6 +2,7 @@ import { createHash } from "node:crypto";
 import type { ProjectRole, Visibility } from "~/auth/permissions";
 import { startSession } from "~/auth/session.server";
 import { inTransaction, pool } from "~/db/client.server";
+import * as files from "~/db/files.server";
 import * as notes from "~/db/notes.server";
 import * as outbox from "~/db/outbox.server";
 import * as people from "~/db/people.server";
@@ -232,7 +233,7 @@ export function addBareSweeps(projectId: number, howMany: number): Promise<void>
     for (let i = 0; i < howMany; i++) {
       const name = unique("bare");
       const sha256 = createHash("sha256").update(name).digest("hex");
-      const fileId = await sweeps.insertFile(
+      const fileId = await files.insert(
         { projectId, name, sizeBytes: 1, sha256, storageKey: `none/${name}`, uploadedBy: null },
         tx,
       );

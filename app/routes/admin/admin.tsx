@@ -2,12 +2,12 @@ import { parseWithZod } from "@conform-to/zod/v4";
 import type { ReactNode } from "react";
 import { data, Link } from "react-router";
 import { requirePerson } from "~/auth/require.server";
+import * as files from "~/db/files.server";
 import * as jobs from "~/db/jobs.server";
 import * as outbox from "~/db/outbox.server";
 import * as people from "~/db/people.server";
 import * as projects from "~/db/projects.server";
 import * as reports from "~/db/reports.server";
-import * as sweeps from "~/db/sweeps.server";
 import { notFound } from "~/errors";
 import { redirectWithMessage } from "~/services/flash.server";
 import { changeAccount } from "~/services/people.server";
@@ -27,7 +27,7 @@ export async function loader(args: Route.LoaderArgs) {
     people.findAll(PAGE_ROWS, page * PAGE_ROWS),
     people.countAll(),
     projects.countByVisibility(),
-    sweeps.sumStoredBytes(),
+    files.sumStoredBytes(),
     jobs.countAll(),
     outbox.countByState(),
     reports.countOpen(),

@@ -1,0 +1,55 @@
+import { and, asc, count, eq, sql } from "drizzle-orm";
+import { db, type Queryable } from "./client.server.ts";
+import { newPublicId } from "./ids.server.ts";
+import { files, sweeps } from "./schema/index.ts";
+
+/** Bytes of all originals, as they were given. */
+export async function sumStoredBytes(tx: Queryable = db): Promise<{ files: number; bytes: number }> {
+  const rows = await tx
+    .select({ files: count(), bytes: sql<number>`coalesce(sum(${files.sizeBytes}), 0)`.mapWith(Number) })
+    .from(files);
+  return rows[0];
+}
+
+export async function findBySha256(projectId: number, sha256: string, tx: Queryable = db) {
+  const rows = await tx
+    .select({ file: files, sweep: SWEEP_OF_FILE })
+    .from(files)
+    .innerJoin(sweeps, eq(sweeps.fileId, files.id))
+    .where(and(eq(files.projectId, projectId), eq(files.sha256, sha256)))
+    .orderBy(asc(sweeps.id))
+    .limit(1);
+  return rows[0];
+}
+
+export async function findStorageKeys(projectId: number, tx: Queryable = db): Promise<string[]> {
+  const rows = await tx
+    .select({ key: files.storageKey })
+    .from(files)
+    .where(eq(files.projectId, projectId))
+    .limit(100_000);
+  return rows.map((row) => row.key);
+}
+
+export async function isStorageKeyUsed(key: string, tx: Queryable = db): Promise<boolean> {
+  const rows = await tx.select({ id: files.id }).from(files).where(eq(files.storageKey, key)).limit(1);
+  return rows.length > 0;
+}
+
+export async function insert(
+  values: Omit<typeof files.$inferInsert, "publicId" | "createdAt">,
+  tx: Queryable,
+) {
+  const [row] = await tx
+    .insert(files)
+    .values({ ...values, publicId: newPublicId(), createdAt: new Date() })
+    .$returningId();
+  return row.id;
+}
+
+const SWEEP_OF_FILE = {
+  id: sweeps.id,
+  publicId: sweeps.publicId,
+  title: sweeps.title,
+  purpose: sweeps.purpose,
+};
