@@ -38,7 +38,7 @@ export async function startTestStack({
     onLoss: (message) => console.error(message),
   });
   Object.assign(process.env, stack.settings.environment, {
-    NODE_ENV: process.env.NODE_ENV,
+    ...(process.env.NODE_ENV ? { NODE_ENV: process.env.NODE_ENV } : {}),
     SWALE_URL: stack.address,
     SWALE_MAIL_URL: stack.settings.environment.LOCAL_INBOX_URL,
     SWALE_GITHUB_URL: stack.settings.environment.GITHUB_BASE_URL,
