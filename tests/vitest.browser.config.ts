@@ -11,8 +11,7 @@ export default defineConfig({
     testTimeout: 120_000,
     hookTimeout: 120_000,
     pool: "forks",
-    maxWorkers: 1,
-    fileParallelism: false,
+    maxWorkers: 2,
     env: { AWS_SDK_JS_NODE_VERSION_SUPPORT_WARNING_DISABLED: "true" },
   },
 });

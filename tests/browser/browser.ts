@@ -67,6 +67,18 @@ export async function signIn(page: Page, login: string): Promise<void> {
   await page.waitForURL(`${SERVER}/**`);
 }
 
+/** The path of the sweep with phase that ends the demo's story. */
+export async function demoSweep(browser: Browser): Promise<string> {
+  const { page, context } = await visit(browser);
+  await page.goto("/");
+  await page.getByRole("link", { name: "The vertical on the reed bank" }).click();
+  await page.getByRole("link", { name: "As it stays", exact: true }).first().click();
+  await page.waitForURL(/\/sweeps\/[a-z0-9]{10}$/);
+  const { pathname } = new URL(page.url());
+  await context.close();
+  return pathname;
+}
+
 /** A login nobody has yet. */
 export function newcomer(name: string): string {
   return `${name}-${Math.random().toString(36).slice(2, 8)}`;

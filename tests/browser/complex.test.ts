@@ -1,8 +1,8 @@
 import type { Browser } from "playwright-core";
 import { afterAll, beforeAll, expect, test } from "vitest";
-import { expectAccessible, expectFits, launch, settled, visit } from "./browser.ts";
+import { demoSweep, launch, settled, visit } from "./browser.ts";
 
-/** A sweep with phase on the demo's page, and the methods: without scripts, with the pointer, at three widths. */
+/** A sweep with phase on the demo's page, and the methods: without scripts, with the pointer. */
 
 /** Enough for a machine that is busy with other suites. */
 const SLOW = { timeout: 20_000 };
@@ -12,13 +12,7 @@ let sweepPath = "";
 
 beforeAll(async () => {
   browser = await launch();
-  const { page, context } = await visit(browser);
-  await page.goto("/");
-  await page.getByRole("link", { name: "The vertical on the reed bank" }).click();
-  await page.getByRole("link", { name: "As it stays", exact: true }).first().click();
-  await page.waitForURL(/\/sweeps\/[a-z0-9]{10}$/);
-  sweepPath = new URL(page.url()).pathname;
-  await context.close();
+  sweepPath = await demoSweep(browser);
 });
 afterAll(() => browser.close());
 
@@ -82,25 +76,6 @@ test("the methods reckon what is typed, keep it in the address, and are reached 
   await example.getByLabel("Return loss").fill("much");
   await example.getByLabel("Return loss").press("Enter");
   await expect.poll(() => example.textContent(), SLOW).toContain("Write a number from -3 to 80.");
-  expect(complaints).toEqual([]);
-  await context.close();
-});
-
-test.each([
-  [390, "dark"],
-  [1024, "light"],
-  [1600, "dark"],
-] as const)("both fit %i px and are accessible, %s", { timeout: 300_000 }, async (width, colorScheme) => {
-  const { page, context, complaints } = await visit(browser, {
-    viewport: { width, height: 900 },
-    colorScheme,
-  });
-  for (const path of [sweepPath, "/methods"]) {
-    await page.goto(path);
-    await settled(page);
-    await expectFits(page);
-    await expectAccessible(page);
-  }
   expect(complaints).toEqual([]);
   await context.close();
 });

@@ -1,6 +1,6 @@
 import type { Browser, Page } from "playwright-core";
 import { afterAll, beforeAll, expect, test } from "vitest";
-import { expectAccessible, expectFits, launch, settled, signIn, visit } from "./browser.ts";
+import { demoSweep, launch, settled, signIn, visit } from "./browser.ts";
 
 /** The sweep page of the demo: first paint, zoom, address, keyboard, no scripts. */
 
@@ -9,13 +9,7 @@ let sweepPath = "";
 
 beforeAll(async () => {
   browser = await launch();
-  const { page, context } = await visit(browser);
-  await page.goto("/");
-  await page.getByRole("link", { name: "The vertical on the reed bank" }).click();
-  await page.getByRole("link", { name: "As it stays", exact: true }).first().click();
-  await page.waitForURL(/\/sweeps\/[a-z0-9]{10}$/);
-  sweepPath = new URL(page.url()).pathname;
-  await context.close();
+  sweepPath = await demoSweep(browser);
 });
 afterAll(() => browser.close());
 
@@ -122,30 +116,6 @@ async function tabTo(page: Page, there: () => boolean): Promise<void> {
   }
   throw new Error("the keyboard does not get there");
 }
-
-test.each([
-  [390, "light", true],
-  [1024, "dark", true],
-  [1600, "light", false],
-] as const)("every page fits %i px, %s", { timeout: 300_000 }, async (width, colorScheme, withAxe) => {
-  const project = sweepPath.split("/").slice(0, 3).join("/");
-  const paths = ["/", "/projects", "/projects/new", "/settings", "/settings/tokens", "/admin", project]
-    .concat(["/members", "/settings", "/sweeps", "/sweeps/new"].map((rest) => project + rest))
-    .concat([sweepPath, `${sweepPath}/reading`, "/nothing-here"]);
-  const { page, context, complaints } = await visit(browser, {
-    viewport: { width, height: 900 },
-    colorScheme,
-  });
-  await signIn(page, width === 1024 ? "ada-marsh" : "site-keeper");
-  for (const path of paths) {
-    await page.goto(path);
-    await settled(page);
-    await expectFits(page);
-    if (withAxe) await expectAccessible(page);
-  }
-  expect(complaints).toEqual([]);
-  await context.close();
-});
 
 test("choosing a dip is answered in sight, on a phone too", async () => {
   for (const viewport of [
