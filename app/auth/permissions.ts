@@ -21,6 +21,7 @@ const PROJECT_TABLE = {
   "verdict.settle": ["owner", "experimenter"],
   "note.write": ["owner", "experimenter", "commenter"],
   "note.moderate": ["owner"],
+  "plate.make": ["owner", "experimenter"],
 } as const satisfies Record<string, readonly ProjectRole[]>;
 
 export type ProjectAction = keyof typeof PROJECT_TABLE;

@@ -1,6 +1,17 @@
 import { and, count, desc, eq, gt, inArray, isNull, lt, ne, or } from "drizzle-orm";
 import { db, type Queryable } from "./client.server.ts";
-import { benches, dips, events, memberships, notes, steps, sweeps, trails, users } from "./schema/index.ts";
+import {
+  benches,
+  dips,
+  events,
+  memberships,
+  notes,
+  plates,
+  steps,
+  sweeps,
+  trails,
+  users,
+} from "./schema/index.ts";
 
 /** Where a page of the account ended: the newest things come first. */
 export interface Before {
@@ -41,13 +52,15 @@ export type ActivityRow = Awaited<ReturnType<typeof findPage>>[number];
 /** Which of these things are still there: an account keeps what is gone, a link to it leads nowhere. */
 export async function findPresent(projectId: number, publicIds: string[], tx: Queryable = db) {
   if (publicIds.length === 0) return new Set<string>();
-  const of = (table: typeof sweeps | typeof dips | typeof trails | typeof steps | typeof benches) =>
+  const of = (
+    table: typeof sweeps | typeof dips | typeof trails | typeof steps | typeof benches | typeof plates,
+  ) =>
     tx
       .select({ publicId: table.publicId })
       .from(table)
       .where(and(eq(table.projectId, projectId), inArray(table.publicId, publicIds)))
       .limit(publicIds.length);
-  const found = await Promise.all([sweeps, dips, trails, steps, benches].map(of));
+  const found = await Promise.all([sweeps, dips, trails, steps, benches, plates].map(of));
   return new Set(found.flat().map(({ publicId }) => publicId));
 }
 

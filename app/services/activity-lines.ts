@@ -76,8 +76,8 @@ function lineOf(
 }
 
 /** The narrowest thing that it is about, for one who groups by it. */
-export function subjectOf({ dip, trail, step, bench, sweep }: EventAbout): string {
-  return dip ?? trail ?? step ?? bench ?? sweep ?? "project";
+export function subjectOf({ plate, dip, trail, step, bench, sweep }: EventAbout): string {
+  return plate ?? dip ?? trail ?? step ?? bench ?? sweep ?? "project";
 }
 
 /** "3 notes", for lists of how much of what there is. */
@@ -91,6 +91,7 @@ const TOGETHER = new Set<EventKind>([
   "sweep.added",
   "sweep.deleted",
   "step.added",
+  "plate.made",
   "member.joined",
   "member.changed",
   "member.left",
@@ -125,6 +126,9 @@ const WORDS: Record<EventKind, Words> = {
   "antenna.changed": times("The antenna"),
   "bench.added": times("A bench came"),
   "bench.changed": times("A bench was changed"),
+  "plate.made": some("A plate was made:", "# plates were made:"),
+  "plate.mended": times("A plate has a new version"),
+  "plate.withdrawn": times("A plate was withdrawn"),
   "member.joined": some("Joined:", "# people joined:"),
   "member.changed": some("Has another role:", "# people have another role:"),
   "member.left": some("Left:", "# people left:"),
@@ -149,6 +153,9 @@ const COUNTED: Record<EventKind, [string, string]> = {
   "antenna.changed": ["change of the antenna", "changes of the antenna"],
   "bench.added": ["bench", "benches"],
   "bench.changed": ["change of a bench", "changes of benches"],
+  "plate.made": ["plate", "plates"],
+  "plate.mended": ["new version of a plate", "new versions of plates"],
+  "plate.withdrawn": ["plate withdrawn", "plates withdrawn"],
   "member.joined": ["person joined", "people joined"],
   "member.changed": ["change of a role", "changes of roles"],
   "member.left": ["person left", "people left"],

@@ -17,6 +17,9 @@ export const EVENT_KINDS = [
   "antenna.changed",
   "bench.added",
   "bench.changed",
+  "plate.made",
+  "plate.mended",
+  "plate.withdrawn",
   "member.joined",
   "member.changed",
   "member.left",
@@ -31,4 +34,7 @@ export const TOLD_KINDS: ReadonlySet<EventKind> = new Set([
   "verdict.given",
   "sweep.added",
   "step.added",
+  "plate.made",
+  "plate.mended",
+  "plate.withdrawn",
 ]);

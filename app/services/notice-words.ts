@@ -14,13 +14,20 @@ export function noticeWords(notice: {
   if (kind === "verdict.given") return `${who} gave a verdict: ${about.title || "open again"}`;
   if (kind === "sweep.added") return `${who} added the sweep ${about.title}`;
   if (kind === "step.added") return `${who} wrote down the step ${about.title}`;
+  if (kind === "plate.made") return `${who} made ${about.title}`;
+  if (kind === "plate.mended") return `${who} mended ${about.title}`;
+  if (kind === "plate.withdrawn") return `${who} withdrew ${about.title}`;
   if (reason === "mention") return `${who} named you on ${about.title}`;
   if (reason === "reply") return `${who} answered you on ${about.title}`;
   return `${who} wrote on ${about.title}`;
 }
 
 /** Where a notice leads: to the note, so that it can be answered there, else to what the event is about. */
-export function noticePath(project: string, { note, dip, trail, step, bench, sweep }: EventAbout): string {
+export function noticePath(
+  project: string,
+  { plate, note, dip, trail, step, bench, sweep }: EventAbout,
+): string {
+  if (plate) return `/plates/${plate}`;
   const base = `/projects/${project}`;
   const places = { notes: note, dips: dip, trails: trail, steps: step, benches: bench, sweeps: sweep };
   const there = Object.entries(places).find(([, id]) => id !== undefined);

@@ -83,7 +83,8 @@ const NOUNS_OF: Record<string, readonly string[]> = {
   compare: ["sweep"],
   steps: ["step"],
   benches: ["bench"],
+  plates: ["plate"],
   antenna: ["antenna", "project"],
   members: ["member"],
-  activity: ["note", "sweep", "verdict", "trail", "step", "antenna", "bench", "member", "project"],
+  activity: ["note", "sweep", "verdict", "trail", "step", "antenna", "bench", "plate", "member", "project"],
 };

@@ -32,6 +32,7 @@ export interface EventAbout {
   step?: string;
   bench?: string;
   note?: string;
+  plate?: string;
   /** As a person reads it; may not hold what only some members may read. */
   title: string;
 }
