@@ -103,6 +103,8 @@ export const writeUps = mysqlTable(
     body: mediumtext("body").notNull(),
     /** Number of the version that readers see; null for a draft. */
     publishedNumber: int("published_number", { unsigned: true }),
+    /** When it was taken back; null while it is published or was never. */
+    takenBackAt: utc("taken_back_at"),
     createdBy: rowRef("created_by").references(() => users.id, { onDelete: "set null" }),
     createdAt: utc("created_at").notNull(),
     updatedAt: utc("updated_at").notNull(),
@@ -121,6 +123,8 @@ export const writeUpVersions = mysqlTable(
     number: int("number", { unsigned: true }).notNull(),
     title: varchar("title", { length: 160 }).notNull(),
     body: mediumtext("body").notNull(),
+    /** The figures and numbers that it shows, and its licence, as they were when it was published. */
+    frozen: mediumtext("frozen").notNull(),
     /** What changed, in a line. */
     remark: varchar("remark", { length: 300 }).notNull(),
     publishedBy: rowRef("published_by").references(() => users.id, { onDelete: "set null" }),
