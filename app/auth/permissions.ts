@@ -22,6 +22,7 @@ const PROJECT_TABLE = {
   "note.write": ["owner", "experimenter", "commenter"],
   "note.moderate": ["owner"],
   "plate.make": ["owner", "experimenter"],
+  "write-up.edit": ["owner", "experimenter"],
 } as const satisfies Record<string, readonly ProjectRole[]>;
 
 export type ProjectAction = keyof typeof PROJECT_TABLE;

@@ -11,6 +11,7 @@ import {
   sweeps,
   trails,
   users,
+  writeUps,
 } from "./schema/index.ts";
 
 /** Where a page of the account ended: the newest things come first. */
@@ -53,14 +54,21 @@ export type ActivityRow = Awaited<ReturnType<typeof findPage>>[number];
 export async function findPresent(projectId: number, publicIds: string[], tx: Queryable = db) {
   if (publicIds.length === 0) return new Set<string>();
   const of = (
-    table: typeof sweeps | typeof dips | typeof trails | typeof steps | typeof benches | typeof plates,
+    table:
+      | typeof sweeps
+      | typeof dips
+      | typeof trails
+      | typeof steps
+      | typeof benches
+      | typeof plates
+      | typeof writeUps,
   ) =>
     tx
       .select({ publicId: table.publicId })
       .from(table)
       .where(and(eq(table.projectId, projectId), inArray(table.publicId, publicIds)))
       .limit(publicIds.length);
-  const found = await Promise.all([sweeps, dips, trails, steps, benches, plates].map(of));
+  const found = await Promise.all([sweeps, dips, trails, steps, benches, plates, writeUps].map(of));
   return new Set(found.flat().map(({ publicId }) => publicId));
 }
 

@@ -76,8 +76,8 @@ function lineOf(
 }
 
 /** The narrowest thing that it is about, for one who groups by it. */
-export function subjectOf({ plate, dip, trail, step, bench, sweep }: EventAbout): string {
-  return plate ?? dip ?? trail ?? step ?? bench ?? sweep ?? "project";
+export function subjectOf({ writeUp, plate, dip, trail, step, bench, sweep }: EventAbout): string {
+  return writeUp ?? plate ?? dip ?? trail ?? step ?? bench ?? sweep ?? "project";
 }
 
 /** "3 notes", for lists of how much of what there is. */
@@ -129,6 +129,8 @@ const WORDS: Record<EventKind, Words> = {
   "plate.made": some("A plate was made:", "# plates were made:"),
   "plate.mended": times("A plate has a new version"),
   "plate.withdrawn": times("A plate was withdrawn"),
+  "write-up.published": times("A write-up was published"),
+  "write-up.taken-back": times("A write-up was taken back"),
   "member.joined": some("Joined:", "# people joined:"),
   "member.changed": some("Has another role:", "# people have another role:"),
   "member.left": some("Left:", "# people left:"),
@@ -156,6 +158,8 @@ const COUNTED: Record<EventKind, [string, string]> = {
   "plate.made": ["plate", "plates"],
   "plate.mended": ["new version of a plate", "new versions of plates"],
   "plate.withdrawn": ["plate withdrawn", "plates withdrawn"],
+  "write-up.published": ["write-up published", "write-ups published"],
+  "write-up.taken-back": ["write-up taken back", "write-ups taken back"],
   "member.joined": ["person joined", "people joined"],
   "member.changed": ["change of a role", "changes of roles"],
   "member.left": ["person left", "people left"],

@@ -71,12 +71,13 @@ export function happened({ kind, about, at, by, closedAt }: activity.ActivityRow
 
 /** Answers the address of what an event is about; null for what is gone. */
 export async function placesOf(project: OfProject, rows: { about: EventAbout }[]) {
-  const named = rows.flatMap(({ about: { plate, dip, trail, step, bench, sweep } }) =>
-    [plate, dip, trail, step, bench, sweep].filter((id) => id !== undefined),
+  const named = rows.flatMap(({ about: { writeUp, plate, dip, trail, step, bench, sweep } }) =>
+    [writeUp, plate, dip, trail, step, bench, sweep].filter((id) => id !== undefined),
   );
   const present = await activity.findPresent(project.id, [...new Set(named)]);
   const base = `/projects/${project.publicId}`;
   return (about: EventAbout): string | null => {
+    if (about.writeUp) return present.has(about.writeUp) ? `/write-ups/${about.writeUp}` : null;
     if (about.plate) return present.has(about.plate) ? `/plates/${about.plate}` : null;
     const kinds = [
       ["dips", about.dip],

@@ -20,6 +20,8 @@ export const EVENT_KINDS = [
   "plate.made",
   "plate.mended",
   "plate.withdrawn",
+  "write-up.published",
+  "write-up.taken-back",
   "member.joined",
   "member.changed",
   "member.left",
@@ -37,4 +39,5 @@ export const TOLD_KINDS: ReadonlySet<EventKind> = new Set([
   "plate.made",
   "plate.mended",
   "plate.withdrawn",
+  "write-up.published",
 ]);

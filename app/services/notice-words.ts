@@ -17,6 +17,7 @@ export function noticeWords(notice: {
   if (kind === "plate.made") return `${who} made ${about.title}`;
   if (kind === "plate.mended") return `${who} mended ${about.title}`;
   if (kind === "plate.withdrawn") return `${who} withdrew ${about.title}`;
+  if (kind === "write-up.published") return `${who} published the write-up ${about.title}`;
   if (reason === "mention") return `${who} named you on ${about.title}`;
   if (reason === "reply") return `${who} answered you on ${about.title}`;
   return `${who} wrote on ${about.title}`;
@@ -25,8 +26,9 @@ export function noticeWords(notice: {
 /** Where a notice leads: to the note, so that it can be answered there, else to what the event is about. */
 export function noticePath(
   project: string,
-  { plate, note, dip, trail, step, bench, sweep }: EventAbout,
+  { writeUp, plate, note, dip, trail, step, bench, sweep }: EventAbout,
 ): string {
+  if (writeUp) return `/write-ups/${writeUp}`;
   if (plate) return `/plates/${plate}`;
   const base = `/projects/${project}`;
   const places = { notes: note, dips: dip, trails: trail, steps: step, benches: bench, sweeps: sweep };

@@ -84,7 +84,8 @@ const NOUNS_OF: Record<string, readonly string[]> = {
   steps: ["step"],
   benches: ["bench"],
   plates: ["plate"],
+  "write-ups": ["write-up"],
   antenna: ["antenna", "project"],
   members: ["member"],
-  activity: ["note", "sweep", "verdict", "trail", "step", "antenna", "bench", "plate", "member", "project"],
+  activity: ["note", "sweep", "verdict", "trail", "step", "antenna", "bench", "plate", "write-up", "member", "project"],
 };

@@ -124,6 +124,8 @@ const SORT: Record<EventKind, string> = {
   "plate.made": "new plate|new plates",
   "plate.mended": "new version of a plate|new versions of plates",
   "plate.withdrawn": "plate withdrawn|plates withdrawn",
+  "write-up.published": "write-up published|write-ups published",
+  "write-up.taken-back": "write-up taken back|write-ups taken back",
   "member.joined": "the members changed",
   "member.changed": "the members changed",
   "member.left": "the members changed",

@@ -33,6 +33,7 @@ export interface EventAbout {
   bench?: string;
   note?: string;
   plate?: string;
+  writeUp?: string;
   /** As a person reads it; may not hold what only some members may read. */
   title: string;
 }
