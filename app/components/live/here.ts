@@ -75,7 +75,7 @@ const KIND_OF: Record<string, Exclude<Here["kind"], "project">> = {
   benches: "bench",
 };
 /** Ends of addresses where something is filled in. */
-const FORMS = new Set(["new", "edit", "rebuild", "reading", "settings"]);
+const FORMS = new Set(["new", "edit", "publish", "rebuild", "reading", "settings"]);
 /** By area, what its page lists. */
 const NOUNS_OF: Record<string, readonly string[]> = {
   "": ["note", "sweep", "verdict", "trail", "step", "member", "project"],
@@ -87,5 +87,17 @@ const NOUNS_OF: Record<string, readonly string[]> = {
   "write-ups": ["write-up"],
   antenna: ["antenna", "project"],
   members: ["member"],
-  activity: ["note", "sweep", "verdict", "trail", "step", "antenna", "bench", "plate", "write-up", "member", "project"],
+  activity: [
+    "note",
+    "sweep",
+    "verdict",
+    "trail",
+    "step",
+    "antenna",
+    "bench",
+    "plate",
+    "write-up",
+    "member",
+    "project",
+  ],
 };
