@@ -1,9 +1,19 @@
-import { Marked } from "marked";
+import { Marked, type MarkedExtension, type Token } from "marked";
+import markedFootnote from "marked-footnote";
 import sanitizeHtml from "sanitize-html";
 import { decodeHtml, escapeHtml } from "./html-text.ts";
+import {
+  type DrawFigure,
+  drawFigures,
+  FIGURES,
+  type Heading,
+  headingsInto,
+  NUMBERED_FOOTNOTES,
+  SHORT_REFERENCES,
+} from "./markdown-article.ts";
 import { drawLinks, heldSubject, isSubject, NO_LINKS, type NoteLinks } from "./markdown-links.ts";
 import { drawFormulas, MATHS } from "./markdown-maths.server.ts";
-import { MAX_NOTE_CHARACTERS } from "./note-limits.ts";
+import { MAX_NOTE_CHARACTERS, MAX_WRITE_UP_CHARACTERS } from "./note-limits.ts";
 
 /**
  * Markdown as people write it in notes → HTML that is safe to put on a page. HTML in the text is shown as text;
@@ -11,6 +21,41 @@ import { MAX_NOTE_CHARACTERS } from "./note-limits.ts";
  */
 export function renderNote(markdown: string, links: NoteLinks = NO_LINKS): string {
   return drawLinks(cleaned(markdown), links);
+}
+
+export interface Article {
+  html: string;
+  headings: Heading[];
+}
+
+/** A write-up: as a note, with headings that have addresses, footnotes and figures. Nothing is kept: it is drawn once. */
+export function renderArticle(markdown: string, links: NoteLinks, draw: DrawFigure): Article {
+  const headings: Heading[] = [];
+  const parsed = parse(withinLimit(markdown, MAX_WRITE_UP_CHARACTERS), articleParser(headings));
+  const html = drawFormulas(sanitizeHtml(parsed, ARTICLE_RULES));
+  return { html: drawFigures(drawLinks(html, links), draw), headings };
+}
+
+/** The same text as tokens, for what is no HTML; null where it is nested too deep to be taken apart. */
+export function articleTokens(markdown: string): Token[] | null {
+  const parser = articleParser([]);
+  try {
+    if (TOO_DEEP.test(markdown)) return null;
+    const tokens = parser.lexer(withinLimit(markdown, MAX_WRITE_UP_CHARACTERS));
+    // Footnotes go to the end of the text while it is walked through.
+    const { walkTokens } = parser.defaults;
+    if (walkTokens) parser.walkTokens(tokens, walkTokens);
+    return tokens;
+  } catch (error) {
+    if (!(error instanceof RangeError)) throw error;
+    return null;
+  }
+}
+
+/** A new one each time: the footnotes of one text are remembered by its parser. */
+function articleParser(headings: Heading[]): Marked {
+  const parser = new Marked(NOTES, { extensions: [FIGURES] }, SHORT_REFERENCES, headingsInto(headings));
+  return parser.use(markedFootnote(), NUMBERED_FOOTNOTES);
 }
 
 function cleaned(markdown: string): string {
@@ -69,10 +114,22 @@ const RULES: sanitizeHtml.IOptions = {
   },
 };
 
+const ARTICLE_RULES: sanitizeHtml.IOptions = {
+  ...RULES,
+  allowedTags: [...(RULES.allowedTags || []), "h2", "sup", "section", "figure", "figcaption"],
+  allowedAttributes: {
+    ...RULES.allowedAttributes,
+    ...Object.fromEntries(["h2", "h3", "h4", "h5", "h6", "li"].map((tag) => [tag, ["id"]])),
+    a: ["href", "title", "rel", "id", "aria-label"],
+    section: ["class", "aria-label"],
+    figure: ["data-figure"],
+  },
+};
+
 /** The page has the headings 1 and 2 itself. */
 const HEADINGS_BELOW = 2;
 
-const marked = new Marked({
+const NOTES: MarkedExtension = {
   gfm: true,
   async: false,
   extensions: MATHS,
@@ -91,24 +148,29 @@ const marked = new Marked({
     link: ({ href, text }) => (isSubject(href) ? heldSubject(href, text) : false),
     checkbox: ({ checked }) => (checked ? "☑ " : "☐ "),
   },
-});
+};
+const marked = new Marked(NOTES);
 
 /**
  * Text nested thousands deep exhausts the parser's stack: it is then shown as it was written.
  * Seen: at most 0.7 s for the worst 20,000 characters.
  */
-function parse(text: string): string {
+function parse(text: string, parser: Marked = marked): string {
   try {
-    return marked.parse(text, { async: false });
+    if (TOO_DEEP.test(text)) throw new RangeError("quotes in quotes");
+    return parser.parse(text, { async: false });
   } catch (error) {
     if (!(error instanceof RangeError)) throw error;
     return `<pre><code>${escapeHtml(text)}</code></pre>`;
   }
 }
 
-function withinLimit(markdown: string): string {
-  return markdown.length > MAX_NOTE_CHARACTERS ? `${markdown.slice(0, MAX_NOTE_CHARACTERS - 1)}…` : markdown;
+function withinLimit(markdown: string, limit = MAX_NOTE_CHARACTERS): string {
+  return markdown.length > limit ? `${markdown.slice(0, limit - 1)}…` : markdown;
 }
+
+/** Quotes in quotes, which take the square of their depth. */
+const TOO_DEEP = /^(?:[ \t]*>){200}/m;
 
 /** The last texts drawn: a thread is looked at far more often than it is written. */
 const cache = new Map<string, string>();
