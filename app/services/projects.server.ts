@@ -77,6 +77,19 @@ export async function changeBands(
   });
 }
 
+/** The licence that is proposed for its next plates; those that are made keep theirs. */
+export async function changeLicence(
+  projectId: number,
+  licence: string,
+  by: number | null = null,
+): Promise<void> {
+  await inTransaction(async (tx) => {
+    await projects.update(projectId, { licence }, tx);
+    const about = { title: "The licence of its plates" };
+    await record({ projectId, kind: "project.changed", actorId: by, about }, tx);
+  });
+}
+
 /** `unwilling`: the person blocked whoever adds. */
 export type AddedMember = "added" | "already" | "unknown" | "unwilling";
 

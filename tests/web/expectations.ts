@@ -243,6 +243,11 @@ export const EXPECTATIONS: Record<string, Expectation> = {
         }),
       },
       {
+        name: "licence",
+        ask: { project: "project.edit" },
+        form: () => ({ intent: "licence", licence: "CC0-1.0" }),
+      },
+      {
         name: "delete",
         ask: { project: "project.delete" },
         form: ({ place }) => ({ intent: "delete", title: place.title }),

@@ -1,5 +1,6 @@
 import { z } from "zod";
 import { plainText } from "~/services/file-names";
+import { LICENCE_IDS } from "~/services/plates/licences";
 
 /** Words for a choice, and what follows from it. */
 export const VISIBILITIES = [
@@ -125,4 +126,14 @@ export const deleteSchema = z.object({
   title: z.string({ error: "Type the title to delete the project." }).trim(),
 });
 
-export const projectSettingsSchema = z.discriminatedUnion("intent", [aboutSchema, bandsSchema, deleteSchema]);
+export const licenceSchema = z.object({
+  intent: z.literal("licence"),
+  licence: z.enum(LICENCE_IDS, { error: "Choose one of the licences." }),
+});
+
+export const projectSettingsSchema = z.discriminatedUnion("intent", [
+  aboutSchema,
+  bandsSchema,
+  licenceSchema,
+  deleteSchema,
+]);

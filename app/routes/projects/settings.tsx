@@ -7,13 +7,20 @@ import * as projects from "~/db/projects.server";
 import { refused } from "~/errors";
 import { redirectWithMessage } from "~/services/flash.server";
 import { parseWas } from "~/services/merge-edit";
-import { type AboutValues, changeAbout, changeBands, deleteProject } from "~/services/projects.server";
+import {
+  type AboutValues,
+  changeAbout,
+  changeBands,
+  changeLicence,
+  deleteProject,
+} from "~/services/projects.server";
 import type { Route } from "./+types/settings";
 import { bandInHertz, bandRowOf } from "./band-rows.ts";
 import { AboutConflict } from "./components/AboutConflict.tsx";
 import { AboutForm } from "./components/AboutForm.tsx";
 import { BandsForm } from "./components/BandsForm.tsx";
 import { DeleteForm } from "./components/DeleteForm.tsx";
+import { LicenceForm } from "./components/LicenceForm.tsx";
 import { projectSettingsSchema } from "./project.schema.ts";
 
 export const meta: Route.MetaFunction = () => [{ title: "Project settings · Swale" }];
@@ -26,6 +33,7 @@ export async function loader(args: Route.LoaderArgs) {
     was: { title, summary, visibility, ituRegion },
     about: aboutOf(project),
     bands: bands.map(bandRowOf),
+    licence: project.licence,
   };
 }
 
@@ -45,6 +53,9 @@ export async function action(args: Route.ActionArgs) {
     case "bands":
       await changeBands(project.id, value.bands.map(bandInHertz), person?.id);
       return redirectWithMessage(here, "The design bands were changed.");
+    case "licence":
+      await changeLicence(project.id, value.licence, person?.id);
+      return redirectWithMessage(here, "New plates are proposed under this licence.");
     case "delete": {
       if (!may("project.delete")) throw refused("Only owners delete a project. Nothing was changed.");
       if (value.title !== project.title) {
@@ -86,6 +97,7 @@ export default function ProjectSettings({ loaderData, actionData }: Route.Compon
         bands={loaderData.bands}
         lastResult={lastOf("bands")}
       />
+      <LicenceForm licence={loaderData.licence} errors={lastOf("licence")?.error?.licence ?? undefined} />
       <DeleteForm title={loaderData.about.title} lastResult={lastOf("delete")} />
     </div>
   );
