@@ -7,6 +7,7 @@ import { notFound } from "~/errors";
 import { bandAt, bandSources, bandsOverlapping, type ItuRegion } from "~/measurement/bands";
 import { decimate } from "~/measurement/decimate";
 import type { Dip, Sweep } from "~/measurement/sweep";
+import { closeUpRange } from "~/services/close-up";
 import { listThread } from "~/services/note-thread.server";
 import { storedDips } from "~/services/shown-dips.server";
 import { limitsOf, sweepAt } from "~/services/shown-sweep.server";
@@ -97,22 +98,6 @@ function neighboursOf(dip: dips.DipRow, known: dips.ListedDip[]) {
   return { previous: brief(below), next: brief(above) };
 }
 
-/** Some widths of the dip to each side, as far as the sweep goes. */
-function closeUpRange({ frequencyHz, bandwidth }: Dip, points: Sweep | null) {
-  const reachHz = Math.max(
-    (bandwidth?.widthHz ?? 0) * CLOSE_UP_WIDTHS,
-    frequencyHz * CLOSE_UP_SHARE,
-    stepOf(points) * CLOSE_UP_STEPS,
-  );
-  const hz = points?.frequencyHz;
-  const first = hz?.length ? hz[0] : frequencyHz - reachHz;
-  const last = hz?.length ? hz[hz.length - 1] : frequencyHz + reachHz;
-  return {
-    fromHz: Math.max(first, frequencyHz - reachHz),
-    toHz: Math.min(last, frequencyHz + reachHz),
-  };
-}
-
 /** Rounded to what a drawing can show; NaN is a gap. */
 function closeUpPoints(points: Sweep | null, range: { fromHz: number; toHz: number }) {
   if (!points || !(range.fromHz < range.toHz)) return { frequencyHz: [], magnitude: [], limits: undefined };
@@ -134,13 +119,4 @@ function stepAround({ sampleIndex: i }: Dip, points: Sweep | null): number | nul
   return i > 0 ? hz[i] - hz[i - 1] : hz[1] - hz[0];
 }
 
-function stepOf(points: Sweep | null): number {
-  const n = points?.frequencyHz.length ?? 0;
-  return points && n > 1 ? (points.frequencyHz[n - 1] - points.frequencyHz[0]) / (n - 1) : 0;
-}
-
-const CLOSE_UP_WIDTHS = 2.5;
-/** For a dip without a bandwidth: a twentieth of its frequency to each side. */
-const CLOSE_UP_SHARE = 0.05;
-const CLOSE_UP_STEPS = 12;
 const CLOSE_UP_POINTS = 800;
