@@ -12,8 +12,11 @@ export type SubjectKind = (typeof SUBJECT_KINDS)[number];
 export interface NoteLinks {
   /** Names of members. */
   people: ReadonlyMap<string, string>;
-  references: ReadonlyMap<string, { path: string; now: string }>;
+  /** `now` null: only where it is, for what must read the same for ever. */
+  references: ReadonlyMap<string, { path: string; now: string | null }>;
   attachments: ReadonlyMap<string, ShownAttachment>;
+  /** For readers from outside: files of the project are named, not offered. */
+  filesStay?: boolean;
 }
 
 export interface ShownAttachment {
@@ -47,6 +50,8 @@ export function drawLinks(html: string, links: NoteLinks): string {
   return html.replace(HELD, (_, subject: string, shown: string | undefined, written: string) => {
     const [kind] = subject.split(":");
     if (kind === "person") return mention(links.people.get(subject), written);
+    if (kind === "attachment" && links.filesStay)
+      return `<span class="reference">${written} (a file of the project)</span>`;
     if (kind === "attachment")
       return attachment(links.attachments.get(subject), written, shown !== undefined);
     return reference(links.references.get(subject), written);
@@ -57,9 +62,10 @@ function mention(name: string | undefined, written: string): string {
   return name === undefined ? written : `<span class="mention">@${escapeHtml(name)}</span>`;
 }
 
-function reference(known: { path: string; now: string } | undefined, written: string): string {
+function reference(known: { path: string; now: string | null } | undefined, written: string): string {
   if (!known) return `<span class="reference">${written}</span>`;
-  const now = `<span class="reference-now" role="note">now: ${escapeHtml(known.now)}</span>`;
+  const now =
+    known.now === null ? "" : `<span class="reference-now" role="note">now: ${escapeHtml(known.now)}</span>`;
   return `<span class="reference"><a href="${escapeHtml(known.path)}">${written}</a>${now}</span>`;
 }
 

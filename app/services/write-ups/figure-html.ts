@@ -1,0 +1,89 @@
+import { escapeHtml } from "../html-text.ts";
+import type { DrawFigure, DrawnFigure } from "../markdown-article.ts";
+import { FIGURE_ID, type FrozenFigure, type PlateState } from "./frozen.ts";
+
+/** How figures are put into a page of HTML. Pure; everything that a person wrote is escaped here. */
+
+export interface FigurePlace {
+  figures: readonly FrozenFigure[];
+  /** What became of the plates since; one that is missing was deleted. */
+  plates: ReadonlyMap<string, PlateState>;
+  /** Address of a plate's drawing; null where there is none. */
+  plateSource: (publicId: string, theme: "light" | "dark") => string | null;
+  /** Where the page of a figure is; null for a reader who could not open it. */
+  linkTo: (figure: FrozenFigure) => string | null;
+}
+
+export function figureDrawer(place: FigurePlace): DrawFigure {
+  const known = new Map(place.figures.map((figure) => [figure.subject, figure]));
+  return (subject, n) => {
+    const figure = known.get(subject);
+    if (!figure) return null;
+    return subject.startsWith("plate:") ? plate(figure, n, place) : live(figure, n, place);
+  };
+}
+
+function plate(figure: FrozenFigure, n: number, place: FigurePlace): DrawnFigure {
+  const publicId = figure.subject.slice("plate:".length);
+  const state = place.plates.get(publicId);
+  const label = `Figure ${n}, ${figure.label ?? "a plate"}`;
+  const link = linked(
+    place.linkTo(figure),
+    `${figure.label ?? "Plate"}: its numbers and how they came about`,
+  );
+  if (!state || state.withdrawnAt) {
+    const reason = state?.withdrawnReason ? `: ${state.withdrawnReason}` : "";
+    const words = `This plate was withdrawn${state?.withdrawnAt ? ` on ${dayOf(state.withdrawnAt)}` : ""}${reason}`;
+    return { label, drawing: `<p class="article-missing">${escapeHtml(words)}</p>`, under: smallLine(link) };
+  }
+  const picture = (["light", "dark"] as const).map((theme) => {
+    const source = place.plateSource(publicId, theme);
+    if (source === null) return "";
+    return `<img class="on-${theme}" src="${escapeHtml(source)}" alt="${escapeHtml(figure.title)}" loading="lazy">`;
+  });
+  const drawing = picture.some((one) => one !== "")
+    ? `<div class="figure-plate">${picture.join("")}</div>`
+    : `<p class="article-missing">The drawing of this plate can't be had just now.</p>`;
+  return { label, drawing, under: smallLine(link) };
+}
+
+function live(figure: FrozenFigure, n: number, place: FigurePlace): DrawnFigure {
+  const drawing =
+    figure.wide && figure.narrow
+      ? `<div class="figure-drawing figure-wide">${own(figure.wide, `f${n}w`)}</div><div class="figure-drawing figure-narrow">${own(figure.narrow, `f${n}n`)}</div>`
+      : `<p class="article-missing">The curve can't be drawn: the sweep's file was not read.</p>`;
+  const asOf = figure.asOf ? `numbers as of ${momentOf(figure.asOf)}` : "";
+  const link = linked(place.linkTo(figure), "see it in the project");
+  const line = [escapeHtml(figure.title), asOf, link].filter((words) => words !== "").join("; ");
+  return { label: `Figure ${n}`, drawing, under: `${smallLine(line)}${table(figure)}` };
+}
+
+function table({ numbers }: FrozenFigure): string {
+  if (!numbers) return "";
+  const cells = (row: readonly string[], tag: "th" | "td") =>
+    row.map((cell) => `<${tag}>${escapeHtml(cell)}</${tag}>`).join("");
+  const rows = numbers.rows.map((row) => `<tr>${cells(row, "td")}</tr>`).join("");
+  return `<table class="figure-numbers"><thead><tr>${cells(numbers.columns, "th")}</tr></thead><tbody>${rows}</tbody></table>`;
+}
+
+/** Its own ids for each place on the page. */
+function own(svg: string, id: string): string {
+  return svg.replaceAll(FIGURE_ID, id);
+}
+
+function linked(path: string | null, words: string): string {
+  return path === null ? "" : `<a href="${escapeHtml(path)}">${escapeHtml(words)}</a>`;
+}
+
+function smallLine(html: string): string {
+  return html === "" ? "" : `<span class="figure-line">${html}.</span>`;
+}
+
+/** `2026-12-01, 13:02 UTC` */
+export function momentOf(iso: string): string {
+  return `${iso.slice(0, 10)}, ${iso.slice(11, 16)} UTC`;
+}
+
+function dayOf(at: Date | string): string {
+  return new Date(at).toISOString().slice(0, 10);
+}

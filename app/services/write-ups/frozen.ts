@@ -1,0 +1,51 @@
+/** What a published version of a write-up keeps of what it shows, so that it says the same for ever. Pure. */
+
+export interface FrozenFigure {
+  /** "dip:57b…", "sweep:…", "plate:…". */
+  subject: string;
+  /** "Plate 3, version 2"; null for what is numbered in the text. */
+  label: string | null;
+  /** What it shows, in a line. */
+  title: string;
+  /**
+   * The drawing for wide and for narrow pages: SVG whose colours are `var(--color-…)` and whose ids begin with
+   * `FIGURE_ID`. Null for a plate, which is at its own address, and for what can't be drawn.
+   */
+  wide: string | null;
+  narrow: string | null;
+  numbers: { columns: string[]; rows: string[][] } | null;
+  /** The page of it, on this server: a plate's for everybody, another's for whoever may read the project. */
+  path: string;
+  /** ISO, UTC: when the numbers were these. Null for a plate, whose numbers never change. */
+  asOf: string | null;
+}
+
+export interface Frozen {
+  figures: FrozenFigure[];
+  /** SPDX name of the licence of the project at that time. */
+  licence: string;
+}
+
+/** What a plate is now. */
+export interface PlateState {
+  withdrawnAt: Date | null;
+  withdrawnReason: string;
+}
+
+/** Stands in a drawing where its own id belongs: one drawing may be on a page twice. */
+export const FIGURE_ID = "figure-id";
+
+/** As it was stored; an unknown shape shows no figures rather than no page. */
+export function parseFrozen(text: string): Frozen {
+  try {
+    const { figures, licence } = JSON.parse(text) as Partial<Frozen>;
+    return { figures: Array.isArray(figures) ? figures : [], licence: licence ?? "" };
+  } catch {
+    return { figures: [], licence: "" };
+  }
+}
+
+/** Row ids aside: the public ids of the plates among the figures. */
+export function platesOf(figures: readonly FrozenFigure[]): string[] {
+  return figures.flatMap(({ subject }) => (subject.startsWith("plate:") ? [subject.slice(6)] : []));
+}
