@@ -10,6 +10,7 @@ import {
   files,
   memberships,
   notes,
+  plates,
   projects,
   steps,
   sweeps,
@@ -161,6 +162,36 @@ export async function findTrails(search: Search, tx: Queryable = db) {
       ),
     )
     .orderBy(desc(trails.createdAt), desc(trails.id))
+    .limit(search.limit + 1);
+  return pageOf(rows, search);
+}
+
+/** Plates by title and caption: of each the newest version, and nothing of what was withdrawn. */
+export async function findPlates(search: Search, tx: Queryable = db) {
+  const rows = await tx
+    .select({
+      id: plates.id,
+      at: plates.createdAt,
+      project,
+      publicId: plates.publicId,
+      number: plates.number,
+      version: plates.version,
+      title: plates.title,
+      caption: plates.caption,
+      withdrawnAt: plates.withdrawnAt,
+    })
+    .from(plates)
+    .innerJoin(projects, eq(projects.id, plates.projectId))
+    .where(
+      and(
+        isReadable(search.userId),
+        isNull(plates.withdrawnAt),
+        sql`not exists (select 1 from ${plates} later where later.previous_id = ${plates.id})`,
+        textHasWords(search.words, sql`concat_ws(' ', ${plates.title}, ${plates.caption})`),
+        before(search, plates.createdAt, plates.id),
+      ),
+    )
+    .orderBy(desc(plates.createdAt), desc(plates.id))
     .limit(search.limit + 1);
   return pageOf(rows, search);
 }

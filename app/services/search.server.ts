@@ -4,6 +4,7 @@ import { formatFrequency, formatSwr } from "~/measurement/units";
 import { plainText } from "./markdown.server.ts";
 import { MAX_NOTE_CHARACTERS } from "./note-limits.ts";
 import { placeWords } from "./note-places.ts";
+import { plateWords } from "./note-words.ts";
 import { type DipRange, searchWords } from "./search-question.ts";
 import { type SnippetPart, snippet } from "./snippets.ts";
 
@@ -13,6 +14,7 @@ export const RESULT_KINDS = [
   "sweeps",
   "steps",
   "trails",
+  "plates",
   "antennas",
   "projects",
   "people",
@@ -105,6 +107,14 @@ const FINDERS: Record<ResultKind, (about: search.Search, range: DipRange | null)
       place: project.title,
       snippet: snippet(verdictText, about.words),
       at,
+    })),
+  plates: async (about) =>
+    shape(await search.findPlates(about), (plate) => ({
+      to: `/plates/${plate.publicId}`,
+      title: plateWords(plate),
+      place: plate.project.title,
+      snippet: snippet(plainText(plate.caption, MAX_NOTE_CHARACTERS), about.words),
+      at: plate.at,
     })),
   antennas: async (about) =>
     shape(await search.findAntennas(about), ({ project, words, at }) => ({

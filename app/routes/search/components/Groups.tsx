@@ -79,6 +79,7 @@ const HEADINGS: Record<ResultKind, string> = {
   sweeps: "Sweeps",
   steps: "Steps",
   trails: "Trails",
+  plates: "Plates",
   antennas: "Antennas",
   projects: "Projects",
   people: "People",
