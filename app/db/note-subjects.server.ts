@@ -60,12 +60,12 @@ export async function findDips(projectId: number, publicIds: string[], tx: Query
 }
 
 /** Dips whose frequency in MHz begins so, or whose sweep's title has the words; the newest sweeps' first. */
-export async function searchDips(projectId: number, words: string, tx: Queryable = db) {
+export async function searchDips(projectId: number, words: string, limit = SUGGESTED, tx: Queryable = db) {
   const mhz = /^\d[\d.,]*$/.test(words) ? words.replace(",", ".") : null;
   const wanted = mhz
     ? sql`cast(round(${dips.frequencyHz} / 1e6, 4) as char) like ${`${mhz}%`}`
     : like(sweeps.title, `%${pattern(words)}%`);
-  return dipRows(and(eq(dips.projectId, projectId), eq(dips.present, true), wanted), SUGGESTED, tx);
+  return dipRows(and(eq(dips.projectId, projectId), eq(dips.present, true), wanted), limit, tx);
 }
 
 function dipRows(where: ReturnType<typeof and>, limit: number, tx: Queryable) {
@@ -94,9 +94,9 @@ export async function findSweeps(projectId: number, publicIds: string[], tx: Que
   return sweepRows(and(eq(sweeps.projectId, projectId), inArray(sweeps.publicId, publicIds)), MOST, tx);
 }
 
-export async function searchSweeps(projectId: number, words: string, tx: Queryable = db) {
+export async function searchSweeps(projectId: number, words: string, limit = SUGGESTED, tx: Queryable = db) {
   const titled = like(sweeps.title, `%${pattern(words)}%`);
-  return sweepRows(and(eq(sweeps.projectId, projectId), titled), SUGGESTED, tx);
+  return sweepRows(and(eq(sweeps.projectId, projectId), titled), limit, tx);
 }
 
 function sweepRows(where: ReturnType<typeof and>, limit: number, tx: Queryable) {
@@ -139,9 +139,9 @@ export async function findPlates(projectId: number, publicIds: string[], tx: Que
   return plateRows(and(eq(plates.projectId, projectId), inArray(plates.publicId, publicIds)), MOST, tx);
 }
 
-export async function searchPlates(projectId: number, words: string, tx: Queryable = db) {
+export async function searchPlates(projectId: number, words: string, limit = SUGGESTED, tx: Queryable = db) {
   const titled = like(plates.title, `%${pattern(words)}%`);
-  return plateRows(and(eq(plates.projectId, projectId), titled), SUGGESTED, tx);
+  return plateRows(and(eq(plates.projectId, projectId), titled), limit, tx);
 }
 
 function plateRows(where: ReturnType<typeof and>, limit: number, tx: Queryable) {

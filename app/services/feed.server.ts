@@ -68,7 +68,7 @@ export function etagOf(text: string): string {
 }
 
 /** Text as XML may hold it: what XML has no place for is left out. */
-function escapeXml(text: string): string {
+export function escapeXml(text: string): string {
   return Array.from(text)
     .filter((sign) => /[\t\n\r\u0020-\ud7ff\ue000-\ufffd\u{10000}-\u{10ffff}]/u.test(sign))
     .join("")
@@ -76,7 +76,7 @@ function escapeXml(text: string): string {
 }
 
 /** The same for the same event for ever, and made of nothing that counts: version 8 of RFC 9562. */
-function uuidOf(parts: string[]): string {
+export function uuidOf(parts: string[]): string {
   const bytes = createHash("sha256").update(parts.join("\n")).digest().subarray(0, 16);
   bytes[6] = (bytes[6] & 0x0f) | 0x80;
   bytes[8] = (bytes[8] & 0x3f) | 0x80;

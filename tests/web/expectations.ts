@@ -4,6 +4,7 @@ import {
   onePixel,
   openReport,
   type Place,
+  rewriteDraft,
   type Someone,
   touchstone,
   unique,
@@ -405,6 +406,43 @@ export const EXPECTATIONS: Record<string, Expectation> = {
     ],
   },
   "routes/benches/compare.tsx": { GET: read },
+
+  "routes/write-ups/list.tsx": { GET: read },
+  "routes/write-ups/new.tsx": {
+    GET: [{ ask: { project: "write-up.edit" } }],
+    POST: [{ ask: { project: "write-up.edit" }, form: () => ({ title: unique("Walked") }) }],
+  },
+  "routes/write-ups/edit.tsx": {
+    GET: [{ ask: { project: "write-up.edit" } }],
+    POST: [
+      {
+        name: "keep",
+        ask: { project: "write-up.edit" },
+        form: () => ({ intent: "keep", title: "Where it comes from", body: unique("Once more") }),
+      },
+      { name: "look", ask: { project: "write-up.edit" }, form: () => ({ intent: "look", body: "So" }) },
+      { name: "delete", ask: { project: "write-up.edit" }, form: () => ({ intent: "delete" }) },
+    ],
+  },
+  "routes/write-ups/publish.tsx": {
+    GET: [{ ask: { project: "write-up.edit" } }],
+    // What is taken back is published again, for the routes that come after.
+    POST: [
+      { name: "take back", ask: { project: "write-up.edit" }, form: () => ({ intent: "take-back" }) },
+      {
+        name: "publish",
+        ask: { project: "write-up.edit" },
+        prepare: ({ place }) => rewriteDraft(place),
+        form: ({ prepared }) => ({ intent: "publish", revision: prepared, remark: "" }),
+      },
+    ],
+  },
+  "routes/write-ups/preview.ts": {
+    GET: [{ ask: { project: "write-up.edit" } }],
+    POST: [{ ask: { project: "write-up.edit" }, form: () => ({ body: "So" }) }],
+  },
+  "routes/write-ups/feed.ts": { GET: read },
+  "routes/write-ups/write-up.tsx": { GET: anybody },
 
   "routes/photographs/photographs.ts": {
     POST: [

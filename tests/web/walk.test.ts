@@ -214,6 +214,7 @@ function fill(path: string, place: Place): string {
     .replace(":attachment", place.attachment)
     .replace(":step", place.step)
     .replace(":trail", place.trail)
+    .replace(":writeUp", place.writeUp)
     .replace(":token", place.invitation)
     .replace(":size", "small")
     .replace("*", "no/such/thing");

@@ -10,6 +10,7 @@ import * as projects from "~/db/projects.server";
 import * as reports from "~/db/reports.server";
 import * as sweeps from "~/db/sweeps.server";
 import * as trails from "~/db/trails.server";
+import * as writeUps from "~/db/write-ups.server";
 import { IDEAL_STANDARDS, NOTHING_GIVEN } from "~/measurement/bench";
 import { addAttachment } from "~/services/attachments.server";
 import { createBench } from "~/services/benches.server";
@@ -19,6 +20,8 @@ import { addPhotograph } from "~/services/photographs.server";
 import { createProject } from "~/services/projects.server";
 import { makeStep } from "~/services/steps.server";
 import { makeToken } from "~/services/tokens.server";
+import { makeDraft } from "~/services/write-ups/drafts.server";
+import { publish, revisionOf } from "~/services/write-ups/publish.server";
 import { askApi, Browser, SERVER } from "./browser.ts";
 
 /** People, sessions, tokens and projects for the tests, made in the server's own database by its own code. */
@@ -71,6 +74,8 @@ export interface Place {
   step: string;
   /** That its dip is on. */
   trail: string;
+  /** Published. */
+  writeUp: string;
   /** The secret of a link for readers. */
   invitation: string;
 }
@@ -101,6 +106,7 @@ export async function makePlace(crew: Crew, visibility: Visibility, empty = fals
       attachment: "",
       step: "",
       trail: "",
+      writeUp: "",
     };
   const token = await tokenOf(crew.owner);
   const answer = await sendSweep(project.publicId, token, touchstone());
@@ -134,7 +140,20 @@ export async function makePlace(crew: Crew, visibility: Visibility, empty = fals
     attachment,
     step,
     trail: await trailOf(project.id),
+    writeUp: await publishWriteUp(project.publicId, crew.owner),
   };
+}
+
+/** A published write-up without figures; its public id. */
+async function publishWriteUp(project: string, by: Someone): Promise<string> {
+  const found = await projects.findWithRole(project, by.id);
+  if (!found) throw new Error("The project is not there.");
+  const draft = { title: "Where the dip comes from", body: "## At first\n\nIt was there.\n" };
+  const publicId = await makeDraft(found.project, by, draft);
+  const row = await writeUps.findByPublicId(publicId);
+  if (!row) throw new Error("The draft is not there.");
+  await publish(row.writeUp, found.project, by, { revision: revisionOf(row.writeUp), remark: "" });
+  return publicId;
 }
 
 export async function makeCrew(): Promise<Crew> {
@@ -259,6 +278,16 @@ export function touchstone(): string {
 function divide([a, b]: [number, number], [c, d]: [number, number]): [number, number] {
   const n = c * c + d * d;
   return [(a * c + b * d) / n, (b * c - a * d) / n];
+}
+
+/** Writes in the place's write-up; what the draft is told apart by then. */
+export async function rewriteDraft(place: Place): Promise<string> {
+  const found = await writeUps.findByPublicId(place.writeUp);
+  if (!found) return "";
+  const { title } = found.writeUp;
+  const body = unique("Written anew");
+  await writeUps.update(found.writeUp.id, { body });
+  return revisionOf({ title, body });
 }
 
 export async function closeWorld(): Promise<void> {
