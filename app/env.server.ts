@@ -38,12 +38,26 @@ const shape = z.object({
   LOG_LEVEL: z.enum(["silent", "fatal", "error", "warn", "info", "debug"]).default("info"),
   /** How many proxies in front of the server may be believed about the visitor's address; 0 for none. */
   TRUST_PROXY: z.coerce.number().int().min(0).max(10).default(0),
+  /**
+   * For tests alone: one origin on this machine that may be asked although it is not public (see services/safe-fetch).
+   * Refused wherever BASE_URL is not of this machine itself.
+   */
+  WEBMENTION_TEST_ORIGIN: address.transform((value) => new URL(value).origin).optional(),
 });
+
+/** What opens a door for tests opens none of a server that others reach. */
+function testsStayHere({ BASE_URL, WEBMENTION_TEST_ORIGIN }: Env, context: z.RefinementCtx) {
+  if (WEBMENTION_TEST_ORIGIN === undefined || HERE.has(new URL(BASE_URL).hostname)) return;
+  const message = "is for tests, and only where BASE_URL is http://localhost or http://127.0.0.1";
+  context.addIssue({ code: "custom", path: ["WEBMENTION_TEST_ORIGIN"], message });
+}
+
+const HERE = new Set(["localhost", "127.0.0.1"]);
 
 /** Checks the environment once; throws one error that lists every fault. An empty variable is an absent one. */
 export function readEnv(source: Record<string, string | undefined>): Env {
   const given = Object.fromEntries(Object.entries(source).filter(([, value]) => value !== ""));
-  const result = shape.safeParse(given);
+  const result = shape.superRefine(testsStayHere).safeParse(given);
   if (result.success) return result.data;
   const faults = result.error.issues.map((issue) => {
     const name = String(issue.path[0]);
