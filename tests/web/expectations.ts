@@ -324,6 +324,8 @@ export const EXPECTATIONS: Record<string, Expectation> = {
     ],
   },
   "routes/compare/compare.tsx": { GET: read },
+  "routes/dips-table/table.tsx": { GET: read },
+  "routes/dips-table/csv.ts": { GET: read },
   "routes/dips/dip.tsx": { GET: read },
   "routes/dips/verdict.ts": {
     GET: read,

@@ -38,6 +38,9 @@ export default function Project({ loaderData }: Route.ComponentProps) {
             <section aria-labelledby="trails" className="grid gap-3">
               <h2 id="trails">Trails</h2>
               <TrailTable data={loaderData} />
+              <p className="text-small">
+                <Link to={`/projects/${project.publicId}/dips`}>All dips as a table</Link>
+              </p>
             </section>
           )}
           <section aria-labelledby="project-notes" className="grid gap-3">

@@ -2,7 +2,7 @@ import { Link } from "react-router";
 import { parseSort } from "~/components/ui/sort";
 import { type Column, Table } from "~/components/ui/Table";
 import { VerdictTag } from "~/components/ui/Tag";
-import type { Bandwidth } from "~/measurement/sweep";
+import type { Bandwidth, Dip } from "~/measurement/sweep";
 import {
   formatDbLimits,
   formatFrequency,
@@ -111,7 +111,7 @@ function columnsFor(view: SweepView, swrLimit: number): Column<ShownDip>[] {
   ];
 }
 
-function SwrCell({ dip }: { dip: ShownDip }) {
+export function SwrCell({ dip }: { dip: Dip }) {
   if (dip.edge) return <span className="soft">the sweep ends here</span>;
   return (
     <>
@@ -124,7 +124,7 @@ function SwrCell({ dip }: { dip: ShownDip }) {
   );
 }
 
-function WidthCell({ dip }: { dip: ShownDip }) {
+export function WidthCell({ dip }: { dip: Dip }) {
   if (dip.edge) return null;
   if (!dip.bandwidth) return <span className="soft">none: not reached</span>;
   const { widthHz, widthUncertaintyHz, widthLowHz, widthHighHz, open, shared } = dip.bandwidth;
@@ -148,7 +148,7 @@ function edges({ lowHz, highHz, widthUncertaintyHz }: Bandwidth): string {
 }
 
 /** With its limits where the bench's errors are known, else its range from what a scalar sweep can't tell. */
-export function qText(dip: Pick<ShownDip, "q" | "qLow" | "qHigh" | "qLimits">): string {
+export function qText(dip: Pick<Dip, "q" | "qLow" | "qHigh" | "qLimits">): string {
   if (dip.qLimits) return formatRange(dip.qLimits.low, dip.qLimits.high);
   if (dip.q !== null) return dip.q.toPrecision(3);
   if (dip.qLow !== null && dip.qHigh !== null) return formatRange(dip.qLow, dip.qHigh);
