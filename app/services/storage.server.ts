@@ -11,7 +11,8 @@ import { env } from "~/env.server";
 
 /** Originals and rendered files in an S3 bucket. What is stored is read back and compared once. */
 
-const client = new S3Client({
+/** Bundles store and fetch in parts by it; all else goes through the functions here. */
+export const client = new S3Client({
   region: env.S3_REGION,
   endpoint: env.S3_ENDPOINT,
   forcePathStyle: env.S3_FORCE_PATH_STYLE,

@@ -1,0 +1,119 @@
+import type { Readable } from "node:stream";
+import {
+  AbortMultipartUploadCommand,
+  CompleteMultipartUploadCommand,
+  CreateMultipartUploadCommand,
+  GetObjectCommand,
+  HeadObjectCommand,
+  UploadPartCommand,
+} from "@aws-sdk/client-s3";
+import { Upload } from "@aws-sdk/lib-storage";
+import { env } from "~/env.server";
+import { client } from "../storage.server.ts";
+
+/** Objects that are too large to be held: written and read as streams, and written in parts that outlive a process. */
+
+/** Enough of an upload in parts to go on with it elsewhere. */
+export interface UploadState {
+  uploadId: string;
+  parts: { number: number; etag: string }[];
+}
+
+/** An upload in parts, each sent when it is large enough; nothing can be read of it before `finish`. */
+export class PartUpload {
+  private chunks: Buffer[] = [];
+  private waiting = 0;
+  private constructor(
+    private readonly key: string,
+    readonly state: UploadState,
+  ) {}
+
+  static async begin(key: string, contentType: string): Promise<PartUpload> {
+    const made = await client.send(
+      new CreateMultipartUploadCommand({ Bucket: env.S3_BUCKET, Key: key, ContentType: contentType }),
+    );
+    if (!made.UploadId) throw new Error(`The store did not begin an upload of ${key}.`);
+    return new PartUpload(key, { uploadId: made.UploadId, parts: [] });
+  }
+
+  /** Goes on after the parts in `state`; later parts that were sent once are written over. */
+  static resume(key: string, state: UploadState): PartUpload {
+    return new PartUpload(key, state);
+  }
+
+  async write(bytes: Buffer): Promise<void> {
+    this.chunks.push(bytes);
+    this.waiting += bytes.length;
+    if (this.waiting >= PART_BYTES) await this.send();
+  }
+
+  /** Sends what waits where it is enough for a part; true when nothing waits after that, so that `state` is all there is. */
+  async settle(): Promise<boolean> {
+    if (this.waiting >= LEAST_PART_BYTES) await this.send();
+    return this.waiting === 0;
+  }
+
+  async finish(): Promise<void> {
+    if (this.waiting > 0 || this.state.parts.length === 0) await this.send();
+    await client.send(
+      new CompleteMultipartUploadCommand({
+        Bucket: env.S3_BUCKET,
+        Key: this.key,
+        UploadId: this.state.uploadId,
+        MultipartUpload: {
+          Parts: this.state.parts.map(({ number, etag }) => ({ PartNumber: number, ETag: etag })),
+        },
+      }),
+    );
+  }
+
+  private async send(): Promise<void> {
+    const body = Buffer.concat(this.chunks);
+    const number = this.state.parts.length + 1;
+    const sent = await client.send(
+      new UploadPartCommand({
+        Bucket: env.S3_BUCKET,
+        Key: this.key,
+        UploadId: this.state.uploadId,
+        PartNumber: number,
+        Body: body,
+        ContentLength: body.length,
+      }),
+    );
+    if (!sent.ETag) throw new Error(`The store did not acknowledge part ${number} of ${this.key}.`);
+    this.state.parts.push({ number, etag: sent.ETag });
+    this.chunks = [];
+    this.waiting = 0;
+  }
+}
+
+/** Gives an upload up; one that is not known any more is no error. */
+export async function abortUpload(key: string, uploadId: string): Promise<void> {
+  await client
+    .send(new AbortMultipartUploadCommand({ Bucket: env.S3_BUCKET, Key: key, UploadId: uploadId }))
+    .catch(() => undefined);
+}
+
+/** Stores a stream of unknown length. */
+export async function putStream(key: string, body: Readable, contentType: string): Promise<void> {
+  const params = { Bucket: env.S3_BUCKET, Key: key, Body: body, ContentType: contentType };
+  await new Upload({ client, params, queueSize: 1, partSize: PART_BYTES }).done();
+}
+
+export async function sizeOf(key: string): Promise<number> {
+  const head = await client.send(new HeadObjectCommand({ Bucket: env.S3_BUCKET, Key: key }));
+  return head.ContentLength ?? 0;
+}
+
+/** Bytes `from` to `to`, both included; to the end without `to`. */
+export async function readRange(key: string, from: number, to?: number): Promise<Readable> {
+  const range = `bytes=${from}-${to ?? ""}`;
+  const answer = await client.send(new GetObjectCommand({ Bucket: env.S3_BUCKET, Key: key, Range: range }));
+  return answer.Body as Readable;
+}
+
+const MEGABYTE = 1024 * 1024;
+/** The least that a store takes as a part that is not the last (S3: 5 MB). */
+const LEAST_PART_BYTES = 5 * MEGABYTE;
+/** With 10,000 parts, the most of an upload, that is 80 GB. */
+const PART_BYTES = 8 * MEGABYTE;

@@ -1,0 +1,61 @@
+import { escapeHtml } from "../html-text.ts";
+import { renderNote } from "../markdown.server.ts";
+import { type NoteLinks, NO_LINKS } from "../markdown-links.ts";
+import { page } from "./pages.ts";
+
+/** A note as a thread shows it. */
+export interface ThreadNote {
+  id: string;
+  parent: string | null;
+  author: string;
+  at: Date;
+  edited: boolean;
+  removed: boolean;
+  body: string;
+}
+
+/** A thread as Markdown: answers are set in under what they answer. */
+export function threadMarkdown(title: string, notes: ThreadNote[]): string {
+  const texts = inOrder(notes).map(({ note, depth }) => {
+    const text = `**${note.author}**, ${stamp(note.at)}${note.edited ? ", edited" : ""}\n\n${bodyOf(note)}`;
+    return text
+      .split("\n")
+      .map((line) => `${"> ".repeat(depth)}${line}`.trimEnd())
+      .join("\n");
+  });
+  return `# Notes on ${title}\n\n${texts.join("\n\n---\n\n")}\n`;
+}
+
+export function threadHtml(title: string, notes: ThreadNote[], links: NoteLinks = NO_LINKS): string {
+  const items = inOrder(notes).map(
+    ({ note, depth }) =>
+      `<article id="note-${note.id}" class="note" style="margin-left:${depth * 2}rem"><p class="soft"><b>${escapeHtml(note.author)}</b>, ${stamp(note.at)}${note.edited ? ", edited" : ""}</p>${renderNote(bodyOf(note), links)}</article>`,
+  );
+  return page(`Notes on ${title}`, `<p><a href="../index.html">The project</a></p>${items.join("")}`);
+}
+
+function bodyOf(note: ThreadNote): string {
+  return note.removed ? "*This note was removed.*" : note.body;
+}
+
+/** Oldest first, answers behind what they answer. */
+function inOrder(notes: ThreadNote[]): { note: ThreadNote; depth: number }[] {
+  const answers = new Map<string | null, ThreadNote[]>();
+  const known = new Set(notes.map((note) => note.id));
+  for (const note of notes) {
+    const under = note.parent !== null && known.has(note.parent) ? note.parent : null;
+    answers.set(under, [...(answers.get(under) ?? []), note]);
+  }
+  const list = (under: string | null, depth: number): { note: ThreadNote; depth: number }[] =>
+    (answers.get(under) ?? []).flatMap((note) => [
+      { note, depth: Math.min(depth, DEEPEST) },
+      ...list(note.id, depth + 1),
+    ]);
+  return list(null, 0);
+}
+
+export function stamp(at: Date): string {
+  return `${at.toISOString().slice(0, 16).replace("T", " ")} UTC`;
+}
+
+const DEEPEST = 4;
