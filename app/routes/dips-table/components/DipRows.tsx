@@ -50,7 +50,12 @@ function columnsFor(base: string, designed: boolean): Column<ListedDip>[] {
       label: "Sweep",
       sortBy: ordered,
       cell: (row) => (
-        <Link to={`${base}/sweeps/${row.sweepPublicId}?dip=${row.publicId}`}>{row.sweepTitle}</Link>
+        <Link
+          to={`${base}/sweeps/${row.sweepPublicId}?dip=${row.publicId}`}
+          className="inline-block sm:min-w-[12rem]"
+        >
+          {row.sweepTitle}
+        </Link>
       ),
     },
     {
@@ -59,7 +64,9 @@ function columnsFor(base: string, designed: boolean): Column<ListedDip>[] {
       sortBy: ordered,
       cell: (row) =>
         row.takenAt ? (
-          <DateTime at={row.takenAt} dateOnly />
+          <span className="whitespace-nowrap">
+            <DateTime at={row.takenAt} dateOnly />
+          </span>
         ) : (
           <span className="soft">
             not said; came in <DateTime at={row.createdAt} dateOnly />
@@ -99,7 +106,7 @@ function columnsFor(base: string, designed: boolean): Column<ListedDip>[] {
       cell: ({ verdict, verdictText }) => (
         <span className="inline-flex flex-wrap items-baseline gap-2">
           <VerdictTag verdict={verdict} />
-          {verdictText && <span className="text-small">{verdictText}</span>}
+          {verdictText && <span className="text-small sm:min-w-[9rem]">{verdictText}</span>}
         </span>
       ),
     },
@@ -110,9 +117,9 @@ function columnsFor(base: string, designed: boolean): Column<ListedDip>[] {
         row.trailPublicId ? (
           <Link
             to={`${base}/trails/${row.trailPublicId}`}
-            className={row.trailName ? undefined : "font-mono"}
+            className={row.trailName ? undefined : "font-mono whitespace-nowrap"}
           >
-            {row.trailName || formatFrequency(row.trailHz)}
+            {row.trailName || trailWords(row.trailHz)}
           </Link>
         ) : (
           <span className="soft">none</span>
@@ -120,6 +127,11 @@ function columnsFor(base: string, designed: boolean): Column<ListedDip>[] {
     },
     { key: "notes", label: "Notes", numeric: true, cell: (row) => row.noteCount },
   ];
+}
+
+/** A trail without a name goes by its newest dip's frequency, roughly. */
+function trailWords(hz: number | null): string {
+  return formatFrequency(hz === null ? null : Number(hz.toPrecision(4)));
 }
 
 function BandCell({ name, design, designed }: ListedDip["band"] & { designed: boolean }) {
