@@ -71,29 +71,44 @@ export interface DipTarget extends DipOffset {
   without: "far" | "not-described" | "no-part" | null;
 }
 
-/**
- * How far each dip lies from its design band, and what to make of the length of the part that may be behind it: the antenna's as it was
- * when the sweep was taken, with the lengths that the dip's trail had seen by then. No trim where the dip is not that band's (TOO_FAR).
- */
+/** `targetsOn` with its ground from the database. */
 export async function targetsOf(
   sweep: Pick<SweepRow, "id" | "projectId">,
   dips: readonly (Dip & { publicId: string | null })[],
   designBands: readonly DesignBand[],
   unit: LengthUnit,
 ): Promise<DipTarget[]> {
-  const inner = dips.filter(({ edge }) => !edge);
-  if (designBands.length === 0 || inner.length === 0) return [];
+  return targetsOn(await targetGround(sweep), dips, designBands, unit);
+}
+
+/** What is known of the antenna's history up to a sweep, from the database: the ground of `targetsOn`. */
+export async function targetGround(sweep: Pick<SweepRow, "id" | "projectId">) {
   const [versions, sweeps, stops, known] = await Promise.all([
     antennas.findAllByProject(sweep.projectId),
     steps.findSweepsInOrder(sweep.projectId),
     steps.findTrailStops(sweep.projectId),
     compare.findDips([sweep.id]),
   ]);
-  const upToHere = sweeps.slice(0, sweeps.findIndex(({ id }) => id === sweep.id) + 1);
+  return { sweepId: sweep.id, versions, sweeps, stops, known };
+}
+
+/**
+ * How far each dip lies from its design band, and what to make of the length of the part that may be behind it: the antenna's as it was
+ * when the sweep was taken, with the lengths that the dip's trail had seen by then. No trim where the dip is not that band's (TOO_FAR).
+ */
+export function targetsOn(
+  { sweepId, versions, sweeps, stops, known }: Awaited<ReturnType<typeof targetGround>>,
+  dips: readonly (Dip & { publicId: string | null })[],
+  designBands: readonly DesignBand[],
+  unit: LengthUnit,
+): DipTarget[] {
+  const inner = dips.filter(({ edge }) => !edge);
+  if (designBands.length === 0) return [];
+  const upToHere = sweeps.slice(0, sweeps.findIndex(({ id }) => id === sweepId) + 1);
   const antennaOf = new Map(
     upToHere.map(({ id, takenAt, createdAt }) => [id, antennaOn(versions, takenAt ?? createdAt)]),
   );
-  const then = antennaOf.get(sweep.id) ?? null;
+  const then = antennaOf.get(sweepId) ?? null;
   return inner.flatMap((dip): DipTarget[] => {
     const offset = dipOffset(dip.frequencyHz, designBands);
     if (!offset) return [];

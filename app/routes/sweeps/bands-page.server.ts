@@ -1,25 +1,17 @@
 import type { ProjectAccess } from "~/auth/require.server";
-import * as projects from "~/db/projects.server";
-import type { FoundSweep } from "~/db/sweeps.server";
-import type { Plane } from "~/measurement/sweep";
+import type { DesignBand } from "~/db/projects.server";
 import { lengthUnitOf } from "~/routes/antenna/sizes";
-import { bandsOfSweep, targetsOf } from "~/services/bands.server";
+import { bandsOfSweep, type targetGround, targetsOn } from "~/services/bands.server";
 import type { ShownDip } from "~/services/shown-dips.server";
-import { sweepAt } from "~/services/shown-sweep.server";
+import type { SweepAt } from "~/services/shown-sweep.server";
 
 /** The bands section: from all the sweep's points at the plane in view, for the dips that are shown. */
-export async function loadBands(
+export function drawBands(
   { project, person, may }: ProjectAccess,
-  found: FoundSweep,
-  shown: { dips: ShownDip[]; plane: Plane | null; limit: number },
+  { at, designBands, ground, dips, limit }: ShownBands,
 ) {
   const unit = lengthUnitOf(person);
-  const { dips, plane, limit } = shown;
-  const designBands = await projects.findDesignBands(project.id);
-  const [at, targets] = await Promise.all([
-    sweepAt(found, plane),
-    targetsOf(found.sweep, dips, designBands, unit),
-  ]);
+  const targets = targetsOn(ground, dips, designBands, unit);
   return {
     project: project.publicId,
     unit,
@@ -45,4 +37,12 @@ export async function loadBands(
   };
 }
 
-export type BandsData = Awaited<ReturnType<typeof loadBands>>;
+interface ShownBands {
+  at: SweepAt | null;
+  designBands: DesignBand[];
+  ground: Awaited<ReturnType<typeof targetGround>>;
+  dips: ShownDip[];
+  limit: number;
+}
+
+export type BandsData = ReturnType<typeof drawBands>;

@@ -13,18 +13,19 @@ import { correctionWords, PLANE_WORDS, planeWords } from "./correction-words";
 import { type FeedlineFields, OWN } from "./feedline.schema";
 import { PLANES } from "./sweeps.schema";
 
-/** What the sweep page says of the plane that it shows, and what can be chosen. `at` is null where the points were not needed. */
+/** What the sweep page says of the plane that it shows, and what can be chosen. */
 export async function loadCorrection(
   access: ProjectAccess,
   found: FoundSweep,
   tried: Plane | null,
-  at: SweepAt | null,
+  shownAt: Promise<SweepAt | null>,
 ) {
   const { sweep, analysis } = found;
   const stored = analysis?.correction ?? null;
   const storedPlane = stored?.plane ?? "instrument";
   const edit = access.may("sweep.edit");
-  const [now, antenna, benches, own] = await Promise.all([
+  const [at, now, antenna, benches, own] = await Promise.all([
+    shownAt,
     meansOf(sweep),
     edit && !sweep.feedline ? antennaAt(access.project.id, sweep.takenAt ?? sweep.createdAt) : null,
     edit ? usableBenches(access.project.id) : [],

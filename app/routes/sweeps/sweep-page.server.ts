@@ -10,10 +10,12 @@ import { decimate } from "~/measurement/decimate";
 import type { AnalysisSettings, Sweep } from "~/measurement/sweep";
 import { lineInPicture, placeInPicture } from "~/readers/screenshot/in-picture";
 import { flatPlot } from "~/readers/screenshot/rectify";
+import { targetGround } from "~/services/bands.server";
 import { listThread } from "~/services/note-thread.server";
 import { decodePoints, pickPoints } from "~/services/points.server";
 import { storedDips, triedDips } from "~/services/shown-dips.server";
 import { limitsOf, type SweepAt, sweepAt, uncorrected } from "~/services/shown-sweep.server";
+import { drawBands } from "./bands-page.server";
 import { loadComplex } from "./complex-page.server";
 import { loadCorrection } from "./correction-page.server";
 import type { SweepView } from "./sweeps.schema";
@@ -27,32 +29,33 @@ export async function loadSweepPage(
 ) {
   const { project, person } = access;
   const { sweep } = found;
-  const [known, designBands, dismissed, thread, sweepThread] = await Promise.all([
+  const stored = found.analysis?.correction ?? null;
+  const plane = view.plane === (stored?.plane ?? "instrument") ? null : view.plane;
+  const asked = sweepAt(found, plane);
+  const [known, designBands, at, ground, correction, dismissed, thread, sweepThread] = await Promise.all([
     dips.findAllBySweep(sweep.id),
     projects.findDesignBands(project.id),
+    asked,
+    targetGround(sweep),
+    loadCorrection(access, found, plane, asked),
     person ? people.findDismissals(person.id) : [],
     view.dip ? threadOf(view.dip, access, sweep.id) : null,
     listThread({ projectId: project.id, sweepId: sweep.id, dipId: null }, access),
   ]);
-  const stored = found.analysis?.correction ?? null;
-  const plane = view.plane === (stored?.plane ?? "instrument") ? null : view.plane;
   const tried = triedSettings(view, settings) ?? (plane ? settings : null);
   const zoomed = view.fromHz !== null || view.toHz !== null;
-  const at = tried || zoomed || stored ? await sweepAt(found, plane) : null;
-  const [analysis, correction] = [
-    tried && at ? analyse(at.sweep, tried) : null,
-    await loadCorrection(access, found, plane, at),
-  ];
+  // As it came in, the whole of it is drawn from what is kept for that.
+  const drawnAt = tried || zoomed || stored ? at : null;
+  const analysis = tried && at ? analyse(at.sweep, tried) : null;
   const range = rangeOf(view, found);
-  const shown = at ? drawnOf(at, range) : { sweep: previewOf(found), beside: NOTHING_BESIDE };
-  const measured = at ? zoomPoints(at.measured, range) : shown.sweep;
+  const shown = drawnAt ? drawnOf(drawnAt, range) : { sweep: previewOf(found), beside: NOTHING_BESIDE };
+  const measured = drawnAt ? zoomPoints(drawnAt.measured, range) : shown.sweep;
   const shownDips = analysis ? triedDips(analysis.dips, known, designBands) : storedDips(known, designBands);
-  // Slopes and noise need every point.
-  const whole = at ?? (sweep.complex ? await sweepAt(found) : null);
   return {
     correction: { ...correction, grey: shown.beside.measured !== undefined },
     dips: shownDips,
-    complex: whole && loadComplex(whole.sweep, shownDips, view.match, range),
+    // Slopes and noise need every point.
+    complex: at && (drawnAt || sweep.complex) ? loadComplex(at.sweep, shownDips, view.match, range) : null,
     lostDips: known.filter((listed) => !listed.dip.present).map(lostDip),
     warnings: analysis ? [...(at?.warnings ?? []), ...analysis.warnings] : (found.analysis?.warnings ?? []),
     noiseDb: analysis?.noiseDb ?? found.analysis?.noiseDb ?? null,
@@ -65,6 +68,13 @@ export async function loadSweepPage(
     dismissed,
     thread,
     sweepThread,
+    inBands: drawBands(access, {
+      at,
+      designBands,
+      ground,
+      dips: shownDips,
+      limit: view.swrLimit ?? settings.swrLimit,
+    }),
   };
 }
 

@@ -8,7 +8,6 @@ import { redirectWithMessage } from "~/services/flash.server";
 import { parseWas } from "~/services/merge-edit";
 import { deleteSweep, keepSettings, keepTitleAndDate } from "~/services/sweep-edits.server";
 import type { Route } from "./+types/sweep";
-import { loadBands } from "./bands-page.server";
 import { changeCorrection } from "./change-correction.server";
 import { Advice } from "./components/Advice";
 import { BandsSection } from "./components/bands/BandsSection";
@@ -42,7 +41,6 @@ export async function loader(args: Route.LoaderArgs) {
   }
   const view = parseView(new URL(args.request.url).searchParams);
   const page = await loadSweepPage(access, found, view, analysis.settings);
-  const limit = view.swrLimit ?? analysis.settings.swrLimit;
   return {
     project: { publicId: access.project.publicId, title: access.project.title },
     may: {
@@ -73,7 +71,6 @@ export async function loader(args: Route.LoaderArgs) {
     analysis: { settings: analysis.settings, version: analysis.version, number: analysis.number },
     view,
     ...page,
-    inBands: await loadBands(access, found, { dips: page.dips, plane: view.plane, limit }),
   };
 }
 
