@@ -34,8 +34,11 @@ export async function findAllByVersions(versionIds: number[], tx: Queryable = db
         complex: sweeps.complex,
       },
       project: projects.publicId,
+      fileId: files.id,
       fileName: files.name,
       sha256: files.sha256,
+      sizeBytes: files.sizeBytes,
+      storageKey: files.storageKey,
       reading: readings.reading,
     })
     .from(benchReferences)

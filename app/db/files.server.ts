@@ -1,7 +1,7 @@
-import { and, asc, count, eq, sql } from "drizzle-orm";
+import { and, asc, count, eq, inArray, sql } from "drizzle-orm";
 import { db, type Queryable } from "./client.server.ts";
 import { newPublicId } from "./ids.server.ts";
-import { files, sweeps } from "./schema/index.ts";
+import { files, plateSources, sweeps } from "./schema/index.ts";
 
 /** Bytes of all originals, as they were given. */
 export async function sumStoredBytes(tx: Queryable = db): Promise<{ files: number; bytes: number }> {
@@ -31,9 +31,24 @@ export async function findStorageKeys(projectId: number, tx: Queryable = db): Pr
   return rows.map((row) => row.key);
 }
 
+/** By a sweep's file, or by a plate that rests on it: that keeps the original when sweep and project are gone. */
 export async function isStorageKeyUsed(key: string, tx: Queryable = db): Promise<boolean> {
-  const rows = await tx.select({ id: files.id }).from(files).where(eq(files.storageKey, key)).limit(1);
-  return rows.length > 0;
+  const [own, ofPlates] = await Promise.all([
+    tx.select({ id: files.id }).from(files).where(eq(files.storageKey, key)).limit(1),
+    tx.select({ id: plateSources.id }).from(plateSources).where(eq(plateSources.storageKey, key)).limit(1),
+  ]);
+  return own.length + ofPlates.length > 0;
+}
+
+/** Which of these are still there; they stay until the transaction ends. */
+export async function hold(ids: readonly number[], tx: Queryable): Promise<Set<number>> {
+  if (ids.length === 0) return new Set();
+  const rows = await tx
+    .select({ id: files.id })
+    .from(files)
+    .where(inArray(files.id, [...ids]))
+    .for("update");
+  return new Set(rows.map(({ id }) => id));
 }
 
 export async function insert(

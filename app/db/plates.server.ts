@@ -137,18 +137,15 @@ export async function findAllByPublicIds(publicIds: readonly string[], tx: Query
     .limit(publicIds.length);
 }
 
-/** An original that a plate rests on, or a form of one: kept whatever else is deleted. */
+/** By a form; originals are asked for with the files. Keys are `plates/<public id>/…`. */
 export async function isStorageKeyUsed(key: string, tx: Queryable = db): Promise<boolean> {
-  const [sources, forms] = await Promise.all([
-    tx.select({ id: plateSources.id }).from(plateSources).where(eq(plateSources.storageKey, key)).limit(1),
-    tx
-      .select({ id: plateForms.plateId })
-      .from(plateForms)
-      .innerJoin(plates, eq(plates.id, plateForms.plateId))
-      .where(and(eq(plates.publicId, key.split("/")[1] ?? ""), eq(plateForms.storageKey, key)))
-      .limit(1),
-  ]);
-  return sources.length + forms.length > 0;
+  const rows = await tx
+    .select({ id: plateForms.plateId })
+    .from(plateForms)
+    .innerJoin(plates, eq(plates.id, plateForms.plateId))
+    .where(and(eq(plates.publicId, key.split("/")[1] ?? ""), eq(plateForms.storageKey, key)))
+    .limit(1);
+  return rows.length > 0;
 }
 
 const VERSION = {

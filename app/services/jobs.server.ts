@@ -3,6 +3,7 @@ import * as emailCodes from "~/db/email-codes.server";
 import * as files from "~/db/files.server";
 import * as jobs from "~/db/jobs.server";
 import * as photographs from "~/db/photographs.server";
+import * as plates from "~/db/plates.server";
 import * as sessions from "~/db/sessions.server";
 import { dropUnsent } from "./attachments.server.ts";
 import { sendDigests } from "./digests.server.ts";
@@ -89,6 +90,7 @@ async function run(due: jobs.JobRow[]): Promise<number> {
 const ROWS_OF: Record<string, { isStorageKeyUsed: (key: string) => Promise<boolean> }> = {
   photographs,
   attachments,
+  plates,
 };
 
 const BATCH = 20;

@@ -67,12 +67,10 @@ export const plateTrace = z.object({
   frequencyHz: z.array(z.number()),
   /** abs Γ, or dB for a bench's measures; null is a gap. */
   value: z.array(known),
-  /** Limits of the values at points of their own; null where none are known at all. */
-  limits: z
-    .object({ frequencyHz: z.array(z.number()), low: z.array(known), high: z.array(known) })
-    .nullable(),
+  /** Limits of the values; null where none is known. */
+  limits: z.object({ low: z.array(known), high: z.array(known) }).nullable(),
   /** As measured where the correction does not hold, drawn in grey; null where it holds everywhere. */
-  measured: z.object({ frequencyHz: z.array(z.number()), value: z.array(known) }).nullable(),
+  measured: z.array(known).nullable(),
 });
 export type PlateTrace = z.infer<typeof plateTrace>;
 
@@ -90,6 +88,8 @@ export const plateFigure = z.object({
   /** Strips: oldest first. */
   traces: z.array(plateTrace),
   dips: z.array(plateDip),
+  /** Id of the dip that the plate is of; null for other plates. */
+  focus: z.string().nullable(),
   /** One dip from sweep to sweep. */
   trails: z.array(
     z.object({
