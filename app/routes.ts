@@ -84,6 +84,7 @@ export default [
     route("dips/:dip/verdict", "routes/dips/verdict.ts"),
   ]),
   route("write-ups/:writeUp", "routes/write-ups/write-up.tsx"),
+  route("write-ups/:writeUp.html", "routes/write-ups/html.ts"),
   route("notes/preview", "routes/notes/preview.ts"),
   route("search", "routes/search/search.tsx"),
   route("inbox", "routes/inbox/inbox.tsx"),

@@ -445,6 +445,7 @@ export const EXPECTATIONS: Record<string, Expectation> = {
   },
   "routes/write-ups/feed.ts": { GET: read },
   "routes/write-ups/write-up.tsx": { GET: anybody },
+  "routes/write-ups/html.ts": { GET: anybody },
 
   "routes/photographs/photographs.ts": {
     POST: [

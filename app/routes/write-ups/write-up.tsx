@@ -4,28 +4,24 @@ import { type AccessArgs, findPerson } from "~/auth/require.server";
 import * as projects from "~/db/projects.server";
 import * as writeUps from "~/db/write-ups.server";
 import { env } from "~/env.server";
-import { notFound, type PlainError } from "~/errors";
 import { licenceOf } from "~/services/plates/licences";
+import { peopleOf } from "~/services/write-ups/cite";
 import { platesOf } from "~/services/write-ups/frozen";
-import { drawPage, seek, summaryOf } from "~/services/write-ups/published.server";
+import { drawPage, summaryOf } from "~/services/write-ups/published.server";
 import type { Route } from "./+types/write-up";
 import { ArticleText, Contents, listedOf } from "./components/ArticleText.tsx";
 import { Foot } from "./components/Foot.tsx";
 import { WriteUpHead } from "./components/WriteUpHead.tsx";
 import { headOf } from "./head.ts";
+import { requirePublication } from "./publication.server.ts";
 
 export const meta: Route.MetaFunction = ({ data }) => (data ? headOf(data) : [{ title: "Write-up · Swale" }]);
 export const headers: Route.HeadersFunction = ({ loaderHeaders }) => loaderHeaders;
 
 /** A published write-up, for anyone with its address. */
 export async function loader(args: Route.LoaderArgs) {
-  const { request, params } = args;
-  const wanted = new URL(request.url).searchParams.get("version");
-  const sought = await seek(params.writeUp, wanted);
-  if (sought.kind === "absent") throw notFound("write-up");
-  if (sought.kind === "taken-back") throw takenBack(sought.at);
-  const { publication } = sought;
-  const { writeUp, project, version, frozen, writer, by } = publication;
+  const publication = await requirePublication(args.request, args.params);
+  const { writeUp, project, version, frozen } = publication;
   const reader = await readerOf(args, project.publicId);
   const [article, versions] = await Promise.all([
     drawPage(publication, reader),
@@ -47,7 +43,7 @@ export async function loader(args: Route.LoaderArgs) {
       publishedAt: version.publishedAt,
       firstAt: versions.at(-1)?.publishedAt ?? version.publishedAt,
       remark: version.remark,
-      people: peopleOf(writer, by),
+      people: peopleOf(publication),
       licence: licenceOf(frozen.licence) ?? null,
       picture: plate ? `${env.BASE_URL}/plates/${plate}.png?width=1280` : null,
       project: {
@@ -78,9 +74,11 @@ export default function WriteUp({ loaderData }: Route.ComponentProps) {
       <WriteUpHead page={loaderData} />
       <div className={`write-up-body ${listed ? "with-contents" : ""}`}>
         <Contents headings={article.headings} />
-        <ArticleText html={article.html} />
+        <div className="grid gap-8 min-w-0">
+          <ArticleText html={article.html} />
+          <Foot page={loaderData} />
+        </div>
       </div>
-      <Foot page={loaderData} />
     </article>
   );
 }
@@ -91,14 +89,4 @@ async function readerOf(args: AccessArgs, publicId: string) {
   const found = await projects.findWithRole(publicId, person?.id ?? null);
   const role = found ? effectiveRole(found.role, found.project.visibility) : null;
   return role && { person, may: (action: ProjectAction) => mayInProject(role, action) };
-}
-
-/** Who began it and who published it, each once. */
-function peopleOf(writer: string | null, by: string | null): string[] {
-  return [...new Set([writer ?? by ?? "former member", by ?? "former member"])];
-}
-
-function takenBack(at: Date) {
-  const message = `Its authors took it back on ${at.toISOString().slice(0, 10)}. It may be published again at this address; ask them for it.`;
-  return data<PlainError>({ title: "This write-up was taken back", message }, { status: 410 });
 }

@@ -8,7 +8,6 @@ export function Foot({ page }: { page: WriteUpPage }) {
   const search = number === latest ? "" : `?version=${number}`;
   return (
     <footer className="write-up-foot text-small">
-      <p className="soft">{CAUTION}</p>
       <p>
         {people.join(" and ")}: {title}. Version {number}, <DateTime at={publishedAt} />.{" "}
         <span className="provenance break-all">{search === "" ? address : `${address}${search}`}</span>
@@ -52,7 +51,3 @@ export function Foot({ page }: { page: WriteUpPage }) {
     </footer>
   );
 }
-
-/** Sources: ITU Radio Regulations No. 18.1 (licence); exposure limits as set by regulators, e.g. 47 CFR 1.1310. */
-const CAUTION =
-  "Transmit only where your licence and local rules allow, and never near people beyond the exposure limits of your regulator. Keep masts and wires away from power lines and take them down before lightning. The numbers are as good as the bench they were taken with.";
