@@ -4,7 +4,13 @@ import path from "node:path";
 import { fileURLToPath } from "node:url";
 import { createRequestHandler } from "@react-router/express";
 import compression from "compression";
-import express, { type Express, type NextFunction, type Request, type Response } from "express";
+import express, {
+  type Express,
+  type NextFunction,
+  type Request,
+  type RequestHandler,
+  type Response,
+} from "express";
 import { RouterContextProvider } from "react-router";
 import { clientAddressContext, nonceContext, requestIdContext } from "~/context";
 import { pool } from "~/db/client.server";
@@ -45,21 +51,27 @@ export function createApp(development = false): Express {
   app.use(bodyLimits);
   app.use(compression({ filter: isWorthCompressing, level: COMPRESSION_LEVEL }));
   if (!development) serveStaticFiles(app);
-  app.use(
-    createRequestHandler({
-      build: () => import("virtual:react-router/server-build"),
-      mode: env.NODE_ENV,
-      getLoadContext(request, response) {
-        const context = new RouterContextProvider();
-        context.set(nonceContext, response.locals.nonce);
-        context.set(requestIdContext, response.locals.requestId);
-        context.set(clientAddressContext, request.ip ?? "");
-        return context;
-      },
-    }),
-  );
+  app.use(pages(development));
   app.use(answerError);
   return app;
+}
+
+/** The framework's own answers. A build that is given once is taken apart once; in development it is asked for each time. */
+function pages(development: boolean): RequestHandler {
+  const options = {
+    mode: env.NODE_ENV,
+    getLoadContext(request: Request, response: Response) {
+      const context = new RouterContextProvider();
+      context.set(nonceContext, response.locals.nonce);
+      context.set(requestIdContext, response.locals.requestId);
+      context.set(clientAddressContext, request.ip ?? "");
+      return context;
+    },
+  };
+  const build = () => import("virtual:react-router/server-build");
+  if (development) return createRequestHandler({ ...options, build });
+  const ready = build().then((whole) => createRequestHandler({ ...options, build: whole }));
+  return async (request, response, next) => (await ready)(request, response, next);
 }
 
 /** What runs beside the answering, once a process. */
