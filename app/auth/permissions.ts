@@ -9,6 +9,7 @@ const PROJECT_TABLE = {
   "project.read": ["owner", "experimenter", "commenter", "reader"],
   "project.edit": ["owner"],
   "project.delete": ["owner"],
+  "project.export": ["owner", "experimenter"],
   "members.manage": ["owner"],
   "sweep.add": ["owner", "experimenter"],
   "sweep.edit": ["owner", "experimenter"],
@@ -23,6 +24,7 @@ const PROJECT_TABLE = {
   "note.moderate": ["owner"],
   "plate.make": ["owner", "experimenter"],
   "write-up.edit": ["owner", "experimenter"],
+  "mention.moderate": ["owner"],
 } as const satisfies Record<string, readonly ProjectRole[]>;
 
 export type ProjectAction = keyof typeof PROJECT_TABLE;

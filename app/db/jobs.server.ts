@@ -1,4 +1,4 @@
-import { and, asc, count, eq, isNull, lt, lte, or } from "drizzle-orm";
+import { and, asc, count, eq, inArray, isNull, lt, lte, notInArray, or } from "drizzle-orm";
 import { db, inTransaction, type Queryable } from "./client.server.ts";
 import { facts, jobs } from "./schema/index.ts";
 
@@ -21,14 +21,17 @@ export async function insertAll(kind: string, payloads: unknown[], tx: Queryable
   }
 }
 
+/** Of these kinds, or of every kind but these. */
+export type Which = { only: string[] } | { but: string[] };
+
 /** Claims due work for `leaseMs`; other processes skip what is locked and see it again when the lease runs out. */
-export async function claim(limit: number, leaseMs: number): Promise<JobRow[]> {
+export async function claim(limit: number, leaseMs: number, which: Which = { but: [] }): Promise<JobRow[]> {
   return inTransaction(async (tx) => {
     const now = new Date();
     const rows = await tx
       .select()
       .from(jobs)
-      .where(and(lte(jobs.runAt, now), or(isNull(jobs.lockedUntil), lt(jobs.lockedUntil, now))))
+      .where(and(lte(jobs.runAt, now), or(isNull(jobs.lockedUntil), lt(jobs.lockedUntil, now)), isOf(which)))
       .orderBy(asc(jobs.runAt))
       .limit(limit)
       .for("update", { skipLocked: true });
@@ -40,6 +43,11 @@ export async function claim(limit: number, leaseMs: number): Promise<JobRow[]> {
     }
     return rows;
   });
+}
+
+function isOf(which: Which) {
+  if ("only" in which) return inArray(jobs.kind, which.only);
+  return which.but.length > 0 ? notInArray(jobs.kind, which.but) : undefined;
 }
 
 export async function deleteById(id: number, tx: Queryable = db) {

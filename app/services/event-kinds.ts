@@ -22,6 +22,7 @@ export const EVENT_KINDS = [
   "plate.withdrawn",
   "write-up.published",
   "write-up.taken-back",
+  "mention.found",
   "member.joined",
   "member.changed",
   "member.left",
@@ -40,4 +41,5 @@ export const TOLD_KINDS: ReadonlySet<EventKind> = new Set([
   "plate.mended",
   "plate.withdrawn",
   "write-up.published",
+  "mention.found",
 ]);

@@ -11,6 +11,7 @@ export function noticeWords(notice: {
   const { reason, about } = notice;
   const who = notice.actor ?? "A former member";
   const kind = notice.kind as EventKind;
+  if (kind === "mention.found") return `A page elsewhere cites ${about.title}; it waits for your word`;
   if (kind === "verdict.given") return `${who} gave a verdict: ${about.title || "open again"}`;
   if (kind === "sweep.added") return `${who} added the sweep ${about.title}`;
   if (kind === "step.added") return `${who} wrote down the step ${about.title}`;
@@ -26,8 +27,9 @@ export function noticeWords(notice: {
 /** Where a notice leads: to the note, so that it can be answered there, else to what the event is about. */
 export function noticePath(
   project: string,
-  { writeUp, plate, note, dip, trail, step, bench, sweep }: EventAbout,
+  { mention, writeUp, plate, note, dip, trail, step, bench, sweep }: EventAbout,
 ): string {
+  if (mention) return `/projects/${project}/mentions`;
   if (writeUp) return `/write-ups/${writeUp}`;
   if (plate) return `/plates/${plate}`;
   const base = `/projects/${project}`;

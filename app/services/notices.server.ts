@@ -3,6 +3,7 @@ import * as follows from "~/db/follows.server";
 import * as notes from "~/db/notes.server";
 import * as notices from "~/db/notices.server";
 import * as people from "~/db/people.server";
+import * as projects from "~/db/projects.server";
 import type { EventAbout } from "~/db/schema";
 import { subjectsIn } from "./markdown-links.ts";
 import { mailAtOnce } from "./notice-mails.server.ts";
@@ -28,6 +29,12 @@ export async function tellOf(eventId: number, now = new Date()): Promise<void> {
     const followed = said.filter((one) => one.at <= found.event.at);
     for (const { userId } of followed) reasons.set(userId, kind === "verdict.given" ? "verdict" : "follow");
     if (note) for (const [userId, reason] of await calledBy(note, tx)) reasons.set(userId, reason);
+    if (kind === "mention.found") {
+      // It waits for an owner's word, and nobody else has anything to do with it.
+      reasons.clear();
+      const members = await projects.findMembers(found.project.id, tx);
+      for (const { userId, role } of members) if (role === "owner") reasons.set(userId, "follow");
+    }
     const wanted = [...reasons.keys()].filter((userId) => !muted.has(userId));
     const hearers = await notices.findHearers(found.project.id, wanted, found.event.actorId, tx);
     const made = await notices.insertNew(

@@ -15,6 +15,9 @@ const LIMITS = {
   report: { points: 30, duration: 24 * 60 * 60 },
   /** Invitations that one person makes: their mails go to people who did not ask. */
   invite: { points: 40, duration: 24 * 60 * 60 },
+  /** Mentions that one network sends, and those that make this server ask one host. */
+  "mention-from": { points: 60, duration: 60 * 60 },
+  "mention-host": { points: 60, duration: 60 * 60 },
 };
 
 /** Counts one use; the answer is null while there is room, else the seconds until there is. */

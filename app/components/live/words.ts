@@ -126,6 +126,7 @@ const SORT: Record<EventKind, string> = {
   "plate.withdrawn": "plate withdrawn|plates withdrawn",
   "write-up.published": "write-up published|write-ups published",
   "write-up.taken-back": "write-up taken back|write-ups taken back",
+  "mention.found": "new mention elsewhere|new mentions elsewhere",
   "member.joined": "the members changed",
   "member.changed": "the members changed",
   "member.left": "the members changed",

@@ -34,6 +34,8 @@ export interface EventAbout {
   note?: string;
   plate?: string;
   writeUp?: string;
+  /** Of a plate or a write-up, on a page elsewhere. */
+  mention?: string;
   /** As a person reads it; may not hold what only some members may read. */
   title: string;
 }

@@ -4,6 +4,7 @@ import type * as projects from "~/db/projects.server";
 import * as writeUps from "~/db/write-ups.server";
 import { record } from "../events.server.ts";
 import { figuresIn } from "../markdown-article.ts";
+import { queueSending } from "../webmention/send.server.ts";
 import { loadFigures } from "./figures.server.ts";
 import type { Frozen } from "./frozen.ts";
 
@@ -67,6 +68,7 @@ export async function publish(
       { projectId: project.id, kind: "write-up.published", actorId: by?.id ?? null, about, at },
       tx,
     );
+    await queueSending(row, tx);
     return { kind: "published", number };
   });
 }
@@ -85,6 +87,7 @@ export function takeBack(
       { projectId: row.projectId, kind: "write-up.taken-back", actorId: by?.id ?? null, about },
       tx,
     );
+    await queueSending(row, tx);
     return true;
   });
 }

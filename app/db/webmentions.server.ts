@@ -1,0 +1,116 @@
+import { createHash } from "node:crypto";
+import { and, count, desc, eq, inArray, or, sql } from "drizzle-orm";
+import { db, type Queryable } from "./client.server.ts";
+import { newPublicId } from "./ids.server.ts";
+import { plates, projects, users, webmentions, writeUps } from "./schema/index.ts";
+
+export type MentionRow = typeof webmentions.$inferSelect;
+export type MentionState = MentionRow["state"];
+
+/** What of ours is mentioned: row ids, one of them. */
+export type MentionOf = { plateId: number; writeUpId: null } | { plateId: null; writeUpId: number };
+
+/** One that came, for the first time or again; answers its public id. What was refused or gone is looked at anew. */
+export async function receive(
+  { source, target, ...of }: { source: string; target: string } & MentionOf,
+  tx: Queryable,
+): Promise<string> {
+  const pairSha256 = createHash("sha256").update(`${source}\n${target}`).digest("hex");
+  const now = new Date();
+  await tx
+    .insert(webmentions)
+    .values({ ...of, pairSha256, source, target, publicId: newPublicId(), state: "queued", receivedAt: now })
+    .onDuplicateKeyUpdate({
+      set: {
+        receivedAt: now,
+        state: sql`if(${webmentions.state} in ('refused', 'gone'), 'queued', ${webmentions.state})`,
+      },
+    });
+  const rows = await tx
+    .select({ publicId: webmentions.publicId })
+    .from(webmentions)
+    .where(eq(webmentions.pairSha256, pairSha256))
+    .limit(1);
+  return rows[0].publicId;
+}
+
+/** With what it mentions, and of which project that is; a plate may outlive its project. */
+export async function findByPublicId(publicId: string, tx: Queryable = db) {
+  const rows = await tx
+    .select({ mention: webmentions, ...MENTIONED })
+    .from(webmentions)
+    .leftJoin(plates, eq(plates.id, webmentions.plateId))
+    .leftJoin(writeUps, eq(writeUps.id, webmentions.writeUpId))
+    .where(eq(webmentions.publicId, publicId))
+    .limit(1);
+  return rows[0];
+}
+export type FoundMention = NonNullable<Awaited<ReturnType<typeof findByPublicId>>>;
+
+export async function lock(id: number, tx: Queryable): Promise<MentionRow | undefined> {
+  return (await tx.select().from(webmentions).where(eq(webmentions.id, id)).limit(1).for("update"))[0];
+}
+
+export async function update(
+  id: number,
+  values: Partial<Pick<MentionRow, "state" | "title" | "reason" | "checkedAt" | "decidedBy">>,
+  tx: Queryable = db,
+) {
+  await tx.update(webmentions).set(values).where(eq(webmentions.id, id));
+}
+
+/** Those in these states of what is the project's, the last to come first. */
+export async function findAllByProject(
+  projectId: number,
+  states: readonly MentionState[],
+  limit: number,
+  tx: Queryable = db,
+) {
+  return tx
+    .select({
+      mention: webmentions,
+      ...MENTIONED,
+      decidedBy: sql<string | null>`if(${users.closedAt} is null, ${users.name}, null)`,
+    })
+    .from(webmentions)
+    .leftJoin(plates, eq(plates.id, webmentions.plateId))
+    .leftJoin(writeUps, eq(writeUps.id, webmentions.writeUpId))
+    .leftJoin(users, eq(users.id, webmentions.decidedBy))
+    .where(and(isOf(projectId), inArray(webmentions.state, [...states])))
+    .orderBy(desc(webmentions.receivedAt), desc(webmentions.id))
+    .limit(limit);
+}
+export type ListedMention = Awaited<ReturnType<typeof findAllByProject>>[number];
+
+/** How many wait for the owner. */
+export async function countWaiting(projectId: number, tx: Queryable = db): Promise<number> {
+  const rows = await tx
+    .select({ n: count() })
+    .from(webmentions)
+    .leftJoin(plates, eq(plates.id, webmentions.plateId))
+    .leftJoin(writeUps, eq(writeUps.id, webmentions.writeUpId))
+    .where(and(isOf(projectId), eq(webmentions.state, "verified")));
+  return rows[0].n;
+}
+
+/** Those that are shown under a plate or a write-up, oldest first. */
+export async function findShown(of: { plateId: number } | { writeUpId: number }, tx: Queryable = db) {
+  const mentioned =
+    "plateId" in of ? eq(webmentions.plateId, of.plateId) : eq(webmentions.writeUpId, of.writeUpId);
+  return tx
+    .select({ source: webmentions.source, title: webmentions.title, at: webmentions.receivedAt })
+    .from(webmentions)
+    .where(and(mentioned, eq(webmentions.state, "shown")))
+    .orderBy(webmentions.id)
+    .limit(MOST_SHOWN);
+}
+
+const isOf = (projectId: number) => or(eq(plates.projectId, projectId), eq(writeUps.projectId, projectId));
+
+const MENTIONED = {
+  projectId: sql<number | null>`coalesce(${plates.projectId}, ${writeUps.projectId})`.mapWith(projects.id),
+  plate: { publicId: plates.publicId, number: plates.number, title: plates.title },
+  writeUp: { publicId: writeUps.publicId, title: writeUps.title },
+};
+
+const MOST_SHOWN = 200;
