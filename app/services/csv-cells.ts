@@ -1,8 +1,9 @@
 /** Cells of a CSV file that programs of tables open (RFC 4180). Pure. */
 
 /**
- * A text as a cell. One that a program of tables would take for a formula (it begins with = + - @, a tab or a return) gets
- * an apostrophe in front: OWASP, "CSV Injection" (from memory, not seen).
+ * A text as a cell. One that a program of tables would take for a formula gets an apostrophe in front, which such programs
+ * show as text. Source: OWASP, "CSV Injection", https://owasp.org/www-community/attacks/CSV_Injection: = + - @, tab,
+ * return, line feed, and the wide forms of the four signs.
  */
 export function textCell(text: string | null): string {
   if (!text) return "";
@@ -19,4 +20,5 @@ export function csvLine(cells: readonly string[]): string {
   return `${cells.join(",")}\r\n`;
 }
 
-const FORMULA = /^[=+\-@\t\r]/;
+/** After quotes and spaces too: programs pass over them. */
+const FORMULA = /^["'\s]*[=+\-@\t\r\n＝＋－＠]/;

@@ -1,6 +1,5 @@
 import { gammaToReturnLossDb, gammaToSwr } from "../measurement/reflection.ts";
 import type { Sweep } from "../measurement/sweep.ts";
-import { csvLine } from "./csv-line.ts";
 
 /** A sweep as other programs read it. */
 
@@ -13,7 +12,7 @@ export function toCsv(sweep: Sweep, limits?: { low: Float64Array; high: Float64A
   const head = ["frequency_hz", "gamma_magnitude", "return_loss_db", "swr"];
   if (complex) head.push("gamma_real", "gamma_imaginary");
   if (limits) head.push("return_loss_low_db", "return_loss_high_db", "swr_low", "swr_high");
-  const lines = [csvLine(head)];
+  const lines = [head.join(",")];
   for (let i = 0; i < sweep.frequencyHz.length; i++) {
     const magnitude = sweep.magnitude[i];
     const cells = [
@@ -24,7 +23,7 @@ export function toCsv(sweep: Sweep, limits?: { low: Float64Array; high: Float64A
     ];
     if (complex) cells.push(cell(sweep.gammaRe?.[i] ?? Number.NaN), cell(sweep.gammaIm?.[i] ?? Number.NaN));
     if (limits) cells.push(...limitCells(limits.low[i], limits.high[i]));
-    lines.push(csvLine(cells));
+    lines.push(cells.join(","));
   }
   return `${lines.join("\r\n")}\r\n`;
 }
