@@ -51,6 +51,7 @@ export default function ProjectLayout({ loaderData }: Route.ComponentProps) {
             <Tab to={`${base}/benches`} label="Benches" />
             <Tab to={`${base}/antenna`} label="Antenna" />
             <Tab to={`${base}/steps`} label="Steps" />
+            <Tab to={`${base}/write-ups`} label="Write-ups" />
             <Tab to={`${base}/activity`} label="Activity" />
             <Tab to={`${base}/members`} label="Members" />
             {mayEdit && <Tab to={`${base}/settings`} label="Settings" />}
