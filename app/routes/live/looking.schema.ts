@@ -7,6 +7,6 @@ export const lookingSchema = z.object({
   kind: z.enum(["project", "sweep", "dip", "trail", "step", "bench"]).default("project"),
   subject: z
     .string()
-    .regex(/^[0-9a-z]{1,16}$/)
+    .regex(/^[0-9a-z-]{1,16}$/)
     .default("story"),
 });

@@ -26,7 +26,7 @@ export async function loader(args: Route.LoaderArgs) {
   const { writeUp } = await requireWriteUp(access, args.params.writeUp);
   const [lastNumber, drawn] = await Promise.all([
     writeUps.findLastNumber(writeUp.id),
-    drawDraft(access, writeUp.body),
+    drawDraft(access, writeUp.body, true),
   ]);
   return {
     project: { publicId: project.publicId, title: project.title, visibility: project.visibility },
@@ -127,7 +127,7 @@ export default function PublishWriteUp({ loaderData, actionData }: Route.Compone
         )}
       </section>
       <section aria-label="What will be published" className="grid gap-4">
-        <h3 className="write-up-title">{title}</h3>
+        <p className="write-up-title font-semibold">{title}</p>
         <ArticleText html={html} />
       </section>
     </article>

@@ -2,6 +2,7 @@ import { LRUCache } from "lru-cache";
 import type { ProjectAccess } from "~/auth/require.server";
 import { type Article, renderArticle } from "../markdown.server.ts";
 import { figuresIn, MOST_FIGURES } from "../markdown-article.ts";
+import { NO_LINKS } from "../markdown-links.ts";
 import { loadLinks } from "../note-links.server.ts";
 import { expandWriteUp } from "./drafts.server.ts";
 import { figureDrawer } from "./figure-html.ts";
@@ -9,19 +10,24 @@ import { loadFigures } from "./figures.server.ts";
 import type { FrozenFigure } from "./frozen.ts";
 import { plateStates } from "./published.server.ts";
 
-/** How a draft will look, with figures drawn now. Nothing is stored. */
-export async function drawDraft(access: ProjectAccess, written: string): Promise<Article> {
+/** How a draft will look, with figures drawn now; to its writers, or `outside`, as everybody reads it. Nothing is stored. */
+export async function drawDraft(access: ProjectAccess, written: string, outside = false): Promise<Article> {
   const { project } = access;
   const body = await expandWriteUp(project.id, written);
   const figures = await figuresOfNow(access, figuresIn(body).slice(0, MOST_FIGURES));
-  const [plates, links] = await Promise.all([plateStates(figures), loadLinks(project.id, [body], access)]);
+  const [plates, { references }] = await Promise.all([
+    plateStates(figures),
+    loadLinks(project.id, [body], access),
+  ]);
+  const named = [...references].filter(([subject]) => !outside || subject.startsWith("plate:"));
+  const places = new Map(named.map(([subject, { path }]) => [subject, { path, now: null }]));
   const draw = figureDrawer({
     figures,
     plates,
     plateSource: (id, theme) => `/plates/${id}.svg${theme === "dark" ? "?theme=dark" : ""}`,
-    linkTo: ({ path }) => path,
+    linkTo: ({ path, subject }) => (outside && !subject.startsWith("plate:") ? null : path),
   });
-  return renderArticle(body, { ...links, filesStay: true }, draw);
+  return renderArticle(body, { ...NO_LINKS, references: places, filesStay: true }, draw);
 }
 
 /** While somebody writes, the same figures are asked for with every pause in typing. */
