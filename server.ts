@@ -17,6 +17,7 @@ import { pool } from "~/db/client.server";
 import { env } from "~/env.server";
 import { accessLog } from "~/services/access-log.server";
 import { bodyLimits } from "~/services/body-limits.server";
+import { startBundles } from "~/services/bundle/work.server";
 import { readiness } from "~/services/health.server";
 import { startJobs } from "~/services/jobs.server";
 import { knownMethods } from "~/services/known-methods.server";
@@ -79,6 +80,7 @@ export function startBackground(): void {
   onShutdown(() => pool.end());
   onShutdown(closeReaders);
   onShutdown(startJobs());
+  onShutdown(startBundles());
   onShutdown(startOutbox());
 }
 

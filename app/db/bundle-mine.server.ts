@@ -214,7 +214,12 @@ function inProject(
       for (let last = 0; ; ) {
         const which: SQL | undefined = and(eq(whose, userId), gt(table.id, last));
         const rows = await tx
-          .select({ rowId: table.id, project: t.projects.publicId, projectTitle: t.projects.title, ...columns })
+          .select({
+            rowId: table.id,
+            project: t.projects.publicId,
+            projectTitle: t.projects.title,
+            ...columns,
+          })
           .from(table)
           .leftJoin(t.projects, eq(t.projects.id, project))
           .where(which)

@@ -1,8 +1,17 @@
-import { and, asc, eq, getTableColumns, getTableName, gt, inArray, isNull, type SQL, sql } from "drizzle-orm";
+import { and, asc, eq, getTableColumns, gt, inArray, isNull, type SQL, sql } from "drizzle-orm";
 import type { MySqlColumn } from "drizzle-orm/mysql-core";
-import { type BundleKind, KINDS, kindNamed } from "./bundle-kinds.server.ts";
+import { type BundleKind, KINDS } from "./bundle-kinds.server.ts";
 import { db, type Queryable, type Transaction } from "./client.server.ts";
-import { memberships, notes, plateForms, plates, plateSources, sweepPoints, sweeps, users } from "./schema/index.ts";
+import {
+  memberships,
+  notes,
+  plateForms,
+  plateSources,
+  plates,
+  sweepPoints,
+  sweeps,
+  users,
+} from "./schema/index.ts";
 
 /** Rows of a project as they go into a bundle and come out of one. */
 
@@ -121,16 +130,22 @@ export async function findTaken(kind: BundleKind, publicIds: string[], tx: Query
   return taken;
 }
 
-/** Writes rows; answers their row ids in the same order, none for kinds without one. */
-export async function insertRows(kind: BundleKind, rows: Row[], tx: Queryable): Promise<number[]> {
-  const hasId = "id" in getTableColumns(kind.table);
-  const insert = tx.insert(kind.table).values(rows as never);
-  if (!hasId) {
-    await insert;
-    return [];
-  }
-  const made = (await insert.$returningId()) as { id: number }[];
-  return made.map((row) => row.id);
+/** Writes rows; answers the row id of each by its public id, where its kind has one. */
+export async function insertRows(kind: BundleKind, rows: Row[], tx: Queryable): Promise<Map<string, number>> {
+  await tx.insert(kind.table).values(rows as never);
+  const columns = getTableColumns(kind.table) as Record<string, MySqlColumn>;
+  if (!columns.publicId) return new Map();
+  const made = await tx
+    .select({ id: columns.id, publicId: columns.publicId })
+    .from(kind.table)
+    .where(
+      inArray(
+        columns.publicId,
+        rows.map((row) => row.publicId),
+      ),
+    )
+    .limit(rows.length);
+  return new Map(made.map((row) => [String(row.publicId), Number(row.id)]));
 }
 
 /** Sets some columns of a row by its row id. */
@@ -146,7 +161,7 @@ export async function insertPoints(readingId: number, parts: Buffer[], tx: Query
   for (const [part, data] of parts.entries()) await tx.insert(sweepPoints).values({ readingId, part, data });
 }
 
-export async function updatePreview(sweepId: number, preview: Buffer, tx: Queryable) {
+export async function updatePreview(sweepId: number, preview: Buffer, tx: Queryable = db) {
   await tx.update(sweeps).set({ preview }).where(eq(sweeps.id, sweepId));
 }
 
@@ -167,14 +182,22 @@ export async function deletePlates(projectId: number, tx: Queryable): Promise<st
   return [...forms, ...sources].map(({ key }) => key);
 }
 
+/** A person who is kept by name only; answers the row id. */
+export async function insertPlaceholder(
+  person: { publicId: string; name: string; userName: string },
+  tx: Queryable,
+): Promise<number> {
+  const now = new Date();
+  const [row] = await tx
+    .insert(users)
+    .values({ ...person, email: null, createdAt: now, closedAt: now })
+    .$returningId();
+  return row.id;
+}
+
 /** Removes persons that were made for a project that was taken in by half. */
 export async function deletePersons(ids: number[], tx: Queryable) {
   if (ids.length > 0) await tx.delete(users).where(and(inArray(users.id, ids), isNull(users.email)));
-}
-
-/** For messages: the table's name in the database. */
-export function tableOf(name: BundleKind["name"]): string {
-  return getTableName(kindNamed(name).table);
 }
 
 /** Of a table without row ids. */

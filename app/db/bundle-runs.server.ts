@@ -80,10 +80,7 @@ export function claim(leaseMs: number): Promise<RunRow | undefined> {
           inArray(bundleRuns.kind, ["export", "import", "mine"]),
           or(
             and(eq(bundleRuns.state, "waiting"), lt(bundleRuns.updatedAt, now)),
-            and(
-              eq(bundleRuns.state, "running"),
-              lt(bundleRuns.updatedAt, new Date(now.getTime() - leaseMs)),
-            ),
+            and(eq(bundleRuns.state, "running"), lt(bundleRuns.updatedAt, new Date(now.getTime() - leaseMs))),
           ),
         ),
       )
@@ -91,10 +88,7 @@ export function claim(leaseMs: number): Promise<RunRow | undefined> {
       .limit(1)
       .for("update", { skipLocked: true });
     if (!row) return undefined;
-    await tx
-      .update(bundleRuns)
-      .set({ state: "running", updatedAt: now })
-      .where(eq(bundleRuns.id, row.id));
+    await tx.update(bundleRuns).set({ state: "running", updatedAt: now }).where(eq(bundleRuns.id, row.id));
     return { ...row, state: "running" as const, updatedAt: now };
   });
 }
@@ -117,9 +111,14 @@ export async function deleteById(id: number, tx: Queryable = db) {
   await tx.delete(bundleRuns).where(eq(bundleRuns.id, id));
 }
 
-/** Whether a run still works with an object, or offers it. Keys are `bundles/RUN/…`. */
+/** Whether a run still works with an object, or offers it. Keys are `bundles/RUN/…`, those that were given in the run's row. */
 export async function isStorageKeyUsed(key: string, tx: Queryable = db): Promise<boolean> {
-  const run = (await findByPublicId(key.split("/")[1] ?? "", tx)) as ShownRun | undefined;
+  const rows = await tx
+    .select(shown)
+    .from(bundleRuns)
+    .where(or(eq(bundleRuns.publicId, key.split("/")[1] ?? ""), eq(bundleRuns.storageKey, key)))
+    .limit(1);
+  const run = rows.at(0);
   if (!run) return false;
   if (run.state === "waiting" || run.state === "running") return true;
   return run.storageKey === key && run.expiresAt !== null && run.expiresAt > new Date();

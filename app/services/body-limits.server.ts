@@ -4,6 +4,8 @@ const MEGABYTE = 1024 * 1024;
 /** Two files of the largest size and what surrounds them. */
 const UPLOAD_BYTES = 140 * MEGABYTE;
 const FORM_BYTES = MEGABYTE;
+/** A whole project, which is read as a stream. */
+const BUNDLE_BYTES = 2049 * MEGABYTE;
 
 /** Refuses a body that is too large, or of unknown length, before a byte of it is read. */
 export function bodyLimits(request: Request, response: Response, next: NextFunction): void {
@@ -29,7 +31,8 @@ function refusalOf(request: Request): { status: number; title: string; detail: s
   }
   const upload =
     /^\/(api\/v1\/)?projects\//.test(request.path) && request.is("multipart/form-data") !== false;
-  const limitBytes = upload ? UPLOAD_BYTES : FORM_BYTES;
+  const bundle = request.path === "/projects/take-in" || request.path === "/projects/take-in.data";
+  const limitBytes = bundle ? BUNDLE_BYTES : upload ? UPLOAD_BYTES : FORM_BYTES;
   if (Number(length) <= limitBytes) return undefined;
   const limit = `${limitBytes / MEGABYTE} MB`;
   return {

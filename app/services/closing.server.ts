@@ -1,3 +1,4 @@
+import * as bundleRuns from "~/db/bundle-runs.server";
 import { inTransaction } from "~/db/client.server";
 import * as closing from "~/db/closing.server";
 import * as emailCodes from "~/db/email-codes.server";
@@ -45,6 +46,12 @@ export function closeAccount(userId: number, notesThen: NotesThen): Promise<Clos
     }
     await closing.forgetName(user.name, projectIds, tx);
     await closing.deleteTraces(userId, tx);
+    const bundles = await bundleRuns.deleteByUser(userId, tx);
+    await jobs.insertAll(
+      "delete-object",
+      bundles.map((key) => ({ key })),
+      tx,
+    );
     await outbox.deleteUnsentByUser(userId, tx);
     if (user.email) await emailCodes.deleteByEmail(user.email, tx);
     await people.update(userId, { ...NOBODY, userName: `former-${newPublicId()}`, closedAt: new Date() }, tx);

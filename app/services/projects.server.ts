@@ -1,6 +1,7 @@
 import type { ProjectRole } from "~/auth/permissions";
 import * as attachments from "~/db/attachments.server";
 import * as blocks from "~/db/blocks.server";
+import * as bundleRuns from "~/db/bundle-runs.server";
 import { inTransaction, isDuplicate, type Transaction } from "~/db/client.server";
 import * as files from "~/db/files.server";
 import * as jobs from "~/db/jobs.server";
@@ -28,6 +29,7 @@ export function deleteProject(id: number): Promise<void> {
       ...(await files.findStorageKeys(id, tx)),
       ...(await photographs.findStorageKeys(id, tx)),
       ...(await attachments.findStorageKeys(id, tx)),
+      ...(await bundleRuns.findStorageKeys(id, tx)),
     ];
     await jobs.insertAll(
       "delete-object",

@@ -8,7 +8,9 @@ export function sweepFigure(sweep: Sweep, dipsHz: readonly number[], title: stri
   const first = frequencyHz[0] ?? 0;
   const span = (frequencyHz[n - 1] ?? 1) - first || 1;
   const lossDb = Array.from(magnitude, (gamma) =>
-    Number.isNaN(gamma) ? Number.NaN : Math.min(MOST_DB, Math.max(0, -20 * Math.log10(Math.max(1e-9, gamma)))),
+    Number.isNaN(gamma)
+      ? Number.NaN
+      : Math.min(MOST_DB, Math.max(0, -20 * Math.log10(Math.max(1e-9, gamma)))),
   );
   const deepest = Math.ceil(Math.max(10, ...lossDb.filter((db) => !Number.isNaN(db))) / 10) * 10;
   const x = (hz: number) => (LEFT + ((hz - first) / span) * (WIDTH - LEFT - 8)).toFixed(1);
@@ -17,7 +19,8 @@ export function sweepFigure(sweep: Sweep, dipsHz: readonly number[], title: stri
   let path = "";
   let open = false;
   for (let i = 0; i < n; i += 1) {
-    const kept = i % step === 0 || i === n - 1 || dipsHz.some((hz) => Math.abs(hz - frequencyHz[i]) * n < span);
+    const kept =
+      i % step === 0 || i === n - 1 || dipsHz.some((hz) => Math.abs(hz - frequencyHz[i]) * n < span);
     if (!kept) continue;
     if (Number.isNaN(lossDb[i])) open = false;
     else {
@@ -34,7 +37,9 @@ export function sweepFigure(sweep: Sweep, dipsHz: readonly number[], title: stri
     const anchor = share === 1 ? "end" : share === 0 ? "start" : "middle";
     return `<text x="${x(hz)}" y="${HEIGHT - 12}" text-anchor="${anchor}">${Number((hz / 1e6).toPrecision(5))}</text>`;
   });
-  const marks = dipsHz.map((hz) => `<path d="M${x(hz)} 10V${HEIGHT - 30}" stroke="#7b4b86" stroke-dasharray="3 3"/>`);
+  const marks = dipsHz.map(
+    (hz) => `<path d="M${x(hz)} 10V${HEIGHT - 30}" stroke="#7b4b86" stroke-dasharray="3 3"/>`,
+  );
   return `<svg xmlns="http://www.w3.org/2000/svg" viewBox="0 0 ${WIDTH} ${HEIGHT}" role="img" font-family="sans-serif" font-size="11" fill="#3c4647">
 <title>${escapeHtml(title)}</title>
 <rect width="${WIDTH}" height="${HEIGHT}" fill="#fffdf7"/>

@@ -16,7 +16,8 @@ export class Lease {
     const write = async () => {
       // Two writes of one millisecond must differ.
       const next = new Date(Math.max(Date.now(), this.had.getTime() + 1));
-      if (!(await runs.keep(this.run.id, this.had, { updatedAt: next, ...values }, tx))) throw new LeaseLost();
+      if (!(await runs.keep(this.run.id, this.had, { updatedAt: next, ...values }, tx)))
+        throw new LeaseLost();
       this.had = values.updatedAt ?? next;
       this.toldMs = Date.now();
     };

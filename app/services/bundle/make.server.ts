@@ -51,7 +51,12 @@ export async function makeBundle(lease: Lease, making: Making): Promise<void> {
   const sink = (bytes: Buffer) => upload.write(bytes);
   const put = async (path: string, chunks: Chunks, compressed: boolean) => {
     const sum = summed(path, chunks);
-    await writeEntry(zip, { path: `${making.name}/${path}`, packed: compressed, at: run.createdAt }, sum.chunks, sink);
+    await writeEntry(
+      zip,
+      { path: `${making.name}/${path}`, packed: compressed, at: run.createdAt },
+      sum.chunks,
+      sink,
+    );
     return sum.done();
   };
   const reader = new PlanReader(await getObjectStream(keys.plan));
@@ -68,7 +73,8 @@ export async function makeBundle(lease: Lease, making: Making): Promise<void> {
   }
   const payload = sums.slice();
   const tags: Sums[] = [];
-  const tag = async (path: string, text: string) => void tags.push(await put(path, [Buffer.from(text)], true));
+  const tag = async (path: string, text: string) =>
+    void tags.push(await put(path, [Buffer.from(text)], true));
   const payloadBytes = payload.reduce((sum, { bytes }) => sum + bytes, 0);
   await tag("bagit.txt", bagDeclaration());
   await tag("bag-info.txt", bagInfo(making.about, payloadBytes, payload.length, run.createdAt));
@@ -120,7 +126,8 @@ async function keepPlan(lease: Lease, key: string, making: Making): Promise<numb
   } finally {
     clearInterval(beat);
   }
-  if (entries > MOST_ENTRIES) throw new Error(`The bundle would have ${entries} files; ${MOST_ENTRIES} are the most.`);
+  if (entries > MOST_ENTRIES)
+    throw new Error(`The bundle would have ${entries} files; ${MOST_ENTRIES} are the most.`);
   return entries;
 }
 
@@ -132,7 +139,9 @@ async function chunksOf(entry: PlanEntry, reader: PlanReader): Promise<Chunks> {
       return getObjectStream(entry.key);
     case "points": {
       const sweep = decodePoints(await findPoints(entry.reading));
-      return entry.as === "csv" ? encoded(pointsToCsv(sweep)) : encoded([toTouchstone(sweep, [`Sweep ${entry.title}`])]);
+      return entry.as === "csv"
+        ? encoded(pointsToCsv(sweep))
+        : encoded([toTouchstone(sweep, [`Sweep ${entry.title}`])]);
     }
     case "preview":
       return encoded(pointsToCsv(decodePoints([Buffer.from(entry.preview, "base64")])));

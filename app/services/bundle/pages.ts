@@ -24,10 +24,15 @@ export function indexPage(all: Overview): string {
   return page(
     String(project.title),
     [
-      project.demo === 1 ? "<p><b>Invented data.</b> People, places, call signs and numbers are made up.</p>" : "",
+      project.demo === 1
+        ? "<p><b>Invented data.</b> People, places, call signs and numbers are made up.</p>"
+        : "",
       renderNote(String(project.summary)),
       `<p class="soft">A bundle of ${escapeHtml(all.origin)}, made ${all.madeAt}. It is a BagIt bag (RFC 8493): <code>manifest-sha256.txt</code> beside this folder has the checksum of every file. What the files hold is written in <a href="README.md">README.md</a>.</p>`,
-      section("People", list(all.people.map(({ name, role }) => `${escapeHtml(name)}${role ? `, ${role}` : ""}`))),
+      section(
+        "People",
+        list(all.people.map(({ name, role }) => `${escapeHtml(name)}${role ? `, ${role}` : ""}`)),
+      ),
       section(
         "Design bands",
         list(
@@ -38,11 +43,22 @@ export function indexPage(all: Overview): string {
         ),
       ),
       section("Sweeps", sweeps.map((sweep) => sweepPart(sweep, all)).join("")),
-      section("Trails", list(of("trails").map((t) => `${escapeHtml(String(t.name || "unnamed"))}: ${hz(t.frequencyHz)}, ${t.verdict}${t.verdictText ? `: ${escapeHtml(String(t.verdictText))}` : ""}`))),
+      section(
+        "Trails",
+        list(
+          of("trails").map(
+            (t) =>
+              `${escapeHtml(String(t.name || "unnamed"))}: ${hz(t.frequencyHz)}, ${t.verdict}${t.verdictText ? `: ${escapeHtml(String(t.verdictText))}` : ""}`,
+          ),
+        ),
+      ),
       section(
         "Steps",
         of("steps")
-          .map((s) => `<h3>${escapeHtml(String(s.title))}</h3><p class="soft">${s.state}${s.at ? `, ${day(s.at)}` : ""}</p>${renderNote(String(s.body))}`)
+          .map(
+            (s) =>
+              `<h3>${escapeHtml(String(s.title))}</h3><p class="soft">${s.state}${s.at ? `, ${day(s.at)}` : ""}</p>${renderNote(String(s.body))}`,
+          )
           .join(""),
       ),
       section(
@@ -51,10 +67,37 @@ export function indexPage(all: Overview): string {
           .map((b) => `<h3>${escapeHtml(String(b.name))}</h3>${renderNote(String(b.description))}`)
           .join(""),
       ),
-      section("Plates", list(of("plates").map((p) => `<a href="plates/${p.id}/record.json">Plate ${p.number}, version ${p.version}</a>: ${escapeHtml(String(p.title))}${p.withdrawnAt ? " (withdrawn)" : ""}`))),
-      section("Write-ups", list(of("write-ups").map((w) => `<a href="write-ups/${w.id}.md">${escapeHtml(String(w.title))}</a>`))),
-      section("Photographs", of("photographs").map((p) => `<figure><img src="${escapeHtml(String(p.shownPath).slice(5))}" alt="" loading="lazy"><figcaption>${escapeHtml(String(p.caption))}</figcaption></figure>`).join("")),
-      section("Notes", list(all.threads.map((t) => `<a href="notes/${t.file}.html">On ${escapeHtml(t.title)}</a> (${t.notes}; <a href="notes/${t.file}.md">Markdown</a>)`))),
+      section(
+        "Plates",
+        list(
+          of("plates").map(
+            (p) =>
+              `<a href="plates/${p.id}/record.json">Plate ${p.number}, version ${p.version}</a>: ${escapeHtml(String(p.title))}${p.withdrawnAt ? " (withdrawn)" : ""}`,
+          ),
+        ),
+      ),
+      section(
+        "Write-ups",
+        list(of("write-ups").map((w) => `<a href="write-ups/${w.id}.md">${escapeHtml(String(w.title))}</a>`)),
+      ),
+      section(
+        "Photographs",
+        of("photographs")
+          .map(
+            (p) =>
+              `<figure><img src="${escapeHtml(String(p.shownPath).slice(5))}" alt="" loading="lazy"><figcaption>${escapeHtml(String(p.caption))}</figcaption></figure>`,
+          )
+          .join(""),
+      ),
+      section(
+        "Notes",
+        list(
+          all.threads.map(
+            (t) =>
+              `<a href="notes/${t.file}.html">On ${escapeHtml(t.title)}</a> (${t.notes}; <a href="notes/${t.file}.md">Markdown</a>)`,
+          ),
+        ),
+      ),
     ].join("\n"),
   );
 }

@@ -7,7 +7,9 @@ const USER_NAME = "from-bundle-";
 const LONGEST = 120;
 
 export function placeholderOf(name: string, publicId: string) {
-  const short = Array.from(name.trim() || "Somebody").slice(0, LONGEST - MARK.length).join("");
+  const short = Array.from(name.trim() || "Somebody")
+    .slice(0, LONGEST - MARK.length)
+    .join("");
   return { name: short + MARK, userName: `${USER_NAME}${publicId}`, email: null };
 }
 

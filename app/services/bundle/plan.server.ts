@@ -7,8 +7,8 @@ import { annotationOf } from "./annotations.ts";
 import { contentsOf } from "./contents.ts";
 import { sweepFigure } from "./figure.ts";
 import { indexPage, type Overview } from "./pages.ts";
-import { type PlanLine, textEntry } from "./plan.ts";
 import { nameOfPerson } from "./placeholders.ts";
+import { type PlanLine, textEntry } from "./plan.ts";
 import { README, schemaText } from "./readme.ts";
 import type { Rec } from "./records.ts";
 import { type Subject, subjectOfNote, threadLines } from "./thread-plan.server.ts";
@@ -49,7 +49,11 @@ export async function* planProject(projectId: number, at: Date, tx: Queryable): 
   yield* planWriteUps(context);
   const threads: Overview["threads"] = [];
   yield* threadLines(context.subjects, tx, threads);
-  const people = [...context.people.values()].map(({ publicId, name, role }) => ({ id: publicId, name, role }));
+  const people = [...context.people.values()].map(({ publicId, name, role }) => ({
+    id: publicId,
+    name,
+    role,
+  }));
   yield* textEntry("data/records/people.json", recordsText("people", people));
   yield* textEntry("data/records/people.schema.json", schemaText("people"));
   yield* textEntry("data/README.md", README);
@@ -86,14 +90,18 @@ async function* planKind(kind: BundleKind, context: Context): AsyncGenerator<Pla
     await learnPeople(context, kind, page);
     const heads =
       kind.name === "readings"
-        ? await rows.findPointHeads(page.map((row) => Number(row.id)), context.tx)
+        ? await rows.findPointHeads(
+            page.map((row) => Number(row.id)),
+            context.tx,
+          )
         : new Map<number, Buffer>();
     const lines: string[] = [];
     for (const row of page) {
       const record = recordOf(kind, row, context);
       const own = contentsOf(kind.name, row, record, heads.get(Number(row.id)));
       Object.assign(record, own.fields);
-      if (kind.name === "sweeps") record.previewPath = row.analysisId === null ? null : previewPath(record.id);
+      if (kind.name === "sweeps")
+        record.previewPath = row.analysisId === null ? null : previewPath(record.id);
       const line = JSON.stringify(record);
       lines.push(line);
       contents.push(...own.lines.filter((one) => isNew(one, context.seen)));
@@ -122,8 +130,7 @@ function recordOf(kind: BundleKind, row: rows.Row, { ids, people }: Context): Re
     const names = kind.refs[column];
     if (names === undefined) record[fieldOf(kind, column)] = value;
     else if (value === null) record[fieldOf(kind, column)] = null;
-    else if (names === "people")
-      record[fieldOf(kind, column)] = people.get(Number(value))?.publicId || null;
+    else if (names === "people") record[fieldOf(kind, column)] = people.get(Number(value))?.publicId || null;
     // What stands in another project, such as a person's own bench, stays there.
     else record[fieldOf(kind, column)] = ids.get(names)?.get(Number(value)) ?? null;
   }
@@ -152,7 +159,9 @@ async function learnPeople(context: Context, kind?: BundleKind, page: rows.Row[]
 async function* planCurves(context: Context, figures: Set<string>): AsyncGenerator<PlanLine> {
   const ids = [...(context.ids.get("sweeps") ?? new Map<number, string>())];
   const dips = context.shown.get("dips") ?? [];
-  const titles = new Map(context.shown.get("sweeps")?.map((sweep) => [String(sweep.id), String(sweep.title)]));
+  const titles = new Map(
+    context.shown.get("sweeps")?.map((sweep) => [String(sweep.id), String(sweep.title)]),
+  );
   const withPreview = new Set(
     context.shown.get("sweeps")?.flatMap((sweep) => (sweep.previewPath ? [String(sweep.id)] : [])),
   );
@@ -162,7 +171,10 @@ async function* planCurves(context: Context, figures: Set<string>): AsyncGenerat
   }
   for (let i = 0; i < ids.length; i += FEW) {
     const batch = ids.slice(i, i + FEW);
-    const found = await rows.findPreviews(batch.map(([id]) => id), context.tx);
+    const found = await rows.findPreviews(
+      batch.map(([id]) => id),
+      context.tx,
+    );
     for (const { id, preview } of found) {
       const sweep = context.ids.get("sweeps")?.get(id) ?? "";
       if (!preview || !withPreview.has(sweep)) continue;

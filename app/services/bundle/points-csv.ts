@@ -47,7 +47,8 @@ export async function pointsFromCsv(lines: AsyncIterable<string>, referenceOhm: 
   };
   const frequencyHz = take("frequency_hz");
   const magnitude = take("gamma_magnitude");
-  if (!frequencyHz || !magnitude) throw new Error("the columns frequency_hz and gamma_magnitude are not there");
+  if (!frequencyHz || !magnitude)
+    throw new Error("the columns frequency_hz and gamma_magnitude are not there");
   for (let i = 0; i < frequencyHz.length; i++) {
     if (!(frequencyHz[i] > (i === 0 ? -1 : frequencyHz[i - 1]))) {
       throw new Error(`line ${i + 2} does not go up in frequency`);

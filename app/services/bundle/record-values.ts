@@ -8,12 +8,28 @@ const number = z.number();
 const maybe = z.number().nullish();
 const text = z.string();
 
-export const id = z.string().regex(/^[0-9a-z]{1,16}$/).describe("Public id");
+export const id = z
+  .string()
+  .regex(/^[0-9a-z]{1,16}$/)
+  .describe("Public id");
 export const ref = id.nullable().describe("Public id of the row it names; null for none");
-export const person = z.string().regex(/^[0-9a-z]{1,16}$/).nullable().describe("Id of a person in people.json; null where nobody is known");
-export const time = z.iso.datetime().transform((at) => new Date(at)).describe("UTC");
-export const sha256 = z.string().regex(/^[0-9a-f]{64}$/).describe("SHA-256 of the bytes, in hexadecimal");
-export const path = z.string().regex(/^data\/[^\\]+$/).describe("Where the bytes are in this bundle");
+export const person = z
+  .string()
+  .regex(/^[0-9a-z]{1,16}$/)
+  .nullable()
+  .describe("Id of a person in people.json; null where nobody is known");
+export const time = z.iso
+  .datetime()
+  .transform((at) => new Date(at))
+  .describe("UTC");
+export const sha256 = z
+  .string()
+  .regex(/^[0-9a-f]{64}$/)
+  .describe("SHA-256 of the bytes, in hexadecimal");
+export const path = z
+  .string()
+  .regex(/^data\/[^\\]+$/)
+  .describe("Where the bytes are in this bundle");
 export const count = z.number().int().min(0).max(4_294_967_295);
 
 export const feedline = z
@@ -169,7 +185,13 @@ export const quantities = z.array(
 );
 
 export const expected = z.array(
-  z.looseObject({ trail: id, frequencyHz: number, lowHz: number.nullable(), highHz: number.nullable(), how: text }),
+  z.looseObject({
+    trail: id,
+    frequencyHz: number,
+    lowHz: number.nullable(),
+    highHz: number.nullable(),
+    how: text,
+  }),
 );
 
 export const benchParts = z.array(

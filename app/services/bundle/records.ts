@@ -19,7 +19,10 @@ const pixels = z.number().int().min(1).max(1_000_000);
 export const PEOPLE = z.strictObject({
   id: v.id,
   name: text(120).describe("As shown in the project when the bundle was made"),
-  role: z.enum(["owner", "experimenter", "commenter", "reader"]).nullable().describe("Null: not a member any more"),
+  role: z
+    .enum(["owner", "experimenter", "commenter", "reader"])
+    .nullable()
+    .describe("Null: not a member any more"),
 });
 export type PersonRecord = z.infer<typeof PEOPLE>;
 

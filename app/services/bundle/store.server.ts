@@ -67,6 +67,10 @@ export class PartUpload {
     );
   }
 
+  abort(): Promise<void> {
+    return abortUpload(this.key, this.state.uploadId);
+  }
+
   private async send(): Promise<void> {
     const body = Buffer.concat(this.chunks);
     const number = this.state.parts.length + 1;

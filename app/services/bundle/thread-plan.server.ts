@@ -23,7 +23,8 @@ export function subjectOfNote(
   const file = kind ? `${kind}-${note[kind]}` : "project";
   let subject = subjects.get(file);
   if (!subject) {
-    const record = kind && shown.get(`${kind}${kind === "bench" ? "es" : "s"}`)?.find(({ id }) => id === note[kind]);
+    const record =
+      kind && shown.get(`${kind}${kind === "bench" ? "es" : "s"}`)?.find(({ id }) => id === note[kind]);
     subject = { title: kind && record ? titleOf(kind, record) : "the project", notes: [] };
     subjects.set(file, subject);
   }

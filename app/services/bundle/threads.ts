@@ -1,6 +1,6 @@
 import { escapeHtml } from "../html-text.ts";
 import { renderNote } from "../markdown.server.ts";
-import { type NoteLinks, NO_LINKS } from "../markdown-links.ts";
+import { NO_LINKS, type NoteLinks } from "../markdown-links.ts";
 import { page } from "./pages.ts";
 
 /** A note as a thread shows it. */

@@ -1,15 +1,15 @@
-import * as runs from "~/db/bundle-runs.server";
 import { inSnapshot } from "~/db/bundle-rows.server";
+import * as runs from "~/db/bundle-runs.server";
 import * as people from "~/db/people.server";
 import * as projects from "~/db/projects.server";
 import { env } from "~/env.server";
 import { log } from "../log.server.ts";
 import { deleteObject } from "../storage.server.ts";
-import { Lease, LEASE_MS, LeaseLost } from "./lease.server.ts";
+import { LEASE_MS, Lease, LeaseLost } from "./lease.server.ts";
 import { dropMade, type Making, makeBundle } from "./make.server.ts";
 import { planMine } from "./mine.server.ts";
-import type { PlanLine } from "./plan.ts";
 import { planProject } from "./plan.server.ts";
+import type { PlanLine } from "./plan.ts";
 import { clearHalf, Refused, takeInBundle } from "./take-in.server.ts";
 
 /**
@@ -63,7 +63,8 @@ async function work(lease: Lease): Promise<void> {
       return;
     }
     await afterFault(lease, error).catch((again) => {
-      if (!(again instanceof LeaseLost)) log.warn({ err: again, run: run.publicId }, "a fault could not be noted");
+      if (!(again instanceof LeaseLost))
+        log.warn({ err: again, run: run.publicId }, "a fault could not be noted");
     });
   }
 }

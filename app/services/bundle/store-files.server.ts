@@ -1,0 +1,140 @@
+import type { KindName } from "~/db/bundle-kinds.server";
+import type { Row } from "~/db/bundle-rows.server";
+import { newPublicId } from "~/db/ids.server";
+import { putObject } from "../storage.server.ts";
+import type { OpenBag } from "./open-zip.server.ts";
+import type { Rec } from "./records.ts";
+import { Refused } from "./refused.ts";
+
+/** Where the bytes of a bundle's records go in the store. */
+export class KeyMaker {
+  /** SHA-256 → key of what several records share: an original, and a plate that rests on it. */
+  private readonly shared = new Map<string, string>();
+  readonly stored = new Set<string>();
+
+  constructor(private readonly projectPublicId: string) {}
+
+  /** The columns that say where; none for kinds without bytes. */
+  columnsOf(kind: KindName, record: Rec): Row {
+    switch (kind) {
+      case "originals":
+      case "plate-sources": {
+        const sum = String(record.sha256);
+        const key = this.shared.get(sum) ?? this.fresh("originals");
+        this.shared.set(sum, key);
+        return { storageKey: key };
+      }
+      case "photographs":
+      case "attachments": {
+        const key = this.fresh(kind);
+        const copy = (field: string, ending: string) => (record[field] === null ? null : `${key}.${ending}`);
+        return {
+          storageKey: key,
+          shownKey: copy("shownPath", "shown"),
+          smallKey: copy("smallPath", "small"),
+        };
+      }
+      case "plate-forms":
+        return { storageKey: this.fresh("plates") };
+      default:
+        return {};
+    }
+  }
+
+  private fresh(folder: string): string {
+    return `${folder}/${this.projectPublicId}/${newPublicId()}${newPublicId()}`;
+  }
+}
+
+/** Stores the bytes of one record, once each; what pages will show is looked at first. */
+export async function storeFiles(
+  bag: OpenBag,
+  kind: KindName,
+  record: Rec,
+  row: Row,
+  keys: KeyMaker,
+): Promise<void> {
+  if (kind === "plate-forms") {
+    const bytes = await bytesOf(bag, String(record.path));
+    checkForm(String(record.path), String(record.mediaType), bytes);
+    await put(keys, String(row.storageKey), bytes, String(record.mediaType));
+    return;
+  }
+  if (typeof row.storageKey === "string" && !keys.stored.has(row.storageKey)) {
+    await put(keys, row.storageKey, await bytesOf(bag, String(record.path)), "application/octet-stream");
+  }
+  for (const [field, column] of [
+    ["shownPath", "shownKey"],
+    ["smallPath", "smallKey"],
+  ] as const) {
+    if (typeof record[field] !== "string" || typeof row[column] !== "string") continue;
+    const bytes = await bytesOf(bag, record[field]);
+    if (bytes.readUIntBE(0, 3) !== JPEG)
+      throw new Refused(`“${record[field]}” is no JPEG, as copies for pages are.`);
+    await put(keys, row[column], bytes, "image/jpeg");
+  }
+}
+
+export async function textIn(bag: OpenBag, path: string): Promise<string> {
+  const bytes = await bytesOf(bag, path);
+  if (bytes.length > MOST_RECORD) throw new Refused(`“${path}” is longer than a plate's record can be.`);
+  const text = bytes.toString("utf8");
+  try {
+    checkAddresses(path, JSON.parse(text));
+  } catch (error) {
+    if (error instanceof SyntaxError) throw new Refused(`“${path}” is not JSON.`);
+    throw error;
+  }
+  return text;
+}
+
+/** A form is given to browsers from this site's own address: nothing in it may run. */
+function checkForm(path: string, mediaType: string, bytes: Buffer): void {
+  const type = mediaType.split(";")[0].trim();
+  if (!FORM_TYPES.has(type)) throw new Refused(`“${path}” is of a kind that no form of a plate is.`);
+  if (type === "image/svg+xml" && RUNS.test(bytes.toString("utf8"))) {
+    throw new Refused(`“${path}” holds something that would run or fetch, which no figure of ours does.`);
+  }
+}
+
+function checkAddresses(path: string, value: unknown): void {
+  if (typeof value === "string") {
+    if (/^\s*(javascript|data|vbscript):/i.test(value))
+      throw new Refused(`“${path}” has an address that would run.`);
+  } else if (value !== null && typeof value === "object") {
+    for (const item of Object.values(value)) checkAddresses(path, item);
+  }
+}
+
+async function put(keys: KeyMaker, key: string, bytes: Buffer, type: string): Promise<void> {
+  await putObject(key, bytes, type);
+  keys.stored.add(key);
+}
+
+async function bytesOf(bag: OpenBag, path: string): Promise<Buffer> {
+  if ((bag.entries.get(path)?.uncompressedSize ?? 0) > MOST_FILE)
+    throw new Refused(`“${path}” is larger than any file that is taken.`);
+  const chunks: Buffer[] = [];
+  for await (const chunk of await bag.read(path)) chunks.push(chunk as Buffer);
+  return Buffer.concat(chunks);
+}
+
+const MEGABYTE = 1024 * 1024;
+const MOST_RECORD = 16 * MEGABYTE - 1;
+/** The largest original has 64 MB; a plate's CSV of a million points may have more. */
+const MOST_FILE = 256 * MEGABYTE;
+const JPEG = 0xffd8ff;
+const FORM_TYPES = new Set([
+  "image/svg+xml",
+  "image/png",
+  "application/pdf",
+  "text/csv",
+  "text/plain",
+  "application/json",
+  "application/octet-stream",
+  "application/x-bibtex",
+  "text/x-bibtex",
+  "application/vnd.citationstyles.csl+json",
+]);
+const RUNS =
+  /<script|<foreignObject|<iframe|<embed|<object|<animate|<set[\s>]|\son[a-z]+\s*=|javascript:|<!ENTITY|<!DOCTYPE[^>]*\[|xlink:href\s*=\s*["'](?!#|data:image\/png)/i;
