@@ -66,17 +66,7 @@ export async function takeIn(input: TakeIn): Promise<Taken> {
   const twin = await files.findBySha256(project.id, sha256);
   if (twin) return twiceOf(twin);
 
-  const means = await meansOf({
-    benchId: input.benchId ?? null,
-    feedline: null,
-    takenAt: input.takenAt ?? null,
-    createdAt: new Date(),
-  });
-  const { outcome, given } = await againstBench(
-    await readAsBefore(input, taskOf(means, "port")),
-    input,
-    taskOf(means, "port"),
-  );
+  const { outcome, given, means } = await readForIntake(input);
   if (!outcome.ok && (!input.keepUnread || isBeyondReading(outcome.problem))) {
     return { kind: "refused", problem: outcome.problem };
   }
@@ -147,6 +137,20 @@ export async function takeIn(input: TakeIn): Promise<Taken> {
   }
 }
 
+/** Reads and analyses a file as `takeIn` would, and stores nothing. */
+export async function readForIntake(
+  input: Pick<TakeIn, "project" | "file" | "given" | "purpose" | "benchId" | "takenAt" | "progress">,
+): Promise<{ outcome: ReadOutcome; given: Given; means: Means }> {
+  const means = await meansOf({
+    benchId: input.benchId ?? null,
+    feedline: null,
+    takenAt: input.takenAt ?? null,
+    createdAt: new Date(),
+  });
+  const task = taskOf(means, "port");
+  return { ...(await againstBench(await readAsBefore(input, task), input, task)), means };
+}
+
 export interface StoreOutcome {
   projectId: number;
   sweepId: number;
@@ -202,7 +206,7 @@ export async function storeOutcome(input: StoreOutcome, tx: Transaction): Promis
 
 /** Reads the file, with what a person chose for the last file of the same shape in this project where it has one. */
 async function readAsBefore(
-  input: TakeIn,
+  input: Parameters<typeof readForIntake>[0],
   correct: CorrectionTask,
 ): Promise<{ outcome: ReadOutcome; given: Given }> {
   const task = { ...input.file, settings: DEFAULT_SETTINGS, correct };
@@ -224,7 +228,7 @@ async function readAsBefore(
 /** Levels without a 0 dB line are read against that of the bench's own levels: the bench's open or short is the line then. */
 async function againstBench(
   first: { outcome: ReadOutcome; given: Given },
-  { file, given }: TakeIn,
+  { file, given }: Pick<TakeIn, "file" | "given">,
   correct: CorrectionTask,
 ): Promise<{ outcome: ReadOutcome; given: Given }> {
   const { outcome } = first;

@@ -4,6 +4,7 @@ import {
   DeleteObjectCommand,
   GetObjectCommand,
   HeadBucketCommand,
+  ListObjectsV2Command,
   PutObjectCommand,
   S3Client,
 } from "@aws-sdk/client-s3";
@@ -65,6 +66,16 @@ export async function getObjectStream(key: string): Promise<Readable> {
 /** Deleting what is not there is no error. */
 export async function deleteObject(key: string): Promise<void> {
   await client.send(new DeleteObjectCommand({ Bucket: env.S3_BUCKET, Key: key }));
+}
+
+/** Deletes every object whose key begins so: of what is kept for a while only. */
+export async function deleteObjectsUnder(prefix: string): Promise<void> {
+  for (;;) {
+    const page = await client.send(new ListObjectsV2Command({ Bucket: env.S3_BUCKET, Prefix: prefix }));
+    const keys = (page.Contents ?? []).flatMap(({ Key }) => Key ?? []);
+    if (keys.length === 0) return;
+    for (const key of keys) await deleteObject(key);
+  }
 }
 
 export async function storageAnswers(): Promise<boolean> {

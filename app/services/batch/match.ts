@@ -1,0 +1,72 @@
+import type { BatchFile, BatchReport, BatchRow, Wanted } from "./report.ts";
+import type { TableRow } from "./table-csv.ts";
+
+/** Which row of the table is of which file. Pure. */
+
+/** A row for each row of the table, then one for each file that it does not name. */
+export function matchRows(files: readonly BatchFile[], table: readonly TableRow[]): BatchRow[] {
+  const rows = table.map(
+    (row): BatchRow => ({
+      ...EMPTY_ROW,
+      file: fileOf(files, row.file),
+      name: row.file,
+      line: row.line,
+      wanted: row.wanted,
+    }),
+  );
+  const named = new Set(rows.map(({ file }) => file));
+  const others = files.flatMap((file, i): BatchRow[] =>
+    named.has(i) ? [] : [{ ...EMPTY_ROW, file: i, name: file.path }],
+  );
+  return [...rows, ...others];
+}
+
+/** After files came that were missing: rows without a file find theirs; files that no row names get a row. */
+export function matchAgain({ files, rows }: Pick<BatchReport, "files" | "rows">): BatchRow[] {
+  const found = rows.map((row) => (row.file === null ? { ...row, file: fileOf(files, row.name) } : row));
+  const named = new Set(found.map(({ file }) => file));
+  const others = files.flatMap((file, i): BatchRow[] =>
+    named.has(i) ? [] : [{ ...EMPTY_ROW, file: i, name: file.path }],
+  );
+  return [...found, ...others];
+}
+
+/** By its whole path, else by its last part where only one file ends so; capitals count only where they must. */
+function fileOf(files: readonly BatchFile[], name: string): number | null {
+  const wanted = name.trim().replaceAll("\\", "/").replace(/^\.\//, "");
+  if (wanted === "") return null;
+  for (const same of SAME) {
+    const found = files.flatMap(({ path }, i) => (same(path, wanted) ? [i] : []));
+    if (found.length === 1) return found[0];
+    if (found.length > 1) return null;
+  }
+  return null;
+}
+
+/** How many files a name may mean, for the words of a row that found none. */
+export function countNamed(files: readonly BatchFile[], name: string): number {
+  const wanted = name.trim().replaceAll("\\", "/").toLowerCase();
+  return files.filter(({ path }) => lastPart(path).toLowerCase() === wanted).length;
+}
+
+function lastPart(path: string): string {
+  return path.split("/").at(-1) ?? path;
+}
+
+type Same = (path: string, wanted: string) => boolean;
+const SAME: Same[] = [
+  (path, wanted) => path === wanted,
+  (path, wanted) => path.endsWith(`/${wanted}`),
+  (path, wanted) => path.toLowerCase() === wanted.toLowerCase(),
+  (path, wanted) => path.toLowerCase().endsWith(`/${wanted.toLowerCase()}`),
+];
+const NOTHING_SAID: Wanted = { title: "", takenAt: "", bench: "", step: "" };
+const EMPTY_ROW: BatchRow = {
+  file: null,
+  name: "",
+  line: null,
+  wanted: NOTHING_SAID,
+  leftOut: false,
+  keepUnread: false,
+  result: null,
+};
