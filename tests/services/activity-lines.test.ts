@@ -51,6 +51,15 @@ describe("foldDays", () => {
     expect([lines.length, lines[0].count, lines[0].items.length, lines[0].more]).toEqual([1, 9, 4, 5]);
   });
 
+  it("tells plates that were made in one line, and each that was withdrawn by itself", () => {
+    const plate = (kind: Happened["kind"], id: string) =>
+      event(kind, { plate: id, sweep: "s", title: `Plate ${id}` }, at(2, 1));
+    const made = [plate("plate.made", "2"), plate("plate.made", "1")];
+    expect(told(made)).toEqual([["2026-05-02", "2 plates were made: Plate 2, Plate 1 (Ada)"]]);
+    const gone = [plate("plate.withdrawn", "2"), plate("plate.withdrawn", "1")];
+    expect(told(gone)[0]).toHaveLength(3);
+  });
+
   it("keeps the threads of two dips apart", () => {
     const [{ lines }] = foldDays(
       ["d1", "d2"].map((dip) => event("note.added", { sweep: "s", dip, title: dip }, at(2, 1))),
