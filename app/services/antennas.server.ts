@@ -2,7 +2,7 @@ import * as antennas from "~/db/antennas.server";
 import { inTransaction, type Queryable, type Transaction } from "~/db/client.server";
 import * as projects from "~/db/projects.server";
 import { type Antenna, NO_ANTENNA } from "~/measurement/antenna";
-import { type ChangedEntry, carryOn, changesBetween, mergeAntenna, withEntries } from "./antenna-changes.ts";
+import { type ChangedEntry, carryOn, changesBetween, mergeAntenna } from "./antenna-changes.ts";
 import { record } from "./events.server.ts";
 
 export type AntennaThen =
@@ -34,8 +34,8 @@ export interface ChangeAntenna {
 export type AntennaChange =
   | { kind: "kept" }
   | { kind: "nothing" }
-  /** Nothing was kept. With `basis` as what it began with, the same form takes the place of what others changed. */
-  | { kind: "conflict"; conflicts: ChangedEntry[]; basis: Antenna };
+  /** Nothing was kept. `merged` is what would be, with the conflicting entries as they are `now`. */
+  | { kind: "conflict"; conflicts: ChangedEntry[]; merged: Antenna; now: Antenna };
 
 /** Keeps a change of the antenna as a version of its own from `validFrom` on, and lets it run on into later ones. */
 export function changeAntenna(input: ChangeAntenna): Promise<AntennaChange> {
@@ -43,10 +43,7 @@ export function changeAntenna(input: ChangeAntenna): Promise<AntennaChange> {
     await projects.lock(input.projectId, tx);
     const now = (await antennas.findAt(input.projectId, input.validFrom, tx))?.content ?? NO_ANTENNA;
     const { antenna, conflicts } = mergeAntenna(input.was, now, input.wanted);
-    if (conflicts.length > 0) {
-      const paths = conflicts.map(({ path }) => path);
-      return { kind: "conflict", conflicts, basis: withEntries(input.was, now, paths) };
-    }
+    if (conflicts.length > 0) return { kind: "conflict", conflicts, merged: antenna, now };
     if (changesBetween(now, antenna).length === 0) return { kind: "nothing" };
     await insertVersion({ ...input, content: antenna, stepId: null }, tx);
     const about = { title: input.remark || "The antenna was changed" };

@@ -7,7 +7,7 @@ import * as sweeps from "~/db/sweeps.server";
 import type { BenchGiven, BenchStandards } from "~/measurement/bench";
 import { deleteAttachmentsUnder } from "./attachments.server.ts";
 import { record } from "./events.server.ts";
-import { type Merged, mergeEdit } from "./merge-edit.ts";
+import { conflictOf, mergeEdit } from "./merge-edit.ts";
 import { deletePhotographsOf } from "./photographs.server.ts";
 
 /** What a person says of a bench itself. */
@@ -64,23 +64,24 @@ export function rebuildBench(bench: benches.BenchRow, by: By, version: VersionVa
   });
 }
 
-/** Keeps what a person changed of the bench itself; writes nothing where that meets another's change. */
+/** Keeps what a person changed of the bench itself; where that meets another's change it writes nothing and asks. */
 export function changeBench(
   bench: benches.BenchRow,
   by: By,
   was: Partial<BenchValues>,
   wanted: BenchValues,
-): Promise<Merged<BenchFormValues> & { now: BenchFormValues }> {
+): Promise<ReturnType<typeof conflictOf> | null> {
   return inTransaction(async (tx) => {
     const row = (await benches.lock(bench.id, tx)) ?? bench;
     const now = benchValuesOf(row);
     const merged = mergeEdit<BenchFormValues>({ ...was }, now, { ...wanted });
+    if (merged.conflicts.length > 0) return conflictOf<BenchFormValues>(now, wanted, merged);
     const { own, ...changes } = merged.changes;
-    if (merged.conflicts.length > 0 || Object.keys(merged.changes).length === 0) return { ...merged, now };
+    if (Object.keys(merged.changes).length === 0) return null;
     const ownerId = own === undefined ? row.ownerId : own === "yes" ? by.id : null;
     await benches.update(bench.id, { ...changes, ownerId }, tx);
     await tell(bench, by, "bench.changed", wanted.name, tx);
-    return { ...merged, now };
+    return null;
   });
 }
 

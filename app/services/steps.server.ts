@@ -61,8 +61,14 @@ export function makeStep(
 export type StepChange =
   | { kind: "kept" }
   | { kind: "problem"; problem: QuantityProblem }
-  /** Somebody else changed these to something else; nothing was kept. */
-  | { kind: "conflict"; conflicts: (keyof StepWas)[]; now: StepWas }
+  /** Somebody else changed these to something else; nothing was kept. `mine` could be written as it is. */
+  | {
+      kind: "conflict";
+      conflicts: (keyof StepWas)[];
+      mine: (keyof StepWas)[];
+      now: StepWas;
+      stored: steps.StepRow;
+    }
   | { kind: "gone" };
 
 /** How a step's form was filled in when it was opened. */
@@ -99,7 +105,10 @@ export function changeStep(
     const now = stepWas(step);
     const sent = stepWas(wanted);
     const { changes, conflicts } = mergeEdit<Entries>({ ...was }, { ...now }, { ...sent });
-    if (conflicts.length > 0) return { kind: "conflict", conflicts: conflicts as (keyof StepWas)[], now };
+    if (conflicts.length > 0) {
+      const mine = Object.keys(changes);
+      return { kind: "conflict", conflicts, mine, now, stored: step } as StepChange;
+    }
     // Only what this person changed: the rest may be somebody else's.
     const merged: StepValues = {
       state: wanted.state,

@@ -95,7 +95,7 @@ describe("the antenna and its days", () => {
     });
     expect(await lengthOn(day(6))).toBe(10.1);
     if (late.kind !== "conflict") throw new Error("no conflict");
-    expect(await change(late.basis, pole(10), day(5))).toEqual({ kind: "kept" });
+    expect(await change(late.now, pole(10), day(5))).toEqual({ kind: "kept" });
     expect(await lengthOn(day(6))).toBe(10);
   });
 

@@ -217,9 +217,13 @@ describe("changing a bench", () => {
     const was = { name: "Home bridge", description: "", own: "no" } as const;
     await changeBench(bench, by, was, { ...was, name: "Shed bridge" });
     const late = await changeBench(bench, by, was, { ...was, name: "Barn bridge" });
-    expect(late.conflicts).toEqual(["name"]);
+    expect(late).toEqual({
+      asked: [{ name: "name", mine: "Barn bridge", theirs: "Shed bridge" }],
+      rest: { description: "", own: "no" },
+      was: JSON.stringify({ ...was, name: "Shed bridge" }),
+    });
     const other = await changeBench(bench, by, was, { ...was, description: "Two arms." });
-    expect(other.conflicts).toEqual([]);
+    expect(other).toBeNull();
     expect(await benchRows.findById(bench.id)).toMatchObject({
       name: "Shed bridge",
       description: "Two arms.",

@@ -18,7 +18,7 @@ export interface EditConflictProps {
   /** What each field is called on its form. */
   labels: Record<string, string>;
   /** Shows a value where that is not the value itself. */
-  words?: Record<string, (value: string) => string>;
+  words?: Partial<Record<string, (value: string) => string>>;
   intent: string;
   action?: string;
 }

@@ -1,6 +1,7 @@
 import { parseWithZod } from "@conform-to/zod/v4";
 import { data } from "react-router";
 import { requireProject } from "~/auth/require.server";
+import { type Conflict, EditConflict } from "~/components/edit-conflict/EditConflict";
 import { Breadcrumbs } from "~/components/ui/Breadcrumbs";
 import * as antennas from "~/db/antennas.server";
 import * as cables from "~/db/cables.server";
@@ -13,12 +14,12 @@ import { CABLES } from "~/measurement/cables";
 import { bandInHertz, bandRowOf } from "~/routes/projects/band-rows";
 import { BandsForm } from "~/routes/projects/components/BandsForm";
 import { bandsSchema } from "~/routes/projects/project.schema";
-import { changeText } from "~/services/antenna-words";
 import { changeAntenna } from "~/services/antennas.server";
 import { redirectWithMessage } from "~/services/flash.server";
 import { changeBands } from "~/services/projects.server";
 import type { Route } from "./+types/edit";
 import { antennaSchema } from "./antenna.schema";
+import { antennaConflict, antennaWords } from "./antenna-conflict";
 import { type AntennaTexts, antennaFrom, parseAntenna, textsOf } from "./antenna-form";
 import { AntennaCautions } from "./components/AntennaCautions";
 import { AntennaForm } from "./components/AntennaForm";
@@ -85,11 +86,9 @@ export async function action(args: Route.ActionArgs) {
         remark: value.remark,
       });
       if (change.kind === "conflict") {
-        const lines = change.conflicts.map((one) => changeText(one, unit, wanted, change.basis, was));
-        return data(
-          { sent, errors: {}, conflicts: lines, was: JSON.stringify(change.basis) },
-          { status: 409 },
-        );
+        const others = { since: sent.since, remark: sent.remark, ...(value.confirm && { confirm: "on" }) };
+        const question = antennaConflict({ ...change, wanted, unit, others });
+        return data({ sent, errors: {}, question }, { status: 409 });
       }
       return redirectWithMessage(
         here,
@@ -130,6 +129,7 @@ function minuteOf(at: Date): string {
 export default function EditAntenna({ loaderData, actionData }: Route.ComponentProps) {
   const { project, isFirst, dismissed, bands } = loaderData;
   const sent = actionData && "sent" in actionData ? actionData : null;
+  const question = sent && "question" in sent ? sent.question : null;
   return (
     <article className="grid gap-10 max-w-[64rem]">
       <header className="grid gap-2">
@@ -140,7 +140,17 @@ export default function EditAntenna({ loaderData, actionData }: Route.ComponentP
         </p>
       </header>
       <AntennaCautions dismissed={dismissed} />
-      <AntennaForm data={loaderData} answer={sent} errors={sent?.errors ?? actionDataErrors(actionData)} />
+      {question ? (
+        <EditConflict
+          key={question.conflict.was}
+          intent="keep"
+          conflict={question.conflict}
+          labels={question.labels}
+          words={wordsOf(question.conflict)}
+        />
+      ) : (
+        <AntennaForm data={loaderData} answer={sent} errors={sent?.errors ?? actionDataErrors(actionData)} />
+      )}
       <div id="bands">
         <BandsForm
           key={JSON.stringify(bands)}
@@ -150,6 +160,10 @@ export default function EditAntenna({ loaderData, actionData }: Route.ComponentP
       </div>
     </article>
   );
+}
+
+function wordsOf({ asked }: Conflict) {
+  return Object.fromEntries(asked.map(({ name }) => [name, (value: string) => antennaWords(name, value)]));
 }
 
 function actionDataErrors(actionData: Route.ComponentProps["actionData"]): Record<string, string[] | null> {

@@ -51,9 +51,9 @@ const benchFields = {
     .optional()
     .transform((text) => text ?? ""),
   own: z
-    .literal("yes")
+    .enum(["yes", "no"])
     .optional()
-    .transform((own): "yes" | "no" => own ?? "no"),
+    .transform((own) => own ?? "no"),
 };
 
 /** A day in UTC; one that is yet to come would leave every sweep until then without a bench. */

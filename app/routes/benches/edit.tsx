@@ -1,6 +1,8 @@
+import type { SubmissionResult } from "@conform-to/react";
 import { parseWithZod } from "@conform-to/zod/v4";
 import { data, Form, useNavigation } from "react-router";
 import { requireProject } from "~/auth/require.server";
+import { type Conflict, EditConflict } from "~/components/edit-conflict/EditConflict";
 import { Breadcrumbs } from "~/components/ui/Breadcrumbs";
 import { Button } from "~/components/ui/Button";
 import * as benchReferences from "~/db/bench-references.server";
@@ -45,16 +47,15 @@ export async function action(args: Route.ActionArgs) {
   if (!person) throw refused("Sign in first. Nothing was changed.");
   const { bench } = await requireOwnBench(access, args.params.bench);
   const submission = parseWithZod(await args.request.formData(), { schema: editBenchSchema });
-  if (submission.status !== "success") return data({ lastResult: submission.reply() }, { status: 400 });
+  if (submission.status !== "success") return answer(submission.reply(), 400);
   const value = submission.value;
   const page = `/projects/${project.publicId}/benches/${bench.publicId}`;
   switch (value.intent) {
     case "bench": {
       const { intent: _, was, ...wanted } = value;
-      const { conflicts, now } = await changeBench(bench, person, parseWas(was), wanted);
-      if (conflicts.length === 0) return redirectWithMessage(page, "The bench was changed.");
-      const fieldErrors = Object.fromEntries(conflicts.map((name) => [name, [changedMeanwhile(now[name])]]));
-      return data({ lastResult: submission.reply({ fieldErrors }), now }, { status: 409 });
+      const conflict = await changeBench(bench, person, parseWas(was), wanted);
+      if (conflict) return answer(submission.reply(), 409, conflict);
+      return redirectWithMessage(page, "The bench was changed.");
     }
     case "version": {
       const { intent: _, version: publicId, kinds = {}, ...wanted } = value;
@@ -62,7 +63,7 @@ export async function action(args: Route.ActionArgs) {
       const asked = Object.values(kinds);
       if (new Set(asked).size < asked.length) {
         const formErrors = ["Two references can't be of one kind. Nothing was changed."];
-        return data({ lastResult: submission.reply({ formErrors }) }, { status: 400 });
+        return answer(submission.reply({ formErrors }), 400);
       }
       await correctVersion(bench, version.id, person, wanted, new Map(Object.entries(kinds)));
       return redirectWithMessage(
@@ -75,8 +76,8 @@ export async function action(args: Route.ActionArgs) {
   }
 }
 
-function changedMeanwhile(now: string): string {
-  return `Somebody else made this “${now.slice(0, 80)}” in the meantime. Nothing was changed; keep this once more to put yours in its place.`;
+function answer(lastResult: SubmissionResult<string[]>, status: number, conflict?: Conflict) {
+  return data({ lastResult, conflict }, { status });
 }
 
 export default function EditBench({ loaderData, actionData }: Route.ComponentProps) {
@@ -86,6 +87,7 @@ export default function EditBench({ loaderData, actionData }: Route.ComponentPro
   const lastOf = (intent: string) => (last?.initialValue?.intent === intent ? last : undefined);
   const [aboutLast, versionLast] = [lastOf("bench"), lastOf("version")];
   const base = `/projects/${project.publicId}/benches`;
+  const conflict = actionData?.conflict;
   return (
     <div className="max-w-[44rem] grid gap-10">
       <div className="grid gap-2">
@@ -97,22 +99,27 @@ export default function EditBench({ loaderData, actionData }: Route.ComponentPro
         />
         <h2>Details of {bench.name}</h2>
       </div>
-      <Form method="post" className="grid gap-6" key={`bench-${JSON.stringify(about)}`}>
-        <input
-          type="hidden"
-          name="was"
-          value={JSON.stringify(actionData && "now" in actionData ? actionData.now : about)}
+      {conflict ? (
+        <EditConflict
+          key={conflict.was}
+          intent="bench"
+          conflict={conflict}
+          labels={{ name: "Name", description: "Description", own: "It is my own" }}
         />
-        <BenchFields
-          values={(aboutLast?.initialValue ?? about) as Record<string, string>}
-          errors={aboutLast?.error ?? {}}
-        />
-        <div>
-          <Button name="intent" value="bench" busy={busy === "bench"}>
-            Keep this
-          </Button>
-        </div>
-      </Form>
+      ) : (
+        <Form method="post" className="grid gap-6" key={`bench-${JSON.stringify(about)}`}>
+          <input type="hidden" name="was" value={JSON.stringify(about)} />
+          <BenchFields
+            values={(aboutLast?.initialValue ?? about) as Record<string, string>}
+            errors={aboutLast?.error ?? {}}
+          />
+          <div>
+            <Button name="intent" value="bench" busy={busy === "bench"}>
+              Keep this
+            </Button>
+          </div>
+        </Form>
+      )}
       <section className="grid gap-4" aria-labelledby="version-details">
         <h2 id="version-details">
           {versionCount > 1 ? `As it was in version ${version.number}` : "As it is"}

@@ -8,7 +8,8 @@ import { redirectWithMessage } from "~/services/flash.server";
 import { parseWas } from "~/services/merge-edit";
 import { expectedAfter } from "~/services/step-expectations.server";
 import { changeStep, makeStep, type StepWas } from "~/services/steps.server";
-import { quantitiesFrom, sentStep } from "./step-form";
+import { stepConflict } from "./step-conflict";
+import { quantitiesFrom, sentStep, textsOf } from "./step-form";
 import { stepSchema } from "./steps.schema";
 
 /** The form of a step, new or known: kept, or answered with what stands in the way and all that was typed. */
@@ -46,10 +47,9 @@ export async function keepStep(access: ProjectAccess, form: FormData, step: step
       return data({ sent, errors }, { status: 400 });
     }
     case "conflict": {
-      const was = { ...parseWas<StepWas>(value.was) };
-      for (const field of result.conflicts) Object.assign(was, { [field]: result.now[field] });
-      const conflicts = result.conflicts.map((field) => ({ field, now: shownNow(field, result.now) }));
-      return data({ sent: { ...sent, was: JSON.stringify(was) }, errors: {}, conflicts }, { status: 409 });
+      const theirs = textsOf(result.stored, unit);
+      const conflict = stepConflict({ ...result, sent, theirs, confirmed: value.confirm !== undefined });
+      return data({ sent, errors: {}, conflict }, { status: 409 });
     }
     case "gone":
       return redirectWithMessage(
@@ -78,9 +78,4 @@ function placesOf(rows: Partial<Record<string, string>>[]): number[] {
 
 function minuteOf(at: Date | null): string {
   return at?.toISOString().slice(0, 16) ?? "";
-}
-
-function shownNow(field: keyof StepWas, now: StepWas): string {
-  if (field === "quantities") return "other quantities";
-  return `“${String(now[field] ?? "nothing").slice(0, 120)}”`;
 }

@@ -88,8 +88,18 @@ export function sentStep(payload: Record<string, unknown>): StepTexts & { was: s
     state: String(sent.state ?? "done"),
     at: String(sent.at ?? ""),
     was: String(sent.was ?? ""),
-    quantities: Array.isArray(sent.quantities) ? sent.quantities.map((row) => row ?? {}) : [],
+    quantities: rowsOf(sent.quantities),
   };
+}
+
+/** Rows as a form sends them, or as one field does; none where it makes no sense. */
+export function rowsOf(sent: unknown): QuantityTexts[] {
+  try {
+    const rows: unknown = typeof sent === "string" ? JSON.parse(sent) : sent;
+    return Array.isArray(rows) ? rows.map((row) => row ?? {}) : [];
+  } catch {
+    return [];
+  }
 }
 
 function toText({ to, target }: StepQuantity, unit: LengthUnit): string {

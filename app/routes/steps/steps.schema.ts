@@ -32,11 +32,14 @@ export function stepSchema(unit: LengthUnit) {
       state: z.enum(["planned", "done"], { error: "Say whether it is done or planned." }),
       at: momentField.optional().transform((at) => at ?? null),
       confirm: z.string().optional(),
-      quantities: z
-        .array(z.record(z.string(), z.string().optional()).optional())
-        .max(40, "At most 40 quantities.")
-        .optional()
-        .transform((rows) => rows ?? []),
+      quantities: z.preprocess(
+        wholeRows,
+        z
+          .array(z.record(z.string(), z.string().optional()).optional())
+          .max(40, "At most 40 quantities.")
+          .optional()
+          .transform((rows) => rows ?? []),
+      ),
     })
     .transform((value, context) => {
       const quantities: ReadQuantity[] = [];
@@ -120,6 +123,16 @@ function readNumber(
 
 function lengthOf(parsed: ReturnType<typeof parseLength>) {
   return parsed.ok ? { value: parsed.metres, message: parsed.ask } : { value: null, message: parsed.message };
+}
+
+/** All rows in one field, as the question to the later of two people sends them. */
+function wholeRows(value: unknown): unknown {
+  if (typeof value !== "string") return value;
+  try {
+    return JSON.parse(value);
+  } catch {
+    return value;
+  }
 }
 
 /** `a1b2.lengthM`, as the form's choice has it. */

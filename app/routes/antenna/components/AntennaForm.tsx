@@ -12,7 +12,7 @@ export type FieldErrors = Record<string, string[] | null>;
 export interface AntennaFormProps {
   data: EditAntennaData;
   /** What the server said to the form as it was sent; null before it was. */
-  answer: { sent: SentAntenna; more?: boolean; conflicts?: string[]; was?: string } | null;
+  answer: { sent: SentAntenna; more?: boolean } | null;
   errors: FieldErrors;
 }
 
@@ -26,8 +26,7 @@ export function AntennaForm({ data, answer, errors }: AntennaFormProps) {
   const [whole, confirm] = [errors[""]?.[0], errors.confirm?.[0]];
   return (
     <Form method="post" className="grid gap-8" noValidate>
-      <input type="hidden" name="was" value={answer?.was ?? answer?.sent.was ?? data.was} />
-      {answer?.conflicts && <Conflicts lines={answer.conflicts} />}
+      <input type="hidden" name="was" value={answer?.sent.was ?? data.was} />
       {whole && (
         <p role="alert" className="text-alarm">
           {whole}
@@ -91,21 +90,5 @@ export function AntennaForm({ data, answer, errors }: AntennaFormProps) {
         </div>
       </section>
     </Form>
-  );
-}
-
-function Conflicts({ lines }: { lines: string[] }) {
-  return (
-    <div role="alert" className="panel grid gap-2">
-      <p className="font-semibold">
-        Somebody else changed this in the meantime, or it was otherwise on that day.
-      </p>
-      <ul className="list-disc pl-5">
-        {lines.map((line) => (
-          <li key={line}>{line}</li>
-        ))}
-      </ul>
-      <p>Nothing was kept. Keep it once more to put yours, on the right, in its place.</p>
-    </div>
   );
 }

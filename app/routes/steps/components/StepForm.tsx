@@ -1,7 +1,9 @@
 import { useState } from "react";
 import { Form, Link, useNavigation } from "react-router";
+import { type Conflict, EditConflict } from "~/components/edit-conflict/EditConflict";
 import { Button } from "~/components/ui/Button";
 import { CheckboxField, FieldGroup, InputField, TextareaField } from "~/components/ui/Field";
+import { quantityLines } from "../step-conflict";
 import type { StepTexts, TargetOption } from "../step-form";
 import { QuantityFields } from "./QuantityFields";
 
@@ -19,7 +21,7 @@ export interface StepFormProps {
     sent: StepTexts & { was: string };
     errors: Record<string, string[] | null>;
     more?: boolean;
-    conflicts?: { field: string; now: string }[];
+    conflict?: Conflict;
   } | null;
   submit: string;
 }
@@ -28,6 +30,16 @@ export interface StepFormProps {
 export function StepForm({ data, answer, submit }: StepFormProps) {
   const busy = useNavigation().formData?.get("intent") === "keep";
   const [more, setMore] = useState(0);
+  if (answer?.conflict) {
+    const words = {
+      quantities: (rows: string) => quantityLines(rows, data.targets),
+      at: (at: string) => at.replace("T", " "),
+    };
+    const { conflict } = answer;
+    return (
+      <EditConflict key={conflict.was} intent="keep" conflict={conflict} labels={LABELS} words={words} />
+    );
+  }
   const shown = answer?.sent ?? data.texts;
   const errors = answer?.errors ?? {};
   const spare = more + (answer?.more ? 1 : 0) + (shown.quantities.length === 0 ? 1 : 0);
@@ -36,7 +48,6 @@ export function StepForm({ data, answer, submit }: StepFormProps) {
   return (
     <Form method="post" className="grid gap-6" noValidate>
       <input type="hidden" name="was" value={answer?.sent.was ?? data.was} />
-      {answer?.conflicts && <Conflicts conflicts={answer.conflicts} />}
       <InputField
         label="What was changed"
         hint="In a line: “Trimmed the reed pole”."
@@ -125,25 +136,9 @@ export function StepForm({ data, answer, submit }: StepFormProps) {
   );
 }
 
-function Conflicts({ conflicts }: { conflicts: { field: string; now: string }[] }) {
-  return (
-    <div role="alert" className="panel grid gap-2">
-      <p className="font-semibold">Somebody else changed this step in the meantime.</p>
-      <ul className="list-disc pl-5">
-        {conflicts.map(({ field, now }) => (
-          <li key={field}>
-            {NAMES[field] ?? field}: now {now}
-          </li>
-        ))}
-      </ul>
-      <p>Nothing was kept. Keep it once more to put yours in its place.</p>
-    </div>
-  );
-}
-
-const NAMES: Record<string, string> = {
-  title: "what was changed",
-  body: "what else is to be said",
-  at: "when",
-  quantities: "measured",
+const LABELS = {
+  title: "What was changed",
+  quantities: "Measured",
+  at: "When",
+  body: "What else is to be said",
 };
