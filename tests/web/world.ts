@@ -49,8 +49,13 @@ export async function makePerson(word = "someone", more: { administrator?: boole
   return { id, publicId: user.publicId, userName };
 }
 
+/** The line that sets the cookie of somebody who signed in. */
+export function sessionOf(person: Someone): Promise<string> {
+  return startSession(new Request(SERVER), person.id);
+}
+
 export async function signIn(person: Someone): Promise<Browser> {
-  return new Browser(await startSession(new Request(SERVER), person.id));
+  return new Browser(await sessionOf(person));
 }
 
 export function tokenOf(person: Someone, scope: "read" | "write" = "write"): Promise<string> {
