@@ -1,4 +1,5 @@
 import type { ProjectAction, SiteAction } from "~/auth/permissions";
+import { SERVER } from "./browser.ts";
 import {
   type Crew,
   onePixel,
@@ -9,6 +10,7 @@ import {
   touchstone,
   unique,
   waitingMail,
+  waitingMention,
 } from "./world.ts";
 
 /** What each route asks for, and the smallest form that it takes. One line a case; the walk does the rest. */
@@ -446,6 +448,28 @@ export const EXPECTATIONS: Record<string, Expectation> = {
   "routes/write-ups/feed.ts": { GET: read },
   "routes/write-ups/write-up.tsx": { GET: anybody },
   "routes/write-ups/html.ts": { GET: anybody },
+
+  "routes/webmention/endpoint.tsx": {
+    GET: anybody,
+    POST: [
+      {
+        ask: { site: "site.read" },
+        form: ({ place }) => ({
+          source: `https://notes.example/${unique("page")}`,
+          target: `${SERVER}/write-ups/${place.writeUp}`,
+        }),
+      },
+    ],
+  },
+  "routes/webmention/mentions.tsx": {
+    GET: [{ ask: { project: "mention.moderate" } }],
+    POST: (["show", "hide", "check"] as const).map((intent) => ({
+      name: intent,
+      ask: { project: "mention.moderate" as const },
+      prepare: ({ place }: About) => waitingMention(place),
+      form: ({ prepared }: About) => ({ intent, mention: prepared }),
+    })),
+  },
 
   "routes/photographs/photographs.ts": {
     POST: [

@@ -10,6 +10,7 @@ import * as projects from "~/db/projects.server";
 import * as reports from "~/db/reports.server";
 import * as sweeps from "~/db/sweeps.server";
 import * as trails from "~/db/trails.server";
+import * as webmentions from "~/db/webmentions.server";
 import * as writeUps from "~/db/write-ups.server";
 import { IDEAL_STANDARDS, NOTHING_GIVEN } from "~/measurement/bench";
 import { addAttachment } from "~/services/attachments.server";
@@ -248,6 +249,20 @@ export async function waitingMail(): Promise<string> {
     await outbox.putOff(row?.id ?? 0, new Date(Date.now() + 3.6e6), "put off by a test", tx);
   });
   return (await outbox.findByMessageId(messageId))?.publicId ?? "";
+}
+
+/** A page elsewhere that links to the place's write-up and waits for an owner's word; its public id. */
+export function waitingMention(place: Place): Promise<string> {
+  return inTransaction(async (tx) => {
+    const found = await writeUps.findByPublicId(place.writeUp, tx);
+    const source = `https://notes.example/${unique("page")}`;
+    const of = { plateId: null, writeUpId: found?.writeUp.id ?? 0 };
+    const target = `${SERVER}/write-ups/${place.writeUp}`;
+    const publicId = await webmentions.receive({ source, target, ...of }, tx);
+    const row = await webmentions.findByPublicId(publicId, tx);
+    await webmentions.update(row?.mention.id ?? 0, { state: "verified", title: "Reeds and radials" }, tx);
+    return publicId;
+  });
 }
 
 /** Sweeps that were never read, many of them of one moment: for lists. */

@@ -4,6 +4,7 @@ import { data } from "react-router";
 import { requireProject } from "~/auth/require.server";
 import type { Conflict } from "~/components/edit-conflict/EditConflict";
 import * as projects from "~/db/projects.server";
+import * as webmentions from "~/db/webmentions.server";
 import { refused } from "~/errors";
 import { redirectWithMessage } from "~/services/flash.server";
 import { parseWas } from "~/services/merge-edit";
@@ -14,6 +15,7 @@ import {
   changeLicence,
   deleteProject,
 } from "~/services/projects.server";
+import { CitedElsewhere } from "../webmention/components/CitedElsewhere.tsx";
 import type { Route } from "./+types/settings";
 import { bandInHertz, bandRowOf } from "./band-rows.ts";
 import { AboutConflict } from "./components/AboutConflict.tsx";
@@ -27,13 +29,17 @@ export const meta: Route.MetaFunction = () => [{ title: "Project settings · Swa
 
 export async function loader(args: Route.LoaderArgs) {
   const { project } = await requireProject(args, "project.edit");
-  const bands = await projects.findDesignBands(project.id);
+  const [bands, mentionsWaiting] = await Promise.all([
+    projects.findDesignBands(project.id),
+    webmentions.countWaiting(project.id),
+  ]);
   const { title, summary, visibility, ituRegion } = project;
   return {
     was: { title, summary, visibility, ituRegion },
     about: aboutOf(project),
     bands: bands.map(bandRowOf),
     licence: project.licence,
+    mentionsWaiting,
   };
 }
 
@@ -98,6 +104,7 @@ export default function ProjectSettings({ loaderData, actionData }: Route.Compon
         lastResult={lastOf("bands")}
       />
       <LicenceForm licence={loaderData.licence} errors={lastOf("licence")?.error?.licence ?? undefined} />
+      <CitedElsewhere waiting={loaderData.mentionsWaiting} />
       <DeleteForm title={loaderData.about.title} lastResult={lastOf("delete")} />
     </div>
   );
