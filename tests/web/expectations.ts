@@ -48,7 +48,7 @@ export interface Case {
   /** Makes what the form names; its answer is `prepared`. */
   prepare?: (about: About) => Promise<string>;
   form?: (about: About) => Record<string, string | Blob>;
-  json?: () => unknown;
+  json?: (about: About) => unknown;
   /** The case destroys what it is asked of: it gets a project of its own for each role, empty or with a sweep. */
   destroys?: "project" | "sweep";
   /** The case ends the account that asks: somebody new asks in place of each. */
@@ -693,6 +693,21 @@ export const EXPECTATIONS: Record<string, Expectation> = {
       {
         ask: { api: "step.edit" },
         json: () => ({ title: "From a script", state: "done", at: "2026-05-01T10:00:00Z" }),
+      },
+    ],
+  },
+  "routes/api/write-ups.ts": {
+    GET: apiRead,
+    POST: [{ ask: { api: "write-up.edit" }, json: () => ({ title: unique("By script") }) }],
+  },
+  // Published, so that every token reads it.
+  "routes/api/write-up.ts": {
+    GET: [{ ask: { api: "any-member" } }],
+    POST: [
+      {
+        ask: { api: "write-up.edit" },
+        prepare: ({ place }) => rewriteDraft(place),
+        json: ({ prepared }) => ({ title: "So", revision: prepared }),
       },
     ],
   },

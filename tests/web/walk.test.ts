@@ -145,7 +145,7 @@ async function send(
   }
   const init: RequestInit = { method };
   if (one.json) {
-    init.body = JSON.stringify(one.json());
+    init.body = JSON.stringify(one.json({ ...about, prepared }));
     init.headers = { "Content-Type": "application/json" };
   } else if (method === "POST") {
     const body = new FormData();

@@ -12,6 +12,7 @@ import {
   reference,
 } from "./openapi-parts.ts";
 import { STORY_PATHS } from "./openapi-story.ts";
+import { WRITE_UP_PATHS } from "./openapi-write-ups.ts";
 import * as shapes from "./schemas.ts";
 import { uploadFieldsSchema } from "./upload.schema.ts";
 
@@ -144,5 +145,6 @@ const PATHS: Record<string, { get?: Operation; post?: Operation }> = {
     }),
   },
   ...STORY_PATHS,
+  ...WRITE_UP_PATHS,
   ...COMPARE_PATHS,
 };

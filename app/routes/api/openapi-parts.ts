@@ -3,6 +3,7 @@ import * as compare from "./compare-schemas.ts";
 import * as shapes from "./schemas.ts";
 import * as story from "./story-schemas.ts";
 import { givenSchema } from "./upload.schema.ts";
+import * as writeUps from "./write-up-schemas.ts";
 
 /** The named schemas of the OpenAPI document, and what its paths are made of. */
 
@@ -35,6 +36,10 @@ const COMPONENTS = {
   Causes: story.causesShape,
   Bands: compare.bandsShape,
   Comparison: compare.comparisonShape,
+  WriteUp: writeUps.writeUpShape,
+  WriteUpList: writeUps.writeUpListShape,
+  NewWriteUp: writeUps.newWriteUpSchema,
+  WriteUpChange: writeUps.writeUpChangeSchema,
 } satisfies Record<string, z.ZodType>;
 
 export function componentSchemas() {

@@ -1,10 +1,12 @@
 import { data } from "react-router";
 import { effectiveRole, mayInProject, type ProjectAction } from "~/auth/permissions";
 import { type AccessArgs, findPerson } from "~/auth/require.server";
+import { Mentions } from "~/components/mentions/Mentions";
 import * as projects from "~/db/projects.server";
 import * as writeUps from "~/db/write-ups.server";
 import { env } from "~/env.server";
 import { licenceOf } from "~/services/plates/licences";
+import { shownMentions } from "~/services/webmention/shown.server";
 import { peopleOf } from "~/services/write-ups/cite";
 import { platesOf } from "~/services/write-ups/frozen";
 import { drawPage, summaryOf } from "~/services/write-ups/published.server";
@@ -23,9 +25,10 @@ export async function loader(args: Route.LoaderArgs) {
   const publication = await requirePublication(args.request, args.params);
   const { writeUp, project, version, frozen } = publication;
   const reader = await readerOf(args, project.publicId);
-  const [article, versions] = await Promise.all([
+  const [article, versions, mentions] = await Promise.all([
     drawPage(publication, reader),
     writeUps.findVersions(writeUp.id),
+    shownMentions({ writeUpId: writeUp.id }),
   ]);
   const address = `${env.BASE_URL}/write-ups/${writeUp.publicId}`;
   const [plate] = platesOf(frozen.figures);
@@ -37,6 +40,7 @@ export async function loader(args: Route.LoaderArgs) {
       title: version.title,
       summary: summaryOf(version.body),
       article,
+      mentions,
       number: version.number,
       latest: writeUp.publishedNumber ?? version.number,
       versions,
@@ -76,6 +80,7 @@ export default function WriteUp({ loaderData }: Route.ComponentProps) {
         <Contents headings={article.headings} />
         <div className="grid gap-8 min-w-0">
           <ArticleText html={article.html} />
+          <Mentions mentions={loaderData.mentions} />
           <Foot page={loaderData} />
         </div>
       </div>

@@ -1,0 +1,47 @@
+import { inPath, inQuery, type Operation, operation, reference } from "./openapi-parts.ts";
+import { writeUpQuerySchema } from "./write-up-schemas.ts";
+
+/** Paths of the OpenAPI document for write-ups. */
+export const WRITE_UP_PATHS: Record<string, { get?: Operation; post?: Operation }> = {
+  "/projects/{project}/write-ups": {
+    get: operation({
+      operationId: "listWriteUps",
+      summary:
+        "The write-ups of a project, what was written on last first; drafts only for who may write them",
+      parameters: [inPath("project")],
+      answer: "WriteUpList",
+    }),
+    post: operation({
+      operationId: "makeWriteUp",
+      summary: "Begin a write-up; it is a draft until somebody publishes it on its page",
+      parameters: [inPath("project")],
+      requestBody: {
+        required: true,
+        content: { "application/json": { schema: reference("NewWriteUp") } },
+      },
+      status: "201",
+      answer: "WriteUp",
+      refusals: ["400", "411", "413", "415", "422"],
+    }),
+  },
+  "/write-ups/{writeUp}": {
+    get: operation({
+      operationId: "getWriteUp",
+      summary: "One write-up with its text: published ones for every token, drafts for who may write them",
+      parameters: [inPath("writeUp"), ...inQuery(writeUpQuerySchema)],
+      answer: "WriteUp",
+      refusals: ["422"],
+    }),
+    post: operation({
+      operationId: "changeWriteUp",
+      summary: "Change the draft; what is published stays as it is",
+      parameters: [inPath("writeUp")],
+      requestBody: {
+        required: true,
+        content: { "application/json": { schema: reference("WriteUpChange") } },
+      },
+      answer: "WriteUp",
+      refusals: ["400", "409", "411", "413", "415", "422"],
+    }),
+  },
+};

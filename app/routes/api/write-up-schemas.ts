@@ -1,0 +1,46 @@
+import { z } from "zod";
+import { bodyField, titleField } from "~/routes/write-ups/write-ups.schema";
+
+/** The shapes of the API for write-ups. */
+
+const id = z.string().describe("Short public id");
+const time = z.iso.datetime().describe("UTC");
+
+export const writeUpSummaryShape = z.object({
+  id,
+  project: id,
+  title: z.string(),
+  state: z
+    .enum(["draft", "published", "taken-back"])
+    .describe("Drafts are listed for those who may write them"),
+  version: z.number().int().nullable().describe("The published one; null where none is"),
+  publishedAt: time.nullable(),
+  updatedAt: time.describe("Last written in"),
+  address: z.string().describe("Where it is read once it is published; answers 410 while it is taken back"),
+});
+
+export const writeUpListShape = z.object({ items: z.array(writeUpSummaryShape) });
+
+export const writeUpShape = writeUpSummaryShape.extend({
+  body: z.string().describe("Markdown: the published text, or with `draft=yes` as it is being written"),
+  revision: z.string().describe("Of title and text; send it back with a change"),
+});
+
+export const newWriteUpSchema = z.object({ title: titleField, body: bodyField });
+
+export const writeUpChangeSchema = z.object({
+  title: titleField.optional(),
+  body: z
+    .string()
+    .pipe(bodyField)
+    .optional()
+    .describe("Markdown; a figure is a line of its own: ![caption](#dip:…), #sweep:… or #plate:…"),
+  revision: z
+    .string()
+    .max(40)
+    .describe("Of the draft that this is a change of; 409 where it is another by now"),
+});
+
+export const writeUpQuerySchema = z.object({
+  draft: z.literal("yes").optional().describe("As it is being written, for those who may write it"),
+});
