@@ -28,6 +28,8 @@ export interface OverlayInput {
   designBands: readonly ChartBand[];
   view: ChartView;
   plotHeightPx?: number;
+  /** Fixed width of the plot; without it the drawing fits any width. */
+  plotWidthPx?: number;
 }
 
 export interface PlacedTrace {
@@ -60,7 +62,9 @@ const PLOT_HEIGHT_PX = 280;
 const NAME_GAP_PX = 15;
 
 export function buildOverlayScene(input: OverlayInput): OverlayScene {
-  const { view, plotHeightPx = PLOT_HEIGHT_PX, links = [] } = input;
+  const { view, plotHeightPx = PLOT_HEIGHT_PX, links = [], plotWidthPx } = input;
+  const pathWidth = plotWidthPx ?? PATH_WIDTH;
+  const widths = plotWidthPx ? [plotWidthPx] : undefined;
   const scale = frequencyScale(view.scale, view.fromHz, view.toHz);
   const drawn = input.traces.map((trace) => ({ trace, runs: decimate(trace.points, scale, COLUMNS) }));
   const all = drawn.flatMap(({ runs }) => runs.flatMap(({ magnitudes }) => magnitudes));
@@ -71,7 +75,7 @@ export function buildOverlayScene(input: OverlayInput): OverlayScene {
   });
   const keep = (y: number) => Math.min(plotHeightPx, Math.max(0, y));
   const paths = drawn.map(({ runs }) =>
-    profilePaths(runs, { width: PATH_WIDTH, heightPx: plotHeightPx, yOfMagnitude: axis.yOfMagnitude }),
+    profilePaths(runs, { width: pathWidth, heightPx: plotHeightPx, yOfMagnitude: axis.yOfMagnitude }),
   );
   const traces = drawn.map(({ trace, runs }, style): PlacedTrace => {
     const last = runs.at(-1);
@@ -85,8 +89,8 @@ export function buildOverlayScene(input: OverlayInput): OverlayScene {
   });
   const styleOf = new Map(traces.map(({ id, style }) => [id, style]));
   return {
-    frequency: frequencyAxis(scale),
-    ribbon: ribbonBands(scale, input.bands, input.designBands),
+    frequency: frequencyAxis(scale, widths),
+    ribbon: ribbonBands(scale, input.bands, input.designBands, widths),
     valueTicks: axis.ticks,
     traces: spreadNames(traces, plotHeightPx),
     links: links.map(({ id, stops }) => ({
@@ -100,7 +104,7 @@ export function buildOverlayScene(input: OverlayInput): OverlayScene {
         })),
     })),
     plotHeightPx,
-    pathWidth: PATH_WIDTH,
+    pathWidth,
     remarks: [
       paths.some(({ beyondTop }) => beyondTop) && axis.beyondTop,
       paths.some(({ beyondBottom }) => beyondBottom) && axis.beyondBottom,

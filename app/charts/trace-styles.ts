@@ -1,4 +1,4 @@
-import { PAGE_PALETTE } from "./palette.ts";
+import { PAGE_PALETTE, type Palette } from "./palette.ts";
 
 export interface TraceStyle {
   colour: string;
@@ -7,14 +7,13 @@ export interface TraceStyle {
 }
 
 /** The look of the n-th of several lines: MOST_TRACES of them differ, each by its own dash. */
-export function traceStyle(index: number): TraceStyle {
+export function traceStyle(index: number, palette: Palette = PAGE_PALETTE): TraceStyle {
   const at = index % MOST_TRACES;
-  return { colour: COLOURS[at % COLOURS.length], dash: DASHES[at] };
+  return { colour: palette[COLOURS[at % COLOURS.length]], dash: DASHES[at] };
 }
 
-const { ink, fen, clay, iris } = PAGE_PALETTE;
 /** Four that stay apart in full and with each kind of colour blindness, in both themes (tests/charts/trace-styles.test.ts). */
-const COLOURS = [clay, fen, ink, iris];
+const COLOURS = ["clay", "fen", "ink", "iris"] as const;
 /** Four lines that follow one another differ in colour, and those of one colour in a dash that is easily told. */
 const DASHES = [
   "7 4",
