@@ -23,6 +23,7 @@ import { startJobs } from "~/services/jobs.server";
 import { knownMethods } from "~/services/known-methods.server";
 import { log } from "~/services/log.server";
 import { metricsText } from "~/services/metrics.server";
+import { oneClick } from "~/services/one-click.server";
 import { startOutbox } from "~/services/outbox.server";
 import { closeReaders } from "~/services/reading.server";
 import { securityHeaders } from "~/services/security-headers.server";
@@ -48,6 +49,7 @@ export function createApp(development = false): Express {
     response.set("Content-Type", "text/plain; version=0.0.4; charset=utf-8").send(await metricsText());
   });
   app.use(securityHeaders(development));
+  app.use(oneClick);
   app.use(knownMethods);
   app.use(bodyLimits);
   app.use(compression({ filter: isWorthCompressing, level: COMPRESSION_LEVEL }));

@@ -1,4 +1,4 @@
-import { asc, eq } from "drizzle-orm";
+import { and, asc, desc, eq, lte } from "drizzle-orm";
 import { db, type Queryable } from "./client.server.ts";
 import { noteVersions, users } from "./schema/index.ts";
 
@@ -16,6 +16,17 @@ export async function findAllByNote(noteId: number, tx: Queryable = db) {
     .where(eq(noteVersions.noteId, noteId))
     .orderBy(asc(noteVersions.id))
     .limit(MOST_VERSIONS);
+}
+
+/** What a note said before a change of that moment. */
+export async function findLastUntil(noteId: number, until: Date, tx: Queryable = db) {
+  const rows = await tx
+    .select({ body: noteVersions.body })
+    .from(noteVersions)
+    .where(and(eq(noteVersions.noteId, noteId), lte(noteVersions.until, until)))
+    .orderBy(desc(noteVersions.until), desc(noteVersions.id))
+    .limit(1);
+  return rows[0];
 }
 
 export async function insert(

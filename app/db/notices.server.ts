@@ -74,6 +74,16 @@ export async function insertNew(values: NewNotice[], tx: Queryable): Promise<Map
   return made;
 }
 
+/** Who was told that a note names them. */
+export async function findNamed(noteId: number, tx: Queryable): Promise<number[]> {
+  const rows = await tx
+    .select({ userId: notices.userId })
+    .from(notices)
+    .where(and(eq(notices.noteId, noteId), eq(notices.reason, "mention")))
+    .limit(10_000);
+  return rows.map(({ userId }) => userId);
+}
+
 export async function setMailed(ids: number[], tx: Queryable) {
   if (ids.length > 0) await tx.update(notices).set({ mailedAt: new Date() }).where(inArray(notices.id, ids));
 }

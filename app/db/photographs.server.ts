@@ -32,6 +32,13 @@ export async function findByPublicId(publicId: string, tx: Queryable = db) {
   return rows[0] as (typeof rows)[number] | undefined;
 }
 
+/** The bench or step that is photographed; neither for the antenna. */
+export async function findSubject({ benchId, stepId }: PhotographOf, tx: Queryable = db) {
+  const [bench] = benchId ? await tx.select().from(benches).where(eq(benches.id, benchId)).limit(1) : [];
+  const [step] = stepId ? await tx.select().from(steps).where(eq(steps.id, stepId)).limit(1) : [];
+  return { bench, step };
+}
+
 export async function insert(
   values: Omit<typeof photographs.$inferInsert, "id" | "publicId" | "createdAt">,
   tx: Queryable,

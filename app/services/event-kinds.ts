@@ -17,6 +17,8 @@ export const EVENT_KINDS = [
   "antenna.changed",
   "bench.added",
   "bench.changed",
+  "photograph.added",
+  "photograph.deleted",
   "plate.made",
   "plate.mended",
   "plate.withdrawn",
@@ -34,6 +36,8 @@ export type EventKind = (typeof EVENT_KINDS)[number];
 /** What goes to the inboxes of those who follow; the rest stands in the account of the project. */
 export const TOLD_KINDS: ReadonlySet<EventKind> = new Set([
   "note.added",
+  // Those whom the change names, and nobody else.
+  "note.edited",
   "verdict.given",
   "sweep.added",
   "step.added",

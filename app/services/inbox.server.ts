@@ -28,7 +28,7 @@ export async function inboxOf(userId: number, page: { cursor?: string; project?:
     const key = `${row.project.publicId} ${subjectOf(row.about)}`;
     const thread = threads.get(key) ?? {
       publicId: row.publicId,
-      title: row.about.title || row.project.title,
+      title: (row.reason !== "invited" && row.about.title) || row.project.title,
       project: row.project,
       unread: 0,
       items: [],

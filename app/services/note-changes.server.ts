@@ -46,7 +46,7 @@ export async function editNote(
     await noteReferences.replaceAllOfNote(note.id, expanded.references, tx);
     const given = { projectId: note.projectId, by: input.by.id, publicIds: attachmentsIn(expanded.body) };
     await attachments.giveToNote(note.id, given, tx);
-    await tellOfNote("note.edited", { publicId: note.publicId, by: input.by, at: input.at }, tx);
+    await tellOfNote("note.edited", { publicId: note.publicId, by: input.by, at }, tx);
     return "done";
   });
 }

@@ -23,6 +23,8 @@ export interface WriteNote {
   clientKey?: string | null;
   /** When it was written, where that is not now. */
   createdAt?: Date;
+  /** It stands beside something that is told itself. */
+  quiet?: boolean;
 }
 
 export type NotePart = { fromHz: number; toHz: number } | { region: PictureRegion };
@@ -57,7 +59,8 @@ export async function writeNote(input: WriteNote, tx?: Transaction): Promise<{ p
     await noteReferences.replaceAllOfNote(id, expanded.references, within);
     const publicIds = attachmentsIn(expanded.body);
     await attachments.giveToNote(id, { projectId: input.project.id, by: input.author.id, publicIds }, within);
-    await tellOfNote("note.added", { publicId, by: input.author, at: input.createdAt }, within);
+    const { author: by, createdAt: at, quiet } = input;
+    await tellOfNote("note.added", { publicId, by, at, quiet }, within);
     return { publicId };
   };
   try {
@@ -73,13 +76,13 @@ export async function writeNote(input: WriteNote, tx?: Transaction): Promise<{ p
 /** Writes down what happened to a note, in the transaction that does it. */
 export async function tellOfNote(
   kind: "note.added" | "note.edited" | "note.removed",
-  { publicId, by, at }: { publicId: string; by: { id: number }; at?: Date },
+  { publicId, by, ...more }: { publicId: string; by: { id: number }; at?: Date; quiet?: boolean },
   tx: Transaction,
 ): Promise<void> {
   const found = await notes.findByPublicId(publicId, tx);
   if (!found) return;
   await record(
-    { projectId: found.note.projectId, kind, actorId: by.id, about: aboutNote(publicId, found), at },
+    { projectId: found.note.projectId, kind, actorId: by.id, about: aboutNote(publicId, found), ...more },
     tx,
   );
 }

@@ -52,7 +52,8 @@ export async function mailNotices(
   if (!to.email || rows.length === 0) return;
   const { href, headers } = await makeWayOut(to.id, project.id, tx);
   const lines = rows.map(noticeWords);
-  const subject = rows.length === 1 ? lines[0] : `${rows.length} things in ${project.title}`;
+  const subject =
+    rows.length === 1 ? subjectOf(rows[0], project) : `${rows.length} things in ${project.title}`;
   const parts = await Promise.all(
     rows.map((row, i) => partsOf(project, row, rows.length > 1 ? lines[i] : null)),
   );
@@ -67,6 +68,11 @@ export async function mailNotices(
     ],
   };
   await queueMail({ toAddress: to.email, userId: to.id, subject, words, headers, onceKey }, tx);
+}
+
+/** Somebody who was just added does not know yet what "the project" is. */
+function subjectOf(row: ToMail, project: AboutProject): string {
+  return row.reason === "invited" ? `${noticeWords(row)} ${project.title}` : noticeWords(row);
 }
 
 type ToMail = Awaited<ReturnType<typeof notices.findToMail>>[number];

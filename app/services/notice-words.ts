@@ -12,6 +12,7 @@ export function noticeWords(notice: {
   const who = notice.actor ?? "A former member";
   const kind = notice.kind as EventKind;
   if (kind === "mention.found") return `A page elsewhere cites ${about.title}; it waits for your word`;
+  if (reason === "invited") return `${who} added you to the project`;
   if (kind === "verdict.given") return `${who} gave a verdict: ${about.title || "open again"}`;
   if (kind === "sweep.added") return `${who} added the sweep ${about.title}`;
   if (kind === "step.added") return `${who} wrote down the step ${about.title}`;
@@ -44,5 +45,5 @@ export const WHY = {
   reply: "your note was answered",
   follow: "you follow it",
   verdict: "you follow it",
-  invited: "you were invited",
+  invited: "you were added to the project",
 } as const;

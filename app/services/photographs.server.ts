@@ -2,6 +2,7 @@ import { inTransaction, type Transaction } from "~/db/client.server";
 import { newPublicId } from "~/db/ids.server";
 import * as jobs from "~/db/jobs.server";
 import * as photographs from "~/db/photographs.server";
+import { record } from "./events.server.ts";
 import { cleanFileName, plainText } from "./file-names.ts";
 import { copiesOf, PhotographRefused } from "./photograph-copies.server.ts";
 import { deleteObject, getObject, putObject, sha256Of } from "./storage.server.ts";
@@ -41,6 +42,8 @@ export interface NewPhotograph {
   by: { id: number };
   file: { name: string; bytes: Uint8Array };
   caption: string;
+  /** When it was added, where that is not now. */
+  at?: Date;
 }
 
 export type AddedPhotograph = { kind: "added"; publicId: string } | { kind: "refused"; message: string };
@@ -52,6 +55,7 @@ export async function addPhotograph({
   by,
   file,
   caption,
+  at,
 }: NewPhotograph): Promise<AddedPhotograph> {
   if (file.bytes.length > MAX_PHOTOGRAPH_BYTES) return { kind: "refused", message: TOO_LARGE };
   if ((await photographs.countOf(of)) >= MOST_PHOTOGRAPHS) return { kind: "refused", message: TOO_MANY };
@@ -88,6 +92,7 @@ export async function addPhotograph({
         tx,
       );
       for (const job of undo) await jobs.deleteById(job, tx);
+      await tell("photograph.added", of, by, tx, at);
       return made;
     });
     return { kind: "added", publicId };
@@ -117,13 +122,30 @@ export function changeCaption(photograph: photographs.PhotographRow, caption: st
 }
 
 /** Deletes a photograph; its objects go once the row is gone. */
-export function deletePhotograph(photograph: photographs.PhotographRow): Promise<void> {
-  return inTransaction((tx) => deleteWithObjects(photograph, tx));
+export function deletePhotograph(photograph: photographs.PhotographRow, by: { id: number }): Promise<void> {
+  return inTransaction(async (tx) => {
+    await deleteWithObjects(photograph, tx);
+    await tell("photograph.deleted", photograph, by, tx);
+  });
 }
 
 /** Deletes all photographs of a bench or a step, in the transaction that deletes that: rows that merely cascade leave objects. */
 export async function deletePhotographsOf(of: photographs.PhotographOf, tx: Transaction): Promise<void> {
   for (const photograph of await photographs.findAllOf(of, tx)) await deleteWithObjects(photograph, tx);
+}
+
+/** Its line says of what the photograph is. */
+async function tell(
+  kind: "photograph.added" | "photograph.deleted",
+  of: photographs.PhotographOf,
+  by: { id: number },
+  tx: Transaction,
+  at?: Date,
+): Promise<void> {
+  const { bench, step } = await photographs.findSubject(of, tx);
+  const title = bench?.name ?? step?.title ?? "the antenna";
+  const about = { bench: bench?.publicId, step: step?.publicId, title };
+  await record({ projectId: of.projectId, kind, actorId: by.id, about, at }, tx);
 }
 
 async function deleteWithObjects(photograph: photographs.PhotographRow, tx: Transaction): Promise<void> {

@@ -5,11 +5,13 @@ import * as bundleRuns from "~/db/bundle-runs.server";
 import { inTransaction, isDuplicate, type Transaction } from "~/db/client.server";
 import * as files from "~/db/files.server";
 import * as jobs from "~/db/jobs.server";
+import * as notices from "~/db/notices.server";
 import * as people from "~/db/people.server";
 import * as photographs from "~/db/photographs.server";
 import * as projects from "~/db/projects.server";
 import { record } from "./events.server.ts";
 import { conflictOf, mergeEdit } from "./merge-edit.ts";
+import { mailAtOnce } from "./notice-mails.server.ts";
 
 /** Makes a project with its first owner. */
 export function createProject(project: projects.NewProject, ownerId: number) {
@@ -109,13 +111,23 @@ export async function addMember(
     await inTransaction(async (tx) => {
       await projects.lock(projectId, tx);
       await projects.insertMember(projectId, user.id, role, tx);
-      await record({ projectId, kind: "member.joined", actorId: by, about: { title: user.name } }, tx);
+      const about = { title: user.name };
+      const eventId = await record({ projectId, kind: "member.joined", actorId: by, about }, tx);
+      if (by !== null && by !== user.id) await tellAdded(projectId, user, eventId, tx);
     });
     return "added";
   } catch (error) {
     if (isDuplicate(error)) return "already";
     throw error;
   }
+}
+
+/** In the inbox of whoever was added, and by mail as that person likes it. */
+async function tellAdded(projectId: number, user: people.User, eventId: number, tx: Transaction) {
+  const project = await projects.lock(projectId, tx);
+  const notice = { userId: user.id, projectId, eventId, noteId: null, reason: "invited" as const };
+  const made = await notices.insertNew([notice], tx);
+  if (project) await mailAtOnce(project, [user], made, tx);
 }
 
 export type MemberChange = "done" | "last-owner" | "not-a-member";

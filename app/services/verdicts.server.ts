@@ -55,17 +55,18 @@ async function storeVerdict(
   const text = input.text.trim().slice(0, MAX_VERDICT_CHARACTERS);
   await dips.updateVerdict(id, { verdict, verdictText: text, verdictBy: by.id, verdictAt: at }, tx);
   await verdictEvents.insert({ projectId, dipId: id, verdict, text, evidence, by: by.id, at }, tx);
-  await writeNote(
+  const { publicId: note } = await writeNote(
     {
       project: { id: projectId },
       author: by,
       place: { projectId, sweepId, dipId: id },
       body: [`**${SAID[intent]}:** ${text}`, details, evidenceWords(evidence)].filter(Boolean).join("\n\n"),
       createdAt: at,
+      quiet: true,
     },
     tx,
   );
-  const about = { sweep, dip: publicId, title: text };
+  const about = { sweep, dip: publicId, note, title: text };
   await record({ projectId, kind: "verdict.given", actorId: by.id, about, at }, tx);
 }
 

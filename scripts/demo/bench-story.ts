@@ -108,6 +108,7 @@ function built(): Step {
       project,
       by,
       file: { name: "bridge.png", bytes: pictureOf("bridge") },
+      at,
       caption:
         "The bridge in its tin, open, short and load beside it. Drawn, not photographed: the club is invented.",
     });

@@ -168,6 +168,7 @@ export function pictured(by: Who, at: Date, picture: PictureName, caption: strin
       by: who,
       file: { name: `${picture}.png`, bytes: pictureOf(picture) },
       caption,
+      at,
     });
     if (added.kind !== "added") throw new Error(`The demo's picture "${picture}": ${added.message}`);
   });

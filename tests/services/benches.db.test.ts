@@ -334,7 +334,12 @@ describe("photographs", () => {
     );
     await runDueJobs();
     expect((await getObject(row.smallKey)).length).toBeGreaterThan(0);
-    await deletePhotograph(row);
+    await deletePhotograph(row, by);
+    const told = await db.select().from(events).where(eq(events.projectId, project.id));
+    expect(told.map(({ kind, about }) => [kind, about.title]).slice(-2)).toEqual([
+      ["photograph.added", "the antenna"],
+      ["photograph.deleted", "the antenna"],
+    ]);
     await runDueJobs();
     await expect(getObject(row.smallKey)).rejects.toThrow();
     expect(await listPhotographs(of)).toEqual([]);

@@ -7,16 +7,19 @@ import * as mailChoices from "~/db/mail-choices.server";
 import * as notices from "~/db/notices.server";
 import * as people from "~/db/people.server";
 import * as projects from "~/db/projects.server";
-import { blocks, events, outbox } from "~/db/schema";
+import { blocks, events, jobs, outbox } from "~/db/schema";
 import * as steps from "~/db/steps.server";
 import { sendDigests } from "~/services/digests.server";
 import { inboxOf, openNotice } from "~/services/inbox.server";
 import { isStillWanted } from "~/services/mail-wanted.server";
+import { editNote } from "~/services/note-changes.server";
 import { type WriteNote, writeNote } from "~/services/notes.server";
 import { tellOf } from "~/services/notices.server";
-import { createProject } from "~/services/projects.server";
+import { addMember, createProject } from "~/services/projects.server";
 import { makeStep } from "~/services/steps.server";
 import { isWayOut, takeWayOut } from "~/services/unsubscribe.server";
+import { changeVerdict } from "~/services/verdicts.server";
+import { addBareDip } from "./bare-dip.ts";
 
 interface Person {
   id: number;
@@ -71,6 +74,17 @@ async function tellAll() {
   for (const { id } of [...rows, ...rows]) await tellOf(id);
 }
 
+/** Tells what a job was written for, as the background work does. */
+async function tellDue() {
+  const rows = await db.select({ id: events.id }).from(events).where(eq(events.projectId, project.id));
+  const own = new Set(rows.map(({ id }) => id));
+  const due = await db.select({ payload: jobs.payload }).from(jobs).where(eq(jobs.kind, "tell"));
+  for (const { payload } of due) {
+    const { event } = payload as { event: number };
+    if (own.has(event)) await tellOf(event);
+  }
+}
+
 const wordsOf = async (who: Person) =>
   (await inboxOf(who.id, {})).threads.flatMap(({ items }) => items.map(({ words }) => words));
 
@@ -86,6 +100,60 @@ describe("tellOf", () => {
     expect(await wordsOf(ada)).toEqual(["bram answered you on the step More turns"]);
     expect(await wordsOf(cleo)).toEqual([]);
     expect(await mailsTo(bram)).toHaveLength(1);
+  });
+
+  it("tells whom a change of a note names, once, and nobody else", async () => {
+    const named = `[@bram](person:${bram.publicId})`;
+    await follows.set(cleo.id, project.id, { kind: "project", id: project.publicId }, false);
+    const { publicId: notePublicId } = await write(ada, "look");
+    const edit = (body: string) => editNote({ project, notePublicId, by: ada, body });
+    await edit(`look, ${named}`);
+    await edit(`look there, ${named}`);
+    await edit("look there");
+    await edit(`look here, ${named}`);
+    await tellAll();
+    expect(await wordsOf(bram)).toEqual(["ada named you on the step More turns"]);
+    expect(await mailsTo(bram)).toHaveLength(1);
+    expect(await wordsOf(cleo)).toEqual(["ada wrote on the step More turns"]);
+    const later = await write(ada, `${named} one`);
+    await tellAll();
+    await editNote({ project, notePublicId: later.publicId, by: ada, body: `${named} two` });
+    await tellAll();
+    expect(await mailsTo(bram)).toHaveLength(2);
+  });
+
+  it("makes one notice of a verdict and of the note that says it", async () => {
+    const dip = await addBareDip(project.id);
+    await follows.set(bram.id, project.id, { kind: "dip", id: dip.publicId }, false);
+    await follows.set(cleo.id, project.id, { kind: "project", id: project.publicId }, false);
+    const details = `[@cleo](person:${cleo.publicId}) agrees`;
+    const given = { dip, by: ada, intent: "propose" as const, was: "open" as const, details };
+    expect(await changeVerdict({ ...given, text: "the braid" })).toBe("done");
+    await tellDue();
+    expect(await wordsOf(bram)).toEqual(["ada gave a verdict: the braid"]);
+    expect(await wordsOf(cleo)).toEqual(["ada gave a verdict: the braid"]);
+    expect((await inboxOf(bram.id, {})).threads[0].items[0].line).toContain("Verdict proposed: the braid");
+    expect(await mailsTo(bram)).toHaveLength(1);
+    expect(await follows.findByUser(ada.id, [{ kind: "dip", id: dip.publicId }])).toEqual(
+      new Map([[`dip:${dip.publicId}`, false]]),
+    );
+  });
+
+  it("tells who is added to a project by somebody, in the inbox and by mail", async () => {
+    const dora = await person("dora");
+    const userName = (await people.findById(dora.id))?.userName ?? "";
+    expect(await addMember(project.id, userName, "reader", ada.id)).toBe("added");
+    expect(await addMember(project.id, userName, "reader", ada.id)).toBe("already");
+    expect(await wordsOf(dora)).toEqual(["ada added you to the project"]);
+    const [mail, ...more] = await mailsTo(dora);
+    expect(more).toEqual([]);
+    expect(mail.subject).toBe("ada added you to the project Reeds");
+    expect(mail.text).toContain(`/projects/${project.publicId}`);
+    await mailChoices.set(bram.id, null, "none");
+    await projects.deleteMember(project.id, bram.id);
+    await addMember(project.id, (await people.findById(bram.id))?.userName ?? "", "reader", ada.id);
+    expect(await wordsOf(bram)).toEqual(["ada added you to the project"]);
+    expect(await mailsTo(bram)).toEqual([]);
   });
 
   it("tells authors what is said later where they wrote, and followers of the project all of it", async () => {

@@ -1,45 +1,15 @@
 import { beforeEach, describe, expect, it } from "vitest";
 import { mayInProject } from "~/auth/permissions";
-import { inTransaction } from "~/db/client.server";
 import * as dips from "~/db/dips.server";
-import * as files from "~/db/files.server";
 import { newPublicId } from "~/db/ids.server";
 import * as people from "~/db/people.server";
-import * as sweeps from "~/db/sweeps.server";
-import type { Dip } from "~/measurement/sweep";
 import { listThread } from "~/services/note-thread.server";
 import { createProject } from "~/services/projects.server";
 import { changeVerdict, type VerdictIntent } from "~/services/verdicts.server";
+import { addBareDip } from "./bare-dip.ts";
 
 let ada: { id: number };
 let dipPublicId: string;
-
-/** Invented numbers: what they are does not matter here. */
-const NUMBERS: Dip = {
-  frequencyHz: 52e6,
-  frequencyUncertaintyHz: null,
-  minimumSwr: 1.2,
-  minimumSwrLow: null,
-  minimumSwrHigh: null,
-  minimumSwrNoiseLow: null,
-  minimumSwrNoiseHigh: null,
-  returnLossDb: 20.8,
-  returnLossLowDb: null,
-  returnLossHighDb: null,
-  benchFrequencyHalfHz: null,
-  prominenceDb: 15,
-  bandwidth: null,
-  q: null,
-  qLow: null,
-  qHigh: null,
-  qLimits: null,
-  shares: [],
-  unknown: [],
-  method: "sample",
-  edge: false,
-  sampleIndex: 3,
-  advice: null,
-};
 
 beforeEach(async () => {
   ada = { id: await people.insert({ userName: `ada-${newPublicId()}`, name: "Ada", email: null }) };
@@ -47,28 +17,7 @@ beforeEach(async () => {
     { title: "Reeds", summary: "", visibility: "private", ituRegion: null },
     ada.id,
   );
-  dipPublicId = newPublicId();
-  await inTransaction(async (tx) => {
-    const fileId = await files.insert(
-      {
-        projectId: project.id,
-        name: "a.csv",
-        sizeBytes: 1,
-        sha256: "0".repeat(64),
-        storageKey: "none",
-        uploadedBy: ada.id,
-      },
-      tx,
-    );
-    const sweep = await sweeps.insert(
-      { projectId: project.id, fileId, title: "a", takenAt: null, createdBy: ada.id },
-      tx,
-    );
-    await dips.insertAll(
-      [{ projectId: project.id, sweepId: sweep.id, publicId: dipPublicId, numbers: NUMBERS }],
-      tx,
-    );
-  });
+  dipPublicId = (await addBareDip(project.id)).publicId;
 });
 
 async function found() {

@@ -59,6 +59,15 @@ describe("being named", () => {
     });
     expect(pressed.status).toBe(200);
     expect(await pressed.text()).not.toContain(place.title);
+    // Programs that run in a browser send their own origin, or none that can be told; each is taken.
+    for (const origin of ["https://mail.fennmarsh.example", "null"]) {
+      const answer = await fetch(new URL(way, SERVER), {
+        method: "POST",
+        headers: { Origin: origin, "Sec-Fetch-Site": "cross-site" },
+        body: new URLSearchParams({ "List-Unsubscribe": "One-Click" }),
+      });
+      expect(answer.status, origin).toBe(200);
+    }
     await sayTo(crew.experimenter.userName, "and this?");
     await sayTo(crew.commenter.userName, "you too");
     const waits = { timeout: 20_000, interval: 200 };

@@ -1,8 +1,8 @@
 import { useEffect, useRef, useState } from "react";
-import { Link, useFetchers, useNavigation, useRevalidator } from "react-router";
+import { Link, useFetchers, useNavigation, useRevalidator, useRouteLoaderData } from "react-router";
 import type { LiveState } from "./feed.ts";
 import { concerns, type Here } from "./here.ts";
-import { isGone, newNotes, newsWords } from "./words.ts";
+import { isGone, newNotes, newsWords, ofOthers } from "./words.ts";
 
 /**
  * What is not on the page yet, in a strip over its lower edge: nothing that is read moves. Pressing it loads the page's data
@@ -11,7 +11,9 @@ import { isGone, newNotes, newsWords } from "./words.ts";
 export function LiveNews({ projectId, state, here }: { projectId: string; state: LiveState; here: Here }) {
   const revalidator = useRevalidator();
   const busy = useBusy();
-  const events = state.events.filter((event) => concerns(event, here));
+  const root = useRouteLoaderData<{ person: { userName: string } | null }>("root");
+  const others = ofOthers(state.events, root?.person?.userName ?? "", here);
+  const events = others.filter((event) => concerns(event, here));
   const gone = isGone(events, here);
   const words = state.behind && !here.form ? BEHIND : newsWords(events, here);
   const target = useRef<string[] | null>(null);

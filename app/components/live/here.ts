@@ -61,6 +61,7 @@ export function concerns({ kind, about }: LiveEvent, here: Here): boolean {
     case "bench":
       return about.bench === here.subject;
     case "project":
+      if (noun === "photograph" && here.area === "antenna") return !about.step && !about.bench;
       return (NOUNS_OF[here.area] ?? []).includes(noun);
     default:
       return here.kind satisfies never;
@@ -95,6 +96,7 @@ const NOUNS_OF: Record<string, readonly string[]> = {
     "step",
     "antenna",
     "bench",
+    "photograph",
     "plate",
     "write-up",
     "member",

@@ -17,6 +17,11 @@ export function newsWords(events: readonly LiveEvent[], here: Here): string {
   return `${listed(parts)}${names.size === 1 && name ? `, by ${name}` : ""}`;
 }
 
+/** Without what the person did, but for what takes the page's own thing away. */
+export function ofOthers(events: readonly LiveEvent[], self: string, here: Here): LiveEvent[] {
+  return events.filter((event) => event.by?.userName !== self || isGone([event], here));
+}
+
 /** Public ids of the notes that are new, oldest first. */
 export function newNotes(events: readonly LiveEvent[]): string[] {
   return withoutTakenBack(events).flatMap(({ kind, about }) =>
@@ -121,6 +126,8 @@ const SORT: Record<EventKind, string> = {
   "antenna.changed": "the antenna changed",
   "bench.added": "new bench|new benches",
   "bench.changed": "bench changed|benches changed",
+  "photograph.added": "new photograph|new photographs",
+  "photograph.deleted": "photograph deleted|photographs deleted",
   "plate.made": "new plate|new plates",
   "plate.mended": "new version of a plate|new versions of plates",
   "plate.withdrawn": "plate withdrawn|plates withdrawn",

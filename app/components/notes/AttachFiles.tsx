@@ -26,7 +26,13 @@ export function AttachFiles({
           event.currentTarget.value = "";
         }}
       />
-      <Button type="button" variant="quiet" size="small" onClick={() => input.current?.click()}>
+      <Button
+        type="button"
+        variant="quiet"
+        size="small"
+        className="script-only"
+        onClick={() => input.current?.click()}
+      >
         Attach files
       </Button>
       {files.length > 0 && (

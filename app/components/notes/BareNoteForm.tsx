@@ -1,6 +1,7 @@
 import { useLocation } from "react-router";
 import { Button } from "~/components/ui/Button";
 import { MAX_NOTE_CHARACTERS } from "~/services/note-limits";
+import { BareFiles } from "./BareFiles.tsx";
 import { PartFields } from "./PartFields.tsx";
 import { kindOf, notesPath, type ThreadWhere } from "./place.ts";
 
@@ -24,6 +25,7 @@ export function BareNoteForm({
   return (
     <form
       method="post"
+      encType="multipart/form-data"
       action={notesPath(where, target.edited?.publicId)}
       className="grid gap-2 justify-items-start"
     >
@@ -37,6 +39,7 @@ export function BareNoteForm({
         aria-label={label}
         className="control"
       />
+      {!target.edited && <BareFiles />}
       {where.parts && !target.edited && !target.parent && <PartFields offered={where.parts} />}
       <Button size="small">{target.edited ? "Keep the change" : "Store the note"}</Button>
     </form>

@@ -7,6 +7,7 @@ import { Button } from "~/components/ui/Button";
 import { useHydrated } from "~/components/ui/hydrated";
 import { useToast } from "~/components/ui/Toast";
 import { MAX_NOTE_CHARACTERS } from "~/services/note-limits";
+import { BareFiles } from "./BareFiles.tsx";
 import { type NoteTarget, NoteTargetFields } from "./BareNoteForm.tsx";
 import { useClientKey, useDraft } from "./draft.ts";
 import { useMarks } from "./marks.tsx";
@@ -83,6 +84,7 @@ export function NoteForm({ where, target = {}, label, onDone, onCancel, autoFocu
   return (
     <fetcher.Form
       method="post"
+      encType="multipart/form-data"
       action={notesPath(where, edited?.publicId)}
       {...formProps}
       ref={element}
@@ -125,6 +127,7 @@ export function NoteForm({ where, target = {}, label, onDone, onCancel, autoFocu
         errors={fields.body.errors ?? form.errors}
         hint={<Hint restored={draft.restored} left={MAX_NOTE_CHARACTERS - draft.text.length} />}
       />
+      {!edited && <BareFiles />}
       {fetcher.data?.signedOut && !busy && <SignInAgain />}
       {waiting.clientKey !== null && <Waiting busy={busy} onStop={waiting.stop} />}
       {where.parts && !edited && !target.parent && <PartFields offered={where.parts} />}

@@ -8,6 +8,7 @@ import { redirectWithMessage } from "~/services/flash.server";
 import { listThread } from "~/services/note-thread.server";
 import { NoteProblem, writeNote } from "~/services/notes.server";
 import type { Route } from "./+types/notes";
+import { takeGivenFiles } from "./given-files.server.ts";
 import { requirePart } from "./part.server.ts";
 import { backTo, isFromScript, pathOf, requirePlace, wishedPlace } from "./place.server.ts";
 
@@ -22,7 +23,8 @@ export async function action(args: Route.ActionArgs) {
   const access = await requireProject(args, "note.write");
   const { project, person } = access;
   if (!person) throw refused("Sign in first. Nothing was stored.");
-  const submission = parseWithZod(await args.request.formData(), { schema: writeNoteSchema });
+  const form = await args.request.formData();
+  const submission = parseWithZod(form, { schema: writeNoteSchema });
   const stays = isFromScript(args.request);
   if (submission.status !== "success") {
     if (stays) return data({ lastResult: submission.reply() }, { status: 400 });
@@ -37,6 +39,7 @@ export async function action(args: Route.ActionArgs) {
   const wished = { dip, sweep, trail, step, bench };
   const place = await requirePlace(access, wished);
   const page = pathOf(project, wished);
+  const files = await takeGivenFiles(form, { project, by: person });
   try {
     const written = await writeNote({
       project,
@@ -44,11 +47,12 @@ export async function action(args: Route.ActionArgs) {
       place,
       parentPublicId: parent,
       part: await requirePart({ sweep, ...part }),
-      body,
+      body: [body, ...files.markdown].join("\n\n"),
       clientKey,
     });
     if (stays) return { publicId: written.publicId };
-    return redirectWithMessage(backTo(returnTo, page, written.publicId), "The note is stored.");
+    const said = ["The note is stored.", ...files.refusals].join(" ");
+    return redirectWithMessage(backTo(returnTo, page, written.publicId), said);
   } catch (error) {
     if (!(error instanceof NoteProblem)) throw error;
     if (!stays) return redirectWithMessage(backTo(returnTo, page), error.message);

@@ -43,7 +43,7 @@ export async function action(args: Route.ActionArgs) {
     }
     case "delete": {
       const { photograph, place } = await requirePhotograph(access, value.photograph);
-      await deletePhotograph(photograph);
+      await deletePhotograph(photograph, person);
       return back(place, "The photograph was deleted with its original.");
     }
     default:

@@ -1,6 +1,6 @@
 import { describe, expect, it } from "vitest";
 import { concerns, hereOf } from "../../../app/components/live/here.ts";
-import { isGone, lookingWords, newNotes, newsWords } from "../../../app/components/live/words.ts";
+import { isGone, lookingWords, newNotes, newsWords, ofOthers } from "../../../app/components/live/words.ts";
 import { EVENT_KINDS } from "../../../app/services/event-kinds.ts";
 import { event } from "./events.ts";
 
@@ -27,6 +27,11 @@ describe("what concerns a page", () => {
     const anew = event(3, "sweep.analysed", { sweep: "s1" });
     expect([onDip, onOther, anew].map((one) => concerns(one, dip))).toEqual([true, false, true]);
     expect([onDip, onOther, anew].map((one) => concerns(one, sweep))).toEqual([true, true, true]);
+    const ofBench = event(5, "photograph.added", { bench: "b1" });
+    const ofAntenna = event(6, "photograph.added");
+    const [antenna, bench] = ["antenna", "benches/b1"].map((end) => hereOf("p1", `/projects/p1/${end}`));
+    expect([ofBench, ofAntenna].map((one) => concerns(one, antenna))).toEqual([false, true]);
+    expect([ofBench, ofAntenna].map((one) => concerns(one, bench))).toEqual([true, false]);
     const verdictOf = (trail: string) => event(7, "verdict.given", { trail });
     expect([verdictOf("t1"), verdictOf("t2")].map((one) => concerns(one, dip))).toEqual([true, false]);
     expect(concerns(event(4, "sweep.analysed", { sweep: "s2" }), sweep)).toBe(false);
@@ -68,6 +73,14 @@ describe("the words for it", () => {
     const back = event(5, "note.edited", { note: "n1" });
     expect(newsWords([added, removed, back], story), "brought back").toBe("1 new note, by Cleo");
     expect(newNotes([added, event(4, "note.added", { note: "n4" }), removed])).toEqual(["n4"]);
+  });
+
+  it("are none of what one did oneself, but for what takes the page's own thing away", () => {
+    const [own, other] = [event(1, "sweep.added", {}, "Ada"), event(2, "step.added")];
+    const gone = event(3, "sweep.deleted", { sweep: "s1" }, "Ada");
+    expect(ofOthers([own, other, gone], "ada", sweep)).toEqual([other, gone]);
+    expect(ofOthers([own, other, gone], "ada", story)).toEqual([other]);
+    expect(ofOthers([own, other], "", sweep)).toEqual([own, other]);
   });
 
   it("exist for everything that can happen", () => {
