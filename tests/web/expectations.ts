@@ -1,4 +1,5 @@
 import type { ProjectAction, SiteAction } from "~/auth/permissions";
+import { newPublicId } from "~/db/ids.server";
 import { SERVER } from "./browser.ts";
 import {
   type Crew,
@@ -150,6 +151,25 @@ export const EXPECTATIONS: Record<string, Expectation> = {
       },
     ],
   },
+  "routes/bundle/my-data.tsx": {
+    GET: [{ ask: { site: "account.own" } }],
+    POST: [{ name: "make", ask: { site: "account.own" }, form: () => ({ intent: "make" }) }],
+  },
+  "routes/bundle/my-download.ts": { GET: [{ ask: { site: "account.own" } }] },
+  "routes/bundle/take-in.tsx": {
+    GET: [{ ask: { site: "project.create" } }],
+    POST: [
+      {
+        ask: { site: "project.create" },
+        form: () => ({ bundle: new File(["no ZIP"], "walk.zip") }),
+      },
+    ],
+  },
+  "routes/bundle/bundle.tsx": {
+    GET: [{ ask: { project: "project.export" } }],
+    POST: [{ name: "make", ask: { project: "project.export" }, form: () => ({ intent: "make" }) }],
+  },
+  "routes/bundle/download.ts": { GET: [{ ask: { project: "project.export" } }] },
   "routes/account/tokens.tsx": {
     GET: [{ ask: { site: "account.own" } }],
     POST: [
@@ -311,6 +331,35 @@ export const EXPECTATIONS: Record<string, Expectation> = {
   "routes/sweeps/csv.ts": { GET: read },
   "routes/sweeps/touchstone.ts": { GET: read },
 
+  "routes/batch/new.tsx": {
+    GET: [{ ask: { project: "sweep.add" } }],
+    POST: [{ ask: { project: "sweep.add" }, form: () => ({ batch: newPublicId(), files: sweepFile() }) }],
+  },
+  "routes/batch/upload.ts": {
+    POST: [{ ask: { project: "sweep.add" }, form: () => ({ batch: newPublicId(), files: sweepFile() }) }],
+  },
+  "routes/batch/template.ts": { GET: [{ ask: { project: "sweep.add" } }] },
+  "routes/batch/filled.ts": { GET: [{ ask: { project: "sweep.add" } }] },
+  "routes/batch/run.tsx": {
+    GET: [{ ask: { project: "sweep.add" } }],
+    POST: [
+      { name: "mend", ask: { project: "sweep.add" }, form: () => ({ intent: "mend" }) },
+      { name: "leave-out", ask: { project: "sweep.add" }, form: () => ({ intent: "leave-out" }) },
+      { name: "take", ask: { project: "sweep.add" }, form: () => ({ intent: "take" }) },
+      {
+        name: "add",
+        ask: { project: "sweep.add" },
+        form: () => ({ intent: "add", files: sweepFile() }),
+      },
+      {
+        name: "give-up",
+        ask: { project: "sweep.add" },
+        form: () => ({ intent: "give-up" }),
+        destroys: "sweep",
+      },
+    ],
+  },
+
   "routes/sweeps/repeats.tsx": {
     GET: read,
     POST: [{ ask: { project: "sweep.edit" }, form: () => ({ intent: "leave" }) }],
@@ -448,6 +497,7 @@ export const EXPECTATIONS: Record<string, Expectation> = {
   "routes/write-ups/feed.ts": { GET: read },
   "routes/write-ups/write-up.tsx": { GET: anybody },
   "routes/write-ups/html.ts": { GET: anybody },
+  "routes/write-ups/pdf.ts": { GET: anybody },
 
   "routes/webmention/endpoint.tsx": {
     GET: anybody,

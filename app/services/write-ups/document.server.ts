@@ -49,7 +49,13 @@ export function printable(
     pageSize: "A4",
     pageMargins: MARGINS,
     defaultStyle: { font: SANS, fontSize: TEXT_SIZE, lineHeight: 1.3, color: INK },
-    info: { title: version.title, author: people, creationDate: version.publishedAt },
+    info: {
+      title: version.title,
+      author: people,
+      creationDate: version.publishedAt,
+      creator: "Swale",
+      producer: "Swale",
+    },
     content: [
       { text: `A write-up of ${project.title}`, color: SOFT, fontSize: SMALL_SIZE },
       { text: version.title, font: DISPLAY, bold: true, fontSize: 24, lineHeight: 1.1, margin: [0, 4, 0, 6] },
@@ -72,7 +78,7 @@ export function printable(
     ],
     footer: (page, pages) => ({
       columns: [
-        { text: version.title, noWrap: false, width: "*" },
+        { text: version.title, width: "*" },
         { text: `${page} of ${pages}`, alignment: "right", width: 60 },
       ],
       margin: [MARGINS[0], 20, MARGINS[2], 0],
@@ -156,5 +162,5 @@ export function forPrint(svg: string): string {
       return PAPER_PALETTE[`${name}Font`];
     })
     .replace(/<rect[^>]*fill="transparent"[^>]*\/?>(?:<\/rect>)?/g, "")
-    .replace(/ (?:paint-order|class)="[^"]*"/g, "");
+    .replace(/ class="[^"]*"/g, "");
 }

@@ -68,15 +68,19 @@ function heading(text: Content[], depth: number): Content {
 }
 
 function list({ items, ordered, start }: Tokens.List, place: PdfPlace, count: Count): Content {
-  const entries: Content[] = items.map((item) => {
-    const inside = blocks(item.tokens, place, count);
-    const box = item.task ? [{ text: item.checked ? "[x]" : "[ ]", font: MONO, fontSize: SMALL_SIZE }] : [];
-    return { stack: [...box, ...inside] };
-  });
+  const entries: Content[] = items.map((item) => ({ stack: blocks(boxInLine(item.tokens), place, count) }));
   const margin = PARAGRAPH;
   return ordered
     ? { ol: entries, start: start === "" ? 1 : start, margin }
     : { ul: entries, margin, markerColor: SOFT };
+}
+
+/** A box to tick stands before its words, not over them. */
+function boxInLine([first, second, ...rest]: Token[]): Token[] {
+  if (first?.type !== "checkbox" || !second)
+    return first ? (second ? [first, second, ...rest] : [first]) : [];
+  const words = second as Tokens.Generic;
+  return [{ ...words, tokens: [first, ...(words.tokens ?? [])] } as Token, ...rest];
 }
 
 function table({ header, rows, align }: Tokens.Table, { origin }: PdfPlace): Content {

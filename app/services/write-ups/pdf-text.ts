@@ -1,43 +1,50 @@
 import { Parser } from "htmlparser2";
 import type { Token, Tokens } from "marked";
 import type { FootnoteRef } from "marked-footnote";
-import type { Content, ContentText } from "pdfmake/interfaces";
+import type { ContentText } from "pdfmake/interfaces";
 import { wordsOf } from "../markdown-article.ts";
 import { isSubject } from "../markdown-links.ts";
 import { FEN, MONO, SMALL_SIZE } from "./pdf-looks.ts";
 
-/** Running text of Markdown → what pdfmake sets. `origin`: of the addresses that a text gives without one. */
-export function inlineContent(tokens: readonly Token[], origin: string): Content[] {
-  return tokens.flatMap((token) => inline(token as Tokens.Generic, origin));
+/**
+ * Running text of Markdown → what pdfmake sets: a flat row of pieces, for it hands no looks down to nested ones. `origin`: of
+ * the addresses that a text gives without one.
+ */
+export function inlineContent(tokens: readonly Token[], origin: string, looks: Looks = {}): ContentText[] {
+  return tokens.flatMap((token) => inline(token as Tokens.Generic, origin, looks));
 }
 
-function inline(token: Tokens.Generic, origin: string): Content[] {
-  const nested = () => inlineContent(token.tokens ?? [], origin);
+type Looks = Pick<ContentText, "bold" | "italics" | "decoration">;
+
+function inline(token: Tokens.Generic, origin: string, looks: Looks): ContentText[] {
+  const nested = (more: Looks = {}) => inlineContent(token.tokens ?? [], origin, { ...looks, ...more });
   switch (token.type) {
     case "strong":
-      return [{ text: nested(), bold: true }];
+      return nested({ bold: true });
     case "em":
-      return [{ text: nested(), italics: true }];
+      return nested({ italics: true });
     case "del":
-      return [{ text: nested(), decoration: "lineThrough" }];
+      return nested({ decoration: "lineThrough" });
     case "codespan":
-      return [{ text: token.text, font: MONO, fontSize: SMALL_SIZE }];
+      return [{ ...looks, text: token.text, font: MONO, fontSize: SMALL_SIZE }];
     case "formula":
-      return [{ text: token.tex, font: MONO, fontSize: SMALL_SIZE }];
+      return [{ ...looks, text: token.tex, font: MONO, fontSize: SMALL_SIZE }];
     case "br":
-      return ["\n"];
+      return [{ text: "\n" }];
+    case "checkbox":
+      return [{ text: token.checked ? "[x] " : "[ ] ", font: MONO, fontSize: SMALL_SIZE }];
     case "link":
     case "image":
-      return [linked(token as Tokens.Link, origin)];
+      return [{ ...looks, ...linked(token as Tokens.Link, origin) }];
     case "footnoteRef":
       return [reference(token as unknown as FootnoteRef)];
     case "text":
-      return token.tokens ? nested() : [decoded(token.text)];
+      return token.tokens ? nested() : [{ ...looks, text: decoded(token.text) }];
     case "html":
     case "escape":
-      return [token.text];
+      return [{ ...looks, text: token.text }];
     default:
-      return [decoded(token.raw)];
+      return [{ ...looks, text: decoded(token.raw) }];
   }
 }
 
