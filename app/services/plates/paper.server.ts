@@ -67,14 +67,12 @@ function tableOf({ title, columns, rows }: PlateTable): Content[] {
     bold: true,
     ...small,
   }));
-  const body = rows
-    .slice(0, MOST_ROWS)
-    .map((row) =>
-      kept.map(({ key }) => ({
-        text: row[key] === null || row[key] === "" ? "unknown" : String(row[key]),
-        ...small,
-      })),
-    );
+  const body = rows.slice(0, MOST_ROWS).map((row) =>
+    kept.map(({ key }) => ({
+      text: row[key] === null || row[key] === "" ? "unknown" : String(row[key]),
+      ...small,
+    })),
+  );
   const more = rows.length - MOST_ROWS;
   return [
     { text: title, bold: true, margin: [0, 10, 0, 3] },
