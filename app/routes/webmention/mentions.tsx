@@ -53,8 +53,8 @@ export default function ProjectMentions({ loaderData }: Route.ComponentProps) {
       <header className="grid gap-2">
         <h2 className="sweep-title">Cited elsewhere</h2>
         <p className="soft max-w-[72ch]">
-          Pages of other sites that say they link to a plate or a write-up of this project. Each was looked up
-          and has the link; what it says is its author's. Readers see those that you show.
+          Pages of other sites that say they link to a plate or a write-up of this project. Each is looked up
+          first; what it says is its author's. Readers see those that you show.
         </p>
       </header>
       {none && (

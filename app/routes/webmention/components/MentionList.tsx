@@ -30,52 +30,62 @@ export function MentionList({
 }
 
 function Item({ mention }: { mention: ProjectMention }) {
-  const { publicId, host, state, reason, at, of, decidedBy } = mention;
+  const { publicId, title, host, state, reason, at, of, decidedBy } = mention;
   const word = WORDS[state];
   return (
     <li className="panel grid gap-2">
       <div className="flex flex-wrap items-baseline gap-x-3 gap-y-1">
         <MentionLink {...mention} />
-        <span className="provenance">{host}</span>
+        {title !== host && <span className="provenance">{host}</span>}
         {word && <Tag tone={state === "hidden" ? "plain" : "clay"}>{word}</Tag>}
       </div>
       <p className="text-small soft">
         Cites <Link to={of.path}>{of.title}</Link>; came <DateTime at={at} />.{reason && ` ${reason}`}
         {decidedBy && ` Decided by ${decidedBy}.`}
       </p>
-      <Form method="post" className="flex flex-wrap gap-2">
-        <input type="hidden" name="mention" value={publicId} />
-        {(state === "verified" || state === "hidden") && (
-          <Button name="intent" value="show" size="small" aria-label={`Show ${mention.title}`}>
-            Show it
-          </Button>
-        )}
-        {(state === "verified" || state === "shown") && (
-          <>
+      {DECIDABLE.has(state) && (
+        <Form method="post" className="flex flex-wrap gap-2">
+          <input type="hidden" name="mention" value={publicId} />
+          {(state === "verified" || state === "hidden") && (
             <Button
               name="intent"
-              value="hide"
+              value="show"
               size="small"
-              variant="quiet"
-              aria-label={`Do not show ${mention.title}`}
+              variant={state === "hidden" ? "quiet" : "primary"}
+              aria-label={`Show ${title}`}
             >
-              {state === "shown" ? "Hide it" : "Do not show it"}
+              Show it
             </Button>
-            <Button
-              name="intent"
-              value="check"
-              size="small"
-              variant="quiet"
-              aria-label={`Look ${mention.title} up again`}
-            >
-              Look it up again
-            </Button>
-          </>
-        )}
-      </Form>
+          )}
+          {(state === "verified" || state === "shown") && (
+            <>
+              <Button
+                name="intent"
+                value="hide"
+                size="small"
+                variant="quiet"
+                aria-label={`Do not show ${title}`}
+              >
+                {state === "shown" ? "Hide it" : "Do not show it"}
+              </Button>
+              <Button
+                name="intent"
+                value="check"
+                size="small"
+                variant="quiet"
+                aria-label={`Look ${title} up again`}
+              >
+                Look it up again
+              </Button>
+            </>
+          )}
+        </Form>
+      )}
     </li>
   );
 }
+
+const DECIDABLE = new Set<ProjectMention["state"]>(["verified", "shown", "hidden"]);
 
 const WORDS: Partial<Record<ProjectMention["state"], string>> = {
   queued: "not looked up yet",
