@@ -13,6 +13,7 @@ const MAY: Record<(typeof PROJECT_ROLES)[number], ProjectAction[]> = {
   owner: [...PROJECT_ACTIONS],
   experimenter: [
     "project.read",
+    "project.export",
     "sweep.add",
     "sweep.edit",
     "sweep.delete",

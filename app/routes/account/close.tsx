@@ -58,7 +58,8 @@ export default function Close({ loaderData, actionData }: Route.ComponentProps) 
       <p>
         Your name, call sign, addresses, ways to sign in, sessions, tokens, inbox and memberships go for good.
         Sweeps, steps, verdicts and plates stay with their projects, under “a former member”: others build on
-        them. This can't be undone.
+        them. This can't be undone. <Link to="/settings/my-data">Take all your data along</Link> first, if you
+        want it.
       </p>
       {owned.length > 0 && (
         <section className="panel space-y-2 border-l-3 border-l-clay">

@@ -118,6 +118,10 @@ export default function Settings({ loaderData, actionData }: Route.ComponentProp
       <section className="space-y-3">
         <h2>Leaving</h2>
         <p>
+          <Link to="/settings/my-data">All my data</Link>{" "}
+          <span className="soft">as one file to take along.</span>
+        </p>
+        <p>
           <Link to="/settings/close">Close the account</Link>{" "}
           <span className="soft">for good; your notes stay or go, as you choose.</span>
         </p>

@@ -19,12 +19,14 @@ export async function loader(args: Route.LoaderArgs) {
     },
     membership,
     mayEdit: may("project.edit"),
+    mayExport: may("project.export"),
+    mayPlate: may("plate.make"),
     mark: markOf(project.id, lastEventId),
   };
 }
 
 export default function ProjectLayout({ loaderData }: Route.ComponentProps) {
-  const { project, membership, mayEdit, mark } = loaderData;
+  const { project, membership, mayEdit, mayExport, mark } = loaderData;
   const base = `/projects/${project.id}`;
   return (
     <LiveProject key={project.id} projectId={project.id} mark={mark} member={membership !== null}>
@@ -51,10 +53,12 @@ export default function ProjectLayout({ loaderData }: Route.ComponentProps) {
             <Tab to={`${base}/benches`} label="Benches" />
             <Tab to={`${base}/antenna`} label="Antenna" />
             <Tab to={`${base}/steps`} label="Steps" />
+            <Tab to={`${base}/plates`} label="Plates" />
             <Tab to={`${base}/write-ups`} label="Write-ups" />
             <Tab to={`${base}/activity`} label="Activity" />
             <Tab to={`${base}/members`} label="Members" />
             {mayEdit && <Tab to={`${base}/settings`} label="Settings" />}
+            {mayExport && !mayEdit && <Tab to={`${base}/bundle`} label="Bundle" />}
           </nav>
           {membership && <Looking />}
         </header>

@@ -35,9 +35,14 @@ export default function ProjectList({ loaderData }: Route.ComponentProps) {
       <div className="flex flex-wrap items-center justify-between gap-3">
         <h1>Projects</h1>
         {projects.length > 0 && (
-          <LinkButton to="/projects/new" icon="add">
-            New project
-          </LinkButton>
+          <div className="flex flex-wrap gap-3">
+            <LinkButton to="/projects/take-in" variant="quiet" icon="upload">
+              Take a bundle in
+            </LinkButton>
+            <LinkButton to="/projects/new" icon="add">
+              New project
+            </LinkButton>
+          </div>
         )}
       </div>
       {projects.length === 0 ? (
@@ -50,7 +55,8 @@ export default function ProjectList({ loaderData }: Route.ComponentProps) {
             </LinkButton>
           }
         >
-          A project is one experiment: its antenna, its sweeps and its people.
+          A project is one experiment: its antenna, its sweeps and its people. One that was taken along as a{" "}
+          <Link to="/projects/take-in">bundle</Link> comes back as it was.
         </EmptyState>
       ) : (
         <Table

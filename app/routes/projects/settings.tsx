@@ -1,6 +1,6 @@
 import type { SubmissionResult } from "@conform-to/react";
 import { parseWithZod } from "@conform-to/zod/v4";
-import { data } from "react-router";
+import { data, Link } from "react-router";
 import { requireProject } from "~/auth/require.server";
 import type { Conflict } from "~/components/edit-conflict/EditConflict";
 import * as projects from "~/db/projects.server";
@@ -105,6 +105,15 @@ export default function ProjectSettings({ loaderData, actionData }: Route.Compon
       />
       <LicenceForm licence={loaderData.licence} errors={lastOf("licence")?.error?.licence ?? undefined} />
       <CitedElsewhere waiting={loaderData.mentionsWaiting} />
+      <section className="space-y-3">
+        <h2>Bundle</h2>
+        <p>
+          <Link to="../bundle" relative="path">
+            The whole project as one file
+          </Link>{" "}
+          <span className="soft">to keep, to hand on, or to take into another Swale.</span>
+        </p>
+      </section>
       <DeleteForm title={loaderData.about.title} lastResult={lastOf("delete")} />
     </div>
   );

@@ -279,6 +279,7 @@ export const RECORDS = {
     title: text(160),
     body: z.string().max(8_000_000).describe("Markdown"),
     publishedNumber: v.count.nullable(),
+    takenBackAt: v.time.nullable(),
     ...made,
     updatedAt: v.time,
   }),

@@ -88,7 +88,12 @@ async function afterFault(lease: Lease, error: unknown): Promise<void> {
   const name = (error as { name?: string }).name ?? "";
   const anew = run.kind !== "import" && (attempts > 2 || GONE.has(name));
   if (anew) await dropMade(run.publicId, (await runs.findById(run.id))?.resume ?? null);
-  await lease.keep({ state: "waiting", report: { attempts }, updatedAt, ...(anew && { resume: null }) });
+  await lease.keep({
+    state: "waiting",
+    report: { attempts, fault: String(error).slice(0, 500) },
+    updatedAt,
+    ...(anew && { resume: null }),
+  });
 }
 
 /** Takes away all that a run has outside its row. */

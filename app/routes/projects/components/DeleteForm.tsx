@@ -1,6 +1,6 @@
 import { getFormProps, getInputProps, type SubmissionResult, useForm } from "@conform-to/react";
 import { getZodConstraint, parseWithZod } from "@conform-to/zod/v4";
-import { Form, useNavigation } from "react-router";
+import { Form, Link, useNavigation } from "react-router";
 import { Button } from "~/components/ui/Button";
 import { InputField } from "~/components/ui/Field";
 import { deleteSchema } from "../project.schema.ts";
@@ -23,7 +23,11 @@ export function DeleteForm({ title, lastResult }: DeleteFormProps) {
     <section className="space-y-3 border-l-3 border-alarm pl-4">
       <h2>Delete the project</h2>
       <p className="max-w-[72ch]">
-        Its sweeps, their original files, dips and notes go for good, for every member. This can't be undone.
+        Its sweeps, their original files, dips and notes go for good, for every member. This can't be undone.{" "}
+        <Link to="../bundle" relative="path">
+          Make a bundle
+        </Link>{" "}
+        first, and it can be taken in again.
       </p>
       <Form method="post" {...getFormProps(form)} className="max-w-[30rem] space-y-4">
         <InputField

@@ -1,0 +1,63 @@
+import { Readable } from "node:stream";
+import type { ShownRun } from "~/db/bundle-runs.server";
+import { unavailable } from "~/errors";
+import { offered } from "~/services/bundle/runs.server";
+import { readRange } from "~/services/bundle/store.server";
+import { attachment } from "~/services/file-names";
+import { redirectWithMessage } from "~/services/flash.server";
+import { log } from "~/services/log.server";
+
+/** A bundle as a download that can be gone on with (RFC 9110, range requests); one that is not kept any more leads back. */
+export async function sendBundle(
+  request: Request,
+  run: ShownRun | undefined,
+  back: string,
+): Promise<Response> {
+  const offer = run && offered(run);
+  if (!offer) return redirectWithMessage(back, "That bundle is not kept any more. Make another one.");
+  const { sizeBytes, storageKey, name } = offer;
+  const etag = `"${run.publicId}-${sizeBytes}"`;
+  const headers = {
+    "Content-Type": "application/zip",
+    "Content-Disposition": attachment(name),
+    "Accept-Ranges": "bytes",
+    ETag: etag,
+    "X-Content-Type-Options": "nosniff",
+    "Cache-Control": "private, no-cache, no-transform",
+  };
+  if (request.headers.get("If-None-Match") === etag) return new Response(null, { status: 304, headers });
+  const range = rangeOf(request, etag, sizeBytes);
+  if (range === "none") {
+    return new Response(null, {
+      status: 416,
+      headers: { ...headers, "Content-Range": `bytes */${sizeBytes}` },
+    });
+  }
+  const [from, to] = range ?? [0, sizeBytes - 1];
+  const body = await readRange(storageKey, from, to).catch((error) => {
+    log.error({ err: error }, "a bundle could not be fetched from the store");
+    throw unavailable(
+      "The bundle can't be fetched just now",
+      "The store does not answer. The bundle is safe there. Try again in a minute.",
+    );
+  });
+  return new Response(Readable.toWeb(body) as ReadableStream, {
+    status: range ? 206 : 200,
+    headers: {
+      ...headers,
+      "Content-Length": String(to - from + 1),
+      ...(range && { "Content-Range": `bytes ${from}-${to}/${sizeBytes}` }),
+    },
+  });
+}
+
+/** The one stretch that is asked for; null for all of it, "none" for one that is not there. */
+export function rangeOf(request: Request, etag: string, size: number): [number, number] | null | "none" {
+  const asked = /^bytes=(\d*)-(\d*)$/.exec(request.headers.get("Range") ?? "");
+  if (!asked || (asked[1] === "" && asked[2] === "")) return null;
+  const condition = request.headers.get("If-Range");
+  if (condition !== null && condition !== etag) return null;
+  const from = asked[1] === "" ? Math.max(0, size - Number(asked[2])) : Number(asked[1]);
+  const to = asked[1] === "" || asked[2] === "" ? size - 1 : Math.min(size - 1, Number(asked[2]));
+  return from > to || from >= size ? "none" : [from, to];
+}
