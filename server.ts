@@ -25,6 +25,7 @@ import { log } from "~/services/log.server";
 import { metricsText } from "~/services/metrics.server";
 import { oneClick } from "~/services/one-click.server";
 import { startOutbox } from "~/services/outbox.server";
+import { servePlates } from "~/services/plates/serve.server";
 import { closeReaders } from "~/services/reading.server";
 import { securityHeaders } from "~/services/security-headers.server";
 import { onShutdown, runShutdown } from "~/services/shutdown.server";
@@ -51,6 +52,8 @@ export function createApp(development = false): Express {
   app.use(securityHeaders(development));
   app.use(oneClick);
   app.use(knownMethods);
+  // Packed once and kept so, hence before the compression of everything else.
+  app.use(servePlates);
   app.use(bodyLimits);
   app.use(compression({ filter: isWorthCompressing, level: COMPRESSION_LEVEL }));
   if (!development) serveStaticFiles(app);

@@ -8,7 +8,8 @@ import type { PlateRecord, PlateTable } from "./record.ts";
 
 /** A plate as one page of A4: the figure in lines, its numbers, the caption, how to cite it and where it is from. */
 export function printPlate(record: PlateRecord): Promise<Buffer> {
-  return printPdf(definitionOf(record));
+  // One page: what does not fit is at the plate's address. (Its types do not know the option.)
+  return printPdf({ ...definitionOf(record), maxPagesNumber: 1 } as TDocumentDefinitions);
 }
 
 function definitionOf(record: PlateRecord): TDocumentDefinitions {
@@ -52,8 +53,6 @@ function definitionOf(record: PlateRecord): TDocumentDefinitions {
         fontSize: 8,
       },
     ],
-    // One page: what does not fit is at the address.
-    maxPagesNumber: 1,
   };
 }
 

@@ -82,7 +82,7 @@ function extraCells(
   const cells = {
     group: trail?.label ?? "on no trail",
     trace: figure.traces.find(({ id }) => id === dip.trace)?.label ?? "",
-    moved: same ? rounded(moved, half ? half / 1e3 : null, 4) : "",
+    moved: same ? rounded(moved, half ? half / 1e3 : null, 4) : "first",
   };
   return Object.fromEntries(extras.map((extra) => [extra, cells[extra]]));
 }
@@ -111,7 +111,7 @@ function dipCells(dip: PlateDip): Row {
         dip.edge && "the dip is at the end of the sweep",
       ]
         .filter(Boolean)
-        .join("; ") || "-",
+        .join("; ") || "none",
     q: dip.q === null ? null : Number(dip.q.toPrecision(3)),
     verdict: dip.verdict || "open",
   };
