@@ -58,7 +58,7 @@ export async function findAll(
   page: { limit: number; offset: number },
   tx: Queryable = db,
 ) {
-  const rows = await joined(tx.select(TABLE_ROW).from(dips).$dynamic())
+  const rows = await tableRows(tx)
     .where(wanted(filter))
     .orderBy(...inOrder(order))
     .limit(page.limit + 1)
@@ -67,13 +67,25 @@ export async function findAll(
 }
 
 export async function countAll(filter: DipFilter, tx: Queryable = db): Promise<number> {
-  const rows = await joined(tx.select({ n: count() }).from(dips).$dynamic()).where(wanted(filter));
+  const rows = await tx
+    .select({ n: count() })
+    .from(dips)
+    .innerJoin(sweeps, eq(sweeps.id, dips.sweepId))
+    .leftJoin(trailDips, eq(trailDips.dipId, dips.id))
+    .leftJoin(trails, eq(trails.id, trailDips.trailId))
+    .where(wanted(filter));
   return rows[0].n;
 }
 
 /** Row ids in order, for whoever fetches them piece by piece: what is added meanwhile shifts nothing. */
 export async function findIds(filter: DipFilter, order: DipOrder, tx: Queryable = db): Promise<number[]> {
-  const rows = await joined(tx.select({ id: dips.id }).from(dips).$dynamic())
+  const rows = await tx
+    .select({ id: dips.id })
+    .from(dips)
+    .innerJoin(sweeps, eq(sweeps.id, dips.sweepId))
+    .leftJoin(trailDips, eq(trailDips.dipId, dips.id))
+    .leftJoin(trails, eq(trails.id, trailDips.trailId))
+
     .where(wanted(filter))
     .orderBy(...inOrder(order))
     .limit(MOST_IDS);
@@ -83,9 +95,7 @@ export async function findIds(filter: DipFilter, order: DipOrder, tx: Queryable 
 /** In the order of the ids; one that is gone is left out. */
 export async function findAllByIds(ids: number[], tx: Queryable = db): Promise<TableRow[]> {
   if (ids.length === 0) return [];
-  const rows = await joined(tx.select(TABLE_ROW).from(dips).$dynamic())
-    .where(inArray(dips.id, ids))
-    .limit(ids.length);
+  const rows = await tableRows(tx).where(inArray(dips.id, ids)).limit(ids.length);
   const byId = new Map(rows.map((row) => [row.id, whole(row)]));
   return ids.flatMap((id) => byId.get(id) ?? []);
 }
@@ -131,9 +141,10 @@ function inOrder({ key, direction }: DipOrder): SQL[] {
   return [sql`${EXPRESSIONS[key]} is null`, way(EXPRESSIONS[key]), asc(dips.frequencyHz), asc(dips.id)];
 }
 
-// biome-ignore lint/suspicious/noExplicitAny: the builder's type of a query grows with every join
-function joined<Q extends { innerJoin: any; leftJoin: any }>(query: Q): Q {
-  return query
+function tableRows(tx: Queryable) {
+  return tx
+    .select(TABLE_ROW)
+    .from(dips)
     .innerJoin(sweeps, eq(sweeps.id, dips.sweepId))
     .leftJoin(trailDips, eq(trailDips.dipId, dips.id))
     .leftJoin(trails, eq(trails.id, trailDips.trailId));

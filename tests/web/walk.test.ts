@@ -215,6 +215,7 @@ function fill(path: string, place: Place): string {
     .replace(":step", place.step)
     .replace(":trail", place.trail)
     .replace(":writeUp", place.writeUp)
+    .replace(":batch", place.batch)
     .replace(":token", place.invitation)
     .replace(":size", "small")
     .replace("*", "no/such/thing");

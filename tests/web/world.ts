@@ -3,6 +3,7 @@ import type { ProjectRole, Visibility } from "~/auth/permissions";
 import { startSession } from "~/auth/session.server";
 import { inTransaction, pool } from "~/db/client.server";
 import * as files from "~/db/files.server";
+import { newPublicId } from "~/db/ids.server";
 import * as notes from "~/db/notes.server";
 import * as outbox from "~/db/outbox.server";
 import * as people from "~/db/people.server";
@@ -14,6 +15,7 @@ import * as webmentions from "~/db/webmentions.server";
 import * as writeUps from "~/db/write-ups.server";
 import { IDEAL_STANDARDS, NOTHING_GIVEN } from "~/measurement/bench";
 import { addAttachment } from "~/services/attachments.server";
+import { beginBatch } from "~/services/batch/receive.server";
 import { createBench } from "~/services/benches.server";
 import { invite } from "~/services/invitations.server";
 import { writeNote } from "~/services/notes.server";
@@ -82,6 +84,8 @@ export interface Place {
   trail: string;
   /** Published. */
   writeUp: string;
+  /** Of sweeps, begun. */
+  batch: string;
   /** The secret of a link for readers. */
   invitation: string;
 }
@@ -113,6 +117,7 @@ export async function makePlace(crew: Crew, visibility: Visibility, empty = fals
       step: "",
       trail: "",
       writeUp: "",
+      batch: "",
     };
   const token = await tokenOf(crew.owner);
   const answer = await sendSweep(project.publicId, token, touchstone());
@@ -147,6 +152,7 @@ export async function makePlace(crew: Crew, visibility: Visibility, empty = fals
     step,
     trail: await trailOf(project.id),
     writeUp: await publishWriteUp(project.publicId, crew.owner),
+    batch: await beginBatchOf(project, crew.owner),
   };
 }
 
@@ -160,6 +166,12 @@ async function publishWriteUp(project: string, by: Someone): Promise<string> {
   if (!row) throw new Error("The draft is not there.");
   await publish(row.writeUp, found.project, by, { revision: revisionOf(row.writeUp), remark: "" });
   return publicId;
+}
+
+async function beginBatchOf(project: { id: number }, by: Someone): Promise<string> {
+  const run = await beginBatch(newPublicId(), project, by);
+  if (!run) throw new Error("The batch was not begun.");
+  return run.publicId;
 }
 
 export async function makeCrew(): Promise<Crew> {
