@@ -50,11 +50,19 @@ export default function Sweeps({ loaderData }: Route.ComponentProps) {
     <section className="grid gap-5" aria-labelledby="sweeps">
       <div className="flex flex-wrap items-end justify-between gap-4">
         <h2 id="sweeps">Sweeps</h2>
-        {mayAdd && (
-          <LinkButton to={`${base}/new`} icon="add">
-            Add sweeps
-          </LinkButton>
-        )}
+        <div className="flex flex-wrap items-center gap-3">
+          <Link to={`/projects/${project.publicId}/dips`}>All dips as a table</Link>
+          {mayAdd && (
+            <>
+              <LinkButton to={`${base}/batch`} variant="quiet">
+                A folder or a ZIP
+              </LinkButton>
+              <LinkButton to={`${base}/new`} icon="add">
+                Add sweeps
+              </LinkButton>
+            </>
+          )}
+        </div>
       </div>
       <Form className="flex flex-wrap items-end gap-3" role="search" aria-label="Sweeps of this project">
         <InputField label="Title or file name" name="q" type="search" defaultValue={words} />
