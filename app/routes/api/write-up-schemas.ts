@@ -1,9 +1,11 @@
 import { z } from "zod";
-import { bodyField, titleField } from "~/routes/write-ups/write-ups.schema";
+import { titleField } from "~/routes/write-ups/write-ups.schema";
+import { MAX_WRITE_UP_CHARACTERS } from "~/services/note-limits";
 
 /** The shapes of the API for write-ups. */
 
 const id = z.string().describe("Short public id");
+const body = z.string().max(MAX_WRITE_UP_CHARACTERS);
 const time = z.iso.datetime().describe("UTC");
 
 export const writeUpSummaryShape = z.object({
@@ -26,13 +28,11 @@ export const writeUpShape = writeUpSummaryShape.extend({
   revision: z.string().describe("Of title and text; send it back with a change"),
 });
 
-export const newWriteUpSchema = z.object({ title: titleField, body: bodyField });
+export const newWriteUpSchema = z.object({ title: titleField, body: body.default("") });
 
 export const writeUpChangeSchema = z.object({
   title: titleField.optional(),
-  body: z
-    .string()
-    .pipe(bodyField)
+  body: body
     .optional()
     .describe("Markdown; a figure is a line of its own: ![caption](#dip:…), #sweep:… or #plate:…"),
   revision: z
