@@ -12,6 +12,8 @@ const LIMITS = {
   /** Codes for signing in: to one address, and asked for from one network, which may be a whole club's. */
   "code-address": { points: 5, duration: 900 },
   "code-from": { points: 100, duration: 900 },
+  /** Plates computed again from their originals, by anybody: from one network, which may be a whole club's. */
+  "plate-check": { points: 30, duration: 300 },
   report: { points: 30, duration: 24 * 60 * 60 },
   /** Invitations that one person makes: their mails go to people who did not ask. */
   invite: { points: 40, duration: 24 * 60 * 60 },

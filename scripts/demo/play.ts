@@ -33,6 +33,7 @@ export async function play(story: Story, cast: Cast, benchIds: Stage["benchIds"]
     sweepIds: new Map(),
     noteIds: new Map(),
     stepIds: new Map(),
+    plateIds: new Map(),
     benchIds,
   };
   for (const step of story.steps) await perform(step, stage);

@@ -9,10 +9,11 @@ export interface Stage {
   cast: Cast;
   project: { id: number; publicId: string };
   told: Told;
-  /** By the story's own keys: row ids of sweeps, public ids of notes and steps. */
+  /** By the story's own keys: row ids of sweeps, public ids of notes, steps and plates. */
   sweepIds: Map<string, number>;
   noteIds: Map<string, string>;
   stepIds: Map<string, string>;
+  plateIds: Map<string, string>;
   /** Row ids of benches: one for all stories, as a bench is used in several projects. */
   benchIds: Map<string, number>;
 }

@@ -21,6 +21,8 @@ export type Ask =
   | { project: ProjectAction }
   /** The same, for whoever has an account only. */
   | { signedIn: ProjectAction }
+  /** Of what anybody may read whatever the project is: refused, but never hidden. */
+  | { plate: ProjectAction }
   /** The API: the same table, asked by token. */
   | { api: ProjectAction | "any-member" }
   /** Members only, whatever their role: leaving. */
@@ -65,6 +67,13 @@ const read: Case[] = [{ ask: { project: "project.read" } }];
 const anybody: Case[] = [{ ask: { site: "site.read" } }];
 const apiRead: Case[] = [{ ask: { api: "project.read" } }];
 const notHere: Case[] = [{ ask: { status: 405 } }];
+const plateForm = (place: Place) => ({
+  from: `sweep:${place.sweep}`,
+  title: "A walk",
+  licence: "CC-BY-4.0",
+  scale: "linear",
+  quantity: "return-loss",
+});
 const sweepFile = () => new File([touchstone()], "walk.s1p");
 
 export const EXPECTATIONS: Record<string, Expectation> = {
@@ -609,6 +618,38 @@ export const EXPECTATIONS: Record<string, Expectation> = {
     ],
   },
 
+  "routes/plates/list.tsx": { GET: read },
+  "routes/plates/new.tsx": {
+    GET: [{ ask: { project: "plate.make" } }],
+    POST: [
+      {
+        name: "show",
+        ask: { project: "plate.make" },
+        form: ({ place }) => ({ ...plateForm(place), intent: "show" }),
+      },
+      {
+        name: "freeze",
+        ask: { project: "plate.make" },
+        form: ({ place }) => ({ ...plateForm(place), intent: "freeze" }),
+      },
+    ],
+  },
+  "routes/plates/preview.ts": {
+    POST: [{ ask: { project: "plate.make" }, form: ({ place }) => plateForm(place) }],
+  },
+  "routes/plates/plate.tsx": {
+    GET: anybody,
+    POST: [
+      { name: "check", ask: { site: "site.read" }, form: () => ({ intent: "check" }) },
+      {
+        name: "withdraw",
+        ask: { plate: "plate.make" },
+        form: () => ({ intent: "withdraw", reason: "A walk." }),
+        destroys: "sweep",
+      },
+    ],
+  },
+
   "routes/live/stream.ts": { GET: read },
   "routes/live/poll.ts": { GET: read },
   "routes/live/looking.ts": {
@@ -731,6 +772,11 @@ export const EXPECTATIONS: Record<string, Expectation> = {
   "routes/api/sweep.ts": { GET: apiRead, POST: notHere },
   "routes/api/points.ts": { GET: apiRead, POST: notHere },
   "routes/api/bands.ts": { GET: apiRead, POST: notHere },
+  "routes/api/plates.ts": {
+    GET: apiRead,
+    POST: [{ ask: { api: "plate.make" }, json: () => ({ from: "strip", title: "From a script" }) }],
+  },
+  "routes/api/plate.ts": { GET: [{ ask: { api: "any-member" } }], POST: notHere },
   "routes/api/compare.ts": { GET: apiRead, POST: notHere },
   "routes/api/notes.ts": {
     GET: apiRead,

@@ -14,6 +14,7 @@ import { flattenSiteMap, layoutFiles, type SiteRoute } from "./site-map.ts";
 import {
   type Crew,
   closeWorld,
+  freezePlate,
   makeCrew,
   makePerson,
   makePlace,
@@ -92,6 +93,7 @@ describe.each(routes)("$path ($file)", (route) => {
             const place = one.destroys
               ? await makePlace(crew, visibility, one.destroys === "project")
               : places[visibility];
+            if (route.path.includes(":plate")) place.plate ||= await freezePlate(place, crew.owner);
             const response = await send(route, method, one, actor, place);
             const answer = answerOf(response);
             seen.push(`${actor}, ${visibility}: ${answer}`);
@@ -182,6 +184,10 @@ function expected(ask: Ask, method: string, actor: Actor, visibility: Visibility
     if (!role) return "hidden";
     return mayInProject(role, ask.api) ? "allowed" : "refused";
   }
+  if ("plate" in ask) {
+    if (role && mayInProject(role, ask.plate)) return "allowed";
+    return "refused";
+  }
   if (!role) return "hidden";
   if ("signedIn" in ask) {
     return actor === "visitor" ? withoutSession : mayInProject(role, ask.signedIn) ? "allowed" : "refused";
@@ -214,6 +220,7 @@ function fill(path: string, place: Place): string {
     .replace(":attachment", place.attachment)
     .replace(":step", place.step)
     .replace(":trail", place.trail)
+    .replace(":plate", place.plate)
     .replace(":writeUp", place.writeUp)
     .replace(":batch", place.batch)
     .replace(":token", place.invitation)

@@ -20,6 +20,8 @@ import { createBench } from "~/services/benches.server";
 import { invite } from "~/services/invitations.server";
 import { writeNote } from "~/services/notes.server";
 import { addPhotograph } from "~/services/photographs.server";
+import { propose } from "~/services/plates/compose.server";
+import { freeze } from "~/services/plates/freeze.server";
 import { createProject } from "~/services/projects.server";
 import { makeStep } from "~/services/steps.server";
 import { makeToken } from "~/services/tokens.server";
@@ -82,6 +84,8 @@ export interface Place {
   step: string;
   /** That its dip is on. */
   trail: string;
+  /** Made where it is asked for: `freezePlate`. */
+  plate: string;
   /** Published. */
   writeUp: string;
   /** Of sweeps, begun. */
@@ -116,6 +120,7 @@ export async function makePlace(crew: Crew, visibility: Visibility, empty = fals
       attachment: "",
       step: "",
       trail: "",
+      plate: "",
       writeUp: "",
       batch: "",
     };
@@ -151,9 +156,22 @@ export async function makePlace(crew: Crew, visibility: Visibility, empty = fals
     attachment,
     step,
     trail: await trailOf(project.id),
+    plate: "",
     writeUp: await publishWriteUp(project.publicId, crew.owner),
     batch: await beginBatchOf(project, crew.owner),
   };
+}
+
+/** A plate of the place's sweep; its public id. */
+export async function freezePlate(place: Place, by: Someone): Promise<string> {
+  const found = await projects.findWithRole(place.project, by.id);
+  const subject = { kind: "sweep" as const, ids: [place.sweep] };
+  const choices = found && (await propose(found.project, subject));
+  if (!choices || "problem" in choices) throw new Error("There is nothing to be frozen.");
+  const maker = { id: by.id, name: by.userName };
+  const made = await freeze({ project: found.project, subject, choices, by: maker });
+  if ("problem" in made) throw new Error(made.problem);
+  return made.publicId;
 }
 
 /** A published write-up without figures; its public id. */

@@ -56,6 +56,16 @@ export const DRAWINGS = {
       <path d="M50 32h18m-5-5 5 5-5 5" {...ACCENT} />
     </Paper>
   ),
+  plates: () => (
+    <Paper>
+      <path d="M26 6H94V64H26ZM31 11H89V59H31Z" {...PEN} fill="var(--color-surface)" />
+      <Land
+        d="M35 26H52C58 26 57 42 60 42S62 26 68 26H85V46H35Z"
+        line="M35 26H52C58 26 57 42 60 42S62 26 68 26H85"
+      />
+      <path d="M42 53h36" {...ACCENT} />
+    </Paper>
+  ),
   projects: () => (
     <Paper>
       <Land d="M4 52H116V66H4Z" line="M4 52H116" />

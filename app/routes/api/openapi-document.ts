@@ -11,6 +11,7 @@ import {
   problemResponse,
   reference,
 } from "./openapi-parts.ts";
+import { PLATE_PATHS } from "./openapi-plates.ts";
 import { STORY_PATHS } from "./openapi-story.ts";
 import { WRITE_UP_PATHS } from "./openapi-write-ups.ts";
 import * as shapes from "./schemas.ts";
@@ -145,6 +146,7 @@ const PATHS: Record<string, { get?: Operation; post?: Operation }> = {
     }),
   },
   ...STORY_PATHS,
-  ...WRITE_UP_PATHS,
   ...COMPARE_PATHS,
+  ...PLATE_PATHS,
+  ...WRITE_UP_PATHS,
 };

@@ -1,5 +1,6 @@
 import { z } from "zod";
 import * as compare from "./compare-schemas.ts";
+import * as plates from "./plate-schemas.ts";
 import * as shapes from "./schemas.ts";
 import * as story from "./story-schemas.ts";
 import { givenSchema } from "./upload.schema.ts";
@@ -36,11 +37,19 @@ const COMPONENTS = {
   Causes: story.causesShape,
   Bands: compare.bandsShape,
   Comparison: compare.comparisonShape,
+  Plate: plates.plateShape,
+  PlateList: plates.plateListShape,
+  NewPlate: plates.newPlateSchema,
   WriteUp: writeUps.writeUpShape,
   WriteUpList: writeUps.writeUpListShape,
   NewWriteUp: writeUps.newWriteUpSchema,
   WriteUpChange: writeUps.writeUpChangeSchema,
 } satisfies Record<string, z.ZodType>;
+
+/** What an answer of that name is checked with. */
+export function componentOf(name: Name): z.ZodType {
+  return COMPONENTS[name];
+}
 
 export function componentSchemas() {
   const registry = z.registry<{ id: string }>();

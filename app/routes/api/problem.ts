@@ -31,6 +31,7 @@ const TITLES: Record<number, string> = {
   404: "Not Found",
   405: "Method Not Allowed",
   409: "Conflict",
+  410: "Gone",
   413: "Content Too Large",
   415: "Unsupported Media Type",
   422: "Unprocessable Content",

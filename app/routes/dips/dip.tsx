@@ -2,6 +2,7 @@ import { Link } from "react-router";
 import { requireProject } from "~/auth/require.server";
 import { Thread } from "~/components/notes/Thread";
 import { VerdictForm } from "~/components/notes/VerdictForm";
+import { MakePlate } from "~/components/plates/MakePlate";
 import { Caution } from "~/components/ui/Caution";
 import { DateTime } from "~/components/ui/DateTime";
 import { VerdictTag } from "~/components/ui/Tag";
@@ -51,6 +52,7 @@ export default function DipPage({ loaderData }: Route.ComponentProps) {
             Dip at <span className="font-mono tracking-tight">{frequencyOf(loaderData)}</span>
           </h1>
           <VerdictTag verdict={dip.verdict} />
+          <MakePlate from={`dip:${dip.publicId}`} />
         </div>
         <p className="soft">
           in <Link to={`${sweepPath}?dip=${dip.publicId}`}>{sweep.title}</Link>,{" "}

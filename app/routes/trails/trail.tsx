@@ -1,6 +1,7 @@
 import { data, Link } from "react-router";
 import { requireProject } from "~/auth/require.server";
 import { ThreadSection } from "~/components/notes/ThreadSection";
+import { MakePlate } from "~/components/plates/MakePlate";
 import { VerdictTag } from "~/components/ui/Tag";
 import { refused } from "~/errors";
 import type { Route } from "./+types/trail";
@@ -56,6 +57,7 @@ export default function TrailPage({ loaderData, actionData }: Route.ComponentPro
         <div className="flex flex-wrap items-center gap-x-4 gap-y-2">
           <h1>{title}</h1>
           <VerdictTag verdict={trail.verdict} />
+          {stops.length > 0 && <MakePlate from={`trail:${trail.publicId}`} />}
         </div>
         <p className="soft">{seen}</p>
         {may.correct && <NameForm name={trail.name} errors={errors("name")} />}

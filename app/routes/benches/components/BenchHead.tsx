@@ -1,4 +1,5 @@
 import { Form } from "react-router";
+import { MakePlate } from "~/components/plates/MakePlate";
 import { Breadcrumbs } from "~/components/ui/Breadcrumbs";
 import { Button, LinkButton } from "~/components/ui/Button";
 import { DateTime } from "~/components/ui/DateTime";
@@ -20,6 +21,7 @@ export function BenchHead({ data }: { data: BenchPageData }) {
           <LinkButton to={`${page}/compare`} variant="quiet" size="small">
             Compare
           </LinkButton>
+          {!bench.elsewhere && <MakePlate from={`bench:${bench.publicId}`} />}
           {may.edit && (
             <>
               <LinkButton to={`${page}/rebuild`} variant="quiet" size="small" icon="add">

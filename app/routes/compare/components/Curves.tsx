@@ -4,6 +4,7 @@ import { OverlayChart } from "~/charts/OverlayChart";
 import { RangeBar } from "~/charts/RangeBar";
 import type { FrequencyRange } from "~/charts/ranges";
 import { StripDrag } from "~/charts/StripDrag";
+import { MakePlate } from "~/components/plates/MakePlate";
 import { useHydrated } from "~/components/ui/hydrated";
 import type { ComparePageData } from "../compare";
 import { compareSearch } from "../compare.schema";
@@ -35,6 +36,9 @@ export function Curves({ data, shown }: CurvesProps) {
       <div className="flex flex-wrap items-center justify-between gap-3">
         <h3 id="curves">Over one another</h3>
         <ViewBar {...{ data, shown, searchFor, onRange }} />
+        {sweeps.length > 1 && sweeps.length <= MOST_ON_A_PLATE && (
+          <MakePlate from={`compare:${sweeps.map(({ publicId }) => publicId).join(",")}`} view={view} />
+        )}
       </div>
       <OverlayChart
         scene={overlay}
@@ -126,3 +130,5 @@ function ViewBar({ data: { view }, shown: { range, whole, scale }, searchFor, on
     </div>
   );
 }
+
+const MOST_ON_A_PLATE = 8;

@@ -1,5 +1,6 @@
 import { Form, Link } from "react-router";
 import { type Conflict, EditConflict } from "~/components/edit-conflict/EditConflict";
+import { MakePlate } from "~/components/plates/MakePlate";
 import { Button } from "~/components/ui/Button";
 import { DateTime } from "~/components/ui/DateTime";
 import { Dialog } from "~/components/ui/Dialog";
@@ -25,6 +26,7 @@ export function SweepHead({
       <div className="flex flex-wrap items-start justify-between gap-x-6 gap-y-3">
         <h2 className="sweep-title">{sweep.title}</h2>
         <div className="flex flex-wrap gap-2 no-print">
+          <MakePlate from={`sweep:${sweep.publicId}`} view={data.view} />
           {may.edit && (
             <EditDialog key={`${sweep.title} ${sweep.takenAt}`} sweep={sweep} conflict={conflict} />
           )}

@@ -1,6 +1,7 @@
 import { Form, Link } from "react-router";
 import { RangeBar } from "~/charts/RangeBar";
 import type { FrequencyRange } from "~/charts/ranges";
+import { MakePlate } from "~/components/plates/MakePlate";
 import { Button, LinkButton } from "~/components/ui/Button";
 import type { ProjectPageData } from "../../project";
 import { stripSearch } from "./strip.schema.ts";
@@ -40,6 +41,7 @@ export function StripBar({ data, searchFor, onRange }: StripBarProps) {
         ))}
       </nav>
       <HideForm data={data} />
+      <MakePlate from="strip" view={view} />
       {may.add && (
         <LinkButton to={`/projects/${project.publicId}/sweeps/new`} icon="add" size="small">
           Add sweeps

@@ -1,0 +1,93 @@
+import { Form, useNavigation } from "react-router";
+import { Button } from "~/components/ui/Button";
+import { TextareaField } from "~/components/ui/Field";
+import { useHydrated } from "~/components/ui/hydrated";
+import type { PlateDraft } from "../draft.server";
+import type { NewPlateAnswer, NewPlateData } from "../new";
+import { PlateFields } from "./PlateFields";
+import { Preview } from "./Preview";
+import { usePreview } from "./use-preview";
+
+interface PlateFormProps {
+  data: NewPlateData;
+  draft: PlateDraft;
+  /** What the server said to the form as it was sent; null before it was. */
+  answer: NewPlateAnswer | null;
+}
+
+/** Choices beside the plate that comes of them. Without scripts a button shows it. */
+export function PlateForm({ data, draft, answer }: PlateFormProps) {
+  const hydrated = useHydrated();
+  const busy = useNavigation().formData?.get("intent") === "freeze";
+  const tried = usePreview(`/projects/${data.projectId}/plates/preview`);
+  const last = tried.answer ?? answer ?? draft;
+  // While a field is half typed the last figure stays.
+  const preview = last.preview ?? (last.problem ? null : (answer?.preview ?? draft.preview));
+  const errors = { ...answer?.errors, ...tried.answer?.errors };
+  return (
+    <div className="plate-form">
+      <Form
+        method="post"
+        className="grid gap-5 content-start"
+        onChange={(event) => tried.onChange(event.currentTarget)}
+        noValidate
+      >
+        <input type="hidden" name="from" value={draft.from} />
+        <input type="hidden" name="draw" value={draft.draw} />
+        {draft.mends && (
+          <>
+            <input type="hidden" name="mends" value={draft.mends.publicId} />
+            <TextareaField
+              label={`What was wrong with version ${draft.mends.version}`}
+              hint="In a line or two. Readers of the old version see it."
+              name="wrong"
+              rows={2}
+              maxLength={500}
+              required
+              defaultValue={answer?.sent.wrong ?? ""}
+              errors={answer?.errors.wrong}
+            />
+          </>
+        )}
+        <PlateFields
+          texts={answer?.sent.texts ?? draft.texts}
+          errors={errors}
+          labelled={(draft.preview ?? answer?.preview)?.labelled ?? []}
+          curves={(draft.preview ?? answer?.preview)?.curves ?? true}
+        />
+        {!hydrated && (
+          <div>
+            <Button name="intent" value="show" variant="quiet">
+              Show
+            </Button>
+          </div>
+        )}
+        <Consequence visibility={data.visibility} />
+        <div>
+          <Button name="intent" value="freeze" busy={busy} icon="plate">
+            {draft.mends ? "Freeze the new version" : "Freeze the plate"}
+          </Button>
+        </div>
+      </Form>
+      <Preview preview={preview} problem={last.problem} busy={tried.busy} />
+    </div>
+  );
+}
+
+function Consequence({ visibility }: { visibility: NewPlateData["visibility"] }) {
+  return (
+    <div
+      className={`panel grid gap-2 border-l-3 ${visibility === "public" ? "border-l-fen" : "border-l-clay"}`}
+    >
+      <p className="font-semibold">
+        Anyone who has a plate’s address can read it
+        {visibility === "public" ? "." : `, although this project is ${visibility}.`}
+      </p>
+      <p className="text-small">
+        With the figure go its numbers and points, the project’s title, the names of those who took part, and
+        how each number came about. A plate can be withdrawn, but not changed: a mistake is mended by a new
+        version.
+      </p>
+    </div>
+  );
+}

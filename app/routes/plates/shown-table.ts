@@ -1,0 +1,74 @@
+import type { PlateTable } from "~/services/plates/record";
+
+export interface ShownTable {
+  title: string;
+  columns: { key: string; label: string; numeric: boolean }[];
+  rows: Record<string, string>[];
+}
+
+type Cell = PlateTable["rows"][number][string];
+type Column = PlateTable["columns"][number];
+
+/**
+ * A table of a record as people read it: a number with its limits in one cell, `1.21 (1.12–1.31)`, or with its
+ * half-width, `7.0812 MHz ± 0.9 kHz`. Columns that say nothing in any row are left out; what is not known is said. Pure.
+ */
+export function shownTable({ title, columns, rows }: PlateTable): ShownTable {
+  const byKey = new Map(columns.map((column) => [column.key, column]));
+  const folded = (key: string) =>
+    SUFFIXES.some((suffix) => key.endsWith(suffix) && byKey.has(key.slice(0, -suffix.length)));
+  const kept = columns.filter(
+    ({ key }) => !folded(key) && rows.some((row) => row[key] !== NOTHING && row[key] !== ""),
+  );
+  return {
+    title,
+    columns: kept.map(({ key, label }) => ({
+      key,
+      label: headOf(label, byKey.get(key), rows),
+      numeric: rows.some((row) => typeof row[key] === "number"),
+    })),
+    rows: rows.map((row) =>
+      Object.fromEntries(kept.map((column) => [column.key, cellOf(row, column, byKey)])),
+    ),
+  };
+}
+
+function cellOf(
+  row: Record<string, Cell>,
+  { key, unit }: Column,
+  byKey: ReadonlyMap<string, Column>,
+): string {
+  const value = row[key];
+  if (value === null || value === undefined) return "unknown";
+  if (typeof value !== "number") return value === "" ? NOTHING : String(value);
+  const half = byKey.get(`${key}Half`);
+  if (half) {
+    const by = row[half.key];
+    return `${withUnit(value, unit)}${typeof by === "number" ? ` ± ${withUnit(by, half.unit)}` : ""}`;
+  }
+  if (!byKey.has(`${key}Low`) || !byKey.has(`${key}High`)) return number(value);
+  const [low, high] = [row[`${key}Low`], row[`${key}High`]];
+  if (low === null && high === null) return `${number(value)} (limits unknown)`;
+  return `${number(value)} (${end(low)}–${end(high)})`;
+}
+
+/** The unit stands in the head, except where the cells name it themselves. */
+function headOf(label: string, column: Column | undefined, rows: PlateTable["rows"]): string {
+  if (!column?.unit || rows.some((row) => `${column.key}Half` in row)) return label;
+  return `${label}, ${column.unit}`;
+}
+
+function end(cell: Cell | undefined): string {
+  return typeof cell === "number" ? number(cell) : (cell?.toString() ?? "unknown");
+}
+
+function withUnit(value: number, unit: string): string {
+  return unit ? `${number(value)}\u2009${unit}` : number(value);
+}
+
+function number(value: number): string {
+  return String(value).replace("-", "−");
+}
+
+const SUFFIXES = ["Half", "Low", "High"];
+const NOTHING = "-";

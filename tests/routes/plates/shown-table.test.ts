@@ -1,0 +1,53 @@
+import { describe, expect, test } from "vitest";
+import { shownTable } from "../../../app/routes/plates/shown-table.ts";
+
+const COLUMNS = [
+  { key: "frequency", label: "Frequency", unit: "MHz" },
+  { key: "frequencyHalf", label: "±", unit: "kHz" },
+  { key: "swr", label: "Lowest SWR", unit: "" },
+  { key: "swrLow", label: "at least", unit: "" },
+  { key: "swrHigh", label: "at most", unit: "" },
+  { key: "moved", label: "Moved", unit: "kHz" },
+  { key: "remark", label: "Remark", unit: "" },
+];
+const ROW = {
+  frequency: 7.0812,
+  frequencyHalf: 0.9,
+  swr: 1.21,
+  swrLow: 1.12,
+  swrHigh: 1.31,
+  moved: -12.5,
+  remark: "-",
+};
+const cells = (more: Record<string, number | string | null>) =>
+  shownTable({ title: "Dips", columns: COLUMNS, rows: [{ ...ROW, ...more }] }).rows[0];
+
+describe("a table as people read it", () => {
+  test("has numbers with their limits in one cell, and no column that says nothing", () => {
+    const { columns } = shownTable({ title: "Dips", columns: COLUMNS, rows: [ROW] });
+    expect(columns.map(({ label }) => label)).toEqual(["Frequency", "Lowest SWR", "Moved, kHz"]);
+    expect(cells({})).toEqual({
+      frequency: "7.0812\u2009MHz ± 0.9\u2009kHz",
+      swr: "1.21 (1.12–1.31)",
+      moved: "−12.5",
+    });
+  });
+
+  test("says what is not known, and never makes it a zero", () => {
+    expect(cells({ swrLow: null, swrHigh: null }).swr).toBe("1.21 (limits unknown)");
+    expect(cells({ swrHigh: "∞" }).swr).toBe("1.21 (1.12–∞)");
+    expect(cells({ swrLow: null }).swr).toBe("1.21 (unknown–1.31)");
+    expect(cells({ swr: null }).swr).toBe("unknown");
+    expect(cells({ swr: "∞", swrHigh: "∞" }).swr).toBe("∞");
+    expect(cells({ frequencyHalf: null }).frequency).toBe("7.0812\u2009MHz");
+    expect(cells({ remark: "at least" }).remark).toBe("at least");
+  });
+
+  test("of no rows has no columns to show", () => {
+    expect(shownTable({ title: "Dips", columns: COLUMNS, rows: [] })).toEqual({
+      title: "Dips",
+      columns: [],
+      rows: [],
+    });
+  });
+});
