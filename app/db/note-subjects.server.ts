@@ -1,10 +1,8 @@
-import { and, asc, desc, eq, inArray, like, or, sql } from "drizzle-orm";
+import { and, asc, desc, eq, inArray, like, or, type SQL, sql } from "drizzle-orm";
 import { db, type Queryable } from "./client.server.ts";
 import { dips, memberships, plates, projects, steps, sweeps, users } from "./schema/index.ts";
 
 /** Whom and what the notes of a project can name: only what is of that project. */
-
-const person = { publicId: users.publicId, userName: users.userName, name: users.name };
 
 export async function findPeople(
   projectId: number,
@@ -13,37 +11,28 @@ export async function findPeople(
 ) {
   const { userNames = [], publicIds = [] } = named;
   if (userNames.length + publicIds.length === 0) return [];
-  return tx
-    .select(person)
-    .from(memberships)
-    .innerJoin(users, eq(users.id, memberships.userId))
-    .where(
-      and(
-        eq(memberships.projectId, projectId),
-        or(
-          userNames.length > 0 ? inArray(users.userName, userNames) : undefined,
-          publicIds.length > 0 ? inArray(users.publicId, publicIds) : undefined,
-        ),
-      ),
-    )
-    .limit(MOST);
+  const these = or(
+    userNames.length > 0 ? inArray(users.userName, userNames) : undefined,
+    publicIds.length > 0 ? inArray(users.publicId, publicIds) : undefined,
+  );
+  return memberRows(projectId, these, MOST, tx);
 }
 
 /** Members whose name or user name has a word that begins so. */
 export async function searchPeople(projectId: number, begin: string, tx: Queryable = db) {
   const wish = pattern(begin);
+  const begins = [`${wish}%`, `% ${wish}%`].map((one) => like(users.name, one));
+  return memberRows(projectId, or(like(users.userName, `${wish}%`), ...begins), SUGGESTED, tx);
+}
+
+function memberRows(projectId: number, which: SQL | undefined, limit: number, tx: Queryable) {
   return tx
-    .select(person)
+    .select({ publicId: users.publicId, userName: users.userName, name: users.name })
     .from(memberships)
     .innerJoin(users, eq(users.id, memberships.userId))
-    .where(
-      and(
-        eq(memberships.projectId, projectId),
-        or(like(users.userName, `${wish}%`), like(users.name, `${wish}%`), like(users.name, `% ${wish}%`)),
-      ),
-    )
+    .where(and(eq(memberships.projectId, projectId), which))
     .orderBy(asc(users.name))
-    .limit(SUGGESTED);
+    .limit(limit);
 }
 
 const dip = {

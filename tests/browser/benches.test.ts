@@ -1,7 +1,17 @@
 import type { Browser } from "playwright-core";
 import { afterAll, beforeAll, expect, test } from "vitest";
 import { benchFile, GOOD_BRIDGE, POOR_BRIDGE, type Standard } from "../bench-files.ts";
-import { expectAccessible, expectFits, fileOf, launch, newcomer, settled, signIn, visit } from "./browser.ts";
+import {
+  expectAccessible,
+  expectFits,
+  fileOf,
+  launch,
+  newcomer,
+  newProject,
+  settled,
+  signIn,
+  visit,
+} from "./browser.ts";
 
 /** Qualifying a bench from four files, correcting a sweep taken before, and rebuilding the bench. */
 
@@ -15,10 +25,7 @@ afterAll(() => browser.close());
 test("somebody qualifies a bench from four files on a telephone, and rebuilds it", async () => {
   const { page, context, complaints } = await visit(browser, { viewport: { width: 390, height: 844 } });
   await signIn(page, newcomer("ada"));
-  await page.goto("/projects/new");
-  await page.getByLabel("Title").fill("Bridge in the shed");
-  await page.getByRole("button", { name: /project/i }).click();
-  await page.waitForURL(/\/projects\/[a-z0-9]{10}$/);
+  await newProject(page, "Bridge in the shed");
 
   await page.getByRole("navigation", { name: "Project" }).getByRole("link", { name: "Benches" }).click();
   await page.getByRole("link", { name: "Write the first bench down" }).click();
@@ -63,11 +70,7 @@ test("somebody qualifies a bench from four files on a telephone, and rebuilds it
 test("a sweep taken before is corrected with the bench of its day, and a rebuild leaves it alone", async () => {
   const { page, context, complaints } = await visit(browser);
   await signIn(page, newcomer("bram"));
-  await page.goto("/projects/new");
-  await page.getByLabel("Title").fill("Vertical, before the bench was known");
-  await page.getByRole("button", { name: /project/i }).click();
-  await page.waitForURL(/\/projects\/[a-z0-9]{10}$/);
-  const project = new URL(page.url()).pathname;
+  const project = await newProject(page, "Vertical, before the bench was known");
   await page.goto(`${project}/sweeps/new`);
   await settled(page);
   await page

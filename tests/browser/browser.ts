@@ -67,6 +67,20 @@ export async function signIn(page: Page, login: string): Promise<void> {
   await page.waitForURL(`${SERVER}/**`);
 }
 
+/** Makes a project of whoever is signed in; answers its path, and is on its page. */
+export async function newProject(
+  page: Page,
+  title: string,
+  visibility?: "Private" | "Public",
+): Promise<string> {
+  await page.goto("/projects/new");
+  await page.getByLabel("Title").fill(title);
+  if (visibility) await page.getByRole("radio", { name: visibility }).check();
+  await page.getByRole("button", { name: "Make the project" }).click();
+  await page.waitForURL(/\/projects\/[a-z0-9]{10}$/);
+  return new URL(page.url()).pathname;
+}
+
 /** The path of the sweep with phase that ends the demo's story. */
 export async function demoSweep(browser: Browser): Promise<string> {
   const { page, context } = await visit(browser);

@@ -1,7 +1,17 @@
 import type { Browser } from "playwright-core";
 import { afterAll, beforeAll, expect, test } from "vitest";
 import { benchFile, GOOD_BRIDGE, POOR_BRIDGE, type Standard } from "../bench-files.ts";
-import { expectAccessible, expectFits, fileOf, launch, newcomer, settled, signIn, visit } from "./browser.ts";
+import {
+  expectAccessible,
+  expectFits,
+  fileOf,
+  launch,
+  newcomer,
+  newProject,
+  settled,
+  signIn,
+  visit,
+} from "./browser.ts";
 
 /** A bench applied to a sweep taken before; the limits appear; a rebuild leaves the sweep as it is. */
 
@@ -15,11 +25,7 @@ afterAll(() => browser.close());
 test("somebody applies a bench to an older sweep, and rebuilds it without changing the sweep", async () => {
   const { page, context, complaints } = await visit(browser);
   await signIn(page, newcomer("ada"));
-  await page.goto("/projects/new");
-  await page.getByLabel("Title").fill("Vertical on the bank");
-  await page.getByRole("button", { name: /project/i }).click();
-  await page.waitForURL(/\/projects\/[a-z0-9]{10}$/);
-  const project = new URL(page.url()).pathname;
+  const project = await newProject(page, "Vertical on the bank");
 
   await page.goto(`${project}/sweeps/new`);
   await page.getByTestId("drop-zone").waitFor();

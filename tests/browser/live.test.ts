@@ -5,6 +5,7 @@ import {
   fileOf,
   launch,
   newcomer,
+  newProject,
   settled,
   signIn,
   sweepText,
@@ -33,11 +34,7 @@ test("both have the sweep open and see one another", async () => {
   const { page } = ada;
   await signIn(page, names.ada);
   await signIn(bram.page, names.bram);
-  await page.goto("/projects/new");
-  await page.getByLabel("Title").fill("Two at once");
-  await page.getByRole("button", { name: /project/i }).click();
-  await page.waitForURL(/\/projects\/[a-z0-9]{10}$/);
-  projectPath = new URL(page.url()).pathname;
+  projectPath = await newProject(page, "Two at once");
   await page.goto(`${projectPath}/members`);
   await settled(page);
   const add = page.locator("form", { has: page.getByLabel("User name") }).first();

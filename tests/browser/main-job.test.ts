@@ -6,6 +6,7 @@ import {
   fileOf,
   launch,
   newcomer,
+  newProject,
   settled,
   signIn,
   sweepText,
@@ -28,11 +29,7 @@ afterAll(() => browser.close());
 test("somebody new signs in, makes a project, drops three files and reads a dip", async () => {
   const { page, context, complaints } = await visit(browser);
   await signIn(page, ada);
-  await page.goto("/projects/new");
-  await page.getByLabel("Title").fill("Dipole over the ditch");
-  await page.getByRole("button", { name: /project/i }).click();
-  await page.waitForURL(/\/projects\/[a-z0-9]{10}$/);
-  projectPath = new URL(page.url()).pathname;
+  projectPath = await newProject(page, "Dipole over the ditch");
 
   await page.goto(`${projectPath}/sweeps/new`);
   await settled(page);

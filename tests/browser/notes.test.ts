@@ -1,7 +1,7 @@
 import type { Browser, Page } from "playwright-core";
 import { afterAll, beforeAll, describe, expect, it } from "vitest";
 import { EVASIONS, MARKDOWN_EVASIONS } from "../fixtures/hostile/evasions.ts";
-import { launch, newcomer, settled, signIn, type Visitor, visit } from "./browser.ts";
+import { launch, newcomer, newProject, settled, signIn, type Visitor, visit } from "./browser.ts";
 
 let browser: Browser;
 beforeAll(async () => {
@@ -10,15 +10,11 @@ beforeAll(async () => {
 afterAll(() => browser.close());
 
 /** A project of somebody's own, open on its page. */
-async function newProject({ page }: Visitor, login: string, title: string): Promise<string> {
+async function begin({ page }: Visitor, login: string, title: string): Promise<string> {
   await signIn(page, login);
-  await page.goto("/projects/new");
+  const path = await newProject(page, title);
   await settled(page);
-  await page.getByLabel("Title").fill(title);
-  await page.getByRole("button", { name: "Make the project" }).click();
-  await page.waitForURL(/\/projects\/(?!new)[0-9a-z]+$/);
-  await settled(page);
-  return new URL(page.url()).pathname;
+  return path;
 }
 
 const fieldOf = (page: Page) => page.getByLabel("Write a note on the project");
@@ -29,7 +25,7 @@ describe("a note that is being written", () => {
     const visitor = await visit(browser);
     const { page, context } = visitor;
     const login = newcomer("drafts");
-    const path = await newProject(visitor, login, "Drafts");
+    const path = await begin(visitor, login, "Drafts");
     await fieldOf(page).fill("begun before the reload");
     await page.reload();
     await settled(page);
@@ -62,7 +58,7 @@ describe("a note that is being written", () => {
   it("is brought back for ten seconds after it was removed", async () => {
     const visitor = await visit(browser);
     const { page, context } = visitor;
-    await newProject(visitor, newcomer("undo"), "Undone");
+    await begin(visitor, newcomer("undo"), "Undone");
     await fieldOf(page).fill("taken back");
     await store(page);
     const note = page.getByRole("article").getByText("taken back");
@@ -94,7 +90,7 @@ describe("nothing that a person gives runs", () => {
       if (request.url().includes("fennmarsh.example")) ran.push(request.url());
     });
     const hostile = '"><img src=x onerror=alert(1)><svg/onload=alert(2)>';
-    const path = await newProject(visitor, newcomer("hostile"), `Title ${hostile}`);
+    const path = await begin(visitor, newcomer("hostile"), `Title ${hostile}`);
     const texts = [...EVASIONS.map(([, text]) => text.replaceAll("\u0000", "")), ...MARKDOWN_EVASIONS];
     const own = "form:has(textarea[name=body]) input[type=file]";
     const file = { name: "x<img src=x onerror=alert(3)>.s1p", mimeType: "text/plain" };

@@ -1,7 +1,16 @@
 import type { Browser } from "playwright-core";
 import { afterAll, beforeAll, expect, test } from "vitest";
 import { codeFor, mailTo, pathIn } from "../web/mails.ts";
-import { expectAccessible, expectFits, launch, newcomer, settled, signIn, visit } from "./browser.ts";
+import {
+  expectAccessible,
+  expectFits,
+  launch,
+  newcomer,
+  newProject,
+  settled,
+  signIn,
+  visit,
+} from "./browser.ts";
 
 /** Somebody new is invited by mail, signs in by a code, joins, and later closes the account. */
 
@@ -18,11 +27,7 @@ afterAll(() => browser.close());
 test("an owner invites by mail and by link", async () => {
   const { page, context, complaints } = await visit(browser);
   await signIn(page, ada);
-  await page.goto("/projects/new");
-  await page.getByLabel("Title").fill("Mast behind the mill");
-  await page.getByRole("button", { name: /project/i }).click();
-  await page.waitForURL(/\/projects\/[a-z0-9]{10}$/);
-  projectPath = new URL(page.url()).pathname;
+  projectPath = await newProject(page, "Mast behind the mill");
   await page.goto(`${projectPath}/members`);
   await settled(page);
   await page.getByLabel("E-mail address").fill(guest);

@@ -1,7 +1,16 @@
 import type { Browser, BrowserContext, Page } from "playwright-core";
 import { afterAll, beforeAll, expect, test } from "vitest";
 import { drawnScreen, PHOTO_CORNERS, PLOT, photographedScreen } from "../drawn-screen.ts";
-import { expectAccessible, expectFits, launch, newcomer, settled, signIn, visit } from "./browser.ts";
+import {
+  expectAccessible,
+  expectFits,
+  launch,
+  newcomer,
+  newProject,
+  settled,
+  signIn,
+  visit,
+} from "./browser.ts";
 
 /** Pictures of screens: read by themselves, given their axes, straightened, corrected. */
 
@@ -15,11 +24,7 @@ beforeAll(async () => {
   browser = await launch();
   ({ context, page, complaints } = await visit(browser));
   await signIn(page, newcomer("cato"));
-  await page.goto("/projects/new");
-  await page.getByLabel("Title").fill("Screens from the shed");
-  await page.getByRole("button", { name: /project/i }).click();
-  await page.waitForURL(/\/projects\/[a-z0-9]{10}$/);
-  projectPath = new URL(page.url()).pathname;
+  projectPath = await newProject(page, "Screens from the shed");
 });
 afterAll(async () => {
   await context.close();

@@ -6,6 +6,7 @@ import {
   fileOf,
   launch,
   newcomer,
+  newProject,
   settled,
   signIn,
   sweepText,
@@ -27,12 +28,7 @@ afterAll(() => browser.close());
 test("the antenna is described, in feet and in metres", async () => {
   const { page, context, complaints } = await visit(browser);
   await signIn(page, ada);
-  await page.goto("/projects/new");
-  await page.getByLabel("Title").fill("Pole on the dike");
-  await page.getByRole("radio", { name: "Public" }).check();
-  await page.getByRole("button", { name: /project/i }).click();
-  await page.waitForURL(/\/projects\/[a-z0-9]{10}$/);
-  projectPath = new URL(page.url()).pathname;
+  projectPath = await newProject(page, "Pole on the dike", "Public");
 
   await page.goto(`${projectPath}/sweeps/new`);
   await settled(page);

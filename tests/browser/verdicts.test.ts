@@ -6,6 +6,7 @@ import {
   fileOf,
   launch,
   newcomer,
+  newProject,
   settled,
   signIn,
   sweepText,
@@ -32,12 +33,7 @@ test("Ada describes the antenna, sweeps it and lets Bram in", async () => {
 
   const { page, context, complaints } = await visit(browser);
   await signIn(page, ada);
-  await page.goto("/projects/new");
-  await page.getByLabel("Title").fill("A dip that nobody built");
-  await page.getByRole("radio", { name: "Public" }).check();
-  await page.getByRole("button", { name: /project/i }).click();
-  await page.waitForURL(/\/projects\/[a-z0-9]{10}$/);
-  projectPath = new URL(page.url()).pathname;
+  projectPath = await newProject(page, "A dip that nobody built", "Public");
 
   await page.goto(`${projectPath}/settings`);
   await settled(page);
