@@ -3,6 +3,7 @@ import { data, Form } from "react-router";
 import { requireProject } from "~/auth/require.server";
 import { EditConflict } from "~/components/edit-conflict/EditConflict";
 import { writeDraft } from "~/components/notes/draft";
+import { sendOrSayWhy } from "~/components/notes/unsent";
 import { Breadcrumbs } from "~/components/ui/Breadcrumbs";
 import { Button, LinkButton } from "~/components/ui/Button";
 import { Dialog } from "~/components/ui/Dialog";
@@ -75,12 +76,18 @@ export async function action(args: Route.ActionArgs) {
   }
 }
 
-export type EditAnswer = Awaited<ReturnType<typeof action>>;
+export function clientAction({ serverAction }: Route.ClientActionArgs) {
+  return sendOrSayWhy(() => serverAction());
+}
 
 export default function EditWriteUp({ loaderData, actionData }: Route.ComponentProps) {
   const { projectId, writeUp, writer } = loaderData;
   const base = `/projects/${projectId}/write-ups`;
   const draftKey = `${writer}:write-up:${writeUp.publicId}`;
+  const forget = () => {
+    writeDraft(draftKey, null);
+    writeDraft(`${draftKey}:title`, null);
+  };
   const conflict = actionData && "conflict" in actionData ? actionData.conflict : null;
   return (
     <article className="grid gap-6">
@@ -93,7 +100,7 @@ export default function EditWriteUp({ loaderData, actionData }: Route.ComponentP
       </header>
       {conflict ? (
         // The choice below holds both texts; the one on this device must not come back over it.
-        <div onSubmit={() => writeDraft(draftKey, null)}>
+        <div onSubmit={forget}>
           <EditConflict conflict={conflict} labels={{ title: "Title", body: "Text" }} intent="keep" />
         </div>
       ) : (
@@ -116,7 +123,7 @@ export default function EditWriteUp({ loaderData, actionData }: Route.ComponentP
         {!writeUp.wasPublished && (
           <Dialog label="Delete the draft" icon="remove" title="Delete this draft?">
             <p>Its text is gone then. What it names and shows of the project stays.</p>
-            <Form method="post" onSubmit={() => writeDraft(draftKey, null)}>
+            <Form method="post" onSubmit={forget}>
               <Button variant="danger" name="intent" value="delete">
                 Delete the draft
               </Button>

@@ -10,7 +10,8 @@ export async function action(args: Route.ActionArgs) {
   const access = await requireProject(args, "write-up.edit");
   const submission = parseWithZod(await args.request.formData(), { schema: lookSchema });
   if (submission.status !== "success") throw data("There was no text to show.", 400);
-  return { text: submission.value.body, ...(await drawDraft(access, submission.value.body)) };
+  const { body } = submission.value;
+  return Response.json({ text: body, ...(await drawDraft(access, body)) });
 }
 
 export async function loader(args: Route.LoaderArgs) {

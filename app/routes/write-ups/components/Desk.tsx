@@ -1,61 +1,56 @@
 import { useEffect, useRef, useState } from "react";
-import { useFetcher } from "react-router";
+import { Form, useNavigation } from "react-router";
 import { useDraft } from "~/components/notes/draft";
 import { Button, LinkButton } from "~/components/ui/Button";
 import { InputField } from "~/components/ui/Field";
 import { useHydrated } from "~/components/ui/hydrated";
-import { MAX_WRITE_UP_CHARACTERS } from "~/services/note-limits";
 import type { Route } from "../+types/edit";
-import type { EditAnswer } from "../edit.tsx";
 import { ArticleText } from "./ArticleText.tsx";
 import { FigureChoices } from "./FigureChoices.tsx";
+import { TextHint } from "./TextHint.tsx";
 import { useLook } from "./use-look.ts";
 import { WriteUpText } from "./WriteUpText.tsx";
 
 export interface DeskProps {
   data: Route.ComponentProps["loaderData"];
-  /** What a form without scripts was answered. */
   answer: Route.ComponentProps["actionData"] | null;
   draftKey: string;
-}
-
-interface Answer {
-  kept?: { title: string; body: string };
-  conflict?: unknown;
-  lastResult?: { error?: Record<string, string[] | null> | null };
 }
 
 /** Where a write-up is written: the text, kept on this device as it grows, and beside it how it will look. */
 export function Desk({ data, answer, draftKey }: DeskProps) {
   const { projectId, writeUp, choices, drawn } = data;
   const looked = answer && "looked" in answer ? answer.looked : null;
-  const fetcher = useFetcher<Answer>();
   const hydrated = useHydrated();
+  const busy = useNavigation().state === "submitting";
   const [stored, setStored] = useState({ title: writeUp.title, body: writeUp.body });
-  const [title, setTitle] = useState(looked?.title ?? stored.title);
+  const titled = useDraft(`${draftKey}:title`, stored.title);
   const draft = useDraft(draftKey, stored.body);
   const field = useRef<HTMLTextAreaElement>(null);
-  const text = looked && !hydrated ? looked.body : draft.text;
+  const sent = useRef({ title: "", body: "" });
+  const [title, text] = looked && !hydrated ? [looked.title, looked.body] : [titled.text, draft.text];
   const look = useLook(projectId, text, looked?.drawn ?? drawn);
-  const busy = fetcher.state !== "idle";
-  const { kept } = fetcher.data ?? {};
+  const kept = answer && "kept" in answer ? answer.kept : null;
   const answered = useRef<unknown>(null);
   useEffect(() => {
     if (!kept || answered.current === kept) return;
     answered.current = kept;
     setStored(kept);
-    setTitle(kept.title);
-    draft.forget(kept.body);
+    // What was typed while it was on its way is not kept yet.
+    if (titled.text === sent.current.title) titled.forget(kept.title);
+    if (draft.text === sent.current.body) draft.forget(kept.body);
   });
-  const errors = {
-    ...(answer && "lastResult" in answer ? answer.lastResult.error : {}),
-    ...fetcher.data?.lastResult?.error,
-  };
+  const errors = (answer && "lastResult" in answer && answer.lastResult.error) || {};
   const unkept = text !== stored.body || title !== stored.title;
-  const left = MAX_WRITE_UP_CHARACTERS - text.length;
-  const Form = fetcher.Form;
   return (
-    <Form method="post" className="grid gap-5">
+    <Form
+      method="post"
+      preventScrollReset
+      onSubmit={() => {
+        sent.current = { title, body: text };
+      }}
+      className="grid gap-5"
+    >
       <input type="hidden" name="was" value={JSON.stringify(stored)} />
       {hydrated && <input type="hidden" name="here" value="yes" />}
       <InputField
@@ -64,7 +59,7 @@ export function Desk({ data, answer, draftKey }: DeskProps) {
         required
         maxLength={160}
         value={title}
-        onChange={(event) => setTitle(event.currentTarget.value)}
+        onChange={(event) => titled.change(event.currentTarget.value)}
         errors={errors.title ?? undefined}
         className="max-w-[44rem]"
       />
@@ -76,17 +71,14 @@ export function Desk({ data, answer, draftKey }: DeskProps) {
             change={draft.change}
             field={field}
             errors={errors.body ?? undefined}
-            hint={
-              left < NEAR_LIMIT
-                ? left < 0
-                  ? `${-left} characters too many`
-                  : `${left} characters left`
-                : draft.restored
-                  ? "You began this earlier on this device; it was not kept yet."
-                  : HINT
-            }
+            hint={<TextHint text={text} restored={draft.restored} />}
           />
           <FigureChoices choices={choices} text={text} change={draft.change} field={field} />
+          {errors[""]?.[0] && (
+            <p role="alert" className="field-error">
+              {errors[""][0]}
+            </p>
+          )}
           <div className="flex flex-wrap items-center gap-3">
             <Button name="intent" value="keep" busy={busy}>
               Keep the draft
@@ -97,10 +89,10 @@ export function Desk({ data, answer, draftKey }: DeskProps) {
               </Button>
             )}
             <LinkButton to={`/projects/${projectId}/write-ups/${writeUp.publicId}/publish`} variant="quiet">
-              Look at it and publish
+              Publish…
             </LinkButton>
             <span role="status" className="text-small soft">
-              {busy ? "Keeping it." : !hydrated ? "" : unkept ? UNKEPT : kept ? "The draft is kept." : ""}
+              {hydrated && (busy ? "Keeping it." : unkept ? UNKEPT : kept ? "The draft is kept." : "")}
             </span>
           </div>
         </div>
@@ -111,6 +103,12 @@ export function Desk({ data, answer, draftKey }: DeskProps) {
           tabIndex={0}
           className="write-up-look"
         >
+          {look.missed && (
+            <p className="text-small soft">
+              The server can't be reached just now: this shows an earlier text. What you write is kept on this
+              device.
+            </p>
+          )}
           {look.article.html.trim() === "" ? (
             <p className="soft">What you write is shown here as readers will see it.</p>
           ) : (
@@ -122,13 +120,4 @@ export function Desk({ data, answer, draftKey }: DeskProps) {
   );
 }
 
-export type { EditAnswer };
-
-const NEAR_LIMIT = 1000;
-const UNKEPT = "Not kept yet; the text is on this device.";
-const HINT = (
-  <>
-    Markdown, with footnotes <code>[^1]</code> and formulas <code>$\lambda/4$</code>; <code>#</code> names a
-    dip, a sweep, a step or a plate. A figure is a line of its own: <code>![caption](#dip:…)</code>.
-  </>
-);
+const UNKEPT = "Not kept yet; it is on this device. Publishing takes what is kept.";
