@@ -11,6 +11,8 @@ export interface Compared {
   field: string;
   rows: number;
   different: number;
+  /** Of those, what names a row of another project, such as somebody's own bench: that stays there. */
+  leftOut: number;
   /** Of the first that differs. */
   example?: string;
 }
@@ -100,7 +102,8 @@ async function valueIn(kind: BundleKind, column: string, row: bundleRows.Row, si
   if (names) return `${names}#${side.rows.get(names)?.get(Number(value)) ?? "elsewhere"}`;
   const text =
     value instanceof Date ? value.toISOString() : typeof value === "string" ? value : JSON.stringify(value);
-  if (column === "record") return text;
+  // What was frozen keeps the ids of where it was frozen.
+  if (FROZEN.has(`${kind.name}.${column}`)) return text;
   return text.replace(/\b[0-9a-z]{10}\b/g, (word) => side.names.get(word) ?? word);
 }
 
@@ -119,6 +122,13 @@ async function rowsOf(kind: BundleKind, projectId: number): Promise<bundleRows.R
   return all;
 }
 
+const FROZEN = new Set([
+  "plates.record",
+  "plate-sources.sweep",
+  "plate-sources.recipe",
+  "write-up-versions.frozen",
+]);
+
 function compared(field: string, left: string[], right: string[]): Compared {
   const places = left.flatMap((value, i) => (value === right[i] ? [] : [i]));
   const at = places[0];
@@ -126,6 +136,7 @@ function compared(field: string, left: string[], right: string[]): Compared {
     field,
     rows: left.length,
     different: places.length,
+    leftOut: left.filter((value, i) => value !== right[i] && value.endsWith("#elsewhere")).length,
     ...(at !== undefined && { example: `${left[at]?.slice(0, 120)} ≠ ${right[at]?.slice(0, 120)}` }),
   };
 }

@@ -85,7 +85,7 @@ async function speak(
   taken: string[],
 ): Promise<void> {
   const first = await sweeps.findByPublicId(taken[0]);
-  const [dip] = first ? await dips.findAllBySweep(first.sweep.id) : [];
+  const dip = first && (await dips.findAllBySweep(first.sweep.id)).at(0)?.dip;
   if (!first || !dip) throw new Error("The first sweep has no dip.");
   const place = { projectId: project.id, sweepId: first.sweep.id, dipId: dip.id };
   const file = { name: "loop.s1p", bytes: bytesOf(touchstone(77)) };

@@ -98,4 +98,5 @@ const ENDINGS: Record<string, string> = {
   "application/x-bibtex": "bib",
   "text/x-bibtex": "bib",
   "text/plain": "txt",
+  "text/html": "html",
 };

@@ -288,6 +288,7 @@ export const RECORDS = {
     number: v.count,
     title: text(160),
     body: z.string().max(8_000_000).describe("Markdown"),
+    frozen: z.string().max(16_000_000).describe("JSON: the figures and numbers it shows, as they were then"),
     remark: text(300),
     publishedBy: v.person,
     publishedAt: v.time,

@@ -22,7 +22,7 @@ export function rowOf(kind: BundleKind, record: Rec, places: Places): Row {
     else if (column in kind.refs)
       row[column] = isLater(kind, column) ? null : placeOf(kind, column, value, places);
     else if (columnType === "MySqlJson") row[column] = rewriteJson(value, places.ids.changed);
-    else if (columnType.startsWith("MySqlText") && column !== "recipe" && typeof value === "string") {
+    else if (columnType.startsWith("MySqlText") && !FROZEN.has(column) && typeof value === "string") {
       row[column] = rewriteText(value, places.ids.changed);
     } else row[column] = value;
   }
@@ -48,6 +48,9 @@ export function laterColumns(kind: BundleKind): string[] {
 function isLater(kind: BundleKind, column: string): boolean {
   return kind.later.includes(column) || kind.refs[column] === kind.name;
 }
+
+/** Says for ever what it said where it was made. */
+const FROZEN = new Set(["recipe", "frozen"]);
 
 function placeOf(kind: BundleKind, column: string, value: unknown, { rows, people }: Places): number | null {
   if (value === null) return null;

@@ -10,7 +10,7 @@ import { readRecords } from "./read-records.server.ts";
 import { RECORDS, type Rec } from "./records.ts";
 import { Refused } from "./refused.ts";
 import { laterColumns, laterOf, type Places, rowOf } from "./restore-rows.server.ts";
-import { KeyMaker, storeFiles, textIn } from "./store-files.server.ts";
+import { checkFrozen, KeyMaker, storeFiles, textIn } from "./store-files.server.ts";
 
 /**
  * Writes everything of a checked bundle into a project that nobody can see yet. Rows come before their objects: whoever
@@ -23,7 +23,7 @@ export async function restoreRows(
   projectPublicId: string,
   told: (records: number) => Promise<void>,
 ): Promise<void> {
-  const keys = new KeyMaker(projectPublicId);
+  const keys = new KeyMaker(projectPublicId, places.ids);
   for (const kind of KINDS) {
     if (kind.name === "project") continue;
     places.rows.set(kind.name, new Map());
@@ -33,6 +33,7 @@ export async function restoreRows(
         const row = rowOf(kind, record, places);
         Object.assign(row, keys.columnsOf(kind.name, record));
         if (kind.name === "plates") row.record = await textIn(bag, String(record.recordPath));
+        if (kind.name === "write-up-versions") checkFrozen(String(record.frozen));
         rows.push(row);
       }
       const made = await inTransaction((tx) => bundleRows.insertRows(kind, rows, tx));

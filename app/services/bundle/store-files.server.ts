@@ -1,10 +1,13 @@
 import type { KindName } from "~/db/bundle-kinds.server";
 import type { Row } from "~/db/bundle-rows.server";
 import { newPublicId } from "~/db/ids.server";
+import { MEDIA_TYPES } from "../plates/form-names.ts";
 import { putObject } from "../storage.server.ts";
+import type { NewIds } from "./new-ids.server.ts";
 import type { OpenBag } from "./open-zip.server.ts";
 import type { Rec } from "./records.ts";
 import { Refused } from "./refused.ts";
+import { isHarmlessPage, isHarmlessSvg } from "./svg-check.ts";
 
 /** Where the bytes of a bundle's records go in the store. */
 export class KeyMaker {
@@ -12,7 +15,10 @@ export class KeyMaker {
   private readonly shared = new Map<string, string>();
   readonly stored = new Set<string>();
 
-  constructor(private readonly projectPublicId: string) {}
+  constructor(
+    private readonly projectPublicId: string,
+    private readonly ids: NewIds,
+  ) {}
 
   /** The columns that say where; none for kinds without bytes. */
   columnsOf(kind: KindName, record: Rec): Row {
@@ -35,14 +41,14 @@ export class KeyMaker {
         };
       }
       case "plate-forms":
-        return { storageKey: this.fresh("plates") };
+        return { storageKey: this.fresh("plates", this.ids.of("plates", String(record.plate))) };
       default:
         return {};
     }
   }
 
-  private fresh(folder: string): string {
-    return `${folder}/${this.projectPublicId}/${newPublicId()}${newPublicId()}`;
+  private fresh(folder: string, owner = this.projectPublicId): string {
+    return `${folder}/${owner}/${newPublicId()}${newPublicId()}`;
   }
 }
 
@@ -56,7 +62,7 @@ export async function storeFiles(
 ): Promise<void> {
   if (kind === "plate-forms") {
     const bytes = await bytesOf(bag, String(record.path));
-    checkForm(String(record.path), String(record.mediaType), bytes);
+    checkForm(String(record.path), String(record.form), String(record.mediaType), bytes);
     await put(keys, String(row.storageKey), bytes, String(record.mediaType));
     return;
   }
@@ -88,13 +94,43 @@ export async function textIn(bag: OpenBag, path: string): Promise<string> {
   return text;
 }
 
-/** A form is given to browsers from this site's own address: nothing in it may run. */
-function checkForm(path: string, mediaType: string, bytes: Buffer): void {
-  const type = mediaType.split(";")[0].trim();
-  if (!FORM_TYPES.has(type)) throw new Refused(`“${path}” is of a kind that no form of a plate is.`);
-  if (type === "image/svg+xml" && RUNS.test(bytes.toString("utf8"))) {
+/** Figures of a published write-up are drawn into its page as they were stored. */
+export function checkFrozen(frozen: string): void {
+  const where = "A version in write-up-versions.json";
+  let figures: unknown;
+  try {
+    figures = (JSON.parse(frozen) as { figures?: unknown }).figures ?? [];
+  } catch {
+    throw new Refused(`${where} keeps figures that are not JSON.`);
+  }
+  for (const figure of Array.isArray(figures) ? figures : [figures]) {
+    const { wide, narrow, path } = (figure ?? {}) as Record<string, unknown>;
+    for (const drawing of [wide, narrow]) {
+      if (drawing === null || drawing === undefined) continue;
+      if (typeof drawing !== "string" || !isHarmlessSvg(drawing)) {
+        throw new Refused(`${where} holds a figure that would run or fetch, which no figure of ours does.`);
+      }
+    }
+    if (typeof path !== "string" || !/^\/(?!\/)/.test(path))
+      throw new Refused(`${where} leads out of this site.`);
+  }
+}
+
+/** A form is given to browsers from this site's own address: it is of its kind, and nothing in it may run. */
+function checkForm(path: string, form: string, mediaType: string, bytes: Buffer): void {
+  const kind = form.split("-")[0];
+  if (!Object.hasOwn(MEDIA_TYPES, kind) || typeOf(mediaType) !== typeOf(MEDIA_TYPES[kind])) {
+    throw new Refused(`“${path}” is of a kind that no form of a plate is.`);
+  }
+  const text = () => bytes.toString("utf8");
+  const harmless = kind === "svg" ? isHarmlessSvg(text()) : kind === "embed" ? isHarmlessPage(text()) : true;
+  if (!harmless) {
     throw new Refused(`“${path}” holds something that would run or fetch, which no figure of ours does.`);
   }
+}
+
+function typeOf(mediaType: string): string {
+  return mediaType.split(";")[0].trim();
 }
 
 function checkAddresses(path: string, value: unknown): void {
@@ -124,17 +160,3 @@ const MOST_RECORD = 16 * MEGABYTE - 1;
 /** The largest original has 64 MB; a plate's CSV of a million points may have more. */
 const MOST_FILE = 256 * MEGABYTE;
 const JPEG = 0xffd8ff;
-const FORM_TYPES = new Set([
-  "image/svg+xml",
-  "image/png",
-  "application/pdf",
-  "text/csv",
-  "text/plain",
-  "application/json",
-  "application/octet-stream",
-  "application/x-bibtex",
-  "text/x-bibtex",
-  "application/vnd.citationstyles.csl+json",
-]);
-const RUNS =
-  /<script|<foreignObject|<iframe|<embed|<object|<animate|<set[\s>]|\son[a-z]+\s*=|javascript:|<!ENTITY|<!DOCTYPE[^>]*\[|xlink:href\s*=\s*["'](?!#|data:image\/png)/i;

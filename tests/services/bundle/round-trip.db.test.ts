@@ -2,6 +2,7 @@ import { execFileSync } from "node:child_process";
 import { mkdtempSync, rmSync, writeFileSync } from "node:fs";
 import { tmpdir } from "node:os";
 import path from "node:path";
+import { Readable } from "node:stream";
 import { beforeAll, describe, expect, it } from "vitest";
 import * as runs from "~/db/bundle-runs.server";
 import * as projects from "~/db/projects.server";
@@ -67,7 +68,7 @@ describe("a bundle", () => {
   });
 
   it("comes back the same in every field, for somebody else", async () => {
-    const given = await giveBundle(full.bram.id, [zip]);
+    const given = await giveBundle(full.bram.id, Readable.from([zip]));
     if (given.kind !== "given") throw new Error(given.kind);
     await workOnBundles();
     const run = await runs.findByPublicId(given.publicId);

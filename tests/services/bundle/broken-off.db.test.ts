@@ -1,0 +1,166 @@
+import { randomBytes } from "node:crypto";
+import { Readable } from "node:stream";
+import { beforeAll, describe, expect, it, vi } from "vitest";
+import * as runs from "~/db/bundle-runs.server";
+import { db } from "~/db/client.server";
+import * as people from "~/db/people.server";
+import * as schema from "~/db/schema/index";
+import { askForBundle, askForMine, giveBundle, offered } from "~/services/bundle/runs.server";
+import * as store from "~/services/bundle/store.server";
+import { workOnBundles } from "~/services/bundle/work.server";
+import { closeAccount } from "~/services/closing.server";
+import { takeIn } from "~/services/intake.server";
+import { runDueJobs } from "~/services/jobs.server";
+import { createProject, deleteProject } from "~/services/projects.server";
+import { getObject } from "~/services/storage.server";
+import { keysOf } from "../../../scripts/admin/objects.ts";
+import { storageClient } from "../../../scripts/stack/storage.ts";
+import { bagOf, payload, zipOf } from "./bags.ts";
+
+let ada: people.User;
+
+async function somebody(name: string): Promise<people.User> {
+  const id = await people.insert({
+    userName: `${name}-${Date.now()}`,
+    name,
+    email: `${name}@fennmarsh.example`,
+  });
+  return (await people.findById(id)) as people.User;
+}
+
+/** A project with files that are more than a part of an upload. */
+async function largeProject() {
+  const project = await createProject(
+    { title: "Large", summary: "", visibility: "private", ituRegion: null },
+    ada.id,
+  );
+  for (let i = 0; i < 3; i++) {
+    const bytes = new Uint8Array(Buffer.from(`no numbers ${randomBytes(3_000_000).toString("hex")}`));
+    await takeIn({ project, by: ada, file: { name: `${i}.txt`, bytes }, keepUnread: true });
+  }
+  return project;
+}
+
+async function objectKeys(): Promise<string[]> {
+  const keys: string[] = [];
+  for await (const key of keysOf(storageClient(process.env), process.env.S3_BUCKET ?? "")) keys.push(key);
+  return keys.sort();
+}
+
+async function bundleOf(publicId: string): Promise<Buffer> {
+  const offer = offered((await runs.findByPublicId(publicId)) as runs.ShownRun);
+  if (!offer) throw new Error(JSON.stringify(await runs.findByPublicId(publicId)));
+  return Buffer.from(await getObject(offer.storageKey));
+}
+
+beforeAll(async () => {
+  ada = await somebody("ada");
+});
+
+describe("a bundle whose making was broken off", () => {
+  it("is gone on with after the last part, and is the same as one made at once", async () => {
+    const project = await largeProject();
+    const asked = await askForBundle(project.id, ada.id);
+    expect(await askForBundle(project.id, ada.id)).toEqual({ publicId: asked.publicId, there: true });
+    // The process dies at its second checkpoint: nothing of it is heard any more.
+    const kept = runs.keep;
+    let checkpoints = 0;
+    const dying = vi.spyOn(runs, "keep").mockImplementation(async (id, had, values, tx) => {
+      if (values.resume) checkpoints++;
+      if (checkpoints >= 3) throw new Error("killed");
+      return kept(id, had, values, tx);
+    });
+    await workOnBundles();
+    dying.mockRestore();
+    const half = await runs.findByPublicId(asked.publicId);
+    expect(half).toMatchObject({ state: "running", storageKey: null });
+    expect(half?.doneParts).toBeGreaterThan(0);
+    const begin = vi.spyOn(store.PartUpload, "begin");
+    await workOnBundles(undefined, -1000);
+    expect(begin).not.toHaveBeenCalled();
+    begin.mockRestore();
+    const resumed = await bundleOf(asked.publicId);
+    const again = await askForBundle(project.id, ada.id);
+    await workOnBundles();
+    const whole = await bundleOf(again.publicId);
+    expect(resumed.length).toBe(whole.length);
+    const given = await giveBundle(ada.id, Readable.from([resumed]));
+    await workOnBundles();
+    expect(given.kind === "given" && (await runs.findByPublicId(given.publicId))?.state).toBe("done");
+  });
+
+  it("leaves nothing in the store when its project is deleted", async () => {
+    const before = await objectKeys();
+    const project = await largeProject();
+    await askForBundle(project.id, ada.id);
+    await workOnBundles();
+    await deleteProject(project.id);
+    await runDueJobs();
+    expect(await objectKeys()).toEqual(before);
+  });
+});
+
+describe("a bundle that is refused, or whose taking-in was broken off", () => {
+  const count = async () => [
+    (await db.select().from(schema.projects)).length,
+    (await db.select().from(schema.users)).length,
+    await objectKeys(),
+  ];
+
+  it("leaves nothing behind, and says why", async () => {
+    const before = await count();
+    const files = bagOf(payload());
+    files["data/records/notes.json"] += " ";
+    const given = await giveBundle(ada.id, Readable.from([await zipOf(Object.entries(files))]));
+    await workOnBundles();
+    const run = given.kind === "given" ? await runs.findByPublicId(given.publicId) : undefined;
+    expect(run?.state).toBe("failed");
+    expect(run?.report).toEqual({
+      faults: ["“data/records/notes.json” is not what it was when the bundle was made: its sum differs."],
+    });
+    expect(await count()).toEqual(before);
+  });
+
+  it("is cleared and begun anew by the next process", async () => {
+    const before = await count();
+    const given = await giveBundle(ada.id, Readable.from([await zipOf(Object.entries(bagOf(payload())))]));
+    if (given.kind !== "given") throw new Error(given.kind);
+    const kept = runs.keep;
+    const dying = vi.spyOn(runs, "keep").mockImplementation(async (id, had, values, tx) => {
+      if (values.state === "done" || values.state === "waiting") throw new Error("killed");
+      return kept(id, had, values, tx);
+    });
+    await workOnBundles();
+    dying.mockRestore();
+    const half = await db.select().from(schema.projects);
+    expect(half.length).toBe(Number(before[0]) + 1);
+    expect(
+      (await db.select().from(schema.memberships)).some((row) => row.projectId === half.at(-1)?.id),
+    ).toBe(false);
+    await workOnBundles(undefined, -1000);
+    const run = await runs.findByPublicId(given.publicId);
+    expect(run?.state).toBe("done");
+    expect((await db.select().from(schema.projects)).length).toBe(Number(before[0]) + 1);
+  });
+});
+
+describe("all my data", () => {
+  it("holds what is mine, and goes when the account is closed", async () => {
+    const bram = await somebody("bram");
+    const project = await createProject(
+      { title: "Mine", summary: "", visibility: "private", ituRegion: null },
+      ada.id,
+    );
+    const bytes = new Uint8Array(Buffer.from("no numbers, but mine"));
+    await takeIn({ project, by: bram, file: { name: "own.txt", bytes }, keepUnread: true });
+    const asked = await askForMine(bram.id);
+    await workOnBundles();
+    const zip = await bundleOf(asked.publicId);
+    expect(zip.includes("no numbers, but mine")).toBe(true);
+    expect(zip.includes("data/profile.json")).toBe(true);
+    await closeAccount(bram.id, "stay");
+    await runDueJobs();
+    expect(await runs.findByPublicId(asked.publicId)).toBeUndefined();
+    expect((await objectKeys()).filter((key) => key.includes(asked.publicId))).toEqual([]);
+  });
+});

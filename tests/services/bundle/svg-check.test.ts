@@ -1,0 +1,75 @@
+import { describe, expect, it } from "vitest";
+import { isHarmlessPage, isHarmlessSvg } from "~/services/bundle/svg-check";
+
+const inside = (body: string) => `<svg xmlns="http://www.w3.org/2000/svg" viewBox="0 0 1 1">${body}</svg>`;
+
+describe("a drawing from elsewhere", () => {
+  it.each([
+    inside('<title>x &amp; "y"</title><g clip-path="url(#c)"><path d="M0 0"/><text x="1">7 MHz</text></g>'),
+    inside(
+      "<style>@font-face{font-family:A;src:url(data:font/woff2;base64,AA)} text{fill:var(--color-ink)}</style>",
+    ),
+    inside('<a href="https://swale.example/plates/x"><use href="#p"/></a>'),
+    `<?xml version="1.0"?>\n${inside("")}`,
+  ])("passes: %s", (svg) => {
+    expect(isHarmlessSvg(svg)).toBe(true);
+  });
+
+  it.each([
+    inside("<script>alert(1)</script>"),
+    inside("<SCRIPT>alert(1)</SCRIPT>"),
+    '<svg onload="alert(1)"></svg>',
+    "<svg/onload=alert(1)>",
+    inside('<path OnClick="x()"/>'),
+    inside('<a href="javascript:alert(1)">x</a>'),
+    inside('<a xlink:href="java&#115;cript:alert(1)">x</a>'),
+    inside('<a href="data:text/html,x">x</a>'),
+    inside('<a href="//elsewhere.example/">x</a>'),
+    inside("<foreignObject><p>x</p></foreignObject>"),
+    inside('<animate attributeName="href" to="javascript:x"/>'),
+    inside('<set attributeName="onclick" to="x"/>'),
+    inside("<iframe></iframe>"),
+    inside("<!--<script>-->"),
+    inside("<![CDATA[<script>alert(1)</script>]]>"),
+    inside("<style>@import 'https://elsewhere.example/x.css'</style>"),
+    inside('<rect style="fill:url(https://elsewhere.example/x)"/>'),
+    inside('<image href="https&#58;x"/>'),
+    inside("<title><img src=x onerror=alert(1)></title>"),
+    '<!DOCTYPE svg [<!ENTITY x "y">]><svg></svg>',
+    "<html><svg></svg></html>",
+  ])("is refused: %s", (svg) => {
+    expect(isHarmlessSvg(svg)).toBe(false);
+  });
+});
+
+describe("a page that shows a figure", () => {
+  const page = (body: string, head = "") =>
+    `<!DOCTYPE html>\n<html lang="en"><head><meta charset="utf-8"><title>x</title>${head}</head><body>${body}</body></html>`;
+  const figure =
+    '<a href="https://swale.example/plates/x" target="_top"><picture><source media="m" srcset="/plates/x.svg?theme=dark"><img src="/plates/x.svg" alt="x"></picture></a>';
+
+  it("passes with its figure", () => {
+    expect(
+      isHarmlessPage(
+        page(
+          figure,
+          '<link rel="canonical" href="https://swale.example/plates/x"><style>body{margin:0}</style>',
+        ),
+      ),
+    ).toBe(true);
+  });
+
+  it.each([
+    page("<script>x</script>"),
+    page('<img src="x" onerror="y">'),
+    page(figure, '<meta http-equiv="refresh" content="0;url=https://elsewhere.example">'),
+    page(figure, '<link rel="stylesheet" href="https://elsewhere.example/x.css">'),
+    page(figure, "<base href='https://elsewhere.example/'>"),
+    page("<form action='/sign-out'></form>"),
+    page("<iframe src='/'></iframe>"),
+    page('<a href="javascript:x">y</a>'),
+    "<p>no page</p>",
+  ])("is refused: %s", (html) => {
+    expect(isHarmlessPage(html)).toBe(false);
+  });
+});
