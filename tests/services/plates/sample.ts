@@ -66,7 +66,10 @@ export function materialOf(sweeps: MaterialSweep[], more: Partial<Material> = {}
 }
 
 export function choicesOf(more: Partial<PlateChoices> = {}): PlateChoices {
-  return { ...defaultsFor({ title: "Two elements on a reed bank, before the radials were trimmed" }), ...more };
+  return {
+    ...defaultsFor({ title: "Two elements on a reed bank, before the radials were trimmed" }),
+    ...more,
+  };
 }
 
 export function recordOf(material: Material, more: Partial<PlateRecord> = {}): PlateRecord {
