@@ -36,8 +36,9 @@ export async function action(args: Route.ActionArgs) {
   const form = await readUploadForm(args.request);
   const parsed = intentSchema.safeParse(form.get("intent"));
   if (!parsed.success) return data({ error: NOT_UNDERSTOOD }, 400);
+  const intent = parsed.data;
   const here = `/projects/${project.publicId}/sweeps/batch/${run.publicId}`;
-  switch (parsed.data) {
+  switch (intent) {
     case "mend": {
       const changes = parseChanges(form);
       if (!changes) return data({ error: NOT_UNDERSTOOD }, 400);
@@ -62,7 +63,7 @@ export async function action(args: Route.ActionArgs) {
         "The batch is put away; its files were removed.",
       );
     default:
-      return parsed.data satisfies never;
+      return intent satisfies never;
   }
 }
 

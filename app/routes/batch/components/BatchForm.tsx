@@ -1,6 +1,7 @@
 import { type FormEvent, useState } from "react";
 import { Button } from "~/components/ui/Button";
 import { useHydrated } from "~/components/ui/hydrated";
+import { FILE_LOOK } from "../words";
 import { useBatchUpload } from "./use-batch-upload";
 
 /** A folder, files or a ZIP, and a table. Without scripts the form goes as one; with them in pieces that can be followed. */
@@ -77,7 +78,7 @@ function FileField({ label, hint, folder = false, table = false }: FileFieldProp
         name={table ? "table" : "files"}
         multiple={!table}
         accept={table ? ".csv,.tsv,.txt,text/csv" : undefined}
-        className="max-w-full"
+        className={FILE_LOOK}
         // The name is the standard's own; React passes it on as it is.
         {...(folder && { webkitdirectory: "" })}
       />

@@ -1,5 +1,6 @@
 import { Form, useNavigation } from "react-router";
 import { Button } from "~/components/ui/Button";
+import { FILE_LOOK } from "../words";
 
 /** A file that is missing or mended, or a table that is: what has the same name takes its place. */
 export function MoreFiles({ base, batch }: { base: string; batch: string }) {
@@ -20,11 +21,11 @@ export function MoreFiles({ base, batch }: { base: string; batch: string }) {
         <input type="hidden" name="intent" value="add" />
         <label className="grid gap-1 min-w-0">
           <span className="font-semibold">Files</span>
-          <input type="file" name="files" multiple className="max-w-full" />
+          <input type="file" name="files" multiple className={FILE_LOOK} />
         </label>
         <label className="grid gap-1 min-w-0">
           <span className="font-semibold">The table (CSV)</span>
-          <input type="file" name="table" accept=".csv,.tsv,.txt,text/csv" className="max-w-full" />
+          <input type="file" name="table" accept=".csv,.tsv,.txt,text/csv" className={FILE_LOOK} />
         </label>
         <Button variant="quiet" busy={busy}>
           Send

@@ -30,7 +30,7 @@ export function RowFields({ row, batch, base }: RowFieldsProps) {
           ))}
         </ul>
       </div>
-      <div className="grid grid-cols-[repeat(auto-fill,minmax(11rem,1fr))] gap-3">
+      <div className="grid grid-cols-[repeat(auto-fill,minmax(13rem,1fr))] gap-3">
         {row.missing && batch.spare.length > 0 && (
           <SelectField
             label="Its file"

@@ -22,7 +22,7 @@ export function useBatchUpload(base: string, batch: string) {
   }, [busy]);
 
   const send = async (files: File[], table: File | null) => {
-    const pieces = piecesOf(files);
+    const pieces = piecesOf(inOrder(files));
     const all = files.reduce((sum, { size }) => sum + size, 1);
     let before = 0;
     for (const [i, piece] of pieces.entries()) {
@@ -63,6 +63,12 @@ function post(address: string, form: FormData, sent: (bytes: number) => void): P
     request.onerror = () => resolve(0);
     request.send(form);
   });
+}
+
+/** By path, numbers as numbers: a folder has no order of its own. */
+function inOrder(files: File[]): File[] {
+  const pathOf = (file: File) => file.webkitRelativePath || file.name;
+  return [...files].sort((a, b) => pathOf(a).localeCompare(pathOf(b), "en", { numeric: true }));
 }
 
 function piecesOf(files: File[]): File[][] {
