@@ -1,4 +1,5 @@
 import type { CableEntry } from "./cables.ts";
+import type { Feedline } from "./feedline.ts";
 import type { BenchLimits, PictureLimits, Sweep, Warning } from "./sweep.ts";
 
 /** What taking out a feedline does to limits, and what there is to say of it. `gain` is abs Γ there over abs Γ here, per point. */
@@ -42,6 +43,7 @@ export function lineWarnings(
   before: Sweep,
   after: Sweep,
   gain: Float64Array,
+  line: Feedline,
   cable: CableEntry | null,
 ): Warning[] {
   const warnings: Warning[] = [];
@@ -60,6 +62,11 @@ export function lineWarnings(
     warnings.push({
       code: "cable-range",
       message: `${unknown} of ${gain.length} points lie outside the frequencies for which ${cable.name} has a loss in the table; they are gaps at the antenna. Give k1 and k2 of your own to go further.`,
+    });
+  if (!cable && line.rangeMhz && unknown > 0)
+    warnings.push({
+      code: "cable-range",
+      message: `${unknown} of ${gain.length} points lie outside the frequencies of the points that ${line.name} was fitted to (${line.rangeMhz.low} to ${line.rangeMhz.high} MHz); they are gaps at the antenna. Give points that reach further, or k1 and k2.`,
     });
   const firstHz = (cable?.points[0].mhz ?? 0) * 1e6;
   const below = before.frequencyHz.reduce(

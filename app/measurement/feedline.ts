@@ -13,6 +13,8 @@ export interface Feedline {
   k2: number;
   lengthM: number;
   velocityFactor: number;
+  /** MHz; where the loss is known, for a cable of points of one's own. Absent: as the table has it, else everywhere. */
+  rangeMhz?: { low: number; high: number };
 }
 
 /** Matched loss of the whole line, one way, dB, at `hz` (Hz). */
@@ -28,7 +30,8 @@ export function matchedLossDb(
  * The sweep as it is at the far end of the line: abs Γ times 10^(A/10) with A the matched loss one way in dB, and for
  * complex sweeps Γ times e^(2(α+jβ)l), β = 2πf/(c·VF). NaN stays NaN. Above the last point of
  * the cable's sheet the loss is not known, and the value becomes NaN; below the first it follows the law of the skin
- * effect as far as that holds (`lowestMhz`), which is said; own k1 and k2 hold everywhere. abs Γ over
+ * effect as far as that holds (`lowestMhz`), which is said; points of one's own hold from the first to the last
+ * (`rangeMhz`), own k1 and k2 everywhere. abs Γ over
  * 1 is kept and said. A cable of another impedance than the sweep's reference is taken out in its own (complex sweeps
  * only; a scalar one can't be, and that is said). Limits go along: with g = 10^(A/10), d' = g·d, M' = M/g, T' = T plus
  * what the cable's own uncertainty makes of g; so abs Γ' ± (d' + T'·abs Γ' + M'·abs Γ'²) is g times the old interval.
@@ -57,7 +60,7 @@ export function removeFeedline(sweep: Sweep, line: Feedline): { sweep: Sweep; wa
   if (sweep.pictureLimits) moved.pictureLimits = scalePicture(sweep.pictureLimits, gain);
   const out = renormalise(moved, seenOhm);
   if (ownOhm !== seenOhm) delete out.benchLimits;
-  warnings.push(...lineWarnings(sweep, out, gain, cable));
+  warnings.push(...lineWarnings(sweep, out, gain, line, cable));
   return { sweep: out, warnings };
 }
 
@@ -93,8 +96,9 @@ function faultOf({ k1, k2, lengthM, velocityFactor }: Feedline): string | null {
 
 /** abs Γ at the far end over that at the near end, per point; NaN where the sheet has no figures. */
 function gainsOf(frequencyHz: Float64Array, line: Feedline, cable: CableEntry | null): Float64Array {
-  const fromHz = (cable?.lowestMhz ?? 0) * 1e6;
-  const toHz = (cable?.points[cable.points.length - 1].mhz ?? Number.POSITIVE_INFINITY) * 1e6;
+  const fromHz = (cable?.lowestMhz ?? line.rangeMhz?.low ?? 0) * 1e6;
+  const last = cable?.points[cable.points.length - 1].mhz ?? line.rangeMhz?.high;
+  const toHz = (last ?? Number.POSITIVE_INFINITY) * 1e6;
   return Float64Array.from(frequencyHz, (hz) =>
     hz >= fromHz && hz <= toHz ? 10 ** (matchedLossDb(line, hz) / 10) : Number.NaN,
   );

@@ -187,6 +187,25 @@ describe("addedLossDb", () => {
   });
 });
 
+describe("a cable of points of one's own", () => {
+  const line = { ...losing(1), rangeMhz: { low: 2, high: 4 } };
+  const seen = scalarSweep([1e6, 2e6, 3e6, 4e6, 5e6], [0.5, 0.5, 0.5, 0.5, 0.5]);
+
+  it("has a loss from its first point to its last, ends included, and says where it has none", () => {
+    const { sweep, warnings } = removeFeedline(seen, line);
+    expect(Array.from(sweep.magnitude, Number.isNaN)).toEqual([true, false, false, false, true]);
+    expect(codes(warnings)).toEqual(["cable-range"]);
+    expect(warnings[0].message).toMatch(/^2 of 5 points lie outside .*\(2 to 4 MHz\)/);
+  });
+
+  it("says nothing where the sweep lies within them, and differs in nothing from k1 and k2 there", () => {
+    const inside = scalarSweep([2e6, 3e6], [0.5, 0.5]);
+    const { sweep, warnings } = removeFeedline(inside, line);
+    expect(warnings).toEqual([]);
+    expect(sweep.magnitude).toEqual(removeFeedline(inside, losing(1)).sweep.magnitude);
+  });
+});
+
 describe("matchedLossDb", () => {
   it("is k1·√f + k2·f in MHz for every metre", () => {
     // LMR-400's own formula, per 100 ft: 150 MHz 1.537 dB (REFERENCE section 7).

@@ -10,6 +10,8 @@ export interface OwnCable {
   k1: number;
   k2: number;
   velocityFactor: number;
+  /** Those that k1 and k2 were fitted to; null where k1 and k2 were given. */
+  points: { mhz: number; dbPer100m: number }[] | null;
 }
 
 export interface FeedlineFields {
@@ -73,7 +75,16 @@ export function feedlineFrom(
     : cableNamed(form.cable);
   if (!cable) return null;
   const { name, k1, k2 } = cable;
-  return { name, k1, k2, lengthM, velocityFactor: form.velocityFactor ?? cable.velocityFactor };
+  const velocityFactor = form.velocityFactor ?? cable.velocityFactor;
+  const rangeMhz = "publicId" in cable ? rangeOf(cable.points) : undefined;
+  return { name, k1, k2, lengthM, velocityFactor, ...(rangeMhz && { rangeMhz }) };
+}
+
+/** From the first point to the last; undefined where points don't span one. */
+function rangeOf(points: OwnCable["points"]): Feedline["rangeMhz"] {
+  const mhz = (points ?? []).map((point) => point.mhz);
+  const [low, high] = [Math.min(...mhz), Math.max(...mhz)];
+  return low < high ? { low, high } : undefined;
 }
 
 /** What the form begins with. */

@@ -3,7 +3,8 @@ import { CABLES } from "~/measurement/cables";
 import { cableSchema, figuresOf } from "~/routes/cables/cables.schema";
 import { feedlineFields, feedlineFrom, feedlineSchema } from "~/routes/sweeps/feedline.schema";
 
-const OWN = [{ publicId: "reel000001", name: "Reel", k1: 0.02, k2: 0.001, velocityFactor: 0.8 }];
+const REEL = { publicId: "reel000001", name: "Reel", k1: 0.02, k2: 0.001, velocityFactor: 0.8 };
+const OWN = [{ ...REEL, points: null }];
 
 describe("the feedline's form", () => {
   it("fills in again what it kept: a cable of the table, one's own, and figures", () => {
@@ -18,6 +19,14 @@ describe("the feedline's form", () => {
       if (!line) throw new Error("no line");
       expect(feedlineFrom(feedlineSchema.parse(feedlineFields(line, OWN)), OWN)).toEqual(line);
     }
+  });
+
+  it("keeps how far the points of one's own cable reach, where they span a range", () => {
+    const form = feedlineSchema.parse({ cable: "own:reel000001", lengthM: "3" });
+    const of = (...mhz: number[]) =>
+      feedlineFrom(form, [{ ...REEL, points: mhz.map((one) => ({ mhz: one, dbPer100m: 3 })) }])?.rangeMhz;
+    expect([of(30, 7, 144), of(10), of()]).toEqual([{ low: 7, high: 144 }, undefined, undefined]);
+    expect(feedlineFrom(form, OWN)).not.toHaveProperty("rangeMhz");
   });
 
   it("knows no cable that is not there", () => {
