@@ -1,14 +1,22 @@
 import { and, asc, count, eq, inArray, sql } from "drizzle-orm";
 import { db, type Queryable } from "./client.server.ts";
 import { newPublicId } from "./ids.server.ts";
-import { files, plateSources, sweeps } from "./schema/index.ts";
+import { attachments, files, photographs, plateSources, sweeps } from "./schema/index.ts";
 
-/** Bytes of all originals, as they were given. */
+/** Bytes of everything as it was given: originals of sweeps, photographs, and what is attached to notes. */
 export async function sumStoredBytes(tx: Queryable = db): Promise<{ files: number; bytes: number }> {
-  const rows = await tx
-    .select({ files: count(), bytes: sql<number>`coalesce(sum(${files.sizeBytes}), 0)`.mapWith(Number) })
-    .from(files);
-  return rows[0];
+  const sums = await Promise.all(
+    [files, photographs, attachments].map((table) =>
+      tx
+        .select({ files: count(), bytes: sql<number>`coalesce(sum(${table.sizeBytes}), 0)`.mapWith(Number) })
+        .from(table),
+    ),
+  );
+  const all = sums.flat();
+  return {
+    files: all.reduce((sum, row) => sum + row.files, 0),
+    bytes: all.reduce((sum, row) => sum + row.bytes, 0),
+  };
 }
 
 export async function findBySha256(projectId: number, sha256: string, tx: Queryable = db) {

@@ -2,7 +2,7 @@ import { Form } from "react-router";
 import { Button } from "~/components/ui/Button";
 import { InputField } from "~/components/ui/Field";
 import type { BenchPageData } from "../bench";
-import { knownWords } from "../words";
+import { knownWords, spanWords } from "../words";
 import { BenchNumbers } from "./BenchNumbers";
 import { BenchStrips } from "./BenchStrips";
 
@@ -30,11 +30,18 @@ export function Quality({ data }: { data: BenchPageData }) {
         id="limits"
         title="What limits it"
         items={quality.limits}
-        none={scene ? "Nothing that its references show." : null}
+        none={scene ? nothingLimits(numbers) : null}
       />
       <Sentences id="missing" title="What is not known" items={quality.missing} none={null} />
     </section>
   );
+}
+
+/** The references tell of their own stretch only, however short it is. */
+function nothingLimits(numbers: BenchPageData["numbers"]): string {
+  const [fromHz, toHz] = [numbers[0]?.frequencyHz, numbers[numbers.length - 1]?.frequencyHz];
+  if (fromHz === undefined || toHz === undefined) return "Not known: its references say nothing yet.";
+  return `Nothing from ${spanWords({ fromHz, toHz })}. Its references cover no more than that: beyond it nothing is known of the bench.`;
 }
 
 function WishForm({ data }: { data: BenchPageData }) {
