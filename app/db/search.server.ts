@@ -16,6 +16,8 @@ import {
   sweeps,
   trails,
   users,
+  writeUps,
+  writeUpVersions,
 } from "./schema/index.ts";
 import { hasWords, textHasWords } from "./words.server.ts";
 
@@ -192,6 +194,35 @@ export async function findPlates(search: Search, tx: Queryable = db) {
       ),
     )
     .orderBy(desc(plates.createdAt), desc(plates.id))
+    .limit(search.limit + 1);
+  return pageOf(rows, search);
+}
+
+/** Write-ups by title and text, as they are published; drafts and what was taken back are not looked into. */
+export async function findWriteUps(search: Search, tx: Queryable = db) {
+  const rows = await tx
+    .select({
+      id: writeUpVersions.id,
+      at: writeUpVersions.publishedAt,
+      project,
+      publicId: writeUps.publicId,
+      title: writeUpVersions.title,
+      body: writeUpVersions.body,
+    })
+    .from(writeUpVersions)
+    .innerJoin(
+      writeUps,
+      and(eq(writeUps.id, writeUpVersions.writeUpId), eq(writeUps.publishedNumber, writeUpVersions.number)),
+    )
+    .innerJoin(projects, eq(projects.id, writeUps.projectId))
+    .where(
+      and(
+        isReadable(search.userId),
+        textHasWords(search.words, sql`concat_ws(' ', ${writeUpVersions.title}, ${writeUpVersions.body})`),
+        before(search, writeUpVersions.publishedAt, writeUpVersions.id),
+      ),
+    )
+    .orderBy(desc(writeUpVersions.publishedAt), desc(writeUpVersions.id))
     .limit(search.limit + 1);
   return pageOf(rows, search);
 }

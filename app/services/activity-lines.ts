@@ -7,6 +7,7 @@ export interface Happened {
   kind: EventKind;
   about: EventAbout;
   at: Date;
+  /** Null for the service itself. */
   by: string | null;
 }
 
@@ -62,7 +63,7 @@ function lineOf(
     const subject = TOGETHER.has(kind) ? `${subjectOf(about)} ${about.title}` : subjectOf(about);
     if (!items.has(subject)) items.set(subject, { title: about.title, to: placeOf(about) });
   }
-  const by = new Set(events.map((event) => event.by ?? "former member"));
+  const by = new Set(events.flatMap((event) => event.by ?? []));
   return {
     key,
     kind,

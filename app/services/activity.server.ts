@@ -66,7 +66,7 @@ export async function putAway(project: { id: number }, userId: number, mark: str
 }
 
 export function happened({ kind, about, at, by, closedAt }: activity.ActivityRow): Happened {
-  return { kind: kind as EventKind, about, at, by: closedAt ? null : by };
+  return { kind: kind as EventKind, about, at, by: closedAt ? FORMER : by };
 }
 
 /** Answers the address of what an event is about; null for what is gone. */
@@ -99,4 +99,5 @@ function readCursor(projectId: number, text: string): activity.Before | undefine
   return id === undefined || Number.isNaN(date.getTime()) ? undefined : { at: date, id };
 }
 
+const FORMER = "former member";
 const A_PAGE = 100;

@@ -46,7 +46,7 @@ export async function drawFeed(project: projects.Project): Promise<string> {
 <id>urn:uuid:${uuidOf([project.publicId, row.kind, row.at.toISOString(), JSON.stringify(row.about)])}</id>
 <title>${escapeXml(`${line.words} ${line.items[0].title}`)}</title>
 <updated>${row.at.toISOString()}</updated>
-<author><name>${escapeXml(event.by ?? "former member")}</name></author>
+<author><name>${escapeXml(event.by ?? "Swale")}</name></author>
 <link rel="alternate" href="${escapeXml(to)}"/>
 ${text ? `<summary>${escapeXml(plainText(text, SUMMARY))}</summary>\n` : ""}</entry>`;
   });

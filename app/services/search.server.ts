@@ -15,6 +15,7 @@ export const RESULT_KINDS = [
   "steps",
   "trails",
   "plates",
+  "write-ups",
   "antennas",
   "projects",
   "people",
@@ -115,6 +116,14 @@ const FINDERS: Record<ResultKind, (about: search.Search, range: DipRange | null)
       place: plate.project.title,
       snippet: snippet(plainText(plate.caption, MAX_NOTE_CHARACTERS), about.words),
       at: plate.at,
+    })),
+  "write-ups": async (about) =>
+    shape(await search.findWriteUps(about), ({ publicId, project, title, body, at }) => ({
+      to: `/write-ups/${publicId}`,
+      title,
+      place: project.title,
+      snippet: snippet(plainText(body, body.length), about.words, NOTE_SNIPPET),
+      at,
     })),
   antennas: async (about) =>
     shape(await search.findAntennas(about), ({ project, words, at }) => ({

@@ -35,11 +35,7 @@ describe("foldDays", () => {
       ]),
     ).toEqual([
       ["2026-05-03", "A note on 7.1 MHz, First (Bram)"],
-      [
-        "2026-05-02",
-        "2 sweeps came in: Second, First (Ada)",
-        "2 notes on 7.1 MHz, First (Ada, former member)",
-      ],
+      ["2026-05-02", "2 sweeps came in: Second, First (Ada)", "2 notes on 7.1 MHz, First (Ada)"],
     ]);
   });
 

@@ -1,10 +1,12 @@
+import { eq } from "drizzle-orm";
 import { beforeAll, describe, expect, it } from "vitest";
 import * as antennas from "~/db/antennas.server";
 import { db, inTransaction } from "~/db/client.server";
 import { newPublicId } from "~/db/ids.server";
 import * as people from "~/db/people.server";
 import * as projects from "~/db/projects.server";
-import { blocks } from "~/db/schema";
+import { blocks, plates } from "~/db/schema";
+import * as writeUps from "~/db/write-ups.server";
 import { NO_ANTENNA } from "~/measurement/antenna";
 import { takeIn } from "~/services/intake.server";
 import { removeNote } from "~/services/note-changes.server";
@@ -13,6 +15,8 @@ import { createProject } from "~/services/projects.server";
 import { find } from "~/services/search.server";
 import type { DipRange } from "~/services/search-question";
 import { makeStep } from "~/services/steps.server";
+import { changeDraft, makeDraft } from "~/services/write-ups/drafts.server";
+import { publish, revisionOf, takeBack } from "~/services/write-ups/publish.server";
 
 const NONE: DipRange = { fromHz: null, toHz: null, swrUnder: null, swrOver: null, verdict: null };
 type Who = { id: number };
@@ -160,6 +164,48 @@ describe("words", () => {
     expect(await ask(stranger, "vorpal")).toEqual({});
   });
 });
+
+describe("plates and write-ups", () => {
+  it("are found as they are shown: the newest version, nothing withdrawn, no draft, by who may read the project", async () => {
+    const plate = { ...PLATE, createdAt: new Date() };
+    for (const visibility of ["private", "public"] as const) {
+      const projectId = places[visibility].id;
+      const [{ insertId }] = await db
+        .insert(plates)
+        .values({ ...plate, projectId, publicId: newPublicId(), version: 1, title: "Old snark" });
+      const second = { ...plate, projectId, version: 2, previousId: insertId };
+      await db
+        .insert(plates)
+        .values({ ...second, publicId: newPublicId(), title: `New snark ${visibility}` });
+    }
+    expect((await ask(stranger, "snark")).plates).toEqual([expect.stringContaining("New snark public")]);
+    expect((await ask(owner, "snark")).plates).toHaveLength(2);
+    await db.update(plates).set({ withdrawnAt: new Date() }).where(eq(plates.version, 2));
+    expect(await ask(owner, "snark")).toEqual({});
+
+    const { public: project } = places;
+    const text = { title: "Frumious", body: "A draft of the **bandersnatch**." };
+    const publicId = await makeDraft(project, owner, text);
+    expect(await ask(owner, "bandersnatch")).toEqual({});
+    const found = await writeUps.findByPublicId(publicId);
+    if (!found) throw new Error("The write-up is not there.");
+    await publish(found.writeUp, found.project, owner, { revision: revisionOf(text), remark: "" });
+    await changeDraft(found.writeUp.id, project, text, { ...text, body: "About the jubjub." });
+    expect((await ask(null, "bandersnatch frumious"))["write-ups"]).toEqual(["Frumious"]);
+    expect(await ask(owner, "jubjub")).toEqual({});
+    await takeBack(found.writeUp, owner);
+    expect(await ask(owner, "bandersnatch")).toEqual({});
+  });
+});
+
+const PLATE = {
+  number: 1,
+  kind: "sweep" as const,
+  caption: "",
+  licence: "CC-BY-4.0",
+  record: "{}",
+  recordSha256: "0".repeat(64),
+};
 
 describe("people", () => {
   it("are found by those who share a project with them", async () => {

@@ -48,8 +48,10 @@ export async function action(args: Route.ActionArgs) {
 export default function Blocked({ loaderData, actionData }: Route.ComponentProps) {
   return (
     <div className="max-w-[48rem] space-y-8">
-      <Breadcrumbs items={[{ label: "Settings", to: "/settings" }]} />
-      <h1>People you blocked</h1>
+      <div className="space-y-2">
+        <Breadcrumbs items={[{ label: "Settings", to: "/settings" }]} />
+        <h1>People you blocked</h1>
+      </div>
       <p className="soft max-w-[72ch]">
         Their notes are folded away for you, and they can't mention, add or invite you. They are not told, and
         still read what their role lets them read.

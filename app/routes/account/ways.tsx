@@ -58,8 +58,10 @@ const LAST =
 export default function Ways({ loaderData, actionData }: Route.ComponentProps) {
   return (
     <div className="max-w-[48rem] space-y-8">
-      <Breadcrumbs items={[{ label: "Settings", to: "/settings" }]} />
-      <h1>How you sign in</h1>
+      <div className="space-y-2">
+        <Breadcrumbs items={[{ label: "Settings", to: "/settings" }]} />
+        <h1>How you sign in</h1>
+      </div>
       {actionData && "problem" in actionData && (
         <p role="alert" className="field-error">
           {actionData.problem}

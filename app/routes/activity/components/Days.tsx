@@ -38,7 +38,8 @@ function Line({ line }: { line: ActivityLine }) {
         {line.more > 0 && ` and ${line.more} more`}
       </p>
       <p className="text-small soft">
-        {line.by.join(", ")}, <time dateTime={new Date(line.at).toISOString()}>{at} UTC</time>
+        {line.by.length > 0 && `${line.by.join(", ")}, `}
+        <time dateTime={new Date(line.at).toISOString()}>{at} UTC</time>
       </p>
     </li>
   );

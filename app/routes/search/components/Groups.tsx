@@ -80,6 +80,7 @@ const HEADINGS: Record<ResultKind, string> = {
   steps: "Steps",
   trails: "Trails",
   plates: "Plates",
+  "write-ups": "Write-ups",
   antennas: "Antennas",
   projects: "Projects",
   people: "People",
