@@ -1,5 +1,6 @@
 import { inTransaction } from "~/db/client.server";
 import * as projects from "~/db/projects.server";
+import type { Evidence } from "~/db/schema";
 import * as trails from "~/db/trails.server";
 import { record } from "./events.server.ts";
 import { MAX_VERDICT_CHARACTERS } from "./note-limits.ts";
@@ -12,6 +13,8 @@ export interface ChangeTrailVerdict {
   text: string;
   /** What it was when the person decided; with another one since, nothing is changed. */
   was: trails.TrailRow["verdict"];
+  /** What it rests on, as it reads now. */
+  evidence?: Evidence[];
   at?: Date;
 }
 
@@ -30,7 +33,7 @@ export function changeTrailVerdict(input: ChangeTrailVerdict): Promise<VerdictCh
     await trails.update(trail.id, { verdict, verdictText: text, verdictBy: by, verdictAt: at }, tx);
     const { projectId, publicId } = trail;
     await trails.insertVerdictEvent(
-      { projectId, trailId: trail.id, verdict, text, evidence: [], by, at },
+      { projectId, trailId: trail.id, verdict, text, evidence: input.evidence ?? [], by, at },
       tx,
     );
     const about = { trail: publicId, title: text };

@@ -18,27 +18,35 @@ export async function evidenceFor(
     steps.findSweepsInOrder(projectId),
     steps.findAllByProject(projectId),
   ]);
-  return [
+  return withinBounds([
     ...causes.map(
       ({ key, title, arithmetic }): Evidence => ({ kind: "cause", id: key, text: `${title}: ${arithmetic}` }),
     ),
-    ...stops.map(({ publicId, frequencyHz, frequencyUncertaintyHz, sweepTitle }): Evidence => {
-      const at = formatFrequency(frequencyHz, frequencyUncertaintyHz);
-      return { kind: "dip", id: publicId, text: `${at} in “${sweepTitle}”` };
-    }),
-    ...listed
-      .filter(({ step }) => step.state === "done")
-      .map(({ step }): Evidence => ({ kind: "step", id: step.publicId, text: step.title })),
+    ...stops.map(stopEvidence),
+    ...listed.flatMap(stepEvidence),
     ...sweeps
       .slice(-MOST_SWEEPS)
       .map(({ publicId, title }): Evidence => ({ kind: "sweep", id: publicId, text: title })),
-    ...said
-      .filter(({ note }) => note.removedAt === null)
-      .map(({ note, author }): Evidence => {
-        const text = `${author?.name ?? "A former member"}: ${plainText(note.body, NOTE_CHARACTERS)}`;
-        return { kind: "note", id: note.publicId, text };
-      }),
-  ].map((one) => ({ ...one, text: one.text.slice(0, MOST_CHARACTERS) }));
+    ...said.flatMap(noteEvidence),
+  ]);
+}
+
+/** All that a verdict on a trail can rest on: its dips, the sweeps they are of, steps, and what was said of it. */
+export async function evidenceForTrail(trail: { id: number; projectId: number }): Promise<Evidence[]> {
+  const place = { projectId: trail.projectId, sweepId: null, dipId: null, trailId: trail.id };
+  const [said, stops, listed] = await Promise.all([
+    notes.findAllByPlace(place),
+    trailStops.findAllByTrail(trail.id),
+    steps.findAllByProject(trail.projectId),
+  ]);
+  return withinBounds([
+    ...stops.map(stopEvidence),
+    ...listed.flatMap(stepEvidence),
+    ...stops.map(
+      ({ sweepPublicId, sweepTitle }): Evidence => ({ kind: "sweep", id: sweepPublicId, text: sweepTitle }),
+    ),
+    ...said.flatMap(noteEvidence),
+  ]);
 }
 
 /** What was chosen, as "kind:id"; what is not there (any more) is left out. */
@@ -48,6 +56,28 @@ export function chosenEvidence(keys: readonly string[], offered: readonly Eviden
 
 export function evidenceKey({ kind, id }: Pick<Evidence, "kind" | "id">): string {
   return `${kind}:${id}`;
+}
+
+function stopEvidence(stop: Awaited<ReturnType<typeof trailStops.findAllByTrail>>[number]): Evidence {
+  const at = formatFrequency(stop.frequencyHz, stop.frequencyUncertaintyHz);
+  return { kind: "dip", id: stop.publicId, text: `${at} in “${stop.sweepTitle}”` };
+}
+
+function stepEvidence({ step }: steps.ListedStep): Evidence[] {
+  return step.state === "done" ? [{ kind: "step", id: step.publicId, text: step.title }] : [];
+}
+
+function noteEvidence({
+  note,
+  author,
+}: Awaited<ReturnType<typeof notes.findAllByPlace>>[number]): Evidence[] {
+  if (note.removedAt !== null) return [];
+  const text = `${author?.name ?? "A former member"}: ${plainText(note.body, NOTE_CHARACTERS)}`;
+  return [{ kind: "note", id: note.publicId, text }];
+}
+
+function withinBounds(evidence: Evidence[]): Evidence[] {
+  return evidence.map((one) => ({ ...one, text: one.text.slice(0, MOST_CHARACTERS) }));
 }
 
 const MOST_SWEEPS = 60;

@@ -12,6 +12,7 @@ import { deleteSweep, keepSettings, keepTitleAndDate } from "~/services/sweep-ed
 import { joinDip, joinTrails, partDips, takeBack } from "~/services/trail-corrections.server";
 import { changeTrailVerdict, nameTrail } from "~/services/trail-verdicts.server";
 import { refreshTrails } from "~/services/trails.server";
+import { chosenEvidence, evidenceForTrail, evidenceKey } from "~/services/verdict-evidence.server";
 
 let by: { id: number };
 let project: { id: number; publicId: string };
@@ -202,6 +203,18 @@ describe("corrections by hand", () => {
 });
 
 describe("changeTrailVerdict", () => {
+  it("rests on what was chosen of the trail's own dips and sweeps, as it read then", async () => {
+    const trail = await trailAt(await swept(1, 20), 20);
+    const offered = await evidenceForTrail({ id: trail.id, projectId: trail.projectId });
+    expect(offered.map(({ kind }) => kind)).toEqual(["dip", "sweep"]);
+    const evidence = chosenEvidence([evidenceKey(offered[0]), "sweep:nosuchone1"], offered);
+    await changeTrailVerdict({ trail, by, intent: "propose", text: "The mast", was: "open", evidence });
+    const [{ event }] = await trails.findVerdictEvents(trail.id);
+    expect(event.evidence).toEqual([
+      { kind: "dip", id: offered[0].id, text: expect.stringMatching(/^20.*MHz in “/) },
+    ]);
+  });
+
   it("keeps every verdict that was given", async () => {
     const trail = await trailAt(await swept(1, 20), 20);
     const say = (intent: "propose" | "settle" | "reopen", was: trails.TrailRow["verdict"]) =>

@@ -94,7 +94,7 @@ export default function DipPage({ loaderData }: Route.ComponentProps) {
               verdictText={dip.verdictText}
               verdictBy={dip.verdictBy}
               may={loaderData.mayVerdict}
-              evidence={<EvidenceChoice data={loaderData} />}
+              evidence={<EvidenceChoice evidence={loaderData.judgement.evidence} />}
             />
             {verdictOfTrail && (
               <p className="text-small">

@@ -6,6 +6,7 @@ import { notFound } from "~/errors";
 import { redirectWithMessage } from "~/services/flash.server";
 import { type Joined, joinDip, joinTrails, partDips, takeBack } from "~/services/trail-corrections.server";
 import { changeTrailVerdict, nameTrail } from "~/services/trail-verdicts.server";
+import { chosenEvidence, evidenceForTrail } from "~/services/verdict-evidence.server";
 import type { VerdictChange } from "~/services/verdicts.server";
 import type { TrailForm } from "./trails.schema.ts";
 
@@ -42,7 +43,9 @@ export async function correctTrail(
     case "propose":
     case "settle":
     case "reopen": {
-      const change = await changeTrailVerdict({ trail, by: person, ...form });
+      const { evidence: keys = [], ...said } = form;
+      const evidence = keys.length > 0 ? chosenEvidence(keys, await evidenceForTrail(trail)) : [];
+      const change = await changeTrailVerdict({ trail, by: person, ...said, evidence });
       if (change === "missing") throw notFound("trail");
       if (change === "done") return redirectWithMessage(pageOf(publicId), SAID[form.intent]);
       return notDone(VERDICT_PROBLEMS[change]);

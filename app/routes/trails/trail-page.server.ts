@@ -13,6 +13,7 @@ import { formatFrequency } from "~/measurement/units";
 import { plainText } from "~/services/markdown.server";
 import { listThread } from "~/services/note-thread.server";
 import { decisionOf, loadTrailSweeps } from "~/services/trails.server";
+import { evidenceForTrail, evidenceKey } from "~/services/verdict-evidence.server";
 import { expectationsOf } from "./expectations.server.ts";
 import { wayOf } from "./way.server.ts";
 
@@ -22,7 +23,7 @@ export async function loadTrailPage(access: ProjectAccess, publicId: string) {
   const found = await trails.findByPublicId(publicId);
   if (!found || found.trail.projectId !== project.id) throw notFound("trail");
   const { trail } = found;
-  const [stops, sweeps, members, all, decisions, events, notes, designBands, stepRows, thread] =
+  const [stops, sweeps, members, all, decisions, events, notes, designBands, stepRows, thread, evidence] =
     await Promise.all([
       trailStops.findAllByTrail(trail.id),
       loadTrailSweeps(project.id),
@@ -34,6 +35,7 @@ export async function loadTrailPage(access: ProjectAccess, publicId: string) {
       projects.findDesignBands(project.id),
       steps.findAllByProject(project.id),
       listThread({ projectId: project.id, sweepId: null, dipId: null, trailId: trail.id }, access),
+      may("verdict.propose") ? evidenceForTrail(trail) : [],
     ]);
   const way = wayOf(stops.map((stop) => ({ ...stop, numbers: completeDip(stop.numbers) })));
   const [first, last] = [stops[0], stops[stops.length - 1]];
@@ -91,9 +93,11 @@ export async function loadTrailPage(access: ProjectAccess, publicId: string) {
       publicId: event.publicId,
       verdict: event.verdict,
       text: event.text,
+      evidence: event.evidence,
       by,
       at: event.at,
     })),
+    evidence: evidence.map((one) => ({ key: evidenceKey(one), kind: one.kind, text: one.text })),
     thread,
     notes: notes.map(({ body, ...note }) => ({ ...note, line: plainText(body, 220) })),
     moreNotes: way.reduce((sum, { noteCount }) => sum + noteCount, 0) - notes.length,

@@ -34,7 +34,10 @@ export async function action(args: Route.ActionArgs) {
         : "trail.correct";
   const access = await requireProject(args, asks);
   if (!access.person) throw refused("Sign in first. Nothing was changed.");
-  const parsed = trailForm.safeParse(Object.fromEntries(form));
+  const parsed = trailForm.safeParse({
+    ...Object.fromEntries(form),
+    evidence: form.getAll("evidence").map(String),
+  });
   if (!parsed.success) {
     const errors = parsed.error.issues.map(({ message }) => message);
     return data({ intent, errors: [...errors, "Nothing was changed."] }, 400);

@@ -1,9 +1,12 @@
 import { Unfold } from "~/components/notes/Unfold";
-import type { DipPageData } from "../dip";
+import type { Evidence } from "~/db/schema";
+
+export interface EvidenceChoiceProps {
+  evidence: { key: string; kind: Evidence["kind"]; text: string }[];
+}
 
 /** What the verdict rests on, to be ticked: causes, the trail's dips, steps, sweeps, notes. */
-export function EvidenceChoice({ data: { judgement } }: { data: DipPageData }) {
-  const { evidence } = judgement;
+export function EvidenceChoice({ evidence }: EvidenceChoiceProps) {
   if (evidence.length === 0) return null;
   const groups = KINDS.map(({ kind, words }) => ({
     words,

@@ -1,6 +1,7 @@
 import { Link } from "react-router";
 import { DateTime } from "~/components/ui/DateTime";
 import { VerdictTag } from "~/components/ui/Tag";
+import type { Evidence } from "~/db/schema";
 import type { DipPageData } from "../dip";
 
 /** Every verdict that was given, newest first: who, when and on what evidence. */
@@ -22,16 +23,7 @@ export function VerdictHistory({ data: { judgement, projectId } }: { data: DipPa
                 {by ?? "former member"}, <DateTime at={at} />
                 {ofTrail && ", on the trail"}
               </p>
-              {evidence.length > 0 && (
-                <ul className="list-disc pl-5" aria-label="On the evidence of">
-                  {evidence.map((one) => (
-                    <li key={`${one.kind} ${one.id}`}>
-                      <span className="soft">{KIND_WORDS[one.kind]}</span>{" "}
-                      <EvidenceLine one={one} projectId={projectId} />
-                    </li>
-                  ))}
-                </ul>
-              )}
+              <EvidenceList evidence={evidence} projectId={projectId} />
             </div>
           </li>
         ))}
@@ -40,13 +32,22 @@ export function VerdictHistory({ data: { judgement, projectId } }: { data: DipPa
   );
 }
 
-function EvidenceLine({
-  one: { kind, id, text },
-  projectId,
-}: {
-  one: DipPageData["judgement"]["history"][number]["evidence"][number];
-  projectId: string;
-}) {
+/** What a verdict rested on, as it read then, with links to what is there now. */
+export function EvidenceList({ evidence, projectId }: { evidence: Evidence[]; projectId: string }) {
+  if (evidence.length === 0) return null;
+  return (
+    <ul className="list-disc pl-5" aria-label="On the evidence of">
+      {evidence.map((one) => (
+        <li key={`${one.kind} ${one.id}`}>
+          <span className="soft">{KIND_WORDS[one.kind]}</span>{" "}
+          <EvidenceLine one={one} projectId={projectId} />
+        </li>
+      ))}
+    </ul>
+  );
+}
+
+function EvidenceLine({ one: { kind, id, text }, projectId }: { one: Evidence; projectId: string }) {
   const base = `/projects/${projectId}`;
   switch (kind) {
     case "sweep":

@@ -3,6 +3,8 @@ import { Unfold } from "~/components/notes/Unfold";
 import { Button } from "~/components/ui/Button";
 import { DateTime } from "~/components/ui/DateTime";
 import { VerdictTag } from "~/components/ui/Tag";
+import { EvidenceChoice } from "~/routes/dips/components/EvidenceChoice";
+import { EvidenceList } from "~/routes/dips/components/VerdictHistory";
 import { MAX_VERDICT_CHARACTERS } from "~/services/note-limits";
 import type { TrailPageData } from "../trail";
 import { Problems } from "./Problems.tsx";
@@ -40,14 +42,15 @@ export function TrailVerdict({ data, errors }: { data: TrailPageData; errors: st
         </div>
       )}
       <Problems errors={errors} />
-      {history.length > 1 && (
+      {(history.length > 1 || history.some(({ evidence }) => evidence.length > 0)) && (
         <ol className="grid gap-2 text-small" aria-label="Verdicts so far, newest first">
-          {history.map(({ publicId, verdict, text, by, at }) => (
+          {history.map(({ publicId, verdict, text, by, at, evidence }) => (
             <li key={publicId} className="note-line">
               <VerdictTag verdict={verdict} /> {text}{" "}
               <span className="soft">
                 {by ?? "former member"}, <DateTime at={at} dateOnly />
               </span>
+              <EvidenceList evidence={evidence} projectId={data.project.publicId} />
             </li>
           ))}
         </ol>
@@ -56,7 +59,7 @@ export function TrailVerdict({ data, errors }: { data: TrailPageData; errors: st
   );
 }
 
-function VerdictChange({ data: { trail, may } }: { data: TrailPageData }) {
+function VerdictChange({ data: { trail, may, evidence } }: { data: TrailPageData }) {
   const open = trail.verdict !== "settled";
   return (
     <Form method="post" className="grid gap-3 max-w-[40rem]" key={trail.verdict}>
@@ -74,6 +77,7 @@ function VerdictChange({ data: { trail, may } }: { data: TrailPageData }) {
           autoComplete="off"
         />
       </label>
+      <EvidenceChoice evidence={evidence} />
       <div className="flex flex-wrap gap-3">
         {open && may.propose && (
           <Button name="intent" value="propose" variant="quiet" size="small">
