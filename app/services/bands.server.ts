@@ -11,6 +11,7 @@ import { type DipOffset, dipOffset } from "~/measurement/dip-offsets";
 import type { LengthPair } from "~/measurement/length-line";
 import type { LengthUnit } from "~/measurement/lengths";
 import type { Dip, Sweep } from "~/measurement/sweep";
+import { type Artefacts, artefactsFor, artefactsOf } from "./causes.server.ts";
 import { antennaOn, historyOf, lengthsOf } from "./step-expectations.server.ts";
 
 export interface NamedBand extends AskedBand {
@@ -63,6 +64,8 @@ export function bandsOfSweep(
   }));
 }
 
+type TargetSweep = Pick<SweepRow, "id" | "projectId" | "benchId" | "feedline" | "takenAt" | "createdAt">;
+
 export interface DipTarget extends DipOffset {
   dip: Dip & { publicId: string | null };
   /** Name of the part that the dip may be of and that `trim` is about; null where there is none. */
@@ -73,7 +76,7 @@ export interface DipTarget extends DipOffset {
 
 /** `targetsOn` with its ground from the database. */
 export async function targetsOf(
-  sweep: Pick<SweepRow, "id" | "projectId">,
+  sweep: TargetSweep,
   dips: readonly (Dip & { publicId: string | null })[],
   designBands: readonly DesignBand[],
   unit: LengthUnit,
@@ -82,14 +85,15 @@ export async function targetsOf(
 }
 
 /** What is known of the antenna's history up to a sweep, from the database: the ground of `targetsOn`. */
-export async function targetGround(sweep: Pick<SweepRow, "id" | "projectId">) {
-  const [versions, sweeps, stops, known] = await Promise.all([
+export async function targetGround(sweep: TargetSweep) {
+  const [versions, sweeps, stops, known, artefacts] = await Promise.all([
     antennas.findAllByProject(sweep.projectId),
     steps.findSweepsInOrder(sweep.projectId),
     steps.findTrailStops(sweep.projectId),
     compare.findDips([sweep.id]),
+    artefactsOf(sweep),
   ]);
-  return { sweepId: sweep.id, versions, sweeps, stops, known };
+  return { sweepId: sweep.id, versions, sweeps, stops, known, artefacts };
 }
 
 /**
@@ -97,7 +101,7 @@ export async function targetGround(sweep: Pick<SweepRow, "id" | "projectId">) {
  * when the sweep was taken, with the lengths that the dip's trail had seen by then. No trim where the dip is not that band's (TOO_FAR).
  */
 export function targetsOn(
-  { sweepId, versions, sweeps, stops, known }: Awaited<ReturnType<typeof targetGround>>,
+  { sweepId, versions, sweeps, stops, known, artefacts }: Awaited<ReturnType<typeof targetGround>>,
   dips: readonly (Dip & { publicId: string | null })[],
   designBands: readonly DesignBand[],
   unit: LengthUnit,
@@ -113,7 +117,7 @@ export function targetsOn(
     const offset = dipOffset(dip.frequencyHz, designBands);
     if (!offset) return [];
     const far = Math.abs(offset.share) > TOO_FAR;
-    const element = far || !then ? null : partBehind(dip, inner, then, unit);
+    const element = far || !then ? null : partBehind(dip, inner, then, unit, artefacts);
     if (!element) {
       return [{ ...offset, dip, part: null, without: far ? "far" : then ? "no-part" : "not-described" }];
     }
@@ -130,8 +134,14 @@ export function targetsOn(
 }
 
 /** The likeliest part of the antenna that may be behind a dip; null where none is among the likely causes, or its length is not said. */
-function partBehind(dip: Dip, dips: readonly Dip[], antenna: Antenna, unit: LengthUnit) {
-  const causes = causesOf(dip, { antenna, dips, ripplePeriodHz: null, references: [], unit });
+function partBehind(
+  dip: Dip,
+  dips: readonly Dip[],
+  antenna: Antenna,
+  unit: LengthUnit,
+  artefacts: Artefacts,
+) {
+  const causes = causesOf(dip, { antenna, dips, unit, ...artefactsFor(dip, antenna, artefacts) });
   const lengths = lengthsOf(antenna);
   const found = causes
     .slice(0, LIKELY)

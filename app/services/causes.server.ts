@@ -1,3 +1,5 @@
+import * as benchReferences from "~/db/bench-references.server";
+import * as benches from "~/db/benches.server";
 import * as cables from "~/db/cables.server";
 import * as dips from "~/db/dips.server";
 import type { SweepRow } from "~/db/sweeps.server";
@@ -70,6 +72,49 @@ export async function judgeDip(
   };
 }
 
+/** What may be of the set-up in a sweep and not of the antenna, as far as it is known before a dip is looked at. */
+export interface Artefacts {
+  sweep: Pick<SweepRow, "feedline">;
+  cables: cables.CableRow[];
+  /** Of the bench as it was when the sweep was taken. */
+  references: { kind: string; dips: dips.ListedDip[] }[];
+}
+
+export async function artefactsOf(
+  sweep: Pick<SweepRow, "projectId" | "benchId" | "feedline" | "takenAt" | "createdAt">,
+): Promise<Artefacts> {
+  const [own, references] = await Promise.all([
+    cables.findAllByProject(sweep.projectId),
+    referencesOf(sweep),
+  ]);
+  const known = await Promise.all(references.map((one) => dips.findAllBySweep(one.sweep.id)));
+  return {
+    sweep,
+    cables: own,
+    references: references.map(({ kind }, i) => ({ kind, dips: known[i] })),
+  };
+}
+
+/** The artefacts as far as they bear on one dip, for `causesOf`. */
+export function artefactsFor(judged: Dip, antenna: Antenna, { sweep, cables: own, references }: Artefacts) {
+  return {
+    ripplePeriodHz: rippleOf(sweep, antenna, own),
+    references: references.flatMap(({ kind, dips: found }) => largeEnough(kind, found, judged)),
+  };
+}
+
+/** The reference sweeps that are read, without their points. */
+async function referencesOf({
+  benchId,
+  takenAt,
+  createdAt,
+}: Pick<SweepRow, "benchId" | "takenAt" | "createdAt">) {
+  if (benchId === null) return [];
+  const version = await benches.findVersionAt(benchId, takenAt ?? createdAt);
+  const found = version ? await benchReferences.findAllByVersions([version.id]) : [];
+  return found.filter(({ sweep }) => sweep.readingId !== null && sweep.problem === null);
+}
+
 /** The line that the sweep says it was seen through, else the antenna's. */
 function rippleOf(sweep: Pick<SweepRow, "feedline">, { feedline }: Antenna, own: cables.CableRow[]) {
   if (sweep.feedline) return ripplePeriodOf({ ...sweep.feedline, cable: null });
@@ -84,9 +129,12 @@ async function dipsOf(
   { kind, sweep }: { kind: string; sweep: { id: number } },
   judged: Dip,
 ): Promise<ReferenceDip[]> {
+  return kind === "through" ? [] : largeEnough(kind, await dips.findAllBySweep(sweep.id), judged);
+}
+
+function largeEnough(kind: string, found: dips.ListedDip[], judged: Dip): ReferenceDip[] {
   if (kind === "through") return [];
   const role = kind as ReferenceDip["role"];
-  const found = await dips.findAllBySweep(sweep.id);
   return found
     .filter(
       ({ dip }) => dip.present && !dip.numbers.edge && crestOf(dip.numbers) <= crestOf(judged) + UNDER_DB,

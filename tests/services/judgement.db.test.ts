@@ -10,7 +10,7 @@ import { type Antenna, NO_ANTENNA } from "~/measurement/antenna";
 import { SPEED_OF_LIGHT } from "~/measurement/feedline";
 import { adviseOn } from "~/services/advice.server";
 import { changeAntenna } from "~/services/antennas.server";
-import { judgeDip } from "~/services/causes.server";
+import { artefactsFor, artefactsOf, judgeDip } from "~/services/causes.server";
 import { takeIn } from "~/services/intake.server";
 import { changeBands, createProject } from "~/services/projects.server";
 import { makeStep } from "~/services/steps.server";
@@ -108,6 +108,9 @@ describe("what may be behind a dip", () => {
     expect(judged.notJudged.map(({ name }) => name)).toEqual(["the old mast"]);
     // VF·c/(2l) = 0.66·299.79/(5.4)
     expect((judged.ripplePeriodHz ?? 0) / 1e6).toBeCloseTo(36.64, 1);
+    // The sweep's own page knows of the same ripple.
+    const same = artefactsFor(sweep.near(BRAID_HZ).numbers, antenna(10.2, BRAID_M), await artefactsOf(sweep));
+    expect(same).toEqual({ ripplePeriodHz: judged.ripplePeriodHz, references: [] });
     const pole = await judgeDip(sweep.near(quarterHz(10.2)), sweep, "metres");
     expect(pole.causes[0]).toMatchObject({ kind: "part", part: "pole", order: 1 });
   });

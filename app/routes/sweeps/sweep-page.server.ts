@@ -1,5 +1,6 @@
 import type { ProjectAccess } from "~/auth/require.server";
 import { type BesidePoints, packPoints } from "~/charts/sent-points";
+import * as benchReferences from "~/db/bench-references.server";
 import * as dips from "~/db/dips.server";
 import * as people from "~/db/people.server";
 import * as projects from "~/db/projects.server";
@@ -32,16 +33,18 @@ export async function loadSweepPage(
   const stored = found.analysis?.correction ?? null;
   const plane = view.plane === (stored?.plane ?? "instrument") ? null : view.plane;
   const asked = sweepAt(found, plane);
-  const [known, designBands, at, ground, correction, dismissed, thread, sweepThread] = await Promise.all([
-    dips.findAllBySweep(sweep.id),
-    projects.findDesignBands(project.id),
-    asked,
-    targetGround(sweep),
-    loadCorrection(access, found, plane, asked),
-    person ? people.findDismissals(person.id) : [],
-    view.dip ? threadOf(view.dip, access, sweep.id) : null,
-    listThread({ projectId: project.id, sweepId: sweep.id, dipId: null }, access),
-  ]);
+  const [known, designBands, at, ground, correction, dismissed, thread, sweepThread, referenceOf] =
+    await Promise.all([
+      dips.findAllBySweep(sweep.id),
+      projects.findDesignBands(project.id),
+      asked,
+      targetGround(sweep),
+      loadCorrection(access, found, plane, asked),
+      person ? people.findDismissals(person.id) : [],
+      view.dip ? threadOf(view.dip, access, sweep.id) : null,
+      listThread({ projectId: project.id, sweepId: sweep.id, dipId: null }, access),
+      sweep.purpose === "reference" ? benchReferences.findBenchesOf(sweep.id) : [],
+    ]);
   const tried = triedSettings(view, settings) ?? (plane ? settings : null);
   const zoomed = view.fromHz !== null || view.toHz !== null;
   // As it came in, the whole of it is drawn from what is kept for that.
@@ -68,6 +71,13 @@ export async function loadSweepPage(
     dismissed,
     thread,
     sweepThread,
+    referenceOf: referenceOf
+      .filter(({ bench }) => bench.projectId === project.id)
+      .map(({ bench, version, kind }) => ({
+        bench: { publicId: bench.publicId, name: bench.name },
+        version: { publicId: version.publicId, number: version.number },
+        kind,
+      })),
     inBands: drawBands(access, {
       at,
       designBands,

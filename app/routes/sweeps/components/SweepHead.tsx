@@ -48,6 +48,13 @@ export function SweepHead({
         {sweep.referenceOhm !== null && ` · ${sweep.referenceOhm} Ω`}
         {` · ${data.correction.short}`}
       </p>
+      {data.referenceOf.map(({ bench, version, kind }) => (
+        <p key={`${version.publicId} ${kind}`}>
+          The {kind} of the bench{" "}
+          <Link to={`${base}/benches/${bench.publicId}?version=${version.publicId}`}>{bench.name}</Link>,
+          version {version.number}.
+        </p>
+      ))}
       <p className="text-small">
         <Link to={`${base}/sweeps/${sweep.publicId}/reading`}>
           {sweep.format === "screenshot" && "Read from a picture. "}
