@@ -112,6 +112,7 @@ export default [
   route("admin/mail", "routes/admin/mail.tsx"),
   route("admin/reports", "routes/admin/reports.tsx"),
 
+  route("api", "routes/api/guide/guide.tsx"),
   ...prefix("api/v1", [
     route("openapi.json", "routes/api/openapi.ts"),
     route("projects", "routes/api/projects.ts"),

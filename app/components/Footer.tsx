@@ -11,7 +11,8 @@ export function Footer() {
           the bench they were taken with; the product says how good that is.
         </p>
         <p className="mt-2">
-          <a href="/methods">Methods: how each number is reckoned</a>
+          <a href="/methods">Methods: how each number is reckoned</a> <span aria-hidden="true">·</span>{" "}
+          <a href="/api">For scripts: the API</a>
         </p>
       </div>
     </footer>

@@ -79,6 +79,7 @@ const sweepFile = () => new File([touchstone()], "walk.s1p");
 export const EXPECTATIONS: Record<string, Expectation> = {
   "routes/home/home.tsx": { GET: anybody },
   "routes/methods/methods.tsx": { GET: anybody },
+  "routes/api/guide/guide.tsx": { GET: anybody },
   "routes/home/missing.tsx": { GET: [{ ask: { status: 404 } }], POST: [{ ask: { status: 404 } }] },
 
   "routes/account/sign-in.tsx": { GET: anybody },

@@ -43,6 +43,8 @@ export const projectListShape = z.object({
 
 const verdict = z.enum(["open", "proposed", "settled"]);
 
+const edge = z.object({ low: z.number().nullable(), high: z.number().nullable() });
+
 export const bandwidthShape = z.object({
   limitSwr: z.number(),
   lowHz: hz.nullable().describe("Hz; null where the sweep ends inside"),
@@ -54,6 +56,8 @@ export const bandwidthShape = z.object({
   fractional: z.number().nullish(),
   widthLowHz: z.number().nullish().describe("Worst case with the bench's errors; null where unknown"),
   widthHighHz: z.number().nullish(),
+  lowEdge: edge.nullish().describe("Where the lower end may lie, Hz; null where unknown"),
+  highEdge: edge.nullish(),
 });
 
 export const dipShape = z.object({

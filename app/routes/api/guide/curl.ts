@@ -1,0 +1,20 @@
+import type { Example } from "./examples.ts";
+
+/** An example as a command for a shell. Pure. `base` is the address of the API. */
+export function curlOf({ path, json, file }: Example, base: string): string {
+  const lines = ["curl", '-H "Authorization: Bearer $SWALE_TOKEN"'];
+  if (file) {
+    lines.push(`-F file=@${file.name}`);
+    for (const [name, value] of Object.entries(file.fields)) lines.push(`-F ${quoted(`${name}=${value}`)}`);
+  }
+  if (json !== undefined) {
+    lines.push('-H "Content-Type: application/json"', `-d ${quoted(JSON.stringify(json))}`);
+  }
+  lines.push(quoted(base + path));
+  return lines.join(" \\\n  ");
+}
+
+/** Bare where that is safe, else in single quotes. */
+function quoted(text: string): string {
+  return /^[\w@%+=:,./-]+$/.test(text) ? text : `'${text.replaceAll("'", "'\\''")}'`;
+}

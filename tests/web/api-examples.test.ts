@@ -1,0 +1,188 @@
+import { execFileSync } from "node:child_process";
+import { existsSync, readFileSync, writeFileSync } from "node:fs";
+import { afterAll, expect, it } from "vitest";
+import { db } from "~/db/client.server";
+import * as people from "~/db/people.server";
+import * as projects from "~/db/projects.server";
+import { NO_ANTENNA } from "~/measurement/antenna";
+import { NO_TOKEN } from "~/routes/api/guide/components/Rules";
+import { EXAMPLE_GROUPS, type Example, filledIn, keyOf } from "~/routes/api/guide/examples";
+import { componentOf } from "~/routes/api/openapi-parts";
+import { changeAntenna } from "~/services/antennas.server";
+import { createProject } from "~/services/projects.server";
+import { askApi, SERVER } from "./browser.ts";
+import { closeWorld, makeBench, makePerson, type Someone, tokenOf } from "./world.ts";
+
+/** Runs every worked example of the guide, one after another, as somebody new would. */
+
+const ANSWERS = new URL("../../app/routes/api/guide/example-answers.json", import.meta.url);
+const examples = EXAMPLE_GROUPS.flatMap((group) => group.examples);
+/** Real → shown. */
+const ids = new Map<string, string>();
+
+afterAll(closeWorld);
+
+it("answers as the guide says, in the shapes of the OpenAPI document", { timeout: 120_000 }, async () => {
+  const person = await makePerson("ada");
+  await people.update(person.id, { name: "Ada Marsh" });
+  const project = await makeExperiment(person);
+  const token = await tokenOf(person);
+  const document = await (await askApi("/openapi.json", null)).json();
+  const operations = operationsOf(document);
+  const kept: Record<string, string> = {};
+  const answers: Record<string, unknown> = {};
+  for (const example of examples) {
+    const { method, path, status, schema } = operations[example.operation];
+    const [asked] = filledIn(example.path, kept).split("?");
+    expect(asked).toMatch(new RegExp(`^${path.replace(/\{\w+\}/g, "\\w+")}$`));
+    const response = await askApi(filledIn(example.path, kept), token, {
+      method,
+      ...bodyOf(filledIn(example, kept)),
+    });
+    const answer = await response.json();
+    expect([example.operation, response.status, answer]).toEqual([example.operation, status, answer]);
+    // A member that the document does not know would be left out here.
+    expect(componentOf(schema).parse(answer), example.operation).toEqual(answer);
+    for (const [name, where] of Object.entries(example.keep ?? {})) {
+      kept[name] = where.split(".").reduce((at, key) => at?.[key], answer);
+      expect(kept[name], `${example.operation}: ${where}`).toBeTypeOf("string");
+    }
+    answers[keyOf(example)] = shown(answer, person, project);
+  }
+  if (process.env.EXAMPLES === "write") {
+    writeFileSync(ANSWERS, JSON.stringify(answers));
+    execFileSync("npx", ["biome", "format", "--write", ANSWERS.pathname], { stdio: "ignore" });
+  }
+  expect(existsSync(ANSWERS)).toBe(true);
+  const told = "after a change that is meant, run this file with EXAMPLES=write";
+  expect(answers, told).toEqual(JSON.parse(readFileSync(ANSWERS, "utf8")));
+});
+
+it("leaves no operation without an example", async () => {
+  const document = await (await askApi("/openapi.json", null)).json();
+  const { getOpenApi: _, ...operations } = operationsOf(document);
+  expect([...new Set(examples.map(({ operation }) => operation))].sort()).toEqual(
+    Object.keys(operations).sort(),
+  );
+});
+
+it("says what a call without a token is answered with", async () => {
+  const answer = await (await askApi("/projects", null)).json();
+  expect(JSON.parse(NO_TOKEN)).toEqual(answer);
+});
+
+async function makeExperiment(person: Someone) {
+  const about = { title: "A vertical on the reed bank", summary: "Invented.", ituRegion: 1 } as const;
+  const made = await createProject({ ...about, visibility: "private" }, person.id);
+  const band = { name: "40 m", lowHz: 7_000_000, highHz: 7_200_000, swrLimit: 2 };
+  await projects.replaceDesignBands(made.id, [band], db);
+  await makeBench(made, person, "Bridge in the shed");
+  const element = { heightM: 0, diameterMm: null, material: "copper", insulated: null, where: "" };
+  await changeAntenna({
+    projectId: made.id,
+    by: person.id,
+    was: NO_ANTENNA,
+    wanted: {
+      ...NO_ANTENNA,
+      elements: [
+        { ...element, key: "pole", kind: "vertical", name: "Reed pole", lengthM: 10.2, count: 1 },
+        { ...element, key: "radials", kind: "radial", name: "Radials", lengthM: 8, count: 4 },
+      ],
+    },
+    validFrom: new Date("2026-05-01T00:00Z"),
+    remark: "As it was put up",
+  });
+  return made;
+}
+
+interface Asked {
+  method: string;
+  path: string;
+  status: number;
+  schema: Parameters<typeof componentOf>[0];
+}
+
+interface Document {
+  paths: Record<string, Record<string, { operationId: string; responses: Record<string, Answered> }>>;
+}
+type Answered = { content?: { "application/json"?: { schema?: { $ref: string } } } };
+
+function operationsOf(document: Document): Record<string, Asked> {
+  const found: Record<string, Asked> = {};
+  for (const [path, item] of Object.entries(document.paths)) {
+    for (const [method, { operationId, responses }] of Object.entries(item)) {
+      const [status] = Object.keys(responses).filter((code) => code.startsWith("2"));
+      const reference = responses[status].content?.["application/json"]?.schema?.$ref ?? "";
+      const schema = reference.replace("#/components/schemas/", "") as Asked["schema"];
+      found[operationId] = { method: method.toUpperCase(), path, status: Number(status), schema };
+    }
+  }
+  return found;
+}
+
+function bodyOf({ json, file }: Example): RequestInit {
+  if (json !== undefined) {
+    return { body: JSON.stringify(json), headers: { "Content-Type": "application/json" } };
+  }
+  if (!file) return {};
+  const body = new FormData();
+  body.set("file", new File([file.text], file.name));
+  for (const [name, value] of Object.entries(file.fields)) body.set(name, value);
+  return { body };
+}
+
+/** What differs from run to run is written as the guide shows it; long lists are cut. */
+function shown(answer: unknown, person: Someone, project: { publicId: string }): unknown {
+  idOf(project.publicId);
+  collectIds(answer);
+  let text = JSON.stringify(answer)
+    .replaceAll(person.userName, "ada-marsh")
+    .replaceAll(SERVER, "https://swale.example");
+  for (const [real, told] of ids) text = text.replaceAll(real, told);
+  return tidied(JSON.parse(text));
+}
+
+function collectIds(value: unknown): void {
+  if (typeof value === "string" && PUBLIC_ID.test(value) && /\d/.test(value)) idOf(value);
+  else if (value && typeof value === "object") {
+    for (const [key, one] of Object.entries(value)) {
+      if (typeof one === "string" && ID_KEYS.test(key) && PUBLIC_ID.test(one)) idOf(one);
+      else collectIds(one);
+    }
+  }
+}
+
+function idOf(real: string): string {
+  const known = ids.get(real);
+  if (known) return known;
+  const told = `${SAMPLE_LETTERS[ids.size]}7fenmarsh`;
+  ids.set(real, told);
+  return told;
+}
+
+function tidied(value: unknown): unknown {
+  if (typeof value === "string") {
+    if (ISO.test(value) && Math.abs(Date.now() - Date.parse(value)) < DAY_MS)
+      return "2026-05-04T18:00:00.000Z";
+    return value;
+  }
+  if (typeof value === "number") return Number(value.toPrecision(DIGITS));
+  if (Array.isArray(value)) {
+    const first = value.slice(0, MOST_SHOWN).map(tidied);
+    return value.length > MOST_SHOWN + 1
+      ? [...first, `… and ${value.length - MOST_SHOWN} more`]
+      : value.map(tidied);
+  }
+  if (value === null || typeof value !== "object") return value;
+  return Object.fromEntries(Object.entries(value).map(([key, one]) => [key, tidied(one)]));
+}
+
+const PUBLIC_ID = /^[2-9a-hjkmnp-z]{10}$/;
+const ID_KEYS = /^(?:id|project|sweep|dip|step|trail|bench|plate|writeUp|reference)$/;
+/** One for each id that the examples meet. */
+const SAMPLE_LETTERS = "abcdefghjkmnpqrstuvwxyz";
+const ISO = /^\d{4}-\d\d-\d\dT[\d:.]+Z$/;
+const DAY_MS = 86_400_000;
+const MOST_SHOWN = 4;
+/** Enough to read, and the same on every machine. */
+const DIGITS = 8;
