@@ -3,6 +3,7 @@ import { chase } from "./reed-bank-chase.ts";
 import { plates } from "./reed-bank-plates.ts";
 import { proof } from "./reed-bank-proof.ts";
 import { settling } from "./reed-bank-settling.ts";
+import { writeUp } from "./reed-bank-write-up.ts";
 import type { Story } from "./story.ts";
 
 export function reedBankStory(): Story {
@@ -23,6 +24,6 @@ All of it is invented: the club, its people, the place and every number, which a
       { name: "40 m", lowHz: 7e6, highHz: 7.2e6, swrLimit: 2 },
       { name: "17 m", lowHz: 18.068e6, highHz: 18.168e6, swrLimit: 2 },
     ],
-    steps: [...chase(files), ...proof(files), ...settling(files), ...plates()],
+    steps: [...chase(files), ...proof(files), ...settling(files), ...plates(), ...writeUp()],
   };
 }

@@ -17,6 +17,8 @@ import {
   verdictEvents,
 } from "~/db/schema/index";
 import { findTrailStops } from "~/db/steps.server";
+import * as writeUps from "~/db/write-ups.server";
+import { drawPage, seek } from "~/services/write-ups/published.server";
 import { buildDemo } from "../../scripts/demo/build.ts";
 import { play } from "../../scripts/demo/play.ts";
 import { reedBankStory } from "../../scripts/demo/reed-bank-story.ts";
@@ -51,6 +53,21 @@ describe("the demo", () => {
     const before = await demo();
     expect(await buildDemo()).toBe("there already");
     expect(await demo()).toEqual(before);
+  });
+
+  it("publishes a write-up that shows plates and figures and says that it is invented", async () => {
+    const { project } = await demo();
+    const [listed] = await writeUps.findAllByProject(project.id, { drafts: false });
+    const sought = await seek(listed.publicId, null);
+    if (sought.kind !== "shown") throw new Error(sought.kind);
+    const { version, frozen } = sought.publication;
+    expect(version.body).toContain("invented");
+    expect(frozen.figures.map(({ subject }) => subject.split(":")[0]).sort()).toEqual([
+      "dip",
+      "plate",
+      "plate",
+    ]);
+    expect((await drawPage(sought.publication, null)).html).not.toContain("article-missing");
   });
 
   it("has enough of everything, and says that it is invented", async () => {

@@ -20,7 +20,7 @@ export async function loader({ request, params }: Route.LoaderArgs) {
     ]);
     const article = drawElsewhere(publication, env.BASE_URL, {
       plates,
-      plateSource: (id, theme) => dataAddress(drawingOf(id, theme)),
+      plateSource: (id, theme, width) => dataAddress(drawingOf(id, theme, width)),
     });
     return {
       body: htmlDocument(publication, article, { origin: env.BASE_URL, fonts }),

@@ -127,7 +127,7 @@ function plateDrawing({ subject }: FrozenFigure, { plates, drawingOf }: FigurePl
     const why = state?.withdrawnReason ? `: ${state.withdrawnReason}` : "";
     return { text: `This plate was withdrawn${why}.`, color: SOFT };
   }
-  const svg = drawingOf(id, "light");
+  const svg = drawingOf(id, "light", "wide");
   return svg
     ? { svg: forPrint(svg), width: TEXT_WIDTH }
     : { text: "The drawing of this plate can't be had just now.", color: SOFT };

@@ -9,7 +9,7 @@ export interface FigurePlace {
   /** What became of the plates since; one that is missing was deleted. */
   plates: ReadonlyMap<string, PlateState>;
   /** Address of a plate's drawing; null where there is none. */
-  plateSource: (publicId: string, theme: "light" | "dark") => string | null;
+  plateSource: (publicId: string, theme: "light" | "dark", width: "wide" | "narrow") => string | null;
   /** Where the page of a figure is; null for a reader who could not open it. */
   linkTo: (figure: FrozenFigure) => string | null;
 }
@@ -37,9 +37,13 @@ function plate(figure: FrozenFigure, n: number, place: FigurePlace): DrawnFigure
     return { label, drawing: `<p class="article-missing">${escapeHtml(words)}</p>`, under: smallLine(link) };
   }
   const picture = (["light", "dark"] as const).map((theme) => {
-    const source = place.plateSource(publicId, theme);
-    if (source === null) return "";
-    return `<img class="on-${theme}" src="${escapeHtml(source)}" alt="${escapeHtml(figure.title)}" loading="lazy">`;
+    const [wide, narrow] = (["wide", "narrow"] as const).map((width) =>
+      place.plateSource(publicId, theme, width),
+    );
+    if (wide === null) return "";
+    const small = narrow && `<source media="(width < 34rem)" srcset="${escapeHtml(narrow)}">`;
+    const image = `<img src="${escapeHtml(wide)}" alt="${escapeHtml(figure.title)}" loading="lazy">`;
+    return `<picture class="on-${theme}">${small ?? ""}${image}</picture>`;
   });
   const drawing = picture.some((one) => one !== "")
     ? `<div class="figure-plate">${picture.join("")}</div>`
@@ -87,3 +91,10 @@ export function momentOf(iso: string): string {
 function dayOf(at: Date | string): string {
   return new Date(at).toISOString().slice(0, 10);
 }
+
+/** Where the frozen drawings of plates are on this server. */
+export const PLATE_ADDRESS: FigurePlace["plateSource"] = (publicId, theme, width) => {
+  const asked = [theme === "dark" ? "theme=dark" : "", width === "narrow" ? "width=narrow" : ""];
+  const search = asked.filter((one) => one !== "").join("&");
+  return `/plates/${publicId}.svg${search === "" ? "" : `?${search}`}`;
+};

@@ -5,7 +5,7 @@ import { figuresIn, MOST_FIGURES } from "../markdown-article.ts";
 import { NO_LINKS } from "../markdown-links.ts";
 import { loadLinks } from "../note-links.server.ts";
 import { expandWriteUp } from "./drafts.server.ts";
-import { figureDrawer } from "./figure-html.ts";
+import { figureDrawer, PLATE_ADDRESS } from "./figure-html.ts";
 import { loadFigures } from "./figures.server.ts";
 import type { FrozenFigure } from "./frozen.ts";
 import { plateStates } from "./published.server.ts";
@@ -24,7 +24,7 @@ export async function drawDraft(access: ProjectAccess, written: string, outside 
   const draw = figureDrawer({
     figures,
     plates,
-    plateSource: (id, theme) => `/plates/${id}.svg${theme === "dark" ? "?theme=dark" : ""}`,
+    plateSource: PLATE_ADDRESS,
     linkTo: ({ path, subject }) => (outside && !subject.startsWith("plate:") ? null : path),
   });
   return renderArticle(body, { ...NO_LINKS, references: places, filesStay: true }, draw);

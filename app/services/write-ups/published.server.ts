@@ -4,7 +4,7 @@ import * as writeUps from "~/db/write-ups.server";
 import { type Article, plainText, renderArticle } from "../markdown.server.ts";
 import { NO_LINKS, type NoteLinks, subjectsIn } from "../markdown-links.ts";
 import { loadLinks } from "../note-links.server.ts";
-import { type FigurePlace, figureDrawer } from "./figure-html.ts";
+import { type FigurePlace, figureDrawer, PLATE_ADDRESS } from "./figure-html.ts";
 import { type Frozen, type FrozenFigure, type PlateState, parseFrozen, platesOf } from "./frozen.ts";
 
 export interface Publication extends writeUps.FoundVersion {
@@ -50,7 +50,7 @@ export async function drawPage(publication: Publication, reader: Reader): Promis
   const place: FigurePlace = {
     figures: publication.frozen.figures,
     plates,
-    plateSource: (id, theme) => `/plates/${id}.svg${theme === "dark" ? "?theme=dark" : ""}`,
+    plateSource: PLATE_ADDRESS,
     linkTo: (figure) => (reader || isPlate(figure) ? figure.path : null),
   };
   const links = await linksFor(publication, reader);
