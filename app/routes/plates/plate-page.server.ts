@@ -11,6 +11,7 @@ import { copyTexts, sentence } from "~/services/plates/citation";
 import { readForm } from "~/services/plates/forms.server";
 import { type PlateRecord, parseRecord } from "~/services/plates/record";
 import { subjectOf } from "~/services/plates/subject";
+import { shownMentions } from "~/services/webmention/shown.server";
 
 /** The plate at an address, with what this person may do with it; 404 where there is none. */
 export async function findPlate(publicId: string | undefined, person: Person | null) {
@@ -44,12 +45,13 @@ export async function loadTombstone({ plate }: FoundPlate) {
 
 export async function loadPlatePage({ plate, project, role, mayWithdraw }: FoundPlate) {
   const record = parseRecord(plate.record);
-  const [versions, wide, narrow, touchstone, present] = await Promise.all([
+  const [versions, wide, narrow, touchstone, present, mentions] = await Promise.all([
     plates.findVersions(plate),
     readForm(plate.publicId, "svg-light"),
     readForm(plate.publicId, "svg-light-narrow"),
     readForm(plate.publicId, "s1p"),
     project && role ? presentOf(project.id, record) : new Set<string>(),
+    shownMentions({ plateId: plate.id }),
   ]);
   const newest = versions.at(-1);
   const next = versions.find(({ previousId }) => previousId === plate.id);
@@ -75,6 +77,7 @@ export async function loadPlatePage({ plate, project, role, mayWithdraw }: Found
     projectPath: project && role ? `/projects/${project.publicId}` : null,
     subjectPath: project && role ? subjectPath(project.publicId, record, present) : null,
     present: [...present],
+    mentions,
     versions: versions.map(({ publicId, version, createdAt, withdrawnAt }) => ({
       publicId,
       version,

@@ -1,5 +1,6 @@
 import { data } from "react-router";
 import { findPerson } from "~/auth/require.server";
+import { Mentions } from "~/components/mentions/Mentions";
 import { clientAddressContext } from "~/context";
 import { refused } from "~/errors";
 import { redirectWithMessage } from "~/services/flash.server";
@@ -84,6 +85,7 @@ export default function PlatePage({ loaderData, actionData }: Route.ComponentPro
           <Forms plate={plate} />
           <People people={plate.people} />
           <Versions plate={plate} />
+          <Mentions mentions={plate.mentions} />
         </div>
       </div>
     </article>

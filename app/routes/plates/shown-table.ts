@@ -17,9 +17,10 @@ export function shownTable({ title, columns, rows }: PlateTable): ShownTable {
   const byKey = new Map(columns.map((column) => [column.key, column]));
   const folded = (key: string) =>
     SUFFIXES.some((suffix) => key.endsWith(suffix) && byKey.has(key.slice(0, -suffix.length)));
-  const kept = columns.filter(
-    ({ key }) => !folded(key) && rows.some((row) => row[key] !== NOTHING && row[key] !== ""),
-  );
+  // A width that is none everywhere says something; a remark that is none everywhere does not.
+  const silent = (key: string) =>
+    rows.length === 0 || (!byKey.has(`${key}Low`) && rows.every((row) => isNothing(row[key])));
+  const kept = columns.filter(({ key }) => !folded(key) && !silent(key));
   return {
     title,
     columns: kept.map(({ key, label }) => ({
@@ -40,7 +41,7 @@ function cellOf(
 ): string {
   const value = row[key];
   if (value === null || value === undefined) return "unknown";
-  if (typeof value !== "number") return value === "" ? NOTHING : String(value);
+  if (typeof value !== "number") return value === "" ? "-" : String(value);
   const half = byKey.get(`${key}Half`);
   if (half) {
     const by = row[half.key];
@@ -58,6 +59,10 @@ function headOf(label: string, column: Column | undefined, rows: PlateTable["row
   return `${label}, ${column.unit}`;
 }
 
+function isNothing(cell: Cell | undefined): boolean {
+  return typeof cell === "string" && NOTHING.includes(cell);
+}
+
 function end(cell: Cell | undefined): string {
   return typeof cell === "number" ? number(cell) : (cell?.toString() ?? "unknown");
 }
@@ -71,4 +76,4 @@ function number(value: number): string {
 }
 
 const SUFFIXES = ["Half", "Low", "High"];
-const NOTHING = "-";
+const NOTHING = ["", "-", "none"];

@@ -43,6 +43,16 @@ describe("a table as people read it", () => {
     expect(cells({ remark: "at least" }).remark).toBe("at least");
   });
 
+  test("keeps a width that is none, for that is said of the dip", () => {
+    const columns = ["width", "widthLow", "widthHigh", "widthRemark"].map((key) => ({
+      key,
+      label: key,
+      unit: "kHz",
+    }));
+    const none = Object.fromEntries(columns.map(({ key }) => [key, "none"]));
+    expect(shownTable({ title: "Dips", columns, rows: [none] }).rows).toEqual([{ width: "none" }]);
+  });
+
   test("of no rows has no columns to show", () => {
     expect(shownTable({ title: "Dips", columns: COLUMNS, rows: [] })).toEqual({
       title: "Dips",

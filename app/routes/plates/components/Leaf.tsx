@@ -28,7 +28,7 @@ export function Leaf({ plate }: { plate: PlatePageData }) {
       <p className="plate-rule" aria-hidden="true">
         <span />
       </p>
-      <section aria-label="Numbers" className="min-w-0">
+      <section aria-label="Numbers" className="plate-numbers">
         <RecordTables tables={plate.tables} />
       </section>
       <p className="plate-small text-center">
