@@ -191,7 +191,12 @@ with tempfile.TemporaryDirectory() as d:
     n = skrf.Network(p)
 print(json.dumps([list(n.f), list(n.s[:,0,0].real), list(n.s[:,0,0].imag), float(n.z0[0,0].real)]))`;
     const out = execFileSync("/usr/bin/python3", ["-c", program], { input: form.bytes, maxBuffer: 1e8 });
-    const [f, re, im, z0] = JSON.parse(out.toString()) as [number[], number[], number[], number];
+    const [f, re, im, z0] = JSON.parse(out.toString().trim().split("\n").at(-1) ?? "") as [
+      number[],
+      number[],
+      number[],
+      number,
+    ];
     const truth = sweepOf([
       { hz: 7.1e6, ohm: 45, q: 12 },
       { hz: 2.6 * 7.1e6, ohm: 62, q: 20 },
@@ -311,7 +316,7 @@ describe("versions and withdrawal", () => {
   });
 
   it("gives two that are frozen at once numbers of their own, and bears them in its forms", async () => {
-    const [sweep] = await sweeps.findAllByProject(project.id);
+    const [sweep] = (await sweeps.findAllByProject(project.id)).rows;
     const done = await Promise.all([make(`sweep:${sweep.publicId}`), make(`sweep:${sweep.publicId}`)]);
     const rows = await Promise.all(done.map(rowOf));
     expect(rows.map(({ number }) => number).sort()).toEqual([2, 3]);
