@@ -1,4 +1,4 @@
-import { and, eq, getTableColumns, inArray, isNotNull, type SQL, type SQLWrapper } from "drizzle-orm";
+import { and, eq, getTableColumns, inArray, isNull, type SQL, type SQLWrapper } from "drizzle-orm";
 import type { MySqlColumn, MySqlTable } from "drizzle-orm/mysql-core";
 import { db } from "./client.server.ts";
 import * as t from "./schema/index.ts";
@@ -93,6 +93,12 @@ function kind(name: KindName, table: MySqlTable, of: BundleKind["of"], given: Gi
   return { name, table, of, refs: {}, later: [], left: [], ...given };
 }
 
+/** Notes that were not removed: what hangs on others waits only for its end, and nobody reads it. */
+function standingNotes(projectId: number) {
+  const standing = and(eq(t.notes.projectId, projectId), isNull(t.notes.removedAt));
+  return db.select({ id: t.notes.id }).from(t.notes).where(standing);
+}
+
 const BY = { createdBy: "people" } as const;
 const PLACE = { sweepId: "sweeps", dipId: "dips", trailId: "trails", stepId: "steps" } as const;
 
@@ -147,16 +153,16 @@ export const KINDS: readonly BundleKind[] = [
     refs: { ...PLACE, benchId: "benches", parentId: "notes", authorId: "people", removedBy: "people" },
     left: ["clientKey"],
   }),
-  under("note-versions", t.noteVersions, t.noteVersions.noteId, t.notes, {
+  kind("note-versions", t.noteVersions, (id) => inArray(t.noteVersions.noteId, standingNotes(id)), {
     refs: { noteId: "notes", editedBy: "people" },
   }),
-  under("note-references", t.noteReferences, t.noteReferences.noteId, t.notes, { refs: { noteId: "notes" } }),
-  kind(
-    "attachments",
-    t.attachments,
-    (projectId) => and(eq(t.attachments.projectId, projectId), isNotNull(t.attachments.noteId)),
-    { refs: { noteId: "notes", uploadedBy: "people" }, left: ["storageKey", "shownKey", "smallKey"] },
-  ),
+  kind("note-references", t.noteReferences, (id) => inArray(t.noteReferences.noteId, standingNotes(id)), {
+    refs: { noteId: "notes" },
+  }),
+  kind("attachments", t.attachments, (id) => inArray(t.attachments.noteId, standingNotes(id)), {
+    refs: { noteId: "notes", uploadedBy: "people" },
+    left: ["storageKey", "shownKey", "smallKey"],
+  }),
   own("plates", t.plates, { refs: { ...BY, previousId: "plates", withdrawnBy: "people" }, left: ["record"] }),
   under("plate-forms", t.plateForms, t.plateForms.plateId, t.plates, {
     refs: { plateId: "plates" },

@@ -2,10 +2,9 @@ import { type BundleKind, columnsOf, fieldOf, KINDS, type KindName } from "~/db/
 import * as rows from "~/db/bundle-rows.server";
 import type { Queryable } from "~/db/client.server";
 import { env } from "~/env.server";
-import { decodePoints } from "../points.server.ts";
 import { annotationOf } from "./annotations.ts";
 import { contentsOf } from "./contents.ts";
-import { sweepFigure } from "./figure.ts";
+import { planCurves, previewPath } from "./curves.server.ts";
 import { indexPage, type Overview } from "./pages.ts";
 import { nameOfPerson } from "./placeholders.ts";
 import { type PlanLine, textEntry } from "./plan.ts";
@@ -69,7 +68,7 @@ export async function* planProject(projectId: number, at: Date, tx: Queryable): 
   yield* textEntry("data/index.html", indexPage(overview));
 }
 
-interface Context {
+export interface Context {
   projectId: number;
   tx: Queryable;
   ids: Map<KindName, rows.PublicIds>;
@@ -102,6 +101,8 @@ async function* planKind(kind: BundleKind, context: Context): AsyncGenerator<Pla
       Object.assign(record, own.fields);
       if (kind.name === "sweeps")
         record.previewPath = row.analysisId === null ? null : previewPath(record.id);
+      // A removed note keeps its text for as long as that can be undone; nobody reads it.
+      if (kind.name === "notes" && record.removedAt !== null) record.body = "";
       const line = JSON.stringify(record);
       lines.push(line);
       contents.push(...own.lines.filter((one) => isNew(one, context.seen)));
@@ -155,37 +156,6 @@ async function learnPeople(context: Context, kind?: BundleKind, page: rows.Row[]
   }
 }
 
-/** The curves that the dips were found in: as numbers, and drawn. */
-async function* planCurves(context: Context, figures: Set<string>): AsyncGenerator<PlanLine> {
-  const ids = [...(context.ids.get("sweeps") ?? new Map<number, string>())];
-  const dips = context.shown.get("dips") ?? [];
-  const titles = new Map(
-    context.shown.get("sweeps")?.map((sweep) => [String(sweep.id), String(sweep.title)]),
-  );
-  const withPreview = new Set(
-    context.shown.get("sweeps")?.flatMap((sweep) => (sweep.previewPath ? [String(sweep.id)] : [])),
-  );
-  const hzOf = new Map<string, number[]>();
-  for (const dip of dips) {
-    if (dip.present) push(hzOf, String(dip.sweep), Number(dip.frequencyHz));
-  }
-  for (let i = 0; i < ids.length; i += FEW) {
-    const batch = ids.slice(i, i + FEW);
-    const found = await rows.findPreviews(
-      batch.map(([id]) => id),
-      context.tx,
-    );
-    for (const { id, preview } of found) {
-      const sweep = context.ids.get("sweeps")?.get(id) ?? "";
-      if (!preview || !withPreview.has(sweep)) continue;
-      yield { path: previewPath(sweep), from: "preview", preview: preview.toString("base64") };
-      figures.add(sweep);
-      const drawn = sweepFigure(decodePoints([preview]), hzOf.get(sweep) ?? [], titles.get(sweep) ?? "");
-      yield* textEntry(`data/figures/${sweep}.svg`, drawn);
-    }
-  }
-}
-
 async function* planWriteUps(context: Context): AsyncGenerator<PlanLine> {
   const kind = KINDS.find(({ name }) => name === "write-ups") as BundleKind;
   for await (const page of rows.readAll(kind, context.projectId, context.tx)) {
@@ -223,9 +193,4 @@ function headOf(kind: string): string {
   return `{"kind":"${kind}","format":1,"records":[\n`;
 }
 
-function previewPath(sweep: unknown): string {
-  return `data/points/${sweep}-shown.csv`;
-}
-
 const TAIL = "\n]}\n";
-const FEW = 20;

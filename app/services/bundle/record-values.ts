@@ -32,6 +32,12 @@ export const path = z
   .describe("Where the bytes are in this bundle");
 export const count = z.number().int().min(0).max(4_294_967_295);
 
+export const upTo = (most: number) => z.string().max(most);
+export const markdown = z.string().max(400_000).describe("Markdown");
+export const file = { sizeBytes: count, sha256 };
+export const pixels = z.number().int().min(1).max(1_000_000);
+export const made = { createdBy: person, createdAt: time };
+
 export const feedline = z
   .looseObject({ name: text, k1: number, k2: number, lengthM: number, velocityFactor: number })
   .nullable();
