@@ -32,7 +32,7 @@ export interface Answer {
 }
 
 /** `refused`: it must not be asked, ever. `failed`: it did not answer as it should; another time it may. */
-export type Fetched = Answer | { kind: "refused" | "failed"; reason: string };
+export type Fetched = Answer | { kind: "refused"; reason: string } | { kind: "failed"; reason: string };
 
 /** Asks, following at most five redirects, each judged like the first; ten seconds for all of it. */
 export async function safeFetch(address: string, wanted: Wanted = {}): Promise<Fetched> {
