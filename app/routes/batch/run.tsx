@@ -73,8 +73,8 @@ export default function Batch({ loaderData, actionData }: Route.ComponentProps) 
   const busy = BUSY.includes(batch.phase);
   useLook(busy);
   return (
-    <section className="grid gap-6" aria-labelledby="batch">
-      <div className="grid gap-2">
+    <section className="grid grid-cols-1 gap-6" aria-labelledby="batch">
+      <div className="grid grid-cols-1 gap-2">
         <Breadcrumbs
           items={[
             { label: "Sweeps", to: `${base}/sweeps` },

@@ -14,7 +14,7 @@ export function Results({ batch, base }: { batch: ShownBatch; base: string }) {
   const failed = of("failed");
   const left = batch.rows.filter(({ leftOut }) => leftOut).length;
   return (
-    <section aria-labelledby="results" className="grid gap-4">
+    <section aria-labelledby="results" className="grid grid-cols-1 gap-4">
       <h3 id="results">What became of them</h3>
       <p>
         {countOf(of("read", "unread"), "sweep")} taken in

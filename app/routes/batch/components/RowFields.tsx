@@ -14,7 +14,7 @@ export function RowFields({ row, batch, base }: RowFieldsProps) {
   const field = (key: string) => ({ name: `row-${index}-${key}`, id: `row-${index}-${key}` });
   const about = name || "the row without a name";
   return (
-    <fieldset className="panel grid gap-3 min-w-0">
+    <fieldset className="panel grid grid-cols-1 gap-3 min-w-0">
       <legend className="sr-only">{about}</legend>
       <input type="hidden" name={`row-${index}-name`} value={name} />
       <div className="min-w-0">
@@ -30,7 +30,7 @@ export function RowFields({ row, batch, base }: RowFieldsProps) {
           ))}
         </ul>
       </div>
-      <div className="grid grid-cols-[repeat(auto-fill,minmax(13rem,1fr))] gap-3">
+      <div className="grid grid-cols-[repeat(auto-fill,minmax(min(13rem,100%),1fr))] gap-3">
         {row.missing && batch.spare.length > 0 && (
           <SelectField
             label="Its file"

@@ -10,7 +10,7 @@ export function RowsTable({ batch, base }: { batch: ShownBatch; base: string }) 
   if (rows.length === 0) return null;
   const here = `${base}/sweeps/batch/${batch.publicId}`;
   return (
-    <section aria-labelledby="rows" className="grid gap-3">
+    <section aria-labelledby="rows" className="grid grid-cols-1 gap-3">
       <div className="flex flex-wrap items-baseline justify-between gap-3">
         <h3 id="rows">{batch.phase === "checked" ? "Ready" : "What came"}</h3>
         <a href={`${here}/sweeps.csv`} download>

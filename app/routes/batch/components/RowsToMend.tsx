@@ -18,7 +18,7 @@ export function RowsToMend({ batch, edit, base }: RowsToMendProps) {
   const open = batch.rows.filter(({ index, problems }) => problems.length > 0 || index === edit);
   const wanted = batch.rows.filter(({ leftOut, result }) => !leftOut && result === null);
   return (
-    <div className="grid gap-6">
+    <div className="grid grid-cols-1 gap-6">
       <div className="flex flex-wrap items-center gap-3">
         <Form method="post">
           <Button name="intent" value="take" disabled={stuck.length > 0 || wanted.length === 0} busy={busy}>
@@ -35,7 +35,7 @@ export function RowsToMend({ batch, edit, base }: RowsToMendProps) {
         )}
       </div>
       {open.length > 0 && (
-        <section aria-labelledby="to-mend" className="grid gap-4">
+        <section aria-labelledby="to-mend" className="grid grid-cols-1 gap-4">
           <div className="flex flex-wrap items-center justify-between gap-3">
             <h3 id="to-mend">To be mended or left out</h3>
             {stuck.length > 1 && (
@@ -46,7 +46,7 @@ export function RowsToMend({ batch, edit, base }: RowsToMendProps) {
               </Form>
             )}
           </div>
-          <Form method="post" className="grid gap-3" key={open.map(({ index }) => index).join()}>
+          <Form method="post" className="grid grid-cols-1 gap-3" key={open.map(({ index }) => index).join()}>
             {open.map((row) => (
               <RowFields key={row.index} row={row} batch={batch} base={base} />
             ))}
