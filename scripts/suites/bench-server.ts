@@ -5,6 +5,7 @@ import { chromium } from "playwright-core";
 import type { BenchRow } from "../bench.ts";
 import { findProgram, ROOT } from "../install.mjs";
 import { PlainFailure } from "../steps.mjs";
+import { benchPlates } from "./bench-plates.ts";
 import { benchStripMap } from "./bench-strip-map.ts";
 import { startTestStack } from "./test-stack.ts";
 
@@ -30,6 +31,7 @@ export async function benchServer(): Promise<BenchRow[]> {
       },
       { name: "sweep page, Plotly loaded before the first paint", value: bytes, goal: 0, unit: "bytes" },
       ...(await benchStripMap()),
+      ...(await benchPlates(stack.address, stack.settings.environment)),
     ];
   } finally {
     await stack.stop();

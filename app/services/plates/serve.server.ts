@@ -66,7 +66,7 @@ function send(request: Request, response: Response, { bytes, gzipped, mediaType,
 function guard(response: Response, ending: Ending): void {
   const embed = ending === "/embed";
   response.removeHeader("X-Frame-Options");
-  response.set("Content-Security-Policy", embed ? EMBED_POLICY : FORM_POLICY);
+  response.set("Content-Security-Policy", POLICIES[ending] ?? PLAIN_POLICY);
   response.set("Cross-Origin-Resource-Policy", "cross-origin");
   if (!embed) response.set("Access-Control-Allow-Origin", "*");
 }
@@ -106,6 +106,10 @@ const NEGOTIATED = new Map<string, Ending>([
 ]);
 /** The bytes never change, and a plate can be withdrawn: ten minutes is what a reader may be behind. Then a look at the ETag. */
 const CACHED = "public, max-age=600, stale-if-error=86400";
-const FORM_POLICY = "default-src 'none'; style-src 'unsafe-inline'; frame-ancestors *; sandbox";
-/** The address by name too: in a sandboxed frame nothing is "self". */
-const EMBED_POLICY = `default-src 'none'; img-src 'self' ${env.BASE_URL}; style-src 'unsafe-inline'; base-uri 'none'; form-action 'none'; frame-ancestors *`;
+/** Whoever opens one of these alone gets no more than it shows. A PDF takes no more than this: browsers show it by code of theirs. */
+const PLAIN_POLICY = "base-uri 'none'; form-action 'none'; frame-ancestors *";
+const POLICIES: Partial<Record<Ending, string>> = {
+  svg: `default-src 'none'; style-src 'unsafe-inline'; sandbox; ${PLAIN_POLICY}`,
+  // The address by name too: in a sandboxed frame nothing is "self".
+  "/embed": `default-src 'none'; img-src 'self' ${env.BASE_URL}; style-src 'unsafe-inline'; ${PLAIN_POLICY}`,
+};
