@@ -42,7 +42,6 @@ export async function findAllByProject(
     .orderBy(desc(writeUps.updatedAt), desc(writeUps.id))
     .limit(MOST_LISTED);
 }
-export type ListedWriteUp = Awaited<ReturnType<typeof findAllByProject>>[number];
 
 /** A write-up as it is being written, with its project. */
 export async function findByPublicId(publicId: string, tx: Queryable = db) {

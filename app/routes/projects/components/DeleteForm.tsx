@@ -23,7 +23,8 @@ export function DeleteForm({ title, lastResult }: DeleteFormProps) {
     <section className="space-y-3 border-l-3 border-alarm pl-4">
       <h2>Delete the project</h2>
       <p className="max-w-[72ch]">
-        Its sweeps, their original files, dips and notes go for good, for every member. This can't be undone.{" "}
+        Its sweeps, their original files, dips, notes and write-ups go for good, for every member; also the
+        write-ups that are published. Plates stay at their addresses. This can't be undone.{" "}
         <Link to="../bundle" relative="path">
           Make a bundle
         </Link>{" "}
