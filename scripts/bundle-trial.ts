@@ -7,7 +7,7 @@ import { startTestStack } from "./suites/test-stack.ts";
 
 /**
  * A bundle there and back, compared field by field, for the demo and for a project of many sweeps; the making of the second
- * is killed half-way and gone on with. `node scripts/run.mjs bundle-trial.ts [sweeps] [--fields]`
+ * is killed half-way and gone on with. `node scripts/run.mjs bundle-trial.ts [sweeps] [--fields] [--without-demo]`
  */
 const sweepCount = Number(process.argv[2] ?? 500);
 const allFields = process.argv.includes("--fields");
@@ -18,7 +18,7 @@ try {
   const projects = await import("~/db/projects.server");
   const people = await import("~/db/people.server");
   const { pool } = await import("~/db/client.server");
-  await timed("the demo is built", () => buildDemo());
+  if (!process.argv.includes("--without-demo")) await timed("the demo is built", () => buildDemo());
   const demoIds = await projects.findIdsOfDemo();
   const full = await timed(`a project of ${sweepCount} sweeps is built`, () => makeFullProject(sweepCount));
   const keeper = await people.insert({

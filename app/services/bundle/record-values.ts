@@ -32,6 +32,7 @@ export const path = z
   .describe("Where the bytes are in this bundle");
 export const count = z.number().int().min(0).max(4_294_967_295);
 
+export const hz = z.number().describe("Hz");
 export const upTo = (most: number) => z.string().max(most);
 export const markdown = z.string().max(400_000).describe("Markdown");
 export const file = { sizeBytes: count, sha256 };

@@ -9,7 +9,6 @@ import { TOLD } from "./records-told.ts";
  */
 
 const verdict = z.enum(["open", "proposed", "settled"]);
-const hz = z.number().describe("Hz");
 const judged = { verdict, verdictText: v.upTo(300), verdictBy: v.person, verdictAt: v.time.nullable() };
 
 export const PEOPLE = z.strictObject({
@@ -34,7 +33,7 @@ export const RECORDS = {
     createdAt: v.time,
     updatedAt: v.time,
   }),
-  bands: z.strictObject({ id: v.id, name: v.upTo(40), lowHz: hz, highHz: hz, swrLimit: z.number() }),
+  bands: z.strictObject({ id: v.id, name: v.upTo(40), lowHz: v.hz, highHz: v.hz, swrLimit: z.number() }),
   benches: z.strictObject({
     id: v.id,
     owner: v.person.describe("Whose own it is; null where it is the project's"),
@@ -72,8 +71,8 @@ export const RECORDS = {
     analysis: v.ref.describe("The current analysis"),
     problem: v.readProblem,
     pointCount: v.count.nullable(),
-    startHz: hz.nullable(),
-    stopHz: hz.nullable(),
+    startHz: v.hz.nullable(),
+    stopHz: v.hz.nullable(),
     referenceOhm: z.number().nullable(),
     complex: z.boolean().nullable(),
     purpose: z.enum(["antenna", "reference"]),
@@ -111,7 +110,7 @@ export const RECORDS = {
     id: v.id,
     sweep: v.id,
     present: z.boolean().describe("False: the current analysis does not find it any more"),
-    frequencyHz: hz,
+    frequencyHz: v.hz,
     minimumSwr: z.number().nullable(),
     returnLossDb: z.number(),
     prominenceDb: z.number(),
@@ -172,7 +171,7 @@ export const RECORDS = {
     shownPath: v.path,
     smallPath: v.path,
   }),
-  trails: z.strictObject({ id: v.id, name: v.upTo(80), frequencyHz: hz, ...judged, createdAt: v.time }),
+  trails: z.strictObject({ id: v.id, name: v.upTo(80), frequencyHz: v.hz, ...judged, createdAt: v.time }),
   "trail-dips": z.strictObject({ dip: v.id, trail: v.id }),
   "trail-decisions": z.strictObject({
     one: v.id,
