@@ -1,4 +1,4 @@
-import { and, asc, desc, eq, inArray, max, sql } from "drizzle-orm";
+import { and, asc, desc, eq, max, sql } from "drizzle-orm";
 import { db, type Queryable } from "./client.server.ts";
 import { plateForms, plateSources, plates, users } from "./schema/index.ts";
 
@@ -55,7 +55,6 @@ export async function findVersions(plate: Pick<PlateRow, "id" | "previousId">, t
     .limit(MOST_LISTED);
   return rows;
 }
-export type PlateVersion = Awaited<ReturnType<typeof findVersions>>[number];
 
 /** The next free number of a project; under `projects.lock`. */
 export async function nextNumber(projectId: number, tx: Queryable): Promise<number> {
@@ -126,15 +125,6 @@ export async function findSources(plateId: number, tx: Queryable = db): Promise<
     .where(eq(plateSources.plateId, plateId))
     .orderBy(asc(plateSources.id))
     .limit(2000);
-}
-
-export async function findAllByPublicIds(publicIds: readonly string[], tx: Queryable = db) {
-  if (publicIds.length === 0) return [];
-  return tx
-    .select({ ...VERSION, projectId: plates.projectId })
-    .from(plates)
-    .where(inArray(plates.publicId, [...publicIds]))
-    .limit(publicIds.length);
 }
 
 /** By a form; originals are asked for with the files. Keys are `plates/<public id>/…`. */

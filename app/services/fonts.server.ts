@@ -8,7 +8,7 @@ import { decompress } from "woff2-encoder";
  * Fonts for drawings and papers that are made on the server: the ones that pages get, unpacked to TrueType, and behind
  * them one that has Greek, Cyrillic and the signs of mathematics, which ours lack.
  */
-export interface FontFile {
+interface FontFile {
   name: FontName;
   /** As the file calls itself, which is what drawings are matched by. */
   family: string;

@@ -25,7 +25,9 @@ describe("printPdf", () => {
     expect(text.match(/\/Type \/Page\b(?!s)/g)).toHaveLength(1);
     expect(text).toContain("/MediaBox [0 0 595.28 841.89]");
     const fonts = new Set(text.match(/\/FontName \/[A-Z]{6}\+[\w-]+/g)?.map((one) => one.split("+")[1]));
-    expect(fonts).toEqual(new Set(["AtkinsonHyperlegibleNext-Regular", "Roboto-Regular"]));
+    expect(fonts).toEqual(
+      new Set(["AtkinsonHyperlegibleNext-Regular", "Roboto-Regular", "SometypeMono-Regular"]),
+    );
     expect(text.match(/\/FontFile2/g)?.length).toBeGreaterThanOrEqual(2);
     expect(streamsOf(first).some((stream) => stream.includes(" Tf"))).toBe(true);
   });
@@ -44,7 +46,7 @@ describe("what our fonts lack", () => {
     const runs = runsOf(text, covered);
     expect(runs.map((run) => run.text).join("")).toBe(text);
     // What the latin files of these fonts hold, by their publisher's list of ranges.
-    expect(runs.filter(({ rest }) => rest).map((run) => run.text)).toEqual(["Ω", "Γ", "≥", "∞", "ő"]);
+    expect(runs.filter(({ rest }) => rest).map((run) => run.text)).toEqual(["Ω", "Γ", "≥", "∞", "µ", "ő"]);
     const svg = '<text x="1">a Ω &amp; b</text><title>Ω</title>';
     expect(completeSvg(svg, covered)).toBe(
       '<text x="1"><tspan>a </tspan><tspan font-family="Roboto">Ω</tspan><tspan> &amp; b</tspan></text><title>Ω</title>',

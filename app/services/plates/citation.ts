@@ -43,7 +43,7 @@ export function sentence(record: PlateRecord): string {
   return `${madeBy}: “${title}”, ${lowerFirst(plateWords(record))} of “${project.title}”, ${dayOf(record)}, ${address}`;
 }
 
-export interface CopyTexts {
+interface CopyTexts {
   markdown: string;
   html: string;
   latex: string;

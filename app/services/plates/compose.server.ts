@@ -23,7 +23,7 @@ export interface Composed {
   sweeps: ComposedSweep[];
 }
 
-export interface ComposedSweep {
+interface ComposedSweep {
   id: string;
   title: string;
   sweep: Sweep;

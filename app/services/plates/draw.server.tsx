@@ -9,7 +9,7 @@ import { NARROW_PX, plotWidthOf, Sheet } from "./draw/Sheet.tsx";
 import { Strips, stripsHeightPx } from "./draw/Strips.tsx";
 import type { PlateFigure, PlateRecord, UnnumberedRecord } from "./record.ts";
 
-export interface DrawOptions {
+interface DrawOptions {
   theme: "light" | "dark";
   /** px; the drawing is laid out anew for it, never only shrunk. */
   width?: number;

@@ -56,4 +56,4 @@ export function text(plain: string): string {
 }
 
 /** Frames up to here get the figure that is laid out for phones. */
-export const NARROW_PX = 560;
+const NARROW_PX = 560;

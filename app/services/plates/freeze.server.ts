@@ -145,7 +145,7 @@ function numbered(
   };
 }
 
-export function addressOf(publicId: string): string {
+function addressOf(publicId: string): string {
   return `${env.BASE_URL}/plates/${publicId}`;
 }
 

@@ -36,13 +36,17 @@ export async function makeForms(record: PlateRecord, sweeps: Composed["sweeps"])
   const forms = Object.entries(texts).flatMap(([form, text]) =>
     text === undefined ? [] : [made(form as FormName, Buffer.from(text))],
   );
-  for (const theme of ["light", "dark"] as const) {
-    for (const width of PNG_WIDTHS) {
+  const pictures = (["light", "dark"] as const).flatMap((theme) =>
+    PNG_WIDTHS.map((width) => ({ theme, width })),
+  );
+  const rendered = await Promise.all(
+    pictures.map(async ({ theme, width }) => {
       // A small picture is laid out for its size, so that its words can be read.
       const svg = drawFigure(record, { theme, width: Math.min(width, WIDE_PX) });
-      forms.push(made(`png-${width}-${theme}`, await renderPng(svg, width)));
-    }
-  }
+      return made(`png-${width}-${theme}`, await renderPng(svg, width));
+    }),
+  );
+  forms.push(...rendered);
   forms.push(made("pdf", await printPlate(record)));
   return forms;
 }

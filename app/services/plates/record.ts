@@ -11,7 +11,7 @@ import { PLATE_KINDS } from "./subject.ts";
 const known = z.number().nullable();
 
 /** A dip with its numbers, as the analysis named with its sweep found it. */
-export const plateDip = z.object({
+const plateDip = z.object({
   id: z.string(),
   /** Id of the trace that it is a dip of. */
   trace: z.string(),
@@ -58,7 +58,7 @@ export const plateDip = z.object({
 export type PlateDip = z.infer<typeof plateDip>;
 
 /** A line as it is drawn: only the points that a line of that width can show, lowest and highest kept. */
-export const plateTrace = z.object({
+const plateTrace = z.object({
   /** Public id of its sweep; for a bench the name of the measure. */
   id: z.string(),
   label: z.string(),
@@ -107,7 +107,7 @@ export type PlateFigure = z.infer<typeof plateFigure>;
 
 const cell = z.union([z.number(), z.string(), z.boolean(), z.null()]);
 
-export const plateTable = z.object({
+const plateTable = z.object({
   title: z.string(),
   columns: z.array(z.object({ key: z.string(), label: z.string(), unit: z.string() })),
   /** By the keys of the columns. */
@@ -159,7 +159,7 @@ export const plateSource = z.object({
 export type PlateSource = z.infer<typeof plateSource>;
 
 /** Everything but what is only known once it is numbered. */
-export const unnumberedRecord = z.object({
+const unnumberedRecord = z.object({
   kind: z.enum(PLATE_KINDS),
   /** What it is of: `subjectText`. */
   subject: z.string(),

@@ -5,7 +5,7 @@ import type { KeyLine } from "./key.ts";
 import { linesOf } from "./lettering.ts";
 import { n } from "./marks.tsx";
 
-export interface SheetProps {
+interface SheetProps {
   widthPx: number;
   palette: Palette;
   /** "Plate 3"; empty where it has no number yet. */

@@ -14,7 +14,7 @@ export interface Plot {
 export const n = (value: number) => Math.round(value * 100) / 100;
 /** From the plot's foot to the end of its axis and ribbon. */
 export const FOOT_PX = 50;
-export const FONT_PX = 12;
+const FONT_PX = 12;
 
 /** The design bands behind a plot. */
 export function Washes({ bands, plot }: { bands: readonly RibbonBand[]; plot: Plot }) {
