@@ -7,7 +7,9 @@ import { db } from "~/db/client.server";
 import * as dips from "~/db/dips.server";
 import { newPublicId } from "~/db/ids.server";
 import * as people from "~/db/people.server";
+import * as projects from "~/db/projects.server";
 import * as sweeps from "~/db/sweeps.server";
+import { env } from "~/env.server";
 import { IDEAL_STANDARDS, NOTHING_GIVEN } from "~/measurement/bench";
 import { addAttachment } from "~/services/attachments.server";
 import { takeReferences } from "~/services/bench-references.server";
@@ -16,6 +18,7 @@ import { takeIn } from "~/services/intake.server";
 import { editNote } from "~/services/note-changes.server";
 import { writeNote } from "~/services/notes.server";
 import { addPhotograph } from "~/services/photographs.server";
+import { compose, propose } from "~/services/plates/compose.server";
 import { addMember, changeBands, createProject } from "~/services/projects.server";
 import { makeStep } from "~/services/steps.server";
 import { putObject, sha256Of } from "~/services/storage.server";
@@ -142,19 +145,32 @@ async function speak(
   );
 }
 
-/** Written as it will stand in the tables; what is in it does not matter here. */
+/** A plate with one form: all of them would take seconds, and their bytes are those of a file like any other. */
 async function plateOf(
   project: { id: number; publicId: string },
   by: people.User,
   sweep: string,
   file: { name: string; sha256: string; sizeBytes: number; storageKey: string },
 ): Promise<void> {
+  const subject = { kind: "sweep" as const, ids: [sweep] };
+  const whole = (await projects.findWithRoleById(project.id, null))?.project;
+  if (!whole) throw new Error("The project is not there.");
+  const choices = await propose(whole, subject);
+  const composed = "problem" in choices ? choices : await compose(whole, subject, choices);
+  if ("problem" in composed) throw new Error(String(composed.problem));
+  const publicId = newPublicId();
+  const at = new Date();
   const record = JSON.stringify({
     format: "swale-plate/1",
-    address: "https://swale.example/plates/x",
-    sweep,
+    id: publicId,
+    number: 1,
+    version: 1,
+    address: `${env.BASE_URL}/plates/${publicId}`,
+    previous: null,
+    madeAt: at.toISOString(),
+    madeBy: by.name,
+    ...composed.record,
   });
-  const publicId = newPublicId();
   const common = {
     projectId: project.id,
     number: 1,
@@ -170,13 +186,13 @@ async function plateOf(
     licence: "CC-BY-4.0",
     record,
     recordSha256: sha256Of(bytesOf(record)),
-    createdAt: new Date(),
+    createdAt: at,
   };
   const id = (await bundleRows.insertRows(kindNamed("plates"), [plate], db)).get(publicId);
   const svg = bytesOf(
     '<svg xmlns="http://www.w3.org/2000/svg" viewBox="0 0 1 1"><title>Figure</title></svg>',
   );
-  const storageKey = `plates/${project.publicId}/${newPublicId()}`;
+  const storageKey = `plates/${publicId}/svg-light-${newPublicId()}`;
   await putObject(storageKey, svg, "image/svg+xml");
   const form = { plateId: id, form: "svg-light", mediaType: "image/svg+xml", sha256: sha256Of(svg) };
   const kept = { ...form, sizeBytes: svg.length, storageKey, createdAt: new Date() };

@@ -1,4 +1,5 @@
 import { z } from "zod";
+import { EVENT_KINDS } from "../event-kinds.ts";
 import * as v from "./record-values.ts";
 
 /** The shapes of what people said and published: notes, plates, write-ups, and what happened. */
@@ -101,5 +102,5 @@ export const TOLD = {
     publishedBy: v.person,
     publishedAt: v.time,
   }),
-  activity: z.strictObject({ kind: v.upTo(30), actor: v.person, about: v.about, at: v.time }),
+  activity: z.strictObject({ kind: z.enum(EVENT_KINDS), actor: v.person, about: v.about, at: v.time }),
 };

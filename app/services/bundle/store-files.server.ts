@@ -2,6 +2,7 @@ import type { KindName } from "~/db/bundle-kinds.server";
 import type { Row } from "~/db/bundle-rows.server";
 import { newPublicId } from "~/db/ids.server";
 import { MEDIA_TYPES } from "../plates/form-names.ts";
+import { plateRecord } from "../plates/record.ts";
 import { putObject } from "../storage.server.ts";
 import type { NewIds } from "./new-ids.server.ts";
 import type { OpenBag } from "./open-zip.server.ts";
@@ -86,7 +87,11 @@ export async function textIn(bag: OpenBag, path: string): Promise<string> {
   if (bytes.length > MOST_RECORD) throw new Refused(`“${path}” is longer than a plate's record can be.`);
   const text = bytes.toString("utf8");
   try {
-    checkAddresses(path, JSON.parse(text));
+    const record = JSON.parse(text);
+    const fault = plateRecord.safeParse(record).error?.issues[0];
+    if (fault)
+      throw new Refused(`“${path}” is no record of a plate: ${fault.path.join(".")}: ${fault.message}.`);
+    checkAddresses(path, record);
   } catch (error) {
     if (error instanceof SyntaxError) throw new Refused(`“${path}” is not JSON.`);
     throw error;
