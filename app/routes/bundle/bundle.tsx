@@ -86,8 +86,8 @@ export default function Bundle({ loaderData }: Route.ComponentProps) {
         <p className="soft max-w-[72ch]">
           People are in it by the names that this project shows: no e-mail addresses, no ways to sign in.
           Originals of pictures are in it as they were given and may say where they were taken. Whoever you
-          hand it to has all of that. A bundle is kept for 7 days and then removed; owners and experimenters
-          may make and download one.
+          hand it to has all of that. A bench that was lent from another project stays there. A bundle is kept
+          for 7 days and then removed; owners and experimenters may make and download one.
         </p>
       </section>
     </div>

@@ -14,7 +14,7 @@ export function sweepFigure(sweep: Sweep, dipsHz: readonly number[], title: stri
   );
   const deepest = Math.ceil(Math.max(10, ...lossDb.filter((db) => !Number.isNaN(db))) / 10) * 10;
   const x = (hz: number) => (LEFT + ((hz - first) / span) * (WIDTH - LEFT - 8)).toFixed(1);
-  const y = (db: number) => (10 + (db / deepest) * (HEIGHT - 40)).toFixed(1);
+  const y = (db: number) => (10 + (db / deepest) * (HEIGHT - 56)).toFixed(1);
   const step = Math.max(1, Math.floor(n / MOST_POINTS));
   let path = "";
   let open = false;
@@ -35,23 +35,23 @@ export function sweepFigure(sweep: Sweep, dipsHz: readonly number[], title: stri
   const columns = [0, 0.25, 0.5, 0.75, 1].map((share) => {
     const hz = first + share * span;
     const anchor = share === 1 ? "end" : share === 0 ? "start" : "middle";
-    return `<text x="${x(hz)}" y="${HEIGHT - 12}" text-anchor="${anchor}">${Number((hz / 1e6).toPrecision(5))}</text>`;
+    return `<text x="${x(hz)}" y="${HEIGHT - 28}" text-anchor="${anchor}">${Number((hz / 1e6).toPrecision(5))}</text>`;
   });
   const marks = dipsHz.map(
-    (hz) => `<path d="M${x(hz)} 10V${HEIGHT - 30}" stroke="#7b4b86" stroke-dasharray="3 3"/>`,
+    (hz) => `<path d="M${x(hz)} 10V${HEIGHT - 46}" stroke="#7b4b86" stroke-dasharray="3 3"/>`,
   );
   return `<svg xmlns="http://www.w3.org/2000/svg" viewBox="0 0 ${WIDTH} ${HEIGHT}" role="img" font-family="sans-serif" font-size="11" fill="#3c4647">
 <title>${escapeHtml(title)}</title>
 <rect width="${WIDTH}" height="${HEIGHT}" fill="#fffdf7"/>
 ${rows.join("")}${columns.join("")}${marks.join("")}
 <path d="${path}" fill="none" stroke="#1e2a2b" stroke-width="1.5" stroke-linejoin="round"/>
-<text x="${LEFT}" y="${HEIGHT - 1}">MHz; return loss in dB, downwards</text>
+<text x="${LEFT}" y="${HEIGHT - 8}">MHz; return loss in dB, downwards</text>
 </svg>
 `;
 }
 
 const WIDTH = 640;
-const HEIGHT = 240;
+const HEIGHT = 256;
 const LEFT = 32;
 const MOST_POINTS = 500;
 /** Deeper than any bridge tells. */

@@ -3,6 +3,7 @@ import { Readable } from "node:stream";
 import { beforeAll, describe, expect, it, vi } from "vitest";
 import * as runs from "~/db/bundle-runs.server";
 import { db } from "~/db/client.server";
+import * as files from "~/db/files.server";
 import * as people from "~/db/people.server";
 import * as schema from "~/db/schema/index";
 import { askForBundle, askForMine, giveBundle, offered } from "~/services/bundle/runs.server";
@@ -12,7 +13,7 @@ import { closeAccount } from "~/services/closing.server";
 import { takeIn } from "~/services/intake.server";
 import { runDueJobs } from "~/services/jobs.server";
 import { createProject, deleteProject } from "~/services/projects.server";
-import { getObject } from "~/services/storage.server";
+import { getObject, putObject, sha256Of } from "~/services/storage.server";
 import { keysOf } from "../../../scripts/admin/objects.ts";
 import { storageClient } from "../../../scripts/stack/storage.ts";
 import { bagOf, payload, zipOf } from "./bags.ts";
@@ -35,8 +36,14 @@ async function largeProject() {
     ada.id,
   );
   for (let i = 0; i < 3; i++) {
-    const bytes = new Uint8Array(Buffer.from(`no numbers ${randomBytes(3_000_000).toString("hex")}`));
-    await takeIn({ project, by: ada, file: { name: `${i}.txt`, bytes }, keepUnread: true });
+    const bytes = randomBytes(6_000_000);
+    const storageKey = `originals/${project.publicId}/${i}`;
+    await putObject(storageKey, bytes);
+    const [sizeBytes, sha256] = [bytes.length, sha256Of(bytes)];
+    await files.insert(
+      { projectId: project.id, name: `${i}.bin`, sizeBytes, sha256, storageKey, uploadedBy: ada.id },
+      db,
+    );
   }
   return project;
 }

@@ -23,7 +23,7 @@ beforeAll(async () => {
   const offer = run && offered(run);
   if (!offer) throw new Error(`No bundle was made: ${JSON.stringify(run)}`);
   zip = Buffer.from(await getObject(offer.storageKey));
-}, 60_000);
+}, 180_000);
 
 function unpacked<T>(work: (folder: string) => T): T {
   const folder = mkdtempSync(path.join(tmpdir(), "bundle-test-"));
