@@ -10,13 +10,15 @@ export function Leaf({ plate }: { plate: PlatePageData }) {
   return (
     <div className="plate-sheet">
       <header className="plate-head">
-        <p className="plate-number">
-          Plate {number}
-          {version > 1 && `, version ${version}`}
-        </p>
+        {!plate.titled && (
+          <p className="plate-number">
+            Plate {number}
+            {version > 1 && `, version ${version}`}
+          </p>
+        )}
         <h1 className={plate.titled ? "sr-only" : undefined}>{title}</h1>
         <p className="plate-small">
-          {projectPath ? <Link to={projectPath}>{project.title}</Link> : project.title}
+          From {projectPath ? <Link to={projectPath}>{project.title}</Link> : project.title}
         </p>
       </header>
       <Figures wide={plate.wide} narrow={plate.narrow} />
