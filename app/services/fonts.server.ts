@@ -1,3 +1,4 @@
+import { rmSync } from "node:fs";
 import { mkdtemp, readFile, writeFile } from "node:fs/promises";
 import { createRequire } from "node:module";
 import { tmpdir } from "node:os";
@@ -31,6 +32,7 @@ const require = createRequire(import.meta.url);
 
 async function unpackAll(): Promise<readonly FontFile[]> {
   const folder = await mkdtemp(path.join(tmpdir(), "swale-fonts-"));
+  process.once("exit", () => rmSync(folder, { recursive: true, force: true }));
   return Promise.all(
     FILES.map(async ({ name, family, file }) => {
       const stored = await readFile(require.resolve(file));
