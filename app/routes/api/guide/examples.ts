@@ -45,7 +45,7 @@ export const EXAMPLE_GROUPS: ExampleGroup[] = [
     examples: [
       {
         operation: "takeSweepIn",
-        says: "Take a file in. It is read and analysed at once, and the answer has its dips.",
+        says: "Its dips, with their limits as far as they are known, are in the answer.",
         path: "/projects/{project}/sweeps",
         file: {
           name: "reeds.s1p",
@@ -67,12 +67,12 @@ export const EXAMPLE_GROUPS: ExampleGroup[] = [
       },
       {
         operation: "listSweeps",
-        says: "Every sweep, newest first; `cursor` leads to the next page.",
+        says: "What is there already?",
         path: "/projects/{project}/sweeps",
       },
       {
         operation: "getSweep",
-        says: "One sweep with how it was read and its current analysis.",
+        says: "What was found in this one?",
         path: "/sweeps/{sweep}",
       },
       {

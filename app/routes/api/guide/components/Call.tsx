@@ -1,5 +1,6 @@
 import type { GuideCall } from "../guide-groups.ts";
 import { Code } from "./Code.tsx";
+import { Words } from "./Words.tsx";
 
 /** One call: what it is for, what may be asked, and its examples. */
 export function Call({ call }: { call: GuideCall }) {
@@ -13,7 +14,9 @@ export function Call({ call }: { call: GuideCall }) {
           </code>
         </a>
       </h3>
-      <p className="max-w-[72ch]">{summary}.</p>
+      <p className="max-w-[72ch]">
+        <Words text={`${summary}.`} />
+      </p>
       {query.length > 0 && (
         <dl className="definition-facts">
           {query.map(({ name, says }) => (
@@ -21,14 +24,18 @@ export function Call({ call }: { call: GuideCall }) {
               <dt>
                 <code>{name}</code>
               </dt>
-              <dd>{says}</dd>
+              <dd>
+                <Words text={says} />
+              </dd>
             </div>
           ))}
         </dl>
       )}
       {examples.map(({ key, says, command, status, answer }) => (
         <div key={key} className="grid gap-2 min-w-0">
-          <p className="max-w-[72ch]">{says}</p>
+          <p className="max-w-[72ch]">
+            <Words text={says} />
+          </p>
           <Code label={`Command: ${says}`} text={command} />
           <details className="min-w-0">
             <summary>

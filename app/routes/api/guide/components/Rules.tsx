@@ -11,8 +11,8 @@ export function Rules({ base }: { base: string }) {
         <p>
           Everything below is under <code className="break-all">{base}</code>. The whole of it is described
           for programs in the <a href={`${base}/openapi.json`}>OpenAPI document</a>. Every example is run
-          against the server whenever it is built; people, places and numbers in them are invented, long lists
-          are cut and numbers rounded to eight digits.
+          against the server whenever Swale is built; people, places and numbers in them are invented, long
+          lists are cut and numbers rounded to eight digits.
         </p>
         <p>
           <strong>A token</strong> stands for you: make one under{" "}
@@ -37,7 +37,8 @@ export function Rules({ base }: { base: string }) {
         </li>
         <li>A file has at most 64 MB and 1,000,000 points, a picture 40 megapixels.</li>
         <li>
-          With a <code>clientKey</code>, a call that is sent again after a lost answer does its work once.
+          Where a call takes a <code>clientKey</code>, one that is sent again after a lost answer does its
+          work once.
         </li>
       </ul>
       <p className="max-w-[72ch]">
