@@ -31,6 +31,8 @@ import { securityHeaders } from "~/services/security-headers.server";
 import { onShutdown, runShutdown } from "~/services/shutdown.server";
 
 const PATIENCE_MS = 10_000;
+/** A bundle of 2 GB comes in over a line of 2 Mbit/s; heads of requests still have their minute. */
+const LONGEST_REQUEST_MS = 3 * 60 * 60 * 1000;
 const YEAR = "365d";
 /** Pages are drawn anew each time: half the time of the default level for a few per cent more bytes. */
 const COMPRESSION_LEVEL = 4;
@@ -143,6 +145,7 @@ function listen(): void {
     log.info({ host: env.HOST, port: env.PORT }, "listening");
   });
   server.keepAliveTimeout = 65_000;
+  server.requestTimeout = LONGEST_REQUEST_MS;
   onShutdown(() => closeServer(server, streams));
   const stop = () => {
     const hardStop = setTimeout(() => process.exit(1), PATIENCE_MS + 3_000);
