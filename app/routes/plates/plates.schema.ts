@@ -79,7 +79,7 @@ export const plateSchema = z
     showTitle: z.boolean(),
     labels: z.record(z.string(), z.string().trim().max(80, "A label has at most 80 characters.")),
   })
-  .refine(({ low, high }) => low === null || high === null || low < high, {
+  .refine(({ low, high }) => high === null || high > (low ?? 0), {
     path: ["high"],
     error: "The upper end lies below the lower one.",
   })
