@@ -144,6 +144,8 @@ async function watch(cookie?: string) {
     ran.push(route.request().url());
     return route.abort();
   });
+  // The pictures themselves are nobody's text, and there are hundreds.
+  await context.route(/\/(photographs|attachments)\/\w+\/(small|shown)/, (route) => route.abort());
   if (cookie) {
     const [, name, value] = /^([^=]+)=([^;]*)/.exec(cookie) ?? [];
     await context.addCookies([{ name, value, url: SERVER }]);
