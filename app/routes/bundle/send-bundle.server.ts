@@ -2,7 +2,7 @@ import { Readable } from "node:stream";
 import type { ShownRun } from "~/db/bundle-runs.server";
 import { unavailable } from "~/errors";
 import { offered } from "~/services/bundle/runs.server";
-import { readRange } from "~/services/bundle/store.server";
+import { readPieces } from "~/services/bundle/store.server";
 import { attachment } from "~/services/file-names";
 import { redirectWithMessage } from "~/services/flash.server";
 import { log } from "~/services/log.server";
@@ -34,14 +34,14 @@ export async function sendBundle(
     });
   }
   const [from, to] = range ?? [0, sizeBytes - 1];
-  const body = await readRange(storageKey, from, to).catch((error) => {
+  const body = await begun(readPieces(storageKey, from, to)).catch((error) => {
     log.error({ err: error }, "a bundle could not be fetched from the store");
     throw unavailable(
       "The bundle can't be fetched just now",
       "The store does not answer. The bundle is safe there. Try again in a minute.",
     );
   });
-  return new Response(Readable.toWeb(body) as ReadableStream, {
+  return new Response(Readable.toWeb(Readable.from(body)) as ReadableStream, {
     status: range ? 206 : 200,
     headers: {
       ...headers,
@@ -49,6 +49,15 @@ export async function sendBundle(
       ...(range && { "Content-Range": `bytes ${from}-${to}/${sizeBytes}` }),
     },
   });
+}
+
+/** The same pieces, once the first is there: whether the store answers is known before the head of the answer is sent. */
+async function begun(pieces: AsyncGenerator<Uint8Array>): Promise<AsyncGenerator<Uint8Array>> {
+  const first = await pieces.next();
+  return (async function* () {
+    if (!first.done) yield first.value;
+    yield* pieces;
+  })();
 }
 
 /** The one stretch that is asked for; null for all of it, "none" for one that is not there. */

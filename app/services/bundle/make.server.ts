@@ -5,13 +5,13 @@ import * as jobs from "~/db/jobs.server";
 import { findPoints } from "~/db/sweeps.server";
 import { toTouchstone } from "../exports.server.ts";
 import { decodePoints } from "../points.server.ts";
-import { deleteObject, getObjectStream } from "../storage.server.ts";
+import { deleteObject } from "../storage.server.ts";
 import { bagDeclaration, bagInfo, manifestOf, type Sums } from "./bag.ts";
 import type { Lease } from "./lease.server.ts";
 import { PlanReader } from "./lines.ts";
 import { isEntry, type PlanEntry, type PlanLine } from "./plan.ts";
 import { pointsToCsv } from "./points-csv.ts";
-import { abortUpload, PartUpload, putStream, type UploadState } from "./store.server.ts";
+import { abortUpload, PartUpload, putStream, readPieces, type UploadState } from "./store.server.ts";
 import { type Chunks, writeDirectory, writeEntry, type ZipState } from "./zip-writer.ts";
 
 export interface Making {
@@ -59,7 +59,7 @@ export async function makeBundle(lease: Lease, making: Making): Promise<void> {
     );
     return sum.done();
   };
-  const reader = new PlanReader(await getObjectStream(keys.plan));
+  const reader = new PlanReader(readPieces(keys.plan));
   for (let i = 0; i < state.done; i++) await reader.next();
   for (let entry = await reader.next(); entry; entry = await reader.next()) {
     const sum = await put(entry.path, await chunksOf(entry, reader), entry.from !== "object");
@@ -136,7 +136,7 @@ async function chunksOf(entry: PlanEntry, reader: PlanReader): Promise<Chunks> {
     case "text":
       return reader.texts();
     case "object":
-      return getObjectStream(entry.key);
+      return readPieces(entry.key);
     case "points": {
       const sweep = decodePoints(await findPoints(entry.reading));
       return entry.as === "csv"

@@ -104,16 +104,23 @@ export async function putStream(key: string, body: Readable, contentType: string
   await new Upload({ client, params, queueSize: 1, partSize: PART_BYTES }).done();
 }
 
-export async function sizeOf(key: string): Promise<number> {
+async function sizeOf(key: string): Promise<number> {
   const head = await client.send(new HeadObjectCommand({ Bucket: env.S3_BUCKET, Key: key }));
   return head.ContentLength ?? 0;
 }
 
-/** Bytes `from` to `to`, both included; to the end without `to`. */
-export async function readRange(key: string, from: number, to?: number): Promise<Readable> {
-  const range = `bytes=${from}-${to ?? ""}`;
-  const answer = await client.send(new GetObjectCommand({ Bucket: env.S3_BUCKET, Key: key, Range: range }));
-  return answer.Body as Readable;
+/**
+ * Bytes `from` to `to`, both included, to the end without `to`: fetched piece by piece, so that whoever takes them slowly
+ * holds no connection to the store, which would be cut for doing nothing.
+ */
+export async function* readPieces(key: string, from = 0, to?: number): AsyncGenerator<Uint8Array> {
+  const last = to ?? (await sizeOf(key)) - 1;
+  for (let at = from; at <= last; at += PIECE_BYTES) {
+    const range = `bytes=${at}-${Math.min(last, at + PIECE_BYTES - 1)}`;
+    const answer = await client.send(new GetObjectCommand({ Bucket: env.S3_BUCKET, Key: key, Range: range }));
+    if (!answer.Body) throw new Error(`The store has no body for ${key}.`);
+    yield await answer.Body.transformToByteArray();
+  }
 }
 
 const MEGABYTE = 1024 * 1024;
@@ -121,3 +128,4 @@ const MEGABYTE = 1024 * 1024;
 const LEAST_PART_BYTES = 5 * MEGABYTE;
 /** With 10,000 parts, the most of an upload, that is 80 GB. */
 const PART_BYTES = 8 * MEGABYTE;
+const PIECE_BYTES = 4 * MEGABYTE;

@@ -176,7 +176,7 @@ function dayOf(at: Date): string {
   return at.toISOString().slice(0, 10);
 }
 
-const GONE = new Set(["NoSuchKey", "NoSuchUpload"]);
+const GONE = new Set(["NoSuchKey", "NotFound", "NoSuchUpload"]);
 const AHEAD = 64;
 const MOST_ATTEMPTS = 5;
 const PATIENCE_MS = 5_000;
