@@ -1,30 +1,34 @@
+import { z } from "zod";
+
 /** What a published version of a write-up keeps of what it shows, so that it says the same for ever. Pure. */
 
-export interface FrozenFigure {
+const figureShape = z.object({
   /** "dip:57b…", "sweep:…", "plate:…". */
-  subject: string;
+  subject: z.string(),
   /** "Plate 3, version 2"; null for what is numbered in the text. */
-  label: string | null;
+  label: z.string().nullable(),
   /** What it shows, in a line. */
-  title: string;
+  title: z.string(),
   /**
    * The drawing for wide and for narrow pages: SVG whose colours are `var(--color-…)` and whose ids begin with
    * `FIGURE_ID`. Null for a plate, which is at its own address, and for what can't be drawn.
    */
-  wide: string | null;
-  narrow: string | null;
-  numbers: { columns: string[]; rows: string[][] } | null;
+  wide: z.string().nullable(),
+  narrow: z.string().nullable(),
+  numbers: z.object({ columns: z.array(z.string()), rows: z.array(z.array(z.string())) }).nullable(),
   /** The page of it, on this server: a plate's for everybody, another's for whoever may read the project. */
-  path: string;
+  path: z.string().regex(/^\/(?!\/)/),
   /** ISO, UTC: when the numbers were these. Null for a plate, whose numbers never change. */
-  asOf: string | null;
-}
+  asOf: z.string().nullable(),
+});
+export type FrozenFigure = z.infer<typeof figureShape>;
 
-export interface Frozen {
-  figures: FrozenFigure[];
+const frozenShape = z.object({
+  figures: z.array(figureShape),
   /** SPDX name of the licence of the project at that time. */
-  licence: string;
-}
+  licence: z.string(),
+});
+export type Frozen = z.infer<typeof frozenShape>;
 
 /** What a plate is now. */
 export interface PlateState {
@@ -38,8 +42,7 @@ export const FIGURE_ID = "figure-id";
 /** As it was stored; an unknown shape shows no figures rather than no page. */
 export function parseFrozen(text: string): Frozen {
   try {
-    const { figures, licence } = JSON.parse(text) as Partial<Frozen>;
-    return { figures: Array.isArray(figures) ? figures : [], licence: licence ?? "" };
+    return frozenShape.parse(JSON.parse(text));
   } catch {
     return { figures: [], licence: "" };
   }

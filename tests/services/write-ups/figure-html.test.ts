@@ -81,6 +81,14 @@ it("draws nothing for what was not frozen, and says so for a curve that was not 
   expect(draw("dip:abc", { figures: [unread] })?.drawing).toContain("The curve can't be drawn");
 });
 
-it.each(["", "{", "null", "[]", '{"figures":{}}'])("what was stored as %j shows no figures", (text) => {
-  expect(parseFrozen(text).figures).toEqual([]);
+it.each(["", "{", "null", "[]", '{"figures":{}}', '{"figures":[{"numbers":"x"}],"licence":""}'])(
+  "what was stored as %j shows no figures",
+  (text) => {
+    expect(parseFrozen(text).figures).toEqual([]);
+  },
+);
+
+it("what was frozen is read as it was", () => {
+  const frozen = { figures: [dip, plate], licence: "CC-BY-4.0" };
+  expect(parseFrozen(JSON.stringify(frozen))).toEqual(frozen);
 });
