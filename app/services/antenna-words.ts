@@ -32,7 +32,7 @@ export function entryText(path: string, value: string | number | null, unit: Len
   return String(Number(value.toPrecision(6)));
 }
 
-export function changeText(change: ChangedEntry, unit: LengthUnit, ...antennas: Antenna[]): string {
+function changeText(change: ChangedEntry, unit: LengthUnit, ...antennas: Antenna[]): string {
   const { path, was, now } = change;
   const label = entryLabel(path, ...antennas);
   if (isProse(path)) return now === null ? `${label} removed` : `${label} written`;
