@@ -55,7 +55,7 @@ export default function Plates({ loaderData }: Route.ComponentProps) {
               </span>
               <Link to={`/plates/${plate.publicId}`} className="plate-thumb-link" tabIndex={-1} aria-hidden>
                 {plate.withdrawnAt ? (
-                  <span className="plate-thumb" />
+                  <span className="plate-thumb plate-thumb-gone" />
                 ) : (
                   <PlateThumb publicId={plate.publicId} title={plate.title} />
                 )}
