@@ -1,6 +1,7 @@
 import { Parser } from "htmlparser2";
 import { describe, expect, it } from "vitest";
 import { letterOf, linesOf } from "~/services/plates/draw/lettering";
+import { placeNames } from "~/services/plates/draw/trail-names";
 import { drawFigure } from "~/services/plates/draw.server";
 import type { PlateRecord } from "~/services/plates/record";
 import { IDEAL_STANDARDS, NOTHING_GIVEN } from "../../../app/measurement/bench.ts";
@@ -101,6 +102,26 @@ describe("lettering", () => {
 
   it("counts on after z", () => {
     expect([0, 25, 26, 27, 52].map(letterOf)).toEqual(["a", "z", "aa", "ab", "ba"]);
+  });
+});
+
+describe("placeNames", () => {
+  it("puts no name on another, nor outside", () => {
+    const trails = [100, 120, 140, 590].map((x) => ({
+      id: `${x}`,
+      name: "Long element",
+      stops: [{ x, y: 30 }],
+    }));
+    const boxes = [...placeNames(trails, 600).values()].map(({ x, y, anchor }) => ({
+      left: anchor === "start" ? x : x - 84,
+      y,
+    }));
+    for (const [i, a] of boxes.entries()) {
+      expect(a.left).toBeGreaterThanOrEqual(0);
+      expect(a.left + 84).toBeLessThanOrEqual(600);
+      for (const b of boxes.slice(i + 1))
+        expect(Math.abs(a.left - b.left) >= 84 || Math.abs(a.y - b.y) >= 13).toBe(true);
+    }
   });
 });
 

@@ -5,6 +5,7 @@ import { profilePaths } from "../../../charts/paths.ts";
 import { ribbonBands } from "../../../charts/ribbon.ts";
 import type { PlateFigure } from "../record.ts";
 import { DipMark, Foot, n, type Plot, Washes } from "./marks.tsx";
+import { type PlacedName, placeNames } from "./trail-names.ts";
 import { bandsOf, drawnDips, pointsOf } from "./values.ts";
 
 /** Sweeps as strips of the same country, newest on top, with the trails across them and the steps between. */
@@ -23,6 +24,13 @@ export function Strips({ figure, plot }: { figure: PlateFigure; plot: Omit<Plot,
     }),
   );
   const whole = { ...plot, heightPx };
+  const trails = figure.trails.map(({ id, label, tone, stops }) => ({
+    id,
+    tone,
+    name: shortened(label, MOST_NAME),
+    stops: stops.flatMap(({ dip }) => place.get(dip) ?? []).sort((a, b) => a.y - b.y),
+  }));
+  const names = placeNames(trails, widthPx);
   const onTrails = new Set(figure.trails.flatMap(({ stops }) => stops.map(({ dip }) => dip)));
   return (
     <g>
@@ -75,13 +83,8 @@ export function Strips({ figure, plot }: { figure: PlateFigure; plot: Omit<Plot,
           .filter(([id]) => !onTrails.has(id))
           .map(([id, { x, y }]) => <circle key={id} cx={n(x)} cy={n(y)} r="2" fill={palette.soft} />)}
       {figure.show.dips &&
-        figure.trails.map((trail) => (
-          <Trail
-            key={trail.id}
-            trail={trail}
-            stops={trail.stops.flatMap(({ dip }) => place.get(dip) ?? []).sort((a, b) => a.y - b.y)}
-            plot={whole}
-          />
+        trails.map(({ id, name, tone, stops }) => (
+          <Trail key={id} name={name} at={names.get(id)} colour={palette[tone]} stops={stops} plot={whole} />
         ))}
       <Foot frequency={frequencyAxis(scale, [widthPx])} ribbon={ribbon} plot={whole} />
     </g>
@@ -107,18 +110,16 @@ function stripRows({ traces, steps }: PlateFigure) {
 }
 
 interface TrailProps {
-  trail: PlateFigure["trails"][number];
+  name: string;
+  at: PlacedName | undefined;
+  colour: string;
   /** Newest first. */
   stops: { x: number; y: number }[];
   plot: Plot;
 }
 
-function Trail({ trail, stops, plot }: TrailProps) {
-  const { palette, widthPx } = plot;
-  const [newest] = stops;
-  if (!newest) return null;
-  const colour = palette[trail.tone];
-  const left = newest.x > widthPx * SIDE_SHARE;
+function Trail({ name, at, colour, stops, plot }: TrailProps) {
+  if (!at) return null;
   return (
     <g>
       <path
@@ -131,15 +132,15 @@ function Trail({ trail, stops, plot }: TrailProps) {
         <DipMark key={y} x={x} y={y} letter="" colour={colour} plot={plot} />
       ))}
       <text
-        x={n(newest.x + (left ? -9 : 9))}
-        y={n(newest.y + 13)}
-        textAnchor={left ? "end" : "start"}
-        fontFamily={palette.sansFont}
+        x={n(at.x)}
+        y={n(at.y)}
+        textAnchor={at.anchor}
+        fontFamily={plot.palette.sansFont}
         fontSize="12"
         fontWeight="600"
         fill={colour}
       >
-        {shortened(trail.label, MOST_NAME)}
+        {name}
       </text>
     </g>
   );
@@ -181,6 +182,5 @@ const DEPTHS_PX: readonly [most: number, px: number][] = [
 ];
 const GROUND_PX = 21;
 const STEP_PX = 22;
-const SIDE_SHARE = 0.62;
 const MOST_NAME = 28;
 const CHARACTER_PX = 6.6;
