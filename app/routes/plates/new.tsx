@@ -1,4 +1,4 @@
-import { data, redirect, type ShouldRevalidateFunctionArgs } from "react-router";
+import { data, Link, redirect, type ShouldRevalidateFunctionArgs } from "react-router";
 import { requireProject } from "~/auth/require.server";
 import { Breadcrumbs } from "~/components/ui/Breadcrumbs";
 import { refused } from "~/errors";
@@ -98,7 +98,16 @@ export default function NewPlate({ loaderData, actionData }: Route.ComponentProp
         </p>
       </header>
       {subjects && <Chooser projectId={projectId} subjects={subjects} />}
-      {draft && <PlateForm key={draft.draw} data={loaderData} draft={draft} answer={actionData ?? null} />}
+      {draft && !draft.preview && !actionData ? (
+        <div className="panel border-l-3 border-l-clay grid gap-2">
+          <p>{draft.problem}</p>
+          <p>
+            <Link to={`${base}/plates/new`}>Choose something else</Link>
+          </p>
+        </div>
+      ) : (
+        draft && <PlateForm key={draft.draw} data={loaderData} draft={draft} answer={actionData ?? null} />
+      )}
     </article>
   );
 }
