@@ -30,7 +30,13 @@ export function Strips({ figure, plot }: { figure: PlateFigure; plot: Omit<Plot,
     name: shortened(label, MOST_NAME),
     stops: stops.flatMap(({ dip }) => place.get(dip) ?? []).sort((a, b) => a.y - b.y),
   }));
-  const names = placeNames(trails, widthPx);
+  const captions = rows.map(({ trace, y }) => ({
+    left: 6,
+    right: 6 + captionOf(trace).length * CHARACTER_PX,
+    top: y + depthPx + GROUND_PX - 16,
+    bottom: y + depthPx + GROUND_PX,
+  }));
+  const names = placeNames(trails, widthPx, captions);
   const onTrails = new Set(figure.trails.flatMap(({ stops }) => stops.map(({ dip }) => dip)));
   return (
     <g>
@@ -57,12 +63,7 @@ export function Strips({ figure, plot }: { figure: PlateFigure; plot: Omit<Plot,
               y2={depthPx + GROUND_PX}
               stroke={palette.rule}
             />
-            <Words
-              x={6}
-              y={depthPx + GROUND_PX - 5}
-              text={`${trace.label}, ${trace.caption}`}
-              {...{ widthPx, palette }}
-            />
+            <Words x={6} y={depthPx + GROUND_PX - 5} text={captionOf(trace)} {...{ widthPx, palette }} />
             {steps.map(({ id, label, caption }, i) => (
               <g key={id}>
                 <path d={`M8 ${depthPx + GROUND_PX + STEP_PX * i + 7}l4 5-4 5-4-5z`} fill={palette.clay} />
@@ -89,6 +90,10 @@ export function Strips({ figure, plot }: { figure: PlateFigure; plot: Omit<Plot,
       <Foot frequency={frequencyAxis(scale, [widthPx])} ribbon={ribbon} plot={whole} />
     </g>
   );
+}
+
+function captionOf({ label, caption }: PlateFigure["traces"][number]): string {
+  return `${label}, ${caption}`;
 }
 
 /** Height of the strips alone, px. */

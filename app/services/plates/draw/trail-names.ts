@@ -13,9 +13,13 @@ export interface PlacedName {
   anchor: "start" | "end";
 }
 
-/** In the given order; a name that fits nowhere is where it is least in the way of the axis: right of its stop. */
-export function placeNames(trails: readonly Named[], widthPx: number): Map<string, PlacedName> {
-  const taken: Box[] = [];
+/** `blocked`: where other words stand. In the given order; a name that fits nowhere is where it is least in the way of the axis: right of its stop. */
+export function placeNames(
+  trails: readonly Named[],
+  widthPx: number,
+  blocked: readonly Box[] = [],
+): Map<string, PlacedName> {
+  const taken: Box[] = [...blocked];
   const lines = trails.flatMap(({ id, stops }) =>
     stops.slice(0, 2).map(({ x, y }) => ({ id, left: x - 5, right: x + 5, top: y - 12, bottom: y + 60 })),
   );
