@@ -40,7 +40,9 @@ test("an owner makes a bundle and downloads it, also in pieces", async () => {
   await page.locator("input[type=file]").setInputFiles([fileOf("as built.csv", sweepText(6.99, 25))]);
   await page.getByText(/1 of 1 files? done/).waitFor();
   await page.goto(`${project}/settings`);
+  await settled(page);
   await page.getByRole("link", { name: "The whole project as one file" }).click();
+  await page.getByRole("heading", { name: "The whole project as one file" }).waitFor();
   await settled(page);
   await expectAccessible(page);
   await page.getByRole("button", { name: "Make a bundle" }).click();
@@ -69,7 +71,9 @@ test("somebody else takes it in, and is told why another file is not taken", asy
   const { page, context, complaints } = await visit(browser, { viewport: { width: 390, height: 800 } });
   await signIn(page, newcomer("bram"));
   await page.goto("/projects");
+  await settled(page);
   await page.getByRole("link", { name: "bundle" }).click();
+  await page.getByRole("heading", { name: "Take a bundle in" }).waitFor();
   await settled(page);
   await expectAccessible(page);
   await page.getByLabel("The bundle's ZIP").setInputFiles(zip);
@@ -96,7 +100,9 @@ test("a person takes all their data along", async () => {
   const { page, context, complaints } = await visit(browser);
   await signIn(page, ada);
   await page.goto("/settings/close");
+  await settled(page);
   await page.getByRole("link", { name: "Take all your data along" }).click();
+  await page.getByRole("heading", { name: "All my data" }).waitFor();
   await settled(page);
   await page.getByRole("button", { name: "Put it together" }).click();
   await page.getByRole("link", { name: "Download" }).waitFor();
