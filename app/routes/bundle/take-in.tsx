@@ -85,6 +85,7 @@ export default function TakeIn({ loaderData, actionData }: Route.ComponentProps)
         <FieldGroup legend="The bundle">
           <input
             type="file"
+            className="bundle-file"
             name="bundle"
             accept=".zip,application/zip"
             required
