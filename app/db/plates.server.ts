@@ -127,13 +127,12 @@ export async function findSources(plateId: number, tx: Queryable = db): Promise<
     .limit(2000);
 }
 
-/** By a form; originals are asked for with the files. Keys are `plates/<public id>/…`. */
+/** By a form; originals are asked for with the files. */
 export async function isStorageKeyUsed(key: string, tx: Queryable = db): Promise<boolean> {
   const rows = await tx
     .select({ id: plateForms.plateId })
     .from(plateForms)
-    .innerJoin(plates, eq(plates.id, plateForms.plateId))
-    .where(and(eq(plates.publicId, key.split("/")[1] ?? ""), eq(plateForms.storageKey, key)))
+    .where(eq(plateForms.storageKey, key))
     .limit(1);
   return rows.length > 0;
 }
