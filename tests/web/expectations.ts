@@ -52,8 +52,8 @@ export interface Case {
   prepare?: (about: About) => Promise<string>;
   form?: (about: About) => Record<string, string | Blob>;
   json?: (about: About) => unknown;
-  /** The case destroys what it is asked of: it gets a project of its own for each role, empty or with a sweep. */
-  destroys?: "project" | "sweep";
+  /** The case destroys what it is asked of: it gets a project of its own for each role, empty or with a sweep, or a plate of its own. */
+  destroys?: "project" | "sweep" | "plate";
   /** The case ends the account that asks: somebody new asks in place of each. */
   asNewcomer?: boolean;
 }
@@ -646,7 +646,7 @@ export const EXPECTATIONS: Record<string, Expectation> = {
         name: "withdraw",
         ask: { plate: "plate.make" },
         form: () => ({ intent: "withdraw", reason: "A walk." }),
-        destroys: "sweep",
+        destroys: "plate",
       },
     ],
   },

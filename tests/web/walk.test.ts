@@ -14,6 +14,7 @@ import { flattenSiteMap, layoutFiles, type SiteRoute } from "./site-map.ts";
 import {
   type Crew,
   closeWorld,
+  copyPlate,
   freezePlate,
   makeCrew,
   makePerson,
@@ -90,10 +91,7 @@ describe.each(routes)("$path ($file)", (route) => {
         const wanted: string[] = [];
         for (const visibility of route.path.includes(":") ? VISIBILITIES : VISIBILITIES.slice(0, 1)) {
           for (const actor of ACTORS) {
-            const place = one.destroys
-              ? await makePlace(crew, visibility, one.destroys === "project")
-              : places[visibility];
-            if (route.path.includes(":plate")) place.plate ||= await freezePlate(place, crew.owner);
+            const place = await placeFor(route, one, visibility);
             const response = await send(route, method, one, actor, place);
             const answer = answerOf(response);
             seen.push(`${actor}, ${visibility}: ${answer}`);
@@ -126,6 +124,13 @@ describe("a page's data asked for without its layouts", () => {
     return layoutFiles().map((file) => ({ file, path: "/projects/:project" }));
   }
 });
+
+async function placeFor({ path }: SiteRoute, { destroys }: Case, visibility: Visibility): Promise<Place> {
+  const place = places[visibility];
+  if (path.includes(":plate")) place.plate ||= await freezePlate(place, crew.owner);
+  if (destroys === "plate") return { ...place, plate: await copyPlate(place.plate) };
+  return destroys ? makePlace(crew, visibility, destroys === "project") : place;
+}
 
 async function send(
   route: SiteRoute,

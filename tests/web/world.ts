@@ -1,12 +1,13 @@
 import { createHash } from "node:crypto";
 import type { ProjectRole, Visibility } from "~/auth/permissions";
 import { startSession } from "~/auth/session.server";
-import { inTransaction, pool } from "~/db/client.server";
+import { db, inTransaction, pool } from "~/db/client.server";
 import * as files from "~/db/files.server";
 import { newPublicId } from "~/db/ids.server";
 import * as notes from "~/db/notes.server";
 import * as outbox from "~/db/outbox.server";
 import * as people from "~/db/people.server";
+import * as plates from "~/db/plates.server";
 import * as projects from "~/db/projects.server";
 import * as reports from "~/db/reports.server";
 import * as sweeps from "~/db/sweeps.server";
@@ -172,6 +173,16 @@ export async function freezePlate(place: Place, by: Someone): Promise<string> {
   const made = await freeze({ project: found.project, subject, choices, by: maker });
   if ("problem" in made) throw new Error(made.problem);
   return made.publicId;
+}
+
+/** Another plate that says the same, without its forms: made at once. */
+export async function copyPlate(publicId: string): Promise<string> {
+  const row = await plates.findByPublicId(publicId);
+  if (!row?.projectId) throw new Error("There is no such plate.");
+  const { id: _, ...values } = row;
+  const copy = { ...values, publicId: newPublicId(), number: await plates.nextNumber(row.projectId, db) };
+  await plates.insert(copy, [], [], db);
+  return copy.publicId;
 }
 
 /** A published write-up without figures; its public id. */
