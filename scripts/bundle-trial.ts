@@ -93,7 +93,7 @@ async function killHalfWay(publicId: string): Promise<void> {
   const runs = await import("~/db/bundle-runs.server");
   const loader = path.join(ROOT, "node_modules", "tsx", "dist", "loader.mjs");
   const env = { ...process.env, TSX_TSCONFIG_PATH: path.join(ROOT, "tsconfig.json") };
-  const child = spawn(process.execPath, ["--import", loader, path.join(ROOT, "scripts/bundles/worker.ts")], {
+  const child = spawn(process.execPath, ["--import", loader, path.join(ROOT, "scripts/bundle-worker.ts")], {
     env,
     stdio: "inherit",
   });
