@@ -113,7 +113,7 @@ async function* opened(bag: OpenBag, path: string): AsyncGenerator<Buffer> {
     for await (const chunk of (await bag.read(path)) as Readable) yield chunk as Buffer;
   } catch (error) {
     if (error instanceof Refused) throw error;
-    throw new Refused(`“${path}” can't be unpacked: the ZIP is damaged. (${(error as Error).message})`);
+    throw new Refused(`“${path}” can't be unpacked: the ZIP is damaged.`);
   }
 }
 

@@ -36,7 +36,7 @@ export async function openBag(file: string): Promise<OpenBag> {
     };
   } catch (error) {
     zip.close();
-    throw error instanceof Refused ? error : new Refused(`${BROKEN} (${(error as Error).message})`);
+    throw error instanceof Refused ? error : new Refused(BROKEN);
   }
 }
 
@@ -48,8 +48,8 @@ async function openZip(file: string): Promise<ZipFile> {
       decodeStrings: false,
       validateEntrySizes: true,
     });
-  } catch (error) {
-    throw new Refused(`${BROKEN} (${(error as Error).message})`);
+  } catch {
+    throw new Refused(BROKEN);
   }
 }
 
@@ -131,7 +131,7 @@ function baseOf(paths: string[]): string {
   return bases[0];
 }
 
-const BROKEN = "This is not a ZIP file, or it is cut short.";
+const BROKEN = "This is not a ZIP file, or it is cut short. Download it again and compare its size.";
 const TYPE_MASK = 0o170000;
 const PLAIN_FILE = 0o100000;
 const FOLDER = 0o040000;

@@ -120,7 +120,7 @@ function TakenIn({ run }: { run: Run }) {
           "Taken in; the project was deleted since."
         )}
         <span className="soft text-small block">
-          {run.records !== null && `${run.records} records, `}
+          {run.records !== null && `${run.records} ${run.records === 1 ? "record" : "records"}, `}
           <DateTime at={run.createdAt} />
         </span>
       </p>
