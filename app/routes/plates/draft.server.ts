@@ -47,7 +47,7 @@ export async function openDraft(
   const failed = "problem" in preview;
   return {
     ...blank(subjectText(subject)),
-    mends: mended && mended.shown,
+    mends: mended?.shown ?? null,
     texts: textsOfChoices(choices),
     preview: failed ? null : preview,
     problem: failed ? preview.problem : null,

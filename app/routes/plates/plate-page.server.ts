@@ -121,7 +121,7 @@ function presentOf(projectId: number, record: PlateRecord): Promise<Set<string>>
 function subjectPath(project: string, record: PlateRecord, present: ReadonlySet<string>): string | null {
   const subject = subjectOf(record.subject);
   const base = `/projects/${project}`;
-  if (!subject || !subject.ids.every((id) => present.has(id))) return null;
+  if (!subject?.ids.every((id) => present.has(id))) return null;
   switch (subject.kind) {
     case "strip":
       return base;

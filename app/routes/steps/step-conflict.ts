@@ -29,7 +29,8 @@ export function stepConflict({ sent, theirs, conflicts, mine, now, confirmed }: 
 /** Quantities of one field as lines to read: "Reed pole, length: 10.04". */
 export function quantityLines(field: string, targets: readonly TargetOption[]): string {
   const lines = rowsOf(field).map(({ target, label, unit, from, to }) => {
-    const name = targets.find(({ value }) => value === target)?.label.replace(/ \([^()]*\)$/, "") ?? label ?? "";
+    const name =
+      targets.find(({ value }) => value === target)?.label.replace(/ \([^()]*\)$/, "") ?? label ?? "";
     return `${name}: ${[from, to].filter(Boolean).join(" → ")}${unit ? ` ${unit}` : ""}`;
   });
   return lines.join("\n");
