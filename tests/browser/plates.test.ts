@@ -74,7 +74,7 @@ test("Ada freezes a plate of her sweep, once although she presses twice", async 
     .waitFor();
   await expectAccessible(page);
   await page.getByRole("button", { name: "Freeze the plate" }).dblclick();
-  await page.waitForURL(/\/plates\/[a-z0-9]{10}$/);
+  await page.waitForURL(/\/plates\/[a-z0-9]{10}$/, { timeout: FREEZING_MS });
   platePath = new URL(page.url()).pathname;
   await settled(page);
   await page.getByRole("heading", { level: 1, name: "Two dips before anything was cut" }).waitFor();
@@ -136,7 +136,7 @@ test("Ada mends a mistake, and withdraws what she should not have shown", async 
   expect(await page.getByLabel("Caption").inputValue()).toBe("Measured at the hub, in wet weather.");
   await page.getByLabel("What was wrong with version 1").fill("It had rained all day.");
   await page.getByRole("button", { name: "Freeze the new version" }).click();
-  await page.waitForURL((url) => /\/plates\/[a-z0-9]{10}$/.test(url.pathname));
+  await page.waitForURL(/\/plates\/[a-z0-9]{10}$/, { timeout: FREEZING_MS });
   await settled(page);
   await page.getByText("Version 2, this one").waitFor();
   const second = new URL(page.url()).pathname;
@@ -160,6 +160,9 @@ test("Ada mends a mistake, and withdraws what she should not have shown", async 
   await expectAccessible(stranger.page);
   await stranger.context.close();
 });
+
+/** Some seconds at most; more on a machine that has much else to do. */
+const FREEZING_MS = 60_000;
 
 async function withdraw(page: Page, reason: string): Promise<void> {
   await page.getByRole("button", { name: "Withdraw", exact: true }).click();

@@ -1,3 +1,4 @@
+import { useEffect, useRef } from "react";
 import { Form, useNavigation } from "react-router";
 import { Button } from "~/components/ui/Button";
 import { TextareaField } from "~/components/ui/Field";
@@ -18,7 +19,12 @@ interface PlateFormProps {
 /** Choices beside the plate that comes of them. Without scripts a button shows it. */
 export function PlateForm({ data, draft, answer }: PlateFormProps) {
   const hydrated = useHydrated();
-  const busy = useNavigation().formData?.get("intent") === "freeze";
+  const { state, formData } = useNavigation();
+  const busy = formData?.get("intent") === "freeze";
+  const pressed = useRef(false);
+  useEffect(() => {
+    if (state === "idle") pressed.current = false;
+  }, [state]);
   const tried = usePreview(`/projects/${data.projectId}/plates/preview`);
   const last = tried.answer ?? answer ?? draft;
   // While a field is half typed the last figure stays.
@@ -30,6 +36,11 @@ export function PlateForm({ data, draft, answer }: PlateFormProps) {
         method="post"
         className="grid gap-5 content-start"
         onChange={(event) => tried.onChange(event.currentTarget)}
+        onSubmit={(event) => {
+          // The second press of two would break the first one off, and wait as long again.
+          if (pressed.current) event.preventDefault();
+          pressed.current = true;
+        }}
         noValidate
       >
         <input type="hidden" name="from" value={draft.from} />
