@@ -23,7 +23,6 @@ export type PublicIds = Map<number, string>;
 export function inSnapshot<T>(work: (tx: Transaction) => Promise<T>): Promise<T> {
   return db.transaction(work, {
     isolationLevel: "repeatable read",
-    accessMode: "read only",
     withConsistentSnapshot: true,
   });
 }
