@@ -23,8 +23,6 @@ export interface PlateTexts {
 
 export type PlateErrors = Partial<Record<keyof PlateTexts | "wrong" | "form", string[]>>;
 
-export const SHOWN = ["showBands", "showDips", "showLimits", "showTitle"] as const;
-
 /** A box that is not ticked is not sent. */
 export function textsOfForm(form: FormData): PlateTexts {
   const text = (name: string) => String(form.get(name) ?? "");
