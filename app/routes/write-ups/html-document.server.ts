@@ -44,7 +44,7 @@ ${PAGE}
 </head>
 <body>
 <header>
-<p class="small">A write-up of ${escapeHtml(project.title)}</p>
+<p class="small">A write-up of ${escapeHtml(frozen.project)}</p>
 <h1>${title}</h1>
 <p class="small">${escapeHtml(people)}, ${day}, version ${version.number}</p>
 </header>

@@ -52,7 +52,7 @@ export async function loader(args: Route.LoaderArgs) {
       picture: plate ? `${env.BASE_URL}/plates/${plate}.png?width=1280` : null,
       project: {
         publicId: project.publicId,
-        title: project.title,
+        title: frozen.project,
         demo: project.demo === 1,
         feed: project.visibility === "private" ? null : `/projects/${project.publicId}/write-ups.atom`,
       },

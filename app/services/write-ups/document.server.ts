@@ -57,7 +57,7 @@ export function printable(
       producer: "Swale",
     },
     content: [
-      { text: `A write-up of ${project.title}`, color: SOFT, fontSize: SMALL_SIZE },
+      { text: `A write-up of ${frozen.project}`, color: SOFT, fontSize: SMALL_SIZE },
       { text: version.title, font: DISPLAY, bold: true, fontSize: 24, lineHeight: 1.1, margin: [0, 4, 0, 6] },
       { text: `${people}, ${day}, version ${version.number}`, color: SOFT, margin: [0, 0, 0, 14] },
       ...text,

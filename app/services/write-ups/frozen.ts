@@ -25,6 +25,8 @@ export type FrozenFigure = z.infer<typeof figureShape>;
 
 const frozenShape = z.object({
   figures: z.array(figureShape),
+  /** What the project was called at that time: a private one's name of today is not for readers. */
+  project: z.string().default(""),
   /** SPDX name of the licence of the project at that time. */
   licence: z.string(),
 });
@@ -44,7 +46,7 @@ export function parseFrozen(text: string): Frozen {
   try {
     return frozenShape.parse(JSON.parse(text));
   } catch {
-    return { figures: [], licence: "" };
+    return { figures: [], project: "", licence: "" };
   }
 }
 

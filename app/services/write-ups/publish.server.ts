@@ -8,7 +8,7 @@ import { queueSending } from "../webmention/send.server.ts";
 import { loadFigures } from "./figures.server.ts";
 import type { Frozen } from "./frozen.ts";
 
-type OfProject = Pick<projects.Project, "id" | "publicId" | "ituRegion" | "licence">;
+type OfProject = Pick<projects.Project, "id" | "publicId" | "title" | "ituRegion" | "licence">;
 
 export type Published =
   | { kind: "published"; number: number }
@@ -94,7 +94,7 @@ export function takeBack(
 
 async function freeze(project: OfProject, body: string): Promise<string> {
   const figures = await loadFigures(project, figuresIn(body));
-  const frozen: Frozen = { figures, licence: project.licence };
+  const frozen: Frozen = { figures, project: project.title, licence: project.licence };
   return JSON.stringify(frozen);
 }
 

@@ -89,6 +89,6 @@ it.each(["", "{", "null", "[]", '{"figures":{}}', '{"figures":[{"numbers":"x"}],
 );
 
 it("what was frozen is read as it was", () => {
-  const frozen = { figures: [dip, plate], licence: "CC-BY-4.0" };
+  const frozen = { figures: [dip, plate], project: "A vertical", licence: "CC-BY-4.0" };
   expect(parseFrozen(JSON.stringify(frozen))).toEqual(frozen);
 });

@@ -90,7 +90,7 @@ describe("a printed write-up", () => {
     writer: "Ada Marsh",
     project: { title: "Reed loop", demo: 0 },
     writeUp: { publicId: "w", publishedNumber: 2 },
-    frozen: { figures: [figure], licence: "CC-BY-4.0" },
+    frozen: { figures: [figure], project: "A vertical", licence: "CC-BY-4.0" },
   } as unknown as Publication;
   const place = { origin: "https://swale.example", plates: new Map(), drawingOf: () => null };
 
