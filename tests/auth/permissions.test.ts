@@ -24,6 +24,8 @@ const MAY: Record<(typeof PROJECT_ROLES)[number], ProjectAction[]> = {
     "verdict.propose",
     "verdict.settle",
     "note.write",
+    "plate.make",
+    "write-up.edit",
   ],
   commenter: ["project.read", "verdict.propose", "note.write"],
   reader: ["project.read"],
