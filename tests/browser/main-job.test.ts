@@ -145,7 +145,7 @@ test("published, it is read by somebody without an account, on a phone, in the d
   await settled(owner.page);
   await expectAccessible(owner.page);
   await owner.page.getByRole("radio", { name: "Public" }).check();
-  await owner.page.getByRole("button", { name: "Keep this" }).click();
+  await owner.page.getByRole("button", { name: "Keep this", exact: true }).click();
   await owner.page.getByText("public", { exact: true }).first().waitFor();
   await owner.context.close();
 

@@ -149,6 +149,7 @@ test("the advice becomes a planned step with its ghosts on the strip map", async
   await signIn(page, ada);
   await page.goto(dipPath);
   await page.getByRole("link", { name: /Lower:/ }).click();
+  await page.waitForURL((url) => url.pathname !== dipPath);
   await settled(page);
   const advice = page.getByRole("region", { name: "Where it lies" });
   // 10.21 m × 6.99 / 7.1
