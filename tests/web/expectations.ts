@@ -54,6 +54,8 @@ export interface Case {
   json?: (about: About) => unknown;
   /** The case destroys what it is asked of: it gets a project of its own for each role, empty or with a sweep, or a plate of its own. */
   destroys?: "project" | "sweep" | "plate";
+  /** What who may ask is answered, where nothing is there to be done; else it is to succeed. */
+  answers?: 400;
   /** The case ends the account that asks: somebody new asks in place of each. */
   asNewcomer?: boolean;
 }
@@ -355,7 +357,8 @@ export const EXPECTATIONS: Record<string, Expectation> = {
     POST: [
       { name: "mend", ask: { project: "sweep.add" }, form: () => ({ intent: "mend" }) },
       { name: "leave-out", ask: { project: "sweep.add" }, form: () => ({ intent: "leave-out" }) },
-      { name: "take", ask: { project: "sweep.add" }, form: () => ({ intent: "take" }) },
+      // An empty batch: those who may are told that nothing can be taken in.
+      { name: "take", ask: { project: "sweep.add" }, form: () => ({ intent: "take" }), answers: 400 },
       {
         name: "add",
         ask: { project: "sweep.add" },

@@ -1,6 +1,6 @@
 import { afterAll, beforeAll, describe, expect, it } from "vitest";
 import { Browser, SERVER } from "./browser.ts";
-import { listTo, mailTo, pathIn } from "./mails.ts";
+import { listTo, mailTo, pathIn, textsTo } from "./mails.ts";
 import { type Crew, closeWorld, makeCrew, makePlace, type Place, signIn } from "./world.ts";
 
 /** From a note that names somebody to a mail, to the answer, to no more mails, over HTTP. */
@@ -73,7 +73,7 @@ describe("being named", () => {
     const waits = { timeout: 20_000, interval: 200 };
     await expect.poll(async () => (await named.get("/inbox")).text(), waits).toContain("and this?");
     // What was said after it has gone out, so the mail that does not come would have come.
-    await expect.poll(async () => (await mailTo(addressOf(crew.commenter))).text, waits).toContain("you too");
+    await expect.poll(() => textsTo(addressOf(crew.commenter)), waits).toContain("you too");
     expect(await listTo(addressOf(crew.experimenter))).toHaveLength(1);
   });
 });

@@ -93,7 +93,7 @@ describe.each(routes)("$path ($file)", (route) => {
           for (const actor of ACTORS) {
             const place = await placeFor(route, one, visibility);
             const response = await send(route, method, one, actor, place);
-            const answer = answerOf(response);
+            const answer = one.answers === response.status ? "allowed" : answerOf(response);
             seen.push(`${actor}, ${visibility}: ${answer}`);
             wanted.push(`${actor}, ${visibility}: ${expected(one.ask, method, actor, visibility)}`);
             const text = await response.text();
