@@ -38,6 +38,8 @@ export async function visit(browser: Browser, options: BrowserContextOptions = {
   const context = await browser.newContext({
     baseURL: SERVER,
     viewport: { width: 1280, height: 900 },
+    // What moves in is drawn many times over, and there is no other processor for that.
+    reducedMotion: "reduce",
     ...options,
   });
   const page = await context.newPage();

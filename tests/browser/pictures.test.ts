@@ -154,6 +154,7 @@ test("a wrong colour is corrected by pressing on the trace", async () => {
   await reads()
     .getByText(/14\.[12]\d*\sMHz \(SWR/)
     .waitFor();
+  await settled(page);
   await page.getByRole("button", { name: "Pick the trace" }).click();
   const board = page.locator(".picture-board");
   const box = await board.boundingBox();
