@@ -45,11 +45,13 @@ function cellOf(
   const half = byKey.get(`${key}Half`);
   if (half) {
     const by = row[half.key];
-    return `${withUnit(value, unit)}${typeof by === "number" ? ` ± ${withUnit(by, half.unit)}` : ""}`;
+    if (typeof by !== "number") return withUnit(value, unit);
+    const shown = value.toFixed(decimalsFor(value, unit, by, half.unit));
+    return `${withUnit(shown, unit)} ± ${withUnit(by, half.unit)}`;
   }
   if (!byKey.has(`${key}Low`) || !byKey.has(`${key}High`)) return number(value);
   const [low, high] = [row[`${key}Low`], row[`${key}High`]];
-  if (low === null && high === null) return `${number(value)} (limits unknown)`;
+  if (low === null && high === null) return `${number(value)} (limits\u00a0unknown)`;
   return `${number(value)} (${end(low)}–${end(high)})`;
 }
 
@@ -67,13 +69,23 @@ function end(cell: Cell | undefined): string {
   return typeof cell === "number" ? number(cell) : (cell?.toString() ?? "unknown");
 }
 
-function withUnit(value: number, unit: string): string {
+/** So many decimals that the last is of the half-width's size, and none that the record has is lost. */
+function decimalsFor(value: number, unit: string, half: number, halfUnit: string): number {
+  const own = String(value).split(".")[1]?.length ?? 0;
+  const halfInUnit = (half * (IN_HZ[halfUnit] ?? 1)) / (IN_HZ[unit] ?? 1);
+  return halfInUnit > 0 ? Math.min(MOST_DECIMALS, Math.max(own, -Math.floor(Math.log10(halfInUnit)))) : own;
+}
+
+function withUnit(value: number | string, unit: string): string {
   return unit ? `${number(value)}\u2009${unit}` : number(value);
 }
 
-function number(value: number): string {
+function number(value: number | string): string {
   return String(value).replace("-", "−");
 }
 
 const SUFFIXES = ["Half", "Low", "High"];
 const NOTHING = ["", "-", "none"];
+const IN_HZ: Record<string, number> = { Hz: 1, kHz: 1e3, MHz: 1e6, GHz: 1e9 };
+/** A tenth of a hertz of a megahertz. */
+const MOST_DECIMALS = 7;

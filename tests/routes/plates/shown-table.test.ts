@@ -33,8 +33,16 @@ describe("a table as people read it", () => {
     });
   });
 
+  test("gives a frequency the decimals that its half-width has", () => {
+    expect(cells({ frequency: 55.3, frequencyHalf: 3.6 }).frequency).toBe("55.300\u2009MHz ± 3.6\u2009kHz");
+    expect(cells({ frequency: 7.1181, frequencyHalf: 0.35 }).frequency).toBe(
+      "7.1181\u2009MHz ± 0.35\u2009kHz",
+    );
+    expect(cells({ frequency: 55.3, frequencyHalf: 2500 }).frequency).toBe("55.3\u2009MHz ± 2500\u2009kHz");
+  });
+
   test("says what is not known, and never makes it a zero", () => {
-    expect(cells({ swrLow: null, swrHigh: null }).swr).toBe("1.21 (limits unknown)");
+    expect(cells({ swrLow: null, swrHigh: null }).swr).toBe("1.21 (limits\u00a0unknown)");
     expect(cells({ swrHigh: "∞" }).swr).toBe("1.21 (1.12–∞)");
     expect(cells({ swrLow: null }).swr).toBe("1.21 (unknown–1.31)");
     expect(cells({ swr: null }).swr).toBe("unknown");
