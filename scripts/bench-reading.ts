@@ -49,11 +49,11 @@ export async function benchReading(): Promise<BenchRow[]> {
 /** Two invented resonances over 1 to 30 MHz with a little deterministic noise. */
 function sweepText(): string {
   const lines = ["Frequency (Hz),S11 (dB)"];
-  let seed = 1;
+  let draw = 1;
   for (let i = 0; i < POINTS; i++) {
     const hz = 1e6 + i * 290;
-    seed = (seed * 48271) % 2147483647;
-    const noise = (seed / 2147483647 - 0.5) * 0.02;
+    draw = (draw * 48271) % 2147483647;
+    const noise = (draw / 2147483647 - 0.5) * 0.02;
     const dip = (f0: number, q: number) => 25 / (1 + (2 * q * (hz / f0 - 1)) ** 2);
     lines.push(`${hz},${(-0.3 - dip(7.1e6, 12) - dip(21.2e6, 20) + noise).toFixed(4)}`);
   }

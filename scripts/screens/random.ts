@@ -7,8 +7,8 @@ export interface Random {
   pick: <T>(items: readonly T[]) => T;
 }
 
-export function randomFrom(seed: number): Random {
-  let state = seed >>> 0;
+export function randomFrom(start: number): Random {
+  let state = start >>> 0;
   const next = () => {
     state = (state + 0x6d2b79f5) >>> 0;
     let t = Math.imul(state ^ (state >>> 15), state | 1);
