@@ -1,23 +1,8 @@
-import { requireProject } from "~/auth/require.server";
-import { notFound } from "~/errors";
-import { etagOf, projectOfToken } from "~/services/feed.server";
+import { answerFeed } from "~/routes/activity/answer-feed.server";
 import { drawWriteUpFeed } from "~/services/write-ups/feed.server";
 import type { Route } from "./+types/feed";
 
-/** What is published, for feed readers: as the account's feed, openly where the project may be read so, else by a member's own key. */
-export async function loader(args: Route.LoaderArgs) {
-  const { request, params } = args;
-  const token = new URL(request.url).searchParams.get("token");
-  const project = token
-    ? await projectOfToken(params.project, token)
-    : (await requireProject(args, "project.read")).project;
-  if (!project) throw notFound("feed");
-  const text = await drawWriteUpFeed(project);
-  const etag = etagOf(text);
-  const headers = { ETag: etag, "Cache-Control": "private, no-cache", "X-Robots-Tag": "noindex" };
-  if (request.headers.get("If-None-Match")?.includes(etag))
-    return new Response(null, { status: 304, headers });
-  return new Response(text, {
-    headers: { ...headers, "Content-Type": "application/atom+xml; charset=utf-8" },
-  });
+/** What is published, as an Atom feed. */
+export function loader(args: Route.LoaderArgs): Promise<Response> {
+  return answerFeed(args, drawWriteUpFeed);
 }
