@@ -5,6 +5,8 @@ import { ROOT } from "../install.mjs";
 export interface Count {
   passed: number;
   failed: number;
+  /** What failed and what passed with difficulty, for the end of the whole output. */
+  told: string[];
 }
 
 /** What a machine can check without running the product. Each counts as one. */
@@ -15,15 +17,20 @@ const CHECKS: { title: string; commands: string[][] }[] = [
   { title: "Unused code", commands: [["knip/bin/knip.js"]] },
 ];
 
+const MOST_LINES = 20;
+
 export async function runChecks(): Promise<Count> {
   console.log("\nChecks");
-  const count = { passed: 0, failed: 0 };
+  const count: Count = { passed: 0, failed: 0, told: [] };
   for (const { title, commands } of CHECKS) {
     const started = Date.now();
     const failure = commands.map(run).find((output) => output !== undefined);
     const seconds = ((Date.now() - started) / 1000).toFixed(1);
     console.log(`  ${failure === undefined ? "✓" : "✗"} ${title.padEnd(46)} ${seconds.padStart(6)} s`);
-    if (failure !== undefined) console.log(failure);
+    if (failure !== undefined) {
+      console.log(failure);
+      count.told.push(`Failed: ${title}\n${failure.trim().split("\n").slice(0, MOST_LINES).join("\n")}`);
+    }
     count[failure === undefined ? "passed" : "failed"] += 1;
   }
   return count;

@@ -25,6 +25,7 @@ export async function test(given: string[]): Promise<number> {
   if (overHttp.length > 0) counts.push(await runOverHttp(overHttp, keep));
   const passed = counts.reduce((sum, count) => sum + count.passed, 0);
   const failed = counts.reduce((sum, count) => sum + count.failed, 0);
+  for (const line of counts.flatMap((count) => count.told)) console.log(`\n${line}`);
   console.log(`\n${passed} passed, ${failed} failed`);
   return failed === 0 && passed > 0 ? 0 : 1;
 }
@@ -32,18 +33,20 @@ export async function test(given: string[]): Promise<number> {
 /** One built server with its own database and stand-ins for both suites. */
 async function runOverHttp(suites: Suite[], keep: boolean): Promise<Count> {
   console.log("\nA server for the tests");
-  const sum = { passed: 0, failed: 0 };
+  const sum: Count = { passed: 0, failed: 0, told: [] };
   try {
     const stack = await startTestStack({ keep });
     for (const suite of suites) {
       const count = await runVitest(suite, `tests/vitest.${suite}.config.ts`);
       sum.passed += count.passed;
       sum.failed += count.failed;
+      sum.told.push(...count.told);
     }
     await stack.stop();
   } catch (error) {
     reportFailure(error);
     sum.failed += 1;
+    sum.told.push(`Failed: the server for the tests\n${(error as Error).message}`);
   }
   return sum;
 }
