@@ -8,7 +8,10 @@ export default defineConfig({
     include: ["tests/**/*.test.{ts,tsx}"],
     exclude: ["**/*.db.test.ts", "tests/web/**", "tests/browser/**"],
     setupFiles: ["tests/base-url.ts", "tests/quiet-console.ts"],
-    testTimeout: 20_000,
+    testTimeout: 60_000,
+    hookTimeout: 60_000,
+    // What is waited for comes at once; a machine with much else to do needs longer.
+    expect: { poll: { timeout: 15_000 } },
     pool: "threads",
     maxWorkers: 2,
     // What app/env.server.ts asks for; nothing answers at these addresses.

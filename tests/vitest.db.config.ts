@@ -8,7 +8,10 @@ export default defineConfig({
     include: ["tests/**/*.db.test.ts"],
     globalSetup: ["scripts/suites/parts-setup.ts"],
     setupFiles: ["tests/base-url.ts", "tests/worker-schema.ts", "tests/quiet-console.ts"],
-    testTimeout: 30_000,
+    testTimeout: 60_000,
+    hookTimeout: 60_000,
+    // What is waited for comes at once; a machine with much else to do needs longer.
+    expect: { poll: { timeout: 15_000 } },
     // On a busy machine what passes at the second try is told, not hidden.
     retry: process.env.CI ? 1 : 0,
     pool: "forks",

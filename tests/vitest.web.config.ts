@@ -10,6 +10,8 @@ export default defineConfig({
     setupFiles: ["tests/base-url.ts", "tests/quiet-console.ts"],
     testTimeout: 60_000,
     hookTimeout: 60_000,
+    // What is waited for comes at once; a machine with much else to do needs longer.
+    expect: { poll: { timeout: 15_000 } },
     // On a busy machine what passes at the second try is told, not hidden.
     retry: process.env.CI ? 1 : 0,
     pool: "forks",

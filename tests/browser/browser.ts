@@ -45,7 +45,7 @@ export async function visit(browser: Browser, options: BrowserContextOptions = {
     ...options,
   });
   const page = await context.newPage();
-  page.setDefaultTimeout(20_000);
+  page.setDefaultTimeout(45_000);
   const complaints: string[] = [];
   page.on("pageerror", (error) => complaints.push(error.message));
   page.on("console", (message) => {

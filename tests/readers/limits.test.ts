@@ -4,7 +4,7 @@ import { read } from "../../app/readers/read.ts";
 import { MAX_FILE_BYTES, MAX_POINTS } from "../../app/readers/reading.ts";
 
 /** Processor time that the largest file may take; measured 0.3 to 3 s. */
-const MOST_MS = 10_000;
+const MOST_MS = 30_000;
 const MEGABYTE = 2 ** 20;
 
 /** A file of `rows` lines, each from `line`, padded to `bytes` with blanks before the line ends where that is asked. */
@@ -86,7 +86,7 @@ describe("limits", () => {
     const start = performance.now();
     const result = read({ name: "big.csv", bytes: new Uint8Array(MAX_FILE_BYTES + 1) });
     expect(result).toMatchObject({ ok: false, problem: { code: "too-large" } });
-    expect(performance.now() - start).toBeLessThan(100);
+    expect(performance.now() - start).toBeLessThan(1000);
   });
 
   it.each([

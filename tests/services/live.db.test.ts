@@ -119,7 +119,7 @@ describe("a stream of events", () => {
     await early;
     for (let i = 0; i < 20; i++) await happen(`late ${i}`);
     for (const stream of opened) {
-      await expect.poll(() => stream.titles.length, { timeout: 5000 }).toBe(50);
+      await expect.poll(() => stream.titles.length).toBe(50);
       expect(new Set(stream.titles).size).toBe(50);
       expect(stream.titles.slice(30)).toEqual(Array.from({ length: 20 }, (_, i) => `late ${i}`));
       const ids = stream.messages.flatMap(({ id }) => (id ? [readMark(project.id, id)] : []));
@@ -184,7 +184,7 @@ describe("whoever may not listen any more", () => {
   ])("is let go within seconds when %s, though nothing happens", async (_, end) => {
     const stream = await Stream.open(earOf(bram), 0);
     await end();
-    await expect.poll(() => stream.ended, { timeout: 4000 }).toBe(true);
+    await expect.poll(() => stream.ended).toBe(true);
   });
 
   it("is let go when a public project is made private", async () => {
@@ -194,7 +194,7 @@ describe("whoever may not listen any more", () => {
     await expect.poll(() => stream.titles).toEqual(["seen by all"]);
     await projects.update(project.id, { visibility: "private" });
     await happen("a secret");
-    await expect.poll(() => stream.ended, { timeout: 4000 }).toBe(true);
+    await expect.poll(() => stream.ended).toBe(true);
     expect(stream.titles).toEqual(["seen by all"]);
   });
 
@@ -217,11 +217,11 @@ describe("who is looking", () => {
     const stream = await Stream.open(earOf(ada), 0);
     const window = { by: bram, window: "aa" };
     await look({ ...window, project, kind: "sweep", subject: "abc" });
-    await expect.poll(() => lookers(stream), { timeout: 1500 }).toEqual(["Bram: sweep"]);
+    await expect.poll(() => lookers(stream)).toEqual(["Bram: sweep"]);
     await look({ ...window, project, kind: "dip", subject: "abc" });
-    await expect.poll(() => lookers(stream), { timeout: 1500 }).toEqual(["Bram: dip"]);
+    await expect.poll(() => lookers(stream)).toEqual(["Bram: dip"]);
     await lookAway(window);
-    await expect.poll(() => lookers(stream), { timeout: 1500 }).toEqual([]);
+    await expect.poll(() => lookers(stream)).toEqual([]);
   });
 
   it("is told to nobody who merely may read, and of nobody who is not a member", async () => {
@@ -231,7 +231,7 @@ describe("who is looking", () => {
     const stranger = await member("Cleo");
     await look({ project, by: stranger, window: "cc", kind: "project", subject: "abc" });
     await look({ project, by: bram, window: "bb", kind: "project", subject: "abc" });
-    await expect.poll(() => lookers(inside), { timeout: 1500 }).toEqual(["Bram: project"]);
+    await expect.poll(() => lookers(inside)).toEqual(["Bram: project"]);
     expect(stream.last("looking")).toBeUndefined();
     expect((await pollLive(project.id, null, { lastEventId: 0, member: false })).looking).toBeNull();
     expect((await pollLive(project.id, null, { lastEventId: 0, member: true })).looking).toHaveLength(1);
@@ -241,7 +241,7 @@ describe("who is looking", () => {
     const stream = await Stream.open(earOf(ada), 0);
     await look({ project, by: bram, window: "bb", kind: "project", subject: "abc" });
     await lookAway({ by: ada, window: "bb" });
-    await expect.poll(() => lookers(stream), { timeout: 1500 }).toEqual(["Bram: project"]);
+    await expect.poll(() => lookers(stream)).toEqual(["Bram: project"]);
   });
 });
 

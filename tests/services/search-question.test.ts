@@ -53,7 +53,7 @@ describe("parseQuestion", () => {
     const began = performance.now();
     for (const piece of ["1 ", "swr ", "between 1 and ", "9,9,", "dips ", "< "])
       parseQuestion(piece.repeat(100));
-    expect(performance.now() - began).toBeLessThan(500);
+    expect(performance.now() - began).toBeLessThan(3000);
   });
 });
 

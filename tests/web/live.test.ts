@@ -95,7 +95,8 @@ describe("the stream of a project's events", () => {
     const { notes, names } = listen(browser);
     await expect.poll(() => names).toContain("hello");
     const { publicId } = await say("Soon there");
-    await expect.poll(() => notes, { timeout: 1000, interval: 20 }).toEqual([publicId]);
+    // Within a second, which live-load.ts measures; two suites side by side are slower.
+    await expect.poll(() => notes, { timeout: 3000, interval: 20 }).toEqual([publicId]);
   });
 
   it("answers who does not read streams with a poll", async () => {
@@ -118,8 +119,8 @@ describe("the stream of a project's events", () => {
       written.push((await say(`Through ${i}`)).publicId);
       await new Promise((resolve) => setTimeout(resolve, 250));
     }
-    await expect.poll(() => plain.notes, { timeout: 5000 }).toEqual(written);
-    await expect.poll(() => short.notes, { timeout: 5000 }).toEqual(written);
+    await expect.poll(() => plain.notes).toEqual(written);
+    await expect.poll(() => short.notes).toEqual(written);
     expect(short.reader.connections).toBeGreaterThan(1);
   });
 });
@@ -158,7 +159,7 @@ describe("who may hear it", () => {
     await removeMember(own.projectId, crew.commenter.userName);
     const on = { projectId: own.projectId, sweepId: null, dipId: null };
     await writeNote({ project: { id: own.projectId }, author: crew.owner, place: on, body: "A secret" });
-    await expect.poll(() => reader.refused, { timeout: 8000 }).toBe(404);
+    await expect.poll(() => reader.refused).toBe(404);
     expect(heard).not.toContain("happened");
   });
 
@@ -167,7 +168,7 @@ describe("who may hear it", () => {
     const { names, reader } = listen(browser);
     await expect.poll(() => names).toContain("hello");
     await sessions.deleteAllByUser(crew.reader.id);
-    await expect.poll(() => reader.refused, { timeout: 8000 }).toBe(404);
+    await expect.poll(() => reader.refused).toBe(404);
   });
 });
 

@@ -224,7 +224,7 @@ describe("asking what may be asked", () => {
     };
     const began = Date.now();
     expect(await ask("/", { patienceMs: 200 })).toEqual({ kind: "failed", reason: "It took too long." });
-    expect(Date.now() - began).toBeLessThan(1500);
+    expect(Date.now() - began).toBeLessThan(5000);
   });
 
   it("gives up on a name that nobody answers for", async () => {

@@ -114,7 +114,7 @@ describe("whatever is written", () => {
     const began = performance.now();
     html(text);
     // Seen: under a second on a busy machine.
-    expect(performance.now() - began).toBeLessThan(5000);
+    expect(performance.now() - began).toBeLessThan(15_000);
   });
 });
 
