@@ -19,6 +19,8 @@ const ANSWERS = new URL("../../app/routes/api/guide/example-answers.json", impor
 const examples = EXAMPLE_GROUPS.flatMap((group) => group.examples);
 /** Real → shown. */
 const ids = new Map<string, string>();
+/** What answers were saved as. */
+const saved = new Map<string, Blob>();
 
 afterAll(closeWorld);
 
@@ -39,10 +41,11 @@ it("answers as the guide says, in the shapes of the OpenAPI document", { timeout
       method,
       ...bodyOf(filledIn(example, kept)),
     });
-    const answer = await response.json();
-    expect([example.operation, response.status, answer]).toEqual([example.operation, status, answer]);
+    const first = await bodyOfAnswer(response, example);
+    expect([example.operation, response.status, first]).toEqual([example.operation, status, first]);
+    const answer = await settled(first, example.until, token);
     // A member that the document does not know would be left out here.
-    expect(componentOf(schema).parse(answer), example.operation).toEqual(answer);
+    if (schema) expect(componentOf(schema).parse(answer), example.operation).toEqual(answer);
     for (const [name, where] of Object.entries(example.keep ?? {})) {
       kept[name] = where.split(".").reduce((at, key) => at?.[key], answer);
       expect(kept[name], `${example.operation}: ${where}`).toBeTypeOf("string");
@@ -99,7 +102,8 @@ interface Asked {
   method: string;
   path: string;
   status: number;
-  schema: Parameters<typeof componentOf>[0];
+  /** Undefined where it answers no JSON. */
+  schema: Parameters<typeof componentOf>[0] | undefined;
 }
 
 interface Document {
@@ -112,22 +116,47 @@ function operationsOf(document: Document): Record<string, Asked> {
   for (const [path, item] of Object.entries(document.paths)) {
     for (const [method, { operationId, responses }] of Object.entries(item)) {
       const [status] = Object.keys(responses).filter((code) => code.startsWith("2"));
-      const reference = responses[status].content?.["application/json"]?.schema?.$ref ?? "";
-      const schema = reference.replace("#/components/schemas/", "") as Asked["schema"];
+      const reference = responses[status].content?.["application/json"]?.schema?.$ref;
+      const schema = reference?.replace("#/components/schemas/", "") as Asked["schema"];
       found[operationId] = { method: method.toUpperCase(), path, status: Number(status), schema };
     }
   }
   return found;
 }
 
-function bodyOf({ json, file }: Example): RequestInit {
+/** JSON as it is; of anything else what it is, with its bytes kept where the example saves them. */
+async function bodyOfAnswer(response: Response, { saves }: Example): Promise<unknown> {
+  const type = response.headers.get("Content-Type") ?? "";
+  if (/^application\/(problem\+)?json\b/.test(type)) return response.json();
+  const bytes = await response.blob();
+  if (saves) saved.set(saves, bytes);
+  return bytes.size > 0 ? `${type.split(";")[0]}, saved as ${saves}` : "Nothing";
+}
+
+/** The answer once what goes on behind it is done. */
+async function settled(first: unknown, until: Example["until"], token: string): Promise<unknown> {
+  let answer = first as Record<string, unknown> & { links: { self: string } };
+  while (until && answer[until.where] !== until.is) {
+    expect(answer[until.where], JSON.stringify(answer)).not.toBe("failed");
+    await new Promise((resolve) => setTimeout(resolve, LOOK_EVERY_MS));
+    answer = await (await askApi(answer.links.self.replace("/api/v1", ""), token)).json();
+  }
+  return answer;
+}
+
+function bodyOf({ json, file, files }: Example): RequestInit {
   if (json !== undefined) {
     return { body: JSON.stringify(json), headers: { "Content-Type": "application/json" } };
   }
-  if (!file) return {};
+  if (!file && !files) return {};
   const body = new FormData();
-  body.set("file", new File([file.text], file.name));
-  for (const [name, value] of Object.entries(file.fields)) body.set(name, value);
+  if (file) body.set("file", new File([file.text], file.name));
+  for (const [name, value] of Object.entries(file?.fields ?? {})) body.set(name, value);
+  for (const { field, name, text } of files ?? []) {
+    const content = text ?? saved.get(name);
+    if (content === undefined) throw new Error(`No answer was saved as ${name}.`);
+    body.append(field, new File([content], name));
+  }
   return { body };
 }
 
@@ -155,7 +184,8 @@ function collectIds(value: unknown): void {
 function idOf(real: string): string {
   const known = ids.get(real);
   if (known) return known;
-  const told = `${SAMPLE_LETTERS[ids.size]}7fenmarsh`;
+  const n = SAMPLE_LETTERS.length;
+  const told = `${SAMPLE_LETTERS[ids.size % n]}${FIRST_DIGIT - Math.floor(ids.size / n)}fenmarsh`;
   ids.set(real, told);
   return told;
 }
@@ -181,10 +211,12 @@ function tidied(value: unknown): unknown {
 
 const PUBLIC_ID = /^[2-9a-hjkmnp-z]{10}$/;
 const ID_KEYS = /^(?:id|project|sweep|dip|step|trail|bench|plate|writeUp|reference)$/;
-/** One for each id that the examples meet. */
+/** One for each id that the examples meet, then with the digit below. */
+const FIRST_DIGIT = 7;
 const SAMPLE_LETTERS = "abcdefghjkmnpqrstuvwxyz";
 const ISO = /^\d{4}-\d\d-\d\dT[\d:.]+Z$/;
 const DAY_MS = 86_400_000;
+const LOOK_EVERY_MS = 200;
 const REVISION = "3f9a61c07be2d4458a1e";
 const MOST_SHOWN = 4;
 /** Enough to read, and the same on every machine. */

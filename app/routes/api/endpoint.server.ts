@@ -16,11 +16,11 @@ type Handler = (call: Call) => Promise<Response>;
  * One endpoint of the API: the loader and the action of its route. Asks method, token, scope and rate in this
  * order, and turns everything that goes wrong into a problem document.
  */
-export function endpoint(handlers: { GET?: Handler; POST?: Handler }) {
+export function endpoint(handlers: { GET?: Handler; POST?: Handler; DELETE?: Handler }) {
   const allow = Object.keys(handlers).join(", ");
   return async ({ request, params }: Pick<Call, "request" | "params">): Promise<Response> => {
     const method = request.method === "HEAD" ? "GET" : request.method;
-    const handler = method === "GET" || method === "POST" ? handlers[method] : undefined;
+    const handler = isAnswered(method) ? handlers[method] : undefined;
     if (!handler) return wrongMethod(request.method, allow);
     try {
       const holder = await requireToken(request, method === "GET" ? "read" : "write");
@@ -29,6 +29,10 @@ export function endpoint(handlers: { GET?: Handler; POST?: Handler }) {
       return answerThrown(thrown);
     }
   };
+}
+
+function isAnswered(method: string): method is "GET" | "POST" | "DELETE" {
+  return method === "GET" || method === "POST" || method === "DELETE";
 }
 
 export function wrongMethod(method: string, allow: string): Response {
@@ -69,7 +73,7 @@ async function requireToken(request: Request, scope: "read" | "write"): Promise<
 function answerThrown(thrown: unknown): Response {
   if (thrown instanceof Response) return thrown;
   const { data, init } = thrown as { data?: Partial<PlainError>; init?: ResponseInit | null };
-  if (data && init?.status && init.status < 500) {
+  if (data && init?.status && (init.status < 500 || init.status === 503)) {
     const detail = data.message ?? "The request was refused. Nothing was changed.";
     return problem({ status: init.status, detail });
   }

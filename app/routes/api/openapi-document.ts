@@ -6,8 +6,8 @@ import {
   componentSchemas,
   inPath,
   inQuery,
-  type Operation,
   operation,
+  type PathItem,
   problemResponse,
   reference,
 } from "./openapi-parts.ts";
@@ -69,7 +69,7 @@ function uploadBody() {
   };
 }
 
-const PATHS: Record<string, { get?: Operation; post?: Operation }> = {
+const PATHS: Record<string, PathItem> = {
   "/openapi.json": {
     get: {
       operationId: "getOpenApi",

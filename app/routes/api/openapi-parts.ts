@@ -78,23 +78,22 @@ export interface Operation {
   security?: unknown[];
 }
 
-/** An operation with its good answer and every refusal it may give. */
+/** An operation with its good answer (null: an empty one) and every refusal it may give. */
 export function operation(
-  about: Omit<Operation, "responses"> & { status?: string; answer: Name; refusals?: string[] },
+  about: Omit<Operation, "responses"> & { status?: string; answer: Name | null; refusals?: string[] },
 ): Operation {
-  const { status = "200", answer, refusals = [], ...rest } = about;
-  const problem = { $ref: "#/components/responses/Problem" };
-  const refused = ["401", "403", "404", "405", "429", "500", ...refusals].map((code) => [code, problem]);
+  const { status = "200", answer, refusals, ...rest } = about;
+  const content = answer && { content: { "application/json": { schema: reference(answer) } } };
   return {
     ...rest,
-    responses: {
-      [status]: {
-        description: status === "201" ? "Made" : "Found",
-        content: { "application/json": { schema: reference(answer) } },
-      },
-      ...Object.fromEntries(refused),
-    },
+    responses: { [status]: { description: DONE[status], ...content }, ...refusalsOf(refusals) },
   };
+}
+
+/** Every refusal that any operation may give, and those of its own. */
+export function refusalsOf(own: string[] = []): Record<string, unknown> {
+  const problem = { $ref: "#/components/responses/Problem" };
+  return Object.fromEntries([...EVERY_REFUSAL, ...own].map((code) => [code, problem]));
 }
 
 export const inPath = (name: string) => ({ name, in: "path", required: true, schema: { type: "string" } });
@@ -104,5 +103,11 @@ export function inQuery(schema: z.ZodObject) {
   const { properties = {} } = z.toJSONSchema(schema, { io: "input" });
   return Object.entries(properties).map(([name, member]) => ({ name, in: "query", schema: member }));
 }
+
+const EVERY_REFUSAL = ["401", "403", "404", "405", "429", "500"];
+const DONE: Record<string, string> = { "200": "Found", "201": "Made", "202": "Under way", "204": "Removed" };
+
+/** A path's operations by method. */
+export type PathItem = Partial<Record<"get" | "post" | "delete", Operation>>;
 
 export const CURSOR = { name: "cursor", in: "query", schema: { type: "string" } };

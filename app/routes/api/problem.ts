@@ -37,4 +37,5 @@ const TITLES: Record<number, string> = {
   422: "Unprocessable Content",
   429: "Too Many Requests",
   500: "Internal Server Error",
+  503: "Service Unavailable",
 };

@@ -1,8 +1,13 @@
 import type { Example } from "./examples.ts";
 
 /** An example as a command for a shell. Pure. `base` is the address of the API. */
-export function curlOf({ path, json, file }: Example, base: string): string {
+export function curlOf(example: Example, base: string, method = "GET"): string {
+  const { path, json, file, files = [], saves } = example;
   const lines = ["curl", '-H "Authorization: Bearer $SWALE_TOKEN"'];
+  if (saves) lines.push(`-o ${saves}`);
+  // Without a body the method is to be said.
+  if (method !== "GET" && !file && files.length === 0 && json === undefined) lines.push(`-X ${method}`);
+  for (const { field, name } of files) lines.push(`-F ${field}=@${name}`);
   if (file) {
     lines.push(`-F file=@${file.name}`);
     for (const [name, value] of Object.entries(file.fields)) lines.push(`-F ${quoted(`${name}=${value}`)}`);

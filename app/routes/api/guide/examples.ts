@@ -14,6 +14,12 @@ export interface Example {
   path: string;
   json?: unknown;
   file?: { name: string; text: string; fields: Record<string, string> };
+  /** Several of them; one without a text is what an earlier answer was saved as. */
+  files?: { field: string; name: string; text?: string }[];
+  /** The answer is bytes, kept in a file of this name. */
+  saves?: string;
+  /** Work goes on behind the answer: its `links.self` is asked for until `where` is `is`, and that is what is shown. */
+  until?: { where: string; is: string };
   /** What later examples take from the answer: name → where it is. */
   keep?: Record<string, string>;
 }

@@ -1,4 +1,4 @@
-import type { Operation } from "../openapi-parts.ts";
+import type { Operation, PathItem } from "../openapi-parts.ts";
 import { curlOf } from "./curl.ts";
 import answers from "./example-answers.json";
 import { EXAMPLE_GROUPS, type Example, filledIn, keyOf } from "./examples.ts";
@@ -12,12 +12,21 @@ export interface GuideCall {
   summary: string;
   /** What may follow the question mark. */
   query: { name: string; says: string }[];
-  examples: { key: string; says: string; command: string; status: string; answer: string }[];
+  examples: {
+    key: string;
+    says: string;
+    command: string;
+    status: string;
+    /** What is asked for again until the work is done. */
+    again: Example["until"] | null;
+    answer: string;
+  }[];
 }
 
-type Paths = Record<string, { get?: Operation; post?: Operation }>;
-
-export function guideGroups(paths: Paths, base: string): { title: string; calls: GuideCall[] }[] {
+export function guideGroups(
+  paths: Record<string, PathItem>,
+  base: string,
+): { title: string; calls: GuideCall[] }[] {
   const kept = sampleNames();
   return EXAMPLE_GROUPS.map(({ title, examples }) => {
     const operations = [...new Set(examples.map(({ operation }) => operation))];
@@ -47,14 +56,20 @@ function callOf(
     examples: examples.map((example) => ({
       key: keyOf(example),
       says: example.says,
-      command: curlOf(filledIn(example, kept), base),
+      command: curlOf(filledIn(example, kept), base, method),
       status,
-      answer: JSON.stringify(answerOf(example), null, 2),
+      again: example.until ?? null,
+      answer: answerText(answerOf(example)),
     })),
   };
 }
 
-function findOperation(paths: Paths, id: string) {
+/** Words stand for what is no JSON. */
+function answerText(answer: unknown): string {
+  return typeof answer === "string" ? answer : JSON.stringify(answer, null, 2);
+}
+
+function findOperation(paths: Record<string, PathItem>, id: string) {
   for (const [path, item] of Object.entries(paths)) {
     for (const [method, operation] of Object.entries(item)) {
       if (operation.operationId === id) return { path, method: method.toUpperCase(), operation };

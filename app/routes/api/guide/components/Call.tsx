@@ -31,7 +31,7 @@ export function Call({ call }: { call: GuideCall }) {
           ))}
         </dl>
       )}
-      {examples.map(({ key, says, command, status, answer }) => (
+      {examples.map(({ key, says, command, status, again, answer }) => (
         <div key={key} className="grid gap-2 min-w-0">
           <p className="max-w-[72ch]">
             <Words text={says} />
@@ -39,7 +39,15 @@ export function Call({ call }: { call: GuideCall }) {
           <Code label={`Command: ${says}`} text={command} />
           <details className="min-w-0">
             <summary>
-              The answer, <code>{status}</code>
+              {again ? (
+                <>
+                  What it says once <code>{again.where}</code> is <code>{again.is}</code>
+                </>
+              ) : (
+                <>
+                  The answer, <code>{status}</code>
+                </>
+              )}
             </summary>
             <Code label={`Answer: ${says}`} text={answer} />
           </details>
