@@ -46,9 +46,9 @@ export default function Home({ loaderData }: Route.ComponentProps) {
       <section className="max-w-[46rem] space-y-4">
         <h1 className="text-huge">Where the dips are, and why</h1>
         <p className="text-large">
-          Swale reads an antenna's sweep from a text file or a Touchstone file, finds every dip with its
-          frequency, lowest SWR and bandwidth, and gives each a thread where the people of a project settle
-          what causes it.
+          Swale reads an antenna's sweep from a text file, a Touchstone file or a picture of a screen, finds
+          every dip with its frequency, lowest SWR and bandwidth, and gives each a thread where the people of
+          a project settle what causes it.
         </p>
         <p className="flex flex-wrap gap-3">
           {signedIn ? (
