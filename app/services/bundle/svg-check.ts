@@ -16,7 +16,11 @@ export function isHarmlessPage(html: string): boolean {
 }
 
 function passes(text: string, elements: ReadonlySet<string>, xmlMode: boolean): boolean {
+  // Where every sign of a tag begins one, nobody can see another tag than is seen here, whatever is text to whom.
+  if (/<[^<>]*(?:<|$)/.test(text)) return false;
   let harmless = true;
+  let styles = "";
+  let inStyle = 0;
   const refuse = () => {
     harmless = false;
   };
@@ -24,15 +28,22 @@ function passes(text: string, elements: ReadonlySet<string>, xmlMode: boolean): 
     {
       onopentag: (name, attributes) => {
         if (!elements.has(name.toLowerCase())) refuse();
+        if (name.toLowerCase() === "style") inStyle++;
         for (const [key, value] of Object.entries(attributes)) {
           const attribute = key.toLowerCase();
-          if (attribute.startsWith("on") || attribute === "http-equiv" || FETCHES.test(value)) refuse();
-          if (ADDRESS.test(attribute) && !ALLOWED.test(value)) refuse();
+          if (attribute.startsWith("on") || attribute === "http-equiv") refuse();
+          if (!WORDS.has(attribute) && FETCHES.test(value)) refuse();
+          const allowed = LEADS.has(name.toLowerCase()) ? ALLOWED_TO_LEAD : ALLOWED_TO_LOAD;
+          if (ADDRESS.test(attribute) && !allowed.test(value)) refuse();
           if (attribute === "rel" && value !== "canonical") refuse();
         }
       },
-      ontext: (words) => {
-        if (FETCHES.test(words)) refuse();
+      onclosetag: (name) => {
+        if (name.toLowerCase() === "style") inStyle--;
+      },
+      // In pieces, parted wherever a sign was written as a reference.
+      ontext: (piece) => {
+        if (inStyle > 0) styles += piece;
       },
       oncomment: refuse,
       oncdatastart: refuse,
@@ -41,7 +52,7 @@ function passes(text: string, elements: ReadonlySet<string>, xmlMode: boolean): 
     { xmlMode, decodeEntities: true },
   );
   parser.end(text);
-  return harmless;
+  return harmless && !FETCHES.test(styles);
 }
 
 const FIGURE = new Set([
@@ -54,8 +65,14 @@ const PAGE = new Set([
   ...["a", "p", "picture", "source", "img"],
 ]);
 const ADDRESS = /(^|:)(href|src|srcset|action|formaction|data|poster)$/;
-/** Inside the page, a page of this site or another, a picture that is carried along. */
-const ALLOWED = /^(#|https?:\/\/|\/(?!\/)|data:image\/png;base64,)/;
-/** In styles and in attributes: only what is inside the drawing, and fonts that it carries. */
+/** Attributes that hold what a person wrote, and nothing else. */
+const WORDS = new Set(["alt", "title", "content", "aria-label"]);
+/** What leads to another page when a person follows it; every other address is loaded at once. */
+const LEADS = new Set(["a", "link"]);
+/** Inside the page, a page of this site or another. */
+const ALLOWED_TO_LEAD = /^(#|https?:\/\/|\/(?!\/|\\))/;
+/** Inside the page, what this site has, a picture that is carried along. */
+const ALLOWED_TO_LOAD = /^(#|\/(?!\/|\\)[^,]*$|data:image\/png;base64,)/;
+/** In styles and attributes: only what is inside the drawing, and fonts that it carries. A backslash would spell these another way. */
 const FETCHES =
-  /@import|expression\s*\(|javascript:|-moz-binding|url\(\s*["']?\s*(?!#|data:(font|application\/font|image\/png))/i;
+  /\\|@import|expression\s*\(|javascript:|-moz-binding|image-set|\bsrc\(|url\(\s*["']?\s*(?!#|data:(font|application\/font|image\/png))/i;

@@ -10,6 +10,8 @@ describe("a drawing from elsewhere", () => {
       "<style>@font-face{font-family:A;src:url(data:font/woff2;base64,AA)} text{fill:var(--color-ink)}</style>",
     ),
     inside('<a href="https://swale.example/plates/x"><use href="#p"/></a>'),
+    inside('<title>C:\\ and url(x) and javascript:</title><g aria-label="C:\\ javascript:"/>'),
+    inside('<image href="data:image/png;base64,AA"/>'),
     `<?xml version="1.0"?>\n${inside("")}`,
   ])("passes: %s", (svg) => {
     expect(isHarmlessSvg(svg)).toBe(true);
@@ -34,6 +36,17 @@ describe("a drawing from elsewhere", () => {
     inside("<style>@import 'https://elsewhere.example/x.css'</style>"),
     inside('<rect style="fill:url(https://elsewhere.example/x)"/>'),
     inside('<image href="https&#58;x"/>'),
+    inside('<image href="https://elsewhere.example/who-reads.png"/>'),
+    inside('<use href="https://elsewhere.example/x.svg#a"/>'),
+    inside('<a href="/\\elsewhere.example/">x</a>'),
+    inside("<style>rect{fill:u&#114;l(https://elsewhere.example/x)}</style>"),
+    inside("<style>@im&#112;ort 'https://elsewhere.example/x.css'</style>"),
+    inside("<style>rect{fill:u\\72l(https://elsewhere.example/x)}</style>"),
+    inside("<style>@\\69mport 'https://elsewhere.example/x.css'</style>"),
+    inside("<style>rect{background:image-set('https://elsewhere.example/x' 1x)}</style>"),
+    // A title holds HTML in a page, and its style is text there to the end of it.
+    inside('<title><style><a title="</style><img src=x onerror=alert(1)>"></a></style></title>'),
+    inside('<title><style><a title="</style><b>"/></style></title><p'),
     inside("<title><img src=x onerror=alert(1)></title>"),
     '<!DOCTYPE svg [<!ENTITY x "y">]><svg></svg>',
     "<html><svg></svg></html>",
@@ -68,6 +81,9 @@ describe("a page that shows a figure", () => {
     page("<form action='/sign-out'></form>"),
     page("<iframe src='/'></iframe>"),
     page('<a href="javascript:x">y</a>'),
+    page('<img src="https://elsewhere.example/who-reads.png">'),
+    page('<picture><source srcset="/a.png 1x, https://elsewhere.example/x 2x"></picture>'),
+    page('<p title="</title><script src=/x></script>">y</p>'),
     "<p>no page</p>",
   ])("is refused: %s", (html) => {
     expect(isHarmlessPage(html)).toBe(false);
