@@ -28,15 +28,18 @@ function readHtml(html: string, url: string, target: string): Claim {
   let inTitle = false;
   let title = "";
   const wanted = new URL(target).href;
+  let looked = 0;
   const isWanted = (address: string) => {
     const text = address.trim();
+    // What is asked of one page is bounded: it may be made of nothing but addresses.
+    if (text.length > LONGEST_ADDRESS || ++looked > MOST_ADDRESSES) return false;
     return URL.canParse(text, base) && new URL(text, base).href === wanted;
   };
   const parser = new Parser({
     onopentag(name, attributes) {
       if (name === "title" && title === "") inTitle = true;
-      if (name === "base" && base === url && attributes.href && URL.canParse(attributes.href, url)) {
-        base = new URL(attributes.href, url).href;
+      if (name === "base" && base === url && attributes.href && attributes.href.length <= LONGEST_ADDRESS) {
+        if (URL.canParse(attributes.href, url)) base = new URL(attributes.href, url).href;
       }
       if (name === "base") return;
       links ||= NAMING.some((key) => attributes[key] !== undefined && isWanted(attributes[key]));
@@ -78,9 +81,10 @@ function holds(value: unknown, target: string): boolean {
 
 function hasWord(text: string, target: string): boolean {
   for (let at = text.indexOf(target); at >= 0; at = text.indexOf(target, at + 1)) {
-    const after = text.slice(at + target.length);
+    if (at > 0 && /[\w/:.-]/.test(text[at - 1])) continue;
     // A full stop or a comma ends a sentence, not an address.
-    if (/^[.,;:!?)]*(?:[\s<>"'\])]|$)/.test(after) && !/[\w/:.-]$/.test(text.slice(0, at))) return true;
+    ENDING.lastIndex = at + target.length;
+    if (ENDING.test(text)) return true;
   }
   return false;
 }
@@ -94,4 +98,9 @@ function tidy(title: string): string {
 
 /** Attributes of HTML that hold one address. */
 const NAMING = ["href", "src", "cite", "data", "poster"];
+const ENDING = /[.,;:!?)]*(?:[\s<>"'\])]|$)/y;
 const LONGEST_TITLE = 200;
+/** Of what is taken as a target, too. */
+const LONGEST_ADDRESS = 2000;
+/** In a megabyte of HTML: a long list of links has some thousands (common practice, no source). */
+const MOST_ADDRESSES = 20_000;

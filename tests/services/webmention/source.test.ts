@@ -54,6 +54,17 @@ describe("readSource", () => {
     expect(page(`https://other.example/?${TARGET}x`, "text/plain").links).toBe(false);
   });
 
+  it("is done soon with a megabyte that is made to take long", () => {
+    const many = (text: string) => text.repeat(Math.floor(1_000_000 / text.length));
+    // Each of these kept a processor busy for more than ten seconds.
+    expect(page(many(`x${TARGET}`), "text/plain").links).toBe(false);
+    expect(
+      page(`<base href="https://a.example/${"a".repeat(400_000)}">${"<a href=x>".repeat(50_000)}`).links,
+    ).toBe(false);
+    expect(page(many(`<a href=x>`)).links).toBe(false);
+    expect(page(`<a href="${TARGET}">${many("<a href=x>")}`).links).toBe(true);
+  });
+
   it("reads how the page calls itself, in bounds", () => {
     expect(page("<title>\n Reeds &amp; <b>radials\n</title><title>no</title>").title).toBe(
       "Reeds & <b>radials",
