@@ -81,9 +81,15 @@ function cellsOf(text: string): { line: number; cells: string[] }[] {
 }
 
 function partingOf(text: string): string {
-  const first = text.match(/[^\r\n]*\S[^\r\n]*/)?.[0] ?? "";
+  const first = firstLine(text);
   const counts = [",", ";", "\t"].map((sign) => first.split(sign).length);
   return [",", ";", "\t"][counts.indexOf(Math.max(...counts))];
+}
+
+/** The first line that is not empty. */
+function firstLine(text: string): string {
+  for (const [line] of text.matchAll(/[^\r\n]+/g)) if (/\S/.test(line)) return line;
+  return "";
 }
 
 function headingOf(cell: string): (typeof HEADINGS)[number] | null {
