@@ -43,9 +43,8 @@ export function manifestOf(sums: Sums[], method: "sha256" | "sha512"): string {
 /** Path → sum; null for a line that is none, or a path that is named twice. */
 export function readManifest(text: string): Map<string, string> | null {
   const found = new Map<string, string>();
-  for (const line of text.split(/\r?\n/)) {
-    if (line === "") continue;
-    const parts = /^([0-9a-fA-F]{64}|[0-9a-fA-F]{128})\s+\*?(.+)$/.exec(line);
+  for (const [line] of text.matchAll(/[^\r\n]+/g)) {
+    const parts = /^([0-9a-fA-F]{64}|[0-9a-fA-F]{128})[ \t]+\*?([^ \t*].*)$/s.exec(line);
     if (!parts) return null;
     const path = parts[2].replace(/%(0A|0D|25)/gi, (code) => decodeURIComponent(code));
     if (found.has(path)) return null;

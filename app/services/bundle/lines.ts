@@ -4,20 +4,28 @@ import { isEntry, type PlanEntry, type PlanLine } from "./plan.ts";
 /** The lines of a stream of UTF-8, without their ends; one that is longer than `most` characters is a fault. */
 export async function* linesOf(chunks: AsyncIterable<Uint8Array>, most = LONGEST): AsyncGenerator<string> {
   const decoder = new StringDecoder("utf8");
-  let rest = "";
+  // A line may come in thousands of pieces: they are put together once.
+  let pieces: string[] = [];
+  let length = 0;
   for await (const chunk of chunks) {
-    rest += decoder.write(Buffer.from(chunk.buffer, chunk.byteOffset, chunk.length));
+    const text = decoder.write(Buffer.from(chunk.buffer, chunk.byteOffset, chunk.length));
     let start = 0;
-    for (let end = rest.indexOf("\n"); end >= 0; end = rest.indexOf("\n", start)) {
-      yield rest.slice(start, rest.charCodeAt(end - 1) === 13 ? end - 1 : end);
+    for (let end = text.indexOf("\n"); end >= 0; end = text.indexOf("\n", start)) {
+      const line = pieces.length > 0 ? pieces.join("") + text.slice(start, end) : text.slice(start, end);
+      [pieces, length] = [[], 0];
+      yield line.endsWith("\r") ? line.slice(0, -1) : line;
       start = end + 1;
     }
-    rest = rest.slice(start);
-    if (rest.length > most) throw new Error(`a line is longer than ${most} characters`);
+    if (start === text.length) continue;
+    pieces.push(text.slice(start));
+    length += text.length - start;
+    if (length > most) throw new LineTooLong(`a line is longer than ${most} characters`);
   }
-  rest += decoder.end();
+  const rest = pieces.join("") + decoder.end();
   if (rest !== "") yield rest;
 }
+
+export class LineTooLong extends Error {}
 
 /** Reads a plan entry by entry; the text of one is read while it is written. */
 export class PlanReader {

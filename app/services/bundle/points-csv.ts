@@ -32,7 +32,11 @@ export async function pointsFromCsv(lines: AsyncIterable<string>, referenceOhm: 
     line++;
     if (!names) {
       names = text.split(",");
-      for (const name of names) if (READ.has(name)) columns.set(name, []);
+      for (const name of names) {
+        if (!READ.has(name)) continue;
+        if (columns.has(name)) throw new Error(`there are two columns ${name}`);
+        columns.set(name, []);
+      }
       continue;
     }
     if (text === "") continue;
@@ -49,8 +53,12 @@ export async function pointsFromCsv(lines: AsyncIterable<string>, referenceOhm: 
   const magnitude = take("gamma_magnitude");
   if (!frequencyHz || !magnitude)
     throw new Error("the columns frequency_hz and gamma_magnitude are not there");
+  if (frequencyHz.length === 0) throw new Error("there are no points");
   for (let i = 0; i < frequencyHz.length; i++) {
-    if (!(frequencyHz[i] > (i === 0 ? -1 : frequencyHz[i - 1]))) {
+    if (
+      !(frequencyHz[i] > (i === 0 ? -1 : frequencyHz[i - 1])) ||
+      frequencyHz[i] === Number.POSITIVE_INFINITY
+    ) {
       throw new Error(`line ${i + 2} does not go up in frequency`);
     }
   }
@@ -90,7 +98,8 @@ function shown(value: number): string {
 
 function numberIn(cell: string, line: number): number {
   if (cell === "") return Number.NaN;
-  const value = Number(cell);
+  // As `String` writes it: a space and "0x10" would be numbers too.
+  const value = /^-?(?:\d[\d.e+-]*|Infinity)$/.test(cell) ? Number(cell) : Number.NaN;
   if (Number.isNaN(value)) throw new Error(`line ${line} has a cell that is no number`);
   return value;
 }

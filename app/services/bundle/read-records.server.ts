@@ -1,7 +1,7 @@
 import type { z } from "zod";
 import { KINDS, type KindName } from "~/db/bundle-kinds.server";
 import type { Checked } from "./check-bag.server.ts";
-import { linesOf } from "./lines.ts";
+import { LineTooLong, linesOf } from "./lines.ts";
 import type { OpenBag } from "./open-zip.server.ts";
 import { PATH_FIELDS, PEOPLE, type PersonRecord, RECORDS, type Rec } from "./records.ts";
 import { Refused } from "./refused.ts";
@@ -88,6 +88,7 @@ export async function* readRecords<T extends Rec = Rec>(
     }
   } catch (error) {
     if (error instanceof SyntaxError) throw new Refused(`Line ${line} of ${path} is not JSON.`);
+    if (error instanceof LineTooLong) throw new Refused(`${path} can't be read: ${error.message}.`);
     throw error;
   }
   if (!ended) throw new Refused(`${path} is cut short.`);

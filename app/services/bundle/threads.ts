@@ -40,18 +40,23 @@ function bodyOf(note: ThreadNote): string {
 
 /** Oldest first, answers behind what they answer. */
 function inOrder(notes: ThreadNote[]): { note: ThreadNote; depth: number }[] {
-  const answers = new Map<string | null, ThreadNote[]>();
+  const answers = new Map<string | null, ThreadNote[]>([[null, []]]);
   const known = new Set(notes.map((note) => note.id));
   for (const note of notes) {
     const under = note.parent !== null && known.has(note.parent) ? note.parent : null;
-    answers.set(under, [...(answers.get(under) ?? []), note]);
+    const before = answers.get(under);
+    if (before) before.push(note);
+    else answers.set(under, [note]);
   }
-  const list = (under: string | null, depth: number): { note: ThreadNote; depth: number }[] =>
-    (answers.get(under) ?? []).flatMap((note) => [
-      { note, depth: Math.min(depth, DEEPEST) },
-      ...list(note.id, depth + 1),
-    ]);
-  return list(null, 0);
+  // Without recursion: a chain of answers may be as long as people like.
+  const told: { note: ThreadNote; depth: number }[] = [];
+  const left = (answers.get(null) ?? []).map((note) => ({ note, depth: 0 })).reverse();
+  for (let next = left.pop(); next; next = left.pop()) {
+    told.push({ ...next, depth: Math.min(next.depth, DEEPEST) });
+    const deeper = next.depth + 1;
+    for (const note of [...(answers.get(next.note.id) ?? [])].reverse()) left.push({ note, depth: deeper });
+  }
+  return told;
 }
 
 export function stamp(at: Date): string {

@@ -3,12 +3,13 @@ import { describe, expect, it } from "vitest";
 import type { Sweep } from "~/measurement/sweep";
 import { rangeOf } from "~/routes/bundle/send-bundle.server";
 import { readBagInfo, readManifest } from "~/services/bundle/bag";
-import { linesOf } from "~/services/bundle/lines";
+import { LineTooLong, linesOf } from "~/services/bundle/lines";
 import { fileOfForm } from "~/services/bundle/multipart";
 import { rewriteJson, rewriteText } from "~/services/bundle/new-ids.server";
 import { nameOfPerson, placeholderOf } from "~/services/bundle/placeholders";
 import { fileName } from "~/services/bundle/plan";
 import { pointsFromCsv, pointsToCsv } from "~/services/bundle/points-csv";
+import { threadMarkdown } from "~/services/bundle/threads";
 import { encodePoints } from "~/services/points.server";
 
 async function* chunked(text: string | Uint8Array, size: number): AsyncGenerator<Uint8Array> {
@@ -52,6 +53,11 @@ describe("points as CSV", () => {
     ["frequency_hz,gamma_magnitude\r\n1,zero\r\n", "line 2"],
     ["frequency_hz,gamma_magnitude\r\n1\r\n", "line 2"],
     ["frequency_hz,swr\r\n1,2\r\n", "gamma_magnitude"],
+    ["frequency_hz,gamma_magnitude\r\n1, \r\n", "line 2"],
+    ["frequency_hz,gamma_magnitude\r\n1,0x1\r\n", "line 2"],
+    ["frequency_hz,gamma_magnitude\r\nInfinity,0.5\r\n", "line 2"],
+    ["frequency_hz,frequency_hz,gamma_magnitude\r\n1,2,0.5\r\n", "two columns"],
+    ["frequency_hz,gamma_magnitude\r\n", "no points"],
   ])("are refused with the place: %j", async (text, where) => {
     await expect(pointsFromCsv(linesOf(chunked(text, 100)), 50)).rejects.toThrow(where);
   });
@@ -123,6 +129,34 @@ describe("small pieces", () => {
     ["con.txt", "id-con.txt"],
   ])("make %j a name that every system takes", (name, wanted) => {
     expect(fileName("id", name)).toBe(wanted);
+  });
+  it("give a long line that came in many pieces, and break off where it is too long", async () => {
+    const lines = [];
+    for await (const line of linesOf(chunked(`${"a".repeat(1000)}\r\n\né\r\nb`, 1))) lines.push(line);
+    expect(lines).toEqual(["a".repeat(1000), "", "é", "b"]);
+    const endless = linesOf(chunked("a".repeat(1000), 10), 500)[Symbol.asyncIterator]();
+    await expect(endless.next()).rejects.toThrow(LineTooLong);
+  });
+  it("put answers behind what they answer, however long the chain", () => {
+    const note = (id: number, parent: number | null) => ({
+      id: String(id),
+      parent: parent === null ? null : String(parent),
+      author: "Ada",
+      at: new Date(0),
+      edited: false,
+      removed: false,
+      body: `said ${id}`,
+    });
+    const few = threadMarkdown("x", [note(1, null), note(2, null), note(3, 1), note(4, 3), note(5, 1)]);
+    expect(few.match(/said \d/g)).toEqual(["said 1", "said 3", "said 4", "said 5", "said 2"]);
+    const chain = Array.from({ length: 20_000 }, (_, i) => note(i, i === 0 ? null : i - 1));
+    expect(threadMarkdown("x", chain).match(/said \d+/g)).toHaveLength(20_000);
+  });
+  it("don't take long over a manifest that nearly is one", () => {
+    const sum = "0".repeat(64);
+    // Twice the length took four times as long: 200,000 spaces half a minute.
+    expect(readManifest(`${sum}${" ".repeat(200_000)}a\u2028`)?.size).toBe(1);
+    expect(readManifest(`${sum}${" ".repeat(200_000)}\n`)).toBeNull();
   });
   it("read manifests and refuse what is none", () => {
     const sum = "a".repeat(64);
