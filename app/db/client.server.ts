@@ -24,6 +24,8 @@ const RETRY_ERRNOS = new Set([1205, 1213, 1047, 1020]);
 const DUPLICATE_ERRNO = 1062;
 /** What a new row points at is not there. */
 const BROKEN_REFERENCE_ERRNO = 1452;
+/** Null where none may be, cut off, wrong or out of range, too long, breaking a constraint such as that JSON is JSON. */
+const UNFIT_ERRNOS = new Set([1048, 1265, 1292, 1366, 1264, 1406, 4025]);
 
 /** Runs `work` in one transaction and again when the database asks for it: `work` must be repeatable. */
 export async function inTransaction<T>(work: (tx: Transaction) => Promise<T>): Promise<T> {
@@ -45,10 +47,27 @@ export function isReferenceBroken(error: unknown): boolean {
   return errnoOf(error) === BROKEN_REFERENCE_ERRNO;
 }
 
-/** The database's error number, however deep the driver wrapped it. */
+/** A value that its column does not take: out of range, too long, no date, nested too deep, missing. */
+export function isUnfit(error: unknown): boolean {
+  return UNFIT_ERRNOS.has(errnoOf(error) ?? 0);
+}
+
+/** The unique key that a row met another row at; undefined for any other fault. */
+export function keyOfDuplicate(error: unknown): string | undefined {
+  const fault = faultOf(error);
+  if (fault?.errno !== DUPLICATE_ERRNO) return undefined;
+  return /for key '([^']+)'$/.exec(fault.message ?? "")?.[1] ?? "";
+}
+
 function errnoOf(error: unknown): number | undefined {
-  for (let e = error as { errno?: number; cause?: unknown } | undefined; e; e = e.cause as typeof e) {
-    if (typeof e.errno === "number") return e.errno;
+  return faultOf(error)?.errno;
+}
+
+/** What the database said, however deep the driver wrapped it. */
+function faultOf(error: unknown): { errno?: number; message?: string } | undefined {
+  type Fault = { errno?: number; message?: string; cause?: unknown };
+  for (let e = error as Fault | undefined; e; e = e.cause as Fault | undefined) {
+    if (typeof e.errno === "number") return e;
   }
   return undefined;
 }

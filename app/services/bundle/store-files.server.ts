@@ -76,7 +76,7 @@ export async function storeFiles(
   ] as const) {
     if (typeof record[field] !== "string" || typeof row[column] !== "string") continue;
     const bytes = await bytesOf(bag, record[field]);
-    if (bytes.readUIntBE(0, 3) !== JPEG)
+    if (bytes.length < 3 || bytes.readUIntBE(0, 3) !== JPEG)
       throw new Refused(`“${record[field]}” is no JPEG, as copies for pages are.`);
     await put(keys, row[column], bytes, "image/jpeg");
   }

@@ -22,6 +22,7 @@ import { checkRecords, type Found } from "./read-records.server.ts";
 import { Refused } from "./refused.ts";
 import { restoreRows } from "./restore.server.ts";
 import type { Places } from "./restore-rows.server.ts";
+import { refusalOf } from "./unfit.server.ts";
 
 export { Refused } from "./refused.ts";
 
@@ -63,6 +64,8 @@ export async function takeInBundle(lease: Lease): Promise<void> {
         return lease.tell({ doneParts: checked.size + written, allParts });
       });
       await finish(lease, places.projectId, found);
+    } catch (error) {
+      throw refusalOf(error);
     } finally {
       bag.close();
     }
