@@ -2,6 +2,7 @@ import * as table from "~/db/dip-table.server";
 import * as projects from "~/db/projects.server";
 import { type BandOfDip, bandOf, type ProjectBands, projectBands, stretchesOf } from "./bands.ts";
 import { DIPS_CSV_HEAD, dipCsvLine } from "./csv.ts";
+import { type Place, startBehind } from "./place.ts";
 
 /** What is asked of the table; `band` is a choice of `bandChoices`. */
 export interface DipsAsked extends Omit<table.DipFilter, "projectId" | "stretches"> {
@@ -37,6 +38,26 @@ export async function dipsPage(
   };
 }
 
+/** The page behind a place in their order, null for the first; nothing is told twice or left out by what comes meanwhile. */
+export async function dipsBehind(
+  project: Pick<projects.Project, "id" | "ituRegion">,
+  asked: DipsAsked,
+  order: table.DipOrder,
+  place: Place | null,
+) {
+  const bands = await bandsOf(project);
+  const ids = await table.findIds(filterOf(project, asked, bands), order);
+  const from = startBehind(ids, place);
+  const page = ids.slice(from, from + PAGE_ROWS);
+  const rows = await table.findAllByIds(page);
+  const to = from + page.length;
+  return {
+    all: ids.length,
+    rows: rows.map(({ id: _, ...row }) => ({ ...row, band: bandOf(row.numbers.frequencyHz, bands) })),
+    next: to < ids.length ? { id: ids[to - 1], count: to } : null,
+  };
+}
+
 /** The CSV of all pages, piece by piece; each piece is fetched when the one before it is gone. */
 export async function* dipsCsv(
   project: Pick<projects.Project, "id" | "ituRegion">,
@@ -52,7 +73,11 @@ export async function* dipsCsv(
   }
 }
 
-async function bandsOf({ id, ituRegion }: Pick<projects.Project, "id" | "ituRegion">): Promise<ProjectBands> {
+/** The bands that its dips can lie in. */
+export async function bandsOf({
+  id,
+  ituRegion,
+}: Pick<projects.Project, "id" | "ituRegion">): Promise<ProjectBands> {
   return projectBands(ituRegion, await projects.findDesignBands(id));
 }
 

@@ -28,7 +28,19 @@ export const MEDIA_TYPES: Record<string, string> = {
 };
 
 /** What an address asks for: `/plates/ID` with this behind it. */
-export type Ending = "svg" | "png" | "pdf" | "csv" | "s1p" | "json" | "bib" | "csl.json" | "/embed";
+export const ENDINGS = ["svg", "png", "pdf", "csv", "s1p", "json", "bib", "csl.json", "/embed"] as const;
+export type Ending = (typeof ENDINGS)[number];
+
+/** What the plain address gives to whoever does not want a page: media type → form. */
+export const NEGOTIATED: ReadonlyMap<string, Ending> = new Map<string, Ending>([
+  ["image/svg+xml", "svg"],
+  ["image/png", "png"],
+  ["application/pdf", "pdf"],
+  ["text/csv", "csv"],
+  ["application/json", "json"],
+  ["application/x-bibtex", "bib"],
+  ["application/vnd.citationstyles.csl+json", "csl.json"],
+]);
 
 /** The form that an ending with its question names; null for a size or a theme that there is not. */
 export function formOf(ending: Ending, search: URLSearchParams): FormName | null {

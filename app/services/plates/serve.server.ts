@@ -2,7 +2,7 @@ import type { NextFunction, Request, Response } from "express";
 import * as plates from "~/db/plates.server";
 import { env } from "~/env.server";
 import { log } from "../log.server.ts";
-import { type Ending, type FormName, formOf } from "./form-names.ts";
+import { type Ending, type FormName, formOf, NEGOTIATED } from "./form-names.ts";
 import { readForm, type StoredForm } from "./forms.server.ts";
 import { oembed } from "./oembed.server.ts";
 
@@ -95,15 +95,6 @@ function say(response: Response, status: number, words: string): void {
 
 const FORM_PATH = /^\/plates\/([0-9a-z]{6,20})(\.(?:svg|png|pdf|csv|s1p|json|bib|csl\.json)|\/embed)$/;
 const PLAIN_PATH = /^\/plates\/([0-9a-z]{6,20})$/;
-const NEGOTIATED = new Map<string, Ending>([
-  ["image/svg+xml", "svg"],
-  ["image/png", "png"],
-  ["application/pdf", "pdf"],
-  ["text/csv", "csv"],
-  ["application/json", "json"],
-  ["application/x-bibtex", "bib"],
-  ["application/vnd.citationstyles.csl+json", "csl.json"],
-]);
 /** The bytes never change, and a plate can be withdrawn: ten minutes is what a reader may be behind. Then a look at the ETag. */
 const CACHED = "public, max-age=600, stale-if-error=86400";
 /** Whoever opens one of these alone gets no more than it shows. A PDF takes no more than this: browsers show it by code of theirs. */
