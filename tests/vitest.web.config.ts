@@ -15,6 +15,8 @@ export default defineConfig({
     // On a busy machine what passes at the second try is told, not hidden.
     retry: process.env.CI ? 1 : 0,
     pool: "forks",
+    // They meet the product from outside: what they import need not be read anew for each file.
+    isolate: false,
     maxWorkers: 2,
     env: { AWS_SDK_JS_NODE_VERSION_SUPPORT_WARNING_DISABLED: "true" },
   },

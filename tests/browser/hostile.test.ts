@@ -7,7 +7,7 @@ import { record } from "~/services/events.server";
 import { drawMail } from "~/services/mail.server";
 import { plainText, renderNote } from "~/services/markdown.server";
 import { MARKDOWN_EVASIONS } from "../fixtures/hostile/evasions.ts";
-import { closeWorld, makePerson, sessionOf } from "../web/world.ts";
+import { makePerson, sessionOf } from "../web/world.ts";
 import { launch, SERVER, settled, visit } from "./browser.ts";
 import { HOSTILE, type HostilePlace, makeHostilePlace, texts } from "./hostile-world.ts";
 
@@ -23,10 +23,7 @@ beforeAll(async () => {
   browser = await launch();
   place = await makeHostilePlace();
 });
-afterAll(async () => {
-  await browser.close();
-  await closeWorld();
-});
+afterAll(() => browser.close());
 
 const surfaces = () => {
   const project = `/projects/${place.project}`;

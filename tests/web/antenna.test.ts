@@ -1,17 +1,8 @@
-import { afterAll, beforeAll, beforeEach, describe, expect, it } from "vitest";
+import { beforeAll, beforeEach, describe, expect, it } from "vitest";
 import * as projects from "~/db/projects.server";
 import { createProject } from "~/services/projects.server";
 import { Browser } from "./browser.ts";
-import {
-  closeWorld,
-  makePerson,
-  type Someone,
-  sendSweep,
-  signIn,
-  tokenOf,
-  touchstone,
-  unique,
-} from "./world.ts";
+import { makePerson, type Someone, sendSweep, signIn, tokenOf, touchstone, unique } from "./world.ts";
 
 /** Antenna and steps by forms alone, as a browser without scripts sends them. */
 
@@ -29,7 +20,6 @@ beforeEach(async () => {
   project = await createProject(about, owner.id);
   base = `/projects/${project.publicId}`;
 });
-afterAll(closeWorld);
 
 const SINCE = "2026-05-01T08:00";
 

@@ -1,20 +1,11 @@
-import { afterAll, beforeAll, describe, expect, it } from "vitest";
+import { beforeAll, describe, expect, it } from "vitest";
 import { NO_ANTENNA } from "~/measurement/antenna";
 import * as shapes from "~/routes/api/story-schemas";
 import { changeAntenna } from "~/services/antennas.server";
 import { changeBands } from "~/services/projects.server";
 import { askApi } from "./browser.ts";
 import { problemOf } from "./problem.ts";
-import {
-  type Crew,
-  closeWorld,
-  makeCrew,
-  makePlace,
-  type Place,
-  sendSweep,
-  tokenOf,
-  touchstone,
-} from "./world.ts";
+import { type Crew, makeCrew, makePlace, type Place, sendSweep, tokenOf, touchstone } from "./world.ts";
 
 /** The experiment's story in the API. */
 
@@ -42,7 +33,6 @@ beforeAll(async () => {
   await changeAntenna({ ...task, remark: "put up" });
   await changeBands(place.projectId, [{ name: "40 m", lowHz: 7e6, highHz: 7.05e6, swrLimit: 2 }]);
 });
-afterAll(closeWorld);
 
 function post(path: string, body: unknown, withToken = token): Promise<Response> {
   const headers = { "Content-Type": "application/json" };

@@ -3,14 +3,13 @@ import { mkdtempSync, rmSync, writeFileSync } from "node:fs";
 import { tmpdir } from "node:os";
 import path from "node:path";
 import { promisify } from "node:util";
-import { afterAll, beforeAll, describe, expect, it } from "vitest";
+import { beforeAll, describe, expect, it } from "vitest";
 import * as shapes from "~/routes/api/schemas";
 import { askApi } from "./browser.ts";
 import { problemOf } from "./problem.ts";
 import {
   addBareSweeps,
   type Crew,
-  closeWorld,
   makeCrew,
   makePlace,
   type Place,
@@ -30,7 +29,6 @@ beforeAll(async () => {
   place = await makePlace(crew, "private");
   token = await tokenOf(crew.owner);
 });
-afterAll(closeWorld);
 
 describe("reading", () => {
   it("lists projects, and one with its bands", async () => {

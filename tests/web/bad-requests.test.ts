@@ -1,7 +1,7 @@
-import { afterAll, beforeAll, expect, it } from "vitest";
+import { beforeAll, expect, it } from "vitest";
 import { createProject } from "~/services/projects.server";
 import { type Browser, SERVER } from "./browser.ts";
-import { closeWorld, makePerson, signIn, unique } from "./world.ts";
+import { makePerson, signIn, unique } from "./world.ts";
 
 /** What no page of this site sends is refused with a plain word, never answered as a fault of ours. */
 
@@ -19,7 +19,6 @@ beforeAll(async () => {
   };
   page = `/projects/${(await createProject(about, owner.id)).publicId}`;
 });
-afterAll(closeWorld);
 
 it.each(["PUT", "PATCH", "DELETE"])("%s is no method of a page", async (method) => {
   const answer = await fetch(new URL(page, SERVER), { method, headers: { Origin: SERVER } });

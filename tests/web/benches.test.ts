@@ -1,9 +1,9 @@
 import sharp from "sharp";
-import { afterAll, beforeAll, describe, expect, it } from "vitest";
+import { beforeAll, describe, expect, it } from "vitest";
 import * as projects from "~/db/projects.server";
 import { benchFile, GOOD_BRIDGE, POOR_BRIDGE } from "../bench-files.ts";
 import type { Browser } from "./browser.ts";
-import { type Crew, closeWorld, makeCrew, makePlace, type Place, signIn, unique } from "./world.ts";
+import { type Crew, makeCrew, makePlace, type Place, signIn, unique } from "./world.ts";
 
 /** Benches as plain forms send them, without scripts, and who may see and change whose. */
 
@@ -16,7 +16,6 @@ beforeAll(async () => {
   place = await makePlace(crew, "public", true);
   experimenter = await signIn(crew.experimenter);
 });
-afterAll(closeWorld);
 
 function fileOf(kind: "open" | "short" | "load" | "through", truth = GOOD_BRIDGE, salt = unique(kind)) {
   return new File([benchFile(truth, kind, ` ${salt}`)], `${kind}.csv`);

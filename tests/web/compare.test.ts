@@ -1,8 +1,7 @@
-import { afterAll, beforeAll, describe, expect, it } from "vitest";
+import { beforeAll, describe, expect, it } from "vitest";
 import { askApi, Browser } from "./browser.ts";
 import {
   type Crew,
-  closeWorld,
   makeCrew,
   makePerson,
   makePlace,
@@ -33,7 +32,6 @@ beforeAll(async () => {
   });
   second = (await sent.json()).id;
 });
-afterAll(closeWorld);
 
 const compare = (query: string) => `/projects/${here.project}/compare${query}`;
 /** Without the marks that part a sentence where a number was put in. */

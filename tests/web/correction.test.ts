@@ -1,17 +1,7 @@
-import { afterAll, beforeAll, describe, expect, it } from "vitest";
+import { beforeAll, describe, expect, it } from "vitest";
 import { benchFile, GOOD_BRIDGE } from "../bench-files.ts";
 import { askApi, type Browser } from "./browser.ts";
-import {
-  type Crew,
-  closeWorld,
-  makeCrew,
-  makePlace,
-  type Place,
-  sendSweep,
-  signIn,
-  tokenOf,
-  unique,
-} from "./world.ts";
+import { type Crew, makeCrew, makePlace, type Place, sendSweep, signIn, tokenOf, unique } from "./world.ts";
 
 /** A bench and a feedline on a sweep's page, its downloads and the API, without scripts. */
 
@@ -37,7 +27,6 @@ beforeAll(async () => {
   });
   bench = (answer.headers.get("Location") ?? "").split("/").at(-1) ?? "";
 });
-afterAll(closeWorld);
 
 async function send(fields: Record<string, string> = {}) {
   const text = benchFile(GOOD_BRIDGE, "antenna", ` ${unique("antenna")}`);

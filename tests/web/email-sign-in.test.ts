@@ -1,16 +1,14 @@
 import { eq } from "drizzle-orm";
-import { afterAll, describe, expect, it } from "vitest";
+import { describe, expect, it } from "vitest";
 import { db } from "~/db/client.server";
 import * as people from "~/db/people.server";
 import { emailCodes } from "~/db/schema";
 import { createUser } from "../../scripts/admin/accounts.ts";
 import { Browser } from "./browser.ts";
 import { codeFor, listTo, mailTo } from "./mails.ts";
-import { closeWorld, makePerson, signIn, unique } from "./world.ts";
+import { makePerson, signIn, unique } from "./world.ts";
 
 /** Signing in by a code in a mail, over HTTP, the mails read in the stand-in's inbox. */
-
-afterAll(closeWorld);
 
 const SESSION = "swale_session";
 const newAddress = (word = "new") => `${unique(word)}@fennmarsh.example`;

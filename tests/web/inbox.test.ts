@@ -1,7 +1,7 @@
-import { afterAll, beforeAll, describe, expect, it } from "vitest";
+import { beforeAll, describe, expect, it } from "vitest";
 import { Browser, SERVER } from "./browser.ts";
 import { listTo, mailTo, pathIn, textsTo } from "./mails.ts";
-import { type Crew, closeWorld, makeCrew, makePlace, type Place, signIn } from "./world.ts";
+import { type Crew, makeCrew, makePlace, type Place, signIn } from "./world.ts";
 
 /** From a note that names somebody to a mail, to the answer, to no more mails, over HTTP. */
 
@@ -15,7 +15,6 @@ beforeAll(async () => {
   place = await makePlace(crew, "private");
   [owner, named] = [await signIn(crew.owner), await signIn(crew.experimenter)];
 });
-afterAll(closeWorld);
 
 const addressOf = ({ userName }: { userName: string }) => `${userName}@example.com`;
 const sayTo = (userName: string, body: string) =>

@@ -1,5 +1,5 @@
 import { eq } from "drizzle-orm";
-import { afterAll, beforeAll, describe, expect, it } from "vitest";
+import { beforeAll, describe, expect, it } from "vitest";
 import * as blocks from "~/db/blocks.server";
 import { db } from "~/db/client.server";
 import * as people from "~/db/people.server";
@@ -8,7 +8,7 @@ import { invitations } from "~/db/schema";
 import { createProject } from "~/services/projects.server";
 import { Browser } from "./browser.ts";
 import { codeFor, listTo, mailTo, pathIn } from "./mails.ts";
-import { closeWorld, makePerson, type Someone, signIn, unique } from "./world.ts";
+import { makePerson, type Someone, signIn, unique } from "./world.ts";
 
 /** Invitations by mail and by link, handing a project over, and who was last there, over HTTP. */
 
@@ -25,7 +25,6 @@ beforeAll(async () => {
   project = await createProject({ title, summary: "", visibility: "private", ituRegion: null }, owner.id);
   members = `/projects/${project.publicId}/members`;
 });
-afterAll(closeWorld);
 
 const whereTo = (response: Response) => response.headers.get("Location");
 const newAddress = () => `${unique("guest")}@fennmarsh.example`;

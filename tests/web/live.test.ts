@@ -1,5 +1,5 @@
 import { createServer, request, type Server } from "node:http";
-import { afterAll, afterEach, beforeAll, describe, expect, it } from "vitest";
+import { afterEach, beforeAll, describe, expect, it } from "vitest";
 import * as sessions from "~/db/sessions.server";
 import type { LiveAnswer, LiveEvent } from "~/services/live-shape";
 import { writeNote } from "~/services/notes.server";
@@ -8,7 +8,7 @@ import { EventReader } from "../../scripts/trials/event-reader.ts";
 import { tryLive } from "../../scripts/trials/live.ts";
 import { startSecondServer } from "../../scripts/trials/second-server.ts";
 import { type Browser, SERVER } from "./browser.ts";
-import { type Crew, closeWorld, makeCrew, makePerson, makePlace, type Place, signIn } from "./world.ts";
+import { type Crew, makeCrew, makePerson, makePlace, type Place, signIn } from "./world.ts";
 
 let crew: Crew;
 let place: Place;
@@ -26,7 +26,6 @@ afterEach(() => {
     server.close();
   }
 });
-afterAll(closeWorld);
 
 const path = () => `/projects/${place.project}/live`;
 

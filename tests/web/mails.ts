@@ -18,12 +18,14 @@ export async function mailTo(address: string, count = 1): Promise<Mail> {
   return (await fetch(`${process.env.SWALE_MAIL_URL}/api/mails/${found[0].id}`)).json();
 }
 
-/** The texts of all mails to this address so far. */
+/** All mails to this address so far, in full. */
 export async function textsTo(address: string): Promise<string> {
   const mails = (await listTo(address)).map(
     async ({ id }): Promise<Mail> => (await fetch(`${process.env.SWALE_MAIL_URL}/api/mails/${id}`)).json(),
   );
-  return (await Promise.all(mails)).map(({ text }) => text).join("\n");
+  return (await Promise.all(mails))
+    .map(({ subject, text, html }) => `${subject}\n${text}\n${html}`)
+    .join("\n");
 }
 
 export async function listTo(address: string): Promise<MailSummary[]> {

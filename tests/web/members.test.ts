@@ -1,20 +1,11 @@
-import { afterAll, beforeAll, describe, expect, it } from "vitest";
+import { beforeAll, describe, expect, it } from "vitest";
 import * as files from "~/db/files.server";
 import * as people from "~/db/people.server";
 import * as projects from "~/db/projects.server";
 import { createProject } from "~/services/projects.server";
 import { getObject } from "~/services/storage.server";
 import type { Browser } from "./browser.ts";
-import {
-  closeWorld,
-  makePerson,
-  type Someone,
-  sendSweep,
-  signIn,
-  tokenOf,
-  touchstone,
-  unique,
-} from "./world.ts";
+import { makePerson, type Someone, sendSweep, signIn, tokenOf, touchstone, unique } from "./world.ts";
 
 /** Members, settings and deletion of a project, over HTTP. */
 
@@ -27,7 +18,6 @@ beforeAll(async () => {
   owner = await makePerson("owner");
   browser = await signIn(owner);
 });
-afterAll(closeWorld);
 
 async function makeProject(title = unique("Members")) {
   project = await createProject({ title, summary: "", visibility: "private", ituRegion: null }, owner.id);

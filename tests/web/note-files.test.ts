@@ -1,6 +1,6 @@
-import { afterAll, beforeAll, expect, it } from "vitest";
+import { beforeAll, expect, it } from "vitest";
 import type { Browser } from "./browser.ts";
-import { closeWorld, makeCrew, makePlace, onePixel, type Place, signIn, touchstone } from "./world.ts";
+import { makeCrew, makePlace, onePixel, type Place, signIn, touchstone } from "./world.ts";
 
 /** Files in a note from a browser without scripts: they go along with its form. */
 
@@ -12,7 +12,6 @@ beforeAll(async () => {
   place = await makePlace(crew, "private");
   browser = await signIn(crew.commenter);
 });
-afterAll(closeWorld);
 
 const page = () => `/projects/${place.project}`;
 const send = (file: File) =>

@@ -1,8 +1,8 @@
 import sharp from "sharp";
-import { afterAll, beforeAll, describe, expect, it } from "vitest";
+import { beforeAll, describe, expect, it } from "vitest";
 import { drawnScreen, PLOT } from "../drawn-screen.ts";
 import { askApi, Browser } from "./browser.ts";
-import { type Crew, closeWorld, makeCrew, makePlace, type Place, signIn, tokenOf, unique } from "./world.ts";
+import { type Crew, makeCrew, makePlace, type Place, signIn, tokenOf, unique } from "./world.ts";
 
 /** An invented photograph that says where it was taken, with what, and that it lies on its side. */
 async function telltale(salt: string): Promise<Buffer> {
@@ -35,8 +35,6 @@ beforeAll(async () => {
   sweep = /sweeps\/([^/]+)/.exec(events.at(-1)?.results?.[0].href ?? "")?.[1] ?? "";
   expect(sweep).not.toBe("");
 });
-
-afterAll(closeWorld);
 
 interface UploadEvent {
   stage?: string;

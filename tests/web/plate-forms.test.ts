@@ -1,8 +1,8 @@
-import { afterAll, beforeAll, describe, expect, it } from "vitest";
+import { beforeAll, describe, expect, it } from "vitest";
 import * as plates from "~/db/plates.server";
 import { withdraw } from "~/services/plates/withdraw.server";
 import { SERVER } from "./browser.ts";
-import { type Crew, closeWorld, freezePlate, makeCrew, makePlace } from "./world.ts";
+import { type Crew, freezePlate, makeCrew, makePlace } from "./world.ts";
 
 /** The forms of a plate of a private project, asked for by nobody in particular. */
 
@@ -18,7 +18,6 @@ beforeAll(async () => {
   const row = await plates.findByPublicId(gone);
   if (row) await withdraw(row, "The wrong antenna", crew.owner);
 });
-afterAll(closeWorld);
 
 const ask = (path: string, headers: Record<string, string> = {}) =>
   fetch(`${SERVER}${path}`, { headers, redirect: "manual" });

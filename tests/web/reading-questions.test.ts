@@ -1,9 +1,9 @@
 import { readFileSync } from "node:fs";
-import { afterAll, beforeAll, expect, it } from "vitest";
+import { beforeAll, expect, it } from "vitest";
 import * as sweeps from "~/db/sweeps.server";
 import { createProject } from "~/services/projects.server";
 import type { Browser } from "./browser.ts";
-import { closeWorld, makePerson, signIn, unique } from "./world.ts";
+import { makePerson, signIn, unique } from "./world.ts";
 
 /** A file that leaves two things open is read by two presses, one question each. */
 
@@ -17,7 +17,6 @@ beforeAll(async () => {
   const about = { title: unique("Questions"), summary: "", visibility: "private" as const, ituRegion: null };
   page = `/projects/${(await createProject(about, owner.id)).publicId}`;
 });
-afterAll(closeWorld);
 
 async function reading(publicId: string) {
   const found = await sweeps.findByPublicId(publicId);

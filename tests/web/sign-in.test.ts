@@ -1,12 +1,10 @@
-import { afterAll, describe, expect, it } from "vitest";
+import { describe, expect, it } from "vitest";
 import * as people from "~/db/people.server";
 import * as sessions from "~/db/sessions.server";
 import { Browser, SERVER } from "./browser.ts";
-import { closeWorld, makePerson, signIn, unique } from "./world.ts";
+import { makePerson, signIn, unique } from "./world.ts";
 
 /** Signing in against the stand-in for the provider, which checks state, code and client as the real one does. */
-
-afterAll(closeWorld);
 
 const SESSION = "swale_session";
 

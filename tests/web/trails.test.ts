@@ -1,19 +1,10 @@
-import { afterAll, beforeAll, describe, expect, it } from "vitest";
+import { beforeAll, describe, expect, it } from "vitest";
 import * as projects from "~/db/projects.server";
 import * as steps from "~/db/steps.server";
 import * as trails from "~/db/trails.server";
 import { createProject } from "~/services/projects.server";
 import { Browser } from "./browser.ts";
-import {
-  closeWorld,
-  makePerson,
-  type Someone,
-  sendSweep,
-  signIn,
-  tokenOf,
-  touchstone,
-  unique,
-} from "./world.ts";
+import { makePerson, type Someone, sendSweep, signIn, tokenOf, touchstone, unique } from "./world.ts";
 
 /** The strip map and the trails of a project of three sweeps, over HTTP. */
 
@@ -36,7 +27,6 @@ beforeAll(async () => {
     sent.push(await answer.json());
   }
 });
-afterAll(closeWorld);
 
 const textOf = async (path: string, by = browser) => {
   const answer = await by.get(path);

@@ -1,6 +1,6 @@
-import { afterAll, beforeAll, describe, expect, it } from "vitest";
+import { beforeAll, describe, expect, it } from "vitest";
 import { Browser, SERVER } from "./browser.ts";
-import { type Crew, closeWorld, makeCrew, makePlace, type Place, signIn, waitingMention } from "./world.ts";
+import { type Crew, makeCrew, makePlace, type Place, signIn, waitingMention } from "./world.ts";
 
 /** W3C Webmention over HTTP, as other sites meet it, and what an owner does with what came. */
 
@@ -13,7 +13,6 @@ beforeAll(async () => {
   place = await makePlace(crew, "public");
   target = `${SERVER}/write-ups/${place.writeUp}`;
 });
-afterAll(closeWorld);
 
 /** As another server sends it: no cookie, no origin, no page. */
 function send(fields: Record<string, string> | string, type?: string): Promise<Response> {

@@ -1,7 +1,7 @@
 import { createHash } from "node:crypto";
 import type { ProjectRole, Visibility } from "~/auth/permissions";
 import { startSession } from "~/auth/session.server";
-import { db, inTransaction, pool } from "~/db/client.server";
+import { db, inTransaction } from "~/db/client.server";
 import * as files from "~/db/files.server";
 import { newPublicId } from "~/db/ids.server";
 import * as notes from "~/db/notes.server";
@@ -91,6 +91,10 @@ export interface Place {
   writeUp: string;
   /** Of sweeps, begun. */
   batch: string;
+  /** Asked for where it is needed: `askForBundle`. */
+  bundle: string;
+  /** Made where it is asked for: `waitingMention`. */
+  mention: string;
   /** The secret of a link for readers. */
   invitation: string;
 }
@@ -124,6 +128,8 @@ export async function makePlace(crew: Crew, visibility: Visibility, empty = fals
       plate: "",
       writeUp: "",
       batch: "",
+      mention: "",
+      bundle: "",
     };
   const token = await tokenOf(crew.owner);
   const answer = await sendSweep(project.publicId, token, touchstone());
@@ -160,6 +166,8 @@ export async function makePlace(crew: Crew, visibility: Visibility, empty = fals
     plate: "",
     writeUp: await publishWriteUp(project.publicId, crew.owner),
     batch: await beginBatchOf(project, crew.owner),
+    mention: "",
+    bundle: "",
   };
 }
 
@@ -349,10 +357,6 @@ export async function rewriteDraft(place: Place): Promise<string> {
   const body = unique("Written anew");
   await writeUps.update(found.writeUp.id, { body });
   return revisionOf({ title, body });
-}
-
-export async function closeWorld(): Promise<void> {
-  await pool.end();
 }
 
 const ONE_PIXEL =

@@ -1,7 +1,7 @@
-import { afterAll, beforeAll, describe, expect, it } from "vitest";
+import { beforeAll, describe, expect, it } from "vitest";
 import { makeFeedToken } from "~/services/feed.server";
 import { askApi, Browser } from "./browser.ts";
-import { type Crew, closeWorld, makeCrew, makePlace, type Place, signIn, tokenOf, unique } from "./world.ts";
+import { type Crew, makeCrew, makePlace, type Place, signIn, tokenOf, unique } from "./world.ts";
 
 /** Write-ups as plain forms send them, without scripts, from a private project to readers outside. */
 
@@ -15,7 +15,6 @@ beforeAll(async () => {
   place = await makePlace(crew, "private");
   writer = await signIn(crew.experimenter);
 });
-afterAll(closeWorld);
 
 const base = () => `/projects/${place.project}/write-ups`;
 const textOf = async (response: Response | Promise<Response>) => (await response).text();
