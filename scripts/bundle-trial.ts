@@ -42,10 +42,10 @@ async function thereAndBack(name: string, projectId: number, keeper: number, kil
   const { createWriteStream } = await import("node:fs");
   console.log(`\n${name}`);
   const asked = await askForBundle(projectId, keeper);
-  if (kill) await killHalfWay(asked.publicId);
+  if (kill) await killHalfWay(asked.run.publicId);
   await timed("made", () => workOnBundles(undefined, kill ? 1 : undefined));
-  const offer = offered((await runs.findByPublicId(asked.publicId)) as Parameters<typeof offered>[0]);
-  if (!offer) throw new Error(JSON.stringify(await runs.findByPublicId(asked.publicId)));
+  const offer = offered((await runs.findByPublicId(asked.run.publicId)) as Parameters<typeof offered>[0]);
+  if (!offer) throw new Error(JSON.stringify(await runs.findByPublicId(asked.run.publicId)));
   const folder = mkdtempSync(path.join(tmpdir(), "bundle-trial-"));
   try {
     const zip = path.join(folder, "b.zip");
@@ -62,7 +62,7 @@ async function thereAndBack(name: string, projectId: number, keeper: number, kil
     const given = await giveBundle(keeper, createReadStream(zip));
     if (given.kind !== "given") throw new Error(given.kind);
     await timed("taken in", () => workOnBundles());
-    const run = await runs.findByPublicId(given.publicId);
+    const run = await runs.findByPublicId(given.run.publicId);
     if (run?.state !== "done") throw new Error(JSON.stringify(run));
     await report(projectId, run.projectId ?? 0);
   } finally {

@@ -1,4 +1,4 @@
-import { and, desc, eq } from "drizzle-orm";
+import { and, desc, eq, sql } from "drizzle-orm";
 import { db, type Queryable } from "./client.server.ts";
 import { bundleRuns, users } from "./schema/index.ts";
 
@@ -21,6 +21,8 @@ export async function findAllByProject(projectId: number, tx: Queryable = db) {
     .select({
       publicId: bundleRuns.publicId,
       state: bundleRuns.state,
+      /** Of the report, which may be long. */
+      phase: sql<string>`json_value(${bundleRuns.report}, '$.phase')`,
       doneParts: bundleRuns.doneParts,
       allParts: bundleRuns.allParts,
       createdAt: bundleRuns.createdAt,

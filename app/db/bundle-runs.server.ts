@@ -52,17 +52,19 @@ export async function findByUser(userId: number, kind: "import" | "mine", tx: Qu
     .limit(MOST_SHOWN);
 }
 
+/** Answers the run as it was written: by the time it is read again, work on it may have begun. */
 export async function insert(
   values: Pick<RunRow, "kind" | "projectId" | "userId" | "expiresAt"> & { storageKey?: string },
   tx: Queryable = db,
-) {
-  const publicId = newPublicId();
+): Promise<ShownRun> {
   const now = new Date();
-  const [row] = await tx
-    .insert(bundleRuns)
-    .values({ ...values, publicId, state: "waiting", createdAt: now, updatedAt: now })
-    .$returningId();
-  return { id: row.id, publicId };
+  const row = {
+    ...{ storageKey: null, ...values },
+    ...{ publicId: newPublicId(), state: "waiting" as const, doneParts: 0, allParts: 0, report: null },
+    ...{ createdAt: now, updatedAt: now },
+  };
+  const [{ id }] = await tx.insert(bundleRuns).values(row).$returningId();
+  return { id, ...row };
 }
 
 /**

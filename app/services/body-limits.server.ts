@@ -7,6 +7,8 @@ const FORM_BYTES = MEGABYTE;
 /** A whole project, which is read as a stream. */
 const BUNDLE_BYTES = 2049 * MEGABYTE;
 
+const OF_BUNDLES = new Set(["/projects/take-in", "/projects/take-in.data", "/api/v1/bundles/take-in"]);
+
 /** Refuses a body that is too large, or of unknown length, before a byte of it is read. */
 export function bodyLimits(request: Request, response: Response, next: NextFunction): void {
   const refusal = refusalOf(request);
@@ -31,7 +33,7 @@ function refusalOf(request: Request): { status: number; title: string; detail: s
   }
   const upload =
     /^\/(api\/v1\/)?projects\//.test(request.path) && request.is("multipart/form-data") !== false;
-  const bundle = request.path === "/projects/take-in" || request.path === "/projects/take-in.data";
+  const bundle = OF_BUNDLES.has(request.path);
   const limitBytes = bundle ? BUNDLE_BYTES : upload ? UPLOAD_BYTES : FORM_BYTES;
   if (Number(length) <= limitBytes) return undefined;
   const limit = `${limitBytes / MEGABYTE} MB`;

@@ -5,19 +5,29 @@ import { problem } from "./problem.ts";
 export const MAX_BODY_BYTES = MAX_FILE_BYTES + 1024 * 1024;
 
 /** Reads a multipart body, counting: what is too large is refused without being held. */
-export async function readMultipart(request: Request): Promise<FormData> {
+export async function readMultipart(
+  request: Request,
+  { field = "file", limitBytes = MAX_BODY_BYTES } = {},
+): Promise<FormData> {
   const type = request.headers.get("Content-Type") ?? "";
-  if (!/^multipart\/form-data\b/i.test(type)) {
-    const detail = "Send the file as multipart/form-data, in the field `file`. Nothing was stored.";
-    throw problem({ status: 415, code: "not-multipart", detail });
-  }
-  const bytes = await readUpTo(request, MAX_BODY_BYTES);
+  if (!/^multipart\/form-data\b/i.test(type)) throw notMultipart(field);
+  const bytes = await readUpTo(request, limitBytes);
   try {
     return await new Response(bytes, { headers: { "Content-Type": type } }).formData();
   } catch {
     const detail = "The body is not well-formed multipart/form-data. Nothing was stored.";
     throw problem({ status: 400, code: "bad-multipart", detail });
   }
+}
+
+export function notMultipart(field: string): Response {
+  const detail = `Send it as multipart/form-data, in the field \`${field}\`. Nothing was stored.`;
+  return problem({ status: 415, code: "not-multipart", detail });
+}
+
+/** The same as `readJson`, an empty object where nothing was sent. */
+export async function readJsonIfAny(request: Request): Promise<unknown> {
+  return request.headers.get("Content-Type") === null ? {} : readJson(request);
 }
 
 /** Reads a JSON body of at most a megabyte. */

@@ -7,7 +7,7 @@ import { attachment } from "~/services/file-names";
 import { redirectWithMessage } from "~/services/flash.server";
 import { log } from "~/services/log.server";
 
-/** A bundle as a download that can be gone on with (RFC 9110, range requests); one that is not kept any more leads back. */
+/** A bundle as a download; one that is not kept any more leads back. */
 export async function sendBundle(
   request: Request,
   run: ShownRun | undefined,
@@ -15,7 +15,15 @@ export async function sendBundle(
 ): Promise<Response> {
   const offer = run && offered(run);
   if (!offer) return redirectWithMessage(back, "That bundle is not kept any more. Make another one.");
-  const { sizeBytes, storageKey, name } = offer;
+  return bundleFile(request, run, offer);
+}
+
+/** The file of a run that offers one, in one go or from where it was broken off (RFC 9110, range requests). */
+export async function bundleFile(
+  request: Request,
+  run: Pick<ShownRun, "publicId">,
+  { sizeBytes, storageKey, name }: NonNullable<ReturnType<typeof offered>>,
+): Promise<Response> {
   const etag = `"${run.publicId}-${sizeBytes}"`;
   const headers = {
     "Content-Type": "application/zip",
@@ -34,6 +42,8 @@ export async function sendBundle(
     });
   }
   const [from, to] = range ?? [0, sizeBytes - 1];
+  if (request.method === "HEAD")
+    return new Response(null, { headers: { ...headers, "Content-Length": String(sizeBytes) } });
   const body = await begun(readPieces(storageKey, from, to)).catch((error) => {
     log.error({ err: error }, "a bundle could not be fetched from the store");
     throw unavailable(

@@ -11,19 +11,7 @@ export interface RowProblem {
   sweep?: string;
 }
 
-export type ProblemCode =
-  | "missing-file"
-  | "refused-file"
-  | "unreadable"
-  | "already-here"
-  | "same-file"
-  | "same-bytes"
-  | "long-title"
-  | "bad-date"
-  | "unknown-bench"
-  | "unknown-step"
-  | "planned-step"
-  | "same-step";
+export type ProblemCode = (typeof PROBLEM_CODES)[number];
 
 /** What rows may name: the benches that can be used in the project, and its steps. */
 export interface Named {
@@ -133,3 +121,18 @@ function placeOf({
 }
 
 const LONGEST_TITLE = 160;
+
+export const PROBLEM_CODES = [
+  "missing-file",
+  "refused-file",
+  "unreadable",
+  "already-here",
+  "same-file",
+  "same-bytes",
+  "long-title",
+  "bad-date",
+  "unknown-bench",
+  "unknown-step",
+  "planned-step",
+  "same-step",
+] as const;

@@ -1,7 +1,7 @@
 /** A batch as it is kept: what arrived, what the table says of it, what was found, what became of it. */
 
 export interface BatchReport {
-  phase: "receiving" | "checking" | "checked" | "taking" | "done";
+  phase: (typeof BATCH_PHASES)[number];
   files: BatchFile[];
   /** Null while there is no table. */
   table: { name: string; problem: string | null; remarks: string[] } | null;
@@ -63,6 +63,8 @@ export interface RowResult {
   sweep: string | null;
   words: string;
 }
+
+export const BATCH_PHASES = ["receiving", "checking", "checked", "taking", "done"] as const;
 
 export const EMPTY_REPORT: BatchReport = {
   phase: "receiving",

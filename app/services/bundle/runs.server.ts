@@ -9,28 +9,31 @@ import { PartUpload } from "./store.server.ts";
 /** Asking for bundles, and giving one. The work itself is done behind the pages. */
 
 /** One bundle of a project is made at a time; who asks for a second finds the first. */
-export function askForBundle(
-  projectId: number,
-  userId: number,
-): Promise<{ publicId: string; there: boolean }> {
+export function askForBundle(projectId: number, userId: number): Promise<Asked> {
   return inTransaction(async (tx) => {
     await projects.lock(projectId, tx);
     const open = (await runs.findExports(projectId, tx)).find(isOpen);
-    if (open) return { publicId: open.publicId, there: true };
-    const made = await runs.insert({ kind: "export", projectId, userId, expiresAt: expiry() }, tx);
-    return { publicId: made.publicId, there: false };
+    if (open) return { run: open, there: true };
+    const run = await runs.insert({ kind: "export", projectId, userId, expiresAt: expiry() }, tx);
+    return { run, there: false };
   });
 }
 
 /** The same for all data of a person. */
-export async function askForMine(userId: number): Promise<{ publicId: string; there: boolean }> {
+export async function askForMine(userId: number): Promise<Asked> {
   const open = (await runs.findByUser(userId, "mine")).find(isOpen);
-  if (open) return { publicId: open.publicId, there: true };
-  const made = await runs.insert({ kind: "mine", projectId: null, userId, expiresAt: expiry() });
-  return { publicId: made.publicId, there: false };
+  if (open) return { run: open, there: true };
+  const run = await runs.insert({ kind: "mine", projectId: null, userId, expiresAt: expiry() });
+  return { run, there: false };
 }
 
-export type Given = { kind: "given"; publicId: string } | { kind: "too-large" } | { kind: "too-many" };
+export interface Asked {
+  run: runs.ShownRun;
+  /** It was asked for before, and is under way. */
+  there: boolean;
+}
+
+export type Given = { kind: "given"; run: runs.ShownRun } | { kind: "too-large" } | { kind: "too-many" };
 
 /** Stores a bundle as it comes in, and notes that it is to be taken in. It is noted for removal first. */
 export async function giveBundle(userId: number, bytes: AsyncIterable<Uint8Array>): Promise<Given> {
@@ -55,21 +58,16 @@ export async function giveBundle(userId: number, bytes: AsyncIterable<Uint8Array
     await upload.abort();
     throw error;
   }
-  const made = await runs.insert({
-    kind: "import",
-    projectId: null,
-    userId,
-    expiresAt: expiry(),
-    storageKey: key,
-  });
-  return { kind: "given", publicId: made.publicId };
+  const about = { kind: "import" as const, projectId: null, userId, expiresAt: expiry(), storageKey: key };
+  return { kind: "given", run: await runs.insert(about) };
 }
 
-/** Takes a finished run away before its time, with what it offers. */
-export async function removeRun(run: runs.ShownRun): Promise<void> {
-  if (isOpen(run)) return;
+/** Takes a finished run away before its time, with what it offers; false where it is still under way. */
+export async function removeRun(run: runs.ShownRun): Promise<boolean> {
+  if (isOpen(run)) return false;
   await runs.deleteById(run.id);
   if (run.storageKey) await deleteObject(run.storageKey);
+  return true;
 }
 
 /** What a run offers, as long as it does. */

@@ -68,7 +68,8 @@ describe("a bundle whose making was broken off", () => {
   it("is gone on with after the last part, and is whole", async () => {
     const project = await largeProject();
     const asked = await askForBundle(project.id, ada.id);
-    expect(await askForBundle(project.id, ada.id)).toEqual({ publicId: asked.publicId, there: true });
+    const again = await askForBundle(project.id, ada.id);
+    expect([again.run.publicId, again.there]).toEqual([asked.run.publicId, true]);
     // The process dies at its second checkpoint: nothing of it is heard any more.
     const kept = runs.keep;
     let checkpoints = 0;
@@ -79,17 +80,17 @@ describe("a bundle whose making was broken off", () => {
     });
     await workOnBundles();
     dying.mockRestore();
-    const half = await runs.findByPublicId(asked.publicId);
+    const half = await runs.findByPublicId(asked.run.publicId);
     expect(half).toMatchObject({ state: "running", storageKey: null });
     expect(half?.doneParts).toBeGreaterThan(0);
     const begin = vi.spyOn(store.PartUpload, "begin");
     await workOnBundles(undefined, -1000);
     expect(begin).not.toHaveBeenCalled();
     begin.mockRestore();
-    const resumed = await bundleOf(asked.publicId);
+    const resumed = await bundleOf(asked.run.publicId);
     const given = await giveBundle(ada.id, Readable.from([resumed]));
     await workOnBundles();
-    expect(given.kind === "given" && (await runs.findByPublicId(given.publicId))?.state).toBe("done");
+    expect(given.kind === "given" && (await runs.findByPublicId(given.run.publicId))?.state).toBe("done");
   }, 90_000);
 
   it("leaves nothing in the store when its project is deleted", async () => {
@@ -116,11 +117,47 @@ describe("a bundle that is refused, or whose taking-in was broken off", () => {
     files["data/records/notes.json"] += " ";
     const given = await giveBundle(ada.id, Readable.from([await zipOf(Object.entries(files))]));
     await workOnBundles();
-    const run = given.kind === "given" ? await runs.findByPublicId(given.publicId) : undefined;
+    const run = given.kind === "given" ? await runs.findByPublicId(given.run.publicId) : undefined;
     expect(run?.state).toBe("failed");
     expect(run?.report).toEqual({
       faults: ["“data/records/notes.json” is not what it was when the bundle was made: its sum differs."],
     });
+    expect(await count()).toEqual(before);
+  });
+
+  it.each([
+    "a text longer than its column takes",
+    "one number twice",
+    "a text nested deep",
+    "a text nested without end",
+  ])("says so at once of %s, for trying again helps nobody", async (what) => {
+    const before = await count();
+    const at = "2026-05-03T00:00:00.000Z";
+    const draft = { id: "w2w2w2w2w2", title: "x", body: "", publishedNumber: null, takenBackAt: null };
+    const version = { writeUp: draft.id, number: 1, title: "x", body: "", frozen: "{}", remark: "" };
+    const nested = (deep: number) => `${"[".repeat(deep)}${"]".repeat(deep)}`;
+    const happened = { kind: "project.changed", actor: null, about: { title: "x" }, at };
+    const deeply = (deep: number) =>
+      JSON.stringify(happened).replace('"about":{', `"about":{"more":${nested(deep)},`);
+    const files = payload();
+    const put = (kind: string, lines: string[]) => {
+      files[`data/records/${kind}.json`] =
+        `{"kind":"${kind}","format":1,"records":[\n${lines.join(",\n")}\n]}\n`;
+    };
+    if (what.startsWith("a text longer")) {
+      const step = { id: "s2s2s2s2s2", title: "x", body: "x".repeat(100_000), state: "done", at };
+      const links = { beforeSweep: null, afterSweep: null, createdBy: null };
+      const rest = { quantities: [], expected: [], ...links, createdAt: at, updatedAt: at };
+      put("steps", [JSON.stringify({ ...step, ...rest })]);
+    } else if (what.startsWith("one number")) {
+      put("write-ups", [JSON.stringify({ ...draft, createdBy: null, createdAt: at, updatedAt: at })]);
+      const published = JSON.stringify({ ...version, publishedBy: null, publishedAt: at });
+      put("write-up-versions", [published, published]);
+    } else put("activity", [deeply(what.endsWith("end") ? 20_000 : 60)]);
+    const given = await giveBundle(ada.id, Readable.from([await zipOf(Object.entries(bagOf(files)))]));
+    await workOnBundles();
+    const run = given.kind === "given" ? await runs.findByPublicId(given.run.publicId) : undefined;
+    expect(run).toMatchObject({ state: "failed", report: { faults: [expect.any(String)] } });
     expect(await count()).toEqual(before);
   });
 
@@ -141,7 +178,7 @@ describe("a bundle that is refused, or whose taking-in was broken off", () => {
       (await db.select().from(schema.memberships)).some((row) => row.projectId === half.at(-1)?.id),
     ).toBe(false);
     await workOnBundles(undefined, -1000);
-    const run = await runs.findByPublicId(given.publicId);
+    const run = await runs.findByPublicId(given.run.publicId);
     expect(run?.state).toBe("done");
     expect((await db.select().from(schema.projects)).length).toBe(Number(before[0]) + 1);
   });
@@ -158,12 +195,12 @@ describe("all my data", () => {
     await takeIn({ project, by: bram, file: { name: "own.txt", bytes }, keepUnread: true });
     const asked = await askForMine(bram.id);
     await workOnBundles();
-    const zip = await bundleOf(asked.publicId);
+    const zip = await bundleOf(asked.run.publicId);
     expect(zip.includes("no numbers, but mine")).toBe(true);
     expect(zip.includes("data/profile.json")).toBe(true);
     await closeAccount(bram.id, "stay");
     await runDueJobs();
-    expect(await runs.findByPublicId(asked.publicId)).toBeUndefined();
-    expect((await objectKeys()).filter((key) => key.includes(asked.publicId))).toEqual([]);
+    expect(await runs.findByPublicId(asked.run.publicId)).toBeUndefined();
+    expect((await objectKeys()).filter((key) => key.includes(asked.run.publicId))).toEqual([]);
   });
 });

@@ -19,7 +19,7 @@ beforeAll(async () => {
   full = await makeFullProject(20);
   const asked = await askForBundle(full.project.id, full.ada.id);
   await workOnBundles();
-  const run = await runs.findByPublicId(asked.publicId);
+  const run = await runs.findByPublicId(asked.run.publicId);
   const offer = run && offered(run);
   if (!offer) throw new Error(`No bundle was made: ${JSON.stringify(run)}`);
   zip = Buffer.from(await getObject(offer.storageKey));
@@ -71,7 +71,7 @@ describe("a bundle", () => {
     const given = await giveBundle(full.bram.id, Readable.from([zip]));
     if (given.kind !== "given") throw new Error(given.kind);
     await workOnBundles();
-    const run = await runs.findByPublicId(given.publicId);
+    const run = await runs.findByPublicId(given.run.publicId);
     expect(run?.report).toMatchObject({ people: 2 });
     expect(run?.state).toBe("done");
     const compared = await compareProjects(full.project.id, run?.projectId ?? 0);
