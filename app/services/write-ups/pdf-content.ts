@@ -1,6 +1,6 @@
 import type { Token, Tokens } from "marked";
 import type { Footnotes } from "marked-footnote";
-import type { Content, ContentTable, TableCell } from "pdfmake/interfaces";
+import type { Content, ContentTable, ContentText, TableCell } from "pdfmake/interfaces";
 import type { FigureToken } from "../markdown-article.ts";
 import { DISPLAY, LAND, MONO, RULE, SMALL_SIZE, SOFT, TEXT_WIDTH } from "./pdf-looks.ts";
 import { inlineContent } from "./pdf-text.ts";
@@ -35,13 +35,15 @@ function block(token: Tokens.Generic, place: PdfPlace, count: Count): Content[] 
     case "heading":
       return [heading(inline(), token.depth)];
     case "paragraph":
-      return [{ text: inline(), margin: PARAGRAPH }];
+      return running(inline(), PARAGRAPH);
     case "text":
-      return [{ text: token.tokens ? inline() : token.text, margin: TIGHT }];
+      return running(token.tokens ? inline() : [{ text: token.text }], TIGHT);
     case "html":
       return [{ text: token.text.trim(), margin: PARAGRAPH }];
     case "code":
-      return [boxed({ text: token.text, font: MONO, fontSize: SMALL_SIZE, preserveLeadingSpaces: true })];
+      return running([{ text: token.text }], undefined, "\n").map((part) =>
+        boxed({ ...(part as ContentText), font: MONO, fontSize: SMALL_SIZE, preserveLeadingSpaces: true }),
+      );
     case "formulaBlock":
       return [{ text: token.tex, font: MONO, fontSize: SMALL_SIZE, alignment: "center", margin: PARAGRAPH }];
     case "blockquote":
@@ -59,6 +61,29 @@ function block(token: Tokens.Generic, place: PdfPlace, count: Count): Content[] 
     default:
       return [{ text: token.raw, margin: PARAGRAPH }];
   }
+}
+
+/** Running text, in parts where it is very long: setting takes the square of the words that it is given at once. */
+export function running(
+  pieces: readonly ContentText[],
+  margin?: [number, number, number, number],
+  between = " ",
+): Content[] {
+  const parts: ContentText[][] = [[]];
+  let room = MOST_AT_ONCE;
+  for (const piece of pieces) {
+    let words = String(piece.text);
+    while (words.length > room) {
+      const cut = words.lastIndexOf(between, room - 1) + 1 || room;
+      parts[parts.length - 1].push({ ...piece, text: words.slice(0, cut) });
+      words = words.slice(cut);
+      parts.push([]);
+      room = MOST_AT_ONCE;
+    }
+    parts[parts.length - 1].push({ ...piece, text: words });
+    room -= words.length;
+  }
+  return parts.map((text, i) => ({ text, ...(i === parts.length - 1 && { margin }) }));
 }
 
 function heading(text: Content[], depth: number): Content {
@@ -178,3 +203,5 @@ function footnotes({ items }: Footnotes, place: PdfPlace, count: Count): Content
 
 const PARAGRAPH: [number, number, number, number] = [0, 0, 0, 7];
 const TIGHT: [number, number, number, number] = [0, 0, 0, 2];
+/** Characters: some pages. Paragraphs seen have up to 3,000. */
+const MOST_AT_ONCE = 6000;
