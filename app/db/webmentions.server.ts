@@ -1,11 +1,13 @@
 import { createHash } from "node:crypto";
-import { and, count, desc, eq, inArray, or, sql } from "drizzle-orm";
+import { and, count, desc, eq, inArray, lt, or, type SQL, sql } from "drizzle-orm";
 import { db, type Queryable } from "./client.server.ts";
+import { decodeCursor, encodeCursor } from "./cursor.server.ts";
 import { newPublicId } from "./ids.server.ts";
 import { plates, projects, users, webmentions, writeUps } from "./schema/index.ts";
 
 export type MentionRow = typeof webmentions.$inferSelect;
 export type MentionState = MentionRow["state"];
+export const MENTION_STATES: readonly MentionState[] = webmentions.state.enumValues;
 
 /** What of ours is mentioned: row ids, one of them. */
 export type MentionOf = { plateId: number; writeUpId: null } | { plateId: null; writeUpId: number };
@@ -66,21 +68,37 @@ export async function findAllByProject(
   limit: number,
   tx: Queryable = db,
 ) {
-  return tx
-    .select({
-      mention: webmentions,
-      ...MENTIONED,
-      decidedBy: sql<string | null>`if(${users.closedAt} is null, ${users.name}, null)`,
-    })
-    .from(webmentions)
-    .leftJoin(plates, eq(plates.id, webmentions.plateId))
-    .leftJoin(writeUps, eq(writeUps.id, webmentions.writeUpId))
-    .leftJoin(users, eq(users.id, webmentions.decidedBy))
-    .where(and(isOf(projectId), inArray(webmentions.state, [...states])))
-    .orderBy(desc(webmentions.receivedAt), desc(webmentions.id))
-    .limit(limit);
+  return listed(and(isOf(projectId), inArray(webmentions.state, [...states])), limit, tx);
 }
 export type ListedMention = Awaited<ReturnType<typeof findAllByProject>>[number];
+
+/** The same in pages of at most 100. */
+export async function findPageByProject(
+  projectId: number,
+  states: readonly MentionState[],
+  cursor: string | undefined,
+  tx: Queryable = db,
+) {
+  const before = cursor ? decodeCursor(cursor) : undefined;
+  const older =
+    before &&
+    or(
+      lt(webmentions.receivedAt, before.at),
+      and(eq(webmentions.receivedAt, before.at), lt(webmentions.id, before.id)),
+    );
+  const wanted = and(isOf(projectId), inArray(webmentions.state, [...states]), older);
+  const rows = await listed(wanted, PAGE_ROWS + 1, tx);
+  const last = rows.length > PAGE_ROWS ? rows[PAGE_ROWS - 1].mention : undefined;
+  return {
+    rows: rows.slice(0, PAGE_ROWS),
+    nextCursor: last ? encodeCursor({ at: last.receivedAt, id: last.id }) : null,
+  };
+}
+
+/** As in a list; `findByPublicId` says whose it is. */
+export async function findListed(publicId: string, tx: Queryable = db): Promise<ListedMention | undefined> {
+  return (await listed(eq(webmentions.publicId, publicId), 1, tx))[0];
+}
 
 /** How many wait for the owner. */
 export async function countWaiting(projectId: number, tx: Queryable = db): Promise<number> {
@@ -105,6 +123,22 @@ export async function findShown(of: { plateId: number } | { writeUpId: number },
     .limit(MOST_SHOWN);
 }
 
+async function listed(wanted: SQL | undefined, limit: number, tx: Queryable) {
+  return tx
+    .select({
+      mention: webmentions,
+      ...MENTIONED,
+      decidedBy: sql<string | null>`if(${users.closedAt} is null, ${users.name}, null)`,
+    })
+    .from(webmentions)
+    .leftJoin(plates, eq(plates.id, webmentions.plateId))
+    .leftJoin(writeUps, eq(writeUps.id, webmentions.writeUpId))
+    .leftJoin(users, eq(users.id, webmentions.decidedBy))
+    .where(wanted)
+    .orderBy(desc(webmentions.receivedAt), desc(webmentions.id))
+    .limit(limit);
+}
+
 const isOf = (projectId: number) => or(eq(plates.projectId, projectId), eq(writeUps.projectId, projectId));
 
 const MENTIONED = {
@@ -113,4 +147,5 @@ const MENTIONED = {
   writeUp: { publicId: writeUps.publicId, title: writeUps.title },
 };
 
+const PAGE_ROWS = 100;
 const MOST_SHOWN = 200;

@@ -23,8 +23,8 @@ export type Ask =
   | { signedIn: ProjectAction }
   /** Of what anybody may read whatever the project is: refused, but never hidden. */
   | { plate: ProjectAction }
-  /** The API: the same table, asked by token. */
-  | { api: ProjectAction | "any-member" }
+  /** The API: the same table, asked by token; `open`: of what anybody may read, so refused but never hidden. */
+  | { api: ProjectAction | "any-member"; open?: true }
   /** Members only, whatever their role: leaving. */
   | { membership: true }
   /** The commenter who wrote the note, and who else may do it. */
@@ -55,7 +55,7 @@ export interface Case {
   /** The case destroys what it is asked of: it gets a project of its own for each role, empty or with a sweep, or a plate of its own. */
   destroys?: "project" | "sweep" | "plate";
   /** What who may ask is answered, where nothing is there to be done; else it is to succeed. */
-  answers?: 400;
+  answers?: 400 | 409;
   /** The case ends the account that asks: somebody new asks in place of each. */
   asNewcomer?: boolean;
 }
@@ -768,7 +768,21 @@ export const EXPECTATIONS: Record<string, Expectation> = {
 
   "routes/api/openapi.ts": { GET: anybody, POST: notHere },
   "routes/api/projects.ts": { GET: [{ ask: { api: "any-member" } }], POST: notHere },
-  "routes/api/project.ts": { GET: apiRead, POST: notHere },
+  "routes/api/project.ts": {
+    GET: apiRead,
+    POST: [{ ask: { api: "project.edit" }, json: () => ({ licence: "CC-BY-4.0" }) }],
+  },
+  "routes/api/dips.ts": { GET: apiRead, POST: notHere },
+  "routes/api/mentions.ts": { GET: apiRead, POST: notHere },
+  "routes/api/mentions-sent.ts": { GET: [{ ask: { api: "mention.moderate" } }], POST: notHere },
+  "routes/api/mention.ts": {
+    GET: [{ ask: { api: "mention.moderate" } }],
+    POST: (["show", "hide", "check"] as const).map((decision) => ({
+      name: decision,
+      ask: { api: "mention.moderate" as const },
+      json: () => ({ decision }),
+    })),
+  },
   "routes/api/sweeps.ts": {
     GET: apiRead,
     POST: [{ ask: { api: "sweep.add" }, form: () => ({ file: sweepFile() }) }],
@@ -780,7 +794,52 @@ export const EXPECTATIONS: Record<string, Expectation> = {
     GET: apiRead,
     POST: [{ ask: { api: "plate.make" }, json: () => ({ from: "strip", title: "From a script" }) }],
   },
+  "routes/api/batches.ts": {
+    GET: [{ ask: { api: "sweep.add" } }],
+    POST: [{ ask: { api: "sweep.add" }, form: () => ({ files: sweepFile() }) }],
+  },
+  "routes/api/batch.ts": {
+    GET: [{ ask: { api: "sweep.add" } }],
+    // An empty batch: those who may are told that it is not ready.
+    POST: [{ ask: { api: "sweep.add" }, json: () => ({}), answers: 409 }],
+  },
+  "routes/api/bundles.ts": {
+    GET: [{ ask: { api: "project.export" } }],
+    POST: [{ ask: { api: "project.export" } }],
+  },
+  "routes/api/bundle.ts": { GET: [{ ask: { api: "project.export" } }], POST: notHere },
+  // While it is not made yet, those who may are told so.
+  "routes/api/bundle-file.ts": { GET: [{ ask: { api: "project.export" }, answers: 409 }], POST: notHere },
+  "routes/api/bundle-take-in.ts": {
+    GET: [{ ask: { api: "any-member" } }],
+    POST: [{ ask: { api: "any-member" }, form: () => ({ bundle: new File(["no ZIP"], "walk.zip") }) }],
+  },
+  "routes/api/my-data.ts": {
+    GET: [{ ask: { api: "any-member" } }],
+    POST: [{ ask: { api: "any-member" } }],
+  },
   "routes/api/plate.ts": { GET: [{ ask: { api: "any-member" } }], POST: notHere },
+  "routes/api/plate-check.ts": { GET: [{ ask: { api: "any-member" } }], POST: notHere },
+  "routes/api/plate-withdrawal.ts": {
+    GET: notHere,
+    POST: [
+      {
+        ask: { api: "plate.make", open: true },
+        json: () => ({ reason: "A walk." }),
+        destroys: "plate",
+      },
+    ],
+  },
+  "routes/api/publication.ts": {
+    GET: notHere,
+    POST: [
+      {
+        ask: { api: "write-up.edit" },
+        prepare: ({ place }) => rewriteDraft(place),
+        json: ({ prepared }) => ({ revision: prepared }),
+      },
+    ],
+  },
   "routes/api/compare.ts": { GET: apiRead, POST: notHere },
   "routes/api/notes.ts": {
     GET: apiRead,

@@ -1,8 +1,8 @@
-import { afterAll, beforeAll, describe, expect, it } from "vitest";
+import { beforeAll, describe, expect, it } from "vitest";
 import { plateListShape, plateShape } from "~/routes/api/plate-schemas";
 import { askApi, Browser, SERVER } from "./browser.ts";
 import { problemOf } from "./problem.ts";
-import { type Crew, closeWorld, makeCrew, makePlace, type Place, signIn, tokenOf } from "./world.ts";
+import { type Crew, makeCrew, makePlace, type Place, signIn, tokenOf } from "./world.ts";
 
 /** Plates of a private project: made by API and by form, read by anyone, mended, withdrawn. */
 
@@ -15,7 +15,6 @@ beforeAll(async () => {
   place = await makePlace(crew, "private");
   token = await tokenOf(crew.experimenter);
 });
-afterAll(closeWorld);
 
 const make = (body: Record<string, unknown>) =>
   askApi(`/projects/${place.project}/plates`, token, {
@@ -39,7 +38,9 @@ describe("a plate by the API", () => {
     expect((await (await make(wanted)).json()).id).toBe(id);
     const read = await (await askApi(`/plates/${id}`, token)).json();
     expect(read).toEqual(plate);
-    expect(await (await new Browser().get(`/plates/${id}.json`)).json()).toEqual(plate);
+    const { versions, mentions, ...record } = plate;
+    expect([versions.map((one) => [one.id, one.version]), mentions]).toEqual([[[id, 1]], []]);
+    expect(await (await new Browser().get(`/plates/${id}.json`)).json()).toEqual(record);
     const list = plateListShape.parse(
       await (await askApi(`/projects/${place.project}/plates`, token)).json(),
     );

@@ -1,6 +1,11 @@
 import { z } from "zod";
 import { MAX_FILE_BYTES } from "~/readers/reading";
+import { BATCH_PATHS } from "./openapi-batches.ts";
+import { BUNDLE_PATHS } from "./openapi-bundles.ts";
 import { COMPARE_PATHS } from "./openapi-compare.ts";
+import { DIPS_PATHS } from "./openapi-dips.ts";
+import { FORM_PATHS } from "./openapi-forms.ts";
+import { MENTION_PATHS } from "./openapi-mentions.ts";
 import {
   CURSOR,
   componentSchemas,
@@ -27,11 +32,11 @@ export function openApiDocument(origin: string) {
       version: "1",
       summary: "Antenna sweeps, their dips, and what is said about them",
       description:
-        "Ids are short and public. Times are UTC. Unknown numbers are null, never zero. Lists hold at most 100 rows; give `nextCursor` back as `cursor` for the next page. Errors are RFC 9457 problem documents.",
+        "Paths under /api/v1 take a token and speak JSON; those outside of it are for everybody, without one. Ids are short and public. Times are UTC. Unknown numbers are null, never zero. Lists hold at most 100 rows; give `nextCursor` back as `cursor` for the next page. Errors are RFC 9457 problem documents.",
     },
-    servers: [{ url: `${origin}/api/v1` }],
+    servers: [{ url: origin }],
     security: [{ token: [] }],
-    paths: PATHS,
+    paths: { ...underApi(PATHS), ...FORM_PATHS },
     components: {
       securitySchemes: {
         token: {
@@ -45,6 +50,10 @@ export function openApiDocument(origin: string) {
       responses: { Problem: problemResponse() },
     },
   };
+}
+
+function underApi(paths: Record<string, PathItem>): Record<string, PathItem> {
+  return Object.fromEntries(Object.entries(paths).map(([path, item]) => [`/api/v1${path}`, item]));
 }
 
 function uploadBody() {
@@ -92,6 +101,17 @@ const PATHS: Record<string, PathItem> = {
       summary: "One project",
       parameters: [inPath("project")],
       answer: "ProjectWithBands",
+    }),
+    post: operation({
+      operationId: "changeProject",
+      summary: "Choose the licence that new plates and write-ups of it are under",
+      parameters: [inPath("project")],
+      requestBody: {
+        required: true,
+        content: { "application/json": { schema: reference("ProjectChange") } },
+      },
+      answer: "ProjectWithBands",
+      refusals: ["400", "411", "413", "415", "422"],
     }),
   },
   "/projects/{project}/sweeps": {
@@ -147,6 +167,10 @@ const PATHS: Record<string, PathItem> = {
   },
   ...STORY_PATHS,
   ...COMPARE_PATHS,
+  ...DIPS_PATHS,
   ...PLATE_PATHS,
   ...WRITE_UP_PATHS,
+  ...MENTION_PATHS,
+  ...BATCH_PATHS,
+  ...BUNDLE_PATHS,
 };

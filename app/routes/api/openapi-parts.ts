@@ -1,5 +1,10 @@
 import { z } from "zod";
+import * as batches from "./batch-schemas.ts";
+import * as bundles from "./bundle-schemas.ts";
 import * as compare from "./compare-schemas.ts";
+import * as dips from "./dips-schemas.ts";
+import { oembedShape } from "./form-schemas.ts";
+import * as mentions from "./mention-schemas.ts";
 import * as plates from "./plate-schemas.ts";
 import * as shapes from "./schemas.ts";
 import * as story from "./story-schemas.ts";
@@ -40,10 +45,27 @@ const COMPONENTS = {
   Plate: plates.plateShape,
   PlateList: plates.plateListShape,
   NewPlate: plates.newPlateSchema,
+  PlateRecord: plates.plateRecordShape,
+  PlateCheck: plates.plateCheckShape,
+  PlateWithdrawal: plates.plateWithdrawalSchema,
+  WithdrawnPlate: plates.withdrawnPlateShape,
+  ProjectChange: shapes.projectChangeSchema,
+  DipTable: dips.dipTableShape,
+  Mention: mentions.mentionShape,
+  MentionList: mentions.mentionListShape,
+  MentionDecision: mentions.mentionDecisionSchema,
+  SentMentionList: mentions.sentMentionListShape,
+  Oembed: oembedShape,
   WriteUp: writeUps.writeUpShape,
   WriteUpList: writeUps.writeUpListShape,
   NewWriteUp: writeUps.newWriteUpSchema,
   WriteUpChange: writeUps.writeUpChangeSchema,
+  Publication: writeUps.publicationSchema,
+  Batch: batches.batchShape,
+  BatchList: batches.batchListShape,
+  TakeBatch: batches.takeBatchSchema,
+  Bundle: bundles.bundleShape,
+  BundleList: bundles.bundleListShape,
 } satisfies Record<string, z.ZodType>;
 
 /** What an answer of that name is checked with. */

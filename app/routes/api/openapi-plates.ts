@@ -1,7 +1,7 @@
-import { inPath, type Operation, operation, reference } from "./openapi-parts.ts";
+import { inPath, operation, type PathItem, reference } from "./openapi-parts.ts";
 
 /** Paths of the OpenAPI document about plates. */
-export const PLATE_PATHS: Record<string, { get?: Operation; post?: Operation }> = {
+export const PLATE_PATHS: Record<string, PathItem> = {
   "/projects/{project}/plates": {
     get: operation({
       operationId: "listPlates",
@@ -22,10 +22,34 @@ export const PLATE_PATHS: Record<string, { get?: Operation; post?: Operation }> 
   "/plates/{plate}": {
     get: operation({
       operationId: "getPlate",
-      summary: "A plate as it was frozen; 410 with the reason where it was withdrawn",
+      summary:
+        "A plate as it was frozen, with its versions and with who cites it; 410 with the reason where it was withdrawn",
       parameters: [inPath("plate")],
       answer: "Plate",
       refusals: ["410"],
+    }),
+  },
+  "/plates/{plate}/check": {
+    get: operation({
+      operationId: "checkPlate",
+      summary:
+        "Compute it again from its stored originals, and say what comes out otherwise; changes nothing",
+      parameters: [inPath("plate")],
+      answer: "PlateCheck",
+      refusals: ["410"],
+    }),
+  },
+  "/plates/{plate}/withdrawal": {
+    post: operation({
+      operationId: "withdrawPlate",
+      summary: "Withdraw it for good: its address says why from then on",
+      parameters: [inPath("plate")],
+      requestBody: {
+        required: true,
+        content: { "application/json": { schema: reference("PlateWithdrawal") } },
+      },
+      answer: "WithdrawnPlate",
+      refusals: ["400", "410", "411", "413", "415", "422"],
     }),
   },
 };

@@ -1,8 +1,8 @@
-import { inPath, inQuery, type Operation, operation, reference } from "./openapi-parts.ts";
+import { inPath, inQuery, operation, type PathItem, reference } from "./openapi-parts.ts";
 import { writeUpQuerySchema } from "./write-up-schemas.ts";
 
 /** Paths of the OpenAPI document for write-ups. */
-export const WRITE_UP_PATHS: Record<string, { get?: Operation; post?: Operation }> = {
+export const WRITE_UP_PATHS: Record<string, PathItem> = {
   "/projects/{project}/write-ups": {
     get: operation({
       operationId: "listWriteUps",
@@ -13,7 +13,7 @@ export const WRITE_UP_PATHS: Record<string, { get?: Operation; post?: Operation 
     }),
     post: operation({
       operationId: "makeWriteUp",
-      summary: "Begin a write-up; it is a draft until somebody publishes it on its page",
+      summary: "Begin a write-up; it is a draft until somebody publishes it",
       parameters: [inPath("project")],
       requestBody: {
         required: true,
@@ -42,6 +42,36 @@ export const WRITE_UP_PATHS: Record<string, { get?: Operation; post?: Operation 
       },
       answer: "WriteUp",
       refusals: ["400", "409", "411", "413", "415", "422"],
+    }),
+    delete: operation({
+      operationId: "deleteWriteUp",
+      summary: "Delete a draft; what was published once stays, and can be taken back",
+      parameters: [inPath("writeUp")],
+      status: "204",
+      answer: null,
+      refusals: ["409"],
+    }),
+  },
+  "/write-ups/{writeUp}/publication": {
+    post: operation({
+      operationId: "publishWriteUp",
+      summary:
+        "Publish the draft as its next version, with its figures and numbers kept as they are now; anyone who has its address reads it from then on, also of a private project",
+      parameters: [inPath("writeUp")],
+      requestBody: {
+        required: true,
+        content: { "application/json": { schema: reference("Publication") } },
+      },
+      answer: "WriteUp",
+      refusals: ["400", "409", "411", "413", "415", "422"],
+    }),
+    delete: operation({
+      operationId: "takeWriteUpBack",
+      summary: "Take back what is published; its address says so, the draft and the versions stay",
+      parameters: [inPath("writeUp")],
+      status: "204",
+      answer: null,
+      refusals: ["409"],
     }),
   },
 };

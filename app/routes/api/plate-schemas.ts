@@ -1,7 +1,9 @@
 import { z } from "zod";
+import { withdrawSchema } from "~/routes/plates/plates.schema";
 import { LICENCE_IDS } from "~/services/plates/licences";
 import { plateRecord } from "~/services/plates/record";
 import { PLATE_KINDS } from "~/services/plates/subject";
+import { shownMentionShape } from "./mention-schemas.ts";
 
 /** The shapes of the API for plates. */
 
@@ -57,5 +59,49 @@ export const plateSummaryShape = z.object({
 
 export const plateListShape = z.object({ items: z.array(plateSummaryShape) });
 
-/** The JSON form of the plate as it was frozen. */
-export const plateShape = plateRecord;
+/** The plate as it was frozen, which is its JSON form, and beside it what has come since. */
+export const plateShape = plateRecord.extend({
+  versions: z
+    .array(
+      z.object({
+        id: z.string(),
+        version: z.number().int(),
+        madeAt: z.iso.datetime(),
+        withdrawnAt: z.iso.datetime().nullable(),
+      }),
+    )
+    .describe("Every version of this plate, oldest first, itself among them"),
+  mentions: z
+    .array(shownMentionShape)
+    .describe("Pages elsewhere that cite this version, as its page shows them"),
+});
+
+/** The JSON form, which never changes. */
+export const plateRecordShape = plateRecord;
+
+export const plateWithdrawalSchema = z.strictObject({ reason: withdrawSchema.shape.reason });
+
+/** What stays of a plate that was withdrawn. */
+export const withdrawnPlateShape = z.object({
+  id: z.string(),
+  number: z.number().int(),
+  version: z.number().int(),
+  title: z.string(),
+  withdrawnAt: z.iso.datetime(),
+  reason: z.string(),
+  newer: z.string().nullable().describe("Id of the newest later version that stands; null for none"),
+});
+
+const held = z.union([z.string(), z.number()]).nullable();
+
+export const plateCheckShape = z.object({
+  same: z.boolean().describe("True: every number came out as it was frozen, to the last digit"),
+  differences: z.array(
+    z.object({
+      what: z.string(),
+      frozen: held,
+      now: held,
+      why: z.string().describe("Why, and by how much where that can be said"),
+    }),
+  ),
+});

@@ -1,19 +1,10 @@
-import * as plates from "~/db/plates.server";
-import { parseRecord } from "~/services/plates/record";
-import { absent } from "./access.server.ts";
 import { endpoint } from "./endpoint.server.ts";
-import { problem } from "./problem.ts";
+import { requireStanding } from "./plate-access.server.ts";
+import { shapePlate } from "./plate-shapes.server.ts";
 
 /** A plate as it was frozen, for whoever has a token: plates are read by anyone. */
 const handle = endpoint({
-  GET: async (call) => {
-    const found = await plates.findByPublicId(call.params.plate ?? "");
-    if (!found) throw absent("plate");
-    if (!found.withdrawnAt) return Response.json(parseRecord(found.record));
-    const day = found.withdrawnAt.toISOString().slice(0, 10);
-    const detail = `This plate was withdrawn on ${day}: ${found.withdrawnReason}`;
-    throw problem({ status: 410, code: "withdrawn", detail });
-  },
+  GET: async (call) => Response.json(await shapePlate(await requireStanding(call))),
 });
 
 export const loader = handle;

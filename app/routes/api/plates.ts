@@ -9,7 +9,7 @@ import { type Call, endpoint } from "./endpoint.server.ts";
 import { invalid } from "./invalid.ts";
 import { readJson } from "./multipart.server.ts";
 import { newPlateSchema } from "./plate-schemas.ts";
-import { shapePlateSummary } from "./plate-shapes.server.ts";
+import { shapePlate, shapePlateSummary } from "./plate-shapes.server.ts";
 
 const handle = endpoint({ GET: list, POST: make });
 
@@ -49,7 +49,7 @@ async function make(call: Call): Promise<Response> {
   const found = await plates.findByPublicId(made.publicId);
   if (!found) throw new Error("The plate that was just made is not there.");
   const headers = { Location: `/api/v1/plates/${made.publicId}` };
-  return Response.json(parseRecord(found.record), { status: 201, headers });
+  return Response.json(await shapePlate(found), { status: 201, headers });
 }
 
 async function requireMended(projectId: number, publicId: string): Promise<plates.PlateRow> {

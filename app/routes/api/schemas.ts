@@ -1,5 +1,6 @@
 import { z } from "zod";
 import { LIMIT_SOURCES } from "~/measurement/sweep";
+import { LICENCE_IDS } from "~/services/plates/licences";
 
 /** The shapes of the API: what answers hold, and where the OpenAPI document comes from. */
 
@@ -33,7 +34,14 @@ export const projectShape = z.object({
 });
 
 export const projectWithBandsShape = projectShape.extend({
+  licence: z
+    .enum(LICENCE_IDS)
+    .describe("Proposed for new plates, and the one of write-ups when they are published"),
   designBands: z.array(z.object({ name: z.string(), lowHz: hz, highHz: hz, swrLimit: z.number() })),
+});
+
+export const projectChangeSchema = z.strictObject({
+  licence: z.enum(LICENCE_IDS).describe("What is made later is under it; what is there keeps its own"),
 });
 
 export const projectListShape = z.object({

@@ -156,7 +156,12 @@ export function shapeCorrection(stored: StoredCorrection | null): z.output<typeo
   };
 }
 
-function shapeDip({ dip, noteCount }: dips.ListedDip, project: string): z.output<typeof shapes.dipShape> {
+interface ToldDip {
+  dip: Pick<dips.ListedDip["dip"], "publicId" | "numbers" | "verdict" | "verdictText">;
+  noteCount: number;
+}
+
+export function shapeDip({ dip, noteCount }: ToldDip, project: string): z.output<typeof shapes.dipShape> {
   const numbers: Dip = dip.numbers;
   return {
     id: dip.publicId,

@@ -1,6 +1,8 @@
 import { z } from "zod";
 import { titleField } from "~/routes/write-ups/write-ups.schema";
+import { plainText } from "~/services/file-names";
 import { MAX_WRITE_UP_CHARACTERS } from "~/services/note-limits";
+import { shownMentionShape } from "./mention-schemas.ts";
 
 /** The shapes of the API for write-ups. */
 
@@ -15,7 +17,11 @@ export const writeUpSummaryShape = z.object({
   state: z
     .enum(["draft", "published", "taken-back"])
     .describe("Drafts are listed for those who may write them"),
-  version: z.number().int().nullable().describe("The published one; null where none is"),
+  version: z
+    .number()
+    .int()
+    .nullable()
+    .describe("The published one, or the one that was asked for; null where none is"),
   publishedAt: time.nullable(),
   updatedAt: time.describe("Last written in"),
   address: z.string().describe("Where it is read once it is published; answers 410 while it is taken back"),
@@ -24,6 +30,18 @@ export const writeUpSummaryShape = z.object({
 export const writeUpListShape = z.object({ items: z.array(writeUpSummaryShape) });
 
 export const writeUpShape = writeUpSummaryShape.extend({
+  versions: z
+    .array(
+      z.object({
+        version: z.number().int(),
+        title: z.string(),
+        remark: z.string(),
+        publishedAt: time,
+        publishedBy: z.string().nullable(),
+      }),
+    )
+    .describe("Every version that was published, newest first"),
+  mentions: z.array(shownMentionShape).describe("Pages elsewhere that cite it, as its page shows them"),
   body: z.string().describe("Markdown: the published text, or with `draft=yes` as it is being written"),
   revision: z.string().describe("Of title and text; send it back with a change"),
 });
@@ -43,4 +61,14 @@ export const writeUpChangeSchema = z.object({
 
 export const writeUpQuerySchema = z.object({
   draft: z.literal("yes").optional().describe("As it is being written, for those who may write it"),
+  version: z
+    .string()
+    .regex(/^[1-9]\d{0,5}$/, "A number from 1.")
+    .optional()
+    .describe("The text of a version that was published; without it the one that counts"),
+});
+
+export const publicationSchema = z.strictObject({
+  revision: z.string().max(40).describe("Of the draft that was looked at; 409 where it is another by now"),
+  remark: z.string().overwrite(plainText).max(300).default("").describe("What changed, in a line"),
 });

@@ -1,7 +1,9 @@
 import type { z } from "zod";
 import type * as writeUps from "~/db/write-ups.server";
 import { env } from "~/env.server";
+import type { ShownMention } from "~/services/webmention/shown.server";
 import { revisionOf } from "~/services/write-ups/publish.server";
+import { shapeShownMention } from "./mention-shapes.server.ts";
 import type { writeUpShape, writeUpSummaryShape } from "./write-up-schemas.ts";
 
 type Row = Pick<
@@ -23,13 +25,27 @@ export function shapeWriteUpSummary(row: Row, project: string): z.infer<typeof w
   };
 }
 
+interface Beside {
+  versions: Awaited<ReturnType<typeof writeUps.findVersions>>;
+  mentions: ShownMention[];
+}
+
 export function shapeWriteUp(
   row: Row,
   text: { title: string; body: string },
   project: string,
+  { versions, mentions }: Beside = { versions: [], mentions: [] },
 ): z.infer<typeof writeUpShape> {
   return {
     ...shapeWriteUpSummary({ ...row, title: text.title }, project),
+    versions: versions.map(({ number, title, remark, publishedAt, by }) => ({
+      version: number,
+      title,
+      remark,
+      publishedAt: publishedAt.toISOString(),
+      publishedBy: by,
+    })),
+    mentions: mentions.map(shapeShownMention),
     body: text.body,
     revision: revisionOf(text),
   };

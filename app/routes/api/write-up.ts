@@ -1,15 +1,15 @@
 import * as writeUps from "~/db/write-ups.server";
-import { changeDraft } from "~/services/write-ups/drafts.server";
+import { changeDraft, deleteDraft } from "~/services/write-ups/drafts.server";
 import { revisionOf } from "~/services/write-ups/publish.server";
 import { absent, requireProjectOf } from "./access.server.ts";
 import { type Call, endpoint } from "./endpoint.server.ts";
 import { invalid } from "./invalid.ts";
 import { readJson } from "./multipart.server.ts";
 import { problem } from "./problem.ts";
+import { answerDraft, answerPublished, findWriteUp, requireWriter } from "./write-up-access.server.ts";
 import { writeUpChangeSchema, writeUpQuerySchema } from "./write-up-schemas.ts";
-import { shapeWriteUp } from "./write-up-shapes.server.ts";
 
-const handle = endpoint({ GET: read, POST: change });
+const handle = endpoint({ GET: read, POST: change, DELETE: remove });
 
 export const loader = handle;
 export const action = handle;
@@ -17,19 +17,23 @@ export const action = handle;
 async function read(call: Call): Promise<Response> {
   const parsed = writeUpQuerySchema.safeParse(Object.fromEntries(call.query));
   if (!parsed.success) throw invalid(parsed.error);
-  const found = await find(call);
-  const published = await publishedOf(found.writeUp);
-  if (parsed.data.draft === undefined && published) {
-    const row = { ...found.writeUp, publishedAt: published.publishedAt };
-    return Response.json(shapeWriteUp(row, published, found.project.publicId));
+  const { draft, version } = parsed.data;
+  const found = await findWriteUp(call);
+  const { id, publishedNumber } = found.writeUp;
+  if (draft === undefined && publishedNumber !== null) {
+    const wanted = await writeUps.findVersion(id, version === undefined ? publishedNumber : Number(version));
+    if (!wanted) throw absent("version of this write-up");
+    return answerPublished(found, wanted.version);
   }
   await requireProjectOf(call, found.project.id, "write-up.edit", "write-up");
-  return answerDraft(found);
+  if (version === undefined) return answerDraft(found);
+  const wanted = await writeUps.findVersion(id, Number(version));
+  if (!wanted) throw absent("version of this write-up");
+  return answerPublished(found, wanted.version);
 }
 
 async function change(call: Call): Promise<Response> {
-  const { writeUp, project } = await find(call);
-  await requireProjectOf(call, project.id, "write-up.edit", "write-up");
+  const { writeUp, project } = await requireWriter(call);
   const parsed = writeUpChangeSchema.safeParse(await readJson(call.request));
   if (!parsed.success) throw invalid(parsed.error);
   const { title = writeUp.title, body = writeUp.body, revision } = parsed.data;
@@ -38,24 +42,16 @@ async function change(call: Call): Promise<Response> {
   const outcome = await changeDraft(writeUp.id, project, was, { title, body });
   if (outcome.kind === "gone") throw absent("write-up");
   if (outcome.kind === "conflict") throw elsewhere();
-  return answerDraft(await find(call));
+  return answerDraft(await findWriteUp(call));
 }
 
-async function find(call: Call): Promise<writeUps.FoundWriteUp> {
-  const found = await writeUps.findByPublicId(call.params.writeUp ?? "");
-  if (!found) throw absent("write-up");
-  return found;
-}
-
-async function answerDraft({ writeUp, project }: writeUps.FoundWriteUp): Promise<Response> {
-  const published = await publishedOf(writeUp);
-  const row = { ...writeUp, publishedAt: published?.publishedAt ?? null };
-  return Response.json(shapeWriteUp(row, writeUp, project.publicId));
-}
-
-async function publishedOf({ id, publishedNumber }: writeUps.WriteUpRow) {
-  if (publishedNumber === null) return undefined;
-  return (await writeUps.findVersion(id, publishedNumber))?.version;
+async function remove(call: Call): Promise<Response> {
+  const { writeUp } = await requireWriter(call);
+  const removal = await deleteDraft(writeUp.id);
+  if (removal === "gone") throw absent("write-up");
+  if (removal === "removed") return new Response(null, { status: 204 });
+  const detail = "It was published once, so it stays; it can be taken back. Nothing was changed.";
+  throw problem({ status: 409, code: "published-once", detail });
 }
 
 function elsewhere(): Response {

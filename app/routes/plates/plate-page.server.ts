@@ -14,7 +14,10 @@ import { subjectOf } from "~/services/plates/subject";
 import { shownMentions } from "~/services/webmention/shown.server";
 
 /** The plate at an address, with what this person may do with it; 404 where there is none. */
-export async function findPlate(publicId: string | undefined, person: Person | null) {
+export async function findPlate(
+  publicId: string | undefined,
+  person: Pick<Person, "id" | "administrator"> | null,
+) {
   const plate = await plates.findByPublicId(publicId ?? "");
   if (!plate) throw notFound("plate");
   const project = plate.projectId
@@ -99,6 +102,7 @@ export async function loadPlatePage({ plate, project, role, mayWithdraw }: Found
     },
   };
 }
+export type PlatePageData = Awaited<ReturnType<typeof loadPlatePage>>;
 
 function drawn(form: Awaited<ReturnType<typeof readForm>>): string | null {
   return form && form !== "withdrawn" ? onPage(form.bytes.toString("utf8")) : null;

@@ -37,6 +37,15 @@ describe("curlOf of other methods and files", () => {
     expect(curlOf(about, "/v1", "POST")).toContain("-X POST");
     expect(curlOf({ ...about, json: {} }, "/v1", "POST")).not.toContain("-X");
     expect(curlOf({ ...about, saves: "reeds.zip" }, "/v1")).toContain("-o reeds.zip");
+    const open = { operation: "x", says: "", path: "/plates/k3f", open: true as const, accept: "text/csv" };
+    expect(curlOf(open, "https://swale.example/api/v1").split(" \\\n  ")).toEqual([
+      "curl",
+      "-H 'Accept: text/csv'",
+      "https://swale.example/plates/k3f",
+    ]);
+    expect(curlOf({ ...open, form: { source: "a&b" } }, "/v1", "POST")).toContain(
+      "--data-urlencode 'source=a&b'",
+    );
     const files = [
       { field: "files", name: "a.s1p" },
       { field: "table", name: "t.csv" },
@@ -47,11 +56,11 @@ describe("curlOf of other methods and files", () => {
 
 describe("the examples", () => {
   it("name what they take from others once it is there", () => {
-    const given = new Set<string>();
-    for (const { path, json, keep } of examples) {
-      const taken = [...`${path} ${JSON.stringify(json ?? "")}`.matchAll(/\{([a-z]\w*)\}/gi)].map(
-        ([, name]) => name,
-      );
+    const given = new Set<string>(["origin"]);
+    for (const { path, json, form, keep } of examples) {
+      const taken = [
+        ...`${path} ${JSON.stringify([json ?? "", form ?? ""])}`.matchAll(/\{([a-z]\w*)\}/gi),
+      ].map(([, name]) => name);
       expect([...given]).toEqual(expect.arrayContaining(taken));
       for (const name of Object.keys(keep ?? {})) given.add(name);
     }
@@ -69,7 +78,7 @@ describe("the examples", () => {
     for (const { key, command, answer } of calls.flatMap((call) => call.examples)) {
       expect(command, key).not.toMatch(/\/\{|:\{[a-z]+\}/i);
       // JSON, or words for what is none.
-      if (!/^(Nothing$|[a-z]+\/[a-z-]+, saved as )/.test(answer))
+      if (!/^(Nothing$|[a-z]+\/[\w.+-]+, saved as )/.test(answer))
         expect(JSON.parse(answer), key).toBeTypeOf("object");
     }
   });

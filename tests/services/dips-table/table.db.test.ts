@@ -10,7 +10,7 @@ import * as projects from "~/db/projects.server";
 import { dips, files, sweeps } from "~/db/schema/index";
 import { analyse } from "~/measurement/analyse";
 import type { Dip } from "~/measurement/sweep";
-import { type DipsAsked, dipsCsv, dipsPage } from "~/services/dips-table/table.server";
+import { type DipsAsked, dipsBehind, dipsCsv, dipsPage } from "~/services/dips-table/table.server";
 import { createProject } from "~/services/projects.server";
 
 const ALL: DipsAsked = {
@@ -102,6 +102,20 @@ describe("dipsPage", () => {
     expect([last.rows.length, last.more]).toEqual([100, false]);
     expect(first.rows[0].numbers.frequencyHz).toBe(3e6);
     expect(last.rows[99].numbers.frequencyHz).toBe(52.99e6);
+  });
+
+  it("goes on behind a place, and ends", async () => {
+    const asked = { ...ALL, swrUnder: 1.2 };
+    const seen: number[] = [];
+    let place: Awaited<ReturnType<typeof dipsBehind>>["next"] = null;
+    do {
+      const page = await dipsBehind(project, asked, BY_FREQUENCY, place);
+      expect(page.all).toBe(500);
+      seen.push(...page.rows.map(({ numbers }) => numbers.frequencyHz));
+      place = page.next;
+    } while (place);
+    // The first dip of each sweep: 3 + 0.01·i MHz.
+    expect(seen.map((hz) => Math.round(hz / 1e4))).toEqual(Array.from({ length: SWEEPS }, (_, i) => 300 + i));
   });
 
   it.each<[string, Partial<DipsAsked>, number]>([

@@ -1,3 +1,7 @@
+import type { Example, ExampleGroup } from "./example.ts";
+import { BATCH_EXAMPLES, BUNDLE_EXAMPLES } from "./examples-bundles.ts";
+import { FORM_EXAMPLES } from "./examples-forms.ts";
+import { MENTION_EXAMPLES, PLATE_EXAMPLES, TAKING_BACK, WRITE_UP_EXAMPLES } from "./examples-plates.ts";
 import { sampleFile } from "./sample-file.ts";
 
 /**
@@ -6,28 +10,7 @@ import { sampleFile } from "./sample-file.ts";
  * EXAMPLES=write it writes that file anew.
  */
 
-export interface Example {
-  /** As the OpenAPI document calls what is asked. */
-  operation: string;
-  says: string;
-  /** Under /api/v1; `{name}` is taken from an earlier answer. */
-  path: string;
-  json?: unknown;
-  file?: { name: string; text: string; fields: Record<string, string> };
-  /** Several of them; one without a text is what an earlier answer was saved as. */
-  files?: { field: string; name: string; text?: string }[];
-  /** The answer is bytes, kept in a file of this name. */
-  saves?: string;
-  /** Work goes on behind the answer: its `links.self` is asked for until `where` is `is`, and that is what is shown. */
-  until?: { where: string; is: string };
-  /** What later examples take from the answer: name → where it is. */
-  keep?: Record<string, string>;
-}
-
-export interface ExampleGroup {
-  title: string;
-  examples: Example[];
-}
+export type { Example, ExampleGroup };
 
 export const EXAMPLE_GROUPS: ExampleGroup[] = [
   {
@@ -43,6 +26,12 @@ export const EXAMPLE_GROUPS: ExampleGroup[] = [
         operation: "getProject",
         says: "What is this one about, and which bands is its antenna meant for?",
         path: "/projects/{project}",
+      },
+      {
+        operation: "changeProject",
+        says: "Under which licence are its new plates and write-ups?",
+        path: "/projects/{project}",
+        json: { licence: "CC-BY-SA-4.0" },
       },
     ],
   },
@@ -109,6 +98,18 @@ export const EXAMPLE_GROUPS: ExampleGroup[] = [
       },
       { operation: "listNotes", says: "What was said on it, oldest first.", path: "/dips/{dip}/notes" },
       {
+        operation: "listDips",
+        says: "All dips of the project, the lowest frequency first; here those under an SWR of 1.5 in one band.",
+        path: "/projects/{project}/dips?under=1.5&band=in:40%20m&sort=frequency",
+      },
+      {
+        operation: "listDips",
+        says: "The same for a spreadsheet: all of them at once.",
+        path: "/projects/{project}/dips?under=1.5&sort=frequency",
+        accept: "text/csv",
+        saves: "dips.csv",
+      },
+      {
         operation: "getCauses",
         says: "What may be behind it, and every verdict that was given.",
         path: "/dips/{dip}/causes",
@@ -151,48 +152,13 @@ export const EXAMPLE_GROUPS: ExampleGroup[] = [
       },
     ],
   },
-  {
-    title: "Plates",
-    examples: [
-      {
-        operation: "makePlate",
-        says: "Freeze a figure with its numbers. Anyone who has its address reads it from then on.",
-        path: "/projects/{project}/plates",
-        json: { from: "sweep:{sweep}", title: "Before the radials", clientKey: "reeds-plate-1" },
-        keep: { plate: "id" },
-      },
-      { operation: "listPlates", says: "The plates of a project.", path: "/projects/{project}/plates" },
-      { operation: "getPlate", says: "One plate with all that it rests on.", path: "/plates/{plate}" },
-    ],
-  },
-  {
-    title: "Write-ups",
-    examples: [
-      {
-        operation: "makeWriteUp",
-        says: "Begin a write-up, with a dip as a figure. It is a draft until somebody publishes it on its page.",
-        path: "/projects/{project}/write-ups",
-        json: { title: "What eight radials did", body: "## The dip\n\n![Before the radials](#dip:{dip})\n" },
-        keep: { writeUp: "id", revision: "revision" },
-      },
-      {
-        operation: "changeWriteUp",
-        says: "Change the draft. The revision says which text this is a change of.",
-        path: "/write-ups/{writeUp}",
-        json: { title: "What eight radials did to the dip", revision: "{revision}" },
-      },
-      {
-        operation: "getWriteUp",
-        says: "Its text as it is being written; without `draft=yes` as it is published.",
-        path: "/write-ups/{writeUp}?draft=yes",
-      },
-      {
-        operation: "listWriteUps",
-        says: "The write-ups of a project.",
-        path: "/projects/{project}/write-ups",
-      },
-    ],
-  },
+  PLATE_EXAMPLES,
+  WRITE_UP_EXAMPLES,
+  MENTION_EXAMPLES,
+  BATCH_EXAMPLES,
+  BUNDLE_EXAMPLES,
+  FORM_EXAMPLES,
+  TAKING_BACK,
 ];
 
 /** What an example is kept under among the answers: its operation, and its place among those of it. */

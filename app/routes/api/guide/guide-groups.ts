@@ -1,7 +1,8 @@
 import type { Operation, PathItem } from "../openapi-parts.ts";
 import { curlOf } from "./curl.ts";
+import type { Example } from "./example.ts";
 import answers from "./example-answers.json";
-import { EXAMPLE_GROUPS, type Example, filledIn, keyOf } from "./examples.ts";
+import { EXAMPLE_GROUPS, filledIn, keyOf } from "./examples.ts";
 
 /** The guide's calls: what the OpenAPI document says of each, with its examples. Pure. */
 
@@ -27,7 +28,7 @@ export function guideGroups(
   paths: Record<string, PathItem>,
   base: string,
 ): { title: string; calls: GuideCall[] }[] {
-  const kept = sampleNames();
+  const kept = { ...sampleNames(), origin: base.replace(/\/api\/v1$/, "") };
   return EXAMPLE_GROUPS.map(({ title, examples }) => {
     const operations = [...new Set(examples.map(({ operation }) => operation))];
     const calls = operations.flatMap((id) => {
@@ -50,7 +51,8 @@ function callOf(
   return {
     id,
     method,
-    path,
+    // As under the address that the page begins with.
+    path: path.replace(/^\/api\/v1/, ""),
     summary: operation.summary,
     query: queryOf(operation),
     examples: examples.map((example) => ({

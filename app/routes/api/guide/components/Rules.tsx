@@ -1,5 +1,6 @@
 import { Link } from "react-router";
 import { EXAMPLE_GROUPS } from "../examples.ts";
+import { BATCH_TABLE } from "../examples-bundles.ts";
 import { Code } from "./Code.tsx";
 
 /** What holds for every call. */
@@ -9,10 +10,11 @@ export function Rules({ base }: { base: string }) {
       <h1 id="rules-title">For scripts</h1>
       <div className="grid gap-3 max-w-[72ch]">
         <p>
-          Everything below is under <code className="break-all">{base}</code>. The whole of it is described
-          for programs in the <a href={`${base}/openapi.json`}>OpenAPI document</a>. Every example is run
-          against the server whenever Swale is built; people, places and numbers in them are invented, long
-          lists are cut and numbers rounded to eight digits.
+          The calls below are under <code className="break-all">{base}</code>; those for everybody are outside
+          of it and need no token. All of them are described for programs in the{" "}
+          <a href={`${base}/openapi.json`}>OpenAPI document</a>. Every example is run against the server
+          whenever Swale is built; people, places and numbers in them are invented, long lists are cut and
+          numbers rounded to eight digits.
         </p>
         <p>
           <strong>A token</strong> stands for you: make one under{" "}
@@ -37,6 +39,10 @@ export function Rules({ base }: { base: string }) {
         </li>
         <li>A file has at most 64 MB and 1,000,000 points, a picture 40 megapixels.</li>
         <li>
+          What takes longer is answered with <code>202</code> and goes on behind the answer: ask the address
+          in <code>Location</code> every few seconds until it is done.
+        </li>
+        <li>
           Where a call takes a <code>clientKey</code>, one that is sent again after a lost answer does its
           work once.
         </li>
@@ -49,6 +55,10 @@ export function Rules({ base }: { base: string }) {
       <details className="min-w-0">
         <summary>The file that the examples send</summary>
         <Code label="reeds.s1p" text={sample()} />
+      </details>
+      <details className="min-w-0">
+        <summary>The table of the batch</summary>
+        <Code label="reeds.csv" text={BATCH_TABLE} />
       </details>
     </section>
   );
