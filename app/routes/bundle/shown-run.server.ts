@@ -10,7 +10,7 @@ export function shownRun(run: ShownRun & { project?: { publicId: string; title: 
     id: run.publicId,
     state: run.state === "done" && run.kind !== "import" && !offer ? "gone" : run.state,
     createdAt: run.createdAt.toISOString(),
-    share: run.allParts > 0 ? Math.min(1, run.doneParts / run.allParts) : null,
+    share: shareOf(run),
     again: (report.attempts ?? 0) > 0,
     offer: offer && {
       name: offer.name,
@@ -22,4 +22,10 @@ export function shownRun(run: ShownRun & { project?: { publicId: string; title: 
     records: report.records ?? null,
     project: run.project?.publicId ? { id: run.project.publicId, title: run.project.title } : null,
   };
+}
+
+/** How far it is was written down now and then: the end says that it is done. */
+function shareOf({ state, doneParts, allParts }: ShownRun): number | null {
+  if (state === "done") return 1;
+  return allParts > 0 ? Math.min(1, doneParts / allParts) : null;
 }
