@@ -1,27 +1,12 @@
-import { spawnSync } from "node:child_process";
 import { createHash } from "node:crypto";
 import { mkdtempSync, readFileSync, writeFileSync } from "node:fs";
 import { tmpdir } from "node:os";
 import path from "node:path";
-import { fileURLToPath } from "node:url";
 import { describe, expect, it } from "vitest";
+import { rowsOf, runApart, runHere } from "./analyse-run.ts";
 import { FOLDER } from "./make-fixtures/write.ts";
 
-const ROOT = fileURLToPath(new URL("../..", import.meta.url));
 const SLOW = 60_000;
-
-function analyse(...args: string[]) {
-  const run = spawnSync(process.execPath, ["--import", "tsx", "scripts/analyse.ts", ...args], {
-    cwd: ROOT,
-    encoding: "utf8",
-  });
-  const rows = () =>
-    run.stdout
-      .trim()
-      .split("\n")
-      .map((line) => JSON.parse(line));
-  return { code: run.status, out: run.stdout, err: run.stderr, rows };
-}
 
 const fixture = (name: string) => FOLDER + name;
 const broken = path.join(mkdtempSync(path.join(tmpdir(), "swale-analyse-")), "broken.csv");
@@ -30,13 +15,15 @@ writeFileSync(
   `MHz,SWR\n${Array.from({ length: 20 }, (_, i) => `${7 + i},${i === 4 ? "x" : 1.5}`).join("\n")}\n`,
 );
 
+const answers = async (...args: string[]) => rowsOf(await runHere(...args, "--json"));
+
 describe("npm run analyse", () => {
   it(
     "prints one JSON object a line, in order, with the contract's fields and no others",
     () => {
-      const { code, rows } = analyse(fixture("s11-comma.csv"), fixture("plain-ma.s1p"), "--json");
-      expect(code).toBe(0);
-      const [text, touchstone] = rows();
+      const run = runApart(fixture("s11-comma.csv"), fixture("plain-ma.s1p"), "--json");
+      expect(run.code).toBe(0);
+      const [text, touchstone] = rowsOf(run);
       expect([text.file, text.format, touchstone.file, touchstone.format]).toEqual([
         "s11-comma.csv",
         "text",
@@ -94,9 +81,9 @@ describe("npm run analyse", () => {
   it(
     "ends with 1 where a file can't be read, and still reads the others",
     () => {
-      const { code, rows } = analyse(broken, fixture("swr-tab.tsv"), "/nowhere/at-all.csv", "--json");
-      expect(code).toBe(1);
-      const [first, second, third] = rows();
+      const run = runApart(broken, fixture("swr-tab.tsv"), "/nowhere/at-all.csv", "--json");
+      expect(run.code).toBe(1);
+      const [first, second, third] = rowsOf(run);
       expect(first).toMatchObject({
         file: "broken.csv",
         error: { code: "bad-number", line: 6, column: 4, message: expect.stringMatching(/Line 6/) },
@@ -109,9 +96,9 @@ describe("npm run analyse", () => {
 
   it(
     "takes the 0 dB line, negative numbers and all, and asks for it where it is missing",
-    () => {
-      expect(analyse(fixture("level-preamble.csv"), "--json").rows()[0].error.code).toBe("zero-db-needed");
-      const [row] = analyse(fixture("level-preamble.csv"), "--json", "--points", "--zero-db", "-10.4").rows();
+    async () => {
+      expect((await answers(fixture("level-preamble.csv")))[0].error.code).toBe("zero-db-needed");
+      const [row] = await answers(fixture("level-preamble.csv"), "--points", "--zero-db", "-10.4");
       expect(row.reading.quantity).toBe("level");
       expect(row.points.frequencyHz).toHaveLength(751);
       expect(row.points.value[0]).toBeCloseTo(-10.476, 9);
@@ -121,14 +108,14 @@ describe("npm run analyse", () => {
 
   it(
     "takes limit, quantity and reference",
-    () => {
-      const [wide] = analyse(fixture("swr-tab.tsv"), "--json", "--swr-limit=3").rows();
+    async () => {
+      const [wide] = await answers(fixture("swr-tab.tsv"), "--swr-limit=3");
       expect(wide.dips[0].bandwidth.limitSwr).toBe(3);
-      const [other] = analyse(fixture("many-columns.csv"), "--json", "--quantity", "swr").rows();
+      const [other] = await answers(fixture("many-columns.csv"), "--quantity", "swr");
       expect(other.reading.quantity).toBe("swr");
       expect(other.sweep.complex).toBe(false);
-      const [kept] = analyse(fixture("ri-75.s1p"), "--json", "--reference-ohm", "75").rows();
-      const [system] = analyse(fixture("ri-75.s1p"), "--json").rows();
+      const [kept] = await answers(fixture("ri-75.s1p"), "--reference-ohm", "75");
+      const [system] = await answers(fixture("ri-75.s1p"));
       expect(kept.dips[0].minimumSwr).toBeCloseTo(1.118, 2);
       expect(system.dips[0].minimumSwr).toBeCloseTo(1.341, 2);
       expect(system.warnings.map((w: { code: string }) => w.code)).toContain("other-reference");
@@ -138,8 +125,8 @@ describe("npm run analyse", () => {
 
   it(
     "prints a table without --json",
-    () => {
-      const { code, out } = analyse(fixture("swr-tab.tsv"), broken);
+    async () => {
+      const { code, out } = await runHere(fixture("swr-tab.tsv"), broken);
       expect(code).toBe(1);
       expect(out).toMatch(/swr-tab\.tsv\n {2}text, swr: 301 points from 13 to 16 MHz, 50 Ω/);
       expect(out).toMatch(/lowest SWR/);
@@ -147,6 +134,14 @@ describe("npm run analyse", () => {
     },
     SLOW,
   );
+
+  it("ends as a process with 2 and its complaint on standard error", { timeout: SLOW }, () => {
+    expect(runApart("a.csv", "--nonsense")).toMatchObject({
+      code: 2,
+      out: "",
+      err: expect.stringMatching(/Usage: npm run analyse/),
+    });
+  });
 
   it.each([
     [[]],
@@ -165,8 +160,8 @@ describe("npm run analyse", () => {
     [["a.csv", "--load-return-loss", "40"]],
   ])(
     "ends with 2 on %j",
-    (args) => {
-      const { code, out, err } = analyse(...args);
+    async (args) => {
+      const { code, out, err } = await runHere(...args);
       expect(code).toBe(2);
       expect(out).toBe("");
       expect(err).toMatch(/Usage: npm run analyse/);

@@ -1,15 +1,13 @@
-import { spawnSync } from "node:child_process";
 import { mkdtempSync, writeFileSync } from "node:fs";
 import { tmpdir } from "node:os";
 import path from "node:path";
-import { fileURLToPath } from "node:url";
 import { describe, expect, it } from "vitest";
 import type { Complex } from "../../app/measurement/reflection.ts";
 import { codes, measured, polar } from "../measurement/correction/benches.ts";
+import { runHere } from "./analyse-run.ts";
 
 /** The command with references and a feedline, on files of an invented bench whose truth is known. */
 
-const ROOT = fileURLToPath(new URL("../..", import.meta.url));
 const FOLDER = mkdtempSync(path.join(tmpdir(), "swale-bench-"));
 const SLOW = 60_000;
 const AT = Array.from({ length: 291 }, (_, i) => 1e6 + i * 1e5);
@@ -55,16 +53,8 @@ for (const [role, gamma] of Object.entries(STANDARDS) as [keyof typeof STANDARDS
   touchstone[role] = complex(role, gamma);
 }
 
-function analyse(...args: string[]) {
-  const run = spawnSync(process.execPath, ["--import", "tsx", "scripts/analyse.ts", ...args], {
-    cwd: ROOT,
-    encoding: "utf8",
-  });
-  return { code: run.status, out: run.stdout, err: run.stderr };
-}
-
-function row(...args: string[]) {
-  const { code, out, err } = analyse(...args, "--json");
+async function row(...args: string[]) {
+  const { code, out, err } = await runHere(...args, "--json");
   expect(err).toBe("");
   return { code, ...JSON.parse(out) };
 }
@@ -74,8 +64,8 @@ const all = (of: typeof text) => ["--open", of.open, "--short", of.short, "--loa
 describe("npm run analyse with references", () => {
   it(
     "refers levels to the mean of open and short",
-    () => {
-      const answer = row(text.sweep, ...all(text));
+    async () => {
+      const answer = await row(text.sweep, ...all(text));
       expect(answer.code).toBe(0);
       expect(answer.correction).toEqual({ kind: "scalar", plane: "port", fromHz: 1e6, toHz: 30e6 });
       const [dip] = answer.dips;
@@ -99,8 +89,8 @@ describe("npm run analyse with references", () => {
 
   it(
     "takes out all three errors where there is phase",
-    () => {
-      const answer = row(touchstone.sweep, ...all(touchstone), "--load-return-loss", "45", "--points");
+    async () => {
+      const answer = await row(touchstone.sweep, ...all(touchstone), "--load-return-loss", "45", "--points");
       expect(answer.correction.kind).toBe("three-term");
       const [dip] = answer.dips;
       expect(dip.minimumSwr).toBeCloseTo(1.25, 4);
@@ -115,17 +105,17 @@ describe("npm run analyse with references", () => {
 
   it(
     "says what was given wrongly and corrects nothing that it can't",
-    () => {
+    async () => {
       const short = AT.slice(50, 100);
       const few = {
         open: levels("open-few", STANDARDS.open, short),
         short: levels("short-few", STANDARDS.short, short),
       };
-      const early = row(text.sweep, "--open", few.open, "--short", few.short);
+      const early = await row(text.sweep, "--open", few.open, "--short", few.short);
       expect(early.correction).toEqual({ kind: "scalar", plane: "port", fromHz: short[0], toHz: short[49] });
       expect(codes(early.warnings)).toContain("references-short");
       expect(early.dips.filter((dip: { edge: boolean }) => !dip.edge)).toEqual([]);
-      const swapped = row(
+      const swapped = await row(
         touchstone.sweep,
         "--open",
         touchstone.short,
@@ -135,7 +125,7 @@ describe("npm run analyse with references", () => {
         touchstone.load,
       );
       expect(codes(swapped.warnings)).toContain("open-short-swapped");
-      const twice = row(
+      const twice = await row(
         touchstone.sweep,
         "--open",
         touchstone.open,
@@ -151,8 +141,8 @@ describe("npm run analyse with references", () => {
 
   it(
     "fails a file whose reference can't be read",
-    () => {
-      const answer = row(text.sweep, "--open", path.join(FOLDER, "absent.csv"));
+    async () => {
+      const answer = await row(text.sweep, "--open", path.join(FOLDER, "absent.csv"));
       expect(answer.code).toBe(1);
       expect(answer.error.code).toBe("reference-unread");
       expect(answer.error.message).toContain(
@@ -166,14 +156,14 @@ describe("npm run analyse with references", () => {
 describe("npm run analyse with a feedline", () => {
   it(
     "gives dips at the antenna, in words what was done, and says when it can't be",
-    () => {
-      const { out } = analyse(text.sweep, ...all(text), "--cable", "RG-213", "--length-m", "20");
+    async () => {
+      const { out } = await runHere(text.sweep, ...all(text), "--cable", "RG-213", "--length-m", "20");
       expect(out).toContain(
         "0 dB line: the mean of open and short, 1 to 30 MHz; limits from the load; 20 m of RG-213/U (solid PE) taken out",
       );
-      const answer = row(text.sweep, ...all(text), "--cable", "0.0056,0.00006", "--length-m", "20");
+      const answer = await row(text.sweep, ...all(text), "--cable", "0.0056,0.00006", "--length-m", "20");
       expect(answer.correction).toEqual({ kind: "scalar", plane: "antenna", fromHz: 1e6, toHz: 30e6 });
-      const lossy = row(
+      const lossy = await row(
         touchstone.sweep,
         ...all(touchstone),
         "--cable",
@@ -184,7 +174,7 @@ describe("npm run analyse with a feedline", () => {
         "0.66",
       );
       expect(codes(lossy.warnings)).toContain("feedline-over-unity");
-      const alone = row(touchstone.sweep, "--cable", "0.0001,0", "--length-m", "1");
+      const alone = await row(touchstone.sweep, "--cable", "0.0001,0", "--length-m", "1");
       expect(alone.correction).toEqual({ kind: "none", plane: "antenna", fromHz: 1e6, toHz: 30e6 });
       expect(codes(alone.warnings)).toContain("no-velocity-factor");
     },
