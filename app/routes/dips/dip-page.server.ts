@@ -12,9 +12,23 @@ import { listThread } from "~/services/note-thread.server";
 import { storedDips } from "~/services/shown-dips.server";
 import { limitsOf, sweepAt } from "~/services/shown-sweep.server";
 import { loadTrailOfDip } from "../trails/trail-of-dip.server.ts";
+import { loadJudgement } from "./judgement.server.ts";
 
 /** Everything about one dip of this project, or 404. */
 export async function loadDipPage(access: ProjectAccess, publicId: string) {
+  const [page, judgement] = await Promise.all([loadDip(access, publicId), loadJudgement(access, publicId)]);
+  return {
+    projectId: access.project.publicId,
+    mayWrite: access.may("note.write"),
+    mayVerdict: { propose: access.may("verdict.propose"), settle: access.may("verdict.settle") },
+    ...page,
+    judgement,
+  };
+}
+export type DipPageData = Awaited<ReturnType<typeof loadDipPage>>;
+
+/** What was measured, where, and what was said on it. */
+async function loadDip(access: ProjectAccess, publicId: string) {
   const { project, person } = access;
   const found = await dips.findByPublicId(publicId);
   if (!found || found.dip.projectId !== project.id) throw notFound("dip");

@@ -16,22 +16,11 @@ import { EvidenceChoice } from "./components/EvidenceChoice.tsx";
 import { Provenance } from "./components/Provenance.tsx";
 import { VerdictHistory } from "./components/VerdictHistory.tsx";
 import { Whereabouts } from "./components/Whereabouts.tsx";
-import { loadDipPage } from "./dip-page.server.ts";
-import { loadJudgement } from "./judgement.server.ts";
+import { type DipPageData, loadDipPage } from "./dip-page.server.ts";
 
 export async function loader(args: Route.LoaderArgs) {
   const access = await requireProject(args, "project.read");
-  const [page, judgement] = await Promise.all([
-    loadDipPage(access, args.params.dip),
-    loadJudgement(access, args.params.dip),
-  ]);
-  return {
-    projectId: access.project.publicId,
-    mayWrite: access.may("note.write"),
-    mayVerdict: { propose: access.may("verdict.propose"), settle: access.may("verdict.settle") },
-    ...page,
-    judgement,
-  };
+  return loadDipPage(access, args.params.dip);
 }
 
 export const meta: Route.MetaFunction = ({ data }) => [
@@ -126,8 +115,6 @@ export default function DipPage({ loaderData }: Route.ComponentProps) {
     </article>
   );
 }
-
-export type DipPageData = Route.ComponentProps["loaderData"];
 
 function Neighbours({ data: { neighbours, projectId } }: { data: DipPageData }) {
   const { previous, next } = neighbours;

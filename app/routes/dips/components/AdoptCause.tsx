@@ -4,7 +4,7 @@ import { Button } from "~/components/ui/Button";
 import { TextareaField } from "~/components/ui/Field";
 import { MAX_VERDICT_CHARACTERS } from "~/services/note-limits";
 import { capital } from "../advice-words";
-import type { DipPageData } from "../dip";
+import type { DipPageData } from "../dip-page.server";
 
 interface AdoptCauseProps {
   data: DipPageData;

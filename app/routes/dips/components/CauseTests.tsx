@@ -1,5 +1,5 @@
 import { capital } from "../advice-words";
-import type { DipPageData } from "../dip";
+import type { DipPageData } from "../dip-page.server";
 
 /** The changes that tell the causes apart: what each of them says the dip will do. */
 export function CauseTests({ data: { judgement } }: { data: DipPageData }) {

@@ -1,7 +1,7 @@
 import "../dips.css";
 import { Link } from "react-router";
 import { capital } from "../advice-words";
-import type { DipPageData } from "../dip";
+import type { DipPageData } from "../dip-page.server";
 import { AdoptCause } from "./AdoptCause";
 import { CauseTests } from "./CauseTests";
 import { NotJudged } from "./NotJudged";

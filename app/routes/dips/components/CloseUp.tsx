@@ -4,7 +4,7 @@ import { SweepChart } from "~/charts/SweepChart";
 import { buildSweepScene } from "~/charts/scene";
 import { DEFAULT_SETTINGS } from "~/measurement/sweep";
 import { formatFrequency } from "~/measurement/units";
-import type { DipPageData } from "../dip";
+import type { DipPageData } from "../dip-page.server";
 
 /** The curve around the dip, near enough to see its shape. */
 export function CloseUp({ data }: { data: DipPageData }) {

@@ -12,7 +12,7 @@ import {
   formatWidth,
   formatWidthLimits,
 } from "~/measurement/units";
-import type { DipPageData } from "../dip";
+import type { DipPageData } from "../dip-page.server";
 
 /** The dip in numbers, each with its limits and how it was had. */
 export function DipNumbers({ data }: { data: DipPageData }) {

@@ -1,6 +1,6 @@
 import { Link } from "react-router";
 import { DateTime } from "~/components/ui/DateTime";
-import type { DipPageData } from "../dip";
+import type { DipPageData } from "../dip-page.server";
 
 /** What the causes were reckoned from, and what could not take part because it is not said. */
 export function NotJudged({ data }: { data: DipPageData }) {

@@ -2,7 +2,7 @@ import { Link } from "react-router";
 import { DateTime } from "~/components/ui/DateTime";
 import { formatDb, formatFrequency, formatNoise } from "~/measurement/units";
 import { correctionWords } from "../../sweeps/correction-words";
-import type { DipPageData } from "../dip";
+import type { DipPageData } from "../dip-page.server";
 
 /** How the numbers came about: file, reading, analysis and its settings. */
 export function Provenance({ data }: { data: DipPageData }) {

@@ -1,6 +1,6 @@
 import { Link } from "react-router";
 import { LinkButton } from "~/components/ui/Button";
-import type { DipPageData } from "../dip";
+import type { DipPageData } from "../dip-page.server";
 
 /** What to make of a length so that the dip comes to its design band, and the step that does it. */
 export function TrimPart({ data: { judgement, projectId }, inside }: { data: DipPageData; inside: boolean }) {

@@ -2,7 +2,7 @@ import { Link } from "react-router";
 import { DateTime } from "~/components/ui/DateTime";
 import { VerdictTag } from "~/components/ui/Tag";
 import type { Evidence } from "~/db/schema";
-import type { DipPageData } from "../dip";
+import type { DipPageData } from "../dip-page.server";
 
 /** Every verdict that was given, newest first: who, when and on what evidence. */
 export function VerdictHistory({ data: { judgement, projectId } }: { data: DipPageData }) {

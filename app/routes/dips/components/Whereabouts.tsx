@@ -1,5 +1,5 @@
 import { formatFrequency, formatPercent, formatWidth } from "~/measurement/units";
-import type { DipPageData } from "../dip";
+import type { DipPageData } from "../dip-page.server";
 import { TrimPart } from "./TrimPart.tsx";
 
 /** Where the dip lies: relative to the design bands, and to the allocations of the project's region. */
