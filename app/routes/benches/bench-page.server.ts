@@ -1,7 +1,8 @@
 import type { ProjectAccess } from "~/auth/require.server";
 import type * as benchReferences from "~/db/bench-references.server";
 import * as benches from "~/db/benches.server";
-import { type BenchQuality, qualifyBench } from "~/measurement/correction/qualify";
+import type { BenchQuality } from "~/measurement/correction/bench-quality";
+import { qualifyBench } from "~/measurement/correction/qualify";
 import { mayEditBench } from "~/services/bench-access.server";
 import { loadBench } from "~/services/bench-sweeps.server";
 import { renderNote } from "~/services/markdown.server";
@@ -63,6 +64,7 @@ export async function loadBenchPage(
     numbers: numbersOf(quality),
   };
 }
+export type BenchPageData = Awaited<ReturnType<typeof loadBenchPage>>;
 
 /** The measures at a handful of frequencies, for the table under the drawing. */
 export function numbersOf(quality: BenchQuality) {

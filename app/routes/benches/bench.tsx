@@ -114,5 +114,3 @@ export default function Bench({ loaderData, actionData }: Route.ComponentProps) 
     </article>
   );
 }
-
-export type BenchPageData = Route.ComponentProps["loaderData"];

@@ -5,7 +5,7 @@ import { Button, LinkButton } from "~/components/ui/Button";
 import { DateTime } from "~/components/ui/DateTime";
 import { Dialog } from "~/components/ui/Dialog";
 import { Tag } from "~/components/ui/Tag";
-import type { BenchPageData } from "../bench";
+import type { BenchPageData } from "../bench-page.server";
 
 /** Name, which version is shown, and what can be done with the bench. */
 export function BenchHead({ data }: { data: BenchPageData }) {

@@ -1,4 +1,4 @@
-import type { BenchPageData } from "../bench";
+import type { BenchPageData } from "../bench-page.server";
 import { GIVEN_FIELDS, PART_KINDS, STANDARD_FIELDS } from "../benches.schema";
 import { figureText } from "../version-form";
 

@@ -1,7 +1,7 @@
 import { Form } from "react-router";
 import { Button } from "~/components/ui/Button";
 import { InputField } from "~/components/ui/Field";
-import type { BenchPageData } from "../bench";
+import type { BenchPageData } from "../bench-page.server";
 import { knownWords, spanWords } from "../words";
 import { BenchNumbers } from "./BenchNumbers";
 import { BenchStrips } from "./BenchStrips";

@@ -1,7 +1,7 @@
 import { Form, Link, useNavigation } from "react-router";
 import { Button } from "~/components/ui/Button";
 import { Tag } from "~/components/ui/Tag";
-import type { BenchPageData } from "../bench";
+import type { BenchPageData } from "../bench-page.server";
 import { REFERENCE_WORDS, spanWords } from "../words";
 import { type Kind, ReferenceFiles } from "./ReferenceFiles";
 

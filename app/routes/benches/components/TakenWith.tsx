@@ -1,6 +1,6 @@
 import { Link } from "react-router";
 import { DateTime } from "~/components/ui/DateTime";
-import type { BenchPageData } from "../bench";
+import type { BenchPageData } from "../bench-page.server";
 
 /** The sweeps of this project that say that they were taken with the bench. */
 export function TakenWith({ data }: { data: BenchPageData }) {

@@ -1,6 +1,6 @@
 import { Link } from "react-router";
 import { DateTime } from "~/components/ui/DateTime";
-import type { BenchPageData } from "../bench";
+import type { BenchPageData } from "../bench-page.server";
 
 /** Every version, the newest first, each an address; and the way to compare two of them. */
 export function Versions({ data }: { data: BenchPageData }) {
