@@ -1,43 +1,14 @@
 import { requireProject } from "~/auth/require.server";
 import { LinkButton } from "~/components/ui/Button";
 import { EmptyState } from "~/components/ui/EmptyState";
-import * as steps from "~/db/steps.server";
-import { lengthUnitOf } from "~/routes/antenna/sizes";
-import { stepsBetween, sweepsAround } from "~/services/step-sweeps";
-import { quantityText } from "~/services/step-words";
 import type { Route } from "./+types/list";
 import { StepItem } from "./components/StepItem";
+import { loadStepList } from "./step-list.server";
 
 export const meta: Route.MetaFunction = () => [{ title: "Steps · Swale" }];
 
 export async function loader(args: Route.LoaderArgs) {
-  const { project, person, may } = await requireProject(args, "project.read");
-  const [listed, sweeps] = await Promise.all([
-    steps.findAllByProject(project.id),
-    steps.findSweepsInOrder(project.id),
-  ]);
-  const unit = lengthUnitOf(person);
-  const all = listed.map(({ step }) => step);
-  const shown = listed.map(({ step, by }) => {
-    const around = sweepsAround(step, sweeps);
-    return {
-      publicId: step.publicId,
-      title: step.title,
-      state: step.state,
-      at: step.at,
-      by,
-      quantities: step.quantities.map((quantity) => quantityText(quantity, unit)),
-      before: around.before && { publicId: around.before.publicId, title: around.before.title },
-      after: around.after && { publicId: around.after.publicId, title: around.after.title },
-      sharedWith: stepsBetween(step, all, sweeps).map(({ publicId, title }) => ({ publicId, title })),
-    };
-  });
-  return {
-    projectId: project.publicId,
-    mayEdit: may("step.edit"),
-    planned: shown.filter(({ state }) => state === "planned"),
-    done: shown.filter(({ state }) => state === "done").reverse(),
-  };
+  return loadStepList(await requireProject(args, "project.read"));
 }
 
 export default function Steps({ loaderData }: Route.ComponentProps) {
@@ -91,5 +62,3 @@ export default function Steps({ loaderData }: Route.ComponentProps) {
     </div>
   );
 }
-
-export type ListedStepData = Route.ComponentProps["loaderData"]["done"][number];

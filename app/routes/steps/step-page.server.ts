@@ -76,6 +76,7 @@ export async function loadStepPage(access: ProjectAccess, found: steps.FoundStep
       : [],
   };
 }
+export type StepPageData = Awaited<ReturnType<typeof loadStepPage>>;
 
 /** `?from=6.9&to=7.3` in MHz; null where that is no range. */
 function askedRange(search: URLSearchParams): { fromHz: number; toHz: number } | null {

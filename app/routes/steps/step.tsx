@@ -88,6 +88,4 @@ export default function StepPage({ loaderData, actionData }: Route.ComponentProp
   );
 }
 
-export type StepPageData = Route.ComponentProps["loaderData"];
-
 const CHANGED = "Somebody else changed this step in the meantime. Nothing was kept: load the page anew.";

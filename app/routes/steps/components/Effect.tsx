@@ -6,7 +6,7 @@ import { OverlayChart } from "~/charts/OverlayChart";
 import { buildOverlayScene } from "~/charts/overlay-scene";
 import { unpackPoints } from "~/charts/sent-points";
 import { EmptyState } from "~/components/ui/EmptyState";
-import type { StepPageData } from "../step";
+import type { StepPageData } from "../step-page.server";
 
 /** The sweeps before and after over one another, and under them what the later one has more. */
 export function Effect({ data }: { data: StepPageData }) {

@@ -1,7 +1,7 @@
 import { Link } from "react-router";
 import { formatFrequency } from "~/measurement/units";
 import { expectationWords } from "../expectation-words";
-import type { StepPageData } from "../step";
+import type { StepPageData } from "../step-page.server";
 
 type Place = StepPageData["effect"]["expected"][number];
 

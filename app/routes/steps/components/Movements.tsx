@@ -3,7 +3,7 @@ import { Link } from "react-router";
 import { type Column, Table } from "~/components/ui/Table";
 import { formatFrequency, formatSwr } from "~/measurement/units";
 import { movementWords } from "../movement-words";
-import type { StepPageData } from "../step";
+import type { StepPageData } from "../step-page.server";
 
 type Row = StepPageData["effect"]["movements"][number];
 

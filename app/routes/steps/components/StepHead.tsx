@@ -6,7 +6,7 @@ import { Dialog } from "~/components/ui/Dialog";
 import { InputField } from "~/components/ui/Field";
 import { Tag } from "~/components/ui/Tag";
 import { AntennaCautions } from "~/routes/antenna/components/AntennaCautions";
-import type { StepPageData } from "../step";
+import type { StepPageData } from "../step-page.server";
 
 /** What was changed, when, by whom, and what can be done with the step. */
 export function StepHead({ data, errors }: { data: StepPageData; errors: string[] }) {

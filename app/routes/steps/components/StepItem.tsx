@@ -1,6 +1,6 @@
 import { Link } from "react-router";
 import { DateTime } from "~/components/ui/DateTime";
-import type { ListedStepData } from "../list";
+import type { ListedStepData } from "../step-list.server";
 
 /** A step in the list: what, when, how much, and between which sweeps. */
 export function StepItem({ step, base }: { step: ListedStepData; base: string }) {
