@@ -103,6 +103,7 @@ export async function loadTrailPage(access: ProjectAccess, publicId: string) {
     moreNotes: way.reduce((sum, { noteCount }) => sum + noteCount, 0) - notes.length,
   };
 }
+export type TrailPageData = Awaited<ReturnType<typeof loadTrailPage>>;
 
 interface Known {
   sweeps: Awaited<ReturnType<typeof loadTrailSweeps>>;

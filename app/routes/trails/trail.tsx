@@ -102,5 +102,3 @@ export default function TrailPage({ loaderData, actionData }: Route.ComponentPro
     </article>
   );
 }
-
-export type TrailPageData = Route.ComponentProps["loaderData"];

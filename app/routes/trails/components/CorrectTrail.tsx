@@ -1,7 +1,7 @@
 import { Form, Link } from "react-router";
 import { Button } from "~/components/ui/Button";
 import { DateTime } from "~/components/ui/DateTime";
-import type { TrailPageData } from "../trail";
+import type { TrailPageData } from "../trail-page.server";
 import { Problems } from "./Problems.tsx";
 
 /** Joining by hand, and what was corrected so far, each to be taken back. */

@@ -1,5 +1,5 @@
 import { Link } from "react-router";
-import type { TrailPageData } from "../trail";
+import type { TrailPageData } from "../trail-page.server";
 
 /** Where steps were to put the trail, and where it came out. */
 export function Expected({ data: { expected, project } }: { data: TrailPageData }) {

@@ -1,5 +1,5 @@
 import { Link } from "react-router";
-import type { TrailPageData } from "../trail";
+import type { TrailPageData } from "../trail-page.server";
 
 type Event = TrailPageData["happened"][number];
 

@@ -4,7 +4,7 @@ import { FrequencyAxisMarks } from "~/charts/FrequencyAxisMarks";
 import { PAGE_PALETTE } from "~/charts/palette";
 import { across, Stretched } from "~/charts/place";
 import { formatDateShort } from "~/components/ui/dates";
-import type { TrailPageData } from "../trail";
+import type { TrailPageData } from "../trail-page.server";
 
 const ROW_PX = 34;
 const UNITS = 1000;

@@ -1,7 +1,7 @@
 import { Link } from "react-router";
 import { RelativeTime } from "~/components/ui/DateTime";
 import { formatFrequency } from "~/measurement/units";
-import type { TrailPageData } from "../trail";
+import type { TrailPageData } from "../trail-page.server";
 
 /** What was said on the trail's dips, gathered. */
 export function TrailNotes({ data: { notes, moreNotes, project, stops } }: { data: TrailPageData }) {

@@ -6,7 +6,7 @@ import { VerdictTag } from "~/components/ui/Tag";
 import { EvidenceChoice } from "~/routes/dips/components/EvidenceChoice";
 import { EvidenceList } from "~/routes/dips/components/VerdictHistory";
 import { MAX_VERDICT_CHARACTERS } from "~/services/note-limits";
-import type { TrailPageData } from "../trail";
+import type { TrailPageData } from "../trail-page.server";
 import { Problems } from "./Problems.tsx";
 
 /** What the trail is held to be, who said so, and what it was held to be before. */

@@ -2,7 +2,7 @@ import { Form, Link } from "react-router";
 import { Button } from "~/components/ui/Button";
 import { DateTime } from "~/components/ui/DateTime";
 import { Table } from "~/components/ui/Table";
-import type { TrailPageData } from "../trail";
+import type { TrailPageData } from "../trail-page.server";
 import { Problems } from "./Problems.tsx";
 
 type Stop = TrailPageData["stops"][number] & { before: string | null };
