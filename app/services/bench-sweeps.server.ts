@@ -1,6 +1,7 @@
 import * as benchReferences from "~/db/bench-references.server";
 import * as benches from "~/db/benches.server";
-import type { BenchForCorrection, BenchReferences, ReadAs } from "~/measurement/correction/correct";
+import type { BenchForCorrection, BenchReferences } from "~/measurement/correction/references";
+import type { ReadAs } from "~/measurement/correction/scale-faults";
 import type { Sweep } from "~/measurement/sweep";
 import { readAsOf } from "./correction.server.ts";
 import { loadPoints } from "./sweep-points.server.ts";

@@ -1,4 +1,6 @@
-import { type BenchForCorrection, correctSweep, type ReadAs } from "../measurement/correction/correct.ts";
+import { correctSweep } from "../measurement/correction/correct.ts";
+import type { BenchForCorrection } from "../measurement/correction/references.ts";
+import type { ReadAs } from "../measurement/correction/scale-faults.ts";
 import { type Feedline, removeFeedline } from "../measurement/feedline.ts";
 import type { Correction, Plane, Sweep, Warning } from "../measurement/sweep.ts";
 import type { Reading } from "../readers/reading.ts";

@@ -1,5 +1,7 @@
 import { IDEAL_STANDARDS, NOTHING_GIVEN } from "../../app/measurement/bench.ts";
-import { type BenchReferences, correctSweep, type ReadAs } from "../../app/measurement/correction/correct.ts";
+import { correctSweep } from "../../app/measurement/correction/correct.ts";
+import type { BenchReferences } from "../../app/measurement/correction/references.ts";
+import type { ReadAs } from "../../app/measurement/correction/scale-faults.ts";
 import { type Feedline, matchedLossDb, removeFeedline } from "../../app/measurement/feedline.ts";
 import type { Correction, Sweep, Warning } from "../../app/measurement/sweep.ts";
 import type { Reading } from "../../app/readers/reading.ts";

@@ -1,4 +1,4 @@
-import type { BenchQuality } from "./qualify.ts";
+import type { BenchQuality } from "./bench-quality.ts";
 import { commonSpan, interpolate } from "./references.ts";
 import { median, stretchesOf } from "./stretches.ts";
 import { mhz, whereMhz } from "./words.ts";

@@ -1,8 +1,7 @@
 import type { Complex } from "../reflection.ts";
 import type { BenchLimits, Sweep, Warning } from "../sweep.ts";
-import type { BenchForCorrection, Corrected } from "./correct.ts";
-import { none } from "./correct-scalar.ts";
-import { commonSpan, gammaAt } from "./references.ts";
+import { type Corrected, none } from "./corrected.ts";
+import { type BenchForCorrection, commonSpan, gammaAt } from "./references.ts";
 import { residualLimits } from "./residual-limits.ts";
 import { standardGammas } from "./standards.ts";
 import { termFaults } from "./term-faults.ts";

@@ -1,6 +1,6 @@
 import type { Sweep, Warning } from "../sweep.ts";
-import type { BenchForCorrection, Corrected } from "./correct.ts";
-import { commonSpan } from "./references.ts";
+import { type Corrected, none } from "./corrected.ts";
+import { type BenchForCorrection, commonSpan } from "./references.ts";
 import { scalarLimits } from "./scalar-limits.ts";
 import { zeroLine, zeroPhase } from "./zero-line.ts";
 
@@ -39,11 +39,6 @@ export function correctScalar(sweep: Sweep, bench: BenchForCorrection, zeroDb: n
   warnings.push(...limitNotes(bench, line !== null));
   const span = line ? commonSpan([open, short, sweep]) : commonSpan([sweep]);
   return { sweep: out, correction: { kind: "scalar", plane: "port", ...span }, warnings };
-}
-
-/** The sweep as it was measured. */
-export function none(sweep: Sweep, ...warnings: Warning[]): Corrected {
-  return { sweep, correction: { kind: "none", plane: sweep.plane, fromHz: null, toHz: null }, warnings };
 }
 
 function stated(amplitude: Float64Array) {

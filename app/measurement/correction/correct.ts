@@ -1,25 +1,10 @@
-import type { BenchGiven, BenchStandards } from "../bench.ts";
-import type { Correction, Sweep, Warning } from "../sweep.ts";
+import type { Sweep } from "../sweep.ts";
 import { correctFully } from "./correct-fully.ts";
-import { correctScalar, none } from "./correct-scalar.ts";
+import { correctScalar } from "./correct-scalar.ts";
+import { type Corrected, none } from "./corrected.ts";
 import { referenceFaults } from "./faults.ts";
-import type { BenchReferences } from "./references.ts";
+import type { BenchForCorrection } from "./references.ts";
 import { outcomeFaults, type ReadAs } from "./scale-faults.ts";
-
-export type { BenchReferences } from "./references.ts";
-export type { ReadAs } from "./scale-faults.ts";
-
-export interface BenchForCorrection {
-  references: BenchReferences;
-  standards: BenchStandards;
-  given: BenchGiven;
-}
-
-export interface Corrected {
-  sweep: Sweep;
-  correction: Correction;
-  warnings: Warning[];
-}
 
 /**
  * A sweep referred to the bench's test port (MEASUREMENT section 4).

@@ -1,17 +1,9 @@
 import type { BenchLimits } from "../sweep.ts";
-import type { BenchQuality } from "./qualify.ts";
+import type { BenchLimit, BenchQuality } from "./bench-quality.ts";
 import { type Stretch, sentenceStart, stretchesOf } from "./stretches.ts";
 import { termFaults } from "./term-faults.ts";
 import type { ErrorTerms } from "./three-term.ts";
 import { allowedError, isKnown, type Wish } from "./wish.ts";
-
-/** A stretch of frequencies in which something limits the bench, in plain words. */
-export interface BenchLimit {
-  code: string;
-  message: string;
-  fromHz: number;
-  toHz: number;
-}
 
 type Measures = Pick<
   BenchQuality,

@@ -1,4 +1,4 @@
-import type { BenchForCorrection } from "./correct.ts";
+import type { BenchForCorrection } from "./references.ts";
 import { sameSweep } from "./zero-line.ts";
 
 /** What is not known of a bench, and what would make it known. */

@@ -1,3 +1,4 @@
+import type { BenchGiven, BenchStandards } from "../bench.ts";
 import type { Sweep } from "../sweep.ts";
 
 /** The sweeps of a bench's standards; levels or complex, as the files are. */
@@ -7,6 +8,13 @@ export interface BenchReferences {
   load?: Sweep;
   /** Source straight to the detector, without the bridge. */
   through?: Sweep;
+}
+
+/** A bench as a correction needs it. */
+export interface BenchForCorrection {
+  references: BenchReferences;
+  standards: BenchStandards;
+  given: BenchGiven;
 }
 
 export type ReferenceRole = keyof BenchReferences;

@@ -1,7 +1,7 @@
 import { type FrequencyAxis, frequencyAxis, frequencyScale, niceStep } from "~/charts/axis";
 import { decimate, type Run } from "~/charts/decimate";
 import { profilePaths } from "~/charts/paths";
-import type { BenchQuality } from "~/measurement/correction/qualify";
+import type { BenchQuality } from "~/measurement/correction/bench-quality";
 import { allowedError, type Wish } from "~/measurement/correction/wish";
 
 /** A bench's measures as strips on one frequency axis, ready to be drawn. */

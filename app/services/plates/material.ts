@@ -1,4 +1,4 @@
-import type { BenchForCorrection } from "../../measurement/correction/correct.ts";
+import type { BenchForCorrection } from "../../measurement/correction/references.ts";
 import type { Wish } from "../../measurement/correction/wish.ts";
 import type { Dip, Sweep } from "../../measurement/sweep.ts";
 import type { PlateChoices } from "./choices.ts";

@@ -1,5 +1,5 @@
 import type { BenchGiven, BenchStandards } from "../../measurement/bench.ts";
-import type { BenchReferences } from "../../measurement/correction/correct.ts";
+import type { BenchReferences } from "../../measurement/correction/references.ts";
 import type { Feedline } from "../../measurement/feedline.ts";
 import type { AnalysisSettings, Plane } from "../../measurement/sweep.ts";
 import type { Given } from "../../readers/reading.ts";

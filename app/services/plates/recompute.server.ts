@@ -1,6 +1,7 @@
 import type { PlateSourceRow } from "~/db/plates.server";
 import { analyse } from "~/measurement/analyse";
-import type { BenchForCorrection, BenchReferences, ReadAs } from "~/measurement/correction/correct";
+import type { BenchForCorrection, BenchReferences } from "~/measurement/correction/references";
+import type { ReadAs } from "~/measurement/correction/scale-faults";
 import { pairDips } from "~/measurement/match-dips";
 import { DEFAULT_SETTINGS, type Sweep } from "~/measurement/sweep";
 import type { Reading } from "~/readers/reading";

@@ -4,7 +4,7 @@ import {
   IDEAL_STANDARDS,
   NOTHING_GIVEN,
 } from "../../../app/measurement/bench.ts";
-import type { BenchForCorrection, BenchReferences } from "../../../app/measurement/correction/correct.ts";
+import type { BenchForCorrection, BenchReferences } from "../../../app/measurement/correction/references.ts";
 import type { Complex } from "../../../app/measurement/reflection.ts";
 import type { Sweep } from "../../../app/measurement/sweep.ts";
 

@@ -1,5 +1,6 @@
 import { describe, expect, it } from "vitest";
-import { correctSweep, type ReadAs } from "../../../app/measurement/correction/correct.ts";
+import { correctSweep } from "../../../app/measurement/correction/correct.ts";
+import type { ReadAs } from "../../../app/measurement/correction/scale-faults.ts";
 import { bench, codes, scalarSweep } from "./benches.ts";
 
 const AT = Array.from({ length: 30 }, (_, i) => (i + 1) * 1e6);

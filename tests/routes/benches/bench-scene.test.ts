@@ -1,5 +1,5 @@
 import { describe, expect, it } from "vitest";
-import type { BenchQuality } from "~/measurement/correction/qualify";
+import type { BenchQuality } from "~/measurement/correction/bench-quality";
 import { benchScene } from "~/routes/benches/bench-scene";
 
 const WISH = { swr: 1.5, tolerance: 0.1 };
