@@ -1,7 +1,8 @@
 import { readdirSync, readFileSync } from "node:fs";
 import { analyse } from "../app/measurement/analyse.ts";
 import type { Antenna, AntennaElement, ElementKind } from "../app/measurement/antenna.ts";
-import { type Cause, causesOf } from "../app/measurement/causes.ts";
+import type { Cause } from "../app/measurement/causes/cause.ts";
+import { causesOf } from "../app/measurement/causes.ts";
 import { SPEED_OF_LIGHT } from "../app/measurement/feedline.ts";
 import type { Sweep } from "../app/measurement/sweep.ts";
 

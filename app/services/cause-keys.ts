@@ -1,4 +1,4 @@
-import type { Cause } from "../measurement/causes.ts";
+import type { Cause } from "../measurement/causes/cause.ts";
 
 /** A cause's name among evidence: its kind, the antenna's part and the order, "part.a1b2.3". */
 export function keyOf({ kind, part, order }: Pick<Cause, "kind" | "part" | "order">): string {

@@ -4,16 +4,11 @@ import * as cables from "~/db/cables.server";
 import * as dips from "~/db/dips.server";
 import type { SweepRow } from "~/db/sweeps.server";
 import { type Antenna, NO_ANTENNA } from "~/measurement/antenna";
-import {
-  type Cause,
-  causesOf,
-  type Discrimination,
-  discriminate,
-  type NotJudged,
-  notJudged,
-  type ReferenceDip,
-  ripplePeriodOf,
-} from "~/measurement/causes";
+import { causesOf } from "~/measurement/causes";
+import type { Cause, ReferenceDip } from "~/measurement/causes/cause";
+import { type Discrimination, discriminate } from "~/measurement/causes/discriminate";
+import { ripplePeriodOf } from "~/measurement/causes/ripple";
+import { type NotJudged, notJudged } from "~/measurement/elements";
 import type { LengthUnit } from "~/measurement/lengths";
 import type { Dip } from "~/measurement/sweep";
 import { type AntennaThen, antennaAt } from "./antennas.server.ts";

@@ -1,7 +1,10 @@
 import { describe, expect, test } from "vitest";
 import type { Antenna } from "../../app/measurement/antenna.ts";
+import type { CauseContext } from "../../app/measurement/causes/cause.ts";
+import { discriminate } from "../../app/measurement/causes/discriminate.ts";
 import { standingOf } from "../../app/measurement/causes/rank.ts";
-import { type CauseContext, causesOf, discriminate, ripplePeriodOf } from "../../app/measurement/causes.ts";
+import { ripplePeriodOf } from "../../app/measurement/causes/ripple.ts";
+import { causesOf } from "../../app/measurement/causes.ts";
 import { bareAntenna, part } from "./antennas.ts";
 
 const at = (mhz: number) => ({ frequencyHz: mhz * 1e6, frequencyUncertaintyHz: 2e3, edge: false });

@@ -1,6 +1,6 @@
-import type { Cause } from "../causes.ts";
 import { FEEDLINE } from "../elements.ts";
 import type { LengthUnit } from "../lengths.ts";
+import type { Cause } from "./cause.ts";
 import { shiftOf, type Try, tryOn } from "./tries.ts";
 import { shiftWords } from "./words.ts";
 

@@ -1,5 +1,5 @@
-import type { Cause, CauseContext, JudgedDip } from "../causes.ts";
 import { formatFrequency } from "../units.ts";
+import type { Cause, CauseContext, JudgedDip } from "./cause.ts";
 import { type Standing, standingOf } from "./rank.ts";
 import { offsetWords } from "./words.ts";
 

@@ -1,5 +1,5 @@
-import type { Cause, CauseContext, JudgedDip } from "../causes.ts";
 import { type Prediction, predictionsOf } from "../elements.ts";
+import type { Cause, CauseContext, JudgedDip } from "./cause.ts";
 import { FARTHEST, type Standing, standingOf } from "./rank.ts";
 import { shiftOf, tryOn } from "./tries.ts";
 import { offsetWords, shiftWords } from "./words.ts";

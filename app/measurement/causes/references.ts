@@ -1,14 +1,7 @@
-import type { Cause, CauseContext, JudgedDip } from "../causes.ts";
 import { formatFrequency } from "../units.ts";
+import type { Cause, CauseContext, JudgedDip } from "./cause.ts";
 import { standingOf } from "./rank.ts";
 import { offsetWords } from "./words.ts";
-
-/** A dip of one of the bench's own sweeps. */
-export interface ReferenceDip {
-  role: "open" | "short" | "load";
-  frequencyHz: number;
-  frequencyUncertaintyHz: number | null;
-}
 
 /** The same dip in a sweep of the bench without an antenna: then it is of the bench. The nearest is taken. */
 export function byReferences(dip: JudgedDip, { references }: CauseContext): Cause[] {

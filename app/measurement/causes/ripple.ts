@@ -1,8 +1,8 @@
 import type { AntennaFeedline } from "../antenna.ts";
 import { cableNamed } from "../cables.ts";
-import type { Cause, CauseContext, JudgedDip } from "../causes.ts";
 import { SPEED_OF_LIGHT } from "../feedline.ts";
 import { formatFrequency } from "../units.ts";
+import type { Cause, CauseContext, JudgedDip } from "./cause.ts";
 import { standingOf } from "./rank.ts";
 import { offsetWords } from "./words.ts";
 
