@@ -1,4 +1,4 @@
-import type { CablePoint, CableSheet } from "./cables.ts";
+import type { CablePoint, CableSheet } from "./cable-entry.ts";
 
 /** "30: 0.7 50: 0.9": MHz and dB, as the sheets print them. */
 function printed(figures: string, per: number): CablePoint[] {

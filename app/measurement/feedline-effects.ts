@@ -1,5 +1,4 @@
-import type { CableEntry } from "./cables.ts";
-import type { Feedline } from "./feedline.ts";
+import type { CableEntry } from "./cable-entry.ts";
 import type { BenchLimits, PictureLimits, Sweep, Warning } from "./sweep.ts";
 
 /** What taking out a feedline does to limits, and what there is to say of it. `gain` is abs Γ there over abs Γ here, per point. */
@@ -43,7 +42,7 @@ export function lineWarnings(
   before: Sweep,
   after: Sweep,
   gain: Float64Array,
-  line: Feedline,
+  line: { name: string; rangeMhz?: { low: number; high: number } },
   cable: CableEntry | null,
 ): Warning[] {
   const warnings: Warning[] = [];

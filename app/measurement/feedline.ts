@@ -1,4 +1,5 @@
-import { type CableEntry, cableNamed } from "./cables.ts";
+import type { CableEntry } from "./cable-entry.ts";
+import { cableNamed } from "./cables.ts";
 import { lineWarnings, otherImpedance, scaleLimits, scalePicture } from "./feedline-effects.ts";
 import { gammaToSwr, swrToGamma } from "./reflection.ts";
 import { renormalise } from "./renormalise.ts";

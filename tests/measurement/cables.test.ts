@@ -1,5 +1,6 @@
 import { describe, expect, it } from "vitest";
-import { CABLES, type CablePoint, cableNamed, fitCable } from "../../app/measurement/cables.ts";
+import type { CablePoint } from "../../app/measurement/cable-entry.ts";
+import { CABLES, cableNamed, fitCable } from "../../app/measurement/cables.ts";
 
 const at = ({ k1, k2 }: { k1: number; k2: number }, mhz: number) => 100 * (k1 * Math.sqrt(mhz) + k2 * mhz);
 

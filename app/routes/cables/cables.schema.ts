@@ -1,5 +1,6 @@
 import { z } from "zod";
-import { type CablePoint, cableNamed, fitCable } from "~/measurement/cables";
+import type { CablePoint } from "~/measurement/cable-entry";
+import { cableNamed, fitCable } from "~/measurement/cables";
 import { plainText } from "~/services/file-names";
 
 /** A cable of the project's own: by points of its sheet, or by k1 and k2. */
