@@ -1,19 +1,13 @@
-import type { Noise } from "../noise.ts";
 import { type Fit, knownFit } from "./fit-limits.ts";
 import { growing } from "./growing.ts";
 import type { Solution } from "./least-squares.ts";
 import { meanPoints, selectPoints } from "./points.ts";
 import { ROUNDING, smallEnough, successive, whiteEnough } from "./residuals.ts";
 import { DEPTH } from "./resonator.ts";
-import { type Candidate, fitMeans, likelier } from "./weighing.ts";
+import { type Candidate, type FitNoise, fitMeans, likelier } from "./weighing.ts";
 import type { Window } from "./window.ts";
 
 export type { Fit } from "./fit-limits.ts";
-
-/** The larger σ of the sweep's and of the samples near the dip, and that of the sweep alone. */
-export interface FitNoise extends Noise {
-  sweepDb: number;
-}
 
 /**
  * Fits the resonator to abs Γ² over the window, and when the shape leaves more than noise there, over ever

@@ -1,5 +1,4 @@
 import type { Noise } from "../noise.ts";
-import type { FitNoise } from "./fit.ts";
 import { leastSquares, type Prior, type Solution } from "./least-squares.ts";
 import type { Points } from "./points.ts";
 import { DB_PER_POWER, type Residuals, residualsOf, type Scatter, unbiased } from "./residuals.ts";
@@ -9,6 +8,11 @@ import { CURVE, resonatorPower, TILT } from "./resonator.ts";
 export interface Candidate {
   solution: Solution;
   residuals: Residuals;
+}
+
+/** The larger σ of the sweep's and of the samples near the dip, and that of the sweep alone. */
+export interface FitNoise extends Noise {
+  sweepDb: number;
 }
 
 /** What fits of one dip share. */
