@@ -1,6 +1,6 @@
 import { PAGE_PALETTE } from "./palette";
 import { across } from "./place";
-import type { PlacedGhost, PlacedTrail } from "./strip-trails";
+import type { PlacedGhost, PlacedTrail } from "./placed-trail";
 
 const palette = PAGE_PALETTE;
 const HALF_PX = 5;

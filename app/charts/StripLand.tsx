@@ -1,7 +1,7 @@
 import { PAGE_PALETTE } from "./palette";
 import { across } from "./place";
+import type { PlacedStrip } from "./placed-strip";
 import { STRIP_UNITS, UNITS_PER_PX } from "./strip-path";
-import type { PlacedStrip } from "./strip-scene";
 
 /** Room over the land for half the pen's width. */
 const PEN_PX = 1;

@@ -1,7 +1,8 @@
 import type { FocusEvent, KeyboardEvent } from "react";
 import { PAGE_PALETTE } from "./palette";
 import { At, across, Stretched } from "./place";
-import { type PlacedTrail, TRAIL_UNITS } from "./strip-trails";
+import type { PlacedTrail } from "./placed-trail";
+import { TRAIL_UNITS } from "./strip-trails";
 
 export interface StripTrailProps {
   placed: PlacedTrail;

@@ -5,9 +5,11 @@
 import { type FrequencyAxis, type FrequencyScaleKind, frequencyAxis, frequencyScale } from "./axis.ts";
 import type { ChartBand } from "./chart-types.ts";
 import { type ChartPoints, decimate, lowerBound } from "./decimate.ts";
+import type { PlacedSteps, PlacedStrip } from "./placed-strip.ts";
+import type { PlacedTrail } from "./placed-trail.ts";
 import { type RibbonBand, ribbonBands } from "./ribbon.ts";
-import { type StripPath, stripPath } from "./strip-path.ts";
-import { type PlacedTrail, placeTrails, type Trail } from "./strip-trails.ts";
+import { stripPath } from "./strip-path.ts";
+import { placeTrails, type Trail } from "./strip-trails.ts";
 
 export interface Strip {
   id: string;
@@ -38,26 +40,6 @@ export interface StripSceneInput {
   toHz: number;
   bands: readonly ChartBand[];
   designBands: readonly ChartBand[];
-}
-
-export interface PlacedStrip {
-  id: string;
-  title: string;
-  caption: string;
-  landY: number;
-  footY: number;
-  path: StripPath;
-  /** Dips in view that are on no trail. */
-  dips: { id: string; fraction: number; y: number }[];
-}
-
-/** The steps that lie between two strips, or over the newest one. */
-export interface PlacedSteps {
-  y: number;
-  heightPx: number;
-  /** Nothing of it is done yet: ghosts stand in it. */
-  planned: boolean;
-  steps: { id: string; title: string; caption: string; planned: boolean }[];
 }
 
 export interface StripScene {

@@ -1,7 +1,8 @@
 /** Trails across the strips, their ghosts, and what is said beside them. */
 import type { FrequencyScale } from "./axis.ts";
-import type { PlacedSteps, PlacedStrip } from "./strip-scene.ts";
-import { nameTrails, type TrailName } from "./trail-names.ts";
+import type { PlacedSteps, PlacedStrip } from "./placed-strip.ts";
+import type { PlacedGhost, PlacedTrail, TrailStop, TrailTone } from "./placed-trail.ts";
+import { nameTrails } from "./trail-names.ts";
 
 export interface Trail {
   id: string;
@@ -23,44 +24,6 @@ export interface Ghost {
   frequencyHz: number;
   lowHz: number | null;
   highHz: number | null;
-  words: string;
-}
-
-export type TrailTone = "heather" | "clay" | "moss";
-
-export interface PlacedTrail {
-  id: string;
-  label: string;
-  detail: string;
-  tone: TrailTone;
-  /** From stop to stop where the strips follow one another, and where strips between do not show it. */
-  way: string;
-  gaps: string;
-  /** From the newest stop to its planned ghost. */
-  ahead: string;
-  /** Newest first. */
-  stops: TrailStop[];
-  ghosts: PlacedGhost[];
-  /** Beside the newest stop; null where it fits at no width. */
-  name: TrailName | null;
-}
-
-export interface TrailStop {
-  dipId: string;
-  stripId: string;
-  fraction: number;
-  y: number;
-  words: string;
-}
-
-export interface PlacedGhost {
-  key: string;
-  fraction: number;
-  /** The interval's ends in view; null where it is not known. */
-  low: number | null;
-  high: number | null;
-  y: number;
-  planned: boolean;
   words: string;
 }
 

@@ -1,16 +1,7 @@
 /** Where the names of trails stand without running into each other. */
-import type { PlacedStrip } from "./strip-scene.ts";
-import type { PlacedTrail } from "./strip-trails.ts";
+import type { PlacedStrip } from "./placed-strip.ts";
+import type { PlacedTrail, TrailName } from "./placed-trail.ts";
 import { TIER_PLOT_WIDTHS_PX } from "./tiers.ts";
-
-export interface TrailName {
-  side: "left" | "right";
-  /** px under the stop, negative over it. */
-  shiftY: number;
-  /** Narrowest tier at which the label is shown, and at which the detail is shown with it; null at none. */
-  tier: number;
-  detailTier: number | null;
-}
 
 const CHARACTER_PX = 7;
 const OFFSET_PX = 12;

@@ -1,5 +1,6 @@
 import type { VerdictState } from "~/charts/chart-types";
-import type { Ghost, Trail, TrailTone } from "~/charts/strip-trails";
+import type { TrailTone } from "~/charts/placed-trail";
+import type { Ghost, Trail } from "~/charts/strip-trails";
 import { movementWords, stopWords, type TrailNumbers } from "~/charts/trail-words";
 import type { DesignBand } from "~/db/projects.server";
 import type { ListedStep } from "~/db/steps.server";
