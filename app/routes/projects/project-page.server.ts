@@ -52,3 +52,4 @@ export async function loadProjectPage(access: ProjectAccess, search: URLSearchPa
     thread,
   };
 }
+export type ProjectPageData = Awaited<ReturnType<typeof loadProjectPage>>;

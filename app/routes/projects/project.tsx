@@ -9,7 +9,7 @@ import { sinceLast } from "~/services/activity.server";
 import type { Route } from "./+types/project";
 import { StripSection } from "./components/strip/StripSection.tsx";
 import { TrailTable } from "./components/TrailTable.tsx";
-import { loadProjectPage } from "./project-page.server.ts";
+import { loadProjectPage, type ProjectPageData } from "./project-page.server.ts";
 
 export async function loader(args: Route.LoaderArgs) {
   const access = await requireProject(args, "project.read");
@@ -58,10 +58,7 @@ export default function Project({ loaderData }: Route.ComponentProps) {
   );
 }
 
-export type ProjectPageData = Route.ComponentProps["loaderData"];
-type Data = ProjectPageData;
-
-function OpenDips({ data }: { data: Data }) {
+function OpenDips({ data }: { data: ProjectPageData }) {
   return (
     <section aria-labelledby="open-dips" className="grid gap-3">
       <h2 id="open-dips">Unsettled dips</h2>
@@ -104,7 +101,7 @@ function OpenDips({ data }: { data: Data }) {
   );
 }
 
-function LatestNotes({ data }: { data: Data }) {
+function LatestNotes({ data }: { data: ProjectPageData }) {
   return (
     <section aria-labelledby="latest-notes" className="grid gap-3">
       <h2 id="latest-notes">Latest notes</h2>
@@ -126,7 +123,7 @@ function LatestNotes({ data }: { data: Data }) {
   );
 }
 
-function Members({ data }: { data: Data }) {
+function Members({ data }: { data: ProjectPageData }) {
   return (
     <section aria-labelledby="members" className="grid gap-3">
       <h2 id="members">Members</h2>

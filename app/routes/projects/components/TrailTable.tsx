@@ -1,7 +1,7 @@
 import { Link } from "react-router";
 import { Table } from "~/components/ui/Table";
 import { VerdictTag } from "~/components/ui/Tag";
-import type { ProjectPageData } from "../project";
+import type { ProjectPageData } from "../project-page.server.ts";
 
 type Trail = ProjectPageData["trails"][number];
 

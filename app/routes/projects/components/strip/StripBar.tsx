@@ -3,7 +3,7 @@ import { RangeBar } from "~/charts/RangeBar";
 import type { FrequencyRange } from "~/charts/ranges";
 import { MakePlate } from "~/components/plates/MakePlate";
 import { Button, LinkButton } from "~/components/ui/Button";
-import type { ProjectPageData } from "../../project";
+import type { ProjectPageData } from "../../project-page.server.ts";
 import { stripSearch } from "./strip.schema.ts";
 
 interface StripBarProps {

@@ -6,7 +6,7 @@ import { StripDrag } from "~/charts/StripDrag";
 import { StripMap } from "~/charts/StripMap";
 import { LinkButton } from "~/components/ui/Button";
 import { EmptyState } from "~/components/ui/EmptyState";
-import type { ProjectPageData } from "../../project";
+import type { ProjectPageData } from "../../project-page.server.ts";
 import { StripBar } from "./StripBar.tsx";
 import { stripSearch } from "./strip.schema.ts";
 
