@@ -23,6 +23,7 @@ export async function loadRepeats({ project, may }: ProjectAccess, { sweep }: Fo
     findings: members.length > 1 ? await findingsOf(members) : null,
   };
 }
+export type RepeatsData = Awaited<ReturnType<typeof loadRepeats>>;
 
 async function findingsOf(members: FoundSweep[]) {
   const { mean, ...findings } = await findRepeats(members);

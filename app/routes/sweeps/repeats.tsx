@@ -120,5 +120,3 @@ export default function Repeats({ loaderData, actionData }: Route.ComponentProps
     </article>
   );
 }
-
-export type RepeatsData = Route.ComponentProps["loaderData"];

@@ -19,10 +19,28 @@ import { limitsOf, type SweepAt, sweepAt, uncorrected } from "~/services/shown-s
 import { drawBands } from "./bands-page.server";
 import { loadComplex } from "./complex-page.server";
 import { loadCorrection } from "./correction-page.server";
+import { identityOf } from "./sweep-identity";
 import type { SweepView } from "./sweeps.schema";
 
-/** All that the sweep page shows besides the sweep's own row: one round of queries, all at once. */
+/** All that the page of a sweep with an analysis shows. */
 export async function loadSweepPage(
+  access: ProjectAccess,
+  found: FoundSweep,
+  analysis: NonNullable<FoundSweep["analysis"]>,
+  view: SweepView,
+) {
+  const { settings, version, number } = analysis;
+  return {
+    ...identityOf(access, found),
+    analysis: { settings, version, number },
+    view,
+    ...(await loadFindings(access, found, view, settings)),
+  };
+}
+export type SweepPageData = Awaited<ReturnType<typeof loadSweepPage>>;
+
+/** What is drawn and found: one round of queries, all at once. */
+async function loadFindings(
   access: ProjectAccess,
   found: FoundSweep,
   view: SweepView,

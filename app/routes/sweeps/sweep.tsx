@@ -35,43 +35,11 @@ export async function loader(args: Route.LoaderArgs) {
   const asked = sweeps.findByPublicId(args.params.sweep);
   const [access] = await Promise.all([requireProject(args, "project.read"), asked]);
   const found = await requireSweep(access, args.params.sweep, asked);
-  const { sweep, file, reading, analysis } = found;
+  const { sweep, analysis } = found;
   if (sweep.problem || !analysis) {
     throw redirect(`/projects/${access.project.publicId}/sweeps/${sweep.publicId}/reading`);
   }
-  const view = parseView(new URL(args.request.url).searchParams);
-  const page = await loadSweepPage(access, found, view, analysis.settings);
-  return {
-    project: { publicId: access.project.publicId, title: access.project.title },
-    may: {
-      edit: access.may("sweep.edit"),
-      delete: access.may("sweep.delete"),
-      write: access.may("note.write"),
-    },
-    mayVerdict: { propose: access.may("verdict.propose"), settle: access.may("verdict.settle") },
-    sweep: {
-      publicId: sweep.publicId,
-      title: sweep.title,
-      takenAt: sweep.takenAt,
-      createdAt: sweep.createdAt,
-      by: found.by,
-      pointCount: sweep.pointCount,
-      startHz: sweep.startHz,
-      stopHz: sweep.stopHz,
-      referenceOhm: sweep.referenceOhm,
-      complex: sweep.complex ?? false,
-      fileName: file.name,
-      sha256: file.sha256,
-      format: reading?.reading?.format ?? null,
-      quantity: reading?.reading?.quantity ?? null,
-      assumed: reading?.reading?.assumed ?? [],
-      questions: reading?.reading?.questions.length ?? 0,
-      repeatGroup: sweep.repeatGroup,
-    },
-    analysis: { settings: analysis.settings, version: analysis.version, number: analysis.number },
-    view,
-    ...page,
-  };
+  return loadSweepPage(access, found, analysis, parseView(new URL(args.request.url).searchParams));
 }
 
 export async function action(args: Route.ActionArgs) {
@@ -178,5 +146,3 @@ export default function SweepPage({ loaderData, actionData }: Route.ComponentPro
     </MarksProvider>
   );
 }
-
-export type SweepPageData = Route.ComponentProps["loaderData"];

@@ -1,5 +1,5 @@
 import { formatFrequency } from "~/measurement/units";
-import type { SweepPageData } from "../sweep";
+import type { SweepPageData } from "../sweep-page.server";
 
 /** What the analysis warns of, and what to sweep again. */
 export function Advice({ data }: { data: SweepPageData }) {

@@ -1,5 +1,5 @@
 import { formatNoise } from "~/measurement/units";
-import type { SweepPageData } from "../sweep";
+import type { SweepPageData } from "../sweep-page.server";
 
 /** The original and the numbers, and how the numbers came about. */
 export function Downloads({ data }: { data: SweepPageData }) {

@@ -1,6 +1,6 @@
 import { LimitSources } from "~/components/LimitSources";
 import { formatFrequency } from "~/measurement/units";
-import type { SweepPageData } from "../sweep";
+import type { SweepPageData } from "../sweep-page.server";
 
 /** Dip by dip, what its limits come from; what is unknown of all of them is said once. */
 export function LimitList({ data }: { data: SweepPageData }) {

@@ -1,7 +1,7 @@
 import { Link } from "react-router";
 import { VerdictTag } from "~/components/ui/Tag";
 import { formatFrequency } from "~/measurement/units";
-import type { SweepPageData } from "../sweep";
+import type { SweepPageData } from "../sweep-page.server";
 
 /** Dips that were talked about and that the current analysis does not find: their threads stay. */
 export function LostDips({ data }: { data: SweepPageData }) {

@@ -6,7 +6,7 @@ import { DateTime } from "~/components/ui/DateTime";
 import { Dialog } from "~/components/ui/Dialog";
 import { InputField } from "~/components/ui/Field";
 import { formatFrequency } from "~/measurement/units";
-import type { SweepPageData } from "../sweep";
+import type { SweepPageData } from "../sweep-page.server";
 import { kindOf } from "../words";
 
 /** Title, where the numbers come from, and what can be done with the sweep. */

@@ -4,7 +4,7 @@ import { Thread } from "~/components/notes/Thread";
 import { VerdictForm } from "~/components/notes/VerdictForm";
 import { VerdictTag } from "~/components/ui/Tag";
 import { formatFrequency, formatSwr } from "~/measurement/units";
-import type { SweepPageData } from "../sweep";
+import type { SweepPageData } from "../sweep-page.server";
 import { searchWith } from "../sweeps.schema";
 
 /** The chosen dip's thread: beside the chart where there is room, else right under it. */

@@ -5,7 +5,7 @@ import { LiveSweepChart } from "~/charts/LiveSweepChart";
 import type { FrequencyRange } from "~/charts/ranges";
 import { unpackPoints } from "~/charts/sent-points";
 import { StretchMarks } from "~/components/notes/PartMarks";
-import type { SweepPageData } from "../sweep";
+import type { SweepPageData } from "../sweep-page.server";
 import { searchWith } from "../sweeps.schema";
 
 /** The chart with its cairns and ribbon, and the cards that hang from its dips. */

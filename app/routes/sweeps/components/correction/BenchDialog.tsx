@@ -3,7 +3,7 @@ import { Button } from "~/components/ui/Button";
 import { Dialog } from "~/components/ui/Dialog";
 import { SelectField } from "~/components/ui/Field";
 import type { CorrectionData } from "../../correction-page.server";
-import type { SweepPageData } from "../../sweep";
+import type { SweepPageData } from "../../sweep-page.server";
 
 interface BenchDialogProps {
   data: SweepPageData;

@@ -1,6 +1,6 @@
 import { Form, Link, useNavigation } from "react-router";
 import { Button } from "~/components/ui/Button";
-import type { SweepPageData } from "../../sweep";
+import type { SweepPageData } from "../../sweep-page.server";
 import { searchWith } from "../../sweeps.schema";
 import { BenchDialog } from "./BenchDialog";
 import { FeedlineDialog } from "./FeedlineDialog";

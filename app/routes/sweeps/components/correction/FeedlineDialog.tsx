@@ -4,7 +4,7 @@ import { Dialog } from "~/components/ui/Dialog";
 import { InputField, SelectField } from "~/components/ui/Field";
 import type { CorrectionData } from "../../correction-page.server";
 import { feedlineFields } from "../../feedline.schema";
-import type { SweepPageData } from "../../sweep";
+import type { SweepPageData } from "../../sweep-page.server";
 
 interface FeedlineDialogProps {
   data: SweepPageData;

@@ -3,7 +3,7 @@ import { Link } from "react-router";
 import { RegionMarks } from "~/components/notes/PartMarks";
 import { Button } from "~/components/ui/Button";
 import { useHydrated } from "~/components/ui/hydrated";
-import type { SweepPageData } from "../../sweep";
+import type { SweepPageData } from "../../sweep-page.server";
 import { searchWith } from "../../sweeps.schema";
 import { roughFrequency } from "../../words";
 

@@ -2,7 +2,7 @@ import { useMemo } from "react";
 import { SweepChart } from "~/charts/SweepChart";
 import { buildSweepScene } from "~/charts/scene";
 import { unpackPoints } from "~/charts/sent-points";
-import type { RepeatsData } from "../../repeats";
+import type { RepeatsData } from "../../repeats-page.server";
 
 type Mean = NonNullable<NonNullable<RepeatsData["findings"]>["mean"]>;
 

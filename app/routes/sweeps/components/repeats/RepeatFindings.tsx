@@ -2,7 +2,7 @@ import { Link } from "react-router";
 import { formatDate } from "~/components/ui/dates";
 import { type Column, Table } from "~/components/ui/Table";
 import { formatFrequency, formatSwr, formatWidth } from "~/measurement/units";
-import type { RepeatsData } from "../../repeats";
+import type { RepeatsData } from "../../repeats-page.server";
 import { MeanChart } from "./MeanChart";
 
 type Findings = NonNullable<RepeatsData["findings"]>;
