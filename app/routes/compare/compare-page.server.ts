@@ -1,3 +1,4 @@
+import { redirect } from "react-router";
 import type { ProjectAccess } from "~/auth/require.server";
 import { type FrequencyScaleKind, frequencyScale } from "~/charts/axis";
 import { buildDifferenceScene } from "~/charts/difference-scene";
@@ -16,12 +17,37 @@ import {
   rowsOf,
 } from "~/services/compare.server";
 import { pickPoints } from "~/services/points.server";
-import { type CompareView, MOST_COMPARED } from "./compare.schema";
+import {
+  type CompareView,
+  compareSearch,
+  countLeftOut,
+  MOST_COMPARED,
+  parseCompare,
+  sweepInAddress,
+} from "./compare.schema";
 import { shapeRow } from "./compare-rows";
 import { differencesInKind, LETTERS } from "./compare-words";
 
-/** All that the comparison shows. */
-export async function loadCompare({ project, person }: ProjectAccess, view: CompareView) {
+/** All that the page shows. A sweep whose address was pasted goes into the page's own address first. */
+export async function loadComparePage(access: ProjectAccess, search: URLSearchParams) {
+  const view = parseCompare(search);
+  const pasted = search.get("add")?.trim() ?? "";
+  const added = pasted ? sweepInAddress(pasted) : null;
+  if (added && view.sweeps.length < MOST_COMPARED) {
+    throw redirect(compareSearch(view, { sweeps: [...new Set([...view.sweeps, added])] }));
+  }
+  return {
+    ...(await loadComparison(access, view)),
+    view,
+    leftOut: countLeftOut(search) + (added ? 1 : 0),
+    noAddress: pasted && !added ? pasted.slice(0, 200) : null,
+  };
+}
+export type ComparePageData = Awaited<ReturnType<typeof loadComparePage>>;
+export type ShownComparison = NonNullable<ComparePageData["shown"]>;
+export type ShownSweep = ReturnType<typeof shownOf>;
+
+async function loadComparison({ project, person }: ProjectAccess, view: CompareView) {
   const [{ compared, unread, missing }, designBands, choices] = await Promise.all([
     chooseSweeps(view.sweeps, person?.id ?? null),
     projects.findDesignBands(project.id),
@@ -75,10 +101,6 @@ export async function loadCompare({ project, person }: ProjectAccess, view: Comp
     },
   };
 }
-
-export type CompareData = Awaited<ReturnType<typeof loadCompare>>;
-export type ShownComparison = NonNullable<CompareData["shown"]>;
-export type ShownSweep = ReturnType<typeof shownOf>;
 
 function shownOf({ sweep, project, at, analysis, reading, dips }: ComparedSweep, i: number, here: string) {
   const { frequencyHz } = at.sweep;

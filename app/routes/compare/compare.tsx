@@ -1,10 +1,8 @@
-import { redirect } from "react-router";
 import { requireProject } from "~/auth/require.server";
 import { Breadcrumbs } from "~/components/ui/Breadcrumbs";
 import { EmptyState } from "~/components/ui/EmptyState";
 import type { Route } from "./+types/compare";
-import { compareSearch, countLeftOut, MOST_COMPARED, parseCompare, sweepInAddress } from "./compare.schema";
-import { loadCompare } from "./compare-page.server";
+import { loadComparePage } from "./compare-page.server";
 import { BandsBySide } from "./components/BandsBySide";
 import { ChosenSweeps } from "./components/ChosenSweeps";
 import { Curves } from "./components/Curves";
@@ -16,19 +14,7 @@ export const meta: Route.MetaFunction = () => [{ title: "Sweeps compared · Swal
 
 export async function loader(args: Route.LoaderArgs) {
   const access = await requireProject(args, "project.read");
-  const search = new URL(args.request.url).searchParams;
-  const view = parseCompare(search);
-  const pasted = search.get("add")?.trim() ?? "";
-  const added = pasted ? sweepInAddress(pasted) : null;
-  if (added && view.sweeps.length < MOST_COMPARED) {
-    throw redirect(compareSearch(view, { sweeps: [...new Set([...view.sweeps, added])] }));
-  }
-  return {
-    ...(await loadCompare(access, view)),
-    view,
-    leftOut: countLeftOut(search) + (added ? 1 : 0),
-    noAddress: pasted && !added ? pasted.slice(0, 200) : null,
-  };
+  return loadComparePage(access, new URL(args.request.url).searchParams);
 }
 
 export default function ComparePage({ loaderData }: Route.ComponentProps) {
@@ -54,5 +40,3 @@ export default function ComparePage({ loaderData }: Route.ComponentProps) {
     </article>
   );
 }
-
-export type ComparePageData = Route.ComponentProps["loaderData"];

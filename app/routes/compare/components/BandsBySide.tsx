@@ -3,8 +3,7 @@ import { Tag } from "~/components/ui/Tag";
 import { BandFiguresCell } from "~/routes/sweeps/components/bands/BandFiguresCell";
 import { bandEdges } from "~/routes/sweeps/components/bands/band-words";
 import { NationalLimits } from "~/routes/sweeps/components/bands/NationalLimits";
-import type { ComparePageData } from "../compare";
-import type { ShownComparison } from "../compare-page.server";
+import type { ComparePageData, ShownComparison } from "../compare-page.server";
 
 type Row = ShownComparison["bands"][number];
 

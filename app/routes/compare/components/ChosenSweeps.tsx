@@ -4,9 +4,8 @@ import { DateTime } from "~/components/ui/DateTime";
 import { Icon, type IconName } from "~/components/ui/Icon";
 import { Tag } from "~/components/ui/Tag";
 import { formatFrequency } from "~/measurement/units";
-import type { ComparePageData } from "../compare";
 import { compareSearch } from "../compare.schema";
-import type { ShownSweep } from "../compare-page.server";
+import type { ComparePageData, ShownSweep } from "../compare-page.server";
 
 /** The sweeps with their lines' looks: their order, which one the others are held against, and leaving them out. */
 export function ChosenSweeps({ data }: { data: ComparePageData }) {

@@ -6,9 +6,8 @@ import type { FrequencyRange } from "~/charts/ranges";
 import { StripDrag } from "~/charts/StripDrag";
 import { MakePlate } from "~/components/plates/MakePlate";
 import { useHydrated } from "~/components/ui/hydrated";
-import type { ComparePageData } from "../compare";
 import { compareSearch } from "../compare.schema";
-import type { ShownComparison } from "../compare-page.server";
+import type { ComparePageData, ShownComparison } from "../compare-page.server";
 
 interface CurvesProps {
   data: ComparePageData;

@@ -1,9 +1,8 @@
 import { Link } from "react-router";
 import { type Column, Table } from "~/components/ui/Table";
 import { formatFrequency, formatSwr, formatWidth } from "~/measurement/units";
-import type { ComparePageData } from "../compare";
 import { compareSearch } from "../compare.schema";
-import type { ShownComparison } from "../compare-page.server";
+import type { ComparePageData, ShownComparison } from "../compare-page.server";
 import type { ShownRow } from "../compare-rows";
 
 type Cell = ShownRow["cells"][number];

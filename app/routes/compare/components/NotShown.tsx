@@ -1,6 +1,6 @@
 import { Link } from "react-router";
-import type { ComparePageData } from "../compare";
 import { MOST_COMPARED } from "../compare.schema";
+import type { ComparePageData } from "../compare-page.server";
 
 /** What the address asks for and this page can't show, and why. */
 export function NotShown({ data: { missing, unread, leftOut, noAddress } }: { data: ComparePageData }) {

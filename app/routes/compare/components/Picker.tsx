@@ -2,8 +2,8 @@ import { Form } from "react-router";
 import { Button } from "~/components/ui/Button";
 import { DateTime } from "~/components/ui/DateTime";
 import { InputField } from "~/components/ui/Field";
-import type { ComparePageData } from "../compare";
 import { compareFields } from "../compare.schema";
+import type { ComparePageData } from "../compare-page.server";
 
 /** More sweeps: of this project by a tick, of another one by its address. A plain form, so that the address is the choice. */
 export function Picker({ data }: { data: ComparePageData }) {
