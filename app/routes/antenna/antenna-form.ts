@@ -28,6 +28,12 @@ export interface AntennaTexts {
   remarks: string;
 }
 
+/** The form as it was sent, with what is not of the antenna itself. */
+export type SentAntenna = AntennaTexts & { since: string; remark: string; was: string };
+
+/** What is wrong with each field, by its name; the empty name is the whole form. */
+export type FieldErrors = Record<string, string[] | null>;
+
 /** The antenna as the form's fields show it. */
 export function textsOf(antenna: Antenna, unit: LengthUnit): AntennaTexts {
   const { feedline, choke } = antenna;
@@ -53,6 +59,21 @@ export function textsOf(antenna: Antenna, unit: LengthUnit): AntennaTexts {
     choke: { turns: numberText(choke?.turns ?? null), core: choke?.core ?? "", where: choke?.where ?? "" },
     ground: antenna.ground,
     remarks: antenna.remarks,
+  };
+}
+
+/** The fields as they were sent, so that nothing that was typed is lost. */
+export function sentTexts(payload: Record<string, unknown>): SentAntenna {
+  const sent = payload as unknown as Partial<SentAntenna>;
+  return {
+    elements: Array.isArray(sent.elements) ? sent.elements.map((row) => row ?? {}) : [],
+    feedline: sent.feedline ?? {},
+    choke: sent.choke ?? {},
+    ground: String(sent.ground ?? ""),
+    remarks: String(sent.remarks ?? ""),
+    since: String(sent.since ?? ""),
+    remark: String(sent.remark ?? ""),
+    was: String(sent.was ?? ""),
   };
 }
 

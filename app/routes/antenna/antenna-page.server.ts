@@ -30,6 +30,7 @@ export async function loadAntennaPage(projectId: number, on: Date | null, unit: 
       .reverse(),
   };
 }
+export type AntennaPage = Awaited<ReturnType<typeof loadAntennaPage>>;
 
 /** `2026-05-03` is the end of that day, with a time that minute; null for what is no day. */
 export function parseOn(text: string | null): Date | null {

@@ -98,7 +98,7 @@ export default function AntennaPage({ loaderData }: Route.ComponentProps) {
         {loaderData.describedFrom && (
           <aside className="grid gap-8 content-start min-w-0" aria-label="How it came to be so">
             <OnForm on={loaderData.on} />
-            <History data={loaderData} />
+            <History projectId={project.publicId} history={loaderData.history} />
           </aside>
         )}
       </div>
@@ -106,10 +106,8 @@ export default function AntennaPage({ loaderData }: Route.ComponentProps) {
   );
 }
 
-export type AntennaPageData = Route.ComponentProps["loaderData"];
-
 /** Of which time this is, and what that is worth. */
-function Validity({ data }: { data: AntennaPageData }) {
+function Validity({ data }: { data: Route.ComponentProps["loaderData"] }) {
   const { validFrom, validUntil, describedFrom, on } = data;
   if (!describedFrom) return null;
   if (!validFrom) {

@@ -20,7 +20,7 @@ import { changeBands } from "~/services/projects.server";
 import type { Route } from "./+types/edit";
 import { antennaSchema } from "./antenna.schema";
 import { antennaConflict, antennaWords } from "./antenna-conflict";
-import { type AntennaTexts, antennaFrom, parseAntenna, textsOf } from "./antenna-form";
+import { antennaFrom, type FieldErrors, parseAntenna, sentTexts, textsOf } from "./antenna-form";
 import { AntennaCautions } from "./components/AntennaCautions";
 import { AntennaForm } from "./components/AntennaForm";
 import { lengthUnitOf } from "./sizes";
@@ -105,23 +105,6 @@ export async function action(args: Route.ActionArgs) {
   }
 }
 
-export type SentAntenna = AntennaTexts & { since: string; remark: string; was: string };
-
-/** The fields as they were sent, so that nothing that was typed is lost. */
-function sentTexts(payload: Record<string, unknown>): SentAntenna {
-  const sent = payload as unknown as Partial<SentAntenna>;
-  return {
-    elements: Array.isArray(sent.elements) ? sent.elements.map((row) => row ?? {}) : [],
-    feedline: sent.feedline ?? {},
-    choke: sent.choke ?? {},
-    ground: String(sent.ground ?? ""),
-    remarks: String(sent.remarks ?? ""),
-    since: String(sent.since ?? ""),
-    remark: String(sent.remark ?? ""),
-    was: String(sent.was ?? ""),
-  };
-}
-
 function minuteOf(at: Date): string {
   return at.toISOString().slice(0, 16);
 }
@@ -166,8 +149,6 @@ function wordsOf({ asked }: Conflict) {
   return Object.fromEntries(asked.map(({ name }) => [name, (value: string) => antennaWords(name, value)]));
 }
 
-function actionDataErrors(actionData: Route.ComponentProps["actionData"]): Record<string, string[] | null> {
-  return actionData && "errors" in actionData ? (actionData.errors as Record<string, string[] | null>) : {};
+function actionDataErrors(actionData: Route.ComponentProps["actionData"]): FieldErrors {
+  return actionData && "errors" in actionData ? (actionData.errors as FieldErrors) : {};
 }
-
-export type EditAntennaData = Route.ComponentProps["loaderData"];

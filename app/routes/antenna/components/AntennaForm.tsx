@@ -2,15 +2,22 @@ import { useState } from "react";
 import { Form, useNavigation } from "react-router";
 import { Button } from "~/components/ui/Button";
 import { CheckboxField, InputField } from "~/components/ui/Field";
-import type { EditAntennaData, SentAntenna } from "../edit";
+import type { AntennaTexts, FieldErrors, SentAntenna } from "../antenna-form";
 import "../antenna.css";
 import { ElementFields } from "./ElementFields";
 import { FeedFields } from "./FeedFields";
 
-export type FieldErrors = Record<string, string[] | null>;
-
 export interface AntennaFormProps {
-  data: EditAntennaData;
+  data: {
+    /** Nobody described the antenna before. */
+    isFirst: boolean;
+    texts: AntennaTexts;
+    /** What the form was opened on, as JSON. */
+    was: string;
+    since: string;
+    /** Names to choose from. */
+    cables: string[];
+  };
   /** What the server said to the form as it was sent; null before it was. */
   answer: { sent: SentAntenna; more?: boolean } | null;
   errors: FieldErrors;

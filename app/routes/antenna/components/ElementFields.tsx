@@ -1,8 +1,7 @@
 import { InputField, SelectField } from "~/components/ui/Field";
 import { ELEMENT_KINDS } from "~/measurement/antenna";
 import { KIND_WORDS } from "~/services/antenna-words";
-import type { ElementTexts } from "../antenna-form";
-import type { FieldErrors } from "./AntennaForm";
+import type { ElementTexts, FieldErrors } from "../antenna-form";
 
 export interface ElementFieldsProps {
   index: number;

@@ -1,6 +1,5 @@
 import { InputField, TextareaField } from "~/components/ui/Field";
-import type { AntennaTexts } from "../antenna-form";
-import type { FieldErrors } from "./AntennaForm";
+import type { AntennaTexts, FieldErrors } from "../antenna-form";
 
 export interface FeedFieldsProps {
   texts: AntennaTexts;

@@ -1,11 +1,10 @@
 import { Link } from "react-router";
 import { DateTime } from "~/components/ui/DateTime";
-import type { AntennaPageData } from "../antenna";
+import type { AntennaPage } from "../antenna-page.server";
 
 /** Every change of the antenna with its day, the newest first; each leads to the antenna as it was from then on. */
-export function History({ data }: { data: AntennaPageData }) {
-  const { history, project } = data;
-  const base = `/projects/${project.publicId}`;
+export function History({ projectId, history }: { projectId: string; history: AntennaPage["history"] }) {
+  const base = `/projects/${projectId}`;
   return (
     <section aria-labelledby="history" className="grid gap-3">
       <h2 id="history">What changed, and when</h2>
