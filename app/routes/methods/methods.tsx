@@ -1,8 +1,7 @@
 import type { Route } from "./+types/methods";
 import { DefinitionPart } from "./components/DefinitionPart";
 import { CHAPTERS } from "./definitions/chapters";
-import { workExample } from "./example-values";
-import { renderFormula } from "./formula.server";
+import { showDefinition } from "./shown-definition.server";
 
 export const meta: Route.MetaFunction = () => [
   { title: "Methods · Swale" },
@@ -17,11 +16,7 @@ export function loader({ request }: Route.LoaderArgs) {
   return {
     chapters: CHAPTERS.map(({ title, definitions }) => ({
       title,
-      definitions: definitions.map((definition) => {
-        const { id, title, says, source, limits } = definition;
-        const formulas = definition.formulas.map(renderFormula);
-        return { id, title, says, source, limits, formulas, worked: workExample(definition, search) };
-      }),
+      definitions: definitions.map((definition) => showDefinition(definition, search)),
     })),
   };
 }
@@ -68,5 +63,3 @@ export default function Methods({ loaderData: { chapters } }: Route.ComponentPro
     </div>
   );
 }
-
-export type ShownDefinition = Route.ComponentProps["loaderData"]["chapters"][number]["definitions"][number];

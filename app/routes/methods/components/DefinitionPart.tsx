@@ -1,4 +1,4 @@
-import type { ShownDefinition } from "../methods";
+import type { ShownDefinition } from "../shown-definition.server";
 import { WorkedExampleForm } from "./WorkedExampleForm";
 
 /** One definition: what it says, its formulas, source and limits, and its worked example. */

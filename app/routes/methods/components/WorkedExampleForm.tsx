@@ -1,7 +1,7 @@
 import { Form } from "react-router";
 import { Button } from "~/components/ui/Button";
 import { InputField, SelectField } from "~/components/ui/Field";
-import type { ShownDefinition } from "../methods";
+import type { ShownDefinition } from "../shown-definition.server";
 
 /** A definition's example: a plain form whose values stand in the address, and what the code makes of them. */
 export function WorkedExampleForm({ definition: { id, title, worked } }: { definition: ShownDefinition }) {
