@@ -9,6 +9,7 @@ import { decide } from "~/services/webmention/moderate.server";
 import type { Route } from "./+types/mentions";
 import { MentionList } from "./components/MentionList.tsx";
 import { Told } from "./components/Told.tsx";
+import { shapeMention } from "./shape-mention.ts";
 import { decisionSchema } from "./webmention.schema.ts";
 
 export const meta: Route.MetaFunction = () => [{ title: "Cited elsewhere · Swale" }];
@@ -22,9 +23,9 @@ export async function loader(args: Route.LoaderArgs) {
     sentMentions.findAllByProject(project.id, A_LIST),
   ]);
   return {
-    waiting: waiting.map(shape),
-    shown: shown.map(shape),
-    rest: rest.map(shape),
+    waiting: waiting.map(shapeMention),
+    shown: shown.map(shapeMention),
+    rest: rest.map(shapeMention),
     told: told.map(({ sent, writeUp }) => ({
       key: sent.id,
       target: sent.target,
@@ -69,16 +70,6 @@ export default function ProjectMentions({ loaderData }: Route.ComponentProps) {
     </div>
   );
 }
-
-function shape({ mention, plate, writeUp, decidedBy }: webmentions.ListedMention) {
-  const { publicId, source, title, state, reason, receivedAt } = mention;
-  const { host } = new URL(source);
-  const of = plate
-    ? { path: `/plates/${plate.publicId}`, title: `Plate ${plate.number}, ${plate.title}` }
-    : { path: `/write-ups/${writeUp?.publicId}`, title: writeUp?.title ?? "" };
-  return { publicId, source, title: title || host, host, state, reason, at: receivedAt, of, decidedBy };
-}
-export type ProjectMention = ReturnType<typeof shape>;
 
 const DONE = {
   show: "Readers see it now.",

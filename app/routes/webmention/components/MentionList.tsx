@@ -3,7 +3,7 @@ import { MentionLink } from "~/components/mentions/Mentions";
 import { Button } from "~/components/ui/Button";
 import { DateTime } from "~/components/ui/DateTime";
 import { Tag } from "~/components/ui/Tag";
-import type { ProjectMention } from "../mentions.tsx";
+import type { ProjectMention } from "../shape-mention.ts";
 
 export function MentionList({
   id,
