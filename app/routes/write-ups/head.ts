@@ -1,5 +1,5 @@
 import type { MetaDescriptor } from "react-router";
-import type { WriteUpPage } from "./write-up.tsx";
+import type { WriteUpPage } from "./write-up-page.server.ts";
 
 /** What a published write-up tells other programs: its title, its picture, where it is for good, its forms. */
 export function headOf(page: WriteUpPage): MetaDescriptor[] {

@@ -1,6 +1,6 @@
 import { Link } from "react-router";
 import { DateTime } from "~/components/ui/DateTime";
-import type { WriteUpPage } from "../write-up.tsx";
+import type { WriteUpPage } from "../write-up-page.server.ts";
 
 /** How it came about, what may be done with it, and what to take along. */
 export function Foot({ page }: { page: WriteUpPage }) {

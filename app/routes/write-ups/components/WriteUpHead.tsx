@@ -2,7 +2,7 @@ import { Link } from "react-router";
 import { LinkButton } from "~/components/ui/Button";
 import { DateTime } from "~/components/ui/DateTime";
 import { Tag } from "~/components/ui/Tag";
-import type { WriteUpPage } from "../write-up.tsx";
+import type { WriteUpPage } from "../write-up-page.server.ts";
 
 /** Title, people, date, version; and what an older version has to say of itself. */
 export function WriteUpHead({ page }: { page: WriteUpPage }) {
