@@ -63,7 +63,7 @@ export async function action(args: Route.ActionArgs) {
         draw,
         mends: mended && wrong ? { plate: mended.plate, reason: wrong.data } : null,
       });
-      if ("problem" in made) return again(409, { problem: `${made.problem} Nothing was frozen.` });
+      if ("problem" in made) return again(409, { problem: `Nothing was frozen. ${made.problem}` });
       return redirectWithMessage(
         `/plates/${made.publicId}`,
         mended ? "The new version is frozen; the old one points to it." : "The plate is frozen.",
@@ -106,11 +106,16 @@ export default function NewPlate({ loaderData, actionData }: Route.ComponentProp
           </p>
         </div>
       ) : (
-        draft && <PlateForm key={draft.draw} data={loaderData} draft={draft} answer={actionData ?? null} />
+        draft && (
+          <PlateForm
+            key={draft.draw}
+            projectId={projectId}
+            visibility={loaderData.visibility}
+            draft={draft}
+            answer={actionData ?? null}
+          />
+        )
       )}
     </article>
   );
 }
-
-export type NewPlateData = Route.ComponentProps["loaderData"];
-export type NewPlateAnswer = NonNullable<Route.ComponentProps["actionData"]>;

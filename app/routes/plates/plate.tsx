@@ -92,6 +92,4 @@ export default function PlatePage({ loaderData, actionData }: Route.ComponentPro
   );
 }
 
-export type PlatePageData = NonNullable<Route.ComponentProps["loaderData"]["plate"]>;
-
 const NOT_YOURS = "Only owners and experimenters of the plate’s project withdraw it. Nothing was changed.";

@@ -1,8 +1,7 @@
 import type { ReactNode } from "react";
 import { Link } from "react-router";
 import { DateTime } from "~/components/ui/DateTime";
-import type { PlatePageData } from "../plate";
-import type { ShownSource } from "../plate-page.server";
+import type { PlatePageData, ShownSource } from "../plate-page.server";
 import { bytesWords, correctionWords, ROLES, readingWords } from "../source-words";
 
 /** Original → reading → correction → analysis → figure, of every sweep that the plate rests on. */

@@ -1,4 +1,4 @@
-import type { PlatePageData } from "../plate";
+import type { PlatePageData } from "../plate-page.server";
 import { CopyText } from "./CopyText";
 
 /** A sentence to cite, and what to paste where. */

@@ -1,4 +1,4 @@
-import type { PlatePageData } from "../plate";
+import type { PlatePageData } from "../plate-page.server";
 
 /** Everything the plate can be had as, each at an address that stays. */
 export function Forms({ plate }: { plate: PlatePageData }) {

@@ -1,7 +1,7 @@
 import { Link } from "react-router";
 import { DateTime } from "~/components/ui/DateTime";
 import { Markdown } from "~/components/ui/Markdown";
-import type { PlatePageData } from "../plate";
+import type { PlatePageData } from "../plate-page.server";
 import { RecordTables } from "./RecordTables";
 
 /** The leaf itself: number, title, figure, numbers, caption, and in small type who, when and under which licence. */

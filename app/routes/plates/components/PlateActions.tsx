@@ -1,6 +1,6 @@
 import { Link } from "react-router";
 import { LinkButton } from "~/components/ui/Button";
-import type { PlatePageData } from "../plate";
+import type { PlatePageData } from "../plate-page.server";
 import { Withdraw } from "./Withdraw";
 
 /** What can be done with the plate by whoever may; for everybody, the way to what it was made of. */

@@ -1,23 +1,26 @@
 import { useEffect, useRef } from "react";
 import { Form, useNavigation } from "react-router";
+import type { Visibility } from "~/auth/permissions";
 import { Button } from "~/components/ui/Button";
 import { TextareaField } from "~/components/ui/Field";
 import { useHydrated } from "~/components/ui/hydrated";
 import type { PlateDraft } from "../draft.server";
-import type { NewPlateAnswer, NewPlateData } from "../new";
+import type { PlateTexts } from "../plates.schema";
+import type { PreviewAnswer } from "../preview-plate.server";
 import { PlateFields } from "./PlateFields";
 import { Preview } from "./Preview";
 import { usePreview } from "./use-preview";
 
 interface PlateFormProps {
-  data: NewPlateData;
+  projectId: string;
+  visibility: Visibility;
   draft: PlateDraft;
   /** What the server said to the form as it was sent; null before it was. */
-  answer: NewPlateAnswer | null;
+  answer: (PreviewAnswer & { sent: { texts: PlateTexts; wrong: string } }) | null;
 }
 
 /** Choices beside the plate that comes of them. Without scripts a button shows it. */
-export function PlateForm({ data, draft, answer }: PlateFormProps) {
+export function PlateForm({ projectId, visibility, draft, answer }: PlateFormProps) {
   const hydrated = useHydrated();
   const { state, formData } = useNavigation();
   const busy = formData?.get("intent") === "freeze";
@@ -25,7 +28,7 @@ export function PlateForm({ data, draft, answer }: PlateFormProps) {
   useEffect(() => {
     if (state === "idle") pressed.current = false;
   }, [state]);
-  const tried = usePreview(`/projects/${data.projectId}/plates/preview`);
+  const tried = usePreview(`/projects/${projectId}/plates/preview`);
   const last = tried.answer ?? answer ?? draft;
   // While a field is half typed the last figure stays.
   const preview = last.preview ?? (last.problem ? null : (answer?.preview ?? draft.preview));
@@ -73,7 +76,7 @@ export function PlateForm({ data, draft, answer }: PlateFormProps) {
             </Button>
           </div>
         )}
-        <Consequence visibility={data.visibility} />
+        <Consequence visibility={visibility} />
         <div>
           <Button name="intent" value="freeze" busy={busy} icon="plate">
             {draft.mends ? "Freeze the new version" : "Freeze the plate"}
@@ -85,7 +88,7 @@ export function PlateForm({ data, draft, answer }: PlateFormProps) {
   );
 }
 
-function Consequence({ visibility }: { visibility: NewPlateData["visibility"] }) {
+function Consequence({ visibility }: { visibility: Visibility }) {
   return (
     <div
       className={`panel grid gap-2 border-l-3 ${visibility === "public" ? "border-l-fen" : "border-l-clay"}`}

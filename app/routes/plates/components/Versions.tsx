@@ -1,6 +1,6 @@
 import { Link } from "react-router";
 import { DateTime } from "~/components/ui/DateTime";
-import type { PlatePageData } from "../plate";
+import type { PlatePageData } from "../plate-page.server";
 
 /** That there is a newer version comes first: readers follow old links. */
 export function NewerVersion({ plate }: { plate: PlatePageData }) {
