@@ -1,14 +1,20 @@
+import type { KindName } from "~/db/bundle-kinds.server";
 import * as rows from "~/db/bundle-rows.server";
+import type { Queryable } from "~/db/client.server";
 import { decodePoints } from "../points.server.ts";
 import { sweepFigure } from "./figure.ts";
-import type { Context } from "./plan.server.ts";
 import { type PlanLine, textEntry } from "./plan.ts";
+import type { Rec } from "./records.ts";
+
+/** What the records of the project told. */
+interface Known {
+  ids: ReadonlyMap<KindName, rows.PublicIds>;
+  shown: ReadonlyMap<string, Rec[]>;
+  tx: Queryable;
+}
 
 /** The curves that the dips were found in: as numbers, and drawn. */
-export async function* planCurves(
-  context: Pick<Context, "ids" | "shown" | "tx">,
-  figures: Set<string>,
-): AsyncGenerator<PlanLine> {
+export async function* planCurves(context: Known, figures: Set<string>): AsyncGenerator<PlanLine> {
   const ids = [...(context.ids.get("sweeps") ?? new Map<number, string>())];
   const dips = context.shown.get("dips") ?? [];
   const titles = new Map(

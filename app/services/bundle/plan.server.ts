@@ -68,7 +68,7 @@ export async function* planProject(projectId: number, at: Date, tx: Queryable): 
   yield* textEntry("data/index.html", indexPage(overview));
 }
 
-export interface Context {
+interface Context {
   projectId: number;
   tx: Queryable;
   ids: Map<KindName, rows.PublicIds>;

@@ -1,13 +1,14 @@
-import type { DesignBand } from "~/db/projects.server";
+import type { DesignBand, Project } from "~/db/projects.server";
 import * as steps from "~/db/steps.server";
 import * as story from "~/db/story.server";
 import * as trails from "~/db/trails.server";
 import { dipRows } from "~/measurement/dip-rows";
 import { formatFrequency } from "~/measurement/units";
 import { shortDate } from "./dates.ts";
-import type { GatheredSweep, OfProject } from "./gather.server.ts";
+import type { MaterialSweep } from "./material.ts";
 import type { PlateFigure } from "./record.ts";
 
+type OfProject = Pick<Project, "id" | "publicId">;
 type Trail = PlateFigure["trails"][number];
 type Stop = { dip: story.StripDip; sweep: story.StripRow };
 
@@ -48,7 +49,10 @@ export async function stripOf(project: OfProject, designBands: readonly DesignBa
 }
 
 /** Dips of several sweeps that are one and the same, as they stand side by side in a comparison. */
-export async function compareTrails(project: OfProject, all: readonly GatheredSweep[]): Promise<Trail[]> {
+export async function compareTrails(
+  project: OfProject,
+  all: readonly { material: MaterialSweep }[],
+): Promise<Trail[]> {
   const { ways } = await waysOf(project);
   const trailOfDip = new Map(
     ways.flatMap(({ row, stops }) => stops.map(({ dip }) => [dip.publicId, row.publicId] as const)),
