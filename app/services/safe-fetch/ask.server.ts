@@ -1,8 +1,8 @@
 import { request as askHttp, type ClientRequest, type IncomingMessage } from "node:http";
 import { request as askHttps } from "node:https";
 import { isPublicAddress } from "./addresses.ts";
+import type { Fetched, Wanted } from "./exchange.ts";
 import { addressesOf, pinnedTo, type Resolve, type Resolved } from "./resolve.server.ts";
-import type { Fetched, Wanted } from "./safe-fetch.server.ts";
 
 export type Asked = Fetched | { kind: "redirect"; to: string; sameMethod: boolean };
 

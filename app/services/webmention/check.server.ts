@@ -2,7 +2,8 @@ import { inTransaction } from "~/db/client.server";
 import * as jobs from "~/db/jobs.server";
 import * as webmentions from "~/db/webmentions.server";
 import { record } from "../events.server.ts";
-import { type Fetched, safeFetch } from "../safe-fetch/safe-fetch.server.ts";
+import type { Fetched } from "../safe-fetch/exchange.ts";
+import { safeFetch } from "../safe-fetch/safe-fetch.server.ts";
 import { retryAt } from "./retries.ts";
 import { readSource } from "./source.ts";
 

@@ -2,8 +2,9 @@ import { createServer, type RequestListener, type Server } from "node:http";
 import type { AddressInfo } from "node:net";
 import { gzipSync } from "node:zlib";
 import { afterAll, beforeAll, beforeEach, describe, expect, it } from "vitest";
+import type { Fetched, Wanted } from "~/services/safe-fetch/exchange";
 import type { Resolved } from "~/services/safe-fetch/resolve.server";
-import { type Fetched, safeFetch, type Wanted } from "~/services/safe-fetch/safe-fetch.server";
+import { safeFetch } from "~/services/safe-fetch/safe-fetch.server";
 
 /** A private server on loopback, where every attempt below would like to go, and an outside one that is allowed. */
 
