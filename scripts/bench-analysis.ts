@@ -9,13 +9,6 @@ import { decimate } from "../app/measurement/decimate.ts";
 import { findDips } from "../app/measurement/dips/find.ts";
 import type { Sweep } from "../app/measurement/sweep.ts";
 
-export interface BenchRow {
-  name: string;
-  value: number;
-  goal: number;
-  unit: string;
-}
-
 /**
  * Analysis of 1,000,001 points against scipy's `find_peaks` with a prominence on the same array in the same
  * run; each figure is the best of some rounds. Without /usr/bin/python3 and scipy only the rows that need
@@ -128,3 +121,5 @@ for _ in range(3):
     least = min(least, time.perf_counter() - start)
 print(least * 1e3)
 `;
+
+import type { BenchRow } from "./suites/bench-row.ts";

@@ -3,8 +3,8 @@ import path from "node:path";
 import sharp from "sharp";
 import { readCorrected } from "../app/readers/screenshot/correct.ts";
 import { closePictureReader, decodePicture, readPictureFile } from "../app/services/picture.server.ts";
-import type { BenchRow } from "./bench.ts";
 import { ROOT } from "./install.mjs";
+import type { BenchRow } from "./suites/bench-row.ts";
 
 const ROUNDS = 9;
 const PICTURE = path.join(ROOT, "tests", "fixtures", "screens", "pictures", "svg-009.png");

@@ -1,13 +1,7 @@
 import Papa from "papaparse";
 import { analyse } from "../app/measurement/analyse.ts";
 import { read } from "../app/readers/read.ts";
-
-export interface BenchRow {
-  name: string;
-  value: number;
-  goal: number;
-  unit: string;
-}
+import type { BenchRow } from "./suites/bench-row.ts";
 
 const POINTS = 100_001;
 const ROUNDS = 9;

@@ -3,15 +3,8 @@ import path from "node:path";
 import { pathToFileURL } from "node:url";
 import { installPrograms, ROOT } from "./install.mjs";
 import { reportFailure, step, tellStepsOnStandardError } from "./steps.mjs";
+import type { BenchRow } from "./suites/bench-row.ts";
 import { benchServer } from "./suites/bench-server.ts";
-
-/** One figure. It is good when it is at most its goal. */
-export interface BenchRow {
-  name: string;
-  value: number;
-  goal: number;
-  unit: string;
-}
 
 /** Where the rows come from: a file and the function in it that makes them. */
 const SOURCES = [

@@ -7,10 +7,10 @@ import { findOrCreateByIdentity } from "~/services/people.server";
 import { deleteProject } from "~/services/projects.server";
 import demoPeople from "../demo-people.json";
 import { benchStory } from "./bench-story.ts";
+import { CAST, type Cast, type Who } from "./cast.ts";
 import { dipoleStory } from "./dipole-story.ts";
-import { type Cast, play } from "./play.ts";
+import { play } from "./play.ts";
 import { reedBankStory } from "./reed-bank-story.ts";
-import { CAST, type Who } from "./story.ts";
 
 /**
  * Builds the demo once: invented people, three projects, their sweeps and what was said about them. It says in the

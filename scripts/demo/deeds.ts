@@ -12,10 +12,11 @@ import { changeStep, makeStep, stepWas } from "~/services/steps.server";
 import { keepSettings } from "~/services/sweep-edits.server";
 import { joinDip, partDips } from "~/services/trail-corrections.server";
 import { changeTrailVerdict, nameTrail } from "~/services/trail-verdicts.server";
+import type { Who } from "./cast.ts";
 import type { PictureName } from "./pictures.ts";
 import { pictureOf } from "./pictures.ts";
 import { idOf, type Stage } from "./stage.ts";
-import type { DeedStep, On, Step, Who } from "./story.ts";
+import type { DeedStep, On, Step } from "./story.ts";
 import { tellSweep } from "./tell-sweep.ts";
 
 /** What people of a story do besides sweeping and talking. */

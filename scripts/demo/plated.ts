@@ -5,9 +5,10 @@ import type { PlateChoices } from "~/services/plates/choices";
 import { propose } from "~/services/plates/compose.server";
 import { freeze } from "~/services/plates/freeze.server";
 import { subjectOf } from "~/services/plates/subject";
+import type { Who } from "./cast.ts";
 import { deed } from "./deeds.ts";
 import { idOf, type Stage } from "./stage.ts";
-import type { Step, Who } from "./story.ts";
+import type { Step } from "./story.ts";
 
 export interface Plated {
   key: string;

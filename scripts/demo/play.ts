@@ -10,12 +10,11 @@ import { writeNote } from "~/services/notes.server";
 import { addMember, changeBands, createProject } from "~/services/projects.server";
 import { chosenEvidence, evidenceFor } from "~/services/verdict-evidence.server";
 import { changeVerdict } from "~/services/verdicts.server";
-import { type Cast, idOf, type Stage } from "./stage.ts";
+import type { Cast } from "./cast.ts";
+import { idOf, type Stage } from "./stage.ts";
 import type { On, Rests, Step, Story, SweepStep, VerdictStep } from "./story.ts";
 import { tellSweep } from "./tell-sweep.ts";
 import { Told } from "./told.ts";
-
-export type { Cast } from "./stage.ts";
 
 /** Lets a story happen, through the same services that serve everybody. `benchIds` are those of the stories before it. */
 export async function play(story: Story, cast: Cast, benchIds: Stage["benchIds"] = new Map()): Promise<void> {

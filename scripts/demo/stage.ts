@@ -1,8 +1,5 @@
-import type { Who } from "./story.ts";
+import type { Cast } from "./cast.ts";
 import type { Told } from "./told.ts";
-
-/** User id and user name of everybody in the story. */
-export type Cast = Record<Who, { id: number; userName: string }>;
 
 /** Where a story happens, and what has its place in it by now. */
 export interface Stage {

@@ -1,4 +1,5 @@
-import type { NoteStep, On, Rests, Step, SweepStep, VerdictStep, Who } from "./story.ts";
+import type { Who } from "./cast.ts";
+import type { NoteStep, On, Rests, Step, SweepStep, VerdictStep } from "./story.ts";
 
 /** Short forms of what happens in a story. */
 

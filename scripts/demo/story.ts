@@ -1,12 +1,10 @@
 import type { Given } from "~/readers/reading";
 import type { VerdictIntent } from "~/services/verdicts.server";
+import type { Who } from "./cast.ts";
 import type { Stage } from "./stage.ts";
 import type { Told } from "./told.ts";
 
 /** A story: what was swept, said, decided and done, in the order in which it happened. */
-
-export const CAST = ["ada-marsh", "bram-sedge", "cleo-reed", "dov-heron"] as const;
-export type Who = (typeof CAST)[number];
 
 /** On a sweep; with `nearMhz` on its dip there; with neither on the project. */
 export interface On {

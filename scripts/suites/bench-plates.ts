@@ -2,9 +2,9 @@ import { rmSync, writeFileSync } from "node:fs";
 import path from "node:path";
 import mysql, { type RowDataPacket } from "mysql2/promise";
 import type { PlateRecord } from "../../app/services/plates/record.ts";
-import type { BenchRow } from "../bench.ts";
 import { ROOT } from "../install.mjs";
 import { PlainFailure } from "../steps.mjs";
+import type { BenchRow } from "./bench-row.ts";
 
 const CACHED_GOAL = 1.5;
 const SVG_GOAL_MS = 150;

@@ -2,10 +2,10 @@ import { readdirSync, readFileSync } from "node:fs";
 import path from "node:path";
 import mysql, { type RowDataPacket } from "mysql2/promise";
 import { chromium } from "playwright-core";
-import type { BenchRow } from "../bench.ts";
 import { findProgram, ROOT } from "../install.mjs";
 import { PlainFailure } from "../steps.mjs";
 import { benchPlates } from "./bench-plates.ts";
+import type { BenchRow } from "./bench-row.ts";
 import { benchStripMap } from "./bench-strip-map.ts";
 import { startTestStack } from "./test-stack.ts";
 

@@ -1,9 +1,9 @@
 import { chromium } from "playwright-core";
-import type { BenchRow } from "../bench.ts";
 import { NO_FEEDLINE, reflection } from "../demo/antenna.ts";
 import { returnLossFile } from "../demo/files.ts";
 import { gaussBy, randomBy } from "../demo/random.ts";
 import { findProgram } from "../install.mjs";
+import type { BenchRow } from "./bench-row.ts";
 
 const SWEEPS = 100;
 const POINTS = 10_001;
