@@ -1,9 +1,12 @@
-import { existsSync, readdirSync, readFileSync } from "node:fs";
+import { existsSync, readFileSync } from "node:fs";
 import path from "node:path";
 import { fileURLToPath } from "node:url";
+import { circlesIn } from "./circles.mjs";
+import { codeOf, filesIn, importsOf, resolveImport } from "./imports.mjs";
 
 /**
- * Fails when an import in app/ points up: routes → auth, services → db → readers → measurement.
+ * Fails when an import in app/ points up (routes → auth, services → db → readers → measurement), and when
+ * files of app/, scripts/ or server.ts import each other in a circle, if only for a type.
  * `node scripts/layers.mjs [folder with an app/]`
  */
 const ROOT = path.resolve(process.argv[2] ?? path.dirname(path.dirname(fileURLToPath(import.meta.url))));
@@ -34,7 +37,7 @@ const VOCABULARY = "auth/permissions.ts";
 const IN_BROWSER = /^(?:charts|components)\/|^routes\/.*\/components\//;
 const MOST_LINES = 500;
 
-const faults = filesIn(APP).flatMap(check);
+const faults = [...filesIn(APP).flatMap(check), ...circles()];
 for (const fault of faults) console.error(fault);
 if (faults.length > 0) {
   console.error(`${faults.length} fault${faults.length === 1 ? "" : "s"}: see ARCHITECTURE in DEVELOPERS.md`);
@@ -44,7 +47,7 @@ if (faults.length > 0) {
 function check(file) {
   const from = path.relative(APP, file);
   const source = readFileSync(file, "utf8");
-  const code = withoutComments(source);
+  const code = codeOf(file);
   const layer = from.split("/")[0];
   const found = importsOf(code).flatMap((one) => faultOf(from, layer, one));
   const lines = source.split("\n").length;
@@ -55,12 +58,13 @@ function check(file) {
 }
 
 function faultOf(from, layer, { target, typeOnly }) {
-  const inside = resolve(from, target);
-  if (inside === undefined) {
+  const resolved = resolveImport(ROOT, path.join("app", from), target);
+  if (resolved === undefined) {
     const bare = target.startsWith("@") ? target.split("/").slice(0, 2).join("/") : target.split("/")[0];
     return layer in PURE && !PURE[layer].includes(bare) ? [`is pure code, and imports ${target}`] : [];
   }
   const found = [];
+  const inside = path.relative("app", resolved);
   const to = inside.split("/")[0];
   if (layer === "db" && typeOnly && inside === VOCABULARY) return [];
   if (layer in BELOW && to !== layer && !BELOW[layer].includes(to) && !(typeOnly && layer === "components")) {
@@ -73,45 +77,20 @@ function faultOf(from, layer, { target, typeOnly }) {
   return found;
 }
 
-/** The path inside app/, undefined for a package. */
-function resolve(from, target) {
-  if (target.startsWith("~/")) return nameOf(target.slice(2));
-  if (target.startsWith(".")) return nameOf(path.join(path.dirname(from), target));
-  return undefined;
-}
-
-function nameOf(name) {
-  const endings = ["", ".ts", ".tsx"];
-  return (
-    endings
-      .map((ending) => name + ending)
-      .find((one) => /\.\w+$/.test(one) && existsSync(path.join(APP, one))) ?? name
+/** Each circle with all its arrows: which of them should not be is for the reader to see. */
+function circles() {
+  const server = path.join(ROOT, "server.ts");
+  const files = [APP, path.join(ROOT, "scripts")].flatMap(filesIn);
+  if (existsSync(server)) files.push(server);
+  const arrows = new Map(files.map((file) => [path.relative(ROOT, file), arrowsOf(file)]));
+  return circlesIn(arrows).map(
+    (circle) => `circle of imports: ${circle.map(([from, to]) => `${from} → ${to}`).join(", ")}`,
   );
 }
 
-function importsOf(code) {
-  const found = [];
-  for (const [, typeWord, names = "", target] of code.matchAll(
-    /\b(?:import|export)\s+(type\s+)?(?:([^"';]*?)\s*\bfrom\s*)?["']([^"']+)["']/g,
-  )) {
-    const inBraces = /^\{([^}]*)\}$/.exec(names.trim())?.[1];
-    const parts = inBraces?.split(",").filter((part) => part.trim() !== "");
-    const typeOnly = typeWord !== undefined || (parts?.every((part) => /^\s*type\s/.test(part)) ?? false);
-    found.push({ target, typeOnly });
-  }
-  for (const [, target] of code.matchAll(/\bimport\(\s*["']([^"']+)["']/g))
-    found.push({ target, typeOnly: false });
-  return found;
-}
-
-function withoutComments(source) {
-  return source.replace(/\/\*[\s\S]*?\*\//g, "").replace(/(^|\s)\/\/.*$/gm, "$1");
-}
-
-function filesIn(folder) {
-  return readdirSync(folder, { withFileTypes: true }).flatMap((entry) => {
-    const full = path.join(folder, entry.name);
-    if (entry.isDirectory()) return filesIn(full);
-    return /\.tsx?$/.test(entry.name) && !entry.name.endsWith(".d.ts") ? [full] : [];
-  });
+function arrowsOf(file) {
+  const from = path.relative(ROOT, file);
+  return [
+    ...new Set(importsOf(codeOf(file)).flatMap(({ target }) => resolveImport(ROOT, from, target) ?? [])),
+  ];
 }

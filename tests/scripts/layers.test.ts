@@ -7,7 +7,7 @@ import { expect, test } from "vitest";
 function layers(files: Record<string, string>): { code: number | null; faults: string[] } {
   const folder = mkdtempSync(path.join(tmpdir(), "swale-layers-"));
   for (const [name, source] of Object.entries(files)) {
-    const file = path.join(folder, "app", name);
+    const file = path.join(folder, name.startsWith("/") ? "" : "app", name);
     mkdirSync(path.dirname(file), { recursive: true });
     writeFileSync(file, source);
   }
@@ -60,4 +60,55 @@ test.each([
   const result = layers({ [file]: source });
   expect(result.code).toBe(1);
   expect(result.faults).toContain(`app/${file} ${fault}`);
+});
+
+test.each<[string, Record<string, string>, string]>([
+  [
+    "two files",
+    {
+      "measurement/a.ts": 'import { b } from "./b.ts";',
+      "measurement/b.ts": 'import { a } from "./a.ts";',
+    },
+    "app/measurement/a.ts → app/measurement/b.ts, app/measurement/b.ts → app/measurement/a.ts",
+  ],
+  [
+    "a type that goes back",
+    {
+      "routes/page.tsx": 'import { Part } from "./components/Part";',
+      "routes/components/Part.tsx": 'import type { PageData } from "../page";',
+    },
+    "app/routes/components/Part.tsx → app/routes/page.tsx, app/routes/page.tsx → app/routes/components/Part.tsx",
+  ],
+  [
+    "three files, a re-export and an import that waits",
+    {
+      "services/a.server.ts": 'export { b } from "~/services/b.server";',
+      "services/b.server.ts": 'const c = await import("./c.server.ts");',
+      "services/c.server.ts": 'import "./a.server.ts";',
+    },
+    "app/services/a.server.ts → app/services/b.server.ts, app/services/b.server.ts → app/services/c.server.ts, " +
+      "app/services/c.server.ts → app/services/a.server.ts",
+  ],
+  [
+    "a file and itself",
+    { "charts/A.tsx": 'import type { B } from "./A";' },
+    "app/charts/A.tsx → app/charts/A.tsx",
+  ],
+  [
+    "scripts and the server",
+    { "/scripts/bench.mjs": 'import "../server.ts";', "/server.ts": 'import "./scripts/bench.mjs";' },
+    "scripts/bench.mjs → server.ts, server.ts → scripts/bench.mjs",
+  ],
+])("a circle is a fault: %s", (_, files, arrows) => {
+  expect(layers(files)).toEqual({ code: 1, faults: [`circle of imports: ${arrows}`] });
+});
+
+test("files that meet again further down are no circle, nor is one named in a comment", () => {
+  const result = layers({
+    "routes/a.ts": 'import "./b";\nimport "./c";',
+    "routes/b.ts": 'import "./d";',
+    "routes/c.ts": 'import "./d";',
+    "routes/d.ts": '// import "./a";\n/** import "./b"; */\nimport react from "react";',
+  });
+  expect(result).toEqual({ code: 0, faults: [] });
 });
