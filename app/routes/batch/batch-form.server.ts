@@ -1,6 +1,7 @@
+import { data } from "react-router";
 import type { ProjectAccess } from "~/auth/require.server";
 import * as batches from "~/db/batches.server";
-import { notFound, refused } from "~/errors";
+import { notFound, type PlainError, refused } from "~/errors";
 import { addToBatch, beginBatch, type Sent, sealBatch } from "~/services/batch/receive.server";
 import { startOnBatch } from "~/services/batch/work.server";
 import { batchIdSchema } from "./batch.schema";
@@ -25,7 +26,7 @@ export async function receiveForm(
   if (sent.length === 0 && !table && form.get("begun") !== "yes") return null;
   const run = await beginBatch(id.data, project, person);
   if (!run) throw refused("This batch is not of this project. Nothing was stored; load the page anew.");
-  await addToBatch(run.publicId, sent, table);
+  if (!(await addToBatch(run.publicId, sent, table))) throw tooLate();
   if (last) {
     await sealBatch(run.publicId);
     await startOnBatch(run.publicId);
@@ -37,10 +38,16 @@ export async function receiveForm(
 export async function receiveMore(run: batches.BatchRow, form: FormData): Promise<boolean> {
   const [sent, [table = null]] = await Promise.all([filesOf(form, "files"), filesOf(form, "table")]);
   if (sent.length === 0 && !table) return false;
-  await addToBatch(run.publicId, sent, table);
+  if (!(await addToBatch(run.publicId, sent, table))) throw tooLate();
   await sealBatch(run.publicId);
   await startOnBatch(run.publicId);
   return true;
+}
+
+function tooLate() {
+  const message =
+    "It is being taken in, or was. Nothing of what you sent now was stored: begin another batch with it.";
+  return data<PlainError>({ title: "This batch is closed", message }, { status: 409 });
 }
 
 function filesOf(form: FormData, field: string): Promise<Sent[]> {

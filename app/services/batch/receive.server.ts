@@ -44,23 +44,38 @@ export async function beginBatch(
   return run?.projectId === project.id ? run : undefined;
 }
 
-/** Keeps what was sent, ZIPs unpacked. A file of a path that is there already takes its place. */
-export async function addToBatch(publicId: string, sent: Sent[], table: Sent | null): Promise<void> {
+/**
+ * Keeps what was sent, ZIPs unpacked. A file of a path that is there already takes its place. False where the batch is being
+ * taken in or was: what came later nobody has looked at, so nothing of it is kept.
+ */
+export async function addToBatch(publicId: string, sent: Sent[], table: Sent | null): Promise<boolean> {
+  const run = await batches.findByPublicId(publicId);
+  if (!run || isClosed(run.report as BatchReport)) return false;
   for (const one of sent) {
     if (table === null && isTable(one.name, one.bytes)) await addTable(publicId, one);
     else if (isZip(one.bytes)) await addZip(publicId, one);
     else await addFile(publicId, one);
   }
   if (table) await addTable(publicId, table);
+  return true;
 }
 
 /** Everything has arrived: from here on it is checked. */
 export async function sealBatch(publicId: string): Promise<void> {
-  await changeReport(publicId, (report) => ({
+  await changeOpen(publicId, (report) => ({
     ...report,
     phase: report.phase === "receiving" || report.phase === "checked" ? "checking" : report.phase,
     rows: matchAgain(report),
   }));
+}
+
+/** As `changeReport`, but a batch that is being taken in stays as it is. */
+async function changeOpen(publicId: string, change: (report: BatchReport) => BatchReport): Promise<void> {
+  await changeReport(publicId, (report) => (isClosed(report) ? report : change(report)));
+}
+
+function isClosed({ phase }: BatchReport): boolean {
+  return phase === "taking" || phase === "done";
 }
 
 /** Changes a run's report under its lock; undefined where the run is gone. */
@@ -89,7 +104,7 @@ function progressOf({ phase, files, rows }: BatchReport) {
 
 async function addTable(publicId: string, { name, bytes }: Sent): Promise<void> {
   const { rows, problem, remarks } = readTable(bytes);
-  await changeReport(publicId, (report) => {
+  await changeOpen(publicId, (report) => {
     const taken = report.rows.filter(({ result }) => result !== null);
     const files = report.files;
     const open = rows.filter((row) => !taken.some((done) => done.name === row.file));
@@ -103,51 +118,67 @@ async function addTable(publicId: string, { name, bytes }: Sent): Promise<void> 
 
 async function addZip(publicId: string, { name, bytes }: Sent): Promise<void> {
   const limits = { mostEntries: MOST_FILES, mostBytes: MOST_BYTES };
+  // Written down together: a ZIP may list thousands of files of which nothing is kept.
+  let refused: BatchFile[] = [];
+  let passedOver = 0;
+  const tell = async () => {
+    if (refused.length > 0 || passedOver > 0) await append(publicId, refused, passedOver);
+    [refused, passedOver] = [[], 0];
+  };
   try {
     for await (const found of unpack(bytes, limits)) {
-      if (found.kind === "passed-over") await passOver(publicId);
-      else if (found.kind === "refused") {
-        await append(publicId, refusedFile(found.path, found.sizeBytes, found.words));
-      } else if (isTable(found.path, found.bytes)) {
-        await addTable(publicId, { name: found.path, bytes: found.bytes });
-      } else await addFile(publicId, { name: found.path, bytes: found.bytes });
+      if (found.kind === "passed-over") passedOver++;
+      else if (found.kind === "refused") refused.push(refusedFile(found.path, found.sizeBytes, found.words));
+      else {
+        await tell();
+        if (isTable(found.path, found.bytes)) {
+          await addTable(publicId, { name: found.path, bytes: found.bytes });
+        } else await addFile(publicId, { name: found.path, bytes: found.bytes });
+      }
     }
   } catch (error) {
     if (!(error instanceof NotAZip)) throw error;
-    await append(publicId, refusedFile(cleanFileName(name), bytes.length, error.message));
+    refused.push(refusedFile(cleanFileName(name), bytes.length, error.message));
   }
+  await tell();
 }
 
 async function addFile(publicId: string, { name, bytes }: Sent): Promise<void> {
   const safe = safePath(name);
-  if ("refused" in safe) return append(publicId, refusedFile(name.slice(0, 200), bytes.length, safe.refused));
+  if ("refused" in safe) {
+    return append(publicId, [refusedFile(name.slice(0, 200), bytes.length, safe.refused)]);
+  }
   const { path } = safe;
-  if (isOfSystem(path)) return passOver(publicId);
+  if (isOfSystem(path)) return append(publicId, [], 1);
   const refusal = sizeRefusal(bytes.length);
-  if (refusal) return append(publicId, refusedFile(path, bytes.length, refusal));
+  if (refusal) return append(publicId, [refusedFile(path, bytes.length, refusal)]);
   const key = `${prefixOf(publicId)}${newPublicId()}${newPublicId()}`;
-  await putObject(key, bytes);
   const kept = { key, sha256: sha256Of(bytes) };
-  await append(publicId, { path, sizeBytes: bytes.length, kept, refused: null, check: null });
+  const file = { path, sizeBytes: bytes.length, kept, refused: null, check: null };
+  // What there is no room for is not stored first.
+  const run = await batches.findByPublicId(publicId);
+  const bounded = withinBounds(file, (run?.report as BatchReport | undefined)?.files ?? []);
+  if (bounded.kept) await putObject(key, bytes);
+  await append(publicId, [bounded]);
 }
 
-/** In place of a file of the same path; one that was taken in stays as it is. */
-async function append(publicId: string, file: BatchFile): Promise<void> {
-  await changeReport(publicId, (report) => {
-    const at = report.files.findIndex(({ path }) => path === file.path);
-    if (at >= 0) {
-      const same = report.files[at].kept?.sha256 === file.kept?.sha256 && file.kept !== null;
-      const taken = report.rows.some((row) => row.file === at && row.result !== null);
-      if (same || taken) return report;
-      return { ...report, files: report.files.with(at, file) };
+/** Each in place of a file of the same path. */
+async function append(publicId: string, added: readonly BatchFile[], passedOver = 0): Promise<void> {
+  await changeOpen(publicId, (report) => {
+    const files = [...report.files];
+    for (const file of added) {
+      const at = files.findIndex(({ path }) => path === file.path);
+      const same = at >= 0 && file.kept !== null && files[at].kept?.sha256 === file.kept.sha256;
+      if (!same) files[at < 0 ? files.length : at] = withinBounds(file, files);
     }
-    return { ...report, files: [...report.files, withinBounds(file, report.files)] };
+    return { ...report, files, passedOver: report.passedOver + passedOver };
   });
 }
 
-function withinBounds(file: BatchFile, before: readonly BatchFile[]): BatchFile {
+/** `files`: those that are there, the one that this one takes the place of among them. */
+function withinBounds(file: BatchFile, files: readonly BatchFile[]): BatchFile {
   if (file.kept === null) return file;
-  const kept = before.filter((other) => other.kept !== null);
+  const kept = files.filter((other) => other.kept !== null && other.path !== file.path);
   const bytes = kept.reduce((sum, { sizeBytes }) => sum + sizeBytes, file.sizeBytes);
   if (kept.length < MOST_FILES && bytes <= MOST_BYTES) return file;
   const words =
@@ -155,10 +186,6 @@ function withinBounds(file: BatchFile, before: readonly BatchFile[]): BatchFile 
       ? `All files together have more than ${MOST_BYTES / 1024 / 1024} MB. Send this one in the next batch.`
       : `At most ${MOST_FILES} files go at once. Send this one in the next batch.`;
   return refusedFile(file.path, file.sizeBytes, words);
-}
-
-async function passOver(publicId: string): Promise<void> {
-  await changeReport(publicId, (report) => ({ ...report, passedOver: report.passedOver + 1 }));
 }
 
 function refusedFile(path: string, sizeBytes: number, refused: string): BatchFile {

@@ -190,6 +190,19 @@ describe("a batch with a table", () => {
     expect(ends.filter(({ payload }) => (payload as { run: string }).run === run)).toHaveLength(1);
   });
 
+  it("takes nothing more once it is being taken in: nobody has looked at that", async () => {
+    await send(["a.csv,First,,,"], ["a.csv"]);
+    expect(await beginTaking(run, project.id)).toBe(true);
+    const before = await reportOf();
+    const late = { name: "late.csv", bytes: bytes(sweepText(9)) };
+    expect(await addToBatch(run, [late], table(["late.csv,Late,,,"]))).toBe(false);
+    await sealBatch(run);
+    expect(await reportOf()).toEqual(before);
+    await workOn(run, 60_000);
+    expect(await addToBatch(run, [late], null)).toBe(false);
+    expect(await sweepCount()).toBe(1);
+  });
+
   it("goes on where it was broken off", async () => {
     await addToBatch(
       run,

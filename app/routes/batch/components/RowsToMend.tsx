@@ -15,7 +15,11 @@ export interface RowsToMendProps {
 export function RowsToMend({ batch, edit, base }: RowsToMendProps) {
   const busy = useNavigation().state === "submitting";
   const stuck = batch.rows.filter(({ problems }) => problems.length > 0);
-  const open = batch.rows.filter(({ index, problems }) => problems.length > 0 || index === edit);
+  const all = batch.rows.filter(({ index, problems }) => problems.length > 0 || index === edit);
+  const open = [
+    ...all.filter(({ index }) => index === edit),
+    ...all.filter(({ index }) => index !== edit),
+  ].slice(0, MOST_AT_ONCE);
   const wanted = batch.rows.filter(({ leftOut, result }) => !leftOut && result === null);
   return (
     <div className="grid grid-cols-1 gap-6">
@@ -50,6 +54,12 @@ export function RowsToMend({ batch, edit, base }: RowsToMendProps) {
             {open.map((row) => (
               <RowFields key={row.index} row={row} batch={batch} base={base} />
             ))}
+            {all.length > open.length && (
+              <p>
+                And {countOf(all.length - open.length, "row")} more: they are asked for once these are mended
+                or left out.
+              </p>
+            )}
             <div>
               <Button name="intent" value="mend" busy={busy}>
                 Keep and check again
@@ -61,3 +71,6 @@ export function RowsToMend({ batch, edit, base }: RowsToMendProps) {
     </div>
   );
 }
+
+/** Each is a form of its own with every file that it may be of. */
+const MOST_AT_ONCE = 50;

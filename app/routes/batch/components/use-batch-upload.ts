@@ -94,6 +94,8 @@ function wordsFor(status: number): string {
     return "One of the files is larger than 130 MB. No sweep was made; leave it out or split it.";
   if (status === 401 || status === 403 || status === 404)
     return "You are signed out, or may not add sweeps here. No sweep was made; sign in and send it again.";
+  if (status === 409)
+    return "This batch was taken in already. Nothing of this was stored; load the page anew to begin another.";
   if (status === 429)
     return "Too much was sent in a short time. No sweep was made; wait a minute and send it again.";
   return "The server did not take it. No sweep was made; send it again.";
