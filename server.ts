@@ -26,6 +26,7 @@ import { metricsText } from "~/services/metrics.server";
 import { oneClick } from "~/services/one-click.server";
 import { startOutbox } from "~/services/outbox.server";
 import { servePlates } from "~/services/plates/serve.server";
+import { closePrinter } from "~/services/printing.server";
 import { closeReaders } from "~/services/reading.server";
 import { securityHeaders } from "~/services/security-headers.server";
 import { onShutdown, runShutdown } from "~/services/shutdown.server";
@@ -86,6 +87,7 @@ function pages(development: boolean): RequestHandler {
 export function startBackground(): void {
   onShutdown(() => pool.end());
   onShutdown(closeReaders);
+  onShutdown(closePrinter);
   onShutdown(startJobs());
   onShutdown(startBundles());
   onShutdown(startOutbox());

@@ -11,7 +11,8 @@ export default defineConfig({
         rollupOptions: {
           input: {
             index: "./server.ts",
-            worker: "./app/services/reading.worker.ts",
+            reading: "./app/services/reading.worker.ts",
+            printing: "./app/services/printing.worker.ts",
           },
         },
       },
@@ -19,7 +20,7 @@ export default defineConfig({
   },
 });
 
-/** The router names every server entry `index.js`; the worker must be found under its own name. */
+/** The router names every server entry `index.js`; the workers must be found under their own names. */
 function serverEntriesByName(): Plugin {
   return {
     name: "server-entries-by-name",

@@ -1,8 +1,9 @@
-import { rmSync } from "node:fs";
-import { mkdtemp, readFile, writeFile } from "node:fs/promises";
+import { mkdtempSync, rmSync } from "node:fs";
+import { readFile, rename, writeFile } from "node:fs/promises";
 import { createRequire } from "node:module";
 import { tmpdir } from "node:os";
 import path from "node:path";
+import { getEnvironmentData, setEnvironmentData, threadId } from "node:worker_threads";
 import { decompress } from "woff2-encoder";
 
 /**
@@ -18,7 +19,17 @@ interface FontFile {
   path: string;
 }
 
-/** Unpacked once a process. */
+/** Where this process and its threads unpack them: threads may end at any moment, so that it goes with what started them. */
+export function fontFolder(): string {
+  const known = getEnvironmentData(FOLDER);
+  if (typeof known === "string") return known;
+  const folder = mkdtempSync(path.join(tmpdir(), "swale-fonts-"));
+  process.once("exit", () => rmSync(folder, { recursive: true, force: true }));
+  setEnvironmentData(FOLDER, folder);
+  return folder;
+}
+
+/** Unpacked once a thread. */
 export function loadFonts(): Promise<readonly FontFile[]> {
   loading ??= unpackAll().catch((error) => {
     loading = undefined;
@@ -29,16 +40,18 @@ export function loadFonts(): Promise<readonly FontFile[]> {
 
 let loading: Promise<readonly FontFile[]> | undefined;
 const require = createRequire(import.meta.url);
+const FOLDER = "swale-fonts";
 
 async function unpackAll(): Promise<readonly FontFile[]> {
-  const folder = await mkdtemp(path.join(tmpdir(), "swale-fonts-"));
-  process.once("exit", () => rmSync(folder, { recursive: true, force: true }));
+  const folder = fontFolder();
   return Promise.all(
     FILES.map(async ({ name, family, file }) => {
       const stored = await readFile(require.resolve(file));
       const bytes = file.endsWith(".woff2") ? Buffer.from(await decompress(stored)) : stored;
       const own = path.join(folder, `${name}.ttf`);
-      await writeFile(own, bytes);
+      // Another thread may read the same file at this moment.
+      await writeFile(`${own}.${threadId}`, bytes);
+      await rename(`${own}.${threadId}`, own);
       return { name, family, bytes, path: own };
     }),
   );

@@ -1,13 +1,11 @@
-import { existsSync } from "node:fs";
 import { availableParallelism } from "node:os";
-import { fileURLToPath } from "node:url";
 import { MessageChannel, receiveMessageOnPort } from "node:worker_threads";
-import { Piscina } from "piscina";
 import { detect } from "../readers/detect.ts";
 import type { ScreenshotSpec } from "../readers/reading.ts";
 import type { PictureCopy } from "./picture-copies.server.ts";
 import readAndAnalyse, { type ReadOutcome, type ReadTask } from "./read-and-analyse.server.ts";
 import type { PictureStage } from "./seen-picture.ts";
+import { openThreads, type Threads } from "./threads.server.ts";
 
 /**
  * Reads a file without holding up the pages: small ones in place, the rest in a worker thread, pictures one after
@@ -32,9 +30,6 @@ export async function closeReaders(): Promise<void> {
   pools.clear();
   await Promise.all(open.map((pool) => pool.close()));
 }
-
-// biome-ignore lint/suspicious/noExplicitAny: a thread runs two kinds of work, each typed where it is asked for
-type Threads = Piscina<any, any>;
 
 async function readInTurn(task: Omit<ReadTask, "port">, progress?: (stage: PictureStage) => void) {
   const pool = threads(task.kept ? "corrections" : "pictures");
@@ -64,17 +59,7 @@ const pools = new Map<keyof typeof KINDS, Threads>();
 function threads(kind: keyof typeof KINDS): Threads {
   let pool = pools.get(kind);
   if (!pool) {
-    const built = ["./worker.js", "../worker.js"]
-      .map((name) => fileURLToPath(new URL(name, import.meta.url)))
-      .find(existsSync);
-    pool = new Piscina({
-      filename: built ?? fileURLToPath(new URL("./reading.worker.ts", import.meta.url)),
-      execArgv: built ? [] : ["--import", "tsx"],
-      minThreads: 0,
-      maxQueue: 200,
-      resourceLimits: { maxOldGenerationSizeMb: 1024 },
-      ...KINDS[kind],
-    });
+    pool = openThreads("reading", { maxQueue: 200, ...KINDS[kind] });
     pools.set(kind, pool);
   }
   return pool;

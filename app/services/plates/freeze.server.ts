@@ -7,11 +7,12 @@ import * as projects from "~/db/projects.server";
 import { env } from "~/env.server";
 import { record as recordEvent } from "../events.server.ts";
 import { log } from "../log.server.ts";
+import { BusyPrinting, printForms } from "../printing.server.ts";
 import { deleteObject, putObject, sha256Of } from "../storage.server.ts";
 import type { PlateChoices } from "./choices.ts";
 import { type Composed, compose } from "./compose.server.ts";
 import type { OfProject, Problem } from "./gather.server.ts";
-import { type MadeForm, makeForms } from "./make-forms.server.ts";
+import type { MadeForm } from "./make-forms.server.ts";
 import type { PlateRecord } from "./record.ts";
 import type { PlateSubject } from "./subject.ts";
 
@@ -68,7 +69,11 @@ async function freezeAs(
 ): Promise<{ publicId: string } | Problem | "taken"> {
   const { project, by } = input;
   const record = numbered(input, composed, place);
-  const forms = await makeForms(record, composed.sweeps);
+  const forms = await printForms({ record, sweeps: composed.sweeps }).catch((error) => {
+    if (error instanceof BusyPrinting) return null;
+    throw error;
+  });
+  if (!forms) return MUCH_PRINTED;
   const stored = await storeForms(record.id, forms);
   try {
     const done = await inTransaction(async (tx) => {
@@ -176,11 +181,14 @@ async function removeForms(stored: readonly StoredRow[]): Promise<void> {
 const ATTEMPTS = 3;
 const UNDO_AFTER_MS = 60 * 60 * 1000;
 const GONE_MEANWHILE: Problem = {
-  problem: "A sweep or reference of this plate was deleted while it was made. Nothing was frozen.",
+  problem: "A sweep or reference of this plate was deleted while it was made.",
 };
 const OVERTAKEN: Problem = {
-  problem: "Somebody made a newer version of this plate in the meantime. Nothing was frozen: mend that one.",
+  problem: "Somebody made a newer version of this plate in the meantime: mend that one.",
 };
 const BUSY: Problem = {
-  problem: "Others freeze plates of this project at this moment. Nothing was frozen: try again.",
+  problem: "Others freeze plates of this project at this moment: try again.",
+};
+const MUCH_PRINTED: Problem = {
+  problem: "Many plates are made at this moment: try again in a minute.",
 };

@@ -16,8 +16,14 @@ export interface MadeForm {
   bytes: Buffer;
 }
 
-/** Every form of a plate, from its record; the points of a single sweep come along for CSV and Touchstone. */
-export async function makeForms(record: PlateRecord, sweeps: Composed["sweeps"]): Promise<MadeForm[]> {
+export interface FormsTask {
+  record: PlateRecord;
+  /** The points of a single sweep come along for CSV and Touchstone. */
+  sweeps: Composed["sweeps"];
+}
+
+/** Every form of a plate, from its record. Seconds of work: `printing.server.ts` has it done beside the pages. */
+export async function makeForms({ record, sweeps }: FormsTask): Promise<MadeForm[]> {
   const texts: Partial<Record<FormName, string>> = {
     "svg-light": drawFigure(record, { theme: "light" }),
     "svg-dark": drawFigure(record, { theme: "dark" }),

@@ -1,6 +1,7 @@
 import type { Content, TDocumentDefinitions } from "pdfmake/interfaces";
 import { PAPER_PALETTE } from "~/charts/palette";
 import { articleTokens } from "../markdown.server.ts";
+import { printPdf } from "../pdf.server.ts";
 import { licenceOf } from "../plates/licences.ts";
 import { addressOf, CAUTION, INVENTED, peopleOf } from "./cite.ts";
 import { momentOf } from "./figure-html.ts";
@@ -18,14 +19,23 @@ import {
   TEXT_SIZE,
   TEXT_WIDTH,
 } from "./pdf-looks.ts";
-import type { DrawingOf } from "./plate-drawings.server.ts";
 import type { Publication } from "./published.server.ts";
 
-/** A published write-up as a document to print: the same text, figures and numbers, with where it came from on each page. */
-export function printable(
-  publication: Publication,
-  { origin, plates, drawingOf }: { origin: string; plates: Map<string, PlateState>; drawingOf: DrawingOf },
-): TDocumentDefinitions {
+export interface DocumentTask {
+  publication: Publication;
+  origin: string;
+  plates: Map<string, PlateState>;
+  /** Of its plates, by their public ids: the light one, wide; those that can't be had are missing. */
+  drawings: Map<string, string>;
+}
+
+/** A published write-up on paper. Up to seconds of work: `printing.server.ts` has it done beside the pages. */
+export function printDocument(task: DocumentTask): Promise<Buffer> {
+  return printPdf(printable(task));
+}
+
+/** The same text, figures and numbers, with where it came from on each page. */
+export function printable({ publication, origin, plates, drawings }: DocumentTask): TDocumentDefinitions {
   const { version, project, frozen } = publication;
   const people = peopleOf(publication).join(" and ");
   const address = addressOf(publication, origin);
@@ -38,7 +48,7 @@ export function printable(
         origin,
         figure: (subject, n, caption) => {
           const figure = known.get(subject);
-          return figure ? figureContent(figure, n, caption, { origin, plates, drawingOf }) : null;
+          return figure ? figureContent(figure, n, caption, { origin, plates, drawings }) : null;
         },
       })
     : [{ text: version.body, font: MONO, fontSize: SMALL_SIZE }];
@@ -91,11 +101,7 @@ export function printable(
   };
 }
 
-interface FigurePlace {
-  origin: string;
-  plates: Map<string, PlateState>;
-  drawingOf: DrawingOf;
-}
+type FigurePlace = Omit<DocumentTask, "publication">;
 
 function figureContent(figure: FrozenFigure, n: number, caption: Content[], place: FigurePlace): Content {
   const isPlate = figure.subject.startsWith("plate:");
@@ -120,14 +126,14 @@ function figureContent(figure: FrozenFigure, n: number, caption: Content[], plac
   };
 }
 
-function plateDrawing({ subject }: FrozenFigure, { plates, drawingOf }: FigurePlace): Content {
+function plateDrawing({ subject }: FrozenFigure, { plates, drawings }: FigurePlace): Content {
   const id = subject.slice("plate:".length);
   const state = plates.get(id);
   if (!state || state.withdrawnAt) {
     const why = state?.withdrawnReason ? `: ${state.withdrawnReason}` : "";
     return { text: `This plate was withdrawn${why}.`, color: SOFT };
   }
-  const svg = drawingOf(id, "light", "wide");
+  const svg = drawings.get(id);
   return svg
     ? { svg: forPrint(svg), width: TEXT_WIDTH }
     : { text: "The drawing of this plate can't be had just now.", color: SOFT };

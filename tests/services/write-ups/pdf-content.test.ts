@@ -1,7 +1,6 @@
 import { describe, expect, it } from "vitest";
 import { articleTokens } from "~/services/markdown.server";
-import { printPdf } from "~/services/pdf.server";
-import { forPrint, printable } from "~/services/write-ups/document.server";
+import { forPrint, printable, printDocument } from "~/services/write-ups/document.server";
 import type { FrozenFigure } from "~/services/write-ups/frozen";
 import { pdfContent } from "~/services/write-ups/pdf-content";
 import type { Publication } from "~/services/write-ups/published.server";
@@ -92,10 +91,10 @@ describe("a printed write-up", () => {
     writeUp: { publicId: "w", publishedNumber: 2 },
     frozen: { figures: [figure], project: "A vertical", licence: "CC-BY-4.0" },
   } as unknown as Publication;
-  const place = { origin: "https://swale.example", plates: new Map(), drawingOf: () => null };
+  const task = { publication, origin: "https://swale.example", plates: new Map(), drawings: new Map() };
 
   it("has the numbers with their limits, of when they are, who wrote it and where it is", () => {
-    const text = textsOf(printable(publication, place).content).join(" ");
+    const text = textsOf(printable(task).content).join(" ");
     for (const part of [
       "1.21 (1.12–1.31)",
       "numbers as of 2026-05-01, 10:00 UTC",
@@ -109,10 +108,7 @@ describe("a printed write-up", () => {
   });
 
   it("is the same bytes each time, with our fonts in it", async () => {
-    const [one, other] = [
-      await printPdf(printable(publication, place)),
-      await printPdf(printable(publication, place)),
-    ];
+    const [one, other] = [await printDocument(task), await printDocument(task)];
     expect(one.equals(other)).toBe(true);
     expect(one.subarray(0, 5).toString()).toBe("%PDF-");
     expect(one.toString("latin1")).toContain("AtkinsonHyperlegibleNext-Regular");
