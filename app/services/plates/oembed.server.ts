@@ -4,7 +4,7 @@ import { env } from "~/env.server";
 import { text } from "./embed.ts";
 import { readForm } from "./forms.server.ts";
 import { sizeOf } from "./make-forms.server.ts";
-import { parseRecord } from "./record.ts";
+import { type PlateRecord, parseRecord } from "./record.ts";
 
 /**
  * `/oembed?url=…&format=json&maxwidth=…&maxheight=…` for plates. Source: oEmbed 1.0, https://oembed.com, section 2 (from memory,
@@ -28,25 +28,34 @@ export async function oembed(request: Request, response: Response): Promise<void
   const [wide, narrow] = await Promise.all([drawing("svg-light"), drawing("svg-light-narrow")]);
   if (!wide || !narrow) return refuse(response, 404, "There is no plate to embed at that address.");
   const size = fitted({ wide, narrow }, mostOf(search.get("maxwidth")), mostOf(search.get("maxheight")));
-  const picture = `${record.address}.png?width=640`;
-  const frame = `<iframe src="${text(record.address)}/embed" width="${size.width}" height="${size.height}" title="${text(`Plate ${record.number}: ${record.title}`)}" style="border:0;max-width:100%" loading="lazy"></iframe>`;
   response
     .status(200)
     .set("Cache-Control", "public, max-age=600")
-    .json({
-      version: "1.0",
-      type: "rich",
-      title: record.title,
-      author_name: record.madeBy,
-      provider_name: "Swale",
-      provider_url: env.BASE_URL,
-      cache_age: 600,
-      thumbnail_url: picture,
-      thumbnail_width: 640,
-      thumbnail_height: Math.round((640 * wide.height) / wide.width),
-      html: frame,
-      ...size,
-    });
+    .json(framed(plate.publicId, record, wide, size));
+}
+
+/** A frame of this site, whatever address the record gives: a plate that was taken in from elsewhere keeps the one it had there. */
+export function framed(
+  publicId: string,
+  { number, title, madeBy }: Pick<PlateRecord, "number" | "title" | "madeBy">,
+  wide: Size,
+  size: Size,
+) {
+  const address = `${env.BASE_URL}/plates/${publicId}`;
+  return {
+    version: "1.0",
+    type: "rich",
+    title,
+    author_name: madeBy,
+    provider_name: "Swale",
+    provider_url: env.BASE_URL,
+    cache_age: 600,
+    thumbnail_url: `${address}.png?width=640`,
+    thumbnail_width: 640,
+    thumbnail_height: Math.round((640 * wide.height) / wide.width),
+    html: `<iframe src="${text(address)}/embed" width="${size.width}" height="${size.height}" title="${text(`Plate ${number}: ${title}`)}" style="border:0;max-width:100%" loading="lazy"></iframe>`,
+    ...size,
+  };
 }
 
 interface Size {

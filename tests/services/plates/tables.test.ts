@@ -1,5 +1,5 @@
 import { describe, expect, it } from "vitest";
-import { fitted } from "~/services/plates/oembed.server";
+import { fitted, framed } from "~/services/plates/oembed.server";
 import { differencesOf } from "../../../app/services/plates/differences.ts";
 import { embedPage } from "../../../app/services/plates/embed.ts";
 import { figureOf } from "../../../app/services/plates/figure.ts";
@@ -94,5 +94,12 @@ describe("embedding", () => {
     expect(fitted(size, 420, 10_000)).toEqual({ width: 420, height: 500 });
     for (const most of [60, 200, 300, 400, 599])
       expect(fitted(size, 960, most).height).toBeLessThanOrEqual(most);
+  });
+
+  it("is of this site, wherever a plate that was taken in was before", () => {
+    const elsewhere = { ...record, number: 1, madeBy: "Ada", address: "https://elsewhere.example/plates/x" };
+    const answer = framed("k3f9w2k3f9", elsewhere, { width: 960, height: 600 }, { width: 400, height: 250 });
+    expect(JSON.stringify(answer)).not.toContain("elsewhere");
+    expect(answer.html).toMatch(/^<iframe src="[^"]+\/plates\/k3f9w2k3f9\/embed" width="400" height="250"/);
   });
 });
