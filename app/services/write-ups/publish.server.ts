@@ -3,7 +3,7 @@ import { inTransaction } from "~/db/client.server";
 import type * as projects from "~/db/projects.server";
 import * as writeUps from "~/db/write-ups.server";
 import { record } from "../events.server.ts";
-import { figuresIn } from "../markdown-article.ts";
+import { figuresIn, MOST_FIGURES } from "../markdown-article.ts";
 import { queueSending } from "../webmention/send.server.ts";
 import { loadFigures } from "./figures.server.ts";
 import type { Frozen } from "./frozen.ts";
@@ -93,7 +93,8 @@ export function takeBack(
 }
 
 async function freeze(project: OfProject, body: string): Promise<string> {
-  const figures = await loadFigures(project, figuresIn(body));
+  // No page shows more: each holds a sweep while it is drawn.
+  const figures = await loadFigures(project, figuresIn(body).slice(0, MOST_FIGURES));
   const frozen: Frozen = { figures, project: project.title, licence: project.licence };
   return JSON.stringify(frozen);
 }

@@ -1,4 +1,4 @@
-import { beforeEach, describe, expect, it } from "vitest";
+import { beforeEach, describe, expect, it, vi } from "vitest";
 import * as activity from "~/db/activity.server";
 import * as dips from "~/db/dips.server";
 import { newPublicId } from "~/db/ids.server";
@@ -11,6 +11,7 @@ import { createProject } from "~/services/projects.server";
 import { deleteSweep } from "~/services/sweep-edits.server";
 import { changeDraft, deleteDraft, makeDraft } from "~/services/write-ups/drafts.server";
 import { drawWriteUpFeed } from "~/services/write-ups/feed.server";
+import * as loading from "~/services/write-ups/figures.server";
 import { publish, revisionOf, takeBack } from "~/services/write-ups/publish.server";
 import { drawElsewhere, drawPage, seek } from "~/services/write-ups/published.server";
 
@@ -35,6 +36,11 @@ describe("a draft", () => {
     expect(writeUp.body).toMatch(new RegExp(`^See \\[.*SWR .*, Before\\]\\(dip:${dip}\\)\\.`));
     expect(writeUp.body).toContain(`![a](#dip:${dip})`);
     expect(writeUp.body).toContain(`[b](#sweep:${sweep.sweep.publicId})`);
+  });
+
+  it("names what it speaks of at the end of a long text too", async () => {
+    const publicId = await draft(`${"word ".repeat(5000)}\n\nSee #dip:${dip}.`);
+    expect((await row(publicId)).writeUp.body).toMatch(new RegExp(`See \\[.*\\]\\(dip:${dip}\\)\\.$`));
   });
 
   it("keeps what two people changed, and asks where both changed the same", async () => {
@@ -101,6 +107,14 @@ describe("a published version", () => {
     const text = await page(publicId);
     expect(text).toContain("There is no such figure");
     expect(text).not.toContain("Never shown");
+  });
+
+  it("draws no more figures than a page shows", async () => {
+    const load = vi.spyOn(loading, "loadFigures");
+    const lines = Array.from({ length: 60 }, (_, i) => `![a](#plate:none${i})`);
+    await publishNow(await draft(lines.join("\n\n")));
+    expect(load.mock.calls.at(-1)?.[1]).toHaveLength(40);
+    load.mockRestore();
   });
 
   it("is followed by the next, and stays at its number", async () => {
