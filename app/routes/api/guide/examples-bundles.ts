@@ -89,7 +89,7 @@ export const BUNDLE_EXAMPLES: ExampleGroup = {
     },
     {
       operation: "getBundle",
-      says: "The project that came of it; where it was refused, `faults` says why.",
+      says: "Of one that was given: the project that came of it; where it was refused, `faults` says why.",
       path: "/bundles/{taken}",
       until: { where: "state", is: "done" },
     },
@@ -102,7 +102,7 @@ export const BUNDLE_EXAMPLES: ExampleGroup = {
     },
     {
       operation: "getBundle",
-      says: "It is asked for and downloaded as a bundle is.",
+      says: "All my data, which is asked for and downloaded as a bundle is.",
       path: "/bundles/{mine}",
       until: { where: "state", is: "done" },
     },
