@@ -1,8 +1,8 @@
 import { redirect } from "react-router";
-import { finishGithub, forgetGithub } from "~/auth/github.server";
 import { findPerson } from "~/auth/require.server";
 import { startSession } from "~/auth/session.server";
 import { redirectWithMessage } from "~/services/flash.server";
+import { finishGithub, forgetGithub } from "~/services/github-sign-in.server";
 import { addWay, findOrCreateByIdentity } from "~/services/people.server";
 import type { Route } from "./+types/github-callback";
 import type { SignInProblemId } from "./sign-in-problems.ts";

@@ -1,4 +1,4 @@
-import { beginGithub } from "~/auth/github.server";
+import { beginGithub } from "~/services/github-sign-in.server";
 import type { Route } from "./+types/github";
 
 /** Sends the browser to the provider. */

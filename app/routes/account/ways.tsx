@@ -1,10 +1,10 @@
 import { parseWithZod } from "@conform-to/zod/v4";
 import { data } from "react-router";
-import { beginGithub } from "~/auth/github.server";
 import { requirePerson } from "~/auth/require.server";
 import { Breadcrumbs } from "~/components/ui/Breadcrumbs";
 import * as people from "~/db/people.server";
 import { redirectWithMessage } from "~/services/flash.server";
+import { beginGithub } from "~/services/github-sign-in.server";
 import { chooseAddress, removeWay } from "~/services/people.server";
 import type { Route } from "./+types/ways";
 import { AddWay, WayList } from "./components/WayList.tsx";

@@ -4,8 +4,8 @@ import { Authenticator } from "remix-auth";
 import { GitHubStrategy } from "remix-auth-github";
 import { z } from "zod";
 import { env } from "~/env.server";
-import { log } from "~/services/log.server";
-import { safePath } from "./next.ts";
+import { safePath } from "../auth/next.ts";
+import { log } from "./log.server.ts";
 
 /** Signing in with GitHub, or with whatever speaks like it at the configured addresses. */
 
