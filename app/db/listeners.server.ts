@@ -1,13 +1,13 @@
 import { and, eq, gt, inArray, isNull } from "drizzle-orm";
-import type { Visibility } from "~/auth/permissions";
 import { db, type Queryable } from "./client.server.ts";
+import type { Project } from "./projects.server.ts";
 import { memberships, projects, sessions, users } from "./schema/index.ts";
 
 /** Whether those who listen to projects may still do so, for many at once. */
 
 export interface Standing {
   /** By project; one that is deleted is missing. */
-  visibility: Map<number, Visibility>;
+  visibility: Map<number, Project["visibility"]>;
   /** Whose session it is; one that ended, or of a suspended person, is missing. */
   userOf: Map<string, number>;
   /** "project user" for each membership. */

@@ -1,11 +1,11 @@
 import { and, asc, count, desc, eq, lt, max, or, type SQL, sql } from "drizzle-orm";
-import type { ProjectRole, Visibility } from "~/auth/permissions";
 import { db, type Queryable } from "./client.server.ts";
 import { decodeCursor, encodeCursor } from "./cursor.server.ts";
 import { newPublicId } from "./ids.server.ts";
 import { designBands, events, memberships, projects, sweeps, users } from "./schema/index.ts";
 
 export type Project = typeof projects.$inferSelect;
+type Role = (typeof memberships.$inferSelect)["role"];
 export type DesignBand = typeof designBands.$inferSelect;
 
 /** The project and what this person is in it, in one query. */
@@ -115,7 +115,7 @@ export async function findIdsOfDemo(tx: Queryable = db): Promise<number[]> {
 export interface NewProject {
   title: string;
   summary: string;
-  visibility: Visibility;
+  visibility: Project["visibility"];
   ituRegion: number | null;
   demo?: number;
 }
@@ -185,11 +185,11 @@ export async function lockMember(projectId: number, userId: number, tx: Queryabl
   return rows[0]?.role;
 }
 
-export async function insertMember(projectId: number, userId: number, role: ProjectRole, tx: Queryable = db) {
+export async function insertMember(projectId: number, userId: number, role: Role, tx: Queryable = db) {
   await tx.insert(memberships).values({ projectId, userId, role, createdAt: new Date() });
 }
 
-export async function updateMember(projectId: number, userId: number, role: ProjectRole, tx: Queryable = db) {
+export async function updateMember(projectId: number, userId: number, role: Role, tx: Queryable = db) {
   await tx
     .update(memberships)
     .set({ role })
