@@ -6,19 +6,12 @@ import { refuseForeignOrigin } from "~/auth/origin.server";
 import { findPerson } from "~/auth/require.server";
 import { ErrorPage } from "~/components/ErrorPage";
 import { Footer } from "~/components/Footer";
-import { Header, type SignedInPerson } from "~/components/Header";
-import { type ThemeChoice, themeFromCookie } from "~/components/theme";
-import { type FlashMessage, ToastProvider } from "~/components/ui/Toast";
+import { Header } from "~/components/Header";
+import type { RootData } from "~/components/root-data";
+import { themeFromCookie } from "~/components/theme";
+import { ToastProvider } from "~/components/ui/Toast";
 import { countUnread } from "~/db/notices.server";
 import { takeMessage } from "~/services/flash.server";
-
-export interface RootData {
-  theme: ThemeChoice;
-  /** Who is signed in; null for a visitor. */
-  person: SignedInPerson | null;
-  /** A message kept across a redirect, shown once. */
-  flash: FlashMessage | null;
-}
 
 export const middleware: Route.MiddlewareFunction[] = [refuseForeignOrigin];
 

@@ -1,11 +1,16 @@
 import { type PointerEvent, useState } from "react";
-import type { FrequencyScale } from "~/charts/axis";
 import { SMALLEST_SHARE } from "~/services/note-parts";
 import { useMarks } from "./marks.tsx";
 import { type PictureRegion, regionBetween } from "./parts.ts";
 
+/** How the plot lays frequencies out, by shares of its width. */
+interface Across {
+  hzAt(share: number): number;
+  fractionOf(hz: number): number;
+}
+
 /** Over the plot of a sweep's chart: the stretch that a note speaks of, and the place to drag a new one. */
-export function StretchMarks({ scale }: { scale: FrequencyScale }) {
+export function StretchMarks({ scale }: { scale: Across }) {
   const marks = useMarks();
   if (!marks) return null;
   const { shown, picked, picking, pick, setPicked } = marks;
@@ -99,7 +104,7 @@ function Box({ region: { x, y, width, height } }: { region: PictureRegion }) {
 }
 
 /** The stretch as it lies in the view; of no width where it lies outside. */
-function across({ fromHz, toHz }: { fromHz: number; toHz: number }, scale: FrequencyScale): PictureRegion {
+function across({ fromHz, toHz }: { fromHz: number; toHz: number }, scale: Across): PictureRegion {
   const at = (hz: number) => ({ x: scale.fractionOf(hz), y: 0 });
   return { ...regionBetween(at(fromHz), at(toHz)), height: 1 };
 }

@@ -1,6 +1,11 @@
 import { useRouteLoaderData } from "react-router";
 import { LinkButton } from "~/components/ui/Button";
-import type { loader as projectLoader } from "~/routes/projects/layout";
+
+/** Of what every page of a project knows: whether this person makes plates there. */
+export interface PlatesOfProject {
+  project: { id: string };
+  mayPlate: boolean;
+}
 
 export interface MakePlateProps {
   /** What it is of: "sweep:ID", "dip:ID", "compare:ID,ID", "trail:ID", "strip" or "bench:ID". */
@@ -16,7 +21,7 @@ export interface MakePlateProps {
 
 /** The way to a plate of what a page of a project shows; nothing for who may not make one there. */
 export function MakePlate({ from, view = {} }: MakePlateProps) {
-  const project = useRouteLoaderData<typeof projectLoader>("routes/projects/layout");
+  const project = useRouteLoaderData<PlatesOfProject>("routes/projects/layout");
   if (!project?.mayPlate) return null;
   const address = new URLSearchParams({ from });
   if (view.quantity === "swr") address.set("view", "swr");

@@ -1,6 +1,6 @@
 import type { ReactNode } from "react";
 import { useFetcher, useLocation, useRouteLoaderData } from "react-router";
-import type { loader as rootLoader } from "~/root";
+import type { RootData } from "../root-data";
 import { Button } from "./Button";
 import { Icon } from "./Icon";
 
@@ -16,7 +16,7 @@ export interface CautionProps {
 export function Caution({ id, dismissible = true, children }: CautionProps) {
   const fetcher = useFetcher();
   const { pathname, search } = useLocation();
-  const remembered = useRouteLoaderData<typeof rootLoader>("root")?.person;
+  const remembered = useRouteLoaderData<RootData>("root")?.person;
   if (fetcher.state !== "idle" || fetcher.data) return null;
   return (
     <aside className="caution" aria-label="Caution">

@@ -2,6 +2,7 @@ import { NavLink, Outlet } from "react-router";
 import { requireProject } from "~/auth/require.server";
 import { LiveProject } from "~/components/live/LiveProject";
 import { Looking } from "~/components/live/Looking";
+import type { PlatesOfProject } from "~/components/plates/MakePlate";
 import { Breadcrumbs } from "~/components/ui/Breadcrumbs";
 import { Tag } from "~/components/ui/Tag";
 import { markOf } from "~/services/live-marks.server";
@@ -10,7 +11,7 @@ import type { Route } from "./+types/layout";
 /** The head of every page of a project. What is under it asks for access itself. */
 export async function loader(args: Route.LoaderArgs) {
   const { project, membership, may, lastEventId } = await requireProject(args, "project.read");
-  return {
+  const shown = {
     project: {
       id: project.publicId,
       title: project.title,
@@ -23,6 +24,7 @@ export async function loader(args: Route.LoaderArgs) {
     mayPlate: may("plate.make"),
     mark: markOf(project.id, lastEventId),
   };
+  return shown satisfies PlatesOfProject;
 }
 
 export default function ProjectLayout({ loaderData }: Route.ComponentProps) {
