@@ -5,7 +5,7 @@ import { circlesIn } from "./circles.mjs";
 import { codeOf, filesIn, importsOf, resolveImport } from "./imports.mjs";
 
 /**
- * Fails when an import in app/ points up (routes → auth, services → db → readers → measurement), and when
+ * Fails when an import in app/ points up (routes → services → auth → db → readers → measurement), and when
  * files of app/, scripts/ or server.ts import each other in a circle, if only for a type.
  * `node scripts/layers.mjs [folder with an app/]`
  */
@@ -18,10 +18,10 @@ const BELOW = {
   readers: ["measurement"],
   db: ["readers", "measurement", "env.server.ts"],
   services: ["auth", "db", "readers", "measurement", "charts", "env.server.ts", "errors.ts"],
-  auth: ["services", "db", "readers", "measurement", "env.server.ts", "errors.ts", "context.ts"],
+  auth: ["db", "readers", "measurement", "env.server.ts", "errors.ts", "context.ts"],
   charts: ["components", "readers", "measurement"],
   // Of auth and services only what has no secrets in it; a `.server` module is refused below.
-  components: ["charts", "auth", "services", "readers", "measurement", "errors.ts", "root.tsx"],
+  components: ["auth", "services", "readers", "measurement", "errors.ts"],
 };
 /** The packages that pure code may use. Everything else, Node's own modules first, is refused there. */
 const PURE = {
@@ -31,8 +31,6 @@ const PURE = {
 /** The environment, the clock, chance and the browser, which pure code does not know. */
 const IMPURE =
   /(?<![\w.$])(?:process\.|Date\.now|new Date\(\)|Math\.random|performance\.|console\.|document\.|localStorage|fetch\()/;
-/** The words for roles, which rows carry too. */
-const VOCABULARY = "auth/permissions.ts";
 /** For charts and components, which run in the browser too. */
 const IN_BROWSER = /^(?:charts|components)\/|^routes\/.*\/components\//;
 const MOST_LINES = 500;
@@ -66,8 +64,7 @@ function faultOf(from, layer, { target, typeOnly }) {
   const found = [];
   const inside = path.relative("app", resolved);
   const to = inside.split("/")[0];
-  if (layer === "db" && typeOnly && inside === VOCABULARY) return [];
-  if (layer in BELOW && to !== layer && !BELOW[layer].includes(to) && !(typeOnly && layer === "components")) {
+  if (layer in BELOW && to !== layer && !BELOW[layer].includes(to)) {
     found.push(`imports ${target}, which is above it`);
   }
   if (IN_BROWSER.test(from) && /\.server(\.tsx?)?$/.test(inside) && !typeOnly) {

@@ -25,7 +25,7 @@ test("imports that point down pass", () => {
     "services/intake.server.ts": 'import { b } from "~/db/sweeps.server";',
     "routes/page.tsx": 'import { b } from "~/services/intake.server";',
     "components/Thread.tsx":
-      'import type { Row } from "~/db/sweeps.server";\nimport { useState } from "react";',
+      'import type { Row } from "~/services/intake.server";\nimport { useState } from "react";',
   });
   expect(result).toEqual({ code: 0, faults: [] });
 });
@@ -45,6 +45,13 @@ test.each([
   ],
   ["services/a.server.ts", 'import {\n  b,\n} from "~/routes/b";', "imports ~/routes/b, which is above it"],
   ["charts/A.tsx", 'import type { B } from "~/db/b.server";', "imports ~/db/b.server, which is above it"],
+  ["db/a.server.ts", 'import type { B } from "~/auth/b";', "imports ~/auth/b, which is above it"],
+  [
+    "auth/a.server.ts",
+    'import { b } from "~/services/b.server";',
+    "imports ~/services/b.server, which is above it",
+  ],
+  ["components/A.tsx", 'import type { loader } from "~/root";', "imports ~/root, which is above it"],
   [
     "components/A.tsx",
     'import { b } from "~/services/b.server";',
