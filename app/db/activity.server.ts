@@ -13,6 +13,7 @@ import {
   users,
   writeUps,
 } from "./schema/index.ts";
+import { isFormer } from "./shown-name.server.ts";
 
 /** Where a page of the account ended: the newest things come first. */
 export interface Before {
@@ -34,7 +35,7 @@ export async function findPage(
       about: events.about,
       at: events.at,
       by: users.name,
-      closedAt: users.closedAt,
+      former: isFormer(users),
     })
     .from(events)
     .leftJoin(users, eq(users.id, events.actorId))

@@ -4,6 +4,7 @@ import { newPublicId } from "./ids.server.ts";
 import { isUnblocked } from "./readable.server.ts";
 import { blocks, events, mailChoices, memberships, notes, notices, projects, users } from "./schema/index.ts";
 import { before, pageOf } from "./search.server.ts";
+import { shownName } from "./shown-name.server.ts";
 
 export type NoticeReason = (typeof notices.$inferSelect)["reason"];
 export type MailMode = (typeof mailChoices.$inferSelect)["mode"];
@@ -103,8 +104,7 @@ export async function findPage(
       readAt: notices.readAt,
       kind: events.kind,
       about: events.about,
-      actor: users.name,
-      actorClosedAt: users.closedAt,
+      actor: shownName(users),
       body: notes.body,
       removedAt: notes.removedAt,
       project: { publicId: projects.publicId, title: projects.title },

@@ -1,6 +1,7 @@
 import { and, asc, desc, eq, max, sql } from "drizzle-orm";
 import { db, type Queryable } from "./client.server.ts";
 import { plateForms, plateSources, plates, users } from "./schema/index.ts";
+import { shownName } from "./shown-name.server.ts";
 
 export type PlateRow = typeof plates.$inferSelect;
 export type PlateFormRow = typeof plateForms.$inferSelect;
@@ -23,7 +24,7 @@ export async function findAllByProject(projectId: number, tx: Queryable = db) {
       licence: plates.licence,
       createdAt: plates.createdAt,
       withdrawnAt: plates.withdrawnAt,
-      by: sql<string | null>`if(${users.closedAt} is null, ${users.name}, null)`,
+      by: shownName(users),
     })
     .from(plates)
     .leftJoin(users, eq(users.id, plates.createdBy))

@@ -4,6 +4,7 @@ import { db, type Queryable } from "./client.server.ts";
 import { decodeCursor, encodeCursor } from "./cursor.server.ts";
 import { newPublicId } from "./ids.server.ts";
 import { plates, projects, users, webmentions, writeUps } from "./schema/index.ts";
+import { shownName } from "./shown-name.server.ts";
 
 export type MentionRow = typeof webmentions.$inferSelect;
 export type MentionState = MentionRow["state"];
@@ -17,7 +18,7 @@ export async function receive(
   { source, target, ...of }: { source: string; target: string } & MentionOf,
   tx: Queryable,
 ): Promise<string> {
-  const pairSha256 = createHash("sha256").update(`${source}\n${target}`).digest("hex");
+  const pairSha256 = pairOf(source, target);
   const now = new Date();
   await tx
     .insert(webmentions)
@@ -34,6 +35,11 @@ export async function receive(
     .where(eq(webmentions.pairSha256, pairSha256))
     .limit(1);
   return rows[0].publicId;
+}
+
+/** By which a mention that comes again is known. */
+export function pairOf(source: string, target: string): string {
+  return createHash("sha256").update(`${source}\n${target}`).digest("hex");
 }
 
 /** With what it mentions, and of which project that is; a plate may outlive its project. */
@@ -128,7 +134,7 @@ async function listed(wanted: SQL | undefined, limit: number, tx: Queryable) {
     .select({
       mention: webmentions,
       ...MENTIONED,
-      decidedBy: sql<string | null>`if(${users.closedAt} is null, ${users.name}, null)`,
+      decidedBy: shownName(users),
     })
     .from(webmentions)
     .leftJoin(plates, eq(plates.id, webmentions.plateId))

@@ -3,6 +3,7 @@ import { alias } from "drizzle-orm/mysql-core";
 import { db, type Queryable } from "./client.server.ts";
 import { newPublicId } from "./ids.server.ts";
 import { plates, projects, users, writeUps, writeUpVersions } from "./schema/index.ts";
+import { shownName } from "./shown-name.server.ts";
 
 export type WriteUpRow = typeof writeUps.$inferSelect;
 export type WriteUpVersion = typeof writeUpVersions.$inferSelect;
@@ -23,7 +24,7 @@ export async function findAllByProject(
       takenBackAt: writeUps.takenBackAt,
       createdAt: writeUps.createdAt,
       updatedAt: writeUps.updatedAt,
-      by: sql<string | null>`if(${users.closedAt} is null, ${users.name}, null)`,
+      by: shownName(users),
       publishedTitle: writeUpVersions.title,
       publishedAt: writeUpVersions.publishedAt,
       /** What is written now is not what is published. */
@@ -49,7 +50,7 @@ export async function findByPublicId(publicId: string, tx: Queryable = db) {
     .select({
       writeUp: writeUps,
       project: projects,
-      by: sql<string | null>`if(${users.closedAt} is null, ${users.name}, null)`,
+      by: shownName(users),
     })
     .from(writeUps)
     .innerJoin(projects, eq(projects.id, writeUps.projectId))
@@ -98,7 +99,7 @@ export async function findVersion(writeUpId: number, number: number, tx: Queryab
   const rows = await tx
     .select({
       version: writeUpVersions,
-      by: sql<string | null>`if(${users.closedAt} is null, ${users.name}, null)`,
+      by: shownName(users),
     })
     .from(writeUpVersions)
     .leftJoin(users, eq(users.id, writeUpVersions.publishedBy))
@@ -116,7 +117,7 @@ export async function findVersions(writeUpId: number, tx: Queryable = db) {
       title: writeUpVersions.title,
       remark: writeUpVersions.remark,
       publishedAt: writeUpVersions.publishedAt,
-      by: sql<string | null>`if(${users.closedAt} is null, ${users.name}, null)`,
+      by: shownName(users),
     })
     .from(writeUpVersions)
     .leftJoin(users, eq(users.id, writeUpVersions.publishedBy))
@@ -152,8 +153,8 @@ export async function findPublished(projectId: number, limit: number, tx: Querya
       body: writeUpVersions.body,
       remark: writeUpVersions.remark,
       publishedAt: writeUpVersions.publishedAt,
-      by: sql<string | null>`if(${users.closedAt} is null, ${users.name}, null)`,
-      writer: sql<string | null>`if(${writer.closedAt} is null, ${writer.name}, null)`,
+      by: shownName(users),
+      writer: shownName(writer),
       firstAt:
         sql<Date>`(select min(v.published_at) from ${writeUpVersions} v where v.write_up_id = ${writeUps.id})`.mapWith(
           writeUpVersions.publishedAt,

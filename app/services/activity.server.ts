@@ -65,8 +65,8 @@ export async function putAway(project: { id: number }, userId: number, mark: str
   if (eventId !== undefined) await activity.setSeen(project.id, userId, eventId);
 }
 
-export function happened({ kind, about, at, by, closedAt }: activity.ActivityRow): Happened {
-  return { kind: kind as EventKind, about, at, by: closedAt ? FORMER : by };
+export function happened({ kind, about, at, by, former }: activity.ActivityRow): Happened {
+  return { kind: kind as EventKind, about, at, by: former ? FORMER : by };
 }
 
 /** Answers the address of what an event is about; null for what is gone. */

@@ -52,10 +52,9 @@ export async function openNotice(userId: number, publicId: string): Promise<stri
 }
 
 function itemOf(row: notices.InboxRow): InboxItem {
-  const actor = row.actorClosedAt ? null : row.actor;
   return {
     publicId: row.publicId,
-    words: noticeWords({ ...row, actor }),
+    words: noticeWords(row),
     line: row.body && !row.removedAt ? plainText(row.body, LINE) : "",
     at: row.at,
     unread: row.readAt === null,
