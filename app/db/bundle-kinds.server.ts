@@ -1,4 +1,4 @@
-import { and, eq, getTableColumns, inArray, isNull, type SQL, type SQLWrapper } from "drizzle-orm";
+import { and, eq, getTableColumns, inArray, isNull, or, type SQL, type SQLWrapper } from "drizzle-orm";
 import type { MySqlColumn, MySqlTable } from "drizzle-orm/mysql-core";
 import { db } from "./client.server.ts";
 import * as t from "./schema/index.ts";
@@ -47,6 +47,7 @@ export const KIND_NAMES = [
   "plate-sources",
   "write-ups",
   "write-up-versions",
+  "mentions",
   "activity",
 ] as const;
 export type KindName = (typeof KIND_NAMES)[number];
@@ -97,6 +98,16 @@ function kind(name: KindName, table: MySqlTable, of: BundleKind["of"], given: Gi
 function standingNotes(projectId: number) {
   const standing = and(eq(t.notes.projectId, projectId), isNull(t.notes.removedAt));
   return db.select({ id: t.notes.id }).from(t.notes).where(standing);
+}
+
+/** Mentions of what is the project's that were found to link: what was never looked at, or does not link, is nobody's record. */
+function isKeptMention(projectId: number) {
+  const of = (table: typeof t.plates | typeof t.writeUps) =>
+    db.select({ id: table.id }).from(table).where(eq(table.projectId, projectId));
+  return and(
+    or(inArray(t.webmentions.plateId, of(t.plates)), inArray(t.webmentions.writeUpId, of(t.writeUps))),
+    inArray(t.webmentions.state, ["verified", "shown", "hidden", "gone"]),
+  );
 }
 
 const BY = { createdBy: "people" } as const;
@@ -175,6 +186,10 @@ export const KINDS: readonly BundleKind[] = [
   own("write-ups", t.writeUps, { refs: BY }),
   under("write-up-versions", t.writeUpVersions, t.writeUpVersions.writeUpId, t.writeUps, {
     refs: { writeUpId: "write-ups", publishedBy: "people" },
+  }),
+  kind("mentions", t.webmentions, isKeptMention, {
+    refs: { plateId: "plates", writeUpId: "write-ups", decidedBy: "people" },
+    left: ["pairSha256"],
   }),
   own("activity", t.events, { refs: { actorId: "people" } }),
 ];

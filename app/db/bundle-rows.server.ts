@@ -1,4 +1,4 @@
-import { and, asc, eq, getTableColumns, gt, inArray, isNull, type SQL, sql } from "drizzle-orm";
+import { and, asc, eq, getTableColumns, gt, inArray, isNull, like, type SQL, sql } from "drizzle-orm";
 import type { MySqlColumn } from "drizzle-orm/mysql-core";
 import { type BundleKind, KINDS } from "./bundle-kinds.server.ts";
 import { db, type Queryable, type Transaction } from "./client.server.ts";
@@ -12,6 +12,7 @@ import {
   sweeps,
   users,
 } from "./schema/index.ts";
+import { FROM_BUNDLE } from "./shown-name.server.ts";
 
 /** Rows of a project as they go into a bundle and come out of one. */
 
@@ -192,6 +193,16 @@ export async function insertPlaceholder(
     .values({ ...person, email: null, createdAt: now, closedAt: now })
     .$returningId();
   return row.id;
+}
+
+/** When the bundle came that a person is known by; undefined for whoever is not from one. */
+export async function findTakenInAt(userId: number, tx: Queryable = db): Promise<Date | undefined> {
+  const rows = await tx
+    .select({ at: users.createdAt })
+    .from(users)
+    .where(and(eq(users.id, userId), like(users.userName, `${FROM_BUNDLE}%`)))
+    .limit(1);
+  return rows[0]?.at;
 }
 
 /** Removes persons that were made for a project that was taken in by half. */

@@ -123,6 +123,8 @@ async function rowsOf(kind: BundleKind, projectId: number): Promise<bundleRows.R
 }
 
 const FROZEN = new Set([
+  "mentions.source",
+  "mentions.target",
   "plates.record",
   "plate-sources.sweep",
   "plate-sources.recipe",

@@ -9,6 +9,7 @@ import { newPublicId } from "~/db/ids.server";
 import * as people from "~/db/people.server";
 import * as projects from "~/db/projects.server";
 import * as sweeps from "~/db/sweeps.server";
+import * as mentions from "~/db/webmentions.server";
 import { env } from "~/env.server";
 import { IDEAL_STANDARDS, NOTHING_GIVEN } from "~/measurement/bench";
 import { addAttachment } from "~/services/attachments.server";
@@ -127,13 +128,14 @@ async function speak(
     file: { name: "mast.png", bytes: picture },
     caption: "The mast",
   });
-  await plateOf(project, ada, taken[0], first.file);
-  await bundleRows.insertRows(
+  const plate = await plateOf(project, ada, taken[0], first.file);
+  const publicId = newPublicId();
+  const made = await bundleRows.insertRows(
     kindNamed("write-ups"),
     [
       {
         projectId: project.id,
-        publicId: newPublicId(),
+        publicId,
         title: "What we found",
         body: `The dip #dip:${dip.publicId}, step #step:${step.kind === "kept" ? step.publicId : ""}.`,
         createdBy: ada.id,
@@ -143,6 +145,31 @@ async function speak(
     ],
     db,
   );
+  await mentionsOf(plate, { id: made.get(publicId) ?? 0, publicId }, ada);
+}
+
+/** Pages elsewhere that cite both, in every state; what was never looked at stays behind in a bundle. */
+async function mentionsOf(plate: Placed, writeUp: Placed, by: { id: number }): Promise<void> {
+  for (const [i, state] of (["shown", "verified", "hidden", "gone", "queued"] as const).entries()) {
+    const ofPlate = i % 2 === 0;
+    const target = ofPlate ? `/plates/${plate.publicId}` : `/write-ups/${writeUp.publicId}`;
+    const page = { source: `https://notes.example/page-${newPublicId()}`, target: env.BASE_URL + target };
+    const of = ofPlate ? { plateId: plate.id, writeUpId: null } : { plateId: null, writeUpId: writeUp.id };
+    const found = await mentions.findByPublicId(await mentions.receive({ ...page, ...of }, db));
+    if (!found) throw new Error("The mention is not there.");
+    const looked = {
+      title: "Reeds and <radials>",
+      reason: state === "gone" ? "The page is no longer there." : "",
+    };
+    const decidedBy = state === "verified" ? null : by.id;
+    const seen = state === "queued" ? {} : { ...looked, checkedAt: day(9), decidedBy };
+    await mentions.update(found.mention.id, { state, ...seen });
+  }
+}
+
+interface Placed {
+  id: number;
+  publicId: string;
 }
 
 /** A plate with one form: all of them would take seconds, and their bytes are those of a file like any other. */
@@ -151,7 +178,7 @@ async function plateOf(
   by: people.User,
   sweep: string,
   file: { name: string; sha256: string; sizeBytes: number; storageKey: string },
-): Promise<void> {
+): Promise<Placed> {
   const subject = { kind: "sweep" as const, ids: [sweep] };
   const whole = (await projects.findWithRoleById(project.id, null))?.project;
   if (!whole) throw new Error("The project is not there.");
@@ -188,7 +215,7 @@ async function plateOf(
     recordSha256: sha256Of(bytesOf(record)),
     createdAt: at,
   };
-  const id = (await bundleRows.insertRows(kindNamed("plates"), [plate], db)).get(publicId);
+  const id = (await bundleRows.insertRows(kindNamed("plates"), [plate], db)).get(publicId) ?? 0;
   const svg = bytesOf(
     '<svg xmlns="http://www.w3.org/2000/svg" viewBox="0 0 1 1"><title>Figure</title></svg>',
   );
@@ -201,9 +228,10 @@ async function plateOf(
   const source = { plateId: id, role: "sweep", sweep, name, sha256, sizeBytes, storageKey: file.storageKey };
   await bundleRows.insertRows(
     kindNamed("plate-sources"),
-    [{ ...source, recipe: `{"sweep":"${sweep}"}` }],
+    [{ ...source, recipe: JSON.stringify(composed.sources[0].recipe) }],
     db,
   );
+  return { id, publicId };
 }
 
 async function somebody(name: string): Promise<people.User> {

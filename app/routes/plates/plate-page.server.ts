@@ -9,6 +9,7 @@ import { notFound } from "~/errors";
 import { plainText, renderNote } from "~/services/markdown.server";
 import { copyTexts, sentence } from "~/services/plates/citation";
 import { readForm } from "~/services/plates/forms.server";
+import { frozenElsewhere } from "~/services/plates/frozen-elsewhere.server";
 import { type PlateRecord, parseRecord } from "~/services/plates/record";
 import { subjectOf } from "~/services/plates/subject";
 import { shownMentions } from "~/services/webmention/shown.server";
@@ -48,13 +49,14 @@ export async function loadTombstone({ plate }: FoundPlate) {
 
 export async function loadPlatePage({ plate, project, role, mayWithdraw }: FoundPlate) {
   const record = parseRecord(plate.record);
-  const [versions, wide, narrow, touchstone, present, mentions] = await Promise.all([
+  const [versions, wide, narrow, touchstone, present, mentions, elsewhere] = await Promise.all([
     plates.findVersions(plate),
     readForm(plate.publicId, "svg-light"),
     readForm(plate.publicId, "svg-light-narrow"),
     readForm(plate.publicId, "s1p"),
     project && role ? presentOf(project.id, record) : new Set<string>(),
     shownMentions({ plateId: plate.id }),
+    frozenElsewhere(plate, record),
   ]);
   const newest = versions.at(-1);
   const next = versions.find(({ previousId }) => previousId === plate.id);
@@ -81,6 +83,8 @@ export async function loadPlatePage({ plate, project, role, mayWithdraw }: Found
     subjectPath: project && role ? subjectPath(project.publicId, record, present) : null,
     present: [...present],
     mentions,
+    /** Of a copy that came with a bundle. */
+    elsewhere,
     versions: versions.map(({ publicId, version, createdAt, withdrawnAt }) => ({
       publicId,
       version,

@@ -11,6 +11,7 @@ import type { Route } from "./+types/plate";
 import { Chain } from "./components/Chain";
 import { CheckAgain } from "./components/CheckAgain";
 import { Cite } from "./components/Cite";
+import { Elsewhere } from "./components/Elsewhere";
 import { Forms } from "./components/Forms";
 import { Leaf } from "./components/Leaf";
 import { People } from "./components/People";
@@ -73,6 +74,7 @@ export default function PlatePage({ loaderData, actionData }: Route.ComponentPro
   return (
     <article className="grid gap-8 grid-cols-[minmax(0,1fr)]">
       <NewerVersion plate={plate} />
+      <Elsewhere plate={plate} />
       <Leaf plate={plate} />
       <PlateActions plate={plate} errors={actionData?.errors ?? []} />
       <div className="plate-columns plate-foot">

@@ -40,5 +40,6 @@ and have no number where it is 0 or reaches 1. \`picture_…\` are what the pixe
 People are named as the project showed them. No addresses, ways to sign in or tokens are in a bundle. A bench that somebody lent from another
 project is named by the analyses that used it and is not in here.
 
-A plate keeps the address it was made at: that, not its place here, is where it is cited.
+A plate keeps the address it was made at: that, not its place here, is where it is cited. \`mentions.json\` has the pages elsewhere that cite plates
+and write-ups, with what an owner decided; where a bundle is taken in they are kept as they are, and nobody is asked or told again.
 `;

@@ -30,6 +30,8 @@ export const path = z
   .string()
   .regex(/^data\/[^\\]+$/)
   .describe("Where the bytes are in this bundle");
+/** It is linked to where mentions are shown. */
+export const webAddress = z.url({ protocol: /^https?$/ }).max(2000);
 export const count = z.number().int().min(0).max(4_294_967_295);
 
 export const hz = z.number().describe("Hz");

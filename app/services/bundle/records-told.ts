@@ -1,5 +1,6 @@
 import { z } from "zod";
 import { EVENT_KINDS } from "../event-kinds.ts";
+import { recipe } from "./recipe-value.ts";
 import * as v from "./record-values.ts";
 
 /** The shapes of what people said and published: notes, plates, write-ups, and what happened. */
@@ -80,7 +81,7 @@ export const TOLD = {
     sweep: v.id,
     name: v.upTo(255),
     ...v.file,
-    recipe: z.string().max(8_000_000),
+    recipe,
     path: v.path,
   }),
   "write-ups": z.strictObject({
@@ -102,5 +103,23 @@ export const TOLD = {
     publishedBy: v.person,
     publishedAt: v.time,
   }),
+  mentions: z
+    .strictObject({
+      id: v.id,
+      source: v.webAddress.describe("The page elsewhere, as it was when it was looked at"),
+      target: v.webAddress.describe("What it links to: an address of where it was received"),
+      plate: v.ref,
+      writeUp: v.ref,
+      state: z.enum(["verified", "shown", "hidden", "gone"]).describe("verified: waits for an owner's word"),
+      title: v.upTo(300),
+      reason: v.upTo(300),
+      receivedAt: v.time,
+      checkedAt: v.time.nullable(),
+      decidedBy: v.person,
+    })
+    .refine(({ plate, writeUp }) => (plate === null) !== (writeUp === null), {
+      message: "it names a plate or a write-up, one of them",
+      path: ["plate"],
+    }),
   activity: z.strictObject({ kind: z.enum(EVENT_KINDS), actor: v.person, about: v.about, at: v.time }),
 };

@@ -49,8 +49,8 @@ function isLater(kind: BundleKind, column: string): boolean {
   return kind.later.includes(column) || kind.refs[column] === kind.name;
 }
 
-/** Says for ever what it said where it was made. */
-const FROZEN = new Set(["recipe", "frozen"]);
+/** Says for ever what it said where it was made; of mentions, the two addresses. */
+const FROZEN = new Set(["recipe", "frozen", "source", "target"]);
 
 function placeOf(kind: BundleKind, column: string, value: unknown, { rows, people }: Places): number | null {
   if (value === null) return null;

@@ -1,27 +1,31 @@
 import type { KindName } from "~/db/bundle-kinds.server";
 import type { Row } from "~/db/bundle-rows.server";
 import { newPublicId } from "~/db/ids.server";
+import { pairOf } from "~/db/webmentions.server";
+import { env } from "~/env.server";
 import { MEDIA_TYPES } from "../plates/form-names.ts";
 import { plateRecord } from "../plates/record.ts";
 import { putObject } from "../storage.server.ts";
+import { targetOf } from "../webmention/targets.ts";
 import type { NewIds } from "./new-ids.server.ts";
 import type { OpenBag } from "./open-zip.server.ts";
 import type { Rec } from "./records.ts";
 import { Refused } from "./refused.ts";
 import { isHarmlessPage, isHarmlessSvg } from "./svg-check.ts";
 
-/** Where the bytes of a bundle's records go in the store. */
+/** Where the bytes of a bundle's records go in the store, and by which key a row is known here. */
 export class KeyMaker {
   /** SHA-256 → key of what several records share: an original, and a plate that rests on it. */
   private readonly shared = new Map<string, string>();
   readonly stored = new Set<string>();
+  private readonly pairs = new Set<string>();
 
   constructor(
     private readonly projectPublicId: string,
     private readonly ids: NewIds,
   ) {}
 
-  /** The columns that say where; none for kinds without bytes. */
+  /** The columns that say so; none for most kinds. */
   columnsOf(kind: KindName, record: Rec): Row {
     switch (kind) {
       case "originals":
@@ -43,9 +47,22 @@ export class KeyMaker {
       }
       case "plate-forms":
         return { storageKey: this.fresh("plates", this.ids.of("plates", String(record.plate))) };
+      case "mentions":
+        return { pairSha256: this.pairOf(record) };
       default:
         return {};
     }
+  }
+
+  /** One that came to this very address is known when it comes again. What came elsewhere is kept, and is nobody's double. */
+  private pairOf({ id, source, target, plate, writeUp }: Rec): string {
+    const own = targetOf(String(target), env.BASE_URL);
+    const here =
+      plate === null ? this.ids.of("write-ups", String(writeUp)) : this.ids.of("plates", String(plate));
+    const pair = pairOf(String(source), String(target));
+    const known = own?.publicId === here && !this.pairs.has(pair);
+    this.pairs.add(pair);
+    return known ? pair : pairOf(`kept ${this.ids.of("mentions", String(id))} ${source}`, String(target));
   }
 
   private fresh(folder: string, owner = this.projectPublicId): string {

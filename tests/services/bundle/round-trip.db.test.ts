@@ -3,11 +3,19 @@ import { mkdtempSync, rmSync, writeFileSync } from "node:fs";
 import { tmpdir } from "node:os";
 import path from "node:path";
 import { Readable } from "node:stream";
+import { inArray } from "drizzle-orm";
 import { beforeAll, describe, expect, it } from "vitest";
 import * as runs from "~/db/bundle-runs.server";
+import { db } from "~/db/client.server";
+import * as plates from "~/db/plates.server";
 import * as projects from "~/db/projects.server";
+import { jobs } from "~/db/schema/index";
+import * as mentions from "~/db/webmentions.server";
+import { env } from "~/env.server";
+import { accountOf } from "~/services/activity.server";
 import { askForBundle, giveBundle, offered } from "~/services/bundle/runs.server";
 import { workOnBundles } from "~/services/bundle/work.server";
+import { frozenElsewhere } from "~/services/plates/frozen-elsewhere.server";
 import { getObject } from "~/services/storage.server";
 import { compareProjects, MAY_DIFFER } from "../../../scripts/bundles/compare.ts";
 import { makeFullProject } from "../../../scripts/bundles/full-project.ts";
@@ -80,5 +88,27 @@ describe("a bundle", () => {
     const found = await projects.findWithRoleById(run?.projectId ?? 0, full.bram.id);
     expect(found?.role).toBe("owner");
     expect(found?.project.visibility).toBe("private");
+    // Kept, and nobody is asked about them or told anything: no job has begun.
+    const kept = await mentions.findAllByProject(run?.projectId ?? 0, mentions.MENTION_STATES, 10);
+    expect(kept.map(({ mention }) => mention.state).sort()).toEqual(["gone", "hidden", "shown", "verified"]);
+    const waits = await db
+      .select()
+      .from(jobs)
+      .where(inArray(jobs.kind, ["check-mention", "send-mentions"]));
+    expect(waits).toEqual([]);
+    const [plate] = await plates.findAllByProject(run?.projectId ?? 0);
+    const row = (await plates.findByPublicId(plate.publicId)) as plates.PlateRow;
+    const { address } = JSON.parse(row.record);
+    expect(address).not.toContain(plate.publicId);
+    expect(await frozenElsewhere(row, { address })).toEqual({
+      address,
+      otherSite: false,
+      at: expect.any(Date),
+    });
+    expect(await frozenElsewhere(row, { address: `${env.BASE_URL}/plates/${plate.publicId}` })).toBeNull();
+    // Who is known by name only is named, here as everywhere.
+    const account = await accountOf({ id: run?.projectId ?? 0, publicId: found?.project.publicId ?? "" });
+    const names = new Set(account.days.flatMap(({ lines }) => lines.flatMap(({ by }) => by)));
+    expect([...names].sort()).toEqual(["Ada Marsh (from a bundle)", "Bram Sedge"]);
   });
 });
