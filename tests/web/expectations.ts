@@ -55,7 +55,7 @@ export interface Case {
   /** The case destroys what it is asked of: it gets a project of its own for each role, empty or with a sweep, or a plate of its own. */
   destroys?: "project" | "sweep" | "plate";
   /** What who may ask is answered, where nothing is there to be done; else it is to succeed. */
-  answers?: 400 | 409;
+  answers?: 400 | 409 | 422;
   /** The case ends the account that asks: somebody new asks in place of each. */
   asNewcomer?: boolean;
 }
@@ -792,7 +792,8 @@ export const EXPECTATIONS: Record<string, Expectation> = {
   "routes/api/bands.ts": { GET: apiRead, POST: notHere },
   "routes/api/plates.ts": {
     GET: apiRead,
-    POST: [{ ask: { api: "plate.make" }, json: () => ({ from: "strip", title: "From a script" }) }],
+    // Of nothing: those who may are told so. A plate takes seconds; tests/web/plates.test.ts makes some.
+    POST: [{ ask: { api: "plate.make" }, json: () => ({ from: "nothing" }), answers: 422 }],
   },
   "routes/api/batches.ts": {
     GET: [{ ask: { api: "sweep.add" } }],
