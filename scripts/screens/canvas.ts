@@ -1,4 +1,5 @@
 import { chromium } from "playwright-core";
+import { BROWSER, findProgram } from "../install.mjs";
 import type { Scene } from "./scene.ts";
 
 const ARGUMENTS = [
@@ -17,7 +18,7 @@ export async function canvasPainter(): Promise<{
   close: () => Promise<void>;
 }> {
   const browser = await chromium.launch({
-    executablePath: process.env.CHROMIUM ?? "/usr/bin/chromium",
+    executablePath: process.env.CHROMIUM ?? findProgram(BROWSER),
     args: ARGUMENTS,
   });
   const page = await browser.newPage();

@@ -2,7 +2,7 @@ import { readdirSync, readFileSync } from "node:fs";
 import path from "node:path";
 import mysql, { type RowDataPacket } from "mysql2/promise";
 import { chromium } from "playwright-core";
-import { findProgram, ROOT } from "../install.mjs";
+import { BROWSER, findProgram, ROOT } from "../install.mjs";
 import { PlainFailure } from "../steps.mjs";
 import { benchPlates } from "./bench-plates.ts";
 import type { BenchRow } from "./bench-row.ts";
@@ -67,7 +67,7 @@ async function mediansOf(urls: string[]): Promise<number[]> {
 async function plotlyBytesBeforePaint(url: string): Promise<number> {
   const files = plotlyFiles();
   const browser = await chromium.launch({
-    executablePath: findProgram("chromium"),
+    executablePath: findProgram(BROWSER),
     args: [
       "--no-sandbox",
       "--disable-gpu",

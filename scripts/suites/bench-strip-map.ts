@@ -2,7 +2,7 @@ import { chromium } from "playwright-core";
 import { NO_FEEDLINE, reflection } from "../demo/antenna.ts";
 import { returnLossFile } from "../demo/files.ts";
 import { gaussBy, randomBy } from "../demo/random.ts";
-import { findProgram } from "../install.mjs";
+import { BROWSER, findProgram } from "../install.mjs";
 import type { BenchRow } from "./bench-row.ts";
 
 const SWEEPS = 100;
@@ -70,7 +70,7 @@ async function makeProject(): Promise<string> {
 
 async function inBrowser(url: string) {
   const browser = await chromium.launch({
-    executablePath: findProgram("chromium"),
+    executablePath: findProgram(BROWSER),
     args: ["--no-sandbox", "--disable-gpu", "--no-first-run", "--disable-background-networking"],
   });
   try {

@@ -7,6 +7,7 @@ import {
   type Page,
 } from "playwright-core";
 import { expect } from "vitest";
+import { BROWSER, findProgram } from "../../scripts/install.mjs";
 
 /** A real Chromium against the running server, with what every journey needs. */
 
@@ -25,7 +26,7 @@ const FLAGS = [
 const ACCESSIBILITY = ["wcag2a", "wcag2aa", "wcag21aa", "wcag22aa"];
 
 export function launch(): Promise<Browser> {
-  return chromium.launch({ executablePath: process.env.CHROMIUM ?? "/usr/bin/chromium", args: FLAGS });
+  return chromium.launch({ executablePath: process.env.CHROMIUM ?? findProgram(BROWSER), args: FLAGS });
 }
 
 export interface Visitor {
@@ -105,6 +106,10 @@ export function newcomer(name: string): string {
 /** Waits until the page's scripts have taken over: only then do its forms answer without a reload. */
 export async function settled(page: Page): Promise<void> {
   await page.waitForLoadState("networkidle");
+  await page.waitForFunction(() => {
+    const main = document.querySelector("main");
+    return !main || Object.keys(main).some((key) => key.startsWith("__reactProps"));
+  });
 }
 
 /** Nothing serious by axe; the rules' names are in the message otherwise. */

@@ -153,7 +153,7 @@ test("the advice becomes a planned step with its ghosts on the strip map", async
   await settled(page);
   const advice = page.getByRole("region", { name: "Where it lies" });
   // 10.21 m × 6.99 / 7.1
-  expect(await advice.textContent()).toMatch(/Long element: 10\.21\sm → 10\.0[45]\d?\sm/);
+  await expect.poll(() => advice.textContent()).toMatch(/Long element: 10\.21\sm → 10\.0[45]\d?\sm/);
   await advice.getByRole("link", { name: "Plan this step" }).first().click();
   await page.waitForURL(/\/steps\/new\?/);
   await settled(page);
