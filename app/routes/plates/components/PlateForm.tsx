@@ -77,10 +77,13 @@ export function PlateForm({ projectId, visibility, draft, answer }: PlateFormPro
           </div>
         )}
         <Consequence visibility={visibility} />
-        <div>
+        <div className="flex flex-wrap items-center gap-x-4 gap-y-2">
           <Button name="intent" value="freeze" busy={busy} icon="plate">
             {draft.mends ? "Freeze the new version" : "Freeze the plate"}
           </Button>
+          <p className="text-small soft" role="status">
+            {busy && "Every form of it is drawn and stored. This takes some seconds."}
+          </p>
         </div>
       </Form>
       <Preview preview={preview} problem={last.problem} busy={tried.busy} />
