@@ -1,4 +1,3 @@
-import { parseWithZod } from "@conform-to/zod/v4";
 import { data } from "react-router";
 import { safePath } from "~/auth/next";
 import { requirePerson } from "~/auth/require.server";
@@ -6,6 +5,7 @@ import { Breadcrumbs } from "~/components/ui/Breadcrumbs";
 import * as blocks from "~/db/blocks.server";
 import * as people from "~/db/people.server";
 import { redirectWithMessage } from "~/services/flash.server";
+import { parseForm } from "~/services/parse-form";
 import type { Route } from "./+types/blocked";
 import { blockedSchema } from "./blocked.schema.ts";
 import { BlockedList, BlockForm } from "./components/BlockedList.tsx";
@@ -22,7 +22,7 @@ export async function loader(args: Route.LoaderArgs) {
 
 export async function action(args: Route.ActionArgs) {
   const person = await requirePerson(args);
-  const submission = parseWithZod(await args.request.formData(), { schema: blockedSchema });
+  const submission = parseForm(await args.request.formData(), { schema: blockedSchema });
   if (submission.status !== "success") return data({ lastResult: submission.reply() }, { status: 400 });
   const { value } = submission;
   const wrong = (text: string) =>

@@ -9,6 +9,7 @@ import { CheckboxField, FieldGroup, InputField } from "~/components/ui/Field";
 import * as closing from "~/db/closing.server";
 import { closeAccount } from "~/services/closing.server";
 import { redirectWithMessage } from "~/services/flash.server";
+import { parseForm } from "~/services/parse-form";
 import type { Route } from "./+types/close";
 import { closeSchema } from "./close.schema.ts";
 
@@ -22,7 +23,7 @@ export async function loader(args: Route.LoaderArgs) {
 
 export async function action(args: Route.ActionArgs) {
   const person = await requirePerson(args);
-  const submission = parseWithZod(await args.request.formData(), { schema: closeSchema });
+  const submission = parseForm(await args.request.formData(), { schema: closeSchema });
   if (submission.status !== "success") return data({ lastResult: submission.reply() }, { status: 400 });
   const { notes, userName } = submission.value;
   const wrong = (reply: Parameters<typeof submission.reply>[0], status: number) =>

@@ -1,4 +1,3 @@
-import { parseWithZod } from "@conform-to/zod/v4";
 import { data, redirect } from "react-router";
 import { forgetAsk, keepAsk, readAsk } from "~/auth/email-ask.server";
 import { safePath } from "~/auth/next";
@@ -9,6 +8,7 @@ import type { User } from "~/db/people.server";
 import { env } from "~/env.server";
 import { askForCode, findAsk, makeNewcomer, tryCode } from "~/services/email-sign-in.server";
 import { redirectWithMessage } from "~/services/flash.server";
+import { parseForm } from "~/services/parse-form";
 import type { Route } from "./+types/email";
 import { EmailAskForm } from "./components/EmailAskForm.tsx";
 import { EmailCodeForm } from "./components/EmailCodeForm.tsx";
@@ -33,7 +33,7 @@ export async function loader(args: Route.LoaderArgs) {
 
 export async function action(args: Route.ActionArgs) {
   const { request } = args;
-  const submission = parseWithZod(await request.formData(), { schema: emailSchema });
+  const submission = parseForm(await request.formData(), { schema: emailSchema });
   if (submission.status !== "success") return data({ lastResult: submission.reply() }, { status: 400 });
   const value = submission.value;
   const refuse = (field: string, text: string, status: number) =>

@@ -1,4 +1,3 @@
-import { parseWithZod } from "@conform-to/zod/v4";
 import { data, Link, useRouteLoaderData } from "react-router";
 import { requirePerson } from "~/auth/require.server";
 import { ThemeSwitch } from "~/components/ThemeSwitch";
@@ -6,6 +5,7 @@ import * as people from "~/db/people.server";
 import * as sessions from "~/db/sessions.server";
 import type { loader as rootLoader } from "~/root";
 import { redirectWithMessage } from "~/services/flash.server";
+import { parseForm } from "~/services/parse-form";
 import { changeProfile } from "~/services/people.server";
 import type { Route } from "./+types/settings";
 import { settingsSchema } from "./account.schema.ts";
@@ -41,7 +41,7 @@ export async function loader(args: Route.LoaderArgs) {
 
 export async function action(args: Route.ActionArgs) {
   const person = await requirePerson(args);
-  const submission = parseWithZod(await args.request.formData(), { schema: settingsSchema });
+  const submission = parseForm(await args.request.formData(), { schema: settingsSchema });
   if (submission.status !== "success") return data({ lastResult: submission.reply() }, { status: 400 });
   const value = submission.value;
   switch (value.intent) {

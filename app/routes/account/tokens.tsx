@@ -1,10 +1,10 @@
-import { parseWithZod } from "@conform-to/zod/v4";
 import { data } from "react-router";
 import { requirePerson } from "~/auth/require.server";
 import { Breadcrumbs } from "~/components/ui/Breadcrumbs";
 import * as tokens from "~/db/tokens.server";
 import { env } from "~/env.server";
 import { redirectWithMessage } from "~/services/flash.server";
+import { parseForm } from "~/services/parse-form";
 import { makeToken } from "~/services/tokens.server";
 import type { Route } from "./+types/tokens";
 import { tokensSchema } from "./account.schema.ts";
@@ -30,7 +30,7 @@ export async function loader(args: Route.LoaderArgs) {
 
 export async function action(args: Route.ActionArgs) {
   const person = await requirePerson(args);
-  const submission = parseWithZod(await args.request.formData(), { schema: tokensSchema });
+  const submission = parseForm(await args.request.formData(), { schema: tokensSchema });
   if (submission.status !== "success") {
     return data({ lastResult: submission.reply(), made: null }, { status: 400 });
   }

@@ -1,10 +1,10 @@
-import { parseWithZod } from "@conform-to/zod/v4";
 import { data } from "react-router";
 import { requirePerson } from "~/auth/require.server";
 import { Breadcrumbs } from "~/components/ui/Breadcrumbs";
 import * as people from "~/db/people.server";
 import { redirectWithMessage } from "~/services/flash.server";
 import { beginGithub } from "~/services/github-sign-in.server";
+import { parseForm } from "~/services/parse-form";
 import { chooseAddress, removeWay } from "~/services/people.server";
 import type { Route } from "./+types/ways";
 import { AddWay, WayList } from "./components/WayList.tsx";
@@ -31,7 +31,7 @@ export async function loader(args: Route.LoaderArgs) {
 
 export async function action(args: Route.ActionArgs) {
   const person = await requirePerson(args);
-  const submission = parseWithZod(await args.request.formData(), { schema: waysSchema });
+  const submission = parseForm(await args.request.formData(), { schema: waysSchema });
   if (submission.status !== "success") throw data("No such form. Nothing was changed.", 400);
   const value = submission.value;
   const here = "/settings/sign-in";

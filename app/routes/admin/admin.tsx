@@ -1,4 +1,3 @@
-import { parseWithZod } from "@conform-to/zod/v4";
 import type { ReactNode } from "react";
 import { data, Link } from "react-router";
 import { requirePerson } from "~/auth/require.server";
@@ -10,6 +9,7 @@ import * as projects from "~/db/projects.server";
 import * as reports from "~/db/reports.server";
 import { notFound } from "~/errors";
 import { redirectWithMessage } from "~/services/flash.server";
+import { parseForm } from "~/services/parse-form";
 import { changeAccount } from "~/services/people.server";
 import type { Route } from "./+types/admin";
 import { accountSchema } from "./admin.schema.ts";
@@ -57,7 +57,7 @@ export async function loader(args: Route.LoaderArgs) {
 
 export async function action(args: Route.ActionArgs) {
   await requirePerson(args, "site.administer");
-  const submission = parseWithZod(await args.request.formData(), { schema: accountSchema });
+  const submission = parseForm(await args.request.formData(), { schema: accountSchema });
   if (submission.status !== "success") return data({ problem: NOT_UNDERSTOOD }, { status: 400 });
   const user = await people.findByPublicId(submission.value.user);
   if (!user) throw notFound("account");

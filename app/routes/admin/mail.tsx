@@ -1,10 +1,10 @@
-import { parseWithZod } from "@conform-to/zod/v4";
 import { data, Link } from "react-router";
 import { requirePerson } from "~/auth/require.server";
 import { Breadcrumbs } from "~/components/ui/Breadcrumbs";
 import * as outbox from "~/db/outbox.server";
 import { notFound } from "~/errors";
 import { redirectWithMessage } from "~/services/flash.server";
+import { parseForm } from "~/services/parse-form";
 import type { Route } from "./+types/mail";
 import { mailSchema } from "./admin.schema.ts";
 import { MailList } from "./components/MailList.tsx";
@@ -41,7 +41,7 @@ export async function loader(args: Route.LoaderArgs) {
 
 export async function action(args: Route.ActionArgs) {
   await requirePerson(args, "site.administer");
-  const submission = parseWithZod(await args.request.formData(), { schema: mailSchema });
+  const submission = parseForm(await args.request.formData(), { schema: mailSchema });
   if (submission.status !== "success") throw data("No such form. Nothing was changed.", 400);
   const { mail } = submission.value;
   if (!(await outbox.retry(mail))) throw notFound("mail that waits or failed");

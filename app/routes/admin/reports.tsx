@@ -1,10 +1,10 @@
-import { parseWithZod } from "@conform-to/zod/v4";
 import { data } from "react-router";
 import { requirePerson } from "~/auth/require.server";
 import { Breadcrumbs } from "~/components/ui/Breadcrumbs";
 import * as reports from "~/db/reports.server";
 import { notFound } from "~/errors";
 import { redirectWithMessage } from "~/services/flash.server";
+import { parseForm } from "~/services/parse-form";
 import { closeReport, OUTCOMES } from "~/services/reports.server";
 import type { Route } from "./+types/reports";
 import { reportsSchema } from "./admin.schema.ts";
@@ -35,7 +35,7 @@ export async function loader(args: Route.LoaderArgs) {
 
 export async function action(args: Route.ActionArgs) {
   const person = await requirePerson(args, "site.administer");
-  const submission = parseWithZod(await args.request.formData(), { schema: reportsSchema });
+  const submission = parseForm(await args.request.formData(), { schema: reportsSchema });
   if (submission.status !== "success") throw data("No such form. Nothing was changed.", 400);
   const { report, intent } = submission.value;
   const done = await closeReport(report, intent, person);

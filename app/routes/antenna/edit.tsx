@@ -1,4 +1,3 @@
-import { parseWithZod } from "@conform-to/zod/v4";
 import { data } from "react-router";
 import { requireProject } from "~/auth/require.server";
 import { type Conflict, EditConflict } from "~/components/edit-conflict/EditConflict";
@@ -16,6 +15,7 @@ import { BandsForm } from "~/routes/projects/components/BandsForm";
 import { bandsSchema } from "~/routes/projects/project.schema";
 import { changeAntenna } from "~/services/antennas.server";
 import { redirectWithMessage } from "~/services/flash.server";
+import { parseForm } from "~/services/parse-form";
 import { changeBands } from "~/services/projects.server";
 import type { Route } from "./+types/edit";
 import { antennaSchema } from "./antenna.schema";
@@ -60,7 +60,7 @@ export async function action(args: Route.ActionArgs) {
   const intent = String(form.get("intent"));
   switch (intent) {
     case "bands": {
-      const submission = parseWithZod(form, { schema: bandsSchema });
+      const submission = parseForm(form, { schema: bandsSchema });
       if (submission.status !== "success") return data({ bands: submission.reply() }, { status: 400 });
       await changeBands(project.id, submission.value.bands.map(bandInHertz), person?.id);
       return redirectWithMessage(here, "The design bands were changed.");
@@ -68,7 +68,7 @@ export async function action(args: Route.ActionArgs) {
     case "another":
     case "keep": {
       const unit = lengthUnitOf(person);
-      const submission = parseWithZod(form, { schema: antennaSchema(unit) });
+      const submission = parseForm(form, { schema: antennaSchema(unit) });
       const sent = sentTexts(submission.payload);
       if (intent === "another") return data({ sent, errors: {}, more: true });
       if (submission.status !== "success") {

@@ -9,10 +9,12 @@ export const intentSchema = z.enum(INTENTS);
 
 /** Fields as `row-3-title`; a row counts where its name was sent. Undefined for what is no such form. */
 export function parseChanges(form: FormData): RowChange[] | undefined {
-  const names = [...form.keys()].flatMap((key) => /^row-(\d{1,4})-name$/.exec(key)?.[1] ?? []);
-  const changes = names.map((index): RowChange | null => {
+  // Looked up once: asking the form for each field goes through all of it each time.
+  const fields = new Map([...form].reverse());
+  const names = new Set([...fields.keys()].flatMap((key) => /^row-(\d{1,4})-name$/.exec(key)?.[1] ?? []));
+  const changes = [...names].reverse().map((index): RowChange | null => {
     const text = (field: string) => {
-      const value = form.get(`row-${index}-${field}`);
+      const value = fields.get(`row-${index}-${field}`);
       return typeof value === "string" ? value.trim().slice(0, LONGEST) : undefined;
     };
     const said = FIELDS.flatMap((field) => (text(field) === undefined ? [] : [[field, text(field)]]));
@@ -20,7 +22,7 @@ export function parseChanges(form: FormData): RowChange[] | undefined {
     if (file && !/^\d{1,4}$/.test(file)) return null;
     return {
       row: Number(index),
-      name: String(form.get(`row-${index}-name`)),
+      name: String(fields.get(`row-${index}-name`)),
       wanted: Object.fromEntries(said),
       ...(file && { file: Number(file) }),
       leftOut: text("leftOut") === "yes",

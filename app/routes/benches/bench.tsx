@@ -1,4 +1,3 @@
-import { parseWithZod } from "@conform-to/zod/v4";
 import { data } from "react-router";
 import { requireProject } from "~/auth/require.server";
 import { ThreadSection } from "~/components/notes/ThreadSection";
@@ -9,6 +8,7 @@ import { brokenForm, refused } from "~/errors";
 import { takenWords, takeReferences } from "~/services/bench-references.server";
 import { deleteBench, setRetired } from "~/services/benches.server";
 import { redirectWithMessage } from "~/services/flash.server";
+import { parseForm } from "~/services/parse-form";
 import type { Route } from "./+types/bench";
 import { readBenchForm } from "./bench-form.server";
 import { loadBenchPage } from "./bench-page.server";
@@ -36,7 +36,7 @@ export async function action(args: Route.ActionArgs) {
   if (!person) throw refused("Sign in first. Nothing was changed.");
   const { bench } = await requireOwnBench(access, args.params.bench);
   const { fields, files, fault } = await readBenchForm(args.request);
-  const submission = parseWithZod(fields, { schema: benchActionSchema });
+  const submission = parseForm(fields, { schema: benchActionSchema });
   if (submission.status !== "success") throw brokenForm();
   const value = submission.value;
   const list = `/projects/${project.publicId}/benches`;

@@ -1,5 +1,4 @@
 import type { SubmissionResult } from "@conform-to/react";
-import { parseWithZod } from "@conform-to/zod/v4";
 import { data, Form, useNavigation } from "react-router";
 import { requireProject } from "~/auth/require.server";
 import { type Conflict, EditConflict } from "~/components/edit-conflict/EditConflict";
@@ -11,6 +10,7 @@ import { refused } from "~/errors";
 import { benchValuesOf, changeBench, correctVersion } from "~/services/benches.server";
 import { redirectWithMessage } from "~/services/flash.server";
 import { parseWas } from "~/services/merge-edit";
+import { parseForm } from "~/services/parse-form";
 import type { Route } from "./+types/edit";
 import { editBenchSchema } from "./benches.schema";
 import { BenchFields } from "./components/BenchFields";
@@ -46,7 +46,7 @@ export async function action(args: Route.ActionArgs) {
   const { project, person } = access;
   if (!person) throw refused("Sign in first. Nothing was changed.");
   const { bench } = await requireOwnBench(access, args.params.bench);
-  const submission = parseWithZod(await args.request.formData(), { schema: editBenchSchema });
+  const submission = parseForm(await args.request.formData(), { schema: editBenchSchema });
   if (submission.status !== "success") return answer(submission.reply(), 400);
   const value = submission.value;
   const page = `/projects/${project.publicId}/benches/${bench.publicId}`;

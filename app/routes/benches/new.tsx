@@ -1,4 +1,3 @@
-import { parseWithZod } from "@conform-to/zod/v4";
 import { data, Form, useNavigation } from "react-router";
 import { requireProject } from "~/auth/require.server";
 import { Breadcrumbs } from "~/components/ui/Breadcrumbs";
@@ -7,6 +6,7 @@ import { refused } from "~/errors";
 import { takenWords, takeReferences } from "~/services/bench-references.server";
 import { createBench } from "~/services/benches.server";
 import { redirectWithMessage } from "~/services/flash.server";
+import { parseForm } from "~/services/parse-form";
 import type { Route } from "./+types/new";
 import { readBenchForm } from "./bench-form.server";
 import { newBenchSchema } from "./benches.schema";
@@ -28,7 +28,7 @@ export async function action(args: Route.ActionArgs) {
   const { project, person } = await requireProject(args, "bench.edit");
   if (!person) throw refused("Sign in first. Nothing was stored.");
   const { fields, files, fault } = await readBenchForm(args.request);
-  const submission = parseWithZod(fields, { schema: newBenchSchema });
+  const submission = parseForm(fields, { schema: newBenchSchema });
   if (submission.status !== "success" || fault) {
     return data(
       { lastResult: submission.reply(), fault: fault ?? (files.length > 0 ? CHOOSE_AGAIN : null) },

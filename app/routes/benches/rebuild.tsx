@@ -1,4 +1,3 @@
-import { parseWithZod } from "@conform-to/zod/v4";
 import { data, Form, useNavigation } from "react-router";
 import { requireProject } from "~/auth/require.server";
 import { Breadcrumbs } from "~/components/ui/Breadcrumbs";
@@ -8,6 +7,7 @@ import { refused } from "~/errors";
 import { takenWords, takeReferences } from "~/services/bench-references.server";
 import { rebuildBench } from "~/services/benches.server";
 import { redirectWithMessage } from "~/services/flash.server";
+import { parseForm } from "~/services/parse-form";
 import type { Route } from "./+types/rebuild";
 import { readBenchForm } from "./bench-form.server";
 import { rebuildSchema } from "./benches.schema";
@@ -40,7 +40,7 @@ export async function action(args: Route.ActionArgs) {
   if (!person) throw refused("Sign in first. Nothing was stored.");
   const { bench } = await requireOwnBench(access, args.params.bench);
   const { fields, files, fault } = await readBenchForm(args.request);
-  const submission = parseWithZod(fields, { schema: rebuildSchema });
+  const submission = parseForm(fields, { schema: rebuildSchema });
   if (submission.status !== "success" || fault) {
     return data({ lastResult: submission.reply(), fault }, { status: 400 });
   }

@@ -1,4 +1,3 @@
-import { parseWithZod } from "@conform-to/zod/v4";
 import { data, redirect } from "react-router";
 import { safePath } from "~/auth/next";
 import { type Person, requireProject } from "~/auth/require.server";
@@ -11,6 +10,7 @@ import { notFound, refused } from "~/errors";
 import { lengthUnitOf } from "~/routes/antenna/sizes";
 import { judgeDip } from "~/services/causes.server";
 import { redirectWithMessage } from "~/services/flash.server";
+import { parseForm } from "~/services/parse-form";
 import { chosenEvidence, evidenceFor } from "~/services/verdict-evidence.server";
 import { changeVerdict, type VerdictChange, type VerdictIntent } from "~/services/verdicts.server";
 import type { Route } from "./+types/verdict";
@@ -21,7 +21,7 @@ export async function action(args: Route.ActionArgs) {
   if (!person) throw refused("Sign in first. Nothing was changed.");
   const found = await dips.findByPublicId(args.params.dip);
   if (!found || found.dip.projectId !== project.id) throw notFound("dip");
-  const submission = parseWithZod(await args.request.formData(), { schema: verdictSchema });
+  const submission = parseForm(await args.request.formData(), { schema: verdictSchema });
   if (submission.payload.intent !== "propose" && !may("verdict.settle")) {
     throw refused("Settling and reopening is for experimenters and owners. Nothing was changed.");
   }

@@ -1,4 +1,3 @@
-import { parseWithZod } from "@conform-to/zod/v4";
 import { data, redirect } from "react-router";
 import { requireProject } from "~/auth/require.server";
 import { changeNoteSchema } from "~/components/notes/notes.schema";
@@ -7,6 +6,7 @@ import { sendOrSayWhy } from "~/components/notes/unsent";
 import { notFound, refused } from "~/errors";
 import { redirectWithMessage } from "~/services/flash.server";
 import { editNote, type NoteChange, removeNote, restoreNote } from "~/services/note-changes.server";
+import { parseForm } from "~/services/parse-form";
 import type { Route } from "./+types/note";
 import { backTo, isFromScript, pathOf } from "./place.server.ts";
 import { findNote } from "./require-note.server.ts";
@@ -22,7 +22,7 @@ export async function action(args: Route.ActionArgs) {
   const { project, person, may } = await requireProject(args, "note.write");
   if (!person) throw refused("Sign in first. Nothing was changed.");
   const found = await findNote(project.id, args.params.note);
-  const submission = parseWithZod(await args.request.formData(), { schema: changeNoteSchema });
+  const submission = parseForm(await args.request.formData(), { schema: changeNoteSchema });
   const stays = isFromScript(args.request);
   const page = pathOf(project, placeOf(found));
   const who = { project, notePublicId: found.note.publicId, by: person };

@@ -1,4 +1,3 @@
-import { parseWithZod } from "@conform-to/zod/v4";
 import { data } from "react-router";
 import { requireProject } from "~/auth/require.server";
 import { writeNoteSchema } from "~/components/notes/notes.schema";
@@ -7,6 +6,7 @@ import { refused } from "~/errors";
 import { redirectWithMessage } from "~/services/flash.server";
 import { listThread } from "~/services/note-thread.server";
 import { NoteProblem, writeNote } from "~/services/notes.server";
+import { parseForm } from "~/services/parse-form";
 import type { Route } from "./+types/notes";
 import { takeGivenFiles } from "./given-files.server.ts";
 import { requirePart } from "./part.server.ts";
@@ -24,7 +24,7 @@ export async function action(args: Route.ActionArgs) {
   const { project, person } = access;
   if (!person) throw refused("Sign in first. Nothing was stored.");
   const form = await args.request.formData();
-  const submission = parseWithZod(form, { schema: writeNoteSchema });
+  const submission = parseForm(form, { schema: writeNoteSchema });
   const stays = isFromScript(args.request);
   if (submission.status !== "success") {
     if (stays) return data({ lastResult: submission.reply() }, { status: 400 });

@@ -1,8 +1,8 @@
-import { parseWithZod } from "@conform-to/zod/v4";
 import { requireProject } from "~/auth/require.server";
 import { brokenForm, refused } from "~/errors";
 import { redirectWithMessage } from "~/services/flash.server";
 import { log } from "~/services/log.server";
+import { parseForm } from "~/services/parse-form";
 import { addPhotograph, changeCaption, deletePhotograph } from "~/services/photographs.server";
 import type { Route } from "./+types/photographs";
 import { photographsSchema } from "./photographs.schema";
@@ -16,7 +16,7 @@ export async function action(args: Route.ActionArgs) {
   const form = await args.request.formData().catch(() => {
     throw brokenForm();
   });
-  const submission = parseWithZod(form, { schema: photographsSchema });
+  const submission = parseForm(form, { schema: photographsSchema });
   if (submission.status !== "success") throw brokenForm();
   const value = submission.value;
   switch (value.intent) {

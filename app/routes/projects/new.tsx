@@ -5,6 +5,7 @@ import { requirePerson } from "~/auth/require.server";
 import { Breadcrumbs } from "~/components/ui/Breadcrumbs";
 import { Button } from "~/components/ui/Button";
 import { redirectWithMessage } from "~/services/flash.server";
+import { parseForm } from "~/services/parse-form";
 import { createProject } from "~/services/projects.server";
 import type { Route } from "./+types/new";
 import { AboutFields } from "./components/AboutFields.tsx";
@@ -19,7 +20,7 @@ export async function loader(args: Route.LoaderArgs) {
 
 export async function action(args: Route.ActionArgs) {
   const person = await requirePerson(args, "project.create");
-  const submission = parseWithZod(await args.request.formData(), { schema: newProjectSchema });
+  const submission = parseForm(await args.request.formData(), { schema: newProjectSchema });
   if (submission.status !== "success") return data({ lastResult: submission.reply() }, { status: 400 });
   const { publicId } = await createProject(submission.value, person.id);
   return redirectWithMessage(`/projects/${publicId}`, "The project was made. Its first sweep is next.");

@@ -1,5 +1,4 @@
 import type { SubmissionResult } from "@conform-to/react";
-import { parseWithZod } from "@conform-to/zod/v4";
 import { data, Link } from "react-router";
 import { requireProject } from "~/auth/require.server";
 import type { Conflict } from "~/components/edit-conflict/EditConflict";
@@ -8,6 +7,7 @@ import * as webmentions from "~/db/webmentions.server";
 import { refused } from "~/errors";
 import { redirectWithMessage } from "~/services/flash.server";
 import { parseWas } from "~/services/merge-edit";
+import { parseForm } from "~/services/parse-form";
 import {
   type AboutValues,
   changeAbout,
@@ -45,7 +45,7 @@ export async function loader(args: Route.LoaderArgs) {
 
 export async function action(args: Route.ActionArgs) {
   const { project, may, person } = await requireProject(args, "project.edit");
-  const submission = parseWithZod(await args.request.formData(), { schema: projectSettingsSchema });
+  const submission = parseForm(await args.request.formData(), { schema: projectSettingsSchema });
   if (submission.status !== "success") return answer(submission.reply(), 400);
   const value = submission.value;
   const here = `/projects/${project.publicId}/settings`;

@@ -1,4 +1,3 @@
-import { parseWithZod } from "@conform-to/zod/v4";
 import { data } from "react-router";
 import type { ProjectAccess } from "~/auth/require.server";
 import type * as steps from "~/db/steps.server";
@@ -6,6 +5,7 @@ import { lengthUnitOf } from "~/routes/antenna/sizes";
 import { antennaAt } from "~/services/antennas.server";
 import { redirectWithMessage } from "~/services/flash.server";
 import { parseWas } from "~/services/merge-edit";
+import { parseForm } from "~/services/parse-form";
 import { expectedAfter } from "~/services/step-expectations.server";
 import { changeStep, makeStep, type StepWas } from "~/services/steps.server";
 import { stepConflict } from "./step-conflict";
@@ -16,7 +16,7 @@ import { stepSchema } from "./steps.schema";
 export async function keepStep(access: ProjectAccess, form: FormData, step: steps.StepRow | null) {
   const { project, person } = access;
   const unit = lengthUnitOf(person);
-  const submission = parseWithZod(form, { schema: stepSchema(unit) });
+  const submission = parseForm(form, { schema: stepSchema(unit) });
   const sent = sentStep(submission.payload);
   if (form.get("intent") === "another") return data({ sent, errors: {}, more: true });
   if (submission.status !== "success") {

@@ -1,4 +1,3 @@
-import { parseWithZod } from "@conform-to/zod/v4";
 import { data, Form } from "react-router";
 import { requireProject } from "~/auth/require.server";
 import { EditConflict } from "~/components/edit-conflict/EditConflict";
@@ -12,6 +11,7 @@ import * as writeUps from "~/db/write-ups.server";
 import { notFound } from "~/errors";
 import { redirectWithMessage } from "~/services/flash.server";
 import { parseWas } from "~/services/merge-edit";
+import { parseForm } from "~/services/parse-form";
 import { findChoices } from "~/services/write-ups/choices.server";
 import { changeDraft, type DraftText, deleteDraft } from "~/services/write-ups/drafts.server";
 import { drawDraft } from "~/services/write-ups/preview.server";
@@ -45,7 +45,7 @@ export async function loader(args: Route.LoaderArgs) {
 export async function action(args: Route.ActionArgs) {
   const access = await requireProject(args, "write-up.edit");
   const { writeUp } = await requireWriteUp(access, args.params.writeUp);
-  const submission = parseWithZod(await args.request.formData(), { schema: editSchema });
+  const submission = parseForm(await args.request.formData(), { schema: editSchema });
   if (submission.status !== "success") return data({ lastResult: submission.reply() }, 400);
   const value = submission.value;
   const base = `/projects/${access.project.publicId}/write-ups`;

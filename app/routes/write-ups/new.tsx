@@ -5,6 +5,7 @@ import { requireProject } from "~/auth/require.server";
 import { Breadcrumbs } from "~/components/ui/Breadcrumbs";
 import { Button } from "~/components/ui/Button";
 import { InputField } from "~/components/ui/Field";
+import { parseForm } from "~/services/parse-form";
 import { makeDraft } from "~/services/write-ups/drafts.server";
 import type { Route } from "./+types/new";
 import { newSchema } from "./write-ups.schema.ts";
@@ -18,7 +19,7 @@ export async function loader(args: Route.LoaderArgs) {
 
 export async function action(args: Route.ActionArgs) {
   const { project, person } = await requireProject(args, "write-up.edit");
-  const submission = parseWithZod(await args.request.formData(), { schema: newSchema });
+  const submission = parseForm(await args.request.formData(), { schema: newSchema });
   if (submission.status !== "success") return data({ lastResult: submission.reply() }, 400);
   const publicId = await makeDraft(project, person, { title: submission.value.title, body: "" });
   return redirect(`/projects/${project.publicId}/write-ups/${publicId}/edit`);

@@ -1,4 +1,3 @@
-import { parseWithZod } from "@conform-to/zod/v4";
 import { data, Form, useNavigation } from "react-router";
 import { requireProject } from "~/auth/require.server";
 import { Breadcrumbs } from "~/components/ui/Breadcrumbs";
@@ -8,6 +7,7 @@ import * as writeUps from "~/db/write-ups.server";
 import { env } from "~/env.server";
 import { notFound } from "~/errors";
 import { redirectWithMessage } from "~/services/flash.server";
+import { parseForm } from "~/services/parse-form";
 import { licenceOf } from "~/services/plates/licences";
 import { drawDraft } from "~/services/write-ups/preview.server";
 import { type Published, publish, revisionOf, takeBack } from "~/services/write-ups/publish.server";
@@ -45,7 +45,7 @@ export async function action(args: Route.ActionArgs) {
   const access = await requireProject(args, "write-up.edit");
   const { project, person } = access;
   const { writeUp } = await requireWriteUp(access, args.params.writeUp);
-  const submission = parseWithZod(await args.request.formData(), { schema: publishSchema });
+  const submission = parseForm(await args.request.formData(), { schema: publishSchema });
   if (submission.status !== "success") return data({ problem: "That form was not understood." }, 400);
   const value = submission.value;
   const page = `/write-ups/${writeUp.publicId}`;
