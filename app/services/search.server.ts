@@ -1,5 +1,6 @@
 import * as search from "~/db/search.server";
 import * as searchDips from "~/db/search-dips.server";
+import * as published from "~/db/search-published.server";
 import { formatFrequency, formatSwr } from "~/measurement/units";
 import { plainText } from "./markdown.server.ts";
 import { MAX_NOTE_CHARACTERS } from "./note-limits.ts";
@@ -110,7 +111,7 @@ const FINDERS: Record<ResultKind, (about: search.Search, range: DipRange | null)
       at,
     })),
   plates: async (about) =>
-    shape(await search.findPlates(about), (plate) => ({
+    shape(await published.findPlates(about), (plate) => ({
       to: `/plates/${plate.publicId}`,
       title: plateWords(plate),
       place: plate.project.title,
@@ -118,7 +119,7 @@ const FINDERS: Record<ResultKind, (about: search.Search, range: DipRange | null)
       at: plate.at,
     })),
   "write-ups": async (about) =>
-    shape(await search.findWriteUps(about), ({ publicId, project, title, body, at }) => ({
+    shape(await published.findWriteUps(about), ({ publicId, project, title, body, at }) => ({
       to: `/write-ups/${publicId}`,
       title,
       place: project.title,

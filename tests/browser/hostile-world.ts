@@ -8,7 +8,8 @@ import { record } from "~/services/events.server";
 import { makeDraft } from "~/services/write-ups/drafts.server";
 import { publish, revisionOf } from "~/services/write-ups/publish.server";
 import { EVASIONS, MARKDOWN_EVASIONS } from "../fixtures/hostile/evasions.ts";
-import { makeCrew, makePlace, openReport, type Place, type Someone, unique } from "../web/world.ts";
+import { openReport } from "../web/in-a-place.ts";
+import { makeCrew, makePlace, type Place, type Someone, unique } from "../web/world.ts";
 
 /** A project in which every text tries to run something. */
 export interface HostilePlace extends Place {

@@ -1,7 +1,8 @@
 import { beforeAll, describe, expect, it } from "vitest";
 import { askForBundle } from "~/services/bundle/runs.server";
 import { askApi, SERVER } from "./browser.ts";
-import { type Crew, freezePlate, makeCrew, makePlace, type Place, tokenOf, waitingMention } from "./world.ts";
+import { freezePlate, waitingMention } from "./in-a-place.ts";
+import { type Crew, makeCrew, makePlace, type Place, tokenOf } from "./world.ts";
 
 /** Walks the OpenAPI document: what it says of every GET is held against what the server answers. */
 

@@ -1,7 +1,8 @@
 import { beforeAll, describe, expect, it } from "vitest";
 import { askApi } from "./browser.ts";
+import { freezePlate, waitingMention } from "./in-a-place.ts";
 import { problemOf } from "./problem.ts";
-import { type Crew, freezePlate, makeCrew, makePlace, type Place, tokenOf, waitingMention } from "./world.ts";
+import { type Crew, makeCrew, makePlace, type Place, tokenOf } from "./world.ts";
 
 /** By script what the pages of plates, write-ups, mentions and the table of dips offer. */
 

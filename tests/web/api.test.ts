@@ -6,17 +6,9 @@ import { promisify } from "node:util";
 import { beforeAll, describe, expect, it } from "vitest";
 import * as shapes from "~/routes/api/schemas";
 import { askApi } from "./browser.ts";
+import { addBareSweeps } from "./in-a-place.ts";
 import { problemOf } from "./problem.ts";
-import {
-  addBareSweeps,
-  type Crew,
-  makeCrew,
-  makePlace,
-  type Place,
-  sendSweep,
-  tokenOf,
-  touchstone,
-} from "./world.ts";
+import { type Crew, makeCrew, makePlace, type Place, sendSweep, tokenOf, touchstone } from "./world.ts";
 
 /** The API as its own OpenAPI document says. */
 

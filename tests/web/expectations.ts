@@ -1,18 +1,8 @@
 import type { ProjectAction, SiteAction } from "~/auth/permissions";
 import { newPublicId } from "~/db/ids.server";
 import { SERVER } from "./browser.ts";
-import {
-  type Crew,
-  onePixel,
-  openReport,
-  type Place,
-  rewriteDraft,
-  type Someone,
-  touchstone,
-  unique,
-  waitingMail,
-  waitingMention,
-} from "./world.ts";
+import { openReport, rewriteDraft, waitingMail, waitingMention } from "./in-a-place.ts";
+import { type Crew, onePixel, type Place, type Someone, touchstone, unique } from "./world.ts";
 
 /** What each route asks for, and the smallest form that it takes. One line a case; the walk does the rest. */
 

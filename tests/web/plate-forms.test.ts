@@ -2,7 +2,8 @@ import { beforeAll, describe, expect, it } from "vitest";
 import * as plates from "~/db/plates.server";
 import { withdraw } from "~/services/plates/withdraw.server";
 import { SERVER } from "./browser.ts";
-import { type Crew, freezePlate, makeCrew, makePlace } from "./world.ts";
+import { freezePlate } from "./in-a-place.ts";
+import { type Crew, makeCrew, makePlace } from "./world.ts";
 
 /** The forms of a plate of a private project, asked for by nobody in particular. */
 

@@ -11,11 +11,10 @@ import {
 import { askForBundle } from "~/services/bundle/runs.server";
 import { askApi, Browser } from "./browser.ts";
 import { type Ask, type Case, EXPECTATIONS } from "./expectations.ts";
+import { copyPlate, freezePlate, waitingMention } from "./in-a-place.ts";
 import { flattenSiteMap, layoutFiles, type SiteRoute } from "./site-map.ts";
 import {
   type Crew,
-  copyPlate,
-  freezePlate,
   makeCrew,
   makePerson,
   makePlace,
@@ -23,7 +22,6 @@ import {
   type Someone,
   signIn,
   tokenOf,
-  waitingMention,
 } from "./world.ts";
 
 /** Every route of the site map × every role, over HTTP, against the one table of permissions. */

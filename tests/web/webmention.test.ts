@@ -1,6 +1,7 @@
 import { beforeAll, describe, expect, it } from "vitest";
 import { Browser, SERVER } from "./browser.ts";
-import { type Crew, makeCrew, makePlace, type Place, signIn, waitingMention } from "./world.ts";
+import { waitingMention } from "./in-a-place.ts";
+import { type Crew, makeCrew, makePlace, type Place, signIn } from "./world.ts";
 
 /** W3C Webmention over HTTP, as other sites meet it, and what an owner does with what came. */
 

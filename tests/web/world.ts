@@ -1,18 +1,9 @@
-import { createHash } from "node:crypto";
 import type { ProjectRole, Visibility } from "~/auth/permissions";
 import { startSession } from "~/auth/session.server";
-import { db, inTransaction } from "~/db/client.server";
-import * as files from "~/db/files.server";
 import { newPublicId } from "~/db/ids.server";
-import * as notes from "~/db/notes.server";
-import * as outbox from "~/db/outbox.server";
 import * as people from "~/db/people.server";
-import * as plates from "~/db/plates.server";
 import * as projects from "~/db/projects.server";
-import * as reports from "~/db/reports.server";
-import * as sweeps from "~/db/sweeps.server";
 import * as trails from "~/db/trails.server";
-import * as webmentions from "~/db/webmentions.server";
 import * as writeUps from "~/db/write-ups.server";
 import { IDEAL_STANDARDS, NOTHING_GIVEN } from "~/measurement/bench";
 import { addAttachment } from "~/services/attachments.server";
@@ -21,8 +12,6 @@ import { createBench } from "~/services/benches.server";
 import { invite } from "~/services/invitations.server";
 import { writeNote } from "~/services/notes.server";
 import { addPhotograph } from "~/services/photographs.server";
-import { propose } from "~/services/plates/compose.server";
-import { freeze } from "~/services/plates/freeze.server";
 import { createProject } from "~/services/projects.server";
 import { makeStep } from "~/services/steps.server";
 import { makeToken } from "~/services/tokens.server";
@@ -171,28 +160,6 @@ export async function makePlace(crew: Crew, visibility: Visibility, empty = fals
   };
 }
 
-/** A plate of the place's sweep; its public id. */
-export async function freezePlate(place: Place, by: Someone): Promise<string> {
-  const found = await projects.findWithRole(place.project, by.id);
-  const subject = { kind: "sweep" as const, ids: [place.sweep] };
-  const choices = found && (await propose(found.project, subject));
-  if (!choices || "problem" in choices) throw new Error("There is nothing to be frozen.");
-  const maker = { id: by.id, name: by.userName };
-  const made = await freeze({ project: found.project, subject, choices, by: maker });
-  if ("problem" in made) throw new Error(made.problem);
-  return made.publicId;
-}
-
-/** Another plate that says the same, without its forms: made at once. */
-export async function copyPlate(publicId: string): Promise<string> {
-  const row = await plates.findByPublicId(publicId);
-  if (!row?.projectId) throw new Error("There is no such plate.");
-  const { id: _, ...values } = row;
-  const copy = { ...values, publicId: newPublicId(), number: await plates.nextNumber(row.projectId, db) };
-  await plates.insert(copy, [], [], db);
-  return copy.publicId;
-}
-
 /** A published write-up without figures; its public id. */
 async function publishWriteUp(project: string, by: Someone): Promise<string> {
   const found = await projects.findWithRole(project, by.id);
@@ -278,58 +245,6 @@ export function sendSweep(
   return askApi(`/projects/${project}/sweeps`, token, { method: "POST", body: form });
 }
 
-/** An open report on the place's note; its public id. */
-export async function openReport(place: Place, by: Someone): Promise<string> {
-  const found = await notes.findByPublicId(place.note);
-  const noteId = found?.note.id ?? 0;
-  await reports.insert({ noteId, reason: "A walk.", reportedBy: by.id });
-  const open = await reports.findAll("open", 1000);
-  return open.findLast(({ note }) => note.id === noteId)?.report.publicId ?? "";
-}
-
-/** A mail that waits for longer than any test; its public id. */
-export async function waitingMail(): Promise<string> {
-  const toAddress = `${unique("mail")}@fennmarsh.example`;
-  const messageId = `<${toAddress}>`;
-  const mail = { messageId, onceKey: null, toAddress, userId: null, subject: "A walk", text: "", html: "" };
-  await inTransaction(async (tx) => {
-    await outbox.insert({ ...mail, headers: {} }, tx);
-    const row = await outbox.findByMessageId(messageId, tx);
-    await outbox.putOff(row?.id ?? 0, new Date(Date.now() + 3.6e6), "put off by a test", tx);
-  });
-  return (await outbox.findByMessageId(messageId))?.publicId ?? "";
-}
-
-/** A page elsewhere that links to the place's write-up and waits for an owner's word; its public id. */
-export function waitingMention(place: Place): Promise<string> {
-  return inTransaction(async (tx) => {
-    const found = await writeUps.findByPublicId(place.writeUp, tx);
-    const source = `https://notes.example/${unique("page")}`;
-    const of = { plateId: null, writeUpId: found?.writeUp.id ?? 0 };
-    const target = `${SERVER}/write-ups/${place.writeUp}`;
-    const publicId = await webmentions.receive({ source, target, ...of }, tx);
-    const row = await webmentions.findByPublicId(publicId, tx);
-    await webmentions.update(row?.mention.id ?? 0, { state: "verified", title: "Reeds and radials" }, tx);
-    return publicId;
-  });
-}
-
-/** Sweeps that were never read, many of them of one moment: for lists. */
-export function addBareSweeps(projectId: number, howMany: number): Promise<void> {
-  const moment = new Date("2026-09-14T17:20:00Z");
-  return inTransaction(async (tx) => {
-    for (let i = 0; i < howMany; i++) {
-      const name = unique("bare");
-      const sha256 = createHash("sha256").update(name).digest("hex");
-      const fileId = await files.insert(
-        { projectId, name, sizeBytes: 1, sha256, storageKey: `none/${name}`, uploadedBy: null },
-        tx,
-      );
-      await sweeps.insert({ projectId, fileId, title: name, takenAt: moment, createdBy: null }, tx);
-    }
-  });
-}
-
 /** A series resonator of 60 Ω at 7.1 MHz against 50 Ω, 201 points, as a Touchstone file; no two alike. */
 export function touchstone(): string {
   count += 1;
@@ -347,16 +262,6 @@ export function touchstone(): string {
 function divide([a, b]: [number, number], [c, d]: [number, number]): [number, number] {
   const n = c * c + d * d;
   return [(a * c + b * d) / n, (b * c - a * d) / n];
-}
-
-/** Writes in the place's write-up; what the draft is told apart by then. */
-export async function rewriteDraft(place: Place): Promise<string> {
-  const found = await writeUps.findByPublicId(place.writeUp);
-  if (!found) return "";
-  const { title } = found.writeUp;
-  const body = unique("Written anew");
-  await writeUps.update(found.writeUp.id, { body });
-  return revisionOf({ title, body });
 }
 
 const ONE_PIXEL =
