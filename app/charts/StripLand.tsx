@@ -1,3 +1,4 @@
+import { memo } from "react";
 import { PAGE_PALETTE } from "./palette";
 import { across } from "./place";
 import type { PlacedStrip } from "./placed-strip";
@@ -8,7 +9,7 @@ const PEN_PX = 1;
 const palette = PAGE_PALETTE;
 
 /** One sweep as a thin profile of land. */
-export function StripLand({ placed }: { placed: PlacedStrip }) {
+export const StripLand = memo(function StripLand({ placed }: { placed: PlacedStrip }) {
   const { landY, footY, path, dips } = placed;
   const heightPx = footY - landY;
   return (
@@ -32,4 +33,4 @@ export function StripLand({ placed }: { placed: PlacedStrip }) {
       ))}
     </g>
   );
-}
+});

@@ -30,7 +30,8 @@ const palette = PAGE_PALETTE;
 
 /** The project's story at a glance: what moved, what did not, what appeared. */
 export function StripMap(props: StripMapProps) {
-  const { scene, label, activeTrail = null, onActive, trailHref, dipHref, children } = props;
+  const { scene, label, activeTrail = null, onActive, children } = props;
+  const { stripHref, stepHref, trailHref, dipHref } = props;
   const heightPx = TOP_PX + scene.heightPx + CHART_FOOT_PX;
   const print = { "--print-zoom": Math.min(1, SHEET_PX / heightPx).toFixed(3) } as CSSProperties;
   return (
@@ -84,7 +85,7 @@ export function StripMap(props: StripMapProps) {
               </g>
             </svg>
           )}
-          <StripWords topPx={TOP_PX} {...props} />
+          <StripWords topPx={TOP_PX} {...{ scene, stripHref, stepHref }} />
         </div>
       </div>
     </div>

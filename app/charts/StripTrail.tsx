@@ -1,6 +1,6 @@
-import type { FocusEvent, KeyboardEvent } from "react";
+import { type FocusEvent, type KeyboardEvent, memo } from "react";
 import { PAGE_PALETTE } from "./palette";
-import { At, across, Stretched } from "./place";
+import { At, across, round, Stretched } from "./place";
 import type { PlacedTrail } from "./placed-trail";
 import { TRAIL_UNITS } from "./strip-trails";
 
@@ -18,13 +18,16 @@ const palette = PAGE_PALETTE;
 
 /**
  * One dip followed from strip to strip. The line is a link to the trail; each stop is one to its dip, reached from the
- * line with the arrow keys: a hundred sweeps are not a thousand presses of Tab.
+ * line with the arrow keys: a hundred sweeps are not a thousand presses of Tab. All dots are one path, and a trail is drawn
+ * again only when something of its own changes: there are a thousand stops.
  */
-export function StripTrail({ placed, heightPx, active, onActive, trailHref, dipHref }: StripTrailProps) {
+export const StripTrail = memo(function StripTrail(props: StripTrailProps) {
+  const { placed, heightPx, active, onActive, trailHref, dipHref } = props;
   const { id, stops, tone, label, detail } = placed;
   const newest = stops[0];
   if (!newest) return null;
   const colour = palette[tone];
+  const dots = stops.map(({ fraction, y }) => `M${round(fraction * TRAIL_UNITS, 1)} ${y}h.1`).join("");
   const words = [`Trail ${label}`, detail, countOf(stops.length)].filter(Boolean).join(", ");
   const leave = (event: FocusEvent) => {
     if (!event.currentTarget.contains(event.relatedTarget)) onActive?.(null);
@@ -50,6 +53,8 @@ export function StripTrail({ placed, heightPx, active, onActive, trailHref, dipH
           {placed.way && <path d={placed.way} className="trail-line" stroke={colour} />}
           {placed.gaps && <path d={placed.gaps} className="trail-line trail-gap" stroke={colour} />}
           {placed.ahead && <path d={placed.ahead} className="trail-line trail-gap" stroke={colour} />}
+          <path d={dots} className="trail-dots" />
+          <path d={dots} className="trail-dots trail-dots-inside" />
         </Stretched>
       </a>
       {stops.map((stop) => (
@@ -60,8 +65,7 @@ export function StripTrail({ placed, heightPx, active, onActive, trailHref, dipH
           tabIndex={-1}
           aria-label={stop.words}
         >
-          <circle cx={across(stop.fraction, null)} cy={stop.y} r="10" className="trail-hit" />
-          <circle cx={across(stop.fraction, null)} cy={stop.y} r="4" className="trail-dot" />
+          <circle cx={across(stop.fraction, null)} cy={stop.y} r="10" />
         </a>
       ))}
       {active ? (
@@ -71,7 +75,7 @@ export function StripTrail({ placed, heightPx, active, onActive, trailHref, dipH
       )}
     </g>
   );
-}
+});
 
 function TrailLabel({ placed, colour }: { placed: PlacedTrail; colour: string }) {
   const { name, label, detail, stops } = placed;

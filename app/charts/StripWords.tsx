@@ -1,3 +1,4 @@
+import { memo } from "react";
 import type { StripScene } from "./strip-scene";
 
 export interface StripHrefs {
@@ -6,7 +7,7 @@ export interface StripHrefs {
 }
 
 /** The captions in the ground of each strip and the steps written between them, newest first, as one list to read. */
-export function StripWords({
+export const StripWords = memo(function StripWords({
   scene,
   topPx,
   stripHref,
@@ -40,7 +41,7 @@ export function StripWords({
       )}
     </ol>
   );
-}
+});
 
 /** Height of a caption's line over the strip's foot. */
 const CAPTION_PX = 20;

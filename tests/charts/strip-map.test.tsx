@@ -223,6 +223,18 @@ describe("StripMap", () => {
     expect(markup.match(/class="trail-stop" tabindex="-1"/g)).toHaveLength(4);
   });
 
+  it("draws the dots of a trail as one path, each where its link is pressed", () => {
+    const markup = draw({ trails: [trail("a", "7.2 MHz")] });
+    const [, path] = markup.match(/d="([^"]*)" class="trail-dots"/) ?? [];
+    const dots = [...path.matchAll(/M([\d.]+) (\d+)h/g)].map(([, x, y]) => [Number(x) / 10, Number(y)]);
+    const pressed = [...markup.matchAll(/<circle cx="([\d.]+)%" cy="(\d+)" r="10"/g)];
+    expect(dots).toHaveLength(4);
+    for (const [i, [, x, y]] of pressed.entries()) {
+      expect(dots[i][0]).toBeCloseTo(Number(x), 1);
+      expect(dots[i][1]).toBe(Number(y));
+    }
+  });
+
   it("writes frequency and SWR along the way of the trail that is looked at", () => {
     const words = {
       ...trail("b", "18 MHz"),

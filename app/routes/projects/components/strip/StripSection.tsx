@@ -1,4 +1,4 @@
-import { useState } from "react";
+import { useMemo, useState } from "react";
 import { Link, useNavigate, useNavigation } from "react-router";
 import { frequencyScale } from "~/charts/axis";
 import type { FrequencyRange } from "~/charts/ranges";
@@ -17,6 +17,7 @@ export function StripSection({ data }: { data: ProjectPageData }) {
   const navigate = useNavigate();
   const [active, setActive] = useState<string | null>(null);
   const { scene, view, whole } = map;
+  const hrefs = useMemo(() => hrefsUnder(base), [base]);
   if (map.sweeps.length === 0 && unread.length === 0) {
     return (
       <EmptyState
@@ -64,10 +65,7 @@ export function StripSection({ data }: { data: ProjectPageData }) {
             <StripMap
               scene={scene}
               label="Strip map of the project: newest sweep on top"
-              stripHref={(id) => `${base}/sweeps/${id}`}
-              stepHref={(id) => `${base}/steps/${id}`}
-              trailHref={(id) => `${base}/trails/${id}`}
-              dipHref={(id) => `${base}/dips/${id}`}
+              {...hrefs}
               activeTrail={active}
               onActive={setActive}
             >
@@ -98,6 +96,15 @@ export function StripSection({ data }: { data: ProjectPageData }) {
       )}
     </section>
   );
+}
+
+function hrefsUnder(base: string) {
+  return {
+    stripHref: (id: string) => `${base}/sweeps/${id}`,
+    stepHref: (id: string) => `${base}/steps/${id}`,
+    trailHref: (id: string) => `${base}/trails/${id}`,
+    dipHref: (id: string) => `${base}/dips/${id}`,
+  };
 }
 
 /** A closer look is reckoned by the server: the map says while it waits. */
