@@ -1,3 +1,4 @@
+import { LRUCache } from "lru-cache";
 import { Marked, type MarkedExtension, type Token } from "marked";
 import markedFootnote from "marked-footnote";
 import sanitizeHtml from "sanitize-html";
@@ -62,16 +63,13 @@ function cleaned(markdown: string): string {
   const kept = cache.get(markdown);
   if (kept !== undefined) return kept;
   const html = drawFormulas(sanitizeHtml(parse(withinLimit(markdown)), RULES));
-  keep(markdown, html);
+  cache.set(markdown, html);
   return html;
 }
 
 /** The words alone on one line, for cards and lists: at most `max` characters, cut at a word where it can be. */
 export function plainText(markdown: string, max: number): string {
-  const text = decodeHtml(
-    sanitizeHtml(parse(withinLimit(markdown)), { allowedTags: [], allowedAttributes: {} }),
-  );
-  const line = text.replace(/\s+/g, " ").trim();
+  const line = lineOf(markdown);
   if (line.length <= max) return line;
   const cut = line.slice(0, Math.max(0, max - 1));
   const space = line.slice(0, max).lastIndexOf(" ");
@@ -79,11 +77,20 @@ export function plainText(markdown: string, max: number): string {
   return `${whole.replace(/[\s,;:.–-]+$/, "")}…`;
 }
 
+function lineOf(markdown: string): string {
+  const kept = lines.get(markdown);
+  if (kept !== undefined) return kept;
+  const bare = sanitizeHtml(parse(withinLimit(markdown)), { allowedTags: [], allowedAttributes: {} });
+  const line = decodeHtml(bare).replace(/\s+/g, " ").trim();
+  lines.set(markdown, line);
+  return line;
+}
+
 /** The stretches of running text: what is neither code nor a formula nor an address. */
 export function textsIn(markdown: string): string[] {
   const texts: string[] = [];
   try {
-    marked.walkTokens(marked.lexer(withinLimit(markdown)), (token) => {
+    marked.walkTokens(marked.lexer(withinLimit(markdown, MAX_WRITE_UP_CHARACTERS)), (token) => {
       if (token.type === "text" && !("tokens" in token && token.tokens)) texts.push(token.raw);
     });
   } catch (error) {
@@ -172,17 +179,14 @@ function withinLimit(markdown: string, limit = MAX_NOTE_CHARACTERS): string {
 /** Quotes in quotes, which take the square of their depth. */
 const TOO_DEEP = /^(?:[ \t]*>){200}/m;
 
-/** The last texts drawn: a thread is looked at far more often than it is written. */
-const cache = new Map<string, string>();
-let cachedCharacters = 0;
-const MOST_CACHED_CHARACTERS = 4_000_000;
+/** The last texts drawn, and the last ones as a line: a thread is looked at far more often than it is written. */
+const cache = lastTexts();
+const lines = lastTexts();
 
-function keep(markdown: string, html: string): void {
-  cache.set(markdown, html);
-  cachedCharacters += markdown.length + html.length;
-  for (const [oldest, drawn] of cache) {
-    if (cachedCharacters <= MOST_CACHED_CHARACTERS) break;
-    cache.delete(oldest);
-    cachedCharacters -= oldest.length + drawn.length;
-  }
+function lastTexts() {
+  return new LRUCache<string, string>({
+    maxSize: 4_000_000,
+    // An empty text has a size too.
+    sizeCalculation: (drawn, markdown) => drawn.length + markdown.length + 1,
+  });
 }

@@ -21,11 +21,10 @@ export interface ReactanceZero {
  * the zeros are looked for in Γ: between two neighbours by the cubic through the four nearest samples and bisection, in noise by
  * a straight line through all samples of the crossing. A crossing counts once Im Γ stands clear of the noise (CLEAR σ) on both
  * sides of zero, so that scatter around zero makes one, not many. A gap ends a crossing. Rising and falling zeros as for one-ports
- * of loss: W. L. Everitt and G. E. Anner, Communication Engineering (from memory, not seen).
+ * of loss: W. L. Everitt and G. E. Anner, Communication Engineering (from memory, not seen). `noise` is the sweep's own.
  */
-export function reactanceZeros(sweep: Sweep): ReactanceZero[] {
+export function reactanceZeros(sweep: Sweep, noise = complexNoise(sweep)): ReactanceZero[] {
   const { gammaIm } = sweep;
-  const noise = complexNoise(sweep);
   if (!gammaIm || noise === null) return [];
   const clear = Math.max(CLEAR * noise, LEAST);
   const zeros: ReactanceZero[] = [];

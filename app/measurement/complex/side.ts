@@ -21,11 +21,10 @@ export interface Side {
 /**
  * The side of the reference at `hz`: the sign of Re Γ, which is that of abs(Z)² − Z0² and, at a dip, that of R − Z0. Told only
  * where abs(Re Γ) exceeds its limit: 95 % of the noise plus the bench's directivity there, when known (worst case; an unknown one
- * is said, not taken for zero). Null for a scalar sweep, outside it and beside a gap.
+ * is said, not taken for zero). Null for a scalar sweep, outside it and beside a gap. `noise` is the sweep's own, for many dips at once.
  */
-export function sideAt(sweep: Sweep, hz: number): Side | null {
+export function sideAt(sweep: Sweep, hz: number, noise = complexNoise(sweep)): Side | null {
   const gamma = gammaAt(sweep, hz);
-  const noise = complexNoise(sweep);
   if (!gamma || noise === null) return null;
   const z = gammaToImpedance(gamma, sweep.referenceOhm);
   const at = Math.min(sweep.frequencyHz.length - 1, firstAtOrAbove(sweep.frequencyHz, hz));

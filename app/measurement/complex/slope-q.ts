@@ -27,10 +27,9 @@ export interface SlopeQ {
  * least the FEWEST nearest ones), each sample weighed by what the noise of Γ makes of its Z: σ(Z) = σ(Γ)·2·Z0/abs(1−Γ)². The
  * interval carries that noise on, and the difference to half the window as the error of the shape. Null for a scalar sweep,
  * outside it, beside a gap, where R is not positive, or with fewer than three samples. It is the antenna's Q only at the antenna
- * and for a single resonance: a length of line or a matching network adds its own slope.
+ * and for a single resonance: a length of line or a matching network adds its own slope. `noise` is the sweep's own, for many dips at once.
  */
-export function slopeQ(sweep: Sweep, hz: number): SlopeQ | null {
-  const noise = complexNoise(sweep);
+export function slopeQ(sweep: Sweep, hz: number, noise = complexNoise(sweep)): SlopeQ | null {
   if (noise === null || !gammaAt(sweep, hz)) return null;
   let q = FIRST_Q;
   let fit: SlopeQ | null = null;

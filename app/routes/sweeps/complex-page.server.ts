@@ -1,6 +1,7 @@
 import { packComplex } from "~/charts/sent-complex";
 import { evenSteps } from "~/measurement/complex/even-steps";
 import { gammaAt } from "~/measurement/complex/gamma-at";
+import { complexNoise } from "~/measurement/complex/impedance";
 import { lNetworks, singleElements } from "~/measurement/complex/l-network";
 import { unwrappedPhaseDeg } from "~/measurement/complex/phase";
 import { nearestZero, reactanceZeros } from "~/measurement/complex/reactance-zeros";
@@ -40,7 +41,9 @@ export function loadComplex(
   const shown = range ?? { fromHz: sweep.frequencyHz[0], toHz: sweep.frequencyHz[n - 1] };
   const indices = drawnPoints(sweep, shown);
   const pick = (column: Float64Array) => Float64Array.from(indices, (i) => column[i]);
-  const zeros = reactanceZeros(sweep);
+  // Takes as long as all the rest, so it is told once for all of them.
+  const noise = complexNoise(sweep);
+  const zeros = reactanceZeros(sweep, noise);
   const inView = dips.filter(({ frequencyHz }) => frequencyHz >= shown.fromHz && frequencyHz <= shown.toHz);
   const zerosInView = zeros.filter(
     ({ frequencyHz }) => frequencyHz >= shown.fromHz && frequencyHz <= shown.toHz,
@@ -62,8 +65,8 @@ export function loadComplex(
       frequencyHz,
       edge,
       gamma: gammaAt(sweep, frequencyHz),
-      side: sideAt(sweep, frequencyHz),
-      slope: slopeQ(sweep, frequencyHz),
+      side: sideAt(sweep, frequencyHz, noise),
+      slope: slopeQ(sweep, frequencyHz, noise),
       zero: nearestZero(zeros, frequencyHz),
     })),
     moreDips: Math.max(0, inView.length - MOST_ROWS),
