@@ -47,19 +47,27 @@ function scanStretch(magnitude: Float64Array, start: number, stack: Waiting): nu
   let runStart = start;
   let crest = 0;
   let i = start + 1;
-  for (; i < n; i++) {
-    const next = magnitude[i];
+  while (i < n) {
+    let next = magnitude[i];
     if (next > value) {
       if (runStart >= 0) {
         if (runStart === start) stack.push(start, value, 0, true);
         else stack.push((runStart + i - 1) >> 1, value, crest, false);
         runStart = -1;
       }
+      do {
+        value = next;
+        next = ++i < n ? magnitude[i] : Number.NaN;
+      } while (next > value);
     } else if (next < value) {
       if (runStart < 0 || runStart === start) crest = value;
-      runStart = i;
-    } else if (Number.isNaN(next)) break;
-    value = next;
+      do {
+        value = next;
+        next = ++i < n ? magnitude[i] : Number.NaN;
+      } while (next < value);
+      runStart = i - 1;
+    } else if (next === value) i++;
+    else break;
   }
   if (runStart < 0) stack.close(value);
   else {

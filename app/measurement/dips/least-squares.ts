@@ -7,8 +7,11 @@
  * Lecture Notes in Mathematics 630, 105-116, 1978 (both from memory, not seen).
  */
 
-/** Model at `x` with parameters `p`; writes ∂/∂p to `gradient`. */
-export type Model = (p: Float64Array, x: number, gradient: Float64Array) => number;
+/**
+ * Model with parameters `p`, made ready for many x: what hangs on `p` alone is computed once. Its value at `x`; writes
+ * ∂/∂p to `gradient`.
+ */
+export type Model = (p: Float64Array) => (x: number, gradient: Float64Array) => number;
 
 export interface Problem {
   model: Model;
@@ -98,9 +101,10 @@ function accumulate(
   const gradient = new Float64Array(start.length);
   normal.fill(0);
   slope.fill(0);
+  const at = model(p);
   let cost = 0;
   for (let k = 0; k < x.length; k++) {
-    const residual = y[k] - model(p, x[k], gradient);
+    const residual = y[k] - at(x[k], gradient);
     const w = weight[k];
     cost += w * residual * residual;
     for (let i = 0; i < free; i++) {

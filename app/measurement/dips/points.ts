@@ -45,6 +45,7 @@ export function meanPoints(
   const size = Math.ceil((to - from + 1) / most);
   const points = room(Math.floor((to - from + 1) / size));
   const gradient = new Float64Array(p.length);
+  const shape = resonatorPower(p);
   for (let k = 0; k < points.x.length; k++) {
     const start = from + k * size;
     let power = 0;
@@ -56,9 +57,9 @@ export function meanPoints(
     const x = Math.log(hz / size / referenceHz);
     const width = Math.log(frequencyHz[start + size - 1] / frequencyHz[start]);
     const spread = (width / Math.sqrt(12)) * Math.sqrt((size + 1) / (size - 1 || 1));
-    const around = resonatorPower(p, x - spread, gradient) + resonatorPower(p, x + spread, gradient);
+    const around = shape(x - spread, gradient) + shape(x + spread, gradient);
     points.x[k] = x;
-    points.y[k] = power / size - (around / 2 - resonatorPower(p, x, gradient));
+    points.y[k] = power / size - (around / 2 - shape(x, gradient));
   }
   return points;
 }

@@ -44,11 +44,12 @@ export function residualsOf(
   const gradient = new Float64Array(p.length);
   const standard = new Float64Array(n);
   const weight = new Float64Array(n);
+  const power = resonatorPower(p);
   let squares = 0;
   let total = 0;
   let worst = 0;
   for (let i = 0; i < n; i++) {
-    weight[i] = Math.max(0, resonatorPower(p, x[i], gradient));
+    weight[i] = Math.max(0, power(x[i], gradient));
     standard[i] = y[i] - weight[i];
     squares += standard[i] * standard[i];
     total += weight[i];

@@ -39,25 +39,28 @@ export const TILT = 4;
 /** In a list of seven. */
 export const CURVE = 5;
 
-export const resonatorPower: Model = (p, x, gradient) => {
+export const resonatorPower: Model = (p) => {
   const last = p.length - 1;
-  const up = Math.exp(x - p[LOG_F0]);
+  const [depth, logF0, far] = [p[DEPTH], p[LOG_F0], p[last]];
   const kappa = Math.exp(p[LOG_KAPPA]);
-  const w = kappa * (up - 1 / up);
-  const share = 1 / (1 + w * w);
   const skew = last > SKEW ? p[SKEW] : 0;
-  const slope = (2 * (p[DEPTH] + skew * w) * w * share - skew) * share;
   const tilt = last > TILT ? p[TILT] : 0;
   const curve = last > CURVE ? p[CURVE] : 0;
-  const rise = slope + tilt + 2 * curve * w;
-  gradient[DEPTH] = -share;
-  gradient[LOG_F0] = -rise * kappa * (up + 1 / up);
-  gradient[LOG_KAPPA] = rise * w;
-  if (last > CURVE) gradient[CURVE] = w * w;
-  if (last > TILT) gradient[TILT] = w;
-  if (last > SKEW) gradient[SKEW] = -w * share;
-  gradient[last] = 1;
-  return p[last] - (p[DEPTH] + skew * w) * share + (tilt + curve * w) * w;
+  return (x, gradient) => {
+    const up = Math.exp(x - logF0);
+    const w = kappa * (up - 1 / up);
+    const share = 1 / (1 + w * w);
+    const slope = (2 * (depth + skew * w) * w * share - skew) * share;
+    const rise = slope + tilt + 2 * curve * w;
+    gradient[DEPTH] = -share;
+    gradient[LOG_F0] = -rise * kappa * (up + 1 / up);
+    gradient[LOG_KAPPA] = rise * w;
+    if (last > CURVE) gradient[CURVE] = w * w;
+    if (last > TILT) gradient[TILT] = w;
+    if (last > SKEW) gradient[SKEW] = -w * share;
+    gradient[last] = 1;
+    return far - (depth + skew * w) * share + (tilt + curve * w) * w;
+  };
 };
 
 /** Parameters to the resonator; `referenceHz` is where x is 0. */

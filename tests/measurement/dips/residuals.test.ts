@@ -21,7 +21,7 @@ function points(n: number, scatter: "even" | "decibel", sigma: number, start = 5
   const gradient = new Float64Array(4);
   const x = Float64Array.from({ length: n }, (_, i) => -0.12 + (0.24 * i) / (n - 1));
   const y = x.map((at) => {
-    const gamma = Math.sqrt(resonatorPower(P, at, gradient));
+    const gamma = Math.sqrt(resonatorPower(P)(at, gradient));
     return scatter === "even"
       ? (gamma + sigma * normal()) ** 2
       : gamma ** 2 * 10 ** ((sigma * normal()) / 10);
@@ -57,7 +57,7 @@ describe("two kinds of scatter", () => {
       if (!residuals) continue;
       const gradient = new Float64Array(4);
       const mean = (values: Float64Array) => values.reduce((sum, v) => sum + v, 0) / values.length;
-      const truth = mean(x.map((at) => resonatorPower(P, at, gradient)));
+      const truth = mean(x.map((at) => resonatorPower(P)(at, gradient)));
       const raw = mean(y) - truth;
       const left = mean(unbiased(y, residuals, false)) - truth;
       // A normal abs Γ has σ², a complex Γ 2σ²; the middle leaves half a σ² at most.

@@ -71,7 +71,7 @@ describe("points of a long window", () => {
       const { x, y } = meanPoints(sweep.frequencyHz, sweep.magnitude, whole, 14.15e6, most, p);
       let worst = 0;
       for (let k = 0; k < x.length; k++)
-        worst = Math.max(worst, Math.abs(y[k] - resonatorPower(p, x[k], gradient)));
+        worst = Math.max(worst, Math.abs(y[k] - resonatorPower(p)(x[k], gradient)));
       expect(worst).toBeLessThan(most === 50 ? 2e-5 : 3e-7);
     }
   });
@@ -83,7 +83,7 @@ describe("points of a long window", () => {
     const { x, y } = meanPoints(sweep.frequencyHz, noisy, whole, 14.15e6, 400, p);
     let sum = 0;
     for (let k = 0; k < x.length; k++) {
-      const model = resonatorPower(p, x[k], gradient);
+      const model = resonatorPower(p)(x[k], gradient);
       sum += (y[k] - 1e-4 - model) ** 2 / (4 * model * 1e-4);
     }
     const share = Math.sqrt(sum / x.length) * Math.sqrt(39_801 / x.length);
