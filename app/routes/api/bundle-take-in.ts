@@ -1,5 +1,5 @@
 import * as runs from "~/db/bundle-runs.server";
-import { fileOfForm } from "~/services/bundle/multipart";
+import { CutShort, fileOfForm } from "~/services/bundle/multipart";
 import { type Given, giveBundle } from "~/services/bundle/runs.server";
 import { log } from "~/services/log.server";
 import { shapeBundle, shapeBundleFor } from "./bundle-shapes.server.ts";
@@ -27,6 +27,7 @@ async function takeIn({ request, user }: Call): Promise<Response> {
   if (!file) throw invalid([{ field: "bundle", message: "Send the ZIP in the field `bundle`." }]);
   const given = await giveBundle(user.id, file.bytes).catch((error) => {
     log.warn({ err: error }, "a bundle did not arrive whole");
+    if (!(error instanceof CutShort)) throw problem({ status: 503, code: "no-store", detail: NO_STORE });
     const detail = "The file did not arrive whole. Nothing was stored; send it again.";
     throw problem({ status: 400, code: "cut-short", detail });
   });
@@ -49,3 +50,5 @@ function requireGiven(given: Given): runs.ShownRun {
       return given satisfies never;
   }
 }
+
+const NO_STORE = "It could not be stored just now. Nothing of it was kept; send it again in a minute.";

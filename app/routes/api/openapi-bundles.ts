@@ -31,7 +31,7 @@ export const BUNDLE_PATHS: Record<string, PathItem> = {
       requestBody: bundleBody(),
       status: "202",
       answer: "Bundle",
-      refusals: ["400", "409", "411", "413", "415", "422"],
+      refusals: ["400", "409", "411", "413", "415", "422", "503"],
     }),
   },
   "/bundles/{bundle}": {

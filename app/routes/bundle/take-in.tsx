@@ -1,4 +1,3 @@
-import { parseWithZod } from "@conform-to/zod/v4";
 import { data, Form } from "react-router";
 import { requirePerson } from "~/auth/require.server";
 import { Breadcrumbs } from "~/components/ui/Breadcrumbs";
@@ -6,10 +5,11 @@ import { Button } from "~/components/ui/Button";
 import { FieldGroup } from "~/components/ui/Field";
 import * as runs from "~/db/bundle-runs.server";
 import { brokenForm, notFound } from "~/errors";
-import { fileOfForm } from "~/services/bundle/multipart";
+import { CutShort, fileOfForm } from "~/services/bundle/multipart";
 import { giveBundle, removeRun } from "~/services/bundle/runs.server";
 import { redirectWithMessage } from "~/services/flash.server";
 import { log } from "~/services/log.server";
+import { parseForm } from "~/services/parse-form";
 import type { Route } from "./+types/take-in";
 import "./bundle.css";
 import { bundleSchema } from "./bundle.schema.ts";
@@ -44,12 +44,14 @@ export async function action(args: Route.ActionArgs) {
     }
   } catch (error) {
     log.warn({ err: error }, "a bundle did not arrive whole");
-    return data({ problem: CUT }, { status: 400 });
+    return error instanceof CutShort
+      ? data({ problem: CUT }, { status: 400 })
+      : data({ problem: NO_STORE }, { status: 503 });
   }
 }
 
 async function clear(request: Request, userId: number) {
-  const submission = parseWithZod(await request.formData(), { schema: bundleSchema });
+  const submission = parseForm(await request.formData(), { schema: bundleSchema });
   if (submission.status !== "success" || submission.value.intent !== "remove") throw brokenForm();
   const run = await runs.findByPublicId(submission.value.run);
   if (run?.kind !== "import" || run.userId !== userId) throw notFound("line");
@@ -66,6 +68,7 @@ const NO_FILE = "No file came. Nothing was stored; choose the bundle's ZIP and s
 const TOO_LARGE = "It has more than 2 GB. Nothing was stored.";
 const TOO_MANY = "Three bundles of yours are being looked at. Nothing was stored; wait until one is done.";
 const CUT = "The file did not arrive whole. Nothing was stored; send it again.";
+const NO_STORE = "It could not be stored just now. Nothing of it was kept; send it again in a minute.";
 
 export default function TakeIn({ loaderData, actionData }: Route.ComponentProps) {
   return (

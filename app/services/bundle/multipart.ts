@@ -19,6 +19,9 @@ export async function fileOfForm(
   }
 }
 
+/** The body ended before its form did: whoever sent it is to send it again. */
+export class CutShort extends Error {}
+
 /** Cuts a stream at marks, holding no more of it than a mark is long and a chunk. */
 class Cutter {
   private held = Buffer.from("\r\n");
@@ -45,7 +48,7 @@ class Cutter {
         this.held = this.held.subarray(safe);
         yield bytes;
       }
-      if (this.ended) throw new Error("The form was cut short on its way.");
+      if (this.ended) throw new CutShort("The form was cut short on its way.");
       const { value, done } = await this.chunks.next();
       if (done) this.ended = true;
       else this.held = Buffer.concat([this.held, value]);
