@@ -2,6 +2,7 @@ import { and, asc, desc, eq, isNotNull, sql } from "drizzle-orm";
 import { alias } from "drizzle-orm/mysql-core";
 import { completeDip } from "~/measurement/dips/complete";
 import { db, type Queryable } from "./client.server.ts";
+import { dipNumber } from "./dip-numbers.server.ts";
 import { newPublicId } from "./ids.server.ts";
 import { dips, steps, sweeps, trailDips, trails, users } from "./schema/index.ts";
 
@@ -103,6 +104,30 @@ export async function findTrailStops(projectId: number, tx: Queryable = db) {
     .orderBy(asc(dips.id))
     .limit(MOST_STOPS);
   return rows.map((row) => ({ ...row, numbers: completeDip(row.numbers) }));
+}
+
+/** The trails that a sweep's dips are on, with every dip on them: no more of it than tells how they moved. */
+export async function findTrailStopsOf(sweepId: number, tx: Queryable = db) {
+  const rows = await tx
+    .select({
+      trail: trails.publicId,
+      sweepId: dips.sweepId,
+      frequencyHz: dips.frequencyHz,
+      frequencyUncertaintyHz: dipNumber("frequencyUncertaintyHz"),
+      edge: sql<boolean>`json_value(${dips.numbers}, '$.edge') in ('1', 'true')`.mapWith(Boolean),
+    })
+    .from(trailDips)
+    .innerJoin(trails, eq(trails.id, trailDips.trailId))
+    .innerJoin(dips, eq(dips.id, trailDips.dipId))
+    .where(
+      and(
+        eq(dips.present, true),
+        sql`${trailDips.trailId} in (select own.trail_id from ${trailDips} own inner join ${dips} d on d.id = own.dip_id where d.sweep_id = ${sweepId})`,
+      ),
+    )
+    .orderBy(asc(dips.id))
+    .limit(MOST_STOPS);
+  return rows.map(({ trail, sweepId: of, ...numbers }) => ({ trail, sweepId: of, numbers }));
 }
 
 export type OrderedSweep = Awaited<ReturnType<typeof findSweepsInOrder>>[number];

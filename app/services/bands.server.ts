@@ -89,7 +89,7 @@ export async function targetGround(sweep: TargetSweep) {
   const [versions, sweeps, stops, known, artefacts] = await Promise.all([
     antennas.findAllByProject(sweep.projectId),
     steps.findSweepsInOrder(sweep.projectId),
-    steps.findTrailStops(sweep.projectId),
+    steps.findTrailStopsOf(sweep.id),
     compare.findDips([sweep.id]),
     artefactsOf(sweep),
   ]);

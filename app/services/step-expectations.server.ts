@@ -9,6 +9,7 @@ import { partOf } from "./cause-keys.ts";
 import { resolveQuantities } from "./step-quantities.ts";
 
 type Stop = Awaited<ReturnType<typeof steps.findTrailStops>>[number];
+type MovedStop = Awaited<ReturnType<typeof steps.findTrailStopsOf>>[number];
 
 /** Where a planned step should put every trail that the newest sweep shows; empty where nothing of it can be reckoned. */
 export async function expectedAfter(
@@ -73,7 +74,7 @@ function likeliestPart(stop: Stop, all: Stop[], antenna: Antenna, unit: LengthUn
 
 /** What a trail did while the length of a part changed: its frequencies with that part's lengths, oldest sweep first. */
 export function historyOf(
-  stops: Stop[],
+  stops: MovedStop[],
   antennaOf: ReadonlyMap<number, Antenna | null>,
 ): TrailAtStep["history"] {
   const order = [...antennaOf.keys()];

@@ -3,6 +3,7 @@ import type { Visibility } from "~/auth/permissions";
 import { newPublicId } from "~/db/ids.server";
 import * as people from "~/db/people.server";
 import * as projects from "~/db/projects.server";
+import { findTrailStops, findTrailStopsOf } from "~/db/steps.server";
 import { type Antenna, type ElementKind, NO_ANTENNA } from "~/measurement/antenna";
 import { SPEED_OF_LIGHT } from "~/measurement/feedline";
 import { changeAntenna } from "~/services/antennas.server";
@@ -190,6 +191,18 @@ describe("targetsOf", () => {
     const [two] = await targets(project, first, second);
     expect(two.trim?.method).toBe("line");
     expect(two.trim?.lengthM).toBeCloseTo((10.6 * dipOf(10.6)) / 7.1, 2);
+    const newest = (await chooseSweeps([second], owner)).compared[0].sweep.id;
+    const all = await findTrailStops(project.id);
+    const shared = all.filter(({ trail }) =>
+      all.some((stop) => stop.trail === trail && stop.sweepId === newest),
+    );
+    expect(shared.length).toBeGreaterThan(1);
+    expect(await findTrailStopsOf(newest)).toEqual(
+      shared.map(({ numbers: { frequencyHz, frequencyUncertaintyHz, edge }, ...stop }) => ({
+        ...stop,
+        numbers: { frequencyHz, frequencyUncertaintyHz, edge },
+      })),
+    );
   });
 
   it("says why there is no length", async () => {
