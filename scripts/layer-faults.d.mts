@@ -1,0 +1,1 @@
+export function layerFaults(root: string): string[];
