@@ -1,6 +1,5 @@
 import { type Ending, NEGOTIATED } from "~/services/plates/form-names";
 import {
-  ACCEPT,
   HTML,
   inQuestion,
   JSON_TYPE,
@@ -58,8 +57,9 @@ export const FORM_PATHS: Record<string, PathItem> = {
     get: openOperation(
       {
         operationId: "readPlate",
-        summary: "A plate's page, or by `Accept` one of its forms (said in `Content-Location`)",
-        parameters: [inPath("plate"), ACCEPT],
+        summary:
+          "A plate's page, or by `Accept` one of its forms (said in `Content-Location`); the page where it names none of them",
+        parameters: [inPath("plate")],
       },
       [HTML, ...[...NEGOTIATED.values()].map(mediaTypeOf)],
       { 304: null, 404: [HTML, TEXT], 410: [HTML, TEXT] },

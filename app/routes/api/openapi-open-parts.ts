@@ -1,4 +1,4 @@
-import { type Ending, formOf, MEDIA_TYPES, NEGOTIATED, PNG_WIDTHS } from "~/services/plates/form-names";
+import { type Ending, formOf, MEDIA_TYPES, PNG_WIDTHS } from "~/services/plates/form-names";
 import { type Name, type Operation, reference } from "./openapi-parts.ts";
 
 /** What the OpenAPI document's paths outside of /api/v1 are made of: no token, and answers that are no JSON. */
@@ -55,13 +55,6 @@ export const HTML = "text/html";
 export const TEXT = "text/plain";
 export const JSON_TYPE = "application/json";
 
-export const ACCEPT = {
-  name: "Accept",
-  in: "header",
-  schema: { type: "string" },
-  description: `The page, unless one of these is liked better: ${[...NEGOTIATED.keys()].join(", ")}`,
-};
-
 export const THEME = {
   name: "theme",
   in: "query",
@@ -82,7 +75,12 @@ export const SVG_WIDTH = {
 export const PNG_WIDTH = {
   name: "width",
   in: "query",
-  schema: { type: "integer", enum: PNG_WIDTHS, default: 1280, description: `Pixels: ${PNG_WIDTHS.join(", ")}` },
+  schema: {
+    type: "integer",
+    enum: PNG_WIDTHS,
+    default: 1280,
+    description: `Pixels: ${PNG_WIDTHS.join(", ")}`,
+  },
 };
 
 export const VERSION = {
