@@ -167,6 +167,16 @@ describe("records that don't fit together", () => {
     verdictAt: null,
     createdAt: at,
   };
+  const source = {
+    plate: "p",
+    role: "sweep",
+    sweep: "s",
+    name: "a.csv",
+    sizeBytes: 1,
+    sha256: "0".repeat(64),
+    recipe: '{"given":{},"analysis":null,"bench":null}',
+    path: "data/no",
+  };
   it.each([
     ["trails", [{ ...trail, verdictBy: "nobody" }], /names people nobody, which is not in the bundle/],
     ["trails", [trail, trail], /have the id aaa/],
@@ -174,6 +184,9 @@ describe("records that don't fit together", () => {
     ["trails", [{ ...trail, more: 1 }], /^Line 2 .*more/],
     ["trails", ["{"], /is not JSON/],
     ["trail-dips", [{ dip: "d", trail: "t" }], /names dips d/],
+    ["plate-sources", [{ ...source, recipe: "{" }], /^Line 2 .*recipe: no recipe/],
+    ["plate-sources", [{ ...source, recipe: '{"given":{},"analysis":{"settings":7}}' }], /recipe: no recipe/],
+    ["plate-sources", [source], /names plates p/],
     ["project", [], /which one project/],
     [
       "originals",

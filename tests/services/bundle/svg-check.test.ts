@@ -1,5 +1,29 @@
 import { describe, expect, it } from "vitest";
 import { isHarmlessPage, isHarmlessSvg } from "~/services/bundle/svg-check";
+import { drawFigure } from "~/services/plates/draw.server";
+import { embedPage } from "~/services/plates/embed";
+import { materialOf, materialSweep, recordOf, sweepOf } from "../plates/sample.ts";
+
+describe("what is ours", () => {
+  it("passes, whatever words people put into it", () => {
+    const words = 'C:\\ <b> url(x) "a" & javascript:';
+    const made = recordOf(
+      materialOf([materialSweep("sweepaaaaa", words, sweepOf([{ hz: 7.1e6, ohm: 100, q: 12 }]))]),
+    );
+    const record = {
+      ...made,
+      title: words,
+      id: "k3f9w2k3f9",
+      number: 1,
+      address: "https://swale.example/plates/x",
+    };
+    for (const theme of ["light", "dark"] as const) {
+      expect(isHarmlessSvg(drawFigure(record as never, { theme }))).toBe(true);
+    }
+    const size = { width: 960, height: 600 };
+    expect(isHarmlessPage(embedPage(record as never, { wide: size, narrow: size }))).toBe(true);
+  });
+});
 
 const inside = (body: string) => `<svg xmlns="http://www.w3.org/2000/svg" viewBox="0 0 1 1">${body}</svg>`;
 
