@@ -39,16 +39,14 @@ describe("the printing thread", () => {
   });
   afterAll(closePrinter);
 
-  it("gives the bytes that the same work gives in place", async () => {
-    expect(forms).toEqual(await makeForms(plate));
+  it("gives the bytes that the same work gives in place, and holds nobody else up", async () => {
+    const inPlace = await heldUp(() => makeForms(plate));
+    expect(forms).toEqual(inPlace.result);
     expect(forms.every(({ bytes }) => Buffer.isBuffer(bytes) && bytes.length > 0)).toBe(true);
-    expect((await printWriteUp(writeUp)).equals(await printDocument(writeUp))).toBe(true);
-  });
-
-  it("holds nobody else up", async () => {
-    const apart = await heldUp(() => Promise.all([printWriteUp(writeUp), printForms(plate)]));
-    expect(apart.result[0].subarray(0, 5).toString()).toBe("%PDF-");
-    expect(apart.ms).toBeLessThan(100);
+    const apart = await heldUp(() => Promise.all([printForms(plate), printWriteUp(writeUp)]));
+    expect(apart.result[1].equals(await printDocument(writeUp))).toBe(true);
+    // 100 ms is what a person does not notice; on a machine that is busy with other things all takes longer.
+    expect(apart.ms).toBeLessThan(Math.max(100, inPlace.ms / 5));
   });
 
   it("says what went wrong in it, and goes on", async () => {
