@@ -1,4 +1,3 @@
-import { parseWithZod } from "@conform-to/zod/v4";
 import { Form, useNavigation } from "react-router";
 import { requireProject } from "~/auth/require.server";
 import { Breadcrumbs } from "~/components/ui/Breadcrumbs";
@@ -7,6 +6,7 @@ import * as runs from "~/db/bundle-runs.server";
 import { brokenForm, notFound } from "~/errors";
 import { askForBundle, removeRun } from "~/services/bundle/runs.server";
 import { redirectWithMessage } from "~/services/flash.server";
+import { parseForm } from "~/services/parse-form";
 import type { Route } from "./+types/bundle";
 import "./bundle.css";
 import { bundleSchema } from "./bundle.schema.ts";
@@ -23,7 +23,7 @@ export async function loader(args: Route.LoaderArgs) {
 
 export async function action(args: Route.ActionArgs) {
   const { project, person } = await requireProject(args, "project.export");
-  const submission = parseWithZod(await args.request.formData(), { schema: bundleSchema });
+  const submission = parseForm(await args.request.formData(), { schema: bundleSchema });
   if (submission.status !== "success" || !person) throw brokenForm();
   const value = submission.value;
   const here = `/projects/${project.publicId}/bundle`;

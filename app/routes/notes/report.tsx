@@ -8,6 +8,7 @@ import * as blocks from "~/db/blocks.server";
 import * as notes from "~/db/notes.server";
 import { notFound } from "~/errors";
 import { redirectWithMessage } from "~/services/flash.server";
+import { parseForm } from "~/services/parse-form";
 import { reportNote } from "~/services/reports.server";
 import type { Route } from "./+types/report";
 import { reportSchema } from "./report.schema.ts";
@@ -36,7 +37,7 @@ export async function loader(args: Route.LoaderArgs) {
 
 export async function action(args: Route.ActionArgs) {
   const { note, person, here } = await requireNote(args);
-  const submission = parseWithZod(await args.request.formData(), { schema: reportSchema });
+  const submission = parseForm(await args.request.formData(), { schema: reportSchema });
   if (submission.status !== "success") return data({ lastResult: submission.reply() }, { status: 400 });
   const done = await reportNote({ note, by: person, reason: submission.value.reason });
   if (done === "too-many") {

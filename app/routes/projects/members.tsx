@@ -1,4 +1,3 @@
-import { parseWithZod } from "@conform-to/zod/v4";
 import { data } from "react-router";
 import { requireProject } from "~/auth/require.server";
 import * as invitations from "~/db/invitations.server";
@@ -7,6 +6,7 @@ import { refused } from "~/errors";
 import { redirectWithMessage } from "~/services/flash.server";
 import { invite } from "~/services/invitations.server";
 import { handOver } from "~/services/ownership.server";
+import { parseForm } from "~/services/parse-form";
 import { addMember, changeRole, type MemberChange, removeMember } from "~/services/projects.server";
 import type { Route } from "./+types/members";
 import { AddMemberForm } from "./components/AddMemberForm.tsx";
@@ -26,7 +26,7 @@ export async function loader(args: Route.LoaderArgs) {
 
 export async function action(args: Route.ActionArgs) {
   const { project, person, membership, may } = await requireProject(args, "project.read");
-  const submission = parseWithZod(await args.request.formData(), { schema: membersSchema });
+  const submission = parseForm(await args.request.formData(), { schema: membersSchema });
   // Leaving is everybody's own; all else is for owners, whatever the form holds.
   if (!person || (submission.payload.intent !== "leave" && !may("members.manage")))
     throw refused(OWNERS_ONLY);
