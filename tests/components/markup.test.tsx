@@ -84,6 +84,29 @@ describe("Table", () => {
     expect([...markup.matchAll(/(\d) MHz/g)].map((match) => match[1])).toEqual(["1", "2", "3"]);
     expect(markup.match(/sort-link/g)).toHaveLength(1);
   });
+
+  it("puts a second line under the first, with a head that sorts by it", () => {
+    const under = {
+      key: "depth",
+      label: "Depth",
+      sortBy: (row: number) => -row,
+      cell: (row: number) => `${row} dB`,
+    };
+    const markup = draw(
+      <Table
+        caption="Dips"
+        columns={columns.map((column) => (column.key === "frequency" ? { ...column, under } : column))}
+        rows={[1, 3, 2]}
+        rowKey={String}
+        sort={{ key: "depth", direction: "ascending" }}
+      />,
+      "/x?sort=depth",
+    );
+    expect(markup).toContain('href="/x?sort=-depth"');
+    expect(markup).toContain('href="/x?sort=frequency"');
+    expect(markup.match(/aria-sort/g)).toHaveLength(1);
+    expect([...markup.matchAll(/(\d) dB/g)].map((match) => match[1])).toEqual(["3", "2", "1"]);
+  });
 });
 
 describe("the shell without scripts", () => {

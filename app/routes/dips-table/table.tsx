@@ -53,7 +53,9 @@ export default function AllDips({ loaderData }: Route.ComponentProps) {
   return (
     <section className="grid gap-5" aria-labelledby="all-dips">
       <div className="flex flex-wrap items-end justify-between gap-4">
-        <h2 id="all-dips">All dips</h2>
+        <h2 id="all-dips" className="sweep-title">
+          All dips
+        </h2>
         <a
           href={`${base}/dips.csv${search.size > 0 ? `?${search}` : ""}`}
           className="button button-quiet no-print"

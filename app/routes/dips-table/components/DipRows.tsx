@@ -37,59 +37,42 @@ function columnsFor(base: string, designed: boolean): Column<ListedDip>[] {
     {
       key: "frequency",
       label: "Frequency",
-      numeric: true,
       sortBy: ordered,
       cell: ({ publicId, numbers }) => (
-        <Link to={`${base}/dips/${publicId}`}>
+        <Link to={`${base}/dips/${publicId}`} className="number font-semibold whitespace-nowrap">
           {formatFrequency(numbers.frequencyHz, numbers.frequencyUncertaintyHz)}
         </Link>
       ),
+      under: {
+        key: "band",
+        label: "Band",
+        cell: (row) => <BandCell {...row.band} designed={designed} />,
+      },
     },
     {
       key: "sweep",
       label: "Sweep",
       sortBy: ordered,
       cell: (row) => (
-        <Link
-          to={`${base}/sweeps/${row.sweepPublicId}?dip=${row.publicId}`}
-          className="inline-block sm:min-w-[12rem]"
-        >
-          {row.sweepTitle}
-        </Link>
+        <Link to={`${base}/sweeps/${row.sweepPublicId}?dip=${row.publicId}`}>{row.sweepTitle}</Link>
       ),
+      under: { key: "taken", label: "Taken", sortBy: ordered, cell: (row) => <Taken {...row} /> },
     },
-    {
-      key: "taken",
-      label: "Taken",
-      sortBy: ordered,
-      cell: (row) =>
-        row.takenAt ? (
-          <span className="whitespace-nowrap">
-            <DateTime at={row.takenAt} dateOnly />
-          </span>
-        ) : (
-          <span className="soft">
-            not said; came in <DateTime at={row.createdAt} dateOnly />
-          </span>
-        ),
-    },
-    { key: "band", label: "Band", cell: (row) => <BandCell {...row.band} designed={designed} /> },
     {
       key: "swr",
       label: "Lowest SWR",
       numeric: true,
       sortBy: ordered,
       cell: ({ numbers }) => <SwrCell dip={numbers} />,
-    },
-    {
-      key: "return-loss",
-      label: "Return loss",
-      numeric: true,
-      sortBy: ordered,
-      cell: ({ numbers }) =>
-        numbers.edge
-          ? ""
-          : formatDbLimits(numbers.returnLossDb, numbers.returnLossLowDb, numbers.returnLossHighDb),
+      under: {
+        key: "return-loss",
+        label: "Return loss",
+        sortBy: ordered,
+        cell: ({ numbers }) =>
+          numbers.edge
+            ? ""
+            : formatDbLimits(numbers.returnLossDb, numbers.returnLossLowDb, numbers.returnLossHighDb),
+      },
     },
     {
       key: "width",
@@ -97,36 +80,52 @@ function columnsFor(base: string, designed: boolean): Column<ListedDip>[] {
       numeric: true,
       sortBy: ordered,
       cell: ({ numbers }) => <WidthCell dip={numbers} />,
+      under: {
+        key: "q",
+        label: "Q",
+        cell: ({ numbers }) => (numbers.edge ? "" : `Q\u2009${qText(numbers)}`),
+      },
     },
-    { key: "q", label: "Q", numeric: true, sortBy: ordered, cell: ({ numbers }) => qText(numbers) },
     {
       key: "verdict",
       label: "Verdict",
       sortBy: ordered,
-      cell: ({ verdict, verdictText }) => (
-        <span className="inline-flex flex-wrap items-baseline gap-2">
-          <VerdictTag verdict={verdict} />
-          {verdictText && <span className="text-small sm:min-w-[9rem]">{verdictText}</span>}
-        </span>
-      ),
+      cell: ({ verdict }) => <VerdictTag verdict={verdict} />,
+      under: { key: "words", label: "in words", cell: ({ verdictText }) => verdictText },
     },
     {
       key: "trail",
       label: "Trail",
-      cell: (row) =>
-        row.trailPublicId ? (
-          <Link
-            to={`${base}/trails/${row.trailPublicId}`}
-            className={row.trailName ? undefined : "font-mono whitespace-nowrap"}
-          >
-            {row.trailName || trailWords(row.trailHz)}
-          </Link>
-        ) : (
-          <span className="soft">none</span>
-        ),
+      cell: (row) => <TrailCell base={base} row={row} />,
+      under: { key: "notes", label: "Notes", cell: ({ noteCount }) => noteWords(noteCount) },
     },
-    { key: "notes", label: "Notes", numeric: true, cell: (row) => row.noteCount },
   ];
+}
+
+function Taken({ takenAt, createdAt }: Pick<ListedDip, "takenAt" | "createdAt">) {
+  if (takenAt) return <DateTime at={takenAt} dateOnly />;
+  return (
+    <>
+      not said; came in <DateTime at={createdAt} dateOnly />
+    </>
+  );
+}
+
+function TrailCell({ base, row }: { base: string; row: ListedDip }) {
+  if (!row.trailPublicId) return <span className="soft">none</span>;
+  return (
+    <Link
+      to={`${base}/trails/${row.trailPublicId}`}
+      className={row.trailName ? undefined : "number whitespace-nowrap"}
+    >
+      {row.trailName || trailWords(row.trailHz)}
+    </Link>
+  );
+}
+
+function noteWords(count: number): string {
+  if (count === 0) return "no notes";
+  return count === 1 ? "1 note" : `${count} notes`;
 }
 
 /** A trail without a name goes by its newest dip's frequency, roughly. */
