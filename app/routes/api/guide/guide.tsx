@@ -2,6 +2,7 @@ import { env } from "~/env.server";
 import { openApiDocument } from "../openapi-document.ts";
 import type { Route } from "./+types/guide";
 import { Call } from "./components/Call.tsx";
+import { Path } from "./components/Path.tsx";
 import { Rules } from "./components/Rules.tsx";
 import { guideGroups } from "./guide-groups.ts";
 
@@ -19,7 +20,7 @@ export function loader() {
 export default function ApiGuide({ loaderData: { base, groups } }: Route.ComponentProps) {
   return (
     <div className="methods-page">
-      <nav aria-label="Calls" className="methods-contents">
+      <nav aria-label="Calls" className="methods-contents api-contents">
         <div>
           <a href="#rules" className="font-semibold">
             Before the first call
@@ -27,12 +28,14 @@ export default function ApiGuide({ loaderData: { base, groups } }: Route.Compone
         </div>
         {groups.map(({ title, calls }) => (
           <div key={title}>
-            <p className="font-semibold">{title}</p>
+            <a href={`#${idOf(title)}`} className="font-semibold">
+              {title}
+            </a>
             <ul>
               {calls.map(({ id, method, path }) => (
                 <li key={id}>
-                  <a href={`#${id}`} className="break-all">
-                    {method} {path}
+                  <a href={`#${id}`}>
+                    {method} <Path path={path} />
                   </a>
                 </li>
               ))}
@@ -43,8 +46,10 @@ export default function ApiGuide({ loaderData: { base, groups } }: Route.Compone
       <article className="grid gap-10 min-w-0">
         <Rules base={base} />
         {groups.map(({ title, calls }) => (
-          <section key={title} aria-label={title} className="grid gap-8 min-w-0">
-            <h2 className="text-title">{title}</h2>
+          <section key={title} aria-labelledby={idOf(title)} className="grid gap-8 min-w-0">
+            <h2 id={idOf(title)} className="text-title scroll-mt-4">
+              {title}
+            </h2>
             {calls.map((call) => (
               <Call key={call.id} call={call} />
             ))}
@@ -53,4 +58,8 @@ export default function ApiGuide({ loaderData: { base, groups } }: Route.Compone
       </article>
     </div>
   );
+}
+
+function idOf(title: string): string {
+  return `part-${title.toLowerCase().replace(/[^a-z]+/g, "-")}`;
 }

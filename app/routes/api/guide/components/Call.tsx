@@ -1,5 +1,6 @@
 import type { GuideCall } from "../guide-groups.ts";
 import { Code } from "./Code.tsx";
+import { Path } from "./Path.tsx";
 import { Words } from "./Words.tsx";
 
 /** One call: what it is for, what may be asked, and its examples. */
@@ -8,9 +9,9 @@ export function Call({ call }: { call: GuideCall }) {
   return (
     <section id={id} aria-labelledby={`${id}-title`} className="api-call">
       <h3 id={`${id}-title`} className="text-large">
-        <a href={`#${id}`} className="definition-anchor break-all">
+        <a href={`#${id}`} className="definition-anchor">
           <code>
-            {method} {path}
+            {method} <Path path={path} />
           </code>
         </a>
       </h3>
