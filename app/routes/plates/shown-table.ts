@@ -47,7 +47,7 @@ function cellOf(
     const by = row[half.key];
     if (typeof by !== "number") return withUnit(value, unit);
     const shown = value.toFixed(decimalsFor(value, unit, by, half.unit));
-    return `${withUnit(shown, unit)} ± ${withUnit(by, half.unit)}`;
+    return `${withUnit(shown, unit)} ±\u00a0${withUnit(by, half.unit)}`;
   }
   if (!byKey.has(`${key}Low`) || !byKey.has(`${key}High`)) return number(value);
   const [low, high] = [row[`${key}Low`], row[`${key}High`]];

@@ -27,18 +27,22 @@ describe("a table as people read it", () => {
     const { columns } = shownTable({ title: "Dips", columns: COLUMNS, rows: [ROW] });
     expect(columns.map(({ label }) => label)).toEqual(["Frequency", "Lowest SWR", "Moved, kHz"]);
     expect(cells({})).toEqual({
-      frequency: "7.0812\u2009MHz ± 0.9\u2009kHz",
+      frequency: "7.0812\u2009MHz ±\u00a00.9\u2009kHz",
       swr: "1.21 (1.12–1.31)",
       moved: "−12.5",
     });
   });
 
   test("gives a frequency the decimals that its half-width has", () => {
-    expect(cells({ frequency: 55.3, frequencyHalf: 3.6 }).frequency).toBe("55.300\u2009MHz ± 3.6\u2009kHz");
-    expect(cells({ frequency: 7.1181, frequencyHalf: 0.35 }).frequency).toBe(
-      "7.1181\u2009MHz ± 0.35\u2009kHz",
+    expect(cells({ frequency: 55.3, frequencyHalf: 3.6 }).frequency).toBe(
+      "55.300\u2009MHz ±\u00a03.6\u2009kHz",
     );
-    expect(cells({ frequency: 55.3, frequencyHalf: 2500 }).frequency).toBe("55.3\u2009MHz ± 2500\u2009kHz");
+    expect(cells({ frequency: 7.1181, frequencyHalf: 0.35 }).frequency).toBe(
+      "7.1181\u2009MHz ±\u00a00.35\u2009kHz",
+    );
+    expect(cells({ frequency: 55.3, frequencyHalf: 2500 }).frequency).toBe(
+      "55.3\u2009MHz ±\u00a02500\u2009kHz",
+    );
   });
 
   test("says what is not known, and never makes it a zero", () => {

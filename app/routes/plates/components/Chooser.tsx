@@ -37,12 +37,14 @@ export function Chooser({ projectId, subjects }: { projectId: string; subjects: 
               {sweeps.map(({ publicId, title, takenAt }) => (
                 <li key={publicId}>
                   <input type="checkbox" name="sweep" value={publicId} aria-label={`Compare ${title}`} />
-                  <Link to={to(`sweep:${publicId}`)}>{title}</Link>
-                  {takenAt && (
-                    <span className="text-small soft">
-                      <DateTime at={takenAt} dateOnly />
-                    </span>
-                  )}
+                  <span className="plate-choice-words">
+                    <Link to={to(`sweep:${publicId}`)}>{title}</Link>
+                    {takenAt && (
+                      <span className="text-small soft">
+                        <DateTime at={takenAt} dateOnly />
+                      </span>
+                    )}
+                  </span>
                 </li>
               ))}
             </ul>
