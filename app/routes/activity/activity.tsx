@@ -63,7 +63,9 @@ export default function Activity({ loaderData, actionData }: Route.ComponentProp
   return (
     <div className="project-page">
       <section aria-labelledby="activity" className="grid gap-5 content-start min-w-0">
-        <h2 id="activity">{since ? "Since you were last here" : "What happened"}</h2>
+        <h2 id="activity" className="sweep-title">
+          {since ? "Since you were last here" : "What happened"}
+        </h2>
         {since && (
           <div className="flex flex-wrap items-center gap-4">
             {member && mark && (

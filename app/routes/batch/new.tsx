@@ -40,7 +40,9 @@ export default function NewBatch({ loaderData, actionData }: Route.ComponentProp
     <section className="grid gap-6 max-w-[56rem]" aria-labelledby="batch">
       <div className="grid gap-2">
         <Breadcrumbs items={[{ label: "Sweeps", to: base }]} />
-        <h2 id="batch">Add many sweeps at once</h2>
+        <h2 id="batch" className="sweep-title">
+          Add many sweeps at once
+        </h2>
         <p className="soft max-w-[72ch]">
           A folder, some files or a ZIP, with a table of titles, days, benches and steps if you like. All of
           it is checked first: nothing becomes a sweep before you have seen what would. Up to 300 files of 64

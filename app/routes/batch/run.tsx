@@ -81,7 +81,9 @@ export default function Batch({ loaderData, actionData }: Route.ComponentProps) 
             { label: "Many at once", to: `${base}/sweeps/batch` },
           ]}
         />
-        <h2 id="batch">{HEADINGS[batch.phase]}</h2>
+        <h2 id="batch" className="sweep-title">
+          {HEADINGS[batch.phase]}
+        </h2>
       </div>
       {actionData?.error && (
         <p role="alert" className="text-alarm">

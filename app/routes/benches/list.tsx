@@ -32,7 +32,9 @@ export default function Benches({ loaderData }: Route.ComponentProps) {
   return (
     <section className="grid gap-6" aria-labelledby="benches">
       <div className="flex flex-wrap items-end justify-between gap-4">
-        <h2 id="benches">Benches</h2>
+        <h2 id="benches" className="sweep-title">
+          Benches
+        </h2>
         {mayAdd && own.length > 0 && (
           <LinkButton to={`${base}/new`} icon="add">
             New bench

@@ -51,7 +51,7 @@ export default function Bundle({ loaderData }: Route.ComponentProps) {
     <div className="max-w-[52rem] space-y-8">
       <div className="space-y-3">
         {mayEdit && <Breadcrumbs items={[{ label: "Settings", to: `/projects/${id}/settings` }]} />}
-        <h2>The whole project as one file</h2>
+        <h2 className="sweep-title">The whole project as one file</h2>
         <p className="max-w-[72ch]">
           A bundle is a ZIP with everything of the project, in open formats. It opens from disk without Swale,
           and any Swale can take it in again.

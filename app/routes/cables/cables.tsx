@@ -89,7 +89,9 @@ export default function Cables({ loaderData, actionData }: Route.ComponentProps)
   return (
     <div className="grid gap-8">
       <section aria-labelledby="cables" className="grid gap-3">
-        <h2 id="cables">Cables of this project</h2>
+        <h2 id="cables" className="sweep-title">
+          Cables of this project
+        </h2>
         <p className="soft max-w-[72ch]">
           Feedlines that the table below lacks. Matched loss of a metre in dB is k1·√f + k2·f, f in MHz.
         </p>

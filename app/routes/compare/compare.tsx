@@ -24,7 +24,7 @@ export default function ComparePage({ loaderData }: Route.ComponentProps) {
     <article className="grid gap-8">
       <div className="grid gap-2">
         <Breadcrumbs items={[{ label: "Sweeps", to: `${base}/sweeps` }]} />
-        <h2>Sweeps compared</h2>
+        <h2 className="sweep-title">Sweeps compared</h2>
         <NotShown data={loaderData} />
       </div>
       {sweeps.length === 0 && (

@@ -63,7 +63,7 @@ export default function Report({ loaderData, actionData }: Route.ComponentProps)
   return (
     <div className="max-w-[42rem] space-y-8">
       <section className="space-y-4">
-        <h2>Report a note</h2>
+        <h2 className="sweep-title">Report a note</h2>
         <blockquote className="note-line whitespace-pre-wrap">{body}</blockquote>
         <p>
           An administrator of this site will read this note and your reason, and nothing else of the project.

@@ -120,7 +120,7 @@ export default function Members({ loaderData, actionData }: Route.ComponentProps
   return (
     <div className="max-w-[60rem] space-y-10">
       <section className="space-y-3">
-        <h2>Members</h2>
+        <h2 className="sweep-title">Members</h2>
         {actionData?.problem && (
           <p role="alert" className="field-error">
             {actionData.problem}

@@ -49,7 +49,9 @@ export default function Sweeps({ loaderData }: Route.ComponentProps) {
   return (
     <section className="grid gap-5" aria-labelledby="sweeps">
       <div className="flex flex-wrap items-end justify-between gap-4">
-        <h2 id="sweeps">Sweeps</h2>
+        <h2 id="sweeps" className="sweep-title">
+          Sweeps
+        </h2>
         <div className="flex flex-wrap items-center gap-3">
           <Link to={`/projects/${project.publicId}/dips`}>All dips as a table</Link>
           {mayAdd && (
