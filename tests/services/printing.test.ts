@@ -36,7 +36,7 @@ describe("the printing thread", () => {
   let forms: MadeForm[];
   beforeAll(async () => {
     forms = await printForms(plate);
-  });
+  }, 120_000);
   afterAll(closePrinter);
 
   it("gives the bytes that the same work gives in place, and holds nobody else up", async () => {
@@ -47,7 +47,7 @@ describe("the printing thread", () => {
     expect(apart.result[1].equals(await printDocument(writeUp))).toBe(true);
     // 100 ms is what a person does not notice; on a machine that is busy with other things all takes longer.
     expect(apart.ms).toBeLessThan(Math.max(100, inPlace.ms / 5));
-  });
+  }, 60_000);
 
   it("says what went wrong in it, and goes on", async () => {
     const broken = { ...plate, record: { ...plate.record, madeAt: "no time" } };
