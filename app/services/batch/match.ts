@@ -15,22 +15,23 @@ export function matchRows(files: readonly BatchFile[], table: readonly TableRow[
       wanted: row.wanted,
     }),
   );
-  const named = new Set(rows.map(({ file }) => file));
-  const others = files.flatMap((file, i): BatchRow[] =>
-    named.has(i) ? [] : [{ ...EMPTY_ROW, file: i, name: file.path }],
-  );
-  return [...rows, ...others];
+  return withTheRest(rows, files);
 }
 
 /** After files came that were missing: rows without a file find theirs; files that no row names get a row. */
 export function matchAgain({ files, rows }: Pick<BatchReport, "files" | "rows">): BatchRow[] {
   const known = namesOf(files);
   const found = rows.map((row) => (row.file === null ? { ...row, file: fileOf(known, row.name) } : row));
-  const named = new Set(found.map(({ file }) => file));
+  return withTheRest(found, files);
+}
+
+/** Then a row for each file that no row is of. */
+function withTheRest(rows: BatchRow[], files: readonly BatchFile[]): BatchRow[] {
+  const named = new Set(rows.map(({ file }) => file));
   const others = files.flatMap((file, i): BatchRow[] =>
     named.has(i) ? [] : [{ ...EMPTY_ROW, file: i, name: file.path }],
   );
-  return [...found, ...others];
+  return [...rows, ...others];
 }
 
 /** By its whole path, else by its last part where only one file ends so; capitals count only where they must. */

@@ -5,7 +5,7 @@ import { plainText } from "../file-names.ts";
 /** A path that stays in its folder, tidied; or why it is refused. */
 export function safePath(name: string): { path: string } | { refused: string } {
   const path = plainText(name).replace(/^(\.\/)+/, "");
-  if (path === "") return { refused: "It has no name." };
+  if (path === "") return NAMELESS;
   if (/^[\\/]/.test(path) || /^[A-Za-z]:/.test(path)) {
     return { refused: "Its name begins outside of the archive (an absolute path). It was not unpacked." };
   }
@@ -18,12 +18,8 @@ export function safePath(name: string): { path: string } | { refused: string } {
     return { refused: "Its name climbs out of the archive (..). It was not unpacked." };
   }
   if (path.length > LONGEST) return { refused: `Its name has more than ${LONGEST} characters.` };
-  return {
-    path: path
-      .split("/")
-      .filter((part) => part !== "" && part !== ".")
-      .join("/"),
-  };
+  const tidy = path.split("/").filter((part) => part !== "" && part !== ".");
+  return tidy.length > 0 ? { path: tidy.join("/") } : NAMELESS;
 }
 
 /** What systems leave in folders and nobody means to send. */
@@ -36,4 +32,5 @@ export function isOfSystem(path: string): boolean {
     );
 }
 
+const NAMELESS = { refused: "It has no name." };
 const LONGEST = 400;

@@ -97,6 +97,7 @@ describe("safePath", () => {
     "..\\a.csv",
     "x\\..\\a.csv",
     "",
+    ".",
   ])("refuses “%s”", (name) => expect(safePath(name)).toHaveProperty("refused"));
   it("tidies the others, and knows what systems leave behind", () => {
     expect(safePath("./wet//a..b.csv")).toEqual({ path: "wet/a..b.csv" });
