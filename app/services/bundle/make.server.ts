@@ -11,6 +11,7 @@ import type { Lease } from "./lease.server.ts";
 import { PlanReader } from "./lines.ts";
 import { isEntry, type PlanEntry, type PlanLine } from "./plan.ts";
 import { pointsToCsv } from "./points-csv.ts";
+import { Refused } from "./refused.ts";
 import { abortUpload, PartUpload, putStream, readPieces, type UploadState } from "./store.server.ts";
 import { type Chunks, writeDirectory, writeEntry, type ZipState } from "./zip-writer.ts";
 
@@ -127,7 +128,7 @@ async function keepPlan(lease: Lease, key: string, making: Making): Promise<numb
     clearInterval(beat);
   }
   if (entries > MOST_ENTRIES)
-    throw new Error(`The bundle would have ${entries} files; ${MOST_ENTRIES} are the most.`);
+    throw new Refused(`The bundle would have ${entries} files; ${MOST_ENTRIES} are the most. None was made.`);
   return entries;
 }
 

@@ -48,4 +48,4 @@ export function rewriteJson(value: unknown, changed: Map<string, string>): unkno
 
 const NAMED =
   /\b(person|dip|sweep|step|plate|attachment|trail|bench|compare|note):([0-9a-z]{1,16}(?:,[0-9a-z]{1,16})*)/g;
-const OWN_ADDRESS = /(\]\()(\/(?:projects|plates)\/[^)\s]*)/g;
+const OWN_ADDRESS = /(\]\()(\/(?:projects|plates|write-ups)\/[^)\s]*)/g;

@@ -1,4 +1,4 @@
-/** A bundle that is not taken in: what is wrong with it, each in a sentence for the person who gave it. */
+/** A bundle that is not made or not taken in, and won't be at another try: why, each in a sentence for the person who asked. */
 export class Refused extends Error {
   readonly faults: string[];
   constructor(faults: string | string[]) {

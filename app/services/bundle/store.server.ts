@@ -9,6 +9,7 @@ import {
 } from "@aws-sdk/client-s3";
 import { Upload } from "@aws-sdk/lib-storage";
 import { env } from "~/env.server";
+import { log } from "../log.server.ts";
 import { client } from "../storage.server.ts";
 
 /** Objects that are too large to be held: written and read as streams, and written in parts that outlive a process. */
@@ -91,11 +92,14 @@ export class PartUpload {
   }
 }
 
-/** Gives an upload up; one that is not known any more is no error. */
+/** Gives an upload up. One that is not known any more is no error, and no other stops what it is given up for. */
 export async function abortUpload(key: string, uploadId: string): Promise<void> {
   await client
     .send(new AbortMultipartUploadCommand({ Bucket: env.S3_BUCKET, Key: key, UploadId: uploadId }))
-    .catch(() => undefined);
+    .catch((error) => {
+      if (error.name !== "NoSuchUpload")
+        log.warn({ err: error, key }, "parts of an upload stay in the store");
+    });
 }
 
 /** Stores a stream of unknown length. */

@@ -24,8 +24,6 @@ import { restoreRows } from "./restore.server.ts";
 import type { Places } from "./restore-rows.server.ts";
 import { refusalOf } from "./unfit.server.ts";
 
-export { Refused } from "./refused.ts";
-
 /** What a taking-in has written that nobody sees yet. */
 interface Half {
   projectId: number;

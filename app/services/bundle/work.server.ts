@@ -10,7 +10,8 @@ import { dropMade, type Making, makeBundle } from "./make.server.ts";
 import { planMine } from "./mine.server.ts";
 import { planProject } from "./plan.server.ts";
 import type { PlanLine } from "./plan.ts";
-import { clearHalf, Refused, takeInBundle } from "./take-in.server.ts";
+import { Refused } from "./refused.ts";
+import { clearHalf, takeInBundle } from "./take-in.server.ts";
 
 /**
  * The work on bundles, beside other background work because a run may last minutes. A run is claimed by one process and

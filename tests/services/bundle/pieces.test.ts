@@ -99,9 +99,9 @@ describe("ids that were taken", () => {
   ]);
   it("are changed where a text names something of ours, and nowhere else", () => {
     const text =
-      "See [7 MHz](dip:k3fk3fk3fk), #compare:aaaaaaaaaa,k3fk3fk3fk, [there](/projects/aaaaaaaaaa/dips/k3fk3fk3fk), https://swale.example/plates/k3fk3fk3fk and k3fk3fk3fk.";
+      "See [7 MHz](dip:k3fk3fk3fk), #compare:aaaaaaaaaa,k3fk3fk3fk, [there](/projects/aaaaaaaaaa/dips/k3fk3fk3fk), [more](/write-ups/aaaaaaaaaa), https://swale.example/plates/k3fk3fk3fk and k3fk3fk3fk.";
     expect(rewriteText(text, changed)).toBe(
-      "See [7 MHz](dip:new1), #compare:new2,new1, [there](/projects/new2/dips/new1), https://swale.example/plates/k3fk3fk3fk and k3fk3fk3fk.",
+      "See [7 MHz](dip:new1), #compare:new2,new1, [there](/projects/new2/dips/new1), [more](/write-ups/new2), https://swale.example/plates/k3fk3fk3fk and k3fk3fk3fk.",
     );
   });
   it("are changed in JSON where a value is one", () => {
