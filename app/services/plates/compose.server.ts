@@ -1,13 +1,12 @@
 import { env } from "~/env.server";
 import { ANALYSIS_VERSION } from "~/measurement/analyse";
 import type { Sweep } from "~/measurement/sweep";
-
 import { limitsOf } from "../shown-sweep.server.ts";
 import { defaultsFor, type PlateChoices } from "./choices.ts";
 import { CODE_VERSION } from "./code-version.ts";
 import { figureOf } from "./figure.ts";
 import { type Gathered, type GatheredSweep, gather, type OfProject, type Problem } from "./gather.server.ts";
-import { LICENCES, type LicenceId, licenceOf } from "./licences.ts";
+import { licenceOf } from "./licences.ts";
 import type { Material } from "./material.ts";
 import type { UnnumberedRecord } from "./record.ts";
 import { type SourceToKeep, sourcesOf } from "./sources.server.ts";
@@ -48,7 +47,7 @@ export async function propose(
   const gathered = await gather(project, subject);
   if ("problem" in gathered) return gathered;
   const title = Array.from(gathered.title).slice(0, 160).join("");
-  const licence = licenceOf(project.licence ?? "")?.id as LicenceId | undefined;
+  const licence = licenceOf(project.licence ?? "")?.id;
   const plain = defaultsFor({ title, licence });
   // The figure says how far it reaches; a dip's close-up is no wide one.
   const { frequency } = figureOf(materialOf(subject, plain, gathered));
@@ -76,7 +75,7 @@ function composed(
       subject: subjectText(subject),
       title: choices.title,
       caption: choices.caption,
-      licence: licenceOf(choices.licence) ?? LICENCES[0],
+      licence: licenceOf(choices.licence),
       people: peopleOf(gathered.sweeps),
       project: { title: project.title, address: `${env.BASE_URL}/projects/${project.publicId}` },
       figure,

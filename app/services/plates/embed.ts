@@ -36,8 +36,8 @@ img{display:block;width:100%;max-width:${size.wide.width}px;height:auto;margin:0
 </head>
 <body>
 <a href="${text(address)}" target="_top"><picture>
-${source(`(max-width: ${NARROW_PX}px) and ${dark}`, "?theme=dark&amp;width=narrow", size.narrow)}
-${source(`(max-width: ${NARROW_PX}px)`, "?width=narrow", size.narrow)}
+${source(`(max-width: ${NARROW_FRAME_PX}px) and ${dark}`, "?theme=dark&amp;width=narrow", size.narrow)}
+${source(`(max-width: ${NARROW_FRAME_PX}px)`, "?width=narrow", size.narrow)}
 ${source(dark, "?theme=dark", size.wide)}
 <img src="${base}" alt="${alt}" width="${size.wide.width}" height="${size.wide.height}">
 </picture></a>
@@ -56,4 +56,4 @@ export function text(plain: string): string {
 }
 
 /** Frames up to here get the figure that is laid out for phones. */
-const NARROW_PX = 560;
+export const NARROW_FRAME_PX = 560;

@@ -30,6 +30,8 @@ export const LICENCES: readonly Licence[] = [
 ];
 
 /** The licence of that name; undefined for one that is not offered. */
+export function licenceOf(id: LicenceId): Licence;
+export function licenceOf(id: string): Licence | undefined;
 export function licenceOf(id: string): Licence | undefined {
   return LICENCES.find((licence) => licence.id === id);
 }

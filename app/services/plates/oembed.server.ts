@@ -1,7 +1,7 @@
 import type { Request, Response } from "express";
 import * as plates from "~/db/plates.server";
 import { env } from "~/env.server";
-import { text } from "./embed.ts";
+import { NARROW_FRAME_PX, text } from "./embed.ts";
 import { readForm } from "./forms.server.ts";
 import { sizeOf } from "./make-forms.server.ts";
 import { type PlateRecord, parseRecord } from "./record.ts";
@@ -70,12 +70,12 @@ export function fitted(
   mostHeight: number,
 ): Size {
   const width = Math.floor(Math.min(wide.width, mostWidth));
-  const shown = width <= 560 ? narrow : wide;
+  const shown = width <= NARROW_FRAME_PX ? narrow : wide;
   const height = Math.ceil((width * shown.height) / shown.width);
   if (height <= mostHeight) return { width, height };
   // Lower than the figure at that width: narrower, by the drawing that is shown there.
   const less = Math.max(1, Math.floor((mostHeight * shown.width) / shown.height));
-  const other = less <= 560 ? narrow : wide;
+  const other = less <= NARROW_FRAME_PX ? narrow : wide;
   const lower = Math.min(less, Math.floor((mostHeight * other.width) / other.height));
   return {
     width: Math.max(1, lower),

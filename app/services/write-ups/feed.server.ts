@@ -2,6 +2,7 @@ import type * as projects from "~/db/projects.server";
 import * as writeUps from "~/db/write-ups.server";
 import { env } from "~/env.server";
 import { escapeXml, uuidOf } from "../feed.server.ts";
+import { peopleOf } from "./cite.ts";
 import { summaryOf } from "./published.server.ts";
 
 /** The published write-ups of a project as an Atom feed (RFC 4287), the last published first. */
@@ -10,8 +11,9 @@ export async function drawWriteUpFeed(project: projects.Project): Promise<string
   const page = `${env.BASE_URL}/projects/${project.publicId}`;
   const entries = rows.map((row) => {
     const address = `${env.BASE_URL}/write-ups/${row.publicId}`;
-    const names = [...new Set([row.writer ?? row.by ?? "former member", row.by ?? "former member"])];
-    const authors = names.map((name) => `<author><name>${escapeXml(name)}</name></author>`).join("");
+    const authors = peopleOf(row)
+      .map((name) => `<author><name>${escapeXml(name)}</name></author>`)
+      .join("");
     const remark = row.number > 1 && row.remark ? `Version ${row.number}: ${row.remark}. ` : "";
     return `<entry>
 <id>urn:uuid:${uuidOf(["write-up", row.publicId])}</id>
