@@ -7,7 +7,7 @@ export interface SuiteReport {
   /** Tests that did not run count as failed, and so do files that do not load and errors outside every test. */
   failures: { name: string; why: string }[];
   /** Passed, but not at the first try. */
-  secondTries: string[];
+  secondTries: { name: string; why: string }[];
   /** In the order of time taken, longest first. */
   files: { name: string; seconds: number }[];
 }
@@ -22,14 +22,12 @@ export default class ReportWriter implements Reporter {
       ...modules.flatMap((module) =>
         module.errors().map((error) => ({ name: module.relativeModuleId, why: told(error) })),
       ),
-      ...tests
-        .filter((test) => !passed.includes(test))
-        .map((test) => ({ name: nameOf(test), why: whyOf(test) })),
+      ...tests.filter((test) => !passed.includes(test)).map(toldOf),
     ];
     const report: SuiteReport = {
       passed: passed.length,
       failures,
-      secondTries: passed.filter((test) => test.diagnostic()?.flaky).map(nameOf),
+      secondTries: passed.filter((test) => test.diagnostic()?.flaky).map(toldOf),
       files: modules
         .map((module) => ({ name: module.relativeModuleId, seconds: secondsOf(module) }))
         .sort((a, b) => b.seconds - a.seconds),
@@ -40,14 +38,13 @@ export default class ReportWriter implements Reporter {
 
 const MOST_LINES = 12;
 
-function nameOf(test: TestCase): string {
-  return `${test.module.relativeModuleId} > ${test.fullName}`;
-}
-
-function whyOf(test: TestCase): string {
-  const result = test.result();
-  if (result.state !== "failed") return "It did not run, which counts as failed.";
-  return result.errors.map(told).join("\n");
+/** Its errors, those of a first try too. */
+function toldOf(test: TestCase): { name: string; why: string } {
+  const { errors } = test.result();
+  return {
+    name: `${test.module.relativeModuleId} > ${test.fullName}`,
+    why: errors?.map(told).join("\n") || "It did not run, which counts as failed.",
+  };
 }
 
 function told(error: SerializedError): string {

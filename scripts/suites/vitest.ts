@@ -31,7 +31,7 @@ export async function runVitest(name: string, config: string): Promise<Count> {
     failed: failed === 0 && code !== 0 ? 1 : failed,
     told: [
       ...report.failures.map(({ name, why }) => `Failed: ${name}\n${why}`),
-      ...report.secondTries.map((name) => `Passed at the second try only: ${name}`),
+      ...report.secondTries.map(({ name, why }) => `Passed at the second try only: ${name}\n${why}`),
     ],
   };
 }
