@@ -1,6 +1,6 @@
 import type { Ground } from "./ground.ts";
 import { lookApart, type Rgb } from "./oklab.ts";
-import type { Picture } from "./picture.ts";
+import { type Picture, pixelsOf } from "./picture.ts";
 
 /** Difference below which a line's colour may be the trace's own. */
 const OWN_COLOR = 0.045;
@@ -19,6 +19,8 @@ export interface Coverage {
   share: Float32Array;
 }
 
+/** Part of the way from ground to colour from which a pixel may be covered. */
+const LEAST_ALONG = 0.12;
 /** Colour error, in parts of the distance from ground to trace, at which a pixel counts to a third. */
 const COLOR_TOLERANCE = 0.35;
 /** The same, in steps of 255, for what compression adds. */
@@ -42,16 +44,26 @@ export function coverageOf(picture: Picture, ground: Ground, color: Rgb): Covera
   );
   const columnBase = ground.columns.map((g) => g && difference(g, color));
   const { data } = picture;
+  const pixels = pixelsOf(picture);
   for (let y = 0; y < height; y++) {
     const rowGround = rowBase[y + ground.top];
     let j = 4 * ((y + ground.top) * picture.width + ground.left);
+    // Most pixels are as the one before them, which was not covered.
+    let bare = -1;
+    let bareOf: Difference | null = null;
     for (let x = 0; x < width; x++, j += 4) {
       const d = rowGround ?? columnBase[x + ground.left] ?? base;
+      const pixel = pixels[j >> 2];
+      if (pixel === bare && d === bareOf) continue;
       const red = data[j] - d.from[0];
       const green = data[j + 1] - d.from[1];
       const blue = data[j + 2] - d.from[2];
       const along = (red * d.to[0] + green * d.to[1] + blue * d.to[2]) / d.square;
-      if (along < 0.12) continue;
+      if (along < LEAST_ALONG) {
+        bare = pixel;
+        bareOf = d;
+        continue;
+      }
       const off =
         (red - along * d.to[0]) ** 2 + (green - along * d.to[1]) ** 2 + (blue - along * d.to[2]) ** 2;
       const covered = Math.min(1, along) * Math.exp(-off / d.tolerance);

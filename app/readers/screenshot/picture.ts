@@ -54,6 +54,12 @@ export interface Line {
   contrast: number;
 }
 
+/** The four bytes of each pixel as one number: equal where the pixels are. Bytes that are not aligned are copied. */
+export function pixelsOf({ data, width, height }: Picture): Uint32Array {
+  const bytes = data.byteOffset % 4 === 0 ? data : data.slice();
+  return new Uint32Array(bytes.buffer, bytes.byteOffset, width * height);
+}
+
 /** Brightness of each pixel, 0 to 255, row by row (Rec. 601 weights). */
 export function brightness(picture: Picture): Float32Array {
   const { data, width, height } = picture;

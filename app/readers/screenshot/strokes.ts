@@ -19,26 +19,21 @@ const INK = 0.22;
 /** A run needs one pixel this much covered. */
 const LEAST_PEAK = 0.32;
 const MOST_RUNS = 10;
+/** Rows from one with ink to the next of the same run: a single pixel without is passed over. */
+const LARGEST_GAP = 2;
 
 /** The runs of every column, strongest first where there are many. */
 export function runsByColumn(coverage: Coverage): Run[][] {
-  const { width, height, share, left, top } = coverage;
+  const { width, left, top } = coverage;
+  const { rows, first } = inkByColumn(coverage);
   const columns: Run[][] = [];
   for (let x = 0; x < width; x++) {
     const runs: Run[] = [];
-    let y = 0;
-    while (y < height) {
-      if (share[y * width + x] < INK) {
-        y++;
-        continue;
-      }
-      let end = y;
-      while (
-        end + 1 < height &&
-        (share[(end + 1) * width + x] >= INK || (end + 2 < height && share[(end + 2) * width + x] >= INK))
-      )
-        end++;
-      const run = measure(coverage, x, y, end);
+    const behind = first[x + 1];
+    for (let k = first[x]; k < behind; k++) {
+      const y = rows[k];
+      while (k + 1 < behind && rows[k + 1] - rows[k] <= LARGEST_GAP) k++;
+      const run = measure(coverage, x, y, rows[k]);
       if (run.peak >= LEAST_PEAK)
         runs.push({
           ...run,
@@ -47,12 +42,29 @@ export function runsByColumn(coverage: Coverage): Run[][] {
           lower: run.lower + top,
           middle: run.middle + top,
         });
-      y = end + 1;
     }
     if (runs.length > MOST_RUNS) runs.sort((a, b) => b.ink * b.peak - a.ink * a.peak).length = MOST_RUNS;
     columns.push(runs);
   }
   return columns;
+}
+
+/** Rows with ink, column behind column: those of column x from `first[x]` up to `first[x + 1]`. */
+function inkByColumn({ width, height, share }: Coverage): { rows: Uint32Array; first: Uint32Array } {
+  const first = new Uint32Array(width + 1);
+  const inked: number[] = [];
+  for (let i = 0, y = 0; y < height; y++) {
+    for (let x = 0; x < width; x++, i++) {
+      if (share[i] < INK) continue;
+      inked.push(i);
+      first[x + 1]++;
+    }
+  }
+  for (let x = 0; x < width; x++) first[x + 1] += first[x];
+  const rows = new Uint32Array(inked.length);
+  const next = first.slice();
+  for (const i of inked) rows[next[i % width]++] = Math.floor(i / width);
+  return { rows, first };
 }
 
 function measure(coverage: Coverage, x: number, first: number, last: number): Omit<Run, "column"> {
