@@ -1,3 +1,4 @@
+import { Fragment } from "react";
 import { Table } from "~/components/ui/Table";
 import type { PlateRecord } from "~/services/plates/record";
 import { shownTable } from "../shown-table";
@@ -18,10 +19,21 @@ export function RecordTables({ tables }: { tables: PlateRecord["tables"] }) {
             key,
             label,
             numeric,
-            cell: ({ cells }) => cells[key],
+            cell: ({ cells }) => (numeric ? <Figures text={cells[key]} /> : cells[key]),
           }))}
         />
       ))}
     </div>
   );
+}
+
+/** A line ends between a number and its limits, never within them. */
+function Figures({ text }: { text: string }) {
+  const parts = text.split(" ");
+  return parts.map((part, i) => (
+    <Fragment key={part}>
+      {i > 0 && " "}
+      <span className="whitespace-nowrap">{part}</span>
+    </Fragment>
+  ));
 }
