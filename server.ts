@@ -83,14 +83,13 @@ function pages(development: boolean): RequestHandler {
   return async (request, response, next) => (await ready)(request, response, next);
 }
 
-/** What runs beside the answering, once a process. */
-export function startBackground(): void {
+/** What runs beside the answering, once a process; the answer stops it. */
+export function startBackground(): () => Promise<unknown> {
   onShutdown(() => pool.end());
   onShutdown(closeReaders);
   onShutdown(closePrinter);
-  onShutdown(startJobs());
-  onShutdown(startBundles());
-  onShutdown(startOutbox());
+  const stops = [startJobs(), startBundles(), startOutbox()];
+  return () => Promise.all(stops.map((stop) => stop()));
 }
 
 function serveStaticFiles(app: Express): void {
@@ -138,7 +137,7 @@ function listen(): void {
     next();
   });
   outer.use(app);
-  startBackground();
+  const stopBackground = startBackground();
   const server = outer.listen(env.PORT, env.HOST, (error?: Error) => {
     if (error) {
       log.fatal({ err: error }, `cannot listen on ${env.HOST}:${env.PORT}`);
@@ -148,7 +147,8 @@ function listen(): void {
   });
   server.keepAliveTimeout = 65_000;
   server.requestTimeout = LONGEST_REQUEST_MS;
-  onShutdown(() => closeServer(server, streams));
+  // Side by side, so that both together stay within the patience.
+  onShutdown(async () => void (await Promise.all([closeServer(server, streams), stopBackground()])));
   const stop = () => {
     const hardStop = setTimeout(() => process.exit(1), PATIENCE_MS + 3_000);
     runShutdown().then(

@@ -26,6 +26,8 @@ const DUPLICATE_ERRNO = 1062;
 const BROKEN_REFERENCE_ERRNO = 1452;
 /** Null where none may be, cut off, wrong or out of range, too long, breaking a constraint such as that JSON is JSON. */
 const UNFIT_ERRNOS = new Set([1048, 1265, 1292, 1366, 1264, 1406, 4025]);
+/** The server is stopping, or the query or its connection was killed. */
+const LOST_ERRNOS = new Set([1053, 1317, 1927]);
 
 /** Runs `work` in one transaction and again when the database asks for it: `work` must be repeatable. */
 export async function inTransaction<T>(work: (tx: Transaction) => Promise<T>): Promise<T> {
@@ -50,6 +52,18 @@ export function isReferenceBroken(error: unknown): boolean {
 /** A value that its column does not take: out of range, too long, no date, nested too deep, missing. */
 export function isUnfit(error: unknown): boolean {
   return UNFIT_ERRNOS.has(errnoOf(error) ?? 0);
+}
+
+/**
+ * Whether the connection went while the database was asked: what was written may stand all the same, where only the answer to
+ * its commit was lost. Whoever cleans up after such a fault has to look first.
+ */
+export function isOutcomeUnknown(error: unknown): boolean {
+  type Fault = { fatal?: boolean; errno?: number; cause?: unknown };
+  for (let e = error as Fault | undefined; e; e = e.cause as Fault | undefined) {
+    if (e.fatal === true || LOST_ERRNOS.has(e.errno ?? 0)) return true;
+  }
+  return false;
 }
 
 /** The unique key that a row met another row at; undefined for any other fault. */

@@ -5,23 +5,22 @@ import { sentMentions, writeUps } from "./schema/index.ts";
 
 export type SentMention = typeof sentMentions.$inferSelect;
 
-/** Notes that a page is to be told of this version; answers the row id. */
+/**
+ * Notes that a page is to be told of this version; answers the row id, which is a new one each time: a try that is put off
+ * for older news finds no row any more, and can't undo what was queued since.
+ */
 export async function queue(
   { writeUpId, target, number }: { writeUpId: number; target: string; number: number },
   tx: Queryable,
 ): Promise<number> {
   const targetSha256 = createHash("sha256").update(target).digest("hex");
-  const set = { number, state: "queued" as const, reason: "", at: new Date() };
-  await tx
-    .insert(sentMentions)
-    .values({ writeUpId, targetSha256, target, ...set })
-    .onDuplicateKeyUpdate({ set });
-  const rows = await tx
-    .select({ id: sentMentions.id })
-    .from(sentMentions)
-    .where(and(eq(sentMentions.writeUpId, writeUpId), eq(sentMentions.targetSha256, targetSha256)))
-    .limit(1);
-  return rows[0].id;
+  const which = and(eq(sentMentions.writeUpId, writeUpId), eq(sentMentions.targetSha256, targetSha256));
+  const before = (await tx.select().from(sentMentions).where(which).limit(1).for("update")).at(0);
+  await tx.delete(sentMentions).where(which);
+  const endpoint = before?.endpoint ?? null;
+  const row = { writeUpId, targetSha256, target, number, endpoint, state: "queued" as const, at: new Date() };
+  const [{ id }] = await tx.insert(sentMentions).values(row).$returningId();
+  return id;
 }
 
 /** With the public id of what tells it. */

@@ -1,4 +1,4 @@
-import { inTransaction, isDuplicate, type Transaction } from "~/db/client.server";
+import { inTransaction, isDuplicate, isOutcomeUnknown, type Transaction } from "~/db/client.server";
 import * as files from "~/db/files.server";
 import { newPublicId } from "~/db/ids.server";
 import * as jobs from "~/db/jobs.server";
@@ -129,6 +129,8 @@ export async function takeIn(input: TakeIn): Promise<Taken> {
         : { kind: "unread" as const, sweepPublicId: sweep.publicId, title, problem: outcome.problem };
     });
   } catch (error) {
+    // Its job removes it later, unless the sweep is there after all.
+    if (isOutcomeUnknown(error)) throw error;
     await deleteObject(storageKey).catch(() => undefined);
     if (!isDuplicate(error)) throw error;
     const first = await files.findBySha256(project.id, sha256);

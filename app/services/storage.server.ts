@@ -12,18 +12,22 @@ import { env } from "~/env.server";
 
 /** Originals and rendered files in an S3 bucket. What is stored is read back and compared once. */
 
-/** Bundles store and fetch in parts by it; all else goes through the functions here. */
-export const client = new S3Client({
-  region: env.S3_REGION,
-  endpoint: env.S3_ENDPOINT,
-  forcePathStyle: env.S3_FORCE_PATH_STYLE,
-  credentials: { accessKeyId: env.S3_ACCESS_KEY_ID, secretAccessKey: env.S3_SECRET_ACCESS_KEY },
-  requestChecksumCalculation: "WHEN_REQUIRED",
-  responseChecksumValidation: "WHEN_REQUIRED",
-  // A store that does not answer must not hold a request for ever: nothing moving for so long is an error.
-  requestHandler: { connectionTimeout: 3_000, socketTimeout: 10_000 },
-  maxAttempts: 2,
-});
+/** A store that does not answer must not hold a request for ever: nothing moving for `socketTimeout` ms is an error. */
+export function clientWith(socketTimeout: number, maxAttempts: number): S3Client {
+  return new S3Client({
+    region: env.S3_REGION,
+    endpoint: env.S3_ENDPOINT,
+    forcePathStyle: env.S3_FORCE_PATH_STYLE,
+    credentials: { accessKeyId: env.S3_ACCESS_KEY_ID, secretAccessKey: env.S3_SECRET_ACCESS_KEY },
+    requestChecksumCalculation: "WHEN_REQUIRED",
+    responseChecksumValidation: "WHEN_REQUIRED",
+    requestHandler: { connectionTimeout: 3_000, socketTimeout },
+    maxAttempts,
+  });
+}
+
+/** Bundles store and fetch in pieces by it; all else goes through the functions here. */
+export const client = clientWith(10_000, 2);
 
 export function sha256Of(bytes: Uint8Array): string {
   return createHash("sha256").update(bytes).digest("hex");

@@ -1,5 +1,6 @@
 import { eq } from "drizzle-orm";
-import { beforeEach, describe, expect, it } from "vitest";
+import { beforeEach, describe, expect, it, vi } from "vitest";
+import * as client from "~/db/client.server";
 import { db } from "~/db/client.server";
 import * as dips from "~/db/dips.server";
 import { newPublicId } from "~/db/ids.server";
@@ -121,6 +122,20 @@ describe("takeIn", () => {
     );
     expect(undo).toHaveLength(1);
     await expect(getObject((undo[0].payload as { key: string }).key)).rejects.toThrow();
+  });
+
+  it("keeps the original of a sweep that is there although the answer to its commit was lost", async () => {
+    const real = client.inTransaction;
+    const lost = vi.spyOn(client, "inTransaction").mockImplementation(async (work) => {
+      await real(work);
+      throw Object.assign(new Error("Connection lost"), { fatal: true });
+    });
+    const bytes = sweepFile(7.1);
+    await expect(taken(bytes)).rejects.toThrow("Connection lost");
+    lost.mockRestore();
+    expect(await taken(bytes)).toMatchObject({ kind: "twice" });
+    const [file] = await db.select().from(files).where(eq(files.projectId, project.id));
+    expect(sha256Of(await getObject(file.storageKey))).toBe(file.sha256);
   });
 
   it("removes an object that a killed upload left behind, and only that", async () => {

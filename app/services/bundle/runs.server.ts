@@ -1,6 +1,7 @@
 import * as runs from "~/db/bundle-runs.server";
 import { inTransaction } from "~/db/client.server";
 import * as jobs from "~/db/jobs.server";
+import * as people from "~/db/people.server";
 import * as projects from "~/db/projects.server";
 import { deleteObject } from "../storage.server.ts";
 import { KEPT_DAYS } from "./make.server.ts";
@@ -20,11 +21,14 @@ export function askForBundle(projectId: number, userId: number): Promise<Asked> 
 }
 
 /** The same for all data of a person. */
-export async function askForMine(userId: number): Promise<Asked> {
-  const open = (await runs.findByUser(userId, "mine")).find(isOpen);
-  if (open) return { run: open, there: true };
-  const run = await runs.insert({ kind: "mine", projectId: null, userId, expiresAt: expiry() });
-  return { run, there: false };
+export function askForMine(userId: number): Promise<Asked> {
+  return inTransaction(async (tx) => {
+    await people.lock(userId, tx);
+    const open = (await runs.findByUser(userId, "mine", tx)).find(isOpen);
+    if (open) return { run: open, there: true };
+    const run = await runs.insert({ kind: "mine", projectId: null, userId, expiresAt: expiry() }, tx);
+    return { run, there: false };
+  });
 }
 
 export interface Asked {

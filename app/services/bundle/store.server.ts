@@ -10,7 +10,7 @@ import {
 import { Upload } from "@aws-sdk/lib-storage";
 import { env } from "~/env.server";
 import { log } from "../log.server.ts";
-import { client } from "../storage.server.ts";
+import { client, clientWith } from "../storage.server.ts";
 
 /** Objects that are too large to be held: written and read as streams, and written in parts that outlive a process. */
 
@@ -56,16 +56,21 @@ export class PartUpload {
 
   async finish(): Promise<void> {
     if (this.waiting > 0 || this.state.parts.length === 0) await this.send();
-    await client.send(
-      new CompleteMultipartUploadCommand({
-        Bucket: env.S3_BUCKET,
-        Key: this.key,
-        UploadId: this.state.uploadId,
-        MultipartUpload: {
-          Parts: this.state.parts.map(({ number, etag }) => ({ PartNumber: number, ETag: etag })),
-        },
-      }),
-    );
+    const command = new CompleteMultipartUploadCommand({
+      Bucket: env.S3_BUCKET,
+      Key: this.key,
+      UploadId: this.state.uploadId,
+      MultipartUpload: {
+        Parts: this.state.parts.map(({ number, etag }) => ({ PartNumber: number, ETag: etag })),
+      },
+    });
+    await persistently(async (attempt) => {
+      await finisher.send(command).catch(async (error) => {
+        // The store did it, and only its answer was lost.
+        const done = attempt > 1 && error.name === "NoSuchUpload" && (await sizeOf(this.key)) > 0;
+        if (!done) throw error;
+      });
+    });
   }
 
   abort(): Promise<void> {
@@ -75,21 +80,42 @@ export class PartUpload {
   private async send(): Promise<void> {
     const body = Buffer.concat(this.chunks);
     const number = this.state.parts.length + 1;
-    const sent = await client.send(
-      new UploadPartCommand({
-        Bucket: env.S3_BUCKET,
-        Key: this.key,
-        UploadId: this.state.uploadId,
-        PartNumber: number,
-        Body: body,
-        ContentLength: body.length,
-      }),
-    );
+    const command = new UploadPartCommand({
+      Bucket: env.S3_BUCKET,
+      Key: this.key,
+      UploadId: this.state.uploadId,
+      PartNumber: number,
+      Body: body,
+      ContentLength: body.length,
+    });
+    const sent = await persistently(() => sender.send(command));
     if (!sent.ETag) throw new Error(`The store did not acknowledge part ${number} of ${this.key}.`);
     this.state.parts.push({ number, etag: sent.ETag });
     this.chunks = [];
     this.waiting = 0;
   }
+}
+
+/** Again and again where the store does not answer or has a fault: an upload of hours is not lost for half a minute of that. */
+export async function persistently<T>(
+  work: (attempt: number) => Promise<T>,
+  waitsMs: readonly number[] = WAITS_MS,
+): Promise<T> {
+  for (let attempt = 1; ; attempt++) {
+    try {
+      return await work(attempt);
+    } catch (error) {
+      if (attempt > waitsMs.length || isRefusal(error)) throw error;
+      log.warn({ err: error, attempt }, "the store did not take a part; it is tried again");
+      await new Promise((resolve) => setTimeout(resolve, waitsMs[attempt - 1]));
+    }
+  }
+}
+
+/** What the store understood and does not do, so that no second try helps. */
+function isRefusal(error: unknown): boolean {
+  const status = (error as { $metadata?: { httpStatusCode?: number } }).$metadata?.httpStatusCode ?? 0;
+  return status >= 400 && status < 500 && status !== 408 && status !== 429;
 }
 
 /** Gives an upload up. One that is not known any more is no error, and no other stops what it is given up for. */
@@ -127,6 +153,12 @@ export async function* readPieces(key: string, from = 0, to?: number): AsyncGene
   }
 }
 
+/** Of a part, which is up to 8 MB: a store on a busy disk was seen to answer after more than 10 s. */
+const sender = clientWith(30_000, 1);
+/** Putting the parts together may take the store minutes (seen here: 400 MB in more than 10 s). */
+const finisher = clientWith(5 * 60_000, 1);
+/** Together 31 s, beside what each try takes itself. */
+const WAITS_MS = [1000, 2000, 4000, 8000, 16_000];
 const MEGABYTE = 1024 * 1024;
 /** The least that a store takes as a part that is not the last (S3: 5 MB). */
 const LEAST_PART_BYTES = 5 * MEGABYTE;

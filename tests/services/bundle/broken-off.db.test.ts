@@ -193,7 +193,8 @@ describe("all my data", () => {
     );
     const bytes = new Uint8Array(Buffer.from("no numbers, but mine"));
     await takeIn({ project, by: bram, file: { name: "own.txt", bytes }, keepUnread: true });
-    const asked = await askForMine(bram.id);
+    const [asked, twice] = await Promise.all([askForMine(bram.id), askForMine(bram.id)]);
+    expect([twice.run.publicId, asked.there !== twice.there]).toEqual([asked.run.publicId, true]);
     await workOnBundles();
     const zip = await bundleOf(asked.run.publicId);
     expect(zip.includes("no numbers, but mine")).toBe(true);

@@ -231,6 +231,25 @@ describe("3.1 sending", () => {
     expect(await states()).toEqual({});
   });
 
+  it("a put-off try to tell that a link is gone does nothing once the link is back", async () => {
+    pages["/one"] = html('<link rel="webmention" href="/tell">');
+    pages["/tell"] = (_, response) => void response.writeHead(asked.length < 3 ? 200 : 503).end();
+    const writeUp = await published(`[1](${site}/one)`);
+    await work();
+    await publishAgain(writeUp, "nothing");
+    await work();
+    const late = await due("send-mention");
+    expect(late).toMatchObject([{ payload: { removed: true, attempt: 2 } }]);
+    pages["/tell"] = (_, response) => void response.writeHead(200).end();
+    await publishAgain(writeUp, `[1](${site}/one)`);
+    await work();
+    asked = [];
+    await db.update(jobs).set({ runAt: new Date() }).where(eq(jobs.id, late[0].id));
+    await work();
+    expect(asked).toEqual([]);
+    expect(await states()).toEqual({ [`${site}/one`]: "sent" });
+  });
+
   it("finds the endpoint after redirects, relative to where they end", async () => {
     pages["/old"] = (_, response) => void response.writeHead(301, { Location: "/new/page" }).end();
     pages["/new/page"] = (_, response) => {
