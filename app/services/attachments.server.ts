@@ -1,5 +1,5 @@
 import * as attachments from "~/db/attachments.server";
-import { inTransaction, type Transaction } from "~/db/client.server";
+import { inTransaction, isOutcomeUnknown, type Transaction } from "~/db/client.server";
 import { newPublicId } from "~/db/ids.server";
 import * as jobs from "~/db/jobs.server";
 import { cleanFileName } from "./file-names.ts";
@@ -67,6 +67,8 @@ export async function addAttachment({ project, by, file }: NewAttachment): Promi
     const markdown = `${found.copies ? "!" : ""}[${asLabel(name)}](attachment:${publicId})`;
     return { kind: "added", publicId, markdown };
   } catch (error) {
+    // Their jobs remove them later, unless the row is there after all.
+    if (isOutcomeUnknown(error)) throw error;
     await Promise.all(objects.map(({ key }) => deleteObject(key).catch(() => undefined)));
     throw error;
   }

@@ -1,4 +1,4 @@
-import { inTransaction, type Transaction } from "~/db/client.server";
+import { inTransaction, isOutcomeUnknown, type Transaction } from "~/db/client.server";
 import { newPublicId } from "~/db/ids.server";
 import * as jobs from "~/db/jobs.server";
 import * as photographs from "~/db/photographs.server";
@@ -97,6 +97,8 @@ export async function addPhotograph({
     });
     return { kind: "added", publicId };
   } catch (error) {
+    // Their jobs remove them later, unless the row is there after all.
+    if (isOutcomeUnknown(error)) throw error;
     await Promise.all(objects.map(({ key }) => deleteObject(key).catch(() => undefined)));
     throw error;
   }

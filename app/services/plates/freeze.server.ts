@@ -1,4 +1,4 @@
-import { inTransaction } from "~/db/client.server";
+import { inTransaction, isOutcomeUnknown } from "~/db/client.server";
 import * as files from "~/db/files.server";
 import { newPublicId } from "~/db/ids.server";
 import * as jobs from "~/db/jobs.server";
@@ -122,7 +122,8 @@ async function freezeAs(
     if (done === "taken" || "problem" in done) await removeForms(stored);
     return done;
   } catch (error) {
-    await removeForms(stored);
+    // Their jobs remove them later, unless the plate is there after all.
+    if (!isOutcomeUnknown(error)) await removeForms(stored);
     throw error;
   }
 }
