@@ -1,4 +1,4 @@
-import { and, asc, desc, eq, inArray, isNotNull, lt, or, sql } from "drizzle-orm";
+import { and, asc, desc, eq, inArray, isNotNull, lt, or } from "drizzle-orm";
 import { db, inTransaction, type Queryable } from "./client.server.ts";
 import { newPublicId } from "./ids.server.ts";
 import { bundleRuns, projects } from "./schema/index.ts";
@@ -152,7 +152,7 @@ export async function deleteExpired(now = new Date(), tx: Queryable = db) {
       and(
         inArray(bundleRuns.kind, ["export", "import", "mine"]),
         inArray(bundleRuns.state, ["done", "failed"]),
-        lt(bundleRuns.expiresAt, sql`${new Date(now.getTime() - DAY_MS)}`),
+        lt(bundleRuns.expiresAt, new Date(now.getTime() - DAY_MS)),
       ),
     );
 }

@@ -85,7 +85,6 @@ export async function findIds(filter: DipFilter, order: DipOrder, tx: Queryable 
     .innerJoin(sweeps, eq(sweeps.id, dips.sweepId))
     .leftJoin(trailDips, eq(trailDips.dipId, dips.id))
     .leftJoin(trails, eq(trails.id, trailDips.trailId))
-
     .where(wanted(filter))
     .orderBy(...inOrder(order))
     .limit(MOST_IDS);

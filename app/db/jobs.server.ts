@@ -54,6 +54,11 @@ export async function deleteById(id: number, tx: Queryable = db) {
   await tx.delete(jobs).where(eq(jobs.id, id));
 }
 
+/** In one statement. */
+export async function deleteAllByIds(ids: readonly number[], tx: Queryable = db) {
+  if (ids.length > 0) await tx.delete(jobs).where(inArray(jobs.id, [...ids]));
+}
+
 export async function putOff(id: number, runAt: Date, lastError: string, tx: Queryable = db) {
   await tx.update(jobs).set({ runAt, lockedUntil: null, lastError }).where(eq(jobs.id, id));
 }

@@ -172,7 +172,7 @@ export async function findPublished(projectId: number, limit: number, tx: Querya
     .limit(limit);
 }
 
-/** What became of plates that a write-up shows: withdrawn, and whether there is a newer version. */
+/** Plates that a write-up shows, as they are now; one that is not here is missing. */
 export async function findPlates(publicIds: readonly string[], tx: Queryable = db) {
   if (publicIds.length === 0) return [];
   return tx

@@ -4,6 +4,7 @@ import type { BenchForCorrection, BenchReferences } from "~/measurement/correcti
 import type { ReadAs } from "~/measurement/correction/scale-faults";
 import type { Sweep } from "~/measurement/sweep";
 import { readAsOf } from "./correction.server.ts";
+import { formatDate } from "./dates.ts";
 import { loadPoints } from "./sweep-points.server.ts";
 
 /** A version of a bench with the points of its references, ready for `correctSweep` and `qualifyBench`. */
@@ -43,7 +44,7 @@ export async function benchForSweep(sweep: {
   const first = await benches.findFirstVersion(bench.id);
   const taken = sweep.takenAt ? "was taken" : "has no date of its own and came in";
   const message = first
-    ? `The bench “${bench.name}” is described from ${dayOf(first.validFrom)} on, and the sweep ${taken} on ${dayOf(at)}. It is not corrected: correct the date of the sweep, or say on the bench's page since when it has been as it is.`
+    ? `The bench “${bench.name}” is described from ${formatDate(first.validFrom)} on, and the sweep ${taken} on ${formatDate(at)}. It is not corrected: correct the date of the sweep, or say on the bench's page since when it has been as it is.`
     : `The bench “${bench.name}” has no version. The sweep is not corrected: describe the bench first.`;
   return { kind: "problem", code: "bench-later", message, bench };
 }
@@ -86,10 +87,6 @@ export async function usableBenches(projectId: number): Promise<benches.ListedBe
 export async function usableBenchId(publicId: string, projectId: number): Promise<number | undefined> {
   const found = await benches.findByPublicId(publicId);
   return found && (await benches.isUsableIn(found.bench, projectId)) ? found.bench.id : undefined;
-}
-
-function dayOf(at: Date): string {
-  return at.toISOString().slice(0, 10);
 }
 
 const GONE =

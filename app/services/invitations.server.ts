@@ -5,6 +5,7 @@ import * as invitations from "~/db/invitations.server";
 import * as people from "~/db/people.server";
 import * as projects from "~/db/projects.server";
 import { env } from "~/env.server";
+import { formatDate } from "./dates.ts";
 import { record } from "./events.server.ts";
 import { queueMail } from "./outbox.server.ts";
 import { takeOne } from "./rate-limit.server.ts";
@@ -106,7 +107,7 @@ async function isUnwanted(email: string, byId: number, tx: Transaction): Promise
 
 function mailOf(invite: Omit<Invite, "days"> & { email: string; path: string; expiresAt: Date }) {
   const { project, by, role, email, path, expiresAt } = invite;
-  const until = expiresAt.toISOString().slice(0, 10);
+  const until = formatDate(expiresAt);
   return {
     toAddress: email,
     subject: `${by.name} invites you to “${project.title}”`,

@@ -1,7 +1,7 @@
 import { describe, expect, it } from "vitest";
 import { themeCookie, themeFromCookie } from "../../app/components/theme.ts";
-import { formatDate, formatDateTime, formatRelative } from "../../app/components/ui/dates.ts";
 import { nextSort, parseSort, sortRows } from "../../app/components/ui/sort.ts";
+import { formatDate, formatDateTime, formatRelative } from "../../app/services/dates.ts";
 
 describe("theme", () => {
   it("comes back from the cookie it was kept in", () => {

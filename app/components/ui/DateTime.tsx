@@ -1,4 +1,4 @@
-import { formatDate, formatDateTime, formatRelative } from "./dates";
+import { formatDate, formatDateTime, formatRelative } from "~/services/dates";
 
 interface At {
   /** ISO string or Date; always shown in UTC. */

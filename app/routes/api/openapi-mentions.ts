@@ -1,5 +1,5 @@
 import { mentionQuerySchema } from "./mention-schemas.ts";
-import { inPath, inQuery, operation, type PathItem, reference } from "./openapi-parts.ts";
+import { inPath, inQuery, jsonBody, operation, type PathItem } from "./openapi-parts.ts";
 
 /** Paths of the OpenAPI document about pages elsewhere that cite something here. */
 export const MENTION_PATHS: Record<string, PathItem> = {
@@ -32,10 +32,7 @@ export const MENTION_PATHS: Record<string, PathItem> = {
       operationId: "decideOnMention",
       summary: "Show it to readers, hide it, or have its page looked up again",
       parameters: [inPath("mention")],
-      requestBody: {
-        required: true,
-        content: { "application/json": { schema: reference("MentionDecision") } },
-      },
+      requestBody: jsonBody("MentionDecision"),
       answer: "Mention",
       refusals: ["400", "409", "411", "413", "415", "422"],
     }),

@@ -84,6 +84,12 @@ export function componentSchemas() {
 
 export const reference = (name: Name) => ({ $ref: `#/components/schemas/${name}` });
 
+/** A body in JSON that has to be there. */
+export const jsonBody = (name: Name) => ({
+  required: true,
+  content: { "application/json": { schema: reference(name) } },
+});
+
 export function problemResponse() {
   return {
     description: "What happened, what is safe, what to do",

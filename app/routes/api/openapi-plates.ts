@@ -1,4 +1,4 @@
-import { inPath, operation, type PathItem, reference } from "./openapi-parts.ts";
+import { inPath, jsonBody, operation, type PathItem } from "./openapi-parts.ts";
 
 /** Paths of the OpenAPI document about plates. */
 export const PLATE_PATHS: Record<string, PathItem> = {
@@ -13,7 +13,7 @@ export const PLATE_PATHS: Record<string, PathItem> = {
       operationId: "makePlate",
       summary: "Freeze a figure with its numbers; anyone who has its address can read it from then on",
       parameters: [inPath("project")],
-      requestBody: { required: true, content: { "application/json": { schema: reference("NewPlate") } } },
+      requestBody: jsonBody("NewPlate"),
       status: "201",
       answer: "Plate",
       refusals: ["400", "411", "413", "415", "422"],
@@ -44,10 +44,7 @@ export const PLATE_PATHS: Record<string, PathItem> = {
       operationId: "withdrawPlate",
       summary: "Withdraw it for good: its address says why from then on",
       parameters: [inPath("plate")],
-      requestBody: {
-        required: true,
-        content: { "application/json": { schema: reference("PlateWithdrawal") } },
-      },
+      requestBody: jsonBody("PlateWithdrawal"),
       answer: "WithdrawnPlate",
       refusals: ["400", "410", "411", "413", "415", "422"],
     }),

@@ -1,4 +1,4 @@
-import { inPath, inQuery, type Operation, operation, reference } from "./openapi-parts.ts";
+import { inPath, inQuery, jsonBody, type Operation, operation } from "./openapi-parts.ts";
 import { antennaQuerySchema } from "./story-schemas.ts";
 
 /** Paths of the OpenAPI document that tell the experiment's story. */
@@ -23,7 +23,7 @@ export const STORY_PATHS: Record<string, { get?: Operation; post?: Operation }> 
       operationId: "makeStep",
       summary: "Write a step down; what it changes of the antenna is changed with it",
       parameters: [inPath("project")],
-      requestBody: { required: true, content: { "application/json": { schema: reference("NewStep") } } },
+      requestBody: jsonBody("NewStep"),
       status: "201",
       answer: "Step",
       refusals: ["400", "411", "413", "415", "422"],

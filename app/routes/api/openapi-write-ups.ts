@@ -1,4 +1,4 @@
-import { inPath, inQuery, operation, type PathItem, reference } from "./openapi-parts.ts";
+import { inPath, inQuery, jsonBody, operation, type PathItem } from "./openapi-parts.ts";
 import { writeUpQuerySchema } from "./write-up-schemas.ts";
 
 /** Paths of the OpenAPI document for write-ups. */
@@ -15,10 +15,7 @@ export const WRITE_UP_PATHS: Record<string, PathItem> = {
       operationId: "makeWriteUp",
       summary: "Begin a write-up; it is a draft until somebody publishes it",
       parameters: [inPath("project")],
-      requestBody: {
-        required: true,
-        content: { "application/json": { schema: reference("NewWriteUp") } },
-      },
+      requestBody: jsonBody("NewWriteUp"),
       status: "201",
       answer: "WriteUp",
       refusals: ["400", "411", "413", "415", "422"],
@@ -36,10 +33,7 @@ export const WRITE_UP_PATHS: Record<string, PathItem> = {
       operationId: "changeWriteUp",
       summary: "Change the draft; what is published stays as it is",
       parameters: [inPath("writeUp")],
-      requestBody: {
-        required: true,
-        content: { "application/json": { schema: reference("WriteUpChange") } },
-      },
+      requestBody: jsonBody("WriteUpChange"),
       answer: "WriteUp",
       refusals: ["400", "409", "411", "413", "415", "422"],
     }),
@@ -58,10 +52,7 @@ export const WRITE_UP_PATHS: Record<string, PathItem> = {
       summary:
         "Publish the draft as its next version, with its figures and numbers kept as they are now; anyone who has its address reads it from then on, also of a private project",
       parameters: [inPath("writeUp")],
-      requestBody: {
-        required: true,
-        content: { "application/json": { schema: reference("Publication") } },
-      },
+      requestBody: jsonBody("Publication"),
       answer: "WriteUp",
       refusals: ["400", "409", "411", "413", "415", "422"],
     }),

@@ -1,4 +1,5 @@
 import * as plates from "~/db/plates.server";
+import { formatDate } from "~/services/dates";
 import { absent } from "./access.server.ts";
 import type { Call } from "./endpoint.server.ts";
 import { problem } from "./problem.ts";
@@ -8,7 +9,6 @@ export async function requireStanding(call: Call): Promise<plates.PlateRow> {
   const found = await plates.findByPublicId(call.params.plate ?? "");
   if (!found) throw absent("plate");
   if (!found.withdrawnAt) return found;
-  const day = found.withdrawnAt.toISOString().slice(0, 10);
-  const detail = `This plate was withdrawn on ${day}: ${found.withdrawnReason}`;
+  const detail = `This plate was withdrawn on ${formatDate(found.withdrawnAt)}: ${found.withdrawnReason}`;
   throw problem({ status: 410, code: "withdrawn", detail });
 }

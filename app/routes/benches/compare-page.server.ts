@@ -1,11 +1,11 @@
 import type { ProjectAccess } from "~/auth/require.server";
-import { formatDate } from "~/components/ui/dates";
 import * as benches from "~/db/benches.server";
 import { notFound } from "~/errors";
 import { compareBenches } from "~/measurement/correction/compare";
 import { qualifyBench } from "~/measurement/correction/qualify";
 import { maySeeBench } from "~/services/bench-access.server";
 import { loadBench, usableBenches } from "~/services/bench-sweeps.server";
+import { formatDate } from "~/services/dates";
 import { numbersOf } from "./bench-page.server";
 import { benchScene } from "./bench-scene";
 import type { Wish } from "./benches.schema";

@@ -1,13 +1,13 @@
 import type { FrequencyScaleKind } from "~/charts/axis";
 import type { ChartPoints } from "~/charts/decimate";
 import { buildStripScene, type StripStep } from "~/charts/strip-scene";
-import { formatDate, formatDateShort } from "~/components/ui/dates";
 import type { Project } from "~/db/projects.server";
 import * as projects from "~/db/projects.server";
 import * as steps from "~/db/steps.server";
 import * as story from "~/db/story.server";
 import * as trails from "~/db/trails.server";
 import { bandsOverlapping, type ItuRegion } from "~/measurement/bands";
+import { formatDate, formatDateShort } from "~/services/dates";
 import { decodePoints } from "~/services/points.server";
 import { loadManyPoints } from "~/services/sweep-points.server";
 import { parseStripView, type StripView } from "./components/strip/strip.schema.ts";

@@ -1,7 +1,7 @@
-import { formatDate } from "~/components/ui/dates";
 import type { StoredCorrection } from "~/db/schema";
 import type { Plane } from "~/measurement/sweep";
 import { formatFrequency } from "~/measurement/units";
+import { formatDate } from "~/services/dates";
 
 /** The names of the planes, as switches and lists have them. */
 export const PLANE_WORDS: Record<Plane, string> = {

@@ -1,6 +1,5 @@
 import type { ProjectAccess } from "~/auth/require.server";
 import { movementWords } from "~/charts/trail-words";
-import { formatDate } from "~/components/ui/dates";
 import * as projects from "~/db/projects.server";
 import * as steps from "~/db/steps.server";
 import * as trailStops from "~/db/trail-stops.server";
@@ -10,6 +9,7 @@ import { completeDip } from "~/measurement/dips/complete";
 import { agree } from "~/measurement/trails/decisions";
 import { type TrailEvent, trailEvents } from "~/measurement/trails/events";
 import { formatFrequency } from "~/measurement/units";
+import { formatDate } from "~/services/dates";
 import { plainText } from "~/services/markdown.server";
 import { listThread } from "~/services/note-thread.server";
 import { decisionOf, loadTrailSweeps } from "~/services/trails.server";

@@ -1,4 +1,5 @@
 import { PAPER_PALETTE, type Palette, PEAT_PALETTE } from "~/charts/palette";
+import { formatDate } from "~/services/dates";
 import { escapeHtml } from "~/services/html-text";
 import type { Article } from "~/services/markdown.server";
 import { licenceOf } from "~/services/plates/licences";
@@ -19,7 +20,7 @@ export function htmlDocument(
   const { version, project, frozen } = publication;
   const people = peopleOf(publication).join(" and ");
   const address = addressOf(publication, origin);
-  const day = version.publishedAt.toISOString().slice(0, 10);
+  const day = formatDate(version.publishedAt);
   const licence = licenceOf(frozen.licence);
   const title = escapeHtml(version.title);
   const licenceWords = licence?.address

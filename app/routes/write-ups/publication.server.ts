@@ -1,6 +1,7 @@
 import { createHash } from "node:crypto";
 import { data } from "react-router";
 import { notFound, type PlainError } from "~/errors";
+import { formatDate } from "~/services/dates";
 import { attachment } from "~/services/file-names";
 import { type Publication, plateStates, seek } from "~/services/write-ups/published.server";
 
@@ -55,9 +56,9 @@ async function etagOf({ version, frozen }: Publication, form: string): Promise<s
 }
 
 function takenBack(at: Date) {
-  const message = `Its authors took it back on ${at.toISOString().slice(0, 10)}. It may be published again at this address; ask them for it.`;
+  const message = `Its authors took it back on ${formatDate(at)}. It may be published again at this address; ask them for it.`;
   return data<PlainError>({ title: "This write-up was taken back", message }, { status: 410 });
 }
 
 /** Raised when a form of the same version comes out otherwise. */
-const FORMS_VERSION = 1;
+const FORMS_VERSION = 2;

@@ -1,4 +1,6 @@
+import { completeDip, type StoredDip } from "../../measurement/dips/complete.ts";
 import { formatFrequency, formatSwr } from "../../measurement/units.ts";
+import { formatDate, formatDateTime } from "../dates.ts";
 import { escapeHtml } from "../html-text.ts";
 import { renderNote } from "../markdown.server.ts";
 import type { Rec } from "./records.ts";
@@ -17,6 +19,11 @@ export interface Overview {
   origin: string;
 }
 
+export type ShownNumbers = Pick<
+  StoredDip,
+  "frequencyHz" | "frequencyUncertaintyHz" | "minimumSwr" | "minimumSwrLow" | "minimumSwrHigh"
+>;
+
 export function indexPage(all: Overview): string {
   const { project } = all;
   const of = (kind: string) => all.records.get(kind) ?? [];
@@ -28,7 +35,7 @@ export function indexPage(all: Overview): string {
         ? "<p><b>Invented data.</b> People, places, call signs and numbers are made up.</p>"
         : "",
       renderNote(String(project.summary)),
-      `<p class="soft">A bundle of ${escapeHtml(all.origin)}, made ${all.madeAt}. It is a BagIt bag (RFC 8493): <code>manifest-sha256.txt</code> beside this folder has the checksum of every file. What the files hold is written in <a href="README.md">README.md</a>.</p>`,
+      `<p class="soft">A bundle of ${escapeHtml(all.origin)}, made ${formatDateTime(all.madeAt)}. It is a BagIt bag (RFC 8493): <code>manifest-sha256.txt</code> beside this folder has the checksum of every file. What the files hold is written in <a href="README.md">README.md</a>.</p>`,
       section(
         "People",
         list(all.people.map(({ name, role }) => `${escapeHtml(name)}${role ? `, ${role}` : ""}`)),
@@ -57,7 +64,7 @@ export function indexPage(all: Overview): string {
         of("steps")
           .map(
             (s) =>
-              `<h3>${escapeHtml(String(s.title))}</h3><p class="soft">${s.state}${s.at ? `, ${day(s.at)}` : ""}</p>${renderNote(String(s.body))}`,
+              `<h3>${escapeHtml(String(s.title))}</h3><p class="soft">${s.state}${s.at ? `, ${formatDate(String(s.at))}` : ""}</p>${renderNote(String(s.body))}`,
           )
           .join(""),
       ),
@@ -114,12 +121,18 @@ function sweepPart(sweep: Rec, all: Overview): string {
   ].filter(Boolean);
   const rows = dips.map(
     (dip) =>
-      `<tr><td>${hz(dip.frequencyHz)}</td><td>${formatSwr(dip.minimumSwr as number | null)}</td><td>${dip.verdict}</td><td>${escapeHtml(String(dip.verdictText))}</td></tr>`,
+      `<tr>${numberCells(dip.numbers as ShownNumbers)}<td>${dip.verdict}</td><td>${escapeHtml(String(dip.verdictText))}</td></tr>`,
   );
-  const when = sweep.takenAt ? `taken ${day(sweep.takenAt)}` : "day not known";
+  const when = sweep.takenAt ? `taken ${formatDate(String(sweep.takenAt))}` : "day not known";
   return `<section id="sweep-${id}"><h3>${escapeHtml(String(sweep.title))}</h3><p class="soft">${when}${sweep.purpose === "reference" ? ", a bench's reference" : ""} · ${links.join(" · ")}</p>${
     all.figures.has(id) ? `<img src="figures/${id}.svg" alt="Return loss over frequency" loading="lazy">` : ""
-  }${rows.length > 0 ? `<table><thead><tr><th>Dip</th><th>Lowest SWR</th><th>Verdict</th><th>Cause</th></tr></thead><tbody>${rows.join("")}</tbody></table>` : ""}</section>`;
+  }${rows.length > 0 ? `<table><thead><tr><th>Dip</th><th>Lowest SWR (limits)</th><th>Verdict</th><th>Cause</th></tr></thead><tbody>${rows.join("")}</tbody></table>` : ""}</section>`;
+}
+
+function numberCells(numbers: ShownNumbers): string {
+  const { frequencyHz, frequencyUncertaintyHz, ...dip } = completeDip(numbers as StoredDip);
+  const frequency = formatFrequency(frequencyHz, frequencyUncertaintyHz);
+  return `<td>${frequency}</td><td>${formatSwr(dip.minimumSwr, dip.minimumSwrLow, dip.minimumSwrHigh)}</td>`;
 }
 
 export function page(title: string, body: string): string {
@@ -147,10 +160,6 @@ function href(path: unknown): string {
 
 function hz(value: unknown): string {
   return formatFrequency(value as number);
-}
-
-function day(at: unknown): string {
-  return String(at).slice(0, 10);
 }
 
 function orderOf(sweep: Rec): string {

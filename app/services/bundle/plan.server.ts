@@ -2,10 +2,11 @@ import { type BundleKind, columnsOf, fieldOf, KINDS, type KindName } from "~/db/
 import * as rows from "~/db/bundle-rows.server";
 import type { Queryable } from "~/db/client.server";
 import { env } from "~/env.server";
+import type { StoredDip } from "~/measurement/dips/complete";
 import { annotationOf } from "./annotations.ts";
 import { contentsOf } from "./contents.ts";
 import { planCurves, previewPath } from "./curves.server.ts";
-import { indexPage, type Overview } from "./pages.ts";
+import { indexPage, type Overview, type ShownNumbers } from "./pages.ts";
 import { nameOfPerson } from "./placeholders.ts";
 import { type PlanLine, textEntry } from "./plan.ts";
 import { README, schemaText } from "./readme.ts";
@@ -181,8 +182,18 @@ function isNew(line: PlanLine, seen: Set<string>): boolean {
 
 /** Without what is long and not shown by the index. */
 function slim(record: Rec): Rec {
-  const { numbers: _n, reading, given: _g, quantities: _q, expected: _e, ...rest } = record;
-  return { ...rest, ...(typeof reading === "string" ? { reading } : {}) };
+  const { numbers, reading, given: _g, quantities: _q, expected: _e, ...rest } = record;
+  return {
+    ...rest,
+    ...(typeof reading === "string" && { reading }),
+    ...(numbers !== undefined && { numbers: shownOf(numbers as StoredDip) }),
+  };
+}
+
+/** Of a dip's numbers, those that the index shows. */
+function shownOf(numbers: StoredDip): ShownNumbers {
+  const { frequencyHz, frequencyUncertaintyHz, minimumSwr, minimumSwrLow, minimumSwrHigh } = numbers;
+  return { frequencyHz, frequencyUncertaintyHz, minimumSwr, minimumSwrLow, minimumSwrHigh };
 }
 
 function recordsText(kind: string, records: Rec[]): string {

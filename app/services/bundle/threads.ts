@@ -1,3 +1,4 @@
+import { formatDateTime } from "../dates.ts";
 import { escapeHtml } from "../html-text.ts";
 import { renderNote } from "../markdown.server.ts";
 import { NO_LINKS, type NoteLinks } from "../markdown-links.ts";
@@ -17,7 +18,7 @@ export interface ThreadNote {
 /** A thread as Markdown: answers are set in under what they answer. */
 export function threadMarkdown(title: string, notes: ThreadNote[]): string {
   const texts = inOrder(notes).map(({ note, depth }) => {
-    const text = `**${note.author}**, ${stamp(note.at)}${note.edited ? ", edited" : ""}\n\n${bodyOf(note)}`;
+    const text = `**${note.author}**, ${formatDateTime(note.at)}${note.edited ? ", edited" : ""}\n\n${bodyOf(note)}`;
     return text
       .split("\n")
       .map((line) => `${"> ".repeat(depth)}${line}`.trimEnd())
@@ -29,7 +30,7 @@ export function threadMarkdown(title: string, notes: ThreadNote[]): string {
 export function threadHtml(title: string, notes: ThreadNote[], links: NoteLinks = NO_LINKS): string {
   const items = inOrder(notes).map(
     ({ note, depth }) =>
-      `<article id="note-${note.id}" class="note" style="margin-left:${depth * 2}rem"><p class="soft"><b>${escapeHtml(note.author)}</b>, ${stamp(note.at)}${note.edited ? ", edited" : ""}</p>${renderNote(bodyOf(note), links)}</article>`,
+      `<article id="note-${note.id}" class="note" style="margin-left:${depth * 2}rem"><p class="soft"><b>${escapeHtml(note.author)}</b>, ${formatDateTime(note.at)}${note.edited ? ", edited" : ""}</p>${renderNote(bodyOf(note), links)}</article>`,
   );
   return page(`Notes on ${title}`, `<p><a href="../index.html">The project</a></p>${items.join("")}`);
 }
@@ -57,10 +58,6 @@ function inOrder(notes: ThreadNote[]): { note: ThreadNote; depth: number }[] {
     for (const note of [...(answers.get(next.note.id) ?? [])].reverse()) left.push({ note, depth: deeper });
   }
   return told;
-}
-
-export function stamp(at: Date): string {
-  return `${at.toISOString().slice(0, 16).replace("T", " ")} UTC`;
 }
 
 const DEEPEST = 4;

@@ -1,3 +1,4 @@
+import { formatDate } from "../dates.ts";
 import type { PlateRecord } from "./record.ts";
 
 /** How a plate is cited. Pure. */
@@ -6,12 +7,12 @@ import type { PlateRecord } from "./record.ts";
 export function bibtex(record: PlateRecord): string {
   const at = new Date(record.madeAt);
   const fields: [string, string][] = [
-    // Doubled braces: a name is taken as it stands, whether of a person or of a club.
+    // Doubled braces: a name is taken as it stands, whether of a person or of a club, and a title keeps its MHz.
     ["author", `{${tex(record.madeBy)}}`],
     ["title", `{${tex(record.title)}}`],
     ["howpublished", tex(`${plateWords(record)} of “${record.project.title}”`)],
     ["year", String(at.getUTCFullYear())],
-    ["month", MONTHS[at.getUTCMonth()].slice(0, 3).toLowerCase()],
+    ["month", MONTHS[at.getUTCMonth()]],
     ["url", record.address],
     ["note", tex(record.licence.name)],
   ];
@@ -37,10 +38,10 @@ export function cslJson(record: PlateRecord): string {
   return `${JSON.stringify([item], null, 2)}\n`;
 }
 
-/** `Ada Marsh: “…”, plate 3 of “…”, 1 December 2026, https://…` */
+/** `Ada Marsh: “…”, plate 3 of “…”, 1 Dec 2026, https://…` */
 export function sentence(record: PlateRecord): string {
   const { madeBy, title, project, address } = record;
-  return `${madeBy}: “${title}”, ${lowerFirst(plateWords(record))} of “${project.title}”, ${dayOf(record)}, ${address}`;
+  return `${madeBy}: “${title}”, ${lowerFirst(plateWords(record))} of “${project.title}”, ${formatDate(record.madeAt)}, ${address}`;
 }
 
 interface CopyTexts {
@@ -75,7 +76,7 @@ export function copyTexts(record: PlateRecord): CopyTexts {
       "\\begin{figure}",
       "  \\centering",
       `  \\includegraphics[width=\\linewidth]{${keyOf(record)}.pdf}`,
-      `  \\caption{${tex(title)}. ${tex(`${record.madeBy}, ${lowerFirst(plateWords(record))} of “${record.project.title}”, ${dayOf(record)}`)}, \\url{${address}} (${tex(licence.name)}).}`,
+      `  \\caption{${tex(title)}. ${tex(`${record.madeBy}, ${lowerFirst(plateWords(record))} of “${record.project.title}”, ${formatDate(record.madeAt)}`)}, \\url{${address}} (${tex(licence.name)}).}`,
       "\\end{figure}",
       "",
     ].join("\n"),
@@ -89,11 +90,6 @@ function plateWords({ number, version }: PlateRecord): string {
 
 function keyOf({ id }: PlateRecord): string {
   return `swale-plate-${id}`;
-}
-
-function dayOf({ madeAt }: PlateRecord): string {
-  const at = new Date(madeAt);
-  return `${at.getUTCDate()} ${MONTHS[at.getUTCMonth()]} ${at.getUTCFullYear()}`;
 }
 
 function lowerFirst(text: string): string {
@@ -122,20 +118,8 @@ function html(text: string): string {
 
 /** Text that no Markdown reader takes for anything else; an address stays one. */
 function markdown(text: string): string {
-  return text.replace(/[\\`*_[\]<>#|!~]/g, "\\$&");
+  return text.replace(/[\\`*_[\]<>#|!~&]/g, "\\$&");
 }
 
-const MONTHS = [
-  "January",
-  "February",
-  "March",
-  "April",
-  "May",
-  "June",
-  "July",
-  "August",
-  "September",
-  "October",
-  "November",
-  "December",
-];
+/** As BibTeX knows them. */
+const MONTHS = "jan feb mar apr may jun jul aug sep oct nov dec".split(" ");

@@ -1,6 +1,7 @@
 import { renderToStaticMarkup } from "react-dom/server";
 import { PAPER_PALETTE, PEAT_PALETTE } from "~/charts/palette";
 import { formatFrequency } from "~/measurement/units";
+import { formatDate } from "../dates.ts";
 import { Curves } from "./draw/Curves.tsx";
 import { keyOf } from "./draw/key.ts";
 import { Measures, measuresHeightPx } from "./draw/Measures.tsx";
@@ -67,7 +68,7 @@ function provenanceOf(record: PlateRecord | UnnumberedRecord): string {
   const from = sweeps === 0 ? "" : sweeps === 1 ? ", from one original" : `, from ${sweeps} originals`;
   const method = `method ${code.analysisVersion}`;
   if (!("number" in record)) return `${project.title}${from}, ${method}. Not frozen yet.`;
-  const made = `${record.madeBy}, ${record.madeAt.slice(0, 10)}`;
+  const made = `${record.madeBy}, ${formatDate(record.madeAt)}`;
   return `${numberWords(record)} of ${project.title}. ${made}. ${record.address} · ${licence.name}. ${method[0].toUpperCase()}${method.slice(1)}${from}.`;
 }
 

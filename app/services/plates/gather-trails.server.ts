@@ -4,7 +4,7 @@ import * as story from "~/db/story.server";
 import * as trails from "~/db/trails.server";
 import { dipRows } from "~/measurement/dip-rows";
 import { formatFrequency } from "~/measurement/units";
-import { shortDate } from "./dates.ts";
+import { formatDate } from "../dates.ts";
 import type { MaterialSweep } from "./material.ts";
 import type { PlateFigure } from "./record.ts";
 
@@ -38,7 +38,7 @@ export async function stripOf(project: OfProject, designBands: readonly DesignBa
       strips.find(({ id }) => id === step.afterSweepId) ??
       strips.find(({ takenAt, createdAt }) => (takenAt ?? createdAt) > at);
     if (!before) return [];
-    const caption = step.at ? shortDate(step.at) : "";
+    const caption = step.at ? formatDate(step.at) : "";
     return [{ id: step.publicId, label: step.title, caption, before: before.publicId }];
   });
   return {

@@ -6,9 +6,9 @@ import * as sweeps from "~/db/sweeps.server";
 import { bandsOverlapping, type ItuRegion } from "~/measurement/bands";
 import { formatFrequency } from "~/measurement/units";
 import { type LoadedBench, loadBench } from "../bench-sweeps.server.ts";
+import { formatDate } from "../dates.ts";
 import { type SweepAt, sweepAt, uncorrected } from "../shown-sweep.server.ts";
 import { changedSince } from "../sweep-corrections.server.ts";
-import { shortDate } from "./dates.ts";
 import { compareTrails, stripOf, trailOf } from "./gather-trails.server.ts";
 import type { MaterialDip, MaterialSweep } from "./material.ts";
 import type { PlateFigure } from "./record.ts";
@@ -95,7 +95,7 @@ async function gatherKind(
       if (!version) return NO_REFERENCES;
       const bench = await loadBench(found.bench, version);
       if (!bench.correction.references.open && !bench.correction.references.short) return NO_REFERENCES;
-      return { ...known, sweeps: [], bench, title: `The bench ${found.bench.name}` };
+      return { ...known, sweeps: [], bench, title: found.bench.name };
     }
     default:
       return kind satisfies never;
@@ -126,7 +126,7 @@ async function gatherSweep(project: OfProject, publicId: string): Promise<Gather
   const material: MaterialSweep = {
     id: publicId,
     label: sweep.title,
-    caption: sweep.takenAt ? shortDate(sweep.takenAt) : "no date",
+    caption: sweep.takenAt ? formatDate(sweep.takenAt) : "no date",
     points: at.sweep,
     measured: uncorrected(at) ?? null,
     swrLimit: analysis.settings.swrLimit,

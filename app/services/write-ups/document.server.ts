@@ -1,10 +1,11 @@
 import type { Content, TDocumentDefinitions } from "pdfmake/interfaces";
 import { PAPER_PALETTE } from "~/charts/palette";
+import { formatDate, formatDateTime } from "../dates.ts";
 import { articleTokens } from "../markdown.server.ts";
 import { printPdf } from "../pdf.server.ts";
 import { licenceOf } from "../plates/licences.ts";
 import { addressOf, CAUTION, INVENTED, peopleOf } from "./cite.ts";
-import { momentOf } from "./figure-html.ts";
+import { withdrawnWords } from "./figure-html.ts";
 import { FIGURE_ID, type FrozenFigure, type PlateState } from "./frozen.ts";
 import { lined, pdfContent, rule } from "./pdf-content.ts";
 import {
@@ -39,7 +40,7 @@ export function printable({ publication, origin, plates, drawings }: DocumentTas
   const { version, project, frozen } = publication;
   const people = peopleOf(publication).join(" and ");
   const address = addressOf(publication, origin);
-  const day = version.publishedAt.toISOString().slice(0, 10);
+  const day = formatDate(version.publishedAt);
   const licence = licenceOf(frozen.licence);
   const known = new Map(frozen.figures.map((figure) => [figure.subject, figure]));
   const tokens = articleTokens(version.body);
@@ -110,7 +111,7 @@ function figureContent(figure: FrozenFigure, n: number, caption: Content[], plac
   const line: Content = isPlate
     ? { text: `${place.origin}${figure.path}`, link: `${place.origin}${figure.path}`, color: FEN }
     : {
-        text: `${figure.title}${figure.asOf ? `; numbers as of ${momentOf(figure.asOf)}` : ""}.`,
+        text: `${figure.title}${figure.asOf ? `; numbers as of ${formatDateTime(figure.asOf)}` : ""}.`,
         color: SOFT,
       };
   const drawing = isPlate ? plateDrawing(figure, place) : ownDrawing(figure);
@@ -129,10 +130,7 @@ function figureContent(figure: FrozenFigure, n: number, caption: Content[], plac
 function plateDrawing({ subject }: FrozenFigure, { plates, drawings }: FigurePlace): Content {
   const id = subject.slice("plate:".length);
   const state = plates.get(id);
-  if (!state || state.withdrawnAt) {
-    const why = state?.withdrawnReason ? `: ${state.withdrawnReason}` : "";
-    return { text: `This plate was withdrawn${why}.`, color: SOFT };
-  }
+  if (!state || state.withdrawnAt) return { text: withdrawnWords(state), color: SOFT };
   const svg = drawings.get(id);
   return svg
     ? { svg: forPrint(svg), width: TEXT_WIDTH }

@@ -1,3 +1,4 @@
+import { formatDate, formatDateTime } from "../dates.ts";
 import { escapeHtml } from "../html-text.ts";
 import type { DrawFigure, DrawnFigure } from "../markdown-article.ts";
 import { FIGURE_ID, type FrozenFigure, type PlateState } from "./frozen.ts";
@@ -32,9 +33,8 @@ function plate(figure: FrozenFigure, n: number, place: FigurePlace): DrawnFigure
     `${figure.label ?? "Plate"}: its numbers and how they came about`,
   );
   if (!state || state.withdrawnAt) {
-    const reason = state?.withdrawnReason ? `: ${state.withdrawnReason}` : "";
-    const words = `This plate was withdrawn${state?.withdrawnAt ? ` on ${dayOf(state.withdrawnAt)}` : ""}${reason}`;
-    return { label, drawing: `<p class="article-missing">${escapeHtml(words)}</p>`, under: smallLine(link) };
+    const words = escapeHtml(withdrawnWords(state));
+    return { label, drawing: `<p class="article-missing">${words}</p>`, under: smallLine(link) };
   }
   const picture = (["light", "dark"] as const).map((theme) => {
     const [wide, narrow] = (["wide", "narrow"] as const).map((width) =>
@@ -51,12 +51,19 @@ function plate(figure: FrozenFigure, n: number, place: FigurePlace): DrawnFigure
   return { label, drawing, under: smallLine(link) };
 }
 
+/** What stands where a plate's drawing was; `state` is missing where there is no such plate here. */
+export function withdrawnWords(state: PlateState | undefined): string {
+  if (!state?.withdrawnAt) return "This plate is not here any more";
+  const reason = state.withdrawnReason ? `: ${state.withdrawnReason}` : "";
+  return `This plate was withdrawn on ${formatDate(state.withdrawnAt)}${reason}`;
+}
+
 function live(figure: FrozenFigure, n: number, place: FigurePlace): DrawnFigure {
   const drawing =
     figure.wide && figure.narrow
       ? `<div class="figure-drawing figure-wide">${own(figure.wide, `f${n}w`)}</div><div class="figure-drawing figure-narrow">${own(figure.narrow, `f${n}n`)}</div>`
       : `<p class="article-missing">The curve can't be drawn: the sweep's file was not read.</p>`;
-  const asOf = figure.asOf ? `numbers as of ${momentOf(figure.asOf)}` : "";
+  const asOf = figure.asOf ? `numbers as of ${formatDateTime(figure.asOf)}` : "";
   const link = linked(place.linkTo(figure), "see it in the project");
   const line = [escapeHtml(figure.title), asOf, link].filter((words) => words !== "").join("; ");
   return { label: `Figure ${n}`, drawing, under: `${smallLine(line)}${table(figure)}` };
@@ -81,15 +88,6 @@ function linked(path: string | null, words: string): string {
 
 function smallLine(html: string): string {
   return html === "" ? "" : `<span class="figure-line">${html}.</span>`;
-}
-
-/** `2026-12-01, 13:02 UTC` */
-export function momentOf(iso: string): string {
-  return `${iso.slice(0, 10)}, ${iso.slice(11, 16)} UTC`;
-}
-
-function dayOf(at: Date | string): string {
-  return new Date(at).toISOString().slice(0, 10);
 }
 
 /** Where the frozen drawings of plates are on this server. */

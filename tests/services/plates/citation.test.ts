@@ -44,7 +44,7 @@ describe("how a plate is cited", () => {
 
   it("is a sentence, and the same in the ways that texts are written", () => {
     expect(sentence(record)).toBe(
-      `Ada Marsh: “${title}”, plate 3, version 2 of “Reed bank vertical”, 1 December 2026, https://swale.example/plates/abcdefghjk`,
+      `Ada Marsh: “${title}”, plate 3, version 2 of “Reed bank vertical”, 1 Dec 2026, https://swale.example/plates/abcdefghjk`,
     );
     const { markdown, html, latex, plain } = copyTexts(record);
     expect(plain).toContain("(Creative Commons Attribution 4.0 (CC BY 4.0))");
@@ -52,6 +52,7 @@ describe("how a plate is cited", () => {
       "](https://swale.example/plates/abcdefghjk.svg)](https://swale.example/plates/abcdefghjk)",
     );
     expect(markdown).toContain("\\<b\\>");
+    expect(markdown).toContain("{all} \\& $7");
     expect(html).not.toContain("<b>");
     expect(html).toContain('alt="Plate 3, version 2: 50 % of {all} &amp; $7_1');
     expect(latex).toContain(

@@ -44,7 +44,7 @@ it("shows a drawing for wide and one for narrow pages, each with ids of its own"
 
 it("says of when numbers are, and escapes what a person wrote", () => {
   const under = draw("dip:abc")?.under ?? "";
-  expect(under).toContain("The dip of &quot;&lt;Before&gt;&quot;; numbers as of 2026-05-01, 10:00 UTC");
+  expect(under).toContain("The dip of &quot;&lt;Before&gt;&quot;; numbers as of 1 May 2026, 10:00 UTC");
   expect(under).toContain("<td>1.21 &lt;b&gt;</td>");
 });
 
@@ -69,9 +69,9 @@ it("says why a plate is shown no more", () => {
   const withdrawnAt = new Date("2026-06-02T09:00Z");
   const plates = new Map([["k3f", { withdrawnAt, withdrawnReason: "A wrong <scale>" }]]);
   expect(draw("plate:k3f", { plates })?.drawing).toBe(
-    '<p class="article-missing">This plate was withdrawn on 2026-06-02: A wrong &lt;scale&gt;</p>',
+    '<p class="article-missing">This plate was withdrawn on 2 Jun 2026: A wrong &lt;scale&gt;</p>',
   );
-  expect(draw("plate:k3f", { plates: new Map() })?.drawing).toContain("withdrawn");
+  expect(draw("plate:k3f", { plates: new Map() })?.drawing).toContain("not here any more");
   expect(draw("plate:k3f", { plateSource: () => null })?.drawing).toContain("can't be had just now");
 });
 

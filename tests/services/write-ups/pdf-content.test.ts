@@ -97,7 +97,7 @@ describe("a printed write-up", () => {
     const text = textsOf(printable(task).content).join(" ");
     for (const part of [
       "1.21 (1.12–1.31)",
-      "numbers as of 2026-05-01, 10:00 UTC",
+      "numbers as of 1 May 2026, 10:00 UTC",
       "Ada Marsh and former member",
       "https://swale.example/write-ups/w",
       "CC BY 4.0",

@@ -1,7 +1,7 @@
 import { Form, Link } from "react-router";
 import { Button } from "~/components/ui/Button";
-import { formatDate } from "~/components/ui/dates";
 import { SelectField } from "~/components/ui/Field";
+import { formatDate } from "~/services/dates";
 import type { StepPageData } from "../step-page.server";
 
 /** Which sweeps stand beside the step: found by date, confirmed or changed by hand. */

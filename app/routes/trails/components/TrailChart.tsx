@@ -3,7 +3,7 @@ import { frequencyAxis, frequencyScale } from "~/charts/axis";
 import { FrequencyAxisMarks } from "~/charts/FrequencyAxisMarks";
 import { PAGE_PALETTE } from "~/charts/palette";
 import { across, Stretched } from "~/charts/place";
-import { formatDateShort } from "~/components/ui/dates";
+import { formatDateShort } from "~/services/dates";
 import type { TrailPageData } from "../trail-page.server";
 
 const ROW_PX = 34;

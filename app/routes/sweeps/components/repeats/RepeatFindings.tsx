@@ -1,7 +1,7 @@
 import { Link } from "react-router";
-import { formatDate } from "~/components/ui/dates";
 import { type Column, Table } from "~/components/ui/Table";
 import { formatFrequency, formatSwr, formatWidth } from "~/measurement/units";
+import { formatDate } from "~/services/dates";
 import type { RepeatsData } from "../../repeats-page.server";
 import { MeanChart } from "./MeanChart";
 

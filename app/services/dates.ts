@@ -6,8 +6,9 @@ const HOUR_S = 3_600;
 const DAY_S = 86_400;
 const RELATIVE_UP_TO_DAYS = 30;
 
-/** `14 Sep 2026` */
-export function formatDate(date: Date): string {
+/** `14 Sep 2026`; of a text in ISO 8601 too. */
+export function formatDate(at: Date | string): string {
+  const date = new Date(at);
   return `${date.getUTCDate()} ${MONTHS[date.getUTCMonth()]} ${date.getUTCFullYear()}`;
 }
 
@@ -17,7 +18,8 @@ export function formatDateShort(date: Date): string {
 }
 
 /** `14 Sep 2026, 17:20 UTC` */
-export function formatDateTime(date: Date): string {
+export function formatDateTime(at: Date | string): string {
+  const date = new Date(at);
   const hours = String(date.getUTCHours()).padStart(2, "0");
   const minutes = String(date.getUTCMinutes()).padStart(2, "0");
   return `${formatDate(date)}, ${hours}:${minutes} UTC`;
