@@ -59,7 +59,7 @@ export async function addAttachment({ project, by, file }: NewAttachment): Promi
         },
         tx,
       );
-      for (const job of undo) await jobs.deleteById(job, tx);
+      await jobs.deleteAllByIds(undo, tx);
       const dropAt = new Date(Date.now() + UNSENT_FOR_MS);
       await jobs.insert("drop-attachment", { attachment: made }, dropAt, tx);
       return made;

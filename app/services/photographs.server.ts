@@ -91,7 +91,7 @@ export async function addPhotograph({
         },
         tx,
       );
-      for (const job of undo) await jobs.deleteById(job, tx);
+      await jobs.deleteAllByIds(undo, tx);
       await tell("photograph.added", of, by, tx, at);
       return made;
     });

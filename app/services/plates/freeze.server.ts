@@ -113,7 +113,10 @@ async function freezeAs(
         })),
         tx,
       );
-      for (const { undo } of stored) await jobs.deleteById(undo, tx);
+      await jobs.deleteAllByIds(
+        stored.map(({ undo }) => undo),
+        tx,
+      );
       const kind = place.previous ? "plate.mended" : "plate.made";
       const about = { plate: record.id, title: record.title };
       await recordEvent({ projectId: project.id, kind, actorId: by.id, about, at: input.at }, tx);
