@@ -136,7 +136,7 @@ describe("a link", () => {
     const path = await makeLink();
     expect(whereTo(await browser.post(path, {}))).toBe(`/projects/${project.publicId}`);
     expect(await roleOf(owner)).toBe("owner");
-    expect(await (await browser.get(members)).text()).toContain("0 times");
+    expect(await (await browser.get(members)).text()).toContain("not yet");
   });
 
   it("that nobody made is nothing", async () => {

@@ -49,10 +49,13 @@ function cellOf(
     const shown = value.toFixed(decimalsFor(value, unit, by, half.unit));
     return `${withUnit(shown, unit)} ±\u00a0${withUnit(by, half.unit)}`;
   }
-  if (!byKey.has(`${key}Low`) || !byKey.has(`${key}High`)) return number(value);
+  const figures = (one: number) => number(withZeros(one, decimalsOf(key, unit, one)));
+  if (!byKey.has(`${key}Low`) || !byKey.has(`${key}High`)) return figures(value);
   const [low, high] = [row[`${key}Low`], row[`${key}High`]];
-  if (low === null && high === null) return `${number(value)} (limits\u00a0unknown)`;
-  return `${number(value)} (${end(low)}–${end(high)})`;
+  if (low === null && high === null) return `${figures(value)} (limits unknown)`;
+  const end = (cell: Cell | undefined) =>
+    typeof cell === "number" ? figures(cell) : (cell?.toString() ?? "unknown");
+  return `${figures(value)} (${end(low)}–${end(high)})`;
 }
 
 /** The unit stands in the head, except where the cells name it themselves. */
@@ -65,13 +68,24 @@ function isNothing(cell: Cell | undefined): boolean {
   return typeof cell === "string" && NOTHING.includes(cell);
 }
 
-function end(cell: Cell | undefined): string {
-  return typeof cell === "number" ? number(cell) : (cell?.toString() ?? "unknown");
+/** A record has no zeros at the end of a number: so many decimals are known all the same. */
+function decimalsOf(key: string, unit: string, value: number): number {
+  if (unit === "dB") return 1;
+  if (key === "swr") return value < 10 ? 2 : 1;
+  return 0;
+}
+
+function withZeros(value: number, decimals: number): string {
+  return ownDecimals(value) < decimals ? value.toFixed(decimals) : String(value);
+}
+
+function ownDecimals(value: number): number {
+  return String(value).split(".")[1]?.length ?? 0;
 }
 
 /** So many decimals that the last is of the half-width's size, and none that the record has is lost. */
 function decimalsFor(value: number, unit: string, half: number, halfUnit: string): number {
-  const own = String(value).split(".")[1]?.length ?? 0;
+  const own = ownDecimals(value);
   const halfInUnit = (half * (IN_HZ[halfUnit] ?? 1)) / (IN_HZ[unit] ?? 1);
   return halfInUnit > 0 ? Math.min(MOST_DECIMALS, Math.max(own, -Math.floor(Math.log10(halfInUnit)))) : own;
 }

@@ -163,9 +163,7 @@ function columnsFor(base: string): Column<SweepSummary>[] {
       numeric: true,
       sortBy: (row) => row.startHz,
       cell: (row) =>
-        row.startHz === null || row.stopHz === null
-          ? "unknown"
-          : `${formatFrequency(row.startHz, null)} – ${formatFrequency(row.stopHz, null)}`,
+        row.startHz === null || row.stopHz === null ? "unknown" : spanWords(row.startHz, row.stopHz),
     },
     {
       key: "points",
@@ -182,7 +180,7 @@ function columnsFor(base: string): Column<SweepSummary>[] {
       cell: (row) => (
         <>
           {row.unread ? "unknown" : row.dips.length}
-          {row.openDips > 0 && <span className="text-clay"> ({unsettled(row)})</span>}
+          {row.openDips > 0 && <span className="block text-clay"> ({unsettled(row)})</span>}
         </>
       ),
     },
@@ -197,6 +195,13 @@ function columnsFor(base: string): Column<SweepSummary>[] {
   ];
 }
 
+/** A unit that both ends share is said once: `1–80 MHz`. */
+function spanWords(startHz: number, stopHz: number): string {
+  const [from, to] = [startHz, stopHz].map((hz) => formatFrequency(hz, null));
+  const [value, unit] = from.split(THIN_SPACE);
+  return to.endsWith(`${THIN_SPACE}${unit}`) ? `${value}–${to}` : `${from} – ${to}`;
+}
+
 function unsettled({ dips, openDips }: SweepSummary): string {
   return openDips === dips.length ? "unsettled" : `${openDips} unsettled`;
 }
@@ -207,5 +212,6 @@ function matches(row: SweepSummary, words: string, only: (typeof ONLY)[number]):
   return words === "" || `${row.title} ${row.fileName}`.toLowerCase().includes(words);
 }
 
+const THIN_SPACE = "\u2009";
 const ONLY = ["all", "open", "unread"] as const;
 const SORTABLE = ["title", "taken", "span", "points", "dips", "notes", "kind"];

@@ -55,10 +55,15 @@ export function sweepTable(
     columns: ["Dip", "Lowest SWR (limits)", `${Number(swrLimit.toFixed(2))}:1 bandwidth`],
     rows: dips.map((dip) => [
       formatFrequency(dip.frequencyHz, dip.frequencyUncertaintyHz),
-      formatSwr(dip.minimumSwr, dip.minimumSwrLow, dip.minimumSwrHigh),
+      swrWords(dip),
       widthWords(dip.bandwidth),
     ]),
   };
+}
+
+function swrWords({ minimumSwr, minimumSwrLow, minimumSwrHigh }: Dip): string {
+  const unknown = minimumSwrLow === null && minimumSwrHigh === null;
+  return `${formatSwr(minimumSwr, minimumSwrLow, minimumSwrHigh)}${unknown ? " (limits unknown)" : ""}`;
 }
 
 function widthWords(bandwidth: Bandwidth | null): string {

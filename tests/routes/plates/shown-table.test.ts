@@ -45,8 +45,22 @@ describe("a table as people read it", () => {
     );
   });
 
+  test("gives decibels and SWR the zeros that a record does not keep", () => {
+    expect(cells({ swr: 1.2, swrLow: 1, swrHigh: 1.31 }).swr).toBe("1.20 (1.00–1.31)");
+    expect(cells({ swr: 9.8, swrLow: 9, swrHigh: 12 }).swr).toBe("9.80 (9.00–12.0)");
+    const columns = [{ key: "directivity", label: "Directivity", unit: "dB" }];
+    const rows = [47, 44.6, 0, null, 0.04].map((directivity) => ({ directivity }));
+    expect(shownTable({ title: "Bench", columns, rows }).rows.map(({ directivity }) => directivity)).toEqual([
+      "47.0",
+      "44.6",
+      "0.0",
+      "unknown",
+      "0.04",
+    ]);
+  });
+
   test("says what is not known, and never makes it a zero", () => {
-    expect(cells({ swrLow: null, swrHigh: null }).swr).toBe("1.21 (limits\u00a0unknown)");
+    expect(cells({ swrLow: null, swrHigh: null }).swr).toBe("1.21 (limits unknown)");
     expect(cells({ swrHigh: "∞" }).swr).toBe("1.21 (1.12–∞)");
     expect(cells({ swrLow: null }).swr).toBe("1.21 (unknown–1.31)");
     expect(cells({ swr: null }).swr).toBe("unknown");

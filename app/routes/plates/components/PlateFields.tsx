@@ -8,7 +8,7 @@ export interface PlateFieldsProps {
   errors: PlateErrors;
   /** What can be called something else on the plate. */
   labelled: Labelled[];
-  /** Whether there is a choice between return loss and SWR. */
+  /** Whether there are curves with dips, and a choice between return loss and SWR: not for a bench. */
   curves: boolean;
 }
 
@@ -82,14 +82,22 @@ export function PlateFields({ texts, errors, labelled, curves }: PlateFieldsProp
         )}
       </div>
       <FieldGroup legend="Shown in the figure">
-        <CheckboxField name="showDips" label="Dips with their numbers" defaultChecked={texts.showDips} />
+        {curves ? (
+          <CheckboxField name="showDips" label="Dips with their numbers" defaultChecked={texts.showDips} />
+        ) : (
+          <Kept name="showDips" ticked={texts.showDips} />
+        )}
         <CheckboxField name="showBands" label="Bands" defaultChecked={texts.showBands} />
-        <CheckboxField
-          name="showLimits"
-          label="Limits of the numbers"
-          hint="They stand in the table in any case."
-          defaultChecked={texts.showLimits}
-        />
+        {curves ? (
+          <CheckboxField
+            name="showLimits"
+            label="Limits of the numbers"
+            hint="They stand in the table in any case."
+            defaultChecked={texts.showLimits}
+          />
+        ) : (
+          <Kept name="showLimits" ticked={texts.showLimits} />
+        )}
         <CheckboxField name="showTitle" label="Number and title" defaultChecked={texts.showTitle} />
       </FieldGroup>
       {labelled.length > 0 && (
@@ -120,4 +128,9 @@ export function PlateFields({ texts, errors, labelled, curves }: PlateFieldsProp
       />
     </>
   );
+}
+
+/** A choice that this plate does not have, sent along as it is. */
+function Kept({ name, ticked }: { name: string; ticked: boolean }) {
+  return ticked && <input type="hidden" name={name} value="on" />;
 }

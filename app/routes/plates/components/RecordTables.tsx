@@ -27,7 +27,7 @@ export function RecordTables({ tables }: { tables: PlateRecord["tables"] }) {
   );
 }
 
-/** A line ends between a number and its limits, never within them. */
+/** A line ends between a number and its limits or between words, never within a number. */
 function Figures({ text }: { text: string }) {
   const parts = text.split(" ");
   return parts.map((part, i) => (

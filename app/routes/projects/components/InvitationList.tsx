@@ -52,7 +52,7 @@ export function InvitationList({ invitations }: { invitations: ListedInvitation[
 
 function taken(one: ListedInvitation): string {
   if (one.state === "taken") return `by ${one.takenBy ?? "a former member"}`;
-  if (one.email !== null) return "not yet";
+  if (one.email !== null || one.uses === 0) return "not yet";
   return one.uses === 1 ? "once" : `${one.uses} times`;
 }
 
