@@ -153,9 +153,9 @@ export async function* readPieces(key: string, from = 0, to?: number): AsyncGene
   }
 }
 
-/** Of a part, which is up to 8 MB: a store on a busy disk was seen to answer after more than 10 s. */
+/** Of a part, which is up to 8 MB. Once, on a busy machine, 10 s were not enough for an upload of 400 MB. */
 const sender = clientWith(30_000, 1);
-/** Putting the parts together may take the store minutes (seen here: 400 MB in more than 10 s). */
+/** A store may copy all parts to put them together, which grows with the whole and not with a part. */
 const finisher = clientWith(5 * 60_000, 1);
 /** Together 31 s, beside what each try takes itself. */
 const WAITS_MS = [1000, 2000, 4000, 8000, 16_000];
