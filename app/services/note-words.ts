@@ -1,5 +1,6 @@
 import { completeDip, type StoredDip } from "~/measurement/dips/complete";
 import { formatFrequency, formatSwr } from "~/measurement/units";
+import { numberWords } from "./plates/number-words.ts";
 
 /** How what a note refers to reads, in one line: at the time of writing in the text, now on hover. */
 
@@ -24,8 +25,7 @@ export function plateWords(plate: {
   title: string;
   withdrawnAt: Date | null;
 }): string {
-  const version = plate.version > 1 ? `, version ${plate.version}` : "";
-  return `Plate ${plate.number}${version}: ${plate.title}${plate.withdrawnAt ? " (withdrawn)" : ""}`;
+  return `${numberWords(plate)}: ${plate.title}${plate.withdrawnAt ? " (withdrawn)" : ""}`;
 }
 
 /** `812 bytes`, `14 kB`, `2.3 MB`. */

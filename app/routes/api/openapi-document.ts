@@ -33,7 +33,7 @@ export function openApiDocument(origin: string) {
       version: "1",
       summary: "Antenna sweeps, their dips, and what is said about them",
       description:
-        "Paths under /api/v1 take a token and speak JSON; those outside of it are for everybody, without one. Ids are short and public. Times are UTC. Unknown numbers are null, never zero. Lists hold at most 100 rows; give `nextCursor` back as `cursor` for the next page. Errors are RFC 9457 problem documents.",
+        "Paths under /api/v1 take a token and speak JSON; those outside of it are for everybody, without one. Ids are short and public. Times are UTC. Unknown numbers are null, never zero. Lists with a `nextCursor` hold at most 100 rows; give it back as `cursor` for the next page. Errors are RFC 9457 problem documents.",
     },
     servers: [{ url: origin }],
     security: [{ token: [] }],

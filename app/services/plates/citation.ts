@@ -1,4 +1,5 @@
 import { formatDate } from "../dates.ts";
+import { numberWords } from "./number-words.ts";
 import type { PlateRecord } from "./record.ts";
 
 /** How a plate is cited. Pure. */
@@ -10,7 +11,7 @@ export function bibtex(record: PlateRecord): string {
     // Doubled braces: a name is taken as it stands, whether of a person or of a club, and a title keeps its MHz.
     ["author", `{${tex(record.madeBy)}}`],
     ["title", `{${tex(record.title)}}`],
-    ["howpublished", tex(`${plateWords(record)} of “${record.project.title}”`)],
+    ["howpublished", tex(`${numberWords(record)} of “${record.project.title}”`)],
     ["year", String(at.getUTCFullYear())],
     ["month", MONTHS[at.getUTCMonth()]],
     ["url", record.address],
@@ -33,7 +34,7 @@ export function cslJson(record: PlateRecord): string {
     version: String(record.version),
     issued: { "date-parts": [[at.getUTCFullYear(), at.getUTCMonth() + 1, at.getUTCDate()]] },
     URL: record.address,
-    note: `${plateWords(record)}. ${record.licence.name}`,
+    note: `${numberWords(record)}. ${record.licence.name}`,
   };
   return `${JSON.stringify([item], null, 2)}\n`;
 }
@@ -41,7 +42,7 @@ export function cslJson(record: PlateRecord): string {
 /** `Ada Marsh: “…”, plate 3 of “…”, 1 Dec 2026, https://…` */
 export function sentence(record: PlateRecord): string {
   const { madeBy, title, project, address } = record;
-  return `${madeBy}: “${title}”, ${lowerFirst(plateWords(record))} of “${project.title}”, ${formatDate(record.madeAt)}, ${address}`;
+  return `${madeBy}: “${title}”, ${lowerFirst(numberWords(record))} of “${project.title}”, ${formatDate(record.madeAt)}, ${address}`;
 }
 
 interface CopyTexts {
@@ -56,7 +57,7 @@ export function copyTexts(record: PlateRecord): CopyTexts {
   const { address, title, licence } = record;
   const cited = sentence(record);
   const licensed = licence.address ? `${cited} (${licence.name})` : cited;
-  const alt = `${plateWords(record)}: ${title}`;
+  const alt = `${numberWords(record)}: ${title}`;
   const link = html(address);
   return {
     plain: `${licensed}\n`,
@@ -76,16 +77,11 @@ export function copyTexts(record: PlateRecord): CopyTexts {
       "\\begin{figure}",
       "  \\centering",
       `  \\includegraphics[width=\\linewidth]{${keyOf(record)}.pdf}`,
-      `  \\caption{${tex(title)}. ${tex(`${record.madeBy}, ${lowerFirst(plateWords(record))} of “${record.project.title}”, ${formatDate(record.madeAt)}`)}, \\url{${address}} (${tex(licence.name)}).}`,
+      `  \\caption{${tex(title)}. ${tex(`${record.madeBy}, ${lowerFirst(numberWords(record))} of “${record.project.title}”, ${formatDate(record.madeAt)}`)}, \\url{${address}} (${tex(licence.name)}).}`,
       "\\end{figure}",
       "",
     ].join("\n"),
   };
-}
-
-/** "Plate 3", "Plate 3, version 2" */
-function plateWords({ number, version }: PlateRecord): string {
-  return version > 1 ? `Plate ${number}, version ${version}` : `Plate ${number}`;
 }
 
 function keyOf({ id }: PlateRecord): string {

@@ -8,6 +8,7 @@ import { Measures, measuresHeightPx } from "./draw/Measures.tsx";
 import { FOOT_PX } from "./draw/marks.tsx";
 import { NARROW_PX, plotWidthOf, Sheet } from "./draw/Sheet.tsx";
 import { Strips, stripsHeightPx } from "./draw/Strips.tsx";
+import { numberWords } from "./number-words.ts";
 import type { PlateFigure, PlateRecord, UnnumberedRecord } from "./record.ts";
 
 interface DrawOptions {
@@ -35,11 +36,6 @@ export function drawFigure(record: PlateRecord | UnnumberedRecord, { theme, widt
       figure={node}
     />,
   );
-}
-
-/** "Plate 3", "Plate 3, version 2" */
-export function numberWords({ number, version }: Pick<PlateRecord, "number" | "version">): string {
-  return version > 1 ? `Plate ${number}, version ${version}` : `Plate ${number}`;
 }
 
 function partOf(

@@ -3,7 +3,8 @@ import { PAPER_PALETTE } from "~/charts/palette";
 import { plainText } from "../markdown.server.ts";
 import { printPdf } from "../pdf.server.ts";
 import { sentence } from "./citation.ts";
-import { drawFigure, numberWords } from "./draw.server.tsx";
+import { drawFigure } from "./draw.server.tsx";
+import { numberWords } from "./number-words.ts";
 import type { PlateRecord, PlateTable } from "./record.ts";
 
 /** A plate as one page of A4: the figure in lines, its numbers, the caption, how to cite it and where it is from. */

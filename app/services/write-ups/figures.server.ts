@@ -4,7 +4,7 @@ import * as sweeps from "~/db/sweeps.server";
 import * as writeUps from "~/db/write-ups.server";
 import { formatFrequency } from "~/measurement/units";
 import { closeUpRange } from "../close-up.ts";
-import { plateWords } from "../note-words.ts";
+import { numberWords } from "../plates/number-words.ts";
 import { type ShownDip, storedDips } from "../shown-dips.server.ts";
 import { sweepAt } from "../shown-sweep.server.ts";
 import { drawStretch } from "./draw-figure.server.tsx";
@@ -34,10 +34,10 @@ export async function loadFigures(project: OfProject, subjects: readonly string[
 }
 
 function plateFigure(plate: Awaited<ReturnType<typeof writeUps.findPlates>>[number]): FrozenFigure {
-  const { publicId, number, version, title } = plate;
+  const { publicId, title } = plate;
   return {
     subject: `plate:${publicId}`,
-    label: plateWords({ number, version, title: "", withdrawnAt: null }).replace(/: $/, ""),
+    label: numberWords(plate),
     title,
     wide: null,
     narrow: null,

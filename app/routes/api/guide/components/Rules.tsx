@@ -30,8 +30,8 @@ export function Rules({ base }: { base: string }) {
           What is unknown is <code>null</code>, never zero.
         </li>
         <li>
-          A page of a list has at most 100 rows; where there are more, give <code>nextCursor</code> back as{" "}
-          <code>cursor</code>.
+          A list with a <code>nextCursor</code> comes in pages of at most 100 rows: give it back as{" "}
+          <code>cursor</code> for the next one.
         </li>
         <li>
           600 calls that read and 120 that write a minute and token; beyond that <code>429</code>, with the
