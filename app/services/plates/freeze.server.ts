@@ -33,7 +33,23 @@ export interface Freeze {
  * Freezes a plate: every form is made and stored first, then all rows are written in one transaction. Removal of the stored
  * forms is noted before and taken back in that transaction, so that whatever dies half-way leaves nothing behind.
  */
-export async function freeze(input: Freeze): Promise<{ publicId: string } | Problem> {
+export function freeze(input: Freeze): Promise<{ publicId: string } | Problem> {
+  return inTurn(input.project.id, () => freezeNow(input));
+}
+
+/** One of a project after the other: side by side all would bear the same number, and all but one be made again. */
+async function inTurn<T>(projectId: number, work: () => Promise<T>): Promise<T> {
+  const turn = (turns.get(projectId) ?? Promise.resolve()).then(work);
+  const ended = turn.catch(() => undefined);
+  turns.set(projectId, ended);
+  try {
+    return await turn;
+  } finally {
+    if (turns.get(projectId) === ended) turns.delete(projectId);
+  }
+}
+
+async function freezeNow(input: Freeze): Promise<{ publicId: string } | Problem> {
   const composed = await compose(input.project, input.subject, input.choices);
   if ("problem" in composed) return composed;
   const publicId = input.publicId ?? newPublicId();
@@ -41,7 +57,7 @@ export async function freeze(input: Freeze): Promise<{ publicId: string } | Prob
     const place = await placeOf(input);
     if ("problem" in place) return place;
     const done = await freezeAs(input, composed, { publicId, ...place });
-    // Somebody else took the number while the forms were made: they bear it, so they are made again.
+    // Another process took the number while the forms were made: they bear it, so they are made again.
     if (done !== "taken" || attempt >= ATTEMPTS) return done === "taken" ? BUSY : done;
   }
 }
@@ -182,6 +198,8 @@ async function removeForms(stored: readonly StoredRow[]): Promise<void> {
   if (failed > 0) log.warn({ failed }, "forms of a plate that was not written stay for a while");
 }
 
+/** Of this process, by the project's row id: the end of whatever came last. */
+const turns = new Map<number, Promise<unknown>>();
 const ATTEMPTS = 3;
 const UNDO_AFTER_MS = 60 * 60 * 1000;
 const GONE_MEANWHILE: Problem = {

@@ -40,3 +40,11 @@ test("one draw makes one plate, however often it is sent, also at the same time"
   // The same draw of somebody else is another one.
   expect(await findMade({ ...asked, by: { id: 0, name: "Bram Sedge" } }, "a")).toBeUndefined();
 });
+
+test("four that are frozen at once are all made, one after the other", async () => {
+  const before = (await plates.findAllByProject(asked.project.id)).length;
+  const made = await Promise.all([1, 2, 3, 4].map(() => makePlate({ ...asked, draw: null })));
+  expect(made.filter((one) => "problem" in one)).toEqual([]);
+  const rows = await plates.findAllByProject(asked.project.id);
+  expect(new Set(rows.map(({ number }) => number)).size).toBe(before + 4);
+});
