@@ -234,7 +234,7 @@ describe("what stands in the way of a correction", () => {
     const sweep = await antenna({ takenAt: day("2026-04-01"), benchId: bench.id });
     expect(sweep.analysis?.correction).toBeNull();
     const warning = sweep.analysis?.warnings.find(({ code }) => code === "bench-not-used");
-    expect(warning?.message).toMatch(/described from 2026-05-03 on.*2026-04-01/);
+    expect(warning?.message).toMatch(/described from 3 May 2026 on.*1 Apr 2026/);
   });
 
   it("is shown in grey where the references are too short", async () => {
