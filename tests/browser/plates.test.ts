@@ -133,6 +133,7 @@ test("Ada mends a mistake, and withdraws what she should not have shown", async 
   await page.getByLabel("Caption").fill("Measured at the hub, in wet weather.");
   await page.getByRole("button", { name: "Freeze the new version" }).click();
   await page.getByText("Say in a line what was wrong").waitFor();
+  await page.getByLabel("What was wrong with version 1").and(page.locator(":focus")).waitFor();
   expect(await page.getByLabel("Caption").inputValue()).toBe("Measured at the hub, in wet weather.");
   await page.getByLabel("What was wrong with version 1").fill("It had rained all day.");
   await page.getByRole("button", { name: "Freeze the new version" }).click();

@@ -28,6 +28,13 @@ export function PlateForm({ projectId, visibility, draft, answer }: PlateFormPro
   useEffect(() => {
     if (state === "idle") pressed.current = false;
   }, [state]);
+  const form = useRef<HTMLFormElement>(null);
+  useEffect(() => {
+    // The button is far below: what stopped it comes into view.
+    if (answer && Object.keys(answer.errors).length > 0) {
+      form.current?.querySelector<HTMLElement>("[aria-invalid=true]")?.focus();
+    }
+  }, [answer]);
   const tried = usePreview(`/projects/${projectId}/plates/preview`);
   const last = tried.answer ?? answer ?? draft;
   // While a field is half typed the last figure stays.
@@ -36,6 +43,7 @@ export function PlateForm({ projectId, visibility, draft, answer }: PlateFormPro
   return (
     <div className="plate-form">
       <Form
+        ref={form}
         method="post"
         className="grid gap-5 content-start"
         onChange={(event) => tried.onChange(event.currentTarget)}

@@ -10,7 +10,9 @@ export function Foot({ page }: { page: WriteUpPage }) {
     <footer className="write-up-foot text-small">
       <p>
         {people.join(" and ")}: {title}. Version {number}, <DateTime at={publishedAt} />.{" "}
-        <span className="provenance break-all">{search === "" ? address : `${address}${search}`}</span>
+        <span className="provenance inline-block max-w-full break-words">
+          {search === "" ? address : `${address}${search}`}
+        </span>
       </p>
       <p>
         {licence?.address ? (
