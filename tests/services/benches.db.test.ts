@@ -170,7 +170,7 @@ describe("the version that counts for a sweep", () => {
     const sweep = await antennaSweep(day("2026-05-02"));
     const found = await benchForSweep({ ...sweep, benchId: bench.id });
     expect(found).toMatchObject({ kind: "problem", code: "bench-later" });
-    expect(found?.kind === "problem" && found.message).toMatch(/from 2026-05-03 on.*taken on 2026-05-02/);
+    expect(found?.kind === "problem" && found.message).toMatch(/from 3 May 2026 on.*taken on 2 May 2026/);
     const gone = await benchForSweep({ ...sweep, benchId: bench.id + 1_000_000 });
     expect(gone).toMatchObject({ kind: "problem", code: "bench-gone", bench: null });
   });
