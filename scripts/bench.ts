@@ -15,7 +15,7 @@ const SOURCES = [
 
 try {
   tellStepsOnStandardError();
-  await installPrograms({ database: true, browser: true });
+  await installPrograms({ database: true, tests: true });
   const rows: BenchRow[] = [];
   for (const [file, name, title] of SOURCES) {
     const full = path.join(ROOT, "scripts", file);

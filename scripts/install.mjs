@@ -18,6 +18,11 @@ const MARIADB = {
 /** Chromium without its own windows and menus: the same pages for half the processor time. */
 export const BROWSER = "chromium-headless-shell";
 const CHROMIUM = { programs: [BROWSER], packages: [BROWSER] };
+/** What tests hold our answers against; the tests ask for them at these places. */
+const REFERENCES = {
+  programs: ["/usr/bin/python3", "/usr/bin/nec2c", "/usr/lib/python3/dist-packages/skrf"],
+  packages: ["python3", "nec2c", "python3-scikit-rf"],
+};
 const SIGNALS = ["SIGINT", "SIGTERM", "SIGHUP"];
 const FOLDERS = ["/usr/local/sbin", "/usr/local/bin", "/usr/sbin", "/usr/bin", "/sbin", "/bin"];
 
@@ -29,9 +34,9 @@ export function checkNode() {
   );
 }
 
-/** Debian packages for the database (unless one is given by environment) and, for tests, the browser. */
-export async function installPrograms({ database, browser }) {
-  const wanted = [database ? MARIADB : undefined, browser ? CHROMIUM : undefined].filter(Boolean);
+/** Debian packages for the database (unless one is given by environment) and, for tests, the browser and other readers. */
+export async function installPrograms({ database, tests }) {
+  const wanted = [database ? [MARIADB] : [], tests ? [CHROMIUM, REFERENCES] : []].flat();
   const missing = wanted.filter((part) => part.programs.some((name) => !findProgram(name)));
   if (missing.length === 0) return;
   const packages = missing.flatMap((part) => part.packages);
@@ -44,6 +49,7 @@ export async function installPrograms({ database, browser }) {
 
 /** Where a program is; system folders count even where PATH leaves them out, as it does for most people. */
 export function findProgram(name) {
+  if (path.isAbsolute(name)) return existsSync(name) ? name : undefined;
   const folders = [...(process.env.PATH ?? "").split(":"), ...FOLDERS];
   return folders.map((folder) => path.join(folder || ".", name)).find((file) => existsSync(file));
 }

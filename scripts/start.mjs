@@ -11,7 +11,7 @@ try {
   process.env.AWS_SDK_JS_NODE_VERSION_SUPPORT_WARNING_DISABLED ??= "true";
   process.chdir(ROOT);
   lock = await takeLock(path.join(ROOT, ".data"));
-  await installPrograms({ database: !process.env.DATABASE_URL, browser: false });
+  await installPrograms({ database: !process.env.DATABASE_URL, tests: false });
   await installLibraries();
   const { register } = await import("tsx/esm/api");
   register({ tsconfig: path.join(ROOT, "tsconfig.json") });

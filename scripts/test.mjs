@@ -8,7 +8,7 @@ try {
   process.chdir(ROOT);
   // Its notice about Node's age would fail the tests, in which nothing may be printed.
   process.env.AWS_SDK_JS_NODE_VERSION_SUPPORT_WARNING_DISABLED ??= "true";
-  await installPrograms({ database: true, browser: true });
+  await installPrograms({ database: true, tests: true });
   await installLibraries();
   const { register } = await import("tsx/esm/api");
   register({ tsconfig: path.join(ROOT, "tsconfig.json") });
